@@ -1,0 +1,14 @@
+/** The one door into the core. Inside iso/ nobody imports this file. One line per file, grouped by room. */
+
+// geometry
+export * from "./geometry/types";
+
+// run
+export * from "./run/document";
+export * from "./run/model-types";
+
+// draw
+export * from "./draw/drawing-types";
+
+// sheet
+export * from "./sheet/sheet-types";

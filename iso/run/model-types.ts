@@ -1,0 +1,227 @@
+/**
+ * The model: what a run document means. Components placed in space with ports, joints, cut pieces, spools, materials,
+ * weights and problems. Millimetres, radians, kilograms; x east, y north, z up. Built by buildModel(), never edited.
+ */
+import type { Vec3 } from "../geometry/types";
+import type { AxisName, Nps, Place, Provenance, RatingClass, RunDocument } from "./document";
+
+/** A document point placed in space, with the direction of flow before and after it (null at a run's ends). */
+export interface Node {
+  readonly pointId: string;
+  readonly runId: string;
+  readonly index: number;
+  readonly position: Vec3;
+  readonly arriving: Vec3 | null;
+  readonly leaving: Vec3 | null;
+  /** Angle between arriving and leaving, radians; 0 on straight pipe and at ends. */
+  readonly turnRad: number;
+}
+
+/** The straight stretch between two consecutive working points of one run. `id` is the id of the point it ends at. */
+export interface Leg {
+  readonly id: string;
+  readonly runId: string;
+  readonly fromPointId: string;
+  readonly toPointId: string;
+  readonly from: Vec3;
+  readonly to: Vec3;
+  readonly lengthMm: number;
+  /** Unit vector along flow. */
+  readonly direction: Vec3;
+  readonly nps: Nps;
+  readonly provenance: Provenance;
+  /** True when its number is assumed, or measured once only. */
+  readonly unverified: boolean;
+}
+
+export interface Port {
+  /** "in" upstream, "out" downstream, "branch" the third one. */
+  readonly id: "in" | "out" | "branch";
+  readonly position: Vec3;
+  /** Unit vector out of the component. */
+  readonly direction: Vec3;
+  readonly nps: Nps;
+}
+
+export type ComponentKind =
+  | "elbow" | "trimmed-elbow" | "tee" | "reducing-tee" | "outlet" | "stub-in"
+  | "reducer-concentric" | "reducer-eccentric"
+  | "flange-weld-neck" | "flange-slip-on" | "flange-socket-weld" | "flange-blind"
+  | "gasket" | "valve" | "coupling" | "half-coupling" | "cap" | "support"
+  | "socket-elbow" | "socket-tee";
+
+export interface Component {
+  /** Stable: built from the point's id and a role, e.g. "p7" or "p7.flange-in". */
+  readonly id: string;
+  readonly pointId: string;
+  readonly runId: string;
+  readonly kind: ComponentKind;
+  readonly valve: "gate" | "globe" | "check" | "ball" | "butterfly" | null;
+  readonly ends: "butt" | "socket" | "flanged" | null;
+  readonly nps: Nps;
+  /** Small end, branch size; null when there is one size. */
+  readonly nps2: Nps | null;
+  readonly schedule: string | null;
+  readonly ratingClass: RatingClass | null;
+  /** Working point: centre of an elbow, tee or valve; contact face of a flange; large end of a reducer. */
+  readonly centre: Vec3;
+  readonly ports: readonly Port[];
+  /** Stem of a valve, or flat side of an eccentric reducer: unit vector; null otherwise. */
+  readonly aside: Vec3 | null;
+  readonly asideName: AxisName | null;
+  /** Elbows only. */
+  readonly angleRad: number | null;
+  readonly radiusMm: number | null;
+  /** A take-out used here that is from memory and not yet confirmed by the shop; its catalogue key. */
+  readonly unconfirmedKey: string | null;
+  /** Equal descriptions make one row of the material list. */
+  readonly description: string;
+  readonly material: string;
+  readonly weightKg: number | null;
+  readonly weightSource: string;
+  /** Table and standard its dimensions are from. */
+  readonly source: string;
+  /** Tag or name printed at it ("V-101", "NOZZLE N3"). */
+  readonly text: string;
+  readonly spool: string | null;
+}
+
+export type JointKind = "butt" | "socket" | "slip-on" | "branch" | "attachment" | "bolted";
+
+export interface Joint {
+  /** `${pointId}:${role}` - what the marks register is keyed by; a moved point keeps its joints' keys. */
+  readonly key: string;
+  readonly pointId: string;
+  readonly kind: JointKind;
+  readonly place: Place;
+  /** Weld number ("5", "5A"); null for bolted joints and supports. */
+  readonly number: string | null;
+  readonly position: Vec3;
+  /** Unit vector along flow at the joint. */
+  readonly direction: Vec3;
+  /** Ids of the component or piece on either side; null = outside the line (field side of an end). */
+  readonly a: string | null;
+  readonly b: string | null;
+  readonly nps: Nps;
+  /** Angle between the two sides at the weld, radians; 0 when square. */
+  readonly mismatchRad: number;
+  /** Gap left for it in the arithmetic, mm (root gap, gasket; a socket's pull-back). */
+  readonly gapMm: number;
+  /** Spool that carries it: the one on its upstream side when the two differ. */
+  readonly spool: string | null;
+}
+
+/** One line of a cut length's arithmetic; the signed values sum to the exact cut length. */
+export interface CutTerm {
+  readonly kind: "centre-to-centre" | "take-out" | "root-gap" | "pull-back" | "setting" | "gasket" | "trim";
+  /** Reader's words: "37 1/2 face to centre", "weld-neck hub", "LR 90 take-out". */
+  readonly label: string;
+  readonly valueMm: number;
+  readonly componentId: string | null;
+  readonly source: string | null;
+  readonly unconfirmed: boolean;
+}
+
+export interface Piece {
+  /** `${legId}:${n}`: n-th piece of its leg. */
+  readonly key: string;
+  /** Piece mark ("P3"). */
+  readonly mark: string;
+  readonly legId: string;
+  readonly runId: string;
+  readonly nps: Nps;
+  readonly schedule: string;
+  readonly material: string;
+  readonly odMm: number;
+  readonly wallMm: number;
+  readonly start: Vec3;
+  readonly end: Vec3;
+  /** Unit vector along flow. */
+  readonly direction: Vec3;
+  readonly terms: readonly CutTerm[];
+  /** Exact sum of the terms, mm; negative when it does not fit (a problem says so). */
+  readonly cutLengthMm: number;
+  readonly ends: readonly [PieceEnd, PieceEnd];
+  readonly weightKg: number | null;
+  readonly weightSource: string;
+  readonly spool: string | null;
+}
+
+export interface PieceEnd {
+  readonly prep: "bevel" | "square";
+  readonly jointKey: string | null;
+}
+
+export interface MaterialRow {
+  readonly item: number;
+  readonly quantity: number;
+  /** "ea", or "mm" for pipe (quantity is the summed cut length). */
+  readonly unit: "ea" | "mm";
+  readonly size: string;
+  readonly description: string;
+  readonly material: string;
+  readonly weightKg: number | null;
+  readonly source: string;
+  /** Component ids and piece keys it counts. */
+  readonly refs: readonly string[];
+}
+
+export interface Spool {
+  readonly letter: string;
+  /** Stable anchor for the register: the smallest-in-flow point id or joint it started from. */
+  readonly anchor: string;
+  readonly componentIds: readonly string[];
+  readonly pieceKeys: readonly string[];
+  readonly jointKeys: readonly string[];
+  readonly materials: readonly MaterialRow[];
+  /** Sum of the known weights, kg, and how many parts have none. */
+  readonly weightKg: number;
+  readonly unweighed: number;
+  readonly centreOfGravity: Vec3 | null;
+  /** Axis-parallel outer box, mm. */
+  readonly boxMm: Vec3;
+  /** sha-free content key: canonical JSON of everything a bench would notice; equal strings = same spool. */
+  readonly content: string;
+}
+
+export type Severity = "stop" | "warning" | "note";
+
+export interface Problem {
+  readonly code: string;
+  readonly severity: Severity;
+  /** One plain sentence that says what is wrong and what to do. */
+  readonly text: string;
+  readonly pointId: string | null;
+  readonly runId: string | null;
+}
+
+export interface Model {
+  readonly document: RunDocument;
+  readonly nodes: readonly Node[];
+  readonly legs: readonly Leg[];
+  readonly components: readonly Component[];
+  readonly joints: readonly Joint[];
+  readonly pieces: readonly Piece[];
+  readonly spools: readonly Spool[];
+  readonly problems: readonly Problem[];
+}
+
+/** Weld numbers, piece marks and spool letters that stick. */
+export interface MarksRegister {
+  readonly version: 1;
+  /** False while a draft renumbers along flow; true from the first submission or recorded work on. */
+  readonly sticky: boolean;
+  readonly welds: Readonly<Record<string, string>>;
+  readonly pieces: Readonly<Record<string, string>>;
+  readonly spools: Readonly<Record<string, string>>;
+  /** Marks whose joint, piece or spool is gone: listed for ever, never reused. */
+  readonly voided: readonly { readonly kind: "weld" | "piece" | "spool"; readonly mark: string; readonly key: string }[];
+}
+
+/** The shop's own word on a catalogue value: confirmed as tabulated (valueMm null) or replaced by what it measured. */
+export interface TakeOutWord {
+  readonly key: string;
+  readonly valueMm: number | null;
+  readonly by: string;
+  readonly at: string;
+}
