@@ -1,0 +1,190 @@
+/**
+ * What changed between two frozen sheet inputs of one spool, in the words of the shop: points, pieces, welds,
+ * materials, settings and notes. Pure; both sides are built again from their own frozen values.
+ */
+import {
+  buildModel,
+  formatLength,
+  type Joint,
+  type LineSettings,
+  type Model,
+  type Offset,
+  type Piece,
+  type Point,
+  type SheetInput,
+  type Spool,
+} from "@/iso";
+import type { Change } from "./api-types";
+
+interface Side {
+  readonly input: SheetInput;
+  readonly model: Model;
+  readonly spool: Spool | null;
+  readonly points: ReadonlyMap<string, Point>;
+  readonly pieces: ReadonlyMap<string, Piece>;
+  readonly joints: ReadonlyMap<string, Joint>;
+  readonly materials: ReadonlyMap<string, string>;
+}
+
+function sideOf(input: SheetInput): Side {
+  const model = buildModel(input.document, input.marks, input.takeOuts);
+  const spool = model.spools.find((s) => s.letter === input.spool) ?? null;
+  const pieceKeys = new Set(spool?.pieceKeys ?? []);
+  const jointKeys = new Set(spool?.jointKeys ?? []);
+  const pieces = model.pieces.filter((p) => pieceKeys.has(p.key));
+  const joints = model.joints.filter((j) => jointKeys.has(j.key) && j.number !== null);
+  return {
+    input,
+    model,
+    spool,
+    points: pointsOf(input, model, spool),
+    pieces: new Map(pieces.map((p) => [p.key, p])),
+    joints: new Map(joints.map((j) => [j.key, j])),
+    materials: new Map((spool?.materials ?? []).map((m) => [`${m.size} ${m.description}`, quantityText(m.quantity, m.unit, input)])),
+  };
+}
+
+/** Points of the spool: where its components, joints and the legs of its pieces stand. */
+function pointsOf(input: SheetInput, model: Model, spool: Spool | null): ReadonlyMap<string, Point> {
+  const ids = new Set<string>();
+  const parts = new Set([...(spool?.componentIds ?? []), ...(spool?.pieceKeys ?? [])]);
+  for (const component of model.components) if (parts.has(component.id)) ids.add(component.pointId);
+  for (const piece of model.pieces) if (parts.has(piece.key)) ids.add(piece.legId);
+  const all = input.document.runs.flatMap((run) => run.points);
+  return new Map(all.filter((point) => ids.has(point.id)).map((point) => [point.id, point]));
+}
+
+function quantityText(quantity: number, unit: "ea" | "mm", input: SheetInput): string {
+  return unit === "ea" ? String(quantity) : formatLength(quantity, input.units);
+}
+
+/** An offset in a reader's words. */
+export function offsetText(offset: Offset, input: Pick<SheetInput, "units">): string {
+  const text = (mm: number) => formatLength(mm, input.units);
+  if (offset.kind === "polar") return `${text(offset.length.mm)} ${offset.direction.text}`;
+  const parts = (["e", "n", "u"] as const)
+    .filter((axis) => offset.kind === "absolute" || offset[axis].mm !== 0)
+    .map((axis) => `${axis.toUpperCase()} ${text(offset[axis].mm)}`);
+  return (offset.kind === "absolute" ? "at " : "") + (parts.join(" ") || "no offset");
+}
+
+/**
+ * Changes from `before` to `after`, in the order point, piece, weld, material, setting, note.
+ * With no `before` (first revision) the list is empty: everything is new.
+ */
+export function sheetChanges(before: SheetInput | null, after: SheetInput): Change[] {
+  if (before === null) return [];
+  const a = sideOf(before);
+  const b = sideOf(after);
+  return [
+    ...pointChanges(a, b),
+    ...mapChanges(a.pieces, b.pieces, "piece", (p, side) => ({ mark: p.mark, text: formatLength(p.cutLengthMm, side.input.units), pointId: p.legId }), a, b),
+    ...mapChanges(a.joints, b.joints, "weld", (j) => ({ mark: j.number ?? "", text: `${j.kind}, ${j.place}`, pointId: j.pointId }), a, b),
+    ...mapChanges(a.materials, b.materials, "material", (text, _side, key) => ({ mark: key, text, pointId: null }), a, b),
+    ...settingChanges(before.document.settings, after.document.settings),
+    ...noteChanges(before.document.notes, after.document.notes),
+  ];
+}
+
+/** Ids of the points a change list touches, without repeats. */
+export function changedPointIds(changes: readonly Change[]): string[] {
+  return [...new Set(changes.flatMap((c) => (c.pointId === null || c.kind === "removed" ? [] : [c.pointId])))];
+}
+
+type Described = { mark: string; text: string; pointId: string | null };
+
+function mapChanges<T>(
+  before: ReadonlyMap<string, T>,
+  after: ReadonlyMap<string, T>,
+  what: Change["what"],
+  describe: (value: T, side: Side, key: string) => Described,
+  a: Side,
+  b: Side,
+): Change[] {
+  const changes: Change[] = [];
+  for (const [key, old] of before) {
+    const then = describe(old, a, key);
+    const next = after.get(key);
+    if (next === undefined) {
+      changes.push({ kind: "removed", what, mark: then.mark, text: `${label(what)} ${then.mark} removed`, before: then.text, after: null, pointId: then.pointId });
+      continue;
+    }
+    const now = describe(next, b, key);
+    if (now.text !== then.text) {
+      changes.push({ kind: "changed", what, mark: now.mark, text: `${label(what)} ${now.mark}: ${then.text} is now ${now.text}`, before: then.text, after: now.text, pointId: now.pointId });
+    }
+  }
+  for (const [key, value] of after) {
+    if (before.has(key)) continue;
+    const now = describe(value, b, key);
+    changes.push({ kind: "added", what, mark: now.mark, text: `${label(what)} ${now.mark} added: ${now.text}`, before: null, after: now.text, pointId: now.pointId });
+  }
+  return changes;
+}
+
+function label(what: Change["what"]): string {
+  return what.charAt(0).toUpperCase() + what.slice(1);
+}
+
+function pointChanges(a: Side, b: Side): Change[] {
+  const number = (side: Side, id: string) => {
+    const ids = side.input.document.runs.flatMap((run) => run.points.map((p) => p.id));
+    return String(ids.indexOf(id) + 1);
+  };
+  return mapChanges(a.points, b.points, "point", (p, side) => ({ mark: number(side, p.id), text: pointText(p, side), pointId: p.id }), a, b);
+}
+
+function pointText(point: Point, side: Side): string {
+  const item = point.item.kind === "none" ? "" : `, ${itemText(point)}`;
+  const second = point.provenance.second === null ? "" : `, second reading ${formatLength(point.provenance.second.mm, side.input.units)}`;
+  const places = Object.entries(point.places).map(([role, place]) => `, ${role} weld ${place}`).join("");
+  const note = point.note === "" ? "" : `, note "${point.note}"`;
+  return `${offsetText(point.offset, side.input)}${item} (${point.provenance.kind}${second})${places}${note}`;
+}
+
+function itemText(point: Point): string {
+  const { kind, ...rest } = point.item as { kind: string } & Record<string, unknown>;
+  const facts = Object.values(rest)
+    .filter((value) => value !== null && value !== "" && value !== false)
+    .map((value) => (typeof value === "object" ? JSON.stringify(value) : String(value)));
+  return [kind, ...facts].join(" ");
+}
+
+function settingChanges(before: LineSettings, after: LineSettings): Change[] {
+  const flatBefore = flatten(before);
+  const flatAfter = flatten(after);
+  const keys = [...new Set([...flatBefore.keys(), ...flatAfter.keys()])];
+  return keys
+    .filter((key) => flatBefore.get(key) !== flatAfter.get(key))
+    .map((key) => {
+      const then = flatBefore.get(key) ?? null;
+      const now = flatAfter.get(key) ?? null;
+      return { kind: "changed", what: "setting", mark: key, text: `${key}: ${then ?? "none"} is now ${now ?? "none"}`, before: then, after: now, pointId: null } as const;
+    });
+}
+
+function flatten(value: object, path: readonly string[] = []): Map<string, string> {
+  const flat = new Map<string, string>();
+  for (const [key, inner] of Object.entries(value)) {
+    const here = [...path, words(key)];
+    if (inner !== null && typeof inner === "object" && !Array.isArray(inner)) flatten(inner, here).forEach((v, k) => flat.set(k, v));
+    else if (inner !== null) flat.set(here.join(", "), Array.isArray(inner) ? inner.join(" x ") : String(inner));
+  }
+  return flat;
+}
+
+/** "rootGapMm" -> "root gap (mm)". */
+function words(key: string): string {
+  return key
+    .replace(/(Mm|Deg)$/, (unit) => ` (${unit.toLowerCase()})`)
+    .replace(/([a-z])([A-Z])/g, (_all, left: string, right: string) => `${left} ${right.toLowerCase()}`);
+}
+
+function noteChanges(before: readonly string[], after: readonly string[]): Change[] {
+  const gone = before.filter((note) => !after.includes(note));
+  const fresh = after.filter((note) => !before.includes(note));
+  return [
+    ...gone.map((note) => ({ kind: "removed", what: "note", mark: "", text: `Note removed: ${note}`, before: note, after: null, pointId: null }) as const),
+    ...fresh.map((note) => ({ kind: "added", what: "note", mark: "", text: `Note added: ${note}`, before: null, after: note, pointId: null }) as const),
+  ];
+}
