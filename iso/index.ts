@@ -2,6 +2,14 @@
 
 // geometry
 export * from "./geometry/types";
+export * from "./geometry/vec3";
+export * from "./geometry/paper";
+export * from "./geometry/tolerances";
+
+// units
+export * from "./units/length";
+export * from "./units/direction";
+export * from "./units/format";
 
 // run
 export * from "./run/document";
