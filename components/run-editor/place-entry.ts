@@ -1,0 +1,78 @@
+/** Reads the Joint cell: where the welds of a point are made. One word speaks of the weld on the near side. */
+import type { Place, Point } from "@/iso";
+import { refused, understood, type EntryResult } from "./entry-result";
+
+export type Places = Point["places"];
+type Side = "in" | "out" | "branch";
+
+const PLACE_WORDS: Readonly<Record<string, Place>> = {
+  s: "shop", shop: "shop", sw: "shop",
+  f: "field", field: "field", fw: "field",
+  ff: "field-fit", fit: "field-fit", ffw: "field-fit", "field-fit": "field-fit",
+};
+const SIDE_WORDS: Readonly<Record<string, Side>> = {
+  in: "in", before: "in", out: "out", after: "out", branch: "branch", b: "branch",
+};
+const PLACE_LABEL: Readonly<Record<Place, string>> = { shop: "shop", field: "field", "field-fit": "field-fit" };
+const SIDE_LABEL: Readonly<Record<Side, string>> = { in: "before it", out: "after it", branch: "on the branch" };
+const SIDES: readonly Side[] = ["in", "out", "branch"];
+
+export const PLACE_HINT = "Type shop, field or fit; add in, out or branch to name the weld, such as field out.";
+
+/**
+ * Reads "field", "f", "fit", "field out", "in shop out field".
+ * @param nearSide the weld meant by a bare word: "out" at a run's first point, else "in".
+ */
+export function parsePlaces(text: string, nearSide: "in" | "out"): EntryResult<Places> {
+  const words = text.trim().toLowerCase().split(/[\s,;·]+/).filter((word) => word !== "");
+  const places: Places = {};
+  let side: Side | null = null;
+  let place: Place | null = null;
+  for (const word of words) {
+    const nextPlace: Place | undefined = PLACE_WORDS[word];
+    const nextSide: Side | undefined = SIDE_WORDS[word];
+    if (!nextPlace && !nextSide) return refused(PLACE_HINT);
+    if (nextPlace && place !== null) {
+      places[side ?? nearSide] = place;
+      side = null;
+    }
+    if (nextSide && side !== null && place === null) return refused(PLACE_HINT);
+    if (nextPlace) place = nextPlace;
+    if (nextSide) {
+      if (place !== null && side !== null) {
+        places[side] = place;
+        place = null;
+      }
+      side = nextSide;
+    }
+    if (place !== null && side !== null) {
+      places[side] = place;
+      place = null;
+      side = null;
+    }
+  }
+  if (side !== null) return refused(PLACE_HINT);
+  if (place !== null) places[nearSide] = place;
+  return understood(withoutShop(places), placesEcho(withoutShop(places)));
+}
+
+/** Shop is what every weld is by itself, so it is not stored. */
+function withoutShop(places: Places): Places {
+  return Object.fromEntries(Object.entries(places).filter(([, place]) => place !== "shop"));
+}
+
+export function placesText(places: Places, nearSide: "in" | "out"): string {
+  const named = SIDES.filter((side) => places[side] !== undefined && places[side] !== "shop");
+  const only = named.length === 1 && named[0] === nearSide;
+  return named.map((side) => (only ? shortPlace(places[side]) : `${shortPlace(places[side])} ${side}`)).join(", ");
+}
+
+function shortPlace(place: Place | undefined): string {
+  return place === "field-fit" ? "fit" : (place ?? "shop");
+}
+
+export function placesEcho(places: Places): string {
+  const named = SIDES.filter((side) => places[side] !== undefined && places[side] !== "shop");
+  if (named.length === 0) return "shop welds";
+  return named.map((side) => `${PLACE_LABEL[places[side] ?? "shop"]} weld ${SIDE_LABEL[side]}`).join(", ");
+}
