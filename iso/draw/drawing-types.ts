@@ -5,8 +5,9 @@
 import type { PaperBox, PaperPoint } from "../geometry/types";
 import type { View } from "../run/document";
 
-/** ink black; dye the one blue (layout dye); grey for what is outside the spool; paper for knock-outs; alert for state words. */
-export type Ink = "ink" | "dye" | "grey" | "paper" | "alert";
+/** ink black; dye the one blue (layout dye); grey for what is outside the spool; paper for knock-outs; alert for state words;
+ * pale for what lies across a page and must not hide it. */
+export type Ink = "ink" | "dye" | "grey" | "paper" | "alert" | "pale";
 
 export type Layer =
   | "hatch" | "box" | "halo" | "pipe" | "symbol" | "weld" | "dimension" | "dimension-text" | "leader" | "balloon"
