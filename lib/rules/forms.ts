@@ -1,139 +1,208 @@
 /**
- * What each write accepts, as zod schemas shared by the pages' forms and the route handlers. Messages are sentences
- * for the person who types. Unknown fields are left out; text is trimmed.
+ * What people send, checked the same way in the browser (by field, while typing) and at the route handler. Each schema
+ * is the JSON body of one write; lengths are millimetres, ids are strings. Messages are the sentences a person reads.
  */
 import { z } from "zod";
-import { lineSettingsSchema, MAX_LENGTH_MM, npsSchema, type RunDocument } from "@/iso";
+import { lineSettingsSchema, npsSchema, unitSystemSchema } from "@/iso";
 
-/** Shortest password accepted; the longest is what bcrypt reads, 72 bytes. */
-export const PASSWORD_MIN = 10;
-export const PASSWORD_MAX_BYTES = 72;
-/** Largest sketch or photo, and largest logo, in bytes. */
-export const UPLOAD_MAX_BYTES = 10 * 1024 * 1024;
-export const LOGO_MAX_BYTES = 2 * 1024 * 1024;
+const text = (max: number) =>
+  z.string({ error: "Enter a text." }).trim().max(max, `At most ${max} characters.`);
+const needed = (what: string, max: number) => text(max).min(1, `Enter ${what}.`);
+const uuid = z.uuid("That is not an id.");
 
-const requiredText = (what: string, max: number) =>
-  z.string({ error: `Enter ${what}.` }).trim().min(1, `Enter ${what}.`).max(max, `At most ${max} characters.`).refine(isPlain, "Leave out control characters.");
-const optionalText = (max: number) =>
-  z.string({ error: "Enter text." }).trim().max(max, `At most ${max} characters.`).refine(isPlain, "Leave out control characters.");
-
-/** PostgreSQL stores no NUL, and no name of ours needs a control character but the line break of a note. */
-function isPlain(text: string): boolean {
-  return !/[\u0000-\u0008\u000b-\u001f\u007f]/.test(text.replaceAll("\r", ""));
-}
-
-export const idSchema = z.uuid("This is not an id.");
-export const roleSchema = z.enum(["owner", "detailer", "inspector", "fitter"], { error: "Choose a role." });
 export const emailSchema = z
-  .string({ error: "Enter an e-mail address." })
+  .string()
   .trim()
   .toLowerCase()
-  .max(254, "At most 254 characters.")
-  .pipe(z.email("Enter an e-mail address, such as name@shop.com."));
+  .max(200, "At most 200 characters.")
+  .pipe(z.email("Enter an e-mail address, such as name@shop.example."));
+/** bcrypt reads 72 bytes at most, so a longer one is refused instead of cut. */
 export const passwordSchema = z
-  .string({ error: "Enter a password." })
-  .min(PASSWORD_MIN, `At least ${PASSWORD_MIN} characters.`)
-  .refine((text) => new TextEncoder().encode(text).length <= PASSWORD_MAX_BYTES, `At most ${PASSWORD_MAX_BYTES} characters.`)
-  .refine((text) => !text.includes("\u0000"), "Leave out control characters.");
-const typedPassword = z.string({ error: "Enter your password." }).min(1, "Enter your password.").max(1_000, "That is not your password.");
-const tokenSchema = z.string({ error: "The link is incomplete." }).min(20, "The link is incomplete.").max(200, "The link is incomplete.");
-const personName = requiredText("your name", 120);
+  .string()
+  .min(12, "Use at least 12 characters; a few words in a row do well.")
+  .refine((value) => new TextEncoder().encode(value).length <= 72, "Use at most 72 characters.");
+export const roleSchema = z.enum(["owner", "detailer", "inspector", "fitter"], { error: "Choose a role." });
+export const sheetSizeSchema = z.enum(["letter", "tabloid", "A4", "A3"], { error: "Choose a sheet size." });
+/** A tick that has to be there, with the sentence when it is not. */
+const ticked = (sentence: string) => z.literal(true, { error: sentence });
 
-export const signInForm = z.object({ email: emailSchema, password: typedPassword });
-export const signUpForm = z.object({
-  shopName: requiredText("the shop's name", 120),
-  name: personName,
+export const signInSchema = z.object({
+  email: emailSchema,
+  password: z.string().min(1, "Enter your password.").max(200, "At most 200 characters."),
+});
+
+export const signUpSchema = z.object({
+  shopName: needed("the name of the shop", 80),
+  name: needed("your name as it is printed on sheets", 80),
   email: emailSchema,
   password: passwordSchema,
-  units: z.enum(["imperial", "metric"]).default("imperial"),
+  understood: ticked("Confirm that you have read what Quarterline is and is not."),
 });
-/** A new person gives a name; someone who already has an account proves it with their password. */
-export const acceptForm = z.object({ token: tokenSchema, name: personName.optional(), password: typedPassword });
-export const resetRequestForm = z.object({ email: emailSchema });
-export const resetConfirmForm = z.object({ token: tokenSchema, password: passwordSchema });
-export const shopSwitchForm = z.object({ shopId: idSchema });
-export const invitationForm = z.object({ email: emailSchema, role: roleSchema });
-export const roleForm = z.object({ role: roleSchema });
 
-export const sheetSizeSchema = z.enum(["letter", "tabloid", "A4", "A3"], { error: "Choose a sheet size." });
+const token = z.string().min(16, "This link is not complete.").max(200, "This link is not complete.");
+export const invitationAcceptSchema = z.object({
+  token,
+  name: needed("your name as it is printed on sheets", 80),
+  password: passwordSchema,
+});
+export const resetRequestSchema = z.object({ email: emailSchema });
+export const resetConfirmSchema = z.object({ token, password: passwordSchema });
+
+export const shopSwitchSchema = z.object({ shopId: uuid });
+export const inviteSchema = z.object({ email: emailSchema, role: roleSchema });
+export const memberSchema = z.object({ role: roleSchema });
+
 export const titleFieldsSchema = z
-  .array(z.object({ label: requiredText("a label", 40), value: optionalText(120) }), { error: "Enter the fields as a list." })
-  .max(6, "At most 6 extra fields.");
-const stockSchema = z
-  .array(
-    z.object({
-      nps: npsSchema,
-      schedule: requiredText("a schedule", 12),
-      material: requiredText("a material", 120),
-      lengthMm: z.number({ error: "Enter a length." }).positive("Enter a length over zero.").max(MAX_LENGTH_MM, "That is longer than a kilometre."),
-      quantity: z.int("Enter a whole number.").min(0, "Enter 0 or more.").max(100_000, "At most 100 000."),
-    }),
-  )
-  .max(500, "At most 500 rows of stock.");
+  .array(z.object({ label: needed("a label", 30), value: text(80) }))
+  .max(6, "At most 6 fields of your own.");
 
-export const shopForm = z
+export const stockRowSchema = z.object({
+  nps: npsSchema,
+  schedule: needed("a schedule", 12),
+  material: needed("a material", 120),
+  lengthMm: z
+    .number({ error: "Enter a length." })
+    .finite()
+    .positive("Longer than nothing.")
+    .max(30_000, "At most 30 m."),
+  quantity: z
+    .number({ error: "Enter a number." })
+    .int("A whole number.")
+    .min(0, "Not under 0.")
+    .max(10_000, "At most 10,000."),
+});
+
+/** PATCH of the shop; what is absent stays. */
+export const shopSettingsSchema = z
   .object({
-    name: requiredText("the shop's name", 120),
-    titleBlock: z.object({ fields: titleFieldsSchema }),
+    name: needed("the name of the shop", 80),
+    fields: titleFieldsSchema,
     sheetSize: sheetSizeSchema,
     defaults: lineSettingsSchema,
-    stock: stockSchema,
+    stock: z.array(stockRowSchema).max(200, "At most 200 rows."),
   })
   .partial();
 
-/** `valueMm` null confirms the value as tabulated; a number replaces it with what the shop measured. */
-export const takeOutForm = z.object({
-  key: requiredText("the fitting", 120),
-  valueMm: z.number({ error: "Enter a length." }).positive("Enter a length over zero.").max(MAX_LENGTH_MM, "That is longer than a kilometre.").nullable(),
+/** One word on a take-out: confirmed as tabulated (null) or what the shop measured, mm. */
+export const takeOutSchema = z.object({
+  key: needed("which take-out", 120),
+  valueMm: z
+    .number({ error: "Enter a length." })
+    .finite()
+    .positive("Longer than nothing.")
+    .max(5_000, "At most 5 m.")
+    .nullable(),
 });
 
-const jobFields = {
-  number: requiredText("the job number", 60),
-  title: optionalText(120),
-  client: optionalText(120),
-  area: optionalText(120),
-  open: z.boolean({ error: "Say yes or no." }),
-  fields: titleFieldsSchema,
-  sheetSize: sheetSizeSchema,
-  plantNorthDeg: z.number({ error: "Enter degrees." }).min(-360, "Between -360 and 360.").max(360, "Between -360 and 360."),
-  defaults: lineSettingsSchema,
+export const jobNewSchema = z.object({
+  number: needed("a job number", 40),
+  title: needed("a title", 120),
+  client: text(120),
+  area: text(120),
+  units: unitSystemSchema,
+});
+
+/** PATCH of a job; what is absent stays. */
+export const jobSettingsSchema = z
+  .object({
+    number: needed("a job number", 40),
+    title: needed("a title", 120),
+    client: text(120),
+    area: text(120),
+    open: z.boolean(),
+    fields: titleFieldsSchema,
+    sheetSize: sheetSizeSchema,
+    plantNorthDeg: z
+      .number({ error: "Enter degrees, 0 to 359.9." })
+      .finite()
+      .min(0, "From 0 degrees.")
+      .lt(360, "Under 360 degrees."),
+    defaults: lineSettingsSchema,
+  })
+  .partial();
+
+export const lineNewSchema = z.object({ number: needed("a line number", 60), title: text(120) });
+export const lineCopySchema = lineNewSchema;
+/** PATCH of a line's head; what is absent stays. */
+export const lineHeadSchema = z
+  .object({ number: needed("a line number", 60), title: text(120), archived: z.boolean() })
+  .partial();
+
+export const submitSchema = z.object({
+  description: needed("what this revision is for", 200),
+  size: sheetSizeSchema,
+});
+
+const reason = z
+  .string({ error: "Give a reason." })
+  .trim()
+  .min(3, "Give a reason the next person can act on.")
+  .max(500, "At most 500 characters.");
+export const reasonSchema = z.object({ reason });
+
+export const signSchema = z.object({
+  password: z.string().min(1, "Enter your password again to sign.").max(200, "At most 200 characters."),
+  /** Points whose unverified dimension the signer accepts. */
+  accepted: z.array(z.string().max(60)).max(2_000),
+  verified: ticked("Confirm this to release the sheet."),
+});
+
+export const asBuiltSchema = z.object({ reason, verified: ticked("Confirm this to close the spool.") });
+
+export const workKindSchema = z.enum(["cut", "fit-up", "weld", "visual", "actual"]);
+/** Fields of a work entry, as entered; which kind takes which is said by WORK_FIELDS. */
+export const WORK_FIELDS = {
+  cut: ["heat", "length", "remarks"],
+  "fit-up": ["gap", "remarks"],
+  weld: ["welder", "procedure", "heatA", "heatB", "remarks"],
+  visual: ["result", "remarks"],
+  actual: ["actual", "remarks"],
+} as const satisfies Readonly<Record<z.infer<typeof workKindSchema>, readonly string[]>>;
+
+export const workSchema = z
+  .object({
+    kind: workKindSchema,
+    mark: needed("the mark", 40),
+    key: needed("which piece or weld", 160),
+    values: z.record(z.string().max(20), text(200)),
+  })
+  .superRefine((entry, context) => {
+    const known: readonly string[] = WORK_FIELDS[entry.kind];
+    for (const field of Object.keys(entry.values)) {
+      if (!known.includes(field))
+        context.addIssue({
+          code: "custom",
+          path: ["values", field],
+          message: "This entry has no such field.",
+        });
+    }
+    const missing = { weld: "welder", visual: "result", actual: "actual", cut: null, "fit-up": null }[
+      entry.kind
+    ];
+    if (missing && !entry.values[missing])
+      context.addIssue({
+        code: "custom",
+        path: ["values", missing],
+        message: MISSING[missing] ?? "Enter this.",
+      });
+  });
+
+const MISSING: Readonly<Record<string, string>> = {
+  welder: "Enter who welded it.",
+  result: "Choose a result.",
+  actual: "Enter what was measured.",
 };
-/** A new job: only its number is needed, the rest comes from the shop's settings. */
-export const jobForm = z.object(jobFields).partial().required({ number: true });
-export const jobPatchForm = z.object(jobFields).partial();
 
-const lineNumber = requiredText("the line number", 60);
-export const lineForm = z.object({ number: lineNumber, title: optionalText(120).default("") });
-export const linePatchForm = z.object({ number: lineNumber, title: optionalText(120), archived: z.boolean() }).partial();
-export const lineCopyForm = z.object({ number: lineNumber, title: optionalText(120).optional(), jobId: idSchema.optional() });
-/** `version` is the one the editor started from; the document is checked by parseRunDocument of iso. */
-export const lineSaveForm = z.object({
-  version: z.int("The version is missing.").min(1, "The version is missing.").max(2_000_000_000, "The version is missing."),
-  document: z.custom<RunDocument>((value) => typeof value === "object" && value !== null, "The document is missing."),
-});
-
-const note = (what: string) => requiredText(what, 2_000);
-/** `version`: the line's version the submitter looked at; a newer one answers 409. */
-export const submitForm = z.object({ description: note("what this revision is for"), version: z.int().min(1).optional() });
-/** `accepted`: point ids of the unverified dimensions accepted by name. */
-export const signForm = z.object({ password: typedPassword, accepted: z.array(z.string().max(60)).max(5_000).default([]) });
-export const reasonForm = z.object({ reason: note("the reason") });
-export const emptyForm = z.object({});
-export const workKindSchema = z.enum(["cut", "fit-up", "weld", "visual", "actual"], { error: "Choose what was done." });
-export const workForm = z.object({
-  kind: workKindSchema,
-  mark: requiredText("the mark", 60),
-  key: requiredText("the mark", 200),
-  values: z.record(requiredText("a name", 60), optionalText(500)).refine((values) => Object.keys(values).length <= 20, "At most 20 values."),
-});
-
-export type SignUpForm = z.infer<typeof signUpForm>;
-export type AcceptForm = z.infer<typeof acceptForm>;
-export type ShopForm = z.infer<typeof shopForm>;
-export type JobForm = z.infer<typeof jobForm>;
-export type JobPatchForm = z.infer<typeof jobPatchForm>;
-export type LineForm = z.infer<typeof lineForm>;
-export type LinePatchForm = z.infer<typeof linePatchForm>;
-export type LineCopyForm = z.infer<typeof lineCopyForm>;
-export type TakeOutForm = z.infer<typeof takeOutForm>;
-export type WorkForm = z.infer<typeof workForm>;
+export type SignInForm = z.infer<typeof signInSchema>;
+export type SignUpForm = z.infer<typeof signUpSchema>;
+export type InvitationAcceptForm = z.infer<typeof invitationAcceptSchema>;
+export type InviteForm = z.infer<typeof inviteSchema>;
+export type JobNewForm = z.infer<typeof jobNewSchema>;
+export type JobSettingsForm = z.infer<typeof jobSettingsSchema>;
+export type LineNewForm = z.infer<typeof lineNewSchema>;
+export type SubmitForm = z.infer<typeof submitSchema>;
+export type ReasonForm = z.infer<typeof reasonSchema>;
+export type SignForm = z.infer<typeof signSchema>;
+export type AsBuiltForm = z.infer<typeof asBuiltSchema>;
+export type WorkForm = z.infer<typeof workSchema>;
+export type ShopSettingsForm = z.infer<typeof shopSettingsSchema>;
