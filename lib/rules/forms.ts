@@ -36,7 +36,6 @@ export const signUpSchema = z.object({
   name: needed("your name as it is printed on sheets", 80),
   email: emailSchema,
   password: passwordSchema,
-  understood: ticked("Confirm that you have read what Quarterline is and is not."),
 });
 
 const token = z.string().min(16, "This link is not complete.").max(200, "This link is not complete.");

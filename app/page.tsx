@@ -1,0 +1,5 @@
+import { Home } from "@/components/shell/home";
+
+export default function HomePage() {
+  return <Home />;
+}
