@@ -11,6 +11,11 @@ export * from "./units/length";
 export * from "./units/direction";
 export * from "./units/format";
 
+// catalogue
+export * from "./catalogue/keys";
+export * from "./catalogue/catalogue";
+export * from "./catalogue/pipe";
+
 // run
 export * from "./run/document";
 export * from "./run/model-types";
