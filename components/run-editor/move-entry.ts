@@ -37,8 +37,8 @@ const AXES: Readonly<Record<Axis, { readonly slot: 0 | 1 | 2; readonly sign: 1 |
 const POSITIVE: readonly Axis[] = ["E", "N", "U"];
 const NEGATIVE: readonly Axis[] = ["W", "S", "D"];
 
-/** A bearing such as N30E or 045/30 stands as one word, so its digits are not taken for a length. */
-const ONE_WORD_DIRECTION = /^([NS]\d+(?:\.\d+)?[EW](?:[UD]\d+(?:\.\d+)?)?|\d{3}(?:\.\d+)?\/[+-]?\d+(?:\.\d+)?)\s*(.*)$/i;
+/** A turned direction such as N30E or 045/30 stands as one word, so that its digits are not taken for a length. */
+const ONE_WORD_DIRECTION = /^([ENUWSD]\d+(?:\.\d+)?[ENUWSD]|\d{3}(?:\.\d+)?\/[+-]?\d+(?:\.\d+)?)(?:\s+(.*))?$/i;
 const DIRECTION_RUN = /[ENUWSD]+/gi;
 
 const EMPTY: Entry = { text: "", mm: 0 };
@@ -62,7 +62,7 @@ export function parseMove(text: string, units: UnitSystem, straightOn: StraightO
   return parseNamedAxes(plain, units);
 }
 
-/** Lower-cases nothing, but turns whole words (east, up) into letters and smooths white space. */
+/** Turns whole words (east, up) into letters and smooths white space. */
 function plainWords(text: string): string {
   return text
     .trim()

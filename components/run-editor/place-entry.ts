@@ -6,7 +6,7 @@ export type Places = Point["places"];
 type Side = "in" | "out" | "branch";
 
 const PLACE_WORDS: Readonly<Record<string, Place>> = {
-  s: "shop", shop: "shop", sw: "shop",
+  s: "shop", shop: "shop",
   f: "field", field: "field", fw: "field",
   ff: "field-fit", fit: "field-fit", ffw: "field-fit", "field-fit": "field-fit",
 };
@@ -24,36 +24,18 @@ export const PLACE_HINT = "Type shop, field or fit; add in, out or branch to nam
  * @param nearSide the weld meant by a bare word: "out" at a run's first point, else "in".
  */
 export function parsePlaces(text: string, nearSide: "in" | "out"): EntryResult<Places> {
-  const words = text.trim().toLowerCase().split(/[\s,;·]+/).filter((word) => word !== "");
+  const words = text.trim().toLowerCase().split(/[\s,;]+/).filter((word) => word !== "");
   const places: Places = {};
-  let side: Side | null = null;
-  let place: Place | null = null;
-  for (const word of words) {
-    const nextPlace: Place | undefined = PLACE_WORDS[word];
-    const nextSide: Side | undefined = SIDE_WORDS[word];
-    if (!nextPlace && !nextSide) return refused(PLACE_HINT);
-    if (nextPlace && place !== null) {
-      places[side ?? nearSide] = place;
-      side = null;
-    }
-    if (nextSide && side !== null && place === null) return refused(PLACE_HINT);
-    if (nextPlace) place = nextPlace;
-    if (nextSide) {
-      if (place !== null && side !== null) {
-        places[side] = place;
-        place = null;
-      }
-      side = nextSide;
-    }
-    if (place !== null && side !== null) {
-      places[side] = place;
-      place = null;
-      side = null;
-    }
+  for (let at = 0; at < words.length; ) {
+    const [first, second] = [words[at] ?? "", words[at + 1] ?? ""];
+    const place = PLACE_WORDS[first] ?? PLACE_WORDS[second];
+    const side = SIDE_WORDS[first] ?? (PLACE_WORDS[first] ? SIDE_WORDS[second] : undefined);
+    if (!place || (!PLACE_WORDS[first] && !side)) return refused(PLACE_HINT);
+    places[side ?? nearSide] = place;
+    at += side ? 2 : 1;
   }
-  if (side !== null) return refused(PLACE_HINT);
-  if (place !== null) places[nearSide] = place;
-  return understood(withoutShop(places), placesEcho(withoutShop(places)));
+  const stored = withoutShop(places);
+  return understood(stored, placesEcho(stored));
 }
 
 /** Shop is what every weld is by itself, so it is not stored. */
