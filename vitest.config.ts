@@ -18,6 +18,7 @@ export default defineConfig({
           name: "database",
           include: ["tests/database/**/*.test.ts"],
           globalSetup: ["tests/database/global-setup.ts"],
+          setupFiles: ["tests/database/environment.ts"],
           fileParallelism: false,
           testTimeout: 60_000,
           hookTimeout: 120_000,

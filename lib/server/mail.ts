@@ -14,7 +14,8 @@ const SEND_LIMIT_MS = 20_000;
 const shared = globalThis as typeof globalThis & { quarterlineMail?: Transporter };
 
 function transport(): Transporter {
-  shared.quarterlineMail ??= nodemailer.createTransport(settings().SMTP_URL, {
+  shared.quarterlineMail ??= nodemailer.createTransport({
+    url: settings().SMTP_URL,
     connectionTimeout: CONNECT_LIMIT_MS,
     greetingTimeout: CONNECT_LIMIT_MS,
     socketTimeout: SEND_LIMIT_MS,

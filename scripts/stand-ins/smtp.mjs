@@ -67,7 +67,12 @@ const server = new SMTPServer({
     const parts = [];
     stream.on("data", (part) => parts.push(part));
     stream.on("end", () => {
-      keepMail(Buffer.concat(parts), session.envelope.mailFrom.address, session.envelope.rcptTo.map(({ address }) => address)).then(() => done(), done);
+      try {
+        keepMail(Buffer.concat(parts), session.envelope.mailFrom.address, session.envelope.rcptTo.map(({ address }) => address));
+        done();
+      } catch (error) {
+        done(error);
+      }
     });
   },
 });

@@ -8,6 +8,6 @@ import { startThrowAwayServices } from "../../scripts/lib/throw-away.mjs";
 /** Starts the services and answers how to stop them. */
 export async function setup(): Promise<() => Promise<void>> {
   const services = await startThrowAwayServices();
-  Object.assign(process.env, services.environment);
+  Object.assign(process.env, services.environment, { QUARTERLINE_TEST_BASE_URL: services.environment.BASE_URL });
   return () => services.stop();
 }
