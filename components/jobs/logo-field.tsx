@@ -1,0 +1,104 @@
+"use client";
+import { useEffect, useId, useState } from "react";
+import type { TitleBlock } from "@/iso";
+import { Button } from "@/components/ui/button";
+import { apiSend, apiUpload, failureText } from "@/components/ui/fetcher";
+import { bytesText } from "@/components/ui/format";
+import { Notice } from "@/components/ui/notice";
+import { LOGO_MAX_BYTES } from "@/lib/rules/write-bodies";
+
+export interface LogoFieldProps {
+  /** Where it is put and deleted. */
+  readonly path: string;
+  readonly logo: TitleBlock["logo"];
+  readonly editable: boolean;
+  readonly onChanged: () => void;
+}
+
+/** The logo of the title block: shown as it is, chosen, previewed, then sent. */
+export function LogoField({ path, logo, editable, onChanged }: LogoFieldProps) {
+  const [file, setFile] = useState<File | null>(null);
+  const [trouble, setTrouble] = useState<string | null>(null);
+  const [busy, setBusy] = useState(false);
+  const preview = useObjectUrl(file);
+  const shown = preview ?? (logo ? `/api/objects/logo/${logo.key}` : null);
+  const run = async (work: () => Promise<unknown>) => {
+    setBusy(true);
+    setTrouble(null);
+    try {
+      await work();
+      setFile(null);
+      onChanged();
+    } catch (failure) {
+      setTrouble(failureText(failure));
+    } finally {
+      setBusy(false);
+    }
+  };
+  const choose = (chosen: File | null) => {
+    setTrouble(chosen && chosen.size > LOGO_MAX_BYTES ? `A logo may have ${bytesText(LOGO_MAX_BYTES)}; this one has ${bytesText(chosen.size)}.` : null);
+    setFile(chosen && chosen.size <= LOGO_MAX_BYTES ? chosen : null);
+  };
+  return (
+    <div>
+      <h3>Logo</h3>
+      <p className="mb-3 text-sm text-soft">PNG, JPEG or SVG, at most {bytesText(LOGO_MAX_BYTES)}. It prints in the corner of the title block.</p>
+      <div className="mb-3 flex h-28 w-full max-w-xs items-center justify-center border border-rule bg-white p-3">
+        {/* eslint-disable-next-line @next/next/no-img-element -- a few kilobytes from our own store or the reader's disk */}
+        {shown ? <img src={shown} alt={file ? "Preview of the chosen logo" : "Logo in use"} className="max-h-full max-w-full" /> : <span className="text-soft">No logo</span>}
+      </div>
+      {trouble ? <Notice tone="trouble" className="mb-3">{trouble}</Notice> : null}
+      {editable ? (
+        <div className="flex flex-wrap items-center gap-3">
+          <FileButton label={logo || file ? "Choose another" : "Choose a logo"} accept="image/png,image/jpeg,image/svg+xml" onFile={choose} />
+          {file ? (
+            <Button tone="primary" busy={busy} busyLabel="Sending" onClick={() => void run(() => apiUpload("PUT", path, file))}>
+              Use this logo
+            </Button>
+          ) : null}
+          {logo && !file ? (
+            <Button tone="quiet" busy={busy} onClick={() => void run(() => apiSend("DELETE", path))}>
+              Remove the logo
+            </Button>
+          ) : null}
+        </div>
+      ) : null}
+    </div>
+  );
+}
+
+/** A file chooser that looks and works like a button. */
+export function FileButton({ label, accept, onFile }: { readonly label: string; readonly accept: string; readonly onFile: (file: File | null) => void }) {
+  const id = useId();
+  return (
+    <span className="relative inline-flex">
+      <input
+        id={id}
+        type="file"
+        accept={accept}
+        className="peer sr-only"
+        onChange={(event) => {
+          onFile(event.target.files?.[0] ?? null);
+          event.target.value = "";
+        }}
+      />
+      <label htmlFor={id} className="inline-flex min-h-11 cursor-pointer items-center border border-ink bg-sheet px-4 font-medium peer-focus-visible:outline-3 peer-focus-visible:outline-offset-2 peer-focus-visible:outline-dye hover:bg-dye-tint">
+        {label}
+      </label>
+    </span>
+  );
+}
+
+function useObjectUrl(file: File | null): string | null {
+  const [url, setUrl] = useState<string | null>(null);
+  useEffect(() => {
+    if (!file) return;
+    const made = URL.createObjectURL(file);
+    setUrl(made);
+    return () => {
+      URL.revokeObjectURL(made);
+      setUrl(null);
+    };
+  }, [file]);
+  return url;
+}
