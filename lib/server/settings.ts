@@ -21,6 +21,8 @@ const settingsSchema = z.object({
   MAIL_FROM: z.string().min(3).default("Quarterline <quarterline@localhost>"),
   BASE_URL: z.url({ protocol: /^https?$/ }),
   NEXTAUTH_SECRET: z.string().min(16),
+  /** bcrypt cost: 12 takes about a third of a second; tests lower it. */
+  PASSWORD_COST: z.coerce.number().int().min(4).max(15).default(12),
   DEMO: flag,
   OUTBOX_DIR: z.string().optional(),
   LOG_LEVEL: z.enum(["trace", "debug", "info", "warn", "error", "fatal", "silent"]).default("info"),

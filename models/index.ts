@@ -1,0 +1,76 @@
+/** Every table as a class. bindModels ties them to a database handle; each module world does so once. */
+import type { Sequelize } from "sequelize";
+import { AuditEvent } from "./audit-event";
+import { Counter } from "./counter";
+import { Invitation } from "./invitation";
+import { Job } from "./job";
+import { Line } from "./line";
+import { LineTouch } from "./line-touch";
+import { Membership } from "./membership";
+import { PasswordReset } from "./password-reset";
+import { Person } from "./person";
+import { Revision } from "./revision";
+import { RevisionInput } from "./revision-input";
+import { RevisionSheet } from "./revision-sheet";
+import { Session } from "./session";
+import { SheetCopy } from "./sheet-copy";
+import { Shop } from "./shop";
+import { SignOff } from "./sign-off";
+import { Spool } from "./spool";
+import { TakeOutWord } from "./take-out-word";
+import { Throttle } from "./throttle";
+import { Upload } from "./upload";
+import { WorkEntry } from "./work-entry";
+
+export {
+  AuditEvent,
+  Counter,
+  Invitation,
+  Job,
+  Line,
+  LineTouch,
+  Membership,
+  PasswordReset,
+  Person,
+  Revision,
+  RevisionInput,
+  RevisionSheet,
+  Session,
+  SheetCopy,
+  Shop,
+  SignOff,
+  Spool,
+  TakeOutWord,
+  Throttle,
+  Upload,
+  WorkEntry,
+};
+
+const MODELS = [
+  AuditEvent,
+  Counter,
+  Invitation,
+  Job,
+  Line,
+  LineTouch,
+  Membership,
+  PasswordReset,
+  Person,
+  Revision,
+  RevisionInput,
+  RevisionSheet,
+  Session,
+  SheetCopy,
+  Shop,
+  SignOff,
+  Spool,
+  TakeOutWord,
+  Throttle,
+  Upload,
+  WorkEntry,
+];
+
+/** Binds every model to a handle. Associations are not declared: composite keys are, in the migrations. */
+export function bindModels(sequelize: Sequelize): void {
+  for (const model of MODELS) model.bindTo(sequelize);
+}
