@@ -71,8 +71,7 @@ CREATE INDEX password_resets_person ON password_resets (person_id);
 CREATE TABLE throttles (
   key text PRIMARY KEY CHECK (length(key) <= 300),
   tries integer NOT NULL CHECK (tries >= 0),
-  window_started_at timestamptz NOT NULL,
-  blocked_until timestamptz
+  window_started_at timestamptz NOT NULL
 );
 
 CREATE TABLE counters (
