@@ -26,3 +26,36 @@ export const SAME_PAPER_MM = 0.01;
 
 /** Fraction of a rounding step by which a number may miss a half and still round up: decimal entries such as 0.1 in. */
 export const HALF_STEP_SLACK = 1e-7;
+
+/** Radians (0.1 deg). A turn smaller than this is straight pipe: 1/16 in of typed rounding on 3 ft. */
+export const STRAIGHT_RAD = 0.1 * (Math.PI / 180);
+
+/** Millimetres (1/32 in). Two fittings whose weld faces stand one root gap apart within this are welded face to face. */
+export const FACE_TO_FACE_MM = 25.4 / 32;
+
+/** Millimetres (1/16 in). Two readings of one length that differ by more than this disagree, when no tolerance is given. */
+export const READINGS_AGREE_MM = 25.4 / 16;
+
+/** Radians (3 deg). Largest mismatch taken up at one weld without asking the engineer (a usual limit, common practice). */
+export const WELD_MISMATCH_RAD = 3 * (Math.PI / 180);
+
+/** Times the closing's scale. |F| at or under this is the noise of float64: the closing is exact. */
+export const CLOSING_NOISE = 2e-16;
+
+/** Times the closing's scale. Under it Newton is in its last, squaring steps and judges itself by |F| alone. */
+export const CLOSING_QUADRATIC = 1e-6;
+
+/** Times the closing's scale. S under this is a fold, where angles mean nothing. */
+export const CLOSING_FOLD = 1e-13;
+
+/** Radians. A polygon of pipe directions narrower than this holds nothing that float64 could tell apart. */
+export const CLOSING_SMALLEST_POLYGON = 1e-11;
+
+/** Radians. A bend this small has vanished, and a limit passed by this little is kept: the agreed tolerance of the check values. */
+export const CLOSING_ANGLE = 1e-9;
+
+/** The caller's unit. A pipe this little shorter than nothing has length zero: the agreed tolerance of the check values. */
+export const CLOSING_LENGTH = 1e-9;
+
+/** Times the closing's scale, added to CLOSING_LENGTH so that millimetres and kilometres are judged like inches. */
+export const CLOSING_LENGTH_SHARE = 1e-12;

@@ -1,0 +1,122 @@
+/**
+ * The way to certainty when Newton has no start or jams: a spherical polygon that holds the answer if there is one, cut
+ * through its centre of gravity again and again. Inside K the gradient of f says which half to keep; outside, the
+ * gradient of S does (S is concave and grows with its vector, so S(x) <= ∇S(v)·x everywhere). Each cut takes a good
+ * share of the area; an empty polygon proves that nothing closes.
+ */
+import type { Vec3 } from "../geometry/types";
+import { CLOSING_FOLD, CLOSING_SMALLEST_POLYGON } from "../geometry/tolerances";
+import { vecAdd, vecAddScaled, vecCross, vecDistance, vecDot, vecLength, vecPerpendicular, vecReject, vecScale, vecUnit } from "../geometry/vec3";
+import { newtonClimb } from "./newton";
+import { stateAt, type Problem, type State } from "./problem";
+
+const MOST_CUTS = 400;
+/** Cuts between two tries of Newton from the polygon's centre. */
+const CUTS_PER_TRY = 4;
+/** Width under which the centre of gravity comes from the corners: the area's own formula has lost its digits there. */
+const NARROW = 1e-4;
+/** Bound of |dF| per radian, in units of what turns: D, both radii and both tangent lengths. */
+const STEEPEST = 4;
+
+/** The answer's state, or null when it is proven that there is none (or S falls to zero before it is reached). */
+export function polygonSearch(problem: Problem): State | null {
+  const middle = vecUnit(problem.D);
+  if (!middle || peaksAtHalfTurn(problem)) return null;
+  let polygon = hemisphere(middle);
+  let tried = -CUTS_PER_TRY;
+  for (let cut = 0; cut < MOST_CUTS; cut += 1) {
+    const v = cut === 0 ? middle : centreOf(polygon);
+    if (!v) return null;
+    const s = stateAt(problem, v[0], v[1], v[2]);
+    const inside = s.S > CLOSING_FOLD * problem.scale;
+    if (inside && cut - tried >= CUTS_PER_TRY) {
+      tried = cut;
+      const found = newtonClimb(problem, v);
+      if (found) return found;
+    }
+    polygon = clipped(polygon, inside ? s.F : slopeOfS(problem, v));
+    if (polygon.length < 3) return null;
+    const width = polygonWidth(polygon);
+    if (width < CLOSING_SMALLEST_POLYGON || (inside && rulesOutRoot(problem, s, width))) return null;
+  }
+  return null;
+}
+
+/**
+ * A bend of 180° is a peak of f with a point on it: where f is highest there, no path with lesser bends exists. Checked
+ * at once, because the cuts would only creep towards it.
+ */
+function peaksAtHalfTurn(problem: Problem): boolean {
+  const { d0, d1, r0, r1, D } = problem;
+  const peak = (u: Vec3, otherAxis: Vec3, otherR: number, sign: 1 | -1, r: number) => {
+    const c = sign * vecDot(otherAxis, u);
+    const s = vecLength(vecCross(otherAxis, u));
+    if (vecDot(D, u) - otherR * s <= 0 || 1 + c <= 0) return false;
+    const pull = vecReject(vecAddScaled(D, otherAxis, (-sign * otherR * s) / (1 + c)), u);
+    return vecLength(pull) <= 2 * r;
+  };
+  return peak(vecScale(d0, -1), d1, r1, -1, r0) || peak(d1, d0, r0, 1, r1);
+}
+
+/** F changes too slowly to reach zero inside a polygon this narrow. */
+function rulesOutRoot(problem: Problem, s: State, width: number): boolean {
+  return s.sizeF > STEEPEST * (problem.scale + s.T0 + s.T1) * 2 * width;
+}
+
+/** Gradient of S as a function of a vector: D - R0 ∇|d0×u| - R1 ∇|d1×u|; an axis itself takes the zero subgradient. */
+function slopeOfS({ d0, d1, r0, r1, D }: Problem, u: Vec3): Vec3 {
+  const across = (d: Vec3, r: number): Vec3 => {
+    const aside = vecUnit(vecReject(u, d));
+    return aside ? vecScale(aside, -r) : [0, 0, 0];
+  };
+  return vecAdd(D, vecAdd(across(d0, r0), across(d1, r1)));
+}
+
+/** K lies within a right angle of D. Four corners keep every edge at 90°. */
+function hemisphere(middle: Vec3): readonly Vec3[] {
+  const a = vecPerpendicular(middle);
+  const b = vecCross(middle, a);
+  return [a, b, vecScale(a, -1), vecScale(b, -1)];
+}
+
+/** Keeps the part where normal·x >= 0; a new edge over 90° gets a middle corner. */
+function clipped(polygon: readonly Vec3[], normal: Vec3): readonly Vec3[] {
+  const kept: Vec3[] = [];
+  const heights = polygon.map((v) => vecDot(normal, v));
+  polygon.forEach((v, i) => {
+    const j = (i + 1) % polygon.length;
+    const [h, k] = [heights[i]!, heights[j]!];
+    if (h >= 0) kept.push(v);
+    if ((h > 0 && k < 0) || (h < 0 && k > 0)) {
+      const crossing = vecUnit(vecAddScaled(vecScale(v, Math.abs(k)), polygon[j]!, Math.abs(h)));
+      if (crossing) kept.push(crossing);
+    }
+  });
+  return kept.flatMap((v, i) => {
+    const next = kept[(i + 1) % kept.length]!;
+    const middle = vecDot(v, next) < -CLOSING_FOLD ? vecUnit(vecAdd(v, next)) : null;
+    return middle ? [v, middle] : [v];
+  });
+}
+
+/** Direction of the centre of gravity: half the sum of each edge's length times its inward normal; null when it is nothing. */
+function centreOf(polygon: readonly Vec3[]): Vec3 | null {
+  let sum: Vec3 = [0, 0, 0];
+  const narrow = polygonWidth(polygon) < NARROW;
+  polygon.forEach((v, i) => {
+    const next = polygon[(i + 1) % polygon.length]!;
+    if (narrow) {
+      sum = vecAdd(sum, v);
+      return;
+    }
+    const normal = vecCross(v, next);
+    const sine = vecLength(normal);
+    if (sine > 0) sum = vecAddScaled(sum, normal, Math.atan2(sine, vecDot(v, next)) / sine);
+  });
+  return vecUnit(sum);
+}
+
+/** Twice the farthest corner from the first one: no two points of the polygon are farther apart. */
+function polygonWidth(polygon: readonly Vec3[]): number {
+  return 2 * Math.max(...polygon.map((v) => vecDistance(v, polygon[0]!)));
+}
