@@ -1,0 +1,37 @@
+import type { Joint } from "@/iso";
+import { formatAngleDeg } from "@/iso";
+import type { ReactNode } from "react";
+import { Table, type Column } from "@/components/ui/table";
+import type { SpoolFacts } from "./spool-facts";
+
+const KINDS: Readonly<Record<Joint["kind"], string>> = { butt: "Butt", socket: "Socket", "slip-on": "Slip-on", branch: "Branch", attachment: "Attachment", bolted: "Bolted" };
+const PLACES: Readonly<Record<Joint["place"], string>> = { shop: "Shop", field: "Field, FW", "field-fit": "Field fit, FFW" };
+
+/** Mismatch at a weld that needs the engineer's word, radians (3 degrees; common practice). */
+const MISMATCH_LIMIT_RAD = (3 * Math.PI) / 180;
+/** Below this a weld counts as square, radians: what prints as 0.0 degrees. */
+const SQUARE_RAD = 0.000_9;
+
+/** The welds of the spool by number. */
+export function WeldTable({ facts, done }: { readonly facts: SpoolFacts; readonly done: (weld: Joint) => ReactNode }) {
+  const columns: readonly Column<Joint>[] = [
+    { key: "number", head: "Weld", cell: (weld) => <strong className="figure">{weld.number}</strong> },
+    { key: "place", head: "Where", cell: (weld) => PLACES[weld.place] },
+    { key: "kind", head: "Type", cell: (weld) => KINDS[weld.kind] },
+    { key: "nps", head: "Size", cell: (weld) => <span className="figure">NPS {weld.nps}</span> },
+    { key: "between", head: "Between", cell: (weld) => `${facts.nameOf(weld.a)} and ${facts.nameOf(weld.b)}` },
+    { key: "mismatch", head: "Mismatch", cell: (weld) => <Mismatch weld={weld} /> },
+    { key: "done", head: "Log", cell: done },
+  ];
+  return <Table caption="Welds" columns={columns} rows={facts.welds} rowKey={(weld) => weld.key} />;
+}
+
+function Mismatch({ weld }: { readonly weld: Joint }) {
+  if (weld.mismatchRad < SQUARE_RAD) return <span className="text-soft">none</span>;
+  return (
+    <span>
+      <span className="figure">{formatAngleDeg(weld.mismatchRad, 1)}</span>
+      {weld.mismatchRad > MISMATCH_LIMIT_RAD ? <span className="block text-sm font-medium text-caution">Engineer&apos;s permission</span> : null}
+    </span>
+  );
+}
