@@ -25,3 +25,6 @@ export * from "./draw/drawing-types";
 
 // sheet
 export * from "./sheet/sheet-types";
+export * from "./sheet/sheet-size";
+export * from "./sheet/compose";
+export * from "./sheet/state-mark";

@@ -1,0 +1,36 @@
+/**
+ * Composing a spool sheet: from one frozen value to pages of display items, which both painters understand. Pure: equal
+ * input and measure give equal pages, in the browser and on the server.
+ */
+import type { MeasureText } from "../draw/drawing-types";
+import type { PaperBox } from "../geometry/types";
+import type { Model } from "../run/model-types";
+import { firstPage, type DrawRoom } from "./first-page";
+import { firstFrame, followingFrame, type PageFrame } from "./page-frame";
+import { sheetFacts } from "./sheet-facts";
+import { sheetSizeMm } from "./sheet-size";
+import type { SheetInput, SheetPage } from "./sheet-types";
+import { flowTables } from "./table-flow";
+
+const PAD = 2;
+
+/** Pages of a sheet from a model and a way to draw it: the part of composing that a test can feed by hand. */
+export function composePages(input: SheetInput, model: Model, draw: DrawRoom, measure: MeasureText): SheetPage[] {
+  const facts = sheetFacts(input, model);
+  const frame = firstFrame(facts, measure);
+  const first = firstPage(facts, frame.body, frame.cut, draw, measure);
+  const following = followingFrame(facts, measure);
+  const lists = flowTables(first.rest, inside(following.body), measure);
+  const of = 1 + lists.length;
+  const page = (content: readonly SheetPage["items"][number][], around: PageFrame, sheet: number): SheetPage => ({
+    ...sheetSizeMm(input.size),
+    items: [...around.under, ...content, ...around.over({ sheet, of })],
+    logoBox: around.logoBox,
+    name: sheet === 1 ? "1 isometric" : `${sheet} lists`,
+  });
+  return [page(first.items, frame, 1), ...lists.map((items, index) => page(items, following, index + 2))];
+}
+
+function inside(body: PaperBox): PaperBox {
+  return { minX: body.minX + PAD, minY: body.minY + PAD, maxX: body.maxX - PAD, maxY: body.maxY - PAD };
+}

@@ -1,0 +1,142 @@
+/** The first page: the isometric as large as the paper allows, and on tabloid and A3 the tables beside and under it. */
+import type { DisplayItem, Drawing, LegendKey, MeasureText } from "../draw/drawing-types";
+import type { PaperBox } from "../geometry/types";
+import { cutListTable } from "./cut-list";
+import { itemMoved, lineFrom, textAt } from "./items";
+import { legendItems, legendLayout } from "./legend";
+import { notesTable, type CutText } from "./notes-table";
+import { REVISION_ROWS_SHOWN, revisionTable } from "./revision-table";
+import type { SheetFacts } from "./sheet-facts";
+import { EDGE_LINE, isSmallSheet } from "./sheet-size";
+import { materialsTable, trimmedElbowsTable, weldsTable } from "./spool-tables";
+import { setTable, tableHeight, type Table } from "./table";
+import { placeInRoom, TABLE_GAP, type FlowTable } from "./table-flow";
+
+/** Draws the spool for a room, mm. */
+export type DrawRoom = (widthMm: number, heightMm: number) => Drawing;
+
+export interface FirstPage {
+  readonly items: readonly DisplayItem[];
+  /** Tables, or the rows of them, that go on further pages. */
+  readonly rest: readonly FlowTable[];
+}
+
+const RIGHT_COLUMN = 124;
+const PAD = 2;
+/** The lists under the isometric take at most this share of the body. */
+const UNDER_SHARE = 0.42;
+
+export function firstPage(facts: SheetFacts, body: PaperBox, cut: readonly CutText[], draw: DrawRoom, measure: MeasureText): FirstPage {
+  if (isSmallSheet(facts.input.size)) {
+    const notes = notesTable(facts, cut, (body.maxX - body.minX - 2 * PAD - TABLE_GAP) / 2, measure);
+    return { items: drawingItems(facts, body, draw, measure), rest: restOf(facts, notes, new Map(), null) };
+  }
+  const columnX = body.maxX - RIGHT_COLUMN;
+  const notes = notesTable(facts, cut, RIGHT_COLUMN - 2 * PAD, measure);
+  const right = rightColumn(facts, notes, { ...body, minX: columnX }, measure);
+  const under = underDrawing(facts, { ...body, maxX: columnX }, measure);
+  const items = [
+    ...drawingItems(facts, { ...body, maxX: columnX, maxY: under.top }, draw, measure),
+    ...under.items,
+    lineFrom([columnX, body.minY], [columnX, body.maxY], EDGE_LINE, "frame"),
+    ...right.items,
+  ];
+  return { items, rest: restOf(facts, notes, new Map([...right.next, ...under.next]), REVISION_ROWS_SHOWN) };
+}
+
+type NextRows = ReadonlyMap<string, number | null>;
+
+/** Tables still to be placed: those not in the map at all, or from the row the map names. */
+function restOf(facts: SheetFacts, notes: Table | null, next: NextRows, revisionsShown: number | null): FlowTable[] {
+  const all: readonly (readonly [Table | null, "full" | "half"])[] = [
+    [cutListTable(facts), "full"], [trimmedElbowsTable(facts), "full"], [materialsTable(facts), "half"], [weldsTable(facts), "half"], [notes, "half"],
+  ];
+  const rest = all.flatMap(([table, width]): FlowTable[] => {
+    if (table === null) return [];
+    const startRow = next.has(table.title) ? next.get(table.title)! : 0;
+    return startRow === null ? [] : [{ table, width, startRow }];
+  });
+  const history = revisionTable(facts.input, null);
+  const isWhole = revisionsShown !== null && facts.input.revision.rows.length <= revisionsShown;
+  return history === null || isWhole ? rest : [...rest, { table: history, width: "half", startRow: 0 }];
+}
+
+interface Placed {
+  readonly items: readonly DisplayItem[];
+  readonly next: NextRows;
+}
+
+/** Materials and welds from the top, notes under them when they fit whole, the revision block at the foot. */
+function rightColumn(facts: SheetFacts, notes: Table | null, column: PaperBox, measure: MeasureText): Placed {
+  const room = { minX: column.minX + PAD, minY: column.minY + PAD, maxX: column.maxX - PAD, maxY: column.maxY - PAD };
+  const items: DisplayItem[] = [];
+  const next = new Map<string, number | null>();
+  let bottom = room.maxY;
+  const revisions = revisionTable(facts.input, REVISION_ROWS_SHOWN);
+  if (revisions !== null) {
+    const heightMm = tableHeight(setTable(revisions, room.maxX - room.minX, measure));
+    items.push(...placeInRoom(revisions, { ...room, minY: room.maxY - heightMm }, measure).items);
+    bottom = room.maxY - heightMm - TABLE_GAP;
+  }
+  let y = room.minY;
+  for (const table of [materialsTable(facts), weldsTable(facts), notes]) {
+    if (table === null) continue;
+    const placed = placeInRoom(table, { ...room, minY: y, maxY: bottom }, measure);
+    items.push(...placed.items);
+    next.set(table.title, placed.nextRow);
+    y += placed.heightMm + (placed.heightMm > 0 ? TABLE_GAP : 0);
+  }
+  return { items, next };
+}
+
+/** Cut list and trimmed elbows under the isometric, standing on the strip. */
+function underDrawing(facts: SheetFacts, left: PaperBox, measure: MeasureText): Placed & { readonly top: number } {
+  const most = (left.maxY - left.minY) * UNDER_SHARE;
+  const widthMm = left.maxX - left.minX - 2 * PAD;
+  const room = { minX: left.minX + PAD, maxX: left.minX + PAD + widthMm };
+  const items: DisplayItem[] = [];
+  const next = new Map<string, number | null>();
+  let used = 0;
+  const placedBoxes: { readonly items: readonly DisplayItem[]; readonly y: number }[] = [];
+  for (const table of [cutListTable(facts), trimmedElbowsTable(facts)]) {
+    if (table === null) continue;
+    const placed = placeInRoom(table, { ...room, minY: used, maxY: most - PAD }, measure);
+    next.set(table.title, placed.nextRow);
+    if (placed.heightMm === 0) continue;
+    placedBoxes.push({ items: placed.items, y: used });
+    used += placed.heightMm + TABLE_GAP;
+  }
+  const heightMm = Math.max(0, used - TABLE_GAP);
+  const top = left.maxY - heightMm - (heightMm > 0 ? PAD : 0);
+  for (const placed of placedBoxes) items.push(...placed.items.map((item) => itemMoved(item, [0, top])));
+  return { items, next, top };
+}
+
+/** The isometric in its room, its legend in a strip under it. */
+function drawingItems(facts: SheetFacts, room: PaperBox, draw: DrawRoom, measure: MeasureText): DisplayItem[] {
+  const widthMm = room.maxX - room.minX;
+  const reserve = legendLayout(likelyLegend(facts), widthMm, measure).heightMm;
+  const space = { ...room, maxY: room.maxY - reserve };
+  if (facts.spool === null) {
+    return [textAt([(room.minX + room.maxX) / 2, (room.minY + room.maxY) / 2], `No spool ${facts.input.spool} in this line yet.`, { layer: "label", anchor: "middle", capMm: 3.5 })];
+  }
+  const inset = 3;
+  const drawing = draw(widthMm - 2 * inset, space.maxY - space.minY - 2 * inset);
+  const legend = { ...room, minY: space.maxY };
+  return [
+    ...drawing.items.map((item) => itemMoved(item, [space.minX + inset, space.minY + inset])),
+    lineFrom([legend.minX, legend.minY], [legend.maxX, legend.minY], EDGE_LINE, "title"),
+    ...legendItems(drawing.legend, legend, measure),
+  ];
+}
+
+/** The most a drawing's legend can need, known before drawing. */
+function likelyLegend(facts: SheetFacts): LegendKey[] {
+  const has = (place: string) => facts.welds.some((joint) => joint.place === place);
+  const keys: (LegendKey | false)[] = [
+    "shop-weld", has("field") && "field-weld", has("field-fit") && "field-fit-weld", "material-item", "weld-number", "cut-piece", "spool", "flow",
+    facts.components.some((component) => component.kind === "support") && "support",
+    facts.input.revision.changedPointIds.length > 0 && "revision", "reference-dimension", facts.legs.some((leg) => leg.unverified) && "unverified",
+  ];
+  return keys.filter((key) => key !== false);
+}

@@ -1,0 +1,117 @@
+/** Tables of a spool besides the cut list: materials, welds, trimmed elbows. Cautions stand where the work is done. */
+import { formatAngleDeg, formatDecimal, formatInches, formatTerm } from "../units/format";
+import type { UnitSystem } from "../run/document";
+import type { Component, Joint, MaterialRow } from "../run/model-types";
+import { outsideDiameterMm, sizeText, type SheetFacts } from "./sheet-facts";
+import type { Cell, Row, Table } from "./table";
+
+/** Materials with quantities: pipe as the summed cut length, the rest counted. */
+export function materialsTable(facts: SheetFacts): Table | null {
+  const rows = facts.spool?.materials ?? [];
+  if (rows.length === 0) return null;
+  return {
+    title: "MATERIALS",
+    lead: [],
+    columns: [
+      { head: "ITEM", share: 0, minMm: 11, align: "middle" },
+      { head: "QTY", share: 0, minMm: 23, align: "end" },
+      { head: "SIZE", share: 0.5, minMm: 19 },
+      { head: "DESCRIPTION", share: 3, minMm: 40 },
+      { head: "MATERIAL", share: 1, minMm: 22 },
+    ],
+    rows: rows.map((row) => ({
+      cells: [[{ text: String(row.item), face: "bold" }], quantityText(row, facts.input.units), row.size, row.description, row.material],
+    })),
+    foot: ["Confirm heat number or PMI of every part: look-alike elbows get swapped."],
+  };
+}
+
+function quantityText(row: MaterialRow, units: UnitSystem): string {
+  if (row.unit === "ea") return `${formatDecimal(row.quantity, 0)} ea`;
+  return units === "metric" ? `${formatDecimal(row.quantity, 0)} mm` : `${formatInches(row.quantity)} in`;
+}
+
+const JOINT_WORDS: Readonly<Record<Joint["kind"], string>> = {
+  butt: "butt", socket: "socket fillet", "slip-on": "slip-on fillets", branch: "branch", attachment: "attachment", bolted: "bolted",
+};
+const PLACE_WORDS: Readonly<Record<Joint["place"], string>> = { shop: "SHOP", field: "FW", "field-fit": "FFW" };
+
+/** Welds with blanks for who made and looked at them. */
+export function weldsTable(facts: SheetFacts): Table | null {
+  const voided = facts.input.marks.voided.filter((mark) => mark.kind === "weld");
+  if (facts.welds.length === 0 && voided.length === 0) return null;
+  return {
+    title: "WELDS",
+    lead: [],
+    columns: [
+      { head: "NO.", share: 0, minMm: 11, align: "middle" },
+      { head: "TYPE", share: 1, minMm: 27 },
+      { head: "PLACE", share: 0, minMm: 14 },
+      { head: "SIZE", share: 0.5, minMm: 18 },
+      { head: "WELDER", share: 1, minMm: 17 },
+      { head: "DATE", share: 1, minMm: 13 },
+      { head: "VISUAL", share: 1, minMm: 15 },
+    ],
+    rows: [
+      ...facts.welds.map((joint) => weldRow(facts, joint)),
+      ...voided.map((mark): Row => ({ cells: [[{ text: mark.mark, face: "bold" }], "VOID", "", "", "", "", ""], struck: true })),
+    ],
+    foot: fieldCautions(facts),
+  };
+}
+
+function weldRow(facts: SheetFacts, joint: Joint): Row {
+  const place: Cell = joint.place === "shop" ? PLACE_WORDS.shop : [{ text: PLACE_WORDS[joint.place], face: "bold" }];
+  const type = joint.mismatchRad > 0 && formatAngleDeg(joint.mismatchRad) !== "0.00°" ? `${JOINT_WORDS[joint.kind]}, off ${formatAngleDeg(joint.mismatchRad)}` : JOINT_WORDS[joint.kind];
+  return { cells: [[{ text: joint.number ?? "", face: "bold" }], type, place, sizeText(joint.nps, null, facts.input.units), "", "", ""] };
+}
+
+/** Cautions of field welds, printed where field welds are (do not force: ASME B31.3 335.1.1, from memory). */
+function fieldCautions(facts: SheetFacts): string[] {
+  if (!facts.welds.some((joint) => joint.place !== "shop")) return [];
+  return [
+    "FW field weld, FFW field-fit weld: do not pull, jack or heat pipe to fit. Hot work: permit, isolate, gas test, fire watch.",
+  ];
+}
+
+/**
+ * Cutting marks of trimmed elbows: arc lengths on the surface from the kept face, theta in radians. Throat
+ * (R - OD/2)·theta, both sides R·theta, back (R + OD/2)·theta; take-out R·tan(theta/2) (common practice).
+ */
+export function trimmedElbowsTable(facts: SheetFacts): Table | null {
+  const elbows = facts.components.filter((component) => component.kind === "trimmed-elbow");
+  if (elbows.length === 0) return null;
+  return {
+    title: "TRIMMED ELBOWS, MARKS ON THE SURFACE",
+    lead: ["Trimmed fitting: confirm it is permitted (engineer). Measure from the face kept; cut square to the arc."],
+    columns: [
+      { head: "ELBOW", share: 3, minMm: 52 },
+      { head: "ANGLE KEPT", share: 1, minMm: 25 },
+      { head: "TAKE-OUT", share: 1, minMm: 22 },
+      { head: "THROAT", share: 1, minMm: 20 },
+      { head: "SIDES", share: 1, minMm: 20 },
+      { head: "BACK", share: 1, minMm: 20 },
+    ],
+    rows: elbows.map((elbow) => trimmedRow(facts, elbow)),
+    foot: [],
+  };
+}
+
+function trimmedRow(facts: SheetFacts, elbow: Component): Row {
+  const { units } = facts.input;
+  const name = [{ text: elbow.description }, { text: weldsOf(facts, elbow) }];
+  const od = outsideDiameterMm(facts, elbow.nps);
+  if (elbow.angleRad === null || elbow.radiusMm === null || od === null) return { cells: [name, "not known", "", "", "", ""] };
+  const arc = (radiusMm: number) => formatTerm(radiusMm * elbow.angleRad!, units);
+  const takeOut = formatTerm(elbow.radiusMm * Math.tan(elbow.angleRad / 2), units);
+  return {
+    cells: [name, formatAngleDeg(elbow.angleRad), takeOut, arc(elbow.radiusMm - od / 2), arc(elbow.radiusMm), arc(elbow.radiusMm + od / 2)],
+  };
+}
+
+/** "between welds 4 and 5": where on the drawing an elbow is. */
+function weldsOf(facts: SheetFacts, component: Component): string {
+  const numbers = facts.model.joints.filter((joint) => joint.number !== null && (joint.a === component.id || joint.b === component.id)).map((joint) => joint.number);
+  if (numbers.length === 0) return "";
+  return numbers.length === 1 ? `at weld ${numbers[0]}` : `between welds ${numbers.join(" and ")}`;
+}

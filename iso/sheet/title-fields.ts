@@ -1,0 +1,118 @@
+/** What the title strip says, as labelled fields in reading order. Values are as entered; nothing is judged here. */
+import { formatWeight } from "../units/format";
+import type { UnitSystem } from "../run/document";
+import { npsInches, sizeText, type SheetFacts } from "./sheet-facts";
+
+export interface Field {
+  readonly label: string;
+  readonly value: string;
+  /** Lines it may take before it is cut and shown whole among the notes. */
+  readonly maxLines: number;
+}
+
+/** A heading above the fields that follow it. */
+export interface FieldHeading {
+  readonly heading: string;
+}
+
+export type TitleEntry = Field | FieldHeading;
+
+const field = (label: string, value: string, maxLines = 2): Field => ({ label, value: value.trim() === "" ? "-" : value, maxLines });
+
+/** Everything the strip of a first page carries. */
+export function titleEntries(facts: SheetFacts): TitleEntry[] {
+  const { titleBlock, revision } = facts.input;
+  const { settings } = facts.model.document;
+  const entered = settings.asEntered;
+  return [
+    field("CLIENT", titleBlock.client),
+    field("PROJECT", titleBlock.project),
+    field("JOB NO.", titleBlock.jobNumber),
+    field("AREA", titleBlock.area),
+    ...titleBlock.fields.slice(0, 6).map(({ label, value }) => field(label.toUpperCase(), value)),
+    ...lineFields(facts),
+    { heading: "AS ENTERED, PER OWNER'S SPECIFICATION" },
+    field("INSULATION", entered.insulation),
+    field("PWHT", entered.pwht),
+    field("NDE", entered.nde),
+    field("TEST", entered.test),
+    field("PAINT", entered.paint),
+    ...sheetFields(facts),
+    field("DRAWN", revision.drawnBy),
+    field("CHECKED", revision.checkedBy),
+    field("ISSUED", issuedText(revision.issuedAt), 1),
+  ];
+}
+
+/** What a following page repeats. */
+export function shortEntries(facts: SheetFacts): TitleEntry[] {
+  const { titleBlock, revision } = facts.input;
+  return [
+    field("SHOP", titleBlock.shopName, 1),
+    field("CLIENT", titleBlock.client, 1),
+    field("JOB NO.", titleBlock.jobNumber, 1),
+    field("LINE", facts.model.document.number, 1),
+    field("SPOOL", facts.input.spool, 1),
+    field("SIZE", sizesOf(facts), 1),
+    field("MATERIAL", facts.model.document.settings.pipe.material, 1),
+    field("DRAWN", revision.drawnBy, 1),
+    field("ISSUED", issuedText(revision.issuedAt), 1),
+  ];
+}
+
+function lineFields(facts: SheetFacts): Field[] {
+  const { pipe } = facts.model.document.settings;
+  const schedules = [...new Set(facts.pieces.map((piece) => piece.schedule))];
+  const materials = [...new Set(facts.pieces.map((piece) => piece.material))];
+  return [
+    field("LINE", facts.model.document.number),
+    ...(facts.model.document.title.trim() === "" ? [] : [field("TITLE", facts.model.document.title)]),
+    field("SPOOL", facts.spool ? facts.input.spool : `${facts.input.spool} (not in this line)`),
+    field("SIZE", sizesOf(facts)),
+    field("SCHEDULE", (schedules.length > 0 ? schedules : [pipe.schedule]).join(", ")),
+    field("MATERIAL", (materials.length > 0 ? materials : [pipe.material]).join(", ")),
+    ...(pipe.specification.trim() === "" ? [] : [field("SPEC", pipe.specification)]),
+  ];
+}
+
+function sheetFields(facts: SheetFacts): Field[] {
+  const { units } = facts.input;
+  const includes = facts.model.document.settings.faceIncludesGasket;
+  return [
+    field("UNITS", units === "metric" ? "millimetres" : "feet and inches", 1),
+    field("SCALE", "NTS", 1),
+    field("NORTH", "PLANT N, as the arrow", 1),
+    field("FACES", `dimensions to faces ${includes ? "include" : "leave out"} the gasket`),
+    field("TOLERANCE", toleranceText(facts)),
+    field("WEIGHT", weightText(facts), 3),
+  ];
+}
+
+function sizesOf(facts: SheetFacts): string {
+  const sizes = [...new Set([...facts.pieces.map((piece) => piece.nps), ...facts.components.map((component) => component.nps)])];
+  const all = sizes.length > 0 ? sizes : [facts.model.document.settings.pipe.nps];
+  return [...all].sort((a, b) => npsInches(b) - npsInches(a)).map((nps) => sizeText(nps, null, facts.input.units)).join(", ");
+}
+
+/** Fabrication tolerance by the largest size on the sheet: linear dimensions, not cumulative, shop work only (PFI ES-3). */
+function toleranceText(facts: SheetFacts): string {
+  const largest = Math.max(...[...facts.pieces, ...facts.components].map((part) => npsInches(part.nps)), npsInches(facts.model.document.settings.pipe.nps));
+  return `${toleranceOf(largest, facts.input.units)}, shop work, not cumulative`;
+}
+
+function toleranceOf(inches: number, units: UnitSystem): string {
+  if (inches <= 10) return units === "metric" ? "±3 mm" : "±1/8 in";
+  return units === "metric" ? "±5 mm" : "±3/16 in";
+}
+
+function weightText(facts: SheetFacts): string {
+  if (!facts.spool) return "not known";
+  const missing = facts.spool.unweighed > 0 ? `; ${facts.spool.unweighed} part${facts.spool.unweighed === 1 ? "" : "s"} not weighed` : "";
+  return `${formatWeight(facts.spool.weightKg, facts.input.units)} empty estimate${missing}; centre of gravity off-centre`;
+}
+
+/** "2025-03-14 15:20 UTC" from an ISO time in UTC; anything else is printed as it came. */
+export function issuedText(iso: string): string {
+  const match = /^(\d{4}-\d{2}-\d{2})T(\d{2}:\d{2})(?::\d{2}(?:\.\d+)?)?Z$/.exec(iso);
+  return match ? `${match[1]} ${match[2]} UTC` : iso;
+}
