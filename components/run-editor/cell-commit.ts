@@ -1,5 +1,5 @@
 /** What a typed cell does to the document: reads the text by its column and applies it, or says what to type. */
-import type { Point, Provenance, RunDocument } from "@/iso";
+import type { Point, Provenance, RunDocument, UnitSystem } from "@/iso";
 import { FROM_DRAWING, runOf, withItem, withPoint, withPointsInserted } from "./document-edits";
 import type { EntryResult } from "./entry-result";
 import { parseItem } from "./item-entry";
@@ -57,9 +57,9 @@ export function cellText(point: Point, column: Column, nearSide: "in" | "out"): 
 }
 
 /** The echo under a cell. */
-export function cellEcho(point: Point, column: Column, document: RunDocument): string {
+export function cellEcho(point: Point, column: Column, units: UnitSystem): string {
   switch (column) {
-    case "move": return moveEcho(point.offset, document.settings.units);
+    case "move": return moveEcho(point.offset, units);
     case "item": return itemEcho(point.item, jointPlace(point));
     case "joint": return Object.keys(point.places).length > 0 ? placesEcho(point.places) : "";
     default: return "";
@@ -79,7 +79,7 @@ export function commitCell(document: RunDocument, target: CellTarget, text: stri
   const existing = run.points[target.row];
   if (!existing && text.trim() === "") return { ok: true, value: document, understood: "" };
   if (existing && text === cellText(existing, target.column, nearSideAt(document, target.runId, target.row))) {
-    return { ok: true, value: document, understood: cellEcho(existing, target.column, document) };
+    return { ok: true, value: document, understood: cellEcho(existing, target.column, document.settings.units) };
   }
   const edit = readCell(document, target, text, context);
   if (!edit.ok) return edit;

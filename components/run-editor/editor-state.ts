@@ -23,8 +23,16 @@ export interface EditorState {
   readonly focusTurn: number;
   /** The document with the valid entry being typed, for the drawing only; null when nothing is being typed. */
   readonly preview: RunDocument | null;
+  /** How the text being typed reads so far; null when nothing is being typed. */
+  readonly typing: TypingEcho | null;
   /** Id the next new point of each run will get, so that its row keeps its identity. */
   readonly nextIds: Readonly<Record<string, string>>;
+}
+
+/** The echo of a text still being typed, or the sentence that says what is missing. */
+export interface TypingEcho {
+  readonly ok: boolean;
+  readonly words: string;
 }
 
 /** Fresh ids that come with each action; as many as it may need. */
@@ -72,14 +80,14 @@ export function initialState(document: RunDocument, stamp: Stamp): EditorState {
   const first = main?.points[0];
   const column: Column = fresh && (!first || first.item.kind === "none") ? "item" : "move";
   const cursor: CellTarget = { runId: main?.id ?? "main", row: 0, column };
-  const state = { document, past: [], future: [], drafts: {}, cursor, focusTurn: 0, preview: null, nextIds: {} };
+  const state = { document, past: [], future: [], drafts: {}, cursor, focusTurn: 0, preview: null, typing: null, nextIds: {} };
   return { ...state, nextIds: idsFor(document, {}, stamp) };
 }
 
 export function editorReducer(state: EditorState, action: EditorAction): EditorState {
   switch (action.type) {
     case "commit": return commit(state, action);
-    case "typing": return { ...state, preview: previewOf(state, action) };
+    case "typing": return { ...state, ...typingOf(state, action) };
     case "cursor": return moveTo(state, action.target, action.focus);
     case "step": return stepped(state, action.step);
     case "show-point": {
@@ -122,9 +130,9 @@ function idsFor(document: RunDocument, before: EditorState["nextIds"], stamp: St
 
 /** The one way the document changes: the old one goes on the history, what was undone is dropped. */
 function changed(state: EditorState, document: RunDocument, stamp: Stamp): EditorState {
-  if (document === state.document) return { ...state, preview: null };
+  if (document === state.document) return { ...state, preview: null, typing: null };
   const nextIds = idsFor(document, state.nextIds, stamp);
-  return held({ ...state, document, past: [...state.past, state.document], future: [], preview: null, nextIds });
+  return held({ ...state, document, past: [...state.past, state.document], future: [], preview: null, typing: null, nextIds });
 }
 
 /** Keeps the cursor on a row that exists. */
@@ -146,7 +154,7 @@ function commit(state: EditorState, action: Extract<EditorAction, { type: "commi
   const result = commitCell(state.document, target, text, contextFor(state, target, stamp));
   if (!result.ok) {
     const drafts = { ...state.drafts, [key]: { text, message: result.message } };
-    const next = { ...state, drafts, preview: null };
+    const next = { ...state, drafts, preview: null, typing: null };
     // Enter stays where the sentence stands; Tab and the arrows may leave, the text keeps waiting.
     return action.step === "next-row" || action.step === "stay" ? next : stepped(next, action.step);
   }
@@ -154,10 +162,11 @@ function commit(state: EditorState, action: Extract<EditorAction, { type: "commi
   return stepped({ ...changed(state, result.value, stamp), drafts }, action.step);
 }
 
-function previewOf(state: EditorState, action: Extract<EditorAction, { type: "typing" }>): RunDocument | null {
-  if (action.text === null) return null;
+function typingOf(state: EditorState, action: Extract<EditorAction, { type: "typing" }>): Pick<EditorState, "preview" | "typing"> {
+  if (action.text === null) return { preview: null, typing: null };
   const result = commitCell(state.document, action.target, action.text, contextFor(state, action.target, action.stamp));
-  return result.ok && result.value !== state.document ? result.value : null;
+  if (!result.ok) return { preview: null, typing: { ok: false, words: result.message } };
+  return { preview: result.value === state.document ? null : result.value, typing: { ok: true, words: result.understood } };
 }
 
 function moveTo(state: EditorState, target: CellTarget, focus: boolean): EditorState {
@@ -232,14 +241,14 @@ function paste(state: EditorState, action: Extract<EditorAction, { type: "paste"
 function undo(state: EditorState): EditorState {
   const document = state.past[state.past.length - 1];
   if (!document) return state;
-  const next = { ...state, document, past: state.past.slice(0, -1), future: [state.document, ...state.future], preview: null };
+  const next = { ...state, document, past: state.past.slice(0, -1), future: [state.document, ...state.future], preview: null, typing: null };
   return held({ ...next, focusTurn: state.focusTurn + 1 });
 }
 
 function redo(state: EditorState): EditorState {
   const [document, ...future] = state.future;
   if (!document) return state;
-  return held({ ...state, document, past: [...state.past, state.document], future, preview: null, focusTurn: state.focusTurn + 1 });
+  return held({ ...state, document, past: [...state.past, state.document], future, preview: null, typing: null, focusTurn: state.focusTurn + 1 });
 }
 
 /** Entries that were not understood, for the problem list: each with its place. */

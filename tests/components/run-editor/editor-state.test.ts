@@ -99,10 +99,11 @@ describe("the editor's reducer", () => {
   });
 
   it("pastes rows from a spreadsheet as one step, keeping what it did not understand", () => {
-    const state = editorReducer(twoLegs(), { type: "paste", target: at(3, "move"), text: "n 1-0\tgate\nsouthish\nu 2-0\tcap\tf\n", stamp: testStamp() });
+    const before = twoLegs();
+    const state = editorReducer(before, { type: "paste", target: at(3, "move"), text: "n 1-0\tgate\nsouthish\nu 2-0\tcap\tf\n", stamp: testStamp() });
     expect(state.document.runs[0]?.points.map((point) => point.item.kind)).toEqual(["flange", "none", "flange", "valve", "none", "cap"]);
     expect(waitingDrafts(state)).toHaveLength(1);
-    expect(editorReducer(state, { type: "undo" }).document).toEqual(twoLegs().document);
+    expect(editorReducer(state, { type: "undo" }).document).toBe(before.document);
   });
 
   it("finds the row of a point", () => {

@@ -1,0 +1,20 @@
+"use client";
+/** How the parts of the editor send actions: without the stamp, which the editor adds. */
+import { createContext, useContext } from "react";
+import type { EditorAction } from "./editor-state";
+
+type WithoutStamp<A> = A extends { readonly stamp: unknown } ? Omit<A, "stamp"> : A;
+export type EditorIntent = WithoutStamp<EditorAction>;
+export type Send = (intent: EditorIntent) => void;
+
+export interface EditorDoors {
+  readonly send: Send;
+  readonly openHelp: () => void;
+  readonly readOnly: boolean;
+}
+
+export const EditorContext = createContext<EditorDoors>({ send: () => undefined, openHelp: () => undefined, readOnly: true });
+
+export function useEditor(): EditorDoors {
+  return useContext(EditorContext);
+}

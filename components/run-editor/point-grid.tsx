@@ -1,0 +1,152 @@
+"use client";
+import clsx from "clsx";
+import { memo, useEffect, useMemo, useRef, type RefObject } from "react";
+import type { Problem, Run, RunDocument, Severity } from "@/iso";
+import { COLUMNS, nearSideAt, type Column } from "./cell-commit";
+import { pointPlace } from "./document-edits";
+import type { Draft, EditorState } from "./editor-state";
+import { COLUMN_LABEL } from "./grid-cell";
+import { itemEcho } from "./item-text";
+import { GRID_COLUMNS, PointRow } from "./point-row";
+
+export interface PointGridProps {
+  readonly state: EditorState;
+  readonly problems: readonly Problem[];
+}
+
+/** The keyboard grid: a group of rows per run, each ending in an empty row that takes the next point. */
+export function PointGrid({ state, problems }: PointGridProps) {
+  const box = useRef<HTMLDivElement>(null);
+  useCursorFocus(box, state);
+  const severities = useMemo(() => worstByPoint(problems), [problems]);
+  const drafts = useMemo(() => draftsByRow(state.drafts), [state.drafts]);
+  const { document } = state;
+  let before = 1;
+  return (
+    <div ref={box} role="grid" aria-label={`Points of line ${document.number}`} aria-rowcount={rowCount(document)} aria-colcount={COLUMNS.length + 1} className="min-w-0">
+      <GridHead />
+      {document.runs.map((run, index) => {
+        const first = before + 1;
+        before = first + run.points.length;
+        return <RunRows key={run.id} run={run} index={index} first={first} state={state} severities={severities} drafts={drafts} last={index === document.runs.length - 1} />;
+      })}
+    </div>
+  );
+}
+
+function rowCount(document: RunDocument): number {
+  return document.runs.reduce((sum, run) => sum + run.points.length + 1, 1);
+}
+
+const GridHead = memo(function GridHead() {
+  return (
+    <div role="row" aria-rowindex={1} className={clsx("sticky top-0 z-10 hidden border-b border-ink bg-paper sm:grid", GRID_COLUMNS)}>
+      <div role="columnheader" aria-colindex={1} className="cell-label px-1 py-1.5 text-center">
+        No.
+      </div>
+      {COLUMNS.map((column, i) => (
+        <div key={column} role="columnheader" aria-colindex={i + 2} className="cell-label border-l border-hair px-2.5 py-1.5">
+          {COLUMN_LABEL[column]}
+        </div>
+      ))}
+    </div>
+  );
+});
+
+interface RunRowsProps {
+  readonly run: Run;
+  readonly index: number;
+  readonly first: number;
+  readonly state: EditorState;
+  readonly severities: ReadonlyMap<string, Severity>;
+  readonly drafts: ReadonlyMap<string, Readonly<Partial<Record<Column, Draft>>>>;
+  readonly last: boolean;
+}
+
+function RunRows({ run, index, first, state, severities, drafts, last }: RunRowsProps) {
+  const { document, cursor, typing } = state;
+  const rows = [...run.points, null];
+  return (
+    <div role="rowgroup" aria-label={index === 0 ? "Main run" : branchName(document, run)}>
+      {index > 0 ? (
+        <div role="presentation" className="border-b border-ink bg-shade px-2 py-1.5 text-sm font-medium">
+          {branchName(document, run)}
+        </div>
+      ) : null}
+      {rows.map((point, row) => {
+        const here = cursor.runId === run.id && cursor.row === row;
+        return (
+          <PointRow
+            key={point?.id ?? state.nextIds[run.id] ?? "new"}
+            runId={run.id}
+            row={row}
+            point={point}
+            ariaRow={first + row}
+            units={document.settings.units}
+            nearSide={nearSideAt(document, run.id, row)}
+            drafts={drafts.get(point?.id ?? `${run.id}:new`) ?? null}
+            cursor={here ? cursor.column : null}
+            typing={here ? typing : null}
+            severity={point ? (severities.get(point.id) ?? null) : null}
+            firstOfGrid={index === 0 && row === 0}
+            lastOfGrid={last && point === null}
+            branch={index > 0}
+          />
+        );
+      })}
+    </div>
+  );
+}
+
+/** "Branch from row 4, tee" with the size it takes. */
+export function branchName(document: RunDocument, run: Run): string {
+  const place = run.from === null ? null : pointPlace(document, run.from);
+  const from = place ? document.runs.find((each) => each.id === place.runId)?.points[place.row] : null;
+  if (!place || !from) return run.name || "Branch from a point that is gone";
+  const item = itemEcho(from.item);
+  const nested = place.runId === document.runs[0]?.id ? "" : ` of ${document.runs.find((each) => each.id === place.runId)?.name || "its branch"}`;
+  return `Branch${run.name ? ` ${run.name}` : ""} from row ${place.row + 1}${nested}: ${item || "no branch item there"}`;
+}
+
+const RANK: Readonly<Record<Severity, number>> = { stop: 2, warning: 1, note: 0 };
+
+function worstByPoint(problems: readonly Problem[]): ReadonlyMap<string, Severity> {
+  const worst = new Map<string, Severity>();
+  for (const { pointId, severity } of problems) {
+    const now = pointId === null ? null : worst.get(pointId);
+    if (pointId !== null && (!now || RANK[severity] > RANK[now])) worst.set(pointId, severity);
+  }
+  return worst;
+}
+
+/** Drafts by row key; a row without any keeps its memo. */
+function draftsByRow(drafts: EditorState["drafts"]): ReadonlyMap<string, Readonly<Partial<Record<Column, Draft>>>> {
+  const rows = new Map<string, Partial<Record<Column, Draft>>>();
+  for (const [key, draft] of Object.entries(drafts)) {
+    const cut = key.lastIndexOf(":");
+    const row = key.slice(0, cut);
+    rows.set(row, { ...rows.get(row), [key.slice(cut + 1)]: draft });
+  }
+  return rows;
+}
+
+/** Moves the focus to the cursor's cell whenever an action asked for it, and on opening where that raises no keyboard. */
+function useCursorFocus(box: RefObject<HTMLDivElement | null>, { cursor, focusTurn }: EditorState): void {
+  const seen = useRef(-1);
+  useEffect(() => {
+    const opening = seen.current === -1;
+    if (seen.current === focusTurn) return;
+    seen.current = focusTurn;
+    if (opening && isTouchScreen()) return;
+    const cell = box.current?.querySelector<HTMLInputElement>(`[data-cell="${cursor.runId}|${cursor.row}|${cursor.column}"]`);
+    if (!cell) return;
+    cell.focus({ preventScroll: true });
+    cell.select();
+    if (!opening) cell.closest('[role="row"]')?.scrollIntoView?.({ block: "nearest" });
+  }, [box, cursor, focusTurn]);
+}
+
+/** A screen without a fine pointer: focusing a field there raises the keyboard over half of it. */
+export function isTouchScreen(): boolean {
+  return typeof window.matchMedia === "function" && window.matchMedia("(pointer: coarse)").matches;
+}
