@@ -5,6 +5,8 @@ import { potentialAt, stateAt, tangentSystem, type Problem, type State } from ".
 
 const MOST_STEPS = 60;
 const MOST_HALVINGS = 25;
+/** Halvings spent on steps that leave K before the edge is called a jam. */
+const MOST_EXITS = 6;
 /** Share of the promised climb that a step must bring (Armijo). */
 const CLIMB_SHARE = 0.05;
 
@@ -38,7 +40,10 @@ function climbed(problem: Problem, s: State, fold: number): State | null {
   const before = near ? 0 : potentialAt(problem, s);
   for (let halving = 0, share = 1; halving < MOST_HALVINGS; halving += 1, share /= 2) {
     const trial = moved(problem, s, t1, t2, g1 * share, g2 * share);
-    if (!(trial.S > fold)) continue;
+    if (!(trial.S > fold)) {
+      if (halving >= MOST_EXITS) return null;
+      continue;
+    }
     if (near ? trial.sizeF < s.sizeF : potentialAt(problem, trial) >= before + CLIMB_SHARE * share * promised) return trial;
     if (near && halving > 2) return null;
   }

@@ -5,62 +5,72 @@
  * share of the area; an empty polygon proves that nothing closes.
  */
 import type { Vec3 } from "../geometry/types";
-import { CLOSING_FOLD, CLOSING_SMALLEST_POLYGON } from "../geometry/tolerances";
+import { CLOSING_ANGLE, CLOSING_FOLD, CLOSING_SMALLEST_POLYGON } from "../geometry/tolerances";
 import { vecAdd, vecAddScaled, vecCross, vecDistance, vecDot, vecLength, vecPerpendicular, vecReject, vecScale, vecUnit } from "../geometry/vec3";
 import { newtonClimb } from "./newton";
 import { stateAt, type Problem, type State } from "./problem";
 
 const MOST_CUTS = 400;
-/** Cuts between two tries of Newton from the polygon's centre. */
-const CUTS_PER_TRY = 4;
+/** Newton is tried from the polygon's centre whenever the polygon has shrunk to this share of its width at the last try. */
+const SHRUNK = 0.3;
 /** Width under which the centre of gravity comes from the corners: the area's own formula has lost its digits there. */
 const NARROW = 1e-4;
-/** Bound of |dF| per radian, in units of what turns: D, both radii and both tangent lengths. */
-const STEEPEST = 4;
+/** An arc is at most this much longer than its chord. */
+const ARC_OVER_CHORD = Math.PI / 2;
 
 /** The answer's state, or null when it is proven that there is none (or S falls to zero before it is reached). */
 export function polygonSearch(problem: Problem): State | null {
   const middle = vecUnit(problem.D);
   if (!middle || peaksAtHalfTurn(problem)) return null;
   let polygon = hemisphere(middle);
-  let tried = -CUTS_PER_TRY;
+  let triedAt = Infinity;
   for (let cut = 0; cut < MOST_CUTS; cut += 1) {
     const v = cut === 0 ? middle : centreOf(polygon);
     if (!v) return null;
+    const width = farthest(polygon, v);
     const s = stateAt(problem, v[0], v[1], v[2]);
+    if (width < CLOSING_SMALLEST_POLYGON || rulesOutRoot(problem, s, width)) return null;
     const inside = s.S > CLOSING_FOLD * problem.scale;
-    if (inside && cut - tried >= CUTS_PER_TRY) {
-      tried = cut;
+    if (inside && width < triedAt * SHRUNK) {
+      triedAt = width;
       const found = newtonClimb(problem, v);
       if (found) return found;
     }
-    polygon = clipped(polygon, inside ? s.F : slopeOfS(problem, v));
+    polygon = clipped(polygon, inside ? s.F : slopeOfS(problem, v), v);
     if (polygon.length < 3) return null;
-    const width = polygonWidth(polygon);
-    if (width < CLOSING_SMALLEST_POLYGON || (inside && rulesOutRoot(problem, s, width))) return null;
   }
   return null;
 }
 
 /**
  * A bend of 180° is a peak of f with a point on it: where f is highest there, no path with lesser bends exists. Checked
- * at once, because the cuts would only creep towards it.
+ * at once, because the cuts would only creep towards it. Two such points at one place add their peaks.
  */
 function peaksAtHalfTurn(problem: Problem): boolean {
   const { d0, d1, r0, r1, D } = problem;
   const peak = (u: Vec3, otherAxis: Vec3, otherR: number, sign: 1 | -1, r: number) => {
     const c = sign * vecDot(otherAxis, u);
     const s = vecLength(vecCross(otherAxis, u));
-    if (vecDot(D, u) - otherR * s <= 0 || 1 + c <= 0) return false;
+    if (vecDot(D, u) - otherR * s <= 0) return false;
+    if (c < 0 && s < CLOSING_ANGLE) return vecLength(vecReject(D, u)) <= 2 * (r + otherR);
     const pull = vecReject(vecAddScaled(D, otherAxis, (-sign * otherR * s) / (1 + c)), u);
     return vecLength(pull) <= 2 * r;
   };
   return peak(vecScale(d0, -1), d1, r1, -1, r0) || peak(d1, d0, r0, 1, r1);
 }
 
-/** F changes too slowly to reach zero inside a polygon this narrow. */
+/**
+ * F turns to zero no faster than the largest eigenvalue of B allows, which is at most |D| + T0 + T1 with the largest
+ * tangents found within reach; where |F| at the centre is more than that over the way to the farthest corner, no answer
+ * lies in the polygon. Holds outside K too.
+ */
 function rulesOutRoot(problem: Problem, s: State, width: number): boolean {
-  return s.sizeF > STEEPEST * (problem.scale + s.T0 + s.T1) * 2 * width;
+  const reach = width * ARC_OVER_CHORD;
+  const most = (sine: number, cosine: number, r: number) => {
+    const half = (Math.atan2(sine, cosine) + reach) / 2;
+    return half < Math.PI / 2 ? r * Math.tan(half) : Infinity;
+  };
+  return s.sizeF > reach * (vecLength(problem.D) + most(s.s0, s.c0, problem.r0) + most(s.s1, s.c1, problem.r1));
 }
 
 /** Gradient of S as a function of a vector: D - R0 ∇|d0×u| - R1 ∇|d1×u|; an axis itself takes the zero subgradient. */
@@ -79,8 +89,11 @@ function hemisphere(middle: Vec3): readonly Vec3[] {
   return [a, b, vecScale(a, -1), vecScale(b, -1)];
 }
 
-/** Keeps the part where normal·x >= 0; a new edge over 90° gets a middle corner. */
-function clipped(polygon: readonly Vec3[], normal: Vec3): readonly Vec3[] {
+/**
+ * Keeps the part where normal·x >= 0. A new edge over 90° gets a middle corner: the first cut's edge joins two opposite
+ * points, whose sum says nothing, so the corner is the cut's centre laid onto the edge.
+ */
+function clipped(polygon: readonly Vec3[], normal: Vec3, centre: Vec3): readonly Vec3[] {
   const kept: Vec3[] = [];
   const heights = polygon.map((v) => vecDot(normal, v));
   polygon.forEach((v, i) => {
@@ -92,9 +105,10 @@ function clipped(polygon: readonly Vec3[], normal: Vec3): readonly Vec3[] {
       if (crossing) kept.push(crossing);
     }
   });
+  const axis = vecUnit(normal);
   return kept.flatMap((v, i) => {
     const next = kept[(i + 1) % kept.length]!;
-    const middle = vecDot(v, next) < -CLOSING_FOLD ? vecUnit(vecAdd(v, next)) : null;
+    const middle = vecDot(v, next) < -CLOSING_FOLD && axis ? vecUnit(vecReject(centre, axis)) : null;
     return middle ? [v, middle] : [v];
   });
 }
@@ -102,7 +116,7 @@ function clipped(polygon: readonly Vec3[], normal: Vec3): readonly Vec3[] {
 /** Direction of the centre of gravity: half the sum of each edge's length times its inward normal; null when it is nothing. */
 function centreOf(polygon: readonly Vec3[]): Vec3 | null {
   let sum: Vec3 = [0, 0, 0];
-  const narrow = polygonWidth(polygon) < NARROW;
+  const narrow = farthest(polygon, polygon[0]!) < NARROW;
   polygon.forEach((v, i) => {
     const next = polygon[(i + 1) % polygon.length]!;
     if (narrow) {
@@ -116,7 +130,9 @@ function centreOf(polygon: readonly Vec3[]): Vec3 | null {
   return vecUnit(sum);
 }
 
-/** Twice the farthest corner from the first one: no two points of the polygon are farther apart. */
-function polygonWidth(polygon: readonly Vec3[]): number {
-  return 2 * Math.max(...polygon.map((v) => vecDistance(v, polygon[0]!)));
+/** Distance from a direction to the farthest corner (chord). */
+function farthest(polygon: readonly Vec3[], v: Vec3): number {
+  let most = 0;
+  for (const corner of polygon) most = Math.max(most, vecDistance(corner, v));
+  return most;
 }
