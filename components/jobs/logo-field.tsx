@@ -1,8 +1,9 @@
 "use client";
-import { useEffect, useId, useState } from "react";
+import { useEffect, useState } from "react";
 import type { TitleBlock } from "@/iso";
 import { Button } from "@/components/ui/button";
 import { apiSend, apiUpload, failureText } from "@/components/ui/fetcher";
+import { FileButton } from "@/components/ui/file-button";
 import { bytesText } from "@/components/ui/format";
 import { Notice } from "@/components/ui/notice";
 import { LOGO_MAX_BYTES } from "@/lib/rules/write-bodies";
@@ -64,28 +65,6 @@ export function LogoField({ path, logo, editable, onChanged }: LogoFieldProps) {
         </div>
       ) : null}
     </div>
-  );
-}
-
-/** A file chooser that looks and works like a button. */
-export function FileButton({ label, accept, onFile }: { readonly label: string; readonly accept: string; readonly onFile: (file: File | null) => void }) {
-  const id = useId();
-  return (
-    <span className="relative inline-flex">
-      <input
-        id={id}
-        type="file"
-        accept={accept}
-        className="peer sr-only"
-        onChange={(event) => {
-          onFile(event.target.files?.[0] ?? null);
-          event.target.value = "";
-        }}
-      />
-      <label htmlFor={id} className="inline-flex min-h-11 cursor-pointer items-center border border-ink bg-sheet px-4 font-medium peer-focus-visible:outline-3 peer-focus-visible:outline-offset-2 peer-focus-visible:outline-dye hover:bg-dye-tint">
-        {label}
-      </label>
-    </span>
   );
 }
 

@@ -1,0 +1,65 @@
+"use client";
+import clsx from "clsx";
+import { useState, type DragEvent } from "react";
+import { FileButton } from "@/components/ui/file-button";
+import { Notice } from "@/components/ui/notice";
+import type { StatusDetail } from "@/lib/rules/api-types";
+import { fileSha256 } from "./hash";
+
+type Result = { readonly name: string; readonly sha256: string | null } | null;
+
+/** Tells whether a PDF on the reader's disk is one of this revision's. The file stays on the reader's device. */
+export function FileCheck({ status }: { readonly status: StatusDetail }) {
+  const [result, setResult] = useState<Result>(null);
+  const [over, setOver] = useState(false);
+  const check = async (file: File | null | undefined) => {
+    if (file) setResult({ name: file.name, sha256: await fileSha256(file) });
+  };
+  const drop = (event: DragEvent) => {
+    event.preventDefault();
+    setOver(false);
+    void check(event.dataTransfer.files[0]);
+  };
+  return (
+    <section aria-labelledby="file-check" className="mt-6">
+      <h2 id="file-check">Is this PDF the one?</h2>
+      <div
+        onDragOver={(event) => {
+          event.preventDefault();
+          setOver(true);
+        }}
+        onDragLeave={() => setOver(false)}
+        onDrop={drop}
+        className={clsx("mt-2 flex flex-wrap items-center justify-between gap-4 border-2 border-dashed p-4", over ? "border-dye bg-dye-tint" : "border-rule")}
+      >
+        <p className="min-w-0 grow basis-56">Drop a PDF of this sheet here, or choose it. It is compared on your device and not sent anywhere.</p>
+        <FileButton label="Choose a PDF" accept="application/pdf" onFile={(file) => void check(file)} />
+      </div>
+      <div role="status" className="mt-3">
+        {result ? <Answer result={result} status={status} /> : null}
+      </div>
+    </section>
+  );
+}
+
+const KIND_WORDS = { review: "the PDF submitted for review", fabrication: "the signed PDF" } as const;
+
+function Answer({ result, status }: { readonly result: NonNullable<Result>; readonly status: StatusDetail }) {
+  if (result.sha256 === null) return <Notice tone="caution">This browser compares files only on a page opened by https.</Notice>;
+  const match = status.sheets.find((sheet) => sheet.sha256 === result.sha256);
+  const hash = <span className="figure mt-1 block text-sm break-all">SHA-256 {result.sha256}</span>;
+  if (!match) {
+    return (
+      <Notice tone="trouble" word="Not recognized">
+        {result.name} is not a PDF of revision {status.code} as it was stored or printed here. It may be another revision, or altered.
+        {hash}
+      </Notice>
+    );
+  }
+  return (
+    <Notice tone={status.current && match.kind === "fabrication" ? "done" : "caution"} word="Recognized">
+      {result.name} is {KIND_WORDS[match.kind]} of revision {status.code}, unaltered. {status.current ? (match.kind === "review" ? "Work from the signed one instead." : "That revision is current.") : "That revision is NOT CURRENT."}
+      {hash}
+    </Notice>
+  );
+}
