@@ -16,6 +16,13 @@ export * from "./catalogue/keys";
 export * from "./catalogue/catalogue";
 export * from "./catalogue/pipe";
 
+// closing
+export * from "./closing/closing-types";
+export * from "./closing/solver";
+export * from "./closing/elbow-marks";
+export * from "./closing/advice";
+export * from "./closing/close-between";
+
 // run
 export * from "./run/document";
 export * from "./run/model-types";

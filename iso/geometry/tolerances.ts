@@ -59,3 +59,6 @@ export const CLOSING_LENGTH = 1e-9;
 
 /** Times the closing's scale, added to CLOSING_LENGTH so that millimetres and kilometres are judged like inches. */
 export const CLOSING_LENGTH_SHARE = 1e-12;
+
+/** Radians (0.05°). A bend this near 90° is a whole elbow: less than its own tolerance shows. */
+export const CLOSING_STANDARD_ANGLE = (0.05 * Math.PI) / 180;
