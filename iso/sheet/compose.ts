@@ -18,7 +18,7 @@ const PAD = 2;
 export function composePages(input: SheetInput, model: Model, draw: DrawRoom, measure: MeasureText): SheetPage[] {
   const facts = sheetFacts(input, model);
   const frame = firstFrame(facts, measure);
-  const first = firstPage(facts, frame.body, frame.cut, draw, measure);
+  const first = firstPage(facts, frame, draw, measure);
   const following = followingFrame(facts, measure);
   const lists = flowTables(first.rest, inside(following.body), measure);
   const of = 1 + lists.length;

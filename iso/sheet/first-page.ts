@@ -2,12 +2,14 @@
 import type { DisplayItem, Drawing, LegendKey, MeasureText } from "../draw/drawing-types";
 import type { PaperBox } from "../geometry/types";
 import { cutListTable } from "./cut-list";
+import { dataTable } from "./data-table";
 import { itemMoved, lineFrom, textAt } from "./items";
 import { legendItems, legendLayout } from "./legend";
-import { notesTable, type CutText } from "./notes-table";
+import { notesTable } from "./notes-table";
+import type { PageFrame } from "./page-frame";
 import { REVISION_ROWS_SHOWN, revisionTable } from "./revision-table";
 import type { SheetFacts } from "./sheet-facts";
-import { EDGE_LINE, isSmallSheet } from "./sheet-size";
+import { EDGE_LINE } from "./sheet-size";
 import { materialsTable, trimmedElbowsTable, weldsTable } from "./spool-tables";
 import { setTable, tableHeight, type Table } from "./table";
 import { placeInRoom, TABLE_GAP, type FlowTable } from "./table-flow";
@@ -21,27 +23,27 @@ export interface FirstPage {
   readonly rest: readonly FlowTable[];
 }
 
-const RIGHT_COLUMN = 124;
 const PAD = 2;
 /** The lists under the isometric take at most this share of the body. */
 const UNDER_SHARE = 0.42;
 
-export function firstPage(facts: SheetFacts, body: PaperBox, cut: readonly CutText[], draw: DrawRoom, measure: MeasureText): FirstPage {
-  if (isSmallSheet(facts.input.size)) {
-    const notes = notesTable(facts, cut, (body.maxX - body.minX - 2 * PAD - TABLE_GAP) / 2, measure);
-    return { items: drawingItems(facts, body, draw, measure), rest: restOf(facts, notes, new Map(), null) };
+export function firstPage(facts: SheetFacts, frame: PageFrame, draw: DrawRoom, measure: MeasureText): FirstPage {
+  const { body, side } = frame;
+  if (side === null) {
+    const notes = notesTable(facts, frame.cut, (body.maxX - body.minX - 2 * PAD - TABLE_GAP) / 2, measure);
+    const rest = [...restOf(facts, notes, new Map(), null), { table: dataTable(facts), width: "half" as const, startRow: 0 }];
+    return { items: drawingItems(facts, body, draw, measure), rest };
   }
-  const columnX = body.maxX - RIGHT_COLUMN;
-  const notes = notesTable(facts, cut, RIGHT_COLUMN - 2 * PAD, measure);
-  const right = rightColumn(facts, notes, { ...body, minX: columnX }, measure);
-  const under = underDrawing(facts, { ...body, maxX: columnX }, measure);
+  const notes = notesTable(facts, frame.cut, side.maxX - side.minX - 2 * PAD, measure);
+  const beside = sideColumn(facts, notes, side, measure);
+  const under = underDrawing(facts, body, measure);
   const items = [
-    ...drawingItems(facts, { ...body, maxX: columnX, maxY: under.top }, draw, measure),
+    ...drawingItems(facts, { ...body, maxY: under.top }, draw, measure),
     ...under.items,
-    lineFrom([columnX, body.minY], [columnX, body.maxY], EDGE_LINE, "frame"),
-    ...right.items,
+    lineFrom([side.minX, side.minY], [side.minX, side.maxY], EDGE_LINE, "frame"),
+    ...beside.items,
   ];
-  return { items, rest: restOf(facts, notes, new Map([...right.next, ...under.next]), REVISION_ROWS_SHOWN) };
+  return { items, rest: restOf(facts, notes, new Map([...beside.next, ...under.next]), REVISION_ROWS_SHOWN) };
 }
 
 type NextRows = ReadonlyMap<string, number | null>;
@@ -67,7 +69,7 @@ interface Placed {
 }
 
 /** Materials and welds from the top, notes under them when they fit whole, the revision block at the foot. */
-function rightColumn(facts: SheetFacts, notes: Table | null, column: PaperBox, measure: MeasureText): Placed {
+function sideColumn(facts: SheetFacts, notes: Table | null, column: PaperBox, measure: MeasureText): Placed {
   const room = { minX: column.minX + PAD, minY: column.minY + PAD, maxX: column.maxX - PAD, maxY: column.maxY - PAD };
   const items: DisplayItem[] = [];
   const next = new Map<string, number | null>();

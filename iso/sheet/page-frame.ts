@@ -1,95 +1,127 @@
-/** What every page has: frame, foot line, strip with identity, and the body left for content. */
+/**
+ * What every page has: frame, foot line, title block, and the room left for content. On tabloid and A3 the title block
+ * stands at the foot of a side column, so that the isometric keeps the height; small and following pages carry a strip.
+ */
 import type { DisplayItem, MeasureText } from "../draw/drawing-types";
 import type { PaperBox } from "../geometry/types";
-import { IDENTITY_HEIGHT, IDENTITY_WIDE_HEIGHT, IDENTITY_WIDE_WIDTH, IDENTITY_WIDTH, identityItems, identityWideItems, type SheetPlace } from "./identity-block";
+import { IDENTITY_HEIGHT, IDENTITY_NARROW, identityItems, type SheetPlace } from "./identity-block";
 import { boxOutline, textAt } from "./items";
 import type { CutText } from "./notes-table";
 import type { SheetFacts } from "./sheet-facts";
 import { EDGE_LINE, FRAME_LINE, frameBox, isSmallSheet, sheetSizeMm, TEXT_CAP } from "./sheet-size";
 import { stateAcross } from "./state-mark";
 import { baselineOf, linesHeight, wrapText } from "./text-setting";
-import { shortEntries, titleEntries } from "./title-fields";
-import { blockOutline, fieldItems, setFields, shopBlock } from "./title-strip";
+import { shortEntries, stripEntries, titleEntries } from "./title-fields";
+import { blockOutline, fieldItems, setFields, shopBlock, type FieldColumns, type ShopBlock } from "./title-strip";
 
 /** At the foot of every sheet (TRADE.md, cautions). */
 const FOOT = [
   "A layout and records aid: code, WPS, design and acceptance come from the engineer, the owner and local law.",
   "Printed copies are uncontrolled.",
 ];
+/** Width of the side column on tabloid and A3. */
+const SIDE_WIDTH = 148;
 
 /** A page before its number of pages is known. */
 export interface PageFrame {
   readonly body: PaperBox;
+  /** Side column above the title block; null on small and following pages. */
+  readonly side: PaperBox | null;
   readonly logoBox: PaperBox | null;
   readonly cut: readonly CutText[];
   /** Under the content: the state across the page. */
   readonly under: readonly DisplayItem[];
-  /** Over it: frame, strip, foot. */
+  /** Over it: frame, title block, foot. */
   readonly over: (place: SheetPlace) => DisplayItem[];
 }
 
-interface Foot {
+interface Paper {
+  readonly frame: PaperBox;
+  /** Frame above the foot line. */
+  readonly inner: PaperBox;
   readonly items: readonly DisplayItem[];
-  readonly top: number;
 }
 
-/** The strip of a first page, with all fields. */
+/** The frame of the first page. */
 export function firstFrame(facts: SheetFacts, measure: MeasureText): PageFrame {
-  const { frame, foot } = paper(facts, measure);
-  const columnCount = isSmallSheet(facts.input.size) ? 3 : 5;
-  const fieldsMm = frame.maxX - frame.minX - IDENTITY_WIDTH;
-  const shop = shopBlock(facts.input.titleBlock.shopName, facts.input.titleBlock.logo !== null, fieldsMm / columnCount, measure);
-  const set = setFields(titleEntries(facts), fieldsMm, columnCount, shop.heightMm, IDENTITY_HEIGHT, measure);
-  const strip = { minX: frame.minX, minY: foot.top - set.heightMm, maxX: frame.maxX, maxY: foot.top };
-  const fields = { ...strip, maxX: strip.maxX - IDENTITY_WIDTH };
-  const identity = { ...strip, minX: fields.maxX };
-  const body = { ...frame, maxY: strip.minY };
+  return isSmallSheet(facts.input.size) ? smallFrame(facts, measure) : sideFrame(facts, measure);
+}
+
+function sideFrame(facts: SheetFacts, measure: MeasureText): PageFrame {
+  const paper = paperOf(facts, measure);
+  const { inner } = paper;
+  const side = { ...inner, minX: inner.maxX - SIDE_WIDTH };
+  const shop = shopBlock(facts.input.titleBlock, SIDE_WIDTH / 2, measure);
+  const set = setFields(titleEntries(facts), SIDE_WIDTH, 2, shop.heightMm, 0, measure);
+  const identity = { ...side, minY: inner.maxY - IDENTITY_HEIGHT };
+  const fields = { ...side, minY: identity.minY - set.heightMm, maxY: identity.minY };
   return {
-    body, logoBox: shop.logoBox(fields), cut: [...shop.cut, ...set.cut], under: stateAcross(facts.input.revision, body, measure),
-    over: (place) => [
-      ...frameItems(frame, foot), blockOutline(fields), blockOutline(identity),
-      ...shop.items(fields), ...fieldItems(set, fields, shop.heightMm), ...identityItems(facts.input, place, identity, measure),
-    ],
+    ...titleParts(facts, paper, { set, shop, fields, identity }, measure),
+    body: { ...inner, maxX: side.minX }, side: { ...side, maxY: fields.minY },
+  };
+}
+
+function smallFrame(facts: SheetFacts, measure: MeasureText): PageFrame {
+  const paper = paperOf(facts, measure);
+  const { inner } = paper;
+  const widthMm = inner.maxX - inner.minX - IDENTITY_NARROW;
+  const shop = shopBlock(facts.input.titleBlock, widthMm / 3, measure);
+  const set = setFields(stripEntries(facts), widthMm, 3, shop.heightMm, IDENTITY_HEIGHT, measure);
+  const strip = { ...inner, minY: inner.maxY - set.heightMm };
+  const fields = { ...strip, maxX: strip.maxX - IDENTITY_NARROW };
+  return {
+    ...titleParts(facts, paper, { set, shop, fields, identity: { ...strip, minX: fields.maxX } }, measure),
+    body: { ...inner, maxY: strip.minY }, side: null,
   };
 }
 
 /** The low strip of a following page. */
 export function followingFrame(facts: SheetFacts, measure: MeasureText): PageFrame {
-  const { frame, foot } = paper(facts, measure);
-  const columnCount = isSmallSheet(facts.input.size) ? 2 : 3;
-  const set = setFields(shortEntries(facts), frame.maxX - frame.minX - IDENTITY_WIDE_WIDTH, columnCount, 0, IDENTITY_WIDE_HEIGHT, measure);
-  const strip = { minX: frame.minX, minY: foot.top - set.heightMm, maxX: frame.maxX, maxY: foot.top };
-  const fields = { ...strip, maxX: strip.maxX - IDENTITY_WIDE_WIDTH };
-  const identity = { ...strip, minX: fields.maxX };
-  const body = { ...frame, maxY: strip.minY };
+  const paper = paperOf(facts, measure);
+  const { inner } = paper;
+  const set = setFields(shortEntries(facts), inner.maxX - inner.minX - IDENTITY_NARROW, isSmallSheet(facts.input.size) ? 2 : 3, 0, IDENTITY_HEIGHT, measure);
+  const strip = { ...inner, minY: inner.maxY - set.heightMm };
+  const fields = { ...strip, maxX: strip.maxX - IDENTITY_NARROW };
   return {
-    body, logoBox: null, cut: [], under: stateAcross(facts.input.revision, body, measure),
+    ...titleParts(facts, paper, { set, shop: null, fields, identity: { ...strip, minX: fields.maxX } }, measure),
+    body: { ...inner, maxY: strip.minY }, side: null,
+  };
+}
+
+interface TitleParts {
+  readonly set: FieldColumns;
+  readonly shop: ShopBlock | null;
+  readonly fields: PaperBox;
+  readonly identity: PaperBox;
+}
+
+function titleParts(facts: SheetFacts, paper: Paper, parts: TitleParts, measure: MeasureText): Pick<PageFrame, "logoBox" | "cut" | "under" | "over"> {
+  const { set, shop, fields, identity } = parts;
+  return {
+    logoBox: shop?.logoBox(fields) ?? null,
+    cut: [...(shop?.cut ?? []), ...set.cut],
+    under: stateAcross(facts.input.revision, paper.inner, measure),
     over: (place) => [
-      ...frameItems(frame, foot), blockOutline(fields), blockOutline(identity),
-      ...fieldItems(set, fields, 0), ...identityWideItems(facts.input, place, identity, measure),
+      ...paper.items, blockOutline(fields), blockOutline(identity),
+      ...(shop?.items(fields) ?? []), ...fieldItems(set, fields, shop?.heightMm ?? 0), ...identityItems(facts.input, place, identity, measure),
     ],
   };
 }
 
-function paper(facts: SheetFacts, measure: MeasureText): { readonly frame: PaperBox; readonly foot: Foot } {
+/** Frame and foot line: cautions of every sheet, and the head of the audit chain it was issued under. */
+function paperOf(facts: SheetFacts, measure: MeasureText): Paper {
   const { widthMm, heightMm } = sheetSizeMm(facts.input.size);
   const frame = frameBox(widthMm, heightMm);
-  return { frame, foot: footLine(facts, frame, measure) };
-}
-
-/** Cautions of every sheet, and the head of the audit chain it was issued under. */
-function footLine(facts: SheetFacts, frame: PaperBox, measure: MeasureText): Foot {
   const head = facts.input.revision.auditHead;
-  const text = [...FOOT, ...(head === "" ? [] : [`Record ${head.slice(0, 16)}`])].join(" ");
+  const text = [...FOOT, ...(head === "" ? [] : [`Record ${head.slice(0, 12)}`])].join(" ");
   const lines = wrapText(text, frame.maxX - frame.minX - 3, { capMm: TEXT_CAP, face: "regular" }, measure);
   const top = frame.maxY - linesHeight(lines.length) - 1;
-  return { top, items: lines.map((line, index) => textAt([frame.minX + 1.5, top + 0.4 + baselineOf(index)], line, { layer: "caution" })) };
-}
-
-function frameItems(frame: PaperBox, foot: Foot): DisplayItem[] {
-  return [
-    boxOutline(frame, { layer: "frame", widthMm: FRAME_LINE }),
-    boxOutline({ ...frame, minY: foot.top }, { layer: "frame", widthMm: EDGE_LINE }),
-    ...foot.items,
-  ];
+  return {
+    frame, inner: { ...frame, maxY: top },
+    items: [
+      boxOutline(frame, { layer: "frame", widthMm: FRAME_LINE }),
+      boxOutline({ ...frame, minY: top }, { layer: "frame", widthMm: EDGE_LINE }),
+      ...lines.map((line, index) => textAt([frame.minX + 1.5, top + 0.4 + baselineOf(index)], line, { layer: "caution" })),
+    ],
+  };
 }

@@ -48,9 +48,6 @@ export function stateAcross(input: SheetInput["revision"], box: PaperBox, measur
   return [textAt(at, word, { layer: "state", anchor: "middle", capMm, face: "bold", rotateRad: -slope, ink: "pale" })];
 }
 
-/** Height of the tag, mm. */
-export const TAG_HEIGHT = 15;
-
 /** The tag: state word in its shape, under it who checked and when; HOLD beside it when held. */
 export function stateTag(input: SheetInput["revision"], box: PaperBox, measure: MeasureText): DisplayItem[] {
   const tag = { ...box, maxX: input.hold ? box.minX + (box.maxX - box.minX) * 0.66 : box.maxX };
@@ -63,11 +60,14 @@ export function stateTag(input: SheetInput["revision"], box: PaperBox, measure: 
 function tagText(input: SheetInput["revision"], box: PaperBox, measure: MeasureText): DisplayItem[] {
   const middle = (box.minX + box.maxX) / 2;
   const room = box.maxX - box.minX - 7;
-  const wanted = 4;
+  const wanted = box.maxY - box.minY > 18 ? 5 : 4;
   const capMm = Math.max(2.5, Math.min(wanted, (room * wanted) / measure(stateWord(input.state), wanted, "bold")));
-  const word = textAt([middle, box.minY + 1.6 + baselineOf(0, capMm)], stateWord(input.state), { layer: "state", anchor: "middle", capMm, face: "bold", ink: INKS[input.state] });
-  const line = fitText(stampLine(input), room, 1, { capMm: 2.5, face: "regular" }, measure).lines[0] ?? "";
-  return [word, textAt([middle, box.maxY - 1.6 - linesHeight(1) + baselineOf(0)], line, { layer: "state", anchor: "middle" })];
+  const lines = fitText(stampLine(input), room, box.maxY - box.minY > 18 ? 2 : 1, { capMm: 2.5, face: "regular" }, measure).lines;
+  const top = (box.minY + box.maxY - linesHeight(1, capMm) - linesHeight(lines.length)) / 2;
+  return [
+    textAt([middle, top + baselineOf(0, capMm)], stateWord(input.state), { layer: "state", anchor: "middle", capMm, face: "bold", ink: INKS[input.state] }),
+    ...lines.map((line, index) => textAt([middle, top + linesHeight(1, capMm) + baselineOf(index)], line, { layer: "state", anchor: "middle" })),
+  ];
 }
 
 /** Who stands for the state: the checker on a signed sheet, else what the print is good for. */

@@ -19,7 +19,7 @@ export type TitleEntry = Field | FieldHeading;
 
 const field = (label: string, value: string, maxLines = 2): Field => ({ label, value: value.trim() === "" ? "-" : value, maxLines });
 
-/** Everything the strip of a first page carries. */
+/** Everything a title block carries. */
 export function titleEntries(facts: SheetFacts): TitleEntry[] {
   const { titleBlock, revision } = facts.input;
   const { settings } = facts.model.document;
@@ -40,9 +40,21 @@ export function titleEntries(facts: SheetFacts): TitleEntry[] {
     ...sheetFields(facts),
     field("DRAWN", revision.drawnBy),
     field("CHECKED", revision.checkedBy),
-    field("ISSUED", issuedText(revision.issuedAt), 1),
+    field("ISSUED", issuedText(revision.issuedAt)),
   ];
 }
+
+/** What the strip of a small first page carries; the rest follows as a table on the next page. */
+export function stripEntries(facts: SheetFacts): TitleEntry[] {
+  return titleEntries(facts).filter((entry) => "label" in entry && IN_STRIP.has(entry.label));
+}
+
+/** What the strip leaves for the table of data. */
+export function restEntries(facts: SheetFacts): Field[] {
+  return titleEntries(facts).flatMap((entry) => ("label" in entry && !IN_STRIP.has(entry.label) ? [entry] : []));
+}
+
+const IN_STRIP = new Set(["CLIENT", "PROJECT", "JOB NO.", "LINE", "SPOOL", "SIZE", "SCHEDULE", "MATERIAL", "UNITS", "SCALE", "NORTH", "DRAWN", "CHECKED", "ISSUED"]);
 
 /** What a following page repeats. */
 export function shortEntries(facts: SheetFacts): TitleEntry[] {
@@ -56,7 +68,7 @@ export function shortEntries(facts: SheetFacts): TitleEntry[] {
     field("SIZE", sizesOf(facts), 1),
     field("MATERIAL", facts.model.document.settings.pipe.material, 1),
     field("DRAWN", revision.drawnBy, 1),
-    field("ISSUED", issuedText(revision.issuedAt), 1),
+    field("ISSUED", issuedText(revision.issuedAt), 2),
   ];
 }
 
@@ -79,9 +91,9 @@ function sheetFields(facts: SheetFacts): Field[] {
   const { units } = facts.input;
   const includes = facts.model.document.settings.faceIncludesGasket;
   return [
-    field("UNITS", units === "metric" ? "millimetres" : "feet and inches", 1),
-    field("SCALE", "NTS", 1),
-    field("NORTH", "PLANT N, as the arrow", 1),
+    field("UNITS", units === "metric" ? "millimetres" : "feet and inches"),
+    field("SCALE", "NTS"),
+    field("NORTH", "PLANT N, see arrow"),
     field("FACES", `dimensions to faces ${includes ? "include" : "leave out"} the gasket`),
     field("TOLERANCE", toleranceText(facts)),
     field("WEIGHT", weightText(facts), 3),

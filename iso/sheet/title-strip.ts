@@ -1,9 +1,10 @@
-/** The strip along the foot of a page: logo and shop, labelled fields in as few rows as they need, identity block, foot line. */
+/** The title block: logo and shop, then labelled fields in columns as low as the fields allow. */
 import type { DisplayItem, MeasureText } from "../draw/drawing-types";
 import type { PaperBox } from "../geometry/types";
 import { boxOutline, lineFrom, textAt } from "./items";
 import type { CutText } from "./notes-table";
 import { EDGE_LINE, HEAD_CAP, RULE_LINE, TEXT_CAP } from "./sheet-size";
+import type { TitleBlock } from "./sheet-types";
 import { baselineOf, BOLD, fitText, linesHeight } from "./text-setting";
 import type { Field, TitleEntry } from "./title-fields";
 
@@ -110,7 +111,8 @@ export interface ShopBlock {
 }
 
 /** Logo above the shop's name, at the head of the first column. */
-export function shopBlock(shopName: string, hasLogo: boolean, columnMm: number, measure: MeasureText): ShopBlock {
+export function shopBlock({ shopName, logo }: TitleBlock, columnMm: number, measure: MeasureText): ShopBlock {
+  const hasLogo = logo !== null;
   const name = fitText(shopName, columnMm - 2 * PAD_X, 2, { capMm: HEAD_CAP, face: "bold" }, measure);
   const logoMm = hasLogo ? LOGO_HEIGHT + 1 : 0;
   const heightMm = logoMm + linesHeight(name.lines.length, HEAD_CAP) + 2 * PAD_Y + 0.6;
