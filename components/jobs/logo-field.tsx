@@ -5,6 +5,7 @@ import { Button } from "@/components/ui/button";
 import { apiSend, apiUpload, failureText } from "@/components/ui/fetcher";
 import { FileButton } from "@/components/ui/file-button";
 import { bytesText } from "@/components/ui/format";
+import { logoAddress } from "@/components/ui/logo-address";
 import { Notice } from "@/components/ui/notice";
 import { LOGO_MAX_BYTES } from "@/lib/rules/write-bodies";
 
@@ -22,7 +23,7 @@ export function LogoField({ path, logo, editable, onChanged }: LogoFieldProps) {
   const [trouble, setTrouble] = useState<string | null>(null);
   const [busy, setBusy] = useState(false);
   const preview = useObjectUrl(file);
-  const shown = preview ?? (logo ? `/api/objects/logo/${logo.key}` : null);
+  const shown = preview ?? (logo ? logoAddress(logo) : null);
   const run = async (work: () => Promise<unknown>) => {
     setBusy(true);
     setTrouble(null);

@@ -4,6 +4,7 @@ import { useMemo, useState } from "react";
 import { composeSheet, type SheetInput, type SheetPage } from "@/iso";
 import { measureText } from "@/fonts/widths";
 import { ChoiceRow } from "@/components/ui/choice-row";
+import { logoAddress } from "@/components/ui/logo-address";
 import { Notice } from "@/components/ui/notice";
 import { DisplaySvg } from "./display-svg";
 
@@ -61,7 +62,7 @@ function PageSvg({ page, label, logo }: { readonly page: SheetPage; readonly lab
   return (
     <svg viewBox={`0 0 ${page.widthMm} ${page.heightMm}`} role="img" aria-label={label} className="drawn block h-auto w-full bg-white">
       <DisplaySvg items={page.items} />
-      {box && logo ? <image href={`/api/objects/logo/${logo.key}`} x={box.minX} y={box.minY} width={box.maxX - box.minX} height={box.maxY - box.minY} preserveAspectRatio="xMidYMid meet" /> : null}
+      {box && logo ? <image href={logoAddress(logo)} x={box.minX} y={box.minY} width={box.maxX - box.minX} height={box.maxY - box.minY} preserveAspectRatio="xMidYMid meet" /> : null}
     </svg>
   );
 }

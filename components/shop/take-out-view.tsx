@@ -1,0 +1,169 @@
+"use client";
+import { useMemo, useState } from "react";
+import { catalogueKeys, catalogueValue, catalogueWords, formatTerm, parseLength, type TakeOutWord, type UnitSystem } from "@/iso";
+import { Button } from "@/components/ui/button";
+import { ChoiceRow } from "@/components/ui/choice-row";
+import { Dialog, DialogActions } from "@/components/ui/dialog";
+import { EmptyState } from "@/components/ui/empty-state";
+import { apiSend, failureText, refreshApi, useApi } from "@/components/ui/fetcher";
+import { TextField } from "@/components/ui/field";
+import { countText, dayText } from "@/components/ui/format";
+import { Loaded } from "@/components/ui/loaded";
+import { Notice, useToast } from "@/components/ui/notice";
+import { SearchField } from "@/components/ui/search-field";
+import { Section } from "@/components/ui/section";
+import { Table, type Column } from "@/components/ui/table";
+import type { ShopSettings } from "@/lib/rules/api-types";
+
+interface TakeOutRow {
+  readonly key: string;
+  readonly words: string;
+  /** In the shop's units. */
+  readonly value: string;
+  readonly source: string;
+  readonly fromMemory: boolean;
+  readonly word: TakeOutWord | null;
+}
+
+type Filter = "open" | "ours" | "all";
+const MOST_SHOWN = 60;
+
+/** Catalogue take-outs: those from memory wait for the shop's word; any may be replaced by what the shop measured. */
+export function TakeOutView({ owner }: { readonly owner: boolean }) {
+  const shop = useApi<ShopSettings>("/api/shop");
+  return (
+    <Section title="Take-outs">
+      <p className="mb-4 max-w-prose text-soft">
+        Take-outs are nominal: measure the fitting in hand. One from memory is marked unverified on every cut list until the owner confirms it or enters what the shop measured.
+      </p>
+      <Loaded api={shop} label="Loading take-outs">
+        {(data) => <TakeOuts words={data.takeOuts} units={data.defaults.units} owner={owner} />}
+      </Loaded>
+    </Section>
+  );
+}
+
+function rowsOf(words: readonly TakeOutWord[], units: UnitSystem): readonly TakeOutRow[] {
+  return catalogueKeys().flatMap((key) => {
+    const value = catalogueValue(key, units, words);
+    if (!value) return [];
+    const word = words.findLast((one) => one.key === key) ?? null;
+    return [{ key, words: catalogueWords(key), value: formatTerm(value.mm, units), source: value.source, fromMemory: value.fromMemory === "yes", word }];
+  });
+}
+
+const FILTERS: Readonly<Record<Filter, (row: TakeOutRow) => boolean>> = {
+  open: (row) => row.fromMemory && row.word === null,
+  ours: (row) => row.word !== null,
+  all: () => true,
+};
+
+function TakeOuts({ words, units, owner }: { readonly words: readonly TakeOutWord[]; readonly units: UnitSystem; readonly owner: boolean }) {
+  const rows = useMemo(() => rowsOf(words, units), [words, units]);
+  const [filter, setFilter] = useState<Filter>("open");
+  const [search, setSearch] = useState("");
+  const [editing, setEditing] = useState<TakeOutRow | null>(null);
+  const parts = search.toLowerCase().split(/\s+/).filter(Boolean);
+  const found = rows.filter((row) => FILTERS[filter](row) && parts.every((part) => row.words.toLowerCase().includes(part)));
+  const choice = (value: Filter, word: string) => ({ value, label: `${word} (${rows.filter(FILTERS[value]).length})` });
+  return (
+    <>
+      <div className="mb-3 flex flex-wrap items-end justify-between gap-x-6 gap-y-3">
+        <ChoiceRow label="Which take-outs" value={filter} onChange={setFilter} choices={[choice("open", "To confirm"), choice("ours", "With our word"), choice("all", "All")]} />
+        <SearchField label="Search fitting, size" value={search} onChange={setSearch} />
+      </div>
+      {found.length === 0 ? (
+        <EmptyState title="None here">Change the search or choose All.</EmptyState>
+      ) : (
+        <Table caption="Take-outs" columns={columnsFor(units, owner, setEditing)} rows={found.slice(0, MOST_SHOWN)} rowKey={(row) => row.key} />
+      )}
+      <p role="status" className="mt-3 text-sm text-soft">
+        {found.length > MOST_SHOWN ? `The first ${MOST_SHOWN} of ${found.length} are shown; search to narrow.` : countText(found.length, "take-out")}
+      </p>
+      <WordDialog row={editing} units={units} onClose={() => setEditing(null)} />
+    </>
+  );
+}
+
+function columnsFor(units: UnitSystem, owner: boolean, onEdit: (row: TakeOutRow) => void): readonly Column<TakeOutRow>[] {
+  const columns: Column<TakeOutRow>[] = [
+    { key: "words", head: "Fitting", cell: (row) => row.words },
+    { key: "value", head: units === "metric" ? "Take-out, mm" : "Take-out, in", figure: true, cell: (row) => row.value },
+    { key: "source", head: "Source", cell: (row) => <span className="text-sm">{row.source}</span> },
+    {
+      key: "word",
+      head: "Our word",
+      cell: (row) =>
+        row.word ? (
+          <span className="text-sm">
+            {row.word.valueMm === null ? "Confirmed" : "Measured"} by {row.word.by}, {dayText(row.word.at)}
+          </span>
+        ) : row.fromMemory ? (
+          <strong className="text-caution">Unverified</strong>
+        ) : (
+          <span className="text-soft">none needed</span>
+        ),
+    },
+  ];
+  if (owner) {
+    columns.push({
+      key: "edit",
+      head: "",
+      cell: (row) => (
+        <Button onClick={() => onEdit(row)} aria-label={`Give our word on ${row.words}`}>
+          {row.fromMemory && !row.word ? "Confirm" : "Change"}
+        </Button>
+      ),
+    });
+  }
+  return columns;
+}
+
+function WordDialog({ row, units, onClose }: { readonly row: TakeOutRow | null; readonly units: UnitSystem; readonly onClose: () => void }) {
+  return (
+    <Dialog open={row !== null} onClose={onClose} title={row?.words ?? ""}>
+      {row ? <WordForm row={row} units={units} onDone={onClose} /> : null}
+    </Dialog>
+  );
+}
+
+function WordForm({ row, units, onDone }: { readonly row: TakeOutRow; readonly units: UnitSystem; readonly onDone: () => void }) {
+  const say = useToast();
+  const [typed, setTyped] = useState("");
+  const [trouble, setTrouble] = useState<string | null>(null);
+  const parsed = typed.trim() === "" ? null : parseLength(typed, units);
+  const record = async (valueMm: number | null) => {
+    setTrouble(null);
+    try {
+      await apiSend("POST", "/api/shop/take-outs", { key: row.key, valueMm });
+      await refreshApi("/api/shop");
+      say(valueMm === null ? "Confirmed as tabulated." : "Recorded as measured.");
+      onDone();
+    } catch (failure) {
+      setTrouble(failureText(failure));
+    }
+  };
+  return (
+    <>
+      {trouble ? <Notice tone="trouble" className="mb-3">{trouble}</Notice> : null}
+      <p>
+        The table says <strong className="figure">{row.value}</strong> {units === "metric" ? "mm" : "in"} ({row.source}).
+      </p>
+      <TextField
+        className="mt-4"
+        label="What the shop measured"
+        hint="Leave empty to confirm the table's number."
+        figure
+        value={typed}
+        onChange={(event) => setTyped(event.target.value)}
+        error={parsed && !parsed.ok ? parsed.message : undefined}
+        caution={parsed?.ok ? `Understood: ${parsed.understood}` : undefined}
+      />
+      <DialogActions>
+        <Button tone="primary" disabled={parsed !== null && !parsed.ok} onClick={() => void record(parsed?.ok ? parsed.mm : null)}>
+          {parsed ? "Use what we measured" : "Confirm as tabulated"}
+        </Button>
+      </DialogActions>
+    </>
+  );
+}
