@@ -6,12 +6,16 @@ import { FACES, type FaceName } from "@/fonts/families";
 
 const parsed = new Map<FaceName, fontkit.Font>();
 
+/** The face's file. Throws when it is missing from fonts/. */
+export function faceBytes(face: FaceName): Buffer {
+  return readFileSync(path.join(process.cwd(), "fonts", FACES[face].file));
+}
+
 /** The parsed face. Throws when its file is missing from fonts/: a broken installation. */
 export function faceFont(face: FaceName): fontkit.Font {
   const known = parsed.get(face);
   if (known) return known;
-  const bytes = readFileSync(path.join(process.cwd(), "fonts", FACES[face].file));
-  const font = fontkit.create(bytes);
+  const font = fontkit.create(faceBytes(face));
   if (!("glyphForCodePoint" in font)) throw new Error(`${FACES[face].file} is not a single face`);
   parsed.set(face, font);
   return font;

@@ -1,7 +1,7 @@
 /** Legend of the marks a drawing uses, as one strip of symbol and word. Marks differ between firms, so each sheet says its own. */
 import type { DisplayItem, LegendKey, MeasureText } from "../draw/drawing-types";
 import type { PaperBox, PaperPoint } from "../geometry/types";
-import { boxOutline, circleAt, lineFrom, polygonOf, textAt } from "./items";
+import { boxOutline, circleAt, itemMoved, lineFrom, polygonOf, textAt } from "./items";
 import { TEXT_CAP } from "./sheet-size";
 
 const WORDS: Readonly<Record<LegendKey, string>> = {
@@ -55,13 +55,13 @@ function symbolOf(key: LegendKey, [x, y]: PaperPoint): DisplayItem[] {
   const dot = circleAt([x, y], 1.5, { layer: "title", stroke: null, fill: "ink" });
   const letter = (text: string, capMm = TEXT_CAP) => textAt([x, y + capMm / 2], text, { layer: "title", anchor: "middle", capMm });
   if (key === "shop-weld") return [pipe, dot];
-  if (key === "field-weld" || key === "field-fit-weld") return [pipe, dot, ...flag([x, y], key === "field-fit-weld")];
+  if (key === "field-weld" || key === "field-fit-weld") return [pipe, dot, ...flag([x, y], key === "field-fit-weld")].map((item) => itemMoved(item, [0, 1.3]));
   if (key === "material-item") return [circleAt([x, y], 3.3, THIN), letter("1")];
   if (key === "weld-number") return [polygonOf(hexagon([x, y], 3.6), { ...THIN, stroke: "dye" }), letter("1")];
   if (key === "cut-piece") return [boxOutline({ minX: x - 3.8, minY: y - 2.6, maxX: x + 3.8, maxY: y + 2.6 }, THIN), letter("P1")];
   if (key === "spool") return [boxOutline({ minX: x - 3, minY: y - 3, maxX: x + 3, maxY: y + 3 }, { ...THIN, widthMm: 0.5 }), letter("A")];
   if (key === "flow") return [pipe, polygonOf([[x - 2, y - 1.5], [x + 2.4, y], [x - 2, y + 1.5]], { layer: "title", stroke: null, fill: "ink" })];
-  if (key === "support") return [pipe, polygonOf([[x, y + 0.4], [x + 1.8, y + 3.2], [x - 1.8, y + 3.2]], THIN)];
+  if (key === "support") return [pipe, polygonOf([[x, y + 0.4], [x + 1.8, y + 3.2], [x - 1.8, y + 3.2]], THIN)].map((item) => itemMoved(item, [0, -1.6]));
   if (key === "revision") return [polygonOf([[x, y - 3.4], [x + 3.7, y + 2.6], [x - 3.7, y + 2.6]], THIN), textAt([x, y + 1.9], "A", { layer: "title", anchor: "middle" })];
   if (key === "reference-dimension") return [letter("( )")];
   return [letter("VIF")];

@@ -41,7 +41,7 @@ export function stateAcross(input: SheetInput["revision"], box: PaperBox, measur
   // The turned word's own box must stay within the room: width·cos + cap·sin, width·sin + cap·cos.
   const byWidth = (width * 0.94) / (perCap * Math.cos(slope) + Math.sin(slope));
   const byHeight = (height * 0.94) / (perCap * Math.sin(slope) + Math.cos(slope));
-  const capMm = Math.min(byWidth, byHeight, 46);
+  const capMm = Math.min(byWidth, byHeight, height * 0.26);
   const middle = [(box.minX + box.maxX) / 2, (box.minY + box.maxY) / 2] as const;
   // Half a capital down, square to the turned baseline.
   const at = [middle[0] + (capMm / 2) * Math.sin(slope), middle[1] + (capMm / 2) * Math.cos(slope)] as const;

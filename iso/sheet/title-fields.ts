@@ -13,6 +13,8 @@ export interface Field {
 /** A heading above the fields that follow it. */
 export interface FieldHeading {
   readonly heading: string;
+  /** How many of them stay in one column with it. */
+  readonly keeps: number;
 }
 
 export type TitleEntry = Field | FieldHeading;
@@ -31,7 +33,7 @@ export function titleEntries(facts: SheetFacts): TitleEntry[] {
     field("AREA", titleBlock.area),
     ...titleBlock.fields.slice(0, 6).map(({ label, value }) => field(label.toUpperCase(), value)),
     ...lineFields(facts),
-    { heading: "AS ENTERED, PER OWNER'S SPECIFICATION" },
+    { heading: "AS ENTERED, PER OWNER'S SPECIFICATION", keeps: 5 },
     field("INSULATION", entered.insulation),
     field("PWHT", entered.pwht),
     field("NDE", entered.nde),
@@ -84,16 +86,15 @@ function lineFields(facts: SheetFacts): Field[] {
     field("SCHEDULE", (schedules.length > 0 ? schedules : [pipe.schedule]).join(", ")),
     field("MATERIAL", (materials.length > 0 ? materials : [pipe.material]).join(", ")),
     ...(pipe.specification.trim() === "" ? [] : [field("SPEC", pipe.specification)]),
+    field("UNITS", facts.input.units === "metric" ? "millimetres" : "feet and inches"),
+    field("SCALE", "NTS"),
+    field("NORTH", "PLANT N, see arrow"),
   ];
 }
 
 function sheetFields(facts: SheetFacts): Field[] {
-  const { units } = facts.input;
   const includes = facts.model.document.settings.faceIncludesGasket;
   return [
-    field("UNITS", units === "metric" ? "millimetres" : "feet and inches"),
-    field("SCALE", "NTS"),
-    field("NORTH", "PLANT N, see arrow"),
     field("FACES", `dimensions to faces ${includes ? "include" : "leave out"} the gasket`),
     field("TOLERANCE", toleranceText(facts)),
     field("WEIGHT", weightText(facts), 3),

@@ -6,7 +6,7 @@ import type { CutText } from "./notes-table";
 import { EDGE_LINE, HEAD_CAP, RULE_LINE, TEXT_CAP } from "./sheet-size";
 import type { TitleBlock } from "./sheet-types";
 import { baselineOf, BOLD, fitText, linesHeight } from "./text-setting";
-import type { Field, TitleEntry } from "./title-fields";
+import type { Field, FieldHeading, TitleEntry } from "./title-fields";
 
 const PAD_X = 1.4;
 const PAD_Y = 0.4;
@@ -15,7 +15,10 @@ const LABEL_GAP = 1.8;
 const LONGEST_LABEL = 24;
 
 interface SetField {
+  /** null for a heading. */
   readonly label: string | null;
+  /** Fields after this one that stay in its column. */
+  readonly keeps: number;
   readonly lines: readonly string[];
   readonly heightMm: number;
 }
@@ -36,7 +39,7 @@ export function setFields(entries: readonly TitleEntry[], widthMm: number, colum
   const columnMm = widthMm / columnCount;
   const labelMm = Math.min(LONGEST_LABEL, Math.max(0, ...entries.map((entry) => ("label" in entry ? measure(entry.label, TEXT_CAP, "regular") : 0)))) + LABEL_GAP;
   const cut: CutText[] = [];
-  const fields = entries.map((entry) => ("heading" in entry ? setHeading(entry.heading, columnMm, measure) : setField(entry, columnMm, labelMm, cut, measure)));
+  const fields = entries.map((entry) => ("heading" in entry ? setHeading(entry, columnMm, measure) : setField(entry, columnMm, labelMm, cut, measure)));
   let heightMm = leastMm;
   let columns = breakColumns(fields, columnCount, heightMm, firstBlockMm);
   while (columns === null) {
@@ -46,27 +49,26 @@ export function setFields(entries: readonly TitleEntry[], widthMm: number, colum
   return { columns, labelMm: columns.map(() => labelMm), heightMm, cut };
 }
 
-function setHeading(text: string, columnMm: number, measure: MeasureText): SetField {
-  const { lines } = fitText(text, columnMm - 2 * PAD_X, 2, { capMm: TEXT_CAP, face: "regular" }, measure);
-  return { label: null, lines, heightMm: linesHeight(lines.length) + 2 * PAD_Y };
+function setHeading({ heading, keeps }: FieldHeading, columnMm: number, measure: MeasureText): SetField {
+  const { lines } = fitText(heading, columnMm - 2 * PAD_X, 2, { capMm: TEXT_CAP, face: "regular" }, measure);
+  return { label: null, keeps, lines, heightMm: linesHeight(lines.length) + 2 * PAD_Y };
 }
 
 function setField(field: Field, columnMm: number, labelMm: number, cut: CutText[], measure: MeasureText): SetField {
   const label = fitText(field.label, labelMm - LABEL_GAP, 1, { capMm: TEXT_CAP, face: "regular" }, measure);
   const value = fitText(field.value, columnMm - 2 * PAD_X - labelMm, field.maxLines, BOLD, measure);
   if (label.cut || value.cut) cut.push({ label: field.label, text: field.value });
-  return { label: label.lines[0] ?? "", lines: value.lines, heightMm: linesHeight(value.lines.length) + 2 * PAD_Y };
+  return { label: label.lines[0] ?? "", keeps: 0, lines: value.lines, heightMm: linesHeight(value.lines.length) + 2 * PAD_Y };
 }
 
-/** Fields in order into columns of a height, or null when they need more; a heading never stands last in its column. */
+/** Fields in order into columns of a height, or null when they need more; a heading keeps its fields. */
 function breakColumns(fields: readonly SetField[], columnCount: number, heightMm: number, firstBlockMm: number): SetField[][] | null {
   const columns: SetField[][] = [[]];
   let used = firstBlockMm;
   for (const [index, field] of fields.entries()) {
-    const next = fields[index + 1];
-    const needs = field.label === null && next ? field.heightMm + next.heightMm : field.heightMm;
+    const needs = fields.slice(index, index + 1 + field.keeps).reduce((sum, one) => sum + one.heightMm, 0);
     if (used + needs > heightMm) {
-      if (columns.length === columnCount || field.heightMm > heightMm) return null;
+      if (columns.length === columnCount || needs > heightMm) return null;
       columns.push([]);
       used = 0;
     }
@@ -84,10 +86,10 @@ export function fieldItems(set: FieldColumns, box: PaperBox, firstBlockMm: numbe
     const x = box.minX + column * columnMm;
     let y = box.minY + (column === 0 ? firstBlockMm : 0);
     const items: DisplayItem[] = column === 0 ? [] : [lineFrom([x, box.minY], [x, box.maxY], EDGE_LINE, "title")];
-    for (const field of fields) {
+    for (const [index, field] of fields.entries()) {
       items.push(...oneField(field, x, y, set.labelMm[column]!));
       y += field.heightMm;
-      if (y < box.maxY - RULE_LINE) items.push(lineFrom([x, y], [x + columnMm, y], RULE_LINE, "title"));
+      if (index < fields.length - 1) items.push(lineFrom([x, y], [x + columnMm, y], RULE_LINE, "title"));
     }
     return items;
   });

@@ -1,0 +1,74 @@
+/**
+ * Marks a copy of stored bytes at print time; the stored bytes themselves never change. The word of a dead or held
+ * revision goes across every page, the print's time and person into the margin under the frame.
+ */
+import { degrees, PDFDocument, rgb, type PDFFont, type PDFPage } from "pdf-lib";
+import { FACES } from "@/fonts/families";
+import { printableText } from "@/fonts/printable";
+import { EM_PER_CAPITAL } from "@/fonts/widths";
+import { copyFontkit } from "./copy-fontkit";
+import { faceBytes } from "./faces";
+
+export interface CopyMark {
+  /** Across every page; null for a live revision, whose copies carry the foot line only. */
+  readonly word: "SUPERSEDED" | "VOID" | "HOLD" | null;
+  /** ISO time of printing, handed in. */
+  readonly printedAt: string;
+  readonly printedBy: string;
+}
+
+const POINTS_PER_MM = 72 / 25.4;
+const INK = rgb(0.07, 0.07, 0.07);
+/** Capital height of the foot line, mm. */
+const FOOT_CAP = 2.5;
+/** Baseline of the foot line above the paper's edge: in the margin, and inside what printers reach. */
+const FOOT_BASELINE = 5.2;
+const FOOT_LEFT = 20;
+
+/**
+ * A marked copy. The same bytes and mark give the same copy. Throws when the bytes are no PDF: stored sheets always are.
+ */
+export async function markCopy(bytes: Uint8Array, mark: CopyMark): Promise<Uint8Array> {
+  const document = await PDFDocument.load(bytes, { updateMetadata: false });
+  document.registerFontkit(copyFontkit);
+  const bold = await document.embedFont(faceBytes("bold"), { subset: true, customName: FACES.bold.family });
+  for (const page of document.getPages()) {
+    if (mark.word !== null) stampAcross(page, mark.word, bold);
+    stampFoot(page, mark, bold);
+  }
+  return document.save();
+}
+
+/** The word along the page's rising diagonal between two heavy lines, see-through so that everything below stays readable. */
+function stampAcross(page: PDFPage, word: string, font: PDFFont): void {
+  const { width, height } = page.getSize();
+  const slope = Math.atan2(height, width) * 0.8;
+  const reach = Math.min(width / Math.cos(slope), height / Math.sin(slope)) * 0.8;
+  const size = Math.min((reach * 0.92) / font.widthOfTextAtSize(word, 1), height * 0.22);
+  const half = font.widthOfTextAtSize(word, size) / 2;
+  const capital = size / EM_PER_CAPITAL;
+  const along = [Math.cos(slope), Math.sin(slope)] as const;
+  const at = (s: number, t: number) => ({ x: width / 2 + s * along[0] - t * along[1], y: height / 2 + s * along[1] + t * along[0] });
+  page.drawText(word, { ...at(-half, -capital / 2), size, font, rotate: degrees((slope * 180) / Math.PI), color: INK, opacity: 0.26 });
+  for (const side of [-1, 1]) {
+    page.drawLine({ start: at(-reach / 2, side * capital * 0.85), end: at(reach / 2, side * capital * 0.85), thickness: 2.4, color: INK, opacity: 0.5 });
+  }
+}
+
+function stampFoot(page: PDFPage, mark: CopyMark, font: PDFFont): void {
+  const { width } = page.getSize();
+  const size = FOOT_CAP * EM_PER_CAPITAL * POINTS_PER_MM;
+  const room = width - (FOOT_LEFT + 10) * POINTS_PER_MM;
+  const dead = mark.word === null ? "" : ` ${mark.word}: do not work to this sheet.`;
+  const text = (name: string) => printableText(`UNCONTROLLED COPY, printed ${printTime(mark.printedAt)} by ${name}.${dead}`).text;
+  let name = [...mark.printedBy.replace(/\s+/g, " ").trim()].slice(0, 120);
+  while (name.length > 0 && font.widthOfTextAtSize(text(name.join("")), size) > room) name = name.slice(0, -1);
+  const shown = name.length < [...mark.printedBy.trim()].length ? `${name.slice(0, -1).join("")}…` : name.join("");
+  page.drawText(text(shown), { x: FOOT_LEFT * POINTS_PER_MM, y: FOOT_BASELINE * POINTS_PER_MM, size, font, color: INK });
+}
+
+/** "2025-03-14 15:20 UTC" from an ISO time in UTC, else as it came. */
+function printTime(iso: string): string {
+  const match = /^(\d{4}-\d{2}-\d{2})T(\d{2}:\d{2})/.exec(iso);
+  return match && iso.endsWith("Z") ? `${match[1]} ${match[2]} UTC` : iso;
+}
