@@ -26,9 +26,18 @@ export * from "./closing/close-between";
 // run
 export * from "./run/document";
 export * from "./run/model-types";
+export * from "./run/build-model";
+export * from "./run/marks";
+export * from "./run/mark-names";
+export * from "./run/defaults";
+export * from "./run/axes";
 
 // draw
 export * from "./draw/drawing-types";
+export { drawModel } from "./draw/draw-model";
+export { proposeView } from "./draw/orient";
+export * from "./draw/svg";
+export { inkBounds } from "./draw/item-bounds";
 
 // sheet
 export * from "./sheet/sheet-types";

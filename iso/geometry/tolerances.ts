@@ -62,3 +62,6 @@ export const CLOSING_LENGTH_SHARE = 1e-12;
 
 /** Radians (0.05°). A bend this near 90° is a whole elbow: less than its own tolerance shows. */
 export const CLOSING_STANDARD_ANGLE = (0.05 * Math.PI) / 180;
+
+/** Radians. A polygon of pipe directions no wider than this across its last cut is a thread: the centre's own rounding is as wide. */
+export const CLOSING_THREAD = 1e-6;

@@ -127,8 +127,11 @@ export const pointSchema = z.object({
   id,
   offset: offsetSchema,
   item: itemSchema.default({ kind: "none" }),
-  /** Where the welds of this point's item are made: `in` is the upstream one, `out` the downstream, `branch` a branch weld. */
-  places: z.object({ in: placeSchema, out: placeSchema, branch: placeSchema }).partial().default({}),
+  /**
+   * Where the joints of this point's item are made: `in` is the upstream weld, `out` the downstream one, `branch` the weld
+   * that takes the branch pipe, `bolts` its bolted faces (shop unless said; field opens the line there).
+   */
+  places: z.object({ in: placeSchema, out: placeSchema, branch: placeSchema, bolts: placeSchema }).partial().default({}),
   /** Supplied extra length at a field-fit joint of this point, mm; null = the line's. */
   trimMm: positiveMm.nullable().default(null),
   provenance: provenanceSchema.default({ kind: "from-drawing", toleranceMm: null, by: null, at: null, second: null }),

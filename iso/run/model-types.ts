@@ -214,6 +214,8 @@ export interface MarksRegister {
   readonly welds: Readonly<Record<string, string>>;
   readonly pieces: Readonly<Record<string, string>>;
   readonly spools: Readonly<Record<string, string>>;
+  /** Per spool anchor, the parts it held when last marked: tells a spool that moved from one that was split or merged. */
+  readonly spoolParts?: Readonly<Record<string, readonly string[]>>;
   /** Marks whose joint, piece or spool is gone: listed for ever, never reused. */
   readonly voided: readonly { readonly kind: "weld" | "piece" | "spool"; readonly mark: string; readonly key: string }[];
 }

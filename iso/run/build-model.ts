@@ -1,0 +1,125 @@
+/**
+ * From what was typed to what it means. The passes, in order: place runs · join faces · fit points · cut stretches ·
+ * check · group spools · mark · assemble. Pure, same input same model; never throws on what a user can type.
+ */
+import { buildContext, type BuildContext } from "./build-context";
+import type { Fitting, JointDraft, PlacedPoint, PlacedRun } from "./build-types";
+import { assembleSpools } from "./assemble-spools";
+import { checkRuns } from "./check-line";
+import { fillStretch, runStretches } from "./cut-stretches";
+import type { RunDocument } from "./document";
+import { fitPoint } from "./fit-point";
+import { groupSpools, type Parts, type SpoolGroup } from "./group-spools";
+import { joinFaces } from "./join-faces";
+import { advanceMarks, type Markable } from "./marks";
+import type { Component, Joint, Leg, MarksRegister, Model, Node, Piece, TakeOutWord } from "./model-types";
+import { placeRuns } from "./place-runs";
+import { weighedComponent } from "./weights";
+
+/** A line before its marks are given. */
+interface Structure {
+  readonly runs: readonly PlacedRun[];
+  readonly legs: readonly Leg[];
+  readonly parts: Parts;
+  readonly groups: readonly SpoolGroup[];
+  readonly ctx: BuildContext;
+}
+
+/** The model of a document, with marks as the register will give them. Lengths in mm, angles in radians. */
+export function buildModel(document: RunDocument, marks: MarksRegister, takeOuts: readonly TakeOutWord[]): Model {
+  const line = buildStructure(document, takeOuts);
+  const register = advanceMarks(markable(line), marks);
+  const letters = line.groups.map((g) => register.spools[g.anchor] ?? "?");
+  const spools = assembleSpools(line.parts, line.groups, letters, line.legs, document, line.ctx);
+  const letterOf = new Map(spools.flatMap((s) => [...s.componentIds, ...s.pieceKeys].map((id) => [id, s.letter] as const)));
+  const spoolOf = (id: string | null) => (id === null ? null : (letterOf.get(id) ?? null));
+  return {
+    document,
+    nodes: line.runs.flatMap((run) => run.points.map(nodeOf)),
+    legs: line.legs,
+    components: line.parts.components.map((c) => ({ ...c, spool: spoolOf(c.id) })),
+    joints: line.parts.joints.map((j) => jointOf(j, register, spoolOf(j.a) ?? spoolOf(j.b))),
+    pieces: line.parts.pieces.map(({ trimMm: _, ...p }): Piece => ({ ...p, mark: register.pieces[p.key] ?? "", spool: spoolOf(p.key) })),
+    spools,
+    problems: line.ctx.problems,
+  };
+}
+
+/** The register after this document: what a save stores. */
+export function nextMarks(document: RunDocument, marks: MarksRegister, takeOuts: readonly TakeOutWord[]): MarksRegister {
+  return advanceMarks(markable(buildStructure(document, takeOuts)), marks);
+}
+
+function buildStructure(document: RunDocument, takeOuts: readonly TakeOutWord[]): Structure {
+  const ctx = buildContext(document.settings, takeOuts);
+  const runs = joinFaces(placeRuns(document, ctx), ctx);
+  const points = new Map<string, PlacedPoint>(runs.flatMap((r) => r.points.map((p) => [p.uid, p] as const)));
+  checkRuns(runs, ctx);
+  const fittings = new Map<string, Fitting>([...points].map(([uid, p]) => [uid, fitPoint(p, ctx)]));
+  const parts = collectParts(runs, fittings, points, ctx);
+  return { runs, legs: runs.flatMap((r) => r.legs.flatMap((l) => l ?? [])), parts, groups: groupSpools(parts), ctx };
+}
+
+/** Puts fittings and what lies between them in one flow order: along the main run, then along each branch. */
+function collectParts(runs: readonly PlacedRun[], fittings: ReadonlyMap<string, Fitting>, points: ReadonlyMap<string, PlacedPoint>, ctx: BuildContext): Parts {
+  const order: string[] = [];
+  const components: Component[] = [];
+  const joints: JointDraft[] = [];
+  const pieces: Parts["pieces"][number][] = [];
+  const held: (readonly [string, string])[] = [];
+  const put = (list: readonly Component[]) => {
+    for (const c of list) {
+      order.push(c.id);
+      components.push(weighedComponent(c, ctx.units));
+    }
+  };
+  for (const run of runs) {
+    const endingAt = new Map(runStretches(run, fittings, points).map((s) => [s.to.uid, s]));
+    for (const p of run.points) {
+      const stretch = endingAt.get(p.uid);
+      const between = stretch ? fillStretch(stretch, ctx) : null;
+      if (between) {
+        put(between.components);
+        if (between.piece) {
+          order.push(between.piece.key);
+          pieces.push(between.piece);
+        }
+        joints.push(...between.joints);
+        held.push(...between.held);
+      }
+      const fitting = fittings.get(p.uid);
+      put(fitting?.components ?? []);
+      joints.push(...(fitting?.joints ?? []));
+    }
+  }
+  return { order, components, joints: uniqueJoints(joints), pieces, held };
+}
+
+/** A plain weld is offered by the pipes on both sides of it; the two halves become one joint. */
+function uniqueJoints(joints: readonly JointDraft[]): JointDraft[] {
+  const byKey = new Map<string, JointDraft>();
+  for (const j of joints) {
+    const seen = byKey.get(j.key);
+    byKey.set(j.key, seen ? { ...seen, a: seen.a ?? j.a, b: seen.b ?? j.b, gapMm: seen.gapMm + j.gapMm } : j);
+  }
+  return [...byKey.values()];
+}
+
+function markable(line: Structure): Markable {
+  return {
+    welds: line.parts.joints.filter((j) => j.kind !== "bolted" && j.kind !== "attachment").map((j) => ({ key: j.key, runId: j.runId })),
+    pieces: line.parts.pieces.map((p) => ({ key: p.key, runId: p.runId })),
+    spools: line.groups.map((g) => ({ anchor: g.anchor, parts: [...g.componentIds, ...g.pieceKeys] })),
+  };
+}
+
+function jointOf(j: JointDraft, register: MarksRegister, spool: string | null): Joint {
+  const { runId: _run, gasketId: _gasket, ...rest } = j;
+  return { ...rest, number: Object.hasOwn(register.welds, j.key) ? (register.welds[j.key] ?? null) : null, spool };
+}
+
+function nodeOf(p: PlacedPoint): Node {
+  return {
+    pointId: p.point.id, runId: p.runId, index: p.index, position: p.position, arriving: p.arriving, leaving: p.leaving, turnRad: p.turnRad,
+  };
+}

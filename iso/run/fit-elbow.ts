@@ -1,0 +1,121 @@
+/**
+ * Elbows, named or taken by themselves at a change of direction.
+ *
+ * A standard elbow of angle A welded into a turn of θ splits the mismatch equally. Its faces stand apart by the chord of
+ * the fitting, 2·C·cos(A/2) with C its tabulated take-out; seen from the corner of the two pipe centre lines the same
+ * chord is 2·t·cos(θ/2). So t = C·cos(A/2)/cos(θ/2), which is C·cos 45°/cos(θ/2) for a 90. A trimmed elbow of bend
+ * radius R has t = R·tan(θ/2) (geometry of a tangent arc).
+ */
+import { WELD_MISMATCH_RAD } from "../geometry/tolerances";
+import { vecNegate } from "../geometry/vec3";
+import { elbowKey, socketKey } from "../catalogue/keys";
+import { formatAngleDeg } from "../units/format";
+import { takeOutTerm, plainTerm, sentenceStart, type BuildContext } from "./build-context";
+import type { Fitting, PlacedPoint } from "./build-types";
+import type { Item } from "./document";
+import { buttSide, endSide, fittingOf, flowAfter, flowAt, makeComponent, port, socketSide, unconfirmedOf } from "./fit-common";
+import { fitPlainWeld } from "./fit-plain";
+import { SOCKET_CLASS, sizeText } from "./words";
+
+type ElbowName = Extract<Item, { kind: "elbow" }>["elbow"];
+
+const RIGHT = Math.PI / 2;
+const HALF_RIGHT = Math.PI / 4;
+/** Radians (0.005 deg). An elbow this near its own angle is square: two printed digits of an angle. */
+const SQUARE_RAD = 0.005 * (Math.PI / 180);
+
+/** What stands at a change of direction where the detailer named nothing (common practice, a setting of the line). */
+export function autoElbow(p: PlacedPoint, ctx: BuildContext): ElbowName | "plain-weld" {
+  const within = (ctx.settings.standardElbowWithinDeg * Math.PI) / 180 + SQUARE_RAD;
+  const radius = ctx.settings.elbow === "SR" ? "sr" : "lr";
+  if (p.turnRad <= within) return "plain-weld";
+  if (Math.abs(p.turnRad - RIGHT) <= within) return `${radius}-90`;
+  if (Math.abs(p.turnRad - HALF_RIGHT) <= within) return "lr-45";
+  return `trimmed-${radius}`;
+}
+
+/** The elbow of a point: the named one, else the one its turn asks for. */
+export function fitElbow(p: PlacedPoint, named: ElbowName | null, ctx: BuildContext): Fitting {
+  const where = { pointId: p.point.id, runId: p.runId };
+  if (!p.arriving || !p.leaving) {
+    ctx.report("elbow-at-end", "warning", `${sentenceStart(p.label)} is an elbow at the end of a run: give the next point, so that it knows where it turns.`, where);
+    return fittingOf({ in: endSide(), out: endSide() });
+  }
+  const elbow = named ?? autoElbow(p, ctx);
+  if (elbow === "plain-weld") return fitPlainWeld(p, ctx);
+  if (p.turnRad === 0) {
+    ctx.report("elbow-straight", "stop", `${sentenceStart(p.label)} names an elbow but the line runs straight on: correct the offsets or take the elbow out.`, where);
+    return fittingOf({});
+  }
+  if (elbow === "trimmed-lr" || elbow === "trimmed-sr") return fitTrimmed(p, elbow, ctx);
+  return fitStandard(p, elbow, ctx);
+}
+
+function fitStandard(p: PlacedPoint, elbow: Exclude<ElbowName, "trimmed-lr" | "trimmed-sr">, ctx: BuildContext): Fitting {
+  const own = elbow.endsWith("90") ? RIGHT : HALF_RIGHT;
+  const socket = elbow.startsWith("sw");
+  const name = `${socket ? "socket" : elbow.startsWith("sr") ? "SR" : "LR"} ${elbow.endsWith("90") ? "90" : "45"}`;
+  const key = socket ? socketKey(elbow === "sw-90" ? "sw-90" : "sw-45", SOCKET_CLASS, p.pipeIn.nps) : elbowKey(elbow as "lr-90" | "sr-90" | "lr-45", p.pipeIn.nps);
+  const value = ctx.takeOut(key, `${name} elbow take-out in ${sizeText(p.pipeIn.nps, ctx.units)}`, p);
+  const off = Math.abs(p.turnRad - own) > SQUARE_RAD;
+  const cos = Math.max(Math.cos(p.turnRad / 2), MIN_COS);
+  const factor = off ? Math.cos(own / 2) / cos : 1;
+  const label = off ? `${name} take-out at ${formatAngleDeg(p.turnRad)}` : `${name} take-out`;
+  const mismatchRad = off ? Math.abs(p.turnRad - own) / 2 : 0;
+  if (off) reportMismatch(p, name, mismatchRad, ctx);
+  const term = takeOutTerm(label, value, p.uid, factor);
+  const side = socket ? socketSide : buttSide;
+  const radius = socket ? null : ctx.bendRadius(elbow.startsWith("sr") ? "SR" : "LR", p.pipeIn.nps);
+  const description = socket ? `Elbow ${own === RIGHT ? 90 : 45}, socket-weld, class ${SOCKET_CLASS}` : `Elbow ${own === RIGHT ? 90 : 45} ${elbow.startsWith("sr") ? "SR" : "LR"}, butt-weld`;
+  const component = makeComponent(p, p.pipeIn, {
+    kind: socket ? "socket-elbow" : "elbow", ends: socket ? "socket" : "butt", description, source: value.source,
+    schedule: socket ? null : p.pipeIn.schedule, angleRad: p.turnRad, radiusMm: radius, unconfirmedKey: unconfirmedOf(value),
+    ports: elbowPorts(p, -term.valueMm),
+  });
+  const given = { terms: [term], componentId: p.uid, mismatchRad };
+  return fittingOf({ components: [component], in: side(p, "in", ctx, given), out: side(p, "out", ctx, given) });
+}
+
+/** Keeps a take-out finite when a line folds back on itself; the fold itself is reported. */
+const MIN_COS = 0.05;
+
+function reportMismatch(p: PlacedPoint, name: string, eachRad: number, ctx: BuildContext): void {
+  const where = { pointId: p.point.id, runId: p.runId };
+  const turn = formatAngleDeg(p.turnRad);
+  const each = formatAngleDeg(eachRad);
+  if (eachRad > WELD_MISMATCH_RAD) {
+    ctx.report("elbow-angle", "stop", `${sentenceStart(p.label)} turns ${turn}, which the ${name} elbow misses by ${each} at each weld: trim an elbow, or correct the offsets. Over 3° needs the engineer's permission.`, where);
+  } else {
+    ctx.report("elbow-mismatch", "note", `${sentenceStart(p.label)} turns ${turn}: the ${name} elbow takes ${each} of mismatch at each weld.`, where);
+  }
+}
+
+function fitTrimmed(p: PlacedPoint, elbow: "trimmed-lr" | "trimmed-sr", ctx: BuildContext): Fitting {
+  const where = { pointId: p.point.id, runId: p.runId };
+  const name = elbow === "trimmed-sr" ? "SR" : "LR";
+  const turn = formatAngleDeg(p.turnRad);
+  const value = ctx.takeOut(elbowKey(elbow === "trimmed-sr" ? "sr-90" : "lr-90", p.pipeIn.nps), `${name} 90 elbow in ${sizeText(p.pipeIn.nps, ctx.units)} to trim`, p);
+  const radius = value.mm;
+  const tooMuch = p.turnRad > RIGHT + SQUARE_RAD;
+  if (tooMuch) {
+    ctx.report("trim-over-90", "stop", `${sentenceStart(p.label)} turns ${turn}: nothing over 90° can be trimmed from a 90. Use two elbows, or a return.`, where);
+  } else {
+    ctx.report("trimmed-elbow", "warning", `${sentenceStart(p.label)} takes an ${name} elbow trimmed to ${turn}: confirm that trimming is permitted (engineer's permission).`, where);
+  }
+  const angleRad = Math.min(p.turnRad, RIGHT);
+  const takeOutMm = radius * Math.tan(angleRad / 2);
+  const term = { ...plainTerm("take-out", `${name} trimmed to ${turn} take-out`, takeOutMm, p.uid, value.source || null), unconfirmed: value.unconfirmed };
+  const component = makeComponent(p, p.pipeIn, {
+    kind: "trimmed-elbow", ends: "butt", description: `Elbow 90 ${name}, butt-weld, trimmed to ${turn}`, source: value.source,
+    schedule: p.pipeIn.schedule, angleRad, radiusMm: radius, unconfirmedKey: unconfirmedOf(value), ports: elbowPorts(p, takeOutMm),
+  });
+  const given = { terms: [term], componentId: p.uid };
+  return fittingOf({ components: [component], in: buttSide(p, "in", ctx, given), out: buttSide(p, "out", ctx, given) });
+}
+
+function elbowPorts(p: PlacedPoint, takeOutMm: number) {
+  return [
+    port("in", p.position, vecNegate(flowAt(p)), takeOutMm, p.pipeIn.nps),
+    port("out", p.position, flowAfter(p), takeOutMm, p.pipeIn.nps),
+  ];
+}

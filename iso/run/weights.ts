@@ -1,0 +1,52 @@
+/**
+ * Empty weights. Pipe by its table, LR 90 elbows by a published table; other butt-weld fittings are estimated from pipe
+ * of the same wall along their centre line (common practice, marked as an estimate). What is left is counted unweighed.
+ */
+import { elbowWeightKg, pipeWall } from "../catalogue/pipe";
+import { vecDistance } from "../geometry/vec3";
+import type { Nps, UnitSystem } from "./document";
+import type { Component } from "./model-types";
+
+const ESTIMATE = "estimated from pipe of the same wall";
+
+/** The component with its weight, where one can be told. */
+export function weighedComponent(c: Component, units: UnitSystem): Component {
+  if (c.weightKg !== null || c.weightSource !== "") return c;
+  const table = c.kind === "elbow" && c.radiusMm !== null && /^Elbow 90 LR/.test(c.description) && c.schedule ? elbowWeightKg("lr-90", c.nps, c.schedule) : null;
+  if (table) return { ...c, weightKg: table.kg, weightSource: table.source };
+  const length = estimateLengthMm(c, units);
+  const perMetre = c.schedule === null ? null : meanKgPerM(c, c.schedule, units);
+  if (length === null || perMetre === null) return { ...c, weightSource: "not known" };
+  return { ...c, weightKg: (length * perMetre) / 1000, weightSource: ESTIMATE };
+}
+
+function meanKgPerM(c: Component, schedule: string, units: UnitSystem): number | null {
+  const of = (nps: Nps) => pipeWall(nps, schedule, units)?.kgPerM ?? null;
+  const large = of(c.nps);
+  if (c.kind !== "reducer-concentric" && c.kind !== "reducer-eccentric") return large;
+  const small = c.nps2 === null ? large : of(c.nps2);
+  return large === null || small === null ? null : (large + small) / 2;
+}
+
+/** Centre-line length of steel in a butt-weld fitting, mm; null for what is no such fitting. */
+function estimateLengthMm(c: Component, units: UnitSystem): number | null {
+  const [a, b, d] = c.ports;
+  switch (c.kind) {
+    case "elbow":
+    case "trimmed-elbow":
+      return c.radiusMm !== null && c.angleRad !== null ? c.radiusMm * c.angleRad : null;
+    case "reducer-concentric":
+    case "reducer-eccentric":
+      return a && b ? vecDistance(a.position, b.position) : null;
+    case "tee":
+    case "reducing-tee": {
+      if (!a || !b || !d) return null;
+      const od = pipeWall(c.nps, c.schedule ?? "", units)?.odMm ?? 0;
+      return vecDistance(a.position, b.position) + Math.max(vecDistance(c.centre, d.position) - od / 2, 0);
+    }
+    case "cap":
+      return a ? vecDistance(c.centre, a.position) : null;
+    default:
+      return null;
+  }
+}
