@@ -1,0 +1,123 @@
+/**
+ * Arms: what stands along a leg next to one of its ends, and the paper it needs. Symbols have a fixed size on paper, so each
+ * arm carries pairs (real distance, paper distance) from the working point by which joints find their place.
+ */
+import { vecDot, vecLength, vecScale, vecSub } from "../geometry/vec3";
+import type { Vec3 } from "../geometry/types";
+import type { Component, ComponentKind } from "../run/model-types";
+import * as size from "./sizes";
+
+export interface ArmPart {
+  readonly component: Component;
+  /** Paper distances from the working point. */
+  readonly inner: number;
+  readonly outer: number;
+}
+
+export interface Arm {
+  readonly parts: readonly ArmPart[];
+  readonly room: number;
+  /** Real and paper distance from the working point, rising. */
+  readonly knots: readonly { readonly real: number; readonly paper: number }[];
+}
+
+export const NO_ARM: Arm = { parts: [], room: 0, knots: [{ real: 0, paper: 0 }] };
+
+const ARM_ROOM: Readonly<Record<ComponentKind, number>> = {
+  elbow: size.ELBOW_ARM, "trimmed-elbow": size.ELBOW_ARM, "socket-elbow": size.ELBOW_ARM - 1,
+  tee: size.TEE_ARM, "reducing-tee": size.TEE_ARM, "socket-tee": size.TEE_ARM,
+  outlet: 6.2, "stub-in": 0,
+  "reducer-concentric": size.REDUCER_ROOM, "reducer-eccentric": size.REDUCER_ROOM,
+  "flange-weld-neck": size.FLANGE_ARM, "flange-slip-on": size.FLANGE_ARM - 0.6, "flange-socket-weld": size.FLANGE_ARM - 0.6,
+  "flange-blind": size.BLIND_ROOM, gasket: size.GASKET_ROOM, valve: size.VALVE_HALF,
+  coupling: size.COUPLING_HALF, "half-coupling": 3.6, cap: size.CAP_ROOM, support: 0,
+};
+
+/** A reach that begins this close to the working point begins at it: take-outs are tens of millimetres, gaps a few. */
+const AT_POINT_MM = 8;
+/** How far a port may stand beside its leg's line and still be on it: an eccentric reducer's shift. */
+const BESIDE_MM = 130;
+
+interface Reach {
+  readonly component: Component;
+  readonly from: number;
+  readonly to: number;
+}
+
+function reachAlong(component: Component, origin: Vec3, outward: Vec3): Reach | null {
+  let to = -Infinity;
+  let from = Infinity;
+  for (const port of component.ports) {
+    const offset = vecSub(port.position, origin);
+    const along = vecDot(offset, outward);
+    const beside = vecLength(vecSub(offset, vecScale(outward, along)));
+    const facing = vecDot(port.direction, outward);
+    if (beside > BESIDE_MM || Math.abs(facing) < size.PORT_COSINE) continue;
+    if (facing > 0) to = Math.max(to, along);
+    else from = Math.min(from, along);
+  }
+  if (to === -Infinity) return oneEnded(component, origin, outward);
+  const centre = vecDot(vecSub(component.centre, origin), outward);
+  return { component, from: Math.min(from, centre, to), to };
+}
+
+/** Caps and blind flanges have one port or none along the leg: they count from the port to their own centre. */
+function oneEnded(component: Component, origin: Vec3, outward: Vec3): Reach | null {
+  if (component.kind !== "cap" && component.kind !== "flange-blind") return null;
+  const along = vecDot(vecSub(component.centre, origin), outward);
+  return along > AT_POINT_MM ? { component, from: along, to: along } : null;
+}
+
+/**
+ * The arm of a point along one of its legs.
+ * @param components those of the point
+ * @param origin working point on the leg's line, model frame
+ * @param outward unit vector from the working point into the leg
+ */
+export function armAlong(components: readonly Component[], origin: Vec3, outward: Vec3): Arm {
+  const reaches = components
+    .map((component) => reachAlong(component, origin, outward))
+    .filter((reach): reach is Reach => reach !== null && reach.to > 0)
+    .sort((p, q) => p.from + p.to - q.from - q.to);
+  const parts: ArmPart[] = [];
+  const knots = [{ real: 0, paper: 0 }];
+  let paper = 0;
+  let real = 0;
+  for (const { component, from, to } of reaches) {
+    const inner = paper;
+    // A part that begins well away from the one before is a pup's far neighbour: keep a little pipe between.
+    const apart = from > real + 40 ? size.PIPE_LEAST : 0;
+    paper += apart + ARM_ROOM[component.kind];
+    if (apart > 0) knots.push({ real: from, paper: inner + apart });
+    real = Math.max(real + 1e-3, to);
+    knots.push({ real, paper });
+    parts.push({ component, inner: inner + apart, outer: paper });
+  }
+  return parts.length === 0 ? NO_ARM : { parts, room: paper, knots };
+}
+
+/**
+ * Paper distance along a drawn leg of a real distance along it, both from its start; symbols keep their fixed room and the
+ * pipe between takes the rest.
+ */
+export function paperAlong(real: number, realLength: number, paperLength: number, from: Arm, to: Arm): number {
+  const start = from.knots[from.knots.length - 1] ?? { real: 0, paper: 0 };
+  const end = to.knots[to.knots.length - 1] ?? { real: 0, paper: 0 };
+  if (real <= start.real) return interpolate(from, real);
+  if (real >= realLength - end.real) return paperLength - interpolate(to, realLength - real);
+  const span = realLength - end.real - start.real;
+  const share = span <= 0 ? 0 : (real - start.real) / span;
+  return start.paper + share * (paperLength - end.paper - start.paper);
+}
+
+function interpolate(arm: Arm, real: number): number {
+  let before = { real: 0, paper: 0 };
+  for (const knot of arm.knots) {
+    if (real <= knot.real) {
+      const span = knot.real - before.real;
+      return span <= 0 ? knot.paper : before.paper + ((Math.max(0, real) - before.real) / span) * (knot.paper - before.paper);
+    }
+    before = knot;
+  }
+  return before.paper;
+}

@@ -1,0 +1,131 @@
+/** Which marks the drawing owes: every weld, component and cut piece of the sketch, with its anchors on paper. */
+import type { PaperPoint } from "../geometry/types";
+import { formatTerm } from "../units/format";
+import { edgePlace, edgePoint, type DrawnEdge, type DrawnJoint } from "./drawn";
+import type { DrawOptions, Ref } from "./drawing-types";
+import type { Label } from "./labels";
+import { marksLabel, type Mark } from "./mark-labels";
+import { ELBOW_KINDS } from "./pipe";
+import type { Placed } from "./place";
+import * as size from "./sizes";
+import { partFrames, type PartFrame } from "./symbols";
+import { groupBy, type Sketch } from "./sketch";
+import { isWeld } from "./weld-marks";
+
+export interface Marks {
+  readonly labels: readonly Label[];
+  readonly shown: readonly Ref[];
+}
+
+const NO_MARKS: Marks = { labels: [], shown: [] };
+
+/** Item numbers of each component id and piece key, spool by spool. */
+export function itemNumbers(sketch: Sketch): ReadonlyMap<string, readonly { readonly item: number; readonly ref: Ref }[]> {
+  const numbers = new Map<string, { item: number; ref: Ref }[]>();
+  for (const spool of sketch.model.spools) {
+    if (sketch.spool !== null && spool.letter !== sketch.spool) continue;
+    for (const row of spool.materials) {
+      for (const id of row.refs) numbers.set(id, [...(numbers.get(id) ?? []), { item: row.item, ref: { kind: "material", id: `${spool.letter}${row.item}` } }]);
+    }
+  }
+  return numbers;
+}
+
+export function weldMarks(placed: Placed, joints: readonly DrawnJoint[], options: DrawOptions): Marks {
+  if (!options.show.welds) return NO_MARKS;
+  const { units, fieldTrimMm } = placed.sketch.model.document.settings;
+  const trims = new Map(placed.sketch.model.document.runs.flatMap((run) => run.points.map((point) => [point.id, point.trimMm] as const)));
+  const labels: Label[] = [];
+  const shown: Ref[] = [];
+  for (const { joint, at, direction } of joints) {
+    const ref: Ref = { kind: "joint", id: joint.key };
+    const bolted = !isWeld({ joint, at, direction });
+    shown.push(ref);
+    if (bolted || joint.number === null) continue;
+    const marks: Mark[] = [{ shape: "hexagon", text: joint.number, ref }];
+    if (joint.place === "field") marks.push({ shape: "none", text: "FW", ref });
+    if (joint.place === "field-fit") marks.push({ shape: "none", text: `FFW +${formatTerm(trims.get(joint.pointId) ?? fieldTrimMm, units)}`, ref });
+    labels.push(marksLabel(marks, { id: `weld ${joint.key}`, anchors: [at], clear: size.WELD_DOT / 2, along: [direction] }, options.measure));
+  }
+  return { labels, shown };
+}
+
+/** Flanges and gaskets of one arm share a leader; every other component has its own. */
+export function componentMarks(placed: Placed, drawn: readonly DrawnEdge[], options: DrawOptions): Marks {
+  if (!options.show.items) return NO_MARKS;
+  const numbers = itemNumbers(placed.sketch);
+  const frames = partFrames(placed, drawn);
+  const frameOf = groupBy(frames, (frame) => frame.component.id);
+  const own = placed.sketch.components.filter((component) => numbers.has(component.id));
+  const groups = groupBy(own, (component) => groupKey(component.kind, component.id, frameOf.get(component.id)?.[0]));
+  const labels: Label[] = [];
+  const shown: Ref[] = [];
+  for (const [key, components] of groups) {
+    const marks: Mark[] = components.flatMap((component) =>
+      (numbers.get(component.id) ?? []).map(({ item }) => ({ shape: "circle" as const, text: String(item), ref: { kind: "component" as const, id: component.id } })),
+    );
+    const lead = components.find((component) => component.kind !== "gasket") ?? components[0];
+    const at = lead ? componentAnchor(placed, lead.kind, lead.pointId, frameOf.get(lead.id) ?? []) : null;
+    if (!lead || !at) continue;
+    labels.push(marksLabel(marks, { id: `item ${key}`, ...at }, options.measure));
+    for (const component of components) {
+      shown.push({ kind: "component", id: component.id });
+      for (const { ref } of numbers.get(component.id) ?? []) shown.push(ref);
+    }
+  }
+  return { labels, shown };
+}
+
+function groupKey(kind: string, id: string, frame: PartFrame | undefined): string {
+  if (!frame || !(kind.startsWith("flange") || kind === "gasket")) return id;
+  return `${frame.drawn.edge.id} ${frame.component.pointId}`;
+}
+
+interface Anchor {
+  readonly anchors: readonly PaperPoint[];
+  readonly clear: number;
+  readonly along: readonly PaperPoint[];
+}
+
+function componentAnchor(placed: Placed, kind: string, pointId: string, frames: readonly PartFrame[]): Anchor | null {
+  const corner = placed.paper.get(pointId);
+  const [a, b] = frames;
+  if (!a) return corner ? { anchors: [corner], clear: 0.5, along: [] } : null;
+  const along = frames.map((frame) => frame.drawn.direction);
+  if (ELBOW_KINDS.has(a.component.kind) && corner && b) {
+    const [p, q] = [a.at(a.outer, 0), b.at(b.outer, 0)];
+    // Middle of the elbow's cubic.
+    const k = kind === "socket-elbow" ? 1 : 0.664;
+    const chord: PaperPoint = [(p[0] + q[0]) / 2, (p[1] + q[1]) / 2];
+    return { anchors: [[chord[0] + (corner[0] - chord[0]) * k, chord[1] + (corner[1] - chord[1]) * k]], clear: 0.4, along };
+  }
+  if (kind === "valve") return { anchors: [a.at(0, 0)], clear: 1.2, along };
+  if (kind.startsWith("flange")) return { anchors: [a.at(a.inner + 1.2, 0)], clear: 1, along };
+  if (frames.length > 1 && corner) return { anchors: [corner], clear: 0.4, along };
+  return { anchors: [a.at((a.inner + a.outer) / 2, 0)], clear: 1, along };
+}
+
+/** A cut piece: its item number and its mark side by side, led to anywhere along the piece. */
+export function pieceMarks(placed: Placed, drawn: readonly DrawnEdge[], options: DrawOptions): Marks {
+  const { items, pieces } = options.show;
+  if (!items && !pieces) return NO_MARKS;
+  const numbers = itemNumbers(placed.sketch);
+  const byLeg = new Map(drawn.map((d) => [d.edge.id, d]));
+  const labels: Label[] = [];
+  const shown: Ref[] = [];
+  for (const piece of placed.sketch.pieces) {
+    const d = byLeg.get(piece.legId);
+    if (!d) continue;
+    const ref: Ref = { kind: "piece", id: piece.key };
+    const marks: Mark[] = [];
+    if (pieces) marks.push({ shape: "stadium", text: piece.mark, ref });
+    if (items) for (const { item } of numbers.get(piece.key) ?? []) marks.push({ shape: "circle", text: String(item), ref });
+    if (marks.length === 0) continue;
+    const [from, to] = [edgePlace(d, piece.start), edgePlace(d, piece.end)];
+    const anchors = [0.5, 0.36, 0.64, 0.22, 0.78].map((t) => edgePoint(d, from + (to - from) * t));
+    labels.push(marksLabel(marks, { id: `piece ${piece.key}`, anchors, clear: 0.5, along: [d.direction] }, options.measure));
+    shown.push(ref);
+    if (items) for (const { ref: material } of numbers.get(piece.key) ?? []) shown.push(material);
+  }
+  return { labels, shown };
+}

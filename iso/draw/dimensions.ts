@@ -1,0 +1,205 @@
+/**
+ * Dimensions: per straight chain the plane is chosen by score among the two other axes, both senses and growing distances,
+ * against pipe, symbols, thin lines and numbers already on paper. Every number finds a free place or goes to the label pass.
+ */
+import type { PaperBox, PaperPoint } from "../geometry/types";
+import { straightChains, type Chain } from "./chains";
+import { dimensionItems, dimensionSet, textBox, type DimensionSet, type DimensionText } from "./dimension-lines";
+import type { DrawnEdge } from "./drawn";
+import type { DisplayItem, MeasureText } from "./drawing-types";
+import type { InkMap } from "./ink-map";
+import type { LabelField } from "./label-field";
+import type { Placed } from "./place";
+import { boxReach, crossingOf, segmentInBox, type Segment, type TurnedBox } from "./plane";
+import * as size from "./sizes";
+
+export interface DimensionInk {
+  readonly items: readonly DisplayItem[];
+  readonly light: readonly Segment[];
+  readonly boxes: readonly TurnedBox[];
+  /** Numbers without a free place beside their line. */
+  readonly homeless: readonly DimensionText[];
+  readonly shown: readonly string[];
+}
+
+interface Choice {
+  readonly set: DimensionSet;
+  readonly places: readonly (PaperPoint | null)[];
+  readonly boxes: readonly TurnedBox[];
+  readonly cost: number;
+}
+
+export interface DimensionSurroundings {
+  readonly heavy: InkMap;
+  readonly light: InkMap;
+  readonly field: LabelField;
+  readonly centre: PaperPoint;
+  readonly extent: PaperBox;
+}
+
+const LEVELS = 4;
+const ROUNDS = 2;
+
+export function dimensionPass(placed: Placed, drawn: readonly DrawnEdge[], around: DimensionSurroundings, measure: MeasureText): DimensionInk {
+  const chains = [...straightChains(drawn)].sort((p, q) => q.edges.length - p.edges.length);
+  const flanged = flangedPoints(placed);
+  const leaving = leavingDirections(drawn);
+  const chosen: (Choice | null)[] = chains.map(() => null);
+  for (let round = 0; round < ROUNDS; round++) {
+    chains.forEach((chain, i) => {
+      const before = chosen[i];
+      if (before) release(around.field, before);
+      const others = chosen.filter((choice, j): choice is Choice => j !== i && choice !== null);
+      const choice = bestChoice(placed, chain, around, others, flanged, leaving, measure);
+      chosen[i] = choice;
+      choice.boxes.forEach((box) => around.field.add(entryOf(box)));
+    });
+  }
+  const kept = chosen.filter((choice): choice is Choice => choice !== null);
+  return {
+    items: kept.flatMap((choice) => dimensionItems(choice.set, choice.places)),
+    light: kept.flatMap((choice) => [...choice.set.lines, ...choice.set.extensions]),
+    boxes: kept.flatMap((choice) => choice.boxes),
+    homeless: kept.flatMap((choice) => choice.set.texts.filter((_, i) => choice.places[i] === null)),
+    shown: chains.flatMap((chain) => chain.edges.map(({ edge }) => edge.id)),
+  };
+}
+
+const entries = new WeakMap<TurnedBox, { id: string; box: TurnedBox; leader: null }>();
+function entryOf(box: TurnedBox): { id: string; box: TurnedBox; leader: null } {
+  const entry = entries.get(box) ?? { id: "dimension", box, leader: null };
+  entries.set(box, entry);
+  return entry;
+}
+
+function release(field: LabelField, choice: Choice): void {
+  choice.boxes.forEach((box) => field.remove(entryOf(box)));
+}
+
+function bestChoice(
+  placed: Placed, chain: Chain, around: DimensionSurroundings, others: readonly Choice[], flanged: ReadonlySet<string>,
+  leaving: ReadonlyMap<string, readonly PaperPoint[]>, measure: MeasureText,
+): Choice {
+  const units = placed.sketch.model.document.settings.units;
+  let best: Choice | null = null;
+  for (let level = 0; level < LEVELS; level++) {
+    for (const axis of ([0, 1, 2] as const).filter((other) => other !== chain.axis)) {
+      for (const sign of [1, -1]) {
+        const along = placed.projection.axes[axis];
+        const across: PaperPoint = [along[0] * sign, along[1] * sign];
+        const base = level * 5 + sideCost(chain, across, around, leaving);
+        if (best && base >= best.cost) continue;
+        const set = dimensionSet(chain, across, size.DIMENSION_FIRST + level * size.DIMENSION_NEXT, flanged, units, measure);
+        const choice = seated(set, around, others, base + lineCost(set, around, others));
+        if (!best || choice.cost < best.cost) best = choice;
+      }
+    }
+  }
+  return best ?? { set: { lines: [], extensions: [], texts: [] }, places: [], boxes: [], cost: 0 };
+}
+
+/** Prefers outward sides, and never a side on which a pipe leaves one of the chain's points. */
+function sideCost(chain: Chain, across: PaperPoint, around: DimensionSurroundings, leaving: ReadonlyMap<string, readonly PaperPoint[]>): number {
+  let cost = 0;
+  const ids = new Set(chain.edges.flatMap(({ edge }) => [edge.from, edge.to]));
+  for (const id of ids) for (const d of leaving.get(id) ?? []) if (d[0] * across[0] + d[1] * across[1] > 0.97) cost += 45;
+  const first = chain.edges[0]?.from ?? [0, 0];
+  const last = chain.edges[chain.edges.length - 1]?.to ?? first;
+  const reach = Math.max(1, Math.hypot(around.extent.maxX - around.extent.minX, around.extent.maxY - around.extent.minY) / 2);
+  const outward = ((first[0] + last[0]) / 2 - around.centre[0]) * across[0] + ((first[1] + last[1]) / 2 - around.centre[1]) * across[1];
+  return cost + 6 - Math.max(-6, Math.min(6, (outward / reach) * 12));
+}
+
+function lineCost(set: DimensionSet, around: DimensionSurroundings, others: readonly Choice[]): number {
+  let cost = 0;
+  for (const line of set.lines) cost += around.heavy.along(line.from, line.to) * 3 + around.light.along(line.from, line.to) * 0.6;
+  for (const line of set.extensions) cost += around.heavy.along(line.from, line.to) * 2 + around.light.along(line.from, line.to) * 0.3;
+  for (const other of others) {
+    for (const line of set.lines) {
+      for (const their of other.set.lines) if (crossingOf(line, their)) cost += 12;
+      for (const their of other.set.extensions) if (crossingOf(line, their)) cost += 5;
+      for (const box of other.boxes) if (segmentInBox(line.from, line.to, box) > 0) cost += 40;
+    }
+    for (const line of set.extensions) {
+      for (const their of other.set.lines) if (crossingOf(line, their)) cost += 5;
+      for (const box of other.boxes) if (segmentInBox(line.from, line.to, box) > 0) cost += 25;
+    }
+  }
+  return cost;
+}
+
+/** Finds each number the cheapest free place on its line. */
+function seated(set: DimensionSet, around: DimensionSurroundings, others: readonly Choice[], base: number): Choice {
+  const places: (PaperPoint | null)[] = [];
+  const boxes: TurnedBox[] = [];
+  const mine: { id: string; box: TurnedBox; leader: null }[] = [];
+  let cost = base;
+  for (const text of set.texts) {
+    let best: PaperPoint | null = null;
+    let bestCost = Infinity;
+    text.places.forEach((at, i) => {
+      const box = textBox(text, at);
+      if (around.field.overlapping(box)) return;
+      const price = [0, 2, 2, 4, 9, 9, 11, 11][i] ?? 12;
+      if (price >= bestCost) return;
+      const total = price + boxCost(box, text, set, around, others);
+      if (total < bestCost) [best, bestCost] = [at, total];
+    });
+    places.push(best);
+    cost += best ? bestCost : 200;
+    if (!best) continue;
+    const box = textBox(text, best);
+    boxes.push(box);
+    mine.push(entryOf(box));
+    around.field.add(entryOf(box));
+  }
+  for (const entry of mine) around.field.remove(entry);
+  return { set, places, boxes, cost };
+}
+
+function boxCost(box: TurnedBox, text: DimensionText, set: DimensionSet, around: DimensionSurroundings, others: readonly Choice[]): number {
+  const [w, h] = boxReach(box);
+  const [x, y] = box.centre;
+  let cost = 0;
+  const wide = around.heavy.inBox(x - w, y - h, x + w, y + h);
+  // The box around turned text is larger than the text: look along its own middle and edges before charging it.
+  if (wide > 0) cost += turnedInk(around.heavy, box) * 8;
+  cost += turnedInk(around.light, box) * 1.5;
+  const wider = { ...box, halfHeight: box.halfHeight + 0.4 };
+  for (const other of others) {
+    for (const line of other.set.lines) if (segmentInBox(line.from, line.to, wider) > 0) cost += 25;
+    for (const line of other.set.extensions) if (segmentInBox(line.from, line.to, wider) > 0) cost += 14;
+  }
+  for (const line of set.extensions) if (segmentInBox(line.from, line.to, box) > 0) cost += 10;
+  for (const line of set.lines) if (line.from !== text.from && segmentInBox(line.from, line.to, box) > 0) cost += 20;
+  return cost;
+}
+
+/** Ink under a turned box, sampled along three lines of it. */
+export function turnedInk(map: InkMap, box: TurnedBox): number {
+  const c = Math.cos(box.angle);
+  const s = Math.sin(box.angle);
+  let ink = 0;
+  for (const across of [-1, -0.33, 0.33, 1]) {
+    const x = box.centre[0] - s * box.halfHeight * across;
+    const y = box.centre[1] + c * box.halfHeight * across;
+    ink += map.along([x - c * box.halfWidth, y - s * box.halfWidth], [x + c * box.halfWidth, y + s * box.halfWidth]);
+  }
+  return ink;
+}
+
+function flangedPoints(placed: Placed): ReadonlySet<string> {
+  const ids = new Set<string>();
+  for (const [pointId, components] of placed.sketch.componentsAt) if (components.some((component) => component.kind.startsWith("flange")) && !components.some((component) => component.kind === "valve")) ids.add(pointId);
+  return ids;
+}
+
+function leavingDirections(drawn: readonly DrawnEdge[]): ReadonlyMap<string, readonly PaperPoint[]> {
+  const directions = new Map<string, PaperPoint[]>();
+  const add = (id: string, d: PaperPoint): void => void directions.set(id, [...(directions.get(id) ?? []), d]);
+  for (const { edge, direction } of drawn) {
+    add(edge.from, direction);
+    add(edge.to, [-direction[0], -direction[1]]);
+  }
+  return directions;
+}

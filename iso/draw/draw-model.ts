@@ -1,0 +1,144 @@
+/** The drawing, as a readable list of passes. Pure: equal input gives equal items. */
+import type { PaperBox, PaperPoint } from "../geometry/types";
+import type { View } from "../run/document";
+import type { Model } from "../run/model-types";
+import { componentMarks, pieceMarks, weldMarks } from "./collect-marks";
+import { dimensionPass, type DimensionInk } from "./dimensions";
+import { drawnEdges, drawnJoints } from "./drawn";
+import type { DisplayItem, Drawing, DrawOptions, Layer, Ref } from "./drawing-types";
+import { endLabels } from "./end-texts";
+import { placeLineText } from "./fixed-text";
+import { fitStretch, shiftInto } from "./fit";
+import { inkMap } from "./ink-map";
+import { inkBounds } from "./item-bounds";
+import { LabelField } from "./label-field";
+import { legendOf } from "./legend-keys";
+import { placeLabels, type Label } from "./labels";
+import { blockLabel } from "./mark-labels";
+import { flowPass, northPass } from "./north";
+import { offsetPass } from "./offset-box";
+import { bestView } from "./orient";
+import { itemMoved } from "./paths";
+import { pipePass, pipeStretches } from "./pipe";
+import { placeAll, placePlan, type Placed } from "./place";
+import { paperBoxAround, type Segment, type TurnedBox } from "./plane";
+import { PROJECTIONS } from "./project";
+import { sketchOf } from "./sketch";
+import { slopePass } from "./slopes";
+import { symbolPass } from "./symbols";
+import { weldPass } from "./weld-marks";
+
+/** Painted from back to front. */
+const LAYERS: readonly Layer[] = ["hatch", "box", "dimension", "halo", "pipe", "symbol", "weld", "flow", "leader", "balloon", "dimension-text", "label", "north"];
+/** Tries to make everything fit by drawing the legs shorter. */
+const FIT_TRIES = 4;
+
+/**
+ * Draws a model inside its room. Labels never overlap each other; what cannot fit at the least sizes goes beyond the room,
+ * which `bounds` tells.
+ */
+export function drawModel(model: Model, options: DrawOptions): Drawing {
+  const sketch = sketchOf(model, options.spool);
+  const plan = placePlan(sketch, options.measure);
+  const view: View = options.view ?? model.document.view ?? bestView(plan);
+  const projection = PROJECTIONS[view];
+  let margin = 26;
+  let drawing: Drawing | null = null;
+  for (let attempt = 0; attempt < FIT_TRIES; attempt++) {
+    const stretch = fitStretch(plan, projection, options.widthMm - 2 * margin, options.heightMm - 2 * margin);
+    const next = drawPlaced(placeAll(plan, projection, stretch), options, view);
+    if (!drawing || overrun(next) < overrun(drawing)) drawing = next;
+    if (stretch === 0 || overrun(next) <= 0.01) break;
+    margin += Math.max(4, overrun(next) / 2);
+  }
+  return drawing ?? drawPlaced(placeAll(plan, projection, 0), options, view);
+}
+
+function overrun(drawing: Drawing): number {
+  const { bounds } = drawing;
+  return Math.max(0, -bounds.minX, -bounds.minY, bounds.maxX - drawing.widthMm, bounds.maxY - drawing.heightMm);
+}
+
+function drawPlaced(placed: Placed, options: DrawOptions, view: View): Drawing {
+  const { measure } = options;
+  const drawn = drawnEdges(placed);
+  const joints = drawnJoints(placed, drawn);
+  const stretches = pipeStretches(placed, drawn);
+  const offsets = offsetPass(placed, drawn);
+  const inks = [pipePass(placed, drawn, stretches), symbolPass(placed, drawn), weldPass(options.show.welds ? joints : joints), flowPass(stretches)];
+  const heavy = inks.flatMap((ink) => ink.heavy);
+  const heavyMap = inkMap(heavy, 1.2);
+  const field = new LabelField();
+  const boxMap = inkMap(offsets.light, 0.5);
+  const texts = offsets.texts.map((text) => placeLineText(text, field, heavyMap, boxMap, measure));
+  const slopes = slopePass(placed, drawn, field, heavyMap, boxMap, measure);
+  const extent = paperBoxAround([...heavy, ...offsets.light].flatMap((s) => [s.from, s.to]));
+  const centre: PaperPoint = [(extent.minX + extent.maxX) / 2 || 0, (extent.minY + extent.maxY) / 2 || 0];
+  const dimensions: DimensionInk = options.show.dimensions
+    ? dimensionPass(placed, drawn, { heavy: heavyMap, light: boxMap, field, centre, extent }, measure)
+    : { items: [], light: [], boxes: [], homeless: [], shown: [] };
+
+  const light = [...offsets.light, ...dimensions.light, ...slopes.light];
+  const lightMap = inkMap(light, 0.5);
+  const fixed: TurnedBox[] = [...texts.flatMap((text) => text.box ?? []), ...slopes.boxes, ...dimensions.boxes];
+  const room = shiftInto([...heavy, ...light], fixed, options.widthMm, options.heightMm);
+  const north = northPass(placed.projection, room, heavyMap, lightMap, field, measure);
+  fixed.push(north.box);
+
+  const welds = weldMarks(placed, joints, options);
+  const components = componentMarks(placed, drawn, options);
+  const pieces = pieceMarks(placed, drawn, options);
+  const labels: Label[] = [
+    ...endLabels(placed, drawn, measure),
+    ...offsets.notes.map((note) => blockLabel(note.lines.map((text, i) => ({ text, bold: i === 0 })), { id: `offset ${note.id}`, anchors: note.anchors, clear: 0.5, along: [] }, { kind: "leg", id: note.id }, measure)),
+    ...homelessLabels(texts.filter((text) => text.box === null).map(({ text }) => ({ ref: text.ref, text: text.text, line: text.line })), options),
+    ...homelessLabels(dimensions.homeless.map((text) => ({ ref: text.ref, text: text.text, line: { from: text.from, to: text.to } })), options),
+    ...welds.labels, ...components.labels, ...pieces.labels,
+  ];
+  const marks = placeLabels(labels, fixed, { heavy: heavyMap, light: lightMap, room });
+  const items = layered([
+    ...inks.flatMap((ink) => ink.items), ...offsets.items, ...slopes.items, ...dimensions.items,
+    ...texts.flatMap((text) => text.items), ...north.items, ...marks.items,
+  ]);
+  const shown: Ref[] = [
+    ...welds.shown, ...components.shown, ...pieces.shown,
+    ...[...dimensions.shown, ...offsets.notes.map((note) => note.id)].map((id): Ref => ({ kind: "dimension", id })),
+  ];
+  return finished(items, room, options, view, marks.report, shown, placed);
+}
+
+interface Homeless {
+  readonly ref: Ref | null;
+  readonly text: string;
+  readonly line: Segment;
+}
+
+/** Numbers that found no free place on their line become led labels, so that none is lost and none overlaps. */
+function homelessLabels(texts: readonly Homeless[], options: DrawOptions): readonly Label[] {
+  return texts.map(({ ref, text, line }) =>
+    blockLabel([{ text, bold: false }], { id: `number ${ref?.id ?? text}`, anchors: [[(line.from[0] + line.to[0]) / 2, (line.from[1] + line.to[1]) / 2]], clear: 0.4, along: [] }, ref, options.measure),
+  );
+}
+
+function layered(items: readonly DisplayItem[]): readonly DisplayItem[] {
+  return LAYERS.flatMap((layer) => items.filter((item) => item.layer === layer));
+}
+
+function finished(items: readonly DisplayItem[], room: PaperBox, options: DrawOptions, view: View, report: Drawing["report"], shown: readonly Ref[], placed: Placed): Drawing {
+  const raw = inkBounds(items, options.measure);
+  const by: PaperPoint = [
+    -room.minX + spare(raw.minX - room.minX, room.maxX - raw.maxX),
+    -room.minY + spare(raw.minY - room.minY, room.maxY - raw.maxY),
+  ];
+  const moved = items.map((item) => itemMoved(item, by));
+  return {
+    view, widthMm: options.widthMm, heightMm: options.heightMm, items: moved, bounds: inkBounds(moved, options.measure),
+    legend: legendOf(placed.sketch, options), report, shown,
+  };
+}
+
+/** Shift that brings what stands out on one side back in when the other side has room. */
+function spare(before: number, after: number): number {
+  if (before < 0 && after > 0) return Math.min(-before, after);
+  return after < 0 && before > 0 ? -Math.min(-after, before) : 0;
+}

@@ -1,0 +1,104 @@
+/** Marks as labels: material items in circles, weld numbers in hexagons, cut pieces in long rounded boxes; text blocks. */
+import type { PaperPoint } from "../geometry/types";
+import type { DisplayItem, Ink, MeasureText, PathSegment, Ref } from "./drawing-types";
+import type { Label } from "./labels";
+import { centredText, circleSegments, hexagonSegments, lineItem, pathItem, stadiumSegments, textItem } from "./paths";
+import * as size from "./sizes";
+
+export type MarkShape = "circle" | "hexagon" | "stadium" | "none";
+
+export interface Mark {
+  readonly shape: MarkShape;
+  readonly text: string;
+  readonly ref: Ref;
+}
+
+export interface MarkPlace {
+  readonly id: string;
+  readonly anchors: readonly PaperPoint[];
+  readonly clear: number;
+  readonly along: readonly PaperPoint[];
+}
+
+function markWidth(mark: Mark, measure: MeasureText): number {
+  const text = measure(mark.text, size.TEXT_CAP, "regular");
+  switch (mark.shape) {
+    case "circle": return Math.max(size.BALLOON, text + 2.4);
+    case "hexagon": return Math.max(size.HEXAGON, text + 3.4);
+    case "stadium": return text + 4.2;
+    case "none": return text + 1.2;
+  }
+}
+
+function markHeight(mark: Mark): number {
+  if (mark.shape === "none") return size.TEXT_CAP;
+  if (mark.shape === "hexagon") return size.HEXAGON * Math.sin(Math.PI / 3);
+  return mark.shape === "circle" ? size.BALLOON : size.PIECE_HEIGHT;
+}
+
+function markOutline(mark: Mark, centre: PaperPoint, width: number): readonly PathSegment[] {
+  if (mark.shape === "stadium") return stadiumSegments(centre, width, size.PIECE_HEIGHT);
+  if (mark.shape === "circle") return width > size.BALLOON ? stadiumSegments(centre, width, size.BALLOON) : circleSegments(centre, size.BALLOON / 2);
+  return widened(hexagonSegments(centre, size.HEXAGON), centre, (width - size.HEXAGON) / 2);
+}
+
+/** Pulls a shape apart about its centre, for numbers of three figures. */
+function widened(segments: readonly PathSegment[], centre: PaperPoint, by: number): readonly PathSegment[] {
+  if (by <= 0) return segments;
+  return segments.map((s) => (s.op === "M" || s.op === "L" ? { op: s.op, to: [s.to[0] + Math.sign(s.to[0] - centre[0]) * by, s.to[1]] as const } : s));
+}
+
+/** A row of marks that share one leader. */
+export function marksLabel(marks: readonly Mark[], place: MarkPlace, measure: MeasureText): Label {
+  const widths = marks.map((mark) => markWidth(mark, measure));
+  const total = widths.reduce((sum, w) => sum + w, 0);
+  const ink: Ink = marks.some((mark) => mark.shape === "hexagon") ? "dye" : "ink";
+  return {
+    id: place.id, anchors: place.anchors, clear: place.clear, along: place.along, leaderFrom: 0, leaderUnder: 2.4,
+    halfWidth: total / 2, halfHeight: Math.max(...marks.map(markHeight)) / 2,
+    draw: (centre, leader) => {
+      const items: DisplayItem[] = [];
+      if (leader) items.push(lineItem("leader", marks[0]?.ref ?? null, leader.from, leader.to, size.LEADER_WIDTH, ink));
+      let x = centre[0] - total / 2;
+      marks.forEach((mark, i) => {
+        const width = widths[i] ?? 0;
+        items.push(...markItems(mark, [x + width / 2, centre[1]], width, ink));
+        x += width;
+      });
+      return items;
+    },
+  };
+}
+
+function markItems(mark: Mark, centre: PaperPoint, width: number, ink: Ink): readonly DisplayItem[] {
+  const text = centredText("balloon", mark.ref, centre, mark.text, { capMm: size.TEXT_CAP, ink: mark.shape === "none" ? "ink" : ink, face: mark.shape === "none" ? "bold" : "regular" });
+  if (mark.shape === "none") return [text];
+  return [pathItem("balloon", mark.ref, markOutline(mark, centre, width), { stroke: ink, fill: "paper", widthMm: size.MARK_WIDTH }), text];
+}
+
+export interface BlockLine {
+  readonly text: string;
+  readonly bold: boolean;
+}
+
+/** Line pitch of a text block. */
+const PITCH = size.TEXT_CAP * 1.62;
+
+/** A block of text lines: end texts, offset notes, tags. */
+export function blockLabel(lines: readonly BlockLine[], place: MarkPlace, ref: Ref | null, measure: MeasureText): Label {
+  const width = Math.max(...lines.map((line) => measure(line.text, size.TEXT_CAP, line.bold ? "bold" : "regular")));
+  const height = size.TEXT_CAP + (lines.length - 1) * PITCH;
+  return {
+    id: place.id, anchors: place.anchors, clear: place.clear, along: place.along, leaderFrom: 3.5, leaderUnder: -0.6,
+    halfWidth: width / 2, halfHeight: height / 2,
+    draw: (centre, leader) => {
+      const items: DisplayItem[] = [];
+      if (leader) items.push(lineItem("leader", ref, leader.from, leader.to, size.LEADER_WIDTH));
+      lines.forEach((line, i) => {
+        const at: PaperPoint = [centre[0] - width / 2, centre[1] - height / 2 + size.TEXT_CAP + i * PITCH];
+        items.push(textItem("label", ref, at, line.text, { capMm: size.TEXT_CAP, face: line.bold ? "bold" : "regular" }));
+      });
+      return items;
+    },
+  };
+}

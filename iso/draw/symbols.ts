@@ -1,0 +1,211 @@
+/** Symbols of fittings, flanges, valves and supports: strokes and outlines square to the pipe; only flange strokes follow an axis. */
+import type { PaperPoint } from "../geometry/types";
+import type { Component } from "../run/model-types";
+import type { ArmPart } from "./arms";
+import type { DrawnEdge, PassInk } from "./drawn";
+import type { DisplayItem, Ink, Ref } from "./drawing-types";
+import { circleSegments, lineItem, pathItem, polygonSegments } from "./paths";
+import type { Placed } from "./place";
+import { paperDirection, type Segment } from "./plane";
+import { project, type Projection } from "./project";
+import * as size from "./sizes";
+
+/** One part of a symbol on one leg: its frame on paper. */
+export interface PartFrame {
+  readonly component: Component;
+  readonly drawn: DrawnEdge;
+  readonly ink: Ink;
+  readonly ref: Ref;
+  /** Point at a distance out from the working point and to the side. */
+  readonly at: (out: number, side: number) => PaperPoint;
+  readonly inner: number;
+  readonly outer: number;
+  /** Unit vector on paper a flange stroke lies along. */
+  readonly stroke: PaperPoint;
+}
+
+/** Flange strokes stand upright on level pipe and along the east axis on a riser; square to an off-axis leg. */
+function strokeDirection(projection: Projection, d: DrawnEdge): PaperPoint {
+  if (d.edge.kind === "offset") return [-d.direction[1], d.direction[0]];
+  return d.edge.real[2] !== 0 ? projection.axes[0] : projection.axes[2];
+}
+
+export function partFrames(placed: Placed, drawn: readonly DrawnEdge[]): readonly PartFrame[] {
+  const { spool } = placed.sketch;
+  return drawn.flatMap((d) =>
+    ([[d.edge.fromArm.parts, d.from, 1], [d.edge.toArm.parts, d.to, -1]] as const).flatMap(([parts, origin, sign]) =>
+      parts.map((part) => frameOf(placed.projection, d, part, origin, sign, spool)),
+    ),
+  );
+}
+
+function frameOf(projection: Projection, d: DrawnEdge, part: ArmPart, origin: PaperPoint, sign: 1 | -1, spool: string | null): PartFrame {
+  const [ux, uy] = [d.direction[0] * sign, d.direction[1] * sign];
+  return {
+    component: part.component, drawn: d, inner: part.inner, outer: part.outer,
+    ink: spool !== null && part.component.spool !== spool ? "grey" : "ink",
+    ref: { kind: "component", id: part.component.id },
+    at: (out, side) => [origin[0] + ux * out - uy * side, origin[1] + uy * out + ux * side],
+    stroke: strokeDirection(projection, d),
+  };
+}
+
+const plus = (a: PaperPoint, d: PaperPoint, k: number): PaperPoint => [a[0] + d[0] * k, a[1] + d[1] * k];
+
+/** Strokes of a flange: the face, and behind it the hub. */
+function flangeItems(f: PartFrame): DisplayItem[] {
+  const stroke = (out: number, half: number, width: number): DisplayItem => {
+    const at = f.at(out, 0);
+    return lineItem("symbol", f.ref, plus(at, f.stroke, -half), plus(at, f.stroke, half), width, f.ink);
+  };
+  const face = stroke(f.inner + 0.35, size.FLANGE_STROKE_HALF, 0.7);
+  switch (f.component.kind) {
+    case "flange-blind": return [stroke(f.inner + 0.6, size.FLANGE_STROKE_HALF, 1.2)];
+    case "flange-weld-neck": return [face, stroke(f.inner + 2, size.HUB_STROKE_HALF, size.SYMBOL_WIDTH)];
+    case "flange-slip-on": return [face, stroke(f.inner + 1.5, size.FLANGE_STROKE_HALF - 0.5, 0.35)];
+    default: return [face, stroke(f.inner + 1.5, size.HUB_STROKE_HALF, 0.35), stroke(f.inner + 2.4, size.HUB_STROKE_HALF, 0.35)];
+  }
+}
+
+/** Half of a valve's body: a triangle whose point is the valve's centre; drawn once per side. */
+function valveHalf(f: PartFrame): DisplayItem[] {
+  const h = size.VALVE_HALF_HEIGHT;
+  const open = f.component.valve === "butterfly";
+  const end = lineItem("symbol", f.ref, f.at(f.outer, -h), f.at(f.outer, h), size.SYMBOL_WIDTH, f.ink);
+  if (open) return [end, lineItem("symbol", f.ref, f.at(f.inner, 0), f.at(f.outer, h), size.SYMBOL_WIDTH, f.ink)];
+  const triangle = polygonSegments([f.at(f.inner, 0), f.at(f.outer, -h), f.at(f.outer, h)]);
+  return [pathItem("symbol", f.ref, triangle, { stroke: f.ink, fill: "paper", widthMm: size.SYMBOL_WIDTH })];
+}
+
+function reducerItems(f: PartFrame, projection: Projection): DisplayItem[] {
+  const { inner, outer, component } = f;
+  // Big end towards the working point: the point is the large end by definition.
+  const brush = { stroke: f.ink, fill: "paper" as const, widthMm: size.SYMBOL_WIDTH };
+  if (component.kind === "reducer-concentric" || !component.aside) {
+    return [pathItem("symbol", f.ref, polygonSegments([f.at(inner, -2.7), f.at(outer, -1.2), f.at(outer, 1.2), f.at(inner, 2.7)]), brush)];
+  }
+  const aside = project(projection, component.aside);
+  const side = f.at(0, 1);
+  const origin = f.at(0, 0);
+  const sign = (side[0] - origin[0]) * aside[0] + (side[1] - origin[1]) * aside[1] >= 0 ? 1 : -1;
+  return [pathItem("symbol", f.ref, polygonSegments([f.at(inner, 1.7 * sign), f.at(outer, 1.7 * sign), f.at(outer, -1 * sign), f.at(inner, -3.5 * sign)]), brush)];
+}
+
+function socketStrokes(f: PartFrame): DisplayItem[] {
+  return [lineItem("symbol", f.ref, f.at(f.outer, -1.7), f.at(f.outer, 1.7), size.SYMBOL_WIDTH, f.ink)];
+}
+
+function capItems(f: PartFrame): DisplayItem[] {
+  const back = f.outer - (f.outer - f.inner) * 1.3;
+  const segments = [
+    { op: "M" as const, to: f.at(f.outer, -2.2) },
+    { op: "C" as const, c1: f.at(back, -2.2), c2: f.at(back, 2.2), to: f.at(f.outer, 2.2) },
+    { op: "Z" as const },
+  ];
+  return [pathItem("symbol", f.ref, segments, { stroke: f.ink, fill: "paper", widthMm: size.SYMBOL_WIDTH })];
+}
+
+function partItems(f: PartFrame, projection: Projection): DisplayItem[] {
+  switch (f.component.kind) {
+    case "flange-weld-neck": case "flange-slip-on": case "flange-socket-weld": case "flange-blind": return flangeItems(f);
+    case "valve": return valveHalf(f);
+    case "reducer-concentric": case "reducer-eccentric": return reducerItems(f, projection);
+    case "cap": return capItems(f);
+    case "socket-elbow": case "socket-tee": return socketStrokes(f);
+    case "coupling": return [boxAround(f, 1.6)];
+    case "half-coupling": return [boxAround(f, 1.6)];
+    case "outlet": return [pathItem("symbol", f.ref, polygonSegments([f.at(f.inner, -2.4), f.at(f.outer, -1.2), f.at(f.outer, 1.2), f.at(f.inner, 2.4)]), { stroke: f.ink, fill: "paper", widthMm: size.SYMBOL_WIDTH })];
+    default: return [];
+  }
+}
+
+function boxAround(f: PartFrame, half: number): DisplayItem {
+  return pathItem("symbol", f.ref, polygonSegments([f.at(f.inner, -half), f.at(f.outer, -half), f.at(f.outer, half), f.at(f.inner, half)]), { stroke: f.ink, fill: "paper", widthMm: size.SYMBOL_WIDTH });
+}
+
+/** What stands at a valve's centre: stem and wheel, the disc of a globe, the ball, the flap of a check. */
+function valveCentre(f: PartFrame, projection: Projection): DisplayItem[] {
+  const { component, ref, ink } = f;
+  const centre = f.at(0, 0);
+  const items: DisplayItem[] = [];
+  if (component.valve === "globe") items.push(pathItem("symbol", ref, circleSegments(centre, 1.3), { fill: ink }));
+  if (component.valve === "ball") items.push(pathItem("symbol", ref, circleSegments(centre, 1.7), { stroke: ink, fill: "paper", widthMm: size.SYMBOL_WIDTH }));
+  if (component.valve === "butterfly") items.push(pathItem("symbol", ref, circleSegments(centre, 0.9), { fill: ink }));
+  if (component.valve === "check") return [...items, ...checkFlap(f)];
+  const stem = paperDirection(project(projection, component.aside ?? [0, 0, 1]));
+  const top = plus(centre, stem, 6);
+  const base = component.valve === "globe" ? 1.3 : component.valve === "ball" ? 1.7 : 0;
+  const wheel = Math.abs(stem[0] * f.drawn.direction[1] - stem[1] * f.drawn.direction[0]) > 0.3 ? f.drawn.direction : ([-stem[1], stem[0]] as PaperPoint);
+  return [
+    ...items,
+    lineItem("symbol", ref, plus(centre, stem, base), top, 0.4, ink),
+    lineItem("symbol", ref, plus(top, wheel, -2.2), plus(top, wheel, 2.2), size.SYMBOL_WIDTH, ink),
+  ];
+}
+
+/** A small arrow beside a check valve: flow passes this way only. */
+function checkFlap(f: PartFrame): DisplayItem[] {
+  const { direction } = f.drawn;
+  const across: PaperPoint = direction[0] >= 0 ? [direction[1], -direction[0]] : [-direction[1], direction[0]];
+  const centre = plus(f.at(0, 0), across, size.VALVE_HALF_HEIGHT + 1.6);
+  const tip = plus(centre, direction, 4);
+  return [
+    lineItem("symbol", f.ref, plus(centre, direction, -4), tip, 0.35, f.ink),
+    pathItem("symbol", f.ref, polygonSegments([tip, plus(plus(tip, direction, -2.2), across, 0.8), plus(plus(tip, direction, -2.2), across, -0.8)], false), { stroke: f.ink, widthMm: 0.35 }),
+  ];
+}
+
+/** A shoe under a level pipe, beside a riser. */
+function supportItems(component: Component, at: PaperPoint, d: DrawnEdge | undefined, ink: Ink): DisplayItem[] {
+  const riser = d ? Math.abs(d.direction[0]) < 0.3 : false;
+  const down: PaperPoint = riser ? [1, 0] : [0, 1];
+  const along: PaperPoint = d?.direction ?? [1, 0];
+  const ref: Ref = { kind: "component", id: component.id };
+  const foot = plus(at, down, 3.4);
+  return [
+    lineItem("symbol", ref, plus(at, along, 1.6), plus(foot, along, 1.6), 0.35, ink),
+    lineItem("symbol", ref, plus(at, along, -1.6), plus(foot, along, -1.6), 0.35, ink),
+    lineItem("symbol", ref, plus(foot, along, -3), plus(foot, along, 3), size.SYMBOL_WIDTH, ink),
+  ];
+}
+
+export function symbolPass(placed: Placed, drawn: readonly DrawnEdge[]): PassInk {
+  const items: DisplayItem[] = [];
+  const heavy: Segment[] = [];
+  const centred = new Set<string>();
+  const onTop: DisplayItem[] = [];
+  for (const frame of partFrames(placed, drawn)) {
+    items.push(...partItems(frame, placed.projection));
+    if (frame.component.kind !== "valve" || centred.has(frame.component.id)) continue;
+    centred.add(frame.component.id);
+    // Painted after both halves so that the ball or disc stays on top.
+    onTop.push(...valveCentre(frame, placed.projection));
+  }
+  items.push(...onTop);
+  const { spool } = placed.sketch;
+  for (const [pointId, components] of placed.sketch.componentsAt) {
+    const at = placed.paper.get(pointId);
+    for (const component of components) {
+      if (component.kind !== "support" || !at) continue;
+      items.push(...supportItems(component, at, drawn.find((d) => d.edge.from === pointId || d.edge.to === pointId), spool !== null && component.spool !== spool ? "grey" : "ink"));
+    }
+  }
+  for (const item of items) heavy.push(...outlineOf(item));
+  return { items, heavy, light: [] };
+}
+
+/** Straight outline of an item, for keeping clear of it. */
+export function outlineOf(item: DisplayItem): readonly Segment[] {
+  if (item.type === "line") return [{ from: item.from, to: item.to }];
+  if (item.type === "text") return [];
+  const segments: Segment[] = [];
+  let first: PaperPoint | null = null;
+  let last: PaperPoint | null = null;
+  for (const s of item.segments) {
+    const to = s.op === "Z" ? first : s.to;
+    if (s.op === "M") first = s.to;
+    else if (last && to) segments.push({ from: last, to });
+    last = to;
+  }
+  return segments;
+}

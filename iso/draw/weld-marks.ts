@@ -1,0 +1,40 @@
+/** Weld marks: a solid dot at each weld, a flag at a field weld. Bolted joints have no mark of their own. */
+import type { PaperPoint } from "../geometry/types";
+import type { DrawnJoint, PassInk } from "./drawn";
+import type { DisplayItem, Ref } from "./drawing-types";
+import { circleSegments, lineItem, pathItem, polygonSegments } from "./paths";
+import type { Segment } from "./plane";
+import * as size from "./sizes";
+
+export const isWeld = (mark: DrawnJoint): boolean => mark.joint.kind !== "bolted" && mark.joint.kind !== "attachment";
+
+export function weldPass(joints: readonly DrawnJoint[]): PassInk {
+  const items: DisplayItem[] = [];
+  const heavy: Segment[] = [];
+  for (const mark of joints) {
+    if (!isWeld(mark)) continue;
+    const ref: Ref = { kind: "joint", id: mark.joint.key };
+    items.push(pathItem("weld", ref, circleSegments(mark.at, size.WELD_DOT / 2), { fill: "ink" }));
+    const r = size.WELD_DOT / 2 - 0.3;
+    const [x, y] = mark.at;
+    heavy.push({ from: [x - r, y], to: [x + r, y] }, { from: [x, y - r], to: [x, y + r] });
+    if (mark.joint.place === "shop") continue;
+    const pole = poleDirection(mark.direction);
+    const top: PaperPoint = [x + pole[0] * 7.5, y + pole[1] * 7.5];
+    items.push(lineItem("weld", ref, mark.at, top, 0.3), pathItem("weld", ref, polygonSegments(pennant(top, pole)), { fill: "ink" }));
+    const [a, b, c] = pennant(top, pole);
+    if (a && b && c) heavy.push({ from: mark.at, to: top }, { from: a, to: b }, { from: b, to: c });
+  }
+  return { items, heavy, light: [] };
+}
+
+/** Upright, or leaning where the pipe itself stands near upright. */
+function poleDirection(pipe: PaperPoint): PaperPoint {
+  return Math.abs(pipe[0]) < 0.45 ? [0.866, -0.5] : [0, -1];
+}
+
+function pennant(top: PaperPoint, pole: PaperPoint): readonly PaperPoint[] {
+  const foot: PaperPoint = [top[0] - pole[0] * 2.6, top[1] - pole[1] * 2.6];
+  const side: PaperPoint = pole[0] === 0 ? [1, 0] : [0.5, 0.866];
+  return [top, [(top[0] + foot[0]) / 2 + side[0] * 3.4, (top[1] + foot[1]) / 2 + side[1] * 3.4], foot];
+}
