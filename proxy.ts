@@ -43,14 +43,17 @@ function refuseWrite(request: NextRequest, baseUrl: string): { status: number; e
 
 /**
  * On one's own machine a page may be asked for as localhost while the shop's address says 127.0.0.1, or the other way
- * round. Its writes would be refused, so the browser is sent to the address that counts.
+ * round. Its writes would be refused, so the browser is sent to the address that counts. By a page, since Next cuts a
+ * redirect between two names of one server down to its path.
  */
 function otherLoopbackName(request: NextRequest, baseUrl: string): NextResponse | null {
   const host = request.headers.get("host");
   if (host === null || baseUrl === "" || !isLoopback(baseUrl)) return null;
   const asked = `http://${host}`;
   if (!URL.canParse(asked) || !isLoopback(asked) || new URL(asked).host === new URL(baseUrl).host) return null;
-  return NextResponse.redirect(new URL(`${request.nextUrl.pathname}${request.nextUrl.search}`, baseUrl), 307);
+  const target = new URL(`${request.nextUrl.pathname}${request.nextUrl.search}`, baseUrl).href.replace(/&/g, "&amp;").replace(/[<>"']/g, encodeURIComponent);
+  const page = `<!doctype html><html lang="en"><title>Quarterline</title><meta http-equiv="refresh" content="0;url=${target}"><p>Quarterline is at <a href="${target}">this address</a>.`;
+  return new NextResponse(page, { headers: { ...securityHeaders(DATA_POLICY, false), "content-type": "text/html; charset=utf-8" } });
 }
 
 function answerPage(request: NextRequest, secure: boolean): NextResponse {
