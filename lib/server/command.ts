@@ -28,6 +28,8 @@ export interface CommandContext<V = Actor> {
   audit(event: AuditEvent, where?: ShopLog): void;
   /** Writes the entries told so far and gives the head, for what must carry it (a PDF). Takes the log's lock. */
   auditNow(): Promise<ChainHead>;
+  /** Says that there may be nothing to tell: what was asked for is so already. */
+  unchanged(): void;
   /** Queues a mail in this transaction. */
   mail(mail: Mail): void;
 }
@@ -36,6 +38,7 @@ interface Gathered {
   readonly entries: { readonly event: AuditEvent; readonly where: ShopLog }[];
   readonly mails: Mail[];
   readonly heads: { readonly shopId: string; readonly head: ChainHead }[];
+  mayBeSilent: boolean;
 }
 
 /**
@@ -49,11 +52,11 @@ export async function runCommand<V extends Actor | null, R>(
 ): Promise<R> {
   let heads: Gathered["heads"] = [];
   const result = await inTransaction(async (tx) => {
-    const gathered: Gathered = { entries: [], mails: [], heads: [] };
+    const gathered: Gathered = { entries: [], mails: [], heads: [], mayBeSilent: rule === "unlogged" };
     const now = new Date();
     const done = await work(contextOf(viewer, tx, now, gathered));
     if (gathered.entries.length > 0) await writeEntries(tx, now, gathered);
-    if (rule === "logged" && gathered.heads.length === 0) throw new Error("A command changed something without telling the log.");
+    if (!gathered.mayBeSilent && gathered.heads.length === 0) throw new Error("A command changed something without telling the log.");
     await writeMails(tx, gathered);
     heads = gathered.heads;
     return done;
@@ -73,6 +76,9 @@ function contextOf<V extends Actor | null>(viewer: V, tx: Transaction, now: Date
     now,
     audit: (event, where = own()) => void gathered.entries.push({ event, where }),
     auditNow: () => writeEntries(tx, now, gathered),
+    unchanged: () => {
+      gathered.mayBeSilent = true;
+    },
     mail: (mail) => void gathered.mails.push(mail),
   };
 }

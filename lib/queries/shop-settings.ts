@@ -1,0 +1,14 @@
+/** The shop's settings, as its page shows them. */
+import type { ShopSettings } from "@/lib/rules/api-types";
+import { getDb } from "@/lib/server/database";
+import type { ShopMember } from "@/lib/server/scope";
+import { Shop } from "@/models";
+import { takeOutWords } from "./take-out-words";
+
+export async function shopSettings(member: ShopMember): Promise<ShopSettings> {
+  getDb();
+  const shop = await Shop.findOne({ where: { id: member.shopId }, rejectOnEmpty: true });
+  const { fields, logo, sheetSize, defaults, stock } = shop.settings;
+  const titleBlock = { shopName: shop.name, client: "", project: "", jobNumber: "", area: "", fields, logo };
+  return { name: shop.name, titleBlock, sheetSize, defaults, stock, takeOuts: await takeOutWords(member) };
+}

@@ -1,0 +1,15 @@
+/** The title block of a job's sheets: the shop's name, the job's words, and the job's logo or else the shop's. */
+import type { TitleBlock } from "@/iso";
+import type { Job, Shop } from "@/models";
+
+export function titleBlockOf(shop: Shop, job: Job): TitleBlock {
+  return {
+    shopName: shop.name,
+    client: job.client,
+    project: job.title,
+    jobNumber: job.number,
+    area: job.area,
+    fields: job.settings.fields,
+    logo: job.settings.logo ?? shop.settings.logo,
+  };
+}
