@@ -30,6 +30,7 @@ export * from "./run/build-model";
 export * from "./run/marks";
 export * from "./run/mark-names";
 export * from "./run/defaults";
+export * from "./run/edit";
 export * from "./run/axes";
 
 // draw
