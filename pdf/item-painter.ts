@@ -2,9 +2,8 @@
  * Paints a display list with pdfkit, straight: lines, cubics and text only. Pen and colours are set when they change,
  * since a sheet has thousands of items and few pens.
  */
-import type { DisplayItem, Ink, PathSegment, TextItem } from "@/iso";
+import { INK_COLOURS, type DisplayItem, type Ink, type PathSegment, type TextItem } from "@/iso";
 import { measureText } from "@/fonts/widths";
-import { PAPER_INKS } from "./inks";
 import { TextPainter } from "./text-painter";
 
 export class ItemPainter {
@@ -61,7 +60,7 @@ export class ItemPainter {
   }
 
   #pen(ink: Ink, widthMm: number, dash: readonly number[] | undefined): void {
-    if (ink !== this.#stroke) this.#document.strokeColor(PAPER_INKS[ink]);
+    if (ink !== this.#stroke) this.#document.strokeColor(INK_COLOURS[ink]);
     if (widthMm !== this.#widthMm) this.#document.lineWidth(widthMm);
     const wanted = dash?.join(" ") ?? "";
     if (wanted !== this.#dash) {
@@ -74,7 +73,7 @@ export class ItemPainter {
   }
 
   #fillWith(ink: Ink): void {
-    if (ink !== this.#fill) this.#document.fillColor(PAPER_INKS[ink]);
+    if (ink !== this.#fill) this.#document.fillColor(INK_COLOURS[ink]);
     this.#fill = ink;
   }
 }

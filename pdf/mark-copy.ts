@@ -11,7 +11,7 @@ import { faceBytes } from "./faces";
 
 export interface CopyMark {
   /** Across every page; null for a live revision, whose copies carry the foot line only. */
-  readonly word: "SUPERSEDED" | "VOID" | "HOLD" | null;
+  readonly word: "SUPERSEDED" | "VOID" | "HOLD" | "RETURNED" | null;
   /** ISO time of printing, handed in. */
   readonly printedAt: string;
   readonly printedBy: string;

@@ -3,7 +3,7 @@ import type { PaperPoint } from "../geometry/types";
 import type { DisplayItem, Ink, PathSegment, TextItem } from "./drawing-types";
 
 /** Paint of each ink; the PDF painter uses the same. Dark enough to print grey. */
-export const INK_COLOURS: Readonly<Record<Ink, string>> = { ink: "#16181d", dye: "#1d4e9e", grey: "#7a7d85", paper: "#ffffff", alert: "#a3201c" };
+export const INK_COLOURS: Readonly<Record<Ink, string>> = { ink: "#16181d", dye: "#1d4e9e", grey: "#7a7d85", paper: "#ffffff", alert: "#a3201c", pale: "#dedede" };
 
 /** Roboto's font size over its capital height (1456 of 2048 units). */
 export const FONT_SIZE_PER_CAP = 2048 / 1456;

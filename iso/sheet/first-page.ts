@@ -1,6 +1,6 @@
 /** The first page: the isometric as large as the paper allows, and on tabloid and A3 the tables beside and under it. */
 import type { DisplayItem, Drawing, LegendKey, MeasureText } from "../draw/drawing-types";
-import type { PaperBox } from "../geometry/types";
+import type { PaperBox, PaperPoint } from "../geometry/types";
 import { cutListTable } from "./cut-list";
 import { dataTable } from "./data-table";
 import { itemMoved, lineFrom, textAt } from "./items";
@@ -24,6 +24,8 @@ export interface FirstPage {
 }
 
 const PAD = 2;
+/** Between the frame and the drawing's room, mm. */
+const INSET = 3;
 /** The lists under the isometric take at most this share of the body. */
 const UNDER_SHARE = 0.42;
 
@@ -116,17 +118,20 @@ function underDrawing(facts: SheetFacts, left: PaperBox, measure: MeasureText): 
 
 /** The isometric in its room, its legend in a strip under it. */
 function drawingItems(facts: SheetFacts, room: PaperBox, draw: DrawRoom, measure: MeasureText): DisplayItem[] {
+  const middle: PaperPoint = [(room.minX + room.maxX) / 2, (room.minY + room.maxY) / 2];
+  if (facts.spool === null) return [textAt(middle, `No spool ${facts.input.spool} in this line yet.`, { layer: "label", anchor: "middle", capMm: 3.5 })];
   const widthMm = room.maxX - room.minX;
-  const reserve = legendLayout(likelyLegend(facts), widthMm, measure).heightMm;
-  const space = { ...room, maxY: room.maxY - reserve };
-  if (facts.spool === null) {
-    return [textAt([(room.minX + room.maxX) / 2, (room.minY + room.maxY) / 2], `No spool ${facts.input.spool} in this line yet.`, { layer: "label", anchor: "middle", capMm: 3.5 })];
+  const legendMm = (keys: readonly LegendKey[]) => legendLayout(keys, widthMm, measure).heightMm;
+  const drawFor = (reserveMm: number) => draw(widthMm - 2 * INSET, room.maxY - room.minY - reserveMm - 2 * INSET);
+  let reserveMm = legendMm(likelyLegend(facts));
+  let drawing = drawFor(reserveMm);
+  if (legendMm(drawing.legend) > reserveMm) {
+    reserveMm = legendMm(drawing.legend);
+    drawing = drawFor(reserveMm);
   }
-  const inset = 3;
-  const drawing = draw(widthMm - 2 * inset, space.maxY - space.minY - 2 * inset);
-  const legend = { ...room, minY: space.maxY };
+  const legend = { ...room, minY: room.maxY - reserveMm };
   return [
-    ...drawing.items.map((item) => itemMoved(item, [space.minX + inset, space.minY + inset])),
+    ...drawing.items.map((item) => itemMoved(item, [room.minX + INSET, room.minY + INSET])),
     lineFrom([legend.minX, legend.minY], [legend.maxX, legend.minY], EDGE_LINE, "title"),
     ...legendItems(drawing.legend, legend, measure),
   ];

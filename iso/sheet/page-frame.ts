@@ -15,10 +15,8 @@ import { shortEntries, stripEntries, titleEntries } from "./title-fields";
 import { blockOutline, fieldItems, setFields, shopBlock, type FieldColumns, type ShopBlock } from "./title-strip";
 
 /** At the foot of every sheet (TRADE.md, cautions). */
-const FOOT = [
-  "A layout and records aid: code, WPS, design and acceptance come from the engineer, the owner and local law.",
-  "Printed copies are uncontrolled.",
-];
+const FOOT =
+  "A layout and records aid: code, WPS, design and acceptance come from the engineer, the owner and local law. Printed copies are uncontrolled.";
 /** Width of the side column on tabloid and A3. */
 const SIDE_WIDTH = 148;
 
@@ -108,13 +106,11 @@ function titleParts(facts: SheetFacts, paper: Paper, parts: TitleParts, measure:
   };
 }
 
-/** Frame and foot line: cautions of every sheet, and the head of the audit chain it was issued under. */
+/** Frame and foot line. */
 function paperOf(facts: SheetFacts, measure: MeasureText): Paper {
   const { widthMm, heightMm } = sheetSizeMm(facts.input.size);
   const frame = frameBox(widthMm, heightMm);
-  const head = facts.input.revision.auditHead;
-  const text = [...FOOT, ...(head === "" ? [] : [`Record ${head.slice(0, 12)}`])].join(" ");
-  const lines = wrapText(text, frame.maxX - frame.minX - 3, { capMm: TEXT_CAP, face: "regular" }, measure);
+  const lines = wrapText(FOOT, frame.maxX - frame.minX - 3, { capMm: TEXT_CAP, face: "regular" }, measure);
   const top = frame.maxY - linesHeight(lines.length) - 1;
   return {
     frame, inner: { ...frame, maxY: top },

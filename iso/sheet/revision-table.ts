@@ -16,7 +16,7 @@ export function revisionTable(input: SheetInput, most: number | null): Table | n
       { head: "REV", share: 0, minMm: 11, align: "middle" },
       { head: "DESCRIPTION", share: 3, minMm: 30 },
       { head: "DATE", share: 0, minMm: 21 },
-      { head: "BY", share: 1, minMm: 14 },
+      { head: "BY", share: 1, minMm: 18 },
       { head: "CHECKED", share: 1, minMm: 19 },
       { head: "APPROVED", share: 1, minMm: 21 },
     ],

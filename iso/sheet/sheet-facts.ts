@@ -37,10 +37,10 @@ export function outsideDiameterMm(facts: SheetFacts, nps: Nps): number | null {
   return facts.pieces.find((piece) => piece.nps === nps)?.odMm ?? pipeOdMm(nps, facts.input.units);
 }
 
-/** "NPS 4 STD" on an imperial line, "DN 100 STD" on a metric one. */
+/** "NPS 4 STD" on an imperial line, "DN 100 SCH 40" on a metric one. */
 export function sizeText(nps: Nps, schedule: string | null, units: SheetInput["units"]): string {
   const size = units === "metric" ? `DN ${DN[nps]}` : `NPS ${nps}`;
-  return schedule ? `${size} ${schedule}` : size;
+  return schedule ? `${size} ${/^\d/.test(schedule) ? `SCH ${schedule}` : schedule}` : size;
 }
 
 /** Nominal diameters of ASME B36.10M (from memory). */

@@ -43,7 +43,7 @@ export interface Table {
   /** No columns' heads are printed when all are "". */
   readonly columns: readonly Column[];
   readonly rows: readonly Row[];
-  /** Under the last row. */
+  /** Under the rows, repeated with every part of the table. */
   readonly foot: readonly string[];
 }
 
@@ -128,9 +128,13 @@ export function tableHeight(table: SetTable): number {
   return table.headHeightMm + table.rows.reduce((sum, row) => sum + row.heightMm, 0) + blockHeight(table.foot.length);
 }
 
-/** Height of the head and the first row: what must fit for a start to make sense. */
+/** A part of a table with fewer rows than this is not worth its head. */
+const FEWEST_ROWS = 3;
+
+/** Height of the head and the first few rows from startRow on: what must fit for a start to make sense. */
 export function tableStartHeight(table: SetTable, startRow = 0): number {
-  return table.headHeightMm + (table.rows[startRow]?.heightMm ?? 0) + (startRow >= table.rows.length - 1 ? blockHeight(table.foot.length) : 0);
+  const first = table.rows.slice(startRow, startRow + FEWEST_ROWS);
+  return table.headHeightMm + first.reduce((sum, row) => sum + row.heightMm, 0) + blockHeight(table.foot.length);
 }
 
 export interface PlacedTable {
@@ -153,7 +157,7 @@ export function placeTable(table: SetTable, at: PaperPoint, roomMm: number, star
     items.push(...placeRow(table, row, [at[0], y]));
     y += row.heightMm;
   }
-  if (done && table.foot.length > 0) {
+  if (table.foot.length > 0) {
     items.push(...placeLines(table.foot, [at[0], y], "caution"));
     y += blockHeight(table.foot.length);
   }
@@ -161,18 +165,15 @@ export function placeTable(table: SetTable, at: PaperPoint, roomMm: number, star
   return { items: [...items, boxOutline(box, { widthMm: EDGE_LINE })], heightMm: y - at[1], nextRow: done ? null : last };
 }
 
+/** One past the last row to place; never leaves one row alone for the next part. */
 function lastRowThatFits(table: SetTable, roomMm: number, startRow: number): number {
-  const footHeight = blockHeight(table.foot.length);
-  let used = table.headHeightMm;
+  let used = table.headHeightMm + blockHeight(table.foot.length);
   let row = startRow;
-  while (row < table.rows.length) {
-    const isLast = row === table.rows.length - 1;
-    const next = used + table.rows[row]!.heightMm;
-    if (row > startRow && next + (isLast ? footHeight : 0) > roomMm) break;
-    used = next;
+  while (row < table.rows.length && (row === startRow || used + table.rows[row]!.heightMm <= roomMm)) {
+    used += table.rows[row]!.heightMm;
     row += 1;
   }
-  return row;
+  return row === table.rows.length - 1 && row - startRow > FEWEST_ROWS ? row - 1 : row;
 }
 
 function placeLines(lines: readonly string[], at: PaperPoint, layer: "caution" | "table"): DisplayItem[] {

@@ -21,7 +21,7 @@ export type TitleEntry = Field | FieldHeading;
 
 const field = (label: string, value: string, maxLines = 2): Field => ({ label, value: value.trim() === "" ? "-" : value, maxLines });
 
-/** Everything a title block carries. */
+/** Everything a title block carries; RECORD is the head of the audit chain the sheet was issued under. */
 export function titleEntries(facts: SheetFacts): TitleEntry[] {
   const { titleBlock, revision } = facts.input;
   const { settings } = facts.model.document;
@@ -43,6 +43,7 @@ export function titleEntries(facts: SheetFacts): TitleEntry[] {
     field("DRAWN", revision.drawnBy),
     field("CHECKED", revision.checkedBy),
     field("ISSUED", issuedText(revision.issuedAt)),
+    ...(revision.auditHead === "" ? [] : [field("RECORD", revision.auditHead.slice(0, 16))]),
   ];
 }
 
@@ -56,7 +57,7 @@ export function restEntries(facts: SheetFacts): Field[] {
   return titleEntries(facts).flatMap((entry) => ("label" in entry && !IN_STRIP.has(entry.label) ? [entry] : []));
 }
 
-const IN_STRIP = new Set(["CLIENT", "PROJECT", "JOB NO.", "LINE", "SPOOL", "SIZE", "SCHEDULE", "MATERIAL", "UNITS", "SCALE", "NORTH", "DRAWN", "CHECKED", "ISSUED"]);
+const IN_STRIP = new Set(["CLIENT", "PROJECT", "JOB NO.", "LINE", "SPOOL", "SIZE", "SCHEDULE", "MATERIAL", "UNITS", "SCALE", "NORTH", "DRAWN", "CHECKED", "ISSUED", "RECORD"]);
 
 /** What a following page repeats. */
 export function shortEntries(facts: SheetFacts): TitleEntry[] {
