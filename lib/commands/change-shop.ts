@@ -1,10 +1,14 @@
 /** The shop's own settings, its logo, and its word on catalogue take-outs. */
+import { catalogueValue } from "@/iso";
 import type { ShopSettingsForm } from "@/lib/rules/forms";
 import type { CommandContext } from "@/lib/server/command";
 import type { SentFile } from "@/lib/server/body";
+import { refuseInvalid } from "@/lib/server/errors";
 import { inShop } from "@/lib/server/scope";
 import { Shop, TakeOutWord } from "@/models";
 import { storeLogo } from "./store-logo";
+
+const NO_TABLE = "No table of ours has this fitting, so there is nothing to confirm. Enter what you measured.";
 
 /** Changes what the form names; what is absent stays. */
 export async function changeShop(context: CommandContext, form: ShopSettingsForm): Promise<void> {
@@ -26,6 +30,9 @@ export async function setShopLogo(context: CommandContext, file: SentFile | null
 /** Confirms a take-out as tabulated (`valueMm` null) or replaces it with what the shop measured, mm. */
 export async function recordTakeOut(context: CommandContext, form: { readonly key: string; readonly valueMm: number | null }): Promise<void> {
   const { viewer, tx, now } = context;
+  if (form.valueMm === null && catalogueValue(form.key, "imperial", []) === null) {
+    throw refuseInvalid(NO_TABLE, { key: NO_TABLE });
+  }
   await inShop(viewer).add(TakeOutWord, { key: form.key, valueMm: form.valueMm, by: viewer.personId, at: now }, tx);
   context.audit({ type: "take-out.word", data: form });
 }

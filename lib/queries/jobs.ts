@@ -47,29 +47,34 @@ export async function jobRows(viewer: SessionViewer): Promise<JobRow[]> {
 /** @throws Refusal 404; 403 for a fitter when nothing of it is issued. */
 export async function jobDetail(viewer: SessionViewer, jobId: string): Promise<JobDetail> {
   const job = await inShop(viewer).one(Job, jobId);
-  const lines = await lineRows(viewer, jobId);
-  if (seesIssuedOnly(viewer) && lines.length === 0) throw refuseForbidden("Nothing of this job is issued yet.");
+  const lines = await linesOf(viewer, jobId);
   const { number, title, client, area, open } = job;
   return { id: job.id, number, title, client, area, open, ...job.settings, lines };
 }
 
-async function lineRows(viewer: SessionViewer, jobId: string): Promise<LineRow[]> {
+/** A job's lines that are not archived, by number. @throws Refusal 404, 403 as for the job. */
+export async function lineRows(viewer: SessionViewer, jobId: string): Promise<LineRow[]> {
+  await inShop(viewer).one(Job, jobId);
+  return linesOf(viewer, jobId);
+}
+
+async function linesOf(viewer: SessionViewer, jobId: string): Promise<LineRow[]> {
   const attributes = ["id", "number", "title", "size", "material", "points", "updatedAt", "updatedBy"] as const;
   const lines = await inShop(viewer).all(Line, { jobId, archivedAt: null }, null, { attributes: [...attributes], order: [["number", "ASC"]] });
   const issuedOnly = seesIssuedOnly(viewer);
   const spools = await spoolRowsByLine(viewer, lines.map((line) => line.id), issuedOnly);
   const nameOf = await peopleNames(lines.map((line) => line.updatedBy));
-  return lines
-    .filter((line) => !issuedOnly || spools.has(line.id))
-    .map((line) => ({
-      id: line.id,
-      number: line.number,
-      title: line.title,
-      size: line.size,
-      material: line.material,
-      points: line.points,
-      spools: spools.get(line.id) ?? [],
-      updatedAt: line.updatedAt.toISOString(),
-      updatedBy: nameOf(line.updatedBy),
-    }));
+  const shown = lines.filter((line) => !issuedOnly || spools.has(line.id));
+  if (issuedOnly && shown.length === 0) throw refuseForbidden("Nothing of this job is issued yet.");
+  return shown.map((line) => ({
+    id: line.id,
+    number: line.number,
+    title: line.title,
+    size: line.size,
+    material: line.material,
+    points: line.points,
+    spools: spools.get(line.id) ?? [],
+    updatedAt: line.updatedAt.toISOString(),
+    updatedBy: nameOf(line.updatedBy),
+  }));
 }

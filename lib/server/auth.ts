@@ -4,14 +4,14 @@
  */
 import type { NextAuthOptions } from "next-auth";
 import Credentials from "next-auth/providers/credentials";
-import { signInSchema } from "@/lib/rules/forms";
-import { Refusal } from "./errors";
+import { emailSchema, signInSchema } from "@/lib/rules/forms";
+import { answerOfError, Refusal } from "./errors";
 import { log } from "./log";
 import { isPassword } from "./passwords";
 import { addressOf, deviceOf } from "./request-facts";
 import { endSession, isSecureSite, personByEmail, SESSION_DAYS, startSession } from "./session";
 import { settings } from "./settings";
-import { countTry, forgetTries, signInLimits } from "./throttle";
+import { assertTriesLeft, countTry, forgetTries, signInLimits } from "./throttle";
 
 const WRONG = "That e-mail address and password do not go together.";
 const NO_SHOP = "You do not belong to a shop any longer. Ask its owner for an invitation.";
@@ -59,6 +59,25 @@ export function authOptions(): NextAuthOptions {
     },
     logger: { error: (code) => log.warn({ code }, "sign-in trouble"), warn: () => undefined, debug: () => undefined },
   };
+}
+
+/**
+ * The answer to a sign-in after too many tries (429 with a sentence and the time to wait), or null to go on. Asked
+ * before next-auth, which would answer every refusal with 401. `url` is where its own client looks for the error.
+ */
+export async function signInLimited(request: Request): Promise<Response | null> {
+  if (request.method !== "POST" || !new URL(request.url).pathname.endsWith("/callback/credentials")) return null;
+  const form = new URLSearchParams(await request.clone().text().catch(() => ""));
+  const parsed = emailSchema.safeParse(form.get("email") ?? "");
+  if (!parsed.success) return null;
+  try {
+    await assertTriesLeft(signInLimits(parsed.data, addressOf(request.headers)), new Date());
+    return null;
+  } catch (error) {
+    const answer = answerOfError(error);
+    const url = `${settings().BASE_URL}/sign-in?error=${answer.status === 429 ? "throttled" : "failed"}`;
+    return Response.json({ ...(await answer.json()), url }, { status: answer.status, headers: answer.headers });
+  }
 }
 
 /** next-auth shows an error's message to the person, so a fault must not carry its own. */

@@ -40,6 +40,16 @@ export async function countTry(limits: readonly TryLimit[], now: Date): Promise<
   }
 }
 
+/** Looks without counting. @throws Refusal 429 when the next try of a limit would be one too many. */
+export async function assertTriesLeft(limits: readonly TryLimit[], now: Date): Promise<void> {
+  getDb();
+  for (const limit of limits) {
+    const row = await Throttle.findOne({ where: { key: keyOf(limit) } });
+    const over = row === null || row.windowStartedAt.getTime() + limit.windowS * 1_000 <= now.getTime();
+    if (!over && row.tries >= limit.tries) throw tooMany(limit, row.windowStartedAt, now);
+  }
+}
+
 function tooMany(limit: TryLimit, startedAt: Date, now: Date) {
   const leftS = Math.max(1, Math.ceil((startedAt.getTime() - now.getTime()) / 1_000) + limit.windowS);
   const minutes = Math.ceil(leftS / 60);
