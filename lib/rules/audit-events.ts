@@ -36,7 +36,7 @@ export const auditEventSchema = z.discriminatedUnion("type", [
   event("line.archived", { ...onLine, archived: z.boolean() }),
   event("upload.added", { ...onLine, uploadId: id, name: words, sha256: id }),
   event("upload.removed", { ...onLine, uploadId: id, name: words }),
-  event("revision.submitted", { ...onRevision, spoolId: id, inputSha256: id, contentSha256: id }),
+  event("revision.submitted", { ...onRevision, spoolId: id, contentSha256: id }),
   event("revision.signed", { ...onRevision, inputSha256: id, accepted: z.array(words), superseded: words.nullable() }),
   event("revision.returned", { ...onRevision, reason: words }),
   event("revision.held", { ...onRevision, reason: words }),

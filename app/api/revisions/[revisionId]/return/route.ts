@@ -1,0 +1,11 @@
+import { z } from "zod";
+import { returnRevision } from "@/lib/commands/decide-revision";
+import { reasonSchema } from "@/lib/rules/forms";
+import { idSchema } from "@/lib/rules/write-bodies";
+import { write } from "@/lib/server/write";
+
+export const POST = write("revisions.decide", {
+  params: z.object({ revisionId: idSchema }),
+  body: reasonSchema,
+  run: (context, { params, body }) => returnRevision(context, params.revisionId, body.reason),
+});
