@@ -5,7 +5,6 @@ import { canDo } from "@/lib/rules/permissions";
 import { isLive, submitRefusal } from "@/lib/rules/revision-rules";
 import { sheetNumberText } from "@/lib/rules/sheet-number";
 import { spoolStops } from "@/lib/rules/spool-stops";
-import { sheetNumberText } from "@/lib/rules/sheet-number";
 import { refuseNotFound } from "@/lib/server/errors";
 import { inShop } from "@/lib/server/scope";
 import type { SessionViewer } from "@/lib/server/session";
