@@ -14,6 +14,9 @@ export interface LineSettingsFormProps {
   readonly settings: LineSettings;
   readonly editable: boolean;
   readonly onSave: (settings: LineSettings) => Promise<void>;
+  /** A line changes its units elsewhere, where it is asked what its numbers mean. */
+  readonly fixedUnits?: boolean;
+  readonly saveLabel?: string;
 }
 
 interface Part {
@@ -28,7 +31,7 @@ const ELBOWS = [
 ];
 
 /** What each new line starts from: pipe, fittings, allowances, limits and texts as entered. */
-export function LineSettingsForm({ settings, editable, onSave }: LineSettingsFormProps) {
+export function LineSettingsForm({ settings, editable, onSave, fixedUnits = false, saveLabel = "Save the defaults" }: LineSettingsFormProps) {
   const [trouble, setTrouble] = useState<string | null>(null);
   const { register, handleSubmit, formState } = useForm<SettingsText, unknown, LineSettings>({
     resolver: zodResolver(settingsTextSchema),
@@ -44,14 +47,14 @@ export function LineSettingsForm({ settings, editable, onSave }: LineSettingsFor
     <form noValidate onSubmit={(event) => void handleSubmit(save)(event)}>
       {trouble ? <Notice tone="trouble" className="mb-4">{trouble}</Notice> : null}
       <fieldset disabled={!editable} className="space-y-6">
-        <PipeFields {...part} />
+        <PipeFields {...part} fixedUnits={fixedUnits} />
         <AllowanceFields {...part} />
         <LimitFields {...part} />
         <EnteredFields {...part} />
       </fieldset>
       {editable ? (
         <Button type="submit" tone="primary" className="mt-6" busy={formState.isSubmitting} busyLabel="Saving">
-          Save the defaults
+          {saveLabel}
         </Button>
       ) : null}
     </form>
@@ -68,10 +71,10 @@ function Group({ title, hint, children }: { readonly title: string; readonly hin
   );
 }
 
-function PipeFields({ register, errors }: Part) {
+function PipeFields({ register, errors, fixedUnits }: Part & { readonly fixedUnits: boolean }) {
   return (
     <Group title="Pipe and fittings">
-      <Select label="Units" options={UNIT_OPTIONS} error={errors.units?.message} {...register("units")} />
+      {fixedUnits ? null : <Select label="Units" options={UNIT_OPTIONS} error={errors.units?.message} {...register("units")} />}
       <Select label="Size" options={NPS_OPTIONS} error={errors.nps?.message} {...register("nps")} />
       <TextField label="Schedule" figure error={errors.schedule?.message} {...register("schedule")} />
       <TextField label="Material" error={errors.material?.message} {...register("material")} />

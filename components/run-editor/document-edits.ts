@@ -1,6 +1,5 @@
 /** Edits of a run document the grid makes: each takes a document and gives a new one, sharing all that stays. */
-import type { Item, Point, Provenance, Run, RunDocument } from "@/iso";
-import { isBranchItem } from "./item-text";
+import { branchAdd, isBranchFitting, pointInsert, type Item, type Point, type Provenance, type Run, type RunDocument } from "@/iso";
 
 export const FROM_DRAWING: Provenance = { kind: "from-drawing", toleranceMm: null, by: null, at: null, second: null };
 
@@ -29,30 +28,7 @@ export function withPoint(document: RunDocument, pointId: string, edit: (point: 
 }
 
 export function withPointsInserted(document: RunDocument, runId: string, row: number, added: readonly Point[]): RunDocument {
-  return withPoints(document, runId, (points) => [...points.slice(0, row), ...added, ...points.slice(row)]);
-}
-
-/** Takes a point out, with the branches that leave from it and from theirs. */
-export function withPointRemoved(document: RunDocument, pointId: string): RunDocument {
-  const place = pointPlace(document, pointId);
-  if (!place) return document;
-  const without = withPoints(document, place.runId, (points) => points.filter((point) => point.id !== pointId));
-  return withoutBranches(without, pointId);
-}
-
-function withoutBranches(document: RunDocument, pointId: string): RunDocument {
-  const gone = document.runs.filter((run) => run.from === pointId);
-  if (gone.length === 0) return document;
-  const rest = { ...document, runs: document.runs.filter((run) => run.from !== pointId) };
-  return gone.flatMap((run) => run.points).reduce((now, point) => withoutBranches(now, point.id), rest);
-}
-
-/** Swaps a point with the row above (-1) or below (+1) it; unchanged at the run's ends. */
-export function withPointMoved(document: RunDocument, runId: string, row: number, by: -1 | 1): RunDocument {
-  const run = runOf(document, runId);
-  const [point, other] = [run?.points[row], run?.points[row + by]];
-  if (!point || !other) return document;
-  return withPoints(document, runId, (points) => points.map((each, i) => (i === row ? other : i === row + by ? point : each)));
+  return added.reduce((now, point, i) => pointInsert(now, runId, row + i, point), document);
 }
 
 /**
@@ -62,9 +38,7 @@ export function withPointMoved(document: RunDocument, runId: string, row: number
 export function withItem(document: RunDocument, pointId: string, item: Item, branchId: string): RunDocument {
   const set = withPoint(document, pointId, (point) => ({ ...point, item: mergedItem(point.item, item) }));
   const branch = set.runs.find((run) => run.from === pointId);
-  if (isBranchItem(item)) {
-    return branch ? set : { ...set, runs: [...set.runs, { id: branchId, name: "", from: pointId, pipe: null, points: [] }] };
-  }
+  if (isBranchFitting(item)) return branch ? set : branchAdd(set, pointId, branchId);
   return branch && branch.points.length === 0 ? { ...set, runs: set.runs.filter((run) => run !== branch) } : set;
 }
 

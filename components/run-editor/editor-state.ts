@@ -2,9 +2,9 @@
  * The editor's state and what may be done to it. One reducer, no React, no clock, no randomness: ids, names and dates
  * come in with the action. Every change of the document is one step of the history, so a cell committed is one undo.
  */
-import type { Point, RunDocument } from "@/iso";
+import { pointMove, pointRemove, type Point, type RunDocument } from "@/iso";
 import { cellText, COLUMNS, commitCell, nearSideAt, newPoint, type CellTarget, type Column, type CommitContext } from "./cell-commit";
-import { pointPlace, runOf, withPoint, withPointMoved, withPointRemoved, withPointsInserted } from "./document-edits";
+import { pointPlace, runOf, withPoint, withPointsInserted } from "./document-edits";
 import { pastedCells } from "./paste";
 
 /** A typed text that was not understood stays with its cell until it is mended or dropped. */
@@ -97,7 +97,7 @@ export function editorReducer(state: EditorState, action: EditorAction): EditorS
     case "row-insert": return insertRow(state, action.target, action.stamp);
     case "row-remove": return removeRow(state, action.target, action.stamp);
     case "row-move": {
-      const next = changed(state, withPointMoved(state.document, action.target.runId, action.target.row, action.by), action.stamp);
+      const next = changed(state, pointMove(state.document, action.target.runId, action.target.row, action.target.row + action.by), action.stamp);
       return next === state ? state : moveTo(next, { ...action.target, row: action.target.row + action.by }, true);
     }
     case "point-patch": return changed(state, patched(state.document, action), action.stamp);
@@ -219,7 +219,7 @@ function removeRow(state: EditorState, target: CellTarget, stamp: Stamp): Editor
   const point = runOf(state.document, target.runId)?.points[target.row];
   if (!point) return state;
   const drafts = Object.fromEntries(Object.entries(state.drafts).filter(([key]) => !key.startsWith(`${point.id}:`)));
-  const next = changed({ ...state, drafts }, withPointRemoved(state.document, point.id), stamp);
+  const next = changed({ ...state, drafts }, pointRemove(state.document, point.id), stamp);
   return { ...next, focusTurn: next.focusTurn + 1 };
 }
 

@@ -69,8 +69,3 @@ export function itemCaution(item: Item): string | null {
   if (item.kind === "elbow" && item.elbow.startsWith("trimmed")) return TRIMMED_CAUTION;
   return wordOf(item)?.takeOut ? TAKE_OUT_CAUTION : null;
 }
-
-/** Whether a branch run may leave from it. */
-export function isBranchItem(item: Item): boolean {
-  return item.kind === "tee" || item.kind === "outlet" || item.kind === "stub-in";
-}

@@ -144,11 +144,15 @@ function parseAxes(parts: readonly Part[], units: UnitSystem, kind: "enu" | "abs
     seen.add(axis.slot);
     const length = parseLength(part.length, units);
     if (!length.ok) return refused(length.message);
-    const text = axis.sign < 0 ? `${part.direction} ${part.length}` : part.length;
-    entries[axis.slot] = { text, mm: axis.sign * length.mm };
+    entries[axis.slot] = { text: axis.sign < 0 ? negated(part.length) : part.length, mm: axis.sign * length.mm };
   }
   const value = { kind, e: entries[0] ?? EMPTY, n: entries[1] ?? EMPTY, u: entries[2] ?? EMPTY };
   return understood(value, echoTriple(value, units));
+}
+
+/** West 2-0 is east -2-0: an entry's text reads along its positive axis. */
+function negated(text: string): string {
+  return text.startsWith("-") ? text.slice(1).trim() : `-${text}`;
 }
 
 type Triple = Extract<Offset, { kind: "enu" | "absolute" }>;
@@ -175,14 +179,13 @@ export function moveText(offset: Offset): string {
     return `@ ${words.join(" ")}`;
   }
   return tripleLengths(offset)
-    .flatMap((entry, slot) => (entry.text === "" && entry.mm === 0 ? [] : [axisText(entry, slot)]))
+    .flatMap((entry, slot) => (entry.mm === 0 ? [] : [axisText(entry, slot)]))
     .join(" ");
 }
 
-function axisText(entry: Entry, slot: number): string {
-  const text = entry.text === "" ? "0" : entry.text;
-  if (/^[a-z]/i.test(text)) return text;
-  return `${POSITIVE[slot] ?? "E"} ${text}`;
+function axisText({ text, mm }: Entry, slot: number): string {
+  if (mm >= 0) return `${POSITIVE[slot] ?? "E"} ${text === "" ? "0" : text}`;
+  return `${NEGATIVE[slot] ?? "W"} ${text.startsWith("-") ? negated(text) : text}`;
 }
 
 /** The echo of a stored offset, in the line's units. */

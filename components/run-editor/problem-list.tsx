@@ -6,7 +6,7 @@ import { pointPlace } from "./document-edits";
 import type { Draft } from "./editor-state";
 import { COLUMN_LABEL } from "./grid-cell";
 import { ProblemMark } from "./point-row";
-import { counted } from "./words";
+import { countText } from "@/components/ui/format";
 
 export interface ProblemListProps {
   readonly document: RunDocument;
@@ -25,7 +25,7 @@ export const ProblemList = memo(function ProblemList({ document, problems, waiti
   if (sorted.length + waiting.length === 0) return <p className="py-2 text-soft">Nothing found. Verify by tape all the same.</p>;
   return (
     <>
-      <p className="py-1 text-sm text-soft">{stops > 0 ? `${counted(stops, "finding")} stop${stops === 1 ? "s" : ""} the sheet.` : "Nothing here stops the sheet."}</p>
+      <p className="py-1 text-sm text-soft">{stops > 0 ? `${countText(stops, "finding")} stop${stops === 1 ? "s" : ""} the sheet.` : "Nothing here stops the sheet."}</p>
       <ul className="divide-y divide-hair border-y border-hair">
         {waiting.map(({ target, draft }) => (
           <Finding key={`${target.runId}${target.row}${target.column}`} severity="stop" place={`${COLUMN_LABEL[target.column]}, row ${target.row + 1}`} text={`"${draft.text}" is not taken yet: ${draft.message}`} onPress={() => onCell(target)} />

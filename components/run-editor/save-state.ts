@@ -1,5 +1,4 @@
 /** States of saving, and the words for them. Pure; the timer and the network are in use-autosave.ts. */
-import { NBSP } from "./words";
 
 export type SaveState =
   | { readonly kind: "saved"; readonly at: string | null }
@@ -17,6 +16,9 @@ export function saveWords(state: SaveState): string {
     case "conflict": return `Not saved: ${state.by} saved this line in the meantime.`;
   }
 }
+
+/** A space that never ends a line. */
+const NBSP = "\u00a0";
 
 /** Hours and minutes on the reader's own clock. */
 export function clockText(iso: string): string {

@@ -4,7 +4,7 @@ import { memo } from "react";
 import { formatLength, formatWeight, type Model } from "@/iso";
 import type { SpoolRow } from "@/lib/rules/api-types";
 import { StateWord } from "@/components/ui/state-word";
-import { counted } from "./words";
+import { countText } from "@/components/ui/format";
 
 /** Each spool with what it holds, its weight and outer box, and its sheet where it has one. */
 export const SpoolSummary = memo(function SpoolSummary({ model, spools }: { readonly model: Model; readonly spools: readonly SpoolRow[] }) {
@@ -20,11 +20,11 @@ export const SpoolSummary = memo(function SpoolSummary({ model, spools }: { read
               <span className="figure font-medium">{known ? <Link className="inked" href={`/spools/${known.id}`}>Spool {spool.letter}</Link> : `Spool ${spool.letter}`}</span>
               {known ? <StateWord state={known.state} hold={known.hold} /> : null}
               <span className="text-sm text-soft">
-                {counted(spool.pieceKeys.length, "piece")}, {counted(weldCount(model, spool.letter), "weld")}
+                {countText(spool.pieceKeys.length, "piece")}, {countText(weldCount(model, spool.letter), "weld")}
               </span>
               <span className="figure ml-auto text-sm">
                 {formatWeight(spool.weightKg, units)}
-                {spool.unweighed > 0 ? `, ${counted(spool.unweighed, "part")} without a weight` : ""}
+                {spool.unweighed > 0 ? `, ${countText(spool.unweighed, "part")} without a weight` : ""}
               </span>
               <span className="figure w-full text-xs text-soft">box {spool.boxMm.map((side) => formatLength(side, units)).join(" × ")}</span>
             </li>

@@ -1,0 +1,61 @@
+"use client";
+import Link from "next/link";
+import type { RunDocument } from "@/iso";
+import { Button } from "@/components/ui/button";
+import type { LineDetail } from "@/lib/rules/api-types";
+import { useEditor } from "./editor-context";
+import { SaveStatus } from "./save-status";
+import type { Autosave } from "./use-autosave";
+
+export type EditorPanel = "help" | "settings" | "closing";
+
+export interface EditorHeadProps {
+  readonly line: LineDetail;
+  readonly document: RunDocument;
+  readonly save: Autosave;
+  readonly canUndo: boolean;
+  readonly canRedo: boolean;
+  readonly sheetShown: boolean;
+  readonly onSheet: () => void;
+  readonly onPanel: (panel: EditorPanel) => void;
+}
+
+/** Which line this is, whether it is saved, and what can be opened. Low, so that the grid starts high on the page. */
+export function EditorHead({ line, document, save, canUndo, canRedo, sheetShown, onSheet, onPanel }: EditorHeadProps) {
+  const { send, readOnly } = useEditor();
+  const { pipe, units, ratingClass } = document.settings;
+  return (
+    <header className="mb-3 border-y border-ink py-2">
+      <div className="flex flex-wrap items-center justify-between gap-x-6 gap-y-2">
+        <div className="min-w-0">
+          <nav aria-label="Where you are" className="flex flex-wrap items-center gap-x-2 text-sm">
+            <Link href="/jobs" className="inked inline-flex min-h-8 items-center">Jobs</Link>
+            <span aria-hidden>/</span>
+            <Link href={`/jobs/${line.job.id}`} className="inked inline-flex min-h-8 items-center">
+              {line.job.number} {line.job.title}
+            </Link>
+          </nav>
+          <h1 className="break-words text-2xl">
+            <span className="figure">{document.number}</span> <span className="font-normal">{document.title}</span>
+          </h1>
+          <p className="text-sm text-soft">
+            NPS {pipe.nps} {pipe.schedule}, {pipe.material}, class {ratingClass}, {units === "metric" ? "millimeters" : "feet and inches"}
+          </p>
+        </div>
+        <div className="flex flex-wrap items-center gap-2" data-screen-only>
+          {readOnly ? null : <SaveStatus state={save.state} onSave={save.saveNow} />}
+          {readOnly ? null : (
+            <>
+              <Button onClick={() => send({ type: "undo" })} disabled={!canUndo}>Undo</Button>
+              <Button onClick={() => send({ type: "redo" })} disabled={!canRedo}>Redo</Button>
+            </>
+          )}
+          <Button onClick={() => onPanel("closing")}>Close between ends</Button>
+          <Button onClick={() => onPanel("settings")}>Line settings</Button>
+          <Button onClick={onSheet} aria-pressed={sheetShown}>{sheetShown ? "Isometric" : "Sheet"}</Button>
+          <Button onClick={() => onPanel("help")}>Keys</Button>
+        </div>
+      </div>
+    </header>
+  );
+}

@@ -1,0 +1,35 @@
+"use client";
+import { useMemo, useState } from "react";
+import type { Model, RunDocument, SheetInput } from "@/iso";
+import { SheetPreview } from "@/components/sheet/sheet-preview";
+import { ChoiceRow } from "@/components/ui/choice-row";
+import type { LineDetail } from "@/lib/rules/api-types";
+
+/** The draft sheet of a spool as it would print now. */
+export function LineSheet({ line, document, model }: { readonly line: LineDetail; readonly document: RunDocument; readonly model: Model }) {
+  const letters = model.spools.map((spool) => spool.letter);
+  const [wanted, setWanted] = useState<string | null>(null);
+  const spool = wanted && letters.includes(wanted) ? wanted : (letters[0] ?? null);
+  const [openedAt] = useState(() => new Date().toISOString());
+  const input = useMemo(() => (spool ? draftInput(line, document, spool, openedAt) : null), [line, document, spool, openedAt]);
+  if (!input || !spool) return <p className="frame p-6 text-soft">No spool yet: the sheet stands here once there is pipe.</p>;
+  return (
+    <div className="min-h-0 flex-1 overflow-y-auto">
+      {letters.length > 1 ? <ChoiceRow label="Spool" value={spool} onChange={setWanted} choices={letters.map((letter) => ({ value: letter, label: `Spool ${letter}` }))} /> : null}
+      <SheetPreview input={input} label={`Draft sheet of spool ${spool}`} />
+    </div>
+  );
+}
+
+function draftInput(line: LineDetail, document: RunDocument, spool: string, openedAt: string): SheetInput {
+  const known = line.spools.find((row) => row.letter === spool);
+  return {
+    version: 1, document, marks: line.marks, takeOuts: line.takeOuts, spool,
+    size: line.sheetSize, units: document.settings.units, titleBlock: line.titleBlock,
+    revision: {
+      sheetNumber: known?.sheetNumber ?? "", code: "", state: "draft", hold: false, rows: [],
+      drawnBy: line.updatedBy, checkedBy: "", issuedAt: openedAt, statusUrl: "", auditHead: "",
+      changedPointIds: [], accepted: [],
+    },
+  };
+}

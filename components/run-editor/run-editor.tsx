@@ -1,0 +1,124 @@
+"use client";
+import { useCallback, useEffect, useMemo, useState } from "react";
+import type { View } from "@/iso";
+import { Notice } from "@/components/ui/notice";
+import type { LineDetail, Viewer } from "@/lib/rules/api-types";
+import type { CellTarget } from "./cell-commit";
+import { CloseDialog } from "./close-dialog";
+import { runOf } from "./document-edits";
+import { readDraft } from "./draft-store";
+import { EditorContext } from "./editor-context";
+import { EditorHead, type EditorPanel } from "./editor-head";
+import { waitingDrafts } from "./editor-state";
+import { FindingPanels } from "./finding-panels";
+import { KeyHelp } from "./key-help";
+import { LineDrawing } from "./line-drawing";
+import { PointDetail } from "./point-detail";
+import { isTouchScreen, PointGrid } from "./point-grid";
+import { ConflictBanner } from "./save-status";
+import { SettingsDrawer } from "./settings-drawer";
+import { LineSheet } from "./line-sheet";
+import { useAutosave } from "./use-autosave";
+import { makeStamp, useEditorState } from "./use-editor-state";
+import { useLineModel } from "./use-line-model";
+import { useUndoKeys } from "./use-undo-keys";
+
+export interface RunEditorProps {
+  readonly line: LineDetail;
+  readonly viewer: Pick<Viewer, "personId" | "name">;
+  /** Reads the line's uploads again. */
+  readonly onUploads: () => Promise<unknown>;
+}
+
+/** A line being typed: grid, isometric, findings, cut list; saves by itself. */
+export function RunEditor({ line, viewer, onUploads }: RunEditorProps) {
+  const [base] = useState(() => ({ document: line.document, version: line.version }));
+  const [state, send] = useEditorState(base.document, viewer.name);
+  const [panel, setPanel] = useState<EditorPanel | null>(null);
+  const [sheetShown, setSheetShown] = useState(false);
+  const { document, cursor } = state;
+  const save = useAutosave({ lineId: line.id, personId: viewer.personId, document, base, enabled: line.editable });
+  const restored = useRestoredDraft(line, viewer.personId, send);
+  const model = useLineModel(state.preview ?? document, line.marks, line.takeOuts);
+  const point = runOf(document, cursor.runId)?.points[cursor.row] ?? null;
+  const doors = useMemo(() => ({ send, openHelp: () => setPanel("help"), readOnly: !line.editable }), [send, line.editable]);
+  const showPoint = useCallback((pointId: string) => send({ type: "show-point", pointId, focus: !isTouchScreen() }), [send]);
+  const showCell = useCallback((target: CellTarget) => send({ type: "cursor", target, focus: true }), [send]);
+  const setView = useCallback((view: View | null) => send({ type: "document-patch", patch: { view } }), [send]);
+  const waiting = useMemo(() => waitingDrafts(state), [state]);
+  useUndoKeys(send, line.editable);
+  const close = (): void => setPanel(null);
+  return (
+    <EditorContext value={doors}>
+      <EditorHead
+        line={line}
+        document={document}
+        save={save}
+        canUndo={state.past.length > 0}
+        canRedo={state.future.length > 0}
+        sheetShown={sheetShown}
+        onSheet={() => setSheetShown((now) => !now)}
+        onPanel={setPanel}
+      />
+      {line.editable ? null : <Notice className="mb-3">You read this line; a detailer or the owner changes it.</Notice>}
+      {restored ? <Notice word="Restored" className="mb-3">Entries of yours that were not saved were kept in this browser and are back. Undo takes them out.</Notice> : null}
+      {save.state.kind === "conflict" ? (
+        <ConflictBanner
+          lineId={line.id}
+          state={save.state}
+          mine={document}
+          onTheirs={(theirs) => {
+            send({ type: "replace", document: theirs.document });
+            save.rebase(theirs.document, theirs.version);
+          }}
+        />
+      ) : null}
+      <div className="grid gap-x-5 gap-y-4 lg:grid-cols-[minmax(36rem,46fr)_minmax(0,54fr)]">
+        <div className="flex min-w-0 flex-col lg:order-2">
+          <div className="flex h-[58vw] min-h-64 flex-col lg:sticky lg:top-3 lg:h-[min(46rem,calc(100dvh-7rem))]">
+            {sheetShown ? <LineSheet line={line} document={document} model={model} /> : <LineDrawing model={model} view={document.view} onView={line.editable ? setView : null} activePointId={point?.id ?? null} onPoint={showPoint} />}
+          </div>
+        </div>
+        <div className="min-w-0 lg:order-1">
+          <div className="border-t border-ink lg:max-h-[min(32rem,calc(100dvh-14rem))] lg:overflow-y-auto lg:border-x lg:border-b">
+            <PointGrid state={state} problems={model.problems} />
+          </div>
+          {point ? <PointDetail document={document} point={point} /> : null}
+          <FindingPanels line={line} model={model} waiting={waiting} activePointId={point?.id ?? null} onPoint={showPoint} onCell={showCell} onUploads={onUploads} />
+        </div>
+      </div>
+      <KeyHelp open={panel === "help"} units={document.settings.units} onClose={close} />
+      <SettingsDrawer open={panel === "settings"} document={document} editable={line.editable} onChange={(patch) => send({ type: "document-patch", patch })} onClose={close} />
+      <CloseDialog
+        open={panel === "closing"}
+        model={model}
+        takeOuts={line.takeOuts}
+        pointId={point?.id ?? null}
+        stamp={() => makeStamp(viewer.name)}
+        onInsert={
+          line.editable
+            ? (next) => {
+                send({ type: "document-patch", patch: { runs: next.runs } });
+                close();
+              }
+            : null
+        }
+        onClose={close}
+      />
+    </EditorContext>
+  );
+}
+
+/** Brings back what this person typed here and the server never got, as one step that can be undone. */
+function useRestoredDraft(line: LineDetail, personId: string, send: ReturnType<typeof useEditorState>[1]): boolean {
+  const [restored, setRestored] = useState(false);
+  const [draft] = useState(() => (line.editable ? readDraft(line.id, personId) : null));
+  useEffect(() => {
+    if (!draft || JSON.stringify(draft.document) === JSON.stringify(line.document)) return;
+    send({ type: "replace", document: draft.document });
+    setRestored(true);
+    // Once, on opening: the line as it was loaded then.
+    // eslint-disable-next-line react-hooks/exhaustive-deps
+  }, []);
+  return restored;
+}
