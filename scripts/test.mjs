@@ -15,7 +15,7 @@ import { runProgram, stopSteps } from "./lib/steps.mjs";
 const ROOM_MB = 1500;
 const bin = (name) => path.join(ROOT, "node_modules", name);
 const reports = mkdtempSync(path.join(tmpdir(), "quarterline-test-"));
-const environment = { ...process.env, VITE_CONFIG_NATIVE_IGNORE_WARNING: "true", AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED: "true", NEXT_TELEMETRY_DISABLED: "1" };
+const environment = { ...process.env, VITE_CONFIG_NATIVE_IGNORE_WARNING: "true", AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED: "true", NEXT_TELEMETRY_DISABLED: "1", QUARTERLINE_QUIET: "1" };
 delete environment.NODE_ENV;
 
 /** Each answers how many checks passed and failed. */

@@ -105,3 +105,9 @@ export async function storageReachable(): Promise<boolean> {
 function isMissing(error: unknown): boolean {
   return error instanceof S3ServiceException && (error.name === "NoSuchKey" || error.$metadata.httpStatusCode === 404);
 }
+
+/** Forgets the connection; for tests that point the settings at another store. */
+export function forgetStorage(): void {
+  shared.quarterlineStorage?.destroy();
+  shared.quarterlineStorage = undefined;
+}

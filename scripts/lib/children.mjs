@@ -2,7 +2,7 @@
 import { spawn } from "node:child_process";
 import { closeSync, openSync, readFileSync } from "node:fs";
 import { PlainError } from "./say.mjs";
-import { processRecord, stopRecorded } from "./processes.mjs";
+import { endingWithParent, processRecord, stopRecorded } from "./processes.mjs";
 
 /**
  * Starts a Node script in its own process group.
@@ -12,7 +12,7 @@ import { processRecord, stopRecorded } from "./processes.mjs";
  */
 export async function startNode({ name, script, args = [], env, cwd, logFile, waitForMessage = false, limitMs = 20_000 }) {
   const log = openSync(logFile, "a", 0o600);
-  const child = spawn(process.execPath, [script, ...args], {
+  const child = spawn(...endingWithParent("TERM", process.execPath, [script, ...args]), {
     cwd,
     env,
     detached: true,

@@ -7,7 +7,7 @@ import { chmodSync, chownSync, closeSync, existsSync, mkdirSync, openSync, readF
 import path from "node:path";
 import { setTimeout as sleep } from "node:timers/promises";
 import { PlainError } from "./say.mjs";
-import { processRecord, processesIn, signalOne, stopRecorded, waitUntil } from "./processes.mjs";
+import { endingWithParent, processRecord, processesIn, signalOne, stopRecorded, waitUntil } from "./processes.mjs";
 
 export const SUPERUSER = "quarterline_super";
 const OLDEST_VERSION = 15;
@@ -24,7 +24,7 @@ export function postgresPrograms() {
 }
 
 /** As `postgresPrograms`, for an existing cluster the programs of its own version. @param {string} [clusterDir] */
-function programsFor(clusterDir) {
+export function programsFor(clusterDir) {
   const found = postgresPrograms();
   if (found === null) throw new PlainError("PostgreSQL 15 is not installed. Install Debian's package postgresql-15 and try again.", 69);
   if (clusterDir === undefined || !existsSync(path.join(clusterDir, "PG_VERSION"))) return found;
@@ -129,8 +129,7 @@ export async function startPostgres({ home, port, logFile, extra = [] }) {
     "logging_collector=off", "log_min_messages=warning", "log_min_error_statement=panic", "log_parameter_max_length_on_error=0", "log_checkpoints=off",
   ];
   const child = spawn(
-    path.join(programsFor(cluster), "postgres"),
-    ["-D", cluster, ...[...settings, ...extra].flatMap((setting) => ["-c", setting])],
+    ...endingWithParent("INT", path.join(programsFor(cluster), "postgres"), ["-D", cluster, ...[...settings, ...extra].flatMap((setting) => ["-c", setting])]),
     { ...(serverUser() ?? {}), cwd: home, env: plainEnvironment(), detached: true, stdio: ["ignore", log, log] },
   );
   closeSync(log);

@@ -1,5 +1,5 @@
 /** Processes on this machine, read from /proc: is it alive, is it still the same one, what works in a folder. */
-import { readFileSync, readdirSync, readlinkSync, realpathSync } from "node:fs";
+import { existsSync, readFileSync, readdirSync, readlinkSync, realpathSync } from "node:fs";
 import { setTimeout as sleep } from "node:timers/promises";
 
 /**
@@ -24,6 +24,16 @@ export function isSameProcess(record) {
 /** A record by which a process can be recognised later. @param {number} pid */
 export function processRecord(pid) {
   return { pid, started: processStart(pid) };
+}
+
+const SETPRIV = "/usr/bin/setpriv";
+
+/**
+ * A command line whose process gets `signal` from the kernel when its parent dies, even by kill -9.
+ * @param {"INT" | "TERM"} signal @param {string} program @param {string[]} args @returns {[string, string[]]}
+ */
+export function endingWithParent(signal, program, args) {
+  return existsSync(SETPRIV) ? [SETPRIV, [`--pdeathsig=${signal}`, "--", program, ...args]] : [program, args];
 }
 
 /** Sends a signal to a process group, or to the process alone when it leads none. @param {number} pid @param {NodeJS.Signals} signal */

@@ -47,6 +47,20 @@ export async function bringUp({ host, onFailure }) {
   }
 }
 
+/**
+ * Runs `work` with the local services up and no pages: for backup and restore while Quarterline is stopped.
+ * @template T @param {(stack: Stack) => Promise<T>} work @returns {Promise<T>}
+ */
+export async function withServices(work) {
+  const stack = new Stack(ensureSettings(), () => {});
+  try {
+    await stack.startServices();
+    return await work(stack);
+  } finally {
+    await stack.stop();
+  }
+}
+
 /** Keeps one older log beside a long one. */
 function trimLog(name) {
   if (existsSync(logFile(name)) && statSync(logFile(name)).size > LONGEST_LOG) renameSync(logFile(name), `${logFile(name)}.1`);
