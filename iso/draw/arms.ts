@@ -26,17 +26,18 @@ export const NO_ARM: Arm = { parts: [], room: 0, knots: [{ real: 0, paper: 0 }] 
 const ARM_ROOM: Readonly<Record<ComponentKind, number>> = {
   elbow: size.ELBOW_ARM, "trimmed-elbow": size.ELBOW_ARM, "socket-elbow": size.ELBOW_ARM - 1,
   tee: size.TEE_ARM, "reducing-tee": size.TEE_ARM, "socket-tee": size.TEE_ARM,
-  outlet: 6.2, "stub-in": 0,
+  outlet: 6.2, "stub-in": 2,
   "reducer-concentric": size.REDUCER_ROOM, "reducer-eccentric": size.REDUCER_ROOM,
   "flange-weld-neck": size.FLANGE_ARM, "flange-slip-on": size.FLANGE_ARM - 0.6, "flange-socket-weld": size.FLANGE_ARM - 0.6,
   "flange-blind": size.BLIND_ROOM, gasket: size.GASKET_ROOM, valve: size.VALVE_HALF,
-  coupling: size.COUPLING_HALF, "half-coupling": 3.6, cap: size.CAP_ROOM, support: 0,
+  coupling: size.COUPLING_HALF, "half-coupling": 6, cap: size.CAP_ROOM, support: 0,
 };
 
 /** A reach that begins this close to the working point begins at it: take-outs are tens of millimetres, gaps a few. */
 const AT_POINT_MM = 8;
-/** How far a port may stand beside its leg's line and still be on it: an eccentric reducer's shift. */
-const BESIDE_MM = 130;
+/** Paper distance from the run's line to the weld of an outlet or half-coupling on it. */
+const SADDLE_ROOM = 1.9;
+const ON_RUN: ReadonlySet<ComponentKind> = new Set(["outlet", "half-coupling", "stub-in"]);
 
 interface Reach {
   readonly component: Component;
@@ -52,7 +53,7 @@ function reachAlong(component: Component, origin: Vec3, outward: Vec3): Reach | 
     const along = vecDot(offset, outward);
     const beside = vecLength(vecSub(offset, vecScale(outward, along)));
     const facing = vecDot(port.direction, outward);
-    if (beside > BESIDE_MM || Math.abs(facing) < size.PORT_COSINE) continue;
+    if (beside > size.BESIDE_MM || Math.abs(facing) < size.PORT_COSINE) continue;
     if (facing > 0) to = Math.max(to, along);
     else from = Math.min(from, along);
   }
@@ -86,8 +87,10 @@ export function armAlong(components: readonly Component[], origin: Vec3, outward
   for (const { component, from, to } of reaches) {
     const inner = paper;
     // A part that begins well away from the one before is a pup's far neighbour: keep a little pipe between.
-    const apart = from > real + 40 ? size.PIPE_LEAST : 0;
+    const onRun = ON_RUN.has(component.kind);
+    const apart = from > real + 40 && !onRun ? size.PIPE_LEAST : 0;
     paper += apart + ARM_ROOM[component.kind];
+    if (onRun) knots.push({ real: from, paper: inner + SADDLE_ROOM });
     if (apart > 0) knots.push({ real: from, paper: inner + apart });
     real = Math.max(real + 1e-3, to);
     knots.push({ real, paper });

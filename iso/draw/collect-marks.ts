@@ -1,9 +1,10 @@
 /** Which marks the drawing owes: every weld, component and cut piece of the sketch, with its anchors on paper. */
 import type { PaperPoint } from "../geometry/types";
-import { formatTerm } from "../units/format";
+import { formatLength } from "../units/format";
 import { edgePlace, edgePoint, type DrawnEdge, type DrawnJoint } from "./drawn";
+import type { Piece } from "../run/model-types";
 import type { DrawOptions, Ref } from "./drawing-types";
-import type { Label } from "./labels";
+import type { Label } from "./label-candidates";
 import { marksLabel, type Mark } from "./mark-labels";
 import { ELBOW_KINDS } from "./pipe";
 import type { Placed } from "./place";
@@ -44,7 +45,7 @@ export function weldMarks(placed: Placed, joints: readonly DrawnJoint[], options
     if (bolted || joint.number === null) continue;
     const marks: Mark[] = [{ shape: "hexagon", text: joint.number, ref }];
     if (joint.place === "field") marks.push({ shape: "none", text: "FW", ref });
-    if (joint.place === "field-fit") marks.push({ shape: "none", text: `FFW +${formatTerm(trims.get(joint.pointId) ?? fieldTrimMm, units)}`, ref });
+    if (joint.place === "field-fit") marks.push({ shape: "none", text: `FFW +${formatLength(trims.get(joint.pointId) ?? fieldTrimMm, units)}`, ref });
     labels.push(marksLabel(marks, { id: `weld ${joint.key}`, anchors: [at], clear: size.WELD_DOT / 2, along: [direction] }, options.measure));
   }
   return { labels, shown };
@@ -110,22 +111,34 @@ export function pieceMarks(placed: Placed, drawn: readonly DrawnEdge[], options:
   const { items, pieces } = options.show;
   if (!items && !pieces) return NO_MARKS;
   const numbers = itemNumbers(placed.sketch);
-  const byLeg = new Map(drawn.map((d) => [d.edge.id, d]));
   const labels: Label[] = [];
   const shown: Ref[] = [];
   for (const piece of placed.sketch.pieces) {
-    const d = byLeg.get(piece.legId);
-    if (!d) continue;
+    const spans = pieceSpans(piece, drawn);
+    if (spans.length === 0) continue;
     const ref: Ref = { kind: "piece", id: piece.key };
     const marks: Mark[] = [];
     if (pieces) marks.push({ shape: "stadium", text: piece.mark, ref });
     if (items) for (const { item } of numbers.get(piece.key) ?? []) marks.push({ shape: "circle", text: String(item), ref });
     if (marks.length === 0) continue;
-    const [from, to] = [edgePlace(d, piece.start), edgePlace(d, piece.end)];
-    const anchors = [0.5, 0.36, 0.64, 0.22, 0.78].map((t) => edgePoint(d, from + (to - from) * t));
-    labels.push(marksLabel(marks, { id: `piece ${piece.key}`, anchors, clear: 0.5, along: [d.direction] }, options.measure));
+    const anchors = spans.flatMap(({ d, from, to }, i) => (i === 0 ? [0.36, 0.64, 0.5] : [0.5]).map((t) => edgePoint(d, from + (to - from) * t)));
+    labels.push(marksLabel(marks, { id: `piece ${piece.key}`, anchors: anchors.slice(0, 4), clear: 0.5, along: spans.map(({ d }) => d.direction) }, options.measure));
     shown.push(ref);
     if (items) for (const { ref: material } of numbers.get(piece.key) ?? []) shown.push(material);
   }
   return { labels, shown };
+}
+
+interface PieceSpan {
+  readonly d: DrawnEdge;
+  readonly from: number;
+  readonly to: number;
+}
+
+/** Where a piece lies on the drawn legs it passes through, the longest first. */
+function pieceSpans(piece: Piece, drawn: readonly DrawnEdge[]): readonly PieceSpan[] {
+  return drawn
+    .filter((d) => d.edge.pieces.includes(piece))
+    .map((d) => ({ d, from: edgePlace(d, piece.start), to: edgePlace(d, piece.end) }))
+    .sort((p, q) => q.to - q.from - (p.to - p.from));
 }

@@ -19,9 +19,9 @@ const SWEEPS = 40;
 const SETTLED = 0.01;
 
 /** Drops the rows that would close a cycle (contradictory order), keeping earlier ones first. */
-export function rowsWithoutCycles(count: number, rows: readonly Row[]): readonly Row[] {
+export function rowsWithoutCycles<T extends Row>(count: number, rows: readonly T[]): readonly T[] {
   const next: number[][] = Array.from({ length: count }, () => []);
-  const kept: Row[] = [];
+  const kept: T[] = [];
   for (const row of rows) {
     if (row.a === row.b || reaches(next, row.b, row.a)) continue;
     next[row.a]?.push(row.b);

@@ -1,13 +1,12 @@
 /** One candidate for a chain's dimensions: lines, extension lines, arrows and numbers for a side and a distance. */
 import type { PaperPoint } from "../geometry/types";
 import type { UnitSystem } from "../run/document";
-import { formatLength } from "../units/format";
 import type { Chain } from "./chains";
 import type { DisplayItem, MeasureText, Ref } from "./drawing-types";
 import { centredBox, centredText, circleSegments, lineItem, pathItem, polygonSegments } from "./paths";
 import { readingAngle, type Segment, type TurnedBox } from "./plane";
 import * as size from "./sizes";
-import { legNumber } from "./words";
+import { legNumber, overallNumber } from "./words";
 
 export interface DimensionText {
   readonly ref: Ref;
@@ -51,9 +50,8 @@ export function dimensionSet(chain: Chain, across: PaperPoint, off: number, flan
   const last = chain.edges[chain.edges.length - 1];
   if (first && last && chain.edges.length > 1) {
     const line = { from: shift(first.from, off + size.DIMENSION_NEXT), to: shift(last.to, off + size.DIMENSION_NEXT) };
-    const total = chain.edges.reduce((sum, { edge }) => sum + edge.leg.lengthMm, 0);
     lines.push(line);
-    texts.push(textOn(line, { kind: "dimension", id: `${first.edge.id}..${last.edge.id}` }, `(${formatLength(total, units)})`, size.DIMENSION_CAP, measure));
+    texts.push(textOn(line, { kind: "dimension", id: `${first.edge.id}..${last.edge.id}` }, overallNumber(chain.edges.map(({ edge }) => edge.leg), units), size.DIMENSION_CAP, measure));
     reach.set(first.edge.from, { at: first.from, off: off + size.DIMENSION_NEXT });
     reach.set(last.edge.to, { at: last.to, off: off + size.DIMENSION_NEXT });
   }

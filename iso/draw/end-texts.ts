@@ -5,7 +5,7 @@ import type { Component, Joint, Node } from "../run/model-types";
 import { formatLength } from "../units/format";
 import type { DrawnEdge } from "./drawn";
 import type { MeasureText } from "./drawing-types";
-import type { Label } from "./labels";
+import type { Label } from "./label-candidates";
 import { blockLabel, type BlockLine } from "./mark-labels";
 import type { Placed } from "./place";
 import type { Sketch } from "./sketch";

@@ -1,7 +1,7 @@
 /** Marks as labels: material items in circles, weld numbers in hexagons, cut pieces in long rounded boxes; text blocks. */
 import type { PaperPoint } from "../geometry/types";
 import type { DisplayItem, Ink, MeasureText, PathSegment, Ref } from "./drawing-types";
-import type { Label } from "./labels";
+import type { Hub, Label } from "./label-candidates";
 import { centredText, circleSegments, hexagonSegments, lineItem, pathItem, stadiumSegments, textItem } from "./paths";
 import * as size from "./sizes";
 
@@ -54,7 +54,7 @@ export function marksLabel(marks: readonly Mark[], place: MarkPlace, measure: Me
   const total = widths.reduce((sum, w) => sum + w, 0);
   const ink: Ink = marks.some((mark) => mark.shape === "hexagon") ? "dye" : "ink";
   return {
-    id: place.id, anchors: place.anchors, clear: place.clear, along: place.along, leaderFrom: 0, leaderUnder: 2.4,
+    id: place.id, anchors: place.anchors, clear: place.clear, along: place.along, leaderFrom: 0, hubs: markHubs(marks, widths, total),
     halfWidth: total / 2, halfHeight: Math.max(...marks.map(markHeight)) / 2,
     draw: (centre, leader) => {
       const items: DisplayItem[] = [];
@@ -68,6 +68,22 @@ export function marksLabel(marks: readonly Mark[], place: MarkPlace, measure: Me
       return items;
     },
   };
+}
+
+/** The leader meets the first or the last closed shape of a row, never its words. */
+function markHubs(marks: readonly Mark[], widths: readonly number[], total: number): readonly Hub[] {
+  const hubs: Hub[] = [];
+  let x = -total / 2;
+  marks.forEach((mark, i) => {
+    const width = widths[i] ?? 0;
+    const radius = mark.shape === "stadium" ? size.PIECE_HEIGHT / 2 : mark.shape === "circle" ? size.BALLOON / 2 : size.HEXAGON / 2 - 0.25;
+    if (mark.shape !== "none" && (i === 0 || i === marks.length - 1)) {
+      if (i === 0) hubs.push({ offset: [x + radius, 0], radius });
+      if (i > 0 || width > 2 * radius + 0.5) hubs.push({ offset: [x + width - radius, 0], radius });
+    }
+    x += width;
+  });
+  return hubs;
 }
 
 function markItems(mark: Mark, centre: PaperPoint, width: number, ink: Ink): readonly DisplayItem[] {
@@ -84,12 +100,21 @@ export interface BlockLine {
 /** Line pitch of a text block. */
 const PITCH = size.TEXT_CAP * 1.62;
 
+/** A leader meets a block beside its first or last line, or above or below it. */
+function blockHubs(halfWidth: number, halfHeight: number): readonly Hub[] {
+  const side = halfHeight - size.TEXT_CAP / 2;
+  const across: Hub[] = [-1, 1].flatMap((sign) => [-1, 1].map((row): Hub => ({ offset: [sign * halfWidth, row * side], radius: 0.9 })));
+  const level: Hub[] = [-0.7, 0, 0.7].flatMap((k) => [-1, 1].map((sign): Hub => ({ offset: [k * halfWidth, sign * halfHeight], radius: 0.9 })));
+  return [...across.filter((hub, i) => side > 0 || i % 2 === 0), ...level];
+}
+
 /** A block of text lines: end texts, offset notes, tags. */
 export function blockLabel(lines: readonly BlockLine[], place: MarkPlace, ref: Ref | null, measure: MeasureText): Label {
   const width = Math.max(...lines.map((line) => measure(line.text, size.TEXT_CAP, line.bold ? "bold" : "regular")));
   const height = size.TEXT_CAP + (lines.length - 1) * PITCH;
   return {
-    id: place.id, anchors: place.anchors, clear: place.clear, along: place.along, leaderFrom: 3.5, leaderUnder: -0.6,
+    id: place.id, anchors: place.anchors, clear: place.clear, along: place.along, leaderFrom: 3.5,
+    hubs: blockHubs(width / 2, height / 2),
     halfWidth: width / 2, halfHeight: height / 2,
     draw: (centre, leader) => {
       const items: DisplayItem[] = [];

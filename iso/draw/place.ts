@@ -15,7 +15,9 @@ import { edgeNeed, targetLength, type EdgeNeed } from "./words";
 export interface PlacePlan {
   readonly sketch: Sketch;
   readonly clusters: readonly [AxisClusters, AxisClusters, AxisClusters];
-  readonly order: readonly [readonly Row[], readonly Row[], readonly Row[]];
+  /** Legs that make rows along each axis, and the order rows, all free of cycles. */
+  readonly legs: readonly (readonly AxisLeg[])[];
+  readonly order: readonly (readonly Row[])[];
   readonly needs: ReadonlyMap<string, EdgeNeed>;
 }
 
@@ -31,10 +33,33 @@ export interface Placed {
 const STRETCH_ROUNDS = 14;
 const STRETCH_STEP = 1.25;
 
+/** A leg's row along an axis: which clusters it holds apart. */
+interface AxisLeg {
+  readonly edge: SketchEdge;
+  readonly a: number;
+  readonly b: number;
+}
+
 export function placePlan(sketch: Sketch, measure: MeasureText): PlacePlan {
   const clusters = AXES.map((axis) => clustersOf(sketch, axis)) as unknown as PlacePlan["clusters"];
-  const order = AXES.map((axis) => orderRows(sketch, axis, clusters[axis])) as unknown as PlacePlan["order"];
-  return { sketch, clusters, order, needs: new Map(sketch.edges.map((edge) => [edge.id, edgeNeed(sketch.model, edge, measure)])) };
+  const legs: AxisLeg[][] = [];
+  const order: Row[][] = [];
+  for (const axis of AXES) {
+    const wanted = axisLegs(sketch, axis, clusters[axis]);
+    const rows = [...wanted.map((leg) => ({ a: leg.a, b: leg.b, least: 0, target: 1, leg })), ...orderRows(sketch, axis, clusters[axis]).map((row) => ({ ...row, leg: null }))];
+    const kept = rowsWithoutCycles(clusters[axis].count, rows);
+    legs.push(kept.flatMap((row) => row.leg ?? []));
+    order.push(kept.filter((row) => row.leg === null));
+  }
+  return { sketch, clusters, legs, order, needs: new Map(sketch.edges.map((edge) => [edge.id, edgeNeed(sketch.model, edge, measure)])) };
+}
+
+function axisLegs(sketch: Sketch, axis: Axis, clusters: AxisClusters): AxisLeg[] {
+  return sketch.edges.filter((edge) => edge.real[axis] !== 0).map((edge) => {
+    const from = clusters.of.get(edge.from) ?? 0;
+    const to = clusters.of.get(edge.to) ?? 0;
+    return edge.real[axis] > 0 ? { edge, a: from, b: to } : { edge, a: to, b: from };
+  });
 }
 
 /** Least and wished length of each leg's component, which stretching raises. */
@@ -120,17 +145,12 @@ function stretchPoor(plan: PlacePlan, wish: Wish, placed: Placed): boolean {
 }
 
 function solve(plan: PlacePlan, projection: Projection, wishes: readonly Wish[], extra: readonly (readonly Row[])[]): Placed {
+  const wishOf = new Map(wishes.map((wish) => [wish.edge, wish]));
   const lines = AXES.map((axis) => {
-    const clusters = plan.clusters[axis];
-    const rows: Row[] = [];
-    for (const { edge, least, target } of wishes) {
-      if (edge.real[axis] === 0) continue;
-      const from = clusters.of.get(edge.from) ?? 0;
-      const to = clusters.of.get(edge.to) ?? 0;
-      const [a, b] = edge.real[axis] > 0 ? [from, to] : [to, from];
-      rows.push({ a, b, least: least[axis], target: target[axis] });
-    }
-    return compactAxis(clusters.count, rowsWithoutCycles(clusters.count, [...rows, ...(extra[axis] ?? []), ...plan.order[axis]]));
+    const rows: Row[] = (plan.legs[axis] ?? []).map(({ edge, a, b }) => ({ a, b, least: wishOf.get(edge)?.least[axis] ?? 0, target: wishOf.get(edge)?.target[axis] ?? 1 }));
+    const all = [...rows, ...(plan.order[axis] ?? [])];
+    const more = extra[axis] ?? [];
+    return compactAxis(plan.clusters[axis].count, more.length === 0 ? all : rowsWithoutCycles(plan.clusters[axis].count, [...all, ...more]));
   });
   const at = new Map<string, Vec3>();
   const paper = new Map<string, PaperPoint>();

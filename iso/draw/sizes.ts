@@ -41,7 +41,7 @@ export const FLANGE_ARM = 4;
 export const VALVE_HALF = 6;
 export const REDUCER_ROOM = 10;
 export const CAP_ROOM = 3;
-export const COUPLING_HALF = 2.6;
+export const COUPLING_HALF = 4;
 export const GASKET_ROOM = 0.9;
 export const BLIND_ROOM = 1.2;
 /** Length of dashed neighbour pipe beyond the last weld of a spool. */
@@ -54,7 +54,7 @@ export const VALVE_HALF_HEIGHT = 2.9;
 export const TARGET_LEAST = 9;
 export const TARGET_ROOT = 0.55;
 /** Largest stretch s a small line is given to fill its paper. */
-export const STRETCH_MOST = 3.4;
+export const STRETCH_MOST = 4.5;
 /** Least room of drawn pipe on a leg, beyond its symbols. */
 export const PIPE_LEAST = 6.5;
 /** Parallel things that see each other keep this distance on their common axis. */
@@ -73,8 +73,8 @@ export const LEVEL_MM = 2;
 export const LEVEL_RATIO = 0.002;
 /** A leg that rises or falls less than this against its level length is a slope and drawn level (about 6 degrees). */
 export const SLOPE_RATIO = 0.105;
-/** Two points closer than this are one (model frame). */
-export const SAME_POINT_MM = 0.5;
+/** How far a port or piece may stand beside its leg's line and still be on it: an eccentric reducer's shift. */
+export const BESIDE_MM = 130;
 /** Two paper numbers closer than this are one. */
 export const PAPER_EPS = 1e-6;
 /** Directions whose cosine is above this are the same for a port and its leg. */

@@ -2,7 +2,7 @@
  * What is drawn: vertices (working points), edges (legs) with their arms, for the whole line or for one spool with stubs of
  * its neighbours.
  */
-import { vecAddScaled, vecScale } from "../geometry/vec3";
+import { vecAddScaled, vecDot, vecLength, vecReject, vecScale, vecSub } from "../geometry/vec3";
 import type { Vec3 } from "../geometry/types";
 import type { Component, Joint, Leg, Model, Node, Piece } from "../run/model-types";
 import { armAlong, NO_ARM, type Arm } from "./arms";
@@ -75,7 +75,8 @@ export function legShape(leg: Leg): { readonly real: Vec3; readonly kind: EdgeKi
 export function sketchOf(model: Model, spool: string | null): Sketch {
   const nodes = new Map(model.nodes.map((node) => [node.pointId, node]));
   const componentsAt = groupBy(model.components, (component) => component.pointId);
-  const piecesOf = groupBy(model.pieces, (piece) => piece.legId);
+  const piecesOfRun = groupBy(model.pieces, (piece) => piece.runId);
+  const piecesOf = new Map(model.legs.map((leg) => [leg.id, (piecesOfRun.get(leg.runId) ?? []).filter((piece) => pieceRunsAlong(piece, leg))]));
   const legs = model.legs.filter((leg) => nodes.has(leg.fromPointId) && nodes.has(leg.toPointId));
   const arms = (leg: Leg): [Arm, Arm] => [
     armAlong(componentsAt.get(leg.fromPointId) ?? [], leg.from, leg.direction),
@@ -117,6 +118,16 @@ export function sketchOf(model: Model, spool: string | null): Sketch {
     components: model.components.filter((component) => ownIds.has(component.id)),
     pieces: model.pieces.filter((piece) => ownIds.has(piece.key)),
   };
+}
+
+/** One piece may pass through several legs (past a support or an outlet): it counts on each leg it shares a length with. */
+function pieceRunsAlong(piece: Piece, leg: Leg): boolean {
+  if (vecDot(piece.direction, leg.direction) < size.PORT_COSINE) return false;
+  const start = vecSub(piece.start, leg.from);
+  if (vecLength(vecReject(start, leg.direction)) > size.BESIDE_MM) return false;
+  const from = Math.max(0, vecDot(start, leg.direction));
+  const to = Math.min(leg.lengthMm, vecDot(vecSub(piece.end, leg.from), leg.direction));
+  return to - from > size.LEVEL_MM;
 }
 
 /** A leg is the spool's own when a piece of it is, or when it has no pipe and the fittings at both ends are. */

@@ -92,7 +92,7 @@ function reducerItems(f: PartFrame, projection: Projection): DisplayItem[] {
 }
 
 function socketStrokes(f: PartFrame): DisplayItem[] {
-  return [lineItem("symbol", f.ref, f.at(f.outer, -1.7), f.at(f.outer, 1.7), size.SYMBOL_WIDTH, f.ink)];
+  return [lineItem("symbol", f.ref, f.at(f.outer, -2.5), f.at(f.outer, 2.5), size.SYMBOL_WIDTH, f.ink)];
 }
 
 function capItems(f: PartFrame): DisplayItem[] {
@@ -112,15 +112,16 @@ function partItems(f: PartFrame, projection: Projection): DisplayItem[] {
     case "reducer-concentric": case "reducer-eccentric": return reducerItems(f, projection);
     case "cap": return capItems(f);
     case "socket-elbow": case "socket-tee": return socketStrokes(f);
-    case "coupling": return [boxAround(f, 1.6)];
-    case "half-coupling": return [boxAround(f, 1.6)];
+    case "coupling": case "half-coupling": return [sleeve(f)];
     case "outlet": return [pathItem("symbol", f.ref, polygonSegments([f.at(f.inner, -2.4), f.at(f.outer, -1.2), f.at(f.outer, 1.2), f.at(f.inner, 2.4)]), { stroke: f.ink, fill: "paper", widthMm: size.SYMBOL_WIDTH })];
     default: return [];
   }
 }
 
-function boxAround(f: PartFrame, half: number): DisplayItem {
-  return pathItem("symbol", f.ref, polygonSegments([f.at(f.inner, -half), f.at(f.outer, -half), f.at(f.outer, half), f.at(f.inner, half)]), { stroke: f.ink, fill: "paper", widthMm: size.SYMBOL_WIDTH });
+/** Half a sleeve, open towards the working point. */
+function sleeve(f: PartFrame): DisplayItem {
+  const h = 2.2;
+  return pathItem("symbol", f.ref, polygonSegments([f.at(f.inner, -h), f.at(f.outer, -h), f.at(f.outer, h), f.at(f.inner, h)], false), { stroke: f.ink, fill: "paper", widthMm: size.SYMBOL_WIDTH });
 }
 
 /** What stands at a valve's centre: stem and wheel, the disc of a globe, the ball, the flap of a check. */
@@ -169,13 +170,28 @@ function supportItems(component: Component, at: PaperPoint, d: DrawnEdge | undef
   ];
 }
 
+/** Dashes beyond an open end that goes on outside the line. */
+function continuations(placed: Placed, drawn: readonly DrawnEdge[]): DisplayItem[] {
+  return placed.sketch.model.document.runs.flatMap((run) => run.points).flatMap((point) => {
+    const edges = drawn.filter((d) => d.edge.from === point.id || d.edge.to === point.id);
+    const [d] = edges;
+    if (point.item.kind !== "end" || point.item.goes === "open" || !d || edges.length > 1) return [];
+    const [at, sign] = d.edge.to === point.id ? [d.to, 1] : [d.from, -1];
+    return [lineItem("symbol", { kind: "point" as const, id: point.id }, plus(at, d.direction, 1.2 * sign), plus(at, d.direction, 7 * sign), 0.5, "grey", [1.8, 1.2])];
+  });
+}
+
 export function symbolPass(placed: Placed, drawn: readonly DrawnEdge[]): PassInk {
   const items: DisplayItem[] = [];
   const heavy: Segment[] = [];
   const centred = new Set<string>();
   const onTop: DisplayItem[] = [];
-  for (const frame of partFrames(placed, drawn)) {
+  const frames = partFrames(placed, drawn);
+  for (const frame of frames) {
     items.push(...partItems(frame, placed.projection));
+    // A valve at the end of a run: its far half has no leg to stand on.
+    const alone = frame.component.kind === "valve" && frames.every((other) => other === frame || other.component !== frame.component);
+    if (alone) items.push(...valveHalf({ ...frame, at: (out, side) => frame.at(-out, side) }));
     if (frame.component.kind !== "valve" || centred.has(frame.component.id)) continue;
     centred.add(frame.component.id);
     // Painted after both halves so that the ball or disc stays on top.
@@ -190,6 +206,7 @@ export function symbolPass(placed: Placed, drawn: readonly DrawnEdge[]): PassInk
       items.push(...supportItems(component, at, drawn.find((d) => d.edge.from === pointId || d.edge.to === pointId), spool !== null && component.spool !== spool ? "grey" : "ink"));
     }
   }
+  items.push(...continuations(placed, drawn));
   for (const item of items) heavy.push(...outlineOf(item));
   return { items, heavy, light: [] };
 }

@@ -30,11 +30,11 @@ export function weldPass(joints: readonly DrawnJoint[]): PassInk {
 
 /** Upright, or leaning where the pipe itself stands near upright. */
 function poleDirection(pipe: PaperPoint): PaperPoint {
-  return Math.abs(pipe[0]) < 0.45 ? [0.866, -0.5] : [0, -1];
+  return Math.abs(pipe[0]) < 0.45 ? [Math.SQRT1_2, -Math.SQRT1_2] : [0, -1];
 }
 
 function pennant(top: PaperPoint, pole: PaperPoint): readonly PaperPoint[] {
   const foot: PaperPoint = [top[0] - pole[0] * 2.6, top[1] - pole[1] * 2.6];
-  const side: PaperPoint = pole[0] === 0 ? [1, 0] : [0.5, 0.866];
+  const side: PaperPoint = [1, 0];
   return [top, [(top[0] + foot[0]) / 2 + side[0] * 3.4, (top[1] + foot[1]) / 2 + side[1] * 3.4], foot];
 }

@@ -4,6 +4,7 @@ import type { Vec3 } from "../geometry/types";
 import type { UnitSystem } from "../run/document";
 import type { Leg, Model } from "../run/model-types";
 import { formatLength } from "../units/format";
+import { FOOT_MM, INCH_MM } from "../units/length";
 import type { MeasureText } from "./drawing-types";
 import * as size from "./sizes";
 import type { SketchEdge } from "./sketch";
@@ -38,6 +39,12 @@ export function offsetNaming(model: Model, edge: SketchEdge): OffsetNaming {
   const count = real.filter((c) => c !== 0).length;
   const title = count === 3 ? "ROLLING OFFSET" : real[2] === 0 ? "HORIZONTAL OFFSET" : "VERTICAL OFFSET";
   return { title, words: [word(0), word(1), word(2)], runAxis };
+}
+
+/** Sum of legs as printed: each rounded first, so that the reader's own addition agrees with the bracketed overall. */
+export function overallNumber(legs: readonly Leg[], units: UnitSystem): string {
+  const step = units === "imperial" ? INCH_MM / 16 : 1;
+  return `(${formatLength(legs.reduce((sum, leg) => sum + Math.round(leg.lengthMm / step) * step, 0), units)})`;
 }
 
 export function travelText(edge: SketchEdge, units: UnitSystem): string {
@@ -89,7 +96,7 @@ export function setLength(edge: SketchEdge, runAxis: 0 | 1 | 2): number {
 export function slopeText(leg: Leg, units: UnitSystem): string {
   const level = Math.hypot(leg.to[0] - leg.from[0], leg.to[1] - leg.from[1]);
   const ratio = level > 0 ? Math.abs(leg.to[2] - leg.from[2]) / level : 0;
-  if (units === "imperial") return `${formatLength(ratio * 304.8, "imperial")} / FT`;
+  if (units === "imperial") return `${formatLength(ratio * FOOT_MM, "imperial")} PER FT`;
   if (ratio > 0 && ratio <= 1 / 50 && Math.abs(1 / ratio - Math.round(1 / ratio)) < 0.05) return `1:${Math.round(1 / ratio)}`;
   return `${(ratio * 100).toFixed(2).replace(/\.?0+$/, "")} %`;
 }
