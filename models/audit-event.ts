@@ -15,14 +15,14 @@ export class AuditEvent extends Model<InferAttributes<AuditEvent>, InferCreation
   static bindTo(sequelize: Sequelize): void {
     AuditEvent.init(
       {
-        shopId: { ...uuidColumn, primaryKey: true },
+        shopId: { ...uuidColumn(), primaryKey: true },
         seq: { ...countColumn("seq"), primaryKey: true },
-        type: textColumn,
-        data: textColumn,
-        actor: uuidOrNull,
-        at: timeColumn,
-        prevHash: textColumn,
-        hash: textColumn,
+        type: textColumn(),
+        data: textColumn(),
+        actor: uuidOrNull(),
+        at: timeColumn(),
+        prevHash: textColumn(),
+        hash: textColumn(),
       },
       modelOptions(sequelize, "AuditEvent", "audit_events"),
     );

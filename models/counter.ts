@@ -10,8 +10,8 @@ export class Counter extends Model<InferAttributes<Counter>, InferCreationAttrib
   static bindTo(sequelize: Sequelize): void {
     Counter.init(
       {
-        shopId: { ...uuidColumn, primaryKey: true },
-        name: { ...textColumn, primaryKey: true },
+        shopId: { ...uuidColumn(), primaryKey: true },
+        name: { ...textColumn(), primaryKey: true },
         value: countColumn("value"),
       },
       modelOptions(sequelize, "Counter", "counters"),

@@ -18,16 +18,16 @@ export class Invitation extends Model<InferAttributes<Invitation>, InferCreation
   static bindTo(sequelize: Sequelize): void {
     Invitation.init(
       {
-        shopId: uuidColumn,
-        id: idColumn,
-        email: textColumn,
-        role: textColumn,
-        tokenHash: textColumn,
-        invitedBy: uuidColumn,
-        createdAt: timeColumn,
-        expiresAt: timeColumn,
-        acceptedAt: timeOrNull,
-        withdrawnAt: timeOrNull,
+        shopId: uuidColumn(),
+        id: idColumn(),
+        email: textColumn(),
+        role: textColumn(),
+        tokenHash: textColumn(),
+        invitedBy: uuidColumn(),
+        createdAt: timeColumn(),
+        expiresAt: timeColumn(),
+        acceptedAt: timeOrNull(),
+        withdrawnAt: timeOrNull(),
       },
       modelOptions(sequelize, "Invitation", "invitations"),
     );

@@ -19,17 +19,17 @@ export class Job extends Model<InferAttributes<Job>, InferCreationAttributes<Job
   static bindTo(sequelize: Sequelize): void {
     Job.init(
       {
-        shopId: uuidColumn,
-        id: idColumn,
-        number: textColumn,
-        title: textColumn,
-        client: textColumn,
-        area: textColumn,
-        open: booleanColumn,
-        settings: jsonColumn,
-        createdAt: timeColumn,
-        createdBy: uuidColumn,
-        updatedAt: timeColumn,
+        shopId: uuidColumn(),
+        id: idColumn(),
+        number: textColumn(),
+        title: textColumn(),
+        client: textColumn(),
+        area: textColumn(),
+        open: booleanColumn(),
+        settings: jsonColumn(),
+        createdAt: timeColumn(),
+        createdBy: uuidColumn(),
+        updatedAt: timeColumn(),
       },
       modelOptions(sequelize, "Job", "jobs"),
     );

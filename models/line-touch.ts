@@ -13,12 +13,12 @@ export class LineTouch extends Model<InferAttributes<LineTouch>, InferCreationAt
   static bindTo(sequelize: Sequelize): void {
     LineTouch.init(
       {
-        shopId: uuidColumn,
-        id: idColumn,
-        lineId: uuidColumn,
-        personId: uuidColumn,
-        version: integerColumn,
-        at: timeColumn,
+        shopId: uuidColumn(),
+        id: idColumn(),
+        lineId: uuidColumn(),
+        personId: uuidColumn(),
+        version: integerColumn(),
+        at: timeColumn(),
       },
       modelOptions(sequelize, "LineTouch", "line_touches"),
     );

@@ -14,12 +14,12 @@ export class Membership extends Model<InferAttributes<Membership>, InferCreation
   static bindTo(sequelize: Sequelize): void {
     Membership.init(
       {
-        shopId: uuidColumn,
-        id: idColumn,
-        personId: uuidColumn,
-        role: textColumn,
-        joinedAt: timeColumn,
-        removedAt: timeOrNull,
+        shopId: uuidColumn(),
+        id: idColumn(),
+        personId: uuidColumn(),
+        role: textColumn(),
+        joinedAt: timeColumn(),
+        removedAt: timeOrNull(),
       },
       modelOptions(sequelize, "Membership", "memberships"),
     );

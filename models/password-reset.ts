@@ -13,12 +13,12 @@ export class PasswordReset extends Model<InferAttributes<PasswordReset>, InferCr
   static bindTo(sequelize: Sequelize): void {
     PasswordReset.init(
       {
-        id: idColumn,
-        personId: uuidColumn,
-        tokenHash: textColumn,
-        createdAt: timeColumn,
-        expiresAt: timeColumn,
-        usedAt: timeOrNull,
+        id: idColumn(),
+        personId: uuidColumn(),
+        tokenHash: textColumn(),
+        createdAt: timeColumn(),
+        expiresAt: timeColumn(),
+        usedAt: timeOrNull(),
       },
       modelOptions(sequelize, "PasswordReset", "password_resets"),
     );

@@ -12,11 +12,11 @@ export class Person extends Model<InferAttributes<Person>, InferCreationAttribut
   static bindTo(sequelize: Sequelize): void {
     Person.init(
       {
-        id: idColumn,
-        email: textColumn,
-        name: textColumn,
-        passwordHash: textColumn,
-        createdAt: timeColumn,
+        id: idColumn(),
+        email: textColumn(),
+        name: textColumn(),
+        passwordHash: textColumn(),
+        createdAt: timeColumn(),
       },
       modelOptions(sequelize, "Person", "people"),
     );

@@ -15,14 +15,14 @@ export class RevisionInput extends Model<InferAttributes<RevisionInput>, InferCr
   static bindTo(sequelize: Sequelize): void {
     RevisionInput.init(
       {
-        shopId: uuidColumn,
-        id: idColumn,
-        revisionId: uuidColumn,
-        kind: textColumn,
-        input: textColumn,
-        sha256: textColumn,
-        contentKey: textColumn,
-        at: timeColumn,
+        shopId: uuidColumn(),
+        id: idColumn(),
+        revisionId: uuidColumn(),
+        kind: textColumn(),
+        input: textColumn(),
+        sha256: textColumn(),
+        contentKey: textColumn(),
+        at: timeColumn(),
       },
       modelOptions(sequelize, "RevisionInput", "revision_inputs"),
     );

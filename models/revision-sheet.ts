@@ -17,16 +17,16 @@ export class RevisionSheet extends Model<InferAttributes<RevisionSheet>, InferCr
   static bindTo(sequelize: Sequelize): void {
     RevisionSheet.init(
       {
-        shopId: uuidColumn,
-        id: idColumn,
-        revisionId: uuidColumn,
-        kind: textColumn,
-        sha256: textColumn,
-        bytes: integerColumn,
-        objectKey: textColumn,
+        shopId: uuidColumn(),
+        id: idColumn(),
+        revisionId: uuidColumn(),
+        kind: textColumn(),
+        sha256: textColumn(),
+        bytes: integerColumn(),
+        objectKey: textColumn(),
         auditSeq: countColumn("auditSeq"),
-        auditHash: textColumn,
-        at: timeColumn,
+        auditHash: textColumn(),
+        at: timeColumn(),
       },
       modelOptions(sequelize, "RevisionSheet", "revision_sheets"),
     );

@@ -15,14 +15,14 @@ export class Session extends Model<InferAttributes<Session>, InferCreationAttrib
   static bindTo(sequelize: Sequelize): void {
     Session.init(
       {
-        id: idColumn,
-        personId: uuidColumn,
-        shopId: uuidColumn,
-        device: textColumn,
-        createdAt: timeColumn,
-        lastSeenAt: timeColumn,
-        expiresAt: timeColumn,
-        endedAt: timeOrNull,
+        id: idColumn(),
+        personId: uuidColumn(),
+        shopId: uuidColumn(),
+        device: textColumn(),
+        createdAt: timeColumn(),
+        lastSeenAt: timeColumn(),
+        expiresAt: timeColumn(),
+        endedAt: timeOrNull(),
       },
       modelOptions(sequelize, "Session", "sessions"),
     );

@@ -14,13 +14,13 @@ export class SheetCopy extends Model<InferAttributes<SheetCopy>, InferCreationAt
   static bindTo(sequelize: Sequelize): void {
     SheetCopy.init(
       {
-        shopId: uuidColumn,
-        id: idColumn,
-        sheetId: uuidColumn,
-        sha256: textColumn,
-        marked: textColumn,
-        at: timeColumn,
-        by: uuidColumn,
+        shopId: uuidColumn(),
+        id: idColumn(),
+        sheetId: uuidColumn(),
+        sha256: textColumn(),
+        marked: textColumn(),
+        at: timeColumn(),
+        by: uuidColumn(),
       },
       modelOptions(sequelize, "SheetCopy", "sheet_copies"),
     );

@@ -12,10 +12,10 @@ export class Shop extends Model<InferAttributes<Shop>, InferCreationAttributes<S
   static bindTo(sequelize: Sequelize): void {
     Shop.init(
       {
-        id: idColumn,
-        name: textColumn,
-        settings: jsonColumn,
-        createdAt: timeColumn,
+        id: idColumn(),
+        name: textColumn(),
+        settings: jsonColumn(),
+        createdAt: timeColumn(),
       },
       modelOptions(sequelize, "Shop", "shops"),
     );

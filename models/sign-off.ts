@@ -16,15 +16,15 @@ export class SignOff extends Model<InferAttributes<SignOff>, InferCreationAttrib
   static bindTo(sequelize: Sequelize): void {
     SignOff.init(
       {
-        shopId: uuidColumn,
-        id: idColumn,
-        revisionId: uuidColumn,
-        personId: uuidColumn,
-        decision: textColumn,
-        reason: textColumn,
-        accepted: textColumn,
-        inputSha256: textColumn,
-        at: timeColumn,
+        shopId: uuidColumn(),
+        id: idColumn(),
+        revisionId: uuidColumn(),
+        personId: uuidColumn(),
+        decision: textColumn(),
+        reason: textColumn(),
+        accepted: textColumn(),
+        inputSha256: textColumn(),
+        at: timeColumn(),
       },
       modelOptions(sequelize, "SignOff", "sign_offs"),
     );

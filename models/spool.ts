@@ -14,13 +14,13 @@ export class Spool extends Model<InferAttributes<Spool>, InferCreationAttributes
   static bindTo(sequelize: Sequelize): void {
     Spool.init(
       {
-        shopId: uuidColumn,
-        id: idColumn,
-        lineId: uuidColumn,
-        letter: textColumn,
-        sheetNumber: integerOrNull,
-        status: textColumn,
-        createdAt: timeColumn,
+        shopId: uuidColumn(),
+        id: idColumn(),
+        lineId: uuidColumn(),
+        letter: textColumn(),
+        sheetNumber: integerOrNull(),
+        status: textColumn(),
+        createdAt: timeColumn(),
       },
       modelOptions(sequelize, "Spool", "spools"),
     );

@@ -14,12 +14,12 @@ export class TakeOutWord extends Model<InferAttributes<TakeOutWord>, InferCreati
   static bindTo(sequelize: Sequelize): void {
     TakeOutWord.init(
       {
-        shopId: uuidColumn,
-        id: idColumn,
-        key: textColumn,
-        valueMm: numberOrNull,
-        by: uuidColumn,
-        at: timeColumn,
+        shopId: uuidColumn(),
+        id: idColumn(),
+        key: textColumn(),
+        valueMm: numberOrNull(),
+        by: uuidColumn(),
+        at: timeColumn(),
         seq: { ...countColumn("seq"), allowNull: true },
       },
       modelOptions(sequelize, "TakeOutWord", "take_out_words"),

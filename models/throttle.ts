@@ -10,9 +10,9 @@ export class Throttle extends Model<InferAttributes<Throttle>, InferCreationAttr
   static bindTo(sequelize: Sequelize): void {
     Throttle.init(
       {
-        key: { ...textColumn, primaryKey: true },
-        tries: integerColumn,
-        windowStartedAt: timeColumn,
+        key: { ...textColumn(), primaryKey: true },
+        tries: integerColumn(),
+        windowStartedAt: timeColumn(),
       },
       modelOptions(sequelize, "Throttle", "throttles"),
     );

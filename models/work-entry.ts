@@ -18,16 +18,16 @@ export class WorkEntry extends Model<InferAttributes<WorkEntry>, InferCreationAt
   static bindTo(sequelize: Sequelize): void {
     WorkEntry.init(
       {
-        shopId: uuidColumn,
-        id: idColumn,
-        spoolId: uuidColumn,
-        revisionId: uuidColumn,
-        kind: textColumn,
-        mark: textColumn,
-        key: textColumn,
-        entryValues: textColumn,
-        by: uuidColumn,
-        at: timeColumn,
+        shopId: uuidColumn(),
+        id: idColumn(),
+        spoolId: uuidColumn(),
+        revisionId: uuidColumn(),
+        kind: textColumn(),
+        mark: textColumn(),
+        key: textColumn(),
+        entryValues: textColumn(),
+        by: uuidColumn(),
+        at: timeColumn(),
       },
       modelOptions(sequelize, "WorkEntry", "work_entries"),
     );
