@@ -1,5 +1,5 @@
 /** The lines of the demo job, all invented: one of each kind a shop meets in a week. */
-import { closeBetween, type Item, type LineSettings, type Nps, type RunDocument } from "@/iso";
+import { closeBetween, formatLength, type Item, type LineSettings, type Nps, type RunDocument } from "@/iso";
 import { defaultLineSettings } from "@/lib/rules/default-settings";
 import { demoDocument } from "./line-builder";
 
@@ -60,15 +60,14 @@ export function glycolClosing(): RunDocument {
     end1: { position: [inches(82), inches(31), inches(22)], direction: [0, 0, -1] },
     radius0Mm: inches(4.5),
     radius1Mm: inches(4.5),
-    tangent0Mm: 0,
-    tangent1Mm: 0,
     rootGapMm: settings.allowances.rootGapMm,
     thetaMaxRad: Math.PI / 2,
     units: "imperial",
     odMm: inches(3.5),
   });
   if (!answer.ok) throw new Error(`The demo closing is refused: ${answer.sentence}`);
-  const [a, b] = answer.vertices;
+  const [a, b] = answer.points;
+  if (a === undefined || b === undefined) throw new Error("The demo closing has lost a bend.");
   const from = (p: readonly number[], q: readonly number[]) => {
     const text = (axis: number) => ((q[axis] ?? 0) - (p[axis] ?? 0)) / 25.4;
     return (["E", "N", "U"] as const).map((letter, axis) => `${letter} ${text(axis).toFixed(4)}in`).join(", ");
@@ -82,7 +81,7 @@ export function glycolClosing(): RunDocument {
         { item: flange("nozzle", "NOZZLE N4, E-210") },
         { move: from([0, 0, 0], a), item: trimmed, more: { provenance: calculated } },
         { move: from(a, b), item: trimmed, more: { provenance: calculated } },
-        { move: from(b, [inches(82), inches(31), inches(58)]), item: flange("nozzle", "NOZZLE N2, T-204"), more: { provenance: twice("58 1/16", inches(36.0625)) } },
+        { move: from(b, [inches(82), inches(31), inches(58)]), item: flange("nozzle", "NOZZLE N2, T-204"), more: { provenance: twice(formatLength(inches(58 + 1 / 32) - b[2], "imperial"), inches(58 + 1 / 32) - b[2]) } },
       ],
     },
   ], ["Closing piece: verify both fixed ends by tape, two readings, before cutting."]);
