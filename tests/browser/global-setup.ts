@@ -19,7 +19,7 @@ const PASSED_ON = ["DATABASE_URL", "OUTBOX_DIR", "S3_ENDPOINT", "S3_REGION", "S3
 export async function setup(): Promise<() => Promise<void>> {
   const folder = throwAwayFolder();
   const port = await anyFreePort();
-  const environment = { ...process.env, QUARTERLINE_DATA_DIR: folder, PORT: String(port), BASE_URL: "", DATABASE_URL: "", S3_BUCKET: "", SMTP_URL: "", DEMO: "1", NODE_ENV: "production", QUARTERLINE_QUIET: "0" };
+  const environment = { ...process.env, QUARTERLINE_DATA_DIR: folder, PORT: String(port), BASE_URL: "", DATABASE_URL: "", S3_BUCKET: "", SMTP_URL: "", DEMO: "1", QUARTERLINE_QUIET: "0" };
   const child = spawn(process.execPath, [path.join(ROOT, "scripts/start.mjs")], { cwd: ROOT, env: environment, stdio: ["ignore", "pipe", "pipe"] });
   await untilReady(child);
   process.env.QUARTERLINE_DATA_DIR = folder;
