@@ -1,11 +1,11 @@
 "use client";
 import { useMemo } from "react";
-import { buildModel, formatDecimal, INCH_MM, type CloseBetweenInput, type ClosingFound, type ClosingRefused, type Model, type TakeOutWord } from "@/iso";
+import { buildModel, emptyMarks, formatDecimal, INCH_MM, type CloseBetweenInput, type ClosingFound, type ClosingRefused, type Model, type TakeOutWord } from "@/iso";
 import { Notice } from "@/components/ui/notice";
 import type { ClosingForm } from "./closing-form";
 import { closingPicture } from "./closing-picture";
 import { DrawingItems } from "./drawing-items";
-import { drawn } from "./use-line-model";
+import { drawLine } from "./draw-line";
 import { fitViewport } from "./viewport";
 
 export interface ClosingAnswerProps {
@@ -118,18 +118,16 @@ const ROOM = { widthMm: 150, heightMm: 120 };
 function Picture({ form, answer, input, model, takeOuts }: Found) {
   const picture = useMemo(() => {
     const document = closingPicture(form, answer, input, model.document);
-    return drawn(buildModel(document, NO_MARKS, takeOuts), ROOM, null);
+    return drawLine(buildModel(document, emptyMarks(), takeOuts), ROOM, null);
   }, [form, answer, input, model.document, takeOuts]);
-  if (!picture.ok) return null;
-  const view = fitViewport(picture.drawing.bounds);
+  if (!picture) return null;
+  const view = fitViewport(picture.bounds);
   return (
     <figure className="min-w-0">
       <svg role="img" aria-label="Isometric of the closing" viewBox={`${view.x} ${view.y} ${view.width} ${view.height}`} className="frame block h-auto max-h-80 w-full">
-        <DrawingItems items={picture.drawing.items} />
+        <DrawingItems items={picture.items} />
       </svg>
       <figcaption className="mt-1 text-xs text-soft">Not to scale.</figcaption>
     </figure>
   );
 }
-
-const NO_MARKS = { version: 1, sticky: false, welds: {}, pieces: {}, spools: {}, voided: [] } as const;

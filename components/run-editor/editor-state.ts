@@ -48,6 +48,7 @@ export type CursorStep = "stay" | "next-row" | "right" | "left" | "up" | "down";
 export type EditorAction =
   | { readonly type: "commit"; readonly target: CellTarget; readonly text: string; readonly step: CursorStep; readonly stamp: Stamp }
   | { readonly type: "typing"; readonly target: CellTarget; readonly text: string | null; readonly stamp: Stamp }
+  | { readonly type: "drop"; readonly target: CellTarget }
   | { readonly type: "cursor"; readonly target: CellTarget; readonly focus: boolean }
   | { readonly type: "step"; readonly step: CursorStep | "row-start" | "row-end" | "first" | "last" }
   | { readonly type: "show-point"; readonly pointId: string; readonly focus: boolean }
@@ -88,6 +89,7 @@ export function editorReducer(state: EditorState, action: EditorAction): EditorS
   switch (action.type) {
     case "commit": return commit(state, action);
     case "typing": return { ...state, ...typingOf(state, action) };
+    case "drop": return { ...state, drafts: without(state.drafts, draftKey(state.document, action.target)), preview: null, typing: null };
     case "cursor": return moveTo(state, action.target, action.focus);
     case "step": return stepped(state, action.step);
     case "show-point": {
@@ -158,8 +160,12 @@ function commit(state: EditorState, action: Extract<EditorAction, { type: "commi
     // Enter stays where the sentence stands; Tab and the arrows may leave, the text keeps waiting.
     return action.step === "next-row" || action.step === "stay" ? next : stepped(next, action.step);
   }
-  const { [key]: _mended, ...drafts } = state.drafts;
-  return stepped({ ...changed(state, result.value, stamp), drafts }, action.step);
+  return stepped({ ...changed(state, result.value, stamp), drafts: without(state.drafts, key) }, action.step);
+}
+
+function without(drafts: EditorState["drafts"], key: string): EditorState["drafts"] {
+  if (!(key in drafts)) return drafts;
+  return Object.fromEntries(Object.entries(drafts).filter(([each]) => each !== key));
 }
 
 function typingOf(state: EditorState, action: Extract<EditorAction, { type: "typing" }>): Pick<EditorState, "preview" | "typing"> {

@@ -125,7 +125,7 @@ function useCellTyping(props: GridCellProps) {
       }
       case "cancel": {
         reset();
-        return send({ type: "typing", target, text: null });
+        return send({ type: "drop", target });
       }
       case "leave": return document.getElementById("after-grid")?.focus();
       case "help": return openHelp();
@@ -163,7 +163,7 @@ function useCellTyping(props: GridCellProps) {
     },
     onKeyDown: (event: KeyboardEvent) => {
       if (event.nativeEvent.isComposing) return;
-      const mood = { editing: editing || typed !== null, listOpen: list.length > 0, picked: picked !== null, first: props.first, last: props.last, freeText: props.column === "note" };
+      const mood = { editing: editing || typed !== null || props.draft !== null, listOpen: list.length > 0, picked: picked !== null, first: props.first, last: props.last, freeText: props.column === "note" };
       const intent = keyIntent({ key: event.key, ctrl: event.ctrlKey || event.metaKey, shift: event.shiftKey, alt: event.altKey }, mood);
       if (!intent) return;
       event.preventDefault();

@@ -4,7 +4,8 @@ import { useCallback, useEffect, useMemo, useRef, useState, type KeyboardEvent, 
 import type { Drawing, Model, PaperPoint, View } from "@/iso";
 import { DrawingItems, parseRef } from "./drawing-items";
 import { pointFinder } from "./drawing-refs";
-import { useLineDrawing, type DrawingRoom } from "./use-line-model";
+import type { DrawingRoom } from "./draw-line";
+import { useLineDrawing } from "./use-line-model";
 import { fitViewport, panViewport, viewportCentre, zoomViewport, type Viewport } from "./viewport";
 
 export interface LineDrawingProps {
@@ -32,15 +33,16 @@ export function LineDrawing({ model, view, onView, activePointId, onPoint }: Lin
   const drawn = useLineDrawing(model, room, view);
   return (
     <section aria-label="Isometric" className="flex min-h-0 min-w-0 flex-1 flex-col">
-      <ViewButtons view={view} shown={drawn.ok ? drawn.drawing.view : null} onView={onView} />
+      <ViewButtons view={view} shown={drawn.drawing?.view ?? null} onView={onView} />
       <div ref={frame} className="frame relative min-h-0 flex-1 overflow-hidden">
-        {drawn.ok ? (
-          <DrawingWindow drawing={drawn.drawing} model={model} activePointId={activePointId} onPoint={onPoint} />
+        {drawn.drawing ? (
+          <DrawingWindow drawing={drawn.drawing} model={drawn.model} activePointId={activePointId} onPoint={onPoint} />
         ) : (
           <p className="absolute inset-0 grid place-items-center p-6 text-center text-soft">
-            {model.legs.length === 0 ? "The isometric grows here as you type the first legs." : "This line cannot be drawn yet. See the problems below."}
+            {model.legs.length === 0 ? "The isometric grows here as you type the first legs." : drawn.pending ? "Drawing" : "This line cannot be drawn yet. See the findings."}
           </p>
         )}
+        {drawn.drawing && drawn.pending ? <p className="pointer-events-none absolute left-3 top-2 text-xs text-soft">Drawing</p> : null}
       </div>
     </section>
   );

@@ -1,8 +1,8 @@
 "use client";
-import { useDeferredValue, useMemo } from "react";
-import { buildModel, drawModel } from "@/iso";
-import type { Drawing, MarksRegister, Model, RunDocument, TakeOutWord, View } from "@/iso";
-import { measureText } from "@/fonts/widths";
+import { useDeferredValue, useEffect, useMemo, useRef, useState } from "react";
+import { buildModel, type Drawing, type MarksRegister, type Model, type RunDocument, type TakeOutWord, type View } from "@/iso";
+import { DrawingQueue } from "./drawing-queue";
+import type { DrawingRoom } from "./draw-line";
 
 /** The model of a document, computed after the typing it follows from has been shown. */
 export function useLineModel(document: RunDocument, marks: MarksRegister, takeOuts: readonly TakeOutWord[]): Model {
@@ -10,28 +10,28 @@ export function useLineModel(document: RunDocument, marks: MarksRegister, takeOu
   return useMemo(() => buildModel(settled, marks, takeOuts), [settled, marks, takeOuts]);
 }
 
-export interface DrawingRoom {
-  readonly widthMm: number;
-  readonly heightMm: number;
+export interface DrawnLine {
+  /** The newest drawing there is; null before the first, or when the line cannot be drawn. */
+  readonly drawing: Drawing | null;
+  /** The model it shows. */
+  readonly model: Model;
+  /** A newer one is being drawn. */
+  readonly pending: boolean;
 }
 
-export type DrawnLine = { readonly ok: true; readonly drawing: Drawing } | { readonly ok: false };
-
-const SHOW_ALL = { items: true, welds: true, pieces: true, dimensions: true };
-
-/** The drawing of a model; it comes after the cut lengths. A line that cannot be drawn yet is said so, never a broken page. */
+/** The drawing of a model, made beside the page; until it comes the one before stays. */
 export function useLineDrawing(model: Model, room: DrawingRoom, view: View | null): DrawnLine {
-  const settled = useDeferredValue(model);
   const { widthMm, heightMm } = room;
-  return useMemo(() => drawn(settled, { widthMm, heightMm }, view), [settled, widthMm, heightMm, view]);
-}
-
-export function drawn(model: Model, room: DrawingRoom, view: View | null): DrawnLine {
-  if (model.legs.length === 0) return { ok: false };
-  try {
-    return { ok: true, drawing: drawModel(model, { ...room, measure: measureText, view, spool: null, show: SHOW_ALL }) };
-  } catch (error) {
-    console.error("The drawing failed", error);
-    return { ok: false };
-  }
+  const [shown, setShown] = useState<{ readonly drawing: Drawing | null; readonly model: Model } | null>(null);
+  const queue = useRef<DrawingQueue | null>(null);
+  useEffect(() => {
+    const made = new DrawingQueue((ask, answer) => setShown({ drawing: answer.drawing, model: ask.model }));
+    queue.current = made;
+    return () => made.close();
+  }, []);
+  useEffect(() => {
+    if (model.legs.length > 0) queue.current?.ask({ model, room: { widthMm, heightMm }, view });
+  }, [model, widthMm, heightMm, view]);
+  if (model.legs.length === 0) return { drawing: null, model, pending: false };
+  return { drawing: shown?.drawing ?? null, model: shown?.model ?? model, pending: shown === null || shown.model !== model };
 }

@@ -1,6 +1,7 @@
 /** An empty line with the defaults of a common shop, and the stamp an action carries. */
 import type { LineSettings, RunDocument } from "@/iso";
-import { INCH_MM } from "@/iso";
+import { emptyMarks, INCH_MM } from "@/iso";
+import type { LineDetail } from "@/lib/rules/api-types";
 import type { Stamp } from "@/components/run-editor/editor-state";
 
 export const SETTINGS: LineSettings = {
@@ -29,4 +30,15 @@ export function testStamp(): Stamp {
   serial += 1;
   const ids = Array.from({ length: 8 }, (_, n) => `p${serial}x${n}`);
   return { by: "R. Tanaka", at: "2026-03-02", ids, branchId: `b${serial}` };
+}
+
+/** An empty line as the server hands it out. */
+export function lineDetail(change: Partial<LineDetail> = {}): LineDetail {
+  return {
+    id: "line-1", job: { id: "job-1", number: "J-100", title: "Cooling water" }, version: 1,
+    document: emptyDocument(), marks: emptyMarks(), takeOuts: [],
+    titleBlock: { shopName: "Shop", client: "", project: "", jobNumber: "J-100", area: "", fields: [], logo: null },
+    sheetSize: "tabloid", spools: [], uploads: [], updatedAt: "2026-03-01T08:00:00Z", updatedBy: "R. Tanaka", editable: true,
+    ...change,
+  };
 }
