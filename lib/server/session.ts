@@ -45,9 +45,10 @@ export async function viewerOfCookies(cookieHeader: string | null): Promise<Sess
   return sessionId === null ? null : viewerOfSession(sessionId, new Date());
 }
 
+/** Tokens are letters, digits, - _ and dots, so nothing in one was escaped. */
 function cookieValue(header: string, name: string): string | null {
   const pair = header.split(";").map((part) => part.trim()).find((part) => part.startsWith(`${name}=`));
-  return pair === undefined ? null : decodeURIComponent(pair.slice(name.length + 1));
+  return pair === undefined ? null : pair.slice(name.length + 1);
 }
 
 /** The session id in a token of ours, or null when it is not ours, altered or run out. */

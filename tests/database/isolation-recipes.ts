@@ -1,0 +1,133 @@
+/**
+ * One recipe per route and method: how its owner calls it so that it succeeds. `scope` says what the same request from
+ * another shop's owner must come to: "foreign-id" names a row of the first shop in the request and must answer 404;
+ * "own" names none, so it must touch and show the other shop only; "public" is for anybody, for the reason given.
+ */
+import * as shopLogo from "@/app/api/shop/logo/route";
+import * as jobLogo from "@/app/api/jobs/[jobId]/logo/route";
+import * as invitations from "@/app/api/shop/invitations/route";
+import * as uploads from "@/app/api/lines/[lineId]/uploads/route";
+import * as hold from "@/app/api/revisions/[revisionId]/hold/route";
+import { sampleDocument } from "../factories";
+import { pngFile } from "./files";
+import { marksOf, signBody, signed, submitted } from "./revision-support";
+import { addMember, call, newLine, unique, type Answer, type Call, type TestShop } from "./support";
+
+export interface Recipe {
+  readonly scope: "foreign-id" | "own" | "public";
+  /** Why it needs no 404 where it is public. */
+  readonly because?: string;
+  readonly make: (shop: TestShop) => Promise<Omit<Call, "method">>;
+}
+
+const foreign = (make: Recipe["make"]): Recipe => ({ scope: "foreign-id", make });
+const own = (make: Recipe["make"]): Recipe => ({ scope: "own", make });
+const open = (because: string): Recipe => ({ scope: "public", because, make: async () => ({}) });
+
+async function made(answer: Promise<Answer>): Promise<string> {
+  const { status, text, json } = await answer;
+  if (status >= 300) throw new Error(`making a row answered ${status} ${text}`);
+  return json.id as string;
+}
+
+const upload = async (shop: TestShop) => {
+  const { lineId } = await newLine(shop);
+  const file = { name: "sketch.png", bytes: pngFile() };
+  return made(call(uploads.POST, { as: shop.owner, method: "POST", params: { lineId }, file }));
+};
+const invitation = (shop: TestShop) => made(call(invitations.POST, { as: shop.owner, method: "POST", body: { email: `${unique("x")}@shop.example`, role: "fitter" } }));
+const logoKey = async (shop: TestShop, side: number) => {
+  const { sha256Hex } = await import("@/lib/server/storage");
+  const bytes = pngFile(side, side);
+  await call(shopLogo.PUT, { as: shop.owner, method: "PUT", file: { name: "logo.png", bytes } });
+  return sha256Hex(bytes);
+};
+const onLine = (more: Omit<Call, "method"> = {}) => foreign(async (shop) => ({ params: { lineId: (await newLine(shop)).lineId }, ...more }));
+const onJob = (more: Omit<Call, "method"> = {}) => foreign(async (shop) => ({ params: { jobId: (await newLine(shop)).jobId }, ...more }));
+const onSpool = (more: Omit<Call, "method"> = {}) => foreign(async (shop) => ({ params: { spoolId: (await newLine(shop)).spoolIds[0]! }, ...more }));
+const onSubmitted = (more: Omit<Call, "method"> = {}) => foreign(async (shop) => ({ params: { revisionId: (await submitted(shop)).revisionId }, ...more }));
+const onSigned = (more: Omit<Call, "method"> = {}) => foreign(async (shop) => ({ params: { revisionId: (await signed(shop)).revisionId }, ...more }));
+const reason = { body: { reason: "A reason to read", verified: true } };
+const member = (more: Omit<Call, "method"> = {}) => foreign(async (shop) => ({ params: { membershipId: (await addMember(shop.shopId, "fitter")).membershipId }, ...more }));
+
+export const RECIPES: Readonly<Record<string, Recipe>> = {
+  "GET /auth/[...nextauth]": open("next-auth's own routes know no shop"),
+  "POST /auth/[...nextauth]": open("next-auth's own routes know no shop"),
+  "GET /health": open("says only whether the process works"),
+  "GET /outbox": open("answers in demo mode on loopback only"),
+  "GET /status/[token]": open("the printed token is the permission; it shows state, never content"),
+  "POST /sign-up": open("nobody is signed in yet"),
+  "POST /invitations/accept": open("the mailed token is the permission"),
+  "POST /password-reset": open("nobody is signed in"),
+  "POST /password-reset/confirm": open("the mailed token is the permission"),
+
+  "GET /viewer": own(async () => ({})),
+  "POST /viewer/shop": foreign(async (shop) => ({ body: { shopId: shop.shopId } })),
+  "GET /sessions": own(async () => ({})),
+  "DELETE /sessions/[sessionId]": foreign(async (shop) => {
+    const { startSession } = await import("@/lib/server/session");
+    return { params: { sessionId: (await startSession(shop.owner.personId, "Second")) ?? "" } };
+  }),
+  "GET /shop": own(async () => ({})),
+  "PATCH /shop": own(async () => ({ body: { sheetSize: "A4" } })),
+  "GET /shop/people": own(async () => ({})),
+  "PATCH /shop/people/[membershipId]": member({ body: { role: "inspector" } }),
+  "DELETE /shop/people/[membershipId]": member(),
+  "GET /shop/invitations": own(async () => ({})),
+  "POST /shop/invitations": own(async () => ({ body: { email: `${unique("y")}@shop.example`, role: "fitter" } })),
+  "DELETE /shop/invitations/[invitationId]": foreign(async (shop) => ({ params: { invitationId: await invitation(shop) } })),
+  "PUT /shop/logo": own(async () => ({ file: { name: "logo.png", bytes: pngFile(9, 9) } })),
+  "DELETE /shop/logo": own(async () => ({})),
+  "GET /shop/take-outs": own(async () => ({})),
+  "POST /shop/take-outs": own(async () => ({ body: { key: "elbow:lr-90:6", valueMm: 230 } })),
+  "GET /shop/audit": own(async () => ({})),
+  "GET /jobs": own(async () => ({})),
+  "POST /jobs": own(async () => ({ body: { number: unique("J"), title: "New", client: "", area: "", units: "imperial" } })),
+  "GET /jobs/[jobId]": onJob(),
+  "PATCH /jobs/[jobId]": onJob({ body: { title: "Another title" } }),
+  "PUT /jobs/[jobId]/logo": onJob({ file: { name: "logo.png", bytes: pngFile(10, 10) } }),
+  "DELETE /jobs/[jobId]/logo": foreign(async (shop) => {
+    const { jobId } = await newLine(shop);
+    await call(jobLogo.PUT, { as: shop.owner, method: "PUT", params: { jobId }, file: { name: "logo.png", bytes: pngFile(11, 11) } });
+    return { params: { jobId } };
+  }),
+  "GET /jobs/[jobId]/lines": onJob(),
+  "POST /jobs/[jobId]/lines": onJob({ body: { number: "L-new", title: "" } }),
+  "GET /lines/[lineId]": onLine(),
+  "PUT /lines/[lineId]": foreign(async (shop) => {
+    const number = unique("L");
+    const { lineId } = await newLine(shop, sampleDocument(number));
+    return { params: { lineId }, body: { version: 1, document: sampleDocument(number, 1_500) } };
+  }),
+  "PATCH /lines/[lineId]": onLine({ body: { title: "Another title" } }),
+  "POST /lines/[lineId]/copy": onLine({ body: { number: "L-copy", title: "Copy" } }),
+  "POST /lines/[lineId]/uploads": onLine({ file: { name: "photo.png", bytes: pngFile() } }),
+  "GET /uploads/[uploadId]": foreign(async (shop) => ({ params: { uploadId: await upload(shop) } })),
+  "DELETE /uploads/[uploadId]": foreign(async (shop) => ({ params: { uploadId: await upload(shop) } })),
+  "GET /objects/logo/[key]": foreign(async (shop) => ({ params: { key: await logoKey(shop, 12) } })),
+
+  "GET /spools/[spoolId]": onSpool(),
+  "GET /spools/[spoolId]/sheet": onSpool({ query: "?size=A4" }),
+  "POST /spools/[spoolId]/submit": onSpool({ body: { description: "First issue", size: "letter" } }),
+  "POST /spools/[spoolId]/work": foreign(async (shop) => {
+    const { spoolId, lineId } = await signed(shop);
+    return { params: { spoolId }, body: { kind: "cut", ...(await marksOf(lineId)).piece, values: { heat: "H-1" } } };
+  }),
+  "GET /bench": own(async (shop) => {
+    await signed(shop);
+    return {};
+  }),
+  "GET /revisions/[revisionId]": onSubmitted(),
+  "GET /revisions/[revisionId]/sheet": onSubmitted(),
+  "POST /revisions/[revisionId]/sign": onSubmitted({ body: signBody }),
+  "POST /revisions/[revisionId]/return": onSubmitted(reason),
+  "POST /revisions/[revisionId]/hold": onSubmitted(reason),
+  "POST /revisions/[revisionId]/release": foreign(async (shop) => {
+    const { revisionId } = await signed(shop);
+    await call(hold.POST, { as: shop.owner, method: "POST", params: { revisionId }, ...reason });
+    return { params: { revisionId }, ...reason };
+  }),
+  "POST /revisions/[revisionId]/void": onSigned(reason),
+  "POST /revisions/[revisionId]/as-built": onSigned(reason),
+};
+

@@ -1,0 +1,122 @@
+/**
+ * Shops apart. The routes are read from the folder itself, so a new one without a recipe fails here. Each request first
+ * succeeds for its owner; the same request from another shop's owner answers 404 and leaves every table as it was.
+ */
+import { readdirSync } from "node:fs";
+import path from "node:path";
+import { afterAll, beforeAll, describe, expect, test } from "vitest";
+import { closeDb } from "@/lib/server/database";
+import { RECIPES } from "./isolation-recipes";
+import { call, newShop, tablePrints, withClient, type TestShop } from "./support";
+
+const API = path.resolve(import.meta.dirname, "../../app/api");
+const METHODS = ["GET", "HEAD", "POST", "PUT", "PATCH", "DELETE", "OPTIONS"];
+
+interface Route {
+  readonly name: string;
+  readonly method: string;
+  readonly handler: unknown;
+}
+
+async function everyRoute(): Promise<Route[]> {
+  const files = (readdirSync(API, { recursive: true }) as string[]).filter((file) => /(^|\/)route\.tsx?$/.test(file)).sort();
+  const routes = await Promise.all(
+    files.map(async (file) => {
+      const module = (await import(/* @vite-ignore */ path.join(API, file))) as Record<string, unknown>;
+      return Object.keys(module)
+        .filter((method) => METHODS.includes(method))
+        .map((method) => ({ name: `${method} /${path.dirname(file)}`, method, handler: module[method] }));
+    }),
+  );
+  return routes.flat();
+}
+
+/** Everything that belongs to one shop, for requests that may change the sender's own. */
+async function shopPrints(shopId: string): Promise<Record<string, string>> {
+  return withClient("super", async (client) => {
+    const tables = await client.query<{ name: string }>(
+      "SELECT table_name AS name FROM information_schema.columns WHERE table_schema = 'public' AND column_name = 'shop_id' AND table_name <> 'sessions' ORDER BY 1",
+    );
+    const prints: Record<string, string> = {};
+    for (const { name } of tables.rows) {
+      const print = await client.query<{ print: string }>(`SELECT coalesce(md5(string_agg(md5(t::text), '' ORDER BY md5(t::text))), '') AS print FROM ${name} t WHERE shop_id = $1`, [shopId]);
+      prints[name] = print.rows[0]?.print ?? "";
+    }
+    return prints;
+  });
+}
+
+/** Ids that only one shop's answers may show. */
+async function shopIds(shopId: string): Promise<string[]> {
+  return withClient("super", async (client) => {
+    const ids = await client.query<{ id: string }>(
+      `SELECT id FROM jobs WHERE shop_id = $1 UNION SELECT id FROM lines WHERE shop_id = $1 UNION SELECT id FROM spools WHERE shop_id = $1
+       UNION SELECT id FROM revisions WHERE shop_id = $1 UNION SELECT id FROM memberships WHERE shop_id = $1 UNION SELECT id FROM invitations WHERE shop_id = $1`,
+      [shopId],
+    );
+    return [shopId, ...ids.rows.map((row) => row.id)];
+  });
+}
+
+const routes = await everyRoute();
+let first: TestShop;
+let other: TestShop;
+
+beforeAll(async () => {
+  first = await newShop();
+  other = await newShop();
+});
+afterAll(closeDb);
+
+describe("shops are apart", () => {
+  test("every route and method has a recipe, and every recipe a route", () => {
+    expect(routes.length).toBeGreaterThan(40);
+    expect(routes.map((route) => route.name).sort()).toEqual(Object.keys(RECIPES).sort());
+  });
+
+  for (const route of routes) {
+    const recipe = RECIPES[route.name];
+    if (recipe === undefined || recipe.scope === "public") continue;
+    test(`${route.name} (${recipe.scope})`, async () => {
+      const sent = await recipe.make(first);
+      const owners = await call(route.handler, { ...sent, as: first.owner, method: route.method });
+      expect(owners.status, owners.text.slice(0, 400)).toBeGreaterThanOrEqual(200);
+      expect(owners.status, owners.text.slice(0, 400)).toBeLessThan(300);
+      if (recipe.scope === "foreign-id") {
+        const before = await tablePrints();
+        const others = await call(route.handler, { ...sent, as: other.owner, method: route.method });
+        expect(others.status, others.text.slice(0, 400)).toBe(404);
+        expect(others.json.code).toBe("not-found");
+        expect(await tablePrints()).toEqual(before);
+      } else {
+        const before = await shopPrints(first.shopId);
+        const others = await call(route.handler, { ...sent, as: other.owner, method: route.method });
+        expect(others.status, others.text.slice(0, 400)).toBeLessThan(300);
+        for (const id of await shopIds(first.shopId)) expect(others.text).not.toContain(id);
+        expect(await shopPrints(first.shopId)).toEqual(before);
+      }
+    });
+  }
+
+  for (const route of routes) {
+    const recipe = RECIPES[route.name];
+    if (recipe === undefined || recipe.scope === "public") continue;
+    test(`${route.name} answers 401 to nobody, and a write from another site 403`, async () => {
+      const id = "00000000-0000-4000-8000-000000000000";
+      const params = { jobId: id, lineId: id, spoolId: id, revisionId: id, uploadId: id, membershipId: id, invitationId: id, sessionId: id, key: "0".repeat(64) };
+      const nobody = await call(route.handler, { params, method: route.method });
+      expect(nobody.status).toBe(401);
+      if (route.method === "GET") return;
+      const foreignSite = await call(route.handler, { as: first.owner, params, method: route.method, headers: { origin: "https://elsewhere.example" } });
+      expect(foreignSite.status).toBe(403);
+    });
+  }
+
+  for (const route of routes.filter((one) => RECIPES[one.name]?.scope === "foreign-id" && one.name.includes("["))) {
+    test(`${route.name} answers 404 to what is no id`, async () => {
+      const params = Object.fromEntries([...route.name.matchAll(/\[(\w+)\]/g)].map((match) => [match[1]!, "1' OR '1'='1"]));
+      const answer = await call(route.handler, { as: first.owner, params, method: route.method });
+      expect(answer.status).toBe(404);
+    });
+  }
+});
