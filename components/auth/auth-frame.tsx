@@ -6,8 +6,8 @@ export function AuthFrame({ title, lead, children, aside }: { readonly title: st
   return (
     <div className="mx-auto grid max-w-5xl gap-8 py-4 lg:grid-cols-[minmax(0,28rem)_minmax(0,1fr)] lg:py-10">
       <section className="frame p-6 sm:p-8">
-        <h1 className="mb-1">{title}</h1>
-        {lead ? <div className="mb-5 text-soft">{lead}</div> : null}
+        <h1>{title}</h1>
+        <div className="mt-1 mb-5 text-soft">{lead}</div>
         {children}
       </section>
       <div className="lg:pt-8">{aside ?? <WhatItIs />}</div>

@@ -40,7 +40,7 @@ export function TitleFieldsForm({ fields, editable, onSave }: TitleFieldsFormPro
           <div key={row.id} className="grid grid-cols-[1fr_1fr_auto] items-start gap-3">
             <TextField label={`Label ${n + 1}`} error={errors?.[n]?.label?.message} {...register(`fields.${n}.label`)} />
             <TextField label="Text" error={errors?.[n]?.value?.message} {...register(`fields.${n}.value`)} />
-            <Button tone="quiet" className="mt-7 px-1" aria-label={`Remove field ${n + 1}`} onClick={() => rows.remove(n)}>
+            <Button tone="quiet" className="mt-7" aria-label={`Remove field ${n + 1}`} onClick={() => rows.remove(n)}>
               Remove
             </Button>
           </div>

@@ -81,7 +81,7 @@ function StockForm({ shop, owner, onSave }: { readonly shop: ShopSettings; reado
               <TextField label="Length" figure error={errors?.length?.message} {...register(`stock.${n}.length`)} />
               <TextField label="Quantity" figure inputMode="numeric" error={errors?.quantity?.message} {...register(`stock.${n}.quantity`)} />
               {owner ? (
-                <Button tone="quiet" className="col-span-2 justify-self-start px-1 lg:col-span-1 lg:mt-7" aria-label={`Remove stock row ${n + 1}`} onClick={() => rows.remove(n)}>
+                <Button tone="quiet" className="col-span-2 justify-self-start lg:col-span-1 lg:mt-7" aria-label={`Remove stock row ${n + 1}`} onClick={() => rows.remove(n)}>
                   Remove
                 </Button>
               ) : null}

@@ -22,12 +22,12 @@ export function StatusPage({ token }: { readonly token: string }) {
 
 function Status({ status }: { readonly status: StatusDetail }) {
   const facts = [
-    { label: "Sheet", value: status.sheetNumber },
-    { label: "Revision", value: status.code },
-    { label: "Line", value: status.line },
-    { label: "Spool", value: status.spool },
-    { label: "Shop", value: status.shop },
-    { label: "Issued", value: timeText(status.issuedAt) },
+    { label: "Sheet", figure: true, value: status.sheetNumber },
+    { label: "Revision", figure: true, value: status.code },
+    { label: "Line", figure: true, value: status.line },
+    { label: "Spool", figure: true, value: status.spool },
+    { label: "Shop", figure: false, value: status.shop },
+    { label: "Issued", figure: false, value: timeText(status.issuedAt) },
   ];
   return (
     <div className="frame p-5 sm:p-8">
@@ -39,7 +39,7 @@ function Status({ status }: { readonly status: StatusDetail }) {
         {facts.map((fact) => (
           <div key={fact.label} className="border-b border-hair py-2 pr-3">
             <dt className="cell-label">{fact.label}</dt>
-            <dd className="figure break-words">{fact.value}</dd>
+            <dd className={fact.figure ? "figure break-words" : "break-words"}>{fact.value}</dd>
           </div>
         ))}
       </dl>

@@ -16,9 +16,15 @@ export function buttonClass(tone: ButtonTone = "plain", big = false): string {
   return clsx(
     "inline-flex items-center justify-center gap-2 border font-medium text-center transition-colors",
     "disabled:border-hair disabled:bg-shade disabled:text-soft disabled:no-underline disabled:hover:bg-shade",
-    big ? "min-h-14 px-6 text-lg" : "min-h-11 px-4",
+    sizeClass(tone, big),
     TONES[tone],
   );
+}
+
+/** A quiet one reads as a link, so it stands flush with the text around it. */
+function sizeClass(tone: ButtonTone, big: boolean): string {
+  if (big) return "min-h-14 px-6 text-lg";
+  return tone === "quiet" ? "min-h-11 px-1" : "min-h-11 px-4";
 }
 
 export interface ButtonProps extends ButtonHTMLAttributes<HTMLButtonElement> {

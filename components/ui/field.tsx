@@ -3,7 +3,7 @@ import clsx from "clsx";
 import { useId, type InputHTMLAttributes, type ReactNode, type SelectHTMLAttributes, type TextareaHTMLAttributes } from "react";
 
 const CONTROL =
-  "w-full min-h-11 border bg-sheet px-3 py-2 text-ink placeholder:text-soft disabled:bg-shade disabled:text-soft read-only:bg-shade";
+  "w-full min-h-11 border bg-sheet px-3 py-2 text-ink placeholder:text-soft disabled:bg-shade disabled:text-soft";
 
 export interface FieldFrameProps {
   readonly label: ReactNode;

@@ -6,7 +6,7 @@ export function SearchField({ label, value, onChange }: { readonly label: string
   const id = useId();
   return (
     <div className="w-full sm:w-72">
-      <label htmlFor={id} className="cell-label block">
+      <label htmlFor={id} className="mb-1 block font-medium">
         {label}
       </label>
       <input id={id} type="search" value={value} onChange={(event) => onChange(event.target.value)} autoComplete="off" className="min-h-11 w-full border border-rule bg-sheet px-3" />

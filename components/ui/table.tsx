@@ -63,7 +63,7 @@ function HeadCell<Row>({ column, sort, onSort }: { column: Column<Row>; sort: So
   if (!column.sortable || !onSort) {
     return (
       <th role="columnheader" scope="col" data-figure={column.figure || undefined}>
-        {column.head || <span className="sr-only">Actions</span>}
+        <span className="-my-1 inline-flex min-h-9 items-center">{column.head || <span className="sr-only">Actions</span>}</span>
       </th>
     );
   }
