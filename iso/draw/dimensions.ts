@@ -22,6 +22,8 @@ export interface DimensionInk {
   readonly shown: readonly string[];
 }
 
+export const NO_DIMENSIONS: DimensionInk = { items: [], light: [], boxes: [], homeless: [], shown: [] };
+
 interface Choice {
   readonly set: DimensionSet;
   readonly places: readonly (PaperPoint | null)[];

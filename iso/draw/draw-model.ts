@@ -3,13 +3,13 @@ import type { PaperBox, PaperPoint } from "../geometry/types";
 import type { View } from "../run/document";
 import type { Model } from "../run/model-types";
 import { componentMarks, pieceMarks, weldMarks } from "./collect-marks";
-import { dimensionPass, type DimensionInk } from "./dimensions";
-import { drawnEdges, drawnJoints } from "./drawn";
+import { dimensionPass, NO_DIMENSIONS, type DimensionInk } from "./dimensions";
+import { drawnEdges, drawnJoints, type DrawnEdge, type DrawnJoint } from "./drawn";
 import type { DisplayItem, Drawing, DrawOptions, Layer, Ref } from "./drawing-types";
 import { endLabels } from "./end-texts";
 import { placeLineText } from "./fixed-text";
-import { fitStretch, shiftInto } from "./fit";
-import { inkMap } from "./ink-map";
+import { fitStretch, roomAround } from "./fit";
+import { inkMap, type InkMap } from "./ink-map";
 import { inkBounds } from "./item-bounds";
 import { LabelField } from "./label-field";
 import { legendOf } from "./legend-keys";
@@ -17,12 +17,12 @@ import type { Label } from "./label-candidates";
 import { placeLabels } from "./labels";
 import { blockLabel } from "./mark-labels";
 import { flowPass, northPass } from "./north";
-import { offsetPass } from "./offset-box";
+import { offsetPass, type OffsetInk } from "./offset-box";
 import { bestView } from "./orient";
-import { itemMoved } from "./paths";
+import { itemMoved, pathItem, polygonSegments } from "./paths";
 import { pipePass, pipeStretches } from "./pipe";
 import { placeAll, placePlan, type Placed } from "./place";
-import { paperBoxAround, type Segment, type TurnedBox } from "./plane";
+import { boxCorners, paperBoxAround, segmentInBox, type Segment, type TurnedBox } from "./plane";
 import { PROJECTIONS } from "./project";
 import { sketchOf } from "./sketch";
 import { slopePass } from "./slopes";
@@ -32,7 +32,10 @@ import { weldPass } from "./weld-marks";
 /** Painted from back to front. */
 const LAYERS: readonly Layer[] = ["hatch", "box", "dimension", "halo", "pipe", "symbol", "weld", "flow", "leader", "balloon", "dimension-text", "label", "north"];
 /** Tries to make everything fit by drawing the legs shorter. */
-const FIT_TRIES = 4;
+const FIT_TRIES = 6;
+/** Paper kept beyond the pipe at the first try, and beyond dimensions for the labels, mm. */
+const FIRST_MARGIN = 20;
+const LABEL_MARGIN = 7;
 
 /**
  * Draws a model inside its room. Labels never overlap each other; what cannot fit at the least sizes goes beyond the room,
@@ -43,16 +46,27 @@ export function drawModel(model: Model, options: DrawOptions): Drawing {
   const plan = placePlan(sketch, options.measure);
   const view: View = options.view ?? model.document.view ?? bestView(plan);
   const projection = PROJECTIONS[view];
-  let margin = 26;
-  let drawing: Drawing | null = null;
+  let margin = FIRST_MARGIN;
+  let best: Drawing | null = null;
   for (let attempt = 0; attempt < FIT_TRIES; attempt++) {
     const stretch = fitStretch(plan, projection, options.widthMm - 2 * margin, options.heightMm - 2 * margin);
-    const next = drawPlaced(placeAll(plan, projection, stretch), options, view);
-    if (!drawing || overrun(next) < overrun(drawing)) drawing = next;
-    if (stretch === 0 || overrun(next) <= 0.01) break;
-    margin += Math.max(4, overrun(next) / 2);
+    const lines = drawLines(placeAll(plan, projection, stretch), options);
+    const over = boxOverrun(lines.extent, options.widthMm - 2 * LABEL_MARGIN, options.heightMm - 2 * LABEL_MARGIN);
+    const last = stretch === 0 || attempt === FIT_TRIES - 1;
+    if (over > 0 && !last) {
+      margin += over / 2 + 1;
+      continue;
+    }
+    const next = drawLabels(lines, options, view);
+    if (!best || overrun(next) < overrun(best)) best = next;
+    if (stretch === 0 || overrun(next) <= 0) break;
+    margin += Math.max(3, overrun(next) / 2);
   }
-  return drawing ?? drawPlaced(placeAll(plan, projection, 0), options, view);
+  return best ?? drawLabels(drawLines(placeAll(plan, projection, 0), options), options, view);
+}
+
+function boxOverrun(box: PaperBox, widthMm: number, heightMm: number): number {
+  return Number.isFinite(box.minX) ? Math.max(0, box.maxX - box.minX - widthMm, box.maxY - box.minY - heightMm) : 0;
 }
 
 function overrun(drawing: Drawing): number {
@@ -60,52 +74,79 @@ function overrun(drawing: Drawing): number {
   return Math.max(0, -bounds.minX, -bounds.minY, bounds.maxX - drawing.widthMm, bounds.maxY - drawing.heightMm);
 }
 
-function drawPlaced(placed: Placed, options: DrawOptions, view: View): Drawing {
+/** Everything but the labels: what stands where its geometry says. */
+interface Lines {
+  readonly placed: Placed;
+  readonly drawn: readonly DrawnEdge[];
+  readonly joints: readonly DrawnJoint[];
+  readonly items: readonly DisplayItem[];
+  readonly offsets: OffsetInk;
+  readonly dimensions: DimensionInk;
+  readonly homeless: readonly Homeless[];
+  readonly heavy: readonly Segment[];
+  readonly light: readonly Segment[];
+  readonly heavyMap: InkMap;
+  readonly field: LabelField;
+  readonly fixed: readonly TurnedBox[];
+  readonly extent: PaperBox;
+}
+
+function drawLines(placed: Placed, options: DrawOptions): Lines {
   const { measure } = options;
   const drawn = drawnEdges(placed);
   const joints = drawnJoints(placed, drawn);
   const stretches = pipeStretches(placed, drawn);
   const offsets = offsetPass(placed, drawn);
-  const inks = [pipePass(placed, drawn, stretches), symbolPass(placed, drawn), weldPass(options.show.welds ? joints : joints), flowPass(stretches)];
+  const inks = [pipePass(placed, drawn, stretches), symbolPass(placed, drawn), weldPass(joints), flowPass(stretches)];
   const heavy = inks.flatMap((ink) => ink.heavy);
   const heavyMap = inkMap(heavy, 1.2);
-  const field = new LabelField();
   const boxMap = inkMap(offsets.light, 0.5);
+  const field = new LabelField();
   const texts = offsets.texts.map((text) => placeLineText(text, field, heavyMap, boxMap, measure));
   const slopes = slopePass(placed, drawn, field, heavyMap, boxMap, measure);
-  const extent = paperBoxAround([...heavy, ...offsets.light].flatMap((s) => [s.from, s.to]));
-  const centre: PaperPoint = [(extent.minX + extent.maxX) / 2 || 0, (extent.minY + extent.maxY) / 2 || 0];
-  const dimensions: DimensionInk = options.show.dimensions
-    ? dimensionPass(placed, drawn, { heavy: heavyMap, light: boxMap, field, centre, extent }, measure)
-    : { items: [], light: [], boxes: [], homeless: [], shown: [] };
-
+  const around = paperBoxAround([...heavy, ...offsets.light].flatMap((s) => [s.from, s.to]));
+  const centre: PaperPoint = [(around.minX + around.maxX) / 2 || 0, (around.minY + around.maxY) / 2 || 0];
+  const dimensions = options.show.dimensions ? dimensionPass(placed, drawn, { heavy: heavyMap, light: boxMap, field, centre, extent: around }, measure) : NO_DIMENSIONS;
   const light = [...offsets.light, ...dimensions.light, ...slopes.light];
-  const lightMap = inkMap(light, 0.5);
-  const fixed: TurnedBox[] = [...texts.flatMap((text) => text.box ?? []), ...slopes.boxes, ...dimensions.boxes];
-  const room = shiftInto([...heavy, ...light], fixed, options.widthMm, options.heightMm);
-  const north = northPass(placed.projection, room, heavyMap, lightMap, field, measure);
-  fixed.push(north.box);
+  const fixed = [...texts.flatMap((text) => text.box ?? []), ...slopes.boxes, ...dimensions.boxes];
+  return {
+    placed, drawn, joints, offsets, dimensions, heavy, light, heavyMap, field, fixed,
+    items: [...inks.flatMap((ink) => ink.items), ...offsets.items, ...slopes.items, ...dimensions.items, ...texts.flatMap((text) => text.items), ...knockOuts(fixed, light)],
+    homeless: [
+      ...texts.filter((text) => text.box === null).map(({ text }) => ({ ref: text.ref, text: text.text, line: text.line })),
+      ...dimensions.homeless.map((text) => ({ ref: text.ref, text: text.text, line: { from: text.from, to: text.to } })),
+    ],
+    extent: paperBoxAround([...[...heavy, ...light].flatMap((s) => [s.from, s.to]), ...fixed.flatMap((box) => boxCorners(box))]),
+  };
+}
 
+/** White under a number that thin lines run through; pipe is painted over it. */
+function knockOuts(boxes: readonly TurnedBox[], light: readonly Segment[]): readonly DisplayItem[] {
+  return boxes
+    .filter((box) => light.some((line) => segmentInBox(line.from, line.to, box) > 0))
+    .map((box) => pathItem("halo", null, polygonSegments(boxCorners({ ...box, halfWidth: box.halfWidth + 0.5, halfHeight: box.halfHeight + 0.45 })), { fill: "paper" }));
+}
+
+function drawLabels(lines: Lines, options: DrawOptions, view: View): Drawing {
+  const { measure } = options;
+  const { placed, drawn, joints, offsets, heavyMap, light } = lines;
+  const lightMap = inkMap(light, 0.5);
+  const room = roomAround(lines.extent, options.widthMm, options.heightMm);
+  const north = northPass(placed.projection, room, heavyMap, lightMap, lines.field, measure);
   const welds = weldMarks(placed, joints, options);
   const components = componentMarks(placed, drawn, options);
   const pieces = pieceMarks(placed, drawn, options);
   const labels: Label[] = [
     ...endLabels(placed, drawn, measure),
     ...offsets.notes.map((note) => blockLabel(note.lines.map((text, i) => ({ text, bold: i === 0 })), { id: `offset ${note.id}`, anchors: note.anchors, clear: 0.5, along: [] }, { kind: "leg", id: note.id }, measure)),
-    ...homelessLabels(texts.filter((text) => text.box === null).map(({ text }) => ({ ref: text.ref, text: text.text, line: text.line })), options),
-    ...homelessLabels(dimensions.homeless.map((text) => ({ ref: text.ref, text: text.text, line: { from: text.from, to: text.to } })), options),
-    ...welds.labels, ...components.labels, ...pieces.labels,
+    ...homelessLabels(lines.homeless, options), ...welds.labels, ...components.labels, ...pieces.labels,
   ];
-  const marks = placeLabels(labels, fixed, { heavy: heavyMap, light: lightMap, room });
-  const items = layered([
-    ...inks.flatMap((ink) => ink.items), ...offsets.items, ...slopes.items, ...dimensions.items,
-    ...texts.flatMap((text) => text.items), ...north.items, ...marks.items,
-  ]);
+  const marks = placeLabels(labels, [...lines.fixed, north.box], { heavy: heavyMap, light: lightMap, room });
   const shown: Ref[] = [
     ...welds.shown, ...components.shown, ...pieces.shown,
-    ...[...dimensions.shown, ...offsets.notes.map((note) => note.id)].map((id): Ref => ({ kind: "dimension", id })),
+    ...[...lines.dimensions.shown, ...offsets.notes.map((note) => note.id)].map((id): Ref => ({ kind: "dimension", id })),
   ];
-  return finished(items, room, options, view, marks.report, shown, placed);
+  return finished(layered([...lines.items, ...north.items, ...marks.items]), room, options, view, marks.report, shown, placed);
 }
 
 interface Homeless {

@@ -1,7 +1,7 @@
 /** Fit: the largest stretch whose pipe leaves its margins free, and where the drawing stands in its room. */
 import type { PaperBox } from "../geometry/types";
 import { placeAll, type PlacePlan } from "./place";
-import { boxCorners, paperBoxAround, type Segment, type TurnedBox } from "./plane";
+import { paperBoxAround } from "./plane";
 import type { Projection } from "./project";
 import * as size from "./sizes";
 
@@ -26,8 +26,7 @@ export function fitStretch(plan: PlacePlan, projection: Projection, widthMm: num
 }
 
 /** The room in the coordinates the passes drew in, so that what they drew stands in its middle. */
-export function shiftInto(segments: readonly Segment[], boxes: readonly TurnedBox[], widthMm: number, heightMm: number): PaperBox {
-  const box = paperBoxAround([...segments.flatMap((s) => [s.from, s.to]), ...boxes.flatMap((b) => boxCorners(b))]);
+export function roomAround(box: PaperBox, widthMm: number, heightMm: number): PaperBox {
   const [x, y] = Number.isFinite(box.minX) ? [(box.minX + box.maxX) / 2, (box.minY + box.maxY) / 2] : [0, 0];
   return { minX: x - widthMm / 2, minY: y - heightMm / 2, maxX: x + widthMm / 2, maxY: y + heightMm / 2 };
 }

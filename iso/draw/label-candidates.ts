@@ -2,7 +2,7 @@
 import type { PaperBox, PaperPoint } from "../geometry/types";
 import type { DisplayItem } from "./drawing-types";
 import { boxInside, type InkMap } from "./ink-map";
-import { segmentInBox, type TurnedBox } from "./plane";
+import type { TurnedBox } from "./plane";
 
 /** Where a leader may meet a label: a disc about `offset` from the label's middle. */
 export interface Hub {
@@ -44,7 +44,12 @@ export interface Candidate {
   leaderTouches: boolean;
 }
 
-export const NEAR_RINGS = [1.5, 2.8, 4.5, 6.5, 9, 12, 16, 21, 27, 34] as const;
+export const NEAR_RINGS = [1.5, 2.8, 4.5, 6.5, 9] as const;
+export const OUTER_RINGS = [12, 16, 21, 27, 34] as const;
+/** Price of a millimetre of leader. */
+const COST_PER_MM = 0.7;
+/** A seat cheaper than this cannot be bettered on the outer rings. */
+export const OUTER_WORTH = OUTER_RINGS[0] * COST_PER_MM;
 export const FAR_RINGS = [42, 52, 64, 80, 100, 130, 170, 220, 290, 380, 500, 700, 1000, 1500, 2200, 3200] as const;
 const ANGLES = 24;
 const OFFSET_DEG = 7.5;
@@ -86,13 +91,19 @@ function candidateAt(label: Label, anchor: PaperPoint, hub: Hub, d: PaperPoint, 
   const from: PaperPoint = [anchor[0] + d[0] * label.clear, anchor[1] + d[1] * label.clear];
   const to: PaperPoint = [anchor[0] + d[0] * reach, anchor[1] + d[1] * reach];
   const centre: PaperPoint = [to[0] + d[0] * hub.radius - hub.offset[0], to[1] + d[1] * hub.radius - hub.offset[1]];
-  if (segmentInBox(from, to, labelBox(label, centre)) > Math.min(1.8, ring)) return null;
+  if (coversLeader(label, centre, anchor, to)) return null;
   const [w, h] = [label.halfWidth + 0.6, label.halfHeight + 0.6];
   const heavy = ink.heavy.inBox(centre[0] - w, centre[1] - h, centre[0] + w, centre[1] + h);
   const light = ink.light.inBox(centre[0] - w, centre[1] - h, centre[0] + w, centre[1] + h);
   const out = boxInside(ink.room, centre[0] - w, centre[1] - h, centre[0] + w, centre[1] + h);
-  const base = ring * 0.7 + fixed + (heavy > 0 ? 30 + heavy * 0.5 : 0) + (light > 0 ? 9 + light * 0.25 : 0) + (out > 0 ? 25 + out * 3 : 0);
+  const base = ring * COST_PER_MM + fixed + (heavy > 0 ? 30 + heavy * 0.5 : 0) + (light > 0 ? 9 + light * 0.25 : 0) + (out > 0 ? 25 + out * 3 : 0);
   return { centre, from, to, ring, base, boxTouches: heavy > 0, leaderCost: -1, leaderTouches: false };
+}
+
+/** True when the label would lie over its own leader or anchor. */
+function coversLeader(label: Label, centre: PaperPoint, anchor: PaperPoint, to: PaperPoint): boolean {
+  const inside = (p: PaperPoint): boolean => Math.abs(p[0] - centre[0]) < label.halfWidth - 0.1 && Math.abs(p[1] - centre[1]) < label.halfHeight - 0.1;
+  return inside(anchor) || inside([anchor[0] * 0.4 + to[0] * 0.6, anchor[1] * 0.4 + to[1] * 0.6]);
 }
 
 /** Price of fixed ink under the leader, remembered on the candidate. */

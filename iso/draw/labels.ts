@@ -5,7 +5,7 @@
  */
 import type { PaperPoint } from "../geometry/types";
 import type { DisplayItem, LabelReport } from "./drawing-types";
-import { candidatesOf, FAR_RINGS, labelBox, leaderPrice, NEAR_RINGS, type Candidate, type Label, type LabelInk } from "./label-candidates";
+import { candidatesOf, FAR_RINGS, labelBox, leaderPrice, NEAR_RINGS, OUTER_RINGS, OUTER_WORTH, type Candidate, type Label, type LabelInk } from "./label-candidates";
 import { LabelField, type FieldEntry } from "./label-field";
 import { boxesMeet, type TurnedBox } from "./plane";
 
@@ -19,6 +19,20 @@ const SWEEPS = 3;
 const COST_OF_LEADER_ON_LABEL = 45;
 const COST_OF_LEADER_CROSSING = 14;
 const SAME_COST = 1e-9;
+
+/** Candidates of one label; the outer rings are made only when the inner ones leave something to wish for. */
+interface Pool {
+  readonly near: readonly Candidate[];
+  outer: readonly Candidate[] | null;
+}
+
+function seatInPool(label: Label, pool: Pool, field: LabelField, ink: LabelInk): Seat | null {
+  const near = seatFor(label, pool.near, field, ink);
+  if (near && near.cost <= OUTER_WORTH) return near;
+  pool.outer ??= candidatesOf(label, OUTER_RINGS, ink);
+  const outer = seatFor(label, pool.outer, field, ink);
+  return near && (!outer || near.cost <= outer.cost) ? near : outer;
+}
 
 function seatFor(label: Label, candidates: readonly Candidate[], field: LabelField, ink: LabelInk): Seat | null {
   let best: Candidate | null = null;
@@ -54,28 +68,30 @@ export interface PlacedLabels {
 export function placeLabels(labels: readonly Label[], fixed: readonly TurnedBox[], ink: LabelInk): PlacedLabels {
   const field = new LabelField();
   fixed.forEach((box, i) => field.add({ id: `fixed ${i}`, box, leader: null }));
-  const near = labels.map((label) => candidatesOf(label, NEAR_RINGS, ink));
+  const pools = labels.map((label): Pool => ({ near: candidatesOf(label, NEAR_RINGS, ink), outer: null }));
   const seats: (Seat | null)[] = labels.map(() => null);
   labels.forEach((label, i) => {
-    const seat = seatFor(label, near[i] ?? [], field, ink) ?? seatFor(label, candidatesOf(label, FAR_RINGS, ink), field, ink);
+    const pool = pools[i];
+    const seat = (pool && seatInPool(label, pool, field, ink)) ?? seatFor(label, candidatesOf(label, FAR_RINGS, ink), field, ink);
     for (const entry of seat?.entries ?? []) field.add(entry);
     seats[i] = seat;
   });
-  for (let sweep = 0; sweep < SWEEPS; sweep++) if (!improveAll(labels, near, seats, field, ink)) break;
+  for (let sweep = 0; sweep < SWEEPS; sweep++) if (!improveAll(labels, pools, seats, field, ink)) break;
   return drawnLabels(labels, seats, fixed, field);
 }
 
 /** Takes every label out once, last first, and puts it where it is cheapest now. Says whether anything moved. */
-function improveAll(labels: readonly Label[], near: readonly (readonly Candidate[])[], seats: (Seat | null)[], field: LabelField, ink: LabelInk): boolean {
+function improveAll(labels: readonly Label[], pools: readonly Pool[], seats: (Seat | null)[], field: LabelField, ink: LabelInk): boolean {
   let moved = false;
   for (let i = labels.length - 1; i >= 0; i--) {
     const label = labels[i];
     const before = seats[i];
+    const pool = pools[i];
     // A label on the innermost ring without a fault cannot get better.
-    if (!label || !before || before.cost < 1.06) continue;
+    if (!label || !pool || !before || before.cost < 1.06) continue;
     for (const entry of before.entries) field.remove(entry);
     const today = seatFor(label, [before.candidate], field, ink) ?? before;
-    const found = seatFor(label, near[i] ?? [], field, ink);
+    const found = seatInPool(label, pool, field, ink);
     const next = found && found.cost < today.cost - SAME_COST ? found : today;
     for (const entry of next.entries) field.add(entry);
     seats[i] = next;
