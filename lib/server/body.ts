@@ -104,9 +104,15 @@ export function fileName(name: string): string {
 export function checked<S extends z.ZodType>(schema: S, value: unknown): z.output<S> {
   const parsed = schema.safeParse(value);
   if (parsed.success) return parsed.data;
+  if (value === null || typeof value !== "object" || Array.isArray(value)) throw refuseInvalid("Send the fields of the form as one JSON object.");
   const fields: Record<string, string> = {};
-  for (const issue of parsed.error.issues.slice(0, 30)) fields[issue.path.join(".") || "body"] ??= issue.message;
+  for (const issue of parsed.error.issues.slice(0, 30)) fields[issue.path.join(".") || "body"] ??= plainIssue(issue.message);
   const [first] = Object.entries(fields);
   const sentence = first === undefined ? "Something in it is not right." : first[1];
   throw refuseInvalid(/[.?!]$/.test(sentence) ? sentence : `${sentence}.`, fields);
+}
+
+/** Schemas that name no sentence of their own leave the library's; a person is told what to do instead. */
+function plainIssue(message: string): string {
+  return /^(Invalid|Expected|Unrecognized|Required)/.test(message) ? "This is missing or not of the right kind." : message;
 }

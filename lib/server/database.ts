@@ -35,7 +35,7 @@ export function openDatabase(url: string, poolSize: number): Sequelize {
   return new Sequelize(url, {
     dialect: "postgres",
     logging: false,
-    pool: { max: poolSize, min: 0, idle: 30_000, acquire: 15_000 },
+    pool: { max: poolSize, min: 0, idle: 30_000, acquire: 60_000 },
     dialectOptions: {
       application_name: "quarterline",
       statement_timeout: STATEMENT_LIMIT_MS,
