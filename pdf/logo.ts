@@ -9,7 +9,7 @@ import type { PaperBox } from "@/iso";
 export type LogoKind = "png" | "jpeg" | "svg";
 
 /** Largest side of a picture, pixels: unpacked it must still fit in memory many times over. */
-const MOST_PIXELS = 4_000;
+const MOST_PIXELS = 3_000;
 const MOST_SVG_CHARACTERS = 400_000;
 
 /** Told by content, not by name. */
@@ -20,8 +20,12 @@ export function logoKind(bytes: Uint8Array): LogoKind | null {
   return /<svg[\s>]/i.test(start) ? "svg" : null;
 }
 
+const MOST_REUSED = 50;
+
 /** null when the logo can be printed, else one plain sentence saying why not. Tries it on a page that is thrown away. */
 export function logoProblem(bytes: Uint8Array): string | null {
+  const refused = logoKind(bytes) === "svg" ? svgRefusal(new TextDecoder().decode(bytes)) : null;
+  if (refused !== null) return refused;
   const trial = new PDFDocument({ size: [200, 200], margin: 0, autoFirstPage: true });
   return paintLogo(trial, bytes, { minX: 10, minY: 10, maxX: 60, maxY: 30 });
 }
@@ -46,6 +50,12 @@ export function paintLogo(document: PDFKit.PDFDocument, bytes: Uint8Array, box: 
   }
 }
 
+/** What would print wrong or take too long, told when a logo is stored. */
+function svgRefusal(text: string): string | null {
+  if (/<image[\s>]/i.test(text)) return "The SVG logo has a picture inside; store that picture as PNG or JPEG instead.";
+  return (text.match(/<use[\s>]/gi)?.length ?? 0) > MOST_REUSED ? "The SVG logo repeats its parts too often to print." : null;
+}
+
 function paintSvg(document: PDFKit.PDFDocument, bytes: Uint8Array, box: PaperBox): void {
   const svg = safeSvg(new TextDecoder("utf-8", { fatal: true }).decode(bytes));
   SVGtoPDF(document, svg, box.minX, box.minY, {
@@ -60,6 +70,7 @@ function paintSvg(document: PDFKit.PDFDocument, bytes: Uint8Array, box: PaperBox
  */
 export function safeSvg(text: string): string {
   if (text.length > MOST_SVG_CHARACTERS || !/<svg[\s>][\s\S]*<\/svg\s*>/i.test(text)) throw new Error("not a whole SVG");
+  if (svgRefusal(text) !== null) throw new Error("not fit to print");
   return text
     .replace(/<!DOCTYPE[^>[]*(\[[\s\S]*?\])?[^>]*>/gi, "")
     .replace(/<!ENTITY[\s\S]*?>/gi, "")

@@ -1,9 +1,10 @@
 /** The first page: the isometric as large as the paper allows, and on tabloid and A3 the tables beside and under it. */
 import type { DisplayItem, Drawing, LegendKey, MeasureText } from "../draw/drawing-types";
+import { itemMoved } from "../draw/paths";
 import type { PaperBox, PaperPoint } from "../geometry/types";
 import { cutListTable } from "./cut-list";
 import { dataTable } from "./data-table";
-import { itemMoved, lineFrom, textAt } from "./items";
+import { lineFrom, textAt } from "./items";
 import { legendItems, legendLayout } from "./legend";
 import { notesTable } from "./notes-table";
 import type { PageFrame } from "./page-frame";
@@ -28,12 +29,14 @@ const PAD = 2;
 const INSET = 3;
 /** The lists under the isometric take at most this share of the body. */
 const UNDER_SHARE = 0.42;
+/** The revision block takes at most this share of the side column. */
+const REVISIONS_SHARE = 0.35;
 
 export function firstPage(facts: SheetFacts, frame: PageFrame, draw: DrawRoom, measure: MeasureText): FirstPage {
   const { body, side } = frame;
   if (side === null) {
     const notes = notesTable(facts, frame.cut, (body.maxX - body.minX - 2 * PAD - TABLE_GAP) / 2, measure);
-    const rest = [...restOf(facts, notes, new Map(), null), { table: dataTable(facts), width: "half" as const, startRow: 0 }];
+    const rest = [...restOf(facts, notes, new Map(), 0), { table: dataTable(facts), width: "half" as const, startRow: 0 }];
     return { items: drawingItems(facts, body, draw, measure), rest };
   }
   const notes = notesTable(facts, frame.cut, side.maxX - side.minX - 2 * PAD, measure);
@@ -45,13 +48,13 @@ export function firstPage(facts: SheetFacts, frame: PageFrame, draw: DrawRoom, m
     lineFrom([side.minX, side.minY], [side.minX, side.maxY], EDGE_LINE, "frame"),
     ...beside.items,
   ];
-  return { items, rest: restOf(facts, notes, new Map([...beside.next, ...under.next]), REVISION_ROWS_SHOWN) };
+  return { items, rest: restOf(facts, notes, new Map([...beside.next, ...under.next]), beside.revisionsShown) };
 }
 
 type NextRows = ReadonlyMap<string, number | null>;
 
 /** Tables still to be placed: those not in the map at all, or from the row the map names. */
-function restOf(facts: SheetFacts, notes: Table | null, next: NextRows, revisionsShown: number | null): FlowTable[] {
+function restOf(facts: SheetFacts, notes: Table | null, next: NextRows, revisionsShown: number): FlowTable[] {
   const all: readonly (readonly [Table | null, "full" | "half"])[] = [
     [cutListTable(facts), "full"], [trimmedElbowsTable(facts), "full"], [materialsTable(facts), "half"], [weldsTable(facts), "half"], [notes, "half"],
   ];
@@ -61,8 +64,7 @@ function restOf(facts: SheetFacts, notes: Table | null, next: NextRows, revision
     return startRow === null ? [] : [{ table, width, startRow }];
   });
   const history = revisionTable(facts.input, null);
-  const isWhole = revisionsShown !== null && facts.input.revision.rows.length <= revisionsShown;
-  return history === null || isWhole ? rest : [...rest, { table: history, width: "half", startRow: 0 }];
+  return history === null || facts.input.revision.rows.length <= revisionsShown ? rest : [...rest, { table: history, width: "half", startRow: 0 }];
 }
 
 interface Placed {
@@ -70,27 +72,35 @@ interface Placed {
   readonly next: NextRows;
 }
 
-/** Materials and welds from the top, notes under them when they fit whole, the revision block at the foot. */
-function sideColumn(facts: SheetFacts, notes: Table | null, column: PaperBox, measure: MeasureText): Placed {
+/** The newest revisions at the foot of the side column: as many as a share of it holds, none when there are none. */
+function revisionBlock(facts: SheetFacts, room: PaperBox, measure: MeasureText): { readonly items: readonly DisplayItem[]; readonly top: number; readonly shown: number } {
+  const most = Math.min(REVISION_ROWS_SHOWN, facts.input.revision.rows.length);
+  for (let shown = most; shown > 0; shown -= 1) {
+    const table = revisionTable(facts.input, shown)!;
+    const heightMm = tableHeight(setTable(table, room.maxX - room.minX, measure));
+    if (heightMm > (room.maxY - room.minY) * REVISIONS_SHARE && shown > 1) continue;
+    if (heightMm > room.maxY - room.minY) break;
+    return { items: placeInRoom(table, { ...room, minY: room.maxY - heightMm }, measure).items, top: room.maxY - heightMm - TABLE_GAP, shown };
+  }
+  return { items: [], top: room.maxY, shown: 0 };
+}
+
+/** Materials and welds from the top, notes under them, the revision block at the foot. */
+function sideColumn(facts: SheetFacts, notes: Table | null, column: PaperBox, measure: MeasureText): Placed & { readonly revisionsShown: number } {
   const room = { minX: column.minX + PAD, minY: column.minY + PAD, maxX: column.maxX - PAD, maxY: column.maxY - PAD };
   const items: DisplayItem[] = [];
   const next = new Map<string, number | null>();
-  let bottom = room.maxY;
-  const revisions = revisionTable(facts.input, REVISION_ROWS_SHOWN);
-  if (revisions !== null) {
-    const heightMm = tableHeight(setTable(revisions, room.maxX - room.minX, measure));
-    items.push(...placeInRoom(revisions, { ...room, minY: room.maxY - heightMm }, measure).items);
-    bottom = room.maxY - heightMm - TABLE_GAP;
-  }
+  const revisions = revisionBlock(facts, room, measure);
+  items.push(...revisions.items);
   let y = room.minY;
   for (const table of [materialsTable(facts), weldsTable(facts), notes]) {
     if (table === null) continue;
-    const placed = placeInRoom(table, { ...room, minY: y, maxY: bottom }, measure);
+    const placed = placeInRoom(table, { ...room, minY: y, maxY: revisions.top }, measure);
     items.push(...placed.items);
     next.set(table.title, placed.nextRow);
     y += placed.heightMm + (placed.heightMm > 0 ? TABLE_GAP : 0);
   }
-  return { items, next };
+  return { items, next, revisionsShown: revisions.shown };
 }
 
 /** Cut list and trimmed elbows under the isometric, standing on the strip. */

@@ -48,34 +48,3 @@ export function polygonOf(points: readonly PaperPoint[], style: PathStyle = {}):
 export function boxOutline(box: PaperBox, style: PathStyle = {}): PathItem {
   return polygonOf([[box.minX, box.minY], [box.maxX, box.minY], [box.maxX, box.maxY], [box.minX, box.maxY]], style);
 }
-
-/** Cubic handle that makes a quarter circle, as a share of the radius (common practice; 0.03 % off). */
-const QUARTER = 0.5523;
-
-/** A circle as four cubics, since painters disagree on arcs. */
-export function circleAt([x, y]: PaperPoint, radius: number, style: PathStyle = {}): PathItem {
-  const k = radius * QUARTER;
-  return pathOf([
-    { op: "M", to: [x + radius, y] },
-    { op: "C", c1: [x + radius, y + k], c2: [x + k, y + radius], to: [x, y + radius] },
-    { op: "C", c1: [x - k, y + radius], c2: [x - radius, y + k], to: [x - radius, y] },
-    { op: "C", c1: [x - radius, y - k], c2: [x - k, y - radius], to: [x, y - radius] },
-    { op: "C", c1: [x + k, y - radius], c2: [x + radius, y - k], to: [x + radius, y] },
-    { op: "Z" },
-  ], style);
-}
-
-/** The same item moved by a vector: how a drawing comes to its place on the page. */
-export function itemMoved(item: DisplayItem, [dx, dy]: PaperPoint): DisplayItem {
-  const move = ([x, y]: PaperPoint): PaperPoint => [x + dx, y + dy];
-  if (item.type === "line") return { ...item, from: move(item.from), to: move(item.to) };
-  if (item.type === "text") return { ...item, at: move(item.at) };
-  return {
-    ...item,
-    segments: item.segments.map((segment) => {
-      if (segment.op === "Z") return segment;
-      if (segment.op === "C") return { op: "C", c1: move(segment.c1), c2: move(segment.c2), to: move(segment.to) };
-      return { op: segment.op, to: move(segment.to) };
-    }),
-  };
-}

@@ -1,12 +1,13 @@
 /** Legend of the marks a drawing uses, as one strip of symbol and word. Marks differ between firms, so each sheet says its own. */
-import type { DisplayItem, LegendKey, MeasureText } from "../draw/drawing-types";
+import type { DisplayItem, Ink, LegendKey, MeasureText } from "../draw/drawing-types";
+import { circleSegments, hexagonSegments, itemMoved, stadiumSegments } from "../draw/paths";
 import type { PaperBox, PaperPoint } from "../geometry/types";
-import { boxOutline, circleAt, itemMoved, lineFrom, polygonOf, textAt } from "./items";
+import { lineFrom, pathOf, polygonOf, textAt } from "./items";
 import { TEXT_CAP } from "./sheet-size";
 
 const WORDS: Readonly<Record<LegendKey, string>> = {
-  "shop-weld": "shop weld", "field-weld": "field weld", "field-fit-weld": "field-fit weld", "material-item": "material item",
-  "weld-number": "weld number", "cut-piece": "cut piece", spool: "spool", flow: "flow", support: "support", revision: "changed here",
+  "shop-weld": "shop weld", "field-weld": "FW field weld", "field-fit-weld": "FFW field-fit weld", "material-item": "material item",
+  "weld-number": "weld number", "cut-piece": "cut piece", spool: "next spool", flow: "flow", support: "support", revision: "changed here",
   "reference-dimension": "reference only", unverified: "not verified",
 };
 
@@ -49,29 +50,32 @@ export function legendItems(keys: readonly LegendKey[], box: PaperBox, measure: 
 
 const THIN = { layer: "title" as const, widthMm: 0.25 };
 
-/** Small pictures of the marks; the drawing's own are the same shapes. */
+/** Small pictures of the marks, made of the drawing's own shapes. */
 function symbolOf(key: LegendKey, [x, y]: PaperPoint): DisplayItem[] {
   const pipe = lineFrom([x - 4, y], [x + 4, y], 0.7, "title");
-  const dot = circleAt([x, y], 1.5, { layer: "title", stroke: null, fill: "ink" });
-  const letter = (text: string, capMm = TEXT_CAP) => textAt([x, y + capMm / 2], text, { layer: "title", anchor: "middle", capMm });
-  if (key === "shop-weld") return [pipe, dot];
-  if (key === "field-weld" || key === "field-fit-weld") return [pipe, dot, ...flag([x, y], key === "field-fit-weld")].map((item) => itemMoved(item, [0, 1.3]));
-  if (key === "material-item") return [circleAt([x, y], 3.3, THIN), letter("1")];
-  if (key === "weld-number") return [polygonOf(hexagon([x, y], 3.6), { ...THIN, stroke: "dye" }), letter("1")];
-  if (key === "cut-piece") return [boxOutline({ minX: x - 3.8, minY: y - 2.6, maxX: x + 3.8, maxY: y + 2.6 }, THIN), letter("P1")];
-  if (key === "spool") return [boxOutline({ minX: x - 3, minY: y - 3, maxX: x + 3, maxY: y + 3 }, { ...THIN, widthMm: 0.5 }), letter("A")];
-  if (key === "flow") return [pipe, polygonOf([[x - 2, y - 1.5], [x + 2.4, y], [x - 2, y + 1.5]], { layer: "title", stroke: null, fill: "ink" })];
-  if (key === "support") return [pipe, polygonOf([[x, y + 0.4], [x + 1.8, y + 3.2], [x - 1.8, y + 3.2]], THIN)].map((item) => itemMoved(item, [0, -1.6]));
-  if (key === "revision") return [polygonOf([[x, y - 3.4], [x + 3.7, y + 2.6], [x - 3.7, y + 2.6]], THIN), textAt([x, y + 1.9], "A", { layer: "title", anchor: "middle" })];
-  if (key === "reference-dimension") return [letter("( )")];
-  return [letter("VIF")];
+  const dot = pathOf(circleSegments([x, y], 1.5), { layer: "title", stroke: null, fill: "ink" });
+  const letter = (text: string, ink: Ink = "ink") => textAt([x, y + TEXT_CAP / 2], text, { layer: "title", anchor: "middle", ink });
+  switch (key) {
+    case "shop-weld": return [pipe, dot];
+    case "field-weld": case "field-fit-weld": return [pipe, dot, ...flag([x, y])].map((item) => itemMoved(item, [0, 1.3]));
+    case "material-item": return [pathOf(circleSegments([x, y], 3.3), THIN), letter("1")];
+    case "weld-number": return [pathOf(hexagonSegments([x, y], 7.2), { ...THIN, stroke: "dye" }), letter("1", "dye")];
+    case "cut-piece": return [pathOf(stadiumSegments([x, y], 8.2, 5.2), THIN), letter("P1")];
+    case "spool": return [lineFrom([x - 4, y], [x + 4, y], 0.7, "title", "grey", [2, 1])];
+    case "flow": return [pipe, polygonOf([[x - 2, y - 1.5], [x + 2.4, y], [x - 2, y + 1.5]], { layer: "title", stroke: null, fill: "ink" })];
+    case "support": return [pipe, ...shoe([x, y])].map((item) => itemMoved(item, [0, -1.6]));
+    case "revision": return [polygonOf([[x, y - 3.5], [x + 3.7, y + 2.7], [x - 3.7, y + 2.7]], THIN), textAt([x, y + 2], "A", { layer: "title", anchor: "middle" })];
+    case "reference-dimension": return [letter("( )")];
+    case "unverified": return [letter("VIF")];
+  }
 }
 
-function flag([x, y]: PaperPoint, fit: boolean): DisplayItem[] {
-  const pole = lineFrom([x, y], [x, y - 3.4], 0.25, "title");
-  return [pole, polygonOf([[x, y - 3.4], [x + 2.6, y - 2.6], [x, y - 1.8]], { ...THIN, fill: fit ? "paper" : "ink" })];
+function shoe([x, y]: PaperPoint): DisplayItem[] {
+  const leg = (dx: number) => lineFrom([x + dx, y], [x + dx, y + 3.4], 0.35, "title");
+  return [leg(-1.6), leg(1.6), lineFrom([x - 3, y + 3.4], [x + 3, y + 3.4], 0.5, "title")];
 }
 
-function hexagon([x, y]: PaperPoint, radius: number): PaperPoint[] {
-  return [0, 1, 2, 3, 4, 5].map((k) => [x + radius * Math.cos((k * Math.PI) / 3), y + radius * Math.sin((k * Math.PI) / 3)] as const);
+function flag([x, y]: PaperPoint): DisplayItem[] {
+  const pole = lineFrom([x, y], [x, y - 4.4], 0.3, "title");
+  return [pole, polygonOf([[x, y - 4.4], [x + 2.6, y - 3.4], [x, y - 2.4]], { layer: "title", stroke: null, fill: "ink" })];
 }

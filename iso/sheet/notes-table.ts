@@ -16,7 +16,7 @@ export interface CutText {
 
 /** Notes numbered, each split into rows of one line so that a long one flows over columns and pages. */
 export function notesTable(facts: SheetFacts, cut: readonly CutText[], widthMm: number, measure: MeasureText): Table | null {
-  const notes = [...documentNotes(facts), ...acceptedNotes(facts), ...engineerNotes(facts), ...problemNotes(facts), ...cut.map(({ label, text }) => `${label}: ${text}`)];
+  const notes = [...documentNotes(facts), ...acceptedNotes(facts), ...engineerNotes(facts), ...problemNotes(facts), ...longRevisions(facts), ...cut.map(({ label, text }) => `${label}: ${text}`)];
   if (notes.length === 0) return null;
   const rows = notes.flatMap((note, index): Row[] => {
     const lines = wrapText(note, widthMm - NUMBER_WIDTH - 4, PLAIN, measure);
@@ -26,6 +26,8 @@ export function notesTable(facts: SheetFacts, cut: readonly CutText[], widthMm: 
 }
 
 const NUMBER_WIDTH = 9;
+/** Characters that surely fit a revision's cell. */
+const LONG_DESCRIPTION = 120;
 
 function documentNotes(facts: SheetFacts): string[] {
   const here = new Set([...facts.components.map((component) => component.pointId), ...facts.legs.flatMap((leg) => [leg.fromPointId, leg.toPointId])]);
@@ -57,4 +59,9 @@ function problemNotes(facts: SheetFacts): string[] {
   return facts.model.problems
     .filter((problem) => problem.severity === "stop" && (problem.pointId === null || here.has(problem.pointId)))
     .map((problem) => `TO BE SOLVED: ${problem.text}`);
+}
+
+/** A revision's description longer than its cell, whole. */
+function longRevisions(facts: SheetFacts): string[] {
+  return facts.input.revision.rows.filter((row) => row.description.length > LONG_DESCRIPTION).map((row) => `REVISION ${row.code}: ${row.description}`);
 }

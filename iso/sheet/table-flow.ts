@@ -4,7 +4,8 @@
  */
 import type { DisplayItem, MeasureText } from "../draw/drawing-types";
 import type { PaperBox } from "../geometry/types";
-import { placeTable, setTable, tableHeight, tableStartHeight, type Table } from "./table";
+import { setTable, tableHeight, tableStartHeight, type Table } from "./table";
+import { placeTable } from "./table-placing";
 
 export interface FlowTable {
   readonly table: Table;

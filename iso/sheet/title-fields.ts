@@ -43,7 +43,7 @@ export function titleEntries(facts: SheetFacts): TitleEntry[] {
     field("DRAWN", revision.drawnBy),
     field("CHECKED", revision.checkedBy),
     field("ISSUED", issuedText(revision.issuedAt)),
-    ...(revision.auditHead === "" ? [] : [field("RECORD", revision.auditHead.slice(0, 16))]),
+    ...(revision.auditHead === "" ? [] : [field("RECORD", revision.auditHead.slice(0, 12))]),
   ];
 }
 
