@@ -28,7 +28,7 @@ export const coolingSupply = demoDocument('4"-CWS-1101', "Cooling water supply t
   {
     id: "m",
     rows: [
-      { move: "@ 112-6, 48-0, 9-3", item: flange("nozzle", "NOZZLE N1, P-101") },
+      { move: "@ 112-6, 48-0, 9-3", item: flange("nozzle", "N1, P-101") },
       { move: "E 3-1 1/2" },
       { move: "EU 2-4" },
       { move: "E 4-3" },
@@ -42,11 +42,11 @@ export const coolingReturn = demoDocument('6"-CWR-1102', "Cooling water return, 
   {
     id: "m",
     rows: [
-      { move: "@ 96-0, 52-6, 11-0", item: flange("continued", "CONTINUED ON 6\"-CWR-1100") },
+      { move: "@ 96-0, 52-6, 11-0", item: flange("continued", "6\"-CWR-1100") },
       { move: "E 3-4" },
       { move: "E 1-8, N 1-4, U 1-0" },
       { move: "E 3-0" },
-      { move: "N 4-6", item: end("field-weld", "FIELD WELD TO 6\"-CWR-1103"), more: { places: { in: "field" } } },
+      { move: "N 4-6", item: end("field-weld", "6\"-CWR-1103"), more: { places: { in: "field" } } },
     ],
   },
 ]);
@@ -78,10 +78,10 @@ export function glycolClosing(): RunDocument {
     {
       id: "m",
       rows: [
-        { item: flange("nozzle", "NOZZLE N4, E-210") },
+        { item: flange("nozzle", "N4, E-210") },
         { move: from([0, 0, 0], a), item: trimmed, more: { provenance: calculated } },
         { move: from(a, b), item: trimmed, more: { provenance: calculated } },
-        { move: from(b, [inches(82), inches(31), inches(58)]), item: flange("nozzle", "NOZZLE N2, T-204"), more: { provenance: twice(formatLength(inches(58 + 1 / 32) - b[2], "imperial"), inches(58 + 1 / 32) - b[2]) } },
+        { move: from(b, [inches(82), inches(31), inches(58)]), item: flange("nozzle", "N2, T-204"), more: { provenance: twice(formatLength(inches(58 + 1 / 32) - b[2], "imperial"), inches(58 + 1 / 32) - b[2]) } },
       ],
     },
   ], ["Closing piece: verify both fixed ends by tape, two readings, before cutting."]);
@@ -92,7 +92,7 @@ export const chillerHeader = demoDocument('6"-CWH-1104', "Chiller header with br
   {
     id: "m",
     rows: [
-      { move: "@ 120-0, 61-6, 12-8", item: flange("continued", "CONTINUED ON 6\"-CWH-1100") },
+      { move: "@ 120-0, 61-6, 12-8", item: flange("continued", "6\"-CWH-1100") },
       { move: "E 2-9", item: { kind: "outlet", branchNps: "1" } },
       { move: "E 2-0", item: { kind: "tee", ends: "butt", branchNps: "4" } },
       { move: "E 2-6", item: { kind: "reducer", shape: "concentric", toNps: "4", toSchedule: null, flat: null } },
@@ -109,13 +109,13 @@ export const valveStation = demoDocument('4"-CWS-1305', "Pump discharge valve st
   {
     id: "m",
     rows: [
-      { move: "@ 101-0, 47-3, 6-9", item: flange("nozzle", "NOZZLE N2, P-102") },
+      { move: "@ 101-0, 47-3, 6-9", item: flange("nozzle", "N2, P-102") },
       { move: "U 2-10" },
       { move: "E 2-6", item: valve("check", "V-121") },
       { move: "E 3-2", item: valve("gate", "V-122") },
       { move: "E 2-10" },
       { move: "N 3-8" },
-      { move: "U 2-9", item: flange("continued", "CONTINUED ON 4\"-CWS-1300") },
+      { move: "U 2-9", item: flange("continued", "4\"-CWS-1300") },
     ],
   },
 ]);
@@ -125,11 +125,11 @@ export const slopedDrain = demoDocument('3"-DR-1406', "Sloped drain from the chi
   {
     id: "m",
     rows: [
-      { move: "@ 118-0, 60-0, 2-9", item: flange("nozzle", "SUMP NOZZLE N6") },
+      { move: "@ 118-0, 60-0, 2-9", item: flange("nozzle", "N6, SUMP") },
       { move: "D 1-8" },
       { move: "W 12-0, D 3", more: { provenance: assumed } },
       { move: "S 6-0, D 1 1/2" },
-      { move: "D 1-10", item: end("existing", "EXISTING DRAIN - VERIFY"), more: { places: { in: "field-fit" } } },
+      { move: "D 1-10", item: end("existing", "DRAIN"), more: { places: { in: "field-fit" } } },
     ],
   },
 ], ["Slope 1/4 in per ft down to the existing drain."]);
@@ -139,11 +139,11 @@ export const wellWater = demoDocument("DN80-WW-1507", "Well water to make-up tan
   {
     id: "m",
     rows: [
-      { move: "@ 34200, 18150, 2450", item: flange("nozzle", "NOZZLE N1, P-104") },
+      { move: "@ 34200, 18150, 2450", item: flange("nozzle", "N1, P-104") },
       { move: "E 620", item: { kind: "reducer", shape: "eccentric", toNps: "2", toSchedule: null, flat: "U" } },
       { move: "E 900" },
       { move: "U 1450" },
-      { move: "N 1210", item: end("continued", "CONTINUED ON DN50-WW-1508") },
+      { move: "N 1210", item: end("continued", "DN50-WW-1508") },
     ],
   },
 ]);
@@ -153,11 +153,11 @@ export const instrumentAir = demoDocument('1"-IA-1608', "Instrument air drop", s
   {
     id: "m",
     rows: [
-      { move: "@ 99-0, 66-0, 14-0", item: end("continued", "CONTINUED ON 1\"-IA-1600") },
+      { move: "@ 99-0, 66-0, 14-0", item: end("continued", "1\"-IA-1600") },
       { move: "E 2-6", item: { kind: "elbow", elbow: "sw-90" } },
       { move: "D 2-0", item: { kind: "coupling", half: false } },
       { move: "D 3-4", item: { kind: "elbow", elbow: "sw-90" } },
-      { move: "N 1-6", item: end("open", "OPEN END FOR TUBING BY OTHERS") },
+      { move: "N 1-6", item: end("open", "TUBING BY OTHERS") },
     ],
   },
 ]);
@@ -167,7 +167,7 @@ export const rackLine = demoDocument('8"-CW-1109', "Rack crossing in two spools"
   {
     id: "m",
     rows: [
-      { move: "@ 80-0, 40-0, 16-0", item: flange("continued", "CONTINUED ON 8\"-CW-1100") },
+      { move: "@ 80-0, 40-0, 16-0", item: flange("continued", "8\"-CW-1100") },
       { move: "E 5-6" },
       { move: "N 6-0" },
       { move: "N 4-0", item: { kind: "joint" }, more: { places: { in: "field" } } },
