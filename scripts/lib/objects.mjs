@@ -7,6 +7,8 @@ import { PlainError } from "./say.mjs";
 
 /** @param {Record<string, string>} environment */
 async function openStore(environment) {
+  // The SDK's notice about coming Node versions is for developers, not for whoever makes a backup.
+  process.env.AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED ??= "true";
   const sdk = await import("@aws-sdk/client-s3");
   const client = new sdk.S3Client({
     endpoint: environment.S3_ENDPOINT || undefined,

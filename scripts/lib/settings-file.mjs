@@ -3,7 +3,7 @@
  * a second start finds its data and printed addresses stay true.
  */
 import { createHash, randomBytes } from "node:crypto";
-import { existsSync, mkdirSync, readFileSync, renameSync, writeFileSync } from "node:fs";
+import { existsSync, mkdirSync, readFileSync, renameSync, rmdirSync, writeFileSync } from "node:fs";
 import path from "node:path";
 import { dataFolder, ROOT } from "./paths.mjs";
 import { canServerUse, makeServerFolder, SUPERUSER } from "./postgres.mjs";
@@ -74,7 +74,10 @@ export function databaseHome(settings) {
   if (!canServerUse(home)) throw new PlainError(`The database's user cannot work in ${home}. Clone the project to a folder others may enter.`, 77);
   settings.databaseHome = home;
   writeSettings(settings);
-  if (home !== near) say(`database files are in ${home}, since the database's user cannot enter this folder`);
+  if (home !== near) {
+    rmdirSync(near);
+    say(`database files are in ${home}, since the database's user cannot enter this folder`);
+  }
   return home;
 }
 

@@ -16,7 +16,7 @@ import { startMailCatcher, startObjectStore } from "./stand-ins.mjs";
 import { supervise } from "./supervise.mjs";
 
 const LONGEST_LOG = 20_000_000;
-const SERVER_LIMIT_MS = 60_000;
+const SERVER_LIMIT_MS = 120_000;
 
 const logs = () => path.join(dataFolder(), "logs");
 const logFile = (name) => path.join(logs(), `${name}.log`);
