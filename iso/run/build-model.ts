@@ -11,10 +11,10 @@ import type { RunDocument } from "./document";
 import { fitPoint } from "./fit-point";
 import { groupSpools, type Parts, type SpoolGroup } from "./group-spools";
 import { joinFaces } from "./join-faces";
-import { advanceMarks, type Markable } from "./marks";
+import { advanceMarks, givenMarks, type Markable } from "./marks";
 import type { Component, Joint, Leg, MarksRegister, Model, Node, Piece, TakeOutWord } from "./model-types";
 import { placeRuns } from "./place-runs";
-import { weighedComponent } from "./weights";
+import { componentWeight } from "./weights";
 
 /** A line before its marks are given. */
 interface Structure {
@@ -28,18 +28,22 @@ interface Structure {
 /** The model of a document, with marks as the register will give them. Lengths in mm, angles in radians. */
 export function buildModel(document: RunDocument, marks: MarksRegister, takeOuts: readonly TakeOutWord[]): Model {
   const line = buildStructure(document, takeOuts);
-  const register = advanceMarks(markable(line), marks);
-  const letters = line.groups.map((g) => register.spools[g.anchor] ?? "?");
-  const spools = assembleSpools(line.parts, line.groups, letters, line.legs, document, line.ctx);
-  const letterOf = new Map(spools.flatMap((s) => [...s.componentIds, ...s.pieceKeys].map((id) => [id, s.letter] as const)));
+  const given = givenMarks(markable(line), marks);
+  const letters = line.groups.map((g) => given.spools.get(g.anchor) ?? "?");
+  const letterOf = new Map<string, string>();
+  line.groups.forEach((g, i) => {
+    for (const ids of [g.componentIds, g.pieceKeys]) for (const id of ids) letterOf.set(id, letters[i] ?? "?");
+  });
   const spoolOf = (id: string | null) => (id === null ? null : (letterOf.get(id) ?? null));
+  const components = line.parts.components.map((c): Component => ({ ...c, ...componentWeight(c, line.ctx.units), spool: spoolOf(c.id) }));
+  const spools = assembleSpools({ ...line.parts, components }, line.groups, letters, line.legs, document, line.ctx);
   return {
     document,
     nodes: line.runs.flatMap((run) => run.points.map(nodeOf)),
     legs: line.legs,
-    components: line.parts.components.map((c) => ({ ...c, spool: spoolOf(c.id) })),
-    joints: line.parts.joints.map((j) => jointOf(j, register, spoolOf(j.a) ?? spoolOf(j.b))),
-    pieces: line.parts.pieces.map(({ trimMm: _, ...p }): Piece => ({ ...p, mark: register.pieces[p.key] ?? "", spool: spoolOf(p.key) })),
+    components,
+    joints: line.parts.joints.map((j) => jointOf(j, given.welds.get(j.key) ?? null, spoolOf(j.a) ?? spoolOf(j.b))),
+    pieces: line.parts.pieces.map((p): Piece => ({ ...p, mark: given.pieces.get(p.key) ?? "", spool: spoolOf(p.key) })),
     spools,
     problems: line.ctx.problems,
   };
@@ -70,7 +74,7 @@ function collectParts(runs: readonly PlacedRun[], fittings: ReadonlyMap<string, 
   const put = (list: readonly Component[]) => {
     for (const c of list) {
       order.push(c.id);
-      components.push(weighedComponent(c, ctx.units));
+      components.push(c);
     }
   };
   for (const run of runs) {
@@ -113,9 +117,11 @@ function markable(line: Structure): Markable {
   };
 }
 
-function jointOf(j: JointDraft, register: MarksRegister, spool: string | null): Joint {
-  const { runId: _run, gasketId: _gasket, ...rest } = j;
-  return { ...rest, number: Object.hasOwn(register.welds, j.key) ? (register.welds[j.key] ?? null) : null, spool };
+function jointOf(j: JointDraft, number: string | null, spool: string | null): Joint {
+  return {
+    key: j.key, pointId: j.pointId, kind: j.kind, place: j.place, number,
+    position: j.position, direction: j.direction, a: j.a, b: j.b, nps: j.nps, mismatchRad: j.mismatchRad, gapMm: j.gapMm, spool,
+  };
 }
 
 function nodeOf(p: PlacedPoint): Node {

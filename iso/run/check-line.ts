@@ -1,5 +1,6 @@
 /** Findings about the line as a whole: empty runs, folds, sizes without a table, dimensions that cannot be trusted yet. */
 import { pipeSize, pipeWall, schedulesFor } from "../catalogue/pipe";
+import { ZERO_LENGTH_MM } from "../geometry/tolerances";
 import { formatAngleDeg } from "../units/format";
 import { sentenceStart, type BuildContext } from "./build-context";
 import type { PlacedRun } from "./build-types";
@@ -20,6 +21,7 @@ export function checkRuns(runs: readonly PlacedRun[], ctx: BuildContext): void {
       }
       for (const pipe of [p.pipeIn, p.pipeOut]) checkPipe(pipe, where, told, ctx);
       const leg = run.legs[p.index];
+      if (leg && leg.lengthMm <= ZERO_LENGTH_MM) ctx.report("zero-length", "stop", `${sentenceStart(p.label)} lies on the point before it: give its offset, or remove it.`, where);
       const verdict = leg ? legVerification(p.point, leg.lengthMm, ctx.units) : null;
       if (verdict?.unverified) ctx.report(`unverified-${verdict.code}`, "warning", `${sentenceStart(p.label)}: ${verdict.reason}`, where);
     }

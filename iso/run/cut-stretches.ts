@@ -132,10 +132,7 @@ function pieceJoint(p: PlacedPoint, side: Side, ends: { a: string | null; b: str
 /** Findings about one piece: it does not fit, or it is a short pup. */
 function checkPiece(s: Stretch, piece: PieceDraft, total: number, ctx: BuildContext): void {
   const where = { pointId: s.to.point.id, runId: s.to.runId };
-  if (total <= ZERO_LENGTH_MM) {
-    ctx.report("zero-length", "stop", `${sentenceStart(s.to.label)} lies on ${s.from.label}: give its offset, or remove it.`, where);
-    return;
-  }
+  if (total <= ZERO_LENGTH_MM) return; // said already, leg by leg
   const unit = ctx.units === "metric" ? "mm" : "in";
   const finished = piece.cutLengthMm - piece.terms.filter((t) => t.kind === "trim").reduce((sum, t) => sum + t.valueMm, 0);
   if (finished <= 0) {

@@ -22,32 +22,39 @@ export function stickMarks(register: MarksRegister): MarksRegister {
   return { ...register, sticky: true };
 }
 
-/** The register after a line was built. Pure; the register handed in is left as it is. */
-export function advanceMarks(line: Markable, register: MarksRegister): MarksRegister {
+/** The mark of each weld, piece and spool by its key. */
+export interface GivenMarks {
+  readonly welds: ReadonlyMap<string, string>;
+  readonly pieces: ReadonlyMap<string, string>;
+  readonly spools: ReadonlyMap<string, string>;
+}
+
+/** The marks a line carries under a register: fresh along flow in a draft, else the sticky ones and what came in since. */
+export function givenMarks(line: Markable, register: MarksRegister): GivenMarks {
   if (!register.sticky) {
     return {
-      version: 1, sticky: false, voided: register.voided,
-      welds: fromEntries(line.welds.map((w, i) => [w.key, String(i + 1)])),
-      pieces: fromEntries(line.pieces.map((p, i) => [p.key, `P${i + 1}`])),
-      spools: fromEntries(line.spools.map((s, i) => [s.anchor, letterMark(i)])),
-      spoolParts: fromEntries(line.spools.map((s) => [s.anchor, s.parts])),
+      welds: new Map(line.welds.map((w, i) => [w.key, String(i + 1)])),
+      pieces: new Map(line.pieces.map((p, i) => [p.key, `P${i + 1}`])),
+      spools: new Map(line.spools.map((s, i) => [s.anchor, letterMark(i)])),
     };
   }
-  const welds = stickyNumbers(line.welds, register.welds, voidedMarks(register, "weld"), "");
-  const pieces = stickyNumbers(line.pieces, register.pieces, voidedMarks(register, "piece"), "P");
-  const spools = stickyLetters(line.spools, register);
   return {
-    version: 1, sticky: true, welds, pieces, spools,
-    spoolParts: fromEntries(line.spools.map((s) => [s.anchor, s.parts])),
-    voided: [...register.voided, ...gone("weld", register.welds, welds), ...gone("piece", register.pieces, pieces), ...goneLetters(register.spools, spools)],
+    welds: stickyNumbers(line.welds, register.welds, voidedMarks(register, "weld"), ""),
+    pieces: stickyNumbers(line.pieces, register.pieces, voidedMarks(register, "piece"), "P"),
+    spools: stickyLetters(line.spools, register),
   };
 }
 
-/** Objects without a prototype, so that a point called "constructor" is a key like any other. */
-function fromEntries<T>(entries: readonly (readonly [string, T])[]): Record<string, T> {
-  const out = Object.create(null) as Record<string, T>;
-  for (const [key, value] of entries) out[key] = value;
-  return { ...out };
+/** The register after a line was built. Pure; the register handed in is left as it is. */
+export function advanceMarks(line: Markable, register: MarksRegister): MarksRegister {
+  const given = givenMarks(line, register);
+  // Object.fromEntries makes own properties even of names such as "__proto__"; own() reads them.
+  return {
+    version: 1, sticky: register.sticky,
+    welds: Object.fromEntries(given.welds), pieces: Object.fromEntries(given.pieces), spools: Object.fromEntries(given.spools),
+    spoolParts: Object.fromEntries(line.spools.map((s) => [s.anchor, s.parts])),
+    voided: register.sticky ? [...register.voided, ...gone("weld", register.welds, given.welds), ...gone("piece", register.pieces, given.pieces), ...goneLetters(register.spools, given.spools)] : register.voided,
+  };
 }
 
 function own<T>(record: Readonly<Record<string, T>>, key: string): T | undefined {
@@ -58,19 +65,19 @@ function voidedMarks(register: MarksRegister, kind: "weld" | "piece" | "spool"):
   return register.voided.filter((v) => v.kind === kind).map((v) => v.mark);
 }
 
-function gone(kind: "weld" | "piece", before: Readonly<Record<string, string>>, after: Readonly<Record<string, string>>) {
-  return Object.entries(before).filter(([key]) => own(after, key) === undefined).map(([key, mark]) => ({ kind, mark, key }));
+function gone(kind: "weld" | "piece", before: Readonly<Record<string, string>>, after: ReadonlyMap<string, string>) {
+  return Object.entries(before).filter(([key]) => !after.has(key)).map(([key, mark]) => ({ kind, mark, key }));
 }
 
-function goneLetters(before: Readonly<Record<string, string>>, after: Readonly<Record<string, string>>) {
-  const kept = new Set(Object.values(after));
+function goneLetters(before: Readonly<Record<string, string>>, after: ReadonlyMap<string, string>) {
+  const kept = new Set(after.values());
   return Object.entries(before).filter(([, mark]) => !kept.has(mark)).map(([key, mark]) => ({ kind: "spool" as const, mark, key }));
 }
 
 /** Old keys keep their marks; a new one between two marked ones of its run takes the forerunner's number and a letter. */
 function stickyNumbers(
   items: readonly { readonly key: string; readonly runId: string }[], before: Readonly<Record<string, string>>, voided: readonly string[], prefix: string,
-): Record<string, string> {
+): Map<string, string> {
   const taken = new Set([...Object.values(before), ...voided]);
   let last = Math.max(0, ...[...taken].map(markNumber));
   const lastKept = new Map<string, number>();
@@ -78,7 +85,7 @@ function stickyNumbers(
     if (own(before, item.key) !== undefined) lastKept.set(item.runId, i);
   });
   const forerunner = new Map<string, string>();
-  return fromEntries(items.map((item, i) => {
+  return new Map(items.map((item, i) => {
     const old = own(before, item.key);
     const ahead = forerunner.get(item.runId);
     const between = ahead !== undefined && i < (lastKept.get(item.runId) ?? -1);
@@ -100,7 +107,7 @@ function suffixed(base: string, taken: ReadonlySet<string>): string {
  * A spool keeps its letter while it is the only one holding parts of the old one and holds parts of no other. Where a
  * field joint merely moved, the larger share decides; a true split or merger voids the letters it touches.
  */
-function stickyLetters(spools: Markable["spools"], register: MarksRegister): Record<string, string> {
+function stickyLetters(spools: Markable["spools"], register: MarksRegister): Map<string, string> {
   const share = spoolShares(spools, register);
   const taken = new Set([...Object.values(register.spools), ...voidedMarks(register, "spool")]);
   let next = 0;
@@ -111,7 +118,7 @@ function stickyLetters(spools: Markable["spools"], register: MarksRegister): Rec
     return mark;
   };
   const used = new Set<string>();
-  return fromEntries(spools.map((s, i) => {
+  return new Map(spools.map((s, i) => {
     const heir = share.heirOf(i);
     const letter = heir === null ? undefined : own(register.spools, heir);
     if (letter === undefined || used.has(letter)) return [s.anchor, fresh()] as const;

@@ -9,7 +9,7 @@ import type { CutTerm, Piece, PieceEnd } from "./model-types";
 import { workingPointWord } from "./words";
 
 /** A piece before its mark and spool are known. */
-export type PieceDraft = Omit<Piece, "mark" | "spool"> & { readonly trimMm: number };
+export type PieceDraft = Omit<Piece, "mark" | "spool">;
 
 /** The piece of a stretch. Its key is that of the leg it ends in, so that a support put on the way changes no mark. */
 export function draftPiece(s: Stretch, ctx: BuildContext): PieceDraft {
@@ -25,7 +25,7 @@ export function draftPiece(s: Stretch, ctx: BuildContext): PieceDraft {
     key: `${last.id}:1`, legId: last.id, runId: last.runId, nps: pipe.nps, schedule: pipe.schedule, material: pipe.material,
     odMm: wall?.odMm ?? pipeOdMm(pipe.nps, ctx.units) ?? 0, wallMm: wall?.wallMm ?? 0,
     start: vecAddScaled(first.from, first.direction, reach(s.start)), end: vecAddScaled(last.to, last.direction, -reach(s.end)),
-    direction: first.direction, terms, cutLengthMm, trimMm: s.start.trimMm + s.end.trimMm, ends: [pieceEnd(s.start), pieceEnd(s.end)],
+    direction: first.direction, terms, cutLengthMm, ends: [pieceEnd(s.start), pieceEnd(s.end)],
     weightKg: wall ? (wall.kgPerM * Math.max(cutLengthMm, 0)) / 1000 : null,
     weightSource: wall ? `cut length x ${wall.source}` : "not known",
   };

@@ -52,7 +52,7 @@ function rawRuns(document: RunDocument, ctx: BuildContext): RawRun[] {
   const out: RawRun[] = [];
   const [main, ...branches] = document.runs;
   if (main) out.push(placeRaw(main, "", null, 0, ctx, used, byId));
-  let waiting = branches.map((run, i) => ({ run, label: run.name || `branch ${i + 1}` }));
+  let waiting = branches.map((run, i) => ({ run, label: branchLabel(run, i) }));
   while (waiting.length > 0) {
     const ready = waiting.filter(({ run }) => run.from !== null && byId.has(run.from));
     const next = ready.length > 0 ? inFlowOrder(ready, byId) : waiting;
@@ -68,6 +68,12 @@ function rawRuns(document: RunDocument, ctx: BuildContext): RawRun[] {
     }
   }
   return out;
+}
+
+/** "branch B1", or "branch 2" when it has no name. */
+function branchLabel(run: Run, index: number): string {
+  const name = run.name.trim();
+  return /^branch\b/i.test(name) ? name : `branch ${name === "" ? index + 1 : name}`;
 }
 
 /** Branches in the order in which flow meets the points they leave from (points were entered in flow order). */

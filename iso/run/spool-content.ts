@@ -36,16 +36,16 @@ function componentContent(c: Component, parts: ContentParts): unknown[] {
   const item = parts.points.get(c.pointId)?.item;
   const holes = item?.kind === "flange" ? item.boltHoles : null;
   return [
-    c.kind, c.valve, c.ends, c.nps, c.nps2, c.schedule, c.ratingClass, c.description, c.material, c.text, holes, parts.loose.has(c.id),
+    c.kind, c.valve, c.nps, c.nps2, c.schedule, c.ratingClass, c.description, c.material, c.text, holes, parts.loose.has(c.id),
     c.aside && direction(c.aside), c.angleRad === null ? null : fine(c.angleRad), c.radiusMm === null ? null : steps(c.radiusMm), c.unconfirmedKey !== null,
-    c.ports.map((p) => [p.id, steps(vecDistance(p.position, c.centre)), direction(p.direction), p.nps]),
+    ...c.ports.map((p) => `${p.id} ${steps(vecDistance(p.position, c.centre))} ${direction(p.direction)}`),
   ];
 }
 
 function pieceContent(p: PieceDraft, leg: Leg | undefined): unknown[] {
   return [
     p.nps, p.schedule, p.material, steps(p.odMm), steps(p.wallMm), direction(p.direction), leg?.unverified ?? false, leg?.provenance.kind ?? "",
-    p.terms.map((t) => [t.kind, t.label, steps(t.valueMm), t.unconfirmed]), p.ends.map((e) => e.prep),
+    ...p.terms.map((t) => `${t.label} ${steps(t.valueMm)}${t.unconfirmed ? " unconfirmed" : ""}`), p.ends[0].prep, p.ends[1].prep,
   ];
 }
 
@@ -64,6 +64,6 @@ function fine(value: number): number {
   return Math.floor(value * 1_000_000 + STEP_SHIFT);
 }
 
-function direction(d: Vec3): number[] {
-  return [fine(d[0]), fine(d[1]), fine(d[2])];
+function direction(d: Vec3): string {
+  return `${fine(d[0])},${fine(d[1])},${fine(d[2])}`;
 }

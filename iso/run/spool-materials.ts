@@ -61,14 +61,17 @@ function boltRow(j: JointDraft, ratingClass: RatingClass | null, units: UnitSyst
 
 /** Equal size, description and material make one row. */
 function mergedRows(rows: readonly Row[]): Row[] {
-  const merged = new Map<string, Row>();
+  const groups = new Map<string, Row[]>();
   for (const row of rows) {
-    const key = JSON.stringify([row.unit, row.size, row.description, row.material]);
-    const seen = merged.get(key);
-    merged.set(key, !seen ? row : {
-      ...seen, quantity: seen.quantity + row.quantity, refs: [...seen.refs, ...row.refs],
-      weightKg: seen.weightKg === null && row.weightKg === null ? null : (seen.weightKg ?? 0) + (row.weightKg ?? 0),
-    });
+    const key = `${row.unit}\n${row.size}\n${row.description}\n${row.material}`;
+    const group = groups.get(key);
+    if (group) group.push(row);
+    else groups.set(key, [row]);
   }
-  return [...merged.values()];
+  return [...groups.values()].map((group) => ({
+    ...group[0]!,
+    quantity: group.reduce((sum, row) => sum + row.quantity, 0),
+    refs: group.flatMap((row) => row.refs),
+    weightKg: group.every((row) => row.weightKg === null) ? null : group.reduce((sum, row) => sum + (row.weightKg ?? 0), 0),
+  }));
 }

@@ -9,15 +9,17 @@ import type { Component } from "./model-types";
 
 const ESTIMATE = "estimated from pipe of the same wall";
 
-/** The component with its weight, where one can be told. */
-export function weighedComponent(c: Component, units: UnitSystem): Component {
-  if (c.weightKg !== null || c.weightSource !== "") return c;
+export type Weight = Pick<Component, "weightKg" | "weightSource">;
+
+/** Weight of a component, where one can be told; what the fitting itself said comes first. */
+export function componentWeight(c: Component, units: UnitSystem): Weight {
+  if (c.weightKg !== null || c.weightSource !== "") return { weightKg: c.weightKg, weightSource: c.weightSource };
   const table = c.kind === "elbow" && c.radiusMm !== null && /^Elbow 90 LR/.test(c.description) && c.schedule ? elbowWeightKg("lr-90", c.nps, c.schedule) : null;
-  if (table) return { ...c, weightKg: table.kg, weightSource: table.source };
+  if (table) return { weightKg: table.kg, weightSource: table.source };
   const length = estimateLengthMm(c, units);
   const perMetre = c.schedule === null ? null : meanKgPerM(c, c.schedule, units);
-  if (length === null || perMetre === null) return { ...c, weightSource: "not known" };
-  return { ...c, weightKg: (length * perMetre) / 1000, weightSource: ESTIMATE };
+  if (length === null || perMetre === null) return { weightKg: null, weightSource: "not known" };
+  return { weightKg: (length * perMetre) / 1000, weightSource: ESTIMATE };
 }
 
 function meanKgPerM(c: Component, schedule: string, units: UnitSystem): number | null {
