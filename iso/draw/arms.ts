@@ -59,7 +59,7 @@ function reachAlong(component: Component, origin: Vec3, outward: Vec3): Reach | 
   }
   if (to === -Infinity) return oneEnded(component, origin, outward);
   const centre = vecDot(vecSub(component.centre, origin), outward);
-  return { component, from: Math.min(from, centre, to), to };
+  return { component, from: from === Infinity ? Math.min(centre, to) : Math.min(from, to), to };
 }
 
 /** Caps and blind flanges have one port or none along the leg: they count from the port to their own centre. */

@@ -83,13 +83,15 @@ function bestChoice(
   leaving: ReadonlyMap<string, readonly PaperPoint[]>, measure: MeasureText,
 ): Choice {
   const units = placed.sketch.model.document.settings.units;
+  const crowded = marksAlong(placed, chain) * MARK_PITCH > chain.edges.reduce((sum, { length }) => sum + length, 0);
   let best: Choice | null = null;
   for (let level = 0; level < LEVELS; level++) {
     for (const axis of ([0, 1, 2] as const).filter((other) => other !== chain.axis)) {
       for (const sign of [1, -1]) {
         const along = placed.projection.axes[axis];
         const across: PaperPoint = [along[0] * sign, along[1] * sign];
-        const base = level * 5 + sideCost(chain, across, around, leaving);
+        // Many marks along the pipe: leave them a strip between pipe and dimensions.
+        const base = (crowded && level === 0 ? 9 : level * 5) + sideCost(chain, across, around, leaving);
         if (best && base >= best.cost) continue;
         const set = dimensionSet(chain, across, size.DIMENSION_FIRST + level * size.DIMENSION_NEXT, flanged, units, measure);
         const choice = seated(set, around, others, base + lineCost(set, around, others));
@@ -98,6 +100,16 @@ function bestChoice(
     }
   }
   return best ?? { set: { lines: [], extensions: [], texts: [] }, places: [], boxes: [], cost: 0 };
+}
+
+/** Paper a mark takes along a pipe, mm, with both sides in use. */
+const MARK_PITCH = 8;
+
+function marksAlong(placed: Placed, chain: Chain): number {
+  const points = new Set(chain.edges.flatMap(({ edge }) => [edge.from, edge.to]));
+  const { sketch } = placed;
+  const parts = [...points].reduce((sum, id) => sum + (sketch.componentsAt.get(id)?.filter((c) => c.kind !== "gasket").length ?? 0), 0);
+  return parts + chain.edges.reduce((sum, { edge }) => sum + edge.pieces.length, 0) + sketch.joints.filter((joint) => points.has(joint.pointId) && joint.number !== null).length;
 }
 
 /** Prefers outward sides, and never a side on which a pipe leaves one of the chain's points. */
@@ -114,8 +126,8 @@ function sideCost(chain: Chain, across: PaperPoint, around: DimensionSurrounding
 
 function lineCost(set: DimensionSet, around: DimensionSurroundings, others: readonly Choice[]): number {
   let cost = 0;
-  for (const line of set.lines) cost += around.heavy.along(line.from, line.to) * 3 + around.light.along(line.from, line.to) * 0.6;
-  for (const line of set.extensions) cost += around.heavy.along(line.from, line.to) * 2 + around.light.along(line.from, line.to) * 0.3;
+  for (const line of set.lines) cost += onPipe(around.heavy.along(line.from, line.to), 18) + around.light.along(line.from, line.to) * 0.6;
+  for (const line of set.extensions) cost += onPipe(around.heavy.along(line.from, line.to), 7) + around.light.along(line.from, line.to) * 0.3;
   for (const other of others) {
     for (const line of set.lines) {
       for (const their of other.set.lines) if (crossingOf(line, their)) cost += 12;
@@ -128,6 +140,11 @@ function lineCost(set: DimensionSet, around: DimensionSurroundings, others: read
     }
   }
   return cost;
+}
+
+/** Crossing a pipe costs a lump, lying along one costs by its length. */
+function onPipe(cells: number, lump: number): number {
+  return cells === 0 ? 0 : lump + cells * 2;
 }
 
 /** Finds each number the cheapest free place on its line. */

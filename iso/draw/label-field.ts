@@ -55,6 +55,11 @@ export class LabelField {
     return null;
   }
 
+  /** Every label whose box comes within the margin of this one. */
+  allOverlapping(box: TurnedBox, margin = LABEL_MARGIN): readonly FieldEntry[] {
+    return [...this.near({ id: "", box, leader: null })].filter((entry) => entry.box !== null && boxesMeet(entry.box, box, margin));
+  }
+
   /** How many foreign leaders run through a box. */
   leadersIn(box: TurnedBox): number {
     let count = 0;

@@ -5,58 +5,16 @@
  */
 import type { PaperPoint } from "../geometry/types";
 import type { DisplayItem, LabelReport } from "./drawing-types";
-import { candidatesOf, FAR_RINGS, labelBox, leaderPrice, NEAR_RINGS, OUTER_RINGS, OUTER_WORTH, type Candidate, type Label, type LabelInk } from "./label-candidates";
-import { LabelField, type FieldEntry } from "./label-field";
+import { candidatesOf, FAR_RINGS, labelBox, NEAR_RINGS, type Label, type LabelInk } from "./label-candidates";
+import { LabelField } from "./label-field";
+import { ejectAll } from "./label-ejection";
+import { seatFor, seatInPool, type Pool, type Seat } from "./label-seats";
 import { boxesMeet, type TurnedBox } from "./plane";
 
-interface Seat {
-  readonly candidate: Candidate;
-  readonly cost: number;
-  readonly entries: readonly FieldEntry[];
-}
-
 const SWEEPS = 3;
-const COST_OF_LEADER_ON_LABEL = 45;
-const COST_OF_LEADER_CROSSING = 14;
+/** A label on the innermost ring without a fault costs less and cannot get better. */
+const BEST_COST = 1.06;
 const SAME_COST = 1e-9;
-
-/** Candidates of one label; the outer rings are made only when the inner ones leave something to wish for. */
-interface Pool {
-  readonly near: readonly Candidate[];
-  outer: readonly Candidate[] | null;
-}
-
-function seatInPool(label: Label, pool: Pool, field: LabelField, ink: LabelInk): Seat | null {
-  const near = seatFor(label, pool.near, field, ink);
-  if (near && near.cost <= OUTER_WORTH) return near;
-  pool.outer ??= candidatesOf(label, OUTER_RINGS, ink);
-  const outer = seatFor(label, pool.outer, field, ink);
-  return near && (!outer || near.cost <= outer.cost) ? near : outer;
-}
-
-function seatFor(label: Label, candidates: readonly Candidate[], field: LabelField, ink: LabelInk): Seat | null {
-  let best: Candidate | null = null;
-  let bestCost = Infinity;
-  for (const candidate of candidates) {
-    if (candidate.base >= bestCost) break;
-    const box = labelBox(label, candidate.centre);
-    if (field.overlapping(box)) continue;
-    const led = candidate.ring >= label.leaderFrom;
-    let cost = candidate.base + (led ? leaderPrice(candidate, ink) : 0);
-    if (cost >= bestCost) continue;
-    const met = led ? field.onLeader(candidate.from, candidate.to) : { labels: 0, leaders: 0 };
-    cost += met.labels * COST_OF_LEADER_ON_LABEL + met.leaders * COST_OF_LEADER_CROSSING + field.leadersIn(box) * COST_OF_LEADER_ON_LABEL;
-    if (cost < bestCost) [best, bestCost] = [candidate, cost];
-  }
-  return best ? { candidate: best, cost: bestCost, entries: entriesOf(label, best) } : null;
-}
-
-function entriesOf(label: Label, candidate: Candidate): readonly FieldEntry[] {
-  const entries: FieldEntry[] = [{ id: label.id, box: labelBox(label, candidate.centre), leader: null }];
-  if (candidate.ring < label.leaderFrom) return entries;
-  const { from, to } = candidate;
-  return [...entries, { id: label.id, box: null, leader: { from, to } }];
-}
 
 export interface PlacedLabels {
   readonly items: readonly DisplayItem[];
@@ -76,7 +34,11 @@ export function placeLabels(labels: readonly Label[], fixed: readonly TurnedBox[
     for (const entry of seat?.entries ?? []) field.add(entry);
     seats[i] = seat;
   });
-  for (let sweep = 0; sweep < SWEEPS; sweep++) if (!improveAll(labels, pools, seats, field, ink)) break;
+  for (let sweep = 0; sweep < SWEEPS; sweep++) {
+    const moved = improveAll(labels, pools, seats, field, ink);
+    const swapped = ejectAll({ labels, pools, seats, field, ink });
+    if (!moved && !swapped) break;
+  }
   return drawnLabels(labels, seats, fixed, field);
 }
 
@@ -87,8 +49,7 @@ function improveAll(labels: readonly Label[], pools: readonly Pool[], seats: (Se
     const label = labels[i];
     const before = seats[i];
     const pool = pools[i];
-    // A label on the innermost ring without a fault cannot get better.
-    if (!label || !pool || !before || before.cost < 1.06) continue;
+    if (!label || !pool || !before || before.cost < BEST_COST) continue;
     for (const entry of before.entries) field.remove(entry);
     const today = seatFor(label, [before.candidate], field, ink) ?? before;
     const found = seatInPool(label, pool, field, ink);

@@ -11,7 +11,7 @@ import type { Projection } from "./project";
 import * as size from "./sizes";
 
 const HALF_WIDTH = 15;
-const HALF_HEIGHT = 14;
+const HALF_HEIGHT = 13.5;
 
 export interface NorthInk {
   readonly items: readonly DisplayItem[];

@@ -9,7 +9,7 @@ import type { DisplayItem, Ref } from "./drawing-types";
 import type { LineText } from "./fixed-text";
 import { lineItem } from "./paths";
 import type { Placed } from "./place";
-import type { Segment } from "./plane";
+import { crossingOf, type Segment } from "./plane";
 import { project } from "./project";
 import * as size from "./sizes";
 import { offsetNaming, riseAngle, setLength, travelText, type OffsetNaming } from "./words";
@@ -30,7 +30,10 @@ export interface OffsetInk {
 const DASH_DOT: readonly number[] = [3, 0.9, 0.6, 0.9];
 
 export function offsetPass(placed: Placed, drawn: readonly DrawnEdge[]): OffsetInk {
-  const parts = drawn.filter((d) => d.edge.kind === "offset" && !d.edge.stub && !d.edge.neighbour).map((d) => offsetBox(placed, d, drawn));
+  const parts: OffsetInk[] = [];
+  for (const d of drawn) {
+    if (d.edge.kind === "offset" && !d.edge.stub && !d.edge.neighbour) parts.push(offsetBox(placed, d, drawn, parts.flatMap((part) => part.light)));
+  }
   return {
     items: parts.flatMap((part) => part.items), light: parts.flatMap((part) => part.light),
     texts: parts.flatMap((part) => part.texts), notes: parts.flatMap((part) => part.notes),
@@ -56,15 +59,26 @@ function orders(edge: DrawnEdge["edge"]): readonly (readonly (0 | 1 | 2)[])[] {
   return [[0, 1, 2], [1, 0, 2], [2, 0, 1], [2, 1, 0]];
 }
 
-function offsetBox(placed: Placed, d: DrawnEdge, drawn: readonly DrawnEdge[]): OffsetInk {
+function offsetBox(placed: Placed, d: DrawnEdge, drawn: readonly DrawnEdge[], before: readonly Segment[]): OffsetInk {
   const naming = offsetNaming(placed.sketch.model, d.edge);
   let best: readonly (0 | 1 | 2)[] = [0, 1, 2];
   let bestCost = Infinity;
   for (const order of orders(d.edge)) {
-    const cost = walkCost(d, [d.from, ...corners(placed, d, order)], drawn, order, naming);
+    const walk = [d.from, ...corners(placed, d, order)];
+    const cost = walkCost(d, walk, drawn, order, naming) + overlapCost(walk, before);
     if (cost < bestCost) [best, bestCost] = [order, cost];
   }
   return boxInk(placed, d, best, naming);
+}
+
+/** Two boxes should not lie over each other. */
+function overlapCost(walk: readonly PaperPoint[], before: readonly Segment[]): number {
+  let cost = 0;
+  for (let i = 0; i + 1 < walk.length; i++) {
+    const edge = { from: walk[i] ?? [0, 0], to: walk[i + 1] ?? [0, 0] } as const;
+    for (const line of before) if (crossingOf(edge, line)) cost += 3;
+  }
+  return cost;
 }
 
 /** Edges of a box should neither lie on a pipe nor cross one. */
