@@ -18,11 +18,11 @@ export function newtonClimb(problem: Problem, start: Vec3): State | null {
   let s = stateAt(problem, start[0], start[1], start[2]);
   const fold = CLOSING_FOLD * problem.scale;
   if (!(s.S > fold)) return null;
-  const done = CLOSING_NOISE * problem.scale;
   for (let step = 0; step < MOST_STEPS; step += 1) {
-    if (s.sizeF <= done) return s;
+    const size = problem.scale + s.T0 + s.T1;
+    if (s.sizeF <= CLOSING_NOISE * size) return s;
     const next = climbed(problem, s, fold);
-    if (next === null) return s.sizeF <= CLOSING_QUADRATIC * CLOSING_QUADRATIC * problem.scale ? s : null;
+    if (next === null) return s.sizeF <= CLOSING_QUADRATIC * CLOSING_QUADRATIC * size ? s : null;
     s = next;
   }
   return null;
@@ -35,7 +35,7 @@ function climbed(problem: Problem, s: State, fold: number): State | null {
   if (!(det > 0)) return null;
   const g1 = (b22 * f1 - b12 * f2) / det;
   const g2 = (b11 * f2 - b12 * f1) / det;
-  const near = s.sizeF < CLOSING_QUADRATIC * problem.scale;
+  const near = s.sizeF < CLOSING_QUADRATIC * (problem.scale + s.T0 + s.T1);
   const promised = f1 * g1 + f2 * g2;
   const before = near ? 0 : potentialAt(problem, s);
   for (let halving = 0, share = 1; halving < MOST_HALVINGS; halving += 1, share /= 2) {

@@ -1,18 +1,18 @@
 /**
  * The way to certainty when Newton has no start or jams: a spherical polygon that holds the answer if there is one, cut
  * through its centre of gravity again and again. Inside K the gradient of f says which half to keep; outside, the
- * gradient of S does (S is concave and grows with its vector, so S(x) <= ∇S(v)·x everywhere). Each cut takes a good
- * share of the area; an empty polygon proves that nothing closes.
+ * gradient of S does (S is concave and grows with its vector, so S(x) <= ∇S(v)·x everywhere; inside K that cut holds
+ * too). Each cut takes a good share of the area; an empty polygon proves that nothing closes.
  */
 import type { Vec3 } from "../geometry/types";
-import { CLOSING_ANGLE, CLOSING_FOLD, CLOSING_SMALLEST_POLYGON } from "../geometry/tolerances";
+import { CLOSING_ANGLE, CLOSING_FOLD, CLOSING_SMALLEST_POLYGON, CLOSING_THREAD } from "../geometry/tolerances";
 import { vecAdd, vecAddScaled, vecCross, vecDistance, vecDot, vecLength, vecPerpendicular, vecReject, vecScale, vecUnit } from "../geometry/vec3";
 import { newtonClimb } from "./newton";
 import { stateAt, type Problem, type State } from "./problem";
 
 const MOST_CUTS = 400;
-/** Newton is tried from the polygon's centre whenever the polygon has shrunk to this share of its width at the last try. */
-const SHRUNK = 0.3;
+/** Cuts between two tries of Newton from the polygon's centre. */
+const CUTS_PER_TRY = 4;
 /** Width under which the centre of gravity comes from the corners: the area's own formula has lost its digits there. */
 const NARROW = 1e-4;
 /** An arc is at most this much longer than its chord. */
@@ -23,7 +23,7 @@ export function polygonSearch(problem: Problem): State | null {
   const middle = vecUnit(problem.D);
   if (!middle || peaksAtHalfTurn(problem)) return null;
   let polygon = hemisphere(middle);
-  let triedAt = Infinity;
+  let within: Vec3 | null = null;
   for (let cut = 0; cut < MOST_CUTS; cut += 1) {
     const v = cut === 0 ? middle : centreOf(polygon);
     if (!v) return null;
@@ -31,15 +31,21 @@ export function polygonSearch(problem: Problem): State | null {
     const s = stateAt(problem, v[0], v[1], v[2]);
     if (width < CLOSING_SMALLEST_POLYGON || rulesOutRoot(problem, s, width)) return null;
     const inside = s.S > CLOSING_FOLD * problem.scale;
-    if (inside && width < triedAt * SHRUNK) {
-      triedAt = width;
-      const found = newtonClimb(problem, v);
-      if (found) return found;
-    }
-    polygon = clipped(polygon, inside ? s.F : slopeOfS(problem, v), v);
+    if (inside) within = v;
+    const found = inside && cut % CUTS_PER_TRY === 0 ? newtonClimb(problem, v) : null;
+    if (found) return found;
+    const kept = inside ? clipped(polygon, s.F, v) : polygon;
+    polygon = clipped(kept, slopeOfS(problem, v), v);
     if (polygon.length < 3) return null;
+    if (isThread(polygon, inside ? s.F : slopeOfS(problem, v))) return within && newtonClimb(problem, within);
   }
   return null;
+}
+
+/** Whether all that is left is a thread along the last cut, as happens where the ends lie in one plane: long, but without width. */
+function isThread(polygon: readonly Vec3[], normal: Vec3): boolean {
+  const size = vecLength(normal);
+  return polygon.every((v) => Math.abs(vecDot(v, normal)) <= CLOSING_THREAD * size);
 }
 
 /**

@@ -65,3 +65,9 @@ export const CLOSING_STANDARD_ANGLE = (0.05 * Math.PI) / 180;
 
 /** Radians. A polygon of pipe directions no wider than this across its last cut is a thread: the centre's own rounding is as wide. */
 export const CLOSING_THREAD = 1e-6;
+
+/** Radians (0.005 deg). An elbow this near its own angle is square: half of the last printed digit of an angle. */
+export const SQUARE_RAD = 0.005 * (Math.PI / 180);
+
+/** Radians (1 deg). A turn nearer than this to a half turn folds the line back on itself. */
+export const FOLD_RAD = Math.PI / 180;

@@ -1,0 +1,128 @@
+/**
+ * The slow, obvious second answer to the closing: try pipe directions all over the sphere, bend a piece of pipe from each
+ * end to that direction by walking along the arcs, and see how far the two straight ends miss each other. Wherever the
+ * miss has a dip, follow it down. Shares no code and no formula with the solver: no gradient, no half-angle tangents, no
+ * proof, only walking along pipes.
+ */
+type V = [number, number, number];
+
+export interface SearchInput {
+  p0: readonly number[];
+  d0: readonly number[];
+  p1: readonly number[];
+  d1: readonly number[];
+  r0: number;
+  r1: number;
+  a: number;
+  b: number;
+  gap: number;
+}
+
+export interface SearchHit {
+  u: V;
+  theta0: number;
+  theta1: number;
+  /** Straight distance between the two bends' ends. */
+  straight: number;
+}
+
+/** Ends of the arc that starts at p along d and turns to heading h with a radius: position and angle turned. */
+function walkArc(p: V, d: V, h: V, radius: number): { at: V; angle: number } {
+  const angle = Math.acos(Math.max(-1, Math.min(1, d[0] * h[0] + d[1] * h[1] + d[2] * h[2])));
+  let side: V = [h[0] - Math.cos(angle) * d[0], h[1] - Math.cos(angle) * d[1], h[2] - Math.cos(angle) * d[2]];
+  const size = Math.sqrt(side[0] * side[0] + side[1] * side[1] + side[2] * side[2]);
+  if (size < 1e-14) return { at: p, angle };
+  side = [side[0] / size, side[1] / size, side[2] / size];
+  const ahead = radius * Math.sin(angle);
+  const aside = radius * (1 - Math.cos(angle));
+  return { at: [p[0] + ahead * d[0] + aside * side[0], p[1] + ahead * d[1] + aside * side[1], p[2] + ahead * d[2] + aside * side[2]], angle };
+}
+
+/** All directions in which the two bent ends meet in one straight line, found by brute force. `steps` is the grid's fineness. */
+export function closingSearch(input: SearchInput, steps = 36): SearchHit[] {
+  const unit = (v: readonly number[]): V => {
+    const s = Math.hypot(v[0]!, v[1]!, v[2]!);
+    return [v[0]! / s, v[1]! / s, v[2]! / s];
+  };
+  const d0 = unit(input.d0);
+  const d1 = unit(input.d1);
+  const start = (p: readonly number[], d: V, k: number): V => [p[0]! + k * d[0], p[1]! + k * d[1], p[2]! + k * d[2]];
+  const a0 = start(input.p0, d0, input.a + input.gap);
+  const a1 = start(input.p1, d1, input.b + input.gap);
+  const scale = Math.hypot(a1[0] - a0[0], a1[1] - a0[1], a1[2] - a0[2]) + input.r0 + input.r1;
+
+  const tryHeading = (u: V) => {
+    const x = walkArc(a0, d0, u, input.r0);
+    const y = walkArc(a1, d1, [-u[0], -u[1], -u[2]], input.r1);
+    const way: V = [y.at[0] - x.at[0], y.at[1] - x.at[1], y.at[2] - x.at[2]];
+    const straight = way[0] * u[0] + way[1] * u[1] + way[2] * u[2];
+    const off: V = [way[0] - straight * u[0], way[1] - straight * u[1], way[2] - straight * u[2]];
+    const miss = Math.sqrt(off[0] * off[0] + off[1] * off[1] + off[2] * off[2]);
+    return { miss, straight, theta0: x.angle, theta1: y.angle };
+  };
+
+  const hits: SearchHit[] = [];
+  for (const u of dips(tryHeading, steps)) {
+    const low = followDown(u, (v) => tryHeading(v).miss, Math.PI / steps, scale);
+    const end = tryHeading(low);
+    if (end.miss > 1e-8 * scale || end.straight < 0 || end.theta0 > Math.PI - 1e-4 || end.theta1 > Math.PI - 1e-4) continue;
+    if (hits.some((h) => Math.hypot(h.u[0] - low[0], h.u[1] - low[1], h.u[2] - low[2]) < 1e-5)) continue;
+    hits.push({ u: low, theta0: end.theta0, theta1: end.theta1, straight: end.straight });
+  }
+  return hits;
+}
+
+/** Grid points no worse than their eight neighbours. */
+function dips(tryHeading: (u: V) => { miss: number }, steps: number): V[] {
+  const rows = steps;
+  const columns = 2 * steps;
+  const at = (i: number, j: number): V => {
+    const t = (Math.PI * (i + 0.5)) / rows;
+    const p = (2 * Math.PI * j) / columns;
+    return [Math.sin(t) * Math.cos(p), Math.sin(t) * Math.sin(p), Math.cos(t)];
+  };
+  const miss = Array.from({ length: rows }, (_, i) => Array.from({ length: columns }, (_, j) => tryHeading(at(i, j)).miss));
+  const found: V[] = [];
+  for (let i = 0; i < rows; i += 1) {
+    for (let j = 0; j < columns; j += 1) {
+      const here = miss[i]![j]!;
+      let lowest = true;
+      for (let di = -1; di <= 1 && lowest; di += 1) {
+        for (let dj = -1; dj <= 1; dj += 1) {
+          const row = miss[i + di];
+          if (row && row[(j + dj + columns) % columns]! < here) lowest = false;
+        }
+      }
+      if (lowest) found.push(at(i, j));
+    }
+  }
+  return found;
+}
+
+/** Best of a 9 by 9 grid round about, then a finer grid round that, and so on: a fixed number of looks, whatever the valley's shape. */
+function followDown(from: V, miss: (u: V) => number, firstStep: number, scale: number): V {
+  let u = from;
+  let here = miss(u);
+  for (let step = firstStep / 3; step > 1e-13 && here > 1e-13 * scale; step *= 0.55) {
+    const x: V = Math.abs(u[2]) < 0.7 ? [-u[1], u[0], 0] : [0, -u[2], u[1]];
+    const n = Math.hypot(...x);
+    const e: V = [x[0] / n, x[1] / n, x[2] / n];
+    const f: V = [u[1] * e[2] - u[2] * e[1], u[2] * e[0] - u[0] * e[2], u[0] * e[1] - u[1] * e[0]];
+    const centre = u;
+    for (let i = -4; i <= 4; i += 1) {
+      for (let j = -4; j <= 4; j += 1) {
+        const a = centre[0] + step * (i * e[0] + j * f[0]);
+        const b = centre[1] + step * (i * e[1] + j * f[1]);
+        const c = centre[2] + step * (i * e[2] + j * f[2]);
+        const size = Math.sqrt(a * a + b * b + c * c);
+        const w: V = [a / size, b / size, c / size];
+        const there = miss(w);
+        if (there < here) {
+          here = there;
+          u = w;
+        }
+      }
+    }
+  }
+  return u;
+}
