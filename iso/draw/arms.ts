@@ -26,17 +26,17 @@ export const NO_ARM: Arm = { parts: [], room: 0, knots: [{ real: 0, paper: 0 }] 
 const ARM_ROOM: Readonly<Record<ComponentKind, number>> = {
   elbow: size.ELBOW_ARM, "trimmed-elbow": size.ELBOW_ARM, "socket-elbow": size.ELBOW_ARM - 1,
   tee: size.TEE_ARM, "reducing-tee": size.TEE_ARM, "socket-tee": size.TEE_ARM,
-  outlet: 6.2, "stub-in": 2,
+  outlet: 7, "stub-in": 2,
   "reducer-concentric": size.REDUCER_ROOM, "reducer-eccentric": size.REDUCER_ROOM,
   "flange-weld-neck": size.FLANGE_ARM, "flange-slip-on": size.FLANGE_ARM - 0.6, "flange-socket-weld": size.FLANGE_ARM - 0.6,
   "flange-blind": size.BLIND_ROOM, gasket: size.GASKET_ROOM, valve: size.VALVE_HALF,
-  coupling: size.COUPLING_HALF, "half-coupling": 6, cap: size.CAP_ROOM, support: 0,
+  coupling: size.COUPLING_HALF, "half-coupling": 6.6, cap: size.CAP_ROOM, support: 0,
 };
 
 /** A reach that begins this close to the working point begins at it: take-outs are tens of millimetres, gaps a few. */
 const AT_POINT_MM = 8;
 /** Paper distance from the run's line to the weld of an outlet or half-coupling on it. */
-const SADDLE_ROOM = 1.9;
+const SADDLE_ROOM = 1.6;
 const ON_RUN: ReadonlySet<ComponentKind> = new Set(["outlet", "half-coupling", "stub-in"]);
 
 interface Reach {

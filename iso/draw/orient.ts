@@ -4,7 +4,8 @@ import type { Model } from "../run/model-types";
 import { drawnEdges, type DrawnEdge } from "./drawn";
 import type { MeasureText } from "./drawing-types";
 import { segmentsDistance } from "../geometry/paper";
-import { placeAll, placePlan, type PlacePlan } from "./place";
+import { offsetPass } from "./offset-box";
+import { placeAll, placePlan, type Placed, type PlacePlan } from "./place";
 import { crossingOf, paperBoxAround } from "./plane";
 import { axisAngle, project, PROJECTIONS, type Projection } from "./project";
 import * as size from "./sizes";
@@ -41,7 +42,7 @@ export function viewScore(plan: PlacePlan, projection: Projection): number {
   const drawn = drawnEdges(placed);
   const box = paperBoxAround(drawn.flatMap((d) => [d.from, d.to]));
   const area = drawn.length > 0 ? Math.max(1, (box.maxX - box.minX + 60) * (box.maxY - box.minY + 60)) : 1;
-  return crowding(drawn) + offAxisScore(drawn, projection) + Math.sqrt(area) / 40;
+  return crowding(drawn) + offAxisScore(drawn, projection) + Math.sqrt(area) / 120 + boxCrowding(placed, drawn);
 }
 
 function crowding(drawn: readonly DrawnEdge[]): number {
@@ -73,6 +74,20 @@ function folded(a: DrawnEdge, b: DrawnEdge): boolean {
   return sign * (a.direction[0] * b.direction[0] + a.direction[1] * b.direction[1]) > Math.cos(size.AXIS_CLEARANCE_RAD);
 }
 
+/** Offset boxes that lie over pipe or over each other. */
+function boxCrowding(placed: Placed, drawn: readonly DrawnEdge[]): number {
+  const lines = offsetPass(placed, drawn).texts.map((text) => text.line);
+  let score = 0;
+  lines.forEach((line, i) => {
+    for (const other of lines.slice(i + 1)) if (crossingOf(line, other)) score += 1.5;
+    for (const pipe of drawn) if (crossingOf(line, pipe)) score += 1;
+  });
+  return score;
+}
+
+/** A leg drawn shorter than this share of its length reads as pointing at the reader. */
+const FORESHORTENED = 0.8;
+
 /** Counts what the true direction of each off-axis leg would do on paper, before any stretching. */
 function offAxisScore(drawn: readonly DrawnEdge[], projection: Projection): number {
   let score = 0;
@@ -83,7 +98,7 @@ function offAxisScore(drawn: readonly DrawnEdge[], projection: Projection): numb
     const shown = Math.hypot(paper[0], paper[1]) / whole;
     const angle = axisAngle(projection, paper);
     if (angle < size.AXIS_CLEARANCE_RAD) score += 9 * (1 - angle / size.AXIS_CLEARANCE_RAD) + 3;
-    if (shown < 0.5) score += 10 * (0.5 - shown);
+    if (shown < FORESHORTENED) score += 15 * (FORESHORTENED - shown);
   }
   return score;
 }

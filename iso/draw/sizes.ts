@@ -48,7 +48,7 @@ export const BLIND_ROOM = 1.2;
 export const STUB_ROOM = 9;
 export const FLANGE_STROKE_HALF = 3.6;
 export const HUB_STROKE_HALF = 1.9;
-export const VALVE_HALF_HEIGHT = 2.9;
+export const VALVE_HALF_HEIGHT = 3.1;
 
 /** Target length of a leg: TARGET_LEAST + TARGET_ROOT * s * sqrt(real mm). */
 export const TARGET_LEAST = 9;

@@ -67,14 +67,15 @@ function flangeItems(f: PartFrame): DisplayItem[] {
   }
 }
 
-/** Half of a valve's body: a triangle whose point is the valve's centre; drawn once per side. */
+/** Half of a valve's body: a triangle whose point is the valve's centre and whose base lies with the flange strokes; drawn once per side. */
 function valveHalf(f: PartFrame): DisplayItem[] {
   const h = size.VALVE_HALF_HEIGHT;
-  const open = f.component.valve === "butterfly";
-  const end = lineItem("symbol", f.ref, f.at(f.outer, -h), f.at(f.outer, h), size.SYMBOL_WIDTH, f.ink);
-  if (open) return [end, lineItem("symbol", f.ref, f.at(f.inner, 0), f.at(f.outer, h), size.SYMBOL_WIDTH, f.ink)];
-  const triangle = polygonSegments([f.at(f.inner, 0), f.at(f.outer, -h), f.at(f.outer, h)]);
-  return [pathItem("symbol", f.ref, triangle, { stroke: f.ink, fill: "paper", widthMm: size.SYMBOL_WIDTH })];
+  const centre = f.at(f.inner, 0);
+  const [low, high] = [plus(f.at(f.outer, 0), f.stroke, -h), plus(f.at(f.outer, 0), f.stroke, h)];
+  if (f.component.valve === "butterfly") {
+    return [lineItem("symbol", f.ref, low, high, size.SYMBOL_WIDTH, f.ink), lineItem("symbol", f.ref, centre, f.outer > 0 ? high : low, size.SYMBOL_WIDTH, f.ink)];
+  }
+  return [pathItem("symbol", f.ref, polygonSegments([centre, low, high]), { stroke: f.ink, fill: "paper", widthMm: size.SYMBOL_WIDTH })];
 }
 
 function reducerItems(f: PartFrame, projection: Projection): DisplayItem[] {
