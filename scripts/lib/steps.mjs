@@ -1,7 +1,7 @@
 /** Programs that a command runs to their end, one after another; a stop signal ends the one that runs. */
 import { spawn } from "node:child_process";
 import { isFullDisk, PlainError } from "./say.mjs";
-import { signalGroup } from "./processes.mjs";
+import { endingWithParent, signalGroup } from "./processes.mjs";
 
 const KEPT_CHARACTERS = 20_000;
 const running = new Set();
@@ -26,7 +26,7 @@ export async function runStep(what, program, args, { show = false, ...options } 
  */
 export function runProgram(program, args, { show = false, ...options } = {}) {
   return new Promise((resolve) => {
-    const child = spawn(program, args, { ...options, detached: true, stdio: ["ignore", "pipe", "pipe"] });
+    const child = spawn(...commandLine(program, args), { ...options, detached: true, stdio: ["ignore", "pipe", "pipe"] });
     running.add(child);
     let output = "";
     const keep = (target) => (part) => {
@@ -45,6 +45,11 @@ export function runProgram(program, args, { show = false, ...options } = {}) {
     });
     child.once("close", end);
   });
+}
+
+/** A step ends with us, except Debian's package tools: those are left to finish, since half an installation is worse. */
+function commandLine(program, args) {
+  return program.startsWith("apt") ? [program, args] : endingWithParent("TERM", program, args);
 }
 
 /** Ends whatever step runs now. */
