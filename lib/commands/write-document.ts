@@ -3,6 +3,7 @@
  * touched it. The caller holds the line's lock.
  */
 import { buildModel, nextMarks, parseRunDocument, type MarksRegister, type Model, type RunDocument } from "@/iso";
+import { documentRefusal } from "@/lib/rules/document-refusal";
 import { takeOutWords } from "@/lib/queries/take-out-words";
 import { storedMarks } from "@/lib/queries/stored-line";
 import type { CommandContext } from "@/lib/server/command";
@@ -18,7 +19,8 @@ const MAX_SPOOLS = 400;
 export function checkedDocument(value: unknown): RunDocument {
   const parsed = parseRunDocument(value);
   if (parsed.ok) return parsed.document;
-  throw refuseInvalid(`This run cannot be saved. ${parsed.messages.slice(0, 3).join(" ")}`, { document: parsed.messages.join(" ") });
+  const sentence = documentRefusal(parsed.messages);
+  throw refuseInvalid(sentence, { document: sentence });
 }
 
 /** Facts of a document that lists show without reading it. */
