@@ -21,6 +21,7 @@ export * from "./closing/closing-types";
 export * from "./closing/solver";
 export * from "./closing/elbow-marks";
 export * from "./closing/advice";
+export * from "./closing/sensitivity";
 export * from "./closing/close-between";
 
 // run
