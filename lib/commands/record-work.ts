@@ -26,12 +26,11 @@ export async function recordWork(context: CommandContext, spoolId: string, form:
   return { id: entry.id };
 }
 
-/** A cut names a piece, a weld entry a weld, each by key and mark; an actual may name either or a point. */
+/** A cut names a piece, the other entries a weld, each by key and mark; a measured dimension is named by who measured it. */
 function isOnSheet(input: SheetInput, { kind, mark, key }: WorkForm): boolean {
+  if (kind === "actual") return true;
   const model = buildModel(input.document, input.marks, input.takeOuts);
-  const piece = model.pieces.some((p) => p.spool === input.spool && p.key === key && p.mark === mark);
-  const weld = model.joints.some((j) => j.spool === input.spool && j.key === key && j.number === mark);
-  if (kind === "cut") return piece;
-  if (kind === "actual") return piece || weld || model.legs.some((leg) => leg.id === key);
-  return weld;
+  return kind === "cut"
+    ? model.pieces.some((p) => p.spool === input.spool && p.key === key && p.mark === mark)
+    : model.joints.some((j) => j.spool === input.spool && j.key === key && j.number === mark);
 }
