@@ -19,7 +19,7 @@ export function JobPage({ jobId }: { readonly jobId: string }) {
   const role = viewer.data?.role ?? "fitter";
   const [view, setView] = useState<"lines" | "settings">("lines");
   return (
-    <Loaded api={job} label="Loading the job" lines={8}>
+    <Loaded api={job} page label="Loading the job" lines={8}>
       {(data) => (
         <>
           <JobHead job={data} />

@@ -104,9 +104,9 @@ function LimitFields({ register, errors }: Part) {
       <TextField label="Standard elbow within, degrees" figure error={errors.withinDeg?.message} {...register("withinDeg")} />
       <TextField label="Shortest pipe between welds" figure placeholder="1.5 OD" error={errors.minimumPup?.message} {...register("minimumPup")} />
       <div className="grid grid-cols-3 gap-3 sm:col-span-2">
-        <TextField label="Box length" figure error={errors.boxLength?.message} {...register("boxLength")} />
-        <TextField label="Box width" figure error={errors.boxWidth?.message} {...register("boxWidth")} />
-        <TextField label="Box height" figure error={errors.boxHeight?.message} {...register("boxHeight")} />
+        <TextField label="Shipping box, length" figure error={errors.boxLength?.message} {...register("boxLength")} />
+        <TextField label="Width" figure error={errors.boxWidth?.message} {...register("boxWidth")} />
+        <TextField label="Height" figure error={errors.boxHeight?.message} {...register("boxHeight")} />
       </div>
     </Group>
   );

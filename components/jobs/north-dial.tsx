@@ -2,15 +2,16 @@
 export function NorthDial({ degrees }: { readonly degrees: number }) {
   const turn = Number.isFinite(degrees) ? degrees : 0;
   return (
-    <svg viewBox="0 0 120 84" role="img" aria-label={`Plant north lies ${turn} degrees clockwise from true north`} className="h-21 w-30 self-end" fill="none" stroke="currentColor">
-      <path d="M44 78V10M44 10l-4 9M44 10l4 9" strokeDasharray="3 2" className="text-soft" />
-      <text x="52" y="14" className="fill-soft text-[9px]" stroke="none">
+    <svg viewBox="0 0 150 96" role="img" aria-label={`Plant north lies ${turn} degrees clockwise from true north`} className="h-24 w-38 self-end" fill="none" stroke="currentColor">
+      <circle cx="48" cy="50" r="38" className="text-hair" />
+      <path d="M48 96V4M48 4l-4 8M48 4l4 8" strokeDasharray="4 3" className="text-soft" />
+      <text x="58" y="10" className="fill-soft text-[11px]" stroke="none">
         true N
       </text>
-      <g transform={`rotate(${turn} 44 50)`} className="text-dye" strokeWidth="2.4">
-        <path d="M44 76V18M44 18l-6 11M44 18l6 11" />
+      <g transform={`rotate(${turn} 48 50)`} className="text-dye" strokeWidth="2.6">
+        <path d="M48 84V16M48 16l-7 12M48 16l7 12" />
       </g>
-      <text x="64" y="76" className="fill-dye text-[11px] font-bold" stroke="none">
+      <text x="92" y="56" className="fill-dye text-[12px] font-bold" stroke="none">
         PLANT N
       </text>
     </svg>

@@ -1,6 +1,6 @@
 /** Line settings as a form holds them (texts, lengths as typed) and back. */
 import { z } from "zod";
-import { NPS_SIZES, formatDecimal, formatTerm, lineSettingsSchema, npsSchema, parseLength, unitSystemSchema, type LineSettings, type UnitSystem } from "@/iso";
+import { NPS_SIZES, formatDecimal, formatLength, formatTerm, lineSettingsSchema, npsSchema, parseLength, unitSystemSchema, type LineSettings, type UnitSystem } from "@/iso";
 
 const name = (what: string, max: number) => z.string().trim().min(1, `Enter ${what}.`).max(max, `At most ${max} characters.`);
 const free = z.string().trim().max(120, "At most 120 characters.");
@@ -73,9 +73,11 @@ function degreesOf(text: string, context: z.RefinementCtx): number {
 
 /** A length for an entry: a tape reading where it says exactly the same, else millimetres. */
 export function lengthEntryText(mm: number, units: UnitSystem): string {
-  const short = formatTerm(mm, units);
-  const read = parseLength(short, units);
-  return read.ok && Math.abs(read.mm - mm) < EXACT_MM ? short : `${formatDecimal(mm, 4)}mm`;
+  const exact = [formatLength(mm, units), formatTerm(mm, units)].find((text) => {
+    const read = parseLength(text, units);
+    return read.ok && Math.abs(read.mm - mm) < EXACT_MM;
+  });
+  return exact ?? `${formatDecimal(mm, 4)}mm`;
 }
 
 /** Two texts of one length agree within this, mm: float noise only. */

@@ -21,7 +21,7 @@ import { Unverified } from "./unverified";
 export function ReviewPage({ revisionId }: { readonly revisionId: string }) {
   const review = useApi<ReviewDetail>(`/api/revisions/${revisionId}`);
   return (
-    <Loaded api={review} label="Loading the review" lines={10}>
+    <Loaded api={review} page label="Loading the review" lines={10}>
       {(data) => <Review review={data} />}
     </Loaded>
   );

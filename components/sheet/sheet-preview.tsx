@@ -43,7 +43,7 @@ export function SheetPreview({ input, label }: SheetPreviewProps) {
           ]}
         />
       </div>
-      <div role="region" aria-label={`${label}, ${page.name}`} tabIndex={0} className="max-h-[85dvh] overflow-auto border border-ink bg-white print:max-h-none print:overflow-visible print:border-0">
+      <div role="region" aria-label={`${label}, ${page.name}`} tabIndex={0} className={clsx("overflow-auto border border-ink bg-white print:max-h-none print:overflow-visible print:border-0", zoom !== "fit" && "max-h-[85dvh]")}>
         <div className={clsx(WIDTHS[zoom], "print:w-full print:min-w-0")}>
           <PageSvg page={page} label={`${label}, ${page.name}`} logo={input.titleBlock.logo} />
         </div>

@@ -19,7 +19,7 @@ type Part = "people" | "settings" | "stock" | "take-outs" | "sessions" | "log";
 export function ShopPage() {
   const viewer = useViewer();
   return (
-    <Loaded api={viewer} label="Loading the shop">
+    <Loaded api={viewer} page label="Loading the shop">
       {(data) => <Shop viewer={data} />}
     </Loaded>
   );

@@ -24,7 +24,7 @@ export function SpoolPage({ spoolId }: { readonly spoolId: string }) {
   const spool = useApi<SpoolDetail>(`/api/spools/${spoolId}`);
   const viewer = useViewer();
   return (
-    <Loaded api={spool} label="Loading the spool" lines={10}>
+    <Loaded api={spool} page label="Loading the spool" lines={10}>
       {(data) => <Spool spool={data} role={viewer.data?.role ?? "fitter"} />}
     </Loaded>
   );
@@ -35,7 +35,7 @@ function newestOf(revisions: readonly RevisionSummary[]): RevisionSummary | null
 }
 
 function Spool({ spool, role }: { readonly spool: SpoolDetail; readonly role: Role }) {
-  const [wanted, setWanted] = useState<"issued" | "draft">(spool.live && role === "fitter" ? "issued" : spool.draft ? "draft" : "issued");
+  const [wanted, setWanted] = useState<"issued" | "draft">(spool.draft && (role === "detailer" || !spool.live) ? "draft" : "issued");
   const [size, setSize] = useState<SheetSize>(spool.draft?.size ?? spool.live?.input.size ?? "tabloid");
   const [submitting, setSubmitting] = useState(false);
   const issued = wanted === "issued" || !spool.draft;

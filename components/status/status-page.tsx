@@ -12,10 +12,9 @@ export function StatusPage({ token }: { readonly token: string }) {
   const status = useApi<StatusDetail>(`/api/status/${encodeURIComponent(token)}`, { refreshInterval: 60_000 });
   return (
     <div className="mx-auto max-w-3xl">
-      <Loaded api={status} label="Looking up the sheet">
+      <Loaded api={status} page label="Looking up the sheet">
         {(data) => <Status status={data} />}
       </Loaded>
-      {status.error && !status.data ? <h1 className="sr-only">Status of a sheet</h1> : null}
     </div>
   );
 }

@@ -11,11 +11,14 @@ export interface LoadedProps<T> {
   /** What is being fetched, for screen readers: "Loading jobs". */
   readonly label: string;
   readonly lines?: number;
+  /** The whole page waits for it: until then its label is the page's heading. */
+  readonly page?: boolean;
   readonly children: (data: T) => ReactNode;
 }
 
 /** Shows what came, grey lines while it comes, or the plain sentence why it did not. Data once shown stays on screen. */
-export function Loaded<T>({ api, label, lines, children }: LoadedProps<T>) {
+export function Loaded<T>({ api, label, lines, page, children }: LoadedProps<T>) {
+  const heading = page ? <h1 className="sr-only">{api.error ? "Not shown" : label}</h1> : null;
   if (api.data !== undefined) {
     return (
       <>
@@ -30,15 +33,23 @@ export function Loaded<T>({ api, label, lines, children }: LoadedProps<T>) {
   }
   if (api.error) {
     return (
-      <Notice tone="trouble" word={api.error.status === 403 ? "Not for your role" : "Not shown"}>
-        {api.error.message}{" "}
-        {api.error.status === 403 || api.error.status === 404 ? null : (
-          <Button tone="quiet" onClick={() => void api.mutate()}>
-            Try again
-          </Button>
-        )}
-      </Notice>
+      <>
+        {heading}
+        <Notice tone="trouble" word={api.error.status === 403 ? "Not for your role" : "Not shown"}>
+          {api.error.message}{" "}
+          {api.error.status === 403 || api.error.status === 404 ? null : (
+            <Button tone="quiet" onClick={() => void api.mutate()}>
+              Try again
+            </Button>
+          )}
+        </Notice>
+      </>
     );
   }
-  return <Skeleton lines={lines} label={label} />;
+  return (
+    <>
+      {heading}
+      <Skeleton lines={lines} label={label} />
+    </>
+  );
 }
