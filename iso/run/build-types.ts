@@ -113,3 +113,15 @@ export interface Fitting {
   /** One per branch run of the point, same order. */
   readonly branches: readonly Side[];
 }
+
+/** Everything between two points where the pipe is cut. */
+export interface Stretch {
+  readonly from: PlacedPoint;
+  readonly to: PlacedPoint;
+  readonly legs: readonly Leg[];
+  readonly start: Side;
+  readonly end: Side;
+  readonly riders: readonly Rider[];
+  /** Points passed without a cut. */
+  readonly passed: readonly PlacedPoint[];
+}

@@ -1,14 +1,11 @@
 /** Findings about the line as a whole: empty runs, folds, sizes without a table, dimensions that cannot be trusted yet. */
 import { pipeSize, pipeWall, schedulesFor } from "../catalogue/pipe";
-import { ZERO_LENGTH_MM } from "../geometry/tolerances";
+import { FOLD_RAD, ZERO_LENGTH_MM } from "../geometry/tolerances";
 import { formatAngleDeg } from "../units/format";
 import { sentenceStart, type BuildContext } from "./build-context";
 import type { PlacedRun } from "./build-types";
 import type { Pipe } from "./document";
 import { legVerification } from "./verify-legs";
-
-/** Radians (1 deg). A turn nearer than this to a half turn folds the line back on itself. */
-const FOLD_RAD = Math.PI - Math.PI / 180;
 
 export function checkRuns(runs: readonly PlacedRun[], ctx: BuildContext): void {
   const told = new Set<string>();
@@ -16,7 +13,7 @@ export function checkRuns(runs: readonly PlacedRun[], ctx: BuildContext): void {
     checkLength(run, ctx);
     for (const p of run.points) {
       const where = { pointId: p.point.id, runId: p.runId };
-      if (p.turnRad > FOLD_RAD) {
+      if (p.turnRad > Math.PI - FOLD_RAD) {
         ctx.report("fold-back", "stop", `${sentenceStart(p.label)} turns ${formatAngleDeg(p.turnRad)}, back on itself: correct a sign, or build a return of two elbows.`, where);
       }
       for (const pipe of [p.pipeIn, p.pipeOut]) checkPipe(pipe, where, told, ctx);

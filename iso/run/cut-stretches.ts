@@ -6,23 +6,11 @@ import { FACE_TO_FACE_MM, ZERO_LENGTH_MM } from "../geometry/tolerances";
 import { vecAddScaled } from "../geometry/vec3";
 import { formatInches, formatTerm } from "../units/format";
 import { sentenceStart, type BuildContext } from "./build-context";
-import type { Fitting, JointDraft, PlacedPoint, PlacedRun, Rider, Side } from "./build-types";
+import type { Fitting, JointDraft, PlacedPoint, PlacedRun, Rider, Side, Stretch } from "./build-types";
 import { boltedJoint, gasketPart } from "./fit-flange";
 import { makeJoint, reachOf } from "./fit-common";
 import type { Component, Leg } from "./model-types";
 import { draftPiece, type PieceDraft } from "./piece-draft";
-
-/** Everything between two points where the pipe is cut. */
-export interface Stretch {
-  readonly from: PlacedPoint;
-  readonly to: PlacedPoint;
-  readonly legs: readonly Leg[];
-  readonly start: Side;
-  readonly end: Side;
-  readonly riders: readonly Rider[];
-  /** Points passed without a cut. */
-  readonly passed: readonly PlacedPoint[];
-}
 
 export interface Between {
   readonly components: readonly Component[];

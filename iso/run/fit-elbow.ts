@@ -6,7 +6,7 @@
  * chord is 2·t·cos(θ/2). So t = C·cos(A/2)/cos(θ/2), which is C·cos 45°/cos(θ/2) for a 90. A trimmed elbow of bend
  * radius R has t = R·tan(θ/2) (geometry of a tangent arc).
  */
-import { WELD_MISMATCH_RAD } from "../geometry/tolerances";
+import { SQUARE_RAD, WELD_MISMATCH_RAD } from "../geometry/tolerances";
 import { vecNegate } from "../geometry/vec3";
 import { elbowKey, socketKey } from "../catalogue/keys";
 import { formatAngleDeg } from "../units/format";
@@ -21,8 +21,6 @@ type ElbowName = Extract<Item, { kind: "elbow" }>["elbow"];
 
 const RIGHT = Math.PI / 2;
 const HALF_RIGHT = Math.PI / 4;
-/** Radians (0.005 deg). An elbow this near its own angle is square: two printed digits of an angle. */
-const SQUARE_RAD = 0.005 * (Math.PI / 180);
 
 /** What stands at a change of direction where the detailer named nothing (common practice, a setting of the line). */
 export function autoElbow(p: PlacedPoint, ctx: BuildContext): ElbowName | "plain-weld" {

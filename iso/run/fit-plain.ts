@@ -2,7 +2,7 @@
 import { WELD_MISMATCH_RAD } from "../geometry/tolerances";
 import { vecNegate } from "../geometry/vec3";
 import { formatAngleDeg } from "../units/format";
-import { plainTerm, sentenceStart, type BuildContext } from "./build-context";
+import { sentenceStart, type BuildContext } from "./build-context";
 import type { Fitting, PlacedPoint, Rider, Side } from "./build-types";
 import type { Item, Place } from "./document";
 import { endSide, fittingOf, flowAt, makeComponent, makeJoint, sideTrim } from "./fit-common";

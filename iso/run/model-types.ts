@@ -128,6 +128,8 @@ export interface Piece {
   /** Piece mark ("P3"). */
   readonly mark: string;
   readonly legId: string;
+  /** All legs it runs through in flow order, legId last: more than one where a support or an outlet sits on it. */
+  readonly legIds?: readonly string[];
   readonly runId: string;
   readonly nps: Nps;
   readonly schedule: string;

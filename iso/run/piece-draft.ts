@@ -2,8 +2,7 @@
 import { vecAddScaled } from "../geometry/vec3";
 import { pipeOdMm, pipeWall } from "../catalogue/pipe";
 import type { BuildContext } from "./build-context";
-import type { PlacedPoint, Side } from "./build-types";
-import type { Stretch } from "./cut-stretches";
+import type { PlacedPoint, Side, Stretch } from "./build-types";
 import { reachOf } from "./fit-common";
 import type { CutTerm, Piece, PieceEnd } from "./model-types";
 import { workingPointWord } from "./words";
@@ -22,7 +21,7 @@ export function draftPiece(s: Stretch, ctx: BuildContext): PieceDraft {
   const cutLengthMm = terms.reduce((sum, t) => sum + t.valueMm, 0);
   const reach = (side: Side) => reachOf(side.terms) + (side.gap?.mm ?? 0);
   return {
-    key: `${last.id}:1`, legId: last.id, runId: last.runId, nps: pipe.nps, schedule: pipe.schedule, material: pipe.material,
+    key: `${last.id}:1`, legId: last.id, legIds: s.legs.map((leg) => leg.id), runId: last.runId, nps: pipe.nps, schedule: pipe.schedule, material: pipe.material,
     odMm: wall?.odMm ?? pipeOdMm(pipe.nps, ctx.units) ?? 0, wallMm: wall?.wallMm ?? 0,
     start: vecAddScaled(first.from, first.direction, reach(s.start)), end: vecAddScaled(last.to, last.direction, -reach(s.end)),
     direction: first.direction, terms, cutLengthMm, ends: [pieceEnd(s.start), pieceEnd(s.end)],

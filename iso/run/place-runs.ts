@@ -2,16 +2,17 @@
  * First pass: puts every point of every run in space. The main run starts at the datum (0, 0, 0), a branch at the centre
  * of the fitting it leaves from; sizes change after reducers, and an eccentric reducer shifts the centre line after it.
  */
-import { STRAIGHT_RAD, ZERO_LENGTH_MM } from "../geometry/tolerances";
+import { STRAIGHT_RAD } from "../geometry/tolerances";
 import type { Vec3 } from "../geometry/types";
-import { VEC_ZERO, vecAdd, vecAddScaled, vecAngle, vecDistance, vecReject, vecSub, vecUnit } from "../geometry/vec3";
+import { VEC_ZERO, vecAdd, vecAngle, vecDistance, vecReject, vecUnit } from "../geometry/vec3";
 import { pipeOdMm } from "../catalogue/pipe";
 import type { BuildContext } from "./build-context";
 import { sentenceStart } from "./build-context";
 import type { BranchHead, PlacedPoint, PlacedRun } from "./build-types";
 import { axisVector } from "./axes";
-import type { Offset, Pipe, Point, Run, RunDocument } from "./document";
+import type { Pipe, Point, Run, RunDocument } from "./document";
 import type { Leg } from "./model-types";
+import { offsetPlace } from "./offset-place";
 import { legVerification } from "./verify-legs";
 
 interface RawPoint {
@@ -121,23 +122,6 @@ function runPipe(run: Run, start: RawPoint | null, ctx: BuildContext): Pipe {
 function pipeAfter(pipe: Pipe, point: Point): Pipe {
   if (point.item.kind !== "reducer") return pipe;
   return { ...pipe, nps: point.item.toNps, schedule: point.item.toSchedule ?? pipe.schedule };
-}
-
-/** Where an offset leads from `base`, and its unit direction taken from the numbers as typed (null when it has no length). */
-function offsetPlace(base: Vec3, offset: Offset): { position: Vec3; direction: Vec3 | null } {
-  if (offset.kind === "absolute") {
-    const position: Vec3 = [offset.e.mm, offset.n.mm, offset.u.mm];
-    return { position, direction: vecDistance(position, base) > ZERO_LENGTH_MM ? vecUnit(vecSub(position, base)) : null };
-  }
-  if (offset.kind === "polar") {
-    const along = vecUnit([offset.direction.e, offset.direction.n, offset.direction.u]);
-    if (!along) return { position: base, direction: null };
-    const length = offset.length.mm;
-    const towards: Vec3 = length < 0 ? [-along[0], -along[1], -along[2]] : along;
-    return { position: vecAddScaled(base, along, length), direction: Math.abs(length) > ZERO_LENGTH_MM ? towards : null };
-  }
-  const step: Vec3 = [offset.e.mm, offset.n.mm, offset.u.mm];
-  return { position: vecAdd(base, step), direction: Math.hypot(...step) > ZERO_LENGTH_MM ? vecUnit(step) : null };
 }
 
 function nextDirection(next: Point | undefined): Vec3 | null {

@@ -22,11 +22,11 @@ export function spoolContent(parts: ContentParts, document: RunDocument): string
   const place = new Map<string, number>();
   for (const id of [...parts.components.map((c) => c.id), ...parts.pieces.map((p) => p.key)]) place.set(id, place.size);
   const index = (id: string | null) => (id === null ? null : (place.get(id) ?? "beyond"));
-  const points = [...new Set([...parts.components.map((c) => c.pointId), ...parts.pieces.map((p) => p.legId)])];
+  const points = [...new Set([...parts.components.map((c) => c.pointId), ...parts.pieces.flatMap((p) => p.legIds ?? [p.legId])])];
   return JSON.stringify({
     line: [document.settings.units, document.settings.pipe.specification, document.settings.asEntered, document.notes],
     components: parts.components.map((c) => componentContent(c, parts)),
-    pieces: parts.pieces.map((p) => pieceContent(p, parts.legs.get(p.legId))),
+    pieces: parts.pieces.map((p) => pieceContent(p, (p.legIds ?? [p.legId]).flatMap((id) => parts.legs.get(id) ?? []))),
     joints: parts.joints.map((j) => [j.kind, j.place, index(j.a), index(j.b), j.nps, steps(j.gapMm), fine(j.mismatchRad)]),
     notes: points.map((id) => parts.points.get(id)?.note ?? "").filter((note) => note !== ""),
   });
@@ -42,9 +42,9 @@ function componentContent(c: Component, parts: ContentParts): unknown[] {
   ];
 }
 
-function pieceContent(p: PieceDraft, leg: Leg | undefined): unknown[] {
+function pieceContent(p: PieceDraft, legs: readonly Leg[]): unknown[] {
   return [
-    p.nps, p.schedule, p.material, steps(p.odMm), steps(p.wallMm), direction(p.direction), leg?.unverified ?? false, leg?.provenance.kind ?? "",
+    p.nps, p.schedule, p.material, steps(p.odMm), steps(p.wallMm), direction(p.direction), legs.map((leg) => `${leg.provenance.kind}${leg.unverified ? " unverified" : ""}`),
     ...p.terms.map((t) => `${t.label} ${steps(t.valueMm)}${t.unconfirmed ? " unconfirmed" : ""}`), p.ends[0].prep, p.ends[1].prep,
   ];
 }

@@ -85,6 +85,25 @@ describe("socket-weld", () => {
   });
 });
 
+describe("small parts", () => {
+  const one = { pipe: pipe("1", "80") };
+
+  it("NPS 1 coupling class 3000, laying length 1/2: 1/4 and a pull-back off each pipe (B16.11)", () => {
+    close(cuts(build(new RunBuilder("T", "imperial", one).start(open).go("E", `2'`, { kind: "coupling", half: false }).go("E", `3'`, open).done())), [24 - 0.25 - 0.0625, 36 - 0.25 - 0.0625]);
+  });
+
+  it("NPS 1 socket-weld flange class 150: hub 11/16 less the 1/2 socket, and the pull-back (B16.5, B16.11)", () => {
+    close(cuts(build(new RunBuilder("T", "imperial", one).start(flange({ flange: "socket-weld" })).go("E", `2'`, open).done())), [24 - 0.1875 - 0.0625]);
+  });
+
+  it("stub-in 2 on 6: the blank reaches the ears of the saddle, sqrt(3.3125² - 1.0335²) from the run's centre line (geometry)", () => {
+    const model = build(new RunBuilder("T", "imperial", { pipe: pipe("6") }).start(flange()).go("E", `3'`, { kind: "stub-in", branchNps: "2" }).go("E", `3'`, open).branch(2).go("U", `2'`, open).done());
+    expect(cuts(model)[1]).toBeCloseTo(24 - Math.sqrt(3.3125 ** 2 - 1.0335 ** 2) - 0.125, 9);
+    expect(model.spools).toHaveLength(1);
+    expect(model.joints.find((j) => j.kind === "branch")).toMatchObject({ key: "p2:branch", a: "p2" });
+  });
+});
+
 describe("branches and reducers", () => {
   it("outlet 2 on 6: its weld end stands 4 13/16 from the run's centre line (half of 6.625 plus 1 1/2)", () => {
     const model = build(new RunBuilder("T", "imperial", { pipe: pipe("6") }).start(flange()).go("E", `3'`, outlet("2")).go("E", `3'`, open).branch(2).go("U", `2'`, open).done());
