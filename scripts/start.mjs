@@ -7,7 +7,7 @@ import { interrupt } from "./lib/interrupt.mjs";
 import { releaseLock, stopLeftBehind, takeLock } from "./lib/lock.mjs";
 import { checkNode, checkRoom, ensureDebianPackages, ensurePackages } from "./lib/machine.mjs";
 import { dataFolder } from "./lib/paths.mjs";
-import { PlainError, say, sayHeading, sayWhy } from "./lib/say.mjs";
+import { isFullDisk, PlainError, say, sayHeading, sayWhy } from "./lib/say.mjs";
 import { stopSteps } from "./lib/steps.mjs";
 
 const ROOM_MB = 300;
@@ -45,7 +45,7 @@ function listenForSignals() {
 }
 
 function stopOnFailure(why) {
-  const code = sayWhy(new PlainError(`Stopping everything: ${why.message}. The logs in ${dataFolder()}/logs say more; nothing that was saved is lost.`, 70));
+  const code = sayWhy(isFullDisk(why) ? why : new PlainError(`Stopping everything: ${why.message}. The logs in ${dataFolder()}/logs say more; nothing that was saved is lost.`, 70));
   void stopAll(code);
 }
 

@@ -1,4 +1,5 @@
 /** What the two commands print: one line per step, and a plain sentence when something stops them. */
+import { statfsSync } from "node:fs";
 
 /** An end the reader can do something about: printed as its sentence, without a stack trace. */
 export class PlainError extends Error {
@@ -32,6 +33,24 @@ const FULL_DISK = /ENOSPC|No space left on device|EDQUOT|quota exceeded/i;
 export function isFullDisk(error) {
   const text = error instanceof Error ? `${error.code ?? ""} ${error.message} ${error.detail ?? ""}` : String(error);
   return FULL_DISK.test(text);
+}
+
+/** Below this a database can write neither its log nor its files. */
+const ALL_BUT_FULL_BYTES = 24_000_000;
+
+/** Whether the disk under a folder is all but full now, whatever words the last error had for it. @param {string} folder */
+export function isDiskFullAt(folder) {
+  try {
+    const { bavail, bsize } = statfsSync(folder);
+    return bavail * bsize < ALL_BUT_FULL_BYTES;
+  } catch {
+    return false;
+  }
+}
+
+/** An error that stands for a full disk. */
+export function fullDiskError() {
+  return Object.assign(new Error("ENOSPC: the disk is full"), { code: "ENOSPC" });
 }
 
 /** Prints why a command ends and answers its exit code. @param {unknown} error @returns {number} */

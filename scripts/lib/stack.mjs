@@ -9,7 +9,7 @@ import { forgetStarted, recordStarted } from "./lock.mjs";
 import { dataFolder, ROOT } from "./paths.mjs";
 import { clearLeftovers, initCluster, startPostgres } from "./postgres.mjs";
 import { ensureDatabase } from "./roles.mjs";
-import { isFullDisk, PlainError, say } from "./say.mjs";
+import { fullDiskError, isDiskFullAt, isFullDisk, PlainError, say } from "./say.mjs";
 import { seedDemo } from "./seeding.mjs";
 import { assignPorts, assignWebPort, DATABASE, databaseHome, ensureSettings, environmentOf, superUrlOf } from "./settings-file.mjs";
 import { startMailCatcher, startObjectStore } from "./stand-ins.mjs";
@@ -43,7 +43,7 @@ export async function bringUp({ host, onFailure }) {
     return stack;
   } catch (error) {
     await stack.stop();
-    throw error;
+    throw stack.isDiskFull() ? fullDiskError() : error;
   }
 }
 
@@ -82,6 +82,11 @@ class Stack {
     return { ...environmentOf(this.settings), AWS_SDK_JS_NODE_VERSION_SUPPORT_WARNING_DISABLED: "true" };
   }
 
+  /** Whether the disk under the data or the database is all but full. */
+  isDiskFull() {
+    return [dataFolder(), this.settings.databaseHome].some((folder) => folder && isDiskFullAt(folder));
+  }
+
   async startServices() {
     const { settings } = this;
     const local = [!process.env.DATABASE_URL && "database", !process.env.S3_BUCKET && "objects", !process.env.SMTP_URL && "mail"].filter(Boolean);
@@ -113,7 +118,7 @@ class Stack {
     try {
       return await startPostgres({ home, port: this.settings.databasePort, logFile: logFile("postgres") });
     } catch (error) {
-      if (isFullDisk(readFileSync(logFile("postgres")).subarray(from).toString())) throw Object.assign(new Error("ENOSPC"), { code: "ENOSPC" });
+      if (isFullDisk(readFileSync(logFile("postgres")).subarray(from).toString())) throw fullDiskError();
       throw error;
     }
   }
@@ -156,7 +161,7 @@ class Stack {
     };
     const part = await start();
     keepIt(part);
-    void supervise({ name, part, startAgain: start, isStopping: () => this.#stopping, started: keepIt, giveUp: this.onFailure });
+    void supervise({ name, part, startAgain: start, isStopping: () => this.#stopping, started: keepIt, giveUp: (why) => this.onFailure(this.isDiskFull() ? fullDiskError() : why) });
     return part;
   }
 

@@ -1,6 +1,6 @@
 /** Keeps what was started running: a part that dies is started again, more slowly each time; when that is no use, all stops. */
 import { setTimeout as sleep } from "node:timers/promises";
-import { say, warn } from "./say.mjs";
+import { isFullDisk, say, warn } from "./say.mjs";
 
 const FIRST_WAIT_MS = 500;
 const LONGEST_WAIT_MS = 20_000;
@@ -28,10 +28,12 @@ export async function supervise({ name, part, startAgain, isStopping, started, g
       if (tries > TRIES) return giveUp(new Error(`the ${name} does not stay up`));
       await sleep(Math.min(FIRST_WAIT_MS * 2 ** (tries - 1), LONGEST_WAIT_MS));
       if (isStopping()) return;
-      current = await startAgain().catch((error) => {
+      try {
+        current = await startAgain();
+      } catch (error) {
+        if (isFullDisk(error)) return giveUp(error);
         warn(error.message);
-        return null;
-      });
+      }
     }
     started(current);
     say(`the ${name} is up again`);
