@@ -8,7 +8,7 @@ import type { Memory } from "./row";
 export const PIPE_SOURCE = "checked against the millimetre walls of fluids piping_data (github CalebBell/fluids @2495e213)";
 export const PIPE_MEMORY: Memory = "partial";
 
-/** NPS, DN, outside diameter in inches, outside diameter in millimetres. */
+/** NPS, DN, outside diameter in inches, outside diameter in millimetres, of B36.10M (B36.19M has 273.1 and 323.9 for NPS 10 and 12). */
 export const PIPE_DIAMETERS: readonly (readonly [Nps, number, number, number])[] = [
   ["1/2", 15, 0.84, 21.3],
   ["3/4", 20, 1.05, 26.7],
@@ -22,9 +22,7 @@ export const PIPE_DIAMETERS: readonly (readonly [Nps, number, number, number])[]
   ["5", 125, 5.563, 141.3],
   ["6", 150, 6.625, 168.3],
   ["8", 200, 8.625, 219.1],
-  ["10", 250, 10.75, 273.1],
   ["10", 250, 10.75, 273],
-  ["12", 300, 12.75, 323.9],
   ["12", 300, 12.75, 323.8],
   ["14", 350, 14, 355.6],
   ["16", 400, 16, 406.4],

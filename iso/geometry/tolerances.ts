@@ -71,3 +71,6 @@ export const SQUARE_RAD = 0.005 * (Math.PI / 180);
 
 /** Radians (1 deg). A turn nearer than this to a half turn folds the line back on itself. */
 export const FOLD_RAD = Math.PI / 180;
+
+/** Unit-less. What is left of a unit vector across an axis must be longer than this to give a direction of its own. */
+export const NEARLY_ALONG = 1e-6;

@@ -1,6 +1,6 @@
 /** Vectors of the model frame: pure functions on read-only triples. Lengths keep the unit they come in. */
 import type { Vec3 } from "./types";
-import { ZERO_VECTOR } from "./tolerances";
+import { NEARLY_ALONG, ZERO_VECTOR } from "./tolerances";
 
 export const VEC_ZERO: Vec3 = [0, 0, 0];
 export const VEC_EAST: Vec3 = [1, 0, 0];
@@ -90,7 +90,8 @@ export function vecReject(a: Vec3, axis: Vec3): Vec3 {
 
 /** A unit vector square to a unit vector: up where that is possible, north on a riser. */
 export function vecPerpendicular(a: Vec3): Vec3 {
-  return vecUnit(vecReject(VEC_UP, a)) ?? vecUnit(vecReject(VEC_NORTH, a)) ?? VEC_EAST;
+  const up = vecReject(VEC_UP, a);
+  return (vecLength(up) > NEARLY_ALONG ? vecUnit(up) : vecUnit(vecReject(VEC_NORTH, a))) ?? VEC_EAST;
 }
 
 /** True when all three numbers are finite. */

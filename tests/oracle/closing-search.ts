@@ -99,30 +99,39 @@ function dips(tryHeading: (u: V) => { miss: number }, steps: number): V[] {
   return found;
 }
 
-/** Best of a 9 by 9 grid round about, then a finer grid round that, and so on: a fixed number of looks, whatever the valley's shape. */
+/** Looks per step size: enough to walk along the narrowest valley of the cases, few enough to end. */
+const MOST_LOOKS = 60;
+
+/** Best of a 5 by 5 grid round about, again and again until the middle is best, then with half the step. */
 function followDown(from: V, miss: (u: V) => number, firstStep: number, scale: number): V {
   let u = from;
   let here = miss(u);
-  for (let step = firstStep / 3; step > 1e-13 && here > 1e-13 * scale; step *= 0.55) {
-    const x: V = Math.abs(u[2]) < 0.7 ? [-u[1], u[0], 0] : [0, -u[2], u[1]];
-    const n = Math.hypot(...x);
-    const e: V = [x[0] / n, x[1] / n, x[2] / n];
-    const f: V = [u[1] * e[2] - u[2] * e[1], u[2] * e[0] - u[0] * e[2], u[0] * e[1] - u[1] * e[0]];
-    const centre = u;
-    for (let i = -4; i <= 4; i += 1) {
-      for (let j = -4; j <= 4; j += 1) {
-        const a = centre[0] + step * (i * e[0] + j * f[0]);
-        const b = centre[1] + step * (i * e[1] + j * f[1]);
-        const c = centre[2] + step * (i * e[2] + j * f[2]);
-        const size = Math.sqrt(a * a + b * b + c * c);
-        const w: V = [a / size, b / size, c / size];
-        const there = miss(w);
-        if (there < here) {
-          here = there;
-          u = w;
-        }
-      }
+  for (let step = firstStep / 2; step > 1e-13 && here > 1e-12 * scale; step /= 2) {
+    for (let look = 0; look < MOST_LOOKS; look += 1) {
+      const better = bestRoundAbout(u, here, step, miss);
+      if (!better) break;
+      u = better.u;
+      here = better.miss;
     }
   }
   return u;
+}
+
+function bestRoundAbout(u: V, here: number, step: number, miss: (u: V) => number): { u: V; miss: number } | null {
+  const x: V = Math.abs(u[2]) < 0.7 ? [-u[1], u[0], 0] : [0, -u[2], u[1]];
+  const n = Math.hypot(...x);
+  const e: V = [x[0] / n, x[1] / n, x[2] / n];
+  const f: V = [u[1] * e[2] - u[2] * e[1], u[2] * e[0] - u[0] * e[2], u[0] * e[1] - u[1] * e[0]];
+  let best: { u: V; miss: number } | null = null;
+  for (let i = -2; i <= 2; i += 1) {
+    for (let j = -2; j <= 2; j += 1) {
+      const a = u[0] + step * (i * e[0] + j * f[0]);
+      const b = u[1] + step * (i * e[1] + j * f[1]);
+      const c = u[2] + step * (i * e[2] + j * f[2]);
+      const size = Math.sqrt(a * a + b * b + c * c);
+      const there = miss([a / size, b / size, c / size]);
+      if (there < (best?.miss ?? here)) best = { u: [a / size, b / size, c / size], miss: there };
+    }
+  }
+  return best;
 }
