@@ -3,8 +3,6 @@ import { formatLength } from "@/iso";
 import type { ReactNode } from "react";
 import type { SpoolFacts } from "./spool-facts";
 
-const ENDS: Readonly<Record<"bevel" | "square", string>> = { bevel: "bevel", square: "square" };
-
 /** The number to cut to, rounded once. */
 export function cutLengthText(piece: Piece, units: UnitSystem): string {
   return units === "metric" ? `${formatLength(piece.cutLengthMm, units)} mm` : `${formatInches(piece.cutLengthMm)} in`;
@@ -57,13 +55,12 @@ export function CutTable({ facts, units, done }: CutTableProps) {
             <th role="columnheader" scope="col">Pipe</th>
             <th role="columnheader" scope="col">Arithmetic</th>
             <th role="columnheader" scope="col">Cut length</th>
-            <th role="columnheader" scope="col">Ends</th>
             {done ? <th role="columnheader" scope="col">Log</th> : <th role="columnheader" scope="col">Heat no., cut by</th>}
           </tr>
         </thead>
         <tbody role="rowgroup">
           {facts.pieces.map((piece) => (
-            <CutRow key={piece.key} piece={piece} units={units} unverified={facts.unverifiedLegs.has(piece.legId)} last={done ? done(piece) : <BlankLine />} lastLabel={done ? "Log" : "Heat, by"} />
+            <CutRow key={piece.key} piece={piece} units={units} unverified={(piece.legIds ?? [piece.legId]).some((id) => facts.unverifiedLegs.has(id))} last={done ? done(piece) : <BlankLine />} lastLabel={done ? "Log" : "Heat, by"} />
           ))}
         </tbody>
       </table>
@@ -91,6 +88,9 @@ function CutRow({ piece, units, unverified, last, lastLabel }: CutRowProps) {
         <span>
           <span className="figure">NPS {piece.nps}</span> {piece.schedule}
           <span className="block text-sm text-soft">{piece.material}</span>
+          <span className="block text-sm">
+            Ends: {piece.ends[0].prep}, {piece.ends[1].prep}
+          </span>
         </span>
       </td>
       <td role="cell" data-label="Arithmetic">
@@ -101,9 +101,6 @@ function CutRow({ piece, units, unverified, last, lastLabel }: CutRowProps) {
           <strong className="figure inline-block border-2 border-ink px-2 py-0.5 text-lg whitespace-nowrap">{fits ? cutLengthText(piece, units) : "DOES NOT FIT"}</strong>
           {unverified ? <span className="mt-1 block text-sm font-bold text-caution">VIF: unverified dimension</span> : null}
         </span>
-      </td>
-      <td role="cell" data-label="Ends">
-        {ENDS[piece.ends[0].prep]} / {ENDS[piece.ends[1].prep]}
       </td>
       <td role="cell" data-label={lastLabel}>
         {last}

@@ -52,9 +52,15 @@ export function fillStretch(s: Stretch, ctx: BuildContext): Between {
   const reach = reachOf(s.start.terms) + reachOf(s.end.terms);
   const total = s.legs.reduce((sum, leg) => sum + leg.lengthMm, 0);
   const gap = ctx.settings.allowances.rootGapMm;
-  const bothButt = s.start.weld?.kind === "butt" && s.end.weld?.kind === "butt" && s.start.componentId !== null && s.end.componentId !== null;
+  const bothButt = s.start.weld?.kind === "butt" && s.end.weld?.kind === "butt" && facesAreParts(s);
   if (bothButt && s.riders.length === 0 && Math.abs(total - reach - gap) <= FACE_TO_FACE_MM) return weldedStretch(s, gap, ctx);
   return pipeStretch(s, total, ctx);
+}
+
+/** Whether each face belongs to a fitting, or one of them to the pipe outside that a run's first or last point is welded to. */
+function facesAreParts({ start, end, from, to }: Stretch): boolean {
+  const [startPart, endPart] = [start.componentId !== null, end.componentId !== null];
+  return (startPart && (endPart || to.isLast)) || (endPart && from.isFirst);
 }
 
 function flowOf(s: Stretch) {

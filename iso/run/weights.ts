@@ -1,12 +1,15 @@
 /**
  * Empty weights. Pipe by its table, LR 90 elbows by a published table; other butt-weld fittings are estimated from pipe
- * of the same wall along their centre line (common practice, marked as an estimate). What is left is counted unweighed.
+ * of the same wall along their centre line, flanges from their dimensions (common practice, marked as an estimate). What
+ * is left (valves, outlets, forged fittings, supports) is counted unweighed.
  */
 import { elbowWeightKg, pipeWall } from "../catalogue/pipe";
 import { vecDistance } from "../geometry/vec3";
 import type { Nps, UnitSystem } from "./document";
+import { flangeWeightKg } from "./flange-weight";
 import type { Component } from "./model-types";
 
+const FLANGE_ESTIMATE = "estimated from the flange's tabulated dimensions (ASME B16.5)";
 const ESTIMATE = "estimated from pipe of the same wall";
 
 export type Weight = Pick<Component, "weightKg" | "weightSource">;
@@ -16,6 +19,10 @@ export function componentWeight(c: Component, units: UnitSystem): Weight {
   if (c.weightKg !== null || c.weightSource !== "") return { weightKg: c.weightKg, weightSource: c.weightSource };
   const table = c.kind === "elbow" && c.radiusMm !== null && /^Elbow 90 LR/.test(c.description) && c.schedule ? elbowWeightKg("lr-90", c.nps, c.schedule) : null;
   if (table) return { weightKg: table.kg, weightSource: table.source };
+  if (c.kind.startsWith("flange-")) {
+    const kg = flangeWeightKg(c);
+    return { weightKg: kg, weightSource: kg === null ? "not known" : FLANGE_ESTIMATE };
+  }
   const length = estimateLengthMm(c, units);
   const perMetre = c.schedule === null ? null : meanKgPerM(c, c.schedule, units);
   if (length === null || perMetre === null) return { weightKg: null, weightSource: "not known" };

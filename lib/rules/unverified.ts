@@ -13,7 +13,7 @@ export function unverifiedDimensions(input: SheetInput): UnverifiedDimension[] {
   const spool = model.spools.find((s) => s.letter === input.spool);
   const parts = new Set([...(spool?.pieceKeys ?? []), ...(spool?.componentIds ?? [])]);
   const legs = new Set([
-    ...model.pieces.filter((piece) => parts.has(piece.key)).map((piece) => piece.legId),
+    ...model.pieces.filter((piece) => parts.has(piece.key)).flatMap((piece) => piece.legIds ?? [piece.legId]),
     ...model.components.filter((component) => parts.has(component.id)).map((component) => component.pointId),
   ]);
   const order = input.document.runs.flatMap((run) => run.points.map((point) => point.id));

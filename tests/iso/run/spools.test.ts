@@ -1,4 +1,5 @@
 /** Spools, their lists, weights, boxes and content keys; bolted faces and loose parts. */
+import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { buildModel } from "../../../iso/run/build-model";
 import { documentCopy, pointUpdate } from "../../../iso/run/edit";
@@ -114,6 +115,20 @@ describe("weight, centre of gravity and box", () => {
     expect(spool.boxMm.map((mm) => mm / INCH)).toEqual([expect.closeTo(120, 6), expect.closeTo(4.5, 6), expect.closeTo(4.5, 6)]);
   });
 
+  it("flanges and fittings are estimates near makers' lists (NPS 4 class 150: weld-neck 16 lb, slip-on 13, blind 17; LR 90 8.9; all but the elbow from memory)", () => {
+    const model = build(new RunBuilder("T").start(flange()).go("E", `3'`).go("N", `3'`, flange({ flange: "slip-on" })).go("N", `3'`, flange({ flange: "blind" })).done());
+    const pounds = (kind: string) => model.components.find((c) => c.kind === kind)!.weightKg! / 0.45359237;
+    for (const [kind, listed] of [["flange-weld-neck", 16], ["flange-slip-on", 13], ["flange-blind", 17]] as const) {
+      expect(Math.abs(pounds(kind) - listed) / listed).toBeLessThan(0.1);
+    }
+    expect(pounds("elbow")).toBeCloseTo(8.9, 6);
+    expect(model.spools[0]!.unweighed).toBe(0);
+  });
+
+  it("counts what it cannot weigh: the first run's valve", () => {
+    expect(build(firstRun).spools[0]!.unweighed).toBe(1);
+  });
+
   it("says when a spool leaves the shipping box, in its own numbers", () => {
     const model = build(new RunBuilder("T").start(flange()).go("E", `42'`).go("N", `6'`, flange()).done());
     expect(model.problems.filter((p) => p.code === "shipping-box").map((p) => p.text)).toEqual([
@@ -139,6 +154,13 @@ describe("the content key", () => {
     const downstream = keys(northBy(twoSpools, "p6", -INCH / 16));
     expect(downstream[0]).toBe(before[0]);
     expect(downstream[1]).not.toBe(before[1]);
+  });
+
+  it("keeps the far spool's key for any length of the near one, float dust and all", () => {
+    const before = keys(twoSpools);
+    fc.assert(fc.property(fc.double({ min: -500, max: 9_000, noNaN: true }), fc.constantFrom("p2", "p3", "p4"), (mm, id) => {
+      expect(keys(northBy(twoSpools, id, mm))[1]).toBe(before[1]);
+    }), { numRuns: 150, seed: 11 });
   });
 
   it("changes with a note, a provenance, a place, a material and a tag", () => {
