@@ -6,7 +6,7 @@ import { parseItem } from "./item-entry";
 import { itemEcho, itemText } from "./item-text";
 import { moveEcho, moveText, parseMove, straightOnOf, ZERO_OFFSET, type StraightOn } from "./move-entry";
 import { parsePlaces, placesEcho, placesText } from "./place-entry";
-import { parseProvenance, PROVENANCE_LABEL } from "./provenance-entry";
+import { parseProvenance, PROVENANCE_WORD } from "./provenance-entry";
 
 export type Column = "move" | "item" | "joint" | "source" | "note";
 export const COLUMNS: readonly Column[] = ["move", "item", "joint", "source", "note"];
@@ -51,7 +51,7 @@ export function cellText(point: Point, column: Column, nearSide: "in" | "out"): 
     case "move": return moveText(point.offset);
     case "item": return itemText(point.item, jointPlace(point));
     case "joint": return placesText(point.places, nearSide);
-    case "source": return PROVENANCE_LABEL[point.provenance.kind];
+    case "source": return PROVENANCE_WORD[point.provenance.kind];
     case "note": return point.note;
   }
 }

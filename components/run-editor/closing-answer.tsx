@@ -53,7 +53,7 @@ function Facts({ answer, input }: Found) {
     <dl className="grid grid-cols-2 gap-x-6 gap-y-2 sm:grid-cols-3">
       <Fact label="Pipe, on a tape" value={answer.pipeText} large />
       <Fact label="Pipe, exact" value={exactText(answer.pipeLengthMm, units)} />
-      {answer.rollText ? <Fact label="Roll, looking along the pipe" value={`${answer.rollText}${answer.rollArcText ? `, arc ${answer.rollArcText}` : ""}`} /> : <Fact label="Roll" value="one elbow, none" />}
+      {answer.rollText ? <Fact label="Roll, looking along the pipe" value={answer.rollText} more={answer.rollArcText ? `arc ${answer.rollArcText}` : undefined} /> : <Fact label="Roll" value="one elbow, none" />}
       {answer.bends.map((bend) => (
         <Fact key={bend.end} label={`Elbow at end ${bend.end}`} value={`${bend.angleText}${bend.elbow === "90" ? ", whole 90" : ""}`} large />
       ))}
@@ -64,11 +64,14 @@ function Facts({ answer, input }: Found) {
   );
 }
 
-function Fact({ label, value, large }: { readonly label: string; readonly value: string; readonly large?: boolean }) {
+function Fact({ label, value, more, large }: { readonly label: string; readonly value: string; readonly more?: string | undefined; readonly large?: boolean }) {
   return (
     <div>
       <dt className="cell-label">{label}</dt>
-      <dd className={large ? "figure text-lg font-medium" : "figure"}>{value}</dd>
+      <dd className={large ? "figure text-lg font-medium" : "figure"}>
+        {value}
+        {more ? <span className="block">{more}</span> : null}
+      </dd>
     </div>
   );
 }
@@ -90,7 +93,7 @@ function Marks({ answer }: { readonly answer: ClosingFound }) {
       <tbody>
         {trimmed.map((bend) => (
           <tr key={bend.end}>
-            <th scope="row">End {bend.end}</th>
+            <td>End {bend.end}</td>
             <td data-figure className="figure">{bend.marksText.throat}</td>
             <td data-figure className="figure">{bend.marksText.sides}</td>
             <td data-figure className="figure">{bend.marksText.back}</td>

@@ -1,4 +1,5 @@
 /** Turns a closing into points of the run: trimmed elbows between what stays, with absolute places kept. Pure. */
+import { buildModel, emptyMarks } from "@/iso";
 import type { CloseBetweenInput, ClosingFound, Item, Model, Offset, Point, RunDocument, UnitSystem, Vec3 } from "@/iso";
 import { FROM_DRAWING, pointPlace, runOf, withPoints } from "./document-edits";
 import { lengthEntryText } from "@/components/jobs/settings-text";
@@ -41,22 +42,52 @@ function between(form: ClosingForm, found: ClosingFound, input: CloseBetweenInpu
   const keepFrom = isBareEnd(model, points[from]?.id ?? "") && from > 0 ? from : from + 1;
   const bareTo = to !== null && to < points.length - 1 && isBareEnd(model, points[to]?.id ?? "");
   const keepTo = to === null ? points.length : bareTo ? to + 1 : to;
-  const before = positionOf(model, points[keepFrom - 1]?.id) ?? [0, 0, 0];
+  const before = placeAfter(document, runId, keepFrom, input.end0.direction);
   const bends = bendPoints(form, found, before, document.settings.units, stamp);
   const last = found.points[found.points.length - 1] ?? before;
   const after = points[keepTo];
   const place = positionOf(model, after?.id);
   const rest = after && place ? [{ ...after, offset: offsetBetween(last, place, document.settings.units) }, ...points.slice(keepTo + 1)] : [];
   const tail = to === null ? [endPoint(input, last, document.settings.units, stamp)] : [];
-  const next = withPoints(document, runId, () => [...points.slice(0, keepFrom), ...bends, ...tail, ...rest]);
+  const head = points.slice(0, keepFrom).map((point, i) => (i === 0 && from === 0 ? outsideEnd(model, point, "out") : point));
+  const kept = rest.map((point, i) => (i === 0 && rest.length === 1 ? outsideEnd(model, point, "in") : point));
+  const next = withPoints(document, runId, () => [...head, ...bends, ...tail, ...kept]);
   const gone = keepTo - keepFrom;
-  return { ok: true, document: next, words: insertWords(bends.length, gone, to === null) };
+  return { ok: true, document: next, words: insertWords(bends.length, keepFrom + 1, gone, to === null) };
 }
 
-function insertWords(bends: number, gone: number, atEnd: boolean): string {
+function insertWords(bends: number, row: number, gone: number, atEnd: boolean): string {
   const what = bends === 0 ? "No elbow is needed" : `${bends === 1 ? "One elbow goes" : "Two elbows go"} in${atEnd ? " at the end of the run" : ""}`;
-  return gone > 0 ? `${what}; ${gone === 1 ? "one row" : `${gone} rows`} between the ends ${gone === 1 ? "gives" : "give"} way. Undo brings ${gone === 1 ? "it" : "them"} back.` : `${what}.`;
+  if (gone === 0) return `${what}.`;
+  return gone === 1 ? `${what} in place of row ${row}; Undo brings it back.` : `${what} in place of rows ${row} to ${row + gone - 1}; Undo brings them back.`;
 }
+
+const PROBE_MM = 1_000;
+
+/**
+ * Where the offset of a point in this row starts from. Not always the place of the point before it: an eccentric
+ * reducer moves the center line. So a point a known way along is placed by the model and taken back.
+ */
+function placeAfter(document: RunDocument, runId: string, row: number, direction: Vec3): Vec3 {
+  const size = Math.hypot(...direction) || 1;
+  const [e, n, u] = direction.map((part) => (part / size) * PROBE_MM) as [number, number, number];
+  const probe: Point = {
+    id: "probe", item: { kind: "none" }, places: {}, trimMm: null, provenance: FROM_DRAWING, note: "",
+    offset: { kind: "enu", e: { text: "", mm: e }, n: { text: "", mm: n }, u: { text: "", mm: u } },
+  };
+  const probed = withPoints(document, runId, (points) => [...points.slice(0, row), probe]);
+  const place = positionOf(buildModel(probed, emptyMarks(), []), probe.id);
+  return place ? [place[0] - e, place[1] - n, place[2] - u] : [0, 0, 0];
+}
+
+/** A bare end of the run that an elbow is welded to is pipe that stands there already: a field weld to it. */
+function outsideEnd(model: Model, point: Point, side: "in" | "out"): Point {
+  if (!isBareEnd(model, point.id)) return point;
+  const item: Item = point.item.kind === "end" ? point.item : EXISTING;
+  return { ...point, item, places: { ...point.places, [side]: point.places[side] ?? "field" } };
+}
+
+const EXISTING: Item = { kind: "end", goes: "existing", text: "" };
 
 /** A closing typed into an empty run: end 0 is where it starts. */
 function fromNothing(form: ClosingForm, found: ClosingFound, input: CloseBetweenInput, document: RunDocument, stamp: InsertStamp): InsertPlan {
@@ -64,7 +95,7 @@ function fromNothing(form: ClosingForm, found: ClosingFound, input: CloseBetween
   const main = document.runs[0];
   if (!main) return no("This line has no run.");
   const start = input.end0.position;
-  const first = newPoint(stamp.ids[2] ?? "closing-start", offsetBetween([0, 0, 0], start, units), { kind: "end", goes: "existing", text: "" }, stamp);
+  const first = { ...newPoint(stamp.ids[2] ?? "closing-start", offsetBetween([0, 0, 0], start, units), EXISTING, stamp), places: { out: "field" as const } };
   const last = found.points[found.points.length - 1] ?? start;
   const points = [first, ...bendPoints(form, found, start, units, stamp), endPoint(input, last, units, stamp)];
   return { ok: true, document: withPoints(document, main.id, () => points), words: "The closing becomes this line's run, between two existing ends." };
@@ -81,7 +112,7 @@ function bendPoints(form: ClosingForm, found: ClosingFound, before: Vec3, units:
 }
 
 function endPoint(input: CloseBetweenInput, from: Vec3, units: UnitSystem, stamp: InsertStamp): Point {
-  return newPoint(stamp.ids[3] ?? "closing-end", offsetBetween(from, input.end1.position, units), { kind: "end", goes: "existing", text: "" }, stamp);
+  return { ...newPoint(stamp.ids[3] ?? "closing-end", offsetBetween(from, input.end1.position, units), EXISTING, stamp), places: { in: "field" as const } };
 }
 
 function newPoint(id: string, offset: Offset, item: Item, stamp: InsertStamp): Point {
@@ -93,12 +124,15 @@ function positionOf(model: Model, pointId: string | undefined): Vec3 | null {
   return model.nodes.find((node) => node.pointId === pointId)?.position ?? null;
 }
 
+/** Less than this between two places is float noise, mm. */
+const FLOAT_DUST_MM = 1e-6;
+
 /** East, north and up from one place to another, as texts that read back to the same numbers. */
 export function offsetBetween(from: Vec3, to: Vec3, units: UnitSystem): Offset {
   const entry = (axis: 0 | 1 | 2) => {
     const mm = to[axis] - from[axis];
+    if (Math.abs(mm) < FLOAT_DUST_MM) return { text: "0", mm: 0 };
     const text = lengthEntryText(Math.abs(mm), units);
-    if (text === "0" || text === "0mm") return { text: "0", mm: 0 };
     return { text: mm < 0 ? `-${text}` : text, mm };
   };
   return { kind: "enu", e: entry(0), n: entry(1), u: entry(2) };

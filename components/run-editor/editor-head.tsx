@@ -42,7 +42,7 @@ export function EditorHead({ line, document, save, canUndo, canRedo, sheetShown,
             NPS {pipe.nps} {pipe.schedule}, {pipe.material}, class {ratingClass}, {units === "metric" ? "millimeters" : "feet and inches"}
           </p>
         </div>
-        <div className="flex flex-wrap items-center gap-2" data-screen-only>
+        <div className="flex flex-wrap items-center gap-2 max-sm:[&_button]:px-2.5 max-sm:[&_button]:text-sm" data-screen-only>
           {readOnly ? null : <SaveStatus state={save.state} onSave={save.saveNow} />}
           {readOnly ? null : (
             <>

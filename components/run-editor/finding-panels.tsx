@@ -10,26 +10,40 @@ import { UploadPanel } from "./upload-panel";
 export interface FindingPanelsProps extends Pick<ProblemListProps, "waiting" | "onPoint" | "onCell"> {
   readonly line: LineDetail;
   readonly model: Model;
-  readonly activePointId: string | null;
   readonly onUploads: () => Promise<unknown>;
 }
 
-/** What follows from the run: findings, cut list, spools; and the sketches it was read from. */
-export function FindingPanels({ line, model, waiting, activePointId, onPoint, onCell, onUploads }: FindingPanelsProps) {
+/** What is wrong or to be looked at; and the sketches the run was read from. */
+export function FindingPanels({ line, model, waiting, onPoint, onCell, onUploads }: FindingPanelsProps) {
   return (
-    <div className="mt-5">
-      <Section title="Cut list">
-        <CutStrip model={model} activePointId={activePointId} onPoint={onPoint} />
-      </Section>
+    <>
       <Section title="Findings">
         <ProblemList document={model.document} problems={model.problems} waiting={waiting} onPoint={onPoint} onCell={onCell} />
-      </Section>
-      <Section title="Spools">
-        <SpoolSummary model={model} spools={line.spools} />
       </Section>
       <Section title="Sketches and photos">
         <UploadPanel lineId={line.id} uploads={line.uploads} editable={line.editable} onChanged={onUploads} />
       </Section>
-    </div>
+    </>
+  );
+}
+
+export interface CutPanelsProps {
+  readonly line: LineDetail;
+  readonly model: Model;
+  readonly activePointId: string | null;
+  readonly onPoint: (pointId: string) => void;
+}
+
+/** What follows from the run for the bench: pieces to cut, spools to carry. */
+export function CutPanels({ line, model, activePointId, onPoint }: CutPanelsProps) {
+  return (
+    <>
+      <Section title="Cut list">
+        <CutStrip model={model} activePointId={activePointId} onPoint={onPoint} />
+      </Section>
+      <Section title="Spools">
+        <SpoolSummary model={model} spools={line.spools} />
+      </Section>
+    </>
   );
 }

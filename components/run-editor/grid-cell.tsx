@@ -40,7 +40,7 @@ export const GridCell = memo(function GridCell(props: GridCellProps) {
   const echo = cell.typed !== null ? (props.typing?.words ?? "") : props.echo;
   const unclear = cell.typed !== null && props.typing !== null && !props.typing.ok;
   return (
-    <div role="gridcell" aria-colindex={COLUMN_INDEX[column]} className={clsx("relative min-w-0 border-hair px-1 py-1 sm:border-l", column === "move" && "max-sm:col-span-2", column === "note" && "max-sm:col-span-2")}>
+    <div role="gridcell" aria-colindex={COLUMN_INDEX[column]} className={clsx("relative min-w-0 border-hair px-1 py-1 sm:border-l", column === "move" && "max-sm:col-span-2")}>
       <span aria-hidden className="cell-label block px-1 sm:hidden">
         {COLUMN_LABEL[column]}
       </span>
@@ -61,11 +61,11 @@ export const GridCell = memo(function GridCell(props: GridCellProps) {
         enterKeyHint="next"
         className={clsx(
           "w-full min-w-0 border px-1.5 py-1 leading-6 max-sm:min-h-11 max-sm:text-base placeholder:text-soft/70",
-          column === "note" ? "text-sm" : "figure text-[0.9375rem]",
+          column === "move" || column === "item" ? "figure text-[0.9375rem]" : "text-sm",
           message ? "border-alert bg-alert-tint" : active ? "border-dye bg-sheet" : "border-transparent bg-transparent hover:border-rule max-sm:border-hair",
         )}
       />
-      <p id={`${id}-echo`} role={message ? "alert" : undefined} className={clsx("min-h-[1.1rem] px-1.5 text-xs leading-[1.1rem]", message ? "font-medium text-alert" : unclear ? "text-caution" : "text-soft")}>
+      <p id={`${id}-echo`} role={message ? "alert" : undefined} className={clsx("px-1.5 text-xs leading-[1.1rem] max-sm:empty:hidden sm:min-h-[1.1rem]", message ? "font-medium text-alert" : unclear ? "text-caution" : "text-soft")}>
         {message ?? echo}
       </p>
       {cell.list.length > 0 ? <ItemPicker id={`${id}-list`} words={cell.list} picked={cell.picked} onTake={cell.take} /> : null}

@@ -8,10 +8,13 @@ import type { ItemWord } from "./item-words";
 export function ItemPicker({ id, words, picked, onTake }: { readonly id: string; readonly words: readonly ItemWord[]; readonly picked: number | null; readonly onTake: (word: ItemWord) => void }) {
   const box = useRef<HTMLUListElement>(null);
   useEffect(() => {
+    box.current?.parentElement?.scrollIntoView?.({ block: "nearest" });
+  }, []);
+  useEffect(() => {
     if (picked !== null) box.current?.children[picked]?.scrollIntoView?.({ block: "nearest" });
   }, [picked]);
   return (
-    <div className="absolute left-0 top-[calc(100%-1.1rem)] z-30 w-80 max-w-[calc(100vw-2rem)] border border-ink bg-sheet shadow-md max-sm:right-0 max-sm:left-auto">
+    <div className="absolute left-0 top-[calc(100%-1.1rem)] z-30 w-80 max-w-[calc(100vw-2rem)] border border-ink bg-sheet shadow-md max-sm:w-[calc(100vw-3.5rem)]">
       <ul ref={box} id={id} role="listbox" aria-label="Items" className="max-h-72 overflow-y-auto">
         {words.map((word, i) => (
           <li

@@ -1,11 +1,12 @@
 "use client";
 import clsx from "clsx";
-import { useCallback, useEffect, useMemo, useRef, useState, type KeyboardEvent, type MouseEvent, type PointerEvent } from "react";
+import { useCallback, useEffect, useMemo, useRef, useState, type KeyboardEvent, type MouseEvent } from "react";
 import type { Drawing, Model, PaperPoint, View } from "@/iso";
 import { DrawingItems, parseRef } from "./drawing-items";
 import { pointFinder } from "./drawing-refs";
 import type { DrawingRoom } from "./draw-line";
 import { useLineDrawing } from "./use-line-model";
+import { useDrag, useWheel } from "./use-drawing-hand";
 import { fitViewport, panViewport, viewportCentre, zoomViewport, type Viewport } from "./viewport";
 
 export interface LineDrawingProps {
@@ -24,6 +25,7 @@ const ZOOM_STEP = 1.25;
 const PAN_STEP = 0.12;
 
 const VIEW_NAMES: Readonly<Record<View, string>> = { 1: "from south-west", 2: "from south-east", 3: "from north-east", 4: "from north-west" };
+const VIEW_SHORT: Readonly<Record<View, string>> = { 1: "SW", 2: "SE", 3: "NE", 4: "NW" };
 const VIEWS: readonly View[] = [1, 2, 3, 4];
 
 /** The live isometric: what is pointed at finds its row, and the current row shows in the active colour. */
@@ -34,7 +36,7 @@ export function LineDrawing({ model, view, onView, activePointId, onPoint }: Lin
   return (
     <section aria-label="Isometric" className="flex min-h-0 min-w-0 flex-1 flex-col">
       <ViewButtons view={view} shown={drawn.drawing?.view ?? null} onView={onView} />
-      <div ref={frame} className="frame relative min-h-0 flex-1 overflow-hidden">
+      <div ref={frame} className="frame relative min-h-0 overflow-hidden max-lg:h-[min(88vw,65dvh)] lg:flex-1">
         {drawn.drawing ? (
           <DrawingWindow drawing={drawn.drawing} model={drawn.model} activePointId={activePointId} onPoint={onPoint} />
         ) : (
@@ -66,14 +68,14 @@ function useRoom(frame: React.RefObject<HTMLDivElement | null>): DrawingRoom {
 
 function ViewButtons({ view, shown, onView }: { readonly view: View | null; readonly shown: View | null; readonly onView: LineDrawingProps["onView"] }) {
   return (
-    <div role="group" aria-label="Looking" className="flex flex-wrap items-center gap-1 pb-1.5 text-sm">
+    <div role="group" aria-label="Looked at from" className="flex flex-wrap items-center gap-1 pb-1.5 text-sm">
       <button type="button" id="after-grid" disabled={!onView} aria-pressed={view === null} onClick={() => onView?.(null)} className={viewClass(view === null)}>
-        Proposed{view === null && shown ? `: ${VIEW_NAMES[shown]}` : ""}
+        Proposed{view === null && shown ? `: ${shown} ${VIEW_SHORT[shown]}` : ""}
       </button>
       {VIEWS.map((each) => (
-        <button key={each} type="button" disabled={!onView} aria-pressed={view === each} aria-label={`View ${each}, ${VIEW_NAMES[each]}`} onClick={() => onView?.(each)} className={viewClass(view === each)}>
+        <button key={each} type="button" title={VIEW_NAMES[each]} disabled={!onView} aria-pressed={view === each} aria-label={`View ${each}, ${VIEW_NAMES[each]}`} onClick={() => onView?.(each)} className={viewClass(view === each)}>
           <span className="figure">{each}</span>
-          <span className="hidden xl:inline">{VIEW_NAMES[each]}</span>
+          {VIEW_SHORT[each]}
         </button>
       ))}
     </div>
@@ -81,7 +83,7 @@ function ViewButtons({ view, shown, onView }: { readonly view: View | null; read
 }
 
 function viewClass(on: boolean): string {
-  return clsx("inline-flex min-h-9 items-center gap-1.5 border px-2.5 max-sm:min-h-11", on ? "border-dye bg-dye text-white" : "border-rule bg-sheet text-ink enabled:hover:border-dye disabled:text-soft");
+  return clsx("inline-flex min-h-9 items-center gap-1.5 border px-2.5 max-sm:min-h-11 max-sm:px-2", on ? "border-dye bg-dye text-white" : "border-rule bg-sheet text-ink enabled:hover:border-dye disabled:text-soft");
 }
 
 interface WindowProps extends Pick<LineDrawingProps, "activePointId" | "onPoint" | "model"> {
@@ -123,7 +125,7 @@ function DrawingWindow({ drawing, model, activePointId, onPoint }: WindowProps) 
         onClick={onClick}
         onKeyDown={onKeyDown}
         {...drag.handlers}
-        className="absolute inset-1 h-[calc(100%-0.5rem)] w-[calc(100%-0.5rem)] touch-none select-none"
+        className={clsx("absolute inset-1 h-[calc(100%-0.5rem)] w-[calc(100%-0.5rem)] select-none", look ? "touch-none" : "touch-pan-y")}
       >
         <DrawingItems items={drawing.items} touchable />
         <g pointerEvents="none">
@@ -158,61 +160,4 @@ function keyedView(key: string, shown: Viewport): Viewport | "fit" | null {
     case "ArrowDown": return panViewport(shown, 0, PAN_STEP);
     default: return null;
   }
-}
-
-/** Paper point under a place on screen. */
-function paperAt(svg: SVGSVGElement, clientX: number, clientY: number): PaperPoint | null {
-  const matrix = svg.getScreenCTM?.();
-  if (!matrix) return null;
-  const point = new DOMPoint(clientX, clientY).matrixTransform(matrix.inverse());
-  return [point.x, point.y];
-}
-
-/** React's wheel listener is passive, so the page would scroll along; this one is not. */
-function useWheel(svg: React.RefObject<SVGSVGElement | null>, zoom: (factor: number, about?: PaperPoint) => void): void {
-  useEffect(() => {
-    const box = svg.current;
-    if (!box) return;
-    const onWheel = (event: WheelEvent): void => {
-      event.preventDefault();
-      const about = paperAt(box, event.clientX, event.clientY);
-      zoom(event.deltaY > 0 ? ZOOM_STEP : 1 / ZOOM_STEP, about ?? undefined);
-    };
-    box.addEventListener("wheel", onWheel, { passive: false });
-    return () => box.removeEventListener("wheel", onWheel);
-  }, [svg, zoom]);
-}
-
-/** Pixels a press may wander and still be a press. */
-const STILL_PX = 5;
-
-function useDrag(svg: React.RefObject<SVGSVGElement | null>, shown: Viewport, setLook: (view: Viewport) => void) {
-  const held = useRef<{ readonly id: number; readonly x: number; readonly y: number; readonly from: Viewport; moved: boolean } | null>(null);
-  const moved = useRef(false);
-  return {
-    moved: () => moved.current,
-    handlers: {
-      onPointerDown: (event: PointerEvent<SVGSVGElement>) => {
-        moved.current = false;
-        held.current = { id: event.pointerId, x: event.clientX, y: event.clientY, from: shown, moved: false };
-      },
-      onPointerMove: (event: PointerEvent<SVGSVGElement>) => {
-        const start = held.current;
-        const scale = svg.current?.getScreenCTM?.()?.a;
-        if (!start || !scale || start.id !== event.pointerId) return;
-        const [dx, dy] = [event.clientX - start.x, event.clientY - start.y];
-        if (!start.moved && Math.hypot(dx, dy) < STILL_PX) return;
-        if (!start.moved) svg.current?.setPointerCapture(event.pointerId);
-        start.moved = true;
-        moved.current = true;
-        setLook({ ...start.from, x: start.from.x - dx / scale, y: start.from.y - dy / scale });
-      },
-      onPointerUp: () => {
-        held.current = null;
-      },
-      onPointerCancel: () => {
-        held.current = null;
-      },
-    },
-  };
 }

@@ -56,5 +56,5 @@ function shortPlace(place: Place | undefined): string {
 export function placesEcho(places: Places): string {
   const named = SIDES.filter((side) => places[side] !== undefined && places[side] !== "shop");
   if (named.length === 0) return "shop welds";
-  return named.map((side) => `${PLACE_LABEL[places[side] ?? "shop"]} weld ${SIDE_LABEL[side]}`).join(", ");
+  return named.map((side) => `${PLACE_LABEL[places[side] ?? "shop"]} ${SIDE_LABEL[side]}`).join(", ");
 }

@@ -1,4 +1,5 @@
 "use client";
+import { useState } from "react";
 import { formatLength, formatTerm, parseLength, type Offset, type Point, type Provenance, type RunDocument, type UnitSystem } from "@/iso";
 import { Button } from "@/components/ui/button";
 import { CommitField } from "./commit-field";
@@ -6,6 +7,7 @@ import { lengthEntryText } from "@/components/jobs/settings-text";
 import { pointPlace } from "./document-edits";
 import { useEditor } from "./editor-context";
 import { refused, understood, type EntryResult } from "./entry-result";
+import { isTouchScreen } from "./touch-screen";
 import { ItemDetail } from "./item-detail";
 import { itemCaution, itemEcho } from "./item-text";
 import { readOptionalLength } from "./length-reader";
@@ -18,6 +20,7 @@ export interface PointDetailProps {
 /** What the grid has no column for, for the current row. */
 export function PointDetail({ document, point }: PointDetailProps) {
   const { send, readOnly } = useEditor();
+  const [open, setOpen] = useState(() => !isTouchScreen());
   const { units } = document.settings;
   const place = pointPlace(document, point.id);
   if (!place) return null;
@@ -26,17 +29,19 @@ export function PointDetail({ document, point }: PointDetailProps) {
   const fieldFit = Object.values(point.places).includes("field-fit");
   const caution = itemCaution(point.item);
   return (
-    <section aria-label={`Row ${place.row + 1} in detail`} className="border-x border-b border-ink bg-sheet px-3 py-3">
-      <div className="mb-2 flex flex-wrap items-baseline justify-between gap-x-4">
-        <h3>
+    <details open={open} onToggle={(event) => setOpen(event.currentTarget.open)} className="border border-ink bg-sheet max-lg:sticky max-lg:bottom-0 max-lg:z-20 max-lg:max-h-[60dvh] max-lg:overflow-y-auto lg:border-t-0">
+      <summary className="flex min-h-11 cursor-pointer flex-wrap items-center justify-between gap-x-4 px-3 py-2">
+        <span className="font-bold">
+          <span aria-hidden className="mr-2 inline-block font-normal text-dye">{open ? "Less" : "More"}</span>
           Row {place.row + 1}
           {point.item.kind === "none" ? "" : `: ${itemEcho(point.item)}`}
-        </h3>
-        {caution ? <p className="text-sm text-caution">{caution}</p> : null}
-      </div>
+        </span>
+        {caution ? <span className="text-sm text-caution">{caution}</span> : null}
+      </summary>
+      <div className="px-3 pb-3">
       <div key={point.id} className="grid items-end gap-3 min-[480px]:grid-cols-2 xl:grid-cols-3">
         <SecondReading point={point} units={units} readOnly={readOnly} onPatch={patch} />
-        <CommitField label="Tool tolerance" hint="of the tape or laser, plus or minus" figure readOnly={readOnly} text={point.provenance.toleranceMm === null ? "" : lengthEntryText(point.provenance.toleranceMm, units)} read={readOptionalLength(units)} onCommit={(toleranceMm) => patch({ provenance: { ...point.provenance, toleranceMm } })} />
+        <CommitField label="Tool tolerance" hint="tape or laser, plus or minus" figure readOnly={readOnly} text={point.provenance.toleranceMm === null ? "" : lengthEntryText(point.provenance.toleranceMm, units)} read={readOptionalLength(units)} onCommit={(toleranceMm) => patch({ provenance: { ...point.provenance, toleranceMm } })} />
         {fieldFit ? (
           <CommitField label="Field-fit trim" hint="supplied extra; empty = the line's" figure readOnly={readOnly} text={point.trimMm === null ? "" : lengthEntryText(point.trimMm, units)} read={readOptionalLength(units)} onCommit={(trimMm) => patch({ trimMm })} />
         ) : null}
@@ -52,7 +57,8 @@ export function PointDetail({ document, point }: PointDetailProps) {
           <Button tone="quiet" className="px-0" onClick={() => send({ type: "row-remove", target })}>Remove row</Button>
         </div>
       )}
-    </section>
+      </div>
+    </details>
   );
 }
 

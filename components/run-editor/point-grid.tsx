@@ -8,6 +8,7 @@ import type { Draft, EditorState } from "./editor-state";
 import { COLUMN_LABEL } from "./grid-cell";
 import { itemEcho } from "./item-text";
 import { GRID_COLUMNS, PointRow } from "./point-row";
+import { isTouchScreen } from "./touch-screen";
 
 export interface PointGridProps {
   readonly state: EditorState;
@@ -144,9 +145,4 @@ function useCursorFocus(box: RefObject<HTMLDivElement | null>, { cursor, focusTu
     cell.select();
     if (!opening) cell.closest('[role="row"]')?.scrollIntoView?.({ block: "nearest" });
   }, [box, cursor, focusTurn]);
-}
-
-/** A screen without a fine pointer: focusing a field there raises the keyboard over half of it. */
-export function isTouchScreen(): boolean {
-  return typeof window.matchMedia === "function" && window.matchMedia("(pointer: coarse)").matches;
 }

@@ -81,7 +81,7 @@ function placeholderOf({ point, row, branch, units }: PointRowProps, column: Col
 function RowNumber({ point, row, severity, name, runId, cursor }: PointRowProps & { readonly name: string }) {
   const { send, readOnly } = useEditor();
   return (
-    <div role="rowheader" aria-colindex={1} className="figure flex items-center gap-2 px-1 pt-1.5 text-sm text-soft max-sm:col-span-2 max-sm:text-base sm:block sm:text-center">
+    <div role="rowheader" aria-colindex={1} className="figure flex items-center gap-2 px-1 pt-1.5 text-sm text-soft max-sm:col-span-2 max-sm:text-base sm:flex-col sm:gap-0.5">
       <span className="sr-only">{name}</span>
       <span aria-hidden>{row + 1}</span>
       {severity ? <ProblemMark severity={severity} /> : null}

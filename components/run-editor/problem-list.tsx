@@ -34,7 +34,7 @@ export const ProblemList = memo(function ProblemList({ document, problems, waiti
           <Finding
             key={`${problem.code}${problem.pointId ?? ""}${i}`}
             severity={problem.severity}
-            place={placeName(document, problem.pointId)}
+            place={/^point \d/i.test(problem.text) ? "" : placeName(document, problem.pointId)}
             text={problem.text}
             onPress={problem.pointId ? () => onPoint(problem.pointId ?? "") : null}
           />

@@ -11,6 +11,14 @@ export const PROVENANCE_LABEL: Readonly<Record<ProvenanceKind, string>> = {
   assumed: "assumed",
 };
 
+/** What the narrow cell shows. */
+export const PROVENANCE_WORD: Readonly<Record<ProvenanceKind, string>> = {
+  measured: "measured",
+  "from-drawing": "drawing",
+  calculated: "calculated",
+  assumed: "assumed",
+};
+
 export const PROVENANCE_HINT = "Type m for measured, d for from drawing, c for calculated or a for assumed.";
 
 const BY_FIRST_LETTER: Readonly<Record<string, ProvenanceKind>> = {

@@ -10,14 +10,15 @@ import { readDraft } from "./draft-store";
 import { EditorContext } from "./editor-context";
 import { EditorHead, type EditorPanel } from "./editor-head";
 import { waitingDrafts } from "./editor-state";
-import { FindingPanels } from "./finding-panels";
+import { CutPanels, FindingPanels } from "./finding-panels";
 import { KeyHelp } from "./key-help";
 import { LineDrawing } from "./line-drawing";
 import { PointDetail } from "./point-detail";
-import { isTouchScreen, PointGrid } from "./point-grid";
+import { PointGrid } from "./point-grid";
 import { ConflictBanner } from "./save-status";
 import { SettingsDrawer } from "./settings-drawer";
 import { LineSheet } from "./line-sheet";
+import { isTouchScreen } from "./touch-screen";
 import { useAutosave } from "./use-autosave";
 import { makeStamp, useEditorState } from "./use-editor-state";
 import { useLineModel } from "./use-line-model";
@@ -73,18 +74,25 @@ export function RunEditor({ line, viewer, onUploads }: RunEditorProps) {
           }}
         />
       ) : null}
-      <div className="grid gap-x-5 gap-y-4 lg:grid-cols-[minmax(36rem,46fr)_minmax(0,54fr)]">
-        <div className="flex min-w-0 flex-col lg:order-2">
-          <div className="flex h-[58vw] min-h-64 flex-col lg:sticky lg:top-3 lg:h-[min(46rem,calc(100dvh-7rem))]">
+      <div className="flex flex-col gap-x-5 gap-y-4 lg:grid lg:grid-cols-[minmax(36rem,46fr)_minmax(0,54fr)]">
+        <div className="contents lg:order-2 lg:block lg:min-w-0">
+          <div className="order-1 flex min-h-64 flex-col lg:h-[max(30rem,calc(100dvh-13.5rem))]">
             {sheetShown ? <LineSheet line={line} document={document} model={model} /> : <LineDrawing model={model} view={document.view} onView={line.editable ? setView : null} activePointId={point?.id ?? null} onPoint={showPoint} />}
           </div>
-        </div>
-        <div className="min-w-0 lg:order-1">
-          <div className="border-t border-ink lg:max-h-[min(32rem,calc(100dvh-14rem))] lg:overflow-y-auto lg:border-x lg:border-b">
-            <PointGrid state={state} problems={model.problems} />
+          <div className="order-3 mt-4 min-w-0">
+            <CutPanels line={line} model={model} activePointId={point?.id ?? null} onPoint={showPoint} />
           </div>
-          {point ? <PointDetail document={document} point={point} /> : null}
-          <FindingPanels line={line} model={model} waiting={waiting} activePointId={point?.id ?? null} onPoint={showPoint} onCell={showCell} onUploads={onUploads} />
+        </div>
+        <div className="contents lg:order-1 lg:block lg:min-w-0">
+          <div className="order-2 min-w-0">
+            <div className="border-t border-ink lg:max-h-[max(24rem,calc(100dvh-19rem))] lg:overflow-y-auto lg:border-x lg:border-b">
+              <PointGrid state={state} problems={model.problems} />
+            </div>
+            {point ? <PointDetail document={document} point={point} /> : null}
+          </div>
+          <div className="order-4 mt-4 min-w-0">
+            <FindingPanels line={line} model={model} waiting={waiting} onPoint={showPoint} onCell={showCell} onUploads={onUploads} />
+          </div>
         </div>
       </div>
       <KeyHelp open={panel === "help"} units={document.settings.units} onClose={close} />
