@@ -64,6 +64,8 @@ function paintSvg(document: PDFKit.PDFDocument, bytes: Uint8Array, box: PaperBox
   });
 }
 
+const UNWANTED = "script|foreignObject|iframe|object|embed|image|feImage|audio|video";
+
 /**
  * An SVG with nothing that reads or runs: scripts, foreign objects, pictures, style imports, entities and every link that
  * leaves the file are taken out. Throws when it is not a whole SVG or unreasonably large.
@@ -74,7 +76,8 @@ export function safeSvg(text: string): string {
   return text
     .replace(/<!DOCTYPE[^>[]*(\[[\s\S]*?\])?[^>]*>/gi, "")
     .replace(/<!ENTITY[\s\S]*?>/gi, "")
-    .replace(/<(script|foreignObject|iframe|object|embed|image|feImage|audio|video)\b[\s\S]*?(<\/\1\s*>|\/>)/gi, "")
+    .replace(new RegExp(`<(${UNWANTED})\\b[\\s\\S]*?</\\1\\s*>`, "gi"), "")
+    .replace(new RegExp(`</?(${UNWANTED})\\b[^>]*>`, "gi"), "")
     .replace(/@import[^;]*;?/gi, "")
     .replace(/url\(\s*(['"]?)(?!#)[^)]*\1\s*\)/gi, "none")
     .replace(/\s(?:xlink:)?href\s*=\s*(?:"(?!#)[^"]*"|'(?!#)[^']*')/gi, "")

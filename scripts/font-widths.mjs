@@ -9,11 +9,11 @@ import * as fontkit from "fontkit";
 const folder = path.resolve(import.meta.dirname, "../fonts");
 const FILES = { regular: "roboto-regular.ttf", bold: "roboto-bold.ttf", mono: "roboto-mono-regular.ttf" };
 
-/** Not for paper: controls, spaces other than the plain one, marks that need placing by a shaper, private use. */
+/** Not for paper: controls, spaces other than the plain one, marks that need placing by a shaper, private use, twins of other characters. */
 const isLeftOut = (c) =>
   c < 0x20 || (c >= 0x7f && c <= 0xa0) || c === 0xad || (c >= 0x300 && c <= 0x36f) || (c >= 0x483 && c <= 0x489) ||
   (c >= 0x2000 && c <= 0x200f) || (c >= 0x2028 && c <= 0x202f) || (c >= 0xe000 && c <= 0xf8ff) || c === 0xfeff ||
-  c === 0xfffc || c === 0xffff || c === 0x2044;
+  c === 0xfffc || c === 0xffff || c === 0x2044 || c === 0x2206 || c === 0x2126 || c === 0x2c9;
 
 const fonts = Object.fromEntries(
   Object.entries(FILES).map(([face, file]) => [face, fontkit.create(readFileSync(path.join(folder, file)))]),
