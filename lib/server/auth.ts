@@ -92,5 +92,5 @@ async function signInPlainly(credentials: unknown, headers: unknown): Promise<st
 }
 
 function isOnSite(url: string, baseUrl: string): boolean {
-  return url.startsWith("/") ? !url.startsWith("//") : URL.canParse(url) && new URL(url).origin === new URL(baseUrl).origin;
+  return url.startsWith("/") ? /^\/[A-Za-z0-9]/.test(url) || url === "/" : URL.canParse(url) && new URL(url).origin === new URL(baseUrl).origin;
 }

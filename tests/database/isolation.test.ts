@@ -2,34 +2,11 @@
  * Shops apart. The routes are read from the folder itself, so a new one without a recipe fails here. Each request first
  * succeeds for its owner; the same request from another shop's owner answers 404 and leaves every table as it was.
  */
-import { readdirSync } from "node:fs";
-import path from "node:path";
 import { afterAll, beforeAll, describe, expect, test } from "vitest";
 import { closeDb } from "@/lib/server/database";
 import { RECIPES } from "./isolation-recipes";
+import { everyRoute } from "./routes";
 import { call, newShop, tablePrints, withClient, type TestShop } from "./support";
-
-const API = path.resolve(import.meta.dirname, "../../app/api");
-const METHODS = ["GET", "HEAD", "POST", "PUT", "PATCH", "DELETE", "OPTIONS"];
-
-interface Route {
-  readonly name: string;
-  readonly method: string;
-  readonly handler: unknown;
-}
-
-async function everyRoute(): Promise<Route[]> {
-  const files = (readdirSync(API, { recursive: true }) as string[]).filter((file) => /(^|\/)route\.tsx?$/.test(file)).sort();
-  const routes = await Promise.all(
-    files.map(async (file) => {
-      const module = (await import(/* @vite-ignore */ path.join(API, file))) as Record<string, unknown>;
-      return Object.keys(module)
-        .filter((method) => METHODS.includes(method))
-        .map((method) => ({ name: `${method} /${path.dirname(file)}`, method, handler: module[method] }));
-    }),
-  );
-  return routes.flat();
-}
 
 /** Everything that belongs to one shop, for requests that may change the sender's own. */
 async function shopPrints(shopId: string): Promise<Record<string, string>> {

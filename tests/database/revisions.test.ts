@@ -14,13 +14,15 @@ import * as kill from "@/app/api/revisions/[revisionId]/void/route";
 import * as spool from "@/app/api/spools/[spoolId]/route";
 import * as draft from "@/app/api/spools/[spoolId]/sheet/route";
 import * as submit from "@/app/api/spools/[spoolId]/submit/route";
-import * as work from "@/app/api/spools/[spoolId]/work/route";
 import * as status from "@/app/api/status/[token]/route";
 import { verifyAudit } from "@/lib/server/audit";
 import { closeDb } from "@/lib/server/database";
 import { sha256Hex } from "@/lib/server/storage";
 import { chainDocument, pointAt, sampleDocument } from "../factories";
 import { addMember, call, newLine, newShop, PASSWORD, unique, withClient, type TestLine, type TestPerson, type TestShop } from "./support";
+import { routeNamed } from "./routes";
+
+const work = { POST: await routeNamed("POST /spools/[spoolId]/work") };
 
 let shop: TestShop;
 beforeAll(async () => {

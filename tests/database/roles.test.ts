@@ -26,14 +26,15 @@ import * as submit from "@/app/api/spools/[spoolId]/submit/route";
 import * as takeOuts from "@/app/api/shop/take-outs/route";
 import * as uploadRoute from "@/app/api/uploads/[uploadId]/route";
 import * as uploads from "@/app/api/lines/[lineId]/uploads/route";
-import * as work from "@/app/api/spools/[spoolId]/work/route";
 import type { Role } from "@/lib/rules/api-types";
 import { closeDb } from "@/lib/server/database";
 import { sampleDocument } from "../factories";
 import { pngFile } from "./files";
+import { routeNamed } from "./routes";
 import { marksOf, signBody, signed, submitted, type TestRevision } from "./revision-support";
 import { addMember, call, newLine, newShop, ROLES, unique, type Call, type TestLine, type TestShop } from "./support";
 
+const work = { POST: await routeNamed("POST /spools/[spoolId]/work") };
 let shop: TestShop;
 let issued: TestRevision;
 beforeAll(async () => {
