@@ -24,6 +24,7 @@ import { pipePass, pipeStretches } from "./pipe";
 import { placeAll, placePlan, type Placed } from "./place";
 import { boxCorners, paperBoxAround, segmentInBox, type Segment, type TurnedBox } from "./plane";
 import { PROJECTIONS } from "./project";
+import { NO_ROWS, separateRows, type ExtraRows } from "./separate";
 import { sketchOf } from "./sketch";
 import { slopePass } from "./slopes";
 import { symbolPass } from "./symbols";
@@ -47,10 +48,14 @@ export function drawModel(model: Model, options: DrawOptions): Drawing {
   const view: View = options.view ?? model.document.view ?? bestView(plan);
   const projection = PROJECTIONS[view];
   let margin = FIRST_MARGIN;
+  const fitted = (rows: ExtraRows): number => fitStretch(plan, projection, options.widthMm - 2 * margin, options.heightMm - 2 * margin, rows);
+  let rows = NO_ROWS;
+  // Twice: room taken by moving pipes apart shortens the legs, which can bring others close.
+  for (let pass = 0; pass < 2; pass++) rows = separateRows(plan, projection, fitted(rows), rows);
   let best: Drawing | null = null;
   for (let attempt = 0; attempt < FIT_TRIES; attempt++) {
-    const stretch = fitStretch(plan, projection, options.widthMm - 2 * margin, options.heightMm - 2 * margin);
-    const lines = drawLines(placeAll(plan, projection, stretch), options);
+    const stretch = fitted(rows);
+    const lines = drawLines(placeAll(plan, projection, stretch, rows), options);
     const over = boxOverrun(lines.extent, options.widthMm - 2 * LABEL_MARGIN, options.heightMm - 2 * LABEL_MARGIN);
     const last = stretch === 0 || attempt === FIT_TRIES - 1;
     if (over > 0 && !last) {
@@ -62,7 +67,7 @@ export function drawModel(model: Model, options: DrawOptions): Drawing {
     if (stretch === 0 || overrun(next) <= 0) break;
     margin += Math.max(3, overrun(next) / 2);
   }
-  return best ?? drawLabels(drawLines(placeAll(plan, projection, 0), options), options, view);
+  return best ?? drawLabels(drawLines(placeAll(plan, projection, 0, rows), options), options, view);
 }
 
 function boxOverrun(box: PaperBox, widthMm: number, heightMm: number): number {

@@ -3,14 +3,15 @@ import type { PaperBox } from "../geometry/types";
 import { placeAll, type PlacePlan } from "./place";
 import { paperBoxAround } from "./plane";
 import type { Projection } from "./project";
+import type { ExtraRows } from "./separate";
 import * as size from "./sizes";
 
 const STEPS = 7;
 
 /** Bisects the stretch s between 0 and STRETCH_MOST. */
-export function fitStretch(plan: PlacePlan, projection: Projection, widthMm: number, heightMm: number): number {
+export function fitStretch(plan: PlacePlan, projection: Projection, widthMm: number, heightMm: number, extra: ExtraRows): number {
   const fits = (stretch: number): boolean => {
-    const box = paperBoxAround([...placeAll(plan, projection, stretch).paper.values()]);
+    const box = paperBoxAround([...placeAll(plan, projection, stretch, extra).paper.values()]);
     return !Number.isFinite(box.minX) || (box.maxX - box.minX <= widthMm && box.maxY - box.minY <= heightMm);
   };
   if (fits(size.STRETCH_MOST)) return size.STRETCH_MOST;

@@ -6,7 +6,7 @@ import { entriesOf, seatFor, seatInPool, type LabelTable, type Seat } from "./la
 /** Labels that cost more than this look for a place to take. */
 const UNEASY = 11;
 /** Places tried per uneasy label. */
-const TRIES = 14;
+const TRIES = 8;
 const LEAST_GAIN = 0.5;
 
 /** @returns whether any label changed its seat */

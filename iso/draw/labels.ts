@@ -35,9 +35,8 @@ export function placeLabels(labels: readonly Label[], fixed: readonly TurnedBox[
     seats[i] = seat;
   });
   for (let sweep = 0; sweep < SWEEPS; sweep++) {
-    const moved = improveAll(labels, pools, seats, field, ink);
-    const swapped = ejectAll({ labels, pools, seats, field, ink });
-    if (!moved && !swapped) break;
+    if (!improveAll(labels, pools, seats, field, ink) && sweep > 0) break;
+    if (sweep < SWEEPS - 1) ejectAll({ labels, pools, seats, field, ink });
   }
   return drawnLabels(labels, seats, fixed, field);
 }
