@@ -41,7 +41,7 @@ function Review({ review }: { readonly review: ReviewDetail }) {
     <>
       <ReviewHead review={review} />
       <Standing review={review} />
-      <div className="grid gap-x-10 gap-y-8 xl:grid-cols-[minmax(0,5fr)_minmax(0,3fr)]">
+      <div className="grid gap-x-10 gap-y-8 xl:grid-cols-[minmax(0,2fr)_minmax(20rem,1fr)]">
         <Sheets review={review} />
         <div className="min-w-0">
           <Impact lines={review.impact} />

@@ -87,7 +87,7 @@ function TakeOuts({ words, units, owner }: { readonly words: readonly TakeOutWor
 
 function columnsFor(units: UnitSystem, owner: boolean, onEdit: (row: TakeOutRow) => void): readonly Column<TakeOutRow>[] {
   const columns: Column<TakeOutRow>[] = [
-    { key: "words", head: "Fitting", cell: (row) => row.words },
+    { key: "words", head: "Fitting", cell: (row) => <span className="inline-block first-letter:uppercase">{row.words}</span> },
     { key: "value", head: units === "metric" ? "Take-out, mm" : "Take-out, in", figure: true, cell: (row) => row.value },
     { key: "source", head: "Source", cell: (row) => <span className="text-sm">{row.source}</span> },
     {

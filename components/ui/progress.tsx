@@ -22,7 +22,7 @@ export function Progress({ done, of, word, className }: { readonly done: number;
         {done} of {of} {word}
       </span>
       <svg aria-hidden viewBox="0 0 100 6" preserveAspectRatio="none" className="mt-0.5 block h-1.5 w-full">
-        <rect x="0.5" y="0.5" width="99" height="5" fill="none" stroke="var(--color-rule)" strokeWidth="1" vectorEffect="non-scaling-stroke" />
+        <rect x="0" y="0" width="100" height="6" fill="none" stroke="var(--color-rule)" strokeWidth="1" vectorEffect="non-scaling-stroke" />
         <rect x="0" y="0" width={share * 100} height="6" fill="var(--color-dye)" />
       </svg>
     </span>
