@@ -12,7 +12,7 @@ import { fitPoint } from "./fit-point";
 import { groupSpools, type Parts, type SpoolGroup } from "./group-spools";
 import { joinFaces } from "./join-faces";
 import { advanceMarks, givenMarks, type Markable } from "./marks";
-import type { Component, Joint, Leg, MarksRegister, Model, Node, Piece, TakeOutWord } from "./model-types";
+import type { Component, Joint, Leg, MarksRegister, Model, Node, Piece, Problem, TakeOutWord } from "./model-types";
 import { placeRuns } from "./place-runs";
 import { componentWeight } from "./weights";
 
@@ -45,7 +45,7 @@ export function buildModel(document: RunDocument, marks: MarksRegister, takeOuts
     joints: line.parts.joints.map((j) => jointOf(j, given.welds.get(j.key) ?? null, spoolOf(j.a) ?? spoolOf(j.b))),
     pieces: line.parts.pieces.map((p): Piece => ({ ...p, mark: given.pieces.get(p.key) ?? "", spool: spoolOf(p.key) })),
     spools,
-    problems: line.ctx.problems,
+    problems: inFlowOrder(line.ctx.problems, line.runs),
   };
 }
 
@@ -122,6 +122,14 @@ function jointOf(j: JointDraft, number: string | null, spool: string | null): Jo
     key: j.key, pointId: j.pointId, kind: j.kind, place: j.place, number,
     position: j.position, direction: j.direction, a: j.a, b: j.b, nps: j.nps, mismatchRad: j.mismatchRad, gapMm: j.gapMm, spool,
   };
+}
+
+/** Findings by the row they belong to, in flow order; those of no row last. */
+function inFlowOrder(problems: readonly Problem[], runs: readonly PlacedRun[]): Problem[] {
+  const rows = new Map<string, number>();
+  for (const run of runs) for (const p of run.points) if (!rows.has(p.point.id)) rows.set(p.point.id, rows.size);
+  const row = (problem: Problem) => (problem.pointId === null ? rows.size : (rows.get(problem.pointId) ?? rows.size));
+  return [...problems].sort((a, b) => row(a) - row(b));
 }
 
 function nodeOf(p: PlacedPoint): Node {

@@ -25,7 +25,8 @@ function fitItem(p: PlacedPoint, ctx: BuildContext): Fitting {
   const isEnd = p.isFirst || p.isLast;
   switch (item.kind) {
     case "none":
-      return isEnd ? fitEnd(p, item, ctx) : p.turnRad > 0 ? fitElbow(p, null, ctx) : fittingOf({});
+      if (isEnd) return fitEnd(p, item, ctx);
+      return p.turnRad > 0 ? fitElbow(p, null, ctx) : isWeldNamed(p) ? fitPlainWeld(p, ctx) : fittingOf({});
     case "end":
       return isEnd ? fitEnd(p, item, ctx) : fitEndInside(p, item, ctx);
     case "joint":
@@ -51,6 +52,11 @@ function fitItem(p: PlacedPoint, ctx: BuildContext): Fitting {
     case "cap":
       return fitCap(p, ctx);
   }
+}
+
+/** A field or field-fit weld asked for on straight pipe with no item named: the weld is meant. */
+function isWeldNamed(p: PlacedPoint): boolean {
+  return [p.point.places.in, p.point.places.out].some((place) => place === "field" || place === "field-fit");
 }
 
 /** A support under a change of direction: the elbow is there all the same. */

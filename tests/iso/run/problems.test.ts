@@ -140,6 +140,11 @@ describe("the shop's own word", () => {
   });
 });
 
+it("findings come in flow order", () => {
+  const document = line().go("E", `3'`).go("N60E", `3'`).go("E", `5'`, valve()).done();
+  expect(problems(document).map((p) => p.pointId)).toEqual(["p2", "p3", "p4", "p4"]);
+});
+
 it("findings point at rows that exist", () => {
   for (const document of [firstRun, twoSpools, ...CASES.map((c) => c[3])]) {
     const ids = new Set(document.runs.flatMap((r) => r.points.map((p) => p.id)));

@@ -39,6 +39,14 @@ describe("where a line comes apart", () => {
     expect(last).toMatchObject({ key: "p7:end", place: "field-fit", number: "11", b: null });
   });
 
+  it("a field weld asked for at a bare point on straight pipe is a weld there", () => {
+    const model = build(new RunBuilder("T").start(flange()).go("E", `5'`, { kind: "none" }, { places: { in: "field" } }).go("E", `5'`, flange()).done());
+    expect(model.spools.map((s) => s.letter)).toEqual(["A", "B"]);
+    expect(model.pieces.map((p) => p.cutLengthMm / INCH)).toEqual([expect.closeTo(60 - 3 - 0.125 - 0.0625, 9), expect.closeTo(60 - 3 - 0.125 - 0.0625, 9)]);
+    const through = build(new RunBuilder("T").start(flange()).go("E", `5'`).go("E", `5'`, flange()).done());
+    expect(through.pieces.map((p) => p.legIds)).toEqual([["p2", "p3"]]);
+  });
+
   it("a branch with a field weld is a spool of its own; the tee stays with the run", () => {
     const model = build(new RunBuilder("T").start(flange()).go("E", `3'`, tee(), { places: { branch: "field" } }).go("E", `3'`, flange()).branch(2).go("N", `3'`, flange()).done());
     expect(model.spools.map((s) => [s.letter, s.pieceKeys.length])).toEqual([["A", 2], ["B", 1]]);
