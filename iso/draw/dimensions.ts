@@ -41,13 +41,16 @@ export interface DimensionSurroundings {
 
 const LEVELS = 4;
 const ROUNDS = 2;
+/** From this many chains on one round is enough to keep editing quick. */
+const ONE_ROUND_FROM = 24;
 
 export function dimensionPass(placed: Placed, drawn: readonly DrawnEdge[], around: DimensionSurroundings, measure: MeasureText): DimensionInk {
   const chains = [...straightChains(drawn)].sort((p, q) => q.edges.length - p.edges.length);
   const flanged = flangedPoints(placed);
   const leaving = leavingDirections(drawn);
   const chosen: (Choice | null)[] = chains.map(() => null);
-  for (let round = 0; round < ROUNDS; round++) {
+  const rounds = chains.length > ONE_ROUND_FROM ? 1 : ROUNDS;
+  for (let round = 0; round < rounds; round++) {
     chains.forEach((chain, i) => {
       const before = chosen[i];
       if (before) release(around.field, before);

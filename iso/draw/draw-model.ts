@@ -33,7 +33,9 @@ import { weldPass } from "./weld-marks";
 /** Painted from back to front. */
 const LAYERS: readonly Layer[] = ["hatch", "box", "dimension", "halo", "pipe", "symbol", "weld", "flow", "leader", "balloon", "dimension-text", "label", "north"];
 /** Tries to make everything fit by drawing the legs shorter. */
-const FIT_TRIES = 6;
+const FIT_TRIES = 5;
+/** A stretch under this is not worth another try: the legs stand at their least room. */
+const STRETCH_LEAST = 0.15;
 /** Paper kept beyond the pipe at the first try, and beyond dimensions for the labels, mm. */
 const FIRST_MARGIN = 20;
 const LABEL_MARGIN = 7;
@@ -54,7 +56,8 @@ export function drawModel(model: Model, options: DrawOptions): Drawing {
   for (let pass = 0; pass < 2; pass++) rows = separateRows(plan, projection, fitted(rows), rows);
   let best: Drawing | null = null;
   for (let attempt = 0; attempt < FIT_TRIES; attempt++) {
-    const stretch = fitted(rows);
+    const wished = fitted(rows);
+    const stretch = wished < STRETCH_LEAST ? 0 : wished;
     const lines = drawLines(placeAll(plan, projection, stretch, rows), options);
     const over = boxOverrun(lines.extent, options.widthMm - 2 * LABEL_MARGIN, options.heightMm - 2 * LABEL_MARGIN);
     const last = stretch === 0 || attempt === FIT_TRIES - 1;

@@ -8,6 +8,8 @@ export interface Seat {
   readonly entries: readonly FieldEntry[];
 }
 
+/** Free places weighed before the best of them is taken: far past where the ring search still gains. */
+const FREE_TRIES = 48;
 const COST_OF_LEADER_ON_LABEL = 45;
 const COST_OF_LEADER_CROSSING = 14;
 
@@ -28,13 +30,15 @@ export function seatInPool(label: Label, pool: Pool, field: LabelField, ink: Lab
 export function seatFor(label: Label, candidates: readonly Candidate[], field: LabelField, ink: LabelInk): Seat | null {
   let best: Candidate | null = null;
   let bestCost = Infinity;
+  let free = 0;
   for (const candidate of candidates) {
-    if (candidate.base >= bestCost) break;
+    if (candidate.base >= bestCost || free > FREE_TRIES) break;
     const box = labelBox(label, candidate.centre);
     if (field.overlapping(box)) continue;
     const led = candidate.ring >= label.leaderFrom;
     let cost = candidate.base + (led ? leaderPrice(candidate, ink) : 0);
     if (cost >= bestCost) continue;
+    free++;
     const met = led ? field.onLeader(candidate.from, candidate.to) : { labels: 0, leaders: 0 };
     cost += met.labels * COST_OF_LEADER_ON_LABEL + met.leaders * COST_OF_LEADER_CROSSING + field.leadersIn(box) * COST_OF_LEADER_ON_LABEL;
     if (cost < bestCost) [best, bestCost] = [candidate, cost];

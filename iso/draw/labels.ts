@@ -12,6 +12,8 @@ import { seatFor, seatInPool, type Pool, type Seat } from "./label-seats";
 import { boxesMeet, type TurnedBox } from "./plane";
 
 const SWEEPS = 3;
+/** More labels than this get one sweep and no ejection: such a line wants more than one sheet anyway. */
+const EJECTION_MOST = 160;
 /** A label on the innermost ring without a fault costs less and cannot get better. */
 const BEST_COST = 1.06;
 const SAME_COST = 1e-9;
@@ -34,9 +36,10 @@ export function placeLabels(labels: readonly Label[], fixed: readonly TurnedBox[
     for (const entry of seat?.entries ?? []) field.add(entry);
     seats[i] = seat;
   });
-  for (let sweep = 0; sweep < SWEEPS; sweep++) {
+  const sweeps = labels.length <= EJECTION_MOST ? SWEEPS : 1;
+  for (let sweep = 0; sweep < sweeps; sweep++) {
     if (!improveAll(labels, pools, seats, field, ink) && sweep > 0) break;
-    if (sweep < SWEEPS - 1) ejectAll({ labels, pools, seats, field, ink });
+    if (sweep < SWEEPS - 1 && labels.length <= EJECTION_MOST) ejectAll({ labels, pools, seats, field, ink });
   }
   return drawnLabels(labels, seats, fixed, field);
 }

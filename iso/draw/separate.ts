@@ -17,7 +17,7 @@ export const NO_ROWS: ExtraRows = [[], [], []];
 
 const ROUNDS = 6;
 /** Trials in all: large lines stop here, so that editing stays quick. */
-const TRIALS = 24;
+const TRIALS = 16;
 /** Paper added between two that are too close. */
 const STEP = 9;
 /** A gain smaller than this is not worth a row. */
