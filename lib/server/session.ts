@@ -6,7 +6,7 @@ import { randomUUID } from "node:crypto";
 import { decode } from "next-auth/jwt";
 import { QueryTypes, type Transaction } from "sequelize";
 import type { Role } from "@/lib/rules/api-types";
-import { Membership, Person, Session } from "@/models";
+import { Person, Session } from "@/models";
 import { appendAudit } from "./audit";
 import { getDb, inTransaction } from "./database";
 import { refuseUnknown } from "./errors";
@@ -94,14 +94,21 @@ export async function requireViewer(request?: Request): Promise<SessionViewer> {
   return viewer;
 }
 
+/** The shop one looked at last comes first, then the one joined first. */
+const HOME_SHOP = `
+SELECT m.shop_id AS "shopId" FROM memberships m
+WHERE m.person_id = $personId AND m.removed_at IS NULL
+ORDER BY (SELECT max(s.last_seen_at) FROM sessions s WHERE s.person_id = m.person_id AND s.shop_id = m.shop_id) DESC NULLS LAST, m.joined_at, m.id
+LIMIT 1`;
+
 /**
- * Starts a session of a person in the shop they joined first.
+ * Starts a session of a person in the shop they looked at last.
  * @returns its id, or null when they belong to no shop (any longer).
  */
 export async function startSession(personId: string, device: string): Promise<string | null> {
   return inTransaction(async (tx) => {
-    const member = await Membership.findOne({ where: { personId, removedAt: null }, order: [["joinedAt", "ASC"], ["id", "ASC"]], transaction: tx });
-    if (member === null) return null;
+    const [member] = await getDb().query<{ shopId: string }>(HOME_SHOP, { bind: { personId }, type: QueryTypes.SELECT, transaction: tx });
+    if (member === undefined) return null;
     const now = new Date();
     const sessionId = randomUUID();
     const expiresAt = new Date(now.getTime() + SESSION_DAYS * DAY_MS);

@@ -2,7 +2,7 @@
  * Tries counted in fixed windows, in the database so that several processes count together. Each try is counted
  * before it is looked at, so parallel tries do not slip through.
  */
-import { QueryTypes } from "sequelize";
+import { Op, QueryTypes } from "sequelize";
 import { Throttle } from "@/models";
 import { getDb } from "./database";
 import { refuseThrottled } from "./errors";
@@ -36,8 +36,17 @@ export async function countTry(limits: readonly TryLimit[], now: Date): Promise<
       bind: { key: keyOf(limit), now, over },
       type: QueryTypes.SELECT,
     });
+    if (row?.tries === 1) await forgetOldWindows(now);
     if (row !== undefined && row.tries > limit.tries) throw tooMany(limit, row.startedAt, now);
   }
+}
+
+/** Longer than any limit's window. */
+const OLD_S = 86_400;
+
+/** Windows that are long over are removed as new ones open, so that the table stays small. */
+async function forgetOldWindows(now: Date): Promise<void> {
+  await Throttle.destroy({ where: { windowStartedAt: { [Op.lt]: new Date(now.getTime() - OLD_S * 1_000) } } });
 }
 
 /** Looks without counting. @throws Refusal 429 when the next try of a limit would be one too many. */

@@ -35,6 +35,12 @@ async function shopIds(shopId: string): Promise<string[]> {
   });
 }
 
+const NO_ID = "00000000-0000-4000-8000-000000000000";
+/** Ids of the right shape that nothing has. */
+const NO_IDS = Object.fromEntries([...["jobId", "lineId", "spoolId", "revisionId", "uploadId", "membershipId", "invitationId", "sessionId"].map((name) => [name, NO_ID]), ["key", "0".repeat(64)]]);
+/** What a fitter may write: their own entries, their own sessions, which of their shops they look at. */
+const FITTER_WRITES = ["POST /spools/[spoolId]/work", "DELETE /sessions/[sessionId]", "POST /viewer/shop"];
+
 const routes = await everyRoute();
 let first: TestShop;
 let other: TestShop;
@@ -79,13 +85,20 @@ describe("shops are apart", () => {
     const recipe = RECIPES[route.name];
     if (recipe === undefined || recipe.scope === "public") continue;
     test(`${route.name} answers 401 to nobody, and a write from another site 403`, async () => {
-      const id = "00000000-0000-4000-8000-000000000000";
-      const params = { jobId: id, lineId: id, spoolId: id, revisionId: id, uploadId: id, membershipId: id, invitationId: id, sessionId: id, key: "0".repeat(64) };
+      const params = NO_IDS;
       const nobody = await call(route.handler, { params, method: route.method });
       expect(nobody.status).toBe(401);
       if (route.method === "GET") return;
       const foreignSite = await call(route.handler, { as: first.owner, params, method: route.method, headers: { origin: "https://elsewhere.example" } });
       expect(foreignSite.status).toBe(403);
+    });
+  }
+
+  for (const route of routes.filter((one) => one.method !== "GET" && RECIPES[one.name]?.scope !== "public" && !FITTER_WRITES.includes(one.name))) {
+    test(`${route.name} answers 403 to a fitter`, async () => {
+      const answer = await call(route.handler, { as: first.fitter, params: NO_IDS, method: route.method });
+      expect(answer.status).toBe(403);
+      expect(answer.json.code).toBe("forbidden");
     });
   }
 
