@@ -71,14 +71,14 @@ function termWords(term: CutTerm): string {
   return term.label.replace(/^[\d\s/.'"-]+(?=[A-Za-z])/, "").replace(/ (take-out|trim)$/, "");
 }
 
-/** Equal terms once, "2 x 1/8 root gap"; a value from memory that the shop has not confirmed carries an asterisk. */
+/** Equal terms once, "2 × 1/8 root gap"; a value from memory that the shop has not confirmed carries an asterisk. */
 function groupedTerms(facts: SheetFacts, piece: Piece, belongs: (term: CutTerm) => boolean): Cell {
   const counts = new Map<string, number>();
   for (const term of piece.terms.filter(belongs)) {
     const text = `${formatTerm(Math.abs(term.valueMm), facts.input.units)}${term.unconfirmed ? "*" : ""} ${termWords(term)}`;
     counts.set(text, (counts.get(text) ?? 0) + 1);
   }
-  return [...counts].map(([text, count]) => (count > 1 ? `${count} x ${text}` : text)).join(", ");
+  return [...counts].map(([text, count]) => (count > 1 ? `${count} × ${text}` : text)).join(", ");
 }
 
 /** The number to cut to, large; in inches with the feet and inches of the same number in brackets under it. */
@@ -95,11 +95,14 @@ const endsCell: CellOf = (_facts, piece) => {
   return a.prep === b.prep ? a.prep : [{ text: a.prep }, { text: b.prep }];
 };
 
+const TERMS_IMPERIAL = "Terms print to 1/64 in; the cut length is rounded once, to 1/16 in, from the exact sum.";
+const TERMS_METRIC = "Terms print to 0.1 mm; the cut length is rounded once, to 1 mm, from the exact sum.";
+
 function footOf(facts: SheetFacts): string[] {
   const terms = facts.pieces.flatMap((piece) => piece.terms);
-  const foot: string[] = [];
+  const foot = [facts.input.units === "metric" ? TERMS_METRIC : TERMS_IMPERIAL];
   if (terms.some((term) => term.unconfirmed)) foot.push("* Take-out from memory, not yet confirmed by the shop: measure it first.");
   if (terms.some((term) => term.kind === "trim")) foot.push("Trim is supplied extra at a field-fit weld: the cut length includes it.");
   if (facts.legs.some((leg) => leg.unverified)) foot.push("VIF: dimension not verified in the field. Verify before cutting.");
-  return foot.length === 0 ? [] : [foot.join(" ")];
+  return [foot.join(" ")];
 }

@@ -139,7 +139,7 @@ function drawingItems(facts: SheetFacts, room: PaperBox, draw: DrawRoom, measure
     reserveMm = legendMm(drawing.legend);
     drawing = drawFor(reserveMm);
   }
-  const legend = { ...room, minY: room.maxY - reserveMm };
+  const legend = { ...room, minY: room.maxY - legendMm(drawing.legend) };
   return [
     ...drawing.items.map((item) => itemMoved(item, [room.minX + INSET, room.minY + INSET])),
     lineFrom([legend.minX, legend.minY], [legend.maxX, legend.minY], EDGE_LINE, "title"),

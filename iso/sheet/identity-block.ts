@@ -17,7 +17,7 @@ export const IDENTITY_HEIGHT = QR_SIDE + 1;
 export const IDENTITY_NARROW = 97;
 /** From this width on, number and tag stand side by side. */
 const SIDE_BY_SIDE = 130;
-const STACKED_TAG = 13;
+const STACKED_TAG = 14.2;
 
 export interface SheetPlace {
   readonly sheet: number;
@@ -39,7 +39,7 @@ function stacked(input: SheetInput, place: SheetPlace, box: PaperBox, measure: M
   const room = box.maxX - box.minX - 2 * PAD;
   const number = fitCap(sheetNumberText(input), room, 4, measure);
   const second = fitText(`REV ${revisionText(input)}, SHEET ${place.sheet} OF ${place.of}`, room, 1, { capMm: HEAD_CAP, face: "bold" }, measure).lines[0] ?? "";
-  const top = tag.maxY + 0.6;
+  const top = tag.maxY + 0.4;
   return [
     ...stateTag(input.revision, tag, measure),
     textAt([box.minX + PAD, top + baselineOf(0, 4)], number.text, { layer: "title", capMm: number.capMm, face: "bold" }),

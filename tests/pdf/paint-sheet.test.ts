@@ -123,7 +123,7 @@ describe("sheets read back from paper", () => {
     const parser = new PDFParse({ data: new Uint8Array(bytes) });
     const text = (await parser.getText()).text.replace(/\s+/g, " ");
     await parser.destroy();
-    for (const part of ["28 1/4", "19 3/4", "25 5/8", "3 weld-neck hub, 6 LR 90", "2 x 1/8 root gap", "VERIFY BY TAPE, TWO READINGS", "empty estimate",
+    for (const part of ["28 1/4", "19 3/4", "25 5/8", "3 weld-neck hub, 6 LR 90", "2 × 1/8 root gap", "VERIFY BY TAPE, TWO READINGS", "empty estimate",
       "Confirm heat number or PMI", "FOR FABRICATION", "HPS-0147", "PLANT N", "NTS", "Printed copies are uncontrolled"]) expect(text, part).toContain(part);
     for (let weld = 1; weld <= 8; weld += 1) expect(text).toMatch(new RegExp(`\\b${weld} butt`));
     expect(text).not.toMatch(/test pressure/i);
