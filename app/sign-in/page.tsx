@@ -16,13 +16,21 @@ function ownPath(next: string | undefined): string {
   return next && /^\/[A-Za-z0-9]/.test(next) ? next : "/";
 }
 
-export default async function SignInPage({ searchParams }: { readonly searchParams: Promise<Record<string, string | undefined>> }) {
+export default async function SignInPage({
+  searchParams,
+}: {
+  readonly searchParams: Promise<Record<string, string | undefined>>;
+}) {
   const query = await searchParams;
   const demo = process.env.DEMO === "1";
   const people = DEMO_PEOPLE.map(({ name, email, role }) => ({ name, email, role: ROLE_WORDS[role] }));
   return (
     <AuthFrame title="Sign in">
-      <SignInForm next={ownPath(query.next)} demo={demo ? { people, password: DEMO_PASSWORD } : null} remark={REMARKS[query.remark ?? ""] ?? null} />
+      <SignInForm
+        next={ownPath(query.next)}
+        demo={demo ? { people, password: DEMO_PASSWORD } : null}
+        remark={REMARKS[query.remark ?? ""] ?? null}
+      />
     </AuthFrame>
   );
 }

@@ -39,7 +39,10 @@ function refusalText(error: string | null | undefined, status: number): string {
 /** E-mail address and password; in demo mode also the demo people, one press each. */
 export function SignInForm({ next, demo, remark }: SignInFormProps) {
   const [trouble, setTrouble] = useState<string | null>(null);
-  const { register, handleSubmit, setValue, formState } = useForm<SignInForm>({ resolver: zodResolver(signInSchema), defaultValues: { email: "", password: "" } });
+  const { register, handleSubmit, setValue, formState } = useForm<SignInForm>({
+    resolver: zodResolver(signInSchema),
+    defaultValues: { email: "", password: "" },
+  });
 
   const enter = async (values: SignInForm) => {
     setTrouble(null);
@@ -58,9 +61,27 @@ export function SignInForm({ next, demo, remark }: SignInFormProps) {
       {remark ? <Notice className="mb-4">{remark}</Notice> : null}
       <form noValidate onSubmit={(event) => void handleSubmit(enter)(event)} className="space-y-4">
         {trouble ? <Notice tone="trouble">{trouble}</Notice> : null}
-        <TextField label="E-mail address" type="email" autoComplete="username" error={formState.errors.email?.message} {...register("email")} />
-        <TextField label="Password" type="password" autoComplete="current-password" error={formState.errors.password?.message} {...register("password")} />
-        <Button type="submit" tone="primary" className="w-full" busy={formState.isSubmitting} busyLabel="Signing in">
+        <TextField
+          label="E-mail address"
+          type="email"
+          autoComplete="username"
+          error={formState.errors.email?.message}
+          {...register("email")}
+        />
+        <TextField
+          label="Password"
+          type="password"
+          autoComplete="current-password"
+          error={formState.errors.password?.message}
+          {...register("password")}
+        />
+        <Button
+          type="submit"
+          tone="primary"
+          className="w-full"
+          busy={formState.isSubmitting}
+          busyLabel="Signing in"
+        >
           Sign in
         </Button>
       </form>
@@ -77,7 +98,15 @@ export function SignInForm({ next, demo, remark }: SignInFormProps) {
   );
 }
 
-function DemoLogins({ people, password, onChoose }: { readonly people: readonly DemoLogin[]; readonly password: string; readonly onChoose: (person: DemoLogin) => void }) {
+function DemoLogins({
+  people,
+  password,
+  onChoose,
+}: {
+  readonly people: readonly DemoLogin[];
+  readonly password: string;
+  readonly onChoose: (person: DemoLogin) => void;
+}) {
   return (
     <section aria-labelledby="demo-logins" className="mt-5 border-t border-ink pt-4">
       <h2 id="demo-logins">Demo logins</h2>
@@ -87,7 +116,11 @@ function DemoLogins({ people, password, onChoose }: { readonly people: readonly 
       <ul>
         {people.map((person) => (
           <li key={person.email} className="border-b border-hair last:border-b-0">
-            <button type="button" onClick={() => onChoose(person)} className="flex min-h-14 w-full items-center justify-between gap-3 text-left hover:bg-dye-tint">
+            <button
+              type="button"
+              onClick={() => onChoose(person)}
+              className="flex min-h-14 w-full items-center justify-between gap-3 text-left hover:bg-dye-tint"
+            >
               <span className="min-w-0">
                 <span className="block font-medium text-dye underline underline-offset-4">{person.name}</span>
                 <span className="figure block text-sm break-all text-soft">{person.email}</span>

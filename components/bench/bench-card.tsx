@@ -29,16 +29,30 @@ export function BenchCard({ row, role }: { readonly row: BenchRow; readonly role
       <p className="text-soft">
         Job {row.job}, issued {dayText(row.issuedAt)}
       </p>
-      {row.hold ? <Notice tone="trouble" word="HOLD" className="mt-3">Do not work from this sheet until it is released.</Notice> : null}
+      {row.hold ? (
+        <Notice tone="trouble" word="HOLD" className="mt-3">
+          Do not work from this sheet until it is released.
+        </Notice>
+      ) : null}
       <div className="mt-4 grid grid-cols-2 gap-5">
         <Progress done={row.cut} of={row.pieces} word="cut" />
         <Progress done={row.welded} of={row.welds} word="welded" />
       </div>
       <div className="mt-5 grid gap-3 sm:grid-cols-3">
-        <a className={buttonClass("primary", true)} href={`/api/revisions/${row.revisionId}/sheet?kind=fabrication&copy=1`} target="_blank" rel="noreferrer">
+        <a
+          className={buttonClass("primary", true)}
+          href={`/api/revisions/${row.revisionId}/sheet?kind=fabrication&copy=1`}
+          target="_blank"
+          rel="noreferrer"
+        >
           Open the sheet
         </a>
-        <Button big aria-expanded={recording} aria-controls={panel} onClick={() => setRecording((now) => !now)}>
+        <Button
+          big
+          aria-expanded={recording}
+          aria-controls={panel}
+          onClick={() => setRecording((now) => !now)}
+        >
           {recording ? "Close the log" : "Record work"}
         </Button>
         <ButtonLink big href={`/spools/${row.spoolId}`}>
@@ -55,7 +69,13 @@ function BenchLog({ spoolId, role }: { readonly spoolId: string; readonly role: 
   return (
     <div className="mt-6 border-t border-ink pt-5">
       <Loaded api={spool} label="Loading pieces and welds">
-        {(data) => (data.live ? <WorkSection spool={data} input={data.live.input} issued role={role} /> : <Notice>This sheet is no longer in force.</Notice>)}
+        {(data) =>
+          data.live ? (
+            <WorkSection spool={data} input={data.live.input} issued role={role} />
+          ) : (
+            <Notice>This sheet is no longer in force.</Notice>
+          )
+        }
       </Loaded>
     </div>
   );

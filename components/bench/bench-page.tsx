@@ -13,7 +13,8 @@ import { BenchCard } from "./bench-card";
 
 type Filter = "to-do" | "built" | "held" | "all";
 
-const isBuilt = (row: BenchRow) => row.state === "as-built" || (row.cut >= row.pieces && row.welded >= row.welds);
+const isBuilt = (row: BenchRow) =>
+  row.state === "as-built" || (row.cut >= row.pieces && row.welded >= row.welds);
 const FILTERS: Readonly<Record<Filter, (row: BenchRow) => boolean>> = {
   "to-do": (row) => !row.hold && !isBuilt(row),
   held: (row) => row.hold,
@@ -34,7 +35,9 @@ export function BenchPage() {
       <Loaded api={bench} label="Loading issued sheets" lines={8}>
         {(rows) =>
           rows.length === 0 ? (
-            <EmptyState title="No sheet is issued yet">A sheet comes here when an inspector signs it FOR FABRICATION.</EmptyState>
+            <EmptyState title="No sheet is issued yet">
+              A sheet comes here when an inspector signs it FOR FABRICATION.
+            </EmptyState>
           ) : (
             <Bench rows={rows} role={viewer.data?.role ?? "fitter"} />
           )
@@ -46,12 +49,31 @@ export function BenchPage() {
 
 function Bench({ rows, role }: { readonly rows: readonly BenchRow[]; readonly role: Role }) {
   const [filter, setFilter] = useState<Filter>("to-do");
-  const list = useList({ rows, textOf, keys: KEYS, start: { key: "issuedAt", descending: true }, keep: FILTERS[filter] });
-  const choice = (value: Filter, word: string) => ({ value, label: `${word} (${rows.filter(FILTERS[value]).length})` });
+  const list = useList({
+    rows,
+    textOf,
+    keys: KEYS,
+    start: { key: "issuedAt", descending: true },
+    keep: FILTERS[filter],
+  });
+  const choice = (value: Filter, word: string) => ({
+    value,
+    label: `${word} (${rows.filter(FILTERS[value]).length})`,
+  });
   return (
     <>
       <div className="mb-4 flex flex-wrap items-end justify-between gap-x-6 gap-y-3">
-        <ChoiceRow label="Which sheets" value={filter} onChange={setFilter} choices={[choice("to-do", "To do"), choice("held", "On hold"), choice("built", "Done"), choice("all", "All")]} />
+        <ChoiceRow
+          label="Which sheets"
+          value={filter}
+          onChange={setFilter}
+          choices={[
+            choice("to-do", "To do"),
+            choice("held", "On hold"),
+            choice("built", "Done"),
+            choice("all", "All"),
+          ]}
+        />
         <SearchField label="Search sheet, line, job" value={list.search} onChange={list.setSearch} />
       </div>
       {list.shown.length === 0 ? (

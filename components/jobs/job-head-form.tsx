@@ -11,7 +11,15 @@ import { NorthDial } from "./north-dial";
 import { SHEET_OPTIONS } from "./sheet-words";
 
 const FIELDS = ["number", "title", "client", "area", "open", "sheetSize", "plantNorthDeg"] as const;
-const schema = jobSettingsSchema.pick({ number: true, title: true, client: true, area: true, open: true, sheetSize: true, plantNorthDeg: true });
+const schema = jobSettingsSchema.pick({
+  number: true,
+  title: true,
+  client: true,
+  area: true,
+  open: true,
+  sheetSize: true,
+  plantNorthDeg: true,
+});
 
 export interface JobHeadFormProps {
   readonly job: JobDetail;
@@ -31,19 +39,40 @@ export function JobHeadForm({ job, editable, onSave }: JobHeadFormProps) {
   const { errors } = formState;
   return (
     <form noValidate onSubmit={(event) => void handleSubmit((values) => send(() => onSave(values)))(event)}>
-      {trouble ? <Notice tone="trouble" className="mb-4">{trouble}</Notice> : null}
+      {trouble ? (
+        <Notice tone="trouble" className="mb-4">
+          {trouble}
+        </Notice>
+      ) : null}
       <fieldset disabled={!editable} className="grid gap-4 sm:grid-cols-2 xl:grid-cols-4">
         <TextField label="Job number" figure error={errors.number?.message} {...register("number")} />
         <TextField label="Title" error={errors.title?.message} {...register("title")} />
         <TextField label="Client" error={errors.client?.message} {...register("client")} />
         <TextField label="Area or unit" error={errors.area?.message} {...register("area")} />
-        <Select label="Sheet size" options={SHEET_OPTIONS} error={errors.sheetSize?.message} {...register("sheetSize")} />
-        <TextField label="Plant north, degrees clockwise from true north" figure inputMode="decimal" error={errors.plantNorthDeg?.message} {...register("plantNorthDeg", { valueAsNumber: true })} />
+        <Select
+          label="Sheet size"
+          options={SHEET_OPTIONS}
+          error={errors.sheetSize?.message}
+          {...register("sheetSize")}
+        />
+        <TextField
+          label="Plant north, degrees clockwise from true north"
+          figure
+          inputMode="decimal"
+          error={errors.plantNorthDeg?.message}
+          {...register("plantNorthDeg", { valueAsNumber: true })}
+        />
         <NorthDial degrees={Number(watch("plantNorthDeg"))} />
         <Check label="The job is open" className="self-end" {...register("open")} />
       </fieldset>
       {editable ? (
-        <Button type="submit" tone="primary" className="mt-5" busy={formState.isSubmitting} busyLabel="Saving">
+        <Button
+          type="submit"
+          tone="primary"
+          className="mt-5"
+          busy={formState.isSubmitting}
+          busyLabel="Saving"
+        >
           Save the job
         </Button>
       ) : null}

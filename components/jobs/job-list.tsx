@@ -44,18 +44,42 @@ const COLUMNS: readonly Column<JobRow>[] = [
     head: "Job",
     sortable: true,
     cell: (job) => (
-      <Link href={`/jobs/${job.id}`} className="inked inline-flex min-h-8 flex-wrap items-baseline gap-x-2 font-medium">
+      <Link
+        href={`/jobs/${job.id}`}
+        className="inked inline-flex min-h-8 flex-wrap items-baseline gap-x-2 font-medium"
+      >
         <span className="figure">{job.number}</span> {job.title}
       </Link>
     ),
   },
-  { key: "client", head: "Client", sortable: true, cell: (job) => job.client || <span className="text-soft">none</span> },
+  {
+    key: "client",
+    head: "Client",
+    sortable: true,
+    cell: (job) => job.client || <span className="text-soft">none</span>,
+  },
   { key: "lines", head: "Lines", figure: true, sortable: true, cell: (job) => job.lines },
   { key: "spools", head: "Spools", figure: true, sortable: true, cell: (job) => job.spools },
   { key: "forReview", head: "For review", figure: true, sortable: true, cell: (job) => job.forReview },
-  { key: "forFabrication", head: "For fabrication", figure: true, sortable: true, cell: (job) => job.forFabrication },
-  { key: "held", head: "On hold", figure: true, cell: (job) => (job.held > 0 ? <strong className="text-alert">{job.held} HOLD</strong> : 0) },
-  { key: "updatedAt", head: "Changed", sortable: true, cell: (job) => <span className="whitespace-nowrap">{dayText(job.updatedAt)}</span> },
+  {
+    key: "forFabrication",
+    head: "For fabrication",
+    figure: true,
+    sortable: true,
+    cell: (job) => job.forFabrication,
+  },
+  {
+    key: "held",
+    head: "On hold",
+    figure: true,
+    cell: (job) => (job.held > 0 ? <strong className="text-alert">{job.held} HOLD</strong> : 0),
+  },
+  {
+    key: "updatedAt",
+    head: "Changed",
+    sortable: true,
+    cell: (job) => <span className="whitespace-nowrap">{dayText(job.updatedAt)}</span>,
+  },
 ];
 
 /** Every job of the shop. */
@@ -76,7 +100,9 @@ export function JobList() {
         {(rows) =>
           rows.length === 0 ? (
             <EmptyState title="No job yet" action={mayAdd ? add : null}>
-              {mayAdd ? "A job holds lines; a line is described point by point and gives its spool sheets. Start with the job." : "Jobs show here once a detailer opens one."}
+              {mayAdd
+                ? "A job holds lines; a line is described point by point and gives its spool sheets. Start with the job."
+                : "Jobs show here once a detailer opens one."}
             </EmptyState>
           ) : (
             <Jobs rows={rows} />
@@ -90,8 +116,17 @@ export function JobList() {
 
 function Jobs({ rows }: { readonly rows: readonly JobRow[] }) {
   const [filter, setFilter] = useState<Filter>("open");
-  const list = useList({ rows, textOf, keys: KEYS, start: { key: "updatedAt", descending: true }, keep: FILTERS[filter] });
-  const choice = (value: Filter, word: string) => ({ value, label: `${word} (${rows.filter(FILTERS[value]).length})` });
+  const list = useList({
+    rows,
+    textOf,
+    keys: KEYS,
+    start: { key: "updatedAt", descending: true },
+    keep: FILTERS[filter],
+  });
+  const choice = (value: Filter, word: string) => ({
+    value,
+    label: `${word} (${rows.filter(FILTERS[value]).length})`,
+  });
   return (
     <>
       <div className="mb-3 flex flex-wrap items-end justify-between gap-x-6 gap-y-3">
@@ -99,14 +134,27 @@ function Jobs({ rows }: { readonly rows: readonly JobRow[] }) {
           label="Which jobs"
           value={filter}
           onChange={setFilter}
-          choices={[choice("open", "Open"), choice("for-review", "With reviews"), choice("held", "With holds"), choice("closed", "Closed"), choice("all", "All")]}
+          choices={[
+            choice("open", "Open"),
+            choice("for-review", "With reviews"),
+            choice("held", "With holds"),
+            choice("closed", "Closed"),
+            choice("all", "All"),
+          ]}
         />
         <SearchField label="Search number, title, client" value={list.search} onChange={list.setSearch} />
       </div>
       {list.shown.length === 0 ? (
         <EmptyState title="No job matches">Change the search or choose All.</EmptyState>
       ) : (
-        <Table caption="Jobs" columns={COLUMNS} rows={list.shown} rowKey={(job) => job.id} sort={list.sort} onSort={list.sortBy} />
+        <Table
+          caption="Jobs"
+          columns={COLUMNS}
+          rows={list.shown}
+          rowKey={(job) => job.id}
+          sort={list.sort}
+          onSort={list.sortBy}
+        />
       )}
       <p className="mt-3 text-sm text-soft" role="status">
         {countText(list.shown.length, "job")} shown of {rows.length}

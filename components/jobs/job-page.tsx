@@ -36,7 +36,11 @@ export function JobPage({ jobId }: { readonly jobId: string }) {
               />
             </div>
           ) : null}
-          {view === "lines" ? <LineList job={data} role={role} /> : <JobSettingsView job={data} editable={canDo(role, "lines.change")} />}
+          {view === "lines" ? (
+            <LineList job={data} role={role} />
+          ) : (
+            <JobSettingsView job={data} editable={canDo(role, "lines.change")} />
+          )}
         </>
       )}
     </Loaded>

@@ -20,19 +20,36 @@ export function JobSettingsView({ job, editable }: { readonly job: JobDetail; re
   };
   return (
     <>
-      {editable ? null : <Notice className="mb-6">Your role reads these settings. The owner or a detailer changes them.</Notice>}
+      {editable ? null : (
+        <Notice className="mb-6">
+          Your role reads these settings. The owner or a detailer changes them.
+        </Notice>
+      )}
       <Section title="Job and sheet">
         <JobHeadForm job={job} editable={editable} onSave={(values) => patch(values, "Job saved.")} />
       </Section>
       <Section title="Title block">
         <div className="grid gap-8 lg:grid-cols-2">
-          <TitleFieldsForm fields={job.fields} editable={editable} onSave={(fields) => patch({ fields }, "Title block saved.")} />
-          <LogoField path={`${path}/logo`} logo={job.logo} editable={editable} onChanged={() => void refreshApi("/api/jobs")} />
+          <TitleFieldsForm
+            fields={job.fields}
+            editable={editable}
+            onSave={(fields) => patch({ fields }, "Title block saved.")}
+          />
+          <LogoField
+            path={`${path}/logo`}
+            logo={job.logo}
+            editable={editable}
+            onChanged={() => void refreshApi("/api/jobs")}
+          />
         </div>
       </Section>
       <Section title="Defaults for new lines">
         <p className="mb-4 text-soft">Lines that exist keep their own settings.</p>
-        <LineSettingsForm settings={job.defaults} editable={editable} onSave={(defaults: LineSettings) => patch({ defaults }, "Defaults saved.")} />
+        <LineSettingsForm
+          settings={job.defaults}
+          editable={editable}
+          onSave={(defaults: LineSettings) => patch({ defaults }, "Defaults saved.")}
+        />
       </Section>
     </>
   );

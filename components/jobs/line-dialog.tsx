@@ -24,7 +24,11 @@ export interface LineDialogProps {
 export function LineDialog({ jobId, adding, onClose }: LineDialogProps) {
   const copyOf = adding?.copyOf ?? null;
   return (
-    <Dialog open={adding !== null} onClose={onClose} title={copyOf ? `Copy line ${copyOf.number}` : "New line"}>
+    <Dialog
+      open={adding !== null}
+      onClose={onClose}
+      title={copyOf ? `Copy line ${copyOf.number}` : "New line"}
+    >
       <LineForm jobId={jobId} copyOf={copyOf} />
     </Dialog>
   );
@@ -47,7 +51,11 @@ function LineForm({ jobId, copyOf }: { readonly jobId: string; readonly copyOf: 
     });
   return (
     <form noValidate onSubmit={(event) => void handleSubmit(add)(event)}>
-      {trouble ? <Notice tone="trouble" className="mb-4">{trouble}</Notice> : null}
+      {trouble ? (
+        <Notice tone="trouble" className="mb-4">
+          {trouble}
+        </Notice>
+      ) : null}
       <p className="mb-4 text-soft">
         {copyOf
           ? "The copy takes the points and settings, with weld numbers, piece marks and spool letters of its own. Revisions stay with the line copied."

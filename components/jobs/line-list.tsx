@@ -19,7 +19,10 @@ const KEYS: Readonly<Record<string, (line: LineRow) => string | number>> = {
   points: (line) => line.points,
   updatedAt: (line) => line.updatedAt,
 };
-const textOf = (line: LineRow) => [line.number, line.title, line.size, line.material, ...line.spools.map((s) => s.sheetNumber ?? "")].join(" ");
+const textOf = (line: LineRow) =>
+  [line.number, line.title, line.size, line.material, ...line.spools.map((s) => s.sheetNumber ?? "")].join(
+    " ",
+  );
 
 type Adding = { readonly copyOf: LineRow | null } | null;
 
@@ -36,10 +39,17 @@ export function LineList({ job, role }: { readonly job: JobDetail; readonly role
     <>
       {job.lines.length === 0 ? (
         <EmptyState title="No line yet" action={mayChange ? add : null}>
-          {mayChange ? "A line is one run of pipe with its branches. Give it its number, then type its points." : "Lines show here once a detailer describes one."}
+          {mayChange
+            ? "A line is one run of pipe with its branches. Give it its number, then type its points."
+            : "Lines show here once a detailer describes one."}
         </EmptyState>
       ) : (
-        <Lines job={job} role={role} add={mayChange ? add : null} onCopy={(line) => setAdding({ copyOf: line })} />
+        <Lines
+          job={job}
+          role={role}
+          add={mayChange ? add : null}
+          onCopy={(line) => setAdding({ copyOf: line })}
+        />
       )}
       <LineDialog jobId={job.id} adding={adding} onClose={() => setAdding(null)} />
     </>
@@ -55,12 +65,22 @@ interface LinesProps {
 
 function Lines({ job, role, add, onCopy }: LinesProps) {
   const [state, setState] = useState<StateChoice>("all");
-  const list = useList({ rows: job.lines, textOf, keys: KEYS, start: { key: "number", descending: false }, keep: (line) => keepByState(line, state) });
+  const list = useList({
+    rows: job.lines,
+    textOf,
+    keys: KEYS,
+    start: { key: "number", descending: false },
+    keep: (line) => keepByState(line, state),
+  });
   return (
     <>
       <div className="mb-3 flex flex-wrap items-end justify-between gap-x-6 gap-y-3">
         <div className="flex w-full flex-wrap items-end gap-3 sm:w-auto">
-          <SearchField label="Search line, size, sheet number" value={list.search} onChange={list.setSearch} />
+          <SearchField
+            label="Search line, size, sheet number"
+            value={list.search}
+            onChange={list.setSearch}
+          />
           <StateFilter lines={job.lines} value={state} onChange={setState} />
         </div>
         {add}
@@ -68,7 +88,14 @@ function Lines({ job, role, add, onCopy }: LinesProps) {
       {list.shown.length === 0 ? (
         <EmptyState title="No line matches">Change the search or choose every state.</EmptyState>
       ) : (
-        <Table caption="Lines" columns={columns(role, onCopy)} rows={list.shown} rowKey={(line) => line.id} sort={list.sort} onSort={list.sortBy} />
+        <Table
+          caption="Lines"
+          columns={columns(role, onCopy)}
+          rows={list.shown}
+          rowKey={(line) => line.id}
+          sort={list.sort}
+          onSort={list.sortBy}
+        />
       )}
       <p className="mt-3 text-sm text-soft" role="status">
         {countText(list.shown.length, "line")} shown of {job.lines.length}
@@ -86,12 +113,23 @@ function columns(role: Role, onCopy: (line: LineRow) => void): readonly Column<L
       sortable: true,
       cell: (line) => <LineName line={line} link={reads} />,
     },
-    { key: "size", head: "Size", sortable: true, cell: (line) => <span className="figure">{line.size}</span> },
+    {
+      key: "size",
+      head: "Size",
+      sortable: true,
+      cell: (line) => <span className="figure">{line.size}</span>,
+    },
     { key: "material", head: "Material", cell: (line) => line.material },
     { key: "spools", head: "Spools", cell: (line) => <Spools spools={line.spools} /> },
   ];
   if (!reads) return base;
-  base.splice(3, 0, { key: "points", head: "Points", figure: true, sortable: true, cell: (line) => line.points });
+  base.splice(3, 0, {
+    key: "points",
+    head: "Points",
+    figure: true,
+    sortable: true,
+    cell: (line) => line.points,
+  });
   base.push({
     key: "updatedAt",
     head: "Changed",
@@ -139,7 +177,10 @@ function Spools({ spools }: { readonly spools: readonly SpoolRow[] }) {
     <ul className="space-y-1">
       {spools.map((spool) => (
         <li key={spool.id} className="flex flex-wrap items-center gap-x-3">
-          <Link href={`/spools/${spool.id}`} className="inked figure inline-flex min-h-8 items-center font-medium">
+          <Link
+            href={`/spools/${spool.id}`}
+            className="inked figure inline-flex min-h-8 items-center font-medium"
+          >
             Spool {spool.letter}
             {spool.code ? ` rev ${spool.code}` : ""}
           </Link>

@@ -31,7 +31,13 @@ const ELBOWS = [
 ];
 
 /** What each new line starts from: pipe, fittings, allowances, limits and texts as entered. */
-export function LineSettingsForm({ settings, editable, onSave, fixedUnits = false, saveLabel = "Save the defaults" }: LineSettingsFormProps) {
+export function LineSettingsForm({
+  settings,
+  editable,
+  onSave,
+  fixedUnits = false,
+  saveLabel = "Save the defaults",
+}: LineSettingsFormProps) {
   const [trouble, setTrouble] = useState<string | null>(null);
   const { register, handleSubmit, formState } = useForm<SettingsText, unknown, LineSettings>({
     resolver: zodResolver(settingsTextSchema),
@@ -45,7 +51,11 @@ export function LineSettingsForm({ settings, editable, onSave, fixedUnits = fals
   };
   return (
     <form noValidate onSubmit={(event) => void handleSubmit(save)(event)}>
-      {trouble ? <Notice tone="trouble" className="mb-4">{trouble}</Notice> : null}
+      {trouble ? (
+        <Notice tone="trouble" className="mb-4">
+          {trouble}
+        </Notice>
+      ) : null}
       <fieldset disabled={!editable} className="space-y-6">
         <PipeFields {...part} fixedUnits={fixedUnits} />
         <AllowanceFields {...part} />
@@ -53,7 +63,13 @@ export function LineSettingsForm({ settings, editable, onSave, fixedUnits = fals
         <EnteredFields {...part} />
       </fieldset>
       {editable ? (
-        <Button type="submit" tone="primary" className="mt-6" busy={formState.isSubmitting} busyLabel="Saving">
+        <Button
+          type="submit"
+          tone="primary"
+          className="mt-6"
+          busy={formState.isSubmitting}
+          busyLabel="Saving"
+        >
           {saveLabel}
         </Button>
       ) : null}
@@ -61,7 +77,15 @@ export function LineSettingsForm({ settings, editable, onSave, fixedUnits = fals
   );
 }
 
-function Group({ title, hint, children }: { readonly title: string; readonly hint?: string; readonly children: ReactNode }) {
+function Group({
+  title,
+  hint,
+  children,
+}: {
+  readonly title: string;
+  readonly hint?: string;
+  readonly children: ReactNode;
+}) {
   return (
     <div role="group" aria-label={title}>
       <h3>{title}</h3>
@@ -74,26 +98,50 @@ function Group({ title, hint, children }: { readonly title: string; readonly hin
 function PipeFields({ register, errors, fixedUnits }: Part & { readonly fixedUnits: boolean }) {
   return (
     <Group title="Pipe and fittings">
-      {fixedUnits ? null : <Select label="Units" options={UNIT_OPTIONS} error={errors.units?.message} {...register("units")} />}
+      {fixedUnits ? null : (
+        <Select label="Units" options={UNIT_OPTIONS} error={errors.units?.message} {...register("units")} />
+      )}
       <Select label="Size" options={NPS_OPTIONS} error={errors.nps?.message} {...register("nps")} />
       <TextField label="Schedule" figure error={errors.schedule?.message} {...register("schedule")} />
       <TextField label="Material" error={errors.material?.message} {...register("material")} />
       <TextField label="Specification" error={errors.specification?.message} {...register("specification")} />
       <Select label="Elbow" options={ELBOWS} error={errors.elbow?.message} {...register("elbow")} />
-      <Select label="Flange class" options={CLASSES} error={errors.ratingClass?.message} {...register("ratingClass")} />
+      <Select
+        label="Flange class"
+        options={CLASSES}
+        error={errors.ratingClass?.message}
+        {...register("ratingClass")}
+      />
     </Group>
   );
 }
 
 function AllowanceFields({ register, errors }: Part) {
   return (
-    <Group title="Allowances" hint="Gap, land and bevel come from the WPS. Type lengths as on a tape; a bare number is inches, or millimetres on a metric job.">
+    <Group
+      title="Allowances"
+      hint="Gap, land and bevel come from the WPS. Type lengths as on a tape; a bare number is inches, or millimetres on a metric job."
+    >
       <TextField label="Root gap" figure error={errors.rootGap?.message} {...register("rootGap")} />
-      <TextField label="Socket pull-back" figure error={errors.socketPullBack?.message} {...register("socketPullBack")} />
+      <TextField
+        label="Socket pull-back"
+        figure
+        error={errors.socketPullBack?.message}
+        {...register("socketPullBack")}
+      />
       <TextField label="Gasket" figure error={errors.gasket?.message} {...register("gasket")} />
-      <TextField label="Slip-on setting" figure error={errors.slipOnSetting?.message} {...register("slipOnSetting")} />
+      <TextField
+        label="Slip-on setting"
+        figure
+        error={errors.slipOnSetting?.message}
+        {...register("slipOnSetting")}
+      />
       <TextField label="Field trim" figure error={errors.fieldTrim?.message} {...register("fieldTrim")} />
-      <Check label="A face dimension includes the gasket" className="self-end" {...register("faceIncludesGasket")} />
+      <Check
+        label="A face dimension includes the gasket"
+        className="self-end"
+        {...register("faceIncludesGasket")}
+      />
     </Group>
   );
 }
@@ -101,10 +149,26 @@ function AllowanceFields({ register, errors }: Part) {
 function LimitFields({ register, errors }: Part) {
   return (
     <Group title="Limits" hint="Each gives a finding on the line, never a change of what was typed.">
-      <TextField label="Standard elbow within, degrees" figure error={errors.withinDeg?.message} {...register("withinDeg")} />
-      <TextField label="Shortest pipe between welds" figure placeholder="1.5 OD" error={errors.minimumPup?.message} {...register("minimumPup")} />
+      <TextField
+        label="Standard elbow within, degrees"
+        figure
+        error={errors.withinDeg?.message}
+        {...register("withinDeg")}
+      />
+      <TextField
+        label="Shortest pipe between welds"
+        figure
+        placeholder="1.5 OD"
+        error={errors.minimumPup?.message}
+        {...register("minimumPup")}
+      />
       <div className="grid grid-cols-3 gap-3 sm:col-span-2">
-        <TextField label="Shipping box, length" figure error={errors.boxLength?.message} {...register("boxLength")} />
+        <TextField
+          label="Shipping box, length"
+          figure
+          error={errors.boxLength?.message}
+          {...register("boxLength")}
+        />
         <TextField label="Width" figure error={errors.boxWidth?.message} {...register("boxWidth")} />
         <TextField label="Height" figure error={errors.boxHeight?.message} {...register("boxHeight")} />
       </div>
@@ -114,7 +178,10 @@ function LimitFields({ register, errors }: Part) {
 
 function EnteredFields({ register, errors }: Part) {
   return (
-    <Group title="As entered, per owner's specification" hint="Printed on the sheet as it stands here; nothing is judged from it.">
+    <Group
+      title="As entered, per owner's specification"
+      hint="Printed on the sheet as it stands here; nothing is judged from it."
+    >
       <TextField label="Insulation" error={errors.insulation?.message} {...register("insulation")} />
       <TextField label="PWHT" error={errors.pwht?.message} {...register("pwht")} />
       <TextField label="NDE" error={errors.nde?.message} {...register("nde")} />

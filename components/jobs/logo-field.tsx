@@ -38,23 +38,50 @@ export function LogoField({ path, logo, editable, onChanged }: LogoFieldProps) {
     }
   };
   const choose = (chosen: File | null) => {
-    setTrouble(chosen && chosen.size > LOGO_MAX_BYTES ? `A logo may have ${bytesText(LOGO_MAX_BYTES)}; this one has ${bytesText(chosen.size)}.` : null);
+    setTrouble(
+      chosen && chosen.size > LOGO_MAX_BYTES
+        ? `A logo may have ${bytesText(LOGO_MAX_BYTES)}; this one has ${bytesText(chosen.size)}.`
+        : null,
+    );
     setFile(chosen && chosen.size <= LOGO_MAX_BYTES ? chosen : null);
   };
   return (
     <div>
       <h3>Logo</h3>
-      <p className="mb-3 text-sm text-soft">PNG, JPEG or SVG, at most {bytesText(LOGO_MAX_BYTES)}. It prints in the corner of the title block.</p>
+      <p className="mb-3 text-sm text-soft">
+        PNG, JPEG or SVG, at most {bytesText(LOGO_MAX_BYTES)}. It prints in the corner of the title block.
+      </p>
       <div className="mb-3 flex h-28 w-full max-w-xs items-center justify-center border border-rule bg-white p-3">
         {/* eslint-disable-next-line @next/next/no-img-element -- a few kilobytes from our own store or the reader's disk */}
-        {shown ? <img src={shown} alt={file ? "Preview of the chosen logo" : "Logo in use"} className="max-h-full max-w-full" /> : <span className="text-soft">No logo</span>}
+        {shown ? (
+          <img
+            src={shown}
+            alt={file ? "Preview of the chosen logo" : "Logo in use"}
+            className="max-h-full max-w-full"
+          />
+        ) : (
+          <span className="text-soft">No logo</span>
+        )}
       </div>
-      {trouble ? <Notice tone="trouble" className="mb-3">{trouble}</Notice> : null}
+      {trouble ? (
+        <Notice tone="trouble" className="mb-3">
+          {trouble}
+        </Notice>
+      ) : null}
       {editable ? (
         <div className="flex flex-wrap items-center gap-3">
-          <FileButton label={logo || file ? "Choose another" : "Choose a logo"} accept="image/png,image/jpeg,image/svg+xml" onFile={choose} />
+          <FileButton
+            label={logo || file ? "Choose another" : "Choose a logo"}
+            accept="image/png,image/jpeg,image/svg+xml"
+            onFile={choose}
+          />
           {file ? (
-            <Button tone="primary" busy={busy} busyLabel="Sending" onClick={() => void run(() => apiUpload("PUT", path, file))}>
+            <Button
+              tone="primary"
+              busy={busy}
+              busyLabel="Sending"
+              onClick={() => void run(() => apiUpload("PUT", path, file))}
+            >
               Use this logo
             </Button>
           ) : null}

@@ -41,13 +41,24 @@ function NewJobForm() {
     });
   return (
     <form noValidate onSubmit={(event) => void handleSubmit(add)(event)}>
-      {trouble ? <Notice tone="trouble" className="mb-4">{trouble}</Notice> : null}
+      {trouble ? (
+        <Notice tone="trouble" className="mb-4">
+          {trouble}
+        </Notice>
+      ) : null}
       <div className="grid gap-4 sm:grid-cols-2">
         <TextField label="Job number" figure error={errors.number?.message} {...register("number")} />
         <TextField label="Title" error={errors.title?.message} {...register("title")} />
         <TextField label="Client" error={errors.client?.message} {...register("client")} />
         <TextField label="Area or unit" error={errors.area?.message} {...register("area")} />
-        <Select label="Units" hint="Each line may still choose its own." options={UNIT_OPTIONS} className="sm:col-span-2" error={errors.units?.message} {...register("units")} />
+        <Select
+          label="Units"
+          hint="Each line may still choose its own."
+          options={UNIT_OPTIONS}
+          className="sm:col-span-2"
+          error={errors.units?.message}
+          {...register("units")}
+        />
       </div>
       <DialogActions>
         <Button type="submit" tone="primary" busy={formState.isSubmitting} busyLabel="Opening">

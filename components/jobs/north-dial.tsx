@@ -2,7 +2,14 @@
 export function NorthDial({ degrees }: { readonly degrees: number }) {
   const turn = Number.isFinite(degrees) ? degrees : 0;
   return (
-    <svg viewBox="0 0 150 96" role="img" aria-label={`Plant north lies ${turn} degrees clockwise from true north`} className="h-24 w-38 self-end" fill="none" stroke="currentColor">
+    <svg
+      viewBox="0 0 150 96"
+      role="img"
+      aria-label={`Plant north lies ${turn} degrees clockwise from true north`}
+      className="h-24 w-38 self-end"
+      fill="none"
+      stroke="currentColor"
+    >
       <circle cx="48" cy="50" r="38" className="text-hair" />
       <path d="M48 96V4M48 4l-4 8M48 4l4 8" strokeDasharray="4 3" className="text-soft" />
       <text x="58" y="10" className="fill-soft text-[11px]" stroke="none">

@@ -1,8 +1,20 @@
 /** Line settings as a form holds them (texts, lengths as typed) and back. */
 import { z } from "zod";
-import { NPS_SIZES, formatDecimal, formatLength, formatTerm, lineSettingsSchema, npsSchema, parseLength, unitSystemSchema, type LineSettings, type UnitSystem } from "@/iso";
+import {
+  NPS_SIZES,
+  formatDecimal,
+  formatLength,
+  formatTerm,
+  lineSettingsSchema,
+  npsSchema,
+  parseLength,
+  unitSystemSchema,
+  type LineSettings,
+  type UnitSystem,
+} from "@/iso";
 
-const name = (what: string, max: number) => z.string().trim().min(1, `Enter ${what}.`).max(max, `At most ${max} characters.`);
+const name = (what: string, max: number) =>
+  z.string().trim().min(1, `Enter ${what}.`).max(max, `At most ${max} characters.`);
 const free = z.string().trim().max(120, "At most 120 characters.");
 
 const shape = z.object({
@@ -33,26 +45,52 @@ const shape = z.object({
 
 export type SettingsText = z.infer<typeof shape>;
 
-const LENGTHS = ["rootGap", "socketPullBack", "gasket", "slipOnSetting", "fieldTrim", "boxLength", "boxWidth", "boxHeight"] as const;
+const LENGTHS = [
+  "rootGap",
+  "socketPullBack",
+  "gasket",
+  "slipOnSetting",
+  "fieldTrim",
+  "boxLength",
+  "boxWidth",
+  "boxHeight",
+] as const;
 type LengthField = (typeof LENGTHS)[number];
 
 /** The form's own check: every length is read in the chosen unit system; what comes out is LineSettings. */
 export const settingsTextSchema = shape.transform((values, context): LineSettings => {
   const lengths = {} as Record<LengthField, number>;
   for (const field of LENGTHS) lengths[field] = lengthOf(values[field], values.units, field, context);
-  const minimumPupMm = values.minimumPup.trim() === "" ? null : lengthOf(values.minimumPup, values.units, "minimumPup", context);
+  const minimumPupMm =
+    values.minimumPup.trim() === "" ? null : lengthOf(values.minimumPup, values.units, "minimumPup", context);
   const settings: LineSettings = {
     units: values.units,
-    pipe: { nps: values.nps, schedule: values.schedule, material: values.material, specification: values.specification },
+    pipe: {
+      nps: values.nps,
+      schedule: values.schedule,
+      material: values.material,
+      specification: values.specification,
+    },
     elbow: values.elbow,
     ratingClass: Number(values.ratingClass) as LineSettings["ratingClass"],
-    allowances: { rootGapMm: lengths.rootGap, socketPullBackMm: lengths.socketPullBack, gasketMm: lengths.gasket, slipOnSettingMm: lengths.slipOnSetting },
+    allowances: {
+      rootGapMm: lengths.rootGap,
+      socketPullBackMm: lengths.socketPullBack,
+      gasketMm: lengths.gasket,
+      slipOnSettingMm: lengths.slipOnSetting,
+    },
     standardElbowWithinDeg: degreesOf(values.withinDeg, context),
     minimumPupMm,
     fieldTrimMm: lengths.fieldTrim,
     faceIncludesGasket: values.faceIncludesGasket,
     shippingBoxMm: [lengths.boxLength, lengths.boxWidth, lengths.boxHeight],
-    asEntered: { insulation: values.insulation, pwht: values.pwht, nde: values.nde, test: values.test, paint: values.paint },
+    asEntered: {
+      insulation: values.insulation,
+      pwht: values.pwht,
+      nde: values.nde,
+      test: values.test,
+      paint: values.paint,
+    },
   };
   return context.issues.length > 0 ? z.NEVER : lineSettingsSchema.parse(settings);
 });
@@ -60,7 +98,11 @@ export const settingsTextSchema = shape.transform((values, context): LineSetting
 function lengthOf(text: string, units: UnitSystem, field: string, context: z.RefinementCtx): number {
   const parsed = parseLength(text, units);
   if (parsed.ok && parsed.mm >= 0) return parsed.mm;
-  context.addIssue({ code: "custom", path: [field], message: parsed.ok ? "Not under zero." : parsed.message });
+  context.addIssue({
+    code: "custom",
+    path: [field],
+    message: parsed.ok ? "Not under zero." : parsed.message,
+  });
   return 0;
 }
 

@@ -31,16 +31,32 @@ export function TitleFieldsForm({ fields, editable, onSave }: TitleFieldsFormPro
   const { trouble, send } = useFormSend(setError, FIELDS);
   const errors = formState.errors.fields;
   return (
-    <form noValidate onSubmit={(event) => void handleSubmit((values) => send(() => onSave(values.fields)))(event)}>
+    <form
+      noValidate
+      onSubmit={(event) => void handleSubmit((values) => send(() => onSave(values.fields)))(event)}
+    >
       <h3>Fields of your own</h3>
       <p className="mb-3 text-sm text-soft">At most six, such as a work order or a purchase order.</p>
-      {trouble ? <Notice tone="trouble" className="mb-4">{trouble}</Notice> : null}
+      {trouble ? (
+        <Notice tone="trouble" className="mb-4">
+          {trouble}
+        </Notice>
+      ) : null}
       <fieldset disabled={!editable} className="space-y-3">
         {rows.fields.map((row, n) => (
           <div key={row.id} className="grid grid-cols-[1fr_1fr_auto] items-start gap-3">
-            <TextField label={`Label ${n + 1}`} error={errors?.[n]?.label?.message} {...register(`fields.${n}.label`)} />
+            <TextField
+              label={`Label ${n + 1}`}
+              error={errors?.[n]?.label?.message}
+              {...register(`fields.${n}.label`)}
+            />
             <TextField label="Text" error={errors?.[n]?.value?.message} {...register(`fields.${n}.value`)} />
-            <Button tone="quiet" className="mt-7" aria-label={`Remove field ${n + 1}`} onClick={() => rows.remove(n)}>
+            <Button
+              tone="quiet"
+              className="mt-7"
+              aria-label={`Remove field ${n + 1}`}
+              onClick={() => rows.remove(n)}
+            >
               Remove
             </Button>
           </div>

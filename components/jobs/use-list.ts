@@ -18,7 +18,9 @@ export function useList<Row>({ rows, textOf, keys, start, keep }: ListOptions<Ro
   const [sort, setSort] = useState(start);
   const shown = useMemo(() => {
     const words = search.toLowerCase().split(/\s+/).filter(Boolean);
-    const matching = rows.filter((row) => (keep?.(row) ?? true) && words.every((word) => textOf(row).toLowerCase().includes(word)));
+    const matching = rows.filter(
+      (row) => (keep?.(row) ?? true) && words.every((word) => textOf(row).toLowerCase().includes(word)),
+    );
     const key = keys[sort.key];
     if (!key) return matching;
     const ordered = [...matching].sort((a, b) => compareKeys(key(a), key(b)));

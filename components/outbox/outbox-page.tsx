@@ -16,7 +16,9 @@ export function OutboxPage() {
       <Loaded api={outbox} label="Loading mails">
         {(mails) =>
           mails.length === 0 ? (
-            <EmptyState title="No mail yet">Submit a revision or invite a person, and the mail shows here.</EmptyState>
+            <EmptyState title="No mail yet">
+              Submit a revision or invite a person, and the mail shows here.
+            </EmptyState>
           ) : (
             <ol className="space-y-5">
               {[...mails]
@@ -45,7 +47,8 @@ const ADDRESS = /(https?:\/\/[^\s<>"]+)/;
 /** Addresses of this site become links; all else stays text. */
 function WithLinks({ text }: { readonly text: string }) {
   return text.split(ADDRESS).map((part, n) => {
-    const own = ADDRESS.test(part) && typeof window !== "undefined" && part.startsWith(window.location.origin);
+    const own =
+      ADDRESS.test(part) && typeof window !== "undefined" && part.startsWith(window.location.origin);
     if (!own) return part;
     return (
       <Link key={n} href={part.slice(window.location.origin.length)} className="inked">

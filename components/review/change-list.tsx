@@ -2,10 +2,18 @@ import { EmptyState } from "@/components/ui/empty-state";
 import { Table, type Column } from "@/components/ui/table";
 import type { Change } from "@/lib/rules/api-types";
 
-const KINDS: Readonly<Record<Change["kind"], string>> = { added: "+ Added", removed: "- Removed", changed: "Changed" };
+const KINDS: Readonly<Record<Change["kind"], string>> = {
+  added: "+ Added",
+  removed: "- Removed",
+  changed: "Changed",
+};
 
 const COLUMNS: readonly Column<Change>[] = [
-  { key: "kind", head: "Change", cell: (change) => <span className="font-medium whitespace-nowrap">{KINDS[change.kind]}</span> },
+  {
+    key: "kind",
+    head: "Change",
+    cell: (change) => <span className="font-medium whitespace-nowrap">{KINDS[change.kind]}</span>,
+  },
   {
     key: "text",
     head: "What",
@@ -30,9 +38,23 @@ const COLUMNS: readonly Column<Change>[] = [
 ];
 
 /** The differences to the revision in force, in words. */
-export function ChangeList({ changes, first }: { readonly changes: readonly Change[]; readonly first: boolean }) {
+export function ChangeList({
+  changes,
+  first,
+}: {
+  readonly changes: readonly Change[];
+  readonly first: boolean;
+}) {
   if (first) return <p className="text-soft">There is none before it, so everything on the sheet is new.</p>;
-  if (changes.length === 0) return <EmptyState title="No difference in content">Only the words of the revision changed.</EmptyState>;
+  if (changes.length === 0)
+    return <EmptyState title="No difference in content">Only the words of the revision changed.</EmptyState>;
   const rows = changes.map((change, n) => ({ ...change, n }));
-  return <Table caption="What changed" columns={COLUMNS} rows={rows} rowKey={(change) => `${(change as Change & { n: number }).n}`} />;
+  return (
+    <Table
+      caption="What changed"
+      columns={COLUMNS}
+      rows={rows}
+      rowKey={(change) => `${(change as Change & { n: number }).n}`}
+    />
+  );
 }

@@ -10,7 +10,13 @@ import type { ReviewDetail } from "@/lib/rules/api-types";
 import { SignDialog } from "./sign-dialog";
 
 /** Sign, return, hold or void; what the viewer may not do is not there. */
-export function Decision({ review, accepted }: { readonly review: ReviewDetail; readonly accepted: readonly string[] }) {
+export function Decision({
+  review,
+  accepted,
+}: {
+  readonly review: ReviewDetail;
+  readonly accepted: readonly string[];
+}) {
   const router = useRouter();
   const [signing, setSigning] = useState(false);
   const [act, setAct] = useState<RevisionAct | null>(null);
@@ -24,7 +30,8 @@ export function Decision({ review, accepted }: { readonly review: ReviewDetail; 
     <Section title="Decision" className="border border-ink bg-sheet p-4">
       {can.sign && open > 0 ? (
         <Notice tone="caution" word="Not yet" className="mb-4">
-          {countText(open, "unverified dimension")} above {open === 1 ? "is" : "are"} not accepted. Accept each, or return the revision.
+          {countText(open, "unverified dimension")} above {open === 1 ? "is" : "are"} not accepted. Accept
+          each, or return the revision.
         </Notice>
       ) : null}
       <div className="flex flex-wrap gap-3">
@@ -34,13 +41,26 @@ export function Decision({ review, accepted }: { readonly review: ReviewDetail; 
           </Button>
         ) : null}
         {acts.map((one) => (
-          <Button key={one} big={one === "return"} tone={one === "hold" || one === "void" ? "stop" : "plain"} onClick={() => setAct(one)}>
+          <Button
+            key={one}
+            big={one === "return"}
+            tone={one === "hold" || one === "void" ? "stop" : "plain"}
+            onClick={() => setAct(one)}
+          >
             {actWords(one).title}
           </Button>
         ))}
       </div>
       <SignDialog open={signing} review={review} accepted={accepted} onClose={() => setSigning(false)} />
-      <ReasonDialog act={act} revisionId={revision.id} code={revision.code} onClose={() => setAct(null)} onDone={act === "return" || act === "void" ? () => router.push(`/spools/${review.spool.id}`) : undefined} />
+      <ReasonDialog
+        act={act}
+        revisionId={revision.id}
+        code={revision.code}
+        onClose={() => setAct(null)}
+        onDone={
+          act === "return" || act === "void" ? () => router.push(`/spools/${review.spool.id}`) : undefined
+        }
+      />
     </Section>
   );
 }

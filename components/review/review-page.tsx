@@ -49,7 +49,13 @@ function Review({ review }: { readonly review: ReviewDetail }) {
             <ChangeList changes={review.changes} first={review.before === null} />
           </Section>
           <Section title="Unverified dimensions">
-            <Unverified dimensions={review.unverified} accepted={accepted} onToggle={toggle} mayAccept={review.can.sign} name={viewer.data?.name ?? ""} />
+            <Unverified
+              dimensions={review.unverified}
+              accepted={accepted}
+              onToggle={toggle}
+              mayAccept={review.can.sign}
+              name={viewer.data?.name ?? ""}
+            />
           </Section>
           <Findings review={review} />
           {deciding ? <Decision review={review} accepted={[...accepted]} /> : null}
@@ -66,7 +72,8 @@ function ReviewHead({ review }: { readonly review: ReviewDetail }) {
       kind="Review"
       title={
         <>
-          <span className="figure">{spool.sheetNumber}</span> rev <span className="figure">{revision.code}</span>
+          <span className="figure">{spool.sheetNumber}</span> rev{" "}
+          <span className="figure">{revision.code}</span>
         </>
       }
       trail={[
@@ -126,7 +133,12 @@ function Sheets({ review }: { readonly review: ReviewDetail }) {
         ) : (
           <span />
         )}
-        <a className="inked inline-flex min-h-11 items-center" href={`/api/revisions/${review.revision.id}/sheet?kind=review`} target="_blank" rel="noreferrer">
+        <a
+          className="inked inline-flex min-h-11 items-center"
+          href={`/api/revisions/${review.revision.id}/sheet?kind=review`}
+          target="_blank"
+          rel="noreferrer"
+        >
           Submitted PDF
         </a>
       </div>
@@ -163,7 +175,9 @@ function Findings({ review }: { readonly review: ReviewDetail }) {
       <ul className="list-disc space-y-1.5 pl-5">
         {problems.map((problem, n) => (
           <li key={n}>
-            {problem.severity === "note" ? null : <strong>{problem.severity === "stop" ? "Stop: " : "Warning: "}</strong>}
+            {problem.severity === "note" ? null : (
+              <strong>{problem.severity === "stop" ? "Stop: " : "Warning: "}</strong>
+            )}
             {problem.text}
           </li>
         ))}

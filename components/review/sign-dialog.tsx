@@ -30,7 +30,15 @@ export function SignDialog({ open, review, accepted, onClose }: SignDialogProps)
   );
 }
 
-function SignFields({ review, accepted, onDone }: { readonly review: ReviewDetail; readonly accepted: readonly string[]; readonly onDone: () => void }) {
+function SignFields({
+  review,
+  accepted,
+  onDone,
+}: {
+  readonly review: ReviewDetail;
+  readonly accepted: readonly string[];
+  readonly onDone: () => void;
+}) {
   const say = useToast();
   const router = useRouter();
   const { register, handleSubmit, setError, formState } = useForm<SignForm>({
@@ -50,16 +58,33 @@ function SignFields({ review, accepted, onDone }: { readonly review: ReviewDetai
     <form noValidate onSubmit={(event) => void handleSubmit(sign)(event)} className="space-y-4">
       {trouble ? <Notice tone="trouble">{trouble}</Notice> : null}
       <p>
-        Sheet <span className="figure">{review.spool.sheetNumber}</span> becomes FOR FABRICATION under your name.
-        {review.before ? ` Rev ${review.before.revision.code} becomes SUPERSEDED, and those who hold it have mail.` : ""}
+        Sheet <span className="figure">{review.spool.sheetNumber}</span> becomes FOR FABRICATION under your
+        name.
+        {review.before
+          ? ` Rev ${review.before.revision.code} becomes SUPERSEDED, and those who hold it have mail.`
+          : ""}
       </p>
-      {accepted.length > 0 ? <p>Accepted by you: {review.unverified.filter((one) => accepted.includes(one.pointId)).map((one) => one.text).join("; ")}</p> : null}
+      {accepted.length > 0 ? (
+        <p>
+          Accepted by you:{" "}
+          {review.unverified
+            .filter((one) => accepted.includes(one.pointId))
+            .map((one) => one.text)
+            .join("; ")}
+        </p>
+      ) : null}
       <Check
         label="I checked this sheet. It is a layout aid with nominal take-outs: the bench verifies by tape, two readings, before cutting."
         error={formState.errors.verified?.message}
         {...register("verified")}
       />
-      <TextField label="Your password, again" type="password" autoComplete="current-password" error={formState.errors.password?.message} {...register("password")} />
+      <TextField
+        label="Your password, again"
+        type="password"
+        autoComplete="current-password"
+        error={formState.errors.password?.message}
+        {...register("password")}
+      />
       <DialogActions>
         <Button type="submit" tone="primary" big busy={formState.isSubmitting} busyLabel="Signing">
           Sign

@@ -5,9 +5,20 @@ import { printableText } from "@/fonts/printable";
 import { EM_PER_CAPITAL } from "@/fonts/widths";
 
 /** The inks of the sheet on screen; the same colours as on paper. */
-const INKS: Readonly<Record<Ink, string>> = { ink: "#111111", dye: "#1b3f94", grey: "#6b6b6b", paper: "#ffffff", alert: "#a3261b", pale: "#dcd6cb" };
+const INKS: Readonly<Record<Ink, string>> = {
+  ink: "#111111",
+  dye: "#1b3f94",
+  grey: "#6b6b6b",
+  paper: "#ffffff",
+  alert: "#a3261b",
+  pale: "#dcd6cb",
+};
 
-const FACES: Readonly<Record<Face, string>> = { regular: "font-sans", bold: "font-sans font-bold", mono: "font-mono" };
+const FACES: Readonly<Record<Face, string>> = {
+  regular: "font-sans",
+  bold: "font-sans font-bold",
+  mono: "font-mono",
+};
 
 /** Display items as SVG elements, in order; paper millimetres are the user units. */
 export const DisplaySvg = memo(function DisplaySvg({ items }: { readonly items: readonly DisplayItem[] }) {

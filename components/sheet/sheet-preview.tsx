@@ -15,7 +15,11 @@ export interface SheetPreviewProps {
 }
 
 type Zoom = "fit" | "near" | "close";
-const WIDTHS: Readonly<Record<Zoom, string>> = { fit: "w-full", near: "w-[170%] min-w-[52rem]", close: "w-[280%] min-w-[84rem]" };
+const WIDTHS: Readonly<Record<Zoom, string>> = {
+  fit: "w-full",
+  near: "w-[170%] min-w-[52rem]",
+  close: "w-[280%] min-w-[84rem]",
+};
 
 /**
  * The sheet as it prints, drawn in the browser by the same core as the PDF: pages to turn, three sizes, and a frame to
@@ -25,7 +29,8 @@ export function SheetPreview({ input, label }: SheetPreviewProps) {
   const composed = useMemo(() => compose(input), [input]);
   const [pageNumber, setPageNumber] = useState(0);
   const [zoom, setZoom] = useState<Zoom>("fit");
-  if (!composed) return <Notice tone="trouble">This sheet cannot be drawn on screen. Open its PDF instead.</Notice>;
+  if (!composed)
+    return <Notice tone="trouble">This sheet cannot be drawn on screen. Open its PDF instead.</Notice>;
   const page = composed[Math.min(pageNumber, composed.length - 1)];
   if (!page) return <Notice>There is nothing on this sheet yet.</Notice>;
   return (
@@ -43,7 +48,15 @@ export function SheetPreview({ input, label }: SheetPreviewProps) {
           ]}
         />
       </div>
-      <div role="region" aria-label={`${label}, ${page.name}`} tabIndex={0} className={clsx("overflow-auto border border-ink bg-white print:max-h-none print:overflow-visible print:border-0", zoom !== "fit" && "max-h-[85dvh]")}>
+      <div
+        role="region"
+        aria-label={`${label}, ${page.name}`}
+        tabIndex={0}
+        className={clsx(
+          "overflow-auto border border-ink bg-white print:max-h-none print:overflow-visible print:border-0",
+          zoom !== "fit" && "max-h-[85dvh]",
+        )}
+      >
         <div className={clsx(WIDTHS[zoom], "print:w-full print:min-w-0")}>
           <PageSvg page={page} label={`${label}, ${page.name}`} logo={input.titleBlock.logo} />
         </div>
@@ -52,17 +65,54 @@ export function SheetPreview({ input, label }: SheetPreviewProps) {
   );
 }
 
-function Pages({ pages, value, onChange }: { readonly pages: readonly SheetPage[]; readonly value: number; readonly onChange: (page: number) => void }) {
+function Pages({
+  pages,
+  value,
+  onChange,
+}: {
+  readonly pages: readonly SheetPage[];
+  readonly value: number;
+  readonly onChange: (page: number) => void;
+}) {
   if (pages.length < 2) return <span className="text-sm text-soft">1 page</span>;
-  return <ChoiceRow label="Page" value={String(value)} onChange={(page) => onChange(Number(page))} choices={pages.map((page, n) => ({ value: String(n), label: page.name }))} />;
+  return (
+    <ChoiceRow
+      label="Page"
+      value={String(value)}
+      onChange={(page) => onChange(Number(page))}
+      choices={pages.map((page, n) => ({ value: String(n), label: page.name }))}
+    />
+  );
 }
 
-function PageSvg({ page, label, logo }: { readonly page: SheetPage; readonly label: string; readonly logo: SheetInput["titleBlock"]["logo"] }) {
+function PageSvg({
+  page,
+  label,
+  logo,
+}: {
+  readonly page: SheetPage;
+  readonly label: string;
+  readonly logo: SheetInput["titleBlock"]["logo"];
+}) {
   const box = page.logoBox;
   return (
-    <svg viewBox={`0 0 ${page.widthMm} ${page.heightMm}`} role="img" aria-label={label} className="drawn block h-auto w-full bg-white">
+    <svg
+      viewBox={`0 0 ${page.widthMm} ${page.heightMm}`}
+      role="img"
+      aria-label={label}
+      className="drawn block h-auto w-full bg-white"
+    >
       <DisplaySvg items={page.items} />
-      {box && logo ? <image href={logoAddress(logo)} x={box.minX} y={box.minY} width={box.maxX - box.minX} height={box.maxY - box.minY} preserveAspectRatio="xMidYMid meet" /> : null}
+      {box && logo ? (
+        <image
+          href={logoAddress(logo)}
+          x={box.minX}
+          y={box.minY}
+          width={box.maxX - box.minX}
+          height={box.maxY - box.minY}
+          preserveAspectRatio="xMidYMid meet"
+        />
+      ) : null}
     </svg>
   );
 }

@@ -32,4 +32,9 @@ export function placeOfPath(path: string): string {
   return `/${path.split("/")[1] ?? ""}`;
 }
 
-export const ROLE_WORDS: Readonly<Record<Role, string>> = { owner: "Owner", detailer: "Detailer", inspector: "Inspector", fitter: "Fitter" };
+export const ROLE_WORDS: Readonly<Record<Role, string>> = {
+  owner: "Owner",
+  detailer: "Detailer",
+  inspector: "Inspector",
+  fitter: "Fitter",
+};

@@ -16,11 +16,21 @@ export function Shell({ children }: { readonly children: ReactNode }) {
   const open = isPublicPath(path);
   return (
     <ToastRegion>
-      <a href="#main" className="sr-only focus:not-sr-only focus:absolute focus:z-50 focus:bg-dye focus:px-4 focus:py-3 focus:text-white">
+      <a
+        href="#main"
+        className="sr-only focus:not-sr-only focus:absolute focus:z-50 focus:bg-dye focus:px-4 focus:py-3 focus:text-white"
+      >
         Skip to the page
       </a>
       {open ? <BareHead /> : <TopBar path={path} />}
-      <main id="main" tabIndex={-1} className={clsx("mx-auto w-full px-4 py-5 outline-none sm:px-6", !path.startsWith("/lines/") && "max-w-[90rem]")}>
+      <main
+        id="main"
+        tabIndex={-1}
+        className={clsx(
+          "mx-auto w-full px-4 py-5 outline-none sm:px-6",
+          !path.startsWith("/lines/") && "max-w-[90rem]",
+        )}
+      >
         {children}
       </main>
     </ToastRegion>
@@ -71,7 +81,10 @@ function TopBar({ path }: { readonly path: string }) {
 function Places({ viewer, path }: { readonly viewer: Viewer; readonly path: string }) {
   const here = placeOfPath(path);
   return (
-    <nav aria-label="Places" className="order-last flex w-full grow border-t border-hair sm:order-none sm:w-auto sm:border-t-0">
+    <nav
+      aria-label="Places"
+      className="order-last flex w-full grow border-t border-hair sm:order-none sm:w-auto sm:border-t-0"
+    >
       {placesFor(viewer).map((place) => (
         <Link
           key={place.href}

@@ -67,7 +67,8 @@ function OtherShops({ viewer }: { readonly viewer: Viewer }) {
 function useCloseOutside(box: RefObject<HTMLDetailsElement | null>): void {
   useEffect(() => {
     const press = (event: PointerEvent) => {
-      if (box.current?.open && !box.current.contains(event.target as globalThis.Node)) box.current.open = false;
+      if (box.current?.open && !box.current.contains(event.target as globalThis.Node))
+        box.current.open = false;
     };
     const key = (event: KeyboardEvent) => {
       if (event.key !== "Escape" || !box.current?.open) return;

@@ -35,7 +35,11 @@ export function AuditView() {
         {(page) => (
           <>
             <ChainVerdict page={page} />
-            {page.rows.length === 0 ? <EmptyState title="Nothing logged yet">Every change shows here from now on.</EmptyState> : <Rows key={page.head.hash} first={page} />}
+            {page.rows.length === 0 ? (
+              <EmptyState title="Nothing logged yet">Every change shows here from now on.</EmptyState>
+            ) : (
+              <Rows key={page.head.hash} first={page} />
+            )}
           </>
         )}
       </Loaded>
@@ -78,7 +82,12 @@ function Rows({ first }: { readonly first: AuditPage }) {
   };
   return (
     <>
-      <Table caption="Log" columns={COLUMNS} rows={[...first.rows, ...older]} rowKey={(row) => String(row.seq)} />
+      <Table
+        caption="Log"
+        columns={COLUMNS}
+        rows={[...first.rows, ...older]}
+        rowKey={(row) => String(row.seq)}
+      />
       {next === null ? null : (
         <Button className="mt-4" busy={busy} busyLabel="Loading" onClick={() => void more()}>
           Older entries

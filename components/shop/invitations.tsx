@@ -32,7 +32,15 @@ export function Invitations() {
       <InviteFields />
       <div className="mt-6">
         <Loaded api={invitations} label="Loading invitations" lines={2}>
-          {(rows) => (rows.length === 0 ? <EmptyState title="No invitation waits">Invite a person above; the link in the mail works once.</EmptyState> : <Waiting rows={rows} />)}
+          {(rows) =>
+            rows.length === 0 ? (
+              <EmptyState title="No invitation waits">
+                Invite a person above; the link in the mail works once.
+              </EmptyState>
+            ) : (
+              <Waiting rows={rows} />
+            )
+          }
         </Loaded>
       </div>
     </Section>
@@ -41,7 +49,10 @@ export function Invitations() {
 
 function InviteFields() {
   const say = useToast();
-  const { register, handleSubmit, setError, reset, formState } = useForm<InviteForm>({ resolver: zodResolver(inviteSchema), defaultValues: { email: "", role: "detailer" } });
+  const { register, handleSubmit, setError, reset, formState } = useForm<InviteForm>({
+    resolver: zodResolver(inviteSchema),
+    defaultValues: { email: "", role: "detailer" },
+  });
   const { trouble, send } = useFormSend(setError, FIELDS);
   const invite = (values: InviteForm) =>
     send(async () => {
@@ -52,11 +63,31 @@ function InviteFields() {
     });
   return (
     <form noValidate onSubmit={(event) => void handleSubmit(invite)(event)}>
-      {trouble ? <Notice tone="trouble" className="mb-3">{trouble}</Notice> : null}
+      {trouble ? (
+        <Notice tone="trouble" className="mb-3">
+          {trouble}
+        </Notice>
+      ) : null}
       <div className="grid items-start gap-4 sm:grid-cols-[1fr_1.3fr_auto]">
-        <TextField label="E-mail address" type="email" error={formState.errors.email?.message} {...register("email")} />
-        <Select label="Role" options={ROLE_OPTIONS} error={formState.errors.role?.message} {...register("role")} />
-        <Button type="submit" tone="primary" className="sm:mt-7" busy={formState.isSubmitting} busyLabel="Sending">
+        <TextField
+          label="E-mail address"
+          type="email"
+          error={formState.errors.email?.message}
+          {...register("email")}
+        />
+        <Select
+          label="Role"
+          options={ROLE_OPTIONS}
+          error={formState.errors.role?.message}
+          {...register("role")}
+        />
+        <Button
+          type="submit"
+          tone="primary"
+          className="sm:mt-7"
+          busy={formState.isSubmitting}
+          busyLabel="Sending"
+        >
           Invite
         </Button>
       </div>
@@ -83,7 +114,11 @@ function Waiting({ rows }: { readonly rows: readonly InvitationRow[] }) {
       key: "withdraw",
       head: "",
       cell: (row) => (
-        <Button tone="quiet" aria-label={`Withdraw the invitation of ${row.email}`} onClick={() => void withdraw(row)}>
+        <Button
+          tone="quiet"
+          aria-label={`Withdraw the invitation of ${row.email}`}
+          onClick={() => void withdraw(row)}
+        >
           Withdraw
         </Button>
       ),

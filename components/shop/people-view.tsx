@@ -23,7 +23,11 @@ export function PeopleView({ owner }: { readonly owner: boolean }) {
         <Loaded api={people} label="Loading people">
           {(rows) => (
             <>
-              {rows.length === 1 ? <Notice className="mb-4">You are alone in this shop. Signing needs a second person: invite an inspector.</Notice> : null}
+              {rows.length === 1 ? (
+                <Notice className="mb-4">
+                  You are alone in this shop. Signing needs a second person: invite an inspector.
+                </Notice>
+              ) : null}
               <PeopleTable rows={rows} owner={owner} />
             </>
           )}
@@ -48,7 +52,11 @@ function PeopleTable({ rows, owner }: { readonly rows: readonly PersonRow[]; rea
         </span>
       ),
     },
-    { key: "role", head: "Role", cell: (person) => (owner && !person.you ? <RoleSelect person={person} /> : ROLE_WORDS[person.role]) },
+    {
+      key: "role",
+      head: "Role",
+      cell: (person) => (owner && !person.you ? <RoleSelect person={person} /> : ROLE_WORDS[person.role]),
+    },
     { key: "joined", head: "Since", cell: (person) => dayText(person.joinedAt) },
   ];
   if (owner) {
@@ -83,7 +91,12 @@ function RoleSelect({ person }: { readonly person: PersonRow }) {
     await refreshApi("/api/shop/people");
   };
   return (
-    <select aria-label={`Role of ${person.name}`} value={person.role} onChange={(event) => void change(event.target.value as Role)} className="min-h-11 border border-rule bg-sheet px-3">
+    <select
+      aria-label={`Role of ${person.name}`}
+      value={person.role}
+      onChange={(event) => void change(event.target.value as Role)}
+      className="min-h-11 border border-rule bg-sheet px-3"
+    >
       {ROLES.map((role) => (
         <option key={role} value={role}>
           {ROLE_WORDS[role]}
@@ -93,7 +106,13 @@ function RoleSelect({ person }: { readonly person: PersonRow }) {
   );
 }
 
-function RemoveDialog({ person, onClose }: { readonly person: PersonRow | null; readonly onClose: () => void }) {
+function RemoveDialog({
+  person,
+  onClose,
+}: {
+  readonly person: PersonRow | null;
+  readonly onClose: () => void;
+}) {
   const say = useToast();
   const [trouble, setTrouble] = useState<string | null>(null);
   const close = () => {
@@ -113,8 +132,15 @@ function RemoveDialog({ person, onClose }: { readonly person: PersonRow | null; 
   };
   return (
     <Dialog open={person !== null} onClose={close} title={`Remove ${person?.name ?? ""}`}>
-      {trouble ? <Notice tone="trouble" className="mb-3">{trouble}</Notice> : null}
-      <p>{person?.name} is signed out at once and sees nothing of this shop any more. What they drew, signed and recorded keeps their name.</p>
+      {trouble ? (
+        <Notice tone="trouble" className="mb-3">
+          {trouble}
+        </Notice>
+      ) : null}
+      <p>
+        {person?.name} is signed out at once and sees nothing of this shop any more. What they drew, signed
+        and recorded keeps their name.
+      </p>
       <DialogActions>
         <Button tone="stop" onClick={() => void remove()}>
           Remove from the shop

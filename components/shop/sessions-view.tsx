@@ -44,7 +44,11 @@ function Sessions({ rows }: { readonly rows: readonly SessionRow[] }) {
     },
     { key: "created", head: "Signed in", cell: (row) => timeText(row.createdAt) },
     { key: "seen", head: "Last seen", cell: (row) => timeText(row.lastSeenAt) },
-    { key: "end", head: "", cell: (row) => (row.current ? null : <Button onClick={() => void end(row)}>End it</Button>) },
+    {
+      key: "end",
+      head: "",
+      cell: (row) => (row.current ? null : <Button onClick={() => void end(row)}>End it</Button>),
+    },
   ];
   return <Table caption="Your sessions" columns={columns} rows={rows} rowKey={(row) => row.id} />;
 }

@@ -26,19 +26,34 @@ export function ShopSettingsView({ owner }: { readonly owner: boolean }) {
     <Loaded api={shop} label="Loading settings" lines={8}>
       {(data) => (
         <>
-          {owner ? null : <Notice className="mb-6">Your role reads these settings. The owner changes them.</Notice>}
+          {owner ? null : (
+            <Notice className="mb-6">Your role reads these settings. The owner changes them.</Notice>
+          )}
           <Section title="Name and sheet">
             <HeadFields shop={data} owner={owner} onSave={(values) => patch(values, "Shop saved.")} />
           </Section>
           <Section title="Title block">
             <div className="grid gap-8 lg:grid-cols-2">
-              <TitleFieldsForm fields={data.titleBlock.fields} editable={owner} onSave={(fields) => patch({ fields }, "Title block saved.")} />
-              <LogoField path="/api/shop/logo" logo={data.titleBlock.logo} editable={owner} onChanged={() => void refreshApi("/api/shop")} />
+              <TitleFieldsForm
+                fields={data.titleBlock.fields}
+                editable={owner}
+                onSave={(fields) => patch({ fields }, "Title block saved.")}
+              />
+              <LogoField
+                path="/api/shop/logo"
+                logo={data.titleBlock.logo}
+                editable={owner}
+                onChanged={() => void refreshApi("/api/shop")}
+              />
             </div>
           </Section>
           <Section title="Defaults for new jobs">
             <p className="mb-4 text-soft">Jobs that exist keep their own.</p>
-            <LineSettingsForm settings={data.defaults} editable={owner} onSave={(defaults) => patch({ defaults }, "Defaults saved.")} />
+            <LineSettingsForm
+              settings={data.defaults}
+              editable={owner}
+              onSave={(defaults) => patch({ defaults }, "Defaults saved.")}
+            />
           </Section>
         </>
       )}
@@ -46,7 +61,15 @@ export function ShopSettingsView({ owner }: { readonly owner: boolean }) {
   );
 }
 
-function HeadFields({ shop, owner, onSave }: { readonly shop: ShopSettings; readonly owner: boolean; readonly onSave: (values: ShopSettingsForm) => Promise<void> }) {
+function HeadFields({
+  shop,
+  owner,
+  onSave,
+}: {
+  readonly shop: ShopSettings;
+  readonly owner: boolean;
+  readonly onSave: (values: ShopSettingsForm) => Promise<void>;
+}) {
   const { register, handleSubmit, setError, formState } = useForm<ShopSettingsForm>({
     resolver: zodResolver(schema),
     values: { name: shop.name, sheetSize: shop.sheetSize },
@@ -55,13 +78,28 @@ function HeadFields({ shop, owner, onSave }: { readonly shop: ShopSettings; read
   const { trouble, send } = useFormSend(setError, FIELDS);
   return (
     <form noValidate onSubmit={(event) => void handleSubmit((values) => send(() => onSave(values)))(event)}>
-      {trouble ? <Notice tone="trouble" className="mb-3">{trouble}</Notice> : null}
+      {trouble ? (
+        <Notice tone="trouble" className="mb-3">
+          {trouble}
+        </Notice>
+      ) : null}
       <fieldset disabled={!owner} className="grid gap-4 sm:grid-cols-2 xl:grid-cols-4">
         <TextField label="Name of the shop" error={formState.errors.name?.message} {...register("name")} />
-        <Select label="Sheet size of new jobs" options={SHEET_OPTIONS} error={formState.errors.sheetSize?.message} {...register("sheetSize")} />
+        <Select
+          label="Sheet size of new jobs"
+          options={SHEET_OPTIONS}
+          error={formState.errors.sheetSize?.message}
+          {...register("sheetSize")}
+        />
       </fieldset>
       {owner ? (
-        <Button type="submit" tone="primary" className="mt-5" busy={formState.isSubmitting} busyLabel="Saving">
+        <Button
+          type="submit"
+          tone="primary"
+          className="mt-5"
+          busy={formState.isSubmitting}
+          busyLabel="Saving"
+        >
           Save
         </Button>
       ) : null}

@@ -20,14 +20,31 @@ type StockRow = ShopSettings["stock"][number];
 /** Stock lengths as a form holds them: numbers as typed. */
 function stockSchema(units: UnitSystem) {
   const row = z
-    .object({ nps: npsSchema, schedule: z.string(), material: z.string(), length: z.string(), quantity: z.string() })
+    .object({
+      nps: npsSchema,
+      schedule: z.string(),
+      material: z.string(),
+      length: z.string(),
+      quantity: z.string(),
+    })
     .transform((typed, context): StockRow => {
       const length = parseLength(typed.length, units);
       if (!length.ok) context.addIssue({ code: "custom", path: ["length"], message: length.message });
       const quantity = typed.quantity.trim() === "" ? Number.NaN : Number(typed.quantity);
-      const checked = stockRowSchema.safeParse({ nps: typed.nps, schedule: typed.schedule, material: typed.material, lengthMm: length.ok ? length.mm : 1, quantity });
+      const checked = stockRowSchema.safeParse({
+        nps: typed.nps,
+        schedule: typed.schedule,
+        material: typed.material,
+        lengthMm: length.ok ? length.mm : 1,
+        quantity,
+      });
       if (checked.success) return checked.data;
-      for (const issue of checked.error.issues) context.addIssue({ code: "custom", path: issue.path[0] === "lengthMm" ? ["length"] : [...issue.path], message: issue.message });
+      for (const issue of checked.error.issues)
+        context.addIssue({
+          code: "custom",
+          path: issue.path[0] === "lengthMm" ? ["length"] : [...issue.path],
+          message: issue.message,
+        });
       return z.NEVER;
     });
   return z.object({ stock: z.array(row).max(200, "At most 200 rows.") });
@@ -49,39 +66,120 @@ export function StockView({ owner }: { readonly owner: boolean }) {
   );
 }
 
-function StockForm({ shop, owner, onSave }: { readonly shop: ShopSettings; readonly owner: boolean; readonly onSave: (change: ShopSettingsForm) => Promise<void> }) {
+function StockForm({
+  shop,
+  owner,
+  onSave,
+}: {
+  readonly shop: ShopSettings;
+  readonly owner: boolean;
+  readonly onSave: (change: ShopSettingsForm) => Promise<void>;
+}) {
   const { units, pipe } = shop.defaults;
-  const typed = shop.stock.map((row) => ({ ...row, length: lengthEntryText(row.lengthMm, units), quantity: String(row.quantity) }));
+  const typed = shop.stock.map((row) => ({
+    ...row,
+    length: lengthEntryText(row.lengthMm, units),
+    quantity: String(row.quantity),
+  }));
   const { register, control, handleSubmit, setError, formState } = useForm<StockInput, unknown, StockOutput>({
     resolver: zodResolver(stockSchema(units)),
-    values: { stock: typed.map(({ nps, schedule, material, length, quantity }) => ({ nps: nps as StockInput["stock"][number]["nps"], schedule, material, length, quantity })) },
+    values: {
+      stock: typed.map(({ nps, schedule, material, length, quantity }) => ({
+        nps: nps as StockInput["stock"][number]["nps"],
+        schedule,
+        material,
+        length,
+        quantity,
+      })),
+    },
     resetOptions: { keepDirtyValues: true },
   });
   const rows = useFieldArray({ control, name: "stock" });
   const { trouble, send } = useFormSend(setError, FIELDS);
   const add = (
-    <Button onClick={() => rows.append({ nps: pipe.nps, schedule: pipe.schedule, material: pipe.material, length: units === "metric" ? "6000" : "20'", quantity: "1" })}>Add a length</Button>
+    <Button
+      onClick={() =>
+        rows.append({
+          nps: pipe.nps,
+          schedule: pipe.schedule,
+          material: pipe.material,
+          length: units === "metric" ? "6000" : "20'",
+          quantity: "1",
+        })
+      }
+    >
+      Add a length
+    </Button>
   );
   return (
-    <form noValidate onSubmit={(event) => void handleSubmit((values) => send(() => onSave({ stock: values.stock as ShopSettingsForm["stock"] })))(event)}>
-      {trouble ? <Notice tone="trouble" className="mb-3">{trouble}</Notice> : null}
+    <form
+      noValidate
+      onSubmit={(event) =>
+        void handleSubmit((values) =>
+          send(() => onSave({ stock: values.stock as ShopSettingsForm["stock"] })),
+        )(event)
+      }
+    >
+      {trouble ? (
+        <Notice tone="trouble" className="mb-3">
+          {trouble}
+        </Notice>
+      ) : null}
       {rows.fields.length === 0 ? (
         <EmptyState title="The rack is empty" action={owner ? add : null}>
-          {owner ? "Enter the lengths you hold, so that cut lists can say where a piece comes from." : "The owner enters the lengths the shop holds."}
+          {owner
+            ? "Enter the lengths you hold, so that cut lists can say where a piece comes from."
+            : "The owner enters the lengths the shop holds."}
         </EmptyState>
       ) : null}
       <fieldset disabled={!owner} className="space-y-4">
         {rows.fields.map((row, n) => {
           const errors = formState.errors.stock?.[n];
           return (
-            <div key={row.id} role="group" aria-label={`Stock row ${n + 1}`} className="grid grid-cols-2 items-start gap-3 border-b border-hair pb-4 lg:grid-cols-[8rem_8rem_1fr_10rem_7rem_auto]">
-              <Select label="Size" options={NPS_OPTIONS} error={errors?.nps?.message} {...register(`stock.${n}.nps`)} />
-              <TextField label="Schedule" figure error={errors?.schedule?.message} {...register(`stock.${n}.schedule`)} />
-              <TextField label="Material" className="col-span-2 lg:col-span-1" error={errors?.material?.message} {...register(`stock.${n}.material`)} />
-              <TextField label="Length" figure error={errors?.length?.message} {...register(`stock.${n}.length`)} />
-              <TextField label="Quantity" figure inputMode="numeric" error={errors?.quantity?.message} {...register(`stock.${n}.quantity`)} />
+            <div
+              key={row.id}
+              role="group"
+              aria-label={`Stock row ${n + 1}`}
+              className="grid grid-cols-2 items-start gap-3 border-b border-hair pb-4 lg:grid-cols-[8rem_8rem_1fr_10rem_7rem_auto]"
+            >
+              <Select
+                label="Size"
+                options={NPS_OPTIONS}
+                error={errors?.nps?.message}
+                {...register(`stock.${n}.nps`)}
+              />
+              <TextField
+                label="Schedule"
+                figure
+                error={errors?.schedule?.message}
+                {...register(`stock.${n}.schedule`)}
+              />
+              <TextField
+                label="Material"
+                className="col-span-2 lg:col-span-1"
+                error={errors?.material?.message}
+                {...register(`stock.${n}.material`)}
+              />
+              <TextField
+                label="Length"
+                figure
+                error={errors?.length?.message}
+                {...register(`stock.${n}.length`)}
+              />
+              <TextField
+                label="Quantity"
+                figure
+                inputMode="numeric"
+                error={errors?.quantity?.message}
+                {...register(`stock.${n}.quantity`)}
+              />
               {owner ? (
-                <Button tone="quiet" className="col-span-2 justify-self-start lg:col-span-1 lg:mt-7" aria-label={`Remove stock row ${n + 1}`} onClick={() => rows.remove(n)}>
+                <Button
+                  tone="quiet"
+                  className="col-span-2 justify-self-start lg:col-span-1 lg:mt-7"
+                  aria-label={`Remove stock row ${n + 1}`}
+                  onClick={() => rows.remove(n)}
+                >
                   Remove
                 </Button>
               ) : null}

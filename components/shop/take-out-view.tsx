@@ -1,6 +1,14 @@
 "use client";
 import { useMemo, useState } from "react";
-import { catalogueKeys, catalogueValue, catalogueWords, formatTerm, parseLength, type TakeOutWord, type UnitSystem } from "@/iso";
+import {
+  catalogueKeys,
+  catalogueValue,
+  catalogueWords,
+  formatTerm,
+  parseLength,
+  type TakeOutWord,
+  type UnitSystem,
+} from "@/iso";
 import { Button } from "@/components/ui/button";
 import { ChoiceRow } from "@/components/ui/choice-row";
 import { Dialog, DialogActions } from "@/components/ui/dialog";
@@ -34,7 +42,8 @@ export function TakeOutView({ owner }: { readonly owner: boolean }) {
   return (
     <Section title="Take-outs">
       <p className="mb-4 max-w-prose text-soft">
-        Take-outs are nominal: measure the fitting in hand. One from memory is marked unverified on every cut list until the owner confirms it or enters what the shop measured.
+        Take-outs are nominal: measure the fitting in hand. One from memory is marked unverified on every cut
+        list until the owner confirms it or enters what the shop measured.
       </p>
       <Loaded api={shop} label="Loading take-outs">
         {(data) => <TakeOuts words={data.takeOuts} units={data.defaults.units} owner={owner} />}
@@ -48,7 +57,16 @@ function rowsOf(words: readonly TakeOutWord[], units: UnitSystem): readonly Take
     const value = catalogueValue(key, units, words);
     if (!value) return [];
     const word = words.findLast((one) => one.key === key) ?? null;
-    return [{ key, words: catalogueWords(key), value: formatTerm(value.mm, units), source: value.source, fromMemory: value.fromMemory === "yes", word }];
+    return [
+      {
+        key,
+        words: catalogueWords(key),
+        value: formatTerm(value.mm, units),
+        source: value.source,
+        fromMemory: value.fromMemory === "yes",
+        word,
+      },
+    ];
   });
 }
 
@@ -58,37 +76,75 @@ const FILTERS: Readonly<Record<Filter, (row: TakeOutRow) => boolean>> = {
   all: () => true,
 };
 
-function TakeOuts({ words, units, owner }: { readonly words: readonly TakeOutWord[]; readonly units: UnitSystem; readonly owner: boolean }) {
+function TakeOuts({
+  words,
+  units,
+  owner,
+}: {
+  readonly words: readonly TakeOutWord[];
+  readonly units: UnitSystem;
+  readonly owner: boolean;
+}) {
   const rows = useMemo(() => rowsOf(words, units), [words, units]);
   const [filter, setFilter] = useState<Filter>("open");
   const [search, setSearch] = useState("");
   const [editing, setEditing] = useState<TakeOutRow | null>(null);
   const parts = search.toLowerCase().split(/\s+/).filter(Boolean);
-  const found = rows.filter((row) => FILTERS[filter](row) && parts.every((part) => row.words.toLowerCase().includes(part)));
-  const choice = (value: Filter, word: string) => ({ value, label: `${word} (${rows.filter(FILTERS[value]).length})` });
+  const found = rows.filter(
+    (row) => FILTERS[filter](row) && parts.every((part) => row.words.toLowerCase().includes(part)),
+  );
+  const choice = (value: Filter, word: string) => ({
+    value,
+    label: `${word} (${rows.filter(FILTERS[value]).length})`,
+  });
   return (
     <>
       <div className="mb-3 flex flex-wrap items-end justify-between gap-x-6 gap-y-3">
-        <ChoiceRow label="Which take-outs" value={filter} onChange={setFilter} choices={[choice("open", "To confirm"), choice("ours", "With our word"), choice("all", "All")]} />
+        <ChoiceRow
+          label="Which take-outs"
+          value={filter}
+          onChange={setFilter}
+          choices={[choice("open", "To confirm"), choice("ours", "With our word"), choice("all", "All")]}
+        />
         <SearchField label="Search fitting, size" value={search} onChange={setSearch} />
       </div>
       {found.length === 0 ? (
         <EmptyState title="None here">Change the search or choose All.</EmptyState>
       ) : (
-        <Table caption="Take-outs" columns={columnsFor(units, owner, setEditing)} rows={found.slice(0, MOST_SHOWN)} rowKey={(row) => row.key} />
+        <Table
+          caption="Take-outs"
+          columns={columnsFor(units, owner, setEditing)}
+          rows={found.slice(0, MOST_SHOWN)}
+          rowKey={(row) => row.key}
+        />
       )}
       <p role="status" className="mt-3 text-sm text-soft">
-        {found.length > MOST_SHOWN ? `The first ${MOST_SHOWN} of ${found.length} are shown; search to narrow.` : countText(found.length, "take-out")}
+        {found.length > MOST_SHOWN
+          ? `The first ${MOST_SHOWN} of ${found.length} are shown; search to narrow.`
+          : countText(found.length, "take-out")}
       </p>
       <WordDialog row={editing} units={units} onClose={() => setEditing(null)} />
     </>
   );
 }
 
-function columnsFor(units: UnitSystem, owner: boolean, onEdit: (row: TakeOutRow) => void): readonly Column<TakeOutRow>[] {
+function columnsFor(
+  units: UnitSystem,
+  owner: boolean,
+  onEdit: (row: TakeOutRow) => void,
+): readonly Column<TakeOutRow>[] {
   const columns: Column<TakeOutRow>[] = [
-    { key: "words", head: "Fitting", cell: (row) => <span className="inline-block first-letter:uppercase">{row.words}</span> },
-    { key: "value", head: units === "metric" ? "Take-out, mm" : "Take-out, in", figure: true, cell: (row) => row.value },
+    {
+      key: "words",
+      head: "Fitting",
+      cell: (row) => <span className="inline-block first-letter:uppercase">{row.words}</span>,
+    },
+    {
+      key: "value",
+      head: units === "metric" ? "Take-out, mm" : "Take-out, in",
+      figure: true,
+      cell: (row) => row.value,
+    },
     { key: "source", head: "Source", cell: (row) => <span className="text-sm">{row.source}</span> },
     {
       key: "word",
@@ -119,7 +175,15 @@ function columnsFor(units: UnitSystem, owner: boolean, onEdit: (row: TakeOutRow)
   return columns;
 }
 
-function WordDialog({ row, units, onClose }: { readonly row: TakeOutRow | null; readonly units: UnitSystem; readonly onClose: () => void }) {
+function WordDialog({
+  row,
+  units,
+  onClose,
+}: {
+  readonly row: TakeOutRow | null;
+  readonly units: UnitSystem;
+  readonly onClose: () => void;
+}) {
   return (
     <Dialog open={row !== null} onClose={onClose} title={row?.words ?? ""}>
       {row ? <WordForm row={row} units={units} onDone={onClose} /> : null}
@@ -127,7 +191,15 @@ function WordDialog({ row, units, onClose }: { readonly row: TakeOutRow | null; 
   );
 }
 
-function WordForm({ row, units, onDone }: { readonly row: TakeOutRow; readonly units: UnitSystem; readonly onDone: () => void }) {
+function WordForm({
+  row,
+  units,
+  onDone,
+}: {
+  readonly row: TakeOutRow;
+  readonly units: UnitSystem;
+  readonly onDone: () => void;
+}) {
   const say = useToast();
   const [typed, setTyped] = useState("");
   const [trouble, setTrouble] = useState<string | null>(null);
@@ -145,9 +217,14 @@ function WordForm({ row, units, onDone }: { readonly row: TakeOutRow; readonly u
   };
   return (
     <>
-      {trouble ? <Notice tone="trouble" className="mb-3">{trouble}</Notice> : null}
+      {trouble ? (
+        <Notice tone="trouble" className="mb-3">
+          {trouble}
+        </Notice>
+      ) : null}
       <p>
-        The table says <strong className="figure">{row.value}</strong> {units === "metric" ? "mm" : "in"} ({row.source}).
+        The table says <strong className="figure">{row.value}</strong> {units === "metric" ? "mm" : "in"} (
+        {row.source}).
       </p>
       <TextField
         className="mt-4"
@@ -160,7 +237,11 @@ function WordForm({ row, units, onDone }: { readonly row: TakeOutRow; readonly u
         caution={parsed?.ok ? `Understood: ${parsed.understood}` : undefined}
       />
       <DialogActions>
-        <Button tone="primary" disabled={parsed !== null && !parsed.ok} onClick={() => void record(parsed?.ok ? parsed.mm : null)}>
+        <Button
+          tone="primary"
+          disabled={parsed !== null && !parsed.ok}
+          onClick={() => void record(parsed?.ok ? parsed.mm : null)}
+        >
           {parsed ? "Use what we measured" : "Confirm as tabulated"}
         </Button>
       </DialogActions>

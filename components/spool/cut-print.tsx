@@ -12,7 +12,15 @@ import { PrintPart } from "./print-part";
 import type { SpoolFacts } from "./spool-facts";
 
 /** Prints the cut list after the reader acknowledged to verify by tape. */
-export function CutPrint({ input, facts, jobNumber }: { readonly input: SheetInput; readonly facts: SpoolFacts; readonly jobNumber: string }) {
+export function CutPrint({
+  input,
+  facts,
+  jobNumber,
+}: {
+  readonly input: SheetInput;
+  readonly facts: SpoolFacts;
+  readonly jobNumber: string;
+}) {
   const [asking, setAsking] = useState(false);
   const [printing, setPrinting] = useState(false);
   const printed = useCallback(() => setPrinting(false), []);
@@ -39,7 +47,12 @@ function Acknowledge({ onGo }: { readonly onGo: () => void }) {
   return (
     <>
       <p>Every length on the list is computed from the dimensions entered, with nominal take-outs.</p>
-      <Check className="mt-3" checked={read} onChange={(event) => setRead(event.target.checked)} label="I will verify each length by tape, two readings, before cutting." />
+      <Check
+        className="mt-3"
+        checked={read}
+        onChange={(event) => setRead(event.target.checked)}
+        label="I will verify each length by tape, two readings, before cutting."
+      />
       <DialogActions>
         <Button tone="primary" disabled={!read} onClick={onGo}>
           Print
@@ -49,7 +62,15 @@ function Acknowledge({ onGo }: { readonly onGo: () => void }) {
   );
 }
 
-function PrintedCutList({ input, facts, jobNumber }: { readonly input: SheetInput; readonly facts: SpoolFacts; readonly jobNumber: string }) {
+function PrintedCutList({
+  input,
+  facts,
+  jobNumber,
+}: {
+  readonly input: SheetInput;
+  readonly facts: SpoolFacts;
+  readonly jobNumber: string;
+}) {
   const viewer = useViewer();
   const { revision } = input;
   return (
@@ -57,11 +78,13 @@ function PrintedCutList({ input, facts, jobNumber }: { readonly input: SheetInpu
       <h1 className="mb-1 text-2xl">Cut list, spool {input.spool}</h1>
       <StateWord state={revision.state} hold={revision.hold} className="mb-2 text-lg" />
       <p className="figure mb-3">
-        Job {jobNumber} / Line {input.document.number} / Sheet {revision.sheetNumber || "not numbered"} / Rev {revision.code || "none"}
+        Job {jobNumber} / Line {input.document.number} / Sheet {revision.sheetNumber || "not numbered"} / Rev{" "}
+        {revision.code || "none"}
       </p>
       <CutTable facts={facts} units={input.units} />
       <p className="mt-4 text-sm">
-        Uncontrolled print, made {timeText(new Date().toISOString())} by {viewer.data?.name ?? ""}. A layout and records aid: code, WPS, design and acceptance come from the engineer, the owner and local law.
+        Uncontrolled print, made {timeText(new Date().toISOString())} by {viewer.data?.name ?? ""}. A layout
+        and records aid: code, WPS, design and acceptance come from the engineer, the owner and local law.
       </p>
     </article>
   );

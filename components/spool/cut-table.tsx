@@ -5,11 +5,19 @@ import type { SpoolFacts } from "./spool-facts";
 
 /** The number to cut to, rounded once. */
 export function cutLengthText(piece: Piece, units: UnitSystem): string {
-  return units === "metric" ? `${formatLength(piece.cutLengthMm, units)} mm` : `${formatInches(piece.cutLengthMm)} in`;
+  return units === "metric"
+    ? `${formatLength(piece.cutLengthMm, units)} mm`
+    : `${formatInches(piece.cutLengthMm)} in`;
 }
 
 /** The arithmetic of one piece: its signed terms, one under the other. */
-export function CutTerms({ terms, units }: { readonly terms: readonly CutTerm[]; readonly units: UnitSystem }) {
+export function CutTerms({
+  terms,
+  units,
+}: {
+  readonly terms: readonly CutTerm[];
+  readonly units: UnitSystem;
+}) {
   return (
     <ul className="text-sm">
       {terms.map((term, n) => (
@@ -45,26 +53,54 @@ export function CutTable({ facts, units, done }: CutTableProps) {
     <>
       <p className="mb-2 border-l-4 border-caution bg-caution-tint px-4 py-2">
         <strong className="mr-2">Caution.</strong>
-        Verify by tape, two readings, before cutting. Take-outs are nominal: measure the fitting in hand. Gap, land and bevel come from the WPS.
+        Verify by tape, two readings, before cutting. Take-outs are nominal: measure the fitting in hand. Gap,
+        land and bevel come from the WPS.
       </p>
       <table role="table" data-stack className="ruled">
         <caption className="sr-only">Cut list</caption>
         <thead role="rowgroup">
           <tr role="row">
-            <th role="columnheader" scope="col">Mark</th>
-            <th role="columnheader" scope="col">Pipe</th>
-            <th role="columnheader" scope="col">Arithmetic</th>
-            <th role="columnheader" scope="col">Cut length</th>
-            {done ? <th role="columnheader" scope="col">Log</th> : <th role="columnheader" scope="col">Heat no., cut by</th>}
+            <th role="columnheader" scope="col">
+              Mark
+            </th>
+            <th role="columnheader" scope="col">
+              Pipe
+            </th>
+            <th role="columnheader" scope="col">
+              Arithmetic
+            </th>
+            <th role="columnheader" scope="col">
+              Cut length
+            </th>
+            {done ? (
+              <th role="columnheader" scope="col">
+                Log
+              </th>
+            ) : (
+              <th role="columnheader" scope="col">
+                Heat no., cut by
+              </th>
+            )}
           </tr>
         </thead>
         <tbody role="rowgroup">
           {facts.pieces.map((piece) => (
-            <CutRow key={piece.key} piece={piece} units={units} unverified={(piece.legIds ?? [piece.legId]).some((id) => facts.unverifiedLegs.has(id))} last={done ? done(piece) : <BlankLine />} lastLabel={done ? "Log" : "Heat, by"} />
+            <CutRow
+              key={piece.key}
+              piece={piece}
+              units={units}
+              unverified={(piece.legIds ?? [piece.legId]).some((id) => facts.unverifiedLegs.has(id))}
+              last={done ? done(piece) : <BlankLine />}
+              lastLabel={done ? "Log" : "Heat, by"}
+            />
           ))}
         </tbody>
       </table>
-      {starred ? <p className="mt-2 text-sm text-caution">* Take-out from memory and not yet confirmed by the shop. The owner confirms it under Shop.</p> : null}
+      {starred ? (
+        <p className="mt-2 text-sm text-caution">
+          * Take-out from memory and not yet confirmed by the shop. The owner confirms it under Shop.
+        </p>
+      ) : null}
     </>
   );
 }
@@ -98,8 +134,12 @@ function CutRow({ piece, units, unverified, last, lastLabel }: CutRowProps) {
       </td>
       <td role="cell" data-label="Cut length">
         <span>
-          <strong className="figure inline-block border-2 border-ink px-2 py-0.5 text-lg whitespace-nowrap">{fits ? cutLengthText(piece, units) : "DOES NOT FIT"}</strong>
-          {unverified ? <span className="mt-1 block text-sm font-bold text-caution">VIF: unverified dimension</span> : null}
+          <strong className="figure inline-block border-2 border-ink px-2 py-0.5 text-lg whitespace-nowrap">
+            {fits ? cutLengthText(piece, units) : "DOES NOT FIT"}
+          </strong>
+          {unverified ? (
+            <span className="mt-1 block text-sm font-bold text-caution">VIF: unverified dimension</span>
+          ) : null}
         </span>
       </td>
       <td role="cell" data-label={lastLabel}>

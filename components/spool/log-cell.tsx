@@ -37,7 +37,12 @@ export function LogCell({ entries, kinds, role, open, markName, onRecord }: LogC
       {mine.length > 0 ? (
         <div className="flex flex-wrap gap-2" data-screen-only>
           {mine.map((kind) => (
-            <Button key={kind} className="min-h-12 min-w-20" onClick={() => onRecord(kind)} aria-label={`Record ${WORK_WORDS[kind].toLowerCase()} of ${markName}`}>
+            <Button
+              key={kind}
+              className="min-h-12 min-w-20"
+              onClick={() => onRecord(kind)}
+              aria-label={`Record ${WORK_WORDS[kind].toLowerCase()} of ${markName}`}
+            >
               {WORK_WORDS[kind]}
             </Button>
           ))}

@@ -3,7 +3,15 @@ import { useEffect, useState, type ReactNode } from "react";
 import { createPortal } from "react-dom";
 
 /** Content that exists for the printer only: while `printing` it is all that the page prints. */
-export function PrintPart({ printing, onPrinted, children }: { readonly printing: boolean; readonly onPrinted: () => void; readonly children: ReactNode }) {
+export function PrintPart({
+  printing,
+  onPrinted,
+  children,
+}: {
+  readonly printing: boolean;
+  readonly onPrinted: () => void;
+  readonly children: ReactNode;
+}) {
   const [host, setHost] = useState<HTMLElement | null>(null);
   useEffect(() => {
     if (!printing) return;

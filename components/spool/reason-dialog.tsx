@@ -22,11 +22,39 @@ interface ActWords {
 }
 
 const ACTS: Readonly<Record<RevisionAct, ActWords>> = {
-  return: { title: "Return the revision", lead: "It goes back to the detailer with your reason. What was submitted stays in the history.", button: "Return it", done: "Returned." },
-  hold: { title: "Put on hold", lead: "The sheet shows HOLD and the bench records nothing on it until it is released.", button: "Put on hold", done: "On hold.", stop: true },
-  release: { title: "Release the hold", lead: "The bench may go on with this sheet.", button: "Release the hold", done: "Hold released." },
-  void: { title: "Void the revision", lead: "The sheet is dead for good. Its number and marks are never used again.", button: "Void it", done: "Voided.", stop: true },
-  "as-built": { title: "Close as-built", lead: "The spool is recorded as built from this sheet.", button: "Close as-built", done: "Closed as-built.", label: "Remarks" },
+  return: {
+    title: "Return the revision",
+    lead: "It goes back to the detailer with your reason. What was submitted stays in the history.",
+    button: "Return it",
+    done: "Returned.",
+  },
+  hold: {
+    title: "Put on hold",
+    lead: "The sheet shows HOLD and the bench records nothing on it until it is released.",
+    button: "Put on hold",
+    done: "On hold.",
+    stop: true,
+  },
+  release: {
+    title: "Release the hold",
+    lead: "The bench may go on with this sheet.",
+    button: "Release the hold",
+    done: "Hold released.",
+  },
+  void: {
+    title: "Void the revision",
+    lead: "The sheet is dead for good. Its number and marks are never used again.",
+    button: "Void it",
+    done: "Voided.",
+    stop: true,
+  },
+  "as-built": {
+    title: "Close as-built",
+    lead: "The spool is recorded as built from this sheet.",
+    button: "Close as-built",
+    done: "Closed as-built.",
+    label: "Remarks",
+  },
 };
 
 export function actWords(act: RevisionAct): ActWords {
@@ -63,10 +91,21 @@ function refreshRevision(): Promise<unknown> {
 const REASON_FIELDS = ["reason"] as const;
 const AS_BUILT_FIELDS = ["reason", "verified"] as const;
 
-function Reason({ act, revisionId, onDone }: { readonly act: RevisionAct; readonly revisionId: string; readonly onDone: () => void }) {
+function Reason({
+  act,
+  revisionId,
+  onDone,
+}: {
+  readonly act: RevisionAct;
+  readonly revisionId: string;
+  readonly onDone: () => void;
+}) {
   const say = useToast();
   const words = ACTS[act];
-  const { register, handleSubmit, setError, formState } = useForm<ReasonForm>({ resolver: zodResolver(reasonSchema), defaultValues: { reason: "" } });
+  const { register, handleSubmit, setError, formState } = useForm<ReasonForm>({
+    resolver: zodResolver(reasonSchema),
+    defaultValues: { reason: "" },
+  });
   const { trouble, send } = useFormSend(setError, REASON_FIELDS);
   const go = (values: ReasonForm) =>
     send(async () => {
@@ -79,7 +118,12 @@ function Reason({ act, revisionId, onDone }: { readonly act: RevisionAct; readon
     <form noValidate onSubmit={(event) => void handleSubmit(go)(event)} className="space-y-4">
       {trouble ? <Notice tone="trouble">{trouble}</Notice> : null}
       <p>{words.lead}</p>
-      <TextArea label="Reason" hint="The next person reads it." error={formState.errors.reason?.message} {...register("reason")} />
+      <TextArea
+        label="Reason"
+        hint="The next person reads it."
+        error={formState.errors.reason?.message}
+        {...register("reason")}
+      />
       <DialogActions>
         <Button type="submit" tone={words.stop ? "stop" : "primary"} busy={formState.isSubmitting}>
           {words.button}
@@ -92,7 +136,9 @@ function Reason({ act, revisionId, onDone }: { readonly act: RevisionAct; readon
 function AsBuilt({ revisionId, onDone }: { readonly revisionId: string; readonly onDone: () => void }) {
   const say = useToast();
   const words = ACTS["as-built"];
-  const { register, handleSubmit, setError, formState } = useForm<AsBuiltForm>({ resolver: zodResolver(asBuiltSchema) });
+  const { register, handleSubmit, setError, formState } = useForm<AsBuiltForm>({
+    resolver: zodResolver(asBuiltSchema),
+  });
   const { trouble, send } = useFormSend(setError, AS_BUILT_FIELDS);
   const go = (values: AsBuiltForm) =>
     send(async () => {
@@ -105,8 +151,17 @@ function AsBuilt({ revisionId, onDone }: { readonly revisionId: string; readonly
     <form noValidate onSubmit={(event) => void handleSubmit(go)(event)} className="space-y-4">
       {trouble ? <Notice tone="trouble">{trouble}</Notice> : null}
       <p>{words.lead}</p>
-      <TextArea label="Remarks" hint="What differs from the sheet, or that nothing does." error={formState.errors.reason?.message} {...register("reason")} />
-      <Check label="The spool was measured against this sheet, and the log of its pieces and welds is complete." error={formState.errors.verified?.message} {...register("verified")} />
+      <TextArea
+        label="Remarks"
+        hint="What differs from the sheet, or that nothing does."
+        error={formState.errors.reason?.message}
+        {...register("reason")}
+      />
+      <Check
+        label="The spool was measured against this sheet, and the log of its pieces and welds is complete."
+        error={formState.errors.verified?.message}
+        {...register("verified")}
+      />
       <DialogActions>
         <Button type="submit" tone="primary" busy={formState.isSubmitting}>
           {words.button}

@@ -27,11 +27,16 @@ export function actsFor(revision: Pick<RevisionSummary, "state" | "hold">): read
 
 /** Every revision of a spool, newest first, with every stored PDF and its hash. */
 export function RevisionHistory({ revisions, role, mayHold }: RevisionHistoryProps) {
-  const [asked, setAsked] = useState<{ readonly act: RevisionAct; readonly revision: RevisionSummary } | null>(null);
+  const [asked, setAsked] = useState<{
+    readonly act: RevisionAct;
+    readonly revision: RevisionSummary;
+  } | null>(null);
   if (revisions.length === 0) {
     return (
       <EmptyState title="No revision yet">
-        {canDo(role, "revisions.submit") ? "Look the sheet over, then submit it for review; it becomes revision A." : "The first one shows here when a detailer submits the sheet."}
+        {canDo(role, "revisions.submit")
+          ? "Look the sheet over, then submit it for review; it becomes revision A."
+          : "The first one shows here when a detailer submits the sheet."}
       </EmptyState>
     );
   }
@@ -45,13 +50,20 @@ export function RevisionHistory({ revisions, role, mayHold }: RevisionHistoryPro
             <StoredSheets revision={revision} />
             <div className="mt-3 flex flex-wrap gap-3" data-screen-only>
               {canDo(role, "revisions.review") ? (
-                <ButtonLink href={`/review/${revision.id}`} tone={revision.state === "for-review" ? "primary" : "plain"}>
+                <ButtonLink
+                  href={`/review/${revision.id}`}
+                  tone={revision.state === "for-review" ? "primary" : "plain"}
+                >
                   {revision.state === "for-review" ? "Review it" : "Open the review"}
                 </ButtonLink>
               ) : null}
               {mayHold
                 ? actsFor(revision).map((act) => (
-                    <Button key={act} tone={act === "hold" || act === "void" ? "stop" : "plain"} onClick={() => setAsked({ act, revision })}>
+                    <Button
+                      key={act}
+                      tone={act === "hold" || act === "void" ? "stop" : "plain"}
+                      onClick={() => setAsked({ act, revision })}
+                    >
                       {actWords(act).title}
                     </Button>
                   ))
@@ -60,7 +72,12 @@ export function RevisionHistory({ revisions, role, mayHold }: RevisionHistoryPro
           </li>
         ))}
       </ol>
-      <ReasonDialog act={asked?.act ?? null} revisionId={asked?.revision.id ?? ""} code={asked?.revision.code ?? ""} onClose={() => setAsked(null)} />
+      <ReasonDialog
+        act={asked?.act ?? null}
+        revisionId={asked?.revision.id ?? ""}
+        code={asked?.revision.code ?? ""}
+        onClose={() => setAsked(null)}
+      />
     </>
   );
 }
@@ -81,8 +98,16 @@ function RevisionFacts({ revision }: { readonly revision: RevisionSummary }) {
           Signed by {revision.signedBy}, {timeText(revision.signedAt)}
         </p>
       ) : null}
-      {revision.returnReason ? <p className="mt-2 border-l-4 border-caution pl-3"><strong>Returned:</strong> {revision.returnReason}</p> : null}
-      {revision.holdReason ? <p className="mt-2 border-l-4 border-alert pl-3"><strong>Hold:</strong> {revision.holdReason}</p> : null}
+      {revision.returnReason ? (
+        <p className="mt-2 border-l-4 border-caution pl-3">
+          <strong>Returned:</strong> {revision.returnReason}
+        </p>
+      ) : null}
+      {revision.holdReason ? (
+        <p className="mt-2 border-l-4 border-alert pl-3">
+          <strong>Hold:</strong> {revision.holdReason}
+        </p>
+      ) : null}
     </>
   );
 }
@@ -95,10 +120,20 @@ function StoredSheets({ revision }: { readonly revision: RevisionSummary }) {
       {revision.sheets.map((sheet) => (
         <li key={sheet.id} className="border-b border-hair py-2">
           <div className="flex flex-wrap items-center gap-x-5">
-            <a className="inked inline-flex min-h-11 items-center font-medium" href={`/api/revisions/${revision.id}/sheet?kind=${sheet.kind}`} target="_blank" rel="noreferrer">
+            <a
+              className="inked inline-flex min-h-11 items-center font-medium"
+              href={`/api/revisions/${revision.id}/sheet?kind=${sheet.kind}`}
+              target="_blank"
+              rel="noreferrer"
+            >
               {KIND_WORDS[sheet.kind]}
             </a>
-            <a className="inked inline-flex min-h-11 items-center" href={`/api/revisions/${revision.id}/sheet?kind=${sheet.kind}&copy=1`} target="_blank" rel="noreferrer">
+            <a
+              className="inked inline-flex min-h-11 items-center"
+              href={`/api/revisions/${revision.id}/sheet?kind=${sheet.kind}&copy=1`}
+              target="_blank"
+              rel="noreferrer"
+            >
               Marked copy to print
             </a>
             <span className="text-sm text-soft">

@@ -18,7 +18,9 @@ export function spoolFacts(input: SheetInput): SpoolFacts | null {
   if (!model) return null;
   const pieces = model.pieces.filter((piece) => piece.spool === input.spool);
   const welds = model.joints.filter((joint) => joint.number !== null && joint.spool === input.spool);
-  const components = new Map<string, Component>(model.components.map((component) => [component.id, component]));
+  const components = new Map<string, Component>(
+    model.components.map((component) => [component.id, component]),
+  );
   const marks = new Map<string, string>(model.pieces.map((piece) => [piece.key, piece.mark]));
   return {
     model,

@@ -31,11 +31,16 @@ export function SpoolPage({ spoolId }: { readonly spoolId: string }) {
 }
 
 function newestOf(revisions: readonly RevisionSummary[]): RevisionSummary | null {
-  return revisions.reduce<RevisionSummary | null>((newest, one) => (newest === null || one.submittedAt > newest.submittedAt ? one : newest), null);
+  return revisions.reduce<RevisionSummary | null>(
+    (newest, one) => (newest === null || one.submittedAt > newest.submittedAt ? one : newest),
+    null,
+  );
 }
 
 function Spool({ spool, role }: { readonly spool: SpoolDetail; readonly role: Role }) {
-  const [wanted, setWanted] = useState<"issued" | "draft">(spool.draft && (role === "detailer" || !spool.live) ? "draft" : "issued");
+  const [wanted, setWanted] = useState<"issued" | "draft">(
+    spool.draft && (role === "detailer" || !spool.live) ? "draft" : "issued",
+  );
   const [size, setSize] = useState<SheetSize>(spool.draft?.size ?? spool.live?.input.size ?? "tabloid");
   const [submitting, setSubmitting] = useState(false);
   const issued = wanted === "issued" || !spool.draft;
@@ -45,7 +50,9 @@ function Spool({ spool, role }: { readonly spool: SpoolDetail; readonly role: Ro
   return (
     <>
       <SpoolHead spool={spool} role={role} onSubmit={() => setSubmitting(true)} />
-      {spool.why.submit && canDo(role, "revisions.submit") ? <Notice className="mb-4">{spool.why.submit}</Notice> : null}
+      {spool.why.submit && canDo(role, "revisions.submit") ? (
+        <Notice className="mb-4">{spool.why.submit}</Notice>
+      ) : null}
       <div className="mb-3 flex flex-wrap items-end justify-between gap-x-8 gap-y-3" data-screen-only>
         {spool.live && spool.draft ? (
           <ChoiceRow
@@ -60,11 +67,23 @@ function Spool({ spool, role }: { readonly spool: SpoolDetail; readonly role: Ro
         ) : (
           <span />
         )}
-        <SheetActions spool={spool} issued={issued} liveRevision={liveRevision} size={size} onSize={setSize} />
+        <SheetActions
+          spool={spool}
+          issued={issued}
+          liveRevision={liveRevision}
+          size={size}
+          onSize={setSize}
+        />
       </div>
-      {input ? <SheetBox input={input} spool={spool} /> : <Notice className="mb-6">There is no issued sheet of this spool yet.</Notice>}
+      {input ? (
+        <SheetBox input={input} spool={spool} />
+      ) : (
+        <Notice className="mb-6">There is no issued sheet of this spool yet.</Notice>
+      )}
       <div className="mt-8 grid gap-x-10 xl:grid-cols-[minmax(0,2fr)_minmax(0,1fr)]">
-        <div className="min-w-0">{input ? <WorkSection spool={spool} input={input} issued={issued} role={role} /> : null}</div>
+        <div className="min-w-0">
+          {input ? <WorkSection spool={spool} input={input} issued={issued} role={role} /> : null}
+        </div>
         <Section title="Revisions">
           <RevisionHistory revisions={spool.revisions} role={role} mayHold={spool.can.hold} />
         </Section>
@@ -75,10 +94,24 @@ function Spool({ spool, role }: { readonly spool: SpoolDetail; readonly role: Ro
 }
 
 function SheetBox({ input, spool }: { readonly input: SheetInput; readonly spool: SpoolDetail }) {
-  return <SheetPreview key={input.revision.code + input.revision.state} input={input} label={`Sheet of line ${spool.line.number}, spool ${spool.letter}`} />;
+  return (
+    <SheetPreview
+      key={input.revision.code + input.revision.state}
+      input={input}
+      label={`Sheet of line ${spool.line.number}, spool ${spool.letter}`}
+    />
+  );
 }
 
-function SpoolHead({ spool, role, onSubmit }: { readonly spool: SpoolDetail; readonly role: Role; readonly onSubmit: () => void }) {
+function SpoolHead({
+  spool,
+  role,
+  onSubmit,
+}: {
+  readonly spool: SpoolDetail;
+  readonly role: Role;
+  readonly onSubmit: () => void;
+}) {
   const newest = newestOf(spool.revisions);
   const trail = [
     { href: "/jobs", label: "Jobs" },
@@ -104,7 +137,11 @@ function SpoolHead({ spool, role, onSubmit }: { readonly spool: SpoolDetail; rea
       cells={[
         { label: "State", value: <StateWord state={newest?.state ?? "draft"} hold={newest?.hold} /> },
         { label: "Revision", value: newest?.code ?? "none", figure: true },
-        { label: "Sheet", value: spool.sheetNumber ?? "numbered at first submission", figure: spool.sheetNumber !== null },
+        {
+          label: "Sheet",
+          value: spool.sheetNumber ?? "numbered at first submission",
+          figure: spool.sheetNumber !== null,
+        },
         { label: "Job", value: `${spool.job.number} ${spool.job.title}` },
         { label: "Line", value: spool.line.title || spool.line.number },
       ]}
@@ -120,7 +157,8 @@ interface SheetActionsProps {
   readonly onSize: (size: SheetSize) => void;
 }
 
-const LINK = "inline-flex min-h-11 items-center border border-ink bg-sheet px-4 font-medium hover:border-dye hover:bg-dye-tint";
+const LINK =
+  "inline-flex min-h-11 items-center border border-ink bg-sheet px-4 font-medium hover:border-dye hover:bg-dye-tint";
 
 function SheetActions({ spool, issued, liveRevision, size, onSize }: SheetActionsProps) {
   if (issued) {
@@ -139,8 +177,19 @@ function SheetActions({ spool, issued, liveRevision, size, onSize }: SheetAction
   }
   return (
     <div className="flex flex-wrap items-end gap-3">
-      <Select label="Sheet size" className="w-52" options={SHEET_OPTIONS} value={size} onChange={(event) => onSize(event.target.value as SheetSize)} />
-      <a className={LINK} href={`/api/spools/${spool.id}/sheet?size=${size}`} target="_blank" rel="noreferrer">
+      <Select
+        label="Sheet size"
+        className="w-52"
+        options={SHEET_OPTIONS}
+        value={size}
+        onChange={(event) => onSize(event.target.value as SheetSize)}
+      />
+      <a
+        className={LINK}
+        href={`/api/spools/${spool.id}/sheet?size=${size}`}
+        target="_blank"
+        rel="noreferrer"
+      >
         Print the draft (PDF)
       </a>
     </div>

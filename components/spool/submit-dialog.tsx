@@ -31,9 +31,20 @@ export function SubmitDialog({ open, spool, size, onClose }: SubmitDialogProps) 
   );
 }
 
-function SubmitFields({ spool, size, onDone }: { readonly spool: SpoolDetail; readonly size: SheetSize; readonly onDone: () => void }) {
+function SubmitFields({
+  spool,
+  size,
+  onDone,
+}: {
+  readonly spool: SpoolDetail;
+  readonly size: SheetSize;
+  readonly onDone: () => void;
+}) {
   const say = useToast();
-  const { register, handleSubmit, setError, formState } = useForm<SubmitForm>({ resolver: zodResolver(submitSchema), defaultValues: { description: "", size } });
+  const { register, handleSubmit, setError, formState } = useForm<SubmitForm>({
+    resolver: zodResolver(submitSchema),
+    defaultValues: { description: "", size },
+  });
   const { trouble, send } = useFormSend(setError, FIELDS);
   const submit = (values: SubmitForm) =>
     send(async () => {
@@ -47,8 +58,18 @@ function SubmitFields({ spool, size, onDone }: { readonly spool: SpoolDetail; re
       {trouble ? <Notice tone="trouble">{trouble}</Notice> : null}
       <WorkBegun spool={spool} />
       <p>The sheet is frozen as it is now and mailed to the inspectors. A second person signs it.</p>
-      <TextField label="What this revision is for" hint="Printed in the revision block, such as: Issued for fabrication, or Valve moved 6 in north." error={formState.errors.description?.message} {...register("description")} />
-      <Select label="Sheet size" options={SHEET_OPTIONS} error={formState.errors.size?.message} {...register("size")} />
+      <TextField
+        label="What this revision is for"
+        hint="Printed in the revision block, such as: Issued for fabrication, or Valve moved 6 in north."
+        error={formState.errors.description?.message}
+        {...register("description")}
+      />
+      <Select
+        label="Sheet size"
+        options={SHEET_OPTIONS}
+        error={formState.errors.size?.message}
+        {...register("size")}
+      />
       <DialogActions>
         <Button type="submit" tone="primary" busy={formState.isSubmitting} busyLabel="Submitting">
           Submit for review
@@ -60,7 +81,8 @@ function SubmitFields({ spool, size, onDone }: { readonly spool: SpoolDetail; re
 
 /** What was already done from the sheet in force, before somebody replaces it. */
 function WorkBegun({ spool }: { readonly spool: SpoolDetail }) {
-  const count = (kind: string) => new Set(spool.work.filter((entry) => entry.kind === kind).map((entry) => entry.key)).size;
+  const count = (kind: string) =>
+    new Set(spool.work.filter((entry) => entry.kind === kind).map((entry) => entry.key)).size;
   const parts = [
     { n: count("cut"), text: countText(count("cut"), "piece") + " cut" },
     { n: count("fit-up"), text: countText(count("fit-up"), "joint") + " fitted" },

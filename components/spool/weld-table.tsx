@@ -4,8 +4,19 @@ import type { ReactNode } from "react";
 import { Table, type Column } from "@/components/ui/table";
 import type { SpoolFacts } from "./spool-facts";
 
-const KINDS: Readonly<Record<Joint["kind"], string>> = { butt: "butt", socket: "socket", "slip-on": "slip-on", branch: "branch", attachment: "attachment", bolted: "bolted" };
-const PLACES: Readonly<Record<Joint["place"], string>> = { shop: "Shop", field: "Field (FW)", "field-fit": "Field fit (FFW)" };
+const KINDS: Readonly<Record<Joint["kind"], string>> = {
+  butt: "butt",
+  socket: "socket",
+  "slip-on": "slip-on",
+  branch: "branch",
+  attachment: "attachment",
+  bolted: "bolted",
+};
+const PLACES: Readonly<Record<Joint["place"], string>> = {
+  shop: "Shop",
+  field: "Field (FW)",
+  "field-fit": "Field fit (FFW)",
+};
 
 /** Mismatch at a weld that needs the engineer's word, radians (3 degrees; common practice). */
 const MISMATCH_LIMIT_RAD = (3 * Math.PI) / 180;
@@ -13,11 +24,21 @@ const MISMATCH_LIMIT_RAD = (3 * Math.PI) / 180;
 const SQUARE_RAD = 0.000_9;
 
 /** The welds of the spool by number. */
-export function WeldTable({ facts, done }: { readonly facts: SpoolFacts; readonly done: (weld: Joint) => ReactNode }) {
+export function WeldTable({
+  facts,
+  done,
+}: {
+  readonly facts: SpoolFacts;
+  readonly done: (weld: Joint) => ReactNode;
+}) {
   const columns: readonly Column<Joint>[] = [
     { key: "number", head: "Weld", cell: (weld) => <strong className="figure">{weld.number}</strong> },
     { key: "kind", head: "Type", cell: (weld) => <WeldKind weld={weld} /> },
-    { key: "between", head: "Between", cell: (weld) => `${facts.nameOf(weld.a)} and ${facts.nameOf(weld.b)}` },
+    {
+      key: "between",
+      head: "Between",
+      cell: (weld) => `${facts.nameOf(weld.a)} and ${facts.nameOf(weld.b)}`,
+    },
     { key: "done", head: "Log", cell: done },
   ];
   return <Table caption="Welds" columns={columns} rows={facts.welds} rowKey={(weld) => weld.key} />;
@@ -27,9 +48,12 @@ function WeldKind({ weld }: { readonly weld: Joint }) {
   const off = weld.mismatchRad >= SQUARE_RAD;
   return (
     <span>
-      {PLACES[weld.place]}, {KINDS[weld.kind]}, <span className="figure whitespace-nowrap">NPS {weld.nps}</span>
+      {PLACES[weld.place]}, {KINDS[weld.kind]},{" "}
+      <span className="figure whitespace-nowrap">NPS {weld.nps}</span>
       {off ? <span className="block text-sm">Mismatch {formatAngleDeg(weld.mismatchRad, 1)}</span> : null}
-      {weld.mismatchRad > MISMATCH_LIMIT_RAD ? <span className="block text-sm font-medium text-caution">Engineer&apos;s permission</span> : null}
+      {weld.mismatchRad > MISMATCH_LIMIT_RAD ? (
+        <span className="block text-sm font-medium text-caution">Engineer&apos;s permission</span>
+      ) : null}
     </span>
   );
 }

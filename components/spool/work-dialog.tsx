@@ -24,7 +24,13 @@ export interface WorkTarget {
 }
 
 /** One entry of the work log; entries are added, never changed, so it says so. */
-export function WorkDialog({ target, onClose }: { readonly target: WorkTarget | null; readonly onClose: () => void }) {
+export function WorkDialog({
+  target,
+  onClose,
+}: {
+  readonly target: WorkTarget | null;
+  readonly onClose: () => void;
+}) {
   return (
     <Dialog open={target !== null} onClose={onClose} title={target ? titleOf(target) : "Record work"}>
       {target ? <WorkEntryForm target={target} onDone={onClose} /> : null}
@@ -33,7 +39,9 @@ export function WorkDialog({ target, onClose }: { readonly target: WorkTarget | 
 }
 
 function titleOf(target: WorkTarget): string {
-  return target.kind === "actual" ? "Record an actual dimension" : `${WORK_WORDS[target.kind]} ${target.mark}`;
+  return target.kind === "actual"
+    ? "Record an actual dimension"
+    : `${WORK_WORDS[target.kind]} ${target.mark}`;
 }
 
 function WorkEntryForm({ target, onDone }: { readonly target: WorkTarget; readonly onDone: () => void }) {
@@ -41,12 +49,21 @@ function WorkEntryForm({ target, onDone }: { readonly target: WorkTarget; readon
   const names: readonly string[] = WORK_FIELDS[target.kind];
   const { register, handleSubmit, setError, formState } = useForm<WorkForm>({
     resolver: zodResolver(workSchema),
-    defaultValues: { kind: target.kind, mark: target.mark, key: target.key || "actual", values: Object.fromEntries(names.map((name) => [name, ""])) },
+    defaultValues: {
+      kind: target.kind,
+      mark: target.mark,
+      key: target.key || "actual",
+      values: Object.fromEntries(names.map((name) => [name, ""])),
+    },
   });
   const { trouble, send } = useFormSend(setError, ["mark"]);
   const record = (values: WorkForm) =>
     send(async () => {
-      await apiSend("POST", `/api/spools/${target.spoolId}/work`, target.key ? values : { ...values, key: `actual:${values.mark}` });
+      await apiSend(
+        "POST",
+        `/api/spools/${target.spoolId}/work`,
+        target.key ? values : { ...values, key: `actual:${values.mark}` },
+      );
       await refreshApi("/api/spools", "/api/bench");
       say(`${WORK_WORDS[target.kind]} ${values.mark} recorded.`);
       onDone();
@@ -56,14 +73,33 @@ function WorkEntryForm({ target, onDone }: { readonly target: WorkTarget; readon
       {trouble ? <Notice tone="trouble">{trouble}</Notice> : null}
       {target.about ? <p className="figure">{target.about}</p> : null}
       {target.field ? <Notice tone="caution">{FIELD_WELD_CAUTION}</Notice> : null}
-      {target.mark === "" ? <TextField label="What was measured" hint="Such as face to face, E, or diagonal A-C." error={formState.errors.mark?.message} {...register("mark")} /> : null}
+      {target.mark === "" ? (
+        <TextField
+          label="What was measured"
+          hint="Such as face to face, E, or diagonal A-C."
+          error={formState.errors.mark?.message}
+          {...register("mark")}
+        />
+      ) : null}
       {names.map((name) => {
         const words = FIELD_WORDS[name];
         const common = { error: formState.errors.values?.[name]?.message, ...register(`values.${name}`) };
-        if (name === "result") return <Select key={name} label="Result" options={RESULT_OPTIONS} {...common} />;
-        return <TextField key={name} label={words?.label ?? name} hint={words?.hint} caution={words?.caution} figure={words?.figure} {...common} />;
+        if (name === "result")
+          return <Select key={name} label="Result" options={RESULT_OPTIONS} {...common} />;
+        return (
+          <TextField
+            key={name}
+            label={words?.label ?? name}
+            hint={words?.hint}
+            caution={words?.caution}
+            figure={words?.figure}
+            {...common}
+          />
+        );
       })}
-      <p className="text-sm text-soft">An entry keeps your name and the time and cannot be changed; a correction is a new entry.</p>
+      <p className="text-sm text-soft">
+        An entry keeps your name and the time and cannot be changed; a correction is a new entry.
+      </p>
       <DialogActions>
         <Button type="submit" tone="primary" big busy={formState.isSubmitting} busyLabel="Recording">
           Record

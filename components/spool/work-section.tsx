@@ -26,7 +26,9 @@ export function WorkSection({ spool, input, issued, role }: WorkSectionProps) {
   const [target, setTarget] = useState<WorkTarget | null>(null);
   const facts = spoolFacts(input);
   if (!facts) return null;
-  const held = input.revision.hold || spool.revisions.some((revision) => revision.id === spool.live?.revisionId && revision.hold);
+  const held =
+    input.revision.hold ||
+    spool.revisions.some((revision) => revision.id === spool.live?.revisionId && revision.hold);
   const open = issued && !held;
   const cell = (key: string, kinds: readonly WorkKind[], mark: string, about: string, field: boolean) => (
     <LogCell
@@ -38,33 +40,82 @@ export function WorkSection({ spool, input, issued, role }: WorkSectionProps) {
       onRecord={(kind) => setTarget({ spoolId: spool.id, kind, mark, key, about, field })}
     />
   );
-  const pieceCell = (piece: Piece) => cell(piece.key, ["cut"], piece.mark, `Cut length ${cutText(piece, input)}`, false);
+  const pieceCell = (piece: Piece) =>
+    cell(piece.key, ["cut"], piece.mark, `Cut length ${cutText(piece, input)}`, false);
   const weldCell = (weld: Joint) =>
-    cell(weld.key, ["fit-up", "weld", "visual"], weld.number ?? "", `NPS ${weld.nps}, ${facts.nameOf(weld.a)} and ${facts.nameOf(weld.b)}`, weld.place !== "shop");
+    cell(
+      weld.key,
+      ["fit-up", "weld", "visual"],
+      weld.number ?? "",
+      `NPS ${weld.nps}, ${facts.nameOf(weld.a)} and ${facts.nameOf(weld.b)}`,
+      weld.place !== "shop",
+    );
   return (
     <>
-      {issued && held ? <Notice tone="caution" word="HOLD" className="mb-4">Nothing is recorded against a sheet on hold. An inspector or the owner releases it.</Notice> : null}
-      {issued ? null : <Notice className="mb-4">This is what the sheet would be now. Work is recorded against an issued sheet.</Notice>}
+      {issued && held ? (
+        <Notice tone="caution" word="HOLD" className="mb-4">
+          Nothing is recorded against a sheet on hold. An inspector or the owner releases it.
+        </Notice>
+      ) : null}
+      {issued ? null : (
+        <Notice className="mb-4">
+          This is what the sheet would be now. Work is recorded against an issued sheet.
+        </Notice>
+      )}
       <Section title="Cut list" aside={<CutPrint input={input} facts={facts} jobNumber={spool.job.number} />}>
-        {facts.pieces.length === 0 ? <p className="text-soft">This spool has no cut pipe.</p> : <CutTable facts={facts} units={input.units} done={pieceCell} />}
+        {facts.pieces.length === 0 ? (
+          <p className="text-soft">This spool has no cut pipe.</p>
+        ) : (
+          <CutTable facts={facts} units={input.units} done={pieceCell} />
+        )}
       </Section>
-      <Section title="Welds">{facts.welds.length === 0 ? <p className="text-soft">This spool has no weld.</p> : <WeldTable facts={facts} done={weldCell} />}</Section>
-      <Actuals spool={spool} role={role} open={open} onRecord={() => setTarget({ spoolId: spool.id, kind: "actual", mark: "", key: "", about: "", field: false })} />
+      <Section title="Welds">
+        {facts.welds.length === 0 ? (
+          <p className="text-soft">This spool has no weld.</p>
+        ) : (
+          <WeldTable facts={facts} done={weldCell} />
+        )}
+      </Section>
+      <Actuals
+        spool={spool}
+        role={role}
+        open={open}
+        onRecord={() =>
+          setTarget({ spoolId: spool.id, kind: "actual", mark: "", key: "", about: "", field: false })
+        }
+      />
       <WorkDialog target={target} onClose={() => setTarget(null)} />
     </>
   );
 }
 
 function cutText(piece: Piece, input: SheetInput): string {
-  return input.units === "metric" ? `${formatLength(piece.cutLengthMm, input.units)} mm` : `${formatInches(piece.cutLengthMm)} in`;
+  return input.units === "metric"
+    ? `${formatLength(piece.cutLengthMm, input.units)} mm`
+    : `${formatInches(piece.cutLengthMm)} in`;
 }
 
-function Actuals({ spool, role, open, onRecord }: { readonly spool: SpoolDetail; readonly role: Role; readonly open: boolean; readonly onRecord: () => void }) {
+function Actuals({
+  spool,
+  role,
+  open,
+  onRecord,
+}: {
+  readonly spool: SpoolDetail;
+  readonly role: Role;
+  readonly open: boolean;
+  readonly onRecord: () => void;
+}) {
   const entries = spool.work.filter((entry) => entry.kind === "actual");
   return (
-    <Section title="Actual dimensions" aside={open && canRecord(role, "actual") ? <Button onClick={onRecord}>Record an actual</Button> : null}>
+    <Section
+      title="Actual dimensions"
+      aside={open && canRecord(role, "actual") ? <Button onClick={onRecord}>Record an actual</Button> : null}
+    >
       {entries.length === 0 ? (
-        <p className="text-soft">None recorded. Check face to face, E, N and U, and the diagonals before welding out.</p>
+        <p className="text-soft">
+          None recorded. Check face to face, E, N and U, and the diagonals before welding out.
+        </p>
       ) : (
         <ul>
           {entries.map((entry) => (

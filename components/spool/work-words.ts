@@ -1,7 +1,13 @@
 import type { WorkKind } from "@/lib/rules/api-types";
 
 /** Kinds of work-log entries in words. */
-export const WORK_WORDS: Readonly<Record<WorkKind, string>> = { cut: "Cut", "fit-up": "Fit-up", weld: "Weld", visual: "Visual", actual: "Actual" };
+export const WORK_WORDS: Readonly<Record<WorkKind, string>> = {
+  cut: "Cut",
+  "fit-up": "Fit-up",
+  weld: "Weld",
+  visual: "Visual",
+  actual: "Actual",
+};
 
 export interface WorkField {
   readonly label: string;
@@ -32,4 +38,5 @@ export const RESULT_OPTIONS = [
   { value: "rejected", label: "Rejected" },
 ];
 
-export const FIELD_WELD_CAUTION = "Field weld: hot-work permit, isolate, gas test, fire watch. Do not pull, jack or heat the pipe to fit.";
+export const FIELD_WELD_CAUTION =
+  "Field weld: hot-work permit, isolate, gas test, fire watch. Do not pull, jack or heat the pipe to fit.";

@@ -30,9 +30,14 @@ export function FileCheck({ status }: { readonly status: StatusDetail }) {
         }}
         onDragLeave={() => setOver(false)}
         onDrop={drop}
-        className={clsx("mt-2 flex flex-wrap items-center justify-between gap-4 border-2 border-dashed p-4", over ? "border-dye bg-dye-tint" : "border-rule")}
+        className={clsx(
+          "mt-2 flex flex-wrap items-center justify-between gap-4 border-2 border-dashed p-4",
+          over ? "border-dye bg-dye-tint" : "border-rule",
+        )}
       >
-        <p className="min-w-0 grow basis-56">Drop a PDF of this sheet here, or choose it. It is compared on your device and not sent anywhere.</p>
+        <p className="min-w-0 grow basis-56">
+          Drop a PDF of this sheet here, or choose it. It is compared on your device and not sent anywhere.
+        </p>
         <FileButton label="Choose a PDF" accept="application/pdf" onFile={(file) => void check(file)} />
       </div>
       <div role="status" className="mt-3">
@@ -45,20 +50,27 @@ export function FileCheck({ status }: { readonly status: StatusDetail }) {
 const KIND_WORDS = { review: "the PDF submitted for review", fabrication: "the signed PDF" } as const;
 
 function Answer({ result, status }: { readonly result: NonNullable<Result>; readonly status: StatusDetail }) {
-  if (result.sha256 === null) return <Notice tone="caution">This browser compares files only on a page opened by https.</Notice>;
+  if (result.sha256 === null)
+    return <Notice tone="caution">This browser compares files only on a page opened by https.</Notice>;
   const match = status.sheets.find((sheet) => sheet.sha256 === result.sha256);
   const hash = <span className="figure mt-1 block text-sm break-all">SHA-256 {result.sha256}</span>;
   if (!match) {
     return (
       <Notice tone="trouble" word="Not recognized">
-        {result.name} is not a PDF of revision {status.code} as it was stored or printed here. It may be another revision, or altered.
+        {result.name} is not a PDF of revision {status.code} as it was stored or printed here. It may be
+        another revision, or altered.
         {hash}
       </Notice>
     );
   }
   return (
     <Notice tone={status.current && match.kind === "fabrication" ? "done" : "caution"} word="Recognized">
-      {result.name} is {KIND_WORDS[match.kind]} of revision {status.code}, unaltered. {status.current ? (match.kind === "review" ? "Work from the signed one instead." : "That revision is current.") : "That revision is NOT CURRENT."}
+      {result.name} is {KIND_WORDS[match.kind]} of revision {status.code}, unaltered.{" "}
+      {status.current
+        ? match.kind === "review"
+          ? "Work from the signed one instead."
+          : "That revision is current."
+        : "That revision is NOT CURRENT."}
       {hash}
     </Notice>
   );

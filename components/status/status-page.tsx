@@ -9,7 +9,9 @@ import { Verdict } from "./verdict";
 
 /** What the QR code of a sheet leads to; no sign-in, nothing but the sheet's standing. */
 export function StatusPage({ token }: { readonly token: string }) {
-  const status = useApi<StatusDetail>(`/api/status/${encodeURIComponent(token)}`, { refreshInterval: 60_000 });
+  const status = useApi<StatusDetail>(`/api/status/${encodeURIComponent(token)}`, {
+    refreshInterval: 60_000,
+  });
   return (
     <div className="mx-auto max-w-3xl">
       <Loaded api={status} page label="Looking up the sheet">

@@ -7,7 +7,8 @@ export type ButtonTone = "primary" | "plain" | "quiet" | "stop";
 const TONES: Readonly<Record<ButtonTone, string>> = {
   primary: "border-dye bg-dye text-white hover:bg-dye-deep hover:border-dye-deep",
   plain: "border-ink bg-sheet text-ink hover:bg-dye-tint hover:border-dye",
-  quiet: "border-transparent bg-transparent text-dye underline underline-offset-4 decoration-1 hover:decoration-2",
+  quiet:
+    "border-transparent bg-transparent text-dye underline underline-offset-4 decoration-1 hover:decoration-2",
   stop: "border-alert bg-sheet text-alert hover:bg-alert-tint",
 };
 
@@ -36,7 +37,17 @@ export interface ButtonProps extends ButtonHTMLAttributes<HTMLButtonElement> {
 }
 
 /** A button. Its type is "button" unless told otherwise, so that it never sends a form by accident. */
-export function Button({ tone = "plain", big, busy, busyLabel, className, children, disabled, type, ...rest }: ButtonProps) {
+export function Button({
+  tone = "plain",
+  big,
+  busy,
+  busyLabel,
+  className,
+  children,
+  disabled,
+  type,
+  ...rest
+}: ButtonProps) {
   return (
     <button
       {...rest}
@@ -56,6 +67,10 @@ export function ButtonLink({
   big,
   className,
   ...rest
-}: ComponentProps<typeof Link> & { readonly tone?: ButtonTone; readonly big?: boolean; readonly children: ReactNode }) {
+}: ComponentProps<typeof Link> & {
+  readonly tone?: ButtonTone;
+  readonly big?: boolean;
+  readonly children: ReactNode;
+}) {
   return <Link {...rest} className={clsx(buttonClass(tone, big), className)} />;
 }

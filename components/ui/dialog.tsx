@@ -39,7 +39,11 @@ export function Dialog({ open, title, onClose, children, wide }: DialogProps) {
             <h2 id={titleId} className="text-xl">
               {title}
             </h2>
-            <button type="button" onClick={onClose} className="-mt-1 min-h-11 min-w-11 px-2 font-medium text-dye underline underline-offset-4">
+            <button
+              type="button"
+              onClick={onClose}
+              className="-mt-1 min-h-11 min-w-11 px-2 font-medium text-dye underline underline-offset-4"
+            >
               Close
             </button>
           </div>

@@ -27,16 +27,23 @@ const SENTENCES: Readonly<Record<number, string>> = {
   429: "Too many tries. Wait a minute, then try again.",
 };
 
-const NO_ANSWER = "The server did not answer. Check the connection and try again; what you typed is still here.";
+const NO_ANSWER =
+  "The server did not answer. Check the connection and try again; what you typed is still here.";
 const WENT_WRONG = "The server could not do this. Try again; if it stays so, tell the owner of your shop.";
 
 function isApiError(value: unknown): value is ApiError {
-  return typeof value === "object" && value !== null && typeof (value as ApiError).message === "string" && typeof (value as ApiError).code === "string";
+  return (
+    typeof value === "object" &&
+    value !== null &&
+    typeof (value as ApiError).message === "string" &&
+    typeof (value as ApiError).code === "string"
+  );
 }
 
 async function failureOf(response: Response): Promise<ApiFailure> {
   const body: unknown = await response.json().catch(() => null);
-  if (isApiError(body)) return new ApiFailure(response.status, body.code, body.message, body.fields ?? {}, body);
+  if (isApiError(body))
+    return new ApiFailure(response.status, body.code, body.message, body.fields ?? {}, body);
   return new ApiFailure(response.status, "failed", SENTENCES[response.status] ?? WENT_WRONG, {});
 }
 
@@ -56,7 +63,11 @@ export function apiGet<T>(path: string): Promise<T> {
 }
 
 /** Writes JSON. Throws ApiFailure with a plain sentence and the errors by field. */
-export function apiSend<T>(method: "POST" | "PUT" | "PATCH" | "DELETE", path: string, body?: unknown): Promise<T> {
+export function apiSend<T>(
+  method: "POST" | "PUT" | "PATCH" | "DELETE",
+  path: string,
+  body?: unknown,
+): Promise<T> {
   return answerOf<T>(
     fetch(path, {
       method,
@@ -71,11 +82,16 @@ export function apiSend<T>(method: "POST" | "PUT" | "PATCH" | "DELETE", path: st
 export function apiUpload<T>(method: "POST" | "PUT", path: string, file: File): Promise<T> {
   const form = new FormData();
   form.append("file", file);
-  return answerOf<T>(fetch(path, { method, credentials: "same-origin", headers: { accept: "application/json" }, body: form }));
+  return answerOf<T>(
+    fetch(path, { method, credentials: "same-origin", headers: { accept: "application/json" }, body: form }),
+  );
 }
 
 /** Reads a path of the API and keeps it fresh; null = nothing to read yet. */
-export function useApi<T>(path: string | null, options?: SWRConfiguration<T, ApiFailure>): SWRResponse<T, ApiFailure> {
+export function useApi<T>(
+  path: string | null,
+  options?: SWRConfiguration<T, ApiFailure>,
+): SWRResponse<T, ApiFailure> {
   return useSWR<T, ApiFailure>(path, apiGet, { shouldRetryOnError: false, ...options });
 }
 

@@ -1,6 +1,12 @@
 "use client";
 import clsx from "clsx";
-import { useId, type InputHTMLAttributes, type ReactNode, type SelectHTMLAttributes, type TextareaHTMLAttributes } from "react";
+import {
+  useId,
+  type InputHTMLAttributes,
+  type ReactNode,
+  type SelectHTMLAttributes,
+  type TextareaHTMLAttributes,
+} from "react";
 
 const CONTROL =
   "w-full min-h-11 border bg-sheet px-3 py-2 text-ink placeholder:text-soft disabled:bg-shade disabled:text-soft";
@@ -24,9 +30,18 @@ export interface FieldIds {
 }
 
 /** A labelled entry: label, hint, the control (a function of its ids), caution, error. */
-export function Field({ label, hint, caution, error, className, children }: FieldFrameProps & { readonly children: (ids: FieldIds) => ReactNode }) {
+export function Field({
+  label,
+  hint,
+  caution,
+  error,
+  className,
+  children,
+}: FieldFrameProps & { readonly children: (ids: FieldIds) => ReactNode }) {
   const id = useId();
-  const described = [hint && `${id}-hint`, caution && `${id}-caution`, error && `${id}-error`].filter(Boolean).join(" ");
+  const described = [hint && `${id}-hint`, caution && `${id}-caution`, error && `${id}-error`]
+    .filter(Boolean)
+    .join(" ");
   return (
     <div className={clsx("min-w-0", className)}>
       <label htmlFor={id} className="block font-medium">
@@ -37,7 +52,13 @@ export function Field({ label, hint, caution, error, className, children }: Fiel
           {hint}
         </p>
       ) : null}
-      <div className="mt-1">{children({ id, "aria-describedby": described || undefined, "aria-invalid": error ? true : undefined })}</div>
+      <div className="mt-1">
+        {children({
+          id,
+          "aria-describedby": described || undefined,
+          "aria-invalid": error ? true : undefined,
+        })}
+      </div>
       {caution ? (
         <p id={`${id}-caution`} className="mt-1 text-sm text-caution">
           {caution}
@@ -62,16 +83,34 @@ function controlClass(error: string | undefined, figure: boolean | undefined): s
 }
 
 /** A one-line entry; spread react-hook-form's `register(...)` into it. */
-export function TextField({ label, hint, caution, error, className, figure, ...input }: Frame & InputHTMLAttributes<HTMLInputElement>) {
+export function TextField({
+  label,
+  hint,
+  caution,
+  error,
+  className,
+  figure,
+  ...input
+}: Frame & InputHTMLAttributes<HTMLInputElement>) {
   return (
     <Field label={label} hint={hint} caution={caution} error={error} className={className}>
-      {(ids) => <input type="text" autoComplete="off" {...input} {...ids} className={controlClass(error, figure)} />}
+      {(ids) => (
+        <input type="text" autoComplete="off" {...input} {...ids} className={controlClass(error, figure)} />
+      )}
     </Field>
   );
 }
 
 /** An entry of several lines. */
-export function TextArea({ label, hint, caution, error, className, figure, ...input }: Frame & TextareaHTMLAttributes<HTMLTextAreaElement>) {
+export function TextArea({
+  label,
+  hint,
+  caution,
+  error,
+  className,
+  figure,
+  ...input
+}: Frame & TextareaHTMLAttributes<HTMLTextAreaElement>) {
   return (
     <Field label={label} hint={hint} caution={caution} error={error} className={className}>
       {(ids) => <textarea rows={3} {...input} {...ids} className={controlClass(error, figure)} />}
@@ -111,12 +150,27 @@ export function Select({
 }
 
 /** A tick with its sentence; the whole line is the target. */
-export function Check({ label, error, className, ...input }: { readonly label: ReactNode; readonly error?: string | undefined; readonly className?: string } & InputHTMLAttributes<HTMLInputElement>) {
+export function Check({
+  label,
+  error,
+  className,
+  ...input
+}: {
+  readonly label: ReactNode;
+  readonly error?: string | undefined;
+  readonly className?: string;
+} & InputHTMLAttributes<HTMLInputElement>) {
   const id = useId();
   return (
     <div className={className}>
       <label className="flex min-h-11 items-start gap-3 py-2">
-        <input {...input} type="checkbox" aria-invalid={error ? true : undefined} aria-describedby={error ? `${id}-error` : undefined} className="mt-0.5 size-6 shrink-0 accent-dye" />
+        <input
+          {...input}
+          type="checkbox"
+          aria-invalid={error ? true : undefined}
+          aria-describedby={error ? `${id}-error` : undefined}
+          className="mt-0.5 size-6 shrink-0 accent-dye"
+        />
         <span>{label}</span>
       </label>
       {error ? (

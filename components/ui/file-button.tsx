@@ -2,7 +2,15 @@
 import { useId } from "react";
 
 /** A file chooser that looks and works like a button. */
-export function FileButton({ label, accept, onFile }: { readonly label: string; readonly accept: string; readonly onFile: (file: File | null) => void }) {
+export function FileButton({
+  label,
+  accept,
+  onFile,
+}: {
+  readonly label: string;
+  readonly accept: string;
+  readonly onFile: (file: File | null) => void;
+}) {
   const id = useId();
   return (
     <span className="relative inline-flex">
@@ -16,7 +24,10 @@ export function FileButton({ label, accept, onFile }: { readonly label: string; 
           event.target.value = "";
         }}
       />
-      <label htmlFor={id} className="inline-flex min-h-11 cursor-pointer items-center border border-ink bg-sheet px-4 font-medium peer-focus-visible:outline-3 peer-focus-visible:outline-offset-2 peer-focus-visible:outline-dye hover:bg-dye-tint">
+      <label
+        htmlFor={id}
+        className="inline-flex min-h-11 cursor-pointer items-center border border-ink bg-sheet px-4 font-medium peer-focus-visible:outline-3 peer-focus-visible:outline-offset-2 peer-focus-visible:outline-dye hover:bg-dye-tint"
+      >
         {label}
       </label>
     </span>

@@ -1,7 +1,13 @@
 /** How times and counts are written for a reader; the reader's own time zone, American order. */
 
 const DAY = new Intl.DateTimeFormat("en-US", { month: "short", day: "numeric", year: "numeric" });
-const MINUTE = new Intl.DateTimeFormat("en-US", { month: "short", day: "numeric", year: "numeric", hour: "numeric", minute: "2-digit" });
+const MINUTE = new Intl.DateTimeFormat("en-US", {
+  month: "short",
+  day: "numeric",
+  year: "numeric",
+  hour: "numeric",
+  minute: "2-digit",
+});
 
 /** "Dec 1, 2025", or "" for an empty or unreadable time. */
 export function dayText(iso: string | null): string {

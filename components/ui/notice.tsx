@@ -12,9 +12,22 @@ const TONES: Readonly<Record<NoticeTone, { box: string; word: string }>> = {
 };
 
 /** A ruled remark; its first word says what kind it is, so that colour is never alone. */
-export function Notice({ tone = "note", word, children, className }: { readonly tone?: NoticeTone; readonly word?: string; readonly children: ReactNode; readonly className?: string }) {
+export function Notice({
+  tone = "note",
+  word,
+  children,
+  className,
+}: {
+  readonly tone?: NoticeTone;
+  readonly word?: string;
+  readonly children: ReactNode;
+  readonly className?: string;
+}) {
   return (
-    <div role={tone === "trouble" ? "alert" : undefined} className={clsx("border-l-4 px-4 py-3", TONES[tone].box, className)}>
+    <div
+      role={tone === "trouble" ? "alert" : undefined}
+      className={clsx("border-l-4 px-4 py-3", TONES[tone].box, className)}
+    >
       <strong className="mr-2">{word ?? TONES[tone].word}.</strong>
       {children}
     </div>
@@ -49,11 +62,25 @@ export function ToastRegion({ children }: { readonly children: ReactNode }) {
   return (
     <ToastContext.Provider value={value}>
       {children}
-      <div aria-live="polite" data-screen-only className="fixed inset-x-3 bottom-3 z-50 mx-auto max-w-xl space-y-2">
+      <div
+        aria-live="polite"
+        data-screen-only
+        className="fixed inset-x-3 bottom-3 z-50 mx-auto max-w-xl space-y-2"
+      >
         {items.map((item) => (
-          <div key={item.id} className={clsx("flex items-center gap-3 border border-l-4 bg-sheet px-4 py-2 shadow-md", item.tone === "trouble" ? "border-alert" : "border-dye")}>
+          <div
+            key={item.id}
+            className={clsx(
+              "flex items-center gap-3 border border-l-4 bg-sheet px-4 py-2 shadow-md",
+              item.tone === "trouble" ? "border-alert" : "border-dye",
+            )}
+          >
             <p className="min-w-0 flex-1">{item.text}</p>
-            <button type="button" onClick={() => close(item.id)} className="min-h-11 px-2 text-dye underline underline-offset-4">
+            <button
+              type="button"
+              onClick={() => close(item.id)}
+              className="min-h-11 px-2 text-dye underline underline-offset-4"
+            >
               Close
             </button>
           </div>

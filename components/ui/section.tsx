@@ -2,7 +2,19 @@ import clsx from "clsx";
 import { useId, type ReactNode } from "react";
 
 /** A part of a page under a ruled heading. */
-export function Section({ title, aside, children, className, id }: { readonly title: string; readonly aside?: ReactNode; readonly children: ReactNode; readonly className?: string; readonly id?: string }) {
+export function Section({
+  title,
+  aside,
+  children,
+  className,
+  id,
+}: {
+  readonly title: string;
+  readonly aside?: ReactNode;
+  readonly children: ReactNode;
+  readonly className?: string;
+  readonly id?: string;
+}) {
   const headingId = useId();
   return (
     <section id={id} aria-labelledby={headingId} className={clsx("mb-8", className)}>

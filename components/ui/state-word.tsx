@@ -27,7 +27,15 @@ const INKS: Readonly<Record<RevisionState | "hold", string>> = {
 /** One shape per state, told apart without colour: drawn on a 16 x 16 field. */
 function StateShape({ state }: { readonly state: RevisionState | "hold" }) {
   return (
-    <svg aria-hidden viewBox="0 0 16 16" data-shape={state} className="size-4 shrink-0" fill="none" stroke="currentColor" strokeWidth="1.8">
+    <svg
+      aria-hidden
+      viewBox="0 0 16 16"
+      data-shape={state}
+      className="size-4 shrink-0"
+      fill="none"
+      stroke="currentColor"
+      strokeWidth="1.8"
+    >
       {SHAPES[state]}
     </svg>
   );
@@ -70,7 +78,13 @@ export function StateWord({ state, hold, className }: StateWordProps) {
           HOLD
         </span>
       ) : null}
-      <span className={clsx("inline-flex items-center gap-1.5 whitespace-nowrap", INKS[state], state === "superseded" && "line-through decoration-1")}>
+      <span
+        className={clsx(
+          "inline-flex items-center gap-1.5 whitespace-nowrap",
+          INKS[state],
+          state === "superseded" && "line-through decoration-1",
+        )}
+      >
         <StateShape state={state} />
         {STATE_WORDS[state]}
       </span>

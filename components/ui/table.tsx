@@ -46,7 +46,13 @@ export function Table<Row>({ caption, columns, rows, rowKey, sort, onSort, class
         {rows.map((row) => (
           <tr role="row" key={rowKey(row)}>
             {columns.map((column) => (
-              <td key={column.key} role="cell" data-label={column.head} data-figure={column.figure || undefined} className={clsx(column.figure && "figure", column.className)}>
+              <td
+                key={column.key}
+                role="cell"
+                data-label={column.head}
+                data-figure={column.figure || undefined}
+                className={clsx(column.figure && "figure", column.className)}
+              >
                 <div className="min-w-0">{column.cell(row)}</div>
               </td>
             ))}
@@ -57,19 +63,41 @@ export function Table<Row>({ caption, columns, rows, rowKey, sort, onSort, class
   );
 }
 
-function HeadCell<Row>({ column, sort, onSort }: { column: Column<Row>; sort: SortState | undefined; onSort: ((key: string) => void) | undefined }) {
+function HeadCell<Row>({
+  column,
+  sort,
+  onSort,
+}: {
+  column: Column<Row>;
+  sort: SortState | undefined;
+  onSort: ((key: string) => void) | undefined;
+}) {
   const active = sort?.key === column.key;
   const direction = active ? (sort.descending ? "descending" : "ascending") : undefined;
   if (!column.sortable || !onSort) {
     return (
       <th role="columnheader" scope="col" data-figure={column.figure || undefined}>
-        <span className="-my-1 inline-flex min-h-9 items-center">{column.head || <span className="sr-only">Actions</span>}</span>
+        <span className="-my-1 inline-flex min-h-9 items-center">
+          {column.head || <span className="sr-only">Actions</span>}
+        </span>
       </th>
     );
   }
   return (
-    <th role="columnheader" scope="col" aria-sort={direction ?? "none"} data-figure={column.figure || undefined}>
-      <button type="button" onClick={() => onSort(column.key)} className={clsx("-my-1 inline-flex min-h-9 items-center gap-1 font-medium hover:text-dye", active && "text-dye")}>
+    <th
+      role="columnheader"
+      scope="col"
+      aria-sort={direction ?? "none"}
+      data-figure={column.figure || undefined}
+    >
+      <button
+        type="button"
+        onClick={() => onSort(column.key)}
+        className={clsx(
+          "-my-1 inline-flex min-h-9 items-center gap-1 font-medium hover:text-dye",
+          active && "text-dye",
+        )}
+      >
         {column.head}
         <svg aria-hidden viewBox="0 0 10 10" className={clsx("size-2.5", !active && "opacity-40")}>
           <path d={active && sort.descending ? "M1 3h8L5 8z" : "M1 7h8L5 2z"} fill="currentColor" />

@@ -22,7 +22,11 @@ export function TitleStrip({ title, kind, trail, cells, actions }: TitleStripPro
   return (
     <header className="mb-6">
       {trail && trail.length > 0 ? (
-        <nav aria-label="Where you are" className="mb-1 flex flex-wrap items-center gap-x-2 text-sm" data-screen-only>
+        <nav
+          aria-label="Where you are"
+          className="mb-1 flex flex-wrap items-center gap-x-2 text-sm"
+          data-screen-only
+        >
           {trail.map((step) => (
             <span key={step.href} className="inline-flex items-center gap-2">
               <Link href={step.href} className="inked inline-flex min-h-8 items-center">
@@ -55,7 +59,10 @@ function Cells({ cells }: { readonly cells: readonly StripCell[] }) {
   return (
     <dl className="flex flex-wrap border-t border-hair">
       {cells.map((cell) => (
-        <div key={cell.label} className="min-w-32 grow border-r border-hair py-2 pr-3 pl-3 first:pl-0 last:border-r-0">
+        <div
+          key={cell.label}
+          className="min-w-32 grow border-r border-hair py-2 pr-3 pl-3 first:pl-0 last:border-r-0"
+        >
           <dt className="cell-label">{cell.label}</dt>
           <dd className={cell.figure ? "figure" : undefined}>{cell.value}</dd>
         </div>

@@ -7,7 +7,10 @@ import { ApiFailure, failureText } from "./fetcher";
  * Sends a form: errors that name a field go to that field, the rest becomes one sentence for the form's head. What was
  * typed stays where it is.
  */
-export function useFormSend<Values extends FieldValues>(setError: UseFormSetError<Values>, knownFields: readonly Path<Values>[]) {
+export function useFormSend<Values extends FieldValues>(
+  setError: UseFormSetError<Values>,
+  knownFields: readonly Path<Values>[],
+) {
   const [trouble, setTrouble] = useState<string | null>(null);
   const send = useCallback(
     async (work: () => Promise<void>) => {

@@ -21,7 +21,11 @@ export interface Sent {
 export function answerWith(status: number, body: unknown): Sent[] {
   const sent: Sent[] = [];
   vi.stubGlobal("fetch", async (path: string, init?: RequestInit) => {
-    sent.push({ method: init?.method ?? "GET", path, body: typeof init?.body === "string" ? JSON.parse(init.body) : null });
+    sent.push({
+      method: init?.method ?? "GET",
+      path,
+      body: typeof init?.body === "string" ? JSON.parse(init.body) : null,
+    });
     return new Response(JSON.stringify(body), { status, headers: { "content-type": "application/json" } });
   });
   return sent;

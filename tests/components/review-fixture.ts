@@ -6,14 +6,43 @@ import type { RevisionState, SheetInput } from "@/iso";
 export function sheetInput(state: RevisionState, code: string): SheetInput {
   return {
     version: 1,
-    document: { version: 1, number: "4-CW-101", title: "", settings: defaultLineSettings("imperial"), view: null, runs: [{ id: "m", name: "", from: null, pipe: null, points: [] }], notes: [] },
+    document: {
+      version: 1,
+      number: "4-CW-101",
+      title: "",
+      settings: defaultLineSettings("imperial"),
+      view: null,
+      runs: [{ id: "m", name: "", from: null, pipe: null, points: [] }],
+      notes: [],
+    },
     marks: { version: 1, sticky: true, welds: {}, pieces: {}, spools: {}, voided: [] },
     takeOuts: [],
     spool: "A",
     size: "letter",
     units: "imperial",
-    titleBlock: { shopName: "Shop", client: "", project: "", jobNumber: "J-1", area: "", fields: [], logo: null },
-    revision: { sheetNumber: "S-0001", code, state, hold: false, rows: [], drawnBy: "", checkedBy: "", issuedAt: "2026-01-01T00:00:00Z", statusUrl: "", auditHead: "", changedPointIds: [], accepted: [] },
+    titleBlock: {
+      shopName: "Shop",
+      client: "",
+      project: "",
+      jobNumber: "J-1",
+      area: "",
+      fields: [],
+      logo: null,
+    },
+    revision: {
+      sheetNumber: "S-0001",
+      code,
+      state,
+      hold: false,
+      rows: [],
+      drawnBy: "",
+      checkedBy: "",
+      issuedAt: "2026-01-01T00:00:00Z",
+      statusUrl: "",
+      auditHead: "",
+      changedPointIds: [],
+      accepted: [],
+    },
   };
 }
 

@@ -14,7 +14,9 @@ afterEach(cleanup);
 const KINDS: readonly WorkKind[] = ["fit-up", "weld", "visual"];
 
 function offered(role: Role, open: boolean): string[] {
-  const { unmount } = render(<LogCell entries={[]} kinds={KINDS} role={role} open={open} markName="5" onRecord={() => undefined} />);
+  const { unmount } = render(
+    <LogCell entries={[]} kinds={KINDS} role={role} open={open} markName="5" onRecord={() => undefined} />,
+  );
   const names = screen.queryAllByRole("button").map((button) => button.textContent ?? "");
   unmount();
   return names;
@@ -40,8 +42,17 @@ describe("places", () => {
   });
 
   it("puts the bench first for a fitter and the outbox in the demo only", () => {
-    expect(placesFor({ role: "fitter", demo: false }).map((place) => place.label)).toEqual(["Bench", "Jobs", "Shop"]);
-    expect(placesFor({ role: "owner", demo: true }).map((place) => place.label)).toEqual(["Jobs", "Bench", "Shop", "Outbox"]);
+    expect(placesFor({ role: "fitter", demo: false }).map((place) => place.label)).toEqual([
+      "Bench",
+      "Jobs",
+      "Shop",
+    ]);
+    expect(placesFor({ role: "owner", demo: true }).map((place) => place.label)).toEqual([
+      "Jobs",
+      "Bench",
+      "Shop",
+      "Outbox",
+    ]);
   });
 
   it("knows which paths need no sign-in and to which place a path belongs", () => {
@@ -62,7 +73,13 @@ describe("steps of a revision", () => {
 });
 
 describe("work entries", () => {
-  const target = { spoolId: "s1", mark: "P1", key: "m-2:1", about: "Cut length 28 1/4 in", field: false } as const;
+  const target = {
+    spoolId: "s1",
+    mark: "P1",
+    key: "m-2:1",
+    about: "Cut length 28 1/4 in",
+    field: false,
+  } as const;
 
   it("puts the caution at the heat field", () => {
     render(<WorkDialog target={{ ...target, kind: "cut" }} onClose={() => undefined} />);
@@ -72,7 +89,9 @@ describe("work entries", () => {
   });
 
   it("warns at a field weld, not at a shop weld", () => {
-    const { rerender } = render(<WorkDialog target={{ ...target, kind: "weld", field: true }} onClose={() => undefined} />);
+    const { rerender } = render(
+      <WorkDialog target={{ ...target, kind: "weld", field: true }} onClose={() => undefined} />,
+    );
     expect(screen.getByText(/hot-work permit/)).toBeTruthy();
     rerender(<WorkDialog target={{ ...target, kind: "weld", field: false }} onClose={() => undefined} />);
     expect(screen.queryByText(/hot-work permit/)).toBeNull();

@@ -6,7 +6,9 @@ import { parseLength } from "@/iso";
 
 /** Numbers to a millionth of a millimetre: inches times 25.4 differ from a typed 3/8 in the last bit. */
 function rounded(value: unknown): unknown {
-  return JSON.parse(JSON.stringify(value, (_, part: unknown) => (typeof part === "number" ? Number(part.toFixed(6)) : part)));
+  return JSON.parse(
+    JSON.stringify(value, (_, part: unknown) => (typeof part === "number" ? Number(part.toFixed(6)) : part)),
+  );
 }
 
 describe("line settings as a form holds them", () => {
@@ -18,11 +20,15 @@ describe("line settings as a form holds them", () => {
 
   it("show a length exactly, whatever the unit system", () => {
     fc.assert(
-      fc.property(fc.double({ min: 0, max: 30_000, noNaN: true }), fc.constantFrom("imperial", "metric" as const), (mm, units) => {
-        const read = parseLength(lengthEntryText(mm, units), units);
-        // Four decimals of a millimetre are written, so the reading is within half of the last one.
-        expect(read.ok && Math.abs(read.mm - mm)).toBeLessThan(0.000_1);
-      }),
+      fc.property(
+        fc.double({ min: 0, max: 30_000, noNaN: true }),
+        fc.constantFrom("imperial", "metric" as const),
+        (mm, units) => {
+          const read = parseLength(lengthEntryText(mm, units), units);
+          // Four decimals of a millimetre are written, so the reading is within half of the last one.
+          expect(read.ok && Math.abs(read.mm - mm)).toBeLessThan(0.000_1);
+        },
+      ),
     );
   });
 

@@ -31,7 +31,9 @@ describe("StateWord", () => {
       unmount();
       return shape;
     });
-    const held = render(<StateWord state="draft" hold />).container.querySelector('svg[data-shape="hold"]')?.innerHTML ?? "";
+    const held =
+      render(<StateWord state="draft" hold />).container.querySelector('svg[data-shape="hold"]')?.innerHTML ??
+      "";
     const shapes = [...drawn, held];
     expect(shapes.every((shape) => shape.length > 0)).toBe(true);
     expect(new Set(shapes).size).toBe(WORDS.length + 1);

@@ -38,7 +38,9 @@ describe("Verdict", () => {
   });
 
   it("says NOT CURRENT with another shape", () => {
-    const { container } = render(<Verdict status={{ ...status, current: false, state: "superseded", liveCode: "B" }} />);
+    const { container } = render(
+      <Verdict status={{ ...status, current: false, state: "superseded", liveCode: "B" }} />,
+    );
     expect(screen.getByRole("heading", { name: "NOT CURRENT" })).toBeTruthy();
     expect(container.querySelector('svg[data-shape="not-current"]')).not.toBeNull();
   });
@@ -55,13 +57,17 @@ describe("Verdict", () => {
 describe("FileCheck", () => {
   it("hashes a file as SHA-256 does", async () => {
     // FIPS 180-4, the published example "abc".
-    expect(await fileSha256(new NodeBlob(["abc"]) as unknown as Blob)).toBe("ba7816bf8f01cfea414140de5dae2223b00361a396177a9cb410ff61f20015ad");
+    expect(await fileSha256(new NodeBlob(["abc"]) as unknown as Blob)).toBe(
+      "ba7816bf8f01cfea414140de5dae2223b00361a396177a9cb410ff61f20015ad",
+    );
   });
 
   it("recognizes a dropped PDF of this revision", async () => {
     render(<FileCheck status={status} />);
     fireEvent.drop(screen.getByText(/Drop a PDF/), { dataTransfer: { files: [pdf(PDF)] } });
-    expect((await screen.findByText(/the signed PDF of revision A, unaltered/)).textContent).toContain("That revision is current");
+    expect((await screen.findByText(/the signed PDF of revision A, unaltered/)).textContent).toContain(
+      "That revision is current",
+    );
   });
 
   it("says so when a recognized sheet is dead", async () => {

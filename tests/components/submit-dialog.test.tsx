@@ -29,7 +29,13 @@ describe("SubmitDialog", () => {
     fireEvent.change(screen.getByLabelText(DESCRIPTION), { target: { value: "Issued for fabrication" } });
     fireEvent.click(screen.getByRole("button", { name: "Submit for review" }));
     await waitFor(() => expect(closed).toHaveBeenCalledTimes(1));
-    expect(sent).toEqual([{ method: "POST", path: "/api/spools/s1/submit", body: { description: "Issued for fabrication", size: "A3" } }]);
+    expect(sent).toEqual([
+      {
+        method: "POST",
+        path: "/api/spools/s1/submit",
+        body: { description: "Issued for fabrication", size: "A3" },
+      },
+    ]);
   });
 
   it("keeps what was typed when the server refuses", async () => {
