@@ -141,7 +141,7 @@ describe("close between, as the editor asks", () => {
     expect(found.rollText).toBe("180.00°");
     expect(found.rollArcMm! / IN).toBeCloseTo((Math.PI * 6.625) / 2, 6);
     expect(found.points).toHaveLength(2);
-    const [first, second] = found.points as [readonly number[], readonly number[]];
+    const [first, second] = found.points as unknown as [readonly number[], readonly number[]];
     expect(first[1]).toBeCloseTo(0, 9);
     expect(second[1]).toBeCloseTo(30 * IN, 9);
     // centre to centre = pipe + two take-outs + the two gaps beside the pipe

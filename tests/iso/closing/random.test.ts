@@ -1,6 +1,6 @@
 /** Twenty thousand random closings, two thousand of them against a dense search that shares no code with the solver. */
 import { describe, expect, it } from "vitest";
-import { solveClosing, type ClosingInput } from "@/iso";
+import { solveClosing, type ClosingInput, type ClosingSolution } from "@/iso";
 import { closingSearch } from "../../oracle/closing-search";
 import { closingWalk, turned, unit, type V, type Walk } from "../../oracle/closing-walk";
 import { seededRandom } from "../../oracle/random";
@@ -73,19 +73,24 @@ describe("random closings", () => {
       const result = solveClosing(wide);
       const path = result.solutions[0] ?? result.nearest;
       const ours = path && Math.max(path.theta0, path.theta1) <= LARGEST_SEARCHED ? path : null;
-      const hits = closingSearch(input).filter((h) => Math.max(h.theta0, h.theta1) <= LARGEST_SEARCHED);
       counted[ours ? "closed" : "refused"] += 1;
-      const same =
-        ours === null
-          ? hits.length === 0
-          : hits.length === 1 && Math.abs(hits[0]!.theta0 - ours.theta0) + Math.abs(hits[0]!.theta1 - ours.theta1) < 1e-5 && Math.abs(hits[0]!.straight - 2 * input.gap - ours.length) < 1e-4;
-      if (!same) wrong.push(`${i}: ${JSON.stringify({ ours, hits })}`);
+      // Where the two differ, a thorough search on a finer grid decides: near a fold two dips lie within one cell.
+      const same = agrees(input, ours, 36, false) || agrees(input, ours, 144, true);
+      if (!same) wrong.push(`${i}: ${JSON.stringify({ input, ours })}`);
     }
     expect(wrong).toEqual([]);
     expect(counted.closed).toBeGreaterThan(SEARCHED / 4);
     expect(counted.refused).toBeGreaterThan(SEARCHED / 4);
   });
 });
+
+function agrees(input: ClosingInput, ours: ClosingSolution | null, steps: number, thorough: boolean): boolean {
+  const hits = closingSearch(input, steps, thorough).filter((h) => Math.max(h.theta0, h.theta1) <= LARGEST_SEARCHED);
+  const hit = hits[0];
+  if (!ours || !hit || hits.length > 1) return !ours && !hit;
+  const turn = Math.abs(hit.theta0 - ours.theta0) + Math.abs(hit.theta1 - ours.theta1);
+  return turn < 1e-5 && Math.abs(hit.straight - 2 * input.gap - ours.length) < 1e-4;
+}
 
 function walkedInput(random: () => number): ClosingInput {
   const walk = randomWalk(random);
