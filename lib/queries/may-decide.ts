@@ -6,6 +6,7 @@ import { signRefusal } from "@/lib/rules/revision-rules";
 import { inShop, type ShopMember } from "@/lib/server/scope";
 import { Membership, type Revision } from "@/models";
 import { touchedBy } from "./revision-facts";
+import { takeOutTouches } from "./take-out-touches";
 
 /** Why this person may not sign or return `revision`, as a sentence; null when they may. */
 export async function decideRefusal(
@@ -23,7 +24,10 @@ export async function decideRefusal(
     state: revision.state,
     hold: revision.hold,
     submittedById: revision.submittedBy,
-    touchedByIds: await touchedBy(viewer, lineId, before, revision.lineVersion, tx),
+    touchedByIds: [
+      ...(await touchedBy(viewer, lineId, before, revision.lineVersion, tx)),
+      ...(await takeOutTouches(viewer, revision, before, tx)),
+    ],
     othersWhoMaySign: members.filter((m) => m.personId !== viewer.personId && canDo(m.role, "revisions.decide")).length,
   });
 }
