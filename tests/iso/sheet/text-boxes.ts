@@ -7,8 +7,11 @@ export const isAcross = (item: TextItem): boolean => item.layer === "state" && i
 
 export const textsOf = (page: SheetPage): TextItem[] => page.items.filter((item) => item.type === "text" && item.text !== "" && !isAcross(item)) as TextItem[];
 
-/** Four corners of the ink of a text: advance by capital height, a third of a capital below the baseline for descenders. */
-export function textCorners(item: TextItem, descent = 0.32): PaperPoint[] {
+/** How far a text reaches below its baseline, in capitals: a third where it has descenders or brackets, else a slash's tenth. */
+const descentOf = (text: string): number => (/[gjpqy()[\]{},;|_Q@$]/.test(text) ? 0.32 : 0.1);
+
+/** Four corners of the ink of a text: advance by capital height and what hangs below the baseline. */
+export function textCorners(item: TextItem, descent = descentOf(item.text)): PaperPoint[] {
   const width = measureText(item.text, item.capMm, item.face);
   const left = item.anchor === "start" ? 0 : item.anchor === "end" ? -width : -width / 2;
   const [c, s] = [Math.cos(item.rotateRad), Math.sin(item.rotateRad)];
