@@ -4,7 +4,8 @@ import { FROM_DRAWING, runOf, withItem, withPoint, withPointsInserted } from "./
 import type { EntryResult } from "./entry-result";
 import { parseItem } from "./item-entry";
 import { itemEcho, itemText } from "./item-text";
-import { moveEcho, moveText, parseMove, straightOnOf, ZERO_OFFSET, type StraightOn } from "./move-entry";
+import { parseMove, ZERO_OFFSET } from "./move-entry";
+import { moveEcho, moveText, straightOnOf, type StraightOn } from "./move-text";
 import { parsePlaces, placesEcho, placesText } from "./place-entry";
 import { parseProvenance, PROVENANCE_WORD } from "./provenance-entry";
 

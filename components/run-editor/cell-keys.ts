@@ -1,5 +1,5 @@
 /** What a key means in a cell. Pure, so that every key of the help panel is tested without a screen. */
-import type { CursorStep } from "./editor-state";
+import type { CursorStep } from "./editor-types";
 
 export interface KeyPress {
   readonly key: string;

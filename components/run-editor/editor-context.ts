@@ -1,7 +1,7 @@
 "use client";
 /** How the parts of the editor send actions: without the stamp, which the editor adds. */
 import { createContext, useContext } from "react";
-import type { EditorAction } from "./editor-state";
+import type { EditorAction } from "./editor-types";
 
 type WithoutStamp<A> = A extends { readonly stamp: unknown } ? Omit<A, "stamp"> : A;
 export type EditorIntent = WithoutStamp<EditorAction>;

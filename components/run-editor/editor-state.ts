@@ -2,77 +2,13 @@
  * The editor's state and what may be done to it. One reducer, no React, no clock, no randomness: ids, names and dates
  * come in with the action. Every change of the document is one step of the history, so a cell committed is one undo.
  */
-import { pointMove, pointRemove, type Point, type RunDocument } from "@/iso";
-import { cellText, COLUMNS, commitCell, nearSideAt, newPoint, type CellTarget, type Column, type CommitContext } from "./cell-commit";
+import { pointMove, pointRemove, type RunDocument } from "@/iso";
+import { COLUMNS, commitCell, newPoint, type CellTarget, type Column, type CommitContext } from "./cell-commit";
+import { gridRows, landing } from "./cursor-steps";
 import { pointPlace, runOf, withPoint, withPointsInserted } from "./document-edits";
+import { draftKey } from "./drafts";
+import type { Draft, EditorAction, EditorState, PointPatch, Stamp, Step } from "./editor-types";
 import { pastedCells } from "./paste";
-
-/** A typed text that was not understood stays with its cell until it is mended or dropped. */
-export interface Draft {
-  readonly text: string;
-  readonly message: string;
-}
-
-export interface EditorState {
-  readonly document: RunDocument;
-  readonly past: readonly RunDocument[];
-  readonly future: readonly RunDocument[];
-  readonly drafts: Readonly<Record<string, Draft>>;
-  readonly cursor: CellTarget;
-  /** Counts the moves of the cursor that should take the focus along. */
-  readonly focusTurn: number;
-  /** The document with the valid entry being typed, for the drawing only; null when nothing is being typed. */
-  readonly preview: RunDocument | null;
-  /** How the text being typed reads so far; null when nothing is being typed. */
-  readonly typing: TypingEcho | null;
-  /** Id the next new point of each run will get, so that its row keeps its identity. */
-  readonly nextIds: Readonly<Record<string, string>>;
-}
-
-/** The echo of a text still being typed, or the sentence that says what is missing. */
-export interface TypingEcho {
-  readonly ok: boolean;
-  readonly words: string;
-}
-
-/** Fresh ids that come with each action; as many as it may need. */
-export interface Stamp {
-  readonly by: string;
-  readonly at: string;
-  readonly ids: readonly string[];
-  readonly branchId: string;
-}
-
-export type CursorStep = "stay" | "next-row" | "right" | "left" | "up" | "down";
-
-export type EditorAction =
-  | { readonly type: "commit"; readonly target: CellTarget; readonly text: string; readonly step: CursorStep; readonly stamp: Stamp }
-  | { readonly type: "typing"; readonly target: CellTarget; readonly text: string | null; readonly stamp: Stamp }
-  | { readonly type: "drop"; readonly target: CellTarget }
-  | { readonly type: "cursor"; readonly target: CellTarget; readonly focus: boolean }
-  | { readonly type: "step"; readonly step: CursorStep | "row-start" | "row-end" | "first" | "last" }
-  | { readonly type: "show-point"; readonly pointId: string; readonly focus: boolean }
-  | { readonly type: "row-insert"; readonly target: CellTarget; readonly stamp: Stamp }
-  | { readonly type: "row-remove"; readonly target: CellTarget; readonly stamp: Stamp }
-  | { readonly type: "row-move"; readonly target: CellTarget; readonly by: -1 | 1; readonly stamp: Stamp }
-  | { readonly type: "point-patch"; readonly pointId: string; readonly patch: Partial<Omit<Point, "id">>; readonly stamp: Stamp }
-  | { readonly type: "points-insert"; readonly runId: string; readonly row: number; readonly points: readonly Point[]; readonly patch: PointPatch | null; readonly stamp: Stamp }
-  | { readonly type: "document-patch"; readonly patch: Partial<Pick<RunDocument, "settings" | "view" | "notes" | "number" | "title" | "runs">>; readonly stamp: Stamp }
-  | { readonly type: "paste"; readonly target: CellTarget; readonly text: string; readonly stamp: Stamp }
-  | { readonly type: "replace"; readonly document: RunDocument; readonly stamp: Stamp }
-  | { readonly type: "undo" }
-  | { readonly type: "redo" };
-
-/** A change of one point that goes with an insertion (the point after it moves, say). */
-export interface PointPatch {
-  readonly pointId: string;
-  readonly patch: Partial<Omit<Point, "id">>;
-}
-
-export function draftKey(document: RunDocument, target: CellTarget): string {
-  const point = runOf(document, target.runId)?.points[target.row];
-  return `${point?.id ?? `${target.runId}:new`}:${target.column}`;
-}
 
 /** State of an editor just opened: an empty line starts at its first item, since the first point is its own datum. */
 export function initialState(document: RunDocument, stamp: Stamp): EditorState {
@@ -181,12 +117,7 @@ function moveTo(state: EditorState, target: CellTarget, focus: boolean): EditorS
   return { ...state, cursor: same ? state.cursor : target, focusTurn: focus ? state.focusTurn + 1 : state.focusTurn };
 }
 
-/** Rows of the whole grid in reading order; each run ends with its empty row. */
-export function gridRows(document: RunDocument): readonly { readonly runId: string; readonly row: number }[] {
-  return document.runs.flatMap((run) => Array.from({ length: run.points.length + 1 }, (_, row) => ({ runId: run.id, row })));
-}
-
-function stepped(state: EditorState, step: Extract<EditorAction, { type: "step" }>["step"]): EditorState {
+function stepped(state: EditorState, step: Step): EditorState {
   if (step === "stay") return state;
   const rows = gridRows(state.document);
   const at = rows.findIndex((row) => row.runId === state.cursor.runId && row.row === state.cursor.row);
@@ -195,21 +126,6 @@ function stepped(state: EditorState, step: Extract<EditorAction, { type: "step" 
   const row = rows[Math.max(0, Math.min(rows.length - 1, nextAt))];
   if (!row) return state;
   return moveTo(state, { ...row, column: COLUMNS[nextColumn] ?? "move" }, true);
-}
-
-function landing(step: string, at: number, column: number, rows: number): readonly [number, number] {
-  const last = COLUMNS.length - 1;
-  switch (step) {
-    case "next-row": return [at + 1, 0];
-    case "up": return [at - 1, column];
-    case "down": return [at + 1, column];
-    case "right": return column < last ? [at, column + 1] : at < rows - 1 ? [at + 1, 0] : [at, last];
-    case "left": return column > 0 ? [at, column - 1] : at > 0 ? [at - 1, last] : [0, 0];
-    case "row-start": return [at, 0];
-    case "row-end": return [at, last];
-    case "first": return [0, 0];
-    default: return [rows - 1, 0];
-  }
 }
 
 function insertRow(state: EditorState, target: CellTarget, stamp: Stamp): EditorState {
@@ -255,25 +171,4 @@ function redo(state: EditorState): EditorState {
   const [document, ...future] = state.future;
   if (!document) return state;
   return held({ ...state, document, past: [...state.past, state.document], future, preview: null, typing: null, focusTurn: state.focusTurn + 1 });
-}
-
-/** Entries that were not understood, for the problem list: each with its place. */
-export function waitingDrafts(state: EditorState): readonly { readonly target: CellTarget; readonly draft: Draft }[] {
-  const columns = COLUMNS;
-  return state.document.runs.flatMap((run) =>
-    Array.from({ length: run.points.length + 1 }, (_, row) => row).flatMap((row) =>
-      columns.flatMap((column) => {
-        const target: CellTarget = { runId: run.id, row, column };
-        const draft = state.drafts[draftKey(state.document, target)];
-        return draft ? [{ target, draft }] : [];
-      }),
-    ),
-  );
-}
-
-/** What a cell shows: the waiting text, else what is stored. */
-export function shownText(state: EditorState, target: CellTarget): string {
-  const draft = state.drafts[draftKey(state.document, target)];
-  const point = runOf(state.document, target.runId)?.points[target.row];
-  return draft?.text ?? (point ? cellText(point, target.column, nearSideAt(state.document, target.runId, target.row)) : "");
 }

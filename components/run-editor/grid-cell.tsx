@@ -4,7 +4,7 @@ import { memo, useId, useRef, useState, type ClipboardEvent, type KeyboardEvent 
 import { useEditor } from "./editor-context";
 import type { CellTarget, Column } from "./cell-commit";
 import { keyIntent, type KeyIntent } from "./cell-keys";
-import type { Draft, TypingEcho } from "./editor-state";
+import type { Draft, TypingEcho } from "./editor-types";
 import { suggestItems } from "./item-entry";
 import { ItemPicker } from "./item-picker";
 import type { ItemWord } from "./item-words";

@@ -1,6 +1,6 @@
 "use client";
 import clsx from "clsx";
-import { useCallback, useEffect, useMemo, useRef, useState, type KeyboardEvent, type MouseEvent } from "react";
+import { memo, useCallback, useEffect, useMemo, useRef, useState, type KeyboardEvent, type MouseEvent } from "react";
 import type { Drawing, Model, PaperPoint, View } from "@/iso";
 import { DrawingItems, parseRef } from "./drawing-items";
 import { pointFinder } from "./drawing-refs";
@@ -29,7 +29,7 @@ const VIEW_SHORT: Readonly<Record<View, string>> = { 1: "SW", 2: "SE", 3: "NE", 
 const VIEWS: readonly View[] = [1, 2, 3, 4];
 
 /** The live isometric: what is pointed at finds its row, and the current row shows in the active colour. */
-export function LineDrawing({ model, view, onView, activePointId, onPoint }: LineDrawingProps) {
+export const LineDrawing = memo(function LineDrawing({ model, view, onView, activePointId, onPoint }: LineDrawingProps) {
   const frame = useRef<HTMLDivElement>(null);
   const room = useRoom(frame);
   const drawn = useLineDrawing(model, room, view);
@@ -48,7 +48,7 @@ export function LineDrawing({ model, view, onView, activePointId, onPoint }: Lin
       </div>
     </section>
   );
-}
+});
 
 function useRoom(frame: React.RefObject<HTMLDivElement | null>): DrawingRoom {
   const [room, setRoom] = useState<DrawingRoom>({ widthMm: 240, heightMm: 180 });

@@ -7,15 +7,15 @@ import type { LineDetail } from "@/lib/rules/api-types";
 
 /** The draft sheet of a spool as it would print now. */
 export function LineSheet({ line, document, model }: { readonly line: LineDetail; readonly document: RunDocument; readonly model: Model }) {
-  const letters = model.spools.map((spool) => spool.letter);
   const [wanted, setWanted] = useState<string | null>(null);
-  const spool = wanted && letters.includes(wanted) ? wanted : (letters[0] ?? null);
+  const chosen = model.spools.find((each) => each.letter === wanted) ?? model.spools[0];
+  const spool = chosen?.letter ?? null;
   const [openedAt] = useState(() => new Date().toISOString());
-  const input = useMemo(() => (spool ? draftInput(line, document, spool, openedAt) : null), [line, document, spool, openedAt]);
+  const input = useMemo(() => (spool === null ? null : draftInput(line, document, spool, openedAt)), [line, document, spool, openedAt]);
   if (!input || !spool) return <p className="frame p-6 text-soft">No spool yet: the sheet stands here once there is pipe.</p>;
   return (
     <div className="min-h-0 flex-1 overflow-y-auto">
-      {letters.length > 1 ? <ChoiceRow label="Spool" value={spool} onChange={setWanted} choices={letters.map((letter) => ({ value: letter, label: `Spool ${letter}` }))} /> : null}
+      {model.spools.length > 1 ? <ChoiceRow label="Spool" value={spool} onChange={setWanted} choices={model.spools.map(({ letter }) => ({ value: letter, label: `Spool ${letter}` }))} /> : null}
       <SheetPreview input={input} label={`Draft sheet of spool ${spool}`} />
     </div>
   );

@@ -11,22 +11,10 @@
 import { formatLength, parseDirection, parseLength } from "@/iso";
 import type { Entry, Offset, UnitSystem } from "@/iso";
 import { refused, understood, type EntryResult } from "./entry-result";
-
-type Axis = "E" | "W" | "N" | "S" | "U" | "D";
-
-/** Direction of the leg before, for a length typed without a direction; null at a run's first point. */
-export interface StraightOn {
-  readonly text: string;
-  readonly e: number;
-  readonly n: number;
-  readonly u: number;
-}
+import { echoTriple, negated, type Axis, type StraightOn } from "./move-text";
 
 const AXIS_WORDS: Readonly<Record<string, Axis>> = {
   east: "E", west: "W", north: "N", south: "S", up: "U", down: "D",
-};
-const AXIS_NAMES: Readonly<Record<Axis, string>> = {
-  E: "east", W: "west", N: "north", S: "south", U: "up", D: "down",
 };
 /** Position in e, n, u and sign of each named axis. */
 const AXES: Readonly<Record<Axis, { readonly slot: 0 | 1 | 2; readonly sign: 1 | -1 }>> = {
@@ -34,8 +22,6 @@ const AXES: Readonly<Record<Axis, { readonly slot: 0 | 1 | 2; readonly sign: 1 |
   N: { slot: 1, sign: 1 }, S: { slot: 1, sign: -1 },
   U: { slot: 2, sign: 1 }, D: { slot: 2, sign: -1 },
 };
-const POSITIVE: readonly Axis[] = ["E", "N", "U"];
-const NEGATIVE: readonly Axis[] = ["W", "S", "D"];
 
 /** A turned direction such as N30E or 045/30 stands as one word, so that its digits are not taken for a length. */
 const ONE_WORD_DIRECTION = /^([ENUWSD]\d+(?:\.\d+)?[ENUWSD]|\d{3}(?:\.\d+)?\/[+-]?\d+(?:\.\d+)?)(?:\s+(.*))?$/i;
@@ -148,64 +134,4 @@ function parseAxes(parts: readonly Part[], units: UnitSystem, kind: "enu" | "abs
   }
   const value = { kind, e: entries[0] ?? EMPTY, n: entries[1] ?? EMPTY, u: entries[2] ?? EMPTY };
   return understood(value, echoTriple(value, units));
-}
-
-/** West 2-0 is east -2-0: an entry's text reads along its positive axis. */
-function negated(text: string): string {
-  return text.startsWith("-") ? text.slice(1).trim() : `-${text}`;
-}
-
-type Triple = Extract<Offset, { kind: "enu" | "absolute" }>;
-
-function echoTriple(value: Triple, units: UnitSystem): string {
-  const words = tripleLengths(value).flatMap((entry, slot) => {
-    if (entry.mm === 0 && value.kind === "enu") return [];
-    const axis = (entry.mm < 0 ? NEGATIVE : POSITIVE)[slot] ?? "E";
-    return [`${formatLength(Math.abs(entry.mm), units)} ${AXIS_NAMES[axis]}`];
-  });
-  const listed = words.length > 0 ? words.join(", ") : "same place";
-  return value.kind === "absolute" ? `at ${listed} of the datum` : listed;
-}
-
-function tripleLengths(value: Triple): readonly [Entry, Entry, Entry] {
-  return [value.e, value.n, value.u];
-}
-
-/** The text a Move cell shows for a stored offset: what was typed, put together again. */
-export function moveText(offset: Offset): string {
-  if (offset.kind === "polar") return `${offset.direction.text.toLowerCase()} ${offset.length.text}`.trim();
-  if (offset.kind === "absolute") {
-    const words = tripleLengths(offset).map((entry, slot) => axisText(entry, slot));
-    return `@ ${words.join(" ")}`;
-  }
-  return tripleLengths(offset)
-    .flatMap((entry, slot) => (entry.mm === 0 ? [] : [axisText(entry, slot)]))
-    .join(" ");
-}
-
-function axisText({ text, mm }: Entry, slot: number): string {
-  if (mm >= 0) return `${POSITIVE[slot] ?? "E"} ${text === "" ? "0" : text}`;
-  return `${NEGATIVE[slot] ?? "W"} ${text.startsWith("-") ? negated(text) : text}`;
-}
-
-/** The echo of a stored offset, in the line's units. */
-export function moveEcho(offset: Offset, units: UnitSystem): string {
-  if (offset.kind !== "polar") return moveText(offset) === "" ? "" : echoTriple(offset, units);
-  const direction = parseDirection(offset.direction.text);
-  const words = direction.ok ? direction.understood : offset.direction.text;
-  return `${formatLength(offset.length.mm, units)} ${words}`;
-}
-
-/** The direction a bare length on the next row continues in, or null when this offset has none. */
-export function straightOnOf(offset: Offset): StraightOn | null {
-  if (offset.kind === "polar") return offset.direction;
-  if (offset.kind === "absolute") return null;
-  const [e, n, u] = [offset.e.mm, offset.n.mm, offset.u.mm];
-  const length = Math.hypot(e, n, u);
-  if (length === 0) return null;
-  const single = [e, n, u].filter((value) => value !== 0).length === 1;
-  if (!single) return null;
-  const slot = [e, n, u].findIndex((value) => value !== 0);
-  const axis = (([e, n, u][slot] ?? 0) < 0 ? NEGATIVE : POSITIVE)[slot] ?? "E";
-  return { text: axis, e: e / length, n: n / length, u: u / length };
 }

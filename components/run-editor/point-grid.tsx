@@ -4,7 +4,7 @@ import { memo, useEffect, useMemo, useRef, type RefObject } from "react";
 import type { Problem, Run, RunDocument, Severity } from "@/iso";
 import { COLUMNS, nearSideAt, type Column } from "./cell-commit";
 import { pointPlace } from "./document-edits";
-import type { Draft, EditorState } from "./editor-state";
+import type { Draft, EditorState } from "./editor-types";
 import { COLUMN_LABEL } from "./grid-cell";
 import { itemEcho } from "./item-text";
 import { GRID_COLUMNS, PointRow } from "./point-row";
@@ -22,21 +22,20 @@ export function PointGrid({ state, problems }: PointGridProps) {
   const severities = useMemo(() => worstByPoint(problems), [problems]);
   const drafts = useMemo(() => draftsByRow(state.drafts), [state.drafts]);
   const { document } = state;
-  let before = 1;
+  const firstRows = useMemo(() => document.runs.map((_, index) => rowsBefore(document, index) + 1), [document]);
   return (
-    <div ref={box} role="grid" aria-label={`Points of line ${document.number}`} aria-rowcount={rowCount(document)} aria-colcount={COLUMNS.length + 1} className="min-w-0">
+    <div ref={box} role="grid" aria-label={`Points of line ${document.number}`} aria-rowcount={rowsBefore(document, document.runs.length)} aria-colcount={COLUMNS.length + 1} className="min-w-0">
       <GridHead />
-      {document.runs.map((run, index) => {
-        const first = before + 1;
-        before = first + run.points.length;
-        return <RunRows key={run.id} run={run} index={index} first={first} state={state} severities={severities} drafts={drafts} last={index === document.runs.length - 1} />;
-      })}
+      {document.runs.map((run, index) => (
+        <RunRows key={run.id} run={run} index={index} first={firstRows[index] ?? 2} state={state} severities={severities} drafts={drafts} last={index === document.runs.length - 1} />
+      ))}
     </div>
   );
 }
 
-function rowCount(document: RunDocument): number {
-  return document.runs.reduce((sum, run) => sum + run.points.length + 1, 1);
+/** Rows of the grid before a run, the head counted. */
+function rowsBefore(document: RunDocument, index: number): number {
+  return document.runs.slice(0, index).reduce((sum, run) => sum + run.points.length + 1, 1);
 }
 
 const GridHead = memo(function GridHead() {

@@ -4,7 +4,7 @@ import { memo } from "react";
 import type { Point, Severity, UnitSystem } from "@/iso";
 import { cellEcho, cellText, COLUMNS, type Column } from "./cell-commit";
 import { useEditor } from "./editor-context";
-import type { Draft, TypingEcho } from "./editor-state";
+import type { Draft, TypingEcho } from "./editor-types";
 import { GridCell } from "./grid-cell";
 
 export const GRID_COLUMNS = "sm:grid-cols-[2.75rem_minmax(9.5rem,1.7fr)_minmax(7.5rem,1.3fr)_minmax(4.75rem,0.7fr)_minmax(6rem,0.8fr)_minmax(4.5rem,0.9fr)]";

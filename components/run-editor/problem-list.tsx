@@ -3,7 +3,7 @@ import { memo } from "react";
 import type { Problem, RunDocument, Severity } from "@/iso";
 import type { CellTarget } from "./cell-commit";
 import { pointPlace } from "./document-edits";
-import type { Draft } from "./editor-state";
+import type { Draft } from "./editor-types";
 import { COLUMN_LABEL } from "./grid-cell";
 import { ProblemMark } from "./point-row";
 import { countText } from "@/components/ui/format";

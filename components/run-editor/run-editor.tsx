@@ -1,5 +1,5 @@
 "use client";
-import { useCallback, useEffect, useMemo, useState } from "react";
+import { useCallback, useEffect, useMemo, useRef, useState } from "react";
 import type { View } from "@/iso";
 import { Notice } from "@/components/ui/notice";
 import type { LineDetail, Viewer } from "@/lib/rules/api-types";
@@ -7,9 +7,9 @@ import type { CellTarget } from "./cell-commit";
 import { CloseDialog } from "./close-dialog";
 import { runOf } from "./document-edits";
 import { readDraft } from "./draft-store";
-import { EditorContext } from "./editor-context";
+import { EditorContext, type Send } from "./editor-context";
 import { EditorHead, type EditorPanel } from "./editor-head";
-import { waitingDrafts } from "./editor-state";
+import { waitingDrafts } from "./drafts";
 import { CutPanels, FindingPanels } from "./finding-panels";
 import { KeyHelp } from "./key-help";
 import { LineDrawing } from "./line-drawing";
@@ -46,7 +46,7 @@ export function RunEditor({ line, viewer, onUploads }: RunEditorProps) {
   const showPoint = useCallback((pointId: string) => send({ type: "show-point", pointId, focus: !isTouchScreen() }), [send]);
   const showCell = useCallback((target: CellTarget) => send({ type: "cursor", target, focus: true }), [send]);
   const setView = useCallback((view: View | null) => send({ type: "document-patch", patch: { view } }), [send]);
-  const waiting = useMemo(() => waitingDrafts(state), [state]);
+  const waiting = useMemo(() => waitingDrafts(document, state.drafts), [document, state.drafts]);
   useUndoKeys(send, line.editable);
   const close = (): void => setPanel(null);
   return (
@@ -118,15 +118,16 @@ export function RunEditor({ line, viewer, onUploads }: RunEditorProps) {
 }
 
 /** Brings back what this person typed here and the server never got, as one step that can be undone. */
-function useRestoredDraft(line: LineDetail, personId: string, send: ReturnType<typeof useEditorState>[1]): boolean {
-  const [restored, setRestored] = useState(false);
-  const [draft] = useState(() => (line.editable ? readDraft(line.id, personId) : null));
+function useRestoredDraft(line: LineDetail, personId: string, send: Send): boolean {
+  const [draft] = useState(() => {
+    const kept = line.editable ? readDraft(line.id, personId) : null;
+    return kept && JSON.stringify(kept.document) !== JSON.stringify(line.document) ? kept : null;
+  });
+  const done = useRef(false);
   useEffect(() => {
-    if (!draft || JSON.stringify(draft.document) === JSON.stringify(line.document)) return;
+    if (!draft || done.current) return;
+    done.current = true;
     send({ type: "replace", document: draft.document });
-    setRestored(true);
-    // Once, on opening: the line as it was loaded then.
-    // eslint-disable-next-line react-hooks/exhaustive-deps
-  }, []);
-  return restored;
+  }, [draft, send]);
+  return draft !== null;
 }

@@ -3,7 +3,8 @@ import { useCallback, useReducer } from "react";
 import type { RunDocument } from "@/iso";
 import type { Send } from "./editor-context";
 import { freshId } from "./editor-ids";
-import { editorReducer, initialState, type EditorAction, type EditorState, type Stamp } from "./editor-state";
+import { editorReducer, initialState } from "./editor-state";
+import type { EditorAction, EditorState, Stamp } from "./editor-types";
 
 /** Ids that come with an ordinary action; a paste brings one per line. */
 const IDS_PER_ACTION = 6;

@@ -1,5 +1,5 @@
 "use client";
-import { useDeferredValue, useEffect, useMemo, useRef, useState } from "react";
+import { startTransition, useDeferredValue, useEffect, useMemo, useRef, useState } from "react";
 import { buildModel, type Drawing, type MarksRegister, type Model, type RunDocument, type TakeOutWord, type View } from "@/iso";
 import { DrawingQueue } from "./drawing-queue";
 import type { DrawingRoom } from "./draw-line";
@@ -25,7 +25,7 @@ export function useLineDrawing(model: Model, room: DrawingRoom, view: View | nul
   const [shown, setShown] = useState<{ readonly drawing: Drawing | null; readonly model: Model } | null>(null);
   const queue = useRef<DrawingQueue | null>(null);
   useEffect(() => {
-    const made = new DrawingQueue((ask, answer) => setShown({ drawing: answer.drawing, model: ask.model }));
+    const made = new DrawingQueue((ask, answer) => startTransition(() => setShown({ drawing: answer.drawing, model: ask.model })));
     queue.current = made;
     return () => made.close();
   }, []);

@@ -1,7 +1,9 @@
 import { describe, expect, it } from "vitest";
 import type { RunDocument } from "@/iso";
 import { type CellTarget, type Column } from "@/components/run-editor/cell-commit";
-import { editorReducer, initialState, shownText, waitingDrafts, type EditorAction, type EditorState } from "@/components/run-editor/editor-state";
+import { shownText, waitingDrafts } from "@/components/run-editor/drafts";
+import { editorReducer, initialState } from "@/components/run-editor/editor-state";
+import type { EditorAction, EditorState } from "@/components/run-editor/editor-types";
 import { emptyDocument, testStamp } from "./fixtures";
 
 function start(document: RunDocument = emptyDocument()): EditorState {
@@ -40,10 +42,10 @@ describe("the editor's reducer", () => {
     const state = type(type(start(), "wn"), "e 3-1 1/3");
     expect(state.cursor).toEqual(at(1, "move"));
     expect(shownText(state, at(1, "move"))).toBe("e 3-1 1/3");
-    expect(waitingDrafts(state)[0]?.draft.message).toMatch(/1\/3/);
+    expect(waitingDrafts(state.document, state.drafts)[0]?.draft.message).toMatch(/1\/3/);
     expect(state.document.runs[0]?.points).toHaveLength(1);
     const mended = type(state, "e 3-1 1/2");
-    expect(waitingDrafts(mended)).toHaveLength(0);
+    expect(waitingDrafts(mended.document, mended.drafts)).toHaveLength(0);
     expect(mended.document.runs[0]?.points).toHaveLength(2);
   });
 
@@ -102,7 +104,7 @@ describe("the editor's reducer", () => {
     const before = twoLegs();
     const state = editorReducer(before, { type: "paste", target: at(3, "move"), text: "n 1-0\tgate\nsouthish\nu 2-0\tcap\tf\n", stamp: testStamp() });
     expect(state.document.runs[0]?.points.map((point) => point.item.kind)).toEqual(["flange", "none", "flange", "valve", "none", "cap"]);
-    expect(waitingDrafts(state)).toHaveLength(1);
+    expect(waitingDrafts(state.document, state.drafts)).toHaveLength(1);
     expect(editorReducer(state, { type: "undo" }).document).toBe(before.document);
   });
 

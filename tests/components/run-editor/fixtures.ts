@@ -2,7 +2,7 @@
 import type { LineSettings, RunDocument } from "@/iso";
 import { emptyMarks, INCH_MM } from "@/iso";
 import type { LineDetail } from "@/lib/rules/api-types";
-import type { Stamp } from "@/components/run-editor/editor-state";
+import type { Stamp } from "@/components/run-editor/editor-types";
 
 export const SETTINGS: LineSettings = {
   units: "imperial",

@@ -74,7 +74,14 @@ describe("typing a run by keyboard alone", () => {
     expect(keys.count).toBeLessThanOrEqual(MOST_KEYSTROKES);
     await waitFor(() => expect(cutLengths()).toEqual(["28 1/4 in", "19 3/4 in", "13 in", "25 5/8 in"]));
     expect(screen.getByText(`3'-1 1/2" east`)).toBeTruthy();
-    expect(document.querySelector("svg[role=img] [data-ref]")).not.toBeNull();
+    // The drawing comes after the cut lengths; pointing at a leg leads to its row.
+    const legs = () => [...document.querySelectorAll('svg[role=img] g[data-ref^="leg:"], svg[role=img] g[data-ref^="piece:"]')];
+    await waitFor(() => expect(legs().length).toBeGreaterThan(0), { timeout: 20_000 });
+    const leg = legs()[0];
+    if (!leg) throw new Error("No leg is drawn.");
+    fireEvent.click(leg);
+    expect(document.activeElement?.getAttribute("data-cell")).toBe("main|1|move");
+    expect(document.querySelector('[role=row][aria-selected=true]')?.getAttribute("aria-rowindex")).toBe("3");
   });
 
   it("keeps a wrong entry with its sentence and lets Ctrl+Z take back one entry at a time", async () => {

@@ -1,6 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { INCH_MM } from "@/iso";
-import { moveEcho, moveText, parseMove, straightOnOf } from "@/components/run-editor/move-entry";
+import { parseMove } from "@/components/run-editor/move-entry";
+import { moveEcho, moveText, straightOnOf } from "@/components/run-editor/move-text";
 import type { Offset } from "@/iso";
 
 function offsetOf(text: string, units: "imperial" | "metric" = "imperial"): Offset {
