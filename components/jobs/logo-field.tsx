@@ -1,5 +1,5 @@
 "use client";
-import { useEffect, useState } from "react";
+import { useEffect, useRef, useState } from "react";
 import type { TitleBlock } from "@/iso";
 import { Button } from "@/components/ui/button";
 import { apiSend, apiUpload, failureText } from "@/components/ui/fetcher";
@@ -19,10 +19,9 @@ export interface LogoFieldProps {
 
 /** The logo of the title block: shown as it is, chosen, previewed, then sent. */
 export function LogoField({ path, logo, editable, onChanged }: LogoFieldProps) {
-  const [file, setFile] = useState<File | null>(null);
+  const { file, preview, setFile } = useChosenFile();
   const [trouble, setTrouble] = useState<string | null>(null);
   const [busy, setBusy] = useState(false);
-  const preview = useObjectUrl(file);
   const shown = preview ?? (logo ? logoAddress(logo) : null);
   const run = async (work: () => Promise<unknown>) => {
     setBusy(true);
@@ -52,8 +51,8 @@ export function LogoField({ path, logo, editable, onChanged }: LogoFieldProps) {
         PNG, JPEG or SVG, at most {bytesText(LOGO_MAX_BYTES)}. It prints in the corner of the title block.
       </p>
       <div className="mb-3 flex h-28 w-full max-w-xs items-center justify-center border border-rule bg-white p-3">
-        {/* eslint-disable-next-line @next/next/no-img-element -- a few kilobytes from our own store or the reader's disk */}
         {shown ? (
+          // eslint-disable-next-line @next/next/no-img-element -- a few kilobytes from our own store or the reader's disk
           <img
             src={shown}
             alt={file ? "Preview of the chosen logo" : "Logo in use"}
@@ -96,16 +95,15 @@ export function LogoField({ path, logo, editable, onChanged }: LogoFieldProps) {
   );
 }
 
-function useObjectUrl(file: File | null): string | null {
-  const [url, setUrl] = useState<string | null>(null);
-  useEffect(() => {
-    if (!file) return;
-    const made = URL.createObjectURL(file);
-    setUrl(made);
-    return () => {
-      URL.revokeObjectURL(made);
-      setUrl(null);
-    };
-  }, [file]);
-  return url;
+/** A chosen file with an address to show it by, let go of when another is chosen or the page is left. */
+function useChosenFile() {
+  const [chosen, setChosen] = useState<{ readonly file: File; readonly url: string } | null>(null);
+  const held = useRef<string | null>(null);
+  const hold = (file: File | null) => {
+    if (held.current) URL.revokeObjectURL(held.current);
+    held.current = file ? URL.createObjectURL(file) : null;
+    setChosen(file && held.current ? { file, url: held.current } : null);
+  };
+  useEffect(() => () => void (held.current && URL.revokeObjectURL(held.current)), []);
+  return { file: chosen?.file ?? null, preview: chosen?.url ?? null, setFile: hold };
 }

@@ -1,37 +1,18 @@
 "use client";
 import { useMemo, useState } from "react";
-import {
-  catalogueKeys,
-  catalogueValue,
-  catalogueWords,
-  formatTerm,
-  parseLength,
-  type TakeOutWord,
-  type UnitSystem,
-} from "@/iso";
+import type { TakeOutWord, UnitSystem } from "@/iso";
 import { Button } from "@/components/ui/button";
 import { ChoiceRow } from "@/components/ui/choice-row";
-import { Dialog, DialogActions } from "@/components/ui/dialog";
 import { EmptyState } from "@/components/ui/empty-state";
-import { apiSend, failureText, refreshApi, useApi } from "@/components/ui/fetcher";
-import { TextField } from "@/components/ui/field";
+import { useApi } from "@/components/ui/fetcher";
 import { countText, dayText } from "@/components/ui/format";
 import { Loaded } from "@/components/ui/loaded";
-import { Notice, useToast } from "@/components/ui/notice";
 import { SearchField } from "@/components/ui/search-field";
 import { Section } from "@/components/ui/section";
 import { Table, type Column } from "@/components/ui/table";
 import type { ShopSettings } from "@/lib/rules/api-types";
-
-interface TakeOutRow {
-  readonly key: string;
-  readonly words: string;
-  /** In the shop's units. */
-  readonly value: string;
-  readonly source: string;
-  readonly fromMemory: boolean;
-  readonly word: TakeOutWord | null;
-}
+import { TakeOutDialog } from "./take-out-dialog";
+import { takeOutRows, type TakeOutRow } from "./take-out-rows";
 
 type Filter = "open" | "ours" | "all";
 const MOST_SHOWN = 60;
@@ -52,24 +33,6 @@ export function TakeOutView({ owner }: { readonly owner: boolean }) {
   );
 }
 
-function rowsOf(words: readonly TakeOutWord[], units: UnitSystem): readonly TakeOutRow[] {
-  return catalogueKeys().flatMap((key) => {
-    const value = catalogueValue(key, units, words);
-    if (!value) return [];
-    const word = words.findLast((one) => one.key === key) ?? null;
-    return [
-      {
-        key,
-        words: catalogueWords(key),
-        value: formatTerm(value.mm, units),
-        source: value.source,
-        fromMemory: value.fromMemory === "yes",
-        word,
-      },
-    ];
-  });
-}
-
 const FILTERS: Readonly<Record<Filter, (row: TakeOutRow) => boolean>> = {
   open: (row) => row.fromMemory && row.word === null,
   ours: (row) => row.word !== null,
@@ -85,7 +48,7 @@ function TakeOuts({
   readonly units: UnitSystem;
   readonly owner: boolean;
 }) {
-  const rows = useMemo(() => rowsOf(words, units), [words, units]);
+  const rows = useMemo(() => takeOutRows(words, units), [words, units]);
   const [filter, setFilter] = useState<Filter>("open");
   const [search, setSearch] = useState("");
   const [editing, setEditing] = useState<TakeOutRow | null>(null);
@@ -123,7 +86,7 @@ function TakeOuts({
           ? `The first ${MOST_SHOWN} of ${found.length} are shown; search to narrow.`
           : countText(found.length, "take-out")}
       </p>
-      <WordDialog row={editing} units={units} onClose={() => setEditing(null)} />
+      <TakeOutDialog row={editing} units={units} onClose={() => setEditing(null)} />
     </>
   );
 }
@@ -173,78 +136,4 @@ function columnsFor(
     });
   }
   return columns;
-}
-
-function WordDialog({
-  row,
-  units,
-  onClose,
-}: {
-  readonly row: TakeOutRow | null;
-  readonly units: UnitSystem;
-  readonly onClose: () => void;
-}) {
-  return (
-    <Dialog open={row !== null} onClose={onClose} title={row?.words ?? ""}>
-      {row ? <WordForm row={row} units={units} onDone={onClose} /> : null}
-    </Dialog>
-  );
-}
-
-function WordForm({
-  row,
-  units,
-  onDone,
-}: {
-  readonly row: TakeOutRow;
-  readonly units: UnitSystem;
-  readonly onDone: () => void;
-}) {
-  const say = useToast();
-  const [typed, setTyped] = useState("");
-  const [trouble, setTrouble] = useState<string | null>(null);
-  const parsed = typed.trim() === "" ? null : parseLength(typed, units);
-  const record = async (valueMm: number | null) => {
-    setTrouble(null);
-    try {
-      await apiSend("POST", "/api/shop/take-outs", { key: row.key, valueMm });
-      await refreshApi("/api/shop");
-      say(valueMm === null ? "Confirmed as tabulated." : "Recorded as measured.");
-      onDone();
-    } catch (failure) {
-      setTrouble(failureText(failure));
-    }
-  };
-  return (
-    <>
-      {trouble ? (
-        <Notice tone="trouble" className="mb-3">
-          {trouble}
-        </Notice>
-      ) : null}
-      <p>
-        The table says <strong className="figure">{row.value}</strong> {units === "metric" ? "mm" : "in"} (
-        {row.source}).
-      </p>
-      <TextField
-        className="mt-4"
-        label="What the shop measured"
-        hint="Leave empty to confirm the table's number."
-        figure
-        value={typed}
-        onChange={(event) => setTyped(event.target.value)}
-        error={parsed && !parsed.ok ? parsed.message : undefined}
-        caution={parsed?.ok ? `Understood: ${parsed.understood}` : undefined}
-      />
-      <DialogActions>
-        <Button
-          tone="primary"
-          disabled={parsed !== null && !parsed.ok}
-          onClick={() => void record(parsed?.ok ? parsed.mm : null)}
-        >
-          {parsed ? "Use what we measured" : "Confirm as tabulated"}
-        </Button>
-      </DialogActions>
-    </>
-  );
 }

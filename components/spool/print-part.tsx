@@ -2,6 +2,9 @@
 import { useEffect, useState, type ReactNode } from "react";
 import { createPortal } from "react-dom";
 
+/** Time for the browser to set the content before it is asked to print, ms. */
+const SETTLE_MS = 100;
+
 /** Content that exists for the printer only: while `printing` it is all that the page prints. */
 export function PrintPart({
   printing,
@@ -12,28 +15,27 @@ export function PrintPart({
   readonly onPrinted: () => void;
   readonly children: ReactNode;
 }) {
-  const [host, setHost] = useState<HTMLElement | null>(null);
+  const [host] = useState(makeHost);
   useEffect(() => {
-    if (!printing) return;
-    const made = document.createElement("div");
-    made.dataset.printPart = "";
-    document.body.append(made);
+    if (!printing || !host) return;
+    document.body.append(host);
     document.documentElement.dataset.printing = "part";
-    setHost(made);
-    return () => {
-      delete document.documentElement.dataset.printing;
-      made.remove();
-      setHost(null);
-    };
-  }, [printing]);
-  useEffect(() => {
-    if (!host) return;
     window.addEventListener("afterprint", onPrinted, { once: true });
-    const timer = setTimeout(() => window.print(), 100);
+    const timer = setTimeout(() => window.print(), SETTLE_MS);
     return () => {
       clearTimeout(timer);
       window.removeEventListener("afterprint", onPrinted);
+      delete document.documentElement.dataset.printing;
+      host.remove();
     };
-  }, [host, onPrinted]);
-  return host ? createPortal(children, host) : null;
+  }, [printing, host, onPrinted]);
+  return printing && host ? createPortal(children, host) : null;
+}
+
+/** null on the server, which prints nothing. */
+function makeHost(): HTMLElement | null {
+  if (typeof document === "undefined") return null;
+  const host = document.createElement("div");
+  host.dataset.printPart = "";
+  return host;
 }
