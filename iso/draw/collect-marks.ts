@@ -129,6 +129,17 @@ export function pieceMarks(placed: Placed, drawn: readonly DrawnEdge[], options:
   return { labels, shown };
 }
 
+/** The triangle of the latest revision at each point it touched. */
+export function revisionMarks(placed: Placed, options: DrawOptions): readonly Label[] {
+  const { changed } = options;
+  if (!changed) return [];
+  return changed.pointIds.flatMap((id) => {
+    const at = placed.paper.get(id);
+    const ref: Ref = { kind: "point", id };
+    return at ? [marksLabel([{ shape: "triangle", text: changed.code, ref }], { id: `revision ${id}`, anchors: [at], clear: 1.8, along: [] }, options.measure)] : [];
+  });
+}
+
 interface PieceSpan {
   readonly d: DrawnEdge;
   readonly from: number;

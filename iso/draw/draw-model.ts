@@ -2,7 +2,7 @@
 import type { PaperBox, PaperPoint } from "../geometry/types";
 import type { View } from "../run/document";
 import type { Model } from "../run/model-types";
-import { componentMarks, pieceMarks, weldMarks } from "./collect-marks";
+import { componentMarks, pieceMarks, revisionMarks, weldMarks } from "./collect-marks";
 import { dimensionPass, NO_DIMENSIONS, type DimensionInk } from "./dimensions";
 import { drawnEdges, drawnJoints, type DrawnEdge, type DrawnJoint } from "./drawn";
 import type { DisplayItem, Drawing, DrawOptions, Layer, Ref } from "./drawing-types";
@@ -34,6 +34,8 @@ import { weldPass } from "./weld-marks";
 const LAYERS: readonly Layer[] = ["hatch", "box", "dimension", "halo", "pipe", "symbol", "weld", "flow", "leader", "balloon", "dimension-text", "label", "north"];
 /** Tries to make everything fit by drawing the legs shorter. */
 const FIT_TRIES = 5;
+/** Times the labels are placed afresh because they stood out of the room. */
+const LABEL_TRIES = 3;
 /** A stretch under this is not worth another try: the legs stand at their least room. */
 const STRETCH_LEAST = 0.15;
 /** Paper kept beyond the pipe at the first try, and beyond dimensions for the labels, mm. */
@@ -47,7 +49,7 @@ const LABEL_MARGIN = 7;
 export function drawModel(model: Model, options: DrawOptions): Drawing {
   const sketch = sketchOf(model, options.spool);
   const plan = placePlan(sketch, options.measure);
-  const view: View = options.view ?? model.document.view ?? bestView(plan);
+  const view: View = options.view ?? model.document.view ?? bestView(options.spool === null ? plan : placePlan(sketchOf(model, null), options.measure));
   const projection = PROJECTIONS[view];
   let margin = FIRST_MARGIN;
   const fitted = (rows: ExtraRows): number => fitStretch(plan, projection, options.widthMm - 2 * margin, options.heightMm - 2 * margin, rows);
@@ -55,6 +57,7 @@ export function drawModel(model: Model, options: DrawOptions): Drawing {
   // Twice: room taken by moving pipes apart shortens the legs, which can bring others close.
   for (let pass = 0; pass < 2; pass++) rows = separateRows(plan, projection, fitted(rows), rows);
   let best: Drawing | null = null;
+  let labelled = 0;
   for (let attempt = 0; attempt < FIT_TRIES; attempt++) {
     const wished = fitted(rows);
     const stretch = wished < STRETCH_LEAST ? 0 : wished;
@@ -67,7 +70,8 @@ export function drawModel(model: Model, options: DrawOptions): Drawing {
     }
     const next = drawLabels(lines, options, view);
     if (!best || overrun(next) < overrun(best)) best = next;
-    if (stretch === 0 || overrun(next) <= 0) break;
+    labelled++;
+    if (stretch === 0 || labelled >= LABEL_TRIES || overrun(next) <= 0) break;
     margin += Math.max(3, overrun(next) / 2);
   }
   return best ?? drawLabels(drawLines(placeAll(plan, projection, 0, rows), options), options, view);
@@ -147,7 +151,7 @@ function drawLabels(lines: Lines, options: DrawOptions, view: View): Drawing {
   const labels: Label[] = [
     ...endLabels(placed, drawn, measure),
     ...offsets.notes.map((note) => blockLabel(note.lines.map((text, i) => ({ text, bold: i === 0 })), { id: `offset ${note.id}`, anchors: note.anchors, clear: 0.5, along: [] }, { kind: "leg", id: note.id }, measure)),
-    ...homelessLabels(lines.homeless, options), ...welds.labels, ...components.labels, ...pieces.labels,
+    ...homelessLabels(lines.homeless, options), ...revisionMarks(placed, options), ...welds.labels, ...components.labels, ...pieces.labels,
   ];
   const marks = placeLabels(labels, [...lines.fixed, north.box], { heavy: heavyMap, light: lightMap, room });
   const shown: Ref[] = [

@@ -13,7 +13,7 @@ import { boxesMeet, type TurnedBox } from "./plane";
 
 const SWEEPS = 3;
 /** More labels than this get one sweep and no ejection: such a line wants more than one sheet anyway. */
-const EJECTION_MOST = 160;
+const EJECTION_MOST = 110;
 /** A label on the innermost ring without a fault costs less and cannot get better. */
 const BEST_COST = 1.06;
 const SAME_COST = 1e-9;

@@ -2,10 +2,14 @@
 import type { PaperPoint } from "../geometry/types";
 import type { DisplayItem, Ink, MeasureText, PathSegment, Ref } from "./drawing-types";
 import type { Hub, Label } from "./label-candidates";
-import { centredText, circleSegments, hexagonSegments, lineItem, pathItem, stadiumSegments, textItem } from "./paths";
+import { centredText, circleSegments, hexagonSegments, lineItem, pathItem, polygonSegments, stadiumSegments, textItem } from "./paths";
 import * as size from "./sizes";
 
-export type MarkShape = "circle" | "hexagon" | "stadium" | "none";
+export type MarkShape = "circle" | "hexagon" | "stadium" | "triangle" | "none";
+
+/** Revision triangle. */
+const TRIANGLE_WIDTH = 8.4;
+const TRIANGLE_HEIGHT = 7;
 
 export interface Mark {
   readonly shape: MarkShape;
@@ -26,18 +30,24 @@ function markWidth(mark: Mark, measure: MeasureText): number {
     case "circle": return Math.max(size.BALLOON, text + 2.4);
     case "hexagon": return Math.max(size.HEXAGON, text + 3.4);
     case "stadium": return text + 4.2;
+    case "triangle": return Math.max(TRIANGLE_WIDTH, text + 5.5);
     case "none": return text + 1.2;
   }
 }
 
 function markHeight(mark: Mark): number {
   if (mark.shape === "none") return size.TEXT_CAP;
+  if (mark.shape === "triangle") return TRIANGLE_HEIGHT;
   if (mark.shape === "hexagon") return size.HEXAGON * Math.sin(Math.PI / 3);
   return mark.shape === "circle" ? size.BALLOON : size.PIECE_HEIGHT;
 }
 
 function markOutline(mark: Mark, centre: PaperPoint, width: number): readonly PathSegment[] {
   if (mark.shape === "stadium") return stadiumSegments(centre, width, size.PIECE_HEIGHT);
+  if (mark.shape === "triangle") {
+    const h = TRIANGLE_HEIGHT / 2;
+    return polygonSegments([[centre[0], centre[1] - h], [centre[0] + width / 2, centre[1] + h], [centre[0] - width / 2, centre[1] + h]]);
+  }
   if (mark.shape === "circle") return width > size.BALLOON ? stadiumSegments(centre, width, size.BALLOON) : circleSegments(centre, size.BALLOON / 2);
   return widened(hexagonSegments(centre, size.HEXAGON), centre, (width - size.HEXAGON) / 2);
 }
@@ -76,7 +86,7 @@ function markHubs(marks: readonly Mark[], widths: readonly number[], total: numb
   let x = -total / 2;
   marks.forEach((mark, i) => {
     const width = widths[i] ?? 0;
-    const radius = mark.shape === "stadium" ? size.PIECE_HEIGHT / 2 : mark.shape === "circle" ? size.BALLOON / 2 : size.HEXAGON / 2 - 0.25;
+    const radius = mark.shape === "stadium" ? size.PIECE_HEIGHT / 2 : mark.shape === "circle" ? size.BALLOON / 2 : mark.shape === "triangle" ? TRIANGLE_HEIGHT / 3 : size.HEXAGON / 2 - 0.25;
     if (mark.shape !== "none" && (i === 0 || i === marks.length - 1)) {
       if (i === 0) hubs.push({ offset: [x + radius, 0], radius });
       if (i > 0 || width > 2 * radius + 0.5) hubs.push({ offset: [x + width - radius, 0], radius });
@@ -87,7 +97,8 @@ function markHubs(marks: readonly Mark[], widths: readonly number[], total: numb
 }
 
 function markItems(mark: Mark, centre: PaperPoint, width: number, ink: Ink): readonly DisplayItem[] {
-  const text = centredText("balloon", mark.ref, centre, mark.text, { capMm: size.TEXT_CAP, ink: mark.shape === "none" ? "ink" : ink, face: mark.shape === "none" ? "bold" : "regular" });
+  const middle: PaperPoint = mark.shape === "triangle" ? [centre[0], centre[1] + 1.4] : centre;
+  const text = centredText("balloon", mark.ref, middle, mark.text, { capMm: size.TEXT_CAP, ink: mark.shape === "none" ? "ink" : ink, face: mark.shape === "none" ? "bold" : "regular" });
   if (mark.shape === "none") return [text];
   return [pathItem("balloon", mark.ref, markOutline(mark, centre, width), { stroke: ink, fill: "paper", widthMm: size.MARK_WIDTH }), text];
 }

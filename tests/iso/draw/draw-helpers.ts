@@ -57,10 +57,14 @@ export function overlappingLabels(items: readonly DisplayItem[]): string[] {
   }
   const found: string[] = [];
   boxes.forEach((a, i) => boxes.slice(i + 1).forEach((b) => {
-    if (a.group !== b.group) return;
+    if (a.group !== b.group || apart(a.corners, b.corners)) return;
     if (sharedArea(a.corners, b.corners) > 0.02) found.push(`${a.name} | ${b.name}`);
   }));
   return found;
+}
+
+function apart(a: readonly PaperPoint[], b: readonly PaperPoint[]): boolean {
+  return ([0, 1] as const).some((k) => Math.max(...a.map((p) => p[k])) < Math.min(...b.map((p) => p[k])) || Math.max(...b.map((p) => p[k])) < Math.min(...a.map((p) => p[k])));
 }
 
 function outline(points: readonly PaperPoint[]): readonly PaperPoint[] {

@@ -103,6 +103,25 @@ describe("drawModel", () => {
     expect(drawing.report.labels).toBeGreaterThanOrEqual(1);
   });
 
+  it("draws every spool of a line from the line's own side", () => {
+    const model = modelOf(sampleRuns.twoSpools!);
+    for (const spool of model.spools) expect(drawn(model, { spool: spool.letter }).view).toBe(proposeView(model));
+  });
+
+  it("marks the points of the latest revision with its triangle", () => {
+    const model = modelOf(sampleRuns.firstRun!);
+    const drawing = drawn(model, { changed: { code: "B", pointIds: [model.nodes[1]!.pointId] } });
+    expect(drawing.items.filter((item) => item.type === "text" && item.text === "B" && item.ref?.kind === "point")).toHaveLength(1);
+    expect(drawing.legend).toContain("revision");
+    expect(overlappingLabels(drawing.items)).toEqual([]);
+  });
+
+  it("marks numbers nobody has verified", () => {
+    const model = modelOf(sampleRuns.firstRun!);
+    const doubted = { ...model, legs: model.legs.map((leg, i) => (i === 0 ? { ...leg, unverified: true } : leg)) };
+    expect(drawn(doubted).items.some((item) => item.type === "text" && item.text.endsWith(" VIF"))).toBe(true);
+  });
+
   it("leaves out what is switched off", () => {
     const model = modelOf(sampleRuns.firstRun!);
     const bare = drawn(model, { show: { items: false, welds: false, pieces: false, dimensions: false } });
