@@ -4,8 +4,10 @@
  */
 import type { NextAuthOptions } from "next-auth";
 import Credentials from "next-auth/providers/credentials";
+import { NextRequest } from "next/server";
 import { emailSchema, signInSchema } from "@/lib/rules/forms";
-import { answerOfError, Refusal } from "./errors";
+import { bytesWithin } from "./body";
+import { answerOfError, refuseInvalid, Refusal } from "./errors";
 import { log } from "./log";
 import { isPassword } from "./passwords";
 import { addressOf, deviceOf } from "./request-facts";
@@ -61,17 +63,37 @@ export function authOptions(): NextAuthOptions {
   };
 }
 
+/** More than any form of next-auth's sends. */
+const FORM_MAX_BYTES = 16 * 1024;
+
 /**
- * The answer to a sign-in after too many tries (429 with a sentence and the time to wait), or null to go on. Asked
- * before next-auth, which would answer every refusal with 401. `url` is where its own client looks for the error.
+ * Answers a request to next-auth's routes. Its own handler answers every refusal with 401 and reads a body of any
+ * length, so what is too much or too often is answered here.
+ * @param handle next-auth's handler, given the request with its body read.
  */
-export async function signInLimited(request: Request): Promise<Response | null> {
-  if (request.method !== "POST" || !new URL(request.url).pathname.endsWith("/callback/credentials")) return null;
-  const form = new URLSearchParams(await request.clone().text().catch(() => ""));
-  const parsed = emailSchema.safeParse(form.get("email") ?? "");
+export async function answerAuth(request: NextRequest, handle: (request: NextRequest) => Promise<Response>): Promise<Response> {
+  try {
+    if (request.method !== "POST") return await handle(request);
+    const body = await bytesWithin(request, FORM_MAX_BYTES);
+    const { method, headers } = request;
+    const refused = await signInLimited(new URL(request.url), headers, new TextDecoder().decode(body));
+    return refused ?? (await handle(new NextRequest(request.url, { method, headers, body: body.slice().buffer })));
+  } catch (error) {
+    // next-auth reads JSON by itself and lets the parser's error through.
+    return answerOfError(error instanceof SyntaxError ? refuseInvalid("That is not readable JSON.") : error);
+  }
+}
+
+/**
+ * The answer to a sign-in after too many tries (429 with a sentence and the time to wait), or null to go on. `url` in
+ * it is where next-auth's client looks for the error.
+ */
+export async function signInLimited({ pathname }: URL, headers: Headers, body: string): Promise<Response | null> {
+  if (!pathname.endsWith("/callback/credentials")) return null;
+  const parsed = emailSchema.safeParse(new URLSearchParams(body).get("email") ?? "");
   if (!parsed.success) return null;
   try {
-    await assertTriesLeft(signInLimits(parsed.data, addressOf(request.headers)), new Date());
+    await assertTriesLeft(signInLimits(parsed.data, addressOf(headers)), new Date());
     return null;
   } catch (error) {
     const answer = answerOfError(error);

@@ -39,7 +39,7 @@ function parseJson(text: string): unknown {
 }
 
 /** Reads a body up to a limit; what lies beyond is not read. @throws Refusal 413. */
-async function bytesWithin(request: Request, maxBytes: number): Promise<Uint8Array> {
+export async function bytesWithin(request: Request, maxBytes: number): Promise<Uint8Array> {
   const said = Number(request.headers.get("content-length") ?? "0");
   if (said > maxBytes) throw tooLarge(maxBytes);
   if (request.body === null) return new Uint8Array();

@@ -84,12 +84,8 @@ describe("sign-up and sign-in", () => {
       await expect(signIn({ email, password: "wrong wrong wrong" }, from("192.0.2.3"))).rejects.toThrow(/do not go together/);
     }
     await expect(signIn({ email, password: PASSWORD }, from("192.0.2.3"))).rejects.toThrow(/Too many tries/);
-    const request = new Request(`${settings().BASE_URL}/api/auth/callback/credentials`, {
-      method: "POST",
-      headers: { "x-forwarded-for": "192.0.2.3", "content-type": "application/x-www-form-urlencoded" },
-      body: new URLSearchParams({ email, password: PASSWORD }),
-    });
-    const answer = await signInLimited(request);
+    const url = new URL(`${settings().BASE_URL}/api/auth/callback/credentials`);
+    const answer = await signInLimited(url, from("192.0.2.3"), new URLSearchParams({ email, password: PASSWORD }).toString());
     expect(answer?.status).toBe(429);
     expect(Number(answer?.headers.get("retry-after"))).toBeGreaterThan(800);
     expect((await answer?.json()).message).toMatch(/Wait 15 minutes/);

@@ -106,6 +106,19 @@ describe("the sign-in route", () => {
     expect(browser.jar.has(sessionCookieName())).toBe(false);
   });
 
+  test("what is no form of ours is refused in a sentence", async () => {
+    const post = (body: BodyInit, type: string) => {
+      const request = new NextRequest(`${settings().BASE_URL}/api/auth/callback/credentials`, { method: "POST", headers: { "content-type": type, origin: settings().BASE_URL }, body });
+      return inRequest(request, () => authRoute.POST(request, { params: Promise.resolve({ nextauth: ["callback", "credentials"] }) }));
+    };
+    const large = await post(`email=${"x".repeat(40_000)}`, "application/x-www-form-urlencoded");
+    expect(large.status).toBe(413);
+    expect(await large.json()).toMatchObject({ code: "too-large" });
+    const broken = await post("{", "application/json");
+    expect(broken.status).toBe(400);
+    expect(await broken.json()).toMatchObject({ code: "invalid", message: "That is not readable JSON." });
+  });
+
   test("it leads nowhere but to this site", async () => {
     const { redirect } = authOptions().callbacks!;
     const baseUrl = settings().BASE_URL;

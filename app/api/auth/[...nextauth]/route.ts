@@ -1,11 +1,13 @@
 import NextAuth from "next-auth";
-import { authOptions, signInLimited } from "@/lib/server/auth";
+import type { NextRequest } from "next/server";
+import { answerAuth, authOptions } from "@/lib/server/auth";
 import type { RouteContext } from "@/lib/server/write";
 
-/** Sign-in, sign-out and their tokens are next-auth's; too many tries are answered before it is asked. */
-async function handler(request: Request, context: RouteContext): Promise<Response> {
-  const refused = await signInLimited(request);
-  return refused ?? (NextAuth(authOptions()) as (request: Request, context: RouteContext) => Promise<Response>)(request, context);
+type Handler = (request: NextRequest, context: RouteContext) => Promise<Response>;
+
+/** Sign-in, sign-out and their tokens are next-auth's. */
+function handler(request: NextRequest, context: RouteContext): Promise<Response> {
+  return answerAuth(request, (read) => (NextAuth(authOptions()) as Handler)(read, context));
 }
 
 export { handler as GET, handler as POST };
