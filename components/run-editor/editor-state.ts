@@ -25,7 +25,7 @@ export function editorReducer(state: EditorState, action: EditorAction): EditorS
   switch (action.type) {
     case "commit": return commit(state, action);
     case "typing": return { ...state, ...typingOf(state, action) };
-    case "drop": return { ...state, drafts: without(state.drafts, draftKey(state.document, action.target)), preview: null, typing: null };
+    case "drop": return { ...state, drafts: without(state.drafts, draftKey(state.document, action.target)), preview: null, typing: null, focusTurn: state.focusTurn + 1 };
     case "cursor": return moveTo(state, action.target, action.focus);
     case "step": return stepped(state, action.step);
     case "show-point": {

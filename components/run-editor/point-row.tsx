@@ -41,7 +41,6 @@ export const PointRow = memo(function PointRow(props: PointRowProps) {
         "grid grid-cols-2 border-b border-hair max-sm:mb-2 max-sm:border max-sm:p-1",
         GRID_COLUMNS,
         cursor !== null && "bg-dye-tint max-sm:border-dye",
-        !point && cursor === null && "max-sm:opacity-80",
       )}
     >
       <RowNumber {...props} name={name} />

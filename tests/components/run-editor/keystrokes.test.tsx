@@ -98,6 +98,14 @@ describe("typing a run by keyboard alone", () => {
     keys.type("e 3-0");
     keys.press("Enter");
     expect(screen.getByText(`3'-0" east`)).toBeTruthy();
+    keys.press("ArrowUp");
+    keys.type("x");
+    keys.press("Enter");
+    keys.press("Escape");
+    keys.type("w 2-0");
+    keys.press("Enter");
+    expect(screen.getByText(`2'-0" west`)).toBeTruthy();
+    keys.press("z", { ctrlKey: true });
     keys.press("z", { ctrlKey: true });
     await waitFor(() => expect(screen.queryByText(`3'-0" east`)).toBeNull());
     keys.press("y", { ctrlKey: true });
