@@ -6,7 +6,7 @@
  * chord is 2·t·cos(θ/2). So t = C·cos(A/2)/cos(θ/2), which is C·cos 45°/cos(θ/2) for a 90. A trimmed elbow of bend
  * radius R has t = R·tan(θ/2) (geometry of a tangent arc).
  */
-import { SQUARE_RAD, WELD_MISMATCH_RAD } from "../geometry/tolerances";
+import { SQUARE_RAD, STRAIGHT_RAD, WELD_MISMATCH_RAD } from "../geometry/tolerances";
 import { vecNegate } from "../geometry/vec3";
 import { elbowKey, socketKey } from "../catalogue/keys";
 import { formatAngleDeg } from "../units/format";
@@ -58,9 +58,11 @@ function fitStandard(p: PlacedPoint, elbow: Exclude<ElbowName, "trimmed-lr" | "t
   const off = Math.abs(p.turnRad - own) > SQUARE_RAD;
   const cos = Math.max(Math.cos(p.turnRad / 2), MIN_COS);
   const factor = off ? Math.cos(own / 2) / cos : 1;
-  const label = off ? `${name} take-out at ${formatAngleDeg(p.turnRad)}` : `${name} take-out`;
   const mismatchRad = off ? Math.abs(p.turnRad - own) / 2 : 0;
-  if (off) reportMismatch(p, name, mismatchRad, ctx);
+  // Less than a weld shows is reckoned with and not talked about.
+  const isTold = mismatchRad >= STRAIGHT_RAD;
+  const label = isTold ? `${name} take-out at ${formatAngleDeg(p.turnRad)}` : `${name} take-out`;
+  if (isTold) reportMismatch(p, name, mismatchRad, ctx);
   const term = takeOutTerm(label, value, p.uid, factor);
   const side = socket ? socketSide : buttSide;
   const radius = socket ? null : ctx.bendRadius(elbow.startsWith("sr") ? "SR" : "LR", p.pipeIn.nps);

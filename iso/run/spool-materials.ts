@@ -5,7 +5,7 @@ import type { JointDraft } from "./build-types";
 import type { RatingClass, UnitSystem } from "./document";
 import type { Component, MaterialRow } from "./model-types";
 import type { PieceDraft } from "./piece-draft";
-import { sizePairText, sizeText } from "./words";
+import { scheduleText, sizePairText, sizeText } from "./words";
 
 type Row = Omit<MaterialRow, "item">;
 
@@ -35,13 +35,13 @@ export function spoolMaterials(parts: SpoolParts, units: UnitSystem): MaterialRo
 
 function pipeRow(p: PieceDraft, units: UnitSystem): Row {
   return {
-    quantity: Math.max(p.cutLengthMm, 0), unit: "mm", size: sizeText(p.nps, units), description: `Pipe, ${p.schedule}`, material: p.material,
+    quantity: Math.max(p.cutLengthMm, 0), unit: "mm", size: sizeText(p.nps, units), description: `Pipe, ${scheduleText(p.schedule)}`, material: p.material,
     weightKg: p.weightKg, source: p.weightSource, refs: [p.key],
   };
 }
 
 function partRow(c: Component, isLoose: boolean, units: UnitSystem): Row {
-  const schedule = c.schedule === null ? "" : `, ${c.schedule}`;
+  const schedule = c.schedule === null ? "" : `, ${scheduleText(c.schedule)}`;
   return {
     quantity: 1, unit: "ea", size: sizePairText(c.nps, c.nps2, units), description: `${c.description}${schedule}${isLoose ? ", field" : ""}`,
     material: c.material, weightKg: c.weightKg, source: c.source, refs: [c.id],

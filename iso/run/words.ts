@@ -17,6 +17,11 @@ export function sizePairText(large: Nps, small: Nps | null, units: UnitSystem): 
   return small === null || small === large ? sizeText(large, units) : `${sizeText(large, units)} x ${sizeText(small, units).replace(/^(NPS|DN) /, "")}`;
 }
 
+/** "STD", or "SCH 80" for a schedule that is a bare number. */
+export function scheduleText(schedule: string): string {
+  return /^\d/.test(schedule) ? `SCH ${schedule}` : schedule;
+}
+
 type FlangeName = Extract<Item, { kind: "flange" }>["flange"];
 type ValveName = Extract<Item, { kind: "valve" }>["valve"];
 

@@ -13,6 +13,7 @@ import { sheetFacts } from "./sheet-facts";
 import { sheetSizeMm } from "./sheet-size";
 import type { SheetInput, SheetPage } from "./sheet-types";
 import { flowTables } from "./table-flow";
+import { continuedItem } from "./table-placing";
 
 const PAD = 2;
 
@@ -38,7 +39,8 @@ export function composePages(input: SheetInput, model: Model, draw: DrawRoom, me
   const frame = firstFrame(facts, measure);
   const first = firstPage(facts, frame, draw, measure);
   const following = followingFrame(facts, measure);
-  const lists = flowTables(first.rest, inside(following.body), measure);
+  const { pages: lists, sheetOf } = flowTables(first.rest, inside(following.body), 2, measure);
+  const continued = first.continued.map(({ title, at }) => continuedItem(at, `on sheet ${sheetOf.get(title) ?? 2}`));
   const of = 1 + lists.length;
   const page = (content: readonly SheetPage["items"][number][], around: PageFrame, sheet: number): SheetPage => ({
     ...sheetSizeMm(input.size),
@@ -46,7 +48,7 @@ export function composePages(input: SheetInput, model: Model, draw: DrawRoom, me
     logoBox: around.logoBox,
     name: sheet === 1 ? "1 isometric" : `${sheet} lists`,
   });
-  return [page(first.items, frame, 1), ...lists.map((items, index) => page(items, following, index + 2))];
+  return [page([...first.items, ...continued], frame, 1), ...lists.map((items, index) => page(items, following, index + 2))];
 }
 
 function inside(body: PaperBox): PaperBox {

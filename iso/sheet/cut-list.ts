@@ -68,7 +68,7 @@ const isGap = (term: CutTerm): boolean => term.kind === "root-gap" || term.kind 
 
 /** A term's words without a number in front and without what the column's head says. */
 function termWords(term: CutTerm): string {
-  return term.label.replace(/^[\d\s/.'"-]+(?=[A-Za-z])/, "").replace(/ (take-out|trim)$/, "");
+  return term.label.replace(/^[\d\s/.'"-]+(?=[A-Za-z])/, "").replace(/ take-out(?=$| at )/, "");
 }
 
 /** Equal terms once, "2 × 1/8 root gap"; a value from memory that the shop has not confirmed carries an asterisk. */

@@ -22,6 +22,13 @@ export interface FirstPage {
   readonly items: readonly DisplayItem[];
   /** Tables, or the rows of them, that go on further pages. */
   readonly rest: readonly FlowTable[];
+  /** Where it stays to be said on which sheet a table goes on. */
+  readonly continued: readonly Continued[];
+}
+
+interface Continued {
+  readonly title: string;
+  readonly at: PaperPoint;
 }
 
 const PAD = 2;
@@ -37,7 +44,7 @@ export function firstPage(facts: SheetFacts, frame: PageFrame, draw: DrawRoom, m
   if (side === null) {
     const notes = notesTable(facts, frame.cut, (body.maxX - body.minX - 2 * PAD - TABLE_GAP) / 2, measure);
     const rest = [...restOf(facts, notes, new Map(), 0), { table: dataTable(facts), width: "half" as const, startRow: 0 }];
-    return { items: drawingItems(facts, body, draw, measure), rest };
+    return { items: drawingItems(facts, body, draw, measure), rest, continued: [] };
   }
   const notes = notesTable(facts, frame.cut, side.maxX - side.minX - 2 * PAD, measure);
   const beside = sideColumn(facts, notes, side, measure);
@@ -48,7 +55,8 @@ export function firstPage(facts: SheetFacts, frame: PageFrame, draw: DrawRoom, m
     lineFrom([side.minX, side.minY], [side.minX, side.maxY], EDGE_LINE, "frame"),
     ...beside.items,
   ];
-  return { items, rest: restOf(facts, notes, new Map([...beside.next, ...under.next]), beside.revisionsShown) };
+  const rest = restOf(facts, notes, new Map([...beside.next, ...under.next]), beside.revisionsShown);
+  return { items, rest, continued: [...beside.continued, ...under.continued] };
 }
 
 type NextRows = ReadonlyMap<string, number | null>;
@@ -70,6 +78,7 @@ function restOf(facts: SheetFacts, notes: Table | null, next: NextRows, revision
 interface Placed {
   readonly items: readonly DisplayItem[];
   readonly next: NextRows;
+  readonly continued: readonly Continued[];
 }
 
 /** The newest revisions at the foot of the side column: as many as a share of it holds, none when there are none. */
@@ -90,6 +99,7 @@ function sideColumn(facts: SheetFacts, notes: Table | null, column: PaperBox, me
   const room = { minX: column.minX + PAD, minY: column.minY + PAD, maxX: column.maxX - PAD, maxY: column.maxY - PAD };
   const items: DisplayItem[] = [];
   const next = new Map<string, number | null>();
+  const continued: Continued[] = [];
   const revisions = revisionBlock(facts, room, measure);
   items.push(...revisions.items);
   let y = room.minY;
@@ -98,9 +108,10 @@ function sideColumn(facts: SheetFacts, notes: Table | null, column: PaperBox, me
     const placed = placeInRoom(table, { ...room, minY: y, maxY: revisions.top }, measure);
     items.push(...placed.items);
     next.set(table.title, placed.nextRow);
+    if (placed.continuedAt) continued.push({ title: table.title, at: placed.continuedAt });
     y += placed.heightMm + (placed.heightMm > 0 ? TABLE_GAP : 0);
   }
-  return { items, next, revisionsShown: revisions.shown };
+  return { items, next, continued, revisionsShown: revisions.shown };
 }
 
 /** Cut list and trimmed elbows under the isometric, standing on the strip. */
@@ -108,22 +119,24 @@ function underDrawing(facts: SheetFacts, left: PaperBox, measure: MeasureText): 
   const most = (left.maxY - left.minY) * UNDER_SHARE;
   const widthMm = left.maxX - left.minX - 2 * PAD;
   const room = { minX: left.minX + PAD, maxX: left.minX + PAD + widthMm };
-  const items: DisplayItem[] = [];
   const next = new Map<string, number | null>();
   let used = 0;
-  const placedBoxes: { readonly items: readonly DisplayItem[]; readonly y: number }[] = [];
+  const open: Continued[] = [];
+  const placedItems: DisplayItem[] = [];
   for (const table of [cutListTable(facts), trimmedElbowsTable(facts)]) {
     if (table === null) continue;
     const placed = placeInRoom(table, { ...room, minY: used, maxY: most - PAD }, measure);
     next.set(table.title, placed.nextRow);
     if (placed.heightMm === 0) continue;
-    placedBoxes.push({ items: placed.items, y: used });
+    placedItems.push(...placed.items);
+    if (placed.continuedAt) open.push({ title: table.title, at: placed.continuedAt });
     used += placed.heightMm + TABLE_GAP;
   }
   const heightMm = Math.max(0, used - TABLE_GAP);
   const top = left.maxY - heightMm - (heightMm > 0 ? PAD : 0);
-  for (const placed of placedBoxes) items.push(...placed.items.map((item) => itemMoved(item, [0, top])));
-  return { items, next, top };
+  const items = placedItems.map((item) => itemMoved(item, [0, top]));
+  const continued = open.map(({ title, at }): Continued => ({ title, at: [at[0], at[1] + top] }));
+  return { items, next, continued, top };
 }
 
 /** The isometric in its room, its legend in a strip under it. */

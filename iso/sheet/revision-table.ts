@@ -16,9 +16,9 @@ export function revisionTable(input: SheetInput, most: number | null): Table | n
       { head: "REV", share: 0, minMm: 11, align: "middle" },
       { head: "DESCRIPTION", share: 3, minMm: 30 },
       { head: "DATE", share: 0, minMm: 21 },
-      { head: "BY", share: 1, minMm: 18 },
-      { head: "CHECKED", share: 1, minMm: 19 },
-      { head: "APPROVED", share: 1, minMm: 21 },
+      { head: "BY", share: 0.5, minMm: 24 },
+      { head: "CHECKED", share: 0.5, minMm: 24 },
+      { head: "APPROVED", share: 0.5, minMm: 24 },
     ],
     rows: shown.map((row) => ({
       cells: [[{ text: row.code, face: "bold" as const }], row.description, row.date, row.by, row.checked, row.approved],

@@ -1,5 +1,6 @@
 /** Tables of a spool besides the cut list: materials, welds, trimmed elbows. Cautions stand where the work is done. */
-import { formatAngleDeg, formatDecimal, formatInches, formatTerm } from "../units/format";
+import { STRAIGHT_RAD } from "../geometry/tolerances";
+import { formatAngleDeg, formatDecimal, formatLength, formatTerm } from "../units/format";
 import type { UnitSystem } from "../run/document";
 import type { Component, Joint, MaterialRow } from "../run/model-types";
 import { outsideDiameterMm, sizeText, type SheetFacts } from "./sheet-facts";
@@ -14,10 +15,10 @@ export function materialsTable(facts: SheetFacts): Table | null {
     lead: [],
     columns: [
       { head: "ITEM", share: 0, minMm: 11, align: "middle" },
-      { head: "QTY", share: 0, minMm: 23, align: "end" },
-      { head: "SIZE", share: 0.5, minMm: 19 },
+      { head: "QTY", share: 0, minMm: 22, align: "end" },
+      { head: "SIZE", share: 0.3, minMm: 18 },
       { head: "DESCRIPTION", share: 3, minMm: 40 },
-      { head: "MATERIAL", share: 1, minMm: 22 },
+      { head: "MATERIAL", share: 0.3, minMm: 31 },
     ],
     rows: rows.map((row) => ({
       cells: [[{ text: String(row.item), face: "bold" }], quantityText(row, facts.input.units), row.size, row.description, row.material],
@@ -28,7 +29,7 @@ export function materialsTable(facts: SheetFacts): Table | null {
 
 function quantityText(row: MaterialRow, units: UnitSystem): string {
   if (row.unit === "ea") return `${formatDecimal(row.quantity, 0)} ea`;
-  return units === "metric" ? `${formatDecimal(row.quantity, 0)} mm` : `${formatInches(row.quantity)} in`;
+  return units === "metric" ? `${formatDecimal(row.quantity, 0)} mm` : formatLength(row.quantity, units);
 }
 
 const JOINT_WORDS: Readonly<Record<Joint["kind"], string>> = {
@@ -62,7 +63,7 @@ export function weldsTable(facts: SheetFacts): Table | null {
 
 function weldRow(facts: SheetFacts, joint: Joint): Row {
   const place: Cell = joint.place === "shop" ? PLACE_WORDS.shop : [{ text: PLACE_WORDS[joint.place], face: "bold" }];
-  const type = joint.mismatchRad > 0 && formatAngleDeg(joint.mismatchRad) !== "0.00°" ? `${JOINT_WORDS[joint.kind]}, off ${formatAngleDeg(joint.mismatchRad)}` : JOINT_WORDS[joint.kind];
+  const type = joint.mismatchRad < STRAIGHT_RAD ? JOINT_WORDS[joint.kind] : `${JOINT_WORDS[joint.kind]}, off ${formatAngleDeg(joint.mismatchRad)}`;
   return { cells: [[{ text: joint.number ?? "", face: "bold" }], type, place, sizeText(joint.nps, null, facts.input.units), "", "", ""] };
 }
 

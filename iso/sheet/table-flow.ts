@@ -3,9 +3,9 @@
  * room left, both running on to further pages with their heads repeated.
  */
 import type { DisplayItem, MeasureText } from "../draw/drawing-types";
-import type { PaperBox } from "../geometry/types";
+import type { PaperBox, PaperPoint } from "../geometry/types";
 import { setTable, tableHeight, tableStartHeight, type Table } from "./table";
-import { placeTable } from "./table-placing";
+import { continuedItem, placeTable } from "./table-placing";
 
 export interface FlowTable {
   readonly table: Table;
@@ -21,12 +21,17 @@ interface Columns {
   readonly y: number[];
 }
 
-/**
- * Lays tables out on as many pages as they need.
- * @returns display items per page; no page when there is no table.
- */
-export function flowTables(tables: readonly FlowTable[], room: PaperBox, measure: MeasureText): DisplayItem[][] {
+export interface Flowed {
+  /** Display items per page; no page when there is no table. */
+  readonly pages: readonly (readonly DisplayItem[])[];
+  /** Sheet on which each table, by its title, begins or goes on. */
+  readonly sheetOf: ReadonlyMap<string, number>;
+}
+
+/** Lays tables out on as many pages as they need; the first of them is the sheet of the given number. */
+export function flowTables(tables: readonly FlowTable[], room: PaperBox, firstSheet: number, measure: MeasureText): Flowed {
   const pages: DisplayItem[][] = [];
+  const sheetOf = new Map<string, number>();
   let columns: Columns = { y: [room.maxY, room.maxY] };
   const newPage = () => {
     pages.push([]);
@@ -36,6 +41,7 @@ export function flowTables(tables: readonly FlowTable[], room: PaperBox, measure
     const widthMm = entry.width === "full" ? room.maxX - room.minX : (room.maxX - room.minX - TABLE_GAP) / 2;
     const set = setTable(entry.table, widthMm, measure);
     let row: number | null = entry.startRow;
+    let from: { readonly page: number; readonly at: PaperPoint } | null = null;
     while (row !== null) {
       if (pages.length === 0) newPage();
       if (entry.width === "full") columns.y.fill(Math.max(...columns.y));
@@ -47,14 +53,18 @@ export function flowTables(tables: readonly FlowTable[], room: PaperBox, measure
         continue;
       }
       const placed = placeTable(set, [room.minX + column * (widthMm + TABLE_GAP), y], room.maxY - y, row);
-      pages.at(-1)!.push(...placed.items);
+      const page = pages.length - 1;
+      pages[page]!.push(...placed.items);
+      if (!sheetOf.has(entry.table.title)) sheetOf.set(entry.table.title, firstSheet + page);
+      if (from) pages[from.page]!.push(continuedItem(from.at, from.page === page ? "in the next column" : `on sheet ${firstSheet + page}`));
+      from = placed.continuedAt && { page, at: placed.continuedAt };
       const next = y + placed.heightMm + TABLE_GAP;
       if (entry.width === "full") columns.y.fill(next);
       else columns.y[column] = next;
       row = placed.nextRow;
     }
   }
-  return pages;
+  return { pages, sheetOf };
 }
 
 /** The left column when the table fits there after what stands in it, else the one with more room. */
@@ -68,6 +78,7 @@ export interface StackedTable {
   readonly items: readonly DisplayItem[];
   readonly heightMm: number;
   readonly nextRow: number | null;
+  readonly continuedAt: PaperPoint | null;
 }
 
 /**
@@ -77,6 +88,6 @@ export interface StackedTable {
 export function placeInRoom(table: Table, room: PaperBox, measure: MeasureText): StackedTable {
   const set = setTable(table, room.maxX - room.minX, measure);
   const heightMm = room.maxY - room.minY;
-  if (tableStartHeight(set) > heightMm) return { items: [], heightMm: 0, nextRow: 0 };
+  if (tableStartHeight(set) > heightMm) return { items: [], heightMm: 0, nextRow: 0, continuedAt: null };
   return placeTable(set, [room.minX, room.minY], heightMm, 0);
 }

@@ -3,7 +3,7 @@ import type { DisplayItem } from "../draw/drawing-types";
 import type { PaperPoint } from "../geometry/types";
 import { boxOutline, lineFrom, textAt } from "./items";
 import { EDGE_LINE, HEAD_CAP, RULE_LINE } from "./sheet-size";
-import { blockHeight, CELL_PAD_X, CELL_PAD_Y, FEWEST_ROWS, TITLE_HEIGHT, type SetCell, type SetRow, type SetTable } from "./table";
+import { blockHeight, CELL_PAD_X, CELL_PAD_Y, CONTINUED_HEIGHT, FEWEST_ROWS, TITLE_HEIGHT, type SetCell, type SetRow, type SetTable } from "./table";
 import { baselineOf, linesHeight } from "./text-setting";
 
 export interface PlacedTable {
@@ -11,6 +11,13 @@ export interface PlacedTable {
   readonly heightMm: number;
   /** First row that did not fit; null when the table is finished. */
   readonly nextRow: number | null;
+  /** Top left of the line kept free for where it goes on; null when the table is finished. */
+  readonly continuedAt: PaperPoint | null;
+}
+
+/** The line under a part of a table that goes on elsewhere. */
+export function continuedItem([x, y]: PaperPoint, where: string): DisplayItem {
+  return textAt([x + CELL_PAD_X, y + CELL_PAD_Y + baselineOf(0)], `Continued ${where}`, { face: "bold" });
 }
 
 /**
@@ -30,13 +37,17 @@ export function placeTable(table: SetTable, at: PaperPoint, roomMm: number, star
     items.push(...placeLines(table.foot, [at[0], y], "caution"));
     y += blockHeight(table.foot.length);
   }
+  const continuedAt: PaperPoint | null = done ? null : [at[0], y];
+  if (!done) y += CONTINUED_HEIGHT;
   const box = { minX: at[0], minY: at[1], maxX: at[0] + table.widthMm, maxY: y };
-  return { items: [...items, boxOutline(box, { widthMm: EDGE_LINE })], heightMm: y - at[1], nextRow: done ? null : last };
+  return { items: [...items, boxOutline(box, { widthMm: EDGE_LINE })], heightMm: y - at[1], nextRow: done ? null : last, continuedAt };
 }
 
 /** One past the last row to place; never leaves one row alone for the next part. */
 function lastRowThatFits(table: SetTable, roomMm: number, startRow: number): number {
   let used = table.headHeightMm + blockHeight(table.foot.length);
+  if (used + table.rows.slice(startRow).reduce((sum, one) => sum + one.heightMm, 0) <= roomMm) return table.rows.length;
+  used += CONTINUED_HEIGHT;
   let row = startRow;
   while (row < table.rows.length && (row === startRow || used + table.rows[row]!.heightMm <= roomMm)) {
     used += table.rows[row]!.heightMm;

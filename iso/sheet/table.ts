@@ -129,8 +129,12 @@ export function tableHeight(table: SetTable): number {
 /** A part of a table with fewer rows than this is not worth its head. */
 export const FEWEST_ROWS = 3;
 
+/** Room for the line that says where a table goes on, mm. */
+export const CONTINUED_HEIGHT = blockHeight(1);
+
 /** Height of the head and the first few rows from startRow on: what must fit for a start to make sense. */
 export function tableStartHeight(table: SetTable, startRow = 0): number {
   const first = table.rows.slice(startRow, startRow + FEWEST_ROWS);
-  return table.headHeightMm + first.reduce((sum, row) => sum + row.heightMm, 0) + blockHeight(table.foot.length);
+  const more = startRow + FEWEST_ROWS < table.rows.length ? CONTINUED_HEIGHT : 0;
+  return table.headHeightMm + first.reduce((sum, row) => sum + row.heightMm, 0) + blockHeight(table.foot.length) + more;
 }
