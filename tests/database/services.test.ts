@@ -15,7 +15,7 @@ afterAll(async () => {
 });
 
 async function waitFor(done: () => boolean): Promise<void> {
-  const end = Date.now() + 15_000;
+  const end = Date.now() + 40_000;
   while (!done() && Date.now() < end) await new Promise((resolve) => setTimeout(resolve, 50));
 }
 
@@ -57,9 +57,16 @@ describe("object storage", () => {
   });
 });
 
+/** Other tests' jobs wait in the same queues, so these look only at their own mails. */
 describe("queue and mail", () => {
+  const mail = {
+    to: "fitter@services.example",
+    subject: "Sheet S-0001 – 3′ released",
+    text: "Line one.\n.\nÜber = 100 % of a line that is rather longer than seventy-six characters, to be sure.\n",
+  };
+  const arrived = () => outbox().filter(({ to }) => to.includes(mail.to));
+
   test("a job exists exactly when its transaction was committed, and its mail arrives as written", async () => {
-    const mail = { to: "fitter@shop.example", subject: "Sheet S-0001 – 3′ released", text: "Line one.\n.\nÜber = 100 % of a line that is rather longer than seventy-six characters, to be sure.\n" };
     await expect(
       inTransaction(async (transaction) => {
         await enqueue("mail", { ...mail, subject: "never" }, transaction);
@@ -68,19 +75,20 @@ describe("queue and mail", () => {
     ).rejects.toThrow("undone");
     await inTransaction((transaction) => enqueue("mail", mail, transaction));
     await workQueues({ mail: sendMail });
-    await waitFor(() => outbox().length > 0);
-    expect(outbox()).toHaveLength(1);
-    expect(outbox()[0]).toMatchObject({ to: [mail.to], subject: mail.subject });
-    expect(outbox()[0]?.text.trim()).toBe(mail.text.trim());
+    await waitFor(() => arrived().length > 0);
+    expect(arrived()).toHaveLength(1);
+    expect(arrived()[0]).toMatchObject({ to: [mail.to], subject: mail.subject });
+    expect(arrived()[0]?.text.trim()).toBe(mail.text.trim());
   });
 
   test("a job whose handler throws is tried again", async () => {
     await stopQueues();
     let tries = 0;
-    await inTransaction((transaction) => enqueue("mail", { to: "x@shop.example", subject: "again", text: "" }, transaction));
-    await getDb().query("UPDATE pgboss.job SET retry_delay = 0, retry_backoff = false WHERE state = 'created'");
+    const id = await inTransaction((transaction) => enqueue("mail", { ...mail, subject: "again" }, transaction));
+    await getDb().query("UPDATE pgboss.job SET retry_delay = 0, retry_backoff = false WHERE id = $1", { bind: [id] });
     await workQueues({
-      mail: async () => {
+      mail: async ({ subject }) => {
+        if (subject !== "again") return;
         tries += 1;
         if (tries === 1) throw new Error("first try fails");
       },
