@@ -23,7 +23,7 @@ export function CutTerms({
       {terms.map((term, n) => (
         <li key={n} className="grid grid-cols-[5.5rem_minmax(0,1fr)] gap-x-3">
           <span className="figure text-right whitespace-nowrap">{signedText(term, units, n === 0)}</span>
-          <span>
+          <span className="print:whitespace-nowrap">
             {term.label}
             {term.unconfirmed ? <strong className="text-caution"> *</strong> : null}
           </span>

@@ -65,7 +65,7 @@ function Answer({ result, status }: { readonly result: NonNullable<Result>; read
   }
   return (
     <Notice tone={status.current && match.kind === "fabrication" ? "done" : "caution"} word="Recognized">
-      {result.name} is {KIND_WORDS[match.kind]} of revision {status.code}, unaltered.{" "}
+      {result.name} is {KIND_WORDS[match.kind]} of revision {status.code} or a marked copy of it, unaltered.{" "}
       {status.current
         ? match.kind === "review"
           ? "Work from the signed one instead."

@@ -1,5 +1,9 @@
 /** What jsdom lacks of a browser: the modal dialog. And a fetch whose answers a test writes. */
+import { configure } from "@testing-library/react";
 import { vi } from "vitest";
+
+/** A busy machine may take seconds to answer a press; a failure still shows, only later. */
+configure({ asyncUtilTimeout: 15_000 });
 
 export function prepareDialogs(): void {
   HTMLDialogElement.prototype.showModal = function showModal() {
