@@ -9,7 +9,7 @@ import { marksLabel, type Mark } from "./mark-labels";
 import { ELBOW_KINDS } from "./pipe";
 import type { Placed } from "./place";
 import * as size from "./sizes";
-import { partFrames, type PartFrame } from "./symbols";
+import { partFrames, type PartFrame } from "./part-frames";
 import { groupBy, type Sketch } from "./sketch";
 import { isWeld } from "./weld-marks";
 

@@ -3,11 +3,11 @@
  * against pipe, symbols, thin lines and numbers already on paper. Every number finds a free place or goes to the label pass.
  */
 import type { PaperBox, PaperPoint } from "../geometry/types";
-import { straightChains, type Chain } from "./chains";
+import { chainCrowded, flangedPoints, leavingDirections, straightChains, type Chain } from "./chains";
 import { dimensionItems, dimensionSet, textBox, type DimensionSet, type DimensionText } from "./dimension-lines";
 import type { DrawnEdge } from "./drawn";
 import type { DisplayItem, MeasureText } from "./drawing-types";
-import type { InkMap } from "./ink-map";
+import { turnedInk, type InkMap } from "./ink-map";
 import type { LabelField } from "./label-field";
 import type { Placed } from "./place";
 import { boxReach, crossingOf, segmentInBox, type Segment, type TurnedBox } from "./plane";
@@ -86,7 +86,7 @@ function bestChoice(
   leaving: ReadonlyMap<string, readonly PaperPoint[]>, measure: MeasureText,
 ): Choice {
   const units = placed.sketch.model.document.settings.units;
-  const crowded = marksAlong(placed, chain) * MARK_PITCH > chain.edges.reduce((sum, { length }) => sum + length, 0);
+  const crowded = chainCrowded(placed, chain);
   let best: Choice | null = null;
   for (let level = 0; level < LEVELS; level++) {
     for (const axis of ([0, 1, 2] as const).filter((other) => other !== chain.axis)) {
@@ -103,16 +103,6 @@ function bestChoice(
     }
   }
   return best ?? { set: { lines: [], extensions: [], texts: [] }, places: [], boxes: [], cost: 0 };
-}
-
-/** Paper a mark takes along a pipe, mm, with both sides in use. */
-const MARK_PITCH = 8;
-
-function marksAlong(placed: Placed, chain: Chain): number {
-  const points = new Set(chain.edges.flatMap(({ edge }) => [edge.from, edge.to]));
-  const { sketch } = placed;
-  const parts = [...points].reduce((sum, id) => sum + (sketch.componentsAt.get(id)?.filter((c) => c.kind !== "gasket").length ?? 0), 0);
-  return parts + chain.edges.reduce((sum, { edge }) => sum + edge.pieces.length, 0) + sketch.joints.filter((joint) => points.has(joint.pointId) && joint.number !== null).length;
 }
 
 /** Prefers outward sides, and never a side on which a pipe leaves one of the chain's points. */
@@ -195,33 +185,4 @@ function boxCost(box: TurnedBox, text: DimensionText, set: DimensionSet, around:
   for (const line of set.extensions) if (segmentInBox(line.from, line.to, box) > 0) cost += 10;
   for (const line of set.lines) if (line.from !== text.from && segmentInBox(line.from, line.to, box) > 0) cost += 20;
   return cost;
-}
-
-/** Ink under a turned box, sampled along three lines of it. */
-export function turnedInk(map: InkMap, box: TurnedBox): number {
-  const c = Math.cos(box.angle);
-  const s = Math.sin(box.angle);
-  let ink = 0;
-  for (const across of [-1, -0.33, 0.33, 1]) {
-    const x = box.centre[0] - s * box.halfHeight * across;
-    const y = box.centre[1] + c * box.halfHeight * across;
-    ink += map.along([x - c * box.halfWidth, y - s * box.halfWidth], [x + c * box.halfWidth, y + s * box.halfWidth]);
-  }
-  return ink;
-}
-
-function flangedPoints(placed: Placed): ReadonlySet<string> {
-  const ids = new Set<string>();
-  for (const [pointId, components] of placed.sketch.componentsAt) if (components.some((component) => component.kind.startsWith("flange")) && !components.some((component) => component.kind === "valve")) ids.add(pointId);
-  return ids;
-}
-
-function leavingDirections(drawn: readonly DrawnEdge[]): ReadonlyMap<string, readonly PaperPoint[]> {
-  const directions = new Map<string, PaperPoint[]>();
-  const add = (id: string, d: PaperPoint): void => void directions.set(id, [...(directions.get(id) ?? []), d]);
-  for (const { edge, direction } of drawn) {
-    add(edge.from, direction);
-    add(edge.to, [-direction[0], -direction[1]]);
-  }
-  return directions;
 }

@@ -123,7 +123,7 @@ function drawLines(placed: Placed, options: DrawOptions): Lines {
   const fixed = [...texts.flatMap((text) => text.box ?? []), ...slopes.boxes, ...dimensions.boxes];
   return {
     placed, drawn, joints, offsets, dimensions, heavy, light, heavyMap, field, fixed,
-    items: [...inks.flatMap((ink) => ink.items), ...offsets.items, ...slopes.items, ...dimensions.items, ...texts.flatMap((text) => text.items), ...knockOuts(fixed, light)],
+    items: [...inks.flatMap((ink) => ink.items), ...offsets.items, ...slopes.items, ...dimensions.items, ...texts.flatMap((text) => text.items), ...knockOuts([...texts.flatMap((text) => text.box ?? []), ...dimensions.boxes], light)],
     homeless: [
       ...texts.filter((text) => text.box === null).map(({ text }) => ({ ref: text.ref, text: text.text, line: text.line })),
       ...dimensions.homeless.map((text) => ({ ref: text.ref, text: text.text, line: { from: text.from, to: text.to } })),
@@ -187,7 +187,7 @@ function finished(items: readonly DisplayItem[], room: PaperBox, options: DrawOp
   const moved = items.map((item) => itemMoved(item, by));
   return {
     view, widthMm: options.widthMm, heightMm: options.heightMm, items: moved, bounds: inkBounds(moved, options.measure),
-    legend: legendOf(placed.sketch, options), report, shown,
+    legend: legendOf(placed.sketch, options, items), report, shown,
   };
 }
 

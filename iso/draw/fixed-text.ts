@@ -1,8 +1,7 @@
 /** Text that belongs to a line: tried at a few places along it, else left to the label pass. */
 import type { PaperPoint } from "../geometry/types";
 import type { DisplayItem, MeasureText, Ref } from "./drawing-types";
-import type { InkMap } from "./ink-map";
-import { turnedInk } from "./dimensions";
+import { turnedInk, type InkMap } from "./ink-map";
 import type { LabelField } from "./label-field";
 import { centredBox, centredText } from "./paths";
 import { readingAngle, type Segment, type TurnedBox } from "./plane";

@@ -1,6 +1,6 @@
 /** A bitmap of what is inked, with summed areas: how much ink lies in a box or under a leader, in constant time. */
 import type { PaperBox, PaperPoint } from "../geometry/types";
-import { paperBoxAround, type Segment } from "./plane";
+import { paperBoxAround, type Segment, type TurnedBox } from "./plane";
 
 export interface InkMap {
   /** Inked cells inside an axis-parallel box. */
@@ -77,4 +77,17 @@ function lineCounter(bits: Uint8Array, columns: number, rows: number, originX: n
 
 export function boxInside(outer: PaperBox, minX: number, minY: number, maxX: number, maxY: number): number {
   return Math.max(0, outer.minX - minX) + Math.max(0, outer.minY - minY) + Math.max(0, maxX - outer.maxX) + Math.max(0, maxY - outer.maxY);
+}
+
+/** Ink under a turned box, sampled along three lines of it. */
+export function turnedInk(map: InkMap, box: TurnedBox): number {
+  const c = Math.cos(box.angle);
+  const s = Math.sin(box.angle);
+  let ink = 0;
+  for (const across of [-1, -0.33, 0.33, 1]) {
+    const x = box.centre[0] - s * box.halfHeight * across;
+    const y = box.centre[1] + c * box.halfHeight * across;
+    ink += map.along([x - c * box.halfWidth, y - s * box.halfWidth], [x + c * box.halfWidth, y + s * box.halfWidth]);
+  }
+  return ink;
 }

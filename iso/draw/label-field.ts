@@ -4,6 +4,8 @@ import { boxesMeet, boxReach, crossingOf, segmentInBox, type Segment, type Turne
 
 /** Clear paper kept between two labels, mm. */
 export const LABEL_MARGIN = 0.6;
+/** Clear paper kept between a leader and a label that is not its own, mm. */
+const LEADER_MARGIN = 0.5;
 const CELL = 14;
 /** Cells are numbered row by row; drawings stay far within this many columns either way. */
 const SPAN = 8192;
@@ -33,6 +35,8 @@ function heldOf(entry: FieldEntry): Held {
   const [p, q] = [leader?.from ?? [0, 0], leader?.to ?? [0, 0]];
   return { entry, minX: Math.min(p[0], q[0]), minY: Math.min(p[1], q[1]), maxX: Math.max(p[0], q[0]), maxY: Math.max(p[1], q[1]), query: 0 };
 }
+
+const widened = (box: TurnedBox): TurnedBox => ({ ...box, halfWidth: box.halfWidth + LEADER_MARGIN, halfHeight: box.halfHeight + LEADER_MARGIN });
 
 export class LabelField {
   private readonly cells = new Map<number, Held[]>();
@@ -110,8 +114,9 @@ export class LabelField {
   /** How many foreign leaders run through a box. */
   leadersIn(box: TurnedBox): number {
     let count = 0;
-    this.nearBox(box, 0, (entry) => {
-      if (entry.leader && segmentInBox(entry.leader.from, entry.leader.to, box) > 0) count++;
+    const roomy = widened(box);
+    this.nearBox(box, LEADER_MARGIN, (entry) => {
+      if (entry.leader && segmentInBox(entry.leader.from, entry.leader.to, roomy) > 0) count++;
       return false;
     });
     return count;
@@ -122,8 +127,10 @@ export class LabelField {
     const leader = { from, to };
     let labels = 0;
     let leaders = 0;
-    this.near(Math.min(from[0], to[0]), Math.min(from[1], to[1]), Math.max(from[0], to[0]), Math.max(from[1], to[1]), (entry) => {
-      if (entry.box && segmentInBox(from, to, entry.box) > 0) labels++;
+    const [minX, maxX] = [Math.min(from[0], to[0]) - LEADER_MARGIN, Math.max(from[0], to[0]) + LEADER_MARGIN];
+    const [minY, maxY] = [Math.min(from[1], to[1]) - LEADER_MARGIN, Math.max(from[1], to[1]) + LEADER_MARGIN];
+    this.near(minX, minY, maxX, maxY, (entry) => {
+      if (entry.box && segmentInBox(from, to, widened(entry.box)) > 0) labels++;
       if (entry.leader && crossingOf(entry.leader, leader)) leaders++;
       return false;
     });

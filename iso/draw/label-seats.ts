@@ -10,6 +10,8 @@ export interface Seat {
 
 /** Free places weighed before the best of them is taken: far past where the ring search still gains. */
 const FREE_TRIES = 48;
+/** A place whose leader or box meets another label counts for this much of one, so that a whole side full of them does not end the search. */
+const MET_TRY = 0.25;
 const COST_OF_LEADER_ON_LABEL = 45;
 const COST_OF_LEADER_CROSSING = 14;
 
@@ -38,9 +40,10 @@ export function seatFor(label: Label, candidates: readonly Candidate[], field: L
     const led = candidate.ring >= label.leaderFrom;
     let cost = candidate.base + (led ? leaderPrice(candidate, ink) : 0);
     if (cost >= bestCost) continue;
-    free++;
     const met = led ? field.onLeader(candidate.from, candidate.to) : { labels: 0, leaders: 0 };
-    cost += met.labels * COST_OF_LEADER_ON_LABEL + met.leaders * COST_OF_LEADER_CROSSING + field.leadersIn(box) * COST_OF_LEADER_ON_LABEL;
+    const onLabels = met.labels + field.leadersIn(box);
+    free += onLabels > 0 ? MET_TRY : 1;
+    cost += onLabels * COST_OF_LEADER_ON_LABEL + met.leaders * COST_OF_LEADER_CROSSING;
     if (cost < bestCost) [best, bestCost] = [candidate, cost];
   }
   return best ? { candidate: best, cost: bestCost, entries: entriesOf(label, best) } : null;

@@ -111,21 +111,24 @@ export interface BlockLine {
 /** Line pitch of a text block. */
 const PITCH = size.TEXT_CAP * 1.62;
 
-/** A leader meets a block beside its first or last line, or above or below it. */
-function blockHubs(halfWidth: number, halfHeight: number): readonly Hub[] {
+/** A leader meets a block beside its first or last line, or above or below it: always at words, never at the blank after a short line. */
+function blockHubs(firstWidth: number, lastWidth: number, halfWidth: number, halfHeight: number): readonly Hub[] {
+  const hub = (x: number, y: number): Hub => ({ offset: [x, y], radius: 0.9 });
   const side = halfHeight - size.TEXT_CAP / 2;
-  const across: Hub[] = [-1, 1].flatMap((sign) => [-1, 1].map((row): Hub => ({ offset: [sign * halfWidth, row * side], radius: 0.9 })));
-  const level: Hub[] = [-0.7, 0, 0.7].flatMap((k) => [-1, 1].map((sign): Hub => ({ offset: [k * halfWidth, sign * halfHeight], radius: 0.9 })));
-  return [...across.filter((hub, i) => side > 0 || i % 2 === 0), ...level];
+  const rows: readonly (readonly [number, number])[] = side > 0 ? [[firstWidth, -1], [lastWidth, 1]] : [[firstWidth, -1]];
+  const across = rows.flatMap(([width, row]) => [hub(-halfWidth, row * side), hub(width - halfWidth, row * side)]);
+  const level = ([[firstWidth, -1], [lastWidth, 1]] as const).flatMap(([width, row]) => [0.15, 0.5, 0.85].map((k) => hub(k * width - halfWidth, row * halfHeight)));
+  return [...across, ...level];
 }
 
 /** A block of text lines: end texts, offset notes, tags. */
 export function blockLabel(lines: readonly BlockLine[], place: MarkPlace, ref: Ref | null, measure: MeasureText): Label {
-  const width = Math.max(...lines.map((line) => measure(line.text, size.TEXT_CAP, line.bold ? "bold" : "regular")));
+  const widths = lines.map((line) => measure(line.text, size.TEXT_CAP, line.bold ? "bold" : "regular"));
+  const width = Math.max(...widths);
   const height = size.TEXT_CAP + (lines.length - 1) * PITCH;
   return {
     id: place.id, anchors: place.anchors, clear: place.clear, along: place.along, leaderFrom: 3.5,
-    hubs: blockHubs(width / 2, height / 2),
+    hubs: blockHubs(widths[0] ?? 0, widths.at(-1) ?? 0, width / 2, height / 2),
     halfWidth: width / 2, halfHeight: height / 2,
     draw: (centre, leader) => {
       const items: DisplayItem[] = [];

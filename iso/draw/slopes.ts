@@ -2,8 +2,7 @@
 import type { PaperPoint } from "../geometry/types";
 import type { DrawnEdge } from "./drawn";
 import type { DisplayItem, MeasureText, Ref } from "./drawing-types";
-import { turnedInk } from "./dimensions";
-import type { InkMap } from "./ink-map";
+import { turnedInk, type InkMap } from "./ink-map";
 import type { LabelField } from "./label-field";
 import { centredText, lineItem, pathItem, polygonSegments } from "./paths";
 import type { Placed } from "./place";

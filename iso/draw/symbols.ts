@@ -1,56 +1,18 @@
 /** Symbols of fittings, flanges, valves and supports: strokes and outlines square to the pipe; only flange strokes follow an axis. */
 import type { PaperPoint } from "../geometry/types";
 import type { Component } from "../run/model-types";
-import type { ArmPart } from "./arms";
+import { paperAddScaled } from "../geometry/paper";
 import type { DrawnEdge, PassInk } from "./drawn";
 import type { DisplayItem, Ink, Ref } from "./drawing-types";
-import { circleSegments, lineItem, pathItem, polygonSegments } from "./paths";
+import { lineItem, pathItem, polygonSegments } from "./paths";
 import type { Placed } from "./place";
-import { paperDirection, type Segment } from "./plane";
+import { partFrames, type PartFrame } from "./part-frames";
+import type { Segment } from "./plane";
 import { project, type Projection } from "./project";
 import * as size from "./sizes";
+import { valveCentre, valveHalf } from "./valve-symbol";
 
-/** One part of a symbol on one leg: its frame on paper. */
-export interface PartFrame {
-  readonly component: Component;
-  readonly drawn: DrawnEdge;
-  readonly ink: Ink;
-  readonly ref: Ref;
-  /** Point at a distance out from the working point and to the side. */
-  readonly at: (out: number, side: number) => PaperPoint;
-  readonly inner: number;
-  readonly outer: number;
-  /** Unit vector on paper a flange stroke lies along. */
-  readonly stroke: PaperPoint;
-}
-
-/** Flange strokes stand upright on level pipe and along the east axis on a riser; square to an off-axis leg. */
-function strokeDirection(projection: Projection, d: DrawnEdge): PaperPoint {
-  if (d.edge.kind === "offset") return [-d.direction[1], d.direction[0]];
-  return d.edge.real[2] !== 0 ? projection.axes[0] : projection.axes[2];
-}
-
-export function partFrames(placed: Placed, drawn: readonly DrawnEdge[]): readonly PartFrame[] {
-  const { spool } = placed.sketch;
-  return drawn.flatMap((d) =>
-    ([[d.edge.fromArm.parts, d.from, 1], [d.edge.toArm.parts, d.to, -1]] as const).flatMap(([parts, origin, sign]) =>
-      parts.map((part) => frameOf(placed.projection, d, part, origin, sign, spool)),
-    ),
-  );
-}
-
-function frameOf(projection: Projection, d: DrawnEdge, part: ArmPart, origin: PaperPoint, sign: 1 | -1, spool: string | null): PartFrame {
-  const [ux, uy] = [d.direction[0] * sign, d.direction[1] * sign];
-  return {
-    component: part.component, drawn: d, inner: part.inner, outer: part.outer,
-    ink: spool !== null && part.component.spool !== spool ? "grey" : "ink",
-    ref: { kind: "component", id: part.component.id },
-    at: (out, side) => [origin[0] + ux * out - uy * side, origin[1] + uy * out + ux * side],
-    stroke: strokeDirection(projection, d),
-  };
-}
-
-const plus = (a: PaperPoint, d: PaperPoint, k: number): PaperPoint => [a[0] + d[0] * k, a[1] + d[1] * k];
+const plus = paperAddScaled;
 
 /** Strokes of a flange: the face, and behind it the hub. */
 function flangeItems(f: PartFrame): DisplayItem[] {
@@ -65,17 +27,6 @@ function flangeItems(f: PartFrame): DisplayItem[] {
     case "flange-slip-on": return [face, stroke(f.inner + 1.5, size.FLANGE_STROKE_HALF - 0.5, 0.35)];
     default: return [face, stroke(f.inner + 1.5, size.HUB_STROKE_HALF, 0.35), stroke(f.inner + 2.4, size.HUB_STROKE_HALF, 0.35)];
   }
-}
-
-/** Half of a valve's body: a triangle whose point is the valve's centre and whose base lies with the flange strokes; drawn once per side. */
-function valveHalf(f: PartFrame): DisplayItem[] {
-  const h = size.VALVE_HALF_HEIGHT;
-  const centre = f.at(f.inner, 0);
-  const [low, high] = [plus(f.at(f.outer, 0), f.stroke, -h), plus(f.at(f.outer, 0), f.stroke, h)];
-  if (f.component.valve === "butterfly") {
-    return [lineItem("symbol", f.ref, low, high, size.SYMBOL_WIDTH, f.ink), lineItem("symbol", f.ref, centre, f.outer > 0 ? high : low, size.SYMBOL_WIDTH, f.ink)];
-  }
-  return [pathItem("symbol", f.ref, polygonSegments([centre, low, high]), { stroke: f.ink, fill: "paper", widthMm: size.SYMBOL_WIDTH })];
 }
 
 function reducerItems(f: PartFrame, projection: Projection): DisplayItem[] {
@@ -123,38 +74,6 @@ function partItems(f: PartFrame, projection: Projection): DisplayItem[] {
 function sleeve(f: PartFrame): DisplayItem {
   const h = 2.2;
   return pathItem("symbol", f.ref, polygonSegments([f.at(f.inner, -h), f.at(f.outer, -h), f.at(f.outer, h), f.at(f.inner, h)], false), { stroke: f.ink, fill: "paper", widthMm: size.SYMBOL_WIDTH });
-}
-
-/** What stands at a valve's centre: stem and wheel, the disc of a globe, the ball, the flap of a check. */
-function valveCentre(f: PartFrame, projection: Projection): DisplayItem[] {
-  const { component, ref, ink } = f;
-  const centre = f.at(0, 0);
-  const items: DisplayItem[] = [];
-  if (component.valve === "globe") items.push(pathItem("symbol", ref, circleSegments(centre, 1.3), { fill: ink }));
-  if (component.valve === "ball") items.push(pathItem("symbol", ref, circleSegments(centre, 1.7), { stroke: ink, fill: "paper", widthMm: size.SYMBOL_WIDTH }));
-  if (component.valve === "butterfly") items.push(pathItem("symbol", ref, circleSegments(centre, 0.9), { fill: ink }));
-  if (component.valve === "check") return [...items, ...checkFlap(f)];
-  const stem = paperDirection(project(projection, component.aside ?? [0, 0, 1]));
-  const top = plus(centre, stem, 6);
-  const base = component.valve === "globe" ? 1.3 : component.valve === "ball" ? 1.7 : 0;
-  const wheel = Math.abs(stem[0] * f.drawn.direction[1] - stem[1] * f.drawn.direction[0]) > 0.3 ? f.drawn.direction : ([-stem[1], stem[0]] as PaperPoint);
-  return [
-    ...items,
-    lineItem("symbol", ref, plus(centre, stem, base), top, 0.4, ink),
-    lineItem("symbol", ref, plus(top, wheel, -2.2), plus(top, wheel, 2.2), size.SYMBOL_WIDTH, ink),
-  ];
-}
-
-/** A small arrow beside a check valve: flow passes this way only. */
-function checkFlap(f: PartFrame): DisplayItem[] {
-  const { direction } = f.drawn;
-  const across: PaperPoint = direction[0] >= 0 ? [direction[1], -direction[0]] : [-direction[1], direction[0]];
-  const centre = plus(f.at(0, 0), across, size.VALVE_HALF_HEIGHT + 1.6);
-  const tip = plus(centre, direction, 4);
-  return [
-    lineItem("symbol", f.ref, plus(centre, direction, -4), tip, 0.35, f.ink),
-    pathItem("symbol", f.ref, polygonSegments([tip, plus(plus(tip, direction, -2.2), across, 0.8), plus(plus(tip, direction, -2.2), across, -0.8)], false), { stroke: f.ink, widthMm: 0.35 }),
-  ];
 }
 
 /** A shoe under a level pipe, beside a riser. */
