@@ -1,12 +1,12 @@
 "use client";
 import { useCallback, useEffect, useMemo, useRef, useState } from "react";
-import type { View } from "@/iso";
+import { parseRunDocument, type View } from "@/iso";
 import { Notice } from "@/components/ui/notice";
 import type { LineDetail, Viewer } from "@/lib/rules/api-types";
 import type { CellTarget } from "./cell-commit";
 import { CloseDialog } from "./close-dialog";
 import { runOf } from "./document-edits";
-import { readDraft } from "./draft-store";
+import { readDraft, type StoredDraft } from "./draft-store";
 import { EditorContext, type Send } from "./editor-context";
 import { EditorHead, type EditorPanel } from "./editor-head";
 import { waitingDrafts } from "./drafts";
@@ -33,13 +33,15 @@ export interface RunEditorProps {
 
 /** A line being typed: grid, isometric, findings, cut list; saves by itself. */
 export function RunEditor({ line, viewer, onUploads }: RunEditorProps) {
-  const [base] = useState(() => ({ document: line.document, version: line.version }));
+  const [draft] = useState(() => (line.editable ? unsentDraft(line, viewer.personId) : null));
+  // Work kept from before somebody else's save starts from the older version, so that the save tells of it.
+  const [base] = useState(() => ({ document: line.document, version: draft?.version ?? line.version }));
   const [state, send] = useEditorState(base.document, viewer.name);
   const [panel, setPanel] = useState<EditorPanel | null>(null);
   const [sheetShown, setSheetShown] = useState(false);
   const { document, cursor } = state;
   const save = useAutosave({ lineId: line.id, personId: viewer.personId, document, base, enabled: line.editable });
-  const restored = useRestoredDraft(line, viewer.personId, send);
+  useRestoredDraft(draft, send);
   const model = useLineModel(state.preview ?? document, line.marks, line.takeOuts);
   const point = runOf(document, cursor.runId)?.points[cursor.row] ?? null;
   const doors = useMemo(() => ({ send, openHelp: () => setPanel("help"), readOnly: !line.editable }), [send, line.editable]);
@@ -62,7 +64,7 @@ export function RunEditor({ line, viewer, onUploads }: RunEditorProps) {
         onPanel={setPanel}
       />
       {line.editable ? null : <Notice className="mb-3">You read this line; a detailer or the owner changes it.</Notice>}
-      {restored ? <Notice word="Restored" className="mb-3">Entries of yours that were not saved were kept in this browser and are back. Undo takes them out.</Notice> : null}
+      {draft ? <Notice word="Restored" className="mb-3">Entries of yours that were not saved were kept in this browser and are back. Undo takes them out.</Notice> : null}
       {save.state.kind === "conflict" ? (
         <ConflictBanner
           lineId={line.id}
@@ -117,17 +119,20 @@ export function RunEditor({ line, viewer, onUploads }: RunEditorProps) {
   );
 }
 
-/** Brings back what this person typed here and the server never got, as one step that can be undone. */
-function useRestoredDraft(line: LineDetail, personId: string, send: Send): boolean {
-  const [draft] = useState(() => {
-    const kept = line.editable ? readDraft(line.id, personId) : null;
-    return kept && JSON.stringify(kept.document) !== JSON.stringify(line.document) ? kept : null;
-  });
+/** What this person typed here and the server never got; null when it has it all. */
+function unsentDraft(line: LineDetail, personId: string): StoredDraft | null {
+  const draft = readDraft(line.id, personId);
+  const stored = parseRunDocument(line.document);
+  const same = draft !== null && JSON.stringify(draft.document) === JSON.stringify(stored.ok ? stored.document : line.document);
+  return same ? null : draft;
+}
+
+/** Brings a draft back as one step that can be undone. */
+function useRestoredDraft(draft: StoredDraft | null, send: Send): void {
   const done = useRef(false);
   useEffect(() => {
     if (!draft || done.current) return;
     done.current = true;
     send({ type: "replace", document: draft.document });
   }, [draft, send]);
-  return draft !== null;
 }

@@ -7,6 +7,7 @@
  */
 import { act, cleanup, fireEvent, render, screen, waitFor } from "@testing-library/react";
 import { afterEach, beforeEach, describe, expect, it, vi } from "vitest";
+import { writeDraft } from "@/components/run-editor/draft-store";
 import { RunEditor } from "@/components/run-editor/run-editor";
 import { lineDetail } from "./fixtures";
 
@@ -167,6 +168,15 @@ describe("typing a run by keyboard alone", () => {
     await act(async () => open());
     expect(screen.getByText(/were not saved were kept in this browser/)).toBeTruthy();
     expect(screen.getByDisplayValue("wn")).toBeTruthy();
+    vi.useRealTimers();
+  });
+
+  it("sends restored work with the version it started from, so that another's save is told and not overwritten", async () => {
+    vi.useFakeTimers();
+    writeDraft("line-1", "person-1", { document: { ...lineDetail().document, title: "Mine" }, version: 1, at: "2026-03-01T09:00:00Z" });
+    render(<RunEditor line={lineDetail({ version: 5 })} viewer={{ personId: "person-1", name: "R. Tanaka" }} onUploads={async () => undefined} />);
+    await act(async () => vi.advanceTimersByTimeAsync(900));
+    expect(JSON.parse(String(vi.mocked(fetch).mock.calls[0]?.[1]?.body))).toMatchObject({ version: 1, document: { title: "Mine" } });
     vi.useRealTimers();
   });
 
