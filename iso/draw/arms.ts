@@ -39,6 +39,9 @@ const AT_POINT_MM = 8;
 const SADDLE_ROOM = 1.6;
 const ON_RUN: ReadonlySet<ComponentKind> = new Set(["outlet", "half-coupling", "stub-in"]);
 
+/** Least real distance between two knots, so that they rise. */
+const REAL_STEP_MM = 0.001;
+
 interface Reach {
   readonly component: Component;
   readonly from: number;
@@ -92,7 +95,7 @@ export function armAlong(components: readonly Component[], origin: Vec3, outward
     paper += apart + ARM_ROOM[component.kind];
     if (onRun) knots.push({ real: from, paper: inner + SADDLE_ROOM });
     if (apart > 0) knots.push({ real: from, paper: inner + apart });
-    real = Math.max(real + 1e-3, to);
+    real = Math.max(real + REAL_STEP_MM, to);
     knots.push({ real, paper });
     parts.push({ component, inner: inner + apart, outer: paper });
   }

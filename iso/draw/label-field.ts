@@ -5,7 +5,7 @@ import { boxesMeet, boxReach, crossingOf, segmentInBox, type Segment, type Turne
 /** Clear paper kept between two labels, mm. */
 export const LABEL_MARGIN = 0.6;
 /** Clear paper kept between a leader and a label that is not its own, mm. */
-const LEADER_MARGIN = 0.5;
+const LEADER_MARGIN = 0.25;
 const CELL = 14;
 /** Cells are numbered row by row; drawings stay far within this many columns either way. */
 const SPAN = 8192;

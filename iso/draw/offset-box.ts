@@ -93,7 +93,7 @@ function walkCost(d: DrawnEdge, walk: readonly PaperPoint[], drawn: readonly Dra
 
 function nearness(edge: Segment, other: DrawnEdge): number {
   let cost = 0;
-  const length = Math.max(1e-6, Math.hypot(edge.to[0] - edge.from[0], edge.to[1] - edge.from[1]));
+  const length = Math.max(size.PAPER_EPS, Math.hypot(edge.to[0] - edge.from[0], edge.to[1] - edge.from[1]));
   const steps = Math.max(2, Math.round(length / 3));
   for (let i = 1; i <= steps; i++) {
     const p: PaperPoint = [edge.from[0] + ((edge.to[0] - edge.from[0]) * (i - 0.5)) / steps, edge.from[1] + ((edge.to[1] - edge.from[1]) * (i - 0.5)) / steps];

@@ -4,6 +4,7 @@
  */
 import type { PaperPoint, Vec3 } from "../geometry/types";
 import type { View } from "../run/document";
+import { PAPER_EPS } from "./sizes";
 
 const C = Math.cos(Math.PI / 6);
 const S = Math.sin(Math.PI / 6);
@@ -39,7 +40,7 @@ export function depthOf(projection: Projection, at: Vec3): number {
 export function axisAngle(projection: Projection, direction: PaperPoint): number {
   const length = Math.hypot(direction[0], direction[1]);
   let least = Math.PI / 2;
-  if (length < 1e-9) return 0;
+  if (length < PAPER_EPS) return 0;
   for (const axis of projection.axes) {
     const cross = Math.abs(axis[0] * direction[1] - axis[1] * direction[0]) / length;
     least = Math.min(least, Math.asin(Math.min(1, cross)));
