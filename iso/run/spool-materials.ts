@@ -44,8 +44,13 @@ function partRow(c: Component, isLoose: boolean, units: UnitSystem): Row {
   const schedule = c.schedule === null ? "" : `, ${scheduleText(c.schedule)}`;
   return {
     quantity: 1, unit: "ea", size: sizePairText(c.nps, c.nps2, units), description: `${c.description}${schedule}${isLoose ? ", field" : ""}`,
-    material: c.material, weightKg: c.weightKg, source: c.source, refs: [c.id],
+    material: partMaterial(c), weightKg: c.weightKg, source: c.source, refs: [c.id],
   };
+}
+
+/** Fittings and flanges are ordered in the grade that goes with the pipe, which is not the pipe's own: the list names the pipe they are for. */
+function partMaterial({ material }: Component): string {
+  return material === "" || material === "as specified" ? material : `for ${material}`;
 }
 
 /** Stud bolts of a bolted face by the flange table: the number, the size, the length for a joint of two flanges. */

@@ -16,9 +16,9 @@ export function materialsTable(facts: SheetFacts): Table | null {
     columns: [
       { head: "ITEM", share: 0, minMm: 11, align: "middle" },
       { head: "QTY", share: 0, minMm: 22, align: "end" },
-      { head: "SIZE", share: 0.3, minMm: 18 },
+      { head: "SIZE", share: 0.3, minMm: 17.5 },
       { head: "DESCRIPTION", share: 3, minMm: 40 },
-      { head: "MATERIAL", share: 0.3, minMm: 31 },
+      { head: "MATERIAL", share: 0.3, minMm: 36 },
     ],
     rows: rows.map((row) => ({
       cells: [[{ text: String(row.item), face: "bold" }], quantityText(row, facts.input.units), row.size, row.description, row.material],

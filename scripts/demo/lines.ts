@@ -32,7 +32,7 @@ export const coolingSupply = demoDocument('4"-CWS-1101', "Cooling water supply t
       { move: "E 3-1 1/2" },
       { move: "EU 2-4" },
       { move: "E 4-3" },
-      { move: "U 3-6", item: flange("continued", "CH-1 INLET") },
+      { move: "U 3-6", item: flange("nozzle", "N3, CH-1") },
     ],
   },
 ]);
@@ -169,8 +169,7 @@ export const rackLine = demoDocument('8"-CW-1109', "Rack crossing in two spools"
     rows: [
       { move: "@ 80-0, 40-0, 16-0", item: flange("continued", "8\"-CW-1100") },
       { move: "E 5-6" },
-      { move: "N 6-0" },
-      { move: "N 4-0", item: { kind: "joint" }, more: { places: { in: "field" } } },
+      { move: "N 10-0", item: { kind: "joint" }, more: { places: { in: "field" } } },
       { move: "N 5-2" },
       { move: "D 6-8" },
       { move: "E 3-9", item: flange("nozzle", "CT-1 OUTLET") },
