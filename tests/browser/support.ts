@@ -35,7 +35,7 @@ export async function visit(browser: Browser, viewport = DESK): Promise<Visit> {
   const trouble: string[] = [];
   page.on("pageerror", (error) => trouble.push(`script: ${error.message}`));
   page.on("console", (message) => {
-    if (message.type() === "error" && !/status of (401|403|404|409)/.test(message.text())) trouble.push(`console: ${message.text()}`);
+    if (message.type() === "error" && !/status of (400|401|403|404|409|410)/.test(message.text())) trouble.push(`console: ${message.text()}`);
   });
   page.on("response", (response) => {
     if (response.status() >= 500) trouble.push(`${response.status()} ${response.url()}`);
@@ -49,7 +49,7 @@ export async function signIn(page: Page, email: string, password: string): Promi
   await page.getByLabel("E-mail address").fill(email);
   await page.getByLabel("Password", { exact: true }).fill(password);
   await page.getByRole("button", { name: "Sign in", exact: true }).click();
-  await page.waitForURL((url) => !url.pathname.startsWith("/sign-in"));
+  await page.waitForURL((url) => url.pathname !== "/" && !url.pathname.startsWith("/sign-in"));
 }
 
 /** A visit signed in as the demo person of a role. */
