@@ -121,13 +121,17 @@ export function pieceMarks(placed: Placed, drawn: readonly DrawnEdge[], options:
     if (pieces) marks.push({ shape: "stadium", text: piece.mark, ref });
     if (items) for (const { item } of numbers.get(piece.key) ?? []) marks.push({ shape: "circle", text: String(item), ref });
     if (marks.length === 0) continue;
-    const anchors = spans.flatMap(({ d, from, to }, i) => (i === 0 ? [0.36, 0.64, 0.5] : [0.5]).map((t) => edgePoint(d, from + (to - from) * t)));
-    labels.push(marksLabel(marks, { id: `piece ${piece.key}`, anchors: anchors.slice(0, 4), clear: 0.5, along: spans.map(({ d }) => d.direction) }, options.measure));
+    const anchors = spans.flatMap(({ d, from, to }, i) => (i === 0 ? anchorsAlong(d) : [0.5]).map((t) => edgePoint(d, from + (to - from) * t)));
+    labels.push(marksLabel(marks, { id: `piece ${piece.key}`, anchors: anchors.slice(0, MOST_ANCHORS), clear: 0.5, along: spans.map(({ d }) => d.direction) }, options.measure));
     shown.push(ref);
     if (items) for (const { ref: material } of numbers.get(piece.key) ?? []) shown.push(material);
   }
   return { labels, shown };
 }
+
+/** Places of a piece mark on its first leg; on an off-axis leg the travel stands in the middle, so its ends are tried too. */
+const anchorsAlong = (d: DrawnEdge): readonly number[] => (d.edge.kind === "offset" ? [0.36, 0.64, 0.5, 0.84, 0.16] : [0.36, 0.64, 0.5]);
+const MOST_ANCHORS = 5;
 
 /** The triangle of the latest revision at each point it touched. */
 export function revisionMarks(placed: Placed, options: DrawOptions): readonly Label[] {

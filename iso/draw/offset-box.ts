@@ -130,7 +130,7 @@ function boxInk(placed: Placed, d: DrawnEdge, order: readonly (0 | 1 | 2)[], nam
     items.push(lineItem("box", ref, diagonal.from, diagonal.to, size.BOX_WIDTH, "ink", DASH_DOT));
   }
   texts.push({ ref: { kind: "dimension", id: edge.id }, text: travelText(edge, units), line: { from: d.from, to: d.to }, off: size.TEXT_CAP / 2 + 1.5, awayFrom: middle });
-  const onLeg = [0.5, 0.35, 0.65, 0.2, 0.8].map((t): PaperPoint => [d.from[0] + (d.to[0] - d.from[0]) * t, d.from[1] + (d.to[1] - d.from[1]) * t]);
+  const onLeg = [0.5, 0.35, 0.65].map((t): PaperPoint => [d.from[0] + (d.to[0] - d.from[0]) * t, d.from[1] + (d.to[1] - d.from[1]) * t]);
   const corner = triangle[1];
   const anchors = corner ? [...onLeg, corner] : onLeg;
   return { items, light, texts, notes: [{ id: edge.id, anchors, lines: [naming.title, ...angleLines(d, naming, units)] }] };
