@@ -16,6 +16,7 @@ import * as viewerRoute from "@/app/api/viewer/route";
 import * as viewerShop from "@/app/api/viewer/shop/route";
 import { verifyAudit } from "@/lib/server/audit";
 import { signIn, signInLimited } from "@/lib/server/auth";
+import { runCommand } from "@/lib/server/command";
 import { closeDb } from "@/lib/server/database";
 import { stopQueues, workQueues } from "@/lib/server/queue";
 import { queueHandlers } from "@/lib/jobs/handlers";
@@ -71,11 +72,10 @@ describe("sign-up and sign-in", () => {
   });
 
   test("a wrong password and an unknown address are refused in the same words", async () => {
-    const known = signIn({ email: shop.fitter.email, password: "not the password" }, from("192.0.2.2"));
-    const unknown = signIn({ email: "nobody@shop.example", password: "not the password" }, from("192.0.2.2"));
-    const words = await known.catch((error: Error) => error.message);
-    expect(words).toMatch(/do not go together/);
-    await expect(unknown).rejects.toThrow(words as string);
+    const words = (email: string) => signIn({ email, password: "not the password" }, from("192.0.2.2")).then(() => "in", (error: Error) => error.message);
+    const known = await words(shop.fitter.email);
+    expect(known).toMatch(/do not go together/);
+    expect(await words("nobody@shop.example")).toBe(known);
   });
 
   test("too many tries are answered 429 with the time to wait, even with the right password", async () => {
@@ -228,5 +228,16 @@ describe("roles and removal", () => {
 
   test("the log of all this is whole", async () => {
     expect(await verifyAudit(shop.shopId)).toBeNull();
+  });
+});
+
+describe("the queue", () => {
+  test("drains a backlog of mails without a pause between them", async () => {
+    const address = `${unique("many")}@shop.example`;
+    await runCommand(shop.owner, "unlogged", async (context) => {
+      for (let count = 0; count < 40; count += 1) context.mail({ to: address, subject: `Mail ${count}`, text: "One of many." });
+    });
+    for (let tries = 0; tries < 100 && mailsTo(address).length < 40; tries += 1) await new Promise((resolve) => setTimeout(resolve, 100));
+    expect(mailsTo(address)).toHaveLength(40);
   });
 });

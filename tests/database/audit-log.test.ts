@@ -5,16 +5,15 @@ import * as jobsRoute from "@/app/api/jobs/route";
 import * as shopRoute from "@/app/api/shop/route";
 import { auditHead, verifyAudit } from "@/lib/server/audit";
 import { runCommand } from "@/lib/server/command";
-import { closeDb } from "@/lib/server/database";
 import { Job, Shop } from "@/models";
 import { signed } from "./revision-support";
-import { call, newLine, newShop, tablePrints, unique, withClient, type TestShop } from "./support";
+import { call, endOfFile, newLine, newShop, tablePrints, type TestShop, unique, withClient } from "./support";
 
 let shop: TestShop;
 beforeAll(async () => {
   shop = await newShop();
 });
-afterAll(closeDb);
+afterAll(endOfFile);
 
 const INSERT_ONLY = ["audit_events", "revision_inputs", "revision_sheets", "sheet_copies", "sign_offs", "work_entries", "line_touches", "take_out_words"];
 

@@ -9,16 +9,15 @@ import * as signUp from "@/app/api/sign-up/route";
 import * as takeOuts from "@/app/api/shop/take-outs/route";
 import * as uploadRoute from "@/app/api/uploads/[uploadId]/route";
 import * as uploads from "@/app/api/lines/[lineId]/uploads/route";
-import { closeDb } from "@/lib/server/database";
 import { sha256Hex } from "@/lib/server/storage";
 import { jpegFile, pngFile, SVG, textBytes } from "./files";
-import { call, newLine, newShop, tablePrints, type Answer, type Call, type TestShop } from "./support";
+import { type Answer, call, type Call, endOfFile, newLine, newShop, tablePrints, type TestShop } from "./support";
 
 let shop: TestShop;
 beforeAll(async () => {
   shop = await newShop();
 });
-afterAll(closeDb);
+afterAll(endOfFile);
 
 function expectSentence(answer: Answer): void {
   expect(answer.json.message).toMatch(/^[A-Z].*[.]$/);

@@ -3,10 +3,9 @@
  * succeeds for its owner; the same request from another shop's owner answers 404 and leaves every table as it was.
  */
 import { afterAll, beforeAll, describe, expect, test } from "vitest";
-import { closeDb } from "@/lib/server/database";
 import { RECIPES } from "./isolation-recipes";
 import { everyRoute } from "./routes";
-import { call, newShop, tablePrints, withClient, type TestShop } from "./support";
+import { call, endOfFile, newShop, tablePrints, type TestShop, withClient } from "./support";
 
 /** Everything that belongs to one shop, for requests that may change the sender's own. */
 async function shopPrints(shopId: string): Promise<Record<string, string>> {
@@ -49,7 +48,7 @@ beforeAll(async () => {
   first = await newShop();
   other = await newShop();
 });
-afterAll(closeDb);
+afterAll(endOfFile);
 
 describe("shops are apart", () => {
   test("every route and method has a recipe, and every recipe a route", () => {

@@ -6,18 +6,17 @@ import * as lineCopy from "@/app/api/lines/[lineId]/copy/route";
 import * as lineRoute from "@/app/api/lines/[lineId]/route";
 import * as linesOfJob from "@/app/api/jobs/[jobId]/lines/route";
 import * as shopRoute from "@/app/api/shop/route";
-import { closeDb } from "@/lib/server/database";
 import { MAX_POINTS, type RunDocument } from "@/iso";
 import { Line, LineTouch, Spool } from "@/models";
 import { chainDocument, pointAt, sampleDocument } from "../factories";
 import { submitted } from "./revision-support";
-import { call, newLine, newShop, tablePrints, unique, type TestPerson, type TestShop } from "./support";
+import { call, endOfFile, newLine, newShop, tablePrints, type TestPerson, type TestShop, unique } from "./support";
 
 let shop: TestShop;
 beforeAll(async () => {
   shop = await newShop();
 });
-afterAll(closeDb);
+afterAll(endOfFile);
 
 const put = (as: TestPerson, lineId: string, body: unknown) => call(lineRoute.PUT, { as, method: "PUT", params: { lineId }, body });
 const get = (lineId: string) => call(lineRoute.GET, { as: shop.detailer, params: { lineId } });

@@ -16,10 +16,9 @@ import * as draft from "@/app/api/spools/[spoolId]/sheet/route";
 import * as submit from "@/app/api/spools/[spoolId]/submit/route";
 import * as status from "@/app/api/status/[token]/route";
 import { verifyAudit } from "@/lib/server/audit";
-import { closeDb } from "@/lib/server/database";
 import { sha256Hex } from "@/lib/server/storage";
 import { chainDocument, pointAt, sampleDocument } from "../factories";
-import { addMember, call, newLine, newShop, PASSWORD, unique, withClient, type TestLine, type TestPerson, type TestShop } from "./support";
+import { addMember, call, endOfFile, newLine, newShop, PASSWORD, type TestLine, type TestPerson, type TestShop, unique, withClient } from "./support";
 import { routeNamed } from "./routes";
 
 const work = { POST: await routeNamed("POST /spools/[spoolId]/work") };
@@ -28,7 +27,7 @@ let shop: TestShop;
 beforeAll(async () => {
   shop = await newShop();
 });
-afterAll(closeDb);
+afterAll(endOfFile);
 
 const submitAs = (as: TestPerson, spoolId: string, description = "Issued for review") =>
   call(submit.POST, { as, method: "POST", params: { spoolId }, body: { description, size: "tabloid" } });

@@ -27,12 +27,11 @@ import * as takeOuts from "@/app/api/shop/take-outs/route";
 import * as uploadRoute from "@/app/api/uploads/[uploadId]/route";
 import * as uploads from "@/app/api/lines/[lineId]/uploads/route";
 import type { Role } from "@/lib/rules/api-types";
-import { closeDb } from "@/lib/server/database";
 import { sampleDocument } from "../factories";
 import { pngFile } from "./files";
 import { routeNamed } from "./routes";
 import { marksOf, signBody, signed, submitted, type TestRevision } from "./revision-support";
-import { addMember, call, newLine, newShop, ROLES, unique, type Call, type TestLine, type TestShop } from "./support";
+import { addMember, call, type Call, endOfFile, newLine, newShop, ROLES, type TestLine, type TestShop, unique } from "./support";
 
 const work = { POST: await routeNamed("POST /spools/[spoolId]/work") };
 let shop: TestShop;
@@ -41,7 +40,7 @@ beforeAll(async () => {
   shop = await newShop();
   issued = await signed(shop);
 });
-afterAll(closeDb);
+afterAll(endOfFile);
 
 
 interface Row {
@@ -69,7 +68,7 @@ const ROWS: readonly Row[] = [
   { what: "remove a person", handler: personRoute.DELETE, method: "DELETE", may: "ynnn", make: async () => ({ params: { membershipId: (await addMember(shop.shopId, "fitter")).membershipId } }) },
   { what: "change settings, title block and stock", handler: shopRoute.PATCH, method: "PATCH", may: "ynnn", make: () => ({ body: { sheetSize: "letter", fields: [{ label: "Area", value: "1" }], stock: [] } }) },
   { what: "change the logo", handler: shopLogo.PUT, method: "PUT", may: "ynnn", make: () => ({ file: { name: "l.png", bytes: pngFile() } }) },
-  { what: "word on a take-out", handler: takeOuts.POST, method: "POST", may: "ynnn", make: () => ({ body: { key: "elbow:lr-90:4", valueMm: 153 } }) },
+  { what: "word on a take-out", handler: takeOuts.POST, method: "POST", may: "ynnn", make: () => ({ body: { key: "elbow:lr-90:10", valueMm: 382 } }) },
   { what: "read settings", handler: shopRoute.GET, method: "GET", may: "yyyy", make: () => ({}) },
   { what: "read people", handler: people.GET, method: "GET", may: "yyyy", make: () => ({}) },
   { what: "read the log", handler: auditRoute.GET, method: "GET", may: "yyyn", make: () => ({}) },

@@ -6,11 +6,10 @@ import { decode } from "next-auth/jwt";
 import { afterAll, beforeAll, describe, expect, test, vi } from "vitest";
 import * as authRoute from "@/app/api/auth/[...nextauth]/route";
 import * as viewerRoute from "@/app/api/viewer/route";
-import { closeDb } from "@/lib/server/database";
 import { forgetSettings, settings } from "@/lib/server/settings";
 import { sessionCookieName } from "@/lib/server/session";
 import { authOptions } from "@/lib/server/auth";
-import { call, newShop, PASSWORD, type TestShop } from "./support";
+import { call, endOfFile, newShop, PASSWORD, type TestShop } from "./support";
 
 /** Next's server puts this where its own modules look for it, before any of them is loaded. */
 await vi.hoisted(async () => {
@@ -22,7 +21,7 @@ let shop: TestShop;
 beforeAll(async () => {
   shop = await newShop();
 });
-afterAll(closeDb);
+afterAll(endOfFile);
 
 interface Browser {
   readonly jar: Map<string, string>;

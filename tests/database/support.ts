@@ -7,6 +7,7 @@ import { storeLine } from "@/lib/commands/add-line";
 import { addPerson, openShop } from "@/lib/commands/open-shop";
 import type { Role } from "@/lib/rules/api-types";
 import { runCommand, type Actor } from "@/lib/server/command";
+import { closeDb } from "@/lib/server/database";
 import { hashPassword } from "@/lib/server/passwords";
 import { sessionCookieName, startSession } from "@/lib/server/session";
 import { settings } from "@/lib/server/settings";
@@ -163,4 +164,10 @@ export async function tablePrints(): Promise<Record<string, string>> {
     }
     return prints;
   });
+}
+
+/** Drops the mails a file's tests queued, which the next file must not wait for, and closes the pool. */
+export async function endOfFile(): Promise<void> {
+  await withClient("app", (client) => client.query("DELETE FROM pgboss.job WHERE state = 'created'"));
+  await closeDb();
 }

@@ -4,15 +4,14 @@ import { elbowKey, INCH_MM } from "@/iso";
 import * as lineRoute from "@/app/api/lines/[lineId]/route";
 import * as sign from "@/app/api/revisions/[revisionId]/sign/route";
 import * as takeOuts from "@/app/api/shop/take-outs/route";
-import { closeDb } from "@/lib/server/database";
 import { signBody, submitted } from "./revision-support";
-import { call, newLine, newShop, type TestShop } from "./support";
+import { call, endOfFile, newLine, newShop, type TestShop } from "./support";
 
 let shop: TestShop;
 beforeAll(async () => {
   shop = await newShop();
 });
-afterAll(closeDb);
+afterAll(endOfFile);
 
 const word = (key: string, valueMm: number | null) => call(takeOuts.POST, { as: shop.owner, method: "POST", body: { key, valueMm } });
 const signAs = (who: "owner" | "inspector", revisionId: string) => call(sign.POST, { as: shop[who], method: "POST", params: { revisionId }, body: signBody });
