@@ -18,10 +18,11 @@ const SWEEPS = 40;
 /** Paper mm under which a sweep has settled. */
 const SETTLED = 0.01;
 
-/** Drops the rows that would close a cycle (contradictory order), keeping earlier ones first. */
-export function rowsWithoutCycles<T extends Row>(count: number, rows: readonly T[]): readonly T[] {
+/** Drops the rows that would close a cycle (contradictory order), keeping earlier ones first, and all that are `sure` to close none. */
+export function rowsWithoutCycles<T extends Row>(count: number, rows: readonly T[], sure: readonly T[] = []): readonly T[] {
   const next: number[][] = Array.from({ length: count }, () => []);
-  const kept: T[] = [];
+  const kept: T[] = [...sure];
+  for (const row of sure) next[row.a]?.push(row.b);
   for (const row of rows) {
     if (row.a === row.b || reaches(next, row.b, row.a)) continue;
     next[row.a]?.push(row.b);

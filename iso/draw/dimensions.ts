@@ -10,7 +10,7 @@ import type { DisplayItem, MeasureText } from "./drawing-types";
 import { turnedInk, type InkMap } from "./ink-map";
 import type { LabelField } from "./label-field";
 import type { Placed } from "./place";
-import { boxReach, crossingOf, segmentInBox, type Segment, type TurnedBox } from "./plane";
+import { crossingOf, EMPTY_BOX, paperBoxAround, segmentInBox, type Segment, type TurnedBox } from "./plane";
 import * as size from "./sizes";
 
 export interface DimensionInk {
@@ -29,6 +29,8 @@ interface Choice {
   readonly places: readonly (PaperPoint | null)[];
   readonly boxes: readonly TurnedBox[];
   readonly cost: number;
+  /** Round its lines and numbers. */
+  readonly reach: PaperBox;
 }
 
 export interface DimensionSurroundings {
@@ -97,12 +99,11 @@ function bestChoice(
         const base = (crowded && level === 0 ? 9 : level * 5) + sideCost(chain, across, around, leaving);
         if (best && base >= best.cost) continue;
         const set = dimensionSet(chain, across, size.DIMENSION_FIRST + level * size.DIMENSION_NEXT, flanged, units, measure);
-        const choice = seated(set, around, others, base + lineCost(set, around, others));
-        if (!best || choice.cost < best.cost) best = choice;
+        best = seated(set, around, others, base, best?.cost ?? Infinity) ?? best;
       }
     }
   }
-  return best ?? { set: { lines: [], extensions: [], texts: [] }, places: [], boxes: [], cost: 0 };
+  return best ?? { set: { lines: [], extensions: [], texts: [] }, places: [], boxes: [], cost: 0, reach: EMPTY_BOX };
 }
 
 /** Prefers outward sides, and never a side on which a pipe leaves one of the chain's points. */
@@ -117,11 +118,13 @@ function sideCost(chain: Chain, across: PaperPoint, around: DimensionSurrounding
   return cost + 6 - Math.max(-6, Math.min(6, (outward / reach) * 12));
 }
 
-function lineCost(set: DimensionSet, around: DimensionSurroundings, others: readonly Choice[]): number {
+/** @param limit nobody asks how much more than this it is */
+function lineCost(set: DimensionSet, around: DimensionSurroundings, others: readonly Choice[], limit: number): number {
   let cost = 0;
   for (const line of set.lines) cost += onPipe(around.heavy.along(line.from, line.to), 18) + around.light.along(line.from, line.to) * 0.6;
   for (const line of set.extensions) cost += onPipe(around.heavy.along(line.from, line.to), 7) + around.light.along(line.from, line.to) * 0.3;
   for (const other of others) {
+    if (cost >= limit) return cost;
     for (const line of set.lines) {
       for (const their of other.set.lines) if (crossingOf(line, their)) cost += 12;
       for (const their of other.set.extensions) if (crossingOf(line, their)) cost += 5;
@@ -140,43 +143,55 @@ function onPipe(cells: number, lump: number): number {
   return cells === 0 ? 0 : lump + cells * 2;
 }
 
-/** Finds each number the cheapest free place on its line. */
-function seated(set: DimensionSet, around: DimensionSurroundings, others: readonly Choice[], base: number): Choice {
+/** Box round a set of lines and the numbers beside them. */
+function reachOf(set: DimensionSet): PaperBox {
+  const widest = set.texts.reduce((most, text) => Math.max(most, text.width), 0) + 2 * size.DIMENSION_CAP;
+  const { minX, minY, maxX, maxY } = paperBoxAround([...set.lines, ...set.extensions].flatMap((line) => [line.from, line.to]));
+  return { minX: minX - widest, minY: minY - widest, maxX: maxX + widest, maxY: maxY + widest };
+}
+
+const boxesApart = (a: PaperBox, b: PaperBox): boolean => a.minX > b.maxX || b.minX > a.maxX || a.minY > b.maxY || b.minY > a.maxY;
+
+/** Prices a set with each number on the cheapest free place of its line; null when that is no cheaper than `limit`. */
+function seated(set: DimensionSet, around: DimensionSurroundings, all: readonly Choice[], base: number, limit: number): Choice | null {
+  const reach = reachOf(set);
+  const others = all.filter((other) => !boxesApart(other.reach, reach));
   const places: (PaperPoint | null)[] = [];
   const boxes: TurnedBox[] = [];
-  const mine: { id: string; box: TurnedBox; leader: null }[] = [];
-  let cost = base;
+  let cost = base + lineCost(set, around, others, limit - base);
   for (const text of set.texts) {
-    let best: PaperPoint | null = null;
-    let bestCost = Infinity;
-    text.places.forEach((at, i) => {
-      const box = textBox(text, at);
-      if (around.field.overlapping(box)) return;
-      const price = [0, 2, 2, 4, 9, 9, 11, 11][i] ?? 12;
-      if (price >= bestCost) return;
-      const total = price + boxCost(box, text, set, around, others);
-      if (total < bestCost) [best, bestCost] = [at, total];
-    });
-    places.push(best);
-    cost += best ? bestCost : 200;
-    if (!best) continue;
-    const box = textBox(text, best);
+    if (cost >= limit) break;
+    const { at, price } = cheapestPlace(text, set, around, others);
+    places.push(at);
+    cost += price;
+    if (!at) continue;
+    const box = textBox(text, at);
     boxes.push(box);
-    mine.push(entryOf(box));
     around.field.add(entryOf(box));
   }
-  for (const entry of mine) around.field.remove(entry);
-  return { set, places, boxes, cost };
+  for (const box of boxes) around.field.remove(entryOf(box));
+  return cost < limit ? { set, places, boxes, cost, reach } : null;
+}
+
+const PLACE_PRICES = [0, 2, 2, 4, 9, 9, 11, 11] as const;
+const PRICE_OF_HOMELESS = 200;
+
+function cheapestPlace(text: DimensionText, set: DimensionSet, around: DimensionSurroundings, others: readonly Choice[]): { readonly at: PaperPoint | null; readonly price: number } {
+  let best: PaperPoint | null = null;
+  let bestCost = Infinity;
+  text.places.forEach((at, i) => {
+    const price = PLACE_PRICES[i] ?? 12;
+    if (price >= bestCost) return;
+    const box = textBox(text, at);
+    if (around.field.overlapping(box)) return;
+    const total = price + boxCost(box, text, set, around, others);
+    if (total < bestCost) [best, bestCost] = [at, total];
+  });
+  return { at: best, price: best ? bestCost : PRICE_OF_HOMELESS };
 }
 
 function boxCost(box: TurnedBox, text: DimensionText, set: DimensionSet, around: DimensionSurroundings, others: readonly Choice[]): number {
-  const [w, h] = boxReach(box);
-  const [x, y] = box.centre;
-  let cost = 0;
-  const wide = around.heavy.inBox(x - w, y - h, x + w, y + h);
-  // The box around turned text is larger than the text: look along its own middle and edges before charging it.
-  if (wide > 0) cost += turnedInk(around.heavy, box) * 8;
-  cost += turnedInk(around.light, box) * 1.5;
+  let cost = turnedInk(around.heavy, box) * 8 + turnedInk(around.light, box) * 1.5;
   const wider = { ...box, halfHeight: box.halfHeight + 0.4 };
   for (const other of others) {
     for (const line of other.set.lines) if (segmentInBox(line.from, line.to, wider) > 0) cost += 25;

@@ -64,12 +64,18 @@ function boxCounter(sums: Uint32Array, columns: number, rows: number, originX: n
 
 function lineCounter(bits: Uint8Array, columns: number, rows: number, originX: number, originY: number, cell: number): InkMap["along"] {
   return (from, to) => {
-    const steps = Math.max(1, Math.ceil(Math.hypot(to[0] - from[0], to[1] - from[1]) / cell));
+    const wx = to[0] - from[0];
+    const wy = to[1] - from[1];
+    const steps = Math.max(1, Math.ceil(Math.sqrt(wx * wx + wy * wy) / cell));
+    const stepX = wx / (steps * cell);
+    const stepY = wy / (steps * cell);
+    let x = (from[0] - originX) / cell;
+    let y = (from[1] - originY) / cell;
     let count = 0;
     for (let i = 0; i <= steps; i++) {
-      const x = Math.floor((from[0] + ((to[0] - from[0]) * i) / steps - originX) / cell);
-      const y = Math.floor((from[1] + ((to[1] - from[1]) * i) / steps - originY) / cell);
-      if (x >= 0 && y >= 0 && x < columns && y < rows) count += bits[y * columns + x] ?? 0;
+      if (x >= 0 && y >= 0 && x < columns && y < rows) count += bits[(y | 0) * columns + (x | 0)] ?? 0;
+      x += stepX;
+      y += stepY;
     }
     return count;
   };
@@ -83,6 +89,9 @@ export function boxInside(outer: PaperBox, minX: number, minY: number, maxX: num
 export function turnedInk(map: InkMap, box: TurnedBox): number {
   const c = Math.cos(box.angle);
   const s = Math.sin(box.angle);
+  const w = Math.abs(c) * box.halfWidth + Math.abs(s) * box.halfHeight;
+  const h = Math.abs(s) * box.halfWidth + Math.abs(c) * box.halfHeight;
+  if (map.inBox(box.centre[0] - w, box.centre[1] - h, box.centre[0] + w, box.centre[1] + h) === 0) return 0;
   let ink = 0;
   for (const across of [-1, -0.33, 0.33, 1]) {
     const x = box.centre[0] - s * box.halfHeight * across;

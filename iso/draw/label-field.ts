@@ -36,8 +36,6 @@ function heldOf(entry: FieldEntry): Held {
   return { entry, minX: Math.min(p[0], q[0]), minY: Math.min(p[1], q[1]), maxX: Math.max(p[0], q[0]), maxY: Math.max(p[1], q[1]), query: 0 };
 }
 
-const widened = (box: TurnedBox): TurnedBox => ({ ...box, halfWidth: box.halfWidth + LEADER_MARGIN, halfHeight: box.halfHeight + LEADER_MARGIN });
-
 export class LabelField {
   private readonly cells = new Map<number, Held[]>();
   private readonly held = new Map<FieldEntry, Held>();
@@ -114,9 +112,8 @@ export class LabelField {
   /** How many foreign leaders run through a box. */
   leadersIn(box: TurnedBox): number {
     let count = 0;
-    const roomy = widened(box);
     this.nearBox(box, LEADER_MARGIN, (entry) => {
-      if (entry.leader && segmentInBox(entry.leader.from, entry.leader.to, roomy) > 0) count++;
+      if (entry.leader && segmentInBox(entry.leader.from, entry.leader.to, box, LEADER_MARGIN) > 0) count++;
       return false;
     });
     return count;
@@ -130,7 +127,7 @@ export class LabelField {
     const [minX, maxX] = [Math.min(from[0], to[0]) - LEADER_MARGIN, Math.max(from[0], to[0]) + LEADER_MARGIN];
     const [minY, maxY] = [Math.min(from[1], to[1]) - LEADER_MARGIN, Math.max(from[1], to[1]) + LEADER_MARGIN];
     this.near(minX, minY, maxX, maxY, (entry) => {
-      if (entry.box && segmentInBox(from, to, widened(entry.box)) > 0) labels++;
+      if (entry.box && segmentInBox(from, to, entry.box, LEADER_MARGIN) > 0) labels++;
       if (entry.leader && crossingOf(entry.leader, leader)) leaders++;
       return false;
     });

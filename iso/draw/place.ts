@@ -150,7 +150,7 @@ function solve(plan: PlacePlan, projection: Projection, wishes: readonly Wish[],
     const rows: Row[] = (plan.legs[axis] ?? []).map(({ edge, a, b }) => ({ a, b, least: wishOf.get(edge)?.least[axis] ?? 0, target: wishOf.get(edge)?.target[axis] ?? 1 }));
     const all = [...rows, ...(plan.order[axis] ?? [])];
     const more = extra[axis] ?? [];
-    return compactAxis(plan.clusters[axis].count, more.length === 0 ? all : rowsWithoutCycles(plan.clusters[axis].count, [...all, ...more]));
+    return compactAxis(plan.clusters[axis].count, more.length === 0 ? all : rowsWithoutCycles(plan.clusters[axis].count, more, all));
   });
   const at = new Map<string, Vec3>();
   const paper = new Map<string, PaperPoint>();

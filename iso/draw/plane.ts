@@ -22,8 +22,17 @@ export function paperDirection(a: PaperPoint): PaperPoint {
   return length < PAPER_EPS ? [1, 0] : [a[0] / length, a[1] / length];
 }
 
+/** True when the axis-parallel boxes round two segments are apart: most pairs on a sheet are, and need no more arithmetic. */
+export function segmentsApart(a: Segment, b: Segment, margin = 0): boolean {
+  const [p, q, r, s] = [a.from, a.to, b.from, b.to];
+  return (
+    Math.max(p[0], q[0]) + margin < Math.min(r[0], s[0]) || Math.max(r[0], s[0]) + margin < Math.min(p[0], q[0]) ||
+    Math.max(p[1], q[1]) + margin < Math.min(r[1], s[1]) || Math.max(r[1], s[1]) + margin < Math.min(p[1], q[1])
+  );
+}
+
 export function crossingOf(a: Segment, b: Segment): { readonly t: number; readonly s: number } | null {
-  return segmentCrossingOpen(a.from, a.to, b.from, b.to);
+  return segmentsApart(a, b) ? null : segmentCrossingOpen(a.from, a.to, b.from, b.to);
 }
 
 export function boxCorners(box: TurnedBox): readonly PaperPoint[] {
@@ -65,30 +74,40 @@ function apartAlong(a: TurnedBox, b: TurnedBox, dx: number, dy: number, turn: nu
   );
 }
 
-/** Length of the part of a segment inside a turned box; 0 when outside. */
-export function segmentInBox(from: PaperPoint, to: PaperPoint, box: TurnedBox): number {
-  const c = Math.cos(box.angle);
-  const s = Math.sin(box.angle);
+/** Length of the part of a segment inside a turned box, widened by a margin on every side; 0 when outside. */
+export function segmentInBox(from: PaperPoint, to: PaperPoint, box: TurnedBox, margin = 0): number {
   const ax = from[0] - box.centre[0];
   const ay = from[1] - box.centre[1];
   const wx = to[0] - from[0];
   const wy = to[1] - from[1];
+  const halfWidth = box.halfWidth + margin;
+  const halfHeight = box.halfHeight + margin;
+  const reach = halfWidth + halfHeight;
+  if ((ax > reach && ax + wx > reach) || (ax < -reach && ax + wx < -reach) || (ay > reach && ay + wy > reach) || (ay < -reach && ay + wy < -reach)) return 0;
+  const c = box.angle === 0 ? 1 : Math.cos(box.angle);
+  const s = box.angle === 0 ? 0 : Math.sin(box.angle);
+  return clippedLength(ax * c + ay * s, wx * c + wy * s, halfWidth, ay * c - ax * s, wy * c - wx * s, halfHeight);
+}
+
+/** Length of a segment inside a box about the origin; its start (x, y) and its way (wx, wy). */
+function clippedLength(x: number, wx: number, halfWidth: number, y: number, wy: number, halfHeight: number): number {
   let low = 0;
   let high = 1;
-  for (const [start, way, half] of [
-    [ax * c + ay * s, wx * c + wy * s, box.halfWidth],
-    [ay * c - ax * s, wy * c - wx * s, box.halfHeight],
-  ] as const) {
-    if (Math.abs(way) < PAPER_EPS) {
-      if (Math.abs(start) >= half) return 0;
-      continue;
-    }
-    const t0 = (-half - start) / way;
-    const t1 = (half - start) / way;
+  if (Math.abs(wx) < PAPER_EPS) {
+    if (Math.abs(x) >= halfWidth) return 0;
+  } else {
+    const [t0, t1] = [(-halfWidth - x) / wx, (halfWidth - x) / wx];
     low = Math.max(low, Math.min(t0, t1));
     high = Math.min(high, Math.max(t0, t1));
   }
-  return high <= low ? 0 : (high - low) * Math.hypot(wx, wy);
+  if (Math.abs(wy) < PAPER_EPS) {
+    if (Math.abs(y) >= halfHeight) return 0;
+  } else {
+    const [t0, t1] = [(-halfHeight - y) / wy, (halfHeight - y) / wy];
+    low = Math.max(low, Math.min(t0, t1));
+    high = Math.min(high, Math.max(t0, t1));
+  }
+  return high <= low ? 0 : (high - low) * Math.sqrt(wx * wx + wy * wy);
 }
 
 /** Distance from the origin of a ray along a unit direction to the edge of an axis-parallel box centred on it. */
