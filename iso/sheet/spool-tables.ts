@@ -16,9 +16,9 @@ export function materialsTable(facts: SheetFacts): Table | null {
     columns: [
       { head: "ITEM", share: 0, minMm: 11, align: "middle" },
       { head: "QTY", share: 0, minMm: 22, align: "end" },
-      { head: "SIZE", share: 0.3, minMm: 17.5 },
-      { head: "DESCRIPTION", share: 3, minMm: 40 },
-      { head: "MATERIAL", share: 0.3, minMm: 36 },
+      { head: "SIZE", share: 0, minMm: roomFor(rows.map((row) => row.size), 15, 26) },
+      { head: "DESCRIPTION", share: 1, minMm: 40 },
+      { head: "MATERIAL", share: 0, minMm: roomFor(rows.map((row) => row.material), 22, 36) },
     ],
     rows: rows.map((row) => ({
       cells: [[{ text: String(row.item), face: "bold" }], quantityText(row, facts.input.units), row.size, row.description, row.material],
@@ -26,6 +26,14 @@ export function materialsTable(facts: SheetFacts): Table | null {
     foot: ["Confirm heat number or PMI of every part: look-alike elbows get swapped."],
   };
 }
+
+/** About what the longest of some texts takes on one line, within bounds, mm; a longer one wraps. */
+function roomFor(texts: readonly string[], leastMm: number, mostMm: number): number {
+  return Math.min(mostMm, Math.max(leastMm, Math.max(...texts.map((text) => text.length)) * MM_PER_CHARACTER + 2.4));
+}
+
+/** Mean advance of Roboto at TEXT_CAP in sizes and grades, rounded up, mm. */
+const MM_PER_CHARACTER = 1.75;
 
 function quantityText(row: MaterialRow, units: UnitSystem): string {
   if (row.unit === "ea") return `${formatDecimal(row.quantity, 0)} ea`;

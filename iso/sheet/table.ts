@@ -5,7 +5,7 @@ import { fitText, linesHeight, wrapText } from "./text-setting";
 
 export interface Column {
   readonly head: string;
-  /** Share of the table's width; every column also gets at least minMm. */
+  /** Share of the width left over; every column also gets at least minMm. Columns with a share give way first when all is too wide. */
   readonly share: number;
   readonly minMm: number;
   readonly align?: "start" | "middle" | "end";
@@ -94,14 +94,20 @@ export function setTable(table: Table, widthMm: number, measure: MeasureText): S
   return { title: table.title, widthMm, columns: table.columns, edges, lead, heads, headHeightMm, rows, foot };
 }
 
+/** Columns with a share shrink to no less than this part of their least width before the others shrink too. */
+const MOST_SQUEEZE = 0.6;
+
 function columnEdges(columns: readonly Column[], widthMm: number): number[] {
-  const least = columns.reduce((sum, column) => sum + column.minMm, 0);
+  const sumOf = (some: readonly Column[]) => some.reduce((sum, column) => sum + column.minMm, 0);
+  const least = sumOf(columns);
   const shares = columns.reduce((sum, column) => sum + column.share, 0);
   const spare = Math.max(0, widthMm - least);
-  const squeeze = least > widthMm ? widthMm / least : 1;
+  const yielding = sumOf(columns.filter((column) => column.share > 0));
+  const part = least > widthMm ? 1 - (least - widthMm) / yielding : 1;
+  const squeeze = (column: Column) => (part < MOST_SQUEEZE ? widthMm / least : column.share > 0 ? part : 1);
   const edges = [0];
   for (const column of columns) {
-    edges.push(edges.at(-1)! + column.minMm * squeeze + (shares > 0 ? (spare * column.share) / shares : spare / columns.length));
+    edges.push(edges.at(-1)! + column.minMm * squeeze(column) + (shares > 0 ? (spare * column.share) / shares : spare / columns.length));
   }
   return edges;
 }
