@@ -50,7 +50,7 @@ export async function measure(): Promise<BenchRow[]> {
   const one = closingUs / closing.length;
   const proof = searchedUs / Math.max(searched.length, 1);
   return [
-    { name: "one closing : 1 000 x three cross products", ratio: one / crossUs, detail: `${timeText(one)} : ${timeText(crossUs)}, ${closing.length} vectors` },
-    { name: "one proven refusal : the same", ratio: proof / crossUs, detail: `${timeText(proof)}, ${searched.length} vectors` },
+    { name: "one closing : 1 000 x three cross products", figure: one / crossUs, detail: `${timeText(one)} : ${timeText(crossUs)}, ${closing.length} vectors` },
+    { name: "one proven refusal : the same", figure: proof / crossUs, detail: `${timeText(proof)}, ${searched.length} vectors` },
   ];
 }

@@ -2,12 +2,23 @@
 
 export interface BenchRow {
   readonly name: string;
-  readonly ratio: number;
-  /** The bound the ratio is to keep: an upper one, or a lower one with `atLeast`. Without it the ratio is only told. */
+  /** A ratio unless it has a unit. */
+  readonly figure: number;
+  readonly unit?: string;
+  /** The bound the figure is to keep: an upper one, or a lower one with `atLeast`. Without it the figure is only told. */
   readonly budget?: number;
   readonly atLeast?: boolean;
+  /** What it was made from, for reading. */
   readonly detail: string;
 }
+
+/** A part that could not be measured here, and why, as a sentence. */
+export interface SkippedRow {
+  readonly name: string;
+  readonly skipped: string;
+}
+
+export type BenchLine = BenchRow | SkippedRow;
 
 export interface Workload {
   readonly name: string;
@@ -29,7 +40,12 @@ export async function medianTimesUs(workloads: readonly Workload[], rounds: numb
       if (round >= 0) taken[index]?.push(us);
     }
   }
-  return taken.map((times) => times.sort((a, b) => a - b)[Math.floor(times.length / 2)] ?? NaN);
+  return taken.map(median);
+}
+
+/** The upper one of the two in the middle when they are even in number; NaN of none. */
+export function median(values: readonly number[]): number {
+  return [...values].sort((a, b) => a - b)[Math.floor(values.length / 2)] ?? NaN;
 }
 
 /** A time for reading: microseconds below a millisecond, else milliseconds. */
