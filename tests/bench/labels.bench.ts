@@ -12,7 +12,7 @@ import { drawn, modelOf, overlappingLabels } from "../iso/draw/draw-helpers";
 import { randomRun } from "../iso/draw/random-runs";
 import { median, type BenchRow } from "./stopwatch";
 
-const RUNS = 8;
+const RUNS = 6;
 const SEEDS = 30;
 /** How far from the wanted number of labels a line may be. */
 const NEAR = 0.08;
