@@ -5,10 +5,12 @@
  * A budget that is not met is printed as such and does not fail the command: it is a finding, not a fault. A part that
  * cannot be measured here says why. Only a measurement that breaks ends with exit code 1.
  */
+import { fork } from "node:child_process";
+import { once } from "node:events";
 import { existsSync, readdirSync } from "node:fs";
 import { availableParallelism, loadavg } from "node:os";
 import path from "node:path";
-import { pathToFileURL } from "node:url";
+import { fileURLToPath, pathToFileURL } from "node:url";
 import { checkNode, ensurePackages } from "./lib/machine.mjs";
 import { ROOT } from "./lib/paths.mjs";
 import { sayHeading, sayWhy } from "./lib/say.mjs";
@@ -17,6 +19,8 @@ import { sayHeading, sayWhy } from "./lib/say.mjs";
 process.env.LOG_LEVEL ??= "error";
 
 const FOLDER = path.join(ROOT, "tests/bench");
+/** First word of the command line of a process that measures one file. */
+const MEASURE = "--measure";
 const COLUMNS = [52, 10, 12, 8];
 
 const columns = (texts) => texts.map((text, index) => (index === 1 ? text.padStart(COLUMNS[1]) : text.padEnd(COLUMNS[index] ?? 0))).join("  ").trimEnd();
@@ -40,27 +44,36 @@ function print(line) {
   return met;
 }
 
-/** Runs one file; its lines' verdicts, or null when it broke. */
-async function runFile(file, tsImport) {
+/**
+ * Measures one file in a process of its own, so that no measurement runs in what another left behind, and prints it.
+ * Answers the verdicts of its lines, or null when it broke.
+ */
+async function runFile(file) {
   sayHeading(file.replace(".bench.ts", ""));
-  try {
-    const loaded = await tsImport(pathToFileURL(path.join(FOLDER, file)).href, import.meta.url);
-    return (await (loaded.measure ?? loaded.default.measure)()).map(print);
-  } catch (error) {
-    sayWhy(error);
-    return null;
-  }
+  const child = fork(fileURLToPath(import.meta.url), [MEASURE, file], { cwd: ROOT, serialization: "advanced" });
+  const ended = once(child, "exit");
+  const [said] = await Promise.race([once(child, "message"), ended.then(() => [{ broke: "It ended without a word." }])]);
+  await ended;
+  if (said.lines) return said.lines.map(print);
+  console.log(`  This measurement broke: ${said.broke}`);
+  return null;
+}
+
+/** The part within that process: tells its parent the lines, or why there are none. */
+async function measure(file) {
+  const { tsImport } = await import("tsx/esm/api");
+  const loaded = await tsImport(pathToFileURL(path.join(FOLDER, file)).href, import.meta.url);
+  return { lines: await (loaded.measure ?? loaded.default.measure)() };
 }
 
 async function main() {
   checkNode();
   await ensurePackages();
-  const { tsImport } = await import("tsx/esm/api");
   const wanted = process.argv.slice(2);
   const files = existsSync(FOLDER) ? readdirSync(FOLDER).filter((name) => name.endsWith(".bench.ts")).sort() : [];
   console.log(`\n  ${columns(["measured", "figure", "budget", "", "from"])}`);
   const verdicts = [];
-  for (const file of files.filter((name) => wanted.length === 0 || wanted.some((word) => name.includes(word)))) verdicts.push(await runFile(file, tsImport));
+  for (const file of files.filter((name) => wanted.length === 0 || wanted.some((word) => name.includes(word)))) verdicts.push(await runFile(file));
   const [all, broken] = [verdicts.flat(), verdicts.filter((verdict) => verdict === null).length];
   const [met, missed] = [all.filter((one) => one === true).length, all.filter((one) => one === false).length];
   console.log(`\n${met} of ${met + missed} budgets met, ${missed} not met. ${availableParallelism()} processors, load ${loadavg()[0].toFixed(1)}.`);
@@ -68,7 +81,12 @@ async function main() {
   return broken > 0 ? 1 : 0;
 }
 
-main().then(
-  (code) => process.exit(code),
-  (error) => process.exit(sayWhy(error)),
-);
+if (process.argv[2] === MEASURE) {
+  const said = await measure(process.argv[3]).catch((error) => ({ broke: error instanceof Error ? error.message : String(error) }));
+  process.send(said, () => process.exit(0));
+} else {
+  main().then(
+    (code) => process.exit(code),
+    (error) => process.exit(sayWhy(error)),
+  );
+}
