@@ -10,7 +10,7 @@ import type { DisplayItem, MeasureText } from "./drawing-types";
 import { turnedInk, type InkMap } from "./ink-map";
 import type { LabelField } from "./label-field";
 import type { Placed } from "./place";
-import { crossingOf, EMPTY_BOX, paperBoxAround, segmentInBox, type Segment, type TurnedBox } from "./plane";
+import { crossingOf, EMPTY_BOX, segmentInBox, type Segment, type TurnedBox } from "./plane";
 import * as size from "./sizes";
 
 export interface DimensionInk {
@@ -89,7 +89,7 @@ function bestChoice(
 ): Choice {
   const units = placed.sketch.model.document.settings.units;
   const crowded = chainCrowded(placed, chain);
-  let best: Choice | null = null;
+  let best = null as Choice | null;
   for (let level = 0; level < LEVELS; level++) {
     for (const axis of ([0, 1, 2] as const).filter((other) => other !== chain.axis)) {
       for (const sign of [1, -1]) {
@@ -97,9 +97,10 @@ function bestChoice(
         const across: PaperPoint = [along[0] * sign, along[1] * sign];
         // Many marks along the pipe: leave them a strip between pipe and dimensions.
         const base = (crowded && level === 0 ? 9 : level * 5) + sideCost(chain, across, around, leaving);
-        if (best && base >= best.cost) continue;
+        const limit: number = best?.cost ?? Infinity;
+        if (base >= limit) continue;
         const set = dimensionSet(chain, across, size.DIMENSION_FIRST + level * size.DIMENSION_NEXT, flanged, units, measure);
-        best = seated(set, around, others, base, best?.cost ?? Infinity) ?? best;
+        best = seated(set, around, others, base, limit) ?? best;
       }
     }
   }
@@ -146,7 +147,15 @@ function onPipe(cells: number, lump: number): number {
 /** Box round a set of lines and the numbers beside them. */
 function reachOf(set: DimensionSet): PaperBox {
   const widest = set.texts.reduce((most, text) => Math.max(most, text.width), 0) + 2 * size.DIMENSION_CAP;
-  const { minX, minY, maxX, maxY } = paperBoxAround([...set.lines, ...set.extensions].flatMap((line) => [line.from, line.to]));
+  let { minX, minY, maxX, maxY } = EMPTY_BOX;
+  for (const list of [set.lines, set.extensions]) {
+    for (const { from, to } of list) {
+      minX = Math.min(minX, from[0], to[0]);
+      minY = Math.min(minY, from[1], to[1]);
+      maxX = Math.max(maxX, from[0], to[0]);
+      maxY = Math.max(maxY, from[1], to[1]);
+    }
+  }
   return { minX: minX - widest, minY: minY - widest, maxX: maxX + widest, maxY: maxY + widest };
 }
 

@@ -54,12 +54,18 @@ export function drawModel(model: Model, options: DrawOptions): Drawing {
   let margin = FIRST_MARGIN;
   const fitted = (rows: ExtraRows): number => fitStretch(plan, projection, options.widthMm - 2 * margin, options.heightMm - 2 * margin, rows);
   let rows = NO_ROWS;
+  let first = fitted(rows);
   // Twice: room taken by moving pipes apart shortens the legs, which can bring others close.
-  for (let pass = 0; pass < 2; pass++) rows = separateRows(plan, projection, fitted(rows), rows);
+  for (let pass = 0; pass < 2; pass++) {
+    const moved = separateRows(plan, projection, first, rows);
+    if (moved === rows) break;
+    rows = moved;
+    first = fitted(rows);
+  }
   let best: Drawing | null = null;
   let labelled = 0;
   for (let attempt = 0; attempt < FIT_TRIES; attempt++) {
-    const wished = fitted(rows);
+    const wished = attempt === 0 ? first : fitted(rows);
     const stretch = wished < STRETCH_LEAST ? 0 : wished;
     const lines = drawLines(placeAll(plan, projection, stretch, rows), options);
     const over = boxOverrun(lines.extent, options.widthMm - 2 * LABEL_MARGIN, options.heightMm - 2 * LABEL_MARGIN);

@@ -27,10 +27,13 @@ export function inkMap(segments: readonly Segment[], thicknessMm: number): InkMa
   const half = Math.floor(thicknessMm / cell / 2);
   for (const { from, to } of segments) {
     const steps = Math.max(1, Math.ceil(Math.hypot(to[0] - from[0], to[1] - from[1]) / (cell * 0.7)));
+    let before = -1;
     for (let i = 0; i <= steps; i++) {
       const cx = Math.floor((from[0] + ((to[0] - from[0]) * i) / steps - originX) / cell);
       const cy = Math.floor((from[1] + ((to[1] - from[1]) * i) / steps - originY) / cell);
-      for (let y = cy - half; y <= cy + half; y++) for (let x = cx - half; x <= cx + half; x++) if (x >= 0 && y >= 0 && x < columns && y < rows) bits[y * columns + x] = 1;
+      if (cy * columns + cx === before) continue;
+      before = cy * columns + cx;
+      for (let y = Math.max(0, cy - half); y <= cy + half && y < rows; y++) bits.fill(1, y * columns + Math.max(0, cx - half), y * columns + Math.min(columns, cx + half + 1));
     }
   }
   return { inBox: boxCounter(summedAreas(bits, columns, rows), columns, rows, originX, originY, cell), along: lineCounter(bits, columns, rows, originX, originY, cell) };
@@ -51,12 +54,11 @@ function summedAreas(bits: Uint8Array, columns: number, rows: number): Uint32Arr
 
 function boxCounter(sums: Uint32Array, columns: number, rows: number, originX: number, originY: number, cell: number): InkMap["inBox"] {
   const width = columns + 1;
-  const clamp = (value: number, most: number): number => Math.min(most, Math.max(0, value));
   return (minX, minY, maxX, maxY) => {
-    const x0 = clamp(Math.floor((minX - originX) / cell), columns);
-    const x1 = clamp(Math.ceil((maxX - originX) / cell), columns);
-    const y0 = clamp(Math.floor((minY - originY) / cell), rows);
-    const y1 = clamp(Math.ceil((maxY - originY) / cell), rows);
+    const x0 = Math.max(0, Math.floor((minX - originX) / cell));
+    const x1 = Math.min(columns, Math.ceil((maxX - originX) / cell));
+    const y0 = Math.max(0, Math.floor((minY - originY) / cell));
+    const y1 = Math.min(rows, Math.ceil((maxY - originY) / cell));
     if (x1 <= x0 || y1 <= y0) return 0;
     return (sums[y1 * width + x1] ?? 0) - (sums[y0 * width + x1] ?? 0) - (sums[y1 * width + x0] ?? 0) + (sums[y0 * width + x0] ?? 0);
   };

@@ -32,25 +32,38 @@ export interface LabelInk {
 }
 
 export interface Candidate {
-  readonly centre: PaperPoint;
-  readonly from: PaperPoint;
-  readonly to: PaperPoint;
+  /** Middle of the label. */
+  readonly x: number;
+  readonly y: number;
+  /** The leader's start at its anchor and its end at the label. */
+  readonly fromX: number;
+  readonly fromY: number;
+  readonly toX: number;
+  readonly toY: number;
   readonly ring: number;
   /** Price of ring, box and angle; never more than the whole. */
   readonly base: number;
   readonly boxTouches: boolean;
-  /** Price of the fixed ink under the leader, counted when first asked for; -1 before. */
-  leaderCost: number;
-  leaderTouches: boolean;
 }
 
-export const NEAR_RINGS = [1.5, 2.8, 4.5, 6.5, 9] as const;
-export const OUTER_RINGS = [12, 16, 21, 27, 34] as const;
+/**
+ * Candidates of some rings, cheapest first. Tens of thousands are weighed for one sheet, so each is a single number: its
+ * price in steps, then anchor, hub, angle, ring and whether it touches pipe.
+ */
+export interface Candidates {
+  readonly rings: readonly number[];
+  readonly keys: Float64Array;
+}
+
+/** Rings by tiers: a farther tier is only looked at while the nearer ones leave something to wish for. */
+export const TIERS: readonly (readonly number[])[] = [[1.5, 2.8], [4.5, 6.5], [9, 12], [16, 21], [27, 34]];
+export const FAR_TIERS: readonly (readonly number[])[] = [[42, 52], [64, 80], [100, 130], [170, 220], [290, 380], [500, 700], [1000, 1500], [2200, 3200]];
 /** Price of a millimetre of leader. */
-const COST_PER_MM = 0.7;
-/** A seat cheaper than this cannot be bettered on the outer rings. */
-export const OUTER_WORTH = OUTER_RINGS[0] * COST_PER_MM;
-export const FAR_RINGS = [42, 52, 64, 80, 100, 130, 170, 220, 290, 380, 500, 700, 1000, 1500, 2200, 3200] as const;
+export const COST_PER_MM = 0.7;
+const COST_ON_PIPE = 30;
+const COST_OUTSIDE = 30;
+/** No place on a pipe or outside the room is cheaper. */
+export const POOR_FROM = Math.min(COST_ON_PIPE, COST_OUTSIDE);
 const ANGLES = 24;
 const OFFSET_DEG = 7.5;
 /** cos 9°: nearer than this to a pipe or an axis a leader reads as one of them. */
@@ -62,63 +75,111 @@ const DIRECTIONS: readonly PaperPoint[] = Array.from({ length: ANGLES }, (_, i) 
 });
 const AXIAL: readonly boolean[] = DIRECTIONS.map((d) => AXIS_DIRECTIONS.some((axis) => Math.abs(axis[0] * d[0] + axis[1] * d[1]) > ALONG_COSINE));
 
-export function labelBox(label: Label, centre: PaperPoint): TurnedBox {
-  return { centre, halfWidth: label.halfWidth, halfHeight: label.halfHeight, angle: 0 };
+export function labelBox(label: Label, { x, y }: Candidate): TurnedBox {
+  return { centre: [x, y], halfWidth: label.halfWidth, halfHeight: label.halfHeight, angle: 0 };
 }
 
-/** Candidates on the given rings, cheapest base price first. */
-export function candidatesOf(label: Label, rings: readonly number[], ink: LabelInk): Candidate[] {
-  const list: Candidate[] = [];
-  label.anchors.forEach((anchor, place) => {
-    for (const hub of label.hubs) {
-      DIRECTIONS.forEach((direction, i) => {
-        // The label must lie beyond its hub, not back over the anchor.
-        if (-(hub.offset[0] * direction[0] + hub.offset[1] * direction[1]) < -0.35 * Math.hypot(hub.offset[0], hub.offset[1])) return;
-        const follows = label.along.some((d) => Math.abs(d[0] * direction[0] + d[1] * direction[1]) > ALONG_COSINE) ? 8 : 0;
-        const fixed = place * 0.6 + follows + (AXIAL[i] ? 1.2 : 0);
-        for (const ring of rings) {
-          const candidate = candidateAt(label, anchor, hub, direction, ring, fixed, ink);
-          if (candidate) list.push(candidate);
-        }
-      });
+/** Which places are asked for: those clear of pipe and inside the room, or the others. */
+export type Kind = "clear" | "poor";
+
+const MOST_ANCHORS = 8;
+const MOST_HUBS = 16;
+/** A number of each: angle and ring in pairs, hub, anchor, and whether pipe is touched. */
+const RING_CODES = 2;
+const TOUCH_CODES = 2;
+const CODES = TOUCH_CODES * RING_CODES * ANGLES * MOST_HUBS * MOST_ANCHORS;
+/** Prices are kept in steps of this share of one. */
+const PRICE_STEPS = 256;
+const scratch = new Float64Array(CODES);
+
+/** Candidates on the given rings (two at most), cheapest base price first. */
+export function candidatesOf(label: Label, rings: readonly number[], kind: Kind, ink: LabelInk): Candidates {
+  const follows = DIRECTIONS.map((direction) => (label.along.some((d) => Math.abs(d[0] * direction[0] + d[1] * direction[1]) > ALONG_COSINE) ? 8 : 0));
+  let count = 0;
+  label.anchors.slice(0, MOST_ANCHORS).forEach((anchor, place) => label.hubs.slice(0, MOST_HUBS).forEach((hub, end) => {
+    const back = 0.35 * Math.sqrt(hub.offset[0] ** 2 + hub.offset[1] ** 2);
+    for (let i = 0; i < ANGLES; i++) {
+      const direction = DIRECTIONS[i] ?? [1, 0];
+      // The label must lie beyond its hub, not back over the anchor.
+      if (hub.offset[0] * direction[0] + hub.offset[1] * direction[1] > back) continue;
+      const fixed = place * 0.6 + (follows[i] ?? 0) + (AXIAL[i] ? 1.2 : 0);
+      for (let r = 0; r < rings.length; r++) {
+        const price = placePrice(label, anchor, hub, direction, rings[r] ?? 0, kind, ink);
+        if (price === 0) continue;
+        const code = ((place * MOST_HUBS + end) * ANGLES + i) * RING_CODES + r;
+        scratch[count++] = Math.floor((Math.abs(price) + fixed) * PRICE_STEPS) * CODES + code * TOUCH_CODES + (price < 0 ? 1 : 0);
+      }
     }
-  });
-  return list.sort((p, q) => p.base - q.base);
+  }));
+  return { rings, keys: scratch.slice(0, count).sort() };
 }
 
-function candidateAt(label: Label, anchor: PaperPoint, hub: Hub, d: PaperPoint, ring: number, fixed: number, ink: LabelInk): Candidate | null {
+/** Price of a place by ring and fixed ink; below nothing when it touches pipe, 0 when it is not of the kind asked for. */
+function placePrice(label: Label, anchor: PaperPoint, hub: Hub, d: PaperPoint, ring: number, kind: Kind, ink: LabelInk): number {
   const reach = label.clear + ring;
-  const from: PaperPoint = [anchor[0] + d[0] * label.clear, anchor[1] + d[1] * label.clear];
-  const to: PaperPoint = [anchor[0] + d[0] * reach, anchor[1] + d[1] * reach];
-  const centre: PaperPoint = [to[0] + d[0] * hub.radius - hub.offset[0], to[1] + d[1] * hub.radius - hub.offset[1]];
-  if (coversLeader(label, centre, anchor, to)) return null;
-  const [w, h] = [label.halfWidth + 0.6, label.halfHeight + 0.6];
-  const heavy = ink.heavy.inBox(centre[0] - w, centre[1] - h, centre[0] + w, centre[1] + h);
-  const light = ink.light.inBox(centre[0] - w, centre[1] - h, centre[0] + w, centre[1] + h);
-  const out = boxInside(ink.room, centre[0] - w, centre[1] - h, centre[0] + w, centre[1] + h);
-  const base = ring * COST_PER_MM + fixed + (heavy > 0 ? 30 + heavy * 0.5 : 0) + (light > 0 ? 9 + light * 0.25 : 0) + (out > 0 ? 25 + out * 3 : 0);
-  return { centre, from, to, ring, base, boxTouches: heavy > 0, leaderCost: -1, leaderTouches: false };
+  const toX = anchor[0] + d[0] * reach;
+  const toY = anchor[1] + d[1] * reach;
+  const x = toX + d[0] * hub.radius - hub.offset[0];
+  const y = toY + d[1] * hub.radius - hub.offset[1];
+  const w = label.halfWidth + 0.6;
+  const h = label.halfHeight + 0.6;
+  const heavy = ink.heavy.inBox(x - w, y - h, x + w, y + h);
+  if (heavy > 0 && kind === "clear") return 0;
+  const out = boxInside(ink.room, x - w, y - h, x + w, y + h);
+  if (heavy > 0 || out > 0 ? kind === "clear" : kind === "poor") return 0;
+  if (covers(label, x, y, anchor[0], anchor[1]) || covers(label, x, y, anchor[0] * 0.4 + toX * 0.6, anchor[1] * 0.4 + toY * 0.6)) return 0;
+  const light = ink.light.inBox(x - w, y - h, x + w, y + h);
+  const price = ring * COST_PER_MM + (light > 0 ? 9 + light * 0.25 : 0) + (out > 0 ? COST_OUTSIDE + out * 3 : 0);
+  return heavy > 0 ? -(price + COST_ON_PIPE + heavy * 0.5) : price;
 }
 
-/** True when the label would lie over its own leader or anchor. */
-function coversLeader(label: Label, centre: PaperPoint, anchor: PaperPoint, to: PaperPoint): boolean {
-  const inside = (p: PaperPoint): boolean => Math.abs(p[0] - centre[0]) < label.halfWidth - 0.1 && Math.abs(p[1] - centre[1]) < label.halfHeight - 0.1;
-  return inside(anchor) || inside([anchor[0] * 0.4 + to[0] * 0.6, anchor[1] * 0.4 + to[1] * 0.6]);
+export const basePrice = (key: number): number => Math.floor(key / CODES) / PRICE_STEPS;
+
+/** The place a key stands for. */
+export function candidateOf(label: Label, rings: readonly number[], key: number): Candidate {
+  const code = key % CODES;
+  const place = Math.floor(code / TOUCH_CODES);
+  const turn = Math.floor(place / RING_CODES);
+  const end = Math.floor(turn / ANGLES);
+  const anchor = label.anchors[Math.floor(end / MOST_HUBS)] ?? [0, 0];
+  const hub = label.hubs[end % MOST_HUBS] ?? NO_HUB;
+  const d = DIRECTIONS[turn % ANGLES] ?? [1, 0];
+  const ring = rings[place % RING_CODES] ?? 0;
+  const toX = anchor[0] + d[0] * (label.clear + ring);
+  const toY = anchor[1] + d[1] * (label.clear + ring);
+  return {
+    x: toX + d[0] * hub.radius - hub.offset[0], y: toY + d[1] * hub.radius - hub.offset[1],
+    fromX: anchor[0] + d[0] * label.clear, fromY: anchor[1] + d[1] * label.clear, toX, toY, ring, base: basePrice(key), boxTouches: code % TOUCH_CODES === 1,
+  };
 }
 
-/** Price of fixed ink under the leader, remembered on the candidate. */
+const NO_HUB: Hub = { offset: [0, 0], radius: 0 };
+
+/** True when a label at (x, y) would lie over a point of its own leader or its anchor. */
+function covers(label: Label, x: number, y: number, px: number, py: number): boolean {
+  return Math.abs(px - x) < label.halfWidth - 0.1 && Math.abs(py - y) < label.halfHeight - 0.1;
+}
+
+/** Where the ink under a leader begins to count: a little off its anchor. */
+function leaderBegin({ fromX, fromY, toX, toY, ring }: Candidate): PaperPoint {
+  const skip = 0.9 / ring;
+  return [fromX + (toX - fromX) * skip, fromY + (toY - fromY) * skip];
+}
+
+/** A leader no longer than this has no room to touch anything. */
+const LEADER_NONE = 1.6;
+
+/** Price of fixed ink under the leader. */
 export function leaderPrice(candidate: Candidate, ink: LabelInk): number {
-  if (candidate.leaderCost >= 0) return candidate.leaderCost;
-  const { from, to, ring } = candidate;
-  let cost = 0;
-  if (ring > 1.6) {
-    const skip = 0.9 / ring;
-    const begin: PaperPoint = [from[0] + (to[0] - from[0]) * skip, from[1] + (to[1] - from[1]) * skip];
-    const crossed = ink.heavy.along(begin, to);
-    const thin = ink.light.along(begin, to);
-    cost = (crossed > 0 ? 16 + crossed : 0) + (thin > 0 ? 5 + thin * 0.6 : 0);
-    candidate.leaderTouches = crossed > 0;
-  }
-  candidate.leaderCost = cost;
-  return cost;
+  if (candidate.ring <= LEADER_NONE) return 0;
+  const begin = leaderBegin(candidate);
+  const to: PaperPoint = [candidate.toX, candidate.toY];
+  const crossed = ink.heavy.along(begin, to);
+  const thin = ink.light.along(begin, to);
+  return (crossed > 0 ? 16 + crossed : 0) + (thin > 0 ? 5 + thin * 0.6 : 0);
+}
+
+/** True when the leader runs over pipe or a symbol. */
+export function leaderTouches(candidate: Candidate, ink: LabelInk): boolean {
+  return candidate.ring > LEADER_NONE && ink.heavy.along(leaderBegin(candidate), [candidate.toX, candidate.toY]) > 0;
 }

@@ -1,13 +1,15 @@
 /** Ejection: a badly seated label may take another's place when that one finds a seat so good that both together gain. */
-import { labelBox, leaderPrice, type Candidate } from "./label-candidates";
+import { basePrice, candidateOf, leaderPrice, TIERS, type Candidate } from "./label-candidates";
 import type { FieldEntry } from "./label-field";
-import { entriesOf, seatFor, seatInPool, type LabelTable, type Seat } from "./label-seats";
+import { entriesOf, seatAt, seatInPool, type LabelTable, type Seat } from "./label-seats";
 
 /** Labels that cost more than this look for a place to take. */
 const UNEASY = 11;
 /** Places tried per uneasy label. */
 const TRIES = 8;
 const LEAST_GAIN = 0.5;
+/** Only places this near are worth taking from another. */
+const TAKEN_TIERS = Math.min(3, TIERS.length);
 
 /** @returns whether any label changed its seat */
 export function ejectAll(table: LabelTable): boolean {
@@ -24,15 +26,26 @@ function ejectFor(table: LabelTable, i: number, seat: Seat, index: ReadonlyMap<s
   const pool = table.pools[i];
   if (!label || !pool) return false;
   let tries = 0;
-  for (const candidate of pool.near) {
-    if (candidate.base >= seat.cost - LEAST_GAIN || tries >= TRIES) return false;
-    const blockers = table.field.allOverlapping(labelBox(label, candidate.centre)).filter((entry) => entry.id !== label.id);
-    const j = blockers.length === 1 ? index.get(blockers[0]?.id ?? "") : undefined;
-    if (j === undefined || candidate.base + leaderPrice(candidate, table.ink) >= seat.cost - LEAST_GAIN) continue;
-    tries++;
-    if (swapped(table, i, j, candidate)) return true;
+  for (let tier = 0; tier < TAKEN_TIERS; tier++) {
+    const { rings, keys } = pool.clearTier(tier);
+    for (const key of keys) {
+      if (basePrice(key) >= seat.cost - LEAST_GAIN || tries >= TRIES) break;
+      const candidate = candidateOf(label, rings, key);
+      const j = onlyBlocker(table, i, candidate, index);
+      if (j === null || candidate.base + leaderPrice(candidate, table.ink) >= seat.cost - LEAST_GAIN) continue;
+      tries++;
+      if (swapped(table, i, j, candidate)) return true;
+    }
   }
   return false;
+}
+
+/** The one movable label that stands on a place; null when there is none, or more. */
+function onlyBlocker(table: LabelTable, i: number, candidate: Candidate, index: ReadonlyMap<string, number>): number | null {
+  const label = table.labels[i];
+  if (!label) return null;
+  const [blocker, ...more] = table.field.takers(candidate.x, candidate.y, label.halfWidth, label.halfHeight).filter((id) => id !== label.id);
+  return blocker === undefined || more.length > 0 ? null : (index.get(blocker) ?? null);
 }
 
 function put(table: LabelTable, entries: readonly FieldEntry[]): void {
@@ -56,7 +69,7 @@ function swapped(table: LabelTable, i: number, j: number, candidate: Candidate):
   const moved = seatInPool(other, pool, table.field, table.ink);
   lift(table, trial);
   if (moved) put(table, moved.entries);
-  const taken = moved ? seatFor(one, [candidate], table.field, table.ink) : null;
+  const taken = moved ? seatAt(one, candidate, table.field, table.ink) : null;
   if (moved) lift(table, moved.entries);
   if (moved && taken && moved.cost + taken.cost < before.cost + theirs.cost - LEAST_GAIN) {
     put(table, moved.entries);

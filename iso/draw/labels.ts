@@ -5,10 +5,10 @@
  */
 import type { PaperPoint } from "../geometry/types";
 import type { DisplayItem, LabelReport } from "./drawing-types";
-import { candidatesOf, FAR_RINGS, labelBox, NEAR_RINGS, type Label, type LabelInk } from "./label-candidates";
+import { labelBox, leaderTouches, type Label, type LabelInk } from "./label-candidates";
 import { LabelField } from "./label-field";
 import { ejectAll } from "./label-ejection";
-import { seatFor, seatInPool, type Pool, type Seat } from "./label-seats";
+import { Pool, seatAt, seatFarAway, seatInPool, type Seat } from "./label-seats";
 import { boxesMeet, type TurnedBox } from "./plane";
 
 const SWEEPS = 3;
@@ -28,11 +28,11 @@ export interface PlacedLabels {
 export function placeLabels(labels: readonly Label[], fixed: readonly TurnedBox[], ink: LabelInk): PlacedLabels {
   const field = new LabelField();
   fixed.forEach((box, i) => field.add({ id: `fixed ${i}`, box, leader: null }));
-  const pools = labels.map((label): Pool => ({ near: candidatesOf(label, NEAR_RINGS, ink), outer: null }));
+  const pools = labels.map((label) => new Pool(label, ink));
   const seats: (Seat | null)[] = labels.map(() => null);
   labels.forEach((label, i) => {
     const pool = pools[i];
-    const seat = (pool && seatInPool(label, pool, field, ink)) ?? seatFor(label, candidatesOf(label, FAR_RINGS, ink), field, ink);
+    const seat = (pool && seatInPool(label, pool, field, ink)) ?? seatFarAway(label, field, ink);
     for (const entry of seat?.entries ?? []) field.add(entry);
     seats[i] = seat;
   });
@@ -41,7 +41,7 @@ export function placeLabels(labels: readonly Label[], fixed: readonly TurnedBox[
     if (!improveAll(labels, pools, seats, field, ink) && sweep > 0) break;
     if (sweep < SWEEPS - 1 && labels.length <= EJECTION_MOST) ejectAll({ labels, pools, seats, field, ink });
   }
-  return drawnLabels(labels, seats, fixed, field);
+  return drawnLabels(labels, seats, fixed, field, ink);
 }
 
 /** Takes every label out once, last first, and puts it where it is cheapest now. Says whether anything moved. */
@@ -53,7 +53,7 @@ function improveAll(labels: readonly Label[], pools: readonly Pool[], seats: (Se
     const pool = pools[i];
     if (!label || !pool || !before || before.cost < BEST_COST) continue;
     for (const entry of before.entries) field.remove(entry);
-    const today = seatFor(label, [before.candidate], field, ink) ?? before;
+    const today = seatAt(label, before.candidate, field, ink) ?? before;
     const found = seatInPool(label, pool, field, ink);
     const next = found && found.cost < today.cost - SAME_COST ? found : today;
     for (const entry of next.entries) field.add(entry);
@@ -63,7 +63,7 @@ function improveAll(labels: readonly Label[], pools: readonly Pool[], seats: (Se
   return moved;
 }
 
-function drawnLabels(labels: readonly Label[], seats: readonly (Seat | null)[], fixed: readonly TurnedBox[], field: LabelField): PlacedLabels {
+function drawnLabels(labels: readonly Label[], seats: readonly (Seat | null)[], fixed: readonly TurnedBox[], field: LabelField, ink: LabelInk): PlacedLabels {
   const items: DisplayItem[] = [];
   const boxes: TurnedBox[] = [];
   const leaders: number[] = [];
@@ -73,14 +73,14 @@ function drawnLabels(labels: readonly Label[], seats: readonly (Seat | null)[], 
     if (!seat) return;
     const { candidate, entries } = seat;
     const led = candidate.ring >= label.leaderFrom;
-    const box = labelBox(label, candidate.centre);
+    const box = labelBox(label, candidate);
     for (const entry of entries) field.remove(entry);
     const foreign = field.leadersIn(box);
     for (const entry of entries) field.add(entry);
     leaders.push(candidate.ring);
-    if (candidate.boxTouches || (led && candidate.leaderTouches) || foreign > 0) touches++;
-    const leader: { from: PaperPoint; to: PaperPoint } | null = led ? { from: candidate.from, to: candidate.to } : null;
-    items.push(...label.draw(candidate.centre, leader));
+    if (candidate.boxTouches || (led && leaderTouches(candidate, ink)) || foreign > 0) touches++;
+    const leader: { from: PaperPoint; to: PaperPoint } | null = led ? { from: [candidate.fromX, candidate.fromY], to: [candidate.toX, candidate.toY] } : null;
+    items.push(...label.draw([candidate.x, candidate.y], leader));
     boxes.push(box);
   });
   return { items, boxes, report: reportOf(boxes, fixed, touches, leaders) };
