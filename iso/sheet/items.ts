@@ -1,5 +1,5 @@
 /** Constructors of display items, so that composing reads as a list of what stands where. Paper millimetres, y down. */
-import type { DisplayItem, Face, Ink, Layer, LineItem, PathItem, PathSegment, TextItem } from "../draw/drawing-types";
+import type { Face, Ink, Layer, LineItem, PathItem, PathSegment, TextItem } from "../draw/drawing-types";
 import type { PaperBox, PaperPoint } from "../geometry/types";
 import { TEXT_CAP } from "./sheet-size";
 
