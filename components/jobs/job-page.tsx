@@ -5,6 +5,7 @@ import { useApi } from "@/components/ui/fetcher";
 import { countText } from "@/components/ui/format";
 import { Loaded } from "@/components/ui/loaded";
 import { TitleStrip } from "@/components/ui/title-strip";
+import { usePageTitle } from "@/components/ui/use-page-title";
 import { useViewer } from "@/components/shell/use-viewer";
 import type { JobDetail } from "@/lib/rules/api-types";
 import { canDo } from "@/lib/rules/permissions";
@@ -48,6 +49,7 @@ export function JobPage({ jobId }: { readonly jobId: string }) {
 }
 
 function JobHead({ job }: { readonly job: JobDetail }) {
+  usePageTitle(`${job.number} ${job.title}`);
   const spools = job.lines.reduce((sum, line) => sum + line.spools.length, 0);
   return (
     <TitleStrip

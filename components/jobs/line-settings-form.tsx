@@ -148,15 +148,15 @@ function AllowanceFields({ register, errors }: Part) {
 
 function LimitFields({ register, errors }: Part) {
   return (
-    <Group title="Limits" hint="Each gives a finding on the line, never a change of what was typed.">
+    <Group title="Limits" hint="A standard elbow is taken within so many degrees; a pup is pipe between two welds; the box is what a spool ships in. Each gives a finding on the line, never a change of what was typed.">
       <TextField
-        label="Standard elbow within, degrees"
+        label="Elbow within, degrees"
         figure
         error={errors.withinDeg?.message}
         {...register("withinDeg")}
       />
       <TextField
-        label="Shortest pipe between welds"
+        label="Shortest pup"
         figure
         placeholder="1.5 OD"
         error={errors.minimumPup?.message}
@@ -164,13 +164,13 @@ function LimitFields({ register, errors }: Part) {
       />
       <div className="grid grid-cols-3 gap-3 sm:col-span-2">
         <TextField
-          label="Shipping box, length"
+          label="Box length"
           figure
           error={errors.boxLength?.message}
           {...register("boxLength")}
         />
-        <TextField label="Width" figure error={errors.boxWidth?.message} {...register("boxWidth")} />
-        <TextField label="Height" figure error={errors.boxHeight?.message} {...register("boxHeight")} />
+        <TextField label="Box width" figure error={errors.boxWidth?.message} {...register("boxWidth")} />
+        <TextField label="Box height" figure error={errors.boxHeight?.message} {...register("boxHeight")} />
       </div>
     </Group>
   );

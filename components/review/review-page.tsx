@@ -11,6 +11,7 @@ import { Notice } from "@/components/ui/notice";
 import { Section } from "@/components/ui/section";
 import { StateWord } from "@/components/ui/state-word";
 import { TitleStrip } from "@/components/ui/title-strip";
+import { usePageTitle } from "@/components/ui/use-page-title";
 import { spoolFacts } from "@/components/spool/spool-facts";
 import type { ReviewDetail } from "@/lib/rules/api-types";
 import { ChangeList } from "./change-list";
@@ -67,6 +68,7 @@ function Review({ review }: { readonly review: ReviewDetail }) {
 
 function ReviewHead({ review }: { readonly review: ReviewDetail }) {
   const { revision, spool, line, job } = review;
+  usePageTitle(`Review ${spool.sheetNumber} rev ${revision.code}`);
   return (
     <TitleStrip
       kind="Review"
@@ -108,7 +110,7 @@ function Standing({ review }: { readonly review: ReviewDetail }) {
         </Notice>
       ) : null}
       {decided ? <Notice word="Decided">{decided}</Notice> : null}
-      {!decided && review.why ? <Notice word="Not for you to sign">{review.why}</Notice> : null}
+      {!decided && !revision.hold && review.why ? <Notice word="Not for you to sign">{review.why}</Notice> : null}
     </div>
   );
 }

@@ -54,7 +54,7 @@ function ClosingView(props: CloseDialogProps) {
   const answer = useMemo(() => (read.ok ? closeBetween(read.input) : null), [read]);
   const [stamp] = useState(props.stamp);
   const plan = useMemo(() => (read.ok && answer?.ok ? planInsert(settled, answer, read.input, model, stamp) : null), [read, answer, settled, model, stamp]);
-  const messages = read.ok || read.blank ? {} : read.messages;
+  const messages = read.ok ? {} : read.messages;
   const setEnd = (name: "end0" | "end1") => (end: EndForm) => setForm((now) => ({ ...now, [name]: end }));
   return (
     <>

@@ -33,7 +33,7 @@ export type ReadClosing =
   | { readonly ok: true; readonly input: CloseBetweenInput }
   | { readonly ok: false; readonly messages: FieldMessages; readonly blank: boolean };
 
-/** Reads the form. `blank` is true while an end is still empty, so that nothing is called wrong too early. */
+/** Reads the form. `blank` is true while an end is still empty; what is not typed yet is not called wrong. */
 export function readClosingForm(form: ClosingForm, units: UnitSystem, takeOuts: readonly TakeOutWord[]): ReadClosing {
   const messages: Record<string, string> = {};
   const length = (field: string, text: string, whenBlank: number | null): number => {
@@ -49,7 +49,8 @@ export function readClosingForm(form: ClosingForm, units: UnitSystem, takeOuts: 
   const odMm = pipeOdMm(form.nps, units);
   if (odMm === null) messages.nps = "The pipe table has no such size.";
   const blank = [form.end0, form.end1].some((each) => each.direction.trim() === "" && each.e.trim() === "" && each.n.trim() === "" && each.u.trim() === "");
-  if (Object.keys(messages).length > 0 || odMm === null) return { ok: false, messages, blank };
+  const waiting = form.end0.direction.trim() === "" || form.end1.direction.trim() === "";
+  if (Object.keys(messages).length > 0 || odMm === null || waiting) return { ok: false, messages, blank };
   const input: CloseBetweenInput = {
     end0: { position: first.position, direction: first.direction },
     end1: { position: second.position, direction: second.direction },
@@ -73,7 +74,7 @@ function readEnd(
 ): ReadEnd {
   const position: Vec3 = [length(`${name}.e`, form.e, 0), length(`${name}.n`, form.n, 0), length(`${name}.u`, form.u, 0)];
   const direction = parseDirection(form.direction);
-  if (!direction.ok) messages[`${name}.direction`] = direction.message;
+  if (!direction.ok && form.direction.trim() !== "") messages[`${name}.direction`] = direction.message;
   const straightMm = length(`${name}.straight`, form.straight, 0);
   if (straightMm < 0) messages[`${name}.straight`] = "A straight is not under zero.";
   const radiusMm = form.radius === "own" ? length(`${name}.ownRadius`, form.ownRadius, null) : elbowRadiusMm(form.radius, nps, units, takeOuts);

@@ -1,6 +1,6 @@
 /** Turns a closing into points of the run: trimmed elbows between what stays, with absolute places kept. Pure. */
 import { buildModel, emptyMarks } from "@/iso";
-import type { CloseBetweenInput, ClosingFound, Item, Model, Offset, Point, RunDocument, UnitSystem, Vec3 } from "@/iso";
+import type { CloseBetweenInput, ClosingFound, Item, Model, Nps, Offset, Point, RunDocument, UnitSystem, Vec3 } from "@/iso";
 import { FROM_DRAWING, pointPlace, runOf, withPoints } from "./document-edits";
 import { lengthEntryText } from "@/components/jobs/settings-text";
 import { isBareEnd, type ClosingForm, type EndForm } from "./closing-form";
@@ -20,16 +20,37 @@ export type InsertPlan =
 export function planInsert(form: ClosingForm, found: ClosingFound, input: CloseBetweenInput, model: Model, stamp: InsertStamp): InsertPlan {
   if (form.end0.radius === "own" || form.end1.radius === "own") return no("A run takes long- or short-radius elbows; choose one of them at both ends to insert.");
   const { document } = model;
+  const unlike = unlikeTheRun(form, input, model);
   const main = document.runs[0];
   const from = form.end0.pointId === "" ? null : pointPlace(document, form.end0.pointId);
   const to = form.end1.pointId === "" ? null : pointPlace(document, form.end1.pointId);
-  if (!from && main && main.points.length === 0) return fromNothing(form, found, input, document, stamp);
+  if (!from && main && main.points.length === 0) return unlike ? no(unlike) : fromNothing(form, found, input, document, stamp);
   if (!from) return no("Take end 0 from a row of the run; the closing goes in after it.");
   const run = runOf(document, from.runId);
   if (!run) return no("That run is no longer there.");
   if (!to && from.row < run.points.length - 1) return no(`Rows follow row ${from.row + 1}: take end 1 from one of them, or end 0 from the last row.`);
   if (to && (to.runId !== from.runId || to.row <= from.row)) return no("End 1 has to be a row after end 0 in the same run.");
-  return between(form, found, input, model, run.id, from.row, to?.row ?? null, stamp);
+  return unlike ? no(unlike) : between(form, found, input, model, run.id, from.row, to?.row ?? null, stamp);
+}
+
+/** A closing is worked out for one size and one gap; in a run of another it would not fit. null when they agree. */
+function unlikeTheRun(form: ClosingForm, input: CloseBetweenInput, model: Model): string | null {
+  const { pipe, allowances, units } = model.document.settings;
+  const size = sizeAfter(model, form.end0.pointId) ?? pipe.nps;
+  if (size !== form.nps) return `The pipe is NPS ${size} there and this closing NPS ${form.nps}: take the run's size to insert it.`;
+  if (Math.abs(input.rootGapMm - allowances.rootGapMm) < GAP_ALIKE_MM) return null;
+  return `The line's root gap is ${lengthEntryText(allowances.rootGapMm, units)}: take it here, or change it in the line's settings, to insert.`;
+}
+
+/** Two gaps typed alike agree within this, mm. */
+const GAP_ALIKE_MM = 0.01;
+
+/** Size of the pipe that leaves a point; null for none. */
+function sizeAfter(model: Model, pointId: string): Nps | null {
+  const ports = model.components.filter((component) => component.pointId === pointId).flatMap((component) => component.ports);
+  const out = ports.findLast((port) => port.id === "out");
+  const leg = model.legs.find((each) => each.fromPointId === pointId) ?? model.legs.find((each) => each.toPointId === pointId);
+  return out?.nps ?? leg?.nps ?? null;
 }
 
 function no(message: string): InsertPlan {
@@ -42,6 +63,8 @@ function between(form: ClosingForm, found: ClosingFound, input: CloseBetweenInpu
   const keepFrom = isBareEnd(model, points[from]?.id ?? "") && from > 0 ? from : from + 1;
   const bareTo = to !== null && to < points.length - 1 && isBareEnd(model, points[to]?.id ?? "");
   const keepTo = to === null ? points.length : bareTo ? to + 1 : to;
+  const branched = points.slice(keepFrom, keepTo).findIndex((point) => document.runs.some((each) => each.from === point.id));
+  if (branched >= 0) return no(`Row ${keepFrom + branched + 1} carries a branch, which the closing would take away: take both ends on one side of it.`);
   const before = placeAfter(document, runId, keepFrom, input.end0.direction);
   const bends = bendPoints(form, found, before, document.settings.units, stamp);
   const last = found.points[found.points.length - 1] ?? before;
@@ -59,14 +82,14 @@ function between(form: ClosingForm, found: ClosingFound, input: CloseBetweenInpu
 function insertWords(bends: number, row: number, gone: number, atEnd: boolean): string {
   const what = bends === 0 ? "No elbow is needed" : `${bends === 1 ? "One elbow goes" : "Two elbows go"} in${atEnd ? " at the end of the run" : ""}`;
   if (gone === 0) return `${what}.`;
-  return gone === 1 ? `${what} in place of row ${row}; Undo brings it back.` : `${what} in place of rows ${row} to ${row + gone - 1}; Undo brings them back.`;
+  return gone === 1 ? `${what}. Row ${row} goes out; Undo brings it back.` : `${what}. Rows ${row} to ${row + gone - 1} go out; Undo brings them back.`;
 }
 
 const PROBE_MM = 1_000;
 
 /**
  * Where the offset of a point in this row starts from. Not always the place of the point before it: an eccentric
- * reducer moves the center line. So a point a known way along is placed by the model and taken back.
+ * reducer moves the centre line. So a point a known way along is placed by the model and taken back.
  */
 function placeAfter(document: RunDocument, runId: string, row: number, direction: Vec3): Vec3 {
   const size = Math.hypot(...direction) || 1;

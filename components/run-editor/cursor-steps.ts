@@ -1,11 +1,16 @@
 /** Where the cursor lands: rows of all runs in reading order, cells in the order of their columns. */
-import type { RunDocument } from "@/iso";
+import type { Run, RunDocument } from "@/iso";
 import { COLUMNS } from "./cell-commit";
 import type { Step } from "./editor-types";
 
-/** Rows of the whole grid in reading order; each run ends with its empty row. */
-export function gridRows(document: RunDocument): readonly { readonly runId: string; readonly row: number }[] {
-  return document.runs.flatMap((run) => Array.from({ length: run.points.length + 1 }, (_, row) => ({ runId: run.id, row })));
+/** Rows of the whole grid in reading order; each run ends with its empty row, where there are any. */
+export function gridRows(document: RunDocument, emptyRows: boolean): readonly { readonly runId: string; readonly row: number }[] {
+  return document.runs.flatMap((run) => Array.from({ length: rowCount(run, emptyRows) }, (_, row) => ({ runId: run.id, row })));
+}
+
+/** Rows a run shows: a run without a point shows its empty row to a reader too. */
+export function rowCount(run: Run, emptyRows: boolean): number {
+  return run.points.length + (emptyRows || run.points.length === 0 ? 1 : 0);
 }
 
 /** Row (of gridRows) and column a step leads to; the caller keeps the row within the grid. */

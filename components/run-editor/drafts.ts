@@ -13,7 +13,7 @@ export function draftKey(document: RunDocument, target: CellTarget): string {
 /** Entries that were not understood, for the problem list: each with its place. */
 export function waitingDrafts(document: RunDocument, drafts: EditorState["drafts"]): readonly { readonly target: CellTarget; readonly draft: Draft }[] {
   if (Object.keys(drafts).length === 0) return [];
-  return gridRows(document).flatMap((row) =>
+  return gridRows(document, true).flatMap((row) =>
     COLUMNS.flatMap((column) => {
       const target: CellTarget = { ...row, column };
       const draft = drafts[draftKey(document, target)];

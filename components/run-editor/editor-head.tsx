@@ -2,6 +2,7 @@
 import Link from "next/link";
 import type { RunDocument } from "@/iso";
 import { Button } from "@/components/ui/button";
+import { usePageTitle } from "@/components/ui/use-page-title";
 import type { LineDetail } from "@/lib/rules/api-types";
 import { useEditor } from "./editor-context";
 import { SaveStatus } from "./save-status";
@@ -24,6 +25,7 @@ export interface EditorHeadProps {
 export function EditorHead({ line, document, save, canUndo, canRedo, sheetShown, onSheet, onPanel }: EditorHeadProps) {
   const { send, readOnly } = useEditor();
   const { pipe, units, ratingClass } = document.settings;
+  usePageTitle(`${document.number} ${document.title}`.trim());
   return (
     <header className="mb-3 border-y border-ink py-2">
       <div className="flex flex-wrap items-center justify-between gap-x-6 gap-y-2">
@@ -39,7 +41,7 @@ export function EditorHead({ line, document, save, canUndo, canRedo, sheetShown,
             <span className="figure">{document.number}</span> <span className="font-normal">{document.title}</span>
           </h1>
           <p className="text-sm text-soft">
-            NPS {pipe.nps} {pipe.schedule}, {pipe.material}, class {ratingClass}, {units === "metric" ? "millimeters" : "feet and inches"}
+            NPS {pipe.nps} {pipe.schedule}, {pipe.material}, class {ratingClass}, {units === "metric" ? "millimetres" : "feet and inches"}
           </p>
         </div>
         <div className="flex flex-wrap items-center gap-2 max-sm:[&_button]:px-2.5 max-sm:[&_button]:text-sm" data-screen-only>

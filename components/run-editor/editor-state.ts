@@ -11,13 +11,13 @@ import type { Draft, EditorAction, EditorState, PointPatch, Stamp, Step } from "
 import { pastedCells } from "./paste";
 
 /** State of an editor just opened: an empty line starts at its first item, since the first point is its own datum. */
-export function initialState(document: RunDocument, stamp: Stamp): EditorState {
+export function initialState(document: RunDocument, stamp: Stamp, emptyRows = true): EditorState {
   const main = document.runs[0];
   const fresh = (main?.points.length ?? 0) <= 1;
   const first = main?.points[0];
   const column: Column = fresh && (!first || first.item.kind === "none") ? "item" : "move";
   const cursor: CellTarget = { runId: main?.id ?? "main", row: 0, column };
-  const state = { document, past: [], future: [], drafts: {}, cursor, focusTurn: 0, preview: null, typing: null, nextIds: {} };
+  const state = { document, past: [], future: [], drafts: {}, cursor, focusTurn: 0, preview: null, typing: null, emptyRows, nextIds: {} };
   return { ...state, nextIds: idsFor(document, {}, stamp) };
 }
 
@@ -119,7 +119,7 @@ function moveTo(state: EditorState, target: CellTarget, focus: boolean): EditorS
 
 function stepped(state: EditorState, step: Step): EditorState {
   if (step === "stay") return state;
-  const rows = gridRows(state.document);
+  const rows = gridRows(state.document, state.emptyRows);
   const at = rows.findIndex((row) => row.runId === state.cursor.runId && row.row === state.cursor.row);
   const column = COLUMNS.indexOf(state.cursor.column);
   const [nextAt, nextColumn] = landing(step, at, column, rows.length);

@@ -20,6 +20,8 @@ export interface EditorState {
   readonly preview: RunDocument | null;
   /** How the text being typed reads so far; null when nothing is being typed. */
   readonly typing: TypingEcho | null;
+  /** Each run ends in an empty row that takes the next point; not for a reader. */
+  readonly emptyRows: boolean;
   /** Id the next new point of each run will get, so that its row keeps its identity. */
   readonly nextIds: Readonly<Record<string, string>>;
 }

@@ -52,7 +52,7 @@ export const GridCell = memo(function GridCell(props: GridCellProps) {
         aria-describedby={`${id}-echo`}
         aria-invalid={message ? true : undefined}
         {...(column === "item" ? { role: "combobox", "aria-expanded": cell.list.length > 0, "aria-controls": `${id}-list`, "aria-autocomplete": "list" as const, "aria-activedescendant": cell.picked === null ? undefined : `${id}-list-${cell.picked}` } : {})}
-        placeholder={props.placeholder}
+        placeholder={cell.input.readOnly ? "" : props.placeholder}
         tabIndex={active ? 0 : -1}
         autoComplete="off"
         autoCapitalize="none"
@@ -60,7 +60,7 @@ export const GridCell = memo(function GridCell(props: GridCellProps) {
         spellCheck={column === "note"}
         enterKeyHint="next"
         className={clsx(
-          "w-full min-w-0 border px-1.5 py-1 leading-6 max-sm:min-h-11 max-sm:text-base placeholder:text-soft/70",
+          "w-full min-w-0 border px-1.5 py-1 leading-6 -outline-offset-1 max-sm:min-h-11 max-sm:text-base placeholder:text-soft/85",
           column === "move" || column === "item" ? "figure text-[0.9375rem]" : "text-sm",
           message ? "border-alert bg-alert-tint" : active ? "border-dye bg-sheet" : "border-transparent bg-transparent hover:border-rule max-sm:border-hair",
         )}

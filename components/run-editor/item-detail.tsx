@@ -93,7 +93,7 @@ function BoltHoles({ item, readOnly, onItem }: { readonly item: Flange; readonly
         label="Bolt holes"
         disabled={readOnly}
         value={turned ? "turned" : "straddle"}
-        options={[{ value: "straddle", label: "straddle the center line" }, { value: "turned", label: "turned" }]}
+        options={[{ value: "straddle", label: "straddle the centre line" }, { value: "turned", label: "turned" }]}
         onChange={(event) => onItem({ ...item, boltHoles: event.target.value === "straddle" ? "straddle" : { turnDeg: 0, from: "S" } })}
       />
       {turned ? (

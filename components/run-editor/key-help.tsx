@@ -22,7 +22,7 @@ const MOVES: Readonly<Record<UnitSystem, readonly (readonly [string, string])[]>
     ["un 900", "900 mm at 45° up-north"],
     ["n30e 1200", "1200 mm, 30° from north towards east"],
     ["045/30 1200", "azimuth 45°, 30° up"],
-    ["E 600 N 300 U 75", "several axes at once; a bare number is millimeters"],
+    ["E 600 N 300 U 75", "several axes at once; a bare number is millimetres"],
     ["600, 300, 75", "east, north, up"],
     ["900", "straight on from the leg before"],
     ["@ 3000, 0, 2400", "a position on the line's own axes"],

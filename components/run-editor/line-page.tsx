@@ -16,7 +16,7 @@ export function LinePage({ lineId }: { readonly lineId: string }) {
   const line = useApi<LineDetail>(`/api/lines/${lineId}?opening=${opening}`, HOLD_STILL);
   const viewer = useViewer();
   return (
-    <Loaded api={line} label="Loading the line" lines={10}>
+    <Loaded api={line} page label="Loading the line" lines={10}>
       {(data) => (viewer.data ? <RunEditor key={data.id} line={data} viewer={viewer.data} onUploads={() => line.mutate()} /> : null)}
     </Loaded>
   );

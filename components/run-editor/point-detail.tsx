@@ -47,7 +47,7 @@ export function PointDetail({ document, point }: PointDetailProps) {
         ) : null}
         <ItemDetail item={point.item} units={units} readOnly={readOnly} onItem={(item) => patch({ item })} />
       </div>
-      {Object.keys(point.places).length > 0 ? <p className="mt-2 text-sm text-caution">Field weld: permit, isolate, gas test, fire watch. Do not pull, jack or heat to fit.</p> : null}
+      {hasFieldWeld(point) ? <p className="mt-2 text-sm text-caution">Field weld: permit, isolate, gas test, fire watch. Do not pull, jack or heat to fit.</p> : null}
       <p className="mt-2 text-xs text-soft">{sourceWords(point.provenance)}</p>
       {readOnly ? null : (
         <div className="mt-2 flex flex-wrap gap-x-4 max-sm:hidden">
@@ -60,6 +60,10 @@ export function PointDetail({ document, point }: PointDetailProps) {
       </div>
     </details>
   );
+}
+
+function hasFieldWeld({ places }: Point): boolean {
+  return [places.in, places.out, places.branch].some((place) => place === "field" || place === "field-fit");
 }
 
 function sourceWords({ kind, by, at }: Provenance): string {

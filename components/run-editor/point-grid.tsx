@@ -3,6 +3,7 @@ import clsx from "clsx";
 import { memo, useEffect, useMemo, useRef, type RefObject } from "react";
 import type { Problem, Run, RunDocument, Severity } from "@/iso";
 import { COLUMNS, nearSideAt, type Column } from "./cell-commit";
+import { rowCount } from "./cursor-steps";
 import { pointPlace } from "./document-edits";
 import type { Draft, EditorState } from "./editor-types";
 import { COLUMN_LABEL } from "./grid-cell";
@@ -21,10 +22,10 @@ export function PointGrid({ state, problems }: PointGridProps) {
   useCursorFocus(box, state);
   const severities = useMemo(() => worstByPoint(problems), [problems]);
   const drafts = useMemo(() => draftsByRow(state.drafts), [state.drafts]);
-  const { document } = state;
-  const firstRows = useMemo(() => document.runs.map((_, index) => rowsBefore(document, index) + 1), [document]);
+  const { document, emptyRows } = state;
+  const firstRows = useMemo(() => document.runs.map((_, index) => rowsBefore(document, index, emptyRows) + 1), [document, emptyRows]);
   return (
-    <div ref={box} role="grid" aria-label={`Points of line ${document.number}`} aria-rowcount={rowsBefore(document, document.runs.length)} aria-colcount={COLUMNS.length + 1} className="min-w-0">
+    <div ref={box} role="grid" aria-label={`Points of line ${document.number}`} aria-rowcount={rowsBefore(document, document.runs.length, emptyRows)} aria-colcount={COLUMNS.length + 1} className="min-w-0">
       <GridHead />
       {document.runs.map((run, index) => (
         <RunRows key={run.id} run={run} index={index} first={firstRows[index] ?? 2} state={state} severities={severities} drafts={drafts} last={index === document.runs.length - 1} />
@@ -34,8 +35,8 @@ export function PointGrid({ state, problems }: PointGridProps) {
 }
 
 /** Rows of the grid before a run, the head counted. */
-function rowsBefore(document: RunDocument, index: number): number {
-  return document.runs.slice(0, index).reduce((sum, run) => sum + run.points.length + 1, 1);
+function rowsBefore(document: RunDocument, index: number, emptyRows: boolean): number {
+  return document.runs.slice(0, index).reduce((sum, run) => sum + rowCount(run, emptyRows), 1);
 }
 
 const GridHead = memo(function GridHead() {
@@ -65,7 +66,7 @@ interface RunRowsProps {
 
 function RunRows({ run, index, first, state, severities, drafts, last }: RunRowsProps) {
   const { document, cursor, typing } = state;
-  const rows = [...run.points, null];
+  const rows = Array.from({ length: rowCount(run, state.emptyRows) }, (_, row) => run.points[row] ?? null);
   return (
     <div role="rowgroup" aria-label={index === 0 ? "Main run" : branchName(document, run)}>
       {index > 0 ? (
@@ -89,8 +90,8 @@ function RunRows({ run, index, first, state, severities, drafts, last }: RunRows
             typing={here ? typing : null}
             severity={point ? (severities.get(point.id) ?? null) : null}
             firstOfGrid={index === 0 && row === 0}
-            lastOfGrid={last && point === null}
-            branch={index > 0}
+            lastOfGrid={last && row === rows.length - 1}
+            branch={index}
           />
         );
       })}
@@ -105,7 +106,13 @@ export function branchName(document: RunDocument, run: Run): string {
   if (!place || !from) return run.name || "Branch from a point that is gone";
   const item = itemEcho(from.item);
   const nested = place.runId === document.runs[0]?.id ? "" : ` of ${document.runs.find((each) => each.id === place.runId)?.name || "its branch"}`;
-  return `Branch${run.name ? ` ${run.name}` : ""} from row ${place.row + 1}${nested}: ${item || "no branch item there"}`;
+  return `${branchHead(run.name)}from row ${place.row + 1}${nested}: ${item || "no branch item there"}`;
+}
+
+/** "Branch ", or its own name: "Drain, branch ", "Branch to CH-1, ". */
+function branchHead(name: string): string {
+  if (name === "") return "Branch ";
+  return /branch/i.test(name) ? `${name}, ` : `${name}, branch `;
 }
 
 const RANK: Readonly<Record<Severity, number>> = { stop: 2, warning: 1, note: 0 };

@@ -9,6 +9,9 @@ import { GridCell } from "./grid-cell";
 
 export const GRID_COLUMNS = "sm:grid-cols-[2.75rem_minmax(9.5rem,1.7fr)_minmax(7.5rem,1.3fr)_minmax(4.75rem,0.7fr)_minmax(6rem,0.8fr)_minmax(4.5rem,0.9fr)]";
 
+/** A row out of sight is neither laid out nor painted; the row of the cursor may let its list hang out. */
+const RESTING = "[content-visibility:auto] [contain-intrinsic-size:auto_3.75rem] max-sm:[contain-intrinsic-size:auto_13rem]";
+
 export interface PointRowProps {
   readonly runId: string;
   readonly row: number;
@@ -24,13 +27,14 @@ export interface PointRowProps {
   readonly severity: Severity | null;
   readonly firstOfGrid: boolean;
   readonly lastOfGrid: boolean;
-  readonly branch: boolean;
+  /** 0 = the main run; n = its nth branch. */
+  readonly branch: number;
 }
 
 /** One point of a run; on a narrow screen the row is a card with the same cells. */
 export const PointRow = memo(function PointRow(props: PointRowProps) {
-  const { point, row, cursor } = props;
-  const name = point ? `row ${row + 1}` : `new row ${row + 1}`;
+  const { point, row, cursor, branch } = props;
+  const name = `${point ? "" : "new "}row ${row + 1}${branch > 0 ? ` of branch ${branch}` : ""}`;
   return (
     <div
       role="row"
@@ -40,7 +44,7 @@ export const PointRow = memo(function PointRow(props: PointRowProps) {
       className={clsx(
         "grid grid-cols-2 border-b border-hair max-sm:mb-2 max-sm:border max-sm:p-1",
         GRID_COLUMNS,
-        cursor !== null && "bg-dye-tint max-sm:border-dye",
+        cursor !== null ? "bg-dye-tint max-sm:border-dye" : RESTING,
       )}
     >
       <RowNumber {...props} name={name} />
@@ -67,13 +71,13 @@ export const PointRow = memo(function PointRow(props: PointRowProps) {
 
 function echoOf(props: PointRowProps, point: Point, column: Column): string {
   const words = cellEcho(point, column, props.units);
-  return column === "move" && words === "" && props.row === 0 && !props.branch ? "at the datum 0, 0, 0" : words;
+  return column === "move" && words === "" && props.row === 0 && props.branch === 0 ? "at the datum 0, 0, 0" : words;
 }
 
 function placeholderOf({ point, row, branch, units }: PointRowProps, column: Column): string {
   if (column === "item") return point ? "" : "wn, tee, gate";
-  if (column !== "move" || (point && (row > 0 || branch))) return "";
-  if (row === 0 && !branch) return "start: 0, 0, 0";
+  if (column !== "move" || (point && (row > 0 || branch > 0))) return "";
+  if (row === 0 && branch === 0) return "start: 0, 0, 0";
   return units === "imperial" ? "e 3-1 1/2" : "e 775";
 }
 

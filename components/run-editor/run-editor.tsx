@@ -21,7 +21,7 @@ import { LineSheet } from "./line-sheet";
 import { isTouchScreen } from "./touch-screen";
 import { useAutosave } from "./use-autosave";
 import { makeStamp, useEditorState } from "./use-editor-state";
-import { useLineModel } from "./use-line-model";
+import { useLineModel, useSettledPreview } from "./use-line-model";
 import { useUndoKeys } from "./use-undo-keys";
 
 export interface RunEditorProps {
@@ -36,13 +36,13 @@ export function RunEditor({ line, viewer, onUploads }: RunEditorProps) {
   const [draft] = useState(() => (line.editable ? unsentDraft(line, viewer.personId) : null));
   // Work kept from before somebody else's save starts from the older version, so that the save tells of it.
   const [base] = useState(() => ({ document: line.document, version: draft?.version ?? line.version }));
-  const [state, send] = useEditorState(base.document, viewer.name);
+  const [state, send] = useEditorState(base.document, viewer.name, line.editable);
   const [panel, setPanel] = useState<EditorPanel | null>(null);
   const [sheetShown, setSheetShown] = useState(false);
   const { document, cursor } = state;
   const save = useAutosave({ lineId: line.id, personId: viewer.personId, document, base, enabled: line.editable });
   useRestoredDraft(draft, send);
-  const model = useLineModel(state.preview ?? document, line.marks, line.takeOuts);
+  const model = useLineModel(useSettledPreview(document, state.preview), line.marks, line.takeOuts);
   const point = runOf(document, cursor.runId)?.points[cursor.row] ?? null;
   const doors = useMemo(() => ({ send, openHelp: () => setPanel("help"), readOnly: !line.editable }), [send, line.editable]);
   const showPoint = useCallback((pointId: string) => send({ type: "show-point", pointId, focus: !isTouchScreen() }), [send]);

@@ -4,6 +4,7 @@ import { useState } from "react";
 import type { RunDocument } from "@/iso";
 import { Button } from "@/components/ui/button";
 import { apiGet, apiSend, failureText } from "@/components/ui/fetcher";
+import { timeText } from "@/components/ui/format";
 import { Notice } from "@/components/ui/notice";
 import type { LineDetail } from "@/lib/rules/api-types";
 import { clockText, saveWords, type SaveState } from "./save-state";
@@ -52,7 +53,7 @@ export function ConflictBanner({ lineId, state, mine, onTheirs }: ConflictBanner
   return (
     <Notice tone="trouble" word="Saved by someone else" className="mb-3">
       <span>
-        {state.by} saved this line {clockText(state.at)} while you were typing. Nothing of yours or theirs is overwritten. Keep yours as a line of its own, or load theirs; Undo then brings yours back on screen.
+        {state.by} saved this line {clockText(state.at)} while you were typing. Nothing of yours or theirs is overwritten. Keep yours as a line of its own, or load theirs; Undo after that puts yours in place of theirs.
       </span>
       {trouble ? <p className="mt-2 font-medium text-alert">{trouble}</p> : null}
       {copy ? (
@@ -79,7 +80,7 @@ export function ConflictBanner({ lineId, state, mine, onTheirs }: ConflictBanner
 
 /** Copies the line, then writes this editor's document into the copy. */
 async function saveCopy(lineId: string, mine: RunDocument): Promise<{ readonly id: string; readonly number: string }> {
-  const number = `${mine.number.slice(0, 50)} copy ${new Date().toISOString().slice(5, 16).replace(/[-T:]/g, "")}`.slice(0, 60);
+  const number = `${mine.number.slice(0, 36)} copy, ${timeText(new Date().toISOString())}`.slice(0, 60);
   const { id } = await apiSend<{ id: string }>("POST", `/api/lines/${lineId}/copy`, { number, title: mine.title });
   const made = await apiGet<LineDetail>(`/api/lines/${id}`);
   await apiSend("PUT", `/api/lines/${id}`, { version: made.version, document: { ...mine, number: made.document.number } });

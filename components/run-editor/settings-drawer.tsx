@@ -57,7 +57,7 @@ function HeadFields({ document, editable, onChange }: Omit<SettingsDrawerProps, 
   );
 }
 
-const UNIT_NAME: Readonly<Record<UnitSystem, string>> = { imperial: "NPS, feet and inches", metric: "DN, millimeters" };
+const UNIT_NAME: Readonly<Record<UnitSystem, string>> = { imperial: "NPS, feet and inches", metric: "DN, millimetres" };
 
 /** Another unit system: the typed numbers stay as typed, so it has to be said what they mean. */
 function UnitChange({ document, onChange }: Pick<SettingsDrawerProps, "document" | "onChange">) {
@@ -80,8 +80,8 @@ function UnitChange({ document, onChange }: Pick<SettingsDrawerProps, "document"
           <p className="mt-1 text-soft">No typed number is converted. Say what the numbers of this line are:</p>
           {trouble ? <Notice tone="trouble" className="mt-2">{trouble}</Notice> : null}
           <div className="mt-3 flex flex-wrap gap-3">
-            <Button onClick={() => change("same-lengths")}>They were right: keep every length, show it in {other === "metric" ? "millimeters" : "feet and inches"}</Button>
-            <Button onClick={() => change("same-numbers")}>They were typed in {other === "metric" ? "millimeters" : "inches"}: read each again</Button>
+            <Button onClick={() => change("same-lengths")}>They were right: keep every length, show it in {other === "metric" ? "millimetres" : "feet and inches"}</Button>
+            <Button onClick={() => change("same-numbers")}>They were typed in {other === "metric" ? "millimetres" : "inches"}: read each again</Button>
             <Button tone="quiet" onClick={() => setAsking(false)}>Leave it</Button>
           </div>
           <p className="mt-2 text-sm text-soft">Allowances, field trim and shipping box start again from the usual ones of {UNIT_NAME[other]}. Undo brings everything back.</p>

@@ -31,7 +31,7 @@ export const SpoolSummary = memo(function SpoolSummary({ model, spools }: { read
           );
         })}
       </ul>
-      <p className="py-1 text-xs text-soft">Weight is an empty estimate; the center of gravity lies off-center.</p>
+      <p className="py-1 text-xs text-soft">Weight is an empty estimate; the centre of gravity lies off-centre.</p>
     </>
   );
 });

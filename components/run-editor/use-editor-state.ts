@@ -16,8 +16,8 @@ export function makeStamp(by: string, lines = 0): Stamp {
 }
 
 /** The editor's state with a sender that stamps each action. */
-export function useEditorState(document: RunDocument, by: string): readonly [EditorState, Send] {
-  const [state, dispatch] = useReducer(editorReducer, document, (first) => initialState(first, makeStamp(by)));
+export function useEditorState(document: RunDocument, by: string, editable: boolean): readonly [EditorState, Send] {
+  const [state, dispatch] = useReducer(editorReducer, document, (first) => initialState(first, makeStamp(by), editable));
   const send = useCallback<Send>(
     (intent) => {
       const lines = intent.type === "paste" ? intent.text.split("\n").length : 0;

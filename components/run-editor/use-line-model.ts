@@ -4,6 +4,20 @@ import { buildModel, type Drawing, type MarksRegister, type Model, type RunDocum
 import { DrawingQueue } from "./drawing-queue";
 import type { DrawingRoom } from "./draw-line";
 
+/** Quiet after a keystroke before what is typed is drawn, ms: typing itself never waits for the model or the drawing. */
+const PREVIEW_QUIET_MS = 160;
+
+/** The document, with what is being typed in it once the typing pauses; a committed entry shows at once. */
+export function useSettledPreview(document: RunDocument, preview: RunDocument | null): RunDocument {
+  const [settled, setSettled] = useState<{ readonly base: RunDocument; readonly preview: RunDocument } | null>(null);
+  useEffect(() => {
+    if (preview === null) return;
+    const timer = setTimeout(() => startTransition(() => setSettled({ base: document, preview })), PREVIEW_QUIET_MS);
+    return () => clearTimeout(timer);
+  }, [document, preview]);
+  return preview !== null && settled?.base === document ? settled.preview : document;
+}
+
 /** The model of a document, computed after the typing it follows from has been shown. */
 export function useLineModel(document: RunDocument, marks: MarksRegister, takeOuts: readonly TakeOutWord[]): Model {
   const settled = useDeferredValue(document);

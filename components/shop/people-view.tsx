@@ -84,7 +84,7 @@ function RoleSelect({ person }: { readonly person: PersonRow }) {
   const change = async (role: Role) => {
     try {
       await apiSend("PATCH", `/api/shop/people/${person.id}`, { role });
-      say(`${person.name} is ${ROLE_WORDS[role].toLowerCase()} now.`);
+      say(`${person.name}: ${ROLE_WORDS[role].toLowerCase()} from now on.`);
     } catch (failure) {
       say(failureText(failure), "trouble");
     }

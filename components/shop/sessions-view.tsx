@@ -31,6 +31,14 @@ function Sessions({ rows }: { readonly rows: readonly SessionRow[] }) {
     }
     await refreshApi("/api/sessions");
   };
+  const others = rows.filter((row) => !row.current);
+  const endOthers = async () => {
+    const ended = await Promise.allSettled(others.map((row) => apiSend("DELETE", `/api/sessions/${row.id}`)));
+    const stuck = ended.find((one) => one.status === "rejected");
+    if (stuck) say(failureText(stuck.reason), "trouble");
+    else say("Your other sessions are ended.");
+    await refreshApi("/api/sessions");
+  };
   const columns: readonly Column<SessionRow>[] = [
     {
       key: "device",
@@ -50,5 +58,14 @@ function Sessions({ rows }: { readonly rows: readonly SessionRow[] }) {
       cell: (row) => (row.current ? null : <Button onClick={() => void end(row)}>End it</Button>),
     },
   ];
-  return <Table caption="Your sessions" columns={columns} rows={rows} rowKey={(row) => row.id} />;
+  return (
+    <>
+      <Table caption="Your sessions" columns={columns} rows={rows} rowKey={(row) => row.id} />
+      {others.length > 1 ? (
+        <Button className="mt-4" onClick={() => void endOthers()}>
+          End all but this one
+        </Button>
+      ) : null}
+    </>
+  );
 }

@@ -2,8 +2,8 @@
 import { zodResolver } from "@hookform/resolvers/zod";
 import { useFieldArray, useForm } from "react-hook-form";
 import { z } from "zod";
-import { npsSchema, parseLength, type UnitSystem } from "@/iso";
-import { NPS_OPTIONS, lengthEntryText } from "@/components/jobs/settings-text";
+import { formatLength, npsSchema, parseLength, type UnitSystem } from "@/iso";
+import { NPS_OPTIONS } from "@/components/jobs/settings-text";
 import { Button } from "@/components/ui/button";
 import { EmptyState } from "@/components/ui/empty-state";
 import { Select, TextField } from "@/components/ui/field";
@@ -78,7 +78,7 @@ function StockForm({
   const { units, pipe } = shop.defaults;
   const typed = shop.stock.map((row) => ({
     ...row,
-    length: lengthEntryText(row.lengthMm, units),
+    length: formatLength(row.lengthMm, units),
     quantity: String(row.quantity),
   }));
   const { register, control, handleSubmit, setError, formState } = useForm<StockInput, unknown, StockOutput>({

@@ -37,6 +37,7 @@ function WordForm({
   const say = useToast();
   const [typed, setTyped] = useState("");
   const [trouble, setTrouble] = useState<string | null>(null);
+  const unit = units === "metric" ? "mm" : "in";
   const parsed = typed.trim() === "" ? null : parseLength(typed, units);
   const record = async (valueMm: number | null) => {
     setTrouble(null);
@@ -57,9 +58,15 @@ function WordForm({
         </Notice>
       ) : null}
       <p>
-        The table says <strong className="figure">{row.value}</strong> {units === "metric" ? "mm" : "in"} (
-        {row.source}).
+        The table says <strong className="figure">{row.tableValue}</strong> {unit}.
+        {row.word && row.word.valueMm !== null ? (
+          <>
+            {" "}
+            The shop measured <strong className="figure">{row.value}</strong> {unit}.
+          </>
+        ) : null}
       </p>
+      <p className="mt-1 text-sm break-words text-soft">Read from: {row.source}.</p>
       <TextField
         className="mt-4"
         label="What the shop measured"

@@ -108,7 +108,7 @@ function columnsFor(
       figure: true,
       cell: (row) => row.value,
     },
-    { key: "source", head: "Source", cell: (row) => <span className="text-sm">{row.source}</span> },
+    { key: "source", head: "Source", cell: (row) => <span className="text-sm">{row.standard}</span> },
     {
       key: "word",
       head: "Our word",
@@ -129,7 +129,7 @@ function columnsFor(
       key: "edit",
       head: "",
       cell: (row) => (
-        <Button onClick={() => onEdit(row)} aria-label={`Give our word on ${row.words}`}>
+        <Button onClick={() => onEdit(row)} aria-label={`${row.fromMemory && !row.word ? "Confirm" : "Change"} ${row.words}`}>
           {row.fromMemory && !row.word ? "Confirm" : "Change"}
         </Button>
       ),

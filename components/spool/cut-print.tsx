@@ -26,7 +26,9 @@ export function CutPrint({
   const printed = useCallback(() => setPrinting(false), []);
   return (
     <>
-      <Button onClick={() => setAsking(true)}>Print the cut list</Button>
+      <Button data-screen-only onClick={() => setAsking(true)}>
+        Print the cut list
+      </Button>
       <Dialog open={asking} onClose={() => setAsking(false)} title="Print the cut list">
         <Acknowledge
           onGo={() => {

@@ -9,7 +9,7 @@ export interface LogCellProps {
   readonly entries: readonly WorkEntry[];
   readonly kinds: readonly WorkKind[];
   readonly role: Role;
-  /** False when there is no live sheet to work from, or it is on hold. */
+  /** False when there is no live sheet to work from, it is on hold, or closed as-built. */
   readonly open: boolean;
   readonly markName: string;
   readonly onRecord: (kind: WorkKind) => void;

@@ -13,6 +13,7 @@ import { Notice } from "@/components/ui/notice";
 import { Section } from "@/components/ui/section";
 import { StateWord } from "@/components/ui/state-word";
 import { TitleStrip } from "@/components/ui/title-strip";
+import { usePageTitle } from "@/components/ui/use-page-title";
 import type { RevisionSummary, Role, SpoolDetail } from "@/lib/rules/api-types";
 import { canDo } from "@/lib/rules/permissions";
 import { RevisionHistory } from "./revision-history";
@@ -37,10 +38,14 @@ function newestOf(revisions: readonly RevisionSummary[]): RevisionSummary | null
   );
 }
 
+/** A detailer starts at the draft where it says something else than the issued sheet; others at what is issued. */
+function opensAtDraft({ draft, live }: SpoolDetail, role: Role): boolean {
+  if (!draft || !live) return draft !== null;
+  return role === "detailer" && JSON.stringify(draft.document) !== JSON.stringify(live.input.document);
+}
+
 function Spool({ spool, role }: { readonly spool: SpoolDetail; readonly role: Role }) {
-  const [wanted, setWanted] = useState<"issued" | "draft">(
-    spool.draft && (role === "detailer" || !spool.live) ? "draft" : "issued",
-  );
+  const [wanted, setWanted] = useState<"issued" | "draft">(opensAtDraft(spool, role) ? "draft" : "issued");
   const [size, setSize] = useState<SheetSize>(spool.draft?.size ?? spool.live?.input.size ?? "tabloid");
   const [submitting, setSubmitting] = useState(false);
   const issued = wanted === "issued" || !spool.draft;
@@ -113,6 +118,7 @@ function SpoolHead({
   readonly onSubmit: () => void;
 }) {
   const newest = newestOf(spool.revisions);
+  usePageTitle(`${spool.line.number} spool ${spool.letter}`);
   const trail = [
     { href: "/jobs", label: "Jobs" },
     { href: `/jobs/${spool.job.id}`, label: spool.job.number },

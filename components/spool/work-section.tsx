@@ -29,7 +29,8 @@ export function WorkSection({ spool, input, issued, role }: WorkSectionProps) {
   const held =
     input.revision.hold ||
     spool.revisions.some((revision) => revision.id === spool.live?.revisionId && revision.hold);
-  const open = issued && !held;
+  const closed = input.revision.state === "as-built";
+  const open = issued && !held && !closed;
   const cell = (key: string, kinds: readonly WorkKind[], mark: string, about: string, field: boolean) => (
     <LogCell
       entries={spool.work.filter((entry) => entry.key === key)}
@@ -55,6 +56,11 @@ export function WorkSection({ spool, input, issued, role }: WorkSectionProps) {
       {issued && held ? (
         <Notice tone="caution" word="HOLD" className="mb-4">
           Nothing is recorded against a sheet on hold. An inspector or the owner releases it.
+        </Notice>
+      ) : null}
+      {issued && closed ? (
+        <Notice className="mb-4" word="AS-BUILT">
+          This spool is closed; its log stays as it is.
         </Notice>
       ) : null}
       {issued ? null : (

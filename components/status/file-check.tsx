@@ -9,11 +9,21 @@ import { fileSha256 } from "./hash";
 type Result = { readonly name: string; readonly sha256: string | null } | null;
 
 /** Tells whether a PDF on the reader's disk is one of this revision's. The file stays on the reader's device. */
-export function FileCheck({ status }: { readonly status: StatusDetail }) {
+export function FileCheck({
+  status,
+  onReread,
+}: {
+  readonly status: StatusDetail;
+  /** Reads the sheet's standing again: a copy may have been printed since the page was opened. */
+  readonly onReread: () => Promise<unknown>;
+}) {
   const [result, setResult] = useState<Result>(null);
   const [over, setOver] = useState(false);
   const check = async (file: File | null | undefined) => {
-    if (file) setResult({ name: file.name, sha256: await fileSha256(file) });
+    if (!file) return;
+    const sha256 = await fileSha256(file);
+    if (!status.sheets.some((sheet) => sheet.sha256 === sha256)) await onReread().catch(() => undefined);
+    setResult({ name: file.name, sha256 });
   };
   const drop = (event: DragEvent) => {
     event.preventDefault();

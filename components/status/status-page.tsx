@@ -3,6 +3,7 @@ import { useApi } from "@/components/ui/fetcher";
 import { timeText } from "@/components/ui/format";
 import { Loaded } from "@/components/ui/loaded";
 import { StateWord } from "@/components/ui/state-word";
+import { usePageTitle } from "@/components/ui/use-page-title";
 import type { StatusDetail } from "@/lib/rules/api-types";
 import { FileCheck } from "./file-check";
 import { Verdict } from "./verdict";
@@ -15,13 +16,22 @@ export function StatusPage({ token }: { readonly token: string }) {
   return (
     <div className="mx-auto max-w-3xl">
       <Loaded api={status} page label="Looking up the sheet">
-        {(data) => <Status status={data} />}
+        {(data) => <Status status={data} onReread={() => status.mutate()} />}
       </Loaded>
     </div>
   );
 }
 
-function Status({ status }: { readonly status: StatusDetail }) {
+function Status({
+  status,
+  onReread,
+}: {
+  readonly status: StatusDetail;
+  readonly onReread: () => Promise<StatusDetail | undefined>;
+}) {
+  usePageTitle(
+    `Sheet ${status.sheetNumber} rev ${status.code}, ${status.current ? "CURRENT" : "NOT CURRENT"}`,
+  );
   const facts = [
     { label: "Sheet", figure: true, value: status.sheetNumber },
     { label: "Revision", figure: true, value: status.code },
@@ -44,7 +54,7 @@ function Status({ status }: { readonly status: StatusDetail }) {
           </div>
         ))}
       </dl>
-      <FileCheck status={status} />
+      <FileCheck status={status} onReread={onReread} />
     </div>
   );
 }

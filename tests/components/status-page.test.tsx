@@ -64,7 +64,7 @@ describe("FileCheck", () => {
   });
 
   it("recognizes a dropped PDF of this revision", async () => {
-    render(<FileCheck status={status} />);
+    render(<FileCheck onReread={async () => undefined} status={status} />);
     fireEvent.drop(screen.getByText(/Drop a PDF/), { dataTransfer: { files: [pdf(PDF)] } });
     expect(
       (await screen.findByText(/the signed PDF of revision A or a marked copy of it, unaltered/)).textContent,
@@ -72,13 +72,13 @@ describe("FileCheck", () => {
   });
 
   it("says so when a recognized sheet is dead", async () => {
-    render(<FileCheck status={{ ...status, current: false }} />);
+    render(<FileCheck onReread={async () => undefined} status={{ ...status, current: false }} />);
     fireEvent.drop(screen.getByText(/Drop a PDF/), { dataTransfer: { files: [pdf(PDF)] } });
     expect((await screen.findByText(/the signed PDF of revision A/)).textContent).toContain("NOT CURRENT");
   });
 
   it("does not know one changed byte", async () => {
-    render(<FileCheck status={status} />);
+    render(<FileCheck onReread={async () => undefined} status={status} />);
     fireEvent.change(screen.getByLabelText("Choose a PDF"), { target: { files: [pdf(`${PDF}.`)] } });
     expect(await screen.findByText("Not recognized.")).toBeTruthy();
   });

@@ -10,6 +10,9 @@ describe("a Joint cell", () => {
     ["out field", { out: "field" }],
     ["field in, fit out", { in: "field", out: "field-fit" }],
     ["branch fit", { branch: "field-fit" }],
+    ["field bolts", { bolts: "field" }],
+    ["bolts shop", { bolts: "shop" }],
+    ["f, shop bolts", { in: "field", bolts: "shop" }],
     ["shop", {}],
     ["", {}],
   ])("reads %s", (text, places) => {
@@ -22,8 +25,18 @@ describe("a Joint cell", () => {
     expect(parsePlaces("f", "out")).toMatchObject({ value: { out: "field" } });
   });
 
-  it.each(["somewhere", "in", "field nowhere"])("says what to type for %s", (text) => {
+  it.each(["somewhere", "in", "field nowhere", "bolts"])("says what to type for %s", (text) => {
     expect(parsePlaces(text, "in")).toMatchObject({ ok: false, message: expect.stringContaining("Type shop, field or fit") });
+  });
+});
+
+describe("bolted faces in a Joint cell", () => {
+  it("keep their place when the cell is taken as it stands", () => {
+    const places = { in: "field", bolts: "shop" } as const;
+    expect(parsePlaces(placesText(places, "in"), "in")).toMatchObject({ ok: true, value: places });
+  });
+  it("are never trimmed to fit", () => {
+    expect(parsePlaces("fit bolts", "in")).toMatchObject({ ok: false, message: expect.stringContaining("shop or field") });
   });
 });
 

@@ -48,6 +48,8 @@ describe("close between ends", () => {
     const read = readClosingForm(formOf({ e: "x", direction: "E" }, { direction: "sideways" }), "imperial", []);
     expect(read).toMatchObject({ ok: false, blank: false });
     if (!read.ok) expect(Object.keys(read.messages).sort()).toEqual(["end0.e", "end1.direction"]);
+    const half = readClosingForm(formOf({ e: "1-0", direction: "bogus" }, {}), "imperial", []);
+    if (!half.ok) expect(Object.keys(half.messages)).toEqual(["end0.direction"]);
   });
 
   it("takes an end from a row: the weld end of a flange, the end of a bare pipe", () => {
@@ -109,6 +111,26 @@ describe("close between ends", () => {
     const plain = formOf({ direction: "E" }, { e: "60", n: "30", direction: "W" });
     const other = answered(plain);
     expect(planInsert(plain, other.found, other.input, model, testStamp())).toMatchObject({ ok: false, message: expect.stringContaining("Take end 0 from a row") });
+  });
+
+  it("does not insert a closing worked out for another size or gap, nor one that takes a branch away", () => {
+    const model = modelOf(typed(["", "wn"], ["e 3-0"], ["e 3-0", "exist"]));
+    const last = model.document.runs[0]?.points[2]?.id ?? "";
+    const end0 = endFromPoint(model, last, 0);
+    const ends = [{ ...end0 }, { e: "14-0", n: "4-0", direction: "W" }] as const;
+    const plan = (change: Partial<ClosingForm>) => {
+      const form = formOf(...ends, change);
+      const { found, input } = answered(form);
+      return planInsert(form, found, input, model, testStamp());
+    };
+    expect(plan({ nps: "6", rootGap: "1/8" })).toMatchObject({ ok: false, message: expect.stringContaining("NPS 4 there") });
+    expect(plan({ nps: "4", rootGap: "0" })).toMatchObject({ ok: false, message: expect.stringContaining("root gap") });
+    expect(plan({ nps: "4", rootGap: "1/8" })).toMatchObject({ ok: true });
+    const branched = modelOf(typed(["", "wn"], ["e 3-0"], ["e 3-0", "tee"], ["e 3-0"], ["N 3-0", "wn"]));
+    const ids = branched.document.runs[0]?.points.map((point) => point.id) ?? [];
+    const form = formOf({ ...endFromPoint(branched, ids[1] ?? "", 0) }, { ...endFromPoint(branched, ids[4] ?? "", 1) }, { nps: "4", rootGap: "1/8" });
+    const { found, input } = answered(form);
+    expect(planInsert(form, found, input, branched, testStamp())).toMatchObject({ ok: false, message: expect.stringContaining("carries a branch") });
   });
 
   it("starts an empty line with a typed closing, and draws it as a small run", () => {
