@@ -85,8 +85,12 @@ function groupKey(kind: string, id: string, frame: PartFrame | undefined): strin
 interface Anchor {
   readonly anchors: readonly PaperPoint[];
   readonly clear: number;
+  readonly own?: number;
   readonly along: readonly PaperPoint[];
 }
+
+/** Half a symbol's line on the ink map, mm. */
+const OWN_EDGE = 0.8;
 
 function componentAnchor(placed: Placed, kind: string, pointId: string, frames: readonly PartFrame[]): Anchor | null {
   const corner = placed.paper.get(pointId);
@@ -100,10 +104,10 @@ function componentAnchor(placed: Placed, kind: string, pointId: string, frames: 
     const chord: PaperPoint = [(p[0] + q[0]) / 2, (p[1] + q[1]) / 2];
     return { anchors: [[chord[0] + (corner[0] - chord[0]) * k, chord[1] + (corner[1] - chord[1]) * k]], clear: 0.4, along };
   }
-  if (kind === "valve") return { anchors: [a.at(0, 0)], clear: 1.2, along };
-  if (kind.startsWith("flange")) return { anchors: [a.at(a.inner + 1.2, 0)], clear: 1, along };
+  if (kind === "valve") return { anchors: [a.at(0, 0)], clear: 1.2, own: size.VALVE_HALF_HEIGHT + OWN_EDGE, along };
+  if (kind.startsWith("flange")) return { anchors: [a.at(a.inner + 1.2, 0)], clear: 1, own: size.FLANGE_STROKE_HALF + OWN_EDGE, along };
   if (frames.length > 1 && corner) return { anchors: [corner], clear: 0.4, along };
-  return { anchors: [a.at((a.inner + a.outer) / 2, 0)], clear: 1, along };
+  return { anchors: [a.at((a.inner + a.outer) / 2, 0)], clear: 1, own: size.FLANGE_STROKE_HALF + OWN_EDGE, along };
 }
 
 /** A cut piece: its item number and its mark side by side, led to anywhere along the piece. */

@@ -61,25 +61,31 @@ interface RowTable {
 }
 
 function rowTable(count: number, rows: readonly Row[]): RowTable {
-  const a = Int32Array.from(rows, (row) => row.a);
-  const b = Int32Array.from(rows, (row) => row.b);
+  const a = new Int32Array(rows.length);
+  const b = new Int32Array(rows.length);
+  const least = new Float64Array(rows.length);
+  const target = new Float64Array(rows.length);
+  for (let i = 0; i < rows.length; i++) {
+    const row = rows[i];
+    if (!row) continue;
+    a[i] = row.a;
+    b[i] = row.b;
+    least[i] = row.least;
+    target[i] = row.target ?? 0;
+  }
   const [into, intoFrom] = grouped(count, b);
   const [out, outFrom] = grouped(count, a);
-  return { a, b, least: Float64Array.from(rows, (row) => row.least), target: Float64Array.from(rows, (row) => row.target ?? 0), into, intoFrom, out, outFrom };
+  return { a, b, least, target, into, intoFrom, out, outFrom };
 }
 
 /** Row numbers sorted by cluster, and where each cluster's begin. */
 function grouped(count: number, cluster: Int32Array): [Int32Array, Int32Array] {
   const from = new Int32Array(count + 1);
-  for (const at of cluster) from[at + 1] = (from[at + 1] ?? 0) + 1;
-  for (let at = 0; at < count; at++) from[at + 1] = (from[at + 1] ?? 0) + (from[at] ?? 0);
+  for (let row = 0; row < cluster.length; row++) from[(cluster[row] ?? 0) + 1]! += 1;
+  for (let at = 0; at < count; at++) from[at + 1]! += from[at] ?? 0;
   const next = from.slice();
   const list = new Int32Array(cluster.length);
-  cluster.forEach((at, row) => {
-    const place = next[at] ?? 0;
-    list[place] = row;
-    next[at] = place + 1;
-  });
+  for (let row = 0; row < cluster.length; row++) list[next[cluster[row] ?? 0]!++] = row;
   return [list, from];
 }
 
@@ -101,8 +107,11 @@ export function compactAxis(count: number, rows: readonly Row[]): readonly numbe
     for (let i = 0; i < order.length; i++) moved = Math.max(moved, relax(x, order[sweep % 2 === 0 ? order.length - 1 - i : i] ?? 0, table));
     if (moved < SETTLED) break;
   }
-  const lowest = x.reduce((low, value) => Math.min(low, value), Infinity);
-  return Array.from(x, (value) => value - lowest);
+  let lowest = Infinity;
+  for (let at = 0; at < count; at++) lowest = Math.min(lowest, x[at] ?? 0);
+  const line: number[] = [];
+  for (let at = 0; at < count; at++) line.push((x[at] ?? 0) - lowest);
+  return line;
 }
 
 function relax(x: Float64Array, at: number, table: RowTable): number {

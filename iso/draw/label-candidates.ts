@@ -15,6 +15,8 @@ export interface Label {
   readonly anchors: readonly PaperPoint[];
   /** The leader starts this far from the anchor. */
   readonly clear: number;
+  /** So far from the anchor a leader square to the pipe runs over the symbol it names, mm; absent = not at all. */
+  readonly own?: number;
   readonly halfWidth: number;
   readonly halfHeight: number;
   readonly hubs: readonly Hub[];
@@ -82,6 +84,8 @@ export function labelBox(label: Label, { x, y }: Candidate): TurnedBox {
 /** Which places are asked for: those clear of pipe and inside the room, or the others. */
 export type Kind = "clear" | "poor";
 
+/** So far before its end a leader is still outside its label, mm. */
+const LEADER_END = 0.8;
 const MOST_ANCHORS = 8;
 const MOST_HUBS = 16;
 /** A number of each: angle and ring in pairs, hub, anchor, and whether pipe is touched. */
@@ -128,6 +132,7 @@ function placePrice(label: Label, anchor: PaperPoint, hub: Hub, d: PaperPoint, r
   const out = boxInside(ink.room, x - w, y - h, x + w, y + h);
   if (heavy > 0 || out > 0 ? kind === "clear" : kind === "poor") return 0;
   if (covers(label, x, y, anchor[0], anchor[1]) || covers(label, x, y, anchor[0] * 0.4 + toX * 0.6, anchor[1] * 0.4 + toY * 0.6)) return 0;
+  if (covers(label, x, y, toX - d[0] * LEADER_END, toY - d[1] * LEADER_END)) return 0;
   const light = ink.light.inBox(x - w, y - h, x + w, y + h);
   const price = ring * COST_PER_MM + (light > 0 ? 9 + light * 0.25 : 0) + (out > 0 ? COST_OUTSIDE + out * 3 : 0);
   return heavy > 0 ? -(price + COST_ON_PIPE + heavy * 0.5) : price;
@@ -160,26 +165,37 @@ function covers(label: Label, x: number, y: number, px: number, py: number): boo
   return Math.abs(px - x) < label.halfWidth - 0.1 && Math.abs(py - y) < label.halfHeight - 0.1;
 }
 
-/** Where the ink under a leader begins to count: a little off its anchor. */
-function leaderBegin({ fromX, fromY, toX, toY, ring }: Candidate): PaperPoint {
-  const skip = 0.9 / ring;
-  return [fromX + (toX - fromX) * skip, fromY + (toY - fromY) * skip];
-}
-
 /** A leader no longer than this has no room to touch anything. */
 const LEADER_NONE = 1.6;
+/** Half the pipe's width on the ink map and a hair: so far beside its pipe a leader has left it, mm. */
+const PIPE_LEFT = 1.25;
+/** A little beyond the anchor nothing counts, mm. */
+const NEAR_ANCHOR = 0.9;
+/** Nearer to the pipe than this (cosine) a leader could run over the next weld instead of its own symbol. */
+const BESIDE_COSINE = 0.85;
+
+/** Where ink under a leader begins to count: what it names, and the pipe it starts from, are no foreign ink. Null: nowhere. */
+function leaderBegin(label: Label, { fromX, fromY, toX, toY, ring }: Candidate): PaperPoint | null {
+  if (ring <= LEADER_NONE) return null;
+  const d: PaperPoint = [(toX - fromX) / ring, (toY - fromY) / ring];
+  const beside = label.along.reduce((most, way) => Math.max(most, Math.abs(way[0] * d[0] + way[1] * d[1])), 0);
+  const left = label.along.length === 0 || beside > ALONG_COSINE ? 0 : PIPE_LEFT / Math.sqrt(1 - beside * beside);
+  const skip = Math.max(NEAR_ANCHOR, left - label.clear, beside < BESIDE_COSINE ? (label.own ?? 0) - label.clear : 0);
+  return skip >= ring ? null : [fromX + d[0] * skip, fromY + d[1] * skip];
+}
 
 /** Price of fixed ink under the leader. */
-export function leaderPrice(candidate: Candidate, ink: LabelInk): number {
-  if (candidate.ring <= LEADER_NONE) return 0;
-  const begin = leaderBegin(candidate);
+export function leaderPrice(label: Label, candidate: Candidate, ink: LabelInk): number {
+  const begin = leaderBegin(label, candidate);
+  if (!begin) return 0;
   const to: PaperPoint = [candidate.toX, candidate.toY];
   const crossed = ink.heavy.along(begin, to);
   const thin = ink.light.along(begin, to);
   return (crossed > 0 ? 16 + crossed : 0) + (thin > 0 ? 5 + thin * 0.6 : 0);
 }
 
-/** True when the leader runs over pipe or a symbol. */
-export function leaderTouches(candidate: Candidate, ink: LabelInk): boolean {
-  return candidate.ring > LEADER_NONE && ink.heavy.along(leaderBegin(candidate), [candidate.toX, candidate.toY]) > 0;
+/** True when the leader runs over foreign pipe or symbols. */
+export function leaderTouches(label: Label, candidate: Candidate, ink: LabelInk): boolean {
+  const begin = leaderBegin(label, candidate);
+  return begin !== null && ink.heavy.along(begin, [candidate.toX, candidate.toY]) > 0;
 }

@@ -32,7 +32,7 @@ function ejectFor(table: LabelTable, i: number, seat: Seat, index: ReadonlyMap<s
       if (basePrice(key) >= seat.cost - LEAST_GAIN || tries >= TRIES) break;
       const candidate = candidateOf(label, rings, key);
       const j = onlyBlocker(table, i, candidate, index);
-      if (j === null || candidate.base + leaderPrice(candidate, table.ink) >= seat.cost - LEAST_GAIN) continue;
+      if (j === null || candidate.base + leaderPrice(label, candidate, table.ink) >= seat.cost - LEAST_GAIN) continue;
       tries++;
       if (swapped(table, i, j, candidate)) return true;
     }

@@ -66,7 +66,7 @@ export function seatFarAway(label: Label, field: LabelField, ink: LabelInk): Sea
 /** The seat a candidate makes among today's neighbours; null when another label stands on it. */
 export function seatAt(label: Label, candidate: Candidate, field: LabelField, ink: LabelInk): Seat | null {
   if (field.isTaken(candidate.x, candidate.y, label.halfWidth, label.halfHeight)) return null;
-  const cost = candidate.base + (candidate.ring >= label.leaderFrom ? leaderPrice(candidate, ink) : 0) + meetings(label, candidate, field).cost;
+  const cost = candidate.base + (candidate.ring >= label.leaderFrom ? leaderPrice(label, candidate, ink) : 0) + meetings(label, candidate, field).cost;
   return seatOf(label, { candidate, cost });
 }
 
@@ -93,7 +93,7 @@ function cheapest(label: Label, { rings, keys }: Candidates, field: LabelField, 
     if (basePrice(key) >= bestCost || free > FREE_TRIES) break;
     const candidate = candidateOf(label, rings, key);
     if (field.isTaken(candidate.x, candidate.y, label.halfWidth, label.halfHeight)) continue;
-    const fixed = candidate.base + (candidate.ring >= label.leaderFrom ? leaderPrice(candidate, ink) : 0);
+    const fixed = candidate.base + (candidate.ring >= label.leaderFrom ? leaderPrice(label, candidate, ink) : 0);
     if (fixed >= bestCost) continue;
     const met = meetings(label, candidate, field);
     free += met.labels > 0 ? MET_TRY : 1;

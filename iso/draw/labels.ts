@@ -11,7 +11,7 @@ import { ejectAll } from "./label-ejection";
 import { Pool, seatAt, seatFarAway, seatInPool, type Seat } from "./label-seats";
 import { boxesMeet, type TurnedBox } from "./plane";
 
-const SWEEPS = 3;
+const SWEEPS = 4;
 /** More labels than this get one sweep and no ejection: such a line wants more than one sheet anyway. */
 const EJECTION_MOST = 110;
 /** A label on the innermost ring without a fault costs less and cannot get better. */
@@ -78,11 +78,13 @@ function drawnLabels(labels: readonly Label[], seats: readonly (Seat | null)[], 
     const foreign = field.leadersIn(box);
     for (const entry of entries) field.add(entry);
     leaders.push(candidate.ring);
-    if (candidate.boxTouches || (led && leaderTouches(candidate, ink)) || foreign > 0) touches++;
+    if (candidate.boxTouches || (led && leaderTouches(label, candidate, ink)) || foreign > 0) touches++;
     const leader: { from: PaperPoint; to: PaperPoint } | null = led ? { from: [candidate.fromX, candidate.fromY], to: [candidate.toX, candidate.toY] } : null;
     items.push(...label.draw([candidate.x, candidate.y], leader));
     boxes.push(box);
   });
+  // A number counts as touched when a leader runs through it.
+  touches += fixed.filter((box) => field.leadersIn(box) > 0).length;
   return { items, boxes, report: reportOf(boxes, fixed, touches, leaders) };
 }
 

@@ -21,6 +21,7 @@ export interface MarkPlace {
   readonly id: string;
   readonly anchors: readonly PaperPoint[];
   readonly clear: number;
+  readonly own?: number;
   readonly along: readonly PaperPoint[];
 }
 
@@ -64,7 +65,7 @@ export function marksLabel(marks: readonly Mark[], place: MarkPlace, measure: Me
   const total = widths.reduce((sum, w) => sum + w, 0);
   const ink: Ink = marks.some((mark) => mark.shape === "hexagon") ? "dye" : "ink";
   return {
-    id: place.id, anchors: place.anchors, clear: place.clear, along: place.along, leaderFrom: 0, hubs: markHubs(marks, widths, total),
+    id: place.id, anchors: place.anchors, clear: place.clear, own: place.own ?? 0, along: place.along, leaderFrom: 0, hubs: markHubs(marks, widths, total),
     halfWidth: total / 2, halfHeight: Math.max(...marks.map(markHeight)) / 2,
     draw: (centre, leader) => {
       const items: DisplayItem[] = [];

@@ -155,8 +155,8 @@ function solve(plan: PlacePlan, projection: Projection, wishes: readonly Wish[],
   const at = new Map<string, Vec3>();
   const paper = new Map<string, PaperPoint>();
   for (const id of plan.sketch.vertices.keys()) {
-    const [e, n, u] = AXES.map((axis) => lines[axis]?.[plan.clusters[axis].of.get(id) ?? 0] ?? 0);
-    const drawn: Vec3 = [e ?? 0, n ?? 0, u ?? 0];
+    const on = (axis: Axis): number => lines[axis]?.[plan.clusters[axis].of.get(id) ?? 0] ?? 0;
+    const drawn: Vec3 = [on(0), on(1), on(2)];
     at.set(id, drawn);
     paper.set(id, project(projection, drawn));
   }
