@@ -21,11 +21,14 @@ export interface LineDrawingProps {
 const PX_PER_MM = 3;
 /** The room changes in steps, so that a dragged window edge does not redraw at each pixel. */
 const ROOM_STEP_MM = 20;
+/** Foot of the frame kept for the look buttons, px. */
+const FOOT_PX = 52;
 const ZOOM_STEP = 1.25;
 const PAN_STEP = 0.12;
 
 const VIEW_NAMES: Readonly<Record<View, string>> = { 1: "from south-west", 2: "from south-east", 3: "from north-east", 4: "from north-west" };
-const VIEW_SHORT: Readonly<Record<View, string>> = { 1: "SW", 2: "SE", 3: "NE", 4: "NW" };
+/** Way plant north points on the paper in each view, degrees from up, clockwise. */
+const NORTH_DEG: Readonly<Record<View, number>> = { 1: -60, 2: 60, 3: 120, 4: -120 };
 const VIEWS: readonly View[] = [1, 2, 3, 4];
 
 /** The live isometric: what is pointed at finds its row, and the current row shows in the active colour. */
@@ -58,7 +61,7 @@ function useRoom(frame: React.RefObject<HTMLDivElement | null>): DrawingRoom {
     const observer = new ResizeObserver(([entry]) => {
       if (!entry || entry.contentRect.width === 0) return;
       const mm = (px: number, least: number): number => Math.max(least, Math.floor(px / PX_PER_MM / ROOM_STEP_MM) * ROOM_STEP_MM);
-      setRoom({ widthMm: mm(entry.contentRect.width, 140), heightMm: mm(entry.contentRect.height, 120) });
+      setRoom({ widthMm: mm(entry.contentRect.width, 140), heightMm: mm(entry.contentRect.height - FOOT_PX, 120) });
     });
     observer.observe(box);
     return () => observer.disconnect();
@@ -70,15 +73,28 @@ function ViewButtons({ view, shown, onView }: { readonly view: View | null; read
   return (
     <div role="group" aria-label="Looked at from" className="flex flex-wrap items-center gap-1 pb-1.5 text-sm">
       <button type="button" id="after-grid" disabled={!onView} aria-pressed={view === null} onClick={() => onView?.(null)} className={viewClass(view === null)}>
-        Proposed{view === null && shown ? `: ${shown} ${VIEW_SHORT[shown]}` : ""}
+        Proposed{view === null && shown ? `: ${shown}` : ""}
+        {view === null && shown ? <NorthMark view={shown} /> : null}
       </button>
       {VIEWS.map((each) => (
         <button key={each} type="button" title={VIEW_NAMES[each]} disabled={!onView} aria-pressed={view === each} aria-label={`View ${each}, ${VIEW_NAMES[each]}`} onClick={() => onView?.(each)} className={viewClass(view === each)}>
           <span className="figure">{each}</span>
-          {VIEW_SHORT[each]}
+          <NorthMark view={each} />
         </button>
       ))}
     </div>
+  );
+}
+
+/** A small N with the arrow as it lies on the paper. */
+function NorthMark({ view }: { readonly view: View }) {
+  return (
+    <span aria-hidden className="inline-flex items-center gap-0.5 text-xs">
+      N
+      <svg viewBox="0 0 16 16" className="size-4" fill="none" stroke="currentColor" strokeWidth="1.6">
+        <path d="M8 14V2M4.5 6 8 2l3.5 4" transform={`rotate(${NORTH_DEG[view]} 8 8)`} />
+      </svg>
+    </span>
   );
 }
 
@@ -125,7 +141,7 @@ function DrawingWindow({ drawing, model, activePointId, onPoint }: WindowProps) 
         onClick={onClick}
         onKeyDown={onKeyDown}
         {...drag.handlers}
-        className={clsx("absolute inset-1 h-[calc(100%-0.5rem)] w-[calc(100%-0.5rem)] select-none", look ? "touch-none" : "touch-pan-y")}
+        className={clsx("absolute inset-x-1 top-1 h-[calc(100%-0.25rem-52px)] w-[calc(100%-0.5rem)] select-none", look ? "touch-none" : "touch-pan-y")}
       >
         <DrawingItems items={drawing.items} touchable />
         <g pointerEvents="none">

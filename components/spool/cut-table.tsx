@@ -122,7 +122,7 @@ function CutRow({ piece, units, unverified, last, lastLabel }: CutRowProps) {
       </td>
       <td role="cell" data-label="Pipe">
         <span>
-          <span className="figure">NPS {piece.nps}</span> {piece.schedule}
+          NPS {piece.nps} {piece.schedule}
           <span className="block text-sm text-soft">{piece.material}</span>
           <span className="block text-sm">
             Ends: {piece.ends[0].prep}, {piece.ends[1].prep}

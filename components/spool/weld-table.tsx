@@ -49,7 +49,7 @@ function WeldKind({ weld }: { readonly weld: Joint }) {
   return (
     <span>
       {PLACES[weld.place]}, {KINDS[weld.kind]},{" "}
-      <span className="figure whitespace-nowrap">NPS {weld.nps}</span>
+      <span className="whitespace-nowrap">NPS {weld.nps}</span>
       {off ? <span className="block text-sm">Mismatch {formatAngleDeg(weld.mismatchRad, 1)}</span> : null}
       {weld.mismatchRad > MISMATCH_LIMIT_RAD ? (
         <span className="block text-sm font-medium text-caution">Engineer&apos;s permission</span>

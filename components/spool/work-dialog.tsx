@@ -71,7 +71,7 @@ function WorkEntryForm({ target, onDone }: { readonly target: WorkTarget; readon
   return (
     <form noValidate onSubmit={(event) => void handleSubmit(record)(event)} className="space-y-4">
       {trouble ? <Notice tone="trouble">{trouble}</Notice> : null}
-      {target.about ? <p className="figure">{target.about}</p> : null}
+      {target.about ? <p>{target.about}</p> : null}
       {target.field ? <Notice tone="caution">{FIELD_WELD_CAUTION}</Notice> : null}
       {target.mark === "" ? (
         <TextField

@@ -57,11 +57,11 @@ export function TitleStrip({ title, kind, trail, cells, actions }: TitleStripPro
 
 function Cells({ cells }: { readonly cells: readonly StripCell[] }) {
   return (
-    <dl className="flex flex-wrap border-t border-hair">
+    <dl className="grid grid-cols-2 gap-x-4 border-t border-hair sm:flex sm:flex-wrap sm:gap-x-0">
       {cells.map((cell) => (
         <div
           key={cell.label}
-          className="min-w-32 grow border-r border-hair py-2 pr-3 pl-3 first:pl-0 last:border-r-0"
+          className="min-w-0 py-2 sm:min-w-32 sm:grow sm:border-r sm:border-hair sm:pr-3 sm:pl-3 sm:first:pl-0 sm:last:border-r-0"
         >
           <dt className="cell-label">{cell.label}</dt>
           <dd className={cell.figure ? "figure" : undefined}>{cell.value}</dd>
