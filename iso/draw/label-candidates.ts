@@ -140,6 +140,19 @@ function placePrice(label: Label, anchor: PaperPoint, hub: Hub, d: PaperPoint, r
 
 export const basePrice = (key: number): number => Math.floor(key / CODES) / PRICE_STEPS;
 
+/** Writes only the middle of the label a key stands for, since most places turn out to be taken. */
+export function middleInto(out: Float64Array, label: Label, rings: readonly number[], key: number): void {
+  const place = Math.floor((key % CODES) / TOUCH_CODES);
+  const turn = Math.floor(place / RING_CODES);
+  const end = Math.floor(turn / ANGLES);
+  const anchor = label.anchors[Math.floor(end / MOST_HUBS)] ?? NO_HUB.offset;
+  const hub = label.hubs[end % MOST_HUBS] ?? NO_HUB;
+  const d = DIRECTIONS[turn % ANGLES] ?? NO_HUB.offset;
+  const reach = label.clear + (rings[place % RING_CODES] ?? 0) + hub.radius;
+  out[0] = anchor[0] + d[0] * reach - hub.offset[0];
+  out[1] = anchor[1] + d[1] * reach - hub.offset[1];
+}
+
 /** The place a key stands for. */
 export function candidateOf(label: Label, rings: readonly number[], key: number): Candidate {
   const code = key % CODES;

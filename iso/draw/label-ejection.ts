@@ -66,7 +66,8 @@ function swapped(table: LabelTable, i: number, j: number, candidate: Candidate):
   lift(table, theirs.entries);
   const trial = entriesOf(one, candidate);
   put(table, trial);
-  const moved = seatInPool(other, pool, table.field, table.ink);
+  const most = before.cost + theirs.cost - LEAST_GAIN - candidate.base;
+  const moved = seatInPool(other, pool, table.field, table.ink, most);
   lift(table, trial);
   if (moved) put(table, moved.entries);
   const taken = moved ? seatAt(one, candidate, table.field, table.ink) : null;

@@ -1,5 +1,5 @@
 /** Seats: the cheapest free place of one label among those placed so far. */
-import { basePrice, candidateOf, candidatesOf, COST_PER_MM, FAR_TIERS, labelBox, leaderPrice, POOR_FROM, TIERS, type Candidate, type Candidates, type Label, type LabelInk } from "./label-candidates";
+import { basePrice, candidateOf, candidatesOf, COST_PER_MM, FAR_TIERS, labelBox, leaderPrice, middleInto, POOR_FROM, TIERS, type Candidate, type Candidates, type Label, type LabelInk } from "./label-candidates";
 import type { FieldEntry, LabelField } from "./label-field";
 
 export interface Seat {
@@ -34,21 +34,24 @@ export class Pool {
 /** No place of a tier is cheaper. */
 const leastOf = (tier: number): number => (TIERS[tier]?.[0] ?? 0) * COST_PER_MM;
 
-/** The better of the best so far and the best of a list; null when neither has a free place. */
-function better(label: Label, candidates: Candidates, field: LabelField, ink: LabelInk, before: Choice | null): Choice | null {
-  return cheapest(label, candidates, field, ink, before?.cost ?? Infinity) ?? before;
+/** The better of the best so far and the best of a list below the limit; null when neither has a free place. */
+function better(label: Label, candidates: Candidates, field: LabelField, ink: LabelInk, before: Choice | null, limit: number): Choice | null {
+  return cheapest(label, candidates, field, ink, before?.cost ?? limit) ?? before;
 }
 
-/** Nearest tiers first, clear places before those on a pipe or outside the room; null when all of them are taken. */
-export function seatInPool(label: Label, pool: Pool, field: LabelField, ink: LabelInk): Seat | null {
+/**
+ * Nearest tiers first, clear places before those on a pipe or outside the room; null when all of them are taken, or none is
+ * cheaper than the limit.
+ */
+export function seatInPool(label: Label, pool: Pool, field: LabelField, ink: LabelInk, limit = Infinity): Seat | null {
   let best: Choice | null = null;
   for (let tier = 0; tier < TIERS.length; tier++) {
-    if (best && best.cost <= leastOf(tier)) break;
-    best = better(label, pool.clearTier(tier), field, ink, best);
+    if ((best?.cost ?? limit) <= leastOf(tier)) break;
+    best = better(label, pool.clearTier(tier), field, ink, best, limit);
   }
   for (let tier = 0; tier < TIERS.length; tier++) {
-    if (best && best.cost <= POOR_FROM + leastOf(tier)) break;
-    best = better(label, pool.poorTier(tier), field, ink, best);
+    if ((best?.cost ?? limit) <= POOR_FROM + leastOf(tier)) break;
+    best = better(label, pool.poorTier(tier), field, ink, best, limit);
   }
   return best ? seatOf(label, best) : null;
 }
@@ -56,8 +59,8 @@ export function seatInPool(label: Label, pool: Pool, field: LabelField, ink: Lab
 /** A place beyond all usual rings: the first tier that has a free one. */
 export function seatFarAway(label: Label, field: LabelField, ink: LabelInk): Seat | null {
   for (const rings of FAR_TIERS) {
-    const clear = better(label, candidatesOf(label, rings, "clear", ink), field, ink, null);
-    const found = clear && clear.cost <= POOR_FROM ? clear : better(label, candidatesOf(label, rings, "poor", ink), field, ink, clear);
+    const clear = better(label, candidatesOf(label, rings, "clear", ink), field, ink, null, Infinity);
+    const found = clear && clear.cost <= POOR_FROM ? clear : better(label, candidatesOf(label, rings, "poor", ink), field, ink, clear, Infinity);
     if (found) return seatOf(label, found);
   }
   return null;
@@ -84,6 +87,8 @@ interface Choice {
   readonly cost: number;
 }
 
+const middle = new Float64Array(2);
+
 /** The cheapest free candidate below a limit. */
 function cheapest(label: Label, { rings, keys }: Candidates, field: LabelField, ink: LabelInk, limit: number): Choice | null {
   let best: Candidate | null = null;
@@ -91,8 +96,9 @@ function cheapest(label: Label, { rings, keys }: Candidates, field: LabelField, 
   let free = 0;
   for (const key of keys) {
     if (basePrice(key) >= bestCost || free > FREE_TRIES) break;
+    middleInto(middle, label, rings, key);
+    if (field.isTaken(middle[0] ?? 0, middle[1] ?? 0, label.halfWidth, label.halfHeight)) continue;
     const candidate = candidateOf(label, rings, key);
-    if (field.isTaken(candidate.x, candidate.y, label.halfWidth, label.halfHeight)) continue;
     const fixed = candidate.base + (candidate.ring >= label.leaderFrom ? leaderPrice(label, candidate, ink) : 0);
     if (fixed >= bestCost) continue;
     const met = meetings(label, candidate, field);

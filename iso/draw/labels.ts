@@ -54,7 +54,7 @@ function improveAll(labels: readonly Label[], pools: readonly Pool[], seats: (Se
     if (!label || !pool || !before || before.cost < BEST_COST) continue;
     for (const entry of before.entries) field.remove(entry);
     const today = seatAt(label, before.candidate, field, ink) ?? before;
-    const found = seatInPool(label, pool, field, ink);
+    const found = seatInPool(label, pool, field, ink, today.cost);
     const next = found && found.cost < today.cost - SAME_COST ? found : today;
     for (const entry of next.entries) field.add(entry);
     seats[i] = next;
