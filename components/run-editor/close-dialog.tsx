@@ -7,7 +7,7 @@ import { Select, TextField } from "@/components/ui/field";
 import { Notice } from "@/components/ui/notice";
 import { lengthEntryText, NPS_OPTIONS } from "@/components/jobs/settings-text";
 import { ClosingAnswer } from "./closing-answer";
-import { EMPTY_END, endFromPoint, radiusHint, readClosingForm, type ClosingForm, type EndForm, type FieldMessages } from "./closing-form";
+import { EMPTY_END, endFromPoint, radiusHint, readClosingForm, sizeAfter, type ClosingForm, type EndForm, type FieldMessages } from "./closing-form";
 import { planInsert, type InsertStamp } from "./closing-insert";
 import { pointPlace } from "./document-edits";
 import { itemEcho } from "./item-text";
@@ -38,7 +38,7 @@ function firstForm({ model, pointId }: CloseDialogProps): ClosingForm {
   const radius = settings.elbow;
   const start = pointId ? endFromPoint(model, pointId, 0) : null;
   return {
-    nps: settings.pipe.nps,
+    nps: (pointId ? sizeAfter(model, pointId) : null) ?? settings.pipe.nps,
     rootGap: lengthEntryText(settings.allowances.rootGapMm, settings.units),
     end0: { ...EMPTY_END, radius, ...(start ?? {}) },
     end1: { ...EMPTY_END, radius },
@@ -55,7 +55,8 @@ function ClosingView(props: CloseDialogProps) {
   const [stamp] = useState(props.stamp);
   const plan = useMemo(() => (read.ok && answer?.ok ? planInsert(settled, answer, read.input, model, stamp) : null), [read, answer, settled, model, stamp]);
   const messages = read.ok ? {} : read.messages;
-  const setEnd = (name: "end0" | "end1") => (end: EndForm) => setForm((now) => ({ ...now, [name]: end }));
+  const setEnd = (name: "end0" | "end1") => (end: EndForm) =>
+    setForm((now) => ({ ...now, [name]: end, nps: sizeTaken(model, now[name], end) ?? now.nps }));
   return (
     <>
       <p className="mb-4 text-soft">Two fixed pipe ends, one elbow cut at each, one straight pipe between. With these radii there is at most one such closing.</p>
@@ -84,6 +85,11 @@ function ClosingView(props: CloseDialogProps) {
       )}
     </>
   );
+}
+
+/** Size that comes with a row just taken; null when the end was typed in. */
+function sizeTaken(model: Model, before: EndForm, end: EndForm): Nps | null {
+  return end.pointId !== "" && end.pointId !== before.pointId ? sizeAfter(model, end.pointId) : null;
 }
 
 interface EndFieldsProps extends CloseDialogProps {

@@ -100,6 +100,14 @@ export function endFromPoint(model: Model, pointId: string, side: 0 | 1): Pick<E
   return { pointId, e: e ?? "", n: n ?? "", u: u ?? "", direction: direction ? directionText(direction) : "" };
 }
 
+/** Size of the pipe that leaves a point; null for none. */
+export function sizeAfter(model: Model, pointId: string): Nps | null {
+  const ports = model.components.filter((component) => component.pointId === pointId).flatMap((component) => component.ports);
+  const out = ports.findLast((port) => port.id === "out");
+  const leg = model.legs.find((each) => each.fromPointId === pointId) ?? model.legs.find((each) => each.toPointId === pointId);
+  return out?.nps ?? leg?.nps ?? null;
+}
+
 /** Bare pipe: the elbow takes the place of the point; a fitting stays and the elbow is welded to it. */
 export function isBareEnd(model: Model, pointId: string): boolean {
   const point = model.document.runs.flatMap((run) => run.points).find((each) => each.id === pointId);

@@ -1,9 +1,9 @@
 /** Turns a closing into points of the run: trimmed elbows between what stays, with absolute places kept. Pure. */
 import { buildModel, emptyMarks } from "@/iso";
-import type { CloseBetweenInput, ClosingFound, Item, Model, Nps, Offset, Point, RunDocument, UnitSystem, Vec3 } from "@/iso";
+import type { CloseBetweenInput, ClosingFound, Item, Model, Offset, Point, RunDocument, UnitSystem, Vec3 } from "@/iso";
 import { FROM_DRAWING, pointPlace, runOf, withPoints } from "./document-edits";
 import { lengthEntryText } from "@/components/jobs/settings-text";
-import { isBareEnd, type ClosingForm, type EndForm } from "./closing-form";
+import { isBareEnd, sizeAfter, type ClosingForm, type EndForm } from "./closing-form";
 
 export interface InsertStamp {
   readonly by: string;
@@ -44,14 +44,6 @@ function unlikeTheRun(form: ClosingForm, input: CloseBetweenInput, model: Model)
 
 /** Two gaps typed alike agree within this, mm. */
 const GAP_ALIKE_MM = 0.01;
-
-/** Size of the pipe that leaves a point; null for none. */
-function sizeAfter(model: Model, pointId: string): Nps | null {
-  const ports = model.components.filter((component) => component.pointId === pointId).flatMap((component) => component.ports);
-  const out = ports.findLast((port) => port.id === "out");
-  const leg = model.legs.find((each) => each.fromPointId === pointId) ?? model.legs.find((each) => each.toPointId === pointId);
-  return out?.nps ?? leg?.nps ?? null;
-}
 
 function no(message: string): InsertPlan {
   return { ok: false, message };
