@@ -138,7 +138,7 @@ describe("fitter", () => {
     const text = await pdfText(page, address);
     for (const word of ["FOR FABRICATION", "28 1/4", "UNCONTROLLED COPY"]) expect(text).toContain(word);
     await card.getByRole("button", { name: "Record work" }).click();
-    await card.getByRole("button", { name: /cut/i }).first().click();
+    await card.getByRole("button", { name: /^Record cut of P1$/i }).click();
     const dialog = page.getByRole("dialog");
     await dialog.getByLabel(/Heat/).fill("H-5150");
     await dialog.getByRole("button", { name: "Record", exact: true }).click();
