@@ -11,7 +11,10 @@ import { ejectAll } from "./label-ejection";
 import { Pool, seatAt, seatFarAway, seatInPool, type Seat } from "./label-seats";
 import { boxesMeet, type TurnedBox } from "./plane";
 
+/** Rounds of improving: small sheets can afford to be tidied longer. */
 const SWEEPS = 4;
+const SWEEPS_CROWDED = 3;
+const CROWDED_FROM = 80;
 /** More labels than this get one sweep and no ejection: such a line wants more than one sheet anyway. */
 const EJECTION_MOST = 110;
 /** A label on the innermost ring without a fault costs less and cannot get better. */
@@ -36,10 +39,10 @@ export function placeLabels(labels: readonly Label[], fixed: readonly TurnedBox[
     for (const entry of seat?.entries ?? []) field.add(entry);
     seats[i] = seat;
   });
-  const sweeps = labels.length <= EJECTION_MOST ? SWEEPS : 1;
+  const sweeps = labels.length > EJECTION_MOST ? 1 : labels.length >= CROWDED_FROM ? SWEEPS_CROWDED : SWEEPS;
   for (let sweep = 0; sweep < sweeps; sweep++) {
     if (!improveAll(labels, pools, seats, field, ink) && sweep > 0) break;
-    if (sweep < SWEEPS - 1 && labels.length <= EJECTION_MOST) ejectAll({ labels, pools, seats, field, ink });
+    if (sweep < sweeps - 1 && labels.length <= EJECTION_MOST) ejectAll({ labels, pools, seats, field, ink });
   }
   return drawnLabels(labels, seats, fixed, field, ink);
 }

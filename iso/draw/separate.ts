@@ -3,7 +3,7 @@
  * apart. For the worst pair every axis and sense that tells the two apart is tried as one more row of the compaction; the
  * row that helps most is kept; again until nothing helps. Clean crossings in mid-pipe are left to the hidden-line gap.
  */
-import { segmentDistance, segmentsDistance } from "../geometry/paper";
+import { segmentDistance } from "../geometry/paper";
 import { AXES } from "./clusters";
 import type { Row } from "./compact";
 import { placeAll, type Placed, type PlacePlan } from "./place";
@@ -99,6 +99,7 @@ function closeness(a: Segment, b: Segment): number {
   const ends = [segmentDistance(a.from, b.from, b.to), segmentDistance(a.to, b.from, b.to), segmentDistance(b.from, a.from, a.to), segmentDistance(b.to, a.from, a.to)];
   const touching = ends.reduce((sum, gap) => sum + Math.max(0, 1 - gap / size.NEAR_TOUCH), 0);
   if (crossingOf(a, b)) return touching > 0 ? 2 + 5 * touching : 1;
-  const gap = segmentsDistance(a.from, a.to, b.from, b.to);
+  // Two segments that do not cross are nearest at an end.
+  const gap = Math.min(...ends);
   return gap >= size.NEAR_TOUCH ? 0 : 1 + 5 * touching;
 }
