@@ -117,10 +117,10 @@ function mapped<A, B>(result: EntryResult<A>, map: (value: A) => B): EntryResult
   return result.ok ? { ...result, value: map(result.value) } : result;
 }
 
-/** A new point takes over where its numbers come from, from the row above it. */
-export function newPoint(document: RunDocument, runId: string, context: Pick<CommitContext, "by" | "at" | "pointId">): Point {
+/** A new point takes over where its numbers come from, from the row above it; without a row it is the run's last. */
+export function newPoint(document: RunDocument, runId: string, context: Pick<CommitContext, "by" | "at" | "pointId">, row?: number): Point {
   const points = runOf(document, runId)?.points ?? [];
-  const above: Provenance = points[points.length - 1]?.provenance ?? FROM_DRAWING;
+  const above: Provenance = points[(row ?? points.length) - 1]?.provenance ?? FROM_DRAWING;
   const provenance = { kind: above.kind, toleranceMm: above.toleranceMm, by: context.by, at: context.at, second: null };
   return { id: context.pointId, offset: ZERO_OFFSET, item: { kind: "none" }, places: {}, trimMm: null, provenance, note: "" };
 }

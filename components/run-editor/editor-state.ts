@@ -132,7 +132,7 @@ function insertRow(state: EditorState, target: CellTarget, stamp: Stamp): Editor
   const id = stamp.ids[stamp.ids.length - 1];
   const run = runOf(state.document, target.runId);
   if (!run || !id) return state;
-  const point = newPoint(state.document, target.runId, { by: stamp.by, at: stamp.at, pointId: id });
+  const point = newPoint(state.document, target.runId, { by: stamp.by, at: stamp.at, pointId: id }, target.row);
   const next = changed(state, withPointsInserted(state.document, run.id, target.row, [point]), stamp);
   return moveTo(next, { ...target, column: "move" }, true);
 }

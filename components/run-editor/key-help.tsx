@@ -44,7 +44,7 @@ export function KeyHelp({ open, units, onClose }: { readonly open: boolean; read
           </dl>
           <h3 className="mt-5 mb-2">Joint and Source</h3>
           <p className="text-sm">
-            Joint: <b className="figure">shop</b>, <b className="figure">field</b> or <b className="figure">fit</b>, with <b className="figure">in</b>, <b className="figure">out</b> or <b className="figure">branch</b> for the weld meant. Source: <b className="figure">m</b> measured, <b className="figure">d</b> from drawing, <b className="figure">c</b> calculated, <b className="figure">a</b> assumed.
+            Joint: <b className="figure">shop</b>, <b className="figure">field</b> or <b className="figure">fit</b>, with <b className="figure">in</b>, <b className="figure">out</b> or <b className="figure">branch</b> for the weld meant, or <b className="figure">bolts</b> for the bolted faces. Source: <b className="figure">m</b> measured, <b className="figure">d</b> from drawing, <b className="figure">c</b> calculated, <b className="figure">a</b> assumed.
           </p>
         </section>
         <section>
