@@ -4,13 +4,13 @@
  */
 import type { PaperBox, PaperPoint } from "../geometry/types";
 import { chainCrowded, flangedPoints, leavingDirections, straightChains, type Chain } from "./chains";
+import { boxCost, lineCost, type Choice, type DimensionSurroundings } from "./dimension-costs";
 import { dimensionItems, dimensionSet, textBox, type DimensionSet, type DimensionText } from "./dimension-lines";
 import type { DrawnEdge } from "./drawn";
 import type { DisplayItem, MeasureText } from "./drawing-types";
-import { turnedInk, type InkMap } from "./ink-map";
 import type { LabelField } from "./label-field";
 import type { Placed } from "./place";
-import { crossingOf, EMPTY_BOX, segmentInBox, type Segment, type TurnedBox } from "./plane";
+import { EMPTY_BOX, type Segment, type TurnedBox } from "./plane";
 import * as size from "./sizes";
 
 export interface DimensionInk {
@@ -23,23 +23,6 @@ export interface DimensionInk {
 }
 
 export const NO_DIMENSIONS: DimensionInk = { items: [], light: [], boxes: [], homeless: [], shown: [] };
-
-interface Choice {
-  readonly set: DimensionSet;
-  readonly places: readonly (PaperPoint | null)[];
-  readonly boxes: readonly TurnedBox[];
-  readonly cost: number;
-  /** Round its lines and numbers. */
-  readonly reach: PaperBox;
-}
-
-export interface DimensionSurroundings {
-  readonly heavy: InkMap;
-  readonly light: InkMap;
-  readonly field: LabelField;
-  readonly centre: PaperPoint;
-  readonly extent: PaperBox;
-}
 
 const LEVELS = 4;
 const ROUNDS = 2;
@@ -119,31 +102,6 @@ function sideCost(chain: Chain, across: PaperPoint, around: DimensionSurrounding
   return cost + 6 - Math.max(-6, Math.min(6, (outward / reach) * 12));
 }
 
-/** @param limit nobody asks how much more than this it is */
-function lineCost(set: DimensionSet, around: DimensionSurroundings, others: readonly Choice[], limit: number): number {
-  let cost = 0;
-  for (const line of set.lines) cost += onPipe(around.heavy.along(line.from, line.to), 18) + around.light.along(line.from, line.to) * 0.6;
-  for (const line of set.extensions) cost += onPipe(around.heavy.along(line.from, line.to), 7) + around.light.along(line.from, line.to) * 0.3;
-  for (const other of others) {
-    if (cost >= limit) return cost;
-    for (const line of set.lines) {
-      for (const their of other.set.lines) if (crossingOf(line, their)) cost += 12;
-      for (const their of other.set.extensions) if (crossingOf(line, their)) cost += 5;
-      for (const box of other.boxes) if (segmentInBox(line.from, line.to, box) > 0) cost += 40;
-    }
-    for (const line of set.extensions) {
-      for (const their of other.set.lines) if (crossingOf(line, their)) cost += 5;
-      for (const box of other.boxes) if (segmentInBox(line.from, line.to, box) > 0) cost += 25;
-    }
-  }
-  return cost;
-}
-
-/** Crossing a pipe costs a lump, lying along one costs by its length. */
-function onPipe(cells: number, lump: number): number {
-  return cells === 0 ? 0 : lump + cells * 2;
-}
-
 /** Box round a set of lines and the numbers beside them. */
 function reachOf(set: DimensionSet): PaperBox {
   const widest = set.texts.reduce((most, text) => Math.max(most, text.width), 0) + 2 * size.DIMENSION_CAP;
@@ -197,16 +155,4 @@ function cheapestPlace(text: DimensionText, set: DimensionSet, around: Dimension
     if (total < bestCost) [best, bestCost] = [at, total];
   });
   return { at: best, price: best ? bestCost : PRICE_OF_HOMELESS };
-}
-
-function boxCost(box: TurnedBox, text: DimensionText, set: DimensionSet, around: DimensionSurroundings, others: readonly Choice[]): number {
-  let cost = turnedInk(around.heavy, box) * 8 + turnedInk(around.light, box) * 1.5;
-  const wider = { ...box, halfHeight: box.halfHeight + 0.4 };
-  for (const other of others) {
-    for (const line of other.set.lines) if (segmentInBox(line.from, line.to, wider) > 0) cost += 25;
-    for (const line of other.set.extensions) if (segmentInBox(line.from, line.to, wider) > 0) cost += 14;
-  }
-  for (const line of set.extensions) if (segmentInBox(line.from, line.to, box) > 0) cost += 10;
-  for (const line of set.lines) if (line.from !== text.from && segmentInBox(line.from, line.to, box) > 0) cost += 20;
-  return cost;
 }

@@ -69,7 +69,7 @@ export const POOR_FROM = Math.min(COST_ON_PIPE, COST_OUTSIDE);
 const ANGLES = 24;
 const OFFSET_DEG = 7.5;
 /** cos 9°: nearer than this to a pipe or an axis a leader reads as one of them. */
-const ALONG_COSINE = Math.cos((9 * Math.PI) / 180);
+export const ALONG_COSINE = Math.cos((9 * Math.PI) / 180);
 const AXIS_DIRECTIONS: readonly PaperPoint[] = [[Math.cos(Math.PI / 6), 0.5], [Math.cos(Math.PI / 6), -0.5], [0, 1]];
 const DIRECTIONS: readonly PaperPoint[] = Array.from({ length: ANGLES }, (_, i) => {
   const angle = ((OFFSET_DEG + (i * 360) / ANGLES) * Math.PI) / 180;
@@ -87,6 +87,8 @@ export type Kind = "clear" | "poor";
 /** So far before its end a leader is still outside its label, mm. */
 const LEADER_END = 0.8;
 const MOST_ANCHORS = 8;
+/** Where no place is good one anchor is as good as another. */
+const POOR_ANCHORS = 1;
 const MOST_HUBS = 16;
 /** A number of each: angle and ring in pairs, hub, anchor, and whether pipe is touched. */
 const RING_CODES = 2;
@@ -100,7 +102,7 @@ const scratch = new Float64Array(CODES);
 export function candidatesOf(label: Label, rings: readonly number[], kind: Kind, ink: LabelInk): Candidates {
   const follows = DIRECTIONS.map((direction) => (label.along.some((d) => Math.abs(d[0] * direction[0] + d[1] * direction[1]) > ALONG_COSINE) ? 8 : 0));
   let count = 0;
-  label.anchors.slice(0, MOST_ANCHORS).forEach((anchor, place) => label.hubs.slice(0, MOST_HUBS).forEach((hub, end) => {
+  label.anchors.slice(0, kind === "poor" ? POOR_ANCHORS : MOST_ANCHORS).forEach((anchor, place) => label.hubs.slice(0, MOST_HUBS).forEach((hub, end) => {
     const back = 0.35 * Math.sqrt(hub.offset[0] ** 2 + hub.offset[1] ** 2);
     for (let i = 0; i < ANGLES; i++) {
       const direction = DIRECTIONS[i] ?? [1, 0];
@@ -176,39 +178,4 @@ const NO_HUB: Hub = { offset: [0, 0], radius: 0 };
 /** True when a label at (x, y) would lie over a point of its own leader or its anchor. */
 function covers(label: Label, x: number, y: number, px: number, py: number): boolean {
   return Math.abs(px - x) < label.halfWidth - 0.1 && Math.abs(py - y) < label.halfHeight - 0.1;
-}
-
-/** A leader no longer than this has no room to touch anything. */
-const LEADER_NONE = 1.6;
-/** Half the pipe's width on the ink map and a hair: so far beside its pipe a leader has left it, mm. */
-const PIPE_LEFT = 1.25;
-/** A little beyond the anchor nothing counts, mm. */
-const NEAR_ANCHOR = 0.9;
-/** Nearer to the pipe than this (cosine) a leader could run over the next weld instead of its own symbol. */
-const BESIDE_COSINE = 0.85;
-
-/** Where ink under a leader begins to count: what it names, and the pipe it starts from, are no foreign ink. Null: nowhere. */
-function leaderBegin(label: Label, { fromX, fromY, toX, toY, ring }: Candidate): PaperPoint | null {
-  if (ring <= LEADER_NONE) return null;
-  const d: PaperPoint = [(toX - fromX) / ring, (toY - fromY) / ring];
-  const beside = label.along.reduce((most, way) => Math.max(most, Math.abs(way[0] * d[0] + way[1] * d[1])), 0);
-  const left = label.along.length === 0 || beside > ALONG_COSINE ? 0 : PIPE_LEFT / Math.sqrt(1 - beside * beside);
-  const skip = Math.max(NEAR_ANCHOR, left - label.clear, beside < BESIDE_COSINE ? (label.own ?? 0) - label.clear : 0);
-  return skip >= ring ? null : [fromX + d[0] * skip, fromY + d[1] * skip];
-}
-
-/** Price of fixed ink under the leader. */
-export function leaderPrice(label: Label, candidate: Candidate, ink: LabelInk): number {
-  const begin = leaderBegin(label, candidate);
-  if (!begin) return 0;
-  const to: PaperPoint = [candidate.toX, candidate.toY];
-  const crossed = ink.heavy.along(begin, to);
-  const thin = ink.light.along(begin, to);
-  return (crossed > 0 ? 16 + crossed : 0) + (thin > 0 ? 5 + thin * 0.6 : 0);
-}
-
-/** True when the leader runs over foreign pipe or symbols. */
-export function leaderTouches(label: Label, candidate: Candidate, ink: LabelInk): boolean {
-  const begin = leaderBegin(label, candidate);
-  return begin !== null && ink.heavy.along(begin, [candidate.toX, candidate.toY]) > 0;
 }

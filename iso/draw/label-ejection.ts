@@ -1,6 +1,7 @@
 /** Ejection: a badly seated label may take another's place when that one finds a seat so good that both together gain. */
-import { basePrice, candidateOf, leaderPrice, TIERS, type Candidate } from "./label-candidates";
+import { basePrice, candidateOf, TIERS, type Candidate } from "./label-candidates";
 import type { FieldEntry } from "./label-field";
+import { leaderPrice } from "./label-leaders";
 import { entriesOf, seatAt, seatInPool, type LabelTable, type Seat } from "./label-seats";
 
 /** Labels that cost more than this look for a place to take. */

@@ -1,6 +1,7 @@
 /** Seats: the cheapest free place of one label among those placed so far. */
-import { basePrice, candidateOf, candidatesOf, COST_PER_MM, FAR_TIERS, labelBox, leaderPrice, middleInto, POOR_FROM, TIERS, type Candidate, type Candidates, type Label, type LabelInk } from "./label-candidates";
+import { basePrice, candidateOf, candidatesOf, COST_PER_MM, FAR_TIERS, labelBox, middleInto, POOR_FROM, TIERS, type Candidate, type Candidates, type Label, type LabelInk } from "./label-candidates";
 import type { FieldEntry, LabelField } from "./label-field";
+import { leaderPrice } from "./label-leaders";
 
 export interface Seat {
   readonly candidate: Candidate;

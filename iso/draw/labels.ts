@@ -5,9 +5,10 @@
  */
 import type { PaperPoint } from "../geometry/types";
 import type { DisplayItem, LabelReport } from "./drawing-types";
-import { labelBox, leaderTouches, type Label, type LabelInk } from "./label-candidates";
+import { labelBox, type Label, type LabelInk } from "./label-candidates";
 import { LabelField } from "./label-field";
 import { ejectAll } from "./label-ejection";
+import { leaderTouches } from "./label-leaders";
 import { Pool, seatAt, seatFarAway, seatInPool, type Seat } from "./label-seats";
 import { boxesMeet, type TurnedBox } from "./plane";
 
