@@ -16,7 +16,7 @@ export const COLUMN_LABEL: Readonly<Record<Column, string>> = {
 const COLUMN_INDEX: Readonly<Record<Column, number>> = { move: 2, item: 3, joint: 4, source: 5, note: 6 };
 
 /** A sentence longer than its column hangs over the rows below while its cell is the current one. */
-const HANGING = "sm:absolute sm:top-[calc(100%-1.1rem)] sm:left-1 sm:z-20 sm:w-72 sm:max-w-none sm:border sm:border-alert sm:bg-sheet sm:py-1.5 sm:shadow-md";
+const HANGING = "sm:absolute sm:top-[calc(100%-1.1rem)] sm:z-20 sm:w-72 sm:max-w-none sm:border sm:border-alert sm:bg-sheet sm:py-1.5 sm:shadow-md";
 
 export interface GridCellProps {
   readonly runId: string;
@@ -68,7 +68,7 @@ export const GridCell = memo(function GridCell(props: GridCellProps) {
           message ? "border-alert bg-alert-tint" : active ? "border-dye bg-sheet" : "border-transparent bg-transparent hover:border-rule max-sm:border-hair",
         )}
       />
-      <p id={`${id}-echo`} role={message ? "alert" : undefined} className={clsx("px-1.5 text-xs leading-[1.1rem] max-sm:empty:hidden sm:min-h-[1.1rem]", message ? clsx("font-medium text-alert", active ? HANGING : "sm:line-clamp-2") : unclear ? "text-caution" : "text-soft")}>
+      <p id={`${id}-echo`} role={message ? "alert" : undefined} className={clsx("px-1.5 text-xs leading-[1.1rem] max-sm:empty:hidden sm:min-h-[1.1rem]", message ? clsx("font-medium text-alert", active ? [HANGING, column === "move" || column === "item" ? "sm:left-1" : "sm:right-1"] : "sm:line-clamp-2") : unclear ? "text-caution" : "text-soft")}>
         {message ?? echo}
       </p>
       {cell.list.length > 0 ? <ItemPicker id={`${id}-list`} words={cell.list} picked={cell.picked} onTake={cell.take} /> : null}

@@ -74,7 +74,7 @@ function ViewButtons({ view, shown, onView }: { readonly view: View | null; read
     <div role="group" aria-label="Looked at from" className="flex flex-wrap items-center gap-1 pb-1.5 text-sm">
       <button type="button" id="after-grid" disabled={!onView} aria-pressed={view === null} onClick={() => onView?.(null)} className={viewClass(view === null)}>
         Proposed{view === null && shown ? `: ${shown}` : ""}
-        {view === null && shown ? <NorthMark view={shown} /> : null}
+        {view === null && shown ? <NorthMark view={shown} className="max-sm:hidden" /> : null}
       </button>
       {VIEWS.map((each) => (
         <button key={each} type="button" title={VIEW_NAMES[each]} disabled={!onView} aria-pressed={view === each} aria-label={`View ${each}, ${VIEW_NAMES[each]}`} onClick={() => onView?.(each)} className={viewClass(view === each)}>
@@ -87,9 +87,9 @@ function ViewButtons({ view, shown, onView }: { readonly view: View | null; read
 }
 
 /** A small N with the arrow as it lies on the paper. */
-function NorthMark({ view }: { readonly view: View }) {
+function NorthMark({ view, className }: { readonly view: View; readonly className?: string }) {
   return (
-    <span aria-hidden className="inline-flex items-center gap-0.5 text-xs">
+    <span aria-hidden className={clsx("inline-flex items-center gap-0.5 text-xs", className)}>
       N
       <svg viewBox="0 0 16 16" className="size-4" fill="none" stroke="currentColor" strokeWidth="1.6">
         <path d="M8 14V2M4.5 6 8 2l3.5 4" transform={`rotate(${NORTH_DEG[view]} 8 8)`} />
