@@ -17,6 +17,7 @@ export async function recordWork(context: CommandContext, spoolId: string, form:
   const spool = await inShop(viewer).locked(Spool, spoolId, tx);
   const live = (await revisionsOf(viewer, spoolId, tx)).find((revision) => isLive(revision.state));
   if (live === undefined) throw refuseConflict("Work is recorded against a revision FOR FABRICATION; this spool has none.");
+  if (live.state === "as-built") throw refuseConflict(`Revision ${live.code} is closed AS-BUILT. Submit a new revision before more work is recorded.`);
   if (live.hold) throw refuseConflict(`Revision ${live.code} is on HOLD. Stop work until it is released.`);
   const { input } = await frozenInput(viewer, live.id, tx);
   if (!isOnSheet(input, form)) throw refuseInvalid(`There is no ${form.mark} on revision ${live.code}. Load the page again.`, { mark: "Not on this revision." });

@@ -39,7 +39,7 @@ export async function spoolDetail(viewer: SessionViewer, spoolId: string): Promi
     draft,
     live: live === undefined ? null : { revisionId: live.id, input: shownInput((await frozenInput(viewer, live.id)).input, live) },
     work: await workEntries(viewer, spoolId),
-    can: { submit: submit === null, sign: sign === null, hold: canDo(viewer.role, "revisions.hold"), log: live !== undefined && !live.hold },
+    can: { submit: submit === null, sign: sign === null, hold: canDo(viewer.role, "revisions.hold"), log: live?.state === "for-fabrication" && !live.hold },
     why: { submit, sign },
   };
 }

@@ -195,6 +195,9 @@ describe("hold, void, as-built", () => {
     expect((await decide(asBuilt.POST, shop.inspector, deadId)).status).toBe(409);
     const built = await newLine(shop);
     expect((await decide(asBuilt.POST, shop.inspector, await signed(built))).status).toBe(200);
+    const late = { kind: "cut", ...(await firstPiece(built)), values: {} };
+    const refused = await call(work.POST, { as: shop.fitter, method: "POST", params: { spoolId: built.spoolIds[0]! }, body: late });
+    expect([refused.status, refused.json.message]).toEqual([409, expect.stringContaining("AS-BUILT")]);
     await lengthen(built, 1_500);
     const next = await submitted(built);
     expect((await signAs(shop.inspector, next)).status).toBe(200);
