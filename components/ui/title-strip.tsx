@@ -27,12 +27,12 @@ export function TitleStrip({ title, kind, trail, cells, actions }: TitleStripPro
           className="mb-1 flex flex-wrap items-center gap-x-2 text-sm"
           data-screen-only
         >
-          {trail.map((step) => (
+          {trail.map((step, at) => (
             <span key={step.href} className="inline-flex items-center gap-2">
+              {at > 0 ? <span aria-hidden>/</span> : null}
               <Link href={step.href} className="inked inline-flex min-h-8 items-center">
                 {step.label}
               </Link>
-              <span aria-hidden>/</span>
             </span>
           ))}
         </nav>
