@@ -49,7 +49,7 @@ export function demoSheetInput({ document, spool, name }: DemoSpool, size: Sheet
       fields: [{ label: "SHOP ORDER", value: "CB-2614" }], logo: { key: "demo-logo", type: "image/svg+xml" },
     },
     revision: {
-      sheetNumber: isDraft ? "" : `${String(number).padStart(4, "0")}`, code: isDraft ? "" : "A", state, hold: false,
+      sheetNumber: isDraft ? "" : String(number).padStart(4, "0"), code: isDraft ? "" : "A", state, hold: false,
       rows: state === "for-fabrication" || state === "as-built" ? [row] : [],
       drawnBy: DRAWN_BY, checkedBy: isDraft ? "" : CHECKED_BY, issuedAt: "2026-11-16T15:20:00Z",
       statusUrl: isDraft ? "" : `https://sheets.copperbay.example/status/demo-sheet-${String(number).padStart(8, "0")}`,
