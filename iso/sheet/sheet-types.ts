@@ -26,6 +26,8 @@ export interface TitleBlock {
   readonly project: string;
   readonly jobNumber: string;
   readonly area: string;
+  /** How far plant north lies from true north, degrees clockwise; absent = not entered. */
+  readonly plantNorthDeg?: number;
   /** Extra labelled fields, as entered, in order. At most 6. */
   readonly fields: readonly { readonly label: string; readonly value: string }[];
   /** Content of the logo: key of the object store and type; bytes are handed to the painter. */

@@ -89,7 +89,7 @@ function lineFields(facts: SheetFacts): Field[] {
     ...(pipe.specification.trim() === "" ? [] : [field("SPEC", pipe.specification)]),
     field("UNITS", facts.input.units === "metric" ? "millimetres" : "feet and inches"),
     field("SCALE", "NTS"),
-    field("NORTH", "PLANT N, see arrow"),
+    field("NORTH", northText(facts.input.titleBlock.plantNorthDeg)),
   ];
 }
 
@@ -129,4 +129,9 @@ function weightText(facts: SheetFacts): string {
 export function issuedText(iso: string): string {
   const match = /^(\d{4}-\d{2}-\d{2})T(\d{2}:\d{2})(?::\d{2}(?:\.\d+)?)?Z$/.exec(iso);
   return match ? `${match[1]} ${match[2]} UTC` : iso;
+}
+
+/** Where plant north lies, as the job says; the arrow on the drawing shows plant north. */
+function northText(plantNorthDeg: number | undefined): string {
+  return plantNorthDeg ? `PLANT N ${plantNorthDeg}° clockwise of true N` : "PLANT N, see arrow";
 }

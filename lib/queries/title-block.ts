@@ -9,6 +9,7 @@ export function titleBlockOf(shop: Shop, job: Job): TitleBlock {
     project: job.title,
     jobNumber: job.number,
     area: job.area,
+    plantNorthDeg: job.settings.plantNorthDeg,
     fields: job.settings.fields,
     logo: job.settings.logo ?? shop.settings.logo,
   };

@@ -6,7 +6,6 @@ import {
   buildModel,
   formatLength,
   type Joint,
-  type LineSettings,
   type Model,
   type Offset,
   type Piece,
@@ -82,6 +81,7 @@ export function sheetChanges(before: SheetInput | null, after: SheetInput): Chan
     ...mapChanges(a.joints, b.joints, "weld", (j) => ({ mark: j.number ?? "", text: `${j.kind}, ${j.place}`, pointId: j.pointId }), a, b),
     ...mapChanges(a.materials, b.materials, "material", (text, _side, key) => ({ mark: key, text, pointId: null }), a, b),
     ...settingChanges(before.document.settings, after.document.settings),
+    ...settingChanges(before.titleBlock, after.titleBlock),
     ...noteChanges(before.document.notes, after.document.notes),
   ];
 }
@@ -150,15 +150,15 @@ function itemText(point: Point): string {
   return [kind, ...facts].join(" ");
 }
 
-function settingChanges(before: LineSettings, after: LineSettings): Change[] {
+function settingChanges(before: object, after: object): Change[] {
   const flatBefore = flatten(before);
   const flatAfter = flatten(after);
   const keys = [...new Set([...flatBefore.keys(), ...flatAfter.keys()])];
   return keys
     .filter((key) => flatBefore.get(key) !== flatAfter.get(key))
     .map((key) => {
-      const then = flatBefore.get(key) ?? null;
-      const now = flatAfter.get(key) ?? null;
+      const then = flatBefore.get(key) || null;
+      const now = flatAfter.get(key) || null;
       return { kind: "changed", what: "setting", mark: key, text: `${key}: ${then ?? "none"} is now ${now ?? "none"}`, before: then, after: now, pointId: null } as const;
     });
 }
@@ -168,9 +168,15 @@ function flatten(value: object, path: readonly string[] = []): Map<string, strin
   for (const [key, inner] of Object.entries(value)) {
     const here = [...path, words(key)];
     if (inner !== null && typeof inner === "object" && !Array.isArray(inner)) flatten(inner, here).forEach((v, k) => flat.set(k, v));
-    else if (inner !== null) flat.set(here.join(", "), Array.isArray(inner) ? inner.join(" x ") : String(inner));
+    else if (inner !== null) flat.set(here.join(", "), Array.isArray(inner) ? inner.map(plainValue).join(" x ") : plainValue(inner));
   }
   return flat;
+}
+
+/** As a reader wants it: nothing finer than a thousandth, parts of a row side by side. */
+function plainValue(value: unknown): string {
+  if (typeof value === "number") return String(Number(value.toFixed(3)));
+  return value !== null && typeof value === "object" ? Object.values(value).join(" ") : String(value);
 }
 
 /** "rootGapMm" -> "root gap (mm)". */
