@@ -14,6 +14,7 @@ import {
   type Spool,
 } from "@/iso";
 import type { Change } from "./api-types";
+import { spoolPointIds } from "./spool-points";
 
 interface Side {
   readonly input: SheetInput;
@@ -43,12 +44,8 @@ function sideOf(input: SheetInput): Side {
   };
 }
 
-/** Points of the spool: where its components, joints and the legs of its pieces stand. */
 function pointsOf(input: SheetInput, model: Model, spool: Spool | null): ReadonlyMap<string, Point> {
-  const ids = new Set<string>();
-  const parts = new Set([...(spool?.componentIds ?? []), ...(spool?.pieceKeys ?? [])]);
-  for (const component of model.components) if (parts.has(component.id)) ids.add(component.pointId);
-  for (const piece of model.pieces) if (parts.has(piece.key)) ids.add(piece.legId);
+  const ids = spool === null ? new Set<string>() : spoolPointIds(model, spool);
   const all = input.document.runs.flatMap((run) => run.points);
   return new Map(all.filter((point) => ids.has(point.id)).map((point) => [point.id, point]));
 }

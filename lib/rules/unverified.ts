@@ -1,5 +1,6 @@
 /** Dimensions nobody has verified: each must be accepted by name before a sheet is released. Pure. */
 import { buildModel, formatLength, type SheetInput } from "@/iso";
+import { spoolPointIds } from "./spool-points";
 
 export interface UnverifiedDimension {
   readonly pointId: string;
@@ -11,14 +12,11 @@ export interface UnverifiedDimension {
 export function unverifiedDimensions(input: SheetInput): UnverifiedDimension[] {
   const model = buildModel(input.document, input.marks, input.takeOuts);
   const spool = model.spools.find((s) => s.letter === input.spool);
-  const parts = new Set([...(spool?.pieceKeys ?? []), ...(spool?.componentIds ?? [])]);
-  const legs = new Set([
-    ...model.pieces.filter((piece) => parts.has(piece.key)).flatMap((piece) => piece.legIds ?? [piece.legId]),
-    ...model.components.filter((component) => parts.has(component.id)).map((component) => component.pointId),
-  ]);
+  if (spool === undefined) return [];
+  const points = spoolPointIds(model, spool);
   const order = input.document.runs.flatMap((run) => run.points.map((point) => point.id));
   return model.legs
-    .filter((leg) => leg.unverified && legs.has(leg.id))
+    .filter((leg) => leg.unverified && points.has(leg.id))
     .map((leg) => {
       const number = order.indexOf(leg.toPointId) + 1;
       return { pointId: leg.toPointId, text: `point ${number}, ${formatLength(leg.lengthMm, input.units)} (${leg.provenance.kind.replace("-", " ")})` };
