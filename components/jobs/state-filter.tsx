@@ -1,7 +1,6 @@
 "use client";
-import type { RevisionState } from "@/iso";
+import { STATE_WORDS, type RevisionState } from "@/iso";
 import type { LineRow } from "@/lib/rules/api-types";
-import { STATE_WORDS } from "@/lib/rules/revision-rules";
 import { Select } from "@/components/ui/field";
 
 export type StateChoice = RevisionState | "hold" | "all";

@@ -1,17 +1,6 @@
 import clsx from "clsx";
 import type { ReactNode } from "react";
-import type { RevisionState } from "@/iso";
-
-/** The words as printed; HOLD is a flag on top of a state. */
-export const STATE_WORDS: Readonly<Record<RevisionState, string>> = {
-  draft: "DRAFT",
-  "for-review": "FOR REVIEW",
-  returned: "RETURNED",
-  "for-fabrication": "FOR FABRICATION",
-  superseded: "SUPERSEDED",
-  void: "VOID",
-  "as-built": "AS-BUILT",
-};
+import { STATE_WORDS, type RevisionState } from "@/iso";
 
 const INKS: Readonly<Record<RevisionState | "hold", string>> = {
   draft: "text-soft",

@@ -9,21 +9,17 @@ import { EDGE_LINE } from "./sheet-size";
 import { baselineOf, fitText, linesHeight } from "./text-setting";
 import type { RevisionState, SheetInput } from "./sheet-types";
 
-const WORDS: Readonly<Record<RevisionState, string>> = {
+/** Words printed and shown for a state; a hold is shown beside them. */
+export const STATE_WORDS: Readonly<Record<RevisionState, string>> = {
   draft: "DRAFT", "for-review": "FOR REVIEW", returned: "RETURNED", "for-fabrication": "FOR FABRICATION",
   superseded: "SUPERSEDED", void: "VOID", "as-built": "AS-BUILT",
 };
 
-/** The word of a state, without the hold that may lie on top. */
-export function stateWord(state: RevisionState): string {
-  return WORDS[state];
-}
-
 /** Word across the page: HOLD above all that can still be held; nothing on a sheet that may be worked to. */
 export function wordAcross(state: RevisionState, hold: boolean): string | null {
-  if (state === "void" || state === "superseded") return WORDS[state];
+  if (state === "void" || state === "superseded") return STATE_WORDS[state];
   if (hold) return "HOLD";
-  return state === "for-fabrication" || state === "as-built" ? null : WORDS[state];
+  return state === "for-fabrication" || state === "as-built" ? null : STATE_WORDS[state];
 }
 
 const INKS: Readonly<Record<RevisionState, Ink>> = {
@@ -61,11 +57,11 @@ function tagText(input: SheetInput["revision"], box: PaperBox, measure: MeasureT
   const middle = (box.minX + box.maxX) / 2;
   const room = box.maxX - box.minX - 7;
   const wanted = box.maxY - box.minY > 18 ? 5 : 4;
-  const capMm = Math.max(2.5, Math.min(wanted, (room * wanted) / measure(stateWord(input.state), wanted, "bold")));
+  const capMm = Math.max(2.5, Math.min(wanted, (room * wanted) / measure(STATE_WORDS[input.state], wanted, "bold")));
   const lines = fitText(stampLine(input), room, box.maxY - box.minY > 18 ? 2 : 1, { capMm: 2.5, face: "regular" }, measure).lines;
   const top = (box.minY + box.maxY - linesHeight(1, capMm) - linesHeight(lines.length)) / 2;
   return [
-    textAt([middle, top + baselineOf(0, capMm)], stateWord(input.state), { layer: "state", anchor: "middle", capMm, face: "bold", ink: INKS[input.state] }),
+    textAt([middle, top + baselineOf(0, capMm)], STATE_WORDS[input.state], { layer: "state", anchor: "middle", capMm, face: "bold", ink: INKS[input.state] }),
     ...lines.map((line, index) => textAt([middle, top + linesHeight(1, capMm) + baselineOf(index)], line, { layer: "state", anchor: "middle" })),
   ];
 }

@@ -1,7 +1,7 @@
 /** The other decisions about a revision: return, hold, release, void, close as built. Each with a reason, logged and mailed. */
 import type { MailText } from "@/lib/rules/mail-texts";
 import { asBuiltMail, heldMail, releasedMail, returnedMail, voidedMail, type SheetFacts } from "@/lib/rules/revision-mails";
-import { STATE_WORDS } from "@/lib/rules/revision-rules";
+import { STATE_WORDS } from "@/iso";
 import { frozenInput } from "@/lib/queries/revision-facts";
 import type { CommandContext } from "@/lib/server/command";
 import { refuseConflict } from "@/lib/server/errors";

@@ -1,8 +1,8 @@
 /** What the commands of the revision desk share: the locked revision with its spool and line, and who is told. */
 import { Op } from "sequelize";
-import { STATE_WORDS, isTransition } from "@/lib/rules/revision-rules";
+import { isTransition } from "@/lib/rules/revision-rules";
 import type { Role } from "@/lib/rules/api-types";
-import type { RevisionState, SheetInput } from "@/iso";
+import { STATE_WORDS, type RevisionState, type SheetInput } from "@/iso";
 import type { ChainHead } from "@/lib/rules/audit-chain";
 import type { MailText } from "@/lib/rules/mail-texts";
 import type { SheetFacts } from "@/lib/rules/revision-mails";

@@ -2,7 +2,7 @@
  * What may happen to a revision, to whom, and what its code is. Pure: the database repeats the transitions in a
  * trigger, so that no second door exists.
  */
-import type { RevisionState } from "@/iso";
+import { STATE_WORDS, type RevisionState } from "@/iso";
 import type { Role } from "./api-types";
 
 /** Letters a revision may carry: I, O, Q, S, X and Z are left out, since they read as other characters (common practice). */
@@ -42,17 +42,6 @@ export function isTransition(from: RevisionState, to: RevisionState): boolean {
 export function isLive(state: RevisionState): boolean {
   return state === "for-fabrication" || state === "as-built";
 }
-
-/** Words printed and shown for a state; a hold is shown beside them. */
-export const STATE_WORDS: Readonly<Record<RevisionState, string>> = {
-  draft: "DRAFT",
-  "for-review": "FOR REVIEW",
-  returned: "RETURNED",
-  "for-fabrication": "FOR FABRICATION",
-  superseded: "SUPERSEDED",
-  void: "VOID",
-  "as-built": "AS-BUILT",
-};
 
 export interface SignFacts {
   readonly role: Role;
