@@ -1,7 +1,7 @@
 /**
  * The run document: what a detailer typed, versioned and zod-checked. It is the only thing an editor changes;
  * everything else (model, drawing, sheet) is computed from it. Lengths in millimetres, angles in degrees where
- * the name says Deg, x east, y north, z up.
+ * the name says Deg, x east, y north, z up. Long because the schema is read as one page.
  */
 import { z } from "zod";
 
@@ -48,6 +48,13 @@ export const offsetSchema = z.discriminatedUnion("kind", [
     length: entrySchema,
   }),
   z.object({ kind: z.literal("absolute"), e: entrySchema, n: entrySchema, u: entrySchema }),
+  /** A level direction, the length measured level along it, and the slope as typed ("1:100", "2%", "1/4 in/ft"); rise over level run, down is negative. */
+  z.object({
+    kind: z.literal("slope"),
+    direction: z.object({ text: shortText, e: unit, n: unit, u: z.literal(0) }),
+    length: entrySchema,
+    slope: z.object({ text: shortText, ratio: z.number().finite().min(-10).max(10) }),
+  }),
 ]);
 export type Offset = z.infer<typeof offsetSchema>;
 
@@ -73,14 +80,39 @@ export const itemSchema = z.discriminatedUnion("kind", [
   /** An open pipe end (bevelled), with where it goes. */
   z.object({
     kind: z.literal("end"),
-    goes: z.enum(["open", "field-weld", "continued", "existing"]),
+    goes: z.enum(["open", "field-weld", "continued", "existing", "vent", "drain"]),
     text: shortText.default(""),
   }),
-  z.object({ kind: z.literal("elbow"), elbow: z.enum(["lr-90", "sr-90", "lr-45", "trimmed-lr", "trimmed-sr", "sw-90", "sw-45"]) }),
+  z.object({
+    kind: z.literal("elbow"),
+    elbow: z.enum(["lr-90", "sr-90", "lr-45", "sr-45", "trimmed-lr", "trimmed-sr", "sw-90", "sw-45", "th-90", "th-45"]),
+  }),
+  /**
+   * A 180 degree return. The point is where the arriving centre line meets the plane of the return's two ends; the centre
+   * line leaves backwards from there, shifted `toward` by the return's centre-to-centre distance.
+   */
+  z.object({ kind: z.literal("return"), radius: z.enum(["LR", "SR"]).default("LR"), toward: axisNameSchema }),
+  /** A turn cut from pipe: `pieces` counts the two pipes it joins. Radius null = 1.5 NPS; two pieces meet at the point itself. */
+  z.object({ kind: z.literal("mitre"), pieces: z.number().int().min(2).max(5).default(3), radiusMm: positiveMm.nullable().default(null) }),
+  /** The pipe itself is bent at this centre-line radius: nothing is cut here. */
+  z.object({ kind: z.literal("bend"), radiusMm: positiveMm }),
   /** A tee at a branch point. `branchNps` null = same size as the run (straight tee). The branch is a Run with from = this point. */
-  z.object({ kind: z.literal("tee"), ends: z.enum(["butt", "socket"]).default("butt"), branchNps: npsSchema.nullable().default(null) }),
-  z.object({ kind: z.literal("outlet"), branchNps: npsSchema }),
-  z.object({ kind: z.literal("stub-in"), branchNps: npsSchema }),
+  z.object({ kind: z.literal("tee"), ends: z.enum(["butt", "socket", "threaded"]).default("butt"), branchNps: npsSchema.nullable().default(null) }),
+  /** Two branches, opposite each other. */
+  z.object({ kind: z.literal("cross"), ends: z.enum(["butt", "socket", "threaded"]).default("butt"), branchNps: npsSchema.nullable().default(null) }),
+  z.object({
+    kind: z.literal("outlet"), branchNps: npsSchema,
+    /** Absent = butt, set on. */
+    ends: z.enum(["butt", "socket", "threaded"]).optional(),
+    set: z.enum(["on", "in"]).optional(),
+  }),
+  z.object({
+    kind: z.literal("stub-in"), branchNps: npsSchema,
+    /** Absent = set on. */
+    set: z.enum(["on", "in"]).optional(),
+    /** Reinforcing pad: its outside diameter as given, mm; absent = none. */
+    padMm: positiveMm.optional(),
+  }),
   /** The point is the LARGE end (weld plane). Going down or up in size is read from the sizes. */
   z.object({
     kind: z.literal("reducer"),
@@ -93,7 +125,11 @@ export const itemSchema = z.discriminatedUnion("kind", [
   /** The point is the contact face. At a run's end the flange is the end; within a run it is a pair of flanges and a gasket. */
   z.object({
     kind: z.literal("flange"),
-    flange: z.enum(["weld-neck", "slip-on", "socket-weld", "blind"]),
+    flange: z.enum(["weld-neck", "slip-on", "socket-weld", "threaded", "lap-joint", "blind"]),
+    /** Stub end of a lap-joint flange; absent = long. */
+    stubEnd: z.enum(["long", "short"]).optional(),
+    /** Gasket of this face where it differs from the line's, mm. */
+    gasketMm: positiveMm.optional(),
     ratingClass: ratingClassSchema.nullable().default(null),
     boltHoles: boltHolesSchema.default("straddle"),
     /** For a pair within a run: which flange's face the point marks. */
@@ -105,17 +141,25 @@ export const itemSchema = z.discriminatedUnion("kind", [
   z.object({
     kind: z.literal("valve"),
     valve: z.enum(["gate", "globe", "check", "ball", "butterfly"]),
-    ends: z.enum(["flanged", "butt", "socket"]),
+    ends: z.enum(["flanged", "butt", "socket", "threaded"]),
     ratingClass: ratingClassSchema.nullable().default(null),
-    mating: z.enum(["weld-neck", "slip-on", "socket-weld"]).default("weld-neck"),
+    mating: z.enum(["weld-neck", "slip-on", "socket-weld", "threaded", "lap-joint"]).default("weld-neck"),
     /** Stem direction; null for the natural one (up, or north on a vertical pipe). */
     stem: axisNameSchema.nullable().default(null),
     /** Shop-given face to face where no table has it, mm. */
     faceToFaceMm: positiveMm.nullable().default(null),
     tag: shortText.default(""),
   }),
-  z.object({ kind: z.literal("coupling"), half: z.boolean().default(false) }),
-  z.object({ kind: z.literal("cap") }),
+  z.object({ kind: z.literal("coupling"), half: z.boolean().default(false), ends: z.enum(["socket", "threaded"]).optional() }),
+  z.object({ kind: z.literal("union"), ends: z.enum(["socket", "threaded"]).default("socket") }),
+  z.object({ kind: z.literal("cap"), ends: z.enum(["butt", "socket", "threaded"]).optional() }),
+  /** A measuring instrument: within a run it takes `lengthMm` face to face between flanges or welds, at an end it closes the run. */
+  z.object({
+    kind: z.literal("instrument"), tag: shortText.default(""),
+    ends: z.enum(["flanged", "butt", "socket", "threaded"]).default("threaded"),
+    ratingClass: ratingClassSchema.nullable().default(null),
+    lengthMm: positiveMm.default(0),
+  }),
   z.object({ kind: z.literal("support"), text: shortText.default("") }),
   /** A plain weld on straight pipe. */
   z.object({ kind: z.literal("joint") }),
@@ -132,6 +176,13 @@ export const pointSchema = z.object({
    * that takes the branch pipe, `bolts` its bolted faces (shop unless said; field opens the line there).
    */
   places: z.object({ in: placeSchema, out: placeSchema, branch: placeSchema, bolts: placeSchema }).partial().default({}),
+  /**
+   * What changes from this point on downstream (a specification break, insulation, tracing); absent = as before. Printed, and
+   * the material goes into the lists; nothing is judged by it.
+   */
+  starts: z.object({ specification: shortText, material: shortText, insulation: shortText, tracing: shortText }).partial().optional(),
+  /** True when the run was turned round an odd number of times since the point was made: `in` and `out` of its marks are swapped. */
+  flipped: z.boolean().optional(),
   /** Supplied extra length at a field-fit joint of this point, mm; null = the line's. */
   trimMm: positiveMm.nullable().default(null),
   provenance: provenanceSchema.default({ kind: "from-drawing", toleranceMm: null, by: null, at: null, second: null }),
@@ -154,6 +205,8 @@ export const runSchema = z.object({
   from: id.nullable(),
   /** null = the size of the branch (branchNps of the item it leaves from) in the line's schedule and material. */
   pipe: pipeSchema.nullable().default(null),
+  /** A run that comes back: the tee, cross, outlet or stub-in its last point meets, which closes a loop. absent = it ends by itself. */
+  to: id.optional(),
   points: z.array(pointSchema).max(MAX_POINTS),
 });
 export type Run = z.infer<typeof runSchema>;
@@ -163,8 +216,24 @@ export const allowancesSchema = z.object({
   socketPullBackMm: positiveMm,
   gasketMm: positiveMm,
   slipOnSettingMm: positiveMm,
+  /** Pipe that goes into a threaded fitting beyond what its take-out says, mm; absent = the thread's normal engagement of the tables. */
+  threadMakeUpMm: positiveMm.optional(),
 });
 export type Allowances = z.infer<typeof allowancesSchema>;
+
+/** How marks are given. Firms differ (common practice); a line keeps what its job had. */
+export const markRulesSchema = z.object({
+  weldPrefix: z.string().max(6),
+  weldStart: z.number().int().min(1).max(9_999),
+  piecePrefix: z.string().max(6),
+  pieceStart: z.number().int().min(1).max(9_999),
+  /** Something put in between marked neighbours: the forerunner's number and a letter (5A), or the next free number. */
+  added: z.enum(["letter", "next"]),
+  spools: z.enum(["letters", "numbers"]),
+});
+export type MarkRules = z.infer<typeof markRulesSchema>;
+
+export const DEFAULT_MARK_RULES: MarkRules = { weldPrefix: "", weldStart: 1, piecePrefix: "P", pieceStart: 1, added: "letter", spools: "letters" };
 
 /** What a job hands down to each new line, and what a line then owns. */
 export const lineSettingsSchema = z.object({
@@ -183,6 +252,14 @@ export const lineSettingsSchema = z.object({
   faceIncludesGasket: z.boolean(),
   /** Shipping box, mm, any order. */
   shippingBoxMm: z.tuple([positiveMm, positiveMm, positiveMm]),
+  /** Longest pipe the stock gives, mm: longer pieces are split with a weld; absent = never. */
+  stockLengthMm: positiveMm.optional(),
+  /** How far a loop may miss its own start, mm, before it is a stop; absent = 3. */
+  loopToleranceMm: positiveMm.optional(),
+  /** Class of socket-weld and threaded forged fittings; absent = 3000. */
+  forgedClass: z.union([z.literal(2000), z.literal(3000), z.literal(6000)]).optional(),
+  /** absent = DEFAULT_MARK_RULES. */
+  marks: markRulesSchema.optional(),
   /** As entered, per owner's specification; printed, never judged. */
   asEntered: z.object({ insulation: shortText, pwht: shortText, nde: shortText, test: shortText, paint: shortText }),
 });
@@ -202,6 +279,8 @@ export const runDocumentSchema = z.object({
   /** runs[0] is the main run; the others are branches. */
   runs: z.array(runSchema).min(1).max(200),
   notes: z.array(z.string().max(2_000)).max(40).default([]),
+  /** Notes of one spool's sheet only, by its letter. */
+  sheetNotes: z.array(z.object({ spool: z.string().max(12), text: z.string().max(2_000) })).max(200).optional(),
 });
 export type RunDocument = z.infer<typeof runDocumentSchema>;
 

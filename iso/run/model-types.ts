@@ -36,7 +36,7 @@ export interface Leg {
 
 export interface Port {
   /** "in" upstream, "out" downstream, "branch" the third one. */
-  readonly id: "in" | "out" | "branch";
+  readonly id: "in" | "out" | "branch" | "branch-2";
   readonly position: Vec3;
   /** Unit vector out of the component. */
   readonly direction: Vec3;
@@ -44,11 +44,12 @@ export interface Port {
 }
 
 export type ComponentKind =
-  | "elbow" | "trimmed-elbow" | "tee" | "reducing-tee" | "outlet" | "stub-in"
+  | "elbow" | "trimmed-elbow" | "return" | "mitre" | "tee" | "reducing-tee" | "cross" | "outlet" | "stub-in" | "pad"
   | "reducer-concentric" | "reducer-eccentric"
-  | "flange-weld-neck" | "flange-slip-on" | "flange-socket-weld" | "flange-blind"
-  | "gasket" | "valve" | "coupling" | "half-coupling" | "cap" | "support"
-  | "socket-elbow" | "socket-tee";
+  | "flange-weld-neck" | "flange-slip-on" | "flange-socket-weld" | "flange-threaded" | "flange-lap-joint" | "flange-blind" | "stub-end"
+  | "gasket" | "bolt-set" | "valve" | "instrument" | "coupling" | "half-coupling" | "union" | "cap" | "support"
+  /** Socket-weld or threaded forged fittings; `ends` says which. */
+  | "socket-elbow" | "socket-tee" | "socket-cross" | "socket-cap";
 
 export interface Component {
   /** Stable: built from the point's id and a role, e.g. "p7" or "p7.flange-in". */
@@ -57,7 +58,7 @@ export interface Component {
   readonly runId: string;
   readonly kind: ComponentKind;
   readonly valve: "gate" | "globe" | "check" | "ball" | "butterfly" | null;
-  readonly ends: "butt" | "socket" | "flanged" | null;
+  readonly ends: "butt" | "socket" | "threaded" | "flanged" | null;
   readonly nps: Nps;
   /** Small end, branch size; null when there is one size. */
   readonly nps2: Nps | null;
@@ -72,6 +73,12 @@ export interface Component {
   /** Elbows only. */
   readonly angleRad: number | null;
   readonly radiusMm: number | null;
+  /** Turned against the fitting before it on the same run, looking along flow, clockwise positive; null for the first and for what has no plane. */
+  readonly roll?: Roll | null;
+  /** Flanges whose holes do not straddle: degrees clockwise looked at from `from`. */
+  readonly boltTurn?: { readonly turnDeg: number; readonly from: AxisName } | null;
+  /** Bolt sets: studs (with two nuts each) of one bolted face. */
+  readonly bolts?: { readonly count: number; readonly diameter: string; readonly lengthMm: number | null } | null;
   /** A take-out used here that is from memory and not yet confirmed by the shop; its catalogue key. */
   readonly unconfirmedKey: string | null;
   /** Equal descriptions make one row of the material list. */
@@ -86,7 +93,17 @@ export interface Component {
   readonly spool: string | null;
 }
 
-export type JointKind = "butt" | "socket" | "slip-on" | "branch" | "attachment" | "bolted";
+/** A fitting's plane against the plane of the fitting before it. */
+export interface Roll {
+  readonly againstId: string;
+  /** -pi to pi, radians. */
+  readonly angleRad: number;
+  /** Arc on the pipe's outside, mm. */
+  readonly arcMm: number;
+}
+
+/** `mitre` is the oblique butt weld within a mitred turn. Threaded and bolted joints carry no weld number. */
+export type JointKind = "butt" | "socket" | "slip-on" | "branch" | "mitre" | "attachment" | "threaded" | "bolted";
 
 export interface Joint {
   /** `${pointId}:${role}` - what the marks register is keyed by; a moved point keeps its joints' keys. */
@@ -113,7 +130,7 @@ export interface Joint {
 
 /** One line of a cut length's arithmetic; the signed values sum to the exact cut length. */
 export interface CutTerm {
-  readonly kind: "centre-to-centre" | "take-out" | "root-gap" | "pull-back" | "setting" | "gasket" | "trim";
+  readonly kind: "centre-to-centre" | "take-out" | "root-gap" | "pull-back" | "make-up" | "setting" | "gasket" | "bend" | "trim";
   /** Reader's words: "37 1/2 face to centre", "weld-neck hub", "LR 90 take-out". */
   readonly label: string;
   readonly valueMm: number;
@@ -140,6 +157,8 @@ export interface Piece {
   readonly end: Vec3;
   /** Unit vector along flow. */
   readonly direction: Vec3;
+  /** Bends of the pipe itself, in flow order; absent = straight. `start`, `end` and `direction` are then those of its first and last straight. */
+  readonly bends?: readonly PieceBend[];
   readonly terms: readonly CutTerm[];
   /** Exact sum of the terms, mm; negative when it does not fit (a problem says so). */
   readonly cutLengthMm: number;
@@ -149,8 +168,19 @@ export interface Piece {
   readonly spool: string | null;
 }
 
+/** One bend of a piece: where along the cut pipe it begins, and its developed length along the centre line, mm. */
+export interface PieceBend {
+  readonly pointId: string;
+  readonly angleRad: number;
+  readonly radiusMm: number;
+  readonly startMm: number;
+  readonly developedMm: number;
+}
+
 export interface PieceEnd {
-  readonly prep: "bevel" | "square";
+  readonly prep: "bevel" | "square" | "thread" | "mitre" | "saddle";
+  /** Angle of a mitred end off square, degrees; absent = square. */
+  readonly cutAngleDeg?: number;
   readonly jointKey: string | null;
 }
 
@@ -180,8 +210,15 @@ export interface Spool {
   readonly weightKg: number;
   readonly unweighed: number;
   readonly centreOfGravity: Vec3 | null;
+  /** Water that fills it, litres, and what it then weighs, kg: pipe and butt-weld fittings at their inside; the rest is named as left out. */
+  readonly volumeL?: number;
+  readonly filledKg?: number;
+  /** Outside surface of pipe and butt-weld fittings, square metres. */
+  readonly paintM2?: number;
   /** Axis-parallel outer box, mm. */
   readonly boxMm: Vec3;
+  /** Smallest box over rotations, mm, longest first: what the shipping box is held against. */
+  readonly shippingMm?: Vec3;
   /** sha-free content key: canonical JSON of everything a bench would notice; equal strings = same spool. */
   readonly content: string;
 }
@@ -197,7 +234,16 @@ export interface Problem {
   readonly runId: string | null;
 }
 
+/** A run that comes back to its line: how far its dimensions miss the fitting it meets. */
+export interface Loop {
+  readonly runId: string;
+  readonly toPointId: string;
+  readonly missMm: Vec3;
+  readonly closes: boolean;
+}
+
 export interface Model {
+  readonly loops?: readonly Loop[];
   readonly document: RunDocument;
   readonly nodes: readonly Node[];
   readonly legs: readonly Leg[];
@@ -216,6 +262,8 @@ export interface MarksRegister {
   readonly welds: Readonly<Record<string, string>>;
   readonly pieces: Readonly<Record<string, string>>;
   readonly spools: Readonly<Record<string, string>>;
+  /** Per piece key, the joints at its ends when last marked: tells a piece whose leg was renamed by a reversal or a reorder. */
+  readonly pieceJoints?: Readonly<Record<string, readonly string[]>>;
   /** Per spool anchor, the parts it held when last marked: tells a spool that moved from one that was split or merged. */
   readonly spoolParts?: Readonly<Record<string, readonly string[]>>;
   /** Marks whose joint, piece or spool is gone: listed for ever, never reused. */
