@@ -47,6 +47,8 @@ export function goesWords(item: Item): readonly BlockLine[] {
     case "continued": return [bold(/^continued\b/i.test(text) ? text : `CONTINUED ON ${text}`.replace(/ ON $/, ""))];
     case "existing": return [bold(`EXISTING ${text} - VERIFY`.replace("  ", " "))];
     case "field-weld": return [bold(`FIELD WELD ${text ? `TO ${text}` : ""}`)];
+    case "vent": return [bold(/vent/i.test(text) ? text : `VENT ${text}`)];
+    case "drain": return [bold(/drain/i.test(text) ? text : `DRAIN ${text}`)];
     case "open": return text ? [bold(text)] : [bold(item.kind === "flange" ? "FLANGED END" : "OPEN END")];
   }
 }
