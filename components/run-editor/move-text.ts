@@ -42,6 +42,7 @@ function tripleLengths(value: Triple): readonly [Entry, Entry, Entry] {
 /** The text a Move cell shows for a stored offset: what was typed, put together again. */
 export function moveText(offset: Offset): string {
   if (offset.kind === "polar") return `${offset.direction.text.toLowerCase()} ${offset.length.text}`.trim();
+  if (offset.kind === "slope") return `${offset.direction.text.toLowerCase()} ${offset.length.text} @ ${offset.slope.text}`;
   if (offset.kind === "absolute") {
     const words = tripleLengths(offset).map((entry, slot) => axisText(entry, slot));
     return `@ ${words.join(" ")}`;
@@ -58,15 +59,26 @@ function axisText({ text, mm }: Entry, slot: number): string {
 
 /** The echo of a stored offset, in the line's units. */
 export function moveEcho(offset: Offset, units: UnitSystem): string {
+  if (offset.kind === "slope") return slopeEcho(offset, units);
   if (offset.kind !== "polar") return moveText(offset) === "" ? "" : echoTriple(offset, units);
   const direction = parseDirection(offset.direction.text);
   const words = direction.ok ? direction.understood : offset.direction.text;
   return `${formatLength(offset.length.mm, units)} ${words}`;
 }
 
+/** "10'-0" east, falls 1:100, 1 3/16" lower": the length is level, the slope as typed, what it comes to. */
+export function slopeEcho({ direction, length, slope }: Extract<Offset, { kind: "slope" }>, units: UnitSystem): string {
+  const named = parseDirection(direction.text);
+  const level = `${formatLength(length.mm, units)} ${named.ok ? named.understood : direction.text} level`;
+  if (slope.ratio === 0) return level;
+  const falls = slope.ratio < 0;
+  const drop = formatLength(Math.abs(slope.ratio * length.mm), units);
+  return `${level}, ${falls ? "falls" : "rises"} ${slope.text.replace(/^[-+]\s*/, "")}: ${drop} ${falls ? "lower" : "higher"}`;
+}
+
 /** The direction a bare length on the next row continues in, or null when this offset has none. */
 export function straightOnOf(offset: Offset): StraightOn | null {
-  if (offset.kind === "polar") return offset.direction;
+  if (offset.kind === "polar" || offset.kind === "slope") return offset.direction;
   if (offset.kind === "absolute") return null;
   const [e, n, u] = [offset.e.mm, offset.n.mm, offset.u.mm];
   const length = Math.hypot(e, n, u);

@@ -109,7 +109,7 @@ function readSecond(units: UnitSystem): (text: string) => EntryResult<Provenance
 }
 
 function offsetLengthMm(offset: Offset): number {
-  return offset.kind === "polar" ? Math.abs(offset.length.mm) : Math.hypot(offset.e.mm, offset.n.mm, offset.u.mm);
+  return offset.kind === "polar" || offset.kind === "slope" ? Math.abs(offset.length.mm) : Math.hypot(offset.e.mm, offset.n.mm, offset.u.mm);
 }
 
 /** Differences under half of what a term prints count as equal. */

@@ -25,7 +25,7 @@ export function withUnits(document: RunDocument, units: UnitSystem, meaning: Uni
 
 function withEntries(point: Point, entry: (value: Entry) => Entry): Point {
   const { offset, provenance } = point;
-  const next: Offset = offset.kind === "polar" ? { ...offset, length: entry(offset.length) } : { ...offset, e: entry(offset.e), n: entry(offset.n), u: entry(offset.u) };
+  const next: Offset = offset.kind === "polar" || offset.kind === "slope" ? { ...offset, length: entry(offset.length) } : { ...offset, e: entry(offset.e), n: entry(offset.n), u: entry(offset.u) };
   return { ...point, offset: next, provenance: { ...provenance, second: provenance.second ? entry(provenance.second) : null } };
 }
 

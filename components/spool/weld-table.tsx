@@ -9,6 +9,8 @@ const KINDS: Readonly<Record<Joint["kind"], string>> = {
   socket: "socket",
   "slip-on": "slip-on",
   branch: "branch",
+  mitre: "miter",
+  threaded: "threaded",
   attachment: "attachment",
   bolted: "bolted",
 };

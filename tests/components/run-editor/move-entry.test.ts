@@ -11,7 +11,7 @@ function offsetOf(text: string, units: "imperial" | "metric" = "imperial"): Offs
 }
 
 function enuOf(offset: Offset): readonly number[] {
-  if (offset.kind === "polar") return [offset.direction.e, offset.direction.n, offset.direction.u].map((c) => c * offset.length.mm);
+  if (offset.kind === "polar" || offset.kind === "slope") return [offset.direction.e, offset.direction.n, offset.direction.u].map((c) => c * offset.length.mm);
   return [offset.e.mm, offset.n.mm, offset.u.mm];
 }
 

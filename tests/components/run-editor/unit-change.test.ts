@@ -12,7 +12,7 @@ function typed(...moves: readonly string[]): RunDocument {
 }
 
 function lengths(document: RunDocument): readonly (readonly [string, number])[] {
-  return (document.runs[0]?.points ?? []).flatMap(({ offset }) => (offset.kind === "polar" ? [[offset.length.text, offset.length.mm] as const] : [offset.e, offset.n, offset.u].filter((entry) => entry.mm !== 0).map((entry) => [entry.text, entry.mm] as const)));
+  return (document.runs[0]?.points ?? []).flatMap(({ offset }) => (offset.kind === "polar" || offset.kind === "slope" ? [[offset.length.text, offset.length.mm] as const] : [offset.e, offset.n, offset.u].filter((entry) => entry.mm !== 0).map((entry) => [entry.text, entry.mm] as const)));
 }
 
 describe("changing a line's units", () => {
