@@ -1,5 +1,6 @@
 /** Part frames: where each component's part lies on each of its legs, with its own axes on paper. */
 import type { PaperPoint } from "../geometry/types";
+import type { Item } from "../run/document";
 import type { Component } from "../run/model-types";
 import type { ArmPart } from "./arms";
 import type { DrawnEdge } from "./drawn";
@@ -10,6 +11,8 @@ import type { Projection } from "./project";
 /** One part of a symbol on one leg: its frame on paper. */
 export interface PartFrame {
   readonly component: Component;
+  /** What the detailer named at its point; null where nothing is. */
+  readonly item: Item | null;
   readonly drawn: DrawnEdge;
   readonly ink: Ink;
   readonly ref: Ref;
@@ -19,6 +22,8 @@ export interface PartFrame {
   readonly outer: number;
   /** Unit vector on paper a flange stroke lies along. */
   readonly stroke: PaperPoint;
+  /** Unit vector on paper of the pipe a branch leaves from; square to the leg where there is none. */
+  readonly run: PaperPoint;
 }
 
 /** Flange strokes stand upright on level pipe and along the east axis on a riser; square to an off-axis leg. */
@@ -27,22 +32,33 @@ function strokeDirection(projection: Projection, d: DrawnEdge): PaperPoint {
   return d.edge.real[2] !== 0 ? projection.axes[0] : projection.axes[2];
 }
 
+/** Cosine on paper above which two legs at a point count as one line. */
+const SAME_LINE = 0.97;
+
 export function partFrames(placed: Placed, drawn: readonly DrawnEdge[]): readonly PartFrame[] {
-  const { spool } = placed.sketch;
+  const items = new Map(placed.sketch.model.document.runs.flatMap((run) => run.points.map((point) => [point.id, point.item] as const)));
+  const at = new Map<string, DrawnEdge[]>();
+  for (const d of drawn) for (const id of [d.edge.from, d.edge.to]) at.set(id, [...(at.get(id) ?? []), d]);
   return drawn.flatMap((d) =>
-    ([[d.edge.fromArm.parts, d.from, 1], [d.edge.toArm.parts, d.to, -1]] as const).flatMap(([parts, origin, sign]) =>
-      parts.map((part) => frameOf(placed.projection, d, part, origin, sign, spool)),
-    ),
+    ([[d.edge.fromArm.parts, d.edge.from, d.from, 1], [d.edge.toArm.parts, d.edge.to, d.to, -1]] as const).flatMap(([parts, vertex, origin, sign]) => {
+      const run = runBeside(d, at.get(vertex) ?? []);
+      return parts.map((part) => frameOf(placed, d, part, origin, sign, run, items.get(part.component.pointId) ?? null));
+    }),
   );
 }
 
-function frameOf(projection: Projection, d: DrawnEdge, part: ArmPart, origin: PaperPoint, sign: 1 | -1, spool: string | null): PartFrame {
+function runBeside(d: DrawnEdge, others: readonly DrawnEdge[]): PaperPoint {
+  const other = others.find((o) => o !== d && Math.abs(o.direction[0] * d.direction[0] + o.direction[1] * d.direction[1]) < SAME_LINE);
+  return other ? other.direction : [-d.direction[1], d.direction[0]];
+}
+
+function frameOf(placed: Placed, d: DrawnEdge, part: ArmPart, origin: PaperPoint, sign: 1 | -1, run: PaperPoint, item: Item | null): PartFrame {
   const [ux, uy] = [d.direction[0] * sign, d.direction[1] * sign];
   return {
-    component: part.component, drawn: d, inner: part.inner, outer: part.outer,
-    ink: spool !== null && part.component.spool !== spool ? "grey" : "ink",
+    component: part.component, item, drawn: d, inner: part.inner, outer: part.outer, run,
+    ink: placed.sketch.isOwn(part.component.id) ? "ink" : "grey",
     ref: { kind: "component", id: part.component.id },
     at: (out, side) => [origin[0] + ux * out - uy * side, origin[1] + uy * out + ux * side],
-    stroke: strokeDirection(projection, d),
+    stroke: strokeDirection(placed.projection, d),
   };
 }
