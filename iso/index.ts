@@ -9,6 +9,7 @@ export * from "./geometry/tolerances";
 // units
 export * from "./units/length";
 export * from "./units/direction";
+export * from "./units/slope";
 export * from "./units/format";
 
 // catalogue
@@ -37,6 +38,7 @@ export * from "./run/axes";
 // draw
 export * from "./draw/drawing-types";
 export { drawModel } from "./draw/draw-model";
+export { drawSheets, type SheetsOptions } from "./draw/draw-sheets";
 export { proposeView } from "./draw/orient";
 export * from "./draw/svg";
 export { inkBounds } from "./draw/item-bounds";
@@ -46,3 +48,7 @@ export * from "./sheet/sheet-types";
 export * from "./sheet/sheet-size";
 export * from "./sheet/compose";
 export * from "./sheet/state-mark";
+export { sheetFacts, sizeText as pipeSizeText, type SheetFacts } from "./sheet/sheet-facts";
+
+// exchange
+export { drawingDxf, dxfLayer } from "./exchange/dxf";

@@ -1,27 +1,21 @@
 /**
  * The run document: what a detailer typed, versioned and zod-checked. It is the only thing an editor changes;
  * everything else (model, drawing, sheet) is computed from it. Lengths in millimetres, angles in degrees where
- * the name says Deg, x east, y north, z up. Long because the schema is read as one page.
+ * the name says Deg, x east, y north, z up. Items stand in item-schema.ts, settings in settings-schema.ts.
  */
 import { z } from "zod";
+import { itemSchema } from "./item-schema";
+import { idSchema as id, lengthMmSchema as lengthMm, positiveMmSchema as positiveMm, shortTextSchema as shortText } from "./scalar-schemas";
+import { lineSettingsSchema, pipeSchema } from "./settings-schema";
 
-/** Longest length a field accepts: one kilometre. Keeps arithmetic finite and typing slips visible. */
-export const MAX_LENGTH_MM = 1_000_000;
+export { MAX_LENGTH_MM } from "./scalar-schemas";
+export * from "./item-schema";
+export * from "./settings-schema";
+
 /** Most points one line may hold. */
 export const MAX_POINTS = 2_000;
 
-const id = z.string().regex(/^[A-Za-z0-9_-]{1,40}$/);
-const lengthMm = z.number().finite().min(-MAX_LENGTH_MM).max(MAX_LENGTH_MM);
-const positiveMm = z.number().finite().min(0).max(MAX_LENGTH_MM);
-const shortText = z.string().max(120);
 const unit = z.number().finite().min(-1).max(1);
-
-export const NPS_SIZES = ["1/2","3/4","1","1-1/4","1-1/2","2","2-1/2","3","3-1/2","4","5","6","8","10","12","14","16","18","20","22","24"] as const;
-export const npsSchema = z.enum(NPS_SIZES);
-export type Nps = z.infer<typeof npsSchema>;
-
-export const unitSystemSchema = z.enum(["imperial", "metric"]);
-export type UnitSystem = z.infer<typeof unitSystemSchema>;
 
 /** Where a number came from (printed on the sheet; assumed numbers and single readings block release until accepted). */
 export const provenanceSchema = z.object({
@@ -61,112 +55,6 @@ export type Offset = z.infer<typeof offsetSchema>;
 export const placeSchema = z.enum(["shop", "field", "field-fit"]);
 export type Place = z.infer<typeof placeSchema>;
 
-export const ratingClassSchema = z.union([z.literal(150), z.literal(300), z.literal(600), z.literal(900), z.literal(1500)]);
-export type RatingClass = z.infer<typeof ratingClassSchema>;
-
-/** A direction named by an axis: east, west, north, south, up, down. */
-export const axisNameSchema = z.enum(["E", "W", "N", "S", "U", "D"]);
-export type AxisName = z.infer<typeof axisNameSchema>;
-
-/** Bolt holes: straddle the natural centre line, or turned this many degrees clockwise, seen from `from`. */
-const boltHolesSchema = z.union([
-  z.literal("straddle"),
-  z.object({ turnDeg: z.number().finite().min(0).max(360), from: axisNameSchema }),
-]);
-
-export const itemSchema = z.discriminatedUnion("kind", [
-  /** Nothing named. At a change of direction the model takes the standard elbow or a trimmed one by itself. */
-  z.object({ kind: z.literal("none") }),
-  /** An open pipe end (bevelled), with where it goes. */
-  z.object({
-    kind: z.literal("end"),
-    goes: z.enum(["open", "field-weld", "continued", "existing", "vent", "drain"]),
-    text: shortText.default(""),
-  }),
-  z.object({
-    kind: z.literal("elbow"),
-    elbow: z.enum(["lr-90", "sr-90", "lr-45", "sr-45", "trimmed-lr", "trimmed-sr", "sw-90", "sw-45", "th-90", "th-45"]),
-  }),
-  /**
-   * A 180 degree return. The point is where the arriving centre line meets the plane of the return's two ends; the centre
-   * line leaves backwards from there, shifted `toward` by the return's centre-to-centre distance.
-   */
-  z.object({ kind: z.literal("return"), radius: z.enum(["LR", "SR"]).default("LR"), toward: axisNameSchema }),
-  /** A turn cut from pipe: `pieces` counts the two pipes it joins. Radius null = 1.5 NPS; two pieces meet at the point itself. */
-  z.object({ kind: z.literal("mitre"), pieces: z.number().int().min(2).max(5).default(3), radiusMm: positiveMm.nullable().default(null) }),
-  /** The pipe itself is bent at this centre-line radius: nothing is cut here. */
-  z.object({ kind: z.literal("bend"), radiusMm: positiveMm }),
-  /** A tee at a branch point. `branchNps` null = same size as the run (straight tee). The branch is a Run with from = this point. */
-  z.object({ kind: z.literal("tee"), ends: z.enum(["butt", "socket", "threaded"]).default("butt"), branchNps: npsSchema.nullable().default(null) }),
-  /** Two branches, opposite each other. */
-  z.object({ kind: z.literal("cross"), ends: z.enum(["butt", "socket", "threaded"]).default("butt"), branchNps: npsSchema.nullable().default(null) }),
-  z.object({
-    kind: z.literal("outlet"), branchNps: npsSchema,
-    /** Absent = butt, set on. */
-    ends: z.enum(["butt", "socket", "threaded"]).optional(),
-    set: z.enum(["on", "in"]).optional(),
-  }),
-  z.object({
-    kind: z.literal("stub-in"), branchNps: npsSchema,
-    /** Absent = set on. */
-    set: z.enum(["on", "in"]).optional(),
-    /** Reinforcing pad: its outside diameter as given, mm; absent = none. */
-    padMm: positiveMm.optional(),
-  }),
-  /** The point is the LARGE end (weld plane). Going down or up in size is read from the sizes. */
-  z.object({
-    kind: z.literal("reducer"),
-    shape: z.enum(["concentric", "eccentric"]),
-    toNps: npsSchema,
-    toSchedule: z.string().max(12).nullable().default(null),
-    /** Flat side of an eccentric reducer; the centre line shifts towards it. */
-    flat: axisNameSchema.nullable().default(null),
-  }),
-  /** The point is the contact face. At a run's end the flange is the end; within a run it is a pair of flanges and a gasket. */
-  z.object({
-    kind: z.literal("flange"),
-    flange: z.enum(["weld-neck", "slip-on", "socket-weld", "threaded", "lap-joint", "blind"]),
-    /** Stub end of a lap-joint flange; absent = long. */
-    stubEnd: z.enum(["long", "short"]).optional(),
-    /** Gasket of this face where it differs from the line's, mm. */
-    gasketMm: positiveMm.optional(),
-    ratingClass: ratingClassSchema.nullable().default(null),
-    boltHoles: boltHolesSchema.default("straddle"),
-    /** For a pair within a run: which flange's face the point marks. */
-    gasketSide: z.enum(["before", "after"]).default("after"),
-    goes: z.enum(["nozzle", "continued", "existing", "open"]).default("open"),
-    text: shortText.default(""),
-  }),
-  /** The point is the valve's centre. A flanged valve brings its mating flanges and gaskets. */
-  z.object({
-    kind: z.literal("valve"),
-    valve: z.enum(["gate", "globe", "check", "ball", "butterfly"]),
-    ends: z.enum(["flanged", "butt", "socket", "threaded"]),
-    ratingClass: ratingClassSchema.nullable().default(null),
-    mating: z.enum(["weld-neck", "slip-on", "socket-weld", "threaded", "lap-joint"]).default("weld-neck"),
-    /** Stem direction; null for the natural one (up, or north on a vertical pipe). */
-    stem: axisNameSchema.nullable().default(null),
-    /** Shop-given face to face where no table has it, mm. */
-    faceToFaceMm: positiveMm.nullable().default(null),
-    tag: shortText.default(""),
-  }),
-  z.object({ kind: z.literal("coupling"), half: z.boolean().default(false), ends: z.enum(["socket", "threaded"]).optional() }),
-  z.object({ kind: z.literal("union"), ends: z.enum(["socket", "threaded"]).default("socket") }),
-  z.object({ kind: z.literal("cap"), ends: z.enum(["butt", "socket", "threaded"]).optional() }),
-  /** A measuring instrument: within a run it takes `lengthMm` face to face between flanges or welds, at an end it closes the run. */
-  z.object({
-    kind: z.literal("instrument"), tag: shortText.default(""),
-    ends: z.enum(["flanged", "butt", "socket", "threaded"]).default("threaded"),
-    ratingClass: ratingClassSchema.nullable().default(null),
-    lengthMm: positiveMm.default(0),
-  }),
-  z.object({ kind: z.literal("support"), text: shortText.default("") }),
-  /** A plain weld on straight pipe. */
-  z.object({ kind: z.literal("joint") }),
-]);
-export type Item = z.infer<typeof itemSchema>;
-export type ItemKind = Item["kind"];
-
 export const pointSchema = z.object({
   id,
   offset: offsetSchema,
@@ -190,14 +78,6 @@ export const pointSchema = z.object({
 });
 export type Point = z.infer<typeof pointSchema>;
 
-export const pipeSchema = z.object({
-  nps: npsSchema,
-  schedule: z.string().min(1).max(12),
-  material: shortText,
-  specification: shortText.default(""),
-});
-export type Pipe = z.infer<typeof pipeSchema>;
-
 export const runSchema = z.object({
   id,
   name: shortText.default(""),
@@ -211,60 +91,6 @@ export const runSchema = z.object({
 });
 export type Run = z.infer<typeof runSchema>;
 
-export const allowancesSchema = z.object({
-  rootGapMm: positiveMm,
-  socketPullBackMm: positiveMm,
-  gasketMm: positiveMm,
-  slipOnSettingMm: positiveMm,
-  /** Pipe that goes into a threaded fitting beyond what its take-out says, mm; absent = the thread's normal engagement of the tables. */
-  threadMakeUpMm: positiveMm.optional(),
-});
-export type Allowances = z.infer<typeof allowancesSchema>;
-
-/** How marks are given. Firms differ (common practice); a line keeps what its job had. */
-export const markRulesSchema = z.object({
-  weldPrefix: z.string().max(6),
-  weldStart: z.number().int().min(1).max(9_999),
-  piecePrefix: z.string().max(6),
-  pieceStart: z.number().int().min(1).max(9_999),
-  /** Something put in between marked neighbours: the forerunner's number and a letter (5A), or the next free number. */
-  added: z.enum(["letter", "next"]),
-  spools: z.enum(["letters", "numbers"]),
-});
-export type MarkRules = z.infer<typeof markRulesSchema>;
-
-export const DEFAULT_MARK_RULES: MarkRules = { weldPrefix: "", weldStart: 1, piecePrefix: "P", pieceStart: 1, added: "letter", spools: "letters" };
-
-/** What a job hands down to each new line, and what a line then owns. */
-export const lineSettingsSchema = z.object({
-  units: unitSystemSchema,
-  pipe: pipeSchema,
-  elbow: z.enum(["LR", "SR"]),
-  ratingClass: ratingClassSchema,
-  allowances: allowancesSchema,
-  /** A turn within this of a standard elbow's angle takes the standard elbow (at most 3°). */
-  standardElbowWithinDeg: z.number().finite().min(0).max(3),
-  /** Shortest pipe between weld toes before a warning, mm; null = 1.5 OD (common practice), not less than 50. */
-  minimumPupMm: positiveMm.nullable(),
-  /** Supplied extra at a field-fit weld, mm (common practice 100-150 mm or 6 in). */
-  fieldTrimMm: positiveMm,
-  /** Whether a dimension to a flange face includes the gasket. */
-  faceIncludesGasket: z.boolean(),
-  /** Shipping box, mm, any order. */
-  shippingBoxMm: z.tuple([positiveMm, positiveMm, positiveMm]),
-  /** Longest pipe the stock gives, mm: longer pieces are split with a weld; absent = never. */
-  stockLengthMm: positiveMm.optional(),
-  /** How far a loop may miss its own start, mm, before it is a stop; absent = 3. */
-  loopToleranceMm: positiveMm.optional(),
-  /** Class of socket-weld and threaded forged fittings; absent = 3000. */
-  forgedClass: z.union([z.literal(2000), z.literal(3000), z.literal(6000)]).optional(),
-  /** absent = DEFAULT_MARK_RULES. */
-  marks: markRulesSchema.optional(),
-  /** As entered, per owner's specification; printed, never judged. */
-  asEntered: z.object({ insulation: shortText, pwht: shortText, nde: shortText, test: shortText, paint: shortText }),
-});
-export type LineSettings = z.infer<typeof lineSettingsSchema>;
-
 export const viewSchema = z.union([z.literal(1), z.literal(2), z.literal(3), z.literal(4)]);
 /** Looking from: 1 south-west, 2 south-east, 3 north-east, 4 north-west (the corner nearest the reader). */
 export type View = z.infer<typeof viewSchema>;
@@ -276,6 +102,8 @@ export const runDocumentSchema = z.object({
   settings: lineSettingsSchema,
   /** null = proposed by the drawing's score; set when the detailer chooses, frozen at first issue. */
   view: viewSchema.nullable().default(null),
+  /** "one": keep each spool's isometric on one sheet wherever it can stand there; absent = split when it would be crowded. */
+  sheets: z.enum(["auto", "one"]).optional(),
   /** runs[0] is the main run; the others are branches. */
   runs: z.array(runSchema).min(1).max(200),
   notes: z.array(z.string().max(2_000)).max(40).default([]),

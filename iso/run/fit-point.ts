@@ -51,6 +51,8 @@ function fitItem(p: PlacedPoint, ctx: BuildContext): Fitting {
       return fitCoupling(p, item.half, ctx);
     case "cap":
       return fitCap(p, ctx);
+    default:
+      return fittingOf({});
   }
 }
 

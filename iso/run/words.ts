@@ -26,7 +26,8 @@ type FlangeName = Extract<Item, { kind: "flange" }>["flange"];
 type ValveName = Extract<Item, { kind: "valve" }>["valve"];
 
 export const FLANGE_WORDS: Readonly<Record<FlangeName, string>> = {
-  "weld-neck": "weld-neck", "slip-on": "slip-on", "socket-weld": "socket-weld", blind: "blind",
+  "weld-neck": "weld-neck", "slip-on": "slip-on", "socket-weld": "socket-weld", threaded: "threaded",
+  "lap-joint": "lap-joint", blind: "blind",
 };
 
 export const VALVE_WORDS: Readonly<Record<ValveName, string>> = {

@@ -41,7 +41,8 @@ function quantityText(row: MaterialRow, units: UnitSystem): string {
 }
 
 const JOINT_WORDS: Readonly<Record<Joint["kind"], string>> = {
-  butt: "butt", socket: "socket fillet", "slip-on": "slip-on fillets", branch: "branch", attachment: "attachment", bolted: "bolted",
+  butt: "butt", socket: "socket fillet", "slip-on": "slip-on fillets", branch: "branch", mitre: "mitre butt", attachment: "attachment",
+  threaded: "threaded", bolted: "bolted",
 };
 const PLACE_WORDS: Readonly<Record<Joint["place"], string>> = { shop: "SHOP", field: "FW", "field-fit": "FFW" };
 

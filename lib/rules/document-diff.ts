@@ -58,6 +58,7 @@ function quantityText(quantity: number, unit: "ea" | "mm", input: SheetInput): s
 export function offsetText(offset: Offset, input: Pick<SheetInput, "units">): string {
   const text = (mm: number) => formatLength(mm, input.units);
   if (offset.kind === "polar") return `${text(offset.length.mm)} ${offset.direction.text}`;
+  if (offset.kind === "slope") return `${text(offset.length.mm)} ${offset.direction.text} at ${offset.slope.text}`;
   const parts = (["e", "n", "u"] as const)
     .filter((axis) => offset.kind === "absolute" || offset[axis].mm !== 0)
     .map((axis) => `${axis.toUpperCase()} ${text(offset[axis].mm)}`);
