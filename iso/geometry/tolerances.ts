@@ -74,3 +74,6 @@ export const FOLD_RAD = Math.PI / 180;
 
 /** Unit-less. What is left of a unit vector across an axis must be longer than this to give a direction of its own. */
 export const NEARLY_ALONG = 1e-6;
+
+/** Paper millimetres. A curve written as chords stays within this: a tenth of the thinnest line. */
+export const FLATTEN_MM = 0.02;
