@@ -33,6 +33,12 @@ export * from "./run/marks";
 export * from "./run/mark-names";
 export * from "./run/defaults";
 export * from "./run/edit";
+export * from "./run/edit-result";
+export * from "./run/entry-words";
+export * from "./run/reorder";
+export * from "./run/reverse";
+export * from "./run/mirror";
+export * from "./run/insert-line";
 export * from "./run/axes";
 
 // draw

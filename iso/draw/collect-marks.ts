@@ -6,7 +6,7 @@ import type { Piece } from "../run/model-types";
 import type { DrawOptions, Ref } from "./drawing-types";
 import type { Label } from "./label-candidates";
 import { marksLabel, type Mark } from "./mark-labels";
-import { ELBOW_KINDS } from "./pipe";
+import { TURN_KINDS } from "./turns";
 import type { Placed } from "./place";
 import * as size from "./sizes";
 import { partFrames, type PartFrame } from "./part-frames";
@@ -97,7 +97,7 @@ function componentAnchor(placed: Placed, kind: string, pointId: string, frames: 
   const [a, b] = frames;
   if (!a) return corner ? { anchors: [corner], clear: 0.5, along: [] } : null;
   const along = frames.map((frame) => frame.drawn.direction);
-  if (ELBOW_KINDS.has(a.component.kind) && corner && b) {
+  if (TURN_KINDS.has(a.component.kind) && corner && b) {
     const [p, q] = [a.at(a.outer, 0), b.at(b.outer, 0)];
     // Middle of the elbow's cubic.
     const k = kind === "socket-elbow" ? 1 : 0.664;
@@ -144,7 +144,7 @@ export function revisionMarks(placed: Placed, options: DrawOptions): readonly La
   return changed.pointIds.flatMap((id) => {
     const at = placed.paper.get(id);
     const ref: Ref = { kind: "point", id };
-    return at ? [marksLabel([{ shape: "triangle", text: changed.code, ref }], { id: `revision ${id}`, anchors: [at], clear: 1.8, along: [] }, options.measure)] : [];
+    return at && placed.sketch.isHome(id) ? [marksLabel([{ shape: "triangle", text: changed.code, ref }], { id: `revision ${id}`, anchors: [at], clear: 1.8, along: [] }, options.measure)] : [];
   });
 }
 

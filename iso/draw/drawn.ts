@@ -70,14 +70,14 @@ export interface DrawnJoint {
 export function drawnJoints(placed: Placed, drawn: readonly DrawnEdge[]): readonly DrawnJoint[] {
   const byEdge = new Map(drawn.map((d) => [d.edge.id, d]));
   return placed.sketch.joints.flatMap((joint) => {
-    const edges = (placed.sketch.edgesAt.get(joint.pointId) ?? []).flatMap((edge) => byEdge.get(edge.id) ?? []);
+    const edges = (placed.sketch.edgesAt.get(placed.sketch.vertexOf(joint.pointId)) ?? []).flatMap((edge) => byEdge.get(edge.id) ?? []);
     let best: DrawnEdge | null = null;
     let bestMiss = Infinity;
     for (const candidate of edges) {
       const miss = missFrom(joint, candidate.edge);
       if (miss < bestMiss) [best, bestMiss] = [candidate, miss];
     }
-    const vertex = placed.paper.get(joint.pointId);
+    const vertex = placed.paper.get(placed.sketch.vertexOf(joint.pointId));
     if (best) return [{ joint, at: edgePoint(best, edgePlace(best, joint.position)), direction: best.direction }];
     return vertex ? [{ joint, at: vertex, direction: [1, 0] as PaperPoint }] : [];
   });

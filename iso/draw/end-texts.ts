@@ -65,7 +65,7 @@ function coordinates(sketch: Sketch, node: Node, item: Item): readonly BlockLine
 function stubLabels(placed: Placed, drawn: readonly DrawnEdge[], measure: MeasureText): readonly Label[] {
   const { sketch } = placed;
   if (sketch.spool === null) return [];
-  return drawn.filter((d) => d.edge.stub !== null).flatMap((d) => {
+  return drawn.filter((d) => d.edge.stub !== null && !d.edge.beyond).flatMap((d) => {
     const near = d.edge.stub === "to" ? d.edge.from : d.edge.to;
     const loose = d.edge.stub === "to" ? d.to : d.from;
     const letter = neighbourLetter(sketch, d, near);

@@ -4,14 +4,15 @@ import type { Component } from "../run/model-types";
 import type { Arm, ArmPart } from "./arms";
 import { edgePlace, edgePoint, type DrawnEdge, type PassInk } from "./drawn";
 import type { DisplayItem, Ink, Ref } from "./drawing-types";
-import { lineItem, pathItem, QUARTER_CUBIC } from "./paths";
+import { isTurnLeg } from "./paper-model";
+import { lineItem } from "./paths";
 import type { Placed } from "./place";
 import { crossingOf, remainingStretches, type Segment } from "./plane";
 import * as size from "./sizes";
+import { mitrePieces, returnInk, turnItems, TURN_KINDS, turnsOf } from "./turns";
 
-export const ELBOW_KINDS: ReadonlySet<Component["kind"]> = new Set(["elbow", "trimmed-elbow", "socket-elbow"]);
 /** Symbols that stand in place of the pipe line. */
-const SOLID_KINDS: ReadonlySet<Component["kind"]> = new Set(["valve", "reducer-concentric", "reducer-eccentric", "gasket", "cap", "flange-blind", "outlet"]);
+const SOLID_KINDS: ReadonlySet<Component["kind"]> = new Set(["valve", "reducer-concentric", "reducer-eccentric", "gasket", "cap", "socket-cap", "flange-blind", "outlet", "instrument"]);
 export const NEIGHBOUR_DASH: readonly number[] = [2.4, 1.4];
 
 /** One straight stretch of drawn pipe, as distances along its edge. */
@@ -23,7 +24,7 @@ export interface Stretch {
 }
 
 export function pipeStretches(placed: Placed, drawn: readonly DrawnEdge[]): readonly Stretch[] {
-  return drawn.flatMap((d) => {
+  return drawn.filter((d) => !isTurnLeg(d.edge.leg)).flatMap((d) => {
     const { fromArm, toArm } = d.edge;
     const cuts = [...partCuts(fromArm).map(([a, b]) => [a, b] as const), ...partCuts(toArm).map(([a, b]) => [d.length - b, d.length - a] as const)];
     const foreign = foreignRanges(placed, d);
@@ -32,22 +33,22 @@ export function pipeStretches(placed: Placed, drawn: readonly DrawnEdge[]): read
 }
 
 function partCuts(arm: Arm): readonly (readonly [number, number])[] {
-  const turns = (part: ArmPart): boolean => ELBOW_KINDS.has(part.component.kind);
+  const turns = (part: ArmPart): boolean => TURN_KINDS.has(part.component.kind);
   return arm.parts.filter((part) => turns(part) || SOLID_KINDS.has(part.component.kind)).map((part) => [part.inner, part.outer] as const);
 }
 
 /** Ranges of an edge that belong to a neighbour spool. */
 function foreignRanges(placed: Placed, d: DrawnEdge): readonly (readonly [number, number])[] {
-  const { spool } = placed.sketch;
-  if (spool === null) return [];
+  const { whole, isOwn } = placed.sketch;
+  if (whole) return [];
   const ranges: (readonly [number, number])[] = [];
   const { fromArm, toArm, pieces, stub } = d.edge;
-  for (const part of fromArm.parts) if (part.component.spool !== spool) ranges.push([part.inner, part.outer]);
-  for (const part of toArm.parts) if (part.component.spool !== spool) ranges.push([d.length - part.outer, d.length - part.inner]);
+  for (const part of fromArm.parts) if (!isOwn(part.component.id)) ranges.push([part.inner, part.outer]);
+  for (const part of toArm.parts) if (!isOwn(part.component.id)) ranges.push([d.length - part.outer, d.length - part.inner]);
   const start = stub === "from" ? 0 : fromArm.room;
   const end = stub === "to" ? d.length : d.length - toArm.room;
   if (stub || (pieces.length === 0 && d.edge.neighbour)) return [...ranges, [start, end]];
-  for (const piece of pieces) if (piece.spool !== spool) ranges.push([Math.max(start, edgePlace(d, piece.start) - 0.5), Math.min(end, edgePlace(d, piece.end) + 0.5)]);
+  for (const piece of pieces) if (!isOwn(piece.key)) ranges.push([Math.max(start, edgePlace(d, piece.start) - 0.5), Math.min(end, edgePlace(d, piece.end) + 0.5)]);
   return ranges;
 }
 
@@ -58,33 +59,6 @@ function splitByNeighbour(drawn: DrawnEdge, from: number, to: number, foreign: r
     ...own.map(([a, b]) => ({ drawn, from: a + from, to: b + from, neighbour: false })),
     ...clipped.map(([a, b]) => ({ drawn, from: a, to: b, neighbour: true })),
   ];
-}
-
-interface Turn {
-  readonly component: Component;
-  readonly start: PaperPoint;
-  readonly corner: PaperPoint;
-  readonly end: PaperPoint;
-  readonly neighbour: boolean;
-}
-
-function turnsOf(placed: Placed, drawn: readonly DrawnEdge[]): readonly Turn[] {
-  const ends = new Map<string, { component: Component; points: PaperPoint[]; corner: PaperPoint }>();
-  for (const d of drawn) {
-    for (const [arm, outward, corner] of [[d.edge.fromArm, 1, d.from], [d.edge.toArm, -1, d.to]] as const) {
-      for (const part of arm.parts) {
-        if (!ELBOW_KINDS.has(part.component.kind)) continue;
-        const entry = ends.get(part.component.id) ?? { component: part.component, points: [], corner };
-        entry.points.push([corner[0] + d.direction[0] * outward * part.outer, corner[1] + d.direction[1] * outward * part.outer]);
-        ends.set(part.component.id, entry);
-      }
-    }
-  }
-  return [...ends.values()].flatMap(({ component, points, corner }) => {
-    const [start, end] = points;
-    if (!start) return [];
-    return [{ component, start, corner, end: end ?? corner, neighbour: placed.sketch.spool !== null && component.spool !== placed.sketch.spool }];
-  });
 }
 
 export function pipePass(placed: Placed, drawn: readonly DrawnEdge[], stretches: readonly Stretch[]): PassInk {
@@ -102,28 +76,17 @@ export function pipePass(placed: Placed, drawn: readonly DrawnEdge[], stretches:
     }
   });
   for (const turn of turnsOf(placed, drawn)) {
-    items.push(turnPath(turn));
+    items.push(...turnItems(turn, mitrePieces(placed, turn.component.pointId)));
     const middle: PaperPoint = [turn.start[0] / 4 + turn.corner[0] / 2 + turn.end[0] / 4, turn.start[1] / 4 + turn.corner[1] / 2 + turn.end[1] / 4];
     heavy.push({ from: turn.start, to: middle }, { from: middle, to: turn.end });
   }
-  return { items, heavy, light: [] };
+  const returns = returnInk(placed, drawn);
+  return { items: [...items, ...returns.items], heavy: [...heavy, ...returns.heavy], light: [] };
 }
 
 function pipeLine(ref: Ref, from: PaperPoint, to: PaperPoint, neighbour: boolean): DisplayItem {
   const ink: Ink = neighbour ? "grey" : "ink";
   return neighbour ? lineItem("pipe", ref, from, to, size.PIPE_WIDTH, ink, NEIGHBOUR_DASH) : lineItem("pipe", ref, from, to, size.PIPE_WIDTH, ink);
-}
-
-/** An elbow: a cubic that leaves both tangents smoothly; a socket elbow keeps a sharp corner. */
-function turnPath(turn: Turn): DisplayItem {
-  const { start, corner, end, component } = turn;
-  const ref: Ref = { kind: "component", id: component.id };
-  const brush = { stroke: turn.neighbour ? ("grey" as const) : ("ink" as const), widthMm: size.PIPE_WIDTH, ...(turn.neighbour ? { dash: NEIGHBOUR_DASH } : {}) };
-  if (component.kind === "socket-elbow") {
-    return pathItem("pipe", ref, [{ op: "M", to: start }, { op: "L", to: corner }, { op: "L", to: end }], brush);
-  }
-  const towards = (p: PaperPoint): PaperPoint => [p[0] + (corner[0] - p[0]) * QUARTER_CUBIC, p[1] + (corner[1] - p[1]) * QUARTER_CUBIC];
-  return pathItem("pipe", ref, [{ op: "M", to: start }, { op: "C", c1: towards(start), c2: towards(end), to: end }], brush);
 }
 
 /** For each stretch the intervals to leave open where a nearer pipe crosses it. Depth is taken from drawn coordinates. */

@@ -6,6 +6,7 @@ import { vecAddScaled, vecDot, vecLength, vecReject, vecScale, vecSub } from "..
 import type { Vec3 } from "../geometry/types";
 import type { Component, Joint, Leg, Model, Node, Piece } from "../run/model-types";
 import { armAlong, NO_ARM, type Arm } from "./arms";
+import { paperModel } from "./paper-model";
 import * as size from "./sizes";
 
 export interface SketchVertex {
@@ -30,8 +31,10 @@ export interface SketchEdge {
   readonly pieces: readonly Piece[];
   /** The end that is loose: the leg belongs to a neighbour spool and only a stub of it is drawn. */
   readonly stub: "from" | "to" | null;
-  /** Belongs to a neighbour spool. */
+  /** Belongs to a neighbour spool, or to another sheet. */
   readonly neighbour: boolean;
+  /** A stub that hangs on a point of another sheet: drawn, but its words stand there. */
+  readonly beyond: boolean;
 }
 
 export interface Sketch {
@@ -45,6 +48,14 @@ export interface Sketch {
   readonly components: readonly Component[];
   readonly joints: readonly Joint[];
   readonly pieces: readonly Piece[];
+  /** Nothing is left out: neither neighbour spools nor what other sheets show. */
+  readonly whole: boolean;
+  /** False for a component or piece of a neighbour spool, or of another sheet. */
+  readonly isOwn: (id: string) => boolean;
+  /** False for a point whose fitting another sheet shows. */
+  readonly isHome: (pointId: string) => boolean;
+  /** Vertex a point of the document stands at: its own, or where its run comes back. */
+  readonly vertexOf: (pointId: string) => string;
 }
 
 export function groupBy<T>(items: readonly T[], key: (item: T) => string): Map<string, T[]> {
@@ -71,53 +82,122 @@ export function legShape(leg: Leg): { readonly real: Vec3; readonly kind: EdgeKi
   return { real, kind: "offset" };
 }
 
-/** @param spool its letter, or null for the whole line */
-export function sketchOf(model: Model, spool: string | null): Sketch {
-  const nodes = new Map(model.nodes.map((node) => [node.pointId, node]));
-  const componentsAt = groupBy(model.components, (component) => component.pointId);
-  const piecesOfRun = groupBy(model.pieces, (piece) => piece.runId);
-  const piecesOf = new Map(model.legs.map((leg) => [leg.id, (piecesOfRun.get(leg.runId) ?? []).filter((piece) => pieceRunsAlong(piece, leg))]));
-  const legs = model.legs.filter((leg) => nodes.has(leg.fromPointId) && nodes.has(leg.toPointId));
-  const arms = (leg: Leg): [Arm, Arm] => [
-    armAlong(componentsAt.get(leg.fromPointId) ?? [], leg.from, leg.direction),
-    armAlong(componentsAt.get(leg.toPointId) ?? [], leg.to, vecScale(leg.direction, -1)),
-  ];
-  const mine = (id: string | null): boolean => spool === null || id === spool;
-  const own = legs.filter((leg) => legIsOwn(leg, arms(leg), piecesOf.get(leg.id) ?? [], spool));
-  const inside = new Set<string>(own.flatMap((leg) => [leg.fromPointId, leg.toPointId]));
-  for (const component of model.components) if (mine(component.spool)) inside.add(component.pointId);
+/** The part of a line or spool that one sheet shows in full when it is drawn on several (draw-sheets.ts). */
+export interface SheetShare {
+  readonly points: ReadonlySet<string>;
+  readonly legs: ReadonlySet<string>;
+}
 
+/**
+ * @param spool its letter, or null for the whole line
+ * @param share what of it this sheet shows; null = all
+ */
+export function sketchOf(given: Model, spool: string | null, share: SheetShare | null = null): Sketch {
+  const model = paperModel(given);
+  const meets = meetingPoints(model);
+  const vertexOf = (pointId: string): string => meets.get(pointId) ?? pointId;
+  const nodes = new Map(model.nodes.map((node) => [node.pointId, node]));
+  const componentsAt = groupBy(model.components, (component) => vertexOf(component.pointId));
+  const piecesOf = piecesOfLegs(model);
+  const legs = model.legs.filter((leg) => nodes.has(leg.fromPointId) && nodes.has(leg.toPointId));
+  const own = ownParts(model, spool, share);
   const vertices = new Map<string, SketchVertex>();
-  const edges: SketchEdge[] = [];
-  const place = (pointId: string): void => {
+  const drafts = legs.map((leg): LegDraft => {
+    const [from, to] = [vertexOf(leg.fromPointId), vertexOf(leg.toPointId)];
+    const arms: LegDraft["arms"] = [armAlong(componentsAt.get(from) ?? [], leg.from, leg.direction), armAlong(componentsAt.get(to) ?? [], leg.to, vecScale(leg.direction, -1))];
+    const pieces = piecesOf.get(leg.id) ?? [];
+    return { leg, from, to, arms, pieces, own: (share === null || share.legs.has(leg.id)) && legIsOwn(leg, arms, pieces, spool) };
+  });
+  const inside = new Set<string>();
+  for (const draft of drafts) if (draft.own) inside.add(draft.from).add(draft.to);
+  for (const component of model.components) if (own.has(component.id)) inside.add(vertexOf(component.pointId));
+  for (const pointId of inside) {
     const node = nodes.get(pointId);
     if (node) vertices.set(pointId, { id: pointId, node, position: node.position });
-  };
-  for (const pointId of inside) place(pointId);
-  for (const leg of legs) {
-    const stub = inside.has(leg.fromPointId) ? (inside.has(leg.toPointId) ? null : "to") : inside.has(leg.toPointId) ? "from" : "outside";
-    if (stub === "outside") continue;
-    const [fromArm, toArm] = arms(leg);
-    const loose = `${leg.id}~stub`;
-    if (stub === "to") vertices.set(loose, { id: loose, node: null, position: vecAddScaled(leg.from, leg.direction, Math.min(leg.lengthMm, 400)) });
-    if (stub === "from") vertices.set(loose, { id: loose, node: null, position: vecAddScaled(leg.to, leg.direction, -Math.min(leg.lengthMm, 400)) });
-    edges.push({
-      id: leg.id, leg, ...legShape(leg), stub, neighbour: !own.includes(leg), pieces: piecesOf.get(leg.id) ?? [],
-      from: stub === "from" ? loose : leg.fromPointId, to: stub === "to" ? loose : leg.toPointId,
-      fromArm: stub === "from" ? NO_ARM : fromArm, toArm: stub === "to" ? NO_ARM : toArm,
-    });
   }
-  const ownIds = new Set<string>();
-  for (const component of model.components) if (mine(component.spool)) ownIds.add(component.id);
-  for (const piece of model.pieces) if (mine(piece.spool)) ownIds.add(piece.key);
-  const joints = model.joints.filter((joint) => spool === null || joint.spool === spool || ownIds.has(joint.a ?? "") || ownIds.has(joint.b ?? ""));
+  const edges = drafts.flatMap((draft) => edgeOf(draft, inside, share, vertices));
   const edgesAt = new Map<string, SketchEdge[]>();
-  for (const edge of edges) for (const id of [edge.from, edge.to]) edgesAt.set(id, [...(edgesAt.get(id) ?? []), edge]);
+  for (const edge of edges) for (const id of [edge.from, edge.to]) {
+    const there = edgesAt.get(id);
+    if (there) there.push(edge);
+    else edgesAt.set(id, [edge]);
+  }
+  const all = spool === null && share === null;
   return {
-    model, spool, vertices, edges, edgesAt, componentsAt, joints,
-    components: model.components.filter((component) => ownIds.has(component.id)),
-    pieces: model.pieces.filter((piece) => ownIds.has(piece.key)),
+    model, spool, vertices, edges, edgesAt, componentsAt, vertexOf,
+    joints: all ? model.joints : model.joints.filter((joint) => jointIsOwn(joint, own, spool, share)),
+    whole: all,
+    isOwn: (id) => all || own.has(id),
+    isHome: (pointId) => share === null || share.points.has(vertexOf(pointId)),
+    components: model.components.filter((component) => own.has(component.id)),
+    pieces: model.pieces.filter((piece) => own.has(piece.key)),
   };
+}
+
+function jointIsOwn(joint: Joint, own: ReadonlySet<string>, spool: string | null, share: SheetShare | null): boolean {
+  if (own.has(joint.a ?? "") || own.has(joint.b ?? "")) return true;
+  if (share === null) return joint.spool === spool;
+  return joint.a === null && joint.b === null && share.points.has(joint.pointId) && (spool === null || joint.spool === spool);
+}
+
+interface LegDraft {
+  readonly leg: Leg;
+  readonly from: string;
+  readonly to: string;
+  readonly arms: readonly [Arm, Arm];
+  readonly pieces: readonly Piece[];
+  readonly own: boolean;
+}
+
+/** Longest real length of a neighbour's leg that counts for where its stub points, mm. */
+const STUB_REAL_MM = 400;
+
+function edgeOf(draft: LegDraft, inside: ReadonlySet<string>, share: SheetShare | null, vertices: Map<string, SketchVertex>): readonly SketchEdge[] {
+  const { leg, from, to, arms, pieces, own } = draft;
+  const stub = inside.has(from) ? (inside.has(to) ? null : "to") : inside.has(to) ? "from" : "outside";
+  if (stub === "outside") return [];
+  const loose = `${leg.id}~stub`;
+  const reach = Math.min(leg.lengthMm, STUB_REAL_MM);
+  if (stub === "to") vertices.set(loose, { id: loose, node: null, position: vecAddScaled(leg.from, leg.direction, reach) });
+  if (stub === "from") vertices.set(loose, { id: loose, node: null, position: vecAddScaled(leg.to, leg.direction, -reach) });
+  const near = stub === "to" ? from : to;
+  return [{
+    id: leg.id, leg, ...legShape(leg), stub, neighbour: !own, pieces, beyond: stub !== null && share !== null && !share.points.has(near),
+    from: stub === "from" ? loose : from, to: stub === "to" ? loose : to,
+    fromArm: stub === "from" ? NO_ARM : arms[0], toArm: stub === "to" ? NO_ARM : arms[1],
+  }];
+}
+
+/** Where a run comes back to a fitting and closes, its last point is that fitting's point on paper. */
+function meetingPoints(model: Model): ReadonlyMap<string, string> {
+  const meets = new Map<string, string>();
+  const open = new Set((model.loops ?? []).filter((loop) => !loop.closes).map((loop) => loop.runId));
+  for (const run of model.document.runs) {
+    const last = run.points[run.points.length - 1];
+    if (run.to !== undefined && last && last.id !== run.to && !open.has(run.id)) meets.set(last.id, run.to);
+  }
+  return meets;
+}
+
+function ownParts(model: Model, spool: string | null, share: SheetShare | null): ReadonlySet<string> {
+  const own = new Set<string>();
+  for (const { id, pointId, spool: letter } of model.components) if ((spool === null || letter === spool) && (share === null || share.points.has(pointId))) own.add(id);
+  for (const { key, legId, spool: letter } of model.pieces) if ((spool === null || letter === spool) && (share === null || share.legs.has(legId))) own.add(key);
+  return own;
+}
+
+/** The pieces of each leg; one piece may pass through several (past a support or an outlet). */
+function piecesOfLegs(model: Model): ReadonlyMap<string, readonly Piece[]> {
+  const found = new Map<string, Piece[]>();
+  const add = (legId: string, piece: Piece): void => {
+    const there = found.get(legId);
+    if (there) there.push(piece);
+    else found.set(legId, [piece]);
+  };
+  const unsaid = groupBy(model.pieces.filter((piece) => piece.legIds === undefined), (piece) => piece.runId);
+  for (const piece of model.pieces) for (const legId of piece.legIds ?? []) add(legId, piece);
+  if (unsaid.size > 0) for (const leg of model.legs) for (const piece of unsaid.get(leg.runId) ?? []) if (pieceRunsAlong(piece, leg)) add(leg.id, piece);
+  return found;
 }
 
 /** One piece may pass through several legs (past a support or an outlet): it counts on each leg it shares a length with. */
