@@ -5,6 +5,7 @@
  */
 import type { Nps } from "../run/document";
 
+/** Socket-welding fittings start at class 3000. */
 export type SocketClass = 3000 | 6000;
 
 export const SOCKET_SOURCES: Readonly<Record<SocketClass, string>> = {

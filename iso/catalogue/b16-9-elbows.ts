@@ -1,4 +1,4 @@
-/** ASME B16.9 butt-welding elbows and caps: inches as exact fractions, and the tables' own millimetre columns. */
+/** ASME B16.9 butt-welding elbows: inches as exact fractions, and the tables' own millimetre columns. */
 import { sizeRows, type SizeRow, type SizeTuple } from "./row";
 
 const SOURCES = [
@@ -8,7 +8,7 @@ const SOURCES = [
   "ASME B16.9 (wermac.org/fittings/dim_elbows_b.html; scribd.com/document/727609779; scribd.com/doc/205091102)",
   "ASME B16.9 (fortunefittings.in/index.php/dimensions; scribd.com/document/727609779; arfluengineering.com/Forge_Fittings.html; scribd.com/doc/205091102)",
   "ASME B16.9 (fortunefittings.in/index.php/dimensions; scribd.com/document/727609779; arfluengineering.com/Forge_Fittings.html)",
-  "ASME B16.9 (alloysteelfittings.com/dim_caps.html; arfluengineering.com/Forge_Fittings.html)",
+  "ASME B16.9 (from memory)",
 ] as const;
 
 const rows = (tuples: readonly SizeTuple[]) => sizeRows(tuples, SOURCES);
@@ -23,6 +23,7 @@ export const LR_90_ROWS: readonly SizeRow[] = rows([
   ["2", 3, 76, "partial", 0],
   ["2-1/2", 3.75, 95, "partial", 0],
   ["3", 4.5, 114, "partial", 0],
+  ["3-1/2", 5.25, 133, "yes", 6],
   ["4", 6, 152, "partial", 0],
   ["5", 7.5, 190, "partial", 0],
   ["6", 9, 229, "partial", 0],
@@ -33,6 +34,7 @@ export const LR_90_ROWS: readonly SizeRow[] = rows([
   ["16", 24, 610, "partial", 0],
   ["18", 27, 686, "partial", 0],
   ["20", 30, 762, "partial", 0],
+  ["22", 33, 838, "yes", 6],
   ["24", 36, 914, "partial", 1],
 ]);
 
@@ -44,6 +46,7 @@ export const SR_90_ROWS: readonly SizeRow[] = rows([
   ["2", 2, 51, "partial", 2],
   ["2-1/2", 2.5, 64, "partial", 2],
   ["3", 3, 76, "partial", 2],
+  ["3-1/2", 3.5, 89, "yes", 6],
   ["4", 4, 102, "partial", 2],
   ["5", 5, 127, "partial", 2],
   ["6", 6, 152, "partial", 2],
@@ -54,6 +57,7 @@ export const SR_90_ROWS: readonly SizeRow[] = rows([
   ["16", 16, 406, "partial", 2],
   ["18", 18, 457, "partial", 2],
   ["20", 20, 508, "partial", 2],
+  ["22", 22, 559, "yes", 6],
   ["24", 24, 610, "partial", 2],
 ]);
 
@@ -67,6 +71,7 @@ export const LR_45_ROWS: readonly SizeRow[] = rows([
   ["2", 1.375, 35, "partial", 4],
   ["2-1/2", 1.75, 44, "partial", 4],
   ["3", 2, 51, "partial", 4],
+  ["3-1/2", 2.25, 57, "yes", 6],
   ["4", 2.5, 64, "partial", 4],
   ["5", 3.125, 79, "partial", 4],
   ["6", 3.75, 95, "partial", 4],
@@ -77,28 +82,6 @@ export const LR_45_ROWS: readonly SizeRow[] = rows([
   ["16", 10, 254, "partial", 4],
   ["18", 11.25, 286, "partial", 4],
   ["20", 12.5, 318, "partial", 4],
+  ["22", 13.5, 343, "yes", 6],
   ["24", 15, 381, "partial", 5],
-]);
-
-/** Caps: length E, for walls up to the tabulated limit (heavier caps are longer). */
-export const CAP_ROWS: readonly SizeRow[] = rows([
-  ["1/2", 1, 25, "partial", 6],
-  ["3/4", 1, 25, "partial", 6],
-  ["1", 1.5, 38, "partial", 6],
-  ["1-1/4", 1.5, 38, "partial", 6],
-  ["1-1/2", 1.5, 38, "partial", 6],
-  ["2", 1.5, 38, "partial", 6],
-  ["2-1/2", 1.5, 38, "partial", 6],
-  ["3", 2, 51, "partial", 6],
-  ["4", 2.5, 64, "partial", 6],
-  ["5", 3, 76, "partial", 6],
-  ["6", 3.5, 89, "partial", 6],
-  ["8", 4, 102, "partial", 6],
-  ["10", 5, 127, "partial", 6],
-  ["12", 6, 152, "partial", 6],
-  ["14", 6.5, 165, "partial", 6],
-  ["16", 7, 178, "partial", 6],
-  ["18", 8, 203, "partial", 6],
-  ["20", 9, 229, "partial", 6],
-  ["24", 10.5, 267, "partial", 6],
 ]);

@@ -79,6 +79,14 @@ const TUPLES: readonly PairTuple[] = [
   ["24", "20", 20, null, "yes", 3],
   ["24", "18", 20, null, "yes", 3],
   ["24", "16", 20, null, "yes", 3],
+  ["3-1/2", "3", 4, 102, "yes", 3],
+  ["3-1/2", "2-1/2", 4, 102, "yes", 3],
+  ["3-1/2", "2", 4, 102, "yes", 3],
+  ["4", "3-1/2", 4, 102, "yes", 3],
+  ["22", "20", 20, 508, "yes", 3],
+  ["22", "18", 20, 508, "yes", 3],
+  ["22", "16", 20, 508, "yes", 3],
+  ["24", "22", 20, 508, "yes", 3],
 ];
 
 export const REDUCER_ROWS: readonly PairRow[] = pairRows(TUPLES, SOURCES);

@@ -8,8 +8,10 @@ import type { TakeOutWord } from "../run/model-types";
 import { HALF_STEP_SLACK } from "../geometry/tolerances";
 import { inchesMm } from "../units/length";
 import { FLANGE_ROWS } from "./b16-5-flanges";
-import { catalogueEntries, type Entry } from "./entries";
-import { elbowKey, flangeHubKey } from "./keys";
+import { CAP_LIMIT_WALLS } from "./b16-9-caps";
+import { catalogueEntries } from "./entries";
+import type { Entry } from "./entry";
+import { capKey, elbowKey, flangeHubKey } from "./keys";
 import type { Memory } from "./row";
 
 /** A take-out as a line uses it. `unverified`: from memory, and the shop has not confirmed or measured it yet. */
@@ -32,6 +34,21 @@ export function catalogueValue(key: string, units: UnitSystem, takeOuts: readonl
   const { mm, marked } = entryMm(found, units);
   const source = found.source + marked + (word ? `; confirmed by the shop (${word.by})` : "");
   return { key, mm, source, fromMemory: found.fromMemory, unverified: found.fromMemory === "yes" && !word };
+}
+
+/** The limiting walls are printed to a hundredth of an inch (0.43 stands for XS, 0.432): half of one is no excess. */
+const LIMIT_STEP_IN = 0.005;
+
+/** Largest wall a butt-weld cap of plain length E comes in, mm (ASME B16.9, from memory); null where no table has it. */
+export function capLimitWallMm(nps: Nps): number | null {
+  const row = CAP_LIMIT_WALLS.find(([size]) => size === nps);
+  return row ? inchesMm(row[1]) : null;
+}
+
+/** Key of the cap that goes with a wall: the longer one over the limit, the plain one when the wall or the limit is unknown. */
+export function capKeyFor(nps: Nps, wallMm: number | null): string {
+  const limit = capLimitWallMm(nps);
+  return capKey(nps, wallMm !== null && limit !== null && wallMm > limit + inchesMm(LIMIT_STEP_IN));
 }
 
 /** The trade's words for a key ("LR 90 elbow NPS 4, centre to end"), or the key itself when it is no table's. */
