@@ -39,8 +39,15 @@ export function pointRemove(document: RunDocument, pointId: string): RunDocument
       grew = true;
     }
   }
-  const left = document.runs.filter((r) => !goneRuns.has(r));
+  const left = document.runs.filter((r) => !goneRuns.has(r)).map((r) => (r.to !== undefined && gonePoints.has(r.to) ? withoutLoop(r) : r));
   return { ...document, runs: left.map((r) => (r.id === run.id ? { ...r, points: r.points.filter((p) => p.id !== pointId) } : r)) };
+}
+
+/** A run that came back to a point that is gone ends by itself. */
+function withoutLoop(run: Run): Run {
+  const open = { ...run };
+  delete open.to;
+  return open;
 }
 
 /** Moves the point in row `from` to row `to` of the same run. */
@@ -90,20 +97,23 @@ export function documentCopy(document: RunDocument, number: string, idFor: (oldI
   const runs = document.runs.map((run) => ({
     ...run, id: freshRun(run.id), points: run.points.map((p) => ({ ...p, id: fresh(p.id) })),
   }));
-  return { ...document, number, runs: runs.map((run) => ({ ...run, from: run.from === null ? null : fresh(run.from) })) };
+  return { ...document, number, runs: runs.map((run) => ({
+    ...run, from: run.from === null ? null : fresh(run.from), ...(run.to === undefined ? {} : { to: fresh(run.to) }),
+  })) };
 }
 
-/** A point's offset as a line of text: `E 3' 1 1/2"`, `UN 3'`, `E 42" N 2' U 18"`, `at E 100 N 0 U 0`. Typed words first. */
+/** A point's offset as a line of text: `E 3' 1 1/2"`, `UN 3'`, `E 10' at 1:100`, `E 42" N 2' U 18"`, `at E 100 N 0 U 0`. Typed words first. */
 export function pointEntryText(point: Point, units: UnitSystem): string {
   const offset = point.offset;
   if (offset.kind === "polar") return `${offset.direction.text || "?"} ${entryText(offset.length, units)}`;
+  if (offset.kind === "slope") return `${offset.direction.text || "?"} ${entryText(offset.length, units)} at ${offset.slope.text || String(offset.slope.ratio)}`;
   const parts = axisParts(offset, units);
   if (offset.kind === "absolute") return `at ${parts.map(([axis, text]) => `${axis} ${text}`).join(" ")}`;
   const moved = parts.filter(([, , mm]) => mm !== 0);
   return moved.length === 0 ? "0" : moved.map(([axis, text]) => `${axis} ${text}`).join(" ");
 }
 
-function axisParts(offset: Exclude<Offset, { kind: "polar" }>, units: UnitSystem): (readonly [string, string, number])[] {
+function axisParts(offset: Extract<Offset, { kind: "enu" | "absolute" }>, units: UnitSystem): (readonly [string, string, number])[] {
   return (["e", "n", "u"] as const).map((axis) => [axis.toUpperCase(), entryText(offset[axis], units), offset[axis].mm] as const);
 }
 
@@ -113,7 +123,7 @@ function entryText(entry: { readonly text: string; readonly mm: number }, units:
 
 /** True for items a branch run leaves from. */
 export function isBranchFitting(item: Item): boolean {
-  return item.kind === "tee" || item.kind === "outlet" || item.kind === "stub-in";
+  return item.kind === "tee" || item.kind === "cross" || item.kind === "outlet" || item.kind === "stub-in";
 }
 
 function runUpdate(document: RunDocument, runId: string, edit: (points: Point[]) => Point[]): RunDocument {
