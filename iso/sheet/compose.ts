@@ -2,12 +2,13 @@
  * Composing a spool sheet: from one frozen value to pages of display items, which both painters understand. Pure: equal
  * input and measure give equal pages, in the browser and on the server.
  */
-import { drawModel } from "../draw/draw-model";
+import { drawSheets } from "../draw/draw-sheets";
 import type { MeasureText } from "../draw/drawing-types";
 import type { PaperBox } from "../geometry/types";
 import { buildModel } from "../run/build-model";
 import type { Model } from "../run/model-types";
-import { firstPage, type DrawRoom } from "./first-page";
+import { firstPage } from "./first-page";
+import type { DrawRoom } from "./isometric-sheets";
 import { firstFrame, followingFrame, type PageFrame } from "./page-frame";
 import { sheetFacts } from "./sheet-facts";
 import { sheetSizeMm } from "./sheet-size";
@@ -18,15 +19,15 @@ import { continuedItem } from "./table-placing";
 const PAD = 2;
 
 /**
- * Pages of the spool sheet: the first with the isometric, further ones for lists that find no room there. Never throws on
- * user data: a line or spool that is not ready yet gives a sheet that says so.
+ * Pages of the spool sheet: the first with the isometric, then its further sheets where one would be crowded, then lists that
+ * find no room on the first. Never throws on user data: a line or spool that is not ready yet gives a sheet that says so.
  */
 export function composeSheet(input: SheetInput, measure: MeasureText): SheetPage[] {
   const model = buildModel(input.document, input.marks, input.takeOuts);
   const { code, changedPointIds } = input.revision;
-  const draw: DrawRoom = (widthMm, heightMm) =>
-    drawModel(model, {
-      widthMm, heightMm, measure, view: input.document.view, spool: input.spool,
+  const draw: DrawRoom = (first, later) =>
+    drawSheets(model, {
+      ...first, later, measure, view: input.document.view, spool: input.spool,
       show: { items: true, welds: true, pieces: true, dimensions: true },
       changed: changedPointIds.length > 0 ? { code, pointIds: changedPointIds } : null,
     });
@@ -37,18 +38,19 @@ export function composeSheet(input: SheetInput, measure: MeasureText): SheetPage
 export function composePages(input: SheetInput, model: Model, draw: DrawRoom, measure: MeasureText): SheetPage[] {
   const facts = sheetFacts(input, model);
   const frame = firstFrame(facts, measure);
-  const first = firstPage(facts, frame, draw, measure);
   const following = followingFrame(facts, measure);
-  const { pages: lists, sheetOf } = flowTables(first.rest, inside(following.body), 2, measure);
-  const continued = first.continued.map(({ title, at }) => continuedItem(at, `on sheet ${sheetOf.get(title) ?? 2}`));
-  const of = 1 + lists.length;
+  const first = firstPage(facts, frame, following.body, draw, measure);
+  const isometrics = 1 + first.sheets.length;
+  const { pages: lists, sheetOf } = flowTables(first.rest, inside(following.body), isometrics + 1, measure);
+  const continued = first.continued.map(({ title, at }) => continuedItem(at, `on sheet ${sheetOf.get(title) ?? isometrics + 1}`));
+  const of = isometrics + lists.length;
   const page = (content: readonly SheetPage["items"][number][], around: PageFrame, sheet: number): SheetPage => ({
     ...sheetSizeMm(input.size),
     items: [...around.under, ...content, ...around.over({ sheet, of })],
     logoBox: around.logoBox,
-    name: sheet === 1 ? "1 isometric" : `${sheet} lists`,
+    name: sheet <= isometrics ? `${sheet} isometric` : `${sheet} lists`,
   });
-  return [page([...first.items, ...continued], frame, 1), ...lists.map((items, index) => page(items, following, index + 2))];
+  return [page([...first.items, ...continued], frame, 1), ...[...first.sheets, ...lists].map((items, index) => page(items, following, index + 2))];
 }
 
 function inside(body: PaperBox): PaperBox {

@@ -1,11 +1,11 @@
-/** The first page: the isometric as large as the paper allows, and on tabloid and A3 the tables beside and under it. */
-import type { DisplayItem, Drawing, LegendKey, MeasureText } from "../draw/drawing-types";
+/** The first page: the isometric as large as the paper allows, and on tabloid and A3 the tables beside and under it; and the isometric's further sheets, which hold nothing else. */
+import type { DisplayItem, MeasureText } from "../draw/drawing-types";
 import { itemMoved } from "../draw/paths";
 import type { PaperBox, PaperPoint } from "../geometry/types";
 import { cutListTable } from "./cut-list";
 import { dataTable } from "./data-table";
-import { lineFrom, textAt } from "./items";
-import { legendItems, legendLayout } from "./legend";
+import { lineFrom } from "./items";
+import { isometricSheets, type DrawRoom } from "./isometric-sheets";
 import { notesTable } from "./notes-table";
 import type { PageFrame } from "./page-frame";
 import { REVISION_ROWS_SHOWN, revisionTable } from "./revision-table";
@@ -15,11 +15,10 @@ import { materialsTable, trimmedElbowsTable, weldsTable } from "./spool-tables";
 import { setTable, tableHeight, type Table } from "./table";
 import { placeInRoom, TABLE_GAP, type FlowTable } from "./table-flow";
 
-/** Draws the spool for a room, mm. */
-export type DrawRoom = (widthMm: number, heightMm: number) => Drawing;
-
 export interface FirstPage {
   readonly items: readonly DisplayItem[];
+  /** Further sheets of the isometric, in order. */
+  readonly sheets: readonly (readonly DisplayItem[])[];
   /** Tables, or the rows of them, that go on further pages. */
   readonly rest: readonly FlowTable[];
   /** Where it stays to be said on which sheet a table goes on. */
@@ -32,31 +31,38 @@ interface Continued {
 }
 
 const PAD = 2;
-/** Between the frame and the drawing's room, mm. */
-const INSET = 3;
 /** The lists under the isometric take at most this share of the body. */
 const UNDER_SHARE = 0.42;
 /** The revision block takes at most this share of the side column. */
 const REVISIONS_SHARE = 0.35;
 
-export function firstPage(facts: SheetFacts, frame: PageFrame, draw: DrawRoom, measure: MeasureText): FirstPage {
+/** @param later body of a following page, for further sheets of the isometric */
+export function firstPage(facts: SheetFacts, frame: PageFrame, later: PaperBox, draw: DrawRoom, measure: MeasureText): FirstPage {
   const { body, side } = frame;
   if (side === null) {
     const notes = notesTable(facts, frame.cut, (body.maxX - body.minX - 2 * PAD - TABLE_GAP) / 2, measure);
     const rest = [...restOf(facts, notes, new Map(), 0), { table: dataTable(facts), width: "half" as const, startRow: 0 }];
-    return { items: drawingItems(facts, body, draw, measure), rest, continued: [] };
+    const [items = [], ...sheets] = isometricSheets(facts, body, later, draw, measure);
+    return { items, sheets, rest, continued: [] };
   }
   const notes = notesTable(facts, frame.cut, side.maxX - side.minX - 2 * PAD, measure);
   const beside = sideColumn(facts, notes, side, measure);
-  const under = underDrawing(facts, body, measure);
+  let under = underDrawing(facts, body, measure);
+  let drawn = isometricSheets(facts, { ...body, maxY: under.top }, later, draw, measure);
+  // An isometric that takes several sheets gets the whole height of the first: its lists go on pages of their own.
+  if (drawn.length > 1 && under.items.length > 0) {
+    under = { items: [], next: new Map(), continued: [], top: body.maxY };
+    drawn = isometricSheets(facts, body, later, draw, measure);
+  }
+  const [first = [], ...sheets] = drawn;
   const items = [
-    ...drawingItems(facts, { ...body, maxY: under.top }, draw, measure),
+    ...first,
     ...under.items,
     lineFrom([side.minX, side.minY], [side.minX, side.maxY], EDGE_LINE, "frame"),
     ...beside.items,
   ];
   const rest = restOf(facts, notes, new Map([...beside.next, ...under.next]), beside.revisionsShown);
-  return { items, rest, continued: [...beside.continued, ...under.continued] };
+  return { items, sheets, rest, continued: [...beside.continued, ...under.continued] };
 }
 
 type NextRows = ReadonlyMap<string, number | null>;
@@ -137,36 +143,4 @@ function underDrawing(facts: SheetFacts, left: PaperBox, measure: MeasureText): 
   const items = placedItems.map((item) => itemMoved(item, [0, top]));
   const continued = open.map(({ title, at }): Continued => ({ title, at: [at[0], at[1] + top] }));
   return { items, next, continued, top };
-}
-
-/** The isometric in its room, its legend in a strip under it. */
-function drawingItems(facts: SheetFacts, room: PaperBox, draw: DrawRoom, measure: MeasureText): DisplayItem[] {
-  const middle: PaperPoint = [(room.minX + room.maxX) / 2, (room.minY + room.maxY) / 2];
-  if (facts.spool === null) return [textAt(middle, `No spool ${facts.input.spool} in this line yet.`, { layer: "label", anchor: "middle", capMm: 3.5 })];
-  const widthMm = room.maxX - room.minX;
-  const legendMm = (keys: readonly LegendKey[]) => legendLayout(keys, widthMm, measure).heightMm;
-  const drawFor = (reserveMm: number) => draw(widthMm - 2 * INSET, room.maxY - room.minY - reserveMm - 2 * INSET);
-  let reserveMm = legendMm(likelyLegend(facts));
-  let drawing = drawFor(reserveMm);
-  if (legendMm(drawing.legend) > reserveMm) {
-    reserveMm = legendMm(drawing.legend);
-    drawing = drawFor(reserveMm);
-  }
-  const legend = { ...room, minY: room.maxY - legendMm(drawing.legend) };
-  return [
-    ...drawing.items.map((item) => itemMoved(item, [room.minX + INSET, room.minY + INSET])),
-    lineFrom([legend.minX, legend.minY], [legend.maxX, legend.minY], EDGE_LINE, "title"),
-    ...legendItems(drawing.legend, legend, measure),
-  ];
-}
-
-/** The most a drawing's legend can need, known before drawing. */
-function likelyLegend(facts: SheetFacts): LegendKey[] {
-  const has = (place: string) => facts.welds.some((joint) => joint.place === place);
-  const keys: (LegendKey | false)[] = [
-    "shop-weld", has("field") && "field-weld", has("field-fit") && "field-fit-weld", "material-item", "weld-number", "cut-piece", "spool", "flow",
-    facts.components.some((component) => component.kind === "support") && "support",
-    facts.input.revision.changedPointIds.length > 0 && "revision", "reference-dimension", facts.legs.some((leg) => leg.unverified) && "unverified",
-  ];
-  return keys.filter((key) => key !== false);
 }

@@ -73,16 +73,16 @@ const LEGEND: readonly LegendKey[] = [
 ];
 
 /** A drawing that only inks the corners of its room. */
-export function stubDraw(widthMm: number, heightMm: number): Drawing {
+export function stubDraw({ widthMm, heightMm }: { readonly widthMm: number; readonly heightMm: number }): readonly Drawing[] {
   const corner = (x: number, y: number, dx: number, dy: number) => [
     { type: "line", layer: "pipe", ref: null, from: [x, y], to: [x + dx, y], widthMm: 0.7, ink: "ink" } as const,
     { type: "line", layer: "pipe", ref: null, from: [x, y], to: [x, y + dy], widthMm: 0.7, ink: "ink" } as const,
   ];
-  return {
+  return [{
     view: 1, widthMm, heightMm, legend: LEGEND, shown: [], bounds: { minX: 0, minY: 0, maxX: widthMm, maxY: heightMm },
     report: { labels: 0, clean: 0, overlaps: 0, touches: 0, meanLeaderMm: 0, p95LeaderMm: 0 },
     items: [...corner(0, 0, 9, 9), ...corner(widthMm, 0, -9, 9), ...corner(0, heightMm, 9, -9), ...corner(widthMm, heightMm, -9, -9)],
-  };
+  }];
 }
 
 /** A sheet input round a document, in any state. */
