@@ -1,7 +1,8 @@
 /** Pipe by size and schedule, its weight per metre, and the weights of fittings that a table gives. */
 import { NPS_SIZES, type Nps, type UnitSystem } from "../run/document";
 import { inchesMm } from "../units/length";
-import { PIPE_DIAMETERS, PIPE_MEMORY, PIPE_SOURCE, PIPE_WALLS, type WallColumn } from "./b36-pipe";
+import { PIPE_DIAMETERS, PIPE_MEMORY, PIPE_SOURCE, PIPE_WALLS } from "./b36-pipe";
+import { REMEMBERED_DIAMETERS, REMEMBERED_WALLS } from "./b36-remembered";
 import type { Memory } from "./row";
 import { ELBOW_POUNDS, ELBOW_WEIGHT_SOURCE } from "./weights";
 
@@ -28,11 +29,12 @@ export interface PipeWall {
   readonly fromMemory: Memory;
 }
 
-/** Diameters of a pipe size (ASME B36.10M), or null for a size the tables leave out (NPS 22). */
+/** Diameters of a pipe size (ASME B36.10M), or null for a size no table has. */
 export function pipeSize(nps: Nps): PipeSize | null {
-  const row = PIPE_DIAMETERS.find(([size]) => size === nps);
+  const read = PIPE_DIAMETERS.find(([size]) => size === nps);
+  const row = read ?? REMEMBERED_DIAMETERS.find(([size]) => size === nps);
   if (!row) return null;
-  return { nps, dn: row[1], odInchMm: inchesMm(row[2]), odMetricMm: row[3], source: `ASME B36.10M, ${PIPE_SOURCE}` };
+  return { nps, dn: row[1], odInchMm: inchesMm(row[2]), odMetricMm: row[3], source: read ? `ASME B36.10M, ${PIPE_SOURCE}` : "ASME B36.10M (from memory)" };
 }
 
 /** Outside diameter on a line of these units, mm, or null. */
@@ -47,18 +49,31 @@ export function pipeOdMm(nps: Nps, units: UnitSystem): number | null {
  */
 export function pipeWall(nps: Nps, schedule: string, units: UnitSystem): PipeWall | null {
   const odMm = pipeOdMm(nps, units);
-  const column = PIPE_WALLS.find((c) => c.schedule === schedule.trim().toUpperCase());
-  const row = column?.walls.find(([size]) => size === nps);
-  if (odMm === null || !column || !row) return null;
-  const wallMm = units === "metric" ? row[2] : inchesMm(row[1]);
+  const row = wallRow(nps, schedule.trim().toUpperCase());
+  if (odMm === null || !row) return null;
+  const wallMm = units === "metric" ? row.mm : inchesMm(row.inches);
   const kgPerM = Math.PI * (odMm - wallMm) * wallMm * STEEL_KG_PER_MM3 * 1000;
-  return { odMm, wallMm, kgPerM, source: `${column.standard}, ${PIPE_SOURCE}`, fromMemory: PIPE_MEMORY };
+  return { odMm, wallMm, kgPerM, source: row.source, fromMemory: row.fromMemory };
+}
+
+interface WallRow {
+  readonly inches: number;
+  readonly mm: number;
+  readonly source: string;
+  readonly fromMemory: Memory;
+}
+
+function wallRow(nps: Nps, schedule: string): WallRow | null {
+  const column = PIPE_WALLS.find((c) => c.schedule === schedule);
+  const read = column?.walls.find(([size]) => size === nps);
+  if (column && read) return { inches: read[1], mm: read[2], source: `${column.standard}, ${PIPE_SOURCE}`, fromMemory: PIPE_MEMORY };
+  const row = REMEMBERED_WALLS.find((r) => r[1] === schedule && r[2] === nps);
+  return row ? { inches: row[3], mm: row[4], source: `${row[0]} (from memory)`, fromMemory: "yes" } : null;
 }
 
 /** Schedules a size comes in, thin to thick by name. */
 export function schedulesFor(nps: Nps): readonly string[] {
-  const has = (c: WallColumn) => c.walls.some(([size]) => size === nps);
-  return PIPE_WALLS.filter(has).map((c) => c.schedule).sort((a, b) => SCHEDULE_ORDER.indexOf(a) - SCHEDULE_ORDER.indexOf(b));
+  return SCHEDULE_ORDER.filter((schedule) => wallRow(nps, schedule) !== null);
 }
 
 /** Pipe sizes the tables hold, small to large. */
