@@ -10,6 +10,7 @@ import type { Fitting, JointDraft, PlacedPoint, PlacedRun, Rider, Side, Stretch 
 import { boltedJoint, gasketPart } from "./fit-flange";
 import { makeJoint, reachOf } from "./fit-common";
 import type { Component, Leg } from "./model-types";
+import { sharedWeldKey } from "./original-side";
 import { draftPiece, type PieceDraft } from "./piece-draft";
 
 export interface Between {
@@ -90,7 +91,7 @@ function weldedStretch(s: Stretch, gap: number, ctx: BuildContext): Between {
   }
   const at = vecAddScaled(s.legs[0]?.from ?? s.from.departure, flowOf(s), reachOf(s.start.terms) + gap / 2);
   const joint = makeJoint(s.to, {
-    key: b.key, kind: "butt", place, a: s.start.componentId, b: s.end.componentId, position: at, direction: flowOf(s),
+    key: sharedWeldKey(s, a.key, b.key), kind: "butt", place, a: s.start.componentId, b: s.end.componentId, position: at, direction: flowOf(s),
     nps: s.to.pipeIn.nps, mismatchRad: a.mismatchRad + b.mismatchRad, gapMm: gap, runId: s.to.runId,
   });
   return { components: [], joints: [joint], piece: null, held: [] };

@@ -5,6 +5,7 @@ import type { BuildContext } from "./build-context";
 import type { BoltedFace, Fitting, JointDraft, PlacedPoint, Side } from "./build-types";
 import type { Nps, Pipe, Place } from "./document";
 import type { Component, ComponentKind, CutTerm, Port } from "./model-types";
+import { originalSide } from "./original-side";
 
 /** Which of an item's sides: the upstream weld, the downstream one, or the branch. */
 export type SideName = "in" | "out" | "branch";
@@ -36,7 +37,7 @@ function weldSide(p: PlacedPoint, side: SideName, ctx: BuildContext, given: Weld
   const place = given.place ?? sidePlace(p, side);
   return {
     through: false, terms: given.terms, componentId: given.componentId,
-    weld: { key: given.key ?? `${p.uid}:${side}`, kind, place, mismatchRad: given.mismatchRad ?? 0 },
+    weld: { key: given.key ?? `${p.uid}:${originalSide(p.point, side)}`, kind, place, mismatchRad: given.mismatchRad ?? 0 },
     gap, trimMm: sideTrim(p, place, ctx), bolted: null,
   };
 }

@@ -10,6 +10,7 @@ import {
   bareSide, buttSide, fittingOf, flowAfter, flowAt, makeComponent, makeJoint, port, slipOnSide, socketSide, unconfirmedOf,
 } from "./fit-common";
 import type { Component, CutTerm } from "./model-types";
+import { originalSide } from "./original-side";
 import { FLANGE_WORDS, SOCKET_CLASS, sizeText } from "./words";
 
 export type PipeFlange = "weld-neck" | "slip-on" | "socket-weld";
@@ -163,7 +164,7 @@ function fitPair(p: PlacedPoint, item: FlangeItem, ctx: BuildContext): Fitting {
   const flow = flowAt(p);
   const [before, after] = item.gasketSide === "before" ? [gasketMm, 0] : [0, gasketMm];
   const toFace = (mm: number) => (mm > 0 ? [plainTerm("gasket", "gasket", mm)] : []);
-  const ids = { in: `${p.uid}.flange-in`, out: `${p.uid}.flange-out` };
+  const ids = { in: `${p.uid}.flange-${originalSide(p.point, "in")}`, out: `${p.uid}.flange-${originalSide(p.point, "out")}` };
   const seat = { type, ratingClass } as const;
   const first = pipeFlange(p, { ...seat, id: ids.in, side: "in", pipe: p.pipeIn, toFace: toFace(before), faceReachMm: before, text: item.text }, ctx);
   const second = pipeFlange(p, { ...seat, id: ids.out, side: "out", pipe: p.pipeOut, toFace: toFace(after), faceReachMm: after, text: "" }, ctx);

@@ -8,6 +8,7 @@ import type { Item, RatingClass } from "./document";
 import { bareSide, buttSide, fittingOf, flowAfter, flowAt, makeComponent, socketSide, straightPorts, unconfirmedOf } from "./fit-common";
 import { boltedJoint, gasketPart, pipeFlange } from "./fit-flange";
 import type { Component, CutTerm } from "./model-types";
+import { originalSide } from "./original-side";
 import { VALVE_WORDS, sizeText } from "./words";
 
 type ValveItem = Extract<Item, { kind: "valve" }>;
@@ -73,12 +74,12 @@ function matingFlange(p: PlacedPoint, item: ValveItem, ratingClass: RatingClass,
   const pipe = name === "in" ? p.pipeIn : p.pipeOut;
   const flow = name === "in" ? flowAt(p) : flowAfter(p);
   const toPipe = name === "in" ? vecNegate(flow) : flow;
-  const id = `${p.uid}.flange-${name}`;
+  const id = `${p.uid}.flange-${originalSide(p.point, name)}`;
   const flange = pipeFlange(p, {
     id, side: name, type: item.mating, ratingClass, pipe, faceReachMm: half + gasketMm, text: "",
     toFace: [term, plainTerm("gasket", "gasket", gasketMm)],
   }, ctx);
-  const gasket = gasketPart(p, pipe, `${p.uid}.gasket-${name}`, ratingClass, vecAddScaled(p.position, toPipe, half + gasketMm / 2), flow);
-  const joint = boltedJoint(p, `${p.uid}:bolts-${name}`, name === "in" ? [id, p.uid] : [p.uid, id], gasket, p.point.places.bolts ?? "shop", ctx);
+  const gasket = gasketPart(p, pipe, `${p.uid}.gasket-${originalSide(p.point, name)}`, ratingClass, vecAddScaled(p.position, toPipe, half + gasketMm / 2), flow);
+  const joint = boltedJoint(p, `${p.uid}:bolts-${originalSide(p.point, name)}`, name === "in" ? [id, p.uid] : [p.uid, id], gasket, p.point.places.bolts ?? "shop", ctx);
   return { side: flange.side, components: [flange.component, gasket], joints: [joint] };
 }

@@ -94,6 +94,8 @@ export const itemSchema = z.discriminatedUnion("kind", [
     /** Shop-given face to face where no table has it, mm. */
     faceToFaceMm: positiveMm.nullable().default(null),
     tag: shortText.default(""),
+    /** A check valve that lets flow pass against the run's direction; absent = along it. */
+    against: z.boolean().optional(),
   }),
   z.object({ kind: z.literal("coupling"), half: z.boolean().default(false), ends: z.enum(["socket", "threaded"]).optional() }),
   z.object({ kind: z.literal("union"), ends: z.enum(["socket", "threaded"]).default("socket") }),

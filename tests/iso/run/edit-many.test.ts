@@ -22,7 +22,11 @@ const done = (result: EditResult): RunDocument => {
   expect(parseRunDocument(result.document)).toEqual({ ok: true, document: result.document });
   return result.document;
 };
-const places = (model: Model): Record<string, readonly number[]> => Object.fromEntries(model.nodes.map((n) => [n.pointId, n.position]));
+/** Working points; an eccentric reducer's lies on the line that arrives, so the other way round it is its other one. */
+const places = (model: Model): Record<string, readonly number[]> => {
+  const eccentric = new Set(model.components.filter((c) => c.kind === "reducer-eccentric").map((c) => c.pointId));
+  return Object.fromEntries(model.nodes.filter((n) => !eccentric.has(n.pointId)).map((n) => [n.pointId, n.position]));
+};
 /** Cut lengths by what the piece lies between, whichever way it is walked. */
 const cuts = (model: Model): string[] => model.pieces.map((p) => `${p.nps} ${p.cutLengthMm.toFixed(MM)} ${[p.ends[0].jointKey, p.ends[1].jointKey].sort().join(" ")}`).sort();
 const point = (id: string): Point => ({ ...newPoint(id), offset: { kind: "enu", e: { text: "", mm: 300 }, n: { text: "", mm: 0 }, u: { text: "", mm: 0 } } });
