@@ -24,6 +24,11 @@ export * from "./closing/elbow-marks";
 export * from "./closing/advice";
 export * from "./closing/sensitivity";
 export * from "./closing/close-between";
+export * from "./closing/snap";
+
+// layout
+export * from "./layout/mitre";
+export * from "./layout/saddle";
 
 // run
 export * from "./run/document";

@@ -77,3 +77,6 @@ export const NEARLY_ALONG = 1e-6;
 
 /** Paper millimetres. A curve written as chords stays within this: a tenth of the thinnest line. */
 export const FLATTEN_MM = 0.02;
+
+/** Radians, and share of a lever. Step of the differences by which a snapped piece is refitted: the cube root of float64's grain. */
+export const SNAP_REFIT = 6e-6;
