@@ -28,7 +28,7 @@ interface Structure {
 /** The model of a document, with marks as the register will give them. Lengths in mm, angles in radians. */
 export function buildModel(document: RunDocument, marks: MarksRegister, takeOuts: readonly TakeOutWord[]): Model {
   const line = buildStructure(document, takeOuts);
-  const given = givenMarks(markable(line), marks);
+  const given = givenMarks(markable(line), marks, document.settings.marks);
   const letters = line.groups.map((g) => given.spools.get(g.anchor) ?? "?");
   const letterOf = new Map<string, string>();
   line.groups.forEach((g, i) => {
@@ -51,7 +51,7 @@ export function buildModel(document: RunDocument, marks: MarksRegister, takeOuts
 
 /** The register after this document: what a save stores. */
 export function nextMarks(document: RunDocument, marks: MarksRegister, takeOuts: readonly TakeOutWord[]): MarksRegister {
-  return advanceMarks(markable(buildStructure(document, takeOuts)), marks);
+  return advanceMarks(markable(buildStructure(document, takeOuts)), marks, document.settings.marks);
 }
 
 function buildStructure(document: RunDocument, takeOuts: readonly TakeOutWord[]): Structure {
@@ -110,11 +110,19 @@ function uniqueJoints(joints: readonly JointDraft[]): JointDraft[] {
 }
 
 function markable(line: Structure): Markable {
+  const legs = new Map(line.legs.map((leg) => [leg.id, leg]));
   return {
-    welds: line.parts.joints.filter((j) => j.kind !== "bolted" && j.kind !== "attachment").map((j) => ({ key: j.key, runId: j.runId })),
-    pieces: line.parts.pieces.map((p) => ({ key: p.key, runId: p.runId })),
+    welds: line.parts.joints.filter((j) => j.kind !== "bolted" && j.kind !== "attachment" && j.kind !== "threaded").map((j) => ({ key: j.key, runId: j.runId })),
+    pieces: line.parts.pieces.map((p) => ({ key: p.key, runId: p.runId, ends: pieceEnds(p, legs) })),
     spools: line.groups.map((g) => ({ anchor: g.anchor, parts: [...g.componentIds, ...g.pieceKeys] })),
   };
+}
+
+/** What stands at a piece's ends, by names that a reversal leaves: the joints, or the points where nobody welds. */
+function pieceEnds(piece: Parts["pieces"][number], legs: ReadonlyMap<string, Leg>): [string, string] {
+  const first = legs.get(piece.legIds?.[0] ?? piece.legId);
+  const last = legs.get(piece.legId);
+  return [piece.ends[0].jointKey ?? `${first?.fromPointId ?? ""}|`, piece.ends[1].jointKey ?? `${last?.toPointId ?? ""}|`];
 }
 
 function jointOf(j: JointDraft, number: string | null, spool: string | null): Joint {

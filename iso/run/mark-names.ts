@@ -11,8 +11,17 @@ export function letterMark(index: number): string {
   return text;
 }
 
-/** The number inside a mark: 5 of "5", "5A" and "P5A"; 0 when there is none. */
-export function markNumber(mark: string): number {
-  const found = /\d+/.exec(mark);
-  return found ? Number(found[0]) : 0;
+/**
+ * The number inside a mark: 5 of "5", "5A" and "P5A"; 0 when there is none. A prefix that ends in a figure ("L2-1") is
+ * told apart by handing it in; otherwise the last figures count.
+ */
+export function markNumber(mark: string, prefix = ""): number {
+  const rest = prefix !== "" && mark.startsWith(prefix) ? mark.slice(prefix.length) : mark;
+  const found = /(\d+)\D*$/.exec(rest);
+  return found ? Number(found[1]) : 0;
+}
+
+/** A mark without the letters of one that came in between: "P5" of "P5A". */
+export function markStem(mark: string): string {
+  return /^(.*\d)[A-Z]*$/.exec(mark)?.[1] ?? mark;
 }
