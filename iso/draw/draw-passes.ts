@@ -1,6 +1,7 @@
 /** The passes that ink one sheet: everything that stands where its geometry says, then the labels among it. */
 import type { PaperBox, PaperPoint } from "../geometry/types";
 import type { View } from "../run/document";
+import { breakPass, type BreakInk } from "./break-flags";
 import { componentMarks, pieceMarks, revisionMarks, weldMarks } from "./collect-marks";
 import { dimensionPass, NO_DIMENSIONS, type DimensionInk } from "./dimensions";
 import { drawnEdges, drawnJoints, type DrawnEdge, type DrawnJoint } from "./drawn";
@@ -23,7 +24,9 @@ import { pipePass, pipeStretches } from "./pipe";
 import type { Placed } from "./place";
 import { boxCorners, paperBoxAround, segmentInBox, type Segment, type TurnedBox } from "./plane";
 import type { Match } from "./sheet-split";
+import { cloudPass } from "./revision-cloud";
 import { slopePass } from "./slopes";
+import { spoolLabels } from "./spool-marks";
 import { symbolPass } from "./symbols";
 import { mitreJoints } from "./turns";
 import { weldPass } from "./weld-marks";
@@ -48,6 +51,7 @@ export interface Lines {
   readonly offsets: OffsetInk;
   readonly dimensions: DimensionInk;
   readonly matches: MatchInk;
+  readonly breaks: BreakInk;
   readonly homeless: readonly Homeless[];
   readonly heavy: readonly Segment[];
   readonly light: readonly Segment[];
@@ -64,7 +68,9 @@ export function drawLines(placed: Placed, options: DrawOptions, place: SheetPlac
   const stretches = pipeStretches(placed, drawn);
   const offsets = offsetPass(placed, drawn);
   const matches = matchPass(placed, drawn, joints, place.matches, place.sheet, measure);
-  const inks = [pipePass(placed, drawn, stretches), symbolPass(placed, drawn), weldPass(joints), flowPass(stretches), matches];
+  const breaks = breakPass(placed, drawn, measure);
+  const cloud = cloudPass(placed, options);
+  const inks = [pipePass(placed, drawn, stretches), symbolPass(placed, drawn), weldPass(joints), flowPass(stretches), matches, breaks, cloud];
   const heavy = inks.flatMap((ink) => ink.heavy);
   const heavyMap = inkMap(heavy, 1.2);
   const boxMap = inkMap(offsets.light, 0.5);
@@ -74,10 +80,10 @@ export function drawLines(placed: Placed, options: DrawOptions, place: SheetPlac
   const around = paperBoxAround([...heavy, ...offsets.light].flatMap((s) => [s.from, s.to]));
   const centre: PaperPoint = [(around.minX + around.maxX) / 2 || 0, (around.minY + around.maxY) / 2 || 0];
   const dimensions = options.show.dimensions ? dimensionPass(placed, drawn, { heavy: heavyMap, light: boxMap, field, centre, extent: around }, measure) : NO_DIMENSIONS;
-  const light = [...offsets.light, ...dimensions.light, ...slopes.light];
+  const light = [...offsets.light, ...dimensions.light, ...slopes.light, ...cloud.light];
   const fixed = [...texts.flatMap((text) => text.box ?? []), ...slopes.boxes, ...dimensions.boxes];
   return {
-    placed, drawn, joints, offsets, dimensions, matches, heavy, light, heavyMap, field, fixed,
+    placed, drawn, joints, offsets, dimensions, matches, breaks, heavy, light, heavyMap, field, fixed,
     items: [...inks.flatMap((ink) => ink.items), ...offsets.items, ...slopes.items, ...dimensions.items, ...texts.flatMap((text) => text.items), ...knockOuts([...texts.flatMap((text) => text.box ?? []), ...dimensions.boxes], light)],
     homeless: [
       ...texts.filter((text) => text.box === null).map(({ text }) => ({ ref: text.ref, text: text.text, line: text.line })),
@@ -104,7 +110,7 @@ export function drawLabels(lines: Lines, options: DrawOptions, view: View): Draw
   const components = componentMarks(placed, drawn, options);
   const pieces = pieceMarks(placed, drawn, options);
   const labels: Label[] = [
-    ...endLabels(placed, drawn, measure), ...lines.matches.labels,
+    ...endLabels(placed, drawn, measure), ...spoolLabels(placed, drawn, measure), ...lines.matches.labels, ...lines.breaks.labels,
     ...offsets.notes.map((note) => blockLabel(note.lines.map((text, i) => ({ text, bold: i === 0 })), { id: `offset ${note.id}`, anchors: note.anchors, clear: 0.5, along: [] }, { kind: "leg", id: note.id }, measure)),
     ...homelessLabels(lines.homeless, options), ...revisionMarks(placed, options), ...welds.labels, ...components.labels, ...pieces.labels,
   ];

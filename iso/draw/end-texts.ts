@@ -1,12 +1,13 @@
-/** End texts: where every end of the line goes, with its coordinates; tags of valves and supports; where a stub leads. */
+/** End texts: where every end of the line goes, with its coordinates and level; where a stub leads. */
 import type { PaperPoint } from "../geometry/types";
 import type { Item } from "../run/document";
-import type { Component, Joint, Node } from "../run/model-types";
+import type { Joint, Node } from "../run/model-types";
 import { formatLength } from "../units/format";
 import type { DrawnEdge } from "./drawn";
 import type { MeasureText } from "./drawing-types";
+import { fittingLabels } from "./fitting-notes";
 import type { Label } from "./label-candidates";
-import { blockLabel, type BlockLine } from "./mark-labels";
+import { blockLabel, marksLabel, type BlockLine } from "./mark-labels";
 import type { Placed } from "./place";
 import type { Sketch } from "./sketch";
 
@@ -24,7 +25,7 @@ export function endLabels(placed: Placed, drawn: readonly DrawnEdge[], measure: 
     const lines = [...goesWords(item), ...coordinates(sketch, node, item)];
     labels.push(blockLabel(lines, { id: `end ${vertex.id}`, anchors: [at], clear: item.kind === "flange" ? 3.8 : 2, along: pipeAt(drawn, vertex.id) }, { kind: "point", id: vertex.id }, measure));
   }
-  return [...labels, ...stubLabels(placed, drawn, measure), ...tagLabels(placed, drawn, measure)];
+  return [...labels, ...stubLabels(placed, drawn, measure), ...fittingLabels(placed, drawn, measure)];
 }
 
 function branchesFrom(sketch: Sketch, pointId: string): boolean {
@@ -72,7 +73,8 @@ function stubLabels(placed: Placed, drawn: readonly DrawnEdge[], measure: Measur
     if (letter === null) return [];
     const joint = sketch.joints.find((j) => j.pointId === near && touches(sketch, j, letter)) ?? sketch.joints.find((j) => touches(sketch, j, letter));
     const text = joint?.kind === "bolted" ? `BOLT TO SPOOL ${letter}` : `FIELD WELD TO SPOOL ${letter}`;
-    return [blockLabel([{ text, bold: true }], { id: `stub ${d.edge.id}`, anchors: [loose], clear: 1, along: [d.direction] }, { kind: "spool", id: letter }, measure)];
+    const ref = { kind: "spool" as const, id: letter };
+    return [marksLabel([{ shape: "box", text: letter, ref }, { shape: "none", text, ref }], { id: `stub ${d.edge.id}`, anchors: [loose], clear: 1, along: [d.direction] }, measure)];
   });
 }
 
@@ -87,21 +89,4 @@ function touches(sketch: Sketch, joint: Joint, letter: string): boolean {
     id === null ? null : (sketch.model.components.find((c) => c.id === id)?.spool ?? sketch.model.pieces.find((p) => p.key === id)?.spool ?? null);
   const sides = [spoolOf(joint.a), spoolOf(joint.b)];
   return sides.includes(letter) && sides.includes(sketch.spool);
-}
-
-/** Tags of valves and supports, the flat side of eccentric reducers. */
-function tagLabels(placed: Placed, drawn: readonly DrawnEdge[], measure: MeasureText): readonly Label[] {
-  return placed.sketch.components.flatMap((component) => {
-    const text = tagText(component);
-    const at = placed.paper.get(component.pointId);
-    if (text === "" || !at) return [];
-    return [blockLabel([{ text, bold: component.kind === "valve" }], { id: `tag ${component.id}`, anchors: [at], clear: 3.4, along: pipeAt(drawn, component.pointId) }, { kind: "component", id: component.id }, measure)];
-  });
-}
-
-function tagText(component: Component): string {
-  if (component.kind === "reducer-eccentric") {
-    return component.asideName === "D" ? "FLAT ON BOTTOM" : component.asideName === "U" ? "FLAT ON TOP" : `FLAT ${component.asideName ?? ""}`.trim();
-  }
-  return component.kind === "valve" || component.kind === "support" ? component.text.toUpperCase() : "";
 }

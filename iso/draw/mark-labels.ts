@@ -1,15 +1,21 @@
-/** Marks as labels: material items in circles, weld numbers in hexagons, cut pieces in long rounded boxes; text blocks. */
+/**
+ * Marks as labels: material items in circles, weld numbers in hexagons, cut pieces in long rounded boxes, spools in heavy square
+ * boxes, revisions in triangles; text blocks. Each kind has its own shape, so that black and white will do.
+ */
 import type { PaperPoint } from "../geometry/types";
 import type { DisplayItem, Ink, MeasureText, PathSegment, Ref } from "./drawing-types";
 import type { Hub, Label } from "./label-candidates";
 import { centredText, circleSegments, hexagonSegments, lineItem, pathItem, polygonSegments, stadiumSegments, textItem } from "./paths";
 import * as size from "./sizes";
 
-export type MarkShape = "circle" | "hexagon" | "stadium" | "triangle" | "none";
+export type MarkShape = "circle" | "hexagon" | "stadium" | "box" | "triangle" | "none";
 
 /** Revision triangle. */
 const TRIANGLE_WIDTH = 8.4;
 const TRIANGLE_HEIGHT = 7;
+/** Spool box, and its heavy line. */
+const BOX_HEIGHT = 6.4;
+const BOX_LINE = 0.6;
 
 export interface Mark {
   readonly shape: MarkShape;
@@ -31,6 +37,7 @@ function markWidth(mark: Mark, measure: MeasureText): number {
     case "circle": return Math.max(size.BALLOON, text + 2.4);
     case "hexagon": return Math.max(size.HEXAGON, text + 3.4);
     case "stadium": return text + 4.2;
+    case "box": return Math.max(BOX_HEIGHT, text + 3.2);
     case "triangle": return Math.max(TRIANGLE_WIDTH, text + 5.5);
     case "none": return text + 1.2;
   }
@@ -40,11 +47,16 @@ function markHeight(mark: Mark): number {
   if (mark.shape === "none") return size.TEXT_CAP;
   if (mark.shape === "triangle") return TRIANGLE_HEIGHT;
   if (mark.shape === "hexagon") return size.HEXAGON * Math.sin(Math.PI / 3);
+  if (mark.shape === "box") return BOX_HEIGHT;
   return mark.shape === "circle" ? size.BALLOON : size.PIECE_HEIGHT;
 }
 
 function markOutline(mark: Mark, centre: PaperPoint, width: number): readonly PathSegment[] {
   if (mark.shape === "stadium") return stadiumSegments(centre, width, size.PIECE_HEIGHT);
+  if (mark.shape === "box") {
+    const [w, h] = [width / 2 - 0.2, BOX_HEIGHT / 2];
+    return polygonSegments([[centre[0] - w, centre[1] - h], [centre[0] + w, centre[1] - h], [centre[0] + w, centre[1] + h], [centre[0] - w, centre[1] + h]]);
+  }
   if (mark.shape === "triangle") {
     const h = TRIANGLE_HEIGHT / 2;
     return polygonSegments([[centre[0], centre[1] - h], [centre[0] + width / 2, centre[1] + h], [centre[0] - width / 2, centre[1] + h]]);
@@ -63,7 +75,7 @@ function widened(segments: readonly PathSegment[], centre: PaperPoint, by: numbe
 export function marksLabel(marks: readonly Mark[], place: MarkPlace, measure: MeasureText): Label {
   const widths = marks.map((mark) => markWidth(mark, measure));
   const total = widths.reduce((sum, w) => sum + w, 0);
-  const ink: Ink = marks.some((mark) => mark.shape === "hexagon") ? "dye" : "ink";
+  const ink: Ink = marks.some((mark) => mark.shape === "hexagon") ? "dye" : marks.some((mark) => mark.shape === "triangle") ? "alert" : "ink";
   return {
     id: place.id, anchors: place.anchors, clear: place.clear, own: place.own ?? 0, along: place.along, leaderFrom: 0, hubs: markHubs(marks, widths, total),
     halfWidth: total / 2, halfHeight: Math.max(...marks.map(markHeight)) / 2,
@@ -87,7 +99,7 @@ function markHubs(marks: readonly Mark[], widths: readonly number[], total: numb
   let x = -total / 2;
   marks.forEach((mark, i) => {
     const width = widths[i] ?? 0;
-    const radius = mark.shape === "stadium" ? size.PIECE_HEIGHT / 2 : mark.shape === "circle" ? size.BALLOON / 2 : mark.shape === "triangle" ? TRIANGLE_HEIGHT / 3 : size.HEXAGON / 2 - 0.25;
+    const radius = mark.shape === "stadium" ? size.PIECE_HEIGHT / 2 : mark.shape === "circle" ? size.BALLOON / 2 : mark.shape === "triangle" ? TRIANGLE_HEIGHT / 3 : mark.shape === "box" ? BOX_HEIGHT / 2 : size.HEXAGON / 2 - 0.25;
     if (mark.shape !== "none" && (i === 0 || i === marks.length - 1)) {
       if (i === 0) hubs.push({ offset: [x + radius, 0], radius });
       if (i > 0 || width > 2 * radius + 0.5) hubs.push({ offset: [x + width - radius, 0], radius });
@@ -99,9 +111,9 @@ function markHubs(marks: readonly Mark[], widths: readonly number[], total: numb
 
 function markItems(mark: Mark, centre: PaperPoint, width: number, ink: Ink): readonly DisplayItem[] {
   const middle: PaperPoint = mark.shape === "triangle" ? [centre[0], centre[1] + 1.4] : centre;
-  const text = centredText("balloon", mark.ref, middle, mark.text, { capMm: size.TEXT_CAP, ink: mark.shape === "none" ? "ink" : ink, face: mark.shape === "none" ? "bold" : "regular" });
+  const text = centredText("balloon", mark.ref, middle, mark.text, { capMm: size.TEXT_CAP, ink: mark.shape === "none" ? "ink" : ink, face: mark.shape === "none" || mark.shape === "box" ? "bold" : "regular" });
   if (mark.shape === "none") return [text];
-  return [pathItem("balloon", mark.ref, markOutline(mark, centre, width), { stroke: ink, fill: "paper", widthMm: size.MARK_WIDTH }), text];
+  return [pathItem("balloon", mark.ref, markOutline(mark, centre, width), { stroke: ink, fill: "paper", widthMm: mark.shape === "box" ? BOX_LINE : size.MARK_WIDTH }), text];
 }
 
 export interface BlockLine {

@@ -79,3 +79,7 @@ export const BESIDE_MM = 130;
 export const PAPER_EPS = 1e-6;
 /** Directions whose cosine is above this are the same for a port and its leg. */
 export const PORT_COSINE = 0.97;
+/** A roll this near a quarter turn is square, radians (0.2 degrees): a fitter's level reads no finer. */
+export const ROLL_SQUARE_RAD = (0.2 * Math.PI) / 180;
+/** Pipe that rises by less than this share of its length still has an underside to name (about 6 degrees). */
+export const LEVEL_SINE = 0.105;

@@ -242,8 +242,19 @@ export interface Loop {
   readonly closes: boolean;
 }
 
+/** Where the specification, material, insulation or tracing changes; an empty text = none before, or none after. */
+export interface LineBreak {
+  readonly pointId: string;
+  readonly position: Vec3;
+  readonly what: "specification" | "material" | "insulation" | "tracing";
+  readonly before: string;
+  readonly after: string;
+}
+
 export interface Model {
   readonly loops?: readonly Loop[];
+  /** absent = none. */
+  readonly breaks?: readonly LineBreak[];
   readonly document: RunDocument;
   readonly nodes: readonly Node[];
   readonly legs: readonly Leg[];
