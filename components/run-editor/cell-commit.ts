@@ -2,12 +2,14 @@
 import type { Point, Provenance, RunDocument, UnitSystem } from "@/iso";
 import { FROM_DRAWING, runOf, withItem, withPoint, withPointsInserted } from "./document-edits";
 import type { EntryResult } from "./entry-result";
-import { parseItem } from "./item-entry";
+import { NO_ITEM, parseItem } from "./item-entry";
 import { itemEcho, itemText } from "./item-text";
+import { isMeet, meetEcho, meetsAt, parseMeet, withMeet } from "./loop-entry";
 import { parseMove, ZERO_OFFSET } from "./move-entry";
 import { moveEcho, moveText, straightOnOf, type StraightOn } from "./move-text";
 import { parsePlaces, placesEcho, placesText } from "./place-entry";
 import { parseProvenance, PROVENANCE_WORD } from "./provenance-entry";
+import { pointWithStarts, startsEcho, startsText } from "./starts-entry";
 
 export type Column = "move" | "item" | "joint" | "source" | "note";
 export const COLUMNS: readonly Column[] = ["move", "item", "joint", "source", "note"];
@@ -46,25 +48,41 @@ export function nearSideAt(document: RunDocument, runId: string, row: number): "
   return row === 0 && document.runs[0]?.id === runId ? "out" : "in";
 }
 
+/** What a cell's text depends on beside its point. */
+export interface RowFacts {
+  readonly nearSide: "in" | "out";
+  readonly units: UnitSystem;
+  /** Name of the row the run's last row meets; null elsewhere. */
+  readonly meets: string | null;
+}
+
+export function rowFactsAt(document: RunDocument, runId: string, row: number): RowFacts {
+  return { nearSide: nearSideAt(document, runId, row), units: document.settings.units, meets: meetsAt(document, runId, row) };
+}
+
 /** The text a cell shows for a stored point. */
-export function cellText(point: Point, column: Column, nearSide: "in" | "out"): string {
+export function cellText(point: Point, column: Column, facts: RowFacts): string {
   switch (column) {
     case "move": return moveText(point.offset);
-    case "item": return itemText(point.item, jointPlace(point));
-    case "joint": return placesText(point.places, nearSide);
+    case "item": return joined(" ", facts.meets ? `meet ${facts.meets}` : itemText(point.item, jointPlace(point), facts.units), startsText(point.starts));
+    case "joint": return placesText(point.places, facts.nearSide);
     case "source": return PROVENANCE_WORD[point.provenance.kind];
     case "note": return point.note;
   }
 }
 
 /** The echo under a cell. */
-export function cellEcho(point: Point, column: Column, units: UnitSystem): string {
+export function cellEcho(point: Point, column: Column, facts: RowFacts): string {
   switch (column) {
-    case "move": return moveEcho(point.offset, units);
-    case "item": return itemEcho(point.item, jointPlace(point));
+    case "move": return moveEcho(point.offset, facts.units);
+    case "item": return joined("; ", facts.meets ? meetEcho(facts.meets) : itemEcho(point.item, jointPlace(point), facts.units), startsEcho(point.starts));
     case "joint": return Object.keys(point.places).length > 0 ? placesEcho(point.places) : "";
     default: return "";
   }
+}
+
+function joined(between: string, ...parts: readonly string[]): string {
+  return parts.filter((part) => part !== "").join(between);
 }
 
 /** A plain weld says its place in its own word ("fw"). */
@@ -79,8 +97,9 @@ export function commitCell(document: RunDocument, target: CellTarget, text: stri
   if (!run) return { ok: false, message: "This run is no longer there." };
   const existing = run.points[target.row];
   if (!existing && text.trim() === "") return { ok: true, value: document, understood: "" };
-  if (existing && text === cellText(existing, target.column, nearSideAt(document, target.runId, target.row))) {
-    return { ok: true, value: document, understood: cellEcho(existing, target.column, document.settings.units) };
+  const facts = rowFactsAt(document, target.runId, target.row);
+  if (existing && text === cellText(existing, target.column, facts)) {
+    return { ok: true, value: document, understood: cellEcho(existing, target.column, facts) };
   }
   const edit = readCell(document, target, text, context);
   if (!edit.ok) return edit;
@@ -96,9 +115,14 @@ function readCell(document: RunDocument, target: CellTarget, text: string, conte
     return mapped(parseMove(text, document.settings.units, straightOnAt(document, runId, row)), (offset) => (doc, id) =>
       withPoint(doc, id, (point) => ({ ...point, offset, provenance: { ...point.provenance, by: context.by, at: context.at } })));
   }
+  if (column === "item" && isMeet(text)) {
+    return mapped(parseMeet(document, runId, row, text), (met) => (doc, id) => withMeet(withItem(doc, id, NO_ITEM, context.branchId), runId, met));
+  }
   if (column === "item") {
-    return mapped(parseItem(text), ({ item, place }) => (doc, id) => {
-      const set = withItem(doc, id, item, context.branchId);
+    return mapped(parseItem(text, document.settings.units), ({ item, place, starts }) => (doc, id) => {
+      const run = runOf(doc, runId);
+      const open = run?.to && run.points[run.points.length - 1]?.id === id ? withMeet(doc, runId, null) : doc;
+      const set = withPoint(withItem(open, id, item, context.branchId), id, (point) => pointWithStarts(point, starts));
       return item.kind === "joint" ? withPoint(set, id, (point) => ({ ...point, places: place ? { ...point.places, in: place } : {} })) : set;
     });
   }

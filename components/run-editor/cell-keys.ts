@@ -18,6 +18,8 @@ export interface CellMood {
   /** First cell of the first row, last cell of the last one: Tab leaves the grid there. */
   readonly first: boolean;
   readonly last: boolean;
+  /** More than this cell is picked out. */
+  readonly block: boolean;
   /** A question mark is an ordinary character there. */
   readonly freeText: boolean;
 }
@@ -28,12 +30,20 @@ export type KeyIntent =
   | { readonly kind: "step"; readonly step: "row-start" | "row-end" | "first" | "last" }
   | { readonly kind: "list"; readonly by: 1 | -1 }
   | { readonly kind: "move"; readonly by: 1 | -1 }
+  | { readonly kind: "extend"; readonly step: "up" | "down" | "left" | "right" }
+  | { readonly kind: "fill"; readonly series: boolean }
+  | { readonly kind: "pick-rows"; readonly all: boolean }
+  | { readonly kind: "clear" | "let-go" | "double" }
   | { readonly kind: "insert" | "remove" | "undo" | "redo" | "edit" | "cancel" | "leave" | "help" };
 
 /** The intent of a key, or null when the browser should do what it does. */
 export function keyIntent(press: KeyPress, mood: CellMood): KeyIntent | null {
   if (press.ctrl) return withControl(press, mood);
   if (press.alt) return withAlt(press);
+  if (press.shift && !mood.editing) {
+    const stretch = stretched(press, mood);
+    if (stretch) return stretch;
+  }
   switch (press.key) {
     case "Enter": return { kind: mood.picked ? "take" : "commit", step: press.shift ? "up" : "next-row" };
     case "Tab": return tabbed(press, mood);
@@ -44,8 +54,21 @@ export function keyIntent(press: KeyPress, mood: CellMood): KeyIntent | null {
     case "Home": return mood.editing ? null : { kind: "step", step: "row-start" };
     case "End": return mood.editing ? null : { kind: "step", step: "row-end" };
     case "F2": return { kind: "edit" };
-    case "Escape": return { kind: mood.editing ? "cancel" : "leave" };
+    case "Escape": return { kind: mood.editing ? "cancel" : mood.block ? "let-go" : "leave" };
+    case "Delete": case "Backspace": return mood.block && !mood.editing ? { kind: "clear" } : null;
     case "?": return mood.editing || mood.freeText ? null : { kind: "help" };
+    default: return null;
+  }
+}
+
+/** Shift stretches the block from cell to cell; with the space bar it takes the whole row. */
+function stretched(press: KeyPress, mood: CellMood): KeyIntent | null {
+  switch (press.key) {
+    case "ArrowUp": return mood.listOpen ? null : { kind: "extend", step: "up" };
+    case "ArrowDown": return mood.listOpen ? null : { kind: "extend", step: "down" };
+    case "ArrowLeft": return { kind: "extend", step: "left" };
+    case "ArrowRight": return { kind: "extend", step: "right" };
+    case " ": return { kind: "pick-rows", all: false };
     default: return null;
   }
 }
@@ -61,6 +84,8 @@ function withControl(press: KeyPress, mood: CellMood): KeyIntent | null {
     case "Delete": return { kind: "remove" };
     case "Home": return { kind: "step", step: "first" };
     case "End": return { kind: "step", step: "last" };
+    case "d": case "D": return { kind: "fill", series: press.shift };
+    case "a": case "A": return mood.editing ? null : { kind: "pick-rows", all: true };
     case "z": return mood.editing ? { kind: "cancel" } : { kind: press.shift ? "redo" : "undo" };
     case "Z": return { kind: "redo" };
     case "y": return mood.editing ? null : { kind: "redo" };
@@ -69,6 +94,7 @@ function withControl(press: KeyPress, mood: CellMood): KeyIntent | null {
 }
 
 function withAlt(press: KeyPress): KeyIntent | null {
+  if (press.key === "ArrowDown" && press.shift) return { kind: "double" };
   if (press.key === "ArrowUp") return { kind: "move", by: -1 };
   if (press.key === "ArrowDown") return { kind: "move", by: 1 };
   return null;
@@ -82,10 +108,16 @@ export const KEY_HELP: readonly { readonly keys: readonly string[]; readonly doe
   { keys: ["Home", "End"], does: "first and last cell of the row; with Ctrl first and last row" },
   { keys: ["F2"], does: "edits the text in the cell; in Item it opens the list" },
   { keys: ["Esc"], does: "drops what was typed; once more leaves the grid" },
-  { keys: ["Ctrl+Enter"], does: "puts a row in above" },
-  { keys: ["Ctrl+Delete"], does: "takes the row out, with its branches" },
-  { keys: ["Alt+↑", "Alt+↓"], does: "move the row up or down" },
-  { keys: ["Ctrl+Z", "Ctrl+Y"], does: "undo and redo, one entry at a time" },
-  { keys: ["Ctrl+V"], does: "pastes rows from a spreadsheet: Move, Item, Joint, Source, Note" },
+  { keys: ["Shift+↑", "Shift+↓", "Shift+←", "Shift+→"], does: "pick out a block of cells; so does a press with Shift held" },
+  { keys: ["Shift+Space"], does: "picks out the whole row; Ctrl+A all rows of the run" },
+  { keys: ["Ctrl+C", "Ctrl+X", "Ctrl+V"], does: "copy, cut and paste cells or rows, also from and to a spreadsheet: Move, Item, Joint, Source, Note" },
+  { keys: ["Ctrl+D"], does: "fills down: the block from its top row, or a cell from the one above" },
+  { keys: ["Ctrl+Shift+D"], does: "fills a series: N1, N2, N3; e 1-0, e 2-0, e 3-0" },
+  { keys: ["Delete"], does: "empties the cells of a block" },
+  { keys: ["Ctrl+Enter"], does: "puts a row in above, or as many as are picked out" },
+  { keys: ["Alt+Shift+↓"], does: "doubles the row, or the rows picked out, below" },
+  { keys: ["Ctrl+Delete"], does: "takes the row or the rows picked out, with their branches" },
+  { keys: ["Alt+↑", "Alt+↓"], does: "move the row or the rows picked out" },
+  { keys: ["Ctrl+Z", "Ctrl+Y"], does: "undo and redo, one entry, paste, fill or move at a time" },
   { keys: ["?"], does: "shows this help" },
 ];

@@ -32,22 +32,15 @@ export function withPointsInserted(document: RunDocument, runId: string, row: nu
 }
 
 /**
- * Sets a point's item. A branch item gets its branch run at once; the empty branch of an item that is none any more
- * goes with it (one with points stays, and the problem list says so).
+ * Sets a point's item, as typed. A branch item gets its branch run at once (a cross two); an empty branch of an item that
+ * takes none any more goes with it (one with points stays, and the problem list says so).
  */
 export function withItem(document: RunDocument, pointId: string, item: Item, branchId: string): RunDocument {
-  const set = withPoint(document, pointId, (point) => ({ ...point, item: mergedItem(point.item, item) }));
-  const branch = set.runs.find((run) => run.from === pointId);
-  if (isBranchFitting(item)) return branch ? set : branchAdd(set, pointId, branchId);
-  return branch && branch.points.length === 0 ? { ...set, runs: set.runs.filter((run) => run !== branch) } : set;
-}
-
-/** Keeps what the detail strip set (bolt holes, stem, gasket side) when the same kind of item is typed again. */
-function mergedItem(before: Item, after: Item): Item {
-  if (before.kind === "flange" && after.kind === "flange") {
-    const goes = after.goes === "open" && before.goes !== "nozzle" ? before.goes : after.goes;
-    return { ...after, boltHoles: before.boltHoles, gasketSide: before.gasketSide, goes };
-  }
-  if (before.kind === "valve" && after.kind === "valve") return { ...after, stem: before.stem, faceToFaceMm: before.faceToFaceMm };
-  return after;
+  const set = withPoint(document, pointId, (point) => ({ ...point, item }));
+  const wanted = !isBranchFitting(item) ? 0 : item.kind === "cross" ? 2 : 1;
+  const branches = set.runs.filter((run) => run.from === pointId);
+  const spare = branches.filter((run) => run.points.length === 0).slice(Math.max(0, wanted - branches.filter((run) => run.points.length > 0).length));
+  const kept = spare.length === 0 ? set : { ...set, runs: set.runs.filter((run) => !spare.includes(run)) };
+  const missing = Math.max(0, wanted - (branches.length - spare.length));
+  return Array.from({ length: missing }, (_, n) => (n === 0 ? branchId : `${branchId}b`)).reduce((now, id) => branchAdd(now, pointId, id), kept);
 }

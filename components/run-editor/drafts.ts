@@ -1,6 +1,6 @@
 /** Texts that were not understood and wait in their cells. */
 import type { RunDocument } from "@/iso";
-import { cellText, COLUMNS, nearSideAt, type CellTarget } from "./cell-commit";
+import { cellText, COLUMNS, rowFactsAt, type CellTarget } from "./cell-commit";
 import { gridRows } from "./cursor-steps";
 import { runOf } from "./document-edits";
 import type { Draft, EditorState } from "./editor-types";
@@ -26,5 +26,5 @@ export function waitingDrafts(document: RunDocument, drafts: EditorState["drafts
 export function shownText(state: EditorState, target: CellTarget): string {
   const draft = state.drafts[draftKey(state.document, target)];
   const point = runOf(state.document, target.runId)?.points[target.row];
-  return draft?.text ?? (point ? cellText(point, target.column, nearSideAt(state.document, target.runId, target.row)) : "");
+  return draft?.text ?? (point ? cellText(point, target.column, rowFactsAt(state.document, target.runId, target.row)) : "");
 }

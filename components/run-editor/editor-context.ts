@@ -11,9 +11,11 @@ export interface EditorDoors {
   readonly send: Send;
   readonly openHelp: () => void;
   readonly readOnly: boolean;
+  /** The block as tab-separated text; null while only one cell is picked out. */
+  readonly blockText: () => string | null;
 }
 
-export const EditorContext = createContext<EditorDoors>({ send: () => undefined, openHelp: () => undefined, readOnly: true });
+export const EditorContext = createContext<EditorDoors>({ send: () => undefined, openHelp: () => undefined, readOnly: true, blockText: () => null });
 
 export function useEditor(): EditorDoors {
   return useContext(EditorContext);

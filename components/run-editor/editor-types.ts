@@ -14,6 +14,12 @@ export interface EditorState {
   readonly future: readonly RunDocument[];
   readonly drafts: Readonly<Record<string, Draft>>;
   readonly cursor: CellTarget;
+  /** Where a block of cells was begun; the cursor is its other corner. null = the cursor's cell alone. */
+  readonly anchor: CellTarget | null;
+  /** The block takes its rows whole. */
+  readonly wholeRows: boolean;
+  /** What the last paste did; null when it was read and put away. */
+  readonly report: PasteReport | null;
   /** Counts the moves of the cursor that should take the focus along. */
   readonly focusTurn: number;
   /** The document with the valid entry being typed, for the drawing only; null when nothing is being typed. */
@@ -30,6 +36,21 @@ export interface EditorState {
 export interface TypingEcho {
   readonly ok: boolean;
   readonly words: string;
+}
+
+/** What a paste took, and each cell it did not understand; those wait in their cells. */
+export interface PasteReport {
+  readonly lines: number;
+  readonly cells: number;
+  readonly refused: readonly PasteRefusal[];
+}
+
+export interface PasteRefusal {
+  /** Line of the pasted text, from 1. */
+  readonly line: number;
+  readonly target: CellTarget;
+  readonly text: string;
+  readonly message: string;
 }
 
 /** Fresh ids that come with each action; as many as it may need. */
@@ -54,10 +75,20 @@ export type EditorAction =
   | { readonly type: "show-point"; readonly pointId: string; readonly focus: boolean }
   | { readonly type: "row-insert"; readonly target: CellTarget; readonly stamp: Stamp }
   | { readonly type: "row-remove"; readonly target: CellTarget; readonly stamp: Stamp }
+  | { readonly type: "extend"; readonly step: "up" | "down" | "left" | "right" }
+  | { readonly type: "stretch"; readonly target: CellTarget; readonly rows: boolean }
+  | { readonly type: "pick-rows"; readonly runId: string; readonly from: number; readonly to: number }
+  | { readonly type: "pick-run"; readonly runId: string }
+  | { readonly type: "let-go" }
+  | { readonly type: "row-double"; readonly target: CellTarget; readonly stamp: Stamp }
+  | { readonly type: "clear"; readonly stamp: Stamp }
+  | { readonly type: "cut"; readonly stamp: Stamp }
+  | { readonly type: "fill"; readonly series: boolean; readonly stamp: Stamp }
+  | { readonly type: "report-read" }
   | { readonly type: "row-move"; readonly target: CellTarget; readonly by: -1 | 1; readonly stamp: Stamp }
   | { readonly type: "point-patch"; readonly pointId: string; readonly patch: Partial<Omit<Point, "id">>; readonly stamp: Stamp }
   | { readonly type: "points-insert"; readonly runId: string; readonly row: number; readonly points: readonly Point[]; readonly patch: PointPatch | null; readonly stamp: Stamp }
-  | { readonly type: "document-patch"; readonly patch: Partial<Pick<RunDocument, "settings" | "view" | "notes" | "number" | "title" | "runs">>; readonly stamp: Stamp }
+  | { readonly type: "document-patch"; readonly patch: Partial<Pick<RunDocument, "settings" | "view" | "notes" | "sheetNotes" | "sheets" | "number" | "title" | "runs">>; readonly stamp: Stamp }
   | { readonly type: "paste"; readonly target: CellTarget; readonly text: string; readonly stamp: Stamp }
   | { readonly type: "replace"; readonly document: RunDocument; readonly stamp: Stamp }
   | { readonly type: "undo" }

@@ -1,6 +1,6 @@
 "use client";
 import clsx from "clsx";
-import { memo, useId, useRef, useState, type ClipboardEvent, type KeyboardEvent } from "react";
+import { memo, useId, useRef, useState, type ClipboardEvent, type KeyboardEvent, type PointerEvent } from "react";
 import { useEditor } from "./editor-context";
 import type { CellTarget, Column } from "./cell-commit";
 import { keyIntent, type KeyIntent } from "./cell-keys";
@@ -29,6 +29,8 @@ export interface GridCellProps {
   readonly placeholder: string;
   readonly draft: Draft | null;
   readonly active: boolean;
+  /** Within a block of several cells. */
+  readonly inBlock: boolean;
   readonly typing: TypingEcho | null;
   readonly first: boolean;
   readonly last: boolean;
@@ -43,7 +45,7 @@ export const GridCell = memo(function GridCell(props: GridCellProps) {
   const echo = cell.typed !== null ? (props.typing?.words ?? "") : props.echo;
   const unclear = cell.typed !== null && props.typing !== null && !props.typing.ok;
   return (
-    <div role="gridcell" aria-colindex={COLUMN_INDEX[column]} className={clsx("relative min-w-0 border-hair px-1 py-1 sm:border-l", column === "move" && "max-sm:col-span-2")}>
+    <div role="gridcell" aria-colindex={COLUMN_INDEX[column]} aria-selected={props.inBlock || undefined} className={clsx("relative min-w-0 border-hair px-1 py-1 sm:border-l", props.inBlock && "bg-dye/15", column === "move" && "max-sm:col-span-2")}>
       <span aria-hidden className="cell-label block px-1 sm:hidden">
         {COLUMN_LABEL[column]}
       </span>
@@ -71,14 +73,14 @@ export const GridCell = memo(function GridCell(props: GridCellProps) {
       <p id={`${id}-echo`} role={message ? "alert" : undefined} className={clsx("px-1.5 text-xs leading-[1.1rem] max-sm:empty:hidden sm:min-h-[1.1rem]", message ? clsx("font-medium text-alert", active ? [HANGING, column === "move" || column === "item" ? "sm:left-1" : "sm:right-1"] : "sm:line-clamp-2") : unclear ? "text-caution" : "text-soft")}>
         {message ?? echo}
       </p>
-      {cell.list.length > 0 ? <ItemPicker id={`${id}-list`} words={cell.list} picked={cell.picked} onTake={cell.take} /> : null}
+      {cell.list.length > 0 ? <ItemPicker id={`${id}-list`} words={cell.list} picked={cell.picked} grouped={cell.grouped} onTake={cell.take} /> : null}
     </div>
   );
 });
 
 /** The typing of one cell: its text until it is committed, the list under it, and what each key does. */
 function useCellTyping(props: GridCellProps) {
-  const { send, openHelp, readOnly } = useEditor();
+  const { send, openHelp, readOnly, blockText } = useEditor();
   const target: CellTarget = { runId: props.runId, row: props.row, column: props.column };
   const [typed, setTyped] = useState<string | null>(null);
   const [editing, setEditing] = useState(false);
@@ -105,9 +107,9 @@ function useCellTyping(props: GridCellProps) {
     if (readOnly) send({ type: "step", step });
     else send({ type: "commit", target, text, step });
   };
-  /** A word that still needs its size goes into the cell and waits for it. */
+  /** A word that still needs its size or radius goes into the cell and waits for it. */
   const take = (word: ItemWord, step: Extract<KeyIntent, { kind: "commit" }>["step"] = "stay"): void => {
-    if (!word.needsSize) return commit(word.word, step);
+    if (!word.needs) return commit(word.word, step);
     type(`${word.word} `);
     setListWanted(false);
     field.current?.focus();
@@ -132,15 +134,32 @@ function useCellTyping(props: GridCellProps) {
       }
       case "leave": return document.getElementById("after-grid")?.focus();
       case "help": return openHelp();
-      default: return actOnRow(intent.kind === "move" ? intent.by : null, intent.kind);
+      case "extend": return send({ type: "extend", step: intent.step });
+      case "pick-rows": return intent.all ? send({ type: "pick-run", runId: target.runId }) : send({ type: "pick-rows", runId: target.runId, from: target.row, to: target.row });
+      case "let-go": return send({ type: "let-go" });
+      default: return actOnRow(intent);
     }
   };
-  const actOnRow = (by: 1 | -1 | null, kind: string): void => {
+  const actOnRow = (intent: KeyIntent): void => {
     if (readOnly) return;
-    if (kind === "undo" || kind === "redo") return send({ type: kind });
+    if (intent.kind === "undo" || intent.kind === "redo") return send({ type: intent.kind });
     if (typed !== null) commit(typed, "stay");
-    if (by !== null) send({ type: "row-move", target, by });
-    else send({ type: kind === "insert" ? "row-insert" : "row-remove", target });
+    switch (intent.kind) {
+      case "move": return send({ type: "row-move", target, by: intent.by });
+      case "double": return send({ type: "row-double", target });
+      case "fill": return send({ type: "fill", series: intent.series });
+      case "clear": return send({ type: "clear" });
+      case "insert": return send({ type: "row-insert", target });
+      case "remove": return send({ type: "row-remove", target });
+    }
+  };
+  /** Puts the block on the clipboard; a single cell's text goes there as the browser does it. */
+  const toClipboard = (event: ClipboardEvent, cutting: boolean): void => {
+    const text = typed === null ? blockText() : null;
+    if (text === null) return;
+    event.preventDefault();
+    event.clipboardData.setData("text/plain", text);
+    if (cutting && !readOnly) send({ type: "cut" });
   };
   const input = {
     ref: field,
@@ -157,21 +176,28 @@ function useCellTyping(props: GridCellProps) {
       if (typed !== null) commit(typed, "stay");
     },
     onDoubleClick: () => setEditing(true),
+    onPointerDown: (event: PointerEvent<HTMLInputElement>) => {
+      if (!event.shiftKey) return props.active ? send({ type: "let-go" }) : undefined;
+      event.preventDefault();
+      send({ type: "stretch", target, rows: false });
+    },
+    onCopy: (event: ClipboardEvent) => toClipboard(event, false),
+    onCut: (event: ClipboardEvent) => toClipboard(event, true),
     onPaste: (event: ClipboardEvent) => {
       const text = event.clipboardData.getData("text/plain");
-      if (readOnly || !isTable(text)) return;
+      if (readOnly || (!isTable(text) && blockText() === null)) return;
       event.preventDefault();
       reset();
       send({ type: "paste", target, text });
     },
     onKeyDown: (event: KeyboardEvent) => {
       if (event.nativeEvent.isComposing) return;
-      const mood = { editing: editing || typed !== null || props.draft !== null, listOpen: list.length > 0, picked: picked !== null, first: props.first, last: props.last, freeText: props.column === "note" };
+      const mood = { editing: editing || typed !== null || props.draft !== null, listOpen: list.length > 0, picked: picked !== null, first: props.first, last: props.last, block: blockText() !== null, freeText: props.column === "note" };
       const intent = keyIntent({ key: event.key, ctrl: event.ctrlKey || event.metaKey, shift: event.shiftKey, alt: event.altKey }, mood);
       if (!intent) return;
       event.preventDefault();
       act(intent);
     },
   };
-  return { typed, list, picked, take: (word: ItemWord) => take(word), input };
+  return { typed, list, picked, grouped: (typed ?? "").trim() === "", take: (word: ItemWord) => take(word), input };
 }

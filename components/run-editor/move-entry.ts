@@ -5,13 +5,14 @@
  *   E 2-0 N 1-0 U 3           several axes at once
  *   2-0, 1-0, 3               east, north, up by position
  *   3-0                       straight on from the leg before
+ *   e 10-0 @ 1:100            a level length and its slope: %, 1:n, in/ft, mm/m; "@ -2%" or "@ down 2%" falls
  *   @ 10-0, 0, 8-0            a position on the line's own axes
  * Lengths in millimetres; a bare number is in the line's own unit.
  */
-import { formatLength, parseDirection, parseLength } from "@/iso";
+import { formatLength, parseDirection, parseLength, parseSlope } from "@/iso";
 import type { Entry, Offset, UnitSystem } from "@/iso";
 import { refused, understood, type EntryResult } from "./entry-result";
-import { echoTriple, negated, type Axis, type StraightOn } from "./move-text";
+import { echoTriple, negated, slopeEcho, type Axis, type StraightOn } from "./move-text";
 
 const AXIS_WORDS: Readonly<Record<string, Axis>> = {
   east: "E", west: "W", north: "N", south: "S", up: "U", down: "D",
@@ -41,12 +42,35 @@ export function parseMove(text: string, units: UnitSystem, straightOn: StraightO
   const plain = plainWords(text);
   if (plain === "") return understood(ZERO_OFFSET, "");
   if (plain.startsWith("@")) return parseAbsolute(plain.slice(1).trim(), units);
+  const sloped = /^(.*?)\s*@\s*(.*)$/.exec(plain);
+  if (sloped) return parseSloped(sloped[1] ?? "", rawSlope(text), units, straightOn);
   const oneWord = ONE_WORD_DIRECTION.exec(plain);
   if (oneWord) return parsePolar(oneWord[1] ?? "", (oneWord[2] ?? "").trim(), units);
   if (/[,;]/.test(plain)) return parseTriple(plain, units, "enu");
   if (!/^[ENUWSD]/i.test(plain)) return parseStraightOn(plain, units, straightOn);
   return parseNamedAxes(plain, units);
 }
+
+/** The slope as typed: whole words such as "down" are its own. */
+function rawSlope(text: string): string {
+  return text.slice(text.indexOf("@") + 1).trim();
+}
+
+/** A level leg with its slope: the length is measured level, the rise follows from it. */
+function parseSloped(moveText: string, slopeText: string, units: UnitSystem, straightOn: StraightOn | null): EntryResult<Offset> {
+  const level = parseMove(moveText, units, straightOn);
+  if (!level.ok) return level;
+  if (moveText === "" || (level.value.kind !== "polar" && level.value.kind !== "slope")) return refused("A slope goes with one level direction and its length, such as e 10-0 @ 1:100.");
+  const { direction, length } = level.value;
+  if (Math.abs(direction.u) > LEVEL) return refused("A slope is taken from a level direction: e, n30e and the like.");
+  const slope = parseSlope(slopeText);
+  if (!slope.ok) return refused(slope.message);
+  const value: Offset = { kind: "slope", direction: { text: direction.text, e: direction.e, n: direction.n, u: 0 }, length, slope: { text: slopeText, ratio: slope.ratio } };
+  return understood(value, slopeEcho(value, units));
+}
+
+/** A unit direction with less of it upright than this is level. */
+const LEVEL = 1e-9;
 
 /** Turns whole words (east, up) into letters and smooths white space. */
 function plainWords(text: string): string {
@@ -94,7 +118,10 @@ function parseStraightOn(text: string, units: UnitSystem, straightOn: StraightOn
   const length = parseLength(text, units);
   if (!length.ok) return refused(`${length.message} ${MOVE_HINT}`);
   if (!straightOn) return refused("Start with a direction: e, w, n, s, u or d, such as e 3-1 1/2.");
-  const value: Offset = { kind: "polar", direction: straightOn, length: { text, mm: length.mm } };
+  const { slope, text: words, e, n, u } = straightOn;
+  const value: Offset = slope
+    ? { kind: "slope", direction: { text: words, e, n, u: 0 }, length: { text, mm: length.mm }, slope }
+    : { kind: "polar", direction: { text: words, e, n, u }, length: { text, mm: length.mm } };
   return understood(value, `${formatLength(length.mm, units)} straight on`);
 }
 

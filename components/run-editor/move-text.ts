@@ -1,5 +1,5 @@
 /** Writes a Move cell: the stored offset as the text it reads back from, its echo, and the direction it goes on in. */
-import { formatLength, parseDirection } from "@/iso";
+import { formatLength, formatTerm, parseDirection, parseSlope } from "@/iso";
 import type { Entry, Offset, UnitSystem } from "@/iso";
 
 export type Axis = "E" | "W" | "N" | "S" | "U" | "D";
@@ -10,6 +10,8 @@ export interface StraightOn {
   readonly e: number;
   readonly n: number;
   readonly u: number;
+  /** A sloped leg goes on in its slope. */
+  readonly slope?: Extract<Offset, { kind: "slope" }>["slope"];
 }
 
 const AXIS_NAMES: Readonly<Record<Axis, string>> = {
@@ -71,14 +73,15 @@ export function slopeEcho({ direction, length, slope }: Extract<Offset, { kind: 
   const named = parseDirection(direction.text);
   const level = `${formatLength(length.mm, units)} ${named.ok ? named.understood : direction.text} level`;
   if (slope.ratio === 0) return level;
-  const falls = slope.ratio < 0;
-  const drop = formatLength(Math.abs(slope.ratio * length.mm), units);
-  return `${level}, ${falls ? "falls" : "rises"} ${slope.text.replace(/^[-+]\s*/, "")}: ${drop} ${falls ? "lower" : "higher"}`;
+  const read = parseSlope(slope.text);
+  const rise = formatTerm(Math.abs(slope.ratio * length.mm), units);
+  return `${level}, ${read.ok ? read.understood : slope.text}: ${rise} ${units === "metric" ? "mm" : "in"} ${slope.ratio < 0 ? "lower" : "higher"}`;
 }
 
 /** The direction a bare length on the next row continues in, or null when this offset has none. */
 export function straightOnOf(offset: Offset): StraightOn | null {
-  if (offset.kind === "polar" || offset.kind === "slope") return offset.direction;
+  if (offset.kind === "polar") return offset.direction;
+  if (offset.kind === "slope") return { ...offset.direction, slope: offset.slope };
   if (offset.kind === "absolute") return null;
   const [e, n, u] = [offset.e.mm, offset.n.mm, offset.u.mm];
   const length = Math.hypot(e, n, u);

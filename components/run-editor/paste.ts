@@ -16,11 +16,19 @@ export function isTable(text: string): boolean {
   return /\t|\n./.test(text.trimEnd());
 }
 
+/** Lines a pasted text has, without empty ones. */
+export function pastedLines(text: string): number {
+  return linesOf(text).length;
+}
+
+function linesOf(text: string): readonly string[] {
+  return text.replace(/\r\n?/g, "\n").split("\n").filter((line) => line.trim() !== "").slice(0, MOST_LINES);
+}
+
 /** Lays pasted lines over the grid, to the right and down; empty cells leave what is there. */
 export function pastedCells(text: string, from: CellTarget): readonly PastedCell[] {
   const start = COLUMNS.indexOf(from.column);
-  const lines = text.replace(/\r/g, "").split("\n").filter((line) => line.trim() !== "").slice(0, MOST_LINES);
-  return lines.flatMap((each, line) =>
+  return linesOf(text).flatMap((each, line) =>
     cellsOf(each, from.column === "move").flatMap((cell, i) => {
       const column = COLUMNS[start + i];
       return column && cell !== "" ? [{ target: { runId: from.runId, row: from.row + line, column }, text: cell, line }] : [];

@@ -3,12 +3,14 @@ import clsx from "clsx";
 import { memo, useEffect, useMemo, useRef, type RefObject } from "react";
 import type { Problem, Run, RunDocument, Severity } from "@/iso";
 import { COLUMNS, nearSideAt, type Column } from "./cell-commit";
+import { blockOf, isBlock } from "./block";
 import { rowCount } from "./cursor-steps";
 import { pointPlace } from "./document-edits";
 import type { Draft, EditorState } from "./editor-types";
 import { COLUMN_LABEL } from "./grid-cell";
 import { itemEcho } from "./item-text";
 import { GRID_COLUMNS, PointRow } from "./point-row";
+import { meetsAt } from "./loop-entry";
 import { isTouchScreen } from "./touch-screen";
 
 export interface PointGridProps {
@@ -25,7 +27,7 @@ export function PointGrid({ state, problems }: PointGridProps) {
   const { document, emptyRows } = state;
   const firstRows = useMemo(() => document.runs.map((_, index) => rowsBefore(document, index, emptyRows) + 1), [document, emptyRows]);
   return (
-    <div ref={box} role="grid" aria-label={`Points of line ${document.number}`} aria-rowcount={rowsBefore(document, document.runs.length, emptyRows)} aria-colcount={COLUMNS.length + 1} className="min-w-0">
+    <div ref={box} role="grid" aria-label={`Points of line ${document.number}`} aria-multiselectable aria-rowcount={rowsBefore(document, document.runs.length, emptyRows)} aria-colcount={COLUMNS.length + 1} className="min-w-0">
       <GridHead />
       {document.runs.map((run, index) => (
         <RunRows key={run.id} run={run} index={index} first={firstRows[index] ?? 2} state={state} severities={severities} drafts={drafts} last={index === document.runs.length - 1} />
@@ -66,6 +68,9 @@ interface RunRowsProps {
 
 function RunRows({ run, index, first, state, severities, drafts, last }: RunRowsProps) {
   const { document, cursor, typing } = state;
+  const block = blockOf(state);
+  const shown = block.runId === run.id && isBlock(state);
+  const inBlock = (row: number): boolean => shown && row >= block.fromRow && row <= block.toRow;
   const rows = Array.from({ length: rowCount(run, state.emptyRows) }, (_, row) => run.points[row] ?? null);
   return (
     <div role="rowgroup" aria-label={index === 0 ? "Main run" : branchName(document, run)}>
@@ -85,6 +90,9 @@ function RunRows({ run, index, first, state, severities, drafts, last }: RunRows
             ariaRow={first + row}
             units={document.settings.units}
             nearSide={nearSideAt(document, run.id, row)}
+            meets={meetsAt(document, run.id, row)}
+            blockFrom={inBlock(row) ? block.fromColumn : -1}
+            blockTo={inBlock(row) ? block.toColumn : -1}
             drafts={drafts.get(point?.id ?? `${run.id}:new`) ?? null}
             cursor={here ? cursor.column : null}
             typing={here ? typing : null}

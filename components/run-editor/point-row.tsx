@@ -2,7 +2,7 @@
 import clsx from "clsx";
 import { memo } from "react";
 import type { Point, Severity, UnitSystem } from "@/iso";
-import { cellEcho, cellText, COLUMNS, type Column } from "./cell-commit";
+import { cellEcho, cellText, COLUMNS, type Column, type RowFacts } from "./cell-commit";
 import { useEditor } from "./editor-context";
 import type { Draft, TypingEcho } from "./editor-types";
 import { GridCell } from "./grid-cell";
@@ -21,6 +21,11 @@ export interface PointRowProps {
   readonly ariaRow: number;
   readonly units: UnitSystem;
   readonly nearSide: "in" | "out";
+  /** Name of the row this last row of a run meets; null elsewhere. */
+  readonly meets: string | null;
+  /** First and last column of the block in this row, -1 without one. */
+  readonly blockFrom: number;
+  readonly blockTo: number;
   readonly drafts: Readonly<Partial<Record<Column, Draft>>> | null;
   readonly cursor: Column | null;
   readonly typing: TypingEcho | null;
@@ -55,11 +60,12 @@ export const PointRow = memo(function PointRow(props: PointRowProps) {
           row={row}
           column={column}
           rowName={name}
-          text={props.drafts?.[column]?.text ?? (point ? cellText(point, column, props.nearSide) : "")}
+          text={props.drafts?.[column]?.text ?? (point ? cellText(point, column, factsOf(props)) : "")}
           echo={point ? echoOf(props, point, column) : ""}
           placeholder={placeholderOf(props, column)}
           draft={props.drafts?.[column] ?? null}
           active={cursor === column}
+          inBlock={i >= props.blockFrom && i <= props.blockTo}
           typing={cursor === column ? props.typing : null}
           first={props.firstOfGrid && i === 0}
           last={props.lastOfGrid && i === COLUMNS.length - 1}
@@ -69,8 +75,12 @@ export const PointRow = memo(function PointRow(props: PointRowProps) {
   );
 });
 
+function factsOf({ nearSide, units, meets }: PointRowProps): RowFacts {
+  return { nearSide, units, meets };
+}
+
 function echoOf(props: PointRowProps, point: Point, column: Column): string {
-  const words = cellEcho(point, column, props.units);
+  const words = cellEcho(point, column, factsOf(props));
   return column === "move" && words === "" && props.row === 0 && props.branch === 0 ? "at the datum 0, 0, 0" : words;
 }
 
@@ -81,17 +91,27 @@ function placeholderOf({ point, row, branch, units }: PointRowProps, column: Col
   return units === "imperial" ? "e 3-1 1/2" : "e 775";
 }
 
-function RowNumber({ point, row, severity, name, runId, cursor }: PointRowProps & { readonly name: string }) {
+/** The row's number; pressing it picks the row out, with Shift up to there. Under it the worst finding; on a phone the row's buttons. */
+function RowNumber({ point, row, severity, name, runId, cursor, blockFrom }: PointRowProps & { readonly name: string }) {
   const { send, readOnly } = useEditor();
+  const target = { runId, row, column: "move" as const };
   return (
     <div role="rowheader" aria-colindex={1} className="figure flex items-center gap-2 px-1 pt-1.5 text-sm text-soft max-sm:col-span-2 max-sm:text-base sm:flex-col sm:gap-0.5">
-      <span className="sr-only">{name}</span>
-      <span aria-hidden>{row + 1}</span>
+      <button
+        type="button"
+        tabIndex={-1}
+        aria-label={`Pick out ${name}`}
+        aria-pressed={blockFrom >= 0}
+        onClick={(event) => (event.shiftKey ? send({ type: "stretch", target, rows: true }) : send({ type: "pick-rows", runId, from: row, to: row }))}
+        className={clsx("min-w-7 max-sm:min-h-11 max-sm:min-w-11 max-sm:border max-sm:border-hair", blockFrom >= 0 ? "bg-dye text-white" : "hover:bg-dye-tint")}
+      >
+        {row + 1}
+      </button>
       {severity ? <ProblemMark severity={severity} /> : null}
       {point && cursor !== null && !readOnly ? (
         <span className="ml-auto flex gap-1 font-sans sm:hidden">
-          <RowButton label="Row above" onPress={() => send({ type: "row-insert", target: { runId, row, column: "move" } })} />
-          <RowButton label="Remove" onPress={() => send({ type: "row-remove", target: { runId, row, column: "move" } })} />
+          <RowButton label="Row above" onPress={() => send({ type: "row-insert", target })} />
+          <RowButton label="Remove" onPress={() => send({ type: "row-remove", target })} />
         </span>
       ) : null}
     </div>

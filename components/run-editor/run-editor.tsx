@@ -4,6 +4,7 @@ import { parseRunDocument, type View } from "@/iso";
 import { Notice } from "@/components/ui/notice";
 import type { LineDetail, Viewer } from "@/lib/rules/api-types";
 import type { CellTarget } from "./cell-commit";
+import { BlockBar } from "./block-bar";
 import { CloseDialog } from "./close-dialog";
 import { runOf } from "./document-edits";
 import { readDraft, type StoredDraft } from "./draft-store";
@@ -13,6 +14,7 @@ import { waitingDrafts } from "./drafts";
 import { CutPanels, FindingPanels } from "./finding-panels";
 import { KeyHelp } from "./key-help";
 import { LineDrawing } from "./line-drawing";
+import { PasteReportNotice } from "./paste-report";
 import { PointDetail } from "./point-detail";
 import { PointGrid } from "./point-grid";
 import { ConflictBanner } from "./save-status";
@@ -20,6 +22,7 @@ import { SettingsDrawer } from "./settings-drawer";
 import { LineSheet } from "./line-sheet";
 import { isTouchScreen } from "./touch-screen";
 import { useAutosave } from "./use-autosave";
+import { useBlockText } from "./use-block-text";
 import { makeStamp, useEditorState } from "./use-editor-state";
 import { useLineModel, useSettledPreview } from "./use-line-model";
 import { useUndoKeys } from "./use-undo-keys";
@@ -44,7 +47,8 @@ export function RunEditor({ line, viewer, onUploads }: RunEditorProps) {
   useRestoredDraft(draft, send);
   const model = useLineModel(useSettledPreview(document, state.preview), line.marks, line.takeOuts);
   const point = runOf(document, cursor.runId)?.points[cursor.row] ?? null;
-  const doors = useMemo(() => ({ send, openHelp: () => setPanel("help"), readOnly: !line.editable }), [send, line.editable]);
+  const blockTextNow = useBlockText(state);
+  const doors = useMemo(() => ({ send, openHelp: () => setPanel("help"), readOnly: !line.editable, blockText: blockTextNow }), [send, line.editable, blockTextNow]);
   const showPoint = useCallback((pointId: string) => send({ type: "show-point", pointId, focus: !isTouchScreen() }), [send]);
   const showCell = useCallback((target: CellTarget) => send({ type: "cursor", target, focus: true }), [send]);
   const setView = useCallback((view: View | null) => send({ type: "document-patch", patch: { view } }), [send]);
@@ -87,6 +91,8 @@ export function RunEditor({ line, viewer, onUploads }: RunEditorProps) {
         </div>
         <div className="contents lg:order-1 lg:block lg:min-w-0">
           <div className="order-2 min-w-0">
+            <PasteReportNotice report={state.report} />
+            <BlockBar state={state} />
             <div className="border-t border-ink lg:max-h-[max(24rem,calc(100dvh-19rem))] lg:overflow-y-auto lg:border-x lg:border-b">
               <PointGrid state={state} problems={model.problems} />
             </div>

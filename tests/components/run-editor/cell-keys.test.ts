@@ -1,7 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { keyIntent, type CellMood, type KeyPress } from "@/components/run-editor/cell-keys";
 
-const REST: CellMood = { editing: false, listOpen: false, picked: false, first: false, last: false, freeText: false };
+const REST: CellMood = { editing: false, listOpen: false, picked: false, first: false, last: false, block: false, freeText: false };
 const press = (key: string, held: Partial<KeyPress> = {}): KeyPress => ({ key, ctrl: false, shift: false, alt: false, ...held });
 
 describe("keys of a cell", () => {

@@ -1,6 +1,8 @@
 import { describe, expect, it } from "vitest";
 import { itemSchema } from "@/iso";
-import { parseItem, readNps, suggestItems } from "@/components/run-editor/item-entry";
+import { parseItem, suggestItems } from "@/components/run-editor/item-entry";
+import { readNps } from "@/components/run-editor/rest-reader";
+import { exampleOf } from "@/components/run-editor/item-rest";
 import { itemCaution, itemText } from "@/components/run-editor/item-text";
 import { ITEM_WORDS } from "@/components/run-editor/item-words";
 
@@ -37,7 +39,7 @@ describe("an Item cell", () => {
   });
 
   it.each(ITEM_WORDS.map((word) => word.word))("shows %s again so that it reads the same", (word) => {
-    const typed = ITEM_WORDS.find((each) => each.word === word)?.needsSize ? `${word} 3` : word;
+    const typed = exampleOf(ITEM_WORDS.find((each) => each.word === word)!);
     const first = parseItem(typed);
     if (!first.ok) throw new Error(first.message);
     expect(itemSchema.safeParse(first.value.item).success).toBe(true);
