@@ -15,6 +15,8 @@ export interface LineText {
   readonly off: number;
   /** Try the side away from this point first; null = above. */
   readonly awayFrom: PaperPoint | null;
+  /** Capital height, mm; absent = that of words. */
+  readonly capMm?: number;
 }
 
 export interface PlacedText {
@@ -29,7 +31,8 @@ export function placeLineText(text: LineText, field: LabelField, heavy: InkMap, 
   const way: PaperPoint = [line.to[0] - line.from[0], line.to[1] - line.from[1]];
   const span = Math.hypot(way[0], way[1]);
   const angle = readingAngle(way);
-  const width = measure(text.text, size.TEXT_CAP, "regular");
+  const cap = text.capMm ?? size.TEXT_CAP;
+  const width = measure(text.text, cap, "regular");
   const up: PaperPoint = [Math.sin(angle), -Math.cos(angle)];
   const along: PaperPoint = [Math.cos(angle), Math.sin(angle)];
   const middle: PaperPoint = [(line.from[0] + line.to[0]) / 2, (line.from[1] + line.to[1]) / 2];
@@ -40,7 +43,7 @@ export function placeLineText(text: LineText, field: LabelField, heavy: InkMap, 
   for (const side of [outward, -outward]) {
     for (const k of [0, 0.5, -0.5, 1, -1]) {
       const centre: PaperPoint = [middle[0] + along[0] * slack * k + up[0] * text.off * side, middle[1] + along[1] * slack * k + up[1] * text.off * side];
-      const box = centredBox(centre, width, size.TEXT_CAP, angle);
+      const box = centredBox(centre, width, cap, angle);
       if (field.overlapping(box)) continue;
       const cost = (side === outward ? 0 : 6) + Math.abs(k) * 2 + turnedInk(heavy, box) * 6 + turnedInk(light, box) * 1.2;
       if (cost < bestCost) [best, bestCost] = [box, cost];
@@ -48,5 +51,5 @@ export function placeLineText(text: LineText, field: LabelField, heavy: InkMap, 
   }
   if (!best) return { items: [], box: null, text };
   field.add({ id: text.text, box: best, leader: null });
-  return { items: [centredText("dimension-text", text.ref, best.centre, text.text, { capMm: size.TEXT_CAP, rotateRad: angle })], box: best, text };
+  return { items: [centredText("dimension-text", text.ref, best.centre, text.text, { capMm: cap, rotateRad: angle })], box: best, text };
 }

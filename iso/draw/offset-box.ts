@@ -12,6 +12,7 @@ import type { Placed } from "./place";
 import { crossingOf, type Segment } from "./plane";
 import { project } from "./project";
 import * as size from "./sizes";
+import { typedSlopes } from "./slopes";
 import { offsetNaming, riseAngle, setLength, travelText, type OffsetNaming } from "./words";
 
 export interface OffsetNote {
@@ -117,7 +118,7 @@ function boxInk(placed: Placed, d: DrawnEdge, order: readonly (0 | 1 | 2)[], nam
     const line: Segment = { from: walk[i] ?? d.from, to: walk[i + 1] ?? d.to };
     light.push(line);
     items.push(lineItem("box", ref, line.from, line.to, size.BOX_WIDTH));
-    texts.push({ ref, text: `${naming.words[axis] ?? ""} ${formatLength(Math.abs(edge.leg.to[axis] - edge.leg.from[axis]), units)}`, line, off: size.TEXT_CAP / 2 + 1, awayFrom: middle });
+    texts.push({ ref, text: `${naming.words[axis] ?? ""} ${formatLength(Math.abs(edge.leg.to[axis] - edge.leg.from[axis]), units)}`, line, off: size.DIMENSION_CAP / 2 + 1, awayFrom: middle, capMm: size.DIMENSION_CAP });
   });
   const upFirst = order[0] === 2 && order.length === 3;
   const triangle = order.length === 2 ? walk : upFirst ? walk.slice(1) : walk.slice(0, 3);
@@ -129,11 +130,13 @@ function boxInk(placed: Placed, d: DrawnEdge, order: readonly (0 | 1 | 2)[], nam
     light.push(diagonal);
     items.push(lineItem("box", ref, diagonal.from, diagonal.to, size.BOX_WIDTH, "ink", DASH_DOT));
   }
-  texts.push({ ref: { kind: "dimension", id: edge.id }, text: travelText(edge, units), line: { from: d.from, to: d.to }, off: size.TEXT_CAP / 2 + 1.5, awayFrom: middle });
+  texts.push({ ref: { kind: "dimension", id: edge.id }, text: travelText(edge, units), line: { from: d.from, to: d.to }, off: size.DIMENSION_CAP / 2 + 1.5, awayFrom: middle, capMm: size.DIMENSION_CAP });
   const onLeg = [0.5, 0.35, 0.65].map((t): PaperPoint => [d.from[0] + (d.to[0] - d.from[0]) * t, d.from[1] + (d.to[1] - d.from[1]) * t]);
   const corner = triangle[1];
   const anchors = corner ? [...onLeg, corner] : onLeg;
-  return { items, light, texts, notes: [{ id: edge.id, anchors, lines: [naming.title, ...angleLines(d, naming, units)] }] };
+  const typed = typedSlopes(placed).get(edge.leg.id);
+  const slope = typed === undefined || edge.real[2] === 0 ? [] : [`SLOPE ${typed}`];
+  return { items, light, texts, notes: [{ id: edge.id, anchors, lines: [naming.title, ...angleLines(d, naming, units), ...slope] }] };
 }
 
 /** SET and angles of the note beside a box. */

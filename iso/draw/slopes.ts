@@ -1,4 +1,4 @@
-/** Slopes: drawn as if level, with a small right triangle above the line and the number that rules (ISO 6412, from memory). */
+/** Slopes: drawn as if level, with a small right triangle above the line and the number that rules, as it was typed (ISO 6412, from memory). */
 import type { PaperPoint } from "../geometry/types";
 import type { DrawnEdge } from "./drawn";
 import type { DisplayItem, MeasureText, Ref } from "./drawing-types";
@@ -21,8 +21,9 @@ const TRIANGLE_HEIGHT = 2.4;
 
 export function slopePass(placed: Placed, drawn: readonly DrawnEdge[], field: LabelField, heavy: InkMap, light: InkMap, measure: MeasureText): SlopeInk {
   const { units } = placed.sketch.model.document.settings;
-  const parts = drawn.filter((d) => d.edge.kind === "slope" && !d.edge.stub && !d.edge.neighbour).map((d) => {
-    const text = slopeText(d.edge.leg, units);
+  const typed = typedSlopes(placed);
+  const parts = drawn.filter((d) => isSlope(d, typed)).map((d) => {
+    const text = typed.get(d.edge.leg.id) ?? slopeText(d.edge.leg, units);
     const box = slopeBox(d, measure(text, size.TEXT_CAP, "regular"), field, heavy, light);
     if (!box) return { items: [], light: [], boxes: [] };
     field.add({ id: `slope ${d.edge.id}`, box, leader: null });
@@ -30,6 +31,26 @@ export function slopePass(placed: Placed, drawn: readonly DrawnEdge[], field: La
   });
   return { items: parts.flatMap((p) => p.items), light: parts.flatMap((p) => p.light), boxes: parts.flatMap((p) => p.boxes) };
 }
+
+/** Drawn level though it rises or falls: by its own small angle, or because the detailer typed a slope. */
+function isSlope(d: DrawnEdge, typed: ReadonlyMap<string, string>): boolean {
+  const { kind, leg, real, stub, neighbour } = d.edge;
+  if (stub || neighbour || real[2] !== 0) return false;
+  return kind === "slope" || typed.has(leg.id) || (kind === "offset" && Math.abs(leg.to[2] - leg.from[2]) > size.LEVEL_MM);
+}
+
+/** Slopes as typed, by the id of the leg; which way it falls is the triangle's to say. */
+export function typedSlopes(placed: Placed): ReadonlyMap<string, string> {
+  const found = new Map<string, string>();
+  for (const { points } of placed.sketch.model.document.runs) {
+    for (const { id, offset } of points) {
+      if (offset.kind === "slope" && offset.slope.ratio !== 0) found.set(id, offset.slope.text.trim().replace(WAY_WORD, "").toUpperCase());
+    }
+  }
+  return found;
+}
+
+const WAY_WORD = /^(?:-|\+|down|falls?|falling|up|rises?|rising)\s*/i;
 
 /** A free place beside the leg for triangle and number together. */
 function slopeBox(d: DrawnEdge, textWidth: number, field: LabelField, heavy: InkMap, light: InkMap): TurnedBox | null {

@@ -75,9 +75,9 @@ export function edgeNeed(model: Model, edge: SketchEdge, measure: MeasureText): 
   const naming = offsetNaming(model, edge);
   const word = (axis: 0 | 1 | 2): number => {
     const name = naming.words[axis];
-    return name === null ? 0 : measure(`${name} ${formatLength(Math.abs(edge.real[axis]), units)}`, size.TEXT_CAP, "regular") + 2.5;
+    return name === null ? 0 : measure(`${name} ${formatLength(Math.abs(edge.real[axis]), units)}`, size.DIMENSION_CAP, "regular") + 2.5;
   };
-  const travel = Math.max(arms + pipe, arms + 3 + measure(travelText(edge, units), size.TEXT_CAP, "regular"));
+  const travel = Math.max(arms + pipe, arms + 3 + measure(travelText(edge, units), size.DIMENSION_CAP, "regular"));
   return { least: [word(0), word(1), word(2)], travel };
 }
 
