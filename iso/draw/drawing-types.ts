@@ -81,8 +81,12 @@ export interface LabelReport {
 }
 
 export type LegendKey =
-  | "shop-weld" | "field-weld" | "field-fit-weld" | "material-item" | "weld-number" | "cut-piece" | "spool"
-  | "flow" | "support" | "revision" | "reference-dimension" | "unverified";
+  | "shop-weld" | "field-weld" | "field-fit-weld" | "typical-butt" | "typical-fillet" | "field-symbol" | "threaded-joint"
+  | "material-item" | "weld-number" | "cut-piece" | "spool" | "flow" | "support" | "revision" | "reference-dimension" | "unverified"
+  | "weld-neck" | "slip-on" | "socket-flange" | "threaded-flange" | "lap-joint" | "blind" | "bolt-turn"
+  | "gate" | "globe" | "check" | "ball" | "butterfly" | "instrument"
+  | "reducer" | "eccentric-reducer" | "socket-end" | "threaded-end" | "coupling" | "union" | "cap" | "socket-cap"
+  | "outlet" | "stub-in" | "pad" | "set-in" | "mitre" | "bend" | "vent" | "drain" | "goes-on" | "break" | "slope" | "offset";
 
 export interface Drawing {
   readonly view: View;

@@ -134,7 +134,7 @@ function boxInk(placed: Placed, d: DrawnEdge, order: readonly (0 | 1 | 2)[], nam
   const onLeg = [0.5, 0.35, 0.65].map((t): PaperPoint => [d.from[0] + (d.to[0] - d.from[0]) * t, d.from[1] + (d.to[1] - d.from[1]) * t]);
   const corner = triangle[1];
   const anchors = corner ? [...onLeg, corner] : onLeg;
-  const typed = typedSlopes(placed).get(edge.leg.id);
+  const typed = typedSlopes(placed.sketch.model).get(edge.leg.id);
   const slope = typed === undefined || edge.real[2] === 0 ? [] : [`SLOPE ${typed}`];
   return { items, light, texts, notes: [{ id: edge.id, anchors, lines: [naming.title, ...angleLines(d, naming, units), ...slope] }] };
 }

@@ -1,5 +1,6 @@
 /** Slopes: drawn as if level, with a small right triangle above the line and the number that rules, as it was typed (ISO 6412, from memory). */
 import type { PaperPoint } from "../geometry/types";
+import type { Model } from "../run/model-types";
 import type { DrawnEdge } from "./drawn";
 import type { DisplayItem, MeasureText, Ref } from "./drawing-types";
 import { turnedInk, type InkMap } from "./ink-map";
@@ -8,6 +9,7 @@ import { centredText, lineItem, pathItem, polygonSegments } from "./paths";
 import type { Placed } from "./place";
 import { readingAngle, type Segment, type TurnedBox } from "./plane";
 import * as size from "./sizes";
+import type { SketchEdge } from "./sketch";
 import { slopeText } from "./words";
 
 export interface SlopeInk {
@@ -21,8 +23,8 @@ const TRIANGLE_HEIGHT = 2.4;
 
 export function slopePass(placed: Placed, drawn: readonly DrawnEdge[], field: LabelField, heavy: InkMap, light: InkMap, measure: MeasureText): SlopeInk {
   const { units } = placed.sketch.model.document.settings;
-  const typed = typedSlopes(placed);
-  const parts = drawn.filter((d) => isSlope(d, typed)).map((d) => {
+  const typed = typedSlopes(placed.sketch.model);
+  const parts = drawn.filter((d) => isSlope(d.edge, typed)).map((d) => {
     const text = typed.get(d.edge.leg.id) ?? slopeText(d.edge.leg, units);
     const box = slopeBox(d, measure(text, size.TEXT_CAP, "regular"), field, heavy, light);
     if (!box) return { items: [], light: [], boxes: [] };
@@ -33,16 +35,15 @@ export function slopePass(placed: Placed, drawn: readonly DrawnEdge[], field: La
 }
 
 /** Drawn level though it rises or falls: by its own small angle, or because the detailer typed a slope. */
-function isSlope(d: DrawnEdge, typed: ReadonlyMap<string, string>): boolean {
-  const { kind, leg, real, stub, neighbour } = d.edge;
+export function isSlope({ kind, leg, real, stub, neighbour }: SketchEdge, typed: ReadonlyMap<string, string>): boolean {
   if (stub || neighbour || real[2] !== 0) return false;
   return kind === "slope" || typed.has(leg.id) || (kind === "offset" && Math.abs(leg.to[2] - leg.from[2]) > size.LEVEL_MM);
 }
 
 /** Slopes as typed, by the id of the leg; which way it falls is the triangle's to say. */
-export function typedSlopes(placed: Placed): ReadonlyMap<string, string> {
+export function typedSlopes(model: Model): ReadonlyMap<string, string> {
   const found = new Map<string, string>();
-  for (const { points } of placed.sketch.model.document.runs) {
+  for (const { points } of model.document.runs) {
     for (const { id, offset } of points) {
       if (offset.kind === "slope" && offset.slope.ratio !== 0) found.set(id, offset.slope.text.trim().replace(WAY_WORD, "").toUpperCase());
     }

@@ -7,14 +7,12 @@ import type { PartFrame } from "./part-frames";
 import { circleSegments, lineItem, pathItem, polygonSegments } from "./paths";
 import type { Placed } from "./place";
 import * as size from "./sizes";
-import { threadTicks } from "./symbol-flanges";
 
 /** A bowl where it is butt-welded, a square cup where it takes a socket or a thread. */
 export function capItems(f: PartFrame): DisplayItem[] {
   const brush = { stroke: f.ink, fill: "paper" as const, widthMm: size.SYMBOL_WIDTH };
   if (f.component.kind === "socket-cap") {
-    const cup = pathItem("symbol", f.ref, polygonSegments([f.at(f.outer, -2), f.at(f.inner, -2), f.at(f.inner, 2), f.at(f.outer, 2)]), brush);
-    return f.component.ends === "threaded" ? [cup, ...threadTicks(f, f.outer + 0.7)] : [cup];
+    return [pathItem("symbol", f.ref, polygonSegments([f.at(f.outer, -2), f.at(f.inner, -2), f.at(f.inner, 2), f.at(f.outer, 2)]), brush)];
   }
   const back = f.outer - (f.outer - f.inner) * 1.3;
   const segments = [
@@ -56,7 +54,7 @@ export function endItems(placed: Placed, drawn: readonly DrawnEdge[]): DisplayIt
 }
 
 /** A thin shaft with an open head that points away. */
-function ventItems(at: PaperPoint, out: PaperPoint, ref: Ref): DisplayItem[] {
+export function ventItems(at: PaperPoint, out: PaperPoint, ref: Ref): DisplayItem[] {
   const side: PaperPoint = [-out[1], out[0]];
   const tip = plus(at, out, 6);
   const wing = (k: number): PaperPoint => plus(plus(tip, out, -2.2), side, k);
@@ -68,7 +66,7 @@ function ventItems(at: PaperPoint, out: PaperPoint, ref: Ref): DisplayItem[] {
 }
 
 /** An open funnel below the pipe's end. */
-function drainItems(at: PaperPoint, out: PaperPoint, ref: Ref): DisplayItem[] {
+export function drainItems(at: PaperPoint, out: PaperPoint, ref: Ref): DisplayItem[] {
   const side: PaperPoint = [-out[1], out[0]];
   const p = (k: number, s: number): PaperPoint => plus(plus(at, out, k), side, s);
   return [

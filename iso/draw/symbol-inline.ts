@@ -4,7 +4,6 @@ import type { PartFrame } from "./part-frames";
 import { lineItem, pathItem, polygonSegments } from "./paths";
 import { project, type Projection } from "./project";
 import * as size from "./sizes";
-import { threadTicks } from "./symbol-flanges";
 
 const CENTRE_DASH: readonly number[] = [1.6, 0.6, 0.4, 0.6];
 
@@ -32,8 +31,7 @@ export function reducerItems(f: PartFrame, projection: Projection): DisplayItem[
 /** Half a sleeve, open towards the working point. */
 export function sleeveItems(f: PartFrame): DisplayItem[] {
   const h = 2.2;
-  const body = pathItem("symbol", f.ref, polygonSegments([f.at(f.inner, -h), f.at(f.outer, -h), f.at(f.outer, h), f.at(f.inner, h)], false), { stroke: f.ink, fill: "paper", widthMm: size.SYMBOL_WIDTH });
-  return f.component.ends === "threaded" ? [body, ...threadTicks(f, f.outer + 0.7)] : [body];
+  return [pathItem("symbol", f.ref, polygonSegments([f.at(f.inner, -h), f.at(f.outer, -h), f.at(f.outer, h), f.at(f.inner, h)], false), { stroke: f.ink, fill: "paper", widthMm: size.SYMBOL_WIDTH })];
 }
 
 /** Half a union: a low sleeve and, at its nut, a tall stroke. */
@@ -42,12 +40,11 @@ export function unionItems(f: PartFrame): DisplayItem[] {
   return [
     pathItem("symbol", f.ref, polygonSegments([f.at(f.inner, -h), f.at(f.outer, -h), f.at(f.outer, h), f.at(f.inner, h)], false), { stroke: f.ink, fill: "paper", widthMm: size.SYMBOL_WIDTH }),
     lineItem("symbol", f.ref, f.at(f.inner + 1, -3.3), f.at(f.inner + 1, 3.3), 0.7, f.ink),
-    ...(f.component.ends === "threaded" ? threadTicks(f, f.outer + 0.7) : []),
   ];
 }
 
-/** Rim of a socket: one stroke across; of a thread: two leaning ticks, so that it can't be taken for a weld. */
+/** Rim of a socket: a heavy stroke across, under the weld's dot; of a thread: a shorter light one, under the joint's leaning ticks. */
 export function fittingRim(f: PartFrame): DisplayItem[] {
-  if (f.component.ends === "threaded") return [lineItem("symbol", f.ref, f.at(f.outer, -2.2), f.at(f.outer, 2.2), 0.35, f.ink), ...threadTicks(f, f.outer + 0.9)];
+  if (f.component.ends === "threaded") return [lineItem("symbol", f.ref, f.at(f.outer - 1, -2.2), f.at(f.outer - 1, 2.2), 0.35, f.ink)];
   return [lineItem("symbol", f.ref, f.at(f.outer, -2.5), f.at(f.outer, 2.5), size.SYMBOL_WIDTH, f.ink)];
 }

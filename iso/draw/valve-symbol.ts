@@ -7,7 +7,7 @@ import { circleSegments, lineItem, pathItem, polygonSegments } from "./paths";
 import { paperDirection } from "./plane";
 import { project, type Projection } from "./project";
 import * as size from "./sizes";
-import { socketCup, threadTicks } from "./symbol-flanges";
+import { socketCup } from "./symbol-flanges";
 
 /** Half of a valve's body: a triangle whose point is the valve's centre and whose base lies with the flange strokes; drawn once per side. */
 export function valveHalf(f: PartFrame): DisplayItem[] {
@@ -20,10 +20,9 @@ export function valveHalf(f: PartFrame): DisplayItem[] {
   return [pathItem("symbol", f.ref, polygonSegments([centre, low, high]), { stroke: f.ink, fill: "paper", widthMm: size.SYMBOL_WIDTH }), ...bodyEnd(f)];
 }
 
-/** How the body is joined: a socket's cup or a thread's ticks at its end; flanges and weld dots speak for themselves. */
+/** How the body is joined: a socket's cup at its end; flanges, weld dots and the ticks of a thread are drawn as joints. */
 function bodyEnd(f: PartFrame): DisplayItem[] {
-  if (f.component.ends === "socket") return [socketCup(f, f.outer, f.outer + 1.6, 1.9)];
-  return f.component.ends === "threaded" ? threadTicks(f, f.outer + 0.8) : [];
+  return f.component.ends === "socket" ? [socketCup(f, f.outer, f.outer + 1.9, 2.1)] : [];
 }
 
 /** What stands at a valve's centre: stem and wheel, the disc of a globe, the ball, the flow of a check. */

@@ -1,5 +1,6 @@
 /** The isometric on one page or on several, each with its legend in a strip under it. */
 import type { DisplayItem, Drawing, LegendKey, MeasureText } from "../draw/drawing-types";
+import { endKeys, inLegendOrder, jointKeys, partKeys } from "../draw/legend-keys";
 import { itemMoved } from "../draw/paths";
 import type { PaperBox, PaperPoint } from "../geometry/types";
 import { lineFrom, textAt } from "./items";
@@ -50,12 +51,14 @@ function sheetItems(drawing: Drawing, box: PaperBox, measure: MeasureText): read
 }
 
 /** The most a drawing's legend can need, known before drawing. */
-function likelyLegend(facts: SheetFacts): LegendKey[] {
-  const has = (place: string) => facts.welds.some((joint) => joint.place === place);
-  const keys: (LegendKey | false)[] = [
-    "shop-weld", has("field") && "field-weld", has("field-fit") && "field-fit-weld", "material-item", "weld-number", "cut-piece", "spool", "flow",
-    facts.components.some((component) => component.kind === "support") && "support",
+function likelyLegend(facts: SheetFacts): readonly LegendKey[] {
+  const points = new Map(facts.model.document.runs.flatMap((run) => run.points.map((point) => [point.id, point.item] as const)));
+  const marks: (LegendKey | false)[] = [
+    "material-item", "weld-number", "cut-piece", facts.model.spools.length > 1 && "spool", "flow",
     facts.input.revision.changedPointIds.length > 0 && "revision", "reference-dimension", facts.legs.some((leg) => leg.unverified) && "unverified",
   ];
-  return keys.filter((key) => key !== false);
+  const here = facts.components.flatMap((component) => points.get(component.pointId) ?? []);
+  return inLegendOrder(new Set([
+    ...marks.filter((key) => key !== false), ...jointKeys(facts.welds), ...partKeys(facts.components, (id) => points.get(id) ?? null), ...endKeys(here),
+  ]));
 }

@@ -1,18 +1,24 @@
-/** Legend of the marks a drawing uses, as one strip of symbol and word. Marks differ between firms, so each sheet says its own. */
-import type { DisplayItem, Ink, LegendKey, MeasureText } from "../draw/drawing-types";
-import { circleSegments, hexagonSegments, itemMoved, stadiumSegments } from "../draw/paths";
-import type { PaperBox, PaperPoint } from "../geometry/types";
-import { lineFrom, pathOf, polygonOf, textAt } from "./items";
+/** Legend of the symbols and marks a drawing uses, as one strip of picture and word. Marks differ between firms, so each sheet says its own. */
+import type { DisplayItem, LegendKey, MeasureText } from "../draw/drawing-types";
+import type { PaperBox } from "../geometry/types";
+import { textAt } from "./items";
+import { legendPicture, pictureRoom } from "./legend-pictures";
 import { TEXT_CAP } from "./sheet-size";
 
-const WORDS: Readonly<Record<LegendKey, string>> = {
-  "shop-weld": "shop weld", "field-weld": "FW field weld", "field-fit-weld": "FFW field-fit weld", "material-item": "material item",
-  "weld-number": "weld number", "cut-piece": "cut piece", spool: "next spool", flow: "flow", support: "support", revision: "changed here",
+export const LEGEND_WORDS: Readonly<Record<LegendKey, string>> = {
+  "shop-weld": "shop weld", "field-weld": "FW field weld", "field-fit-weld": "FFW field-fit weld, + trim",
+  "typical-butt": "typical butt weld", "typical-fillet": "typical fillet weld", "field-symbol": "made in the field", "threaded-joint": "threaded joint",
+  "material-item": "material item", "weld-number": "weld number", "cut-piece": "cut piece", spool: "spool", flow: "flow", support: "support", revision: "changed here",
   "reference-dimension": "reference only", unverified: "not verified",
+  "weld-neck": "weld-neck flange", "slip-on": "slip-on flange", "socket-flange": "socket-weld flange", "threaded-flange": "threaded flange", "lap-joint": "lap-joint flange, stub end",
+  blind: "blind flange", "bolt-turn": "holes turned",
+  gate: "gate valve", globe: "globe valve", check: "check valve", ball: "ball valve", butterfly: "butterfly valve", instrument: "instrument",
+  reducer: "reducer", "eccentric-reducer": "eccentric, flat side heavy", "socket-end": "socket end", "threaded-end": "threaded end", coupling: "coupling", union: "union", cap: "cap",
+  "socket-cap": "cap, socket or thread", outlet: "outlet", "stub-in": "stub-in", pad: "reinforcing pad", "set-in": "set in", mitre: "mitre", bend: "bend, ticks at tangents",
+  vent: "vent", drain: "drain", "goes-on": "goes on", break: "change across the pipe", slope: "slope, low end thin", offset: "offset, true lengths",
 };
 
 const ROW_HEIGHT = 7.6;
-const SYMBOL_ROOM = 9.5;
 const GAP = 4;
 
 interface Entry {
@@ -27,7 +33,7 @@ export function legendLayout(keys: readonly LegendKey[], widthMm: number, measur
   let row = 0;
   let x = 2;
   for (const key of keys) {
-    const width = SYMBOL_ROOM + measure(WORDS[key], TEXT_CAP, "regular") + GAP;
+    const width = pictureRoom(key) + measure(LEGEND_WORDS[key], TEXT_CAP, "regular") + GAP;
     if (x > 2 && x + width - GAP > widthMm - 1) {
       row += 1;
       x = 2;
@@ -44,38 +50,7 @@ export function legendItems(keys: readonly LegendKey[], box: PaperBox, measure: 
   return entries.flatMap(({ key, row, x }) => {
     const y = box.minY + (row + 0.5) * ROW_HEIGHT;
     const left = box.minX + x;
-    return [...symbolOf(key, [left + SYMBOL_ROOM / 2 - 1, y]), textAt([left + SYMBOL_ROOM, y + TEXT_CAP / 2], WORDS[key], { layer: "title" })];
+    const room = pictureRoom(key);
+    return [...legendPicture(key, [left + room / 2 - 1, y]), textAt([left + room, y + TEXT_CAP / 2], LEGEND_WORDS[key], { layer: "title" })];
   });
-}
-
-const THIN = { layer: "title" as const, widthMm: 0.25 };
-
-/** Small pictures of the marks, made of the drawing's own shapes. */
-function symbolOf(key: LegendKey, [x, y]: PaperPoint): DisplayItem[] {
-  const pipe = lineFrom([x - 4, y], [x + 4, y], 0.7, "title");
-  const dot = pathOf(circleSegments([x, y], 1.5), { layer: "title", stroke: null, fill: "ink" });
-  const letter = (text: string, ink: Ink = "ink") => textAt([x, y + TEXT_CAP / 2], text, { layer: "title", anchor: "middle", ink });
-  switch (key) {
-    case "shop-weld": return [pipe, dot];
-    case "field-weld": case "field-fit-weld": return [pipe, dot, ...flag([x, y])].map((item) => itemMoved(item, [0, 1.3]));
-    case "material-item": return [pathOf(circleSegments([x, y], 3.3), THIN), letter("1")];
-    case "weld-number": return [pathOf(hexagonSegments([x, y], 7.2), { ...THIN, stroke: "dye" }), letter("1", "dye")];
-    case "cut-piece": return [pathOf(stadiumSegments([x, y], 8.2, 5.2), THIN), letter("P1")];
-    case "spool": return [lineFrom([x - 4, y], [x + 4, y], 0.7, "title", "grey", [2, 1])];
-    case "flow": return [pipe, polygonOf([[x - 2, y - 1.5], [x + 2.4, y], [x - 2, y + 1.5]], { layer: "title", stroke: null, fill: "ink" })];
-    case "support": return [pipe, ...shoe([x, y])].map((item) => itemMoved(item, [0, -1.6]));
-    case "revision": return [polygonOf([[x, y - 3.5], [x + 3.7, y + 2.7], [x - 3.7, y + 2.7]], THIN), textAt([x, y + 2], "A", { layer: "title", anchor: "middle" })];
-    case "reference-dimension": return [letter("( )")];
-    case "unverified": return [letter("VIF")];
-  }
-}
-
-function shoe([x, y]: PaperPoint): DisplayItem[] {
-  const leg = (dx: number) => lineFrom([x + dx, y], [x + dx, y + 3.4], 0.35, "title");
-  return [leg(-1.6), leg(1.6), lineFrom([x - 3, y + 3.4], [x + 3, y + 3.4], 0.5, "title")];
-}
-
-function flag([x, y]: PaperPoint): DisplayItem[] {
-  const pole = lineFrom([x, y], [x, y - 4.4], 0.3, "title");
-  return [pole, polygonOf([[x, y - 4.4], [x + 2.6, y - 3.4], [x, y - 2.4]], { layer: "title", stroke: null, fill: "ink" })];
 }

@@ -2,6 +2,7 @@
 import { formatAngleDeg } from "../units/format";
 import type { MeasureText } from "../draw/drawing-types";
 import { wrapText, PLAIN } from "./text-setting";
+import { isWeldJoint } from "../draw/weld-joint";
 import type { SheetFacts } from "./sheet-facts";
 import type { Row, Table } from "./table";
 
@@ -16,7 +17,7 @@ export interface CutText {
 
 /** Notes numbered, each split into rows of one line so that a long one flows over columns and pages. */
 export function notesTable(facts: SheetFacts, cut: readonly CutText[], widthMm: number, measure: MeasureText): Table | null {
-  const notes = [...documentNotes(facts), ...acceptedNotes(facts), ...engineerNotes(facts), ...problemNotes(facts), ...longRevisions(facts), ...cut.map(({ label, text }) => `${label}: ${text}`)];
+  const notes = [...weldNotes(facts), ...documentNotes(facts), ...acceptedNotes(facts), ...engineerNotes(facts), ...problemNotes(facts), ...longRevisions(facts), ...cut.map(({ label, text }) => `${label}: ${text}`)];
   if (notes.length === 0) return null;
   const rows = notes.flatMap((note, index): Row[] => {
     const lines = wrapText(note, widthMm - NUMBER_WIDTH - 4, PLAIN, measure);
@@ -52,6 +53,20 @@ function engineerNotes(facts: SheetFacts): string[] {
     .filter((joint) => joint.mismatchRad > MISMATCH_ASKS_RAD)
     .map((joint) => `Weld ${joint.number}: mismatch ${formatAngleDeg(joint.mismatchRad)}, over 3°. Engineer's permission needed.`);
 }
+
+/** One typical weld, and the exceptions by number, so that no joint needs a symbol of its own (AWS A2.4 practice). */
+function weldNotes(facts: SheetFacts): string[] {
+  const kinds = new Map<string, string[]>();
+  for (const joint of facts.welds) if (joint.number !== null && isWeldJoint(joint)) kinds.set(joint.kind, [...(kinds.get(joint.kind) ?? []), joint.number]);
+  const [typical, ...others] = [...kinds].sort((p, q) => q[1].length - p[1].length);
+  if (!typical) return [];
+  const exceptions = others.map(([kind, numbers]) => `${numbers.join(", ")} ${WELD_KIND_WORDS[kind] ?? kind}`);
+  return [`TYPICAL WELD: ${WELD_KIND_WORDS[typical[0]] ?? typical[0]}, all around, to the WPS.${exceptions.length > 0 ? ` Except: ${exceptions.join("; ")}.` : ""}`];
+}
+
+const WELD_KIND_WORDS: Readonly<Record<string, string>> = {
+  butt: "butt", socket: "socket fillet", "slip-on": "slip-on fillets", branch: "branch", mitre: "mitre butt",
+};
 
 /** Findings that stop a release are printed, so that no print looks better than the model behind it. */
 function problemNotes(facts: SheetFacts): string[] {
