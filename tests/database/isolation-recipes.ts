@@ -100,6 +100,7 @@ export const RECIPES: Readonly<Record<string, Recipe>> = {
     return { params: { lineId }, body: { version: 1, document: sampleDocument(number, 1_500) } };
   }),
   "PATCH /lines/[lineId]": onLine({ body: { title: "Another title" } }),
+  "GET /lines/[lineId]/export": onLine({ query: "?what=points" }),
   "POST /lines/[lineId]/copy": onLine({ body: { number: "L-copy", title: "Copy" } }),
   "POST /lines/[lineId]/uploads": onLine({ file: { name: "photo.png", bytes: pngFile() } }),
   "GET /uploads/[uploadId]": foreign(async (shop) => ({ params: { uploadId: await upload(shop) } })),
@@ -108,6 +109,7 @@ export const RECIPES: Readonly<Record<string, Recipe>> = {
 
   "GET /spools/[spoolId]": onSpool(),
   "GET /spools/[spoolId]/sheet": onSpool({ query: "?size=A4" }),
+  "GET /spools/[spoolId]/export": onSpool({ query: "?what=cuts&as=csv" }),
   "POST /spools/[spoolId]/submit": onSpool({ body: { description: "First issue", size: "letter" } }),
   "POST /spools/[spoolId]/work": foreign(async (shop) => {
     const { spoolId, lineId } = await signed(shop);

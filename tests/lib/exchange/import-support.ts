@@ -23,7 +23,9 @@ export function writtenText(rows: Parameters<typeof csvFile>[0]): string {
   return decodeText(new TextEncoder().encode(csvFile(rows))).text;
 }
 
+let made = 0;
+
+/** Ids no other import of the test run got. */
 export function freshIds(): FreshIds {
-  let made = 0;
   return { point: () => `np${(made += 1)}`, run: () => `nr${(made += 1)}` };
 }

@@ -1,6 +1,7 @@
 /** A line written to a CSV and read back is the same line: same points, same model, whatever stands on it. */
 import { describe, expect, test } from "vitest";
-import { buildModel, defaultLineSettings, emptyMarks, newRunDocument, parseRunDocument, type Item, type Model, type Offset, type Point, type RunDocument } from "@/iso";
+import { buildModel, emptyMarks, newRunDocument, parseRunDocument, type Item, type Model, type Offset, type Point, type RunDocument } from "@/iso";
+import { defaultLineSettings } from "@/lib/rules/default-settings";
 import { pointRows } from "@/lib/rules/exchange/write-points";
 import { planImport } from "@/lib/rules/exchange/plan-import";
 import { OWN_UNIT } from "@/lib/rules/exchange/read-length";

@@ -1,0 +1,18 @@
+/** What may be asked of the routes that hand out files. */
+import { z } from "zod";
+
+const of = z.enum(["issued", "draft"], { error: "Say of=issued or of=draft." }).nullable().default(null);
+const list = <W extends "materials" | "cuts" | "welds">(what: W) =>
+  z.object({ what: z.literal(what), as: z.enum(["csv", "xlsx"], { error: "Lists come as csv or xlsx." }).default("csv"), of });
+
+export const listExportSchema = [list("materials"), list("cuts"), list("welds")] as const;
+
+export const drawingExportSchema = z.object({
+  what: z.literal("drawing"),
+  as: z.enum(["svg", "dxf"], { error: "Drawings come as svg or dxf." }).default("svg"),
+  of,
+  /** From 1. */
+  sheet: z.coerce.number({ error: "The sheet is a number." }).int().min(1, "Sheets count from 1.").max(999, "There is no such sheet.").default(1),
+});
+
+export const pointsExportSchema = z.object({ what: z.literal("points"), as: z.literal("csv", { error: "Points come as csv." }).default("csv") });
