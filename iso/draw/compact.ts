@@ -2,7 +2,8 @@
  * Compaction of one axis. Unknowns are the paper coordinates x of clusters (working points that share a coordinate). Rows
  * say x[b] - x[a] >= least, and some also wish x[b] - x[a] = target. Longest paths give a feasible start with every wish met
  * or exceeded; then each cluster in turn moves to the weighted mean of its wishes inside what its rows allow. Unlike a
- * general quadratic programme this cannot fail, has no solver noise and stays feasible after every step.
+ * general quadratic programme this cannot fail, has no solver noise and stays feasible after every step. Rows stand in flat
+ * arrays: a drawing solves them hundreds of times.
  */
 
 export interface Row {
@@ -19,148 +20,158 @@ const SWEEPS = 40;
 const SETTLED = 0.01;
 
 /** Drops the rows that would close a cycle (contradictory order), keeping earlier ones first, and all that are `sure` to close none. */
-export function rowsWithoutCycles<T extends Row>(count: number, rows: readonly T[], sure: readonly T[] = []): readonly T[] {
+export function rowsWithoutCycles<T extends { readonly a: number; readonly b: number }>(count: number, rows: readonly T[], sure: readonly T[] = []): readonly T[] {
   const next: number[][] = Array.from({ length: count }, () => []);
   const kept: T[] = [...sure];
+  const reach = new Reach(count);
   for (const row of sure) next[row.a]?.push(row.b);
   for (const row of rows) {
-    if (row.a === row.b || reaches(next, row.b, row.a)) continue;
+    if (row.a === row.b || reach.goes(next, row.b, row.a)) continue;
     next[row.a]?.push(row.b);
     kept.push(row);
   }
   return kept;
 }
 
-function reaches(next: readonly (readonly number[])[], from: number, to: number): boolean {
-  const seen = new Set<number>([from]);
-  const stack = [from];
-  for (let at = stack.pop(); at !== undefined; at = stack.pop()) {
-    if (at === to) return true;
-    for (const other of next[at] ?? []) {
-      if (!seen.has(other)) {
-        seen.add(other);
-        stack.push(other);
+/** Walks along rows; its marks are reused from question to question. */
+class Reach {
+  private readonly seen: Int32Array;
+  private readonly stack: Int32Array;
+  private round = 0;
+
+  constructor(count: number) {
+    this.seen = new Int32Array(count);
+    this.stack = new Int32Array(count + 1);
+  }
+
+  goes(next: readonly (readonly number[])[], from: number, to: number): boolean {
+    const round = ++this.round;
+    const { seen, stack } = this;
+    let top = 0;
+    stack[top++] = from;
+    seen[from] = round;
+    while (top > 0) {
+      const at = stack[--top]!;
+      if (at === to) return true;
+      for (const other of next[at]!) {
+        if (seen[other] === round) continue;
+        seen[other] = round;
+        stack[top++] = other;
       }
     }
+    return false;
   }
-  return false;
 }
 
-/** Rows in flat arrays, with those that end and those that start at each cluster side by side: solved thousands of times a second. */
-interface RowTable {
+/** The shape of a set of rows: which clusters each holds apart, those into and out of each cluster side by side, and an order that follows them. */
+export interface RowTable {
+  readonly count: number;
   readonly a: Int32Array;
   readonly b: Int32Array;
-  readonly least: Float64Array;
-  /** 0: no wish. */
-  readonly target: Float64Array;
   /** Rows into cluster i: into[intoFrom[i]] up to into[intoFrom[i + 1]]; likewise those out of it. */
   readonly into: Int32Array;
   readonly intoFrom: Int32Array;
   readonly out: Int32Array;
   readonly outFrom: Int32Array;
+  readonly order: Int32Array;
 }
 
-function rowTable(count: number, rows: readonly Row[]): RowTable {
+/** @param rows free of cycles */
+export function rowTable(count: number, rows: readonly { readonly a: number; readonly b: number }[]): RowTable {
   const a = new Int32Array(rows.length);
   const b = new Int32Array(rows.length);
-  const least = new Float64Array(rows.length);
-  const target = new Float64Array(rows.length);
   for (let i = 0; i < rows.length; i++) {
-    const row = rows[i];
-    if (!row) continue;
-    a[i] = row.a;
-    b[i] = row.b;
-    least[i] = row.least;
-    target[i] = row.target ?? 0;
+    a[i] = rows[i]!.a;
+    b[i] = rows[i]!.b;
   }
-  const [into, intoFrom] = grouped(count, b);
-  const [out, outFrom] = grouped(count, a);
-  return { a, b, least, target, into, intoFrom, out, outFrom };
+  const [into, intoFrom] = byCluster(count, b);
+  const [out, outFrom] = byCluster(count, a);
+  return { count, a, b, into, intoFrom, out, outFrom, order: topologicalOrder(count, b, intoFrom, out, outFrom) };
 }
 
-/** Row numbers sorted by cluster, and where each cluster's begin. */
-function grouped(count: number, cluster: Int32Array): [Int32Array, Int32Array] {
+function byCluster(count: number, key: Int32Array): readonly [Int32Array, Int32Array] {
   const from = new Int32Array(count + 1);
-  for (let row = 0; row < cluster.length; row++) from[(cluster[row] ?? 0) + 1]! += 1;
-  for (let at = 0; at < count; at++) from[at + 1]! += from[at] ?? 0;
-  const next = from.slice();
-  const list = new Int32Array(cluster.length);
-  for (let row = 0; row < cluster.length; row++) list[next[cluster[row] ?? 0]!++] = row;
+  for (let i = 0; i < key.length; i++) from[key[i]! + 1]!++;
+  for (let at = 0; at < count; at++) from[at + 1]! += from[at]!;
+  const fill = from.slice();
+  const list = new Int32Array(key.length);
+  for (let i = 0; i < key.length; i++) list[fill[key[i]!]!++] = i;
   return [list, from];
 }
 
-/** @returns paper coordinates, least at 0. Rows must be free of cycles. */
-export function compactAxis(count: number, rows: readonly Row[]): readonly number[] {
-  if (count === 0) return [];
-  const x = new Float64Array(count);
-  const table = rowTable(count, rows);
-  const { a, least, target, into, intoFrom } = table;
-  const order = topologicalOrder(count, table);
-  for (const at of order) {
-    for (let k = intoFrom[at] ?? 0; k < (intoFrom[at + 1] ?? 0); k++) {
-      const row = into[k] ?? 0;
-      x[at] = Math.max(x[at] ?? 0, (x[a[row] ?? 0] ?? 0) + Math.max(least[row] ?? 0, target[row] ?? 0));
+function topologicalOrder(count: number, b: Int32Array, intoFrom: Int32Array, out: Int32Array, outFrom: Int32Array): Int32Array {
+  const waiting = new Int32Array(count);
+  const order = new Int32Array(count);
+  let ready = 0;
+  for (let at = 0; at < count; at++) {
+    waiting[at] = intoFrom[at + 1]! - intoFrom[at]!;
+    if (waiting[at] === 0) order[ready++] = at;
+  }
+  for (let head = 0; head < ready; head++) {
+    const at = order[head]!;
+    for (let k = outFrom[at]!; k < outFrom[at + 1]!; k++) {
+      const to = b[out[k]!]!;
+      if (--waiting[to]! === 0) order[ready++] = to;
     }
   }
+  return order.subarray(0, ready);
+}
+
+/**
+ * Coordinates of the clusters, the lowest at 0, paper mm.
+ * @param least of each row
+ * @param target of each row; 0: no wish
+ */
+export function compactRows(table: RowTable, least: Float64Array, target: Float64Array): Float64Array {
+  const x = new Float64Array(table.count);
+  const { a, into, intoFrom, order } = table;
+  for (const at of order) {
+    let far = 0;
+    for (let k = intoFrom[at]!, end = intoFrom[at + 1]!; k < end; k++) {
+      const row = into[k]!;
+      far = Math.max(far, x[a[row]!]! + Math.max(least[row]!, target[row]!));
+    }
+    x[at] = far;
+  }
+  const count = order.length;
   for (let sweep = 0; sweep < SWEEPS; sweep++) {
     let moved = 0;
-    for (let i = 0; i < order.length; i++) moved = Math.max(moved, relax(x, order[sweep % 2 === 0 ? order.length - 1 - i : i] ?? 0, table));
+    for (let i = 0; i < count; i++) moved = Math.max(moved, relax(x, order[sweep % 2 === 0 ? count - 1 - i : i]!, table, least, target));
     if (moved < SETTLED) break;
   }
   let lowest = Infinity;
-  for (let at = 0; at < count; at++) lowest = Math.min(lowest, x[at] ?? 0);
-  const line: number[] = [];
-  for (let at = 0; at < count; at++) line.push((x[at] ?? 0) - lowest);
-  return line;
+  for (let at = 0; at < count; at++) lowest = Math.min(lowest, x[at]!);
+  for (let at = 0; at < count; at++) x[at]! -= lowest;
+  return x;
 }
 
-function relax(x: Float64Array, at: number, table: RowTable): number {
-  const { a, b, least, target, into, intoFrom, out, outFrom } = table;
+function relax(x: Float64Array, at: number, table: RowTable, least: Float64Array, target: Float64Array): number {
+  const { a, b, into, intoFrom, out, outFrom } = table;
   let low = -Infinity;
   let high = Infinity;
   let sum = 0;
   let weight = 0;
-  for (let k = intoFrom[at] ?? 0, end = intoFrom[at + 1] ?? 0; k < end; k++) {
-    const row = into[k] ?? 0;
-    const other = x[a[row] ?? 0] ?? 0;
-    const wish = target[row] ?? 0;
-    low = Math.max(low, other + (least[row] ?? 0));
+  for (let k = intoFrom[at]!, end = intoFrom[at + 1]!; k < end; k++) {
+    const row = into[k]!;
+    const other = x[a[row]!]!;
+    const wish = target[row]!;
+    low = Math.max(low, other + least[row]!);
     if (wish === 0) continue;
     sum += (other + wish) / wish;
     weight += 1 / wish;
   }
-  for (let k = outFrom[at] ?? 0, end = outFrom[at + 1] ?? 0; k < end; k++) {
-    const row = out[k] ?? 0;
-    const other = x[b[row] ?? 0] ?? 0;
-    const wish = target[row] ?? 0;
-    high = Math.min(high, other - (least[row] ?? 0));
+  for (let k = outFrom[at]!, end = outFrom[at + 1]!; k < end; k++) {
+    const row = out[k]!;
+    const other = x[b[row]!]!;
+    const wish = target[row]!;
+    high = Math.min(high, other - least[row]!);
     if (wish === 0) continue;
     sum += (other - wish) / wish;
     weight += 1 / wish;
   }
   if (weight === 0) return 0;
   const wish = Math.min(high, Math.max(low, sum / weight));
-  const moved = Math.abs(wish - (x[at] ?? 0));
+  const moved = Math.abs(wish - x[at]!);
   x[at] = wish;
   return moved;
-}
-
-function topologicalOrder(count: number, { b, intoFrom, out, outFrom }: RowTable): Int32Array {
-  const waiting = new Int32Array(count);
-  const order = new Int32Array(count);
-  let ready = 0;
-  for (let at = 0; at < count; at++) {
-    waiting[at] = (intoFrom[at + 1] ?? 0) - (intoFrom[at] ?? 0);
-    if (waiting[at] === 0) order[ready++] = at;
-  }
-  for (let head = 0; head < ready; head++) {
-    const at = order[head] ?? 0;
-    for (let k = outFrom[at] ?? 0; k < (outFrom[at + 1] ?? 0); k++) {
-      const to = b[out[k] ?? 0] ?? 0;
-      const left = (waiting[to] ?? 0) - 1;
-      waiting[to] = left;
-      if (left === 0) order[ready++] = to;
-    }
-  }
-  return order.subarray(0, ready);
 }

@@ -4,21 +4,24 @@ import type { View } from "../run/document";
 import type { Model } from "../run/model-types";
 import { drawLabels, drawLines, ONE_SHEET, type SheetPlace } from "./draw-passes";
 import type { Drawing, DrawOptions } from "./drawing-types";
-import { fitStretch } from "./fit";
+import { fitStretch, type PipeRoom } from "./fit";
 import { bestView } from "./orient";
-import { placeAll, placePlan, type PlacePlan } from "./place";
+import { NO_ROWS, placeAll, placePlan, type ExtraRows, type Placed, type PlacePlan } from "./place";
+import { paperBoxAround } from "./plane";
 import { PROJECTIONS } from "./project";
-import { NO_ROWS, separateRows, type ExtraRows } from "./separate";
+import { separateRows } from "./separate";
 import { sketchOf } from "./sketch";
 
 /** Tries to make everything fit by drawing the legs shorter. */
 const FIT_TRIES = 5;
-/** Times the labels are placed afresh because they stood out of the room. */
+/** Times the labels are placed afresh because they stood out of the room, and the least the pipe then gives up, mm. */
 const LABEL_TRIES = 3;
+const LEAST_STEP = 6;
 /** A stretch under this is not worth another try: the legs stand at their least room. */
 const STRETCH_LEAST = 0.15;
 /** Paper kept beyond the pipe at the first try, and beyond dimensions for the labels, mm. */
-const FIRST_MARGIN = 20;
+const FIRST_MARGIN = 22;
+const LEAST_MARGIN = 13;
 const LABEL_MARGIN = 7;
 
 /**
@@ -35,43 +38,91 @@ export function viewOf(model: Model, options: DrawOptions, plan: PlacePlan | nul
   return options.view ?? model.document.view ?? bestView(plan ?? placePlan(sketchOf(model, null), options.measure));
 }
 
-/** Draws a plan on the sheet of a set that `place` names. */
-export function drawPlan(plan: PlacePlan, view: View, options: DrawOptions, place: SheetPlace): Drawing {
-  const projection = PROJECTIONS[view];
-  let margin = FIRST_MARGIN;
-  const fitted = (rows: ExtraRows): number => fitStretch(plan, projection, options.widthMm - 2 * margin, options.heightMm - 2 * margin, rows);
-  let rows = NO_ROWS;
-  let first = fitted(rows);
-  // Twice: room taken by moving pipes apart shortens the legs, which can bring others close.
-  for (let pass = 0; pass < 2; pass++) {
-    const moved = separateRows(plan, projection, first, rows);
-    if (moved === rows) break;
-    rows = moved;
-    first = fitted(rows);
-  }
-  let best: Drawing | null = null;
-  let labelled = 0;
-  for (let attempt = 0; attempt < FIT_TRIES; attempt++) {
-    const wished = attempt === 0 ? first : fitted(rows);
-    const stretch = wished < STRETCH_LEAST ? 0 : wished;
-    const lines = drawLines(placeAll(plan, projection, stretch, rows), options, place);
-    const over = boxOverrun(lines.extent, options.widthMm - 2 * LABEL_MARGIN, options.heightMm - 2 * LABEL_MARGIN);
-    const last = stretch === 0 || attempt === FIT_TRIES - 1;
-    if (over > 0 && !last) {
-      margin += over / 2 + 1;
-      continue;
-    }
-    const next = drawLabels(lines, options, view);
-    if (!best || overrun(next) < overrun(best)) best = next;
-    labelled++;
-    if (stretch === 0 || labelled >= LABEL_TRIES || overrun(next) <= 0) break;
-    margin += Math.max(3, overrun(next) / 2);
-  }
-  return best ?? drawLabels(drawLines(placeAll(plan, projection, 0, rows), options, place), options, view);
+/** How far legs are stretched, and the rows that hold pipes apart. */
+export interface Standing {
+  readonly stretch: number;
+  readonly rows: ExtraRows;
 }
 
-function boxOverrun(box: PaperBox, widthMm: number, heightMm: number): number {
-  return Number.isFinite(box.minX) ? Math.max(0, box.maxX - box.minX - widthMm, box.maxY - box.minY - heightMm) : 0;
+/**
+ * Draws a plan on the sheet of a set that `place` names.
+ * @param standing when it is at hand
+ */
+export function drawPlan(plan: PlacePlan, view: View, options: DrawOptions, place: SheetPlace, standing: Standing = standingOf(plan, view, options)): Drawing {
+  const projection = PROJECTIONS[view];
+  let room = roomWithin(options, FIRST_MARGIN);
+  let stretch = standing.stretch;
+  let best: Drawing | null = null;
+  let labelled = 0;
+  for (let attempt = 0; ; attempt++) {
+    const at = placeAll(plan, projection, stretch, standing.rows);
+    const lines = drawLines(at, options, place);
+    const over = beyond(lines.extent, roomWithin(options, LABEL_MARGIN));
+    const last = stretch === 0 || attempt === FIT_TRIES - 1;
+    if (last || (over.widthMm <= 0 && over.heightMm <= 0)) {
+      const next = drawLabels(lines, options, view);
+      if (!best || overrun(next) < overrun(best)) best = next;
+      labelled++;
+      if (last || labelled >= LABEL_TRIES || overrun(next) <= 0) return best;
+      const out = Math.max(LEAST_STEP, overrun(next));
+      room = { widthMm: room.widthMm - out, heightMm: room.heightMm - out };
+    } else {
+      const pipe = boxOf(at);
+      room = { widthMm: tighter(room.widthMm, pipe.widthMm, over.widthMm), heightMm: tighter(room.heightMm, pipe.heightMm, over.heightMm) };
+    }
+    const fitted = fitStretch(plan, projection, room, standing.rows) ?? 0;
+    stretch = fitted < STRETCH_LEAST ? 0 : fitted;
+  }
+}
+
+/** True when the pipe and its dimensions, at their least sizes, stand inside the sheet. */
+export function linesFit(plan: PlacePlan, view: View, options: DrawOptions, { stretch, rows }: Standing): boolean {
+  if (stretch > 0) return true;
+  const projection = PROJECTIONS[view];
+  if (fitStretch(plan, projection, roomWithin(options, LEAST_MARGIN), rows) === null) return false;
+  const over = beyond(drawLines(placeAll(plan, projection, 0, rows), options, ONE_SHEET).extent, roomWithin(options, 0));
+  return over.widthMm <= 0 && over.heightMm <= 0;
+}
+
+/** Twice: room taken by moving pipes apart shortens the legs, which can bring others close. */
+export function standingOf(plan: PlacePlan, view: View, options: DrawOptions): Standing {
+  const projection = PROJECTIONS[view];
+  const room = roomWithin(options, FIRST_MARGIN);
+  const fitted = (rows: ExtraRows): number => {
+    const stretch = fitStretch(plan, projection, room, rows) ?? 0;
+    return stretch < STRETCH_LEAST ? 0 : stretch;
+  };
+  let rows = NO_ROWS;
+  let stretch = fitted(rows);
+  for (let pass = 0; pass < 2; pass++) {
+    const moved = separateRows(plan, projection, stretch, rows);
+    if (moved === rows) break;
+    rows = moved;
+    const before = stretch;
+    stretch = fitted(rows);
+    if (stretch === before) break;
+  }
+  return { stretch, rows };
+}
+
+function roomWithin(options: DrawOptions, margin: number): PipeRoom {
+  return { widthMm: options.widthMm - 2 * margin, heightMm: options.heightMm - 2 * margin };
+}
+
+/** How much wider and higher a box is than a room. */
+function beyond(box: PaperBox, room: PipeRoom): PipeRoom {
+  if (!Number.isFinite(box.minX)) return { widthMm: 0, heightMm: 0 };
+  return { widthMm: box.maxX - box.minX - room.widthMm, heightMm: box.maxY - box.minY - room.heightMm };
+}
+
+function boxOf(at: Placed): PipeRoom {
+  const box = paperBoxAround([...at.paper.values()]);
+  return { widthMm: box.maxX - box.minX, heightMm: box.maxY - box.minY };
+}
+
+/** Dimensions stand off the pipe by the same however long it is drawn: what they stick out, the pipe gives up. */
+function tighter(roomMm: number, pipeMm: number, overMm: number): number {
+  return overMm <= 0 ? roomMm : Math.min(roomMm, pipeMm) - overMm - 1;
 }
 
 /** How far a drawing stands out of its room, mm; 0 when it is inside. */

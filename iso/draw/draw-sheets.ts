@@ -6,10 +6,10 @@
  */
 import type { View } from "../run/document";
 import type { Model } from "../run/model-types";
-import { drawPlan, overrun, viewOf } from "./draw-model";
+import { drawPlan, linesFit, overrun, standingOf, viewOf, type Standing } from "./draw-model";
 import type { Drawing, DrawOptions } from "./drawing-types";
-import { placePlan } from "./place";
-import { matchesOf, splitFull, splitOne, wholePlan, type Match, type SheetCapacity, type SheetPart, type SheetPlan } from "./sheet-split";
+import { placePlan, type PlacePlan } from "./place";
+import { joinedParts, matchesOf, splitFull, splitOne, wholePlan, type Match, type SheetCapacity, type SheetPart, type SheetPlan } from "./sheet-split";
 import * as size from "./sizes";
 import { sketchOf } from "./sketch";
 
@@ -26,7 +26,7 @@ const SHEET_WELDS = 36;
 const SHEET_LABELS = 130;
 /** Rooms are smaller or larger than that by these shares at most. */
 const ROOM_SHARES = [0.3, 1.3] as const;
-/** A drawing this clean is not crowded whatever it holds, and one with this few labels cannot get cleaner by a cut. */
+/** Labels less clean than this are crowded; with this few of them a cut would not help. */
 const CLEAN_SHARE = 0.85;
 const FEW_LABELS = 40;
 /** Rounds of drawing, judging and cutting again. */
@@ -39,17 +39,33 @@ const ROUNDS = 8;
 export function drawSheets(model: Model, options: SheetsOptions): Drawing[] {
   const whole = sketchOf(model, options.spool);
   const plan = placePlan(whole, options.measure);
-  const view = viewOf(model, options, options.spool === null ? plan : null);
   const mode = options.sheets ?? model.document.sheets ?? "auto";
+  const desk: Desk = { model, options, view: viewOf(model, options, options.spool === null ? plan : null), laid: new Map(), drawn: new Map(), whole: plan };
   let split = wholePlan(whole);
   if (mode === "auto") split = splitFull(split, capacityOf(options));
-  const drawn = new Map<string, Drawing>();
+  split = split.parts.length > 1 || !laidOut(desk, split, 0).fits ? untilItFits(desk, split, mode) : split;
   for (let round = 0; ; round++) {
-    const drawings = drawParts(model, options, view, split, drawn);
-    const next = round < ROUNDS ? splitAgain(split, drawings, options, mode) : null;
+    const drawings = drawParts(desk, split);
+    const next = round < ROUNDS ? splitWhere(split, options, (i) => needsCut(drawings[i], mode)) : null;
     if (!next) return [...drawings];
     split = next;
   }
+}
+
+/** What is worked out once for each part and kept while others are still being cut. */
+interface Desk {
+  readonly model: Model;
+  readonly options: SheetsOptions;
+  readonly view: View;
+  readonly whole: PlacePlan;
+  readonly laid: Map<string, Laid>;
+  readonly drawn: Map<string, Drawing>;
+}
+
+interface Laid {
+  readonly plan: PlacePlan;
+  readonly standing: Standing;
+  readonly fits: boolean;
 }
 
 function capacityOf(options: SheetsOptions): SheetCapacity {
@@ -59,37 +75,67 @@ function capacityOf(options: SheetsOptions): SheetCapacity {
   return { welds: SHEET_WELDS * share, labels: SHEET_LABELS * share };
 }
 
-/** Drawings of all parts; those that come out as before are taken from `drawn`. */
-function drawParts(model: Model, options: SheetsOptions, view: View, split: SheetPlan, drawn: Map<string, Drawing>): readonly Drawing[] {
+/** Cuts what stands out of its paper before a single label is placed, then joins small parts that fit one paper together. */
+function untilItFits(desk: Desk, start: SheetPlan, mode: "auto" | "one"): SheetPlan {
+  let split = start;
+  for (let next: SheetPlan | null = split; next; ) {
+    split = next;
+    const now: SheetPlan = split;
+    next = splitWhere(now, desk.options, (i) => !laidOut(desk, now, i).fits);
+  }
+  const capacity = mode === "auto" ? capacityOf(desk.options) : ANY_LOAD;
+  return joinedParts(split, capacity, (joined) => joined.parts.every((_, i) => laidOut(desk, joined, i).fits));
+}
+
+const ANY_LOAD: SheetCapacity = { welds: Infinity, labels: Infinity };
+
+function laidOut(desk: Desk, split: SheetPlan, index: number): Laid {
+  const part = split.parts[index]!;
+  const key = `${index === 0} ${pointsKey(part)}`;
+  const known = desk.laid.get(key);
+  if (known) return known;
+  const options = roomOptions(desk, index);
+  const plan = split.parts.length === 1 ? desk.whole : placePlan(sketchOf(desk.model, options.spool, part), options.measure);
+  const standing = standingOf(plan, desk.view, options);
+  const laid: Laid = { plan, standing, fits: linesFit(plan, desk.view, options, standing) };
+  desk.laid.set(key, laid);
+  return laid;
+}
+
+function roomOptions({ options }: Desk, index: number): DrawOptions {
+  const { widthMm, heightMm } = index === 0 ? options : (options.later ?? options);
+  return { ...options, widthMm, heightMm };
+}
+
+const pointsKey = (part: SheetPart): string => part.vertices.map(({ id }) => id).join(" ");
+
+/** Drawings of all parts; those that come out as before are taken from the desk. */
+function drawParts(desk: Desk, split: SheetPlan): readonly Drawing[] {
   const matches = matchesOf(split);
   return split.parts.map((part, i) => {
     const mine = matches.filter(({ fromSheet, toSheet }) => fromSheet === i + 1 || toSheet === i + 1);
-    const room = i === 0 ? options : (options.later ?? options);
-    const key = partKey(part, i === 0, i + 1, mine);
-    const drawing = drawn.get(key) ?? drawPart(model, { ...options, widthMm: room.widthMm, heightMm: room.heightMm }, view, split.parts.length === 1 ? null : part, i + 1, mine);
-    drawn.set(key, drawing);
+    const key = [i === 0, pointsKey(part), ...mine.map((match) => matchKey(match, i + 1))].join(" ");
+    const { plan, standing } = laidOut(desk, split, i);
+    const drawing = desk.drawn.get(key) ?? drawPlan(plan, desk.view, roomOptions(desk, i), { sheet: i + 1, matches: mine }, standing);
+    desk.drawn.set(key, drawing);
     return drawing;
   });
 }
 
-function partKey(part: SheetPart, first: boolean, sheet: number, matches: readonly Match[]): string {
-  return [first, ...part.vertices.map(({ id }) => id), ...matches.map((match) => `${match.mark} ${match.legId} ${match.fromSheet === sheet ? match.toSheet : -match.fromSheet}`)].join(" ");
+function matchKey(match: Match, sheet: number): string {
+  return `${match.mark} ${match.legId} ${match.fromSheet === sheet ? match.toSheet : -match.fromSheet}`;
 }
 
-function drawPart(model: Model, options: DrawOptions, view: View, part: SheetPart | null, sheet: number, matches: readonly Match[]): Drawing {
-  return drawPlan(placePlan(sketchOf(model, options.spool, part), options.measure), view, options, { sheet, matches });
-}
-
-/** Cuts every sheet that turned out too full; null when all read, or nothing more can be cut. */
-function splitAgain(split: SheetPlan, drawings: readonly Drawing[], options: SheetsOptions, mode: "auto" | "one"): SheetPlan | null {
+/** Cuts every sheet that is found wanting; null when none is, or nothing more can be cut. */
+function splitWhere(split: SheetPlan, options: SheetsOptions, wanting: (index: number) => boolean): SheetPlan | null {
   const capacity = capacityOf(options);
   let next: SheetPlan | null = null;
-  for (let i = split.parts.length - 1; i >= 0; i--) {
-    const drawing = drawings[i];
-    if (!drawing || !(overrun(drawing) > size.PAPER_EPS || (mode === "auto" && isCrowded(drawing)))) continue;
-    next = splitOne(next ?? split, i, capacity) ?? next;
-  }
+  for (let i = split.parts.length - 1; i >= 0; i--) if (wanting(i)) next = splitOne(next ?? split, split.parts[i]!, capacity) ?? next;
   return next;
+}
+
+function needsCut(drawing: Drawing | undefined, mode: "auto" | "one"): boolean {
+  return drawing !== undefined && (overrun(drawing) > size.PAPER_EPS || (mode === "auto" && isCrowded(drawing)));
 }
 
 function isCrowded({ report }: Drawing): boolean {

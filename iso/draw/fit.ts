@@ -1,23 +1,28 @@
 /** Fit: the largest stretch whose pipe leaves its margins free, and where the drawing stands in its room. */
 import type { PaperBox } from "../geometry/types";
-import { placeAll, type PlacePlan } from "./place";
-import { paperBoxAround } from "./plane";
+import { layoutAt, layoutBox, type ExtraRows, type PlacePlan } from "./place";
 import type { Projection } from "./project";
-import type { ExtraRows } from "./separate";
 import * as size from "./sizes";
 
-const STEPS = 7;
+/** Room the pipe itself may take, mm. */
+export interface PipeRoom {
+  readonly widthMm: number;
+  readonly heightMm: number;
+}
 
-/** Bisects the stretch s between 0 and STRETCH_MOST. */
-export function fitStretch(plan: PlacePlan, projection: Projection, widthMm: number, heightMm: number, extra: ExtraRows): number {
+const STEPS = 6;
+
+/** Bisects the stretch s between 0 and STRETCH_MOST; null when the pipe stands out of the room even at 0. */
+export function fitStretch(plan: PlacePlan, projection: Projection, room: PipeRoom, extra: ExtraRows): number | null {
+  if (plan.ids.length === 0) return size.STRETCH_MOST;
   const fits = (stretch: number): boolean => {
-    const box = paperBoxAround([...placeAll(plan, projection, stretch, extra).paper.values()]);
-    return !Number.isFinite(box.minX) || (box.maxX - box.minX <= widthMm && box.maxY - box.minY <= heightMm);
+    const box = layoutBox(plan, layoutAt(plan, projection, stretch, extra));
+    return box.maxX - box.minX <= room.widthMm && box.maxY - box.minY <= room.heightMm;
   };
   if (fits(size.STRETCH_MOST)) return size.STRETCH_MOST;
-  if (!fits(0)) return 0;
+  if (!fits(0)) return null;
   let low = 0;
-  let high = size.STRETCH_MOST;
+  let high: number = size.STRETCH_MOST;
   for (let step = 0; step < STEPS; step++) {
     const middle = (low + high) / 2;
     if (fits(middle)) low = middle;

@@ -1,14 +1,15 @@
 /**
  * Place: paper coordinates of every working point. Each axis is compacted by itself (compact.ts): order kept, each leg its
  * room, long stretches shortened, points that share a coordinate moving together, so loops stay closed and parallels
- * parallel. Off-axis legs then get their components stretched until they stand clear of every axis on paper.
+ * parallel. Off-axis legs then get their components stretched until they stand clear of every axis on paper (off-axis.ts).
+ * A plan is what does not depend on view or stretch; a layout is one solution in flat arrays; placed() spells it out.
  */
-import type { PaperPoint, Vec3 } from "../geometry/types";
+import type { PaperBox, PaperPoint, Vec3 } from "../geometry/types";
 import { AXES, clustersOf, orderRows, type Axis, type AxisClusters } from "./clusters";
-import { compactAxis, rowsWithoutCycles, type Row } from "./compact";
+import { compactRows, rowsWithoutCycles, rowTable, type Row, type RowTable } from "./compact";
 import type { MeasureText } from "./drawing-types";
-import { axisAngle, project, type Projection } from "./project";
-import * as size from "./sizes";
+import { clearOfAxes, clearances, mendOffAxis } from "./off-axis";
+import type { Projection } from "./project";
 import type { Sketch, SketchEdge } from "./sketch";
 import { edgeNeed, targetLength, type EdgeNeed } from "./words";
 
@@ -16,9 +17,42 @@ export interface PlacePlan {
   readonly sketch: Sketch;
   readonly clusters: readonly [AxisClusters, AxisClusters, AxisClusters];
   /** Legs that make rows along each axis, and the order rows, all free of cycles. */
-  readonly legs: readonly (readonly AxisLeg[])[];
-  readonly order: readonly (readonly Row[])[];
-  readonly needs: ReadonlyMap<string, EdgeNeed>;
+  readonly axes: readonly [AxisPlan, AxisPlan, AxisPlan];
+  /** Legs that are drawn, and their ends as places in `ids`. */
+  readonly edges: readonly SketchEdge[];
+  readonly needs: readonly EdgeNeed[];
+  readonly offsets: readonly OffsetEdge[];
+  readonly ids: readonly string[];
+  readonly from: Int32Array;
+  readonly to: Int32Array;
+}
+
+interface AxisPlan {
+  /** Cluster of each place in `ids`. */
+  readonly of: Int32Array;
+  readonly count: number;
+  /** Leg of each row, as a place in `edges`; -1 where the row only keeps order. */
+  readonly leg: Int32Array;
+  readonly least: Float64Array;
+  readonly rows: readonly PlanRow[];
+  readonly table: RowTable;
+  /** Tables with extra rows, by the list of them. */
+  readonly more: WeakMap<readonly Row[], AxisRows>;
+}
+
+interface PlanRow {
+  readonly a: number;
+  readonly b: number;
+  readonly least: number;
+  readonly leg: number;
+}
+
+type AxisRows = Pick<AxisPlan, "leg" | "least" | "table">;
+
+/** An off-axis leg: its place in `edges`, and the angle it keeps from each axis on paper, radians. */
+export interface OffsetEdge {
+  readonly index: number;
+  readonly clear: readonly [number, number, number];
 }
 
 export interface Placed {
@@ -29,136 +63,162 @@ export interface Placed {
   readonly paper: ReadonlyMap<string, PaperPoint>;
 }
 
-/** Rounds of stretching off-axis legs: each round lengthens a component by a quarter. */
-const STRETCH_ROUNDS = 14;
-const STRETCH_STEP = 1.25;
-
-/** A leg's row along an axis: which clusters it holds apart. */
-interface AxisLeg {
-  readonly edge: SketchEdge;
-  readonly a: number;
-  readonly b: number;
+/** Least and wished paper length of each leg's component along each axis: three numbers a leg, in the order of `edges`. */
+export interface Wishes {
+  readonly least: Float64Array;
+  readonly target: Float64Array;
 }
+
+/** One solution: drawn coordinates of each axis' clusters. */
+export interface Layout {
+  readonly projection: Projection;
+  readonly x: readonly [Float64Array, Float64Array, Float64Array];
+}
+
+export type ExtraRows = readonly (readonly Row[])[];
+export const NO_ROWS: ExtraRows = [[], [], []];
 
 export function placePlan(sketch: Sketch, measure: MeasureText): PlacePlan {
+  const ids = [...sketch.vertices.keys()];
+  const place = new Map(ids.map((id, i) => [id, i]));
+  const edges = sketch.edges.filter((edge) => edge.kind !== "none");
   const clusters = AXES.map((axis) => clustersOf(sketch, axis)) as unknown as PlacePlan["clusters"];
-  const legs: AxisLeg[][] = [];
-  const order: Row[][] = [];
-  for (const axis of AXES) {
-    const wanted = axisLegs(sketch, axis, clusters[axis]);
-    const rows = [...wanted.map((leg) => ({ a: leg.a, b: leg.b, least: 0, target: 1, leg })), ...orderRows(sketch, axis, clusters[axis]).map((row) => ({ ...row, leg: null }))];
-    const kept = rowsWithoutCycles(clusters[axis].count, rows);
-    legs.push(kept.flatMap((row) => row.leg ?? []));
-    order.push(kept.filter((row) => row.leg === null));
-  }
-  return { sketch, clusters, legs, order, needs: new Map(sketch.edges.map((edge) => [edge.id, edgeNeed(sketch.model, edge, measure)])) };
+  return {
+    sketch, clusters, ids, edges,
+    axes: AXES.map((axis) => axisPlan(sketch, axis, clusters[axis], ids, edges)) as unknown as PlacePlan["axes"],
+    needs: edges.map((edge) => edgeNeed(sketch.model, edge, measure)),
+    offsets: edges.flatMap((edge, index) => (edge.kind === "offset" ? [{ index, clear: clearances(sketch, edge) }] : [])),
+    from: Int32Array.from(edges, (edge) => place.get(edge.from) ?? 0),
+    to: Int32Array.from(edges, (edge) => place.get(edge.to) ?? 0),
+  };
 }
 
-function axisLegs(sketch: Sketch, axis: Axis, clusters: AxisClusters): AxisLeg[] {
-  return sketch.edges.filter((edge) => edge.real[axis] !== 0).map((edge) => {
+function axisPlan(sketch: Sketch, axis: Axis, clusters: AxisClusters, ids: readonly string[], edges: readonly SketchEdge[]): AxisPlan {
+  const wanted: PlanRow[] = [];
+  edges.forEach((edge, leg) => {
+    if (edge.real[axis] === 0) return;
     const from = clusters.of.get(edge.from) ?? 0;
     const to = clusters.of.get(edge.to) ?? 0;
-    return edge.real[axis] > 0 ? { edge, a: from, b: to } : { edge, a: to, b: from };
+    wanted.push(edge.real[axis] > 0 ? { a: from, b: to, least: 0, leg } : { a: to, b: from, least: 0, leg });
   });
+  for (const { a, b, least } of orderRows(sketch, axis, clusters)) wanted.push({ a, b, least, leg: -1 });
+  const rows = rowsWithoutCycles(clusters.count, wanted);
+  return { of: Int32Array.from(ids, (id) => clusters.of.get(id) ?? 0), count: clusters.count, rows, ...axisRows(clusters.count, rows), more: new WeakMap() };
 }
 
-/** Least and wished length of each leg's component, which stretching raises. */
-interface Wish {
-  readonly edge: SketchEdge;
-  least: [number, number, number];
-  target: [number, number, number];
+function axisRows(count: number, rows: readonly PlanRow[]): AxisRows {
+  return { leg: Int32Array.from(rows, (row) => row.leg), least: Float64Array.from(rows, (row) => row.least), table: rowTable(count, rows) };
+}
+
+function rowsWith(axis: AxisPlan, extra: readonly Row[]): AxisRows {
+  if (extra.length === 0) return axis;
+  const known = axis.more.get(extra);
+  if (known) return known;
+  const more = extra.map(({ a, b, least }): PlanRow => ({ a, b, least, leg: -1 }));
+  const made = axisRows(axis.count, rowsWithoutCycles(axis.count, more, axis.rows));
+  axis.more.set(extra, made);
+  return made;
+}
+
+/** Solves one axis. */
+export function solveAxis(plan: PlacePlan, wishes: Wishes, axis: Axis, extra: readonly Row[]): Float64Array {
+  const { leg, least: order, table } = rowsWith(plan.axes[axis], extra);
+  const least = new Float64Array(leg.length);
+  const target = new Float64Array(leg.length);
+  for (let row = 0; row < leg.length; row++) {
+    const of = leg[row]!;
+    least[row] = of < 0 ? order[row]! : wishes.least[of * 3 + axis]!;
+    target[row] = of < 0 ? 0 : wishes.target[of * 3 + axis]!;
+  }
+  return compactRows(table, least, target);
 }
 
 /** @param extra rows that hold crowded neighbours apart, per axis */
-export function placeAll(plan: PlacePlan, projection: Projection, stretch: number, extra: readonly (readonly Row[])[] = [[], [], []]): Placed {
-  const wishes = plan.sketch.edges.filter((edge) => edge.kind !== "none").map((edge) => wishOf(plan, projection, edge, stretch));
-  let placed = solve(plan, projection, wishes, extra);
-  for (let round = 0; round < STRETCH_ROUNDS; round++) {
-    const poor = wishes.filter((wish) => wish.edge.kind === "offset" && stretchPoor(plan, wish, placed));
-    if (poor.length === 0) break;
-    placed = solve(plan, projection, wishes, extra);
+export function layoutAt(plan: PlacePlan, projection: Projection, stretch: number, extra: ExtraRows = NO_ROWS): Layout {
+  return layoutOf(plan, projection, wishesAt(plan, projection, stretch), extra);
+}
+
+/** As layoutAt, from wishes at hand, which it raises where off-axis legs need it. */
+export function layoutOf(plan: PlacePlan, projection: Projection, wishes: Wishes, extra: ExtraRows): Layout {
+  const solve = (axis: Axis): Float64Array => solveAxis(plan, wishes, axis, extra[axis] ?? []);
+  const layout: Layout = { projection, x: [solve(0), solve(1), solve(2)] };
+  return plan.offsets.length === 0 ? layout : mendOffAxis(plan, layout, wishes, solve);
+}
+
+export function wishesAt(plan: PlacePlan, projection: Projection, stretch: number): Wishes {
+  const least = new Float64Array(plan.edges.length * 3);
+  const target = new Float64Array(plan.edges.length * 3);
+  plan.edges.forEach((edge, i) => {
+    const need = plan.needs[i]!;
+    // A leg without pipe is fitting to fitting: it keeps its least room, whatever the stretch.
+    const growth = edge.stub !== null || (edge.pieces.length === 0 && edge.kind !== "offset") ? 0 : stretch;
+    for (const axis of AXES) {
+      if (edge.real[axis] === 0) continue;
+      least[i * 3 + axis] = need.least[axis];
+      target[i * 3 + axis] = Math.max(need.least[axis], edge.stub ? 0 : targetLength(edge.real[axis], growth));
+    }
+  });
+  for (const { index, clear } of plan.offsets) {
+    const lengths: Vec3 = [target[index * 3]!, target[index * 3 + 1]!, target[index * 3 + 2]!];
+    const drawn = clearOfAxes(projection, plan.edges[index]!.real, lengths, plan.needs[index]!.travel, clear);
+    for (const axis of AXES) least[index * 3 + axis] = target[index * 3 + axis] = drawn[axis];
   }
-  return placed;
+  return { least, target };
 }
 
-function wishOf(plan: PlacePlan, projection: Projection, edge: SketchEdge, stretch: number): Wish {
-  const need = plan.needs.get(edge.id) ?? { least: [0, 0, 0], travel: 0 };
-  const least: [number, number, number] = [...need.least];
-  const target: [number, number, number] = [0, 0, 0];
-  // A leg without pipe is fitting to fitting: it keeps its least room, whatever the stretch.
-  const growth = edge.stub || (edge.pieces.length === 0 && edge.kind !== "offset") ? 0 : stretch;
-  for (const axis of AXES) target[axis] = edge.real[axis] === 0 ? 0 : Math.max(least[axis], edge.stub ? 0 : targetLength(edge.real[axis], growth));
-  if (edge.kind !== "offset") return { edge, least, target };
-  const drawn = clearOfAxes(projection, edge.real, target, need.travel);
-  return { edge, least: [...drawn], target: drawn };
+/** Box round every working point. */
+export function layoutBox(plan: PlacePlan, { projection, x }: Layout): PaperBox {
+  const [e, n, u] = projection.axes;
+  const [ofE, ofN, ofU] = [plan.axes[0].of, plan.axes[1].of, plan.axes[2].of];
+  let minX = Infinity, minY = Infinity, maxX = -Infinity, maxY = -Infinity;
+  for (let i = 0; i < plan.ids.length; i++) {
+    const [a, b, c] = [x[0][ofE[i]!]!, x[1][ofN[i]!]!, x[2][ofU[i]!]!];
+    const px = a * e[0] + b * n[0] + c * u[0];
+    const py = a * e[1] + b * n[1] + c * u[1];
+    if (px < minX) minX = px;
+    if (px > maxX) maxX = px;
+    if (py < minY) minY = py;
+    if (py > maxY) maxY = py;
+  }
+  return { minX, minY, maxX, maxY };
 }
 
-const FACTORS = [1, 1.3, 1.7, 2.2, 3] as const;
-
-/** Smallest stretch of the components that draws the leg clear of every axis and long enough for its words. */
-export function clearOfAxes(projection: Projection, real: Vec3, lengths: readonly [number, number, number], travel: number): [number, number, number] {
-  let best: [number, number, number] = [...lengths];
-  let bestCost = Infinity;
-  const choices = (axis: Axis): readonly number[] => (real[axis] === 0 ? [1] : FACTORS);
-  for (const e of choices(0)) for (const n of choices(1)) for (const u of choices(2)) {
-    const base: [number, number, number] = [lengths[0] * e, lengths[1] * n, lengths[2] * u];
-    const paper = project(projection, signed(real, base));
-    const length = Math.hypot(paper[0], paper[1]);
-    const angle = axisAngle(projection, paper);
-    const grow = length > 0 ? Math.max(1, travel / length) : 1;
-    const cost = (base[0] + base[1] + base[2]) * grow + (angle < size.AXIS_CLEARANCE_RAD ? 1e4 * (1 + size.AXIS_CLEARANCE_RAD - angle) : 0) + (length < 4 ? 1e6 : 0);
-    if (cost < bestCost - size.PAPER_EPS) {
-      bestCost = cost;
-      best = [base[0] * grow, base[1] * grow, base[2] * grow];
+/** Ends of every drawn leg on paper: x and y of its start, x and y of its end, in the order of `edges`. */
+export function layoutLines(plan: PlacePlan, { projection, x }: Layout): Float64Array {
+  const lines = new Float64Array(plan.edges.length * 4);
+  const [e, n, u] = projection.axes;
+  const [ofE, ofN, ofU] = [plan.axes[0].of, plan.axes[1].of, plan.axes[2].of];
+  for (let i = 0; i < plan.edges.length; i++) {
+    for (let end = 0; end < 2; end++) {
+      const at = end === 0 ? plan.from[i]! : plan.to[i]!;
+      const [a, b, c] = [x[0][ofE[at]!]!, x[1][ofN[at]!]!, x[2][ofU[at]!]!];
+      lines[i * 4 + end * 2] = a * e[0] + b * n[0] + c * u[0];
+      lines[i * 4 + end * 2 + 1] = a * e[1] + b * n[1] + c * u[1];
     }
   }
-  return best;
+  return lines;
 }
 
-function signed(real: Vec3, lengths: readonly [number, number, number]): Vec3 {
-  return [Math.sign(real[0]) * lengths[0], Math.sign(real[1]) * lengths[1], Math.sign(real[2]) * lengths[2]];
-}
-
-/** Lengthens the component that helps a poor off-axis leg most; says whether it was poor. */
-function stretchPoor(plan: PlacePlan, wish: Wish, placed: Placed): boolean {
-  const { edge } = wish;
-  const from = placed.at.get(edge.from);
-  const to = placed.at.get(edge.to);
-  if (!from || !to) return false;
-  const drawn: [number, number, number] = [Math.abs(to[0] - from[0]), Math.abs(to[1] - from[1]), Math.abs(to[2] - from[2])];
-  const paper = project(placed.projection, signed(edge.real, drawn));
-  const short = Math.hypot(paper[0], paper[1]) < (plan.needs.get(edge.id)?.travel ?? 0) - 0.5;
-  if (!short && axisAngle(placed.projection, paper) >= size.AXIS_CLEARANCE_RAD - 0.002) return false;
-  let best: Axis = 0;
-  let bestScore = -Infinity;
-  for (const axis of AXES) {
-    if (edge.real[axis] === 0) continue;
-    const trial: [number, number, number] = [...drawn];
-    trial[axis] *= STRETCH_STEP;
-    const moved = project(placed.projection, signed(edge.real, trial));
-    const score = axisAngle(placed.projection, moved) + (short ? Math.hypot(moved[0], moved[1]) / 100 : 0);
-    if (score > bestScore) [best, bestScore] = [axis, score];
-  }
-  wish.least[best] = drawn[best] * STRETCH_STEP;
-  wish.target[best] = Math.max(wish.target[best], wish.least[best]);
-  return true;
-}
-
-function solve(plan: PlacePlan, projection: Projection, wishes: readonly Wish[], extra: readonly (readonly Row[])[]): Placed {
-  const wishOf = new Map(wishes.map((wish) => [wish.edge, wish]));
-  const lines = AXES.map((axis) => {
-    const rows: Row[] = (plan.legs[axis] ?? []).map(({ edge, a, b }) => ({ a, b, least: wishOf.get(edge)?.least[axis] ?? 0, target: wishOf.get(edge)?.target[axis] ?? 1 }));
-    const all = [...rows, ...(plan.order[axis] ?? [])];
-    const more = extra[axis] ?? [];
-    return compactAxis(plan.clusters[axis].count, more.length === 0 ? all : rowsWithoutCycles(plan.clusters[axis].count, more, all));
-  });
+export function placed(plan: PlacePlan, { projection, x }: Layout): Placed {
   const at = new Map<string, Vec3>();
   const paper = new Map<string, PaperPoint>();
-  for (const id of plan.sketch.vertices.keys()) {
-    const on = (axis: Axis): number => lines[axis]?.[plan.clusters[axis].of.get(id) ?? 0] ?? 0;
-    const drawn: Vec3 = [on(0), on(1), on(2)];
+  const [e, n, u] = projection.axes;
+  plan.ids.forEach((id, i) => {
+    const drawn: Vec3 = [x[0][plan.axes[0].of[i]!]!, x[1][plan.axes[1].of[i]!]!, x[2][plan.axes[2].of[i]!]!];
     at.set(id, drawn);
-    paper.set(id, project(projection, drawn));
+    paper.set(id, [drawn[0] * e[0] + drawn[1] * n[0] + drawn[2] * u[0], drawn[0] * e[1] + drawn[1] * n[1] + drawn[2] * u[1]]);
+  });
+  // A run that comes back ends at the fitting it meets, under its own point's name too.
+  for (const { pointId } of plan.sketch.model.nodes) {
+    const id = plan.sketch.vertexOf(pointId);
+    const [there, point] = [at.get(id), paper.get(id)];
+    if (id === pointId || !there || !point) continue;
+    at.set(pointId, there);
+    paper.set(pointId, point);
   }
   return { sketch: plan.sketch, projection, at, paper };
+}
+
+export function placeAll(plan: PlacePlan, projection: Projection, stretch: number, extra: ExtraRows = NO_ROWS): Placed {
+  return placed(plan, layoutAt(plan, projection, stretch, extra));
 }

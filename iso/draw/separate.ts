@@ -3,103 +3,156 @@
  * apart. For the worst pair every axis and sense that tells the two apart is tried as one more row of the compaction; the
  * row that helps most is kept; again until nothing helps. Clean crossings in mid-pipe are left to the hidden-line gap.
  */
-import { segmentDistance } from "../geometry/paper";
-import { AXES } from "./clusters";
+import { AXES, type Axis } from "./clusters";
 import type { Row } from "./compact";
-import { placeAll, type Placed, type PlacePlan } from "./place";
-import { crossingOf, paperBoxAround, type Segment } from "./plane";
+import { layoutBox, layoutLines, layoutOf, solveAxis, wishesAt, type ExtraRows, type Layout, type PlacePlan, type Wishes } from "./place";
 import type { Projection } from "./project";
 import * as size from "./sizes";
-import type { SketchEdge } from "./sketch";
 
-export type ExtraRows = readonly (readonly Row[])[];
-export const NO_ROWS: ExtraRows = [[], [], []];
-
-const ROUNDS = 6;
+const ROUNDS = 12;
 /** Trials in all: large lines stop here, so that editing stays quick. */
-const TRIALS = 16;
+const TRIALS = 48;
+/** Pairs looked at in one round, worst first. */
+const PAIRS = 3;
 /** Paper added between two that are too close. */
 const STEP = 9;
 /** A gain smaller than this is not worth a row. */
 const LEAST_GAIN = 0.5;
 /** Price of a millimetre of larger paper against one of closeness. */
 const COST_OF_SIZE = 0.02;
+/** Price of a crossing in mid-pipe, of a near touch, and of what touches outright. */
+const PRICE_CROSSING = 1;
+const PRICE_NEAR = 1;
+const PRICE_TOUCH = 5;
+/** A pipe lying on another in one line cannot be read at all: price of each mm of it, and of the fact. */
+const PRICE_LAID = 20;
+const PRICE_LAID_MM = 0.5;
+/** Two directions whose sine is under this run together. */
+const TOGETHER = 0.035;
+/** Lines this near run in one. */
+const IN_ONE_MM = 2;
 
-interface Conflict {
-  readonly a: SketchEdge;
-  readonly b: SketchEdge;
+export interface Conflict {
+  /** Places of the two legs in the plan. */
+  readonly a: number;
+  readonly b: number;
+  readonly cost: number;
+}
+
+/** One state of the search. */
+interface Trial {
+  readonly rows: ExtraRows;
+  readonly layout: Layout;
+  readonly conflicts: readonly Conflict[];
   readonly cost: number;
 }
 
 export function separateRows(plan: PlacePlan, projection: Projection, stretch: number, start: ExtraRows): ExtraRows {
-  let rows = start;
-  let placed = placeAll(plan, projection, stretch, rows);
-  let conflicts = conflictsOf(placed);
+  const wishes = wishesAt(plan, projection, stretch);
+  let now = judged(plan, start, layoutOf(plan, projection, wishes, start));
   let trials = 0;
-  for (let round = 0; round < ROUNDS && conflicts.length > 0; round++) {
-    const now = total(placed, conflicts);
-    let best: { rows: ExtraRows; placed: Placed; conflicts: readonly Conflict[]; cost: number } | null = null;
-    for (const conflict of conflicts.slice(0, 2)) {
-      for (const option of optionsFor(plan, placed, conflict)) {
+  for (let round = 0; round < ROUNDS && now.conflicts.length > 0 && trials < TRIALS; round++) {
+    let best: Trial | null = null;
+    for (const conflict of now.conflicts.slice(0, PAIRS)) {
+      for (const { axis, row } of optionsFor(plan, now.layout, conflict)) {
         if (trials++ >= TRIALS) break;
-        const tried = rows.map((list, axis) => (axis === option.axis ? [...list, option.row] : list));
-        const moved = placeAll(plan, projection, stretch, tried);
-        const left = conflictsOf(moved);
-        const cost = total(moved, left);
-        if (cost < now - LEAST_GAIN && (!best || cost < best.cost)) best = { rows: tried, placed: moved, conflicts: left, cost };
+        const rows = now.rows.map((list, at) => (at === axis ? [...list, row] : list));
+        const next = judged(plan, rows, movedLayout(plan, now.layout, wishes, axis, rows));
+        if (next.cost < (best?.cost ?? now.cost - LEAST_GAIN)) best = next;
       }
     }
     if (!best) break;
-    ({ rows, placed, conflicts } = best);
+    now = best;
   }
-  return rows;
+  return now.rows;
 }
 
-function total(placed: Placed, conflicts: readonly Conflict[]): number {
-  const box = paperBoxAround([...placed.paper.values()]);
-  return conflicts.reduce((sum, conflict) => sum + conflict.cost, 0) + (box.maxX - box.minX + box.maxY - box.minY) * COST_OF_SIZE;
+/** Only the axis with the new row has to be solved again, but off-axis legs share all of them. */
+function movedLayout(plan: PlacePlan, layout: Layout, wishes: Wishes, axis: Axis, rows: ExtraRows): Layout {
+  if (plan.offsets.length > 0) return layoutOf(plan, layout.projection, { least: wishes.least.slice(), target: wishes.target.slice() }, rows);
+  const x: [Float64Array, Float64Array, Float64Array] = [...layout.x];
+  x[axis] = solveAxis(plan, wishes, axis, rows[axis] ?? []);
+  return { projection: layout.projection, x };
+}
+
+function judged(plan: PlacePlan, rows: ExtraRows, layout: Layout): Trial {
+  const conflicts = conflictsOf(plan, layoutLines(plan, layout));
+  const box = layoutBox(plan, layout);
+  let cost = (box.maxX - box.minX + box.maxY - box.minY) * COST_OF_SIZE;
+  for (const conflict of conflicts) cost += conflict.cost;
+  return { rows, layout, conflicts, cost };
 }
 
 /** Rows that would push the two apart along an axis on which they do not overlap. */
-function optionsFor(plan: PlacePlan, placed: Placed, { a, b }: Conflict): readonly { readonly axis: number; readonly row: Row }[] {
+function optionsFor(plan: PlacePlan, layout: Layout, { a, b }: Conflict): readonly { readonly axis: Axis; readonly row: Row }[] {
   return AXES.flatMap((axis) => {
-    const cluster = (id: string): number => plan.clusters[axis].of.get(id) ?? 0;
-    const drawn = (id: string): number => placed.at.get(id)?.[axis] ?? 0;
-    const sorted = (edge: SketchEdge): readonly string[] => [edge.from, edge.to].sort((p, q) => cluster(p) - cluster(q));
-    const [aLow = a.from, aHigh = a.to] = sorted(a);
-    const [bLow = b.from, bHigh = b.to] = sorted(b);
+    const { of } = plan.axes[axis];
+    const sorted = (edge: number): readonly [number, number] => {
+      const [p, q] = [of[plan.from[edge]!]!, of[plan.to[edge]!]!];
+      return p < q ? [p, q] : [q, p];
+    };
+    const [aLow, aHigh] = sorted(a);
+    const [bLow, bHigh] = sorted(b);
     const pairs = [[aHigh, bLow], [bHigh, aLow], [aLow, bLow], [bLow, aLow]] as const;
     return pairs
-      .filter(([low, high]) => cluster(low) < cluster(high))
-      .map(([low, high]) => ({ axis, row: { a: cluster(low), b: cluster(high), least: drawn(high) - drawn(low) + STEP, target: null } }));
+      .filter(([low, high], i) => low < high && pairs.findIndex((pair) => pair[0] === low && pair[1] === high) === i)
+      .map(([low, high]) => ({ axis, row: { a: low, b: high, least: layout.x[axis][high]! - layout.x[axis][low]! + STEP, target: null } }));
   });
 }
 
-/** Pairs of legs that read as touching, worst first. */
-export function conflictsOf(placed: Placed): readonly Conflict[] {
-  const edges = placed.sketch.edges.filter((edge) => edge.kind !== "none");
-  const lines = edges.map((edge): Segment => ({ from: placed.paper.get(edge.from) ?? [0, 0], to: placed.paper.get(edge.to) ?? [0, 0] }));
-  const boxes = lines.map((line) => paperBoxAround([line.from, line.to]));
+/** Pairs of legs that read as touching, worst first. @param lines four numbers a leg (layoutLines) */
+export function conflictsOf(plan: PlacePlan, lines: Float64Array): readonly Conflict[] {
   const found: Conflict[] = [];
-  for (let i = 0; i < edges.length; i++) {
-    for (let j = i + 1; j < edges.length; j++) {
-      const [p, q, a, b] = [boxes[i], boxes[j], edges[i], edges[j]];
-      if (!p || !q || !a || !b || p.minX > q.maxX + size.NEAR_TOUCH || q.minX > p.maxX + size.NEAR_TOUCH || p.minY > q.maxY + size.NEAR_TOUCH || q.minY > p.maxY + size.NEAR_TOUCH) continue;
-      if (a.from === b.from || a.from === b.to || a.to === b.from || a.to === b.to) continue;
-      const cost = closeness(lines[i] ?? NOWHERE, lines[j] ?? NOWHERE);
-      if (cost > 0) found.push({ a, b, cost });
+  const { from, to } = plan;
+  const near = size.NEAR_TOUCH;
+  for (let i = 0; i < from.length; i++) {
+    const [ax, ay, bx, by] = [lines[i * 4]!, lines[i * 4 + 1]!, lines[i * 4 + 2]!, lines[i * 4 + 3]!];
+    const lowX = Math.min(ax, bx) - near, highX = Math.max(ax, bx) + near, lowY = Math.min(ay, by) - near, highY = Math.max(ay, by) + near;
+    for (let j = i + 1; j < from.length; j++) {
+      const cx = lines[j * 4]!, dx = lines[j * 4 + 2]!;
+      if ((cx > highX && dx > highX) || (cx < lowX && dx < lowX)) continue;
+      const cy = lines[j * 4 + 1]!, dy = lines[j * 4 + 3]!;
+      if ((cy > highY && dy > highY) || (cy < lowY && dy < lowY)) continue;
+      if (from[i] === from[j] || from[i] === to[j] || to[i] === from[j] || to[i] === to[j]) continue;
+      const cost = closeness(ax, ay, bx, by, cx, cy, dx, dy);
+      if (cost > 0) found.push({ a: i, b: j, cost });
     }
   }
   return found.sort((p, q) => q.cost - p.cost);
 }
 
-const NOWHERE: Segment = { from: [0, 0], to: [0, 0] };
-
-function closeness(a: Segment, b: Segment): number {
-  const ends = [segmentDistance(a.from, b.from, b.to), segmentDistance(a.to, b.from, b.to), segmentDistance(b.from, a.from, a.to), segmentDistance(b.to, a.from, a.to)];
-  const touching = ends.reduce((sum, gap) => sum + Math.max(0, 1 - gap / size.NEAR_TOUCH), 0);
-  if (crossingOf(a, b)) return touching > 0 ? 2 + 5 * touching : 1;
+function closeness(ax: number, ay: number, bx: number, by: number, cx: number, cy: number, dx: number, dy: number): number {
+  const ends = [pointGap(ax, ay, cx, cy, dx, dy), pointGap(bx, by, cx, cy, dx, dy), pointGap(cx, cy, ax, ay, bx, by), pointGap(dx, dy, ax, ay, bx, by)] as const;
+  let touching = 0;
+  for (const gap of ends) touching += Math.max(0, 1 - gap / size.NEAR_TOUCH);
+  const laid = laidLength(ax, ay, bx, by, cx, cy, dx, dy);
+  if (laid > 0) return PRICE_LAID + PRICE_LAID_MM * laid + PRICE_TOUCH * touching;
+  if (crosses(ax, ay, bx, by, cx, cy, dx, dy)) return touching > 0 ? 2 * PRICE_CROSSING + PRICE_TOUCH * touching : PRICE_CROSSING;
   // Two segments that do not cross are nearest at an end.
-  const gap = Math.min(...ends);
-  return gap >= size.NEAR_TOUCH ? 0 : 1 + 5 * touching;
+  return touching === 0 ? 0 : PRICE_NEAR + PRICE_TOUCH * touching;
+}
+
+function pointGap(px: number, py: number, ax: number, ay: number, bx: number, by: number): number {
+  const wx = bx - ax, wy = by - ay;
+  const square = wx * wx + wy * wy;
+  const t = square === 0 ? 0 : Math.min(1, Math.max(0, ((px - ax) * wx + (py - ay) * wy) / square));
+  const ox = px - ax - t * wx, oy = py - ay - t * wy;
+  return Math.sqrt(ox * ox + oy * oy);
+}
+
+function crosses(ax: number, ay: number, bx: number, by: number, cx: number, cy: number, dx: number, dy: number): boolean {
+  const side = (px: number, py: number, qx: number, qy: number, rx: number, ry: number): number => (qx - px) * (ry - py) - (qy - py) * (rx - px);
+  return side(ax, ay, bx, by, cx, cy) * side(ax, ay, bx, by, dx, dy) < 0 && side(cx, cy, dx, dy, ax, ay) * side(cx, cy, dx, dy, bx, by) < 0;
+}
+
+/** Length two legs share that run together in one line; 0 when they do not. */
+export function laidLength(ax: number, ay: number, bx: number, by: number, cx: number, cy: number, dx: number, dy: number): number {
+  const wx = bx - ax, wy = by - ay, vx = dx - cx, vy = dy - cy;
+  const length = Math.sqrt(wx * wx + wy * wy);
+  const other = Math.sqrt(vx * vx + vy * vy);
+  if (length === 0 || other === 0 || Math.abs(wx * vy - wy * vx) > TOGETHER * length * other) return 0;
+  const beside = (px: number, py: number): number => Math.abs((px - ax) * wy - (py - ay) * wx) / length;
+  if (Math.min(beside(cx, cy), beside(dx, dy)) > IN_ONE_MM) return 0;
+  const s = ((cx - ax) * wx + (cy - ay) * wy) / length, t = ((dx - ax) * wx + (dy - ay) * wy) / length;
+  return Math.max(0, Math.min(length, Math.max(s, t)) - Math.max(0, Math.min(s, t)));
 }

@@ -52,10 +52,49 @@ export function splitFull(plan: SheetPlan, capacity: SheetCapacity): SheetPlan {
 }
 
 /** Cuts one part in two whatever it holds; null when nothing in it can be cut. */
-export function splitOne(plan: SheetPlan, index: number, capacity: SheetCapacity): SheetPlan | null {
-  const part = plan.parts[index];
-  const cut = part ? bestCut(plan.tree, part.vertices, capacity, 2) : null;
-  return cut ? inOrder(plan.tree, [...plan.parts.filter((other) => other !== part).map((other) => other.vertices), ...cut]) : null;
+export function splitOne(plan: SheetPlan, part: SheetPart, capacity: SheetCapacity): SheetPlan | null {
+  const same = plan.parts.find((other) => other.vertices[0] === part.vertices[0]);
+  const cut = same ? bestCut(plan.tree, same.vertices, capacity, 2) : null;
+  return cut ? inOrder(plan.tree, [...plan.parts.filter((other) => other !== same).map((other) => other.vertices), ...cut]) : null;
+}
+
+/**
+ * Joins neighbours that are not too full together, the emptiest pair first, as long as `holds` agrees.
+ * @param holds whether a plan's parts all stand on their paper
+ */
+export function joinedParts(start: SheetPlan, capacity: SheetCapacity, holds: (plan: SheetPlan) => boolean): SheetPlan {
+  let plan = start;
+  const refused = new Set<string>();
+  for (let again = true; again; ) {
+    again = false;
+    for (const [a, b] of neighbours(plan, capacity)) {
+      const name = `${a.vertices[0]?.id} ${b.vertices[0]?.id} ${a.vertices.length} ${b.vertices.length}`;
+      if (refused.has(name)) continue;
+      const both = [...a.vertices, ...b.vertices].sort((p, q) => p.rank - q.rank);
+      const joined = inOrder(plan.tree, [...plan.parts.filter((part) => part !== a && part !== b).map((part) => part.vertices), both]);
+      if (holds(joined)) {
+        plan = joined;
+        again = true;
+        break;
+      }
+      refused.add(name);
+    }
+  }
+  return plan;
+}
+
+/** Pairs of parts that meet and would fill one sheet at most, the emptiest first. */
+function neighbours({ parts, tree }: SheetPlan, capacity: SheetCapacity): readonly (readonly [SheetPart, SheetPart])[] {
+  const partOfVertex = new Map<TreeVertex, SheetPart>();
+  for (const part of parts) for (const vertex of part.vertices) partOfVertex.set(vertex, part);
+  const pairs: { readonly pair: readonly [SheetPart, SheetPart]; readonly full: number }[] = [];
+  for (const vertex of tree.vertices) {
+    const [a, b] = [vertex.parent && partOfVertex.get(vertex.parent), partOfVertex.get(vertex)];
+    if (!a || !b || a === b) continue;
+    const full = fullness(loadOf([...a.vertices, ...b.vertices]), capacity);
+    if (full <= 1) pairs.push({ pair: [a, b], full });
+  }
+  return pairs.sort((p, q) => p.full - q.full).map(({ pair }) => pair);
 }
 
 function inOrder(tree: SheetTree, parts: readonly (readonly TreeVertex[])[]): SheetPlan {

@@ -64,6 +64,8 @@ export const NEAR_TOUCH = 8;
 
 /** Off-axis legs keep this angle from every axis on paper, radians (12 degrees, with a hair to spare). */
 export const AXIS_CLEARANCE_RAD = (12.4 * Math.PI) / 180;
+/** And this from the axis of a pipe they meet (20 degrees, likewise): nearer they read as going along it. */
+export const NEIGHBOUR_CLEARANCE_RAD = (20.3 * Math.PI) / 180;
 
 /** Model-frame tolerances, millimetres. */
 export const MERGE_MM = 30;
