@@ -77,9 +77,9 @@ export function valveKey(valve: ValveName, ratingClass: RatingClass, nps: Nps, e
   return `valve:${valve}:${ratingClass}:${nps}:${ends}`;
 }
 
-/** Height of a butt-weld outlet from the run's surface to the branch weld end. */
-export function outletKey(branchNps: Nps, runNps: Nps): string {
-  return `outlet:${branchNps}:${runNps}`;
+/** Height of an outlet from the run's surface to the branch weld end; to the socket's bottom, or the threaded end, where no table was read. */
+export function outletKey(branchNps: Nps, runNps: Nps, ends: "butt" | "socket" | "threaded" = "butt"): string {
+  return `${ends === "butt" ? "" : `${ends}-`}outlet:${branchNps}:${runNps}`;
 }
 
 /**
@@ -88,6 +88,11 @@ export function outletKey(branchNps: Nps, runNps: Nps): string {
  */
 export function socketKey(fitting: SocketFitting, forgedClass: ForgedClass, nps: Nps): string {
   return `socket:${fitting}:${forgedClass}:${nps}`;
+}
+
+/** Depth of the socket in a socket-weld flange (B16.5), the same in every class. */
+export function socketFlangeDepthKey(nps: Nps): string {
+  return `flange-socket:depth:${nps}`;
 }
 
 /**

@@ -3,7 +3,7 @@
  * check · group spools · mark · assemble. Pure, same input same model; never throws on what a user can type.
  */
 import { buildContext, type BuildContext } from "./build-context";
-import type { Fitting, JointDraft, PlacedPoint, PlacedRun } from "./build-types";
+import type { Fitting, JointDraft, PieceDraft, PlacedPoint, PlacedRun } from "./build-types";
 import { assembleSpools } from "./assemble-spools";
 import { checkRuns } from "./check-line";
 import { fillStretch, runStretches } from "./cut-stretches";
@@ -14,6 +14,7 @@ import { joinFaces } from "./join-faces";
 import { advanceMarks, givenMarks, type Markable } from "./marks";
 import type { Component, Joint, Leg, MarksRegister, Model, Node, Piece, Problem, TakeOutWord } from "./model-types";
 import { placeRuns } from "./place-runs";
+import { lineBreaks } from "./service";
 import { componentWeight } from "./weights";
 
 /** A line before its marks are given. */
@@ -35,8 +36,9 @@ export function buildModel(document: RunDocument, marks: MarksRegister, takeOuts
     for (const ids of [g.componentIds, g.pieceKeys]) for (const id of ids) letterOf.set(id, letters[i] ?? "?");
   });
   const spoolOf = (id: string | null) => (id === null ? null : (letterOf.get(id) ?? null));
-  const components = line.parts.components.map((c): Component => ({ ...c, ...componentWeight(c, line.ctx.units), spool: spoolOf(c.id) }));
+  const components = line.parts.components.map((c): Component => ({ ...c, ...componentWeight(c, line.ctx.units, line.ctx.peek), spool: spoolOf(c.id) }));
   const spools = assembleSpools({ ...line.parts, components }, line.groups, letters, line.legs, document, line.ctx);
+  const breaks = lineBreaks(line.runs.flatMap((run) => run.points));
   return {
     document,
     nodes: line.runs.flatMap((run) => run.points.map(nodeOf)),
@@ -45,6 +47,7 @@ export function buildModel(document: RunDocument, marks: MarksRegister, takeOuts
     joints: line.parts.joints.map((j) => jointOf(j, given.welds.get(j.key) ?? null, spoolOf(j.a) ?? spoolOf(j.b))),
     pieces: line.parts.pieces.map((p): Piece => ({ ...p, mark: given.pieces.get(p.key) ?? "", spool: spoolOf(p.key) })),
     spools,
+    ...(breaks.length > 0 ? { breaks } : {}),
     problems: inFlowOrder(line.ctx.problems, line.runs),
   };
 }
@@ -77,6 +80,10 @@ function collectParts(runs: readonly PlacedRun[], fittings: ReadonlyMap<string, 
       components.push(c);
     }
   };
+  const putPieces = (list: readonly PieceDraft[]) => {
+    order.push(...list.map((piece) => piece.key));
+    pieces.push(...list);
+  };
   for (const run of runs) {
     const endingAt = new Map(runStretches(run, fittings, points).map((s) => [s.to.uid, s]));
     for (const p of run.points) {
@@ -84,16 +91,15 @@ function collectParts(runs: readonly PlacedRun[], fittings: ReadonlyMap<string, 
       const between = stretch ? fillStretch(stretch, ctx) : null;
       if (between) {
         put(between.components);
-        if (between.piece) {
-          order.push(between.piece.key);
-          pieces.push(between.piece);
-        }
+        putPieces(between.pieces);
         joints.push(...between.joints);
         held.push(...between.held);
       }
       const fitting = fittings.get(p.uid);
       put(fitting?.components ?? []);
+      putPieces(fitting?.pieces ?? []);
       joints.push(...(fitting?.joints ?? []));
+      held.push(...(fitting?.held ?? []));
     }
   }
   return { order, components, joints: uniqueJoints(joints), pieces, held };

@@ -1,7 +1,10 @@
 /** Shapes that travel between the passes of buildModel(); nothing outside iso/run needs them. */
 import type { Vec3 } from "../geometry/types";
 import type { Nps, Pipe, Place, Point, Run } from "./document";
-import type { Component, CutTerm, JointKind, Leg } from "./model-types";
+import type { Component, CutTerm, JointKind, Leg, Piece } from "./model-types";
+
+/** A piece before its mark and spool are known. */
+export type PieceDraft = Omit<Piece, "mark" | "spool">;
 
 /** A document point in space, with everything its item needs to be fitted there. */
 export interface PlacedPoint {
@@ -23,11 +26,22 @@ export interface PlacedPoint {
   /** The leg before (after) is two flanged parts bolted face to face: no pipe, no mating flanges there. */
   readonly boltedIn: boolean;
   readonly boltedOut: boolean;
-  /** Pipe that arrives and pipe that leaves; they differ at a reducer only. */
+  /** Pipe that arrives and pipe that leaves; they differ at a reducer, and where another material starts. */
   readonly pipeIn: Pipe;
   readonly pipeOut: Pipe;
+  /** What the line carries before and after the point. */
+  readonly serviceIn: Service;
+  readonly serviceOut: Service;
   /** Branch runs that leave from here, in document order. */
   readonly branches: readonly BranchHead[];
+}
+
+/** What changes at a break besides the pipe itself; "" = none said. */
+export interface Service {
+  readonly specification: string;
+  readonly material: string;
+  readonly insulation: string;
+  readonly tracing: string;
 }
 
 /** The first direction of a branch run at the fitting it leaves from. */
@@ -55,6 +69,8 @@ export interface SideWeld {
   readonly kind: Exclude<JointKind, "bolted" | "attachment">;
   readonly place: Place;
   readonly mismatchRad: number;
+  /** Angle of the pipe's cut off square, radians; absent = square. */
+  readonly cutRad?: number;
 }
 
 /** What a leg meets at one of its ends. */
@@ -64,18 +80,39 @@ export interface Side {
   /** Take-outs from the working point to the part's weld face or socket bottom (values are negative), gap not included. */
   readonly terms: readonly CutTerm[];
   readonly componentId: string | null;
+  /** The piece on the other side of the weld where that is no component (a mitre's segment); absent = the component. */
+  readonly neighbourKey?: string;
   /** null at an end that nobody welds. */
   readonly weld: SideWeld | null;
-  readonly gap: { readonly kind: "root-gap" | "pull-back"; readonly mm: number; readonly label: string } | null;
+  readonly gap: SideGap | null;
   readonly trimMm: number;
   /** Set when this side is bolted face to face with the next part: the key, place and class of the bolting. */
   readonly bolted: BoltedFace | null;
+}
+
+/** What lies between the part's face and the pipe's end, mm; negative where the pipe goes in (a thread's make-up). */
+export interface SideGap {
+  readonly kind: "root-gap" | "pull-back" | "make-up";
+  readonly mm: number;
+  readonly label: string;
+  readonly source?: string | null;
+  readonly unconfirmed?: boolean;
 }
 
 export interface BoltedFace {
   readonly componentId: string;
   readonly place: Place;
   readonly ratingClass: number;
+  /** Gasket of this face where it differs from the line's, mm. */
+  readonly gasketMm?: number;
+  readonly studs?: StudShare;
+}
+
+/** What the studs of a bolted face take in on one side besides a flange, and why; `none`: its studs pass at another face. */
+export interface StudShare {
+  readonly extraMm: number;
+  readonly because: string;
+  readonly none?: boolean;
 }
 
 /** A joint before numbers, spools and the pipe on either side are known. */
@@ -101,6 +138,8 @@ export interface Rider {
   readonly componentId: string;
   /** null for a stub-in, whose only weld is that of the branch pipe. */
   readonly joint: JointDraft | null;
+  /** Where on the pipe it sits, for a part without a joint. */
+  readonly at?: Vec3;
 }
 
 /** All that one point puts into the line. */
@@ -112,6 +151,10 @@ export interface Fitting {
   readonly out: Side;
   /** One per branch run of the point, same order. */
   readonly branches: readonly Side[];
+  /** Pieces cut for the fitting itself (segments of a mitre), in flow order; absent = none. */
+  readonly pieces?: readonly PieceDraft[];
+  /** Parts that hang together without a joint of their own; absent = none. */
+  readonly held?: readonly (readonly [string, string])[];
 }
 
 /** Everything between two points where the pipe is cut. */

@@ -13,7 +13,7 @@ export function checkRuns(runs: readonly PlacedRun[], ctx: BuildContext): void {
     checkLength(run, ctx);
     for (const p of run.points) {
       const where = { pointId: p.point.id, runId: p.runId };
-      if (p.turnRad > Math.PI - FOLD_RAD) {
+      if (p.turnRad > Math.PI - FOLD_RAD && p.point.item.kind !== "return") {
         ctx.report("fold-back", "stop", `${sentenceStart(p.label)} turns ${formatAngleDeg(p.turnRad)}, back on itself: correct a sign, or build a return of two elbows.`, where);
       }
       for (const pipe of [p.pipeIn, p.pipeOut]) checkPipe(pipe, where, told, ctx);

@@ -2,21 +2,24 @@
  * Fourth pass: walks each run from one part to the next, and decides what lies between two of them: a piece of pipe with
  * its arithmetic, one weld (fittings welded face to face), a bolted face, or nothing that fits.
  */
-import { FACE_TO_FACE_MM, ZERO_LENGTH_MM } from "../geometry/tolerances";
-import { vecAddScaled } from "../geometry/vec3";
-import { formatInches, formatTerm } from "../units/format";
+import { FACE_TO_FACE_MM } from "../geometry/tolerances";
+import { vecAddScaled, vecDot, vecSub } from "../geometry/vec3";
 import { sentenceStart, type BuildContext } from "./build-context";
-import type { Fitting, JointDraft, PlacedPoint, PlacedRun, Rider, Side, Stretch } from "./build-types";
-import { boltedJoint, gasketPart } from "./fit-flange";
+import type { Fitting, JointDraft, PieceDraft, PlacedPoint, PlacedRun, Rider, Side, Stretch } from "./build-types";
+import { boltedParts } from "./bolted-face";
 import { makeJoint, reachOf } from "./fit-common";
+import { checkPiece } from "./check-piece";
+import type { RatingClass } from "./document";
 import type { Component, Leg } from "./model-types";
 import { sharedWeldKey } from "./original-side";
-import { draftPiece, type PieceDraft } from "./piece-draft";
+import { draftPiece } from "./piece-draft";
+import { splitStock } from "./split-stock";
 
 export interface Between {
   readonly components: readonly Component[];
   readonly joints: readonly JointDraft[];
-  readonly piece: PieceDraft | null;
+  /** In flow order; more than one where the stock is too short for a single pipe. */
+  readonly pieces: readonly PieceDraft[];
   /** Parts that hang together without a joint of their own: a stub-in and its header. */
   readonly held: readonly (readonly [string, string])[];
 }
@@ -36,15 +39,20 @@ export function runStretches(run: PlacedRun, fittings: ReadonlyMap<string, Fitti
     if (!fitting) return;
     if (leg) legs.push(leg);
     if (!fitting.in.through) {
-      if (from && start && legs.length > 0) out.push({ from, to: p, legs, start, end: fitting.in, riders: [...riders, ...(p.isLast ? fitting.riders : [])], passed });
+      if (from && start && legs.length > 0) out.push({ from, to: p, legs, start, end: fitting.in, riders: [...riders, ...(ridesBack(p) ? fitting.riders : [])], passed });
       [from, start, legs, passed] = [p, fitting.out, [], []];
-      riders = p.isLast && out.length > 0 ? [] : [...fitting.riders];
+      riders = ridesBack(p) && out.length > 0 ? [] : [...fitting.riders];
     } else {
       riders.push(...fitting.riders);
       passed.push(p);
     }
   });
   return out;
+}
+
+/** What rides on a point where the pipe is cut sits on the pipe after it; before it at a run's end, and in a run turned round. */
+function ridesBack(p: PlacedPoint): boolean {
+  return p.isLast || (p.point.flipped === true && !p.isFirst);
 }
 
 /** What lies in one stretch. */
@@ -70,21 +78,24 @@ function flowOf(s: Stretch) {
 
 function boltedStretch(s: Stretch, ctx: BuildContext): Between {
   const [a, b] = [s.start.bolted, s.end.bolted];
-  if (!a || !b) return { components: [], joints: [], piece: null, held: [] };
+  if (!a || !b) return { components: [], joints: [], pieces: [], held: [] };
   if (a.ratingClass !== b.ratingClass) {
     ctx.report("class-mismatch", "stop", `${sentenceStart(s.from.label)} (class ${a.ratingClass}) and ${s.to.label} (class ${b.ratingClass}) are bolted together: their drilling differs. Give both one class.`, { pointId: s.to.point.id, runId: s.to.runId });
   }
   const flow = flowOf(s);
-  const centre = vecAddScaled(s.from.departure, flow, reachOf(s.start.terms) + ctx.settings.allowances.gasketMm / 2);
-  const gasket = gasketPart(s.to, s.to.pipeIn, `${s.to.uid}.gasket-face`, Math.max(a.ratingClass, b.ratingClass) as 150, centre, flow);
-  const place = a.place !== "shop" ? a.place : b.place;
-  return { components: [gasket], joints: [boltedJoint(s.to, `${s.to.uid}:bolts-face`, [a.componentId, b.componentId], gasket, place, ctx)], piece: null, held: [] };
+  const gasketMm = a.gasketMm ?? b.gasketMm ?? ctx.settings.allowances.gasketMm;
+  const bolted = boltedParts(s.to, {
+    key: `${s.to.uid}:bolts-face`, gasketId: `${s.to.uid}.gasket-face`, pipe: s.to.pipeIn, ratingClass: Math.max(a.ratingClass, b.ratingClass) as RatingClass,
+    centre: vecAddScaled(s.from.departure, flow, reachOf(s.start.terms) + gasketMm / 2), flow, sides: [a.componentId, b.componentId],
+    place: a.place !== "shop" ? a.place : b.place, gasketMm, shares: [a.studs ?? null, b.studs ?? null],
+  }, ctx);
+  return { components: bolted.components, joints: [bolted.joint], pieces: [], held: bolted.held };
 }
 
 /** Fittings face to face: one weld with one root gap, no pipe. */
 function weldedStretch(s: Stretch, gap: number, ctx: BuildContext): Between {
   const [a, b] = [s.start.weld, s.end.weld];
-  if (!a || !b) return { components: [], joints: [], piece: null, held: [] };
+  if (!a || !b) return { components: [], joints: [], pieces: [], held: [] };
   const place = b.place !== "shop" ? b.place : a.place;
   if (place === "field-fit") {
     ctx.report("trim-without-pipe", "stop", `${sentenceStart(s.to.label)} has a field-fit weld between two fittings, with no pipe to leave long: choose another weld for the trim.`, { pointId: s.to.point.id, runId: s.to.runId });
@@ -94,26 +105,42 @@ function weldedStretch(s: Stretch, gap: number, ctx: BuildContext): Between {
     key: sharedWeldKey(s, a.key, b.key), kind: "butt", place, a: s.start.componentId, b: s.end.componentId, position: at, direction: flowOf(s),
     nps: s.to.pipeIn.nps, mismatchRad: a.mismatchRad + b.mismatchRad, gapMm: gap, runId: s.to.runId,
   });
-  return { components: [], joints: [joint], piece: null, held: [] };
+  return { components: [], joints: [joint], pieces: [], held: [] };
 }
 
 function pipeStretch(s: Stretch, total: number, ctx: BuildContext): Between {
-  const piece = draftPiece(s, ctx);
-  checkPiece(s, piece, total, ctx);
+  const whole = draftPiece(s, ctx);
+  checkPiece(s, whole, total, ctx);
+  const { pieces, joints: splits, pieceAt } = splitStock(s, whole, ctx);
+  const [first, last] = [pieces[0] ?? whole, pieces[pieces.length - 1] ?? whole];
   const joints: JointDraft[] = [];
   const firstLeg = s.legs[0];
   const lastLeg = s.legs[s.legs.length - 1];
   if (s.start.weld && firstLeg) {
     const reach = reachOf(s.start.terms);
-    joints.push(pieceJoint(s.from, s.start, { a: s.start.componentId, b: piece.key }, vecAddScaled(firstLeg.from, firstLeg.direction, reach + (s.start.gap?.mm ?? 0) / 2), firstLeg, piece));
+    joints.push(pieceJoint(s.from, s.start, { a: outside(s.start), b: first.key }, vecAddScaled(firstLeg.from, firstLeg.direction, reach + (s.start.gap?.mm ?? 0) / 2), firstLeg, first));
   }
+  const riding = s.riders.flatMap((r) => (r.joint ? [{ ...r.joint, a: pieceAt(r.joint.position) }] : []));
+  const held = s.riders.flatMap((r) => (r.joint ? [] : [[pieceAt(r.at ?? first.start), r.componentId] as const]));
+  joints.push(...inFlow([...riding, ...splits], s));
   if (s.end.weld && lastLeg) {
     const reach = reachOf(s.end.terms);
-    joints.push(pieceJoint(s.to, s.end, { a: piece.key, b: s.end.componentId }, vecAddScaled(lastLeg.to, lastLeg.direction, -reach - (s.end.gap?.mm ?? 0) / 2), lastLeg, piece));
+    joints.push(pieceJoint(s.to, s.end, { a: last.key, b: outside(s.end) }, vecAddScaled(lastLeg.to, lastLeg.direction, -reach - (s.end.gap?.mm ?? 0) / 2), lastLeg, last));
   }
-  const riding = s.riders.flatMap((r) => (r.joint ? [{ ...r.joint, a: piece.key }] : []));
-  const held = s.riders.flatMap((r) => (r.joint ? [] : [[piece.key, r.componentId] as const]));
-  return { components: [], joints: [...joints.slice(0, s.start.weld ? 1 : 0), ...riding, ...joints.slice(s.start.weld ? 1 : 0)], piece, held };
+  return { components: [], joints, pieces, held };
+}
+
+/** What the pipe is welded to on a side. */
+function outside(side: Side): string | null {
+  return side.neighbourKey ?? side.componentId;
+}
+
+/** Joints on the way, in the order flow meets them; those of bent pipe as they were put. */
+function inFlow(joints: readonly JointDraft[], s: Stretch): JointDraft[] {
+  const first = s.legs[0];
+  if (!first || s.passed.some((p) => p.turnRad > 0)) return [...joints];
+  const along = (j: JointDraft) => vecDot(vecSub(j.position, first.from), first.direction);
+  return [...joints].sort((a, b) => along(a) - along(b));
 }
 
 function pieceJoint(p: PlacedPoint, side: Side, ends: { a: string | null; b: string | null }, position: Leg["from"], leg: Leg, piece: PieceDraft): JointDraft {
@@ -123,25 +150,3 @@ function pieceJoint(p: PlacedPoint, side: Side, ends: { a: string | null; b: str
     mismatchRad: weld.mismatchRad, gapMm: side.gap?.mm ?? 0, runId: piece.runId, ...ends,
   });
 }
-
-/** Findings about one piece: it does not fit, or it is a short pup. */
-function checkPiece(s: Stretch, piece: PieceDraft, total: number, ctx: BuildContext): void {
-  const where = { pointId: s.to.point.id, runId: s.to.runId };
-  if (total <= ZERO_LENGTH_MM) return; // said already, leg by leg
-  const unit = ctx.units === "metric" ? "mm" : "in";
-  const finished = piece.cutLengthMm - piece.terms.filter((t) => t.kind === "trim").reduce((sum, t) => sum + t.valueMm, 0);
-  if (finished <= 0) {
-    const say = finished < 0 ? `overlap by ${formatTerm(-finished, ctx.units)} ${unit}` : "leave no length for the pipe";
-    ctx.report("negative-length", "stop", `Between ${s.from.label} and ${s.to.label} the fittings and gaps ${say}: lengthen the leg, or choose shorter fittings.`, where);
-    return;
-  }
-  const least = ctx.settings.minimumPupMm ?? Math.max(1.5 * piece.odMm, SHORTEST_PUP_MM);
-  const bothWelded = s.start.weld !== null && s.end.weld !== null;
-  if (bothWelded && finished < least) {
-    const [is, want] = ctx.units === "metric" ? [formatTerm(finished, "metric"), formatTerm(least, "metric")] : [formatInches(finished), formatInches(least)];
-    ctx.report("short-pup", "warning", `The pipe between ${s.from.label} and ${s.to.label} is a short pup of ${is} ${unit}, under ${want} ${unit} between welds: lengthen the leg, or weld the fittings together.`, where);
-  }
-}
-
-/** Least pipe between two weld toes whatever the size, mm (common practice; no code sets it). */
-const SHORTEST_PUP_MM = 50;

@@ -4,11 +4,16 @@ import { VEC_EAST, vecAddScaled, vecNegate } from "../geometry/vec3";
 import type { BuildContext } from "./build-context";
 import type { BoltedFace, Fitting, JointDraft, PlacedPoint, Side } from "./build-types";
 import type { Nps, Pipe, Place } from "./document";
+import { threadEngagementKey } from "../catalogue/keys";
+import { sizeText } from "./words";
 import type { Component, ComponentKind, CutTerm, Port } from "./model-types";
 import { originalSide } from "./original-side";
 
-/** Which of an item's sides: the upstream weld, the downstream one, or the branch. */
-export type SideName = "in" | "out" | "branch";
+/** Which of an item's sides: the upstream weld, the downstream one, the branch, or a cross's second branch. */
+export type SideName = "in" | "out" | "branch" | "branch-2";
+
+/** How a fitting meets the pipe. */
+export type FittingEnds = "butt" | "socket" | "threaded";
 
 /** The pipe runs through without a cut. */
 export const THROUGH: Side = {
@@ -17,7 +22,7 @@ export const THROUGH: Side = {
 
 /** Where a joint of this side is made; the shop unless said. */
 export function sidePlace(p: PlacedPoint, side: SideName): Place {
-  return p.point.places[side] ?? "shop";
+  return p.point.places[side === "branch-2" ? "branch" : side] ?? "shop";
 }
 
 /** Supplied extra at a field-fit joint of this point, mm; 0 elsewhere. */
@@ -33,7 +38,7 @@ interface WeldedSide {
   readonly key?: string;
 }
 
-function weldSide(p: PlacedPoint, side: SideName, ctx: BuildContext, given: WeldedSide, kind: "butt" | "socket" | "slip-on" | "branch", gap: Side["gap"]): Side {
+function weldSide(p: PlacedPoint, side: SideName, ctx: BuildContext, given: WeldedSide, kind: "butt" | "socket" | "slip-on" | "branch" | "threaded", gap: Side["gap"]): Side {
   const place = given.place ?? sidePlace(p, side);
   return {
     through: false, terms: given.terms, componentId: given.componentId,
@@ -50,6 +55,22 @@ export function buttSide(p: PlacedPoint, side: SideName, ctx: BuildContext, give
 /** A socket: the take-out goes to its bottom, the pipe stays back from it. */
 export function socketSide(p: PlacedPoint, side: SideName, ctx: BuildContext, given: WeldedSide): Side {
   return weldSide(p, side, ctx, given, "socket", { kind: "pull-back", mm: ctx.settings.allowances.socketPullBackMm, label: "pull-back in the socket" });
+}
+
+/** A threaded end: the take-out goes to the end of the fitting, the pipe goes in from there by the thread's engagement. */
+export function threadedSide(p: PlacedPoint, side: SideName, ctx: BuildContext, given: WeldedSide, nps: Nps = p.pipeIn.nps): Side {
+  const own = ctx.settings.allowances.threadMakeUpMm;
+  const table = own === undefined ? ctx.takeOut(threadEngagementKey(nps), `thread engagement in ${sizeText(nps, ctx.units)}`, p) : null;
+  const mm = own ?? table?.mm ?? 0;
+  return weldSide(p, side, ctx, given, "threaded", {
+    kind: "make-up", mm: -mm, label: "thread make-up", source: table ? table.source || null : "make-up of the line", unconfirmed: table?.unconfirmed ?? false,
+  });
+}
+
+/** The side of a fitting by the kind of its ends. */
+export function endedSide(ends: FittingEnds, p: PlacedPoint, side: SideName, ctx: BuildContext, given: WeldedSide, nps: Nps = p.pipeIn.nps): Side {
+  if (ends === "threaded") return threadedSide(p, side, ctx, given, nps);
+  return (ends === "socket" ? socketSide : buttSide)(p, side, ctx, given);
 }
 
 /** A slip-on: its setting stands among the terms, no gap. */

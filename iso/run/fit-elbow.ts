@@ -8,14 +8,14 @@
  */
 import { SQUARE_RAD, STRAIGHT_RAD, WELD_MISMATCH_RAD } from "../geometry/tolerances";
 import { vecNegate } from "../geometry/vec3";
-import { elbowKey, socketKey } from "../catalogue/keys";
+import { elbowKey, socketKey, threadedKey } from "../catalogue/keys";
 import { formatAngleDeg } from "../units/format";
 import { takeOutTerm, plainTerm, sentenceStart, type BuildContext } from "./build-context";
 import type { Fitting, PlacedPoint } from "./build-types";
 import type { Item } from "./document";
-import { buttSide, endSide, fittingOf, flowAfter, flowAt, makeComponent, port, socketSide, unconfirmedOf } from "./fit-common";
+import { buttSide, endedSide, endSide, fittingOf, flowAfter, flowAt, makeComponent, port, unconfirmedOf, type FittingEnds } from "./fit-common";
 import { fitPlainWeld } from "./fit-plain";
-import { SOCKET_CLASS, sizeText } from "./words";
+import { forgedClass, sizeText } from "./words";
 
 type ElbowName = Extract<Item, { kind: "elbow" }>["elbow"];
 
@@ -51,10 +51,9 @@ export function fitElbow(p: PlacedPoint, named: ElbowName | null, ctx: BuildCont
 
 function fitStandard(p: PlacedPoint, elbow: Exclude<ElbowName, "trimmed-lr" | "trimmed-sr">, ctx: BuildContext): Fitting {
   const own = elbow.endsWith("90") ? RIGHT : HALF_RIGHT;
-  const socket = elbow.startsWith("sw");
-  const name = `${socket ? "socket" : elbow.startsWith("sr") ? "SR" : "LR"} ${elbow.endsWith("90") ? "90" : "45"}`;
-  const key = socket ? socketKey(elbow === "sw-90" ? "sw-90" : "sw-45", SOCKET_CLASS, p.pipeIn.nps) : elbowKey(elbow as "lr-90" | "sr-90" | "lr-45", p.pipeIn.nps);
-  const value = ctx.takeOut(key, `${name} elbow take-out in ${sizeText(p.pipeIn.nps, ctx.units)}`, p);
+  const made = elbowMake(elbow, p, ctx);
+  const { name, ends } = made;
+  const value = ctx.takeOut(made.key, `${name} elbow take-out in ${sizeText(p.pipeIn.nps, ctx.units)}`, p);
   const off = Math.abs(p.turnRad - own) > SQUARE_RAD;
   const cos = Math.max(Math.cos(p.turnRad / 2), MIN_COS);
   const factor = off ? Math.cos(own / 2) / cos : 1;
@@ -64,16 +63,36 @@ function fitStandard(p: PlacedPoint, elbow: Exclude<ElbowName, "trimmed-lr" | "t
   const label = isTold ? `${name} take-out at ${formatAngleDeg(p.turnRad)}` : `${name} take-out`;
   if (isTold) reportMismatch(p, name, mismatchRad, ctx);
   const term = takeOutTerm(label, value, p.uid, factor);
-  const side = socket ? socketSide : buttSide;
-  const radius = socket ? null : ctx.bendRadius(elbow.startsWith("sr") ? "SR" : "LR", p.pipeIn.nps);
-  const description = socket ? `Elbow ${own === RIGHT ? 90 : 45}, socket-weld, class ${SOCKET_CLASS}` : `Elbow ${own === RIGHT ? 90 : 45} ${elbow.startsWith("sr") ? "SR" : "LR"}, butt-weld`;
+  const radius = ends === "butt" ? ctx.bendRadius(elbow.startsWith("sr") ? "SR" : "LR", p.pipeIn.nps) : null;
   const component = makeComponent(p, p.pipeIn, {
-    kind: socket ? "socket-elbow" : "elbow", ends: socket ? "socket" : "butt", description, source: value.source,
-    schedule: socket ? null : p.pipeIn.schedule, angleRad: p.turnRad, radiusMm: radius, unconfirmedKey: unconfirmedOf(value),
+    kind: ends === "butt" ? "elbow" : "socket-elbow", ends, description: made.description, source: value.source,
+    schedule: ends === "butt" ? p.pipeIn.schedule : null, angleRad: p.turnRad, radiusMm: radius, unconfirmedKey: unconfirmedOf(value),
     ports: elbowPorts(p, -term.valueMm),
   });
   const given = { terms: [term], componentId: p.uid, mismatchRad };
-  return fittingOf({ components: [component], in: side(p, "in", ctx, given), out: side(p, "out", ctx, given) });
+  return fittingOf({ components: [component], in: endedSide(ends, p, "in", ctx, given), out: endedSide(ends, p, "out", ctx, given) });
+}
+
+/** Name, table key and words of a whole elbow. */
+function elbowMake(elbow: Exclude<ElbowName, "trimmed-lr" | "trimmed-sr">, p: PlacedPoint, ctx: BuildContext): { name: string; ends: FittingEnds; key: string; description: string } {
+  const { nps } = p.pipeIn;
+  const degrees = elbow.endsWith("90") ? 90 : 45;
+  switch (elbow) {
+    case "sw-90":
+    case "sw-45": {
+      const c = forgedClass(ctx.settings, "socket");
+      return { name: `socket ${degrees}`, ends: "socket", key: socketKey(elbow, c, nps), description: `Elbow ${degrees}, socket-weld, class ${c}` };
+    }
+    case "th-90":
+    case "th-45": {
+      const c = forgedClass(ctx.settings, "threaded");
+      return { name: `threaded ${degrees}`, ends: "threaded", key: threadedKey(elbow, c, nps), description: `Elbow ${degrees}, threaded, class ${c}` };
+    }
+    default: {
+      const radius = elbow.startsWith("sr") ? "SR" : "LR";
+      return { name: `${radius} ${degrees}`, ends: "butt", key: elbowKey(elbow, nps), description: `Elbow ${degrees} ${radius}, butt-weld` };
+    }
+  }
 }
 
 /** Keeps a take-out finite when a line folds back on itself; the fold itself is reported. */

@@ -1,13 +1,13 @@
-/** Reducers, couplings and caps. */
-import { vecAddScaled, vecNegate, vecReject, vecUnit } from "../geometry/vec3";
-import { capKey, reducerKey, socketKey } from "../catalogue/keys";
+/** Reducers. */
+import { vecNegate, vecReject, vecUnit } from "../geometry/vec3";
+import { reducerKey } from "../catalogue/keys";
 import { axisVector, axisWord } from "./axes";
 import { sentenceStart, takeOutTerm, type BuildContext } from "./build-context";
 import type { Fitting, PlacedPoint, Side } from "./build-types";
 import { NPS_SIZES, type Item } from "./document";
-import { bareSide, buttSide, fittingOf, flowAfter, flowAt, makeComponent, port, socketSide, straightPorts, unconfirmedOf } from "./fit-common";
+import { bareSide, buttSide, fittingOf, flowAfter, flowAt, makeComponent, port, unconfirmedOf } from "./fit-common";
 import type { CutTerm } from "./model-types";
-import { SOCKET_CLASS, sizePairText, sizeText } from "./words";
+import { sizePairText } from "./words";
 
 type ReducerItem = Extract<Item, { kind: "reducer" }>;
 
@@ -37,46 +37,4 @@ export function fitReducer(p: PlacedPoint, item: ReducerItem, ctx: BuildContext)
     centre: down ? p.position : p.departure, description: `Reducer, ${item.shape}, butt-weld`,
   });
   return fittingOf({ components: [component], in: side("in", down ? [] : [term]), out: side("out", down ? [term] : []) });
-}
-
-/** A coupling about its middle; a half coupling with its far end at the point. */
-export function fitCoupling(p: PlacedPoint, half: boolean, ctx: BuildContext): Fitting {
-  const word = half ? "half coupling" : "coupling";
-  const laying = ctx.takeOut(socketKey(half ? "half-coupling" : "coupling", SOCKET_CLASS, p.pipeIn.nps), `${word} length in ${sizeText(p.pipeIn.nps, ctx.units)}`, p);
-  const flow = flowAt(p);
-  const atOut = p.isFirst && half;
-  const [before, after] = half ? (atOut ? [0, laying.mm] : [laying.mm, 0]) : [laying.mm / 2, laying.mm / 2];
-  const term = takeOutTerm(half ? "half coupling length" : "half the coupling", laying, p.uid, half ? 1 : 0.5);
-  const component = makeComponent(p, p.pipeIn, {
-    kind: half ? "half-coupling" : "coupling", ends: "socket", ports: straightPorts(p.position, flow, before, after, p.pipeIn.nps),
-    source: laying.source, unconfirmedKey: unconfirmedOf(laying), weightSource: "not known",
-    description: `${sentenceStart(word)}, socket-weld, class ${SOCKET_CLASS}`,
-  });
-  const side = (name: "in" | "out"): Side => {
-    const reach = name === "in" ? before : after;
-    const terms = reach > 0 ? [term] : [];
-    if (name === "in" ? p.isFirst : p.isLast) return bareSide(terms, p.uid);
-    return (half && reach === 0 ? buttSide : socketSide)(p, name, ctx, { terms, componentId: p.uid });
-  };
-  return fittingOf({ components: [component], in: side("in"), out: side("out") });
-}
-
-/** A cap closing the run; the point is its outside end. */
-export function fitCap(p: PlacedPoint, ctx: BuildContext): Fitting {
-  const length = ctx.takeOut(capKey(p.pipeIn.nps), `cap length in ${sizeText(p.pipeIn.nps, ctx.units)}`, p);
-  const terms = [takeOutTerm("cap length", length, p.uid)];
-  if (!p.isFirst && !p.isLast) {
-    ctx.report("cap-inside", "stop", `${sentenceStart(p.label)} is a cap inside the run: move it to the run's end.`, { pointId: p.point.id, runId: p.runId });
-  }
-  const toPipe = p.isFirst ? flowAfter(p) : vecNegate(flowAt(p));
-  const component = makeComponent(p, p.pipeIn, {
-    kind: "cap", ends: "butt", schedule: p.pipeIn.schedule, source: length.source, unconfirmedKey: unconfirmedOf(length),
-    ports: [{ id: p.isFirst ? "out" : "in", position: vecAddScaled(p.position, toPipe, length.mm), direction: toPipe, nps: p.pipeIn.nps }],
-    description: "Cap, butt-weld",
-  });
-  const side = (name: "in" | "out"): Side => buttSide(p, name, ctx, { terms, componentId: p.uid });
-  return fittingOf({
-    components: [component], in: p.isFirst ? bareSide([], p.uid) : side("in"),
-    out: p.isLast ? bareSide([], p.uid) : p.isFirst ? side("out") : buttSide(p, "out", ctx, { terms: [], componentId: p.uid }),
-  });
 }

@@ -2,21 +2,31 @@
 import { formatAngleDeg } from "../units/format";
 import { sentenceStart, type BuildContext } from "./build-context";
 import type { Fitting, PlacedPoint } from "./build-types";
-import { fitOutlet, fitStubIn, fitTee } from "./fit-branch";
+import { fitTee } from "./fit-branch";
 import { endSide, fittingOf } from "./fit-common";
+import { fitCross } from "./fit-cross";
 import { fitElbow } from "./fit-elbow";
 import { fitFlange } from "./fit-flange";
-import { fitCap, fitCoupling, fitReducer } from "./fit-inline";
+import { fitCap, fitCoupling, fitUnion } from "./fit-forged";
+import { fitReducer } from "./fit-inline";
+import { fitInstrument } from "./fit-instrument";
+import { fitMitre } from "./fit-mitre";
+import { fitOutlet, fitStubIn } from "./fit-on-pipe";
 import { fitEnd, fitEndInside, fitPlainWeld, fitSupport } from "./fit-plain";
+import { fitReturn } from "./fit-return";
 import { fitValve } from "./fit-valve";
+import { fitBend } from "./pipe-bend";
 
 /** Items a line cannot turn at, in the trade's words. */
-const STRAIGHT_ONLY: Readonly<Record<string, string>> = { flange: "flange", valve: "valve", reducer: "reducer", coupling: "coupling" };
+const STRAIGHT_ONLY: Readonly<Record<string, string>> = { flange: "flange", valve: "valve", reducer: "reducer", coupling: "coupling", union: "union", instrument: "instrument" };
 
 export function fitPoint(p: PlacedPoint, ctx: BuildContext): Fitting {
   const item = p.point.item;
   if (p.turnRad > 0 && item.kind in STRAIGHT_ONLY) reportTurn(p, STRAIGHT_ONLY[item.kind] ?? "item", ctx);
   const fitted = fitItem(p, ctx);
+  if (fitted.in.through && p.pipeIn.material !== p.pipeOut.material) {
+    ctx.report("break-on-pipe", "warning", `${sentenceStart(p.label)}: the material changes to ${p.pipeOut.material || "none"} on uncut pipe. Put a joint or a flange there.`, { pointId: p.point.id, runId: p.runId });
+  }
   return p.branches.length > fitted.branches.length ? withLooseBranches(p, fitted, ctx) : fitted;
 }
 
@@ -38,9 +48,9 @@ function fitItem(p: PlacedPoint, ctx: BuildContext): Fitting {
     case "tee":
       return fitTee(p, item, ctx);
     case "outlet":
-      return fitOutlet(p, item.branchNps, ctx);
+      return fitOutlet(p, item, ctx);
     case "stub-in":
-      return fitStubIn(p, item.branchNps, ctx);
+      return fitStubIn(p, item, ctx);
     case "reducer":
       return fitReducer(p, item, ctx);
     case "flange":
@@ -48,11 +58,21 @@ function fitItem(p: PlacedPoint, ctx: BuildContext): Fitting {
     case "valve":
       return fitValve(p, item, ctx);
     case "coupling":
-      return fitCoupling(p, item.half, ctx);
+      return fitCoupling(p, item.half, item.ends ?? "socket", ctx);
+    case "union":
+      return fitUnion(p, item.ends, ctx);
     case "cap":
-      return fitCap(p, ctx);
-    default:
-      return fittingOf({});
+      return fitCap(p, item.ends ?? "butt", ctx);
+    case "instrument":
+      return fitInstrument(p, item, ctx);
+    case "cross":
+      return fitCross(p, item, ctx);
+    case "return":
+      return fitReturn(p, item, ctx);
+    case "mitre":
+      return fitMitre(p, item, ctx);
+    case "bend":
+      return fitBend(p, item, ctx);
   }
 }
 
@@ -78,6 +98,6 @@ function reportTurn(p: PlacedPoint, word: string, ctx: BuildContext): void {
 
 /** Branch runs that nothing at their point takes. */
 function withLooseBranches(p: PlacedPoint, fitted: Fitting, ctx: BuildContext): Fitting {
-  ctx.report("branch-no-fitting", "stop", `A branch leaves from ${p.label}, but no tee, outlet or stub-in stands there: choose one, or remove the branch.`, { pointId: p.point.id, runId: p.runId });
+  ctx.report("branch-no-fitting", "stop", `A branch leaves from ${p.label}, but no tee, cross, outlet or stub-in stands there: choose one, or remove the branch.`, { pointId: p.point.id, runId: p.runId });
   return { ...fitted, branches: p.branches.map((_, i) => fitted.branches[i] ?? endSide()) };
 }

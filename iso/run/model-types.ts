@@ -232,6 +232,8 @@ export interface Problem {
   readonly text: string;
   readonly pointId: string | null;
   readonly runId: string | null;
+  /** Key of the take-out it speaks of, so that the shop's own value can be entered there and then. */
+  readonly catalogueKey?: string;
 }
 
 /** A run that comes back to its line: how far its dimensions miss the fitting it meets. */

@@ -4,11 +4,13 @@
  */
 import { STRAIGHT_RAD } from "../geometry/tolerances";
 import type { Vec3 } from "../geometry/types";
-import { VEC_ZERO, vecAdd, vecAngle, vecDistance, vecReject, vecUnit } from "../geometry/vec3";
+import { VEC_ZERO, vecAdd, vecAngle, vecDistance, vecReject, vecScale, vecUnit } from "../geometry/vec3";
+import { returnKey } from "../catalogue/keys";
 import { pipeOdMm } from "../catalogue/pipe";
 import type { BuildContext } from "./build-context";
 import { sentenceStart } from "./build-context";
-import type { BranchHead, PlacedPoint, PlacedRun } from "./build-types";
+import type { BranchHead, PlacedPoint, PlacedRun, Service } from "./build-types";
+import { firstService, pipeOfService, serviceAfter } from "./service";
 import { axisVector } from "./axes";
 import type { Pipe, Point, Run, RunDocument } from "./document";
 import type { Leg } from "./model-types";
@@ -23,6 +25,8 @@ interface RawPoint {
   departure: Vec3;
   pipeIn: Pipe;
   pipeOut: Pipe;
+  serviceIn: Service;
+  serviceOut: Service;
 }
 
 interface RawRun {
@@ -89,7 +93,8 @@ function placeRaw(
 ): RawRun {
   const result: RawRun = { run, label, start, branchIndex, pipe: runPipe(run, start, ctx), points: [], directions: [] };
   let base: Vec3 = start?.position ?? VEC_ZERO;
-  let pipe = result.pipe;
+  let service = firstService(run, start, result.pipe, start === null ? run.points[0] : undefined, ctx.settings);
+  let pipe = pipeOfService(result.pipe, service);
   run.points.forEach((point, index) => {
     const times = used.get(point.id) ?? 0;
     used.set(point.id, times + 1);
@@ -98,14 +103,15 @@ function placeRaw(
     const { position, direction } = offsetPlace(base, point.offset);
     const hasLeg = index > 0 || start !== null;
     result.directions.push(hasLeg ? direction : null);
-    const pipeOut = pipeAfter(pipe, point);
+    const serviceOut = serviceAfter(service, point);
+    const pipeOut = pipeOfService(pipeAfter(pipe, point), serviceOut);
     const flow = (hasLeg ? direction : null) ?? lastOf(result.directions) ?? nextDirection(run.points[index + 1]);
-    const departure = vecAdd(position, eccentricShift(pipe, pipeOut, point, flow, ctx));
-    const raw: RawPoint = { uid: times === 0 ? point.id : `${point.id}~${times + 1}`, point, label: name, position, departure, pipeIn: pipe, pipeOut };
+    const departure = vecAdd(position, centreShift(pipe, pipeOut, point, flow, ctx));
+    const raw: RawPoint = { uid: times === 0 ? point.id : `${point.id}~${times + 1}`, point, label: name, position, departure, pipeIn: pipe, pipeOut, serviceIn: service, serviceOut };
     result.points.push(raw);
     if (times === 0) byId.set(point.id, raw);
     base = departure;
-    pipe = pipeOut;
+    [pipe, service] = [pipeOut, serviceOut];
   });
   return result;
 }
@@ -115,7 +121,7 @@ function runPipe(run: Run, start: RawPoint | null, ctx: BuildContext): Pipe {
   if (run.pipe) return run.pipe;
   if (!start) return ctx.settings.pipe;
   const item = start.point.item;
-  const branch = item.kind === "tee" || item.kind === "outlet" || item.kind === "stub-in" ? item.branchNps : null;
+  const branch = item.kind === "tee" || item.kind === "cross" || item.kind === "outlet" || item.kind === "stub-in" ? item.branchNps : null;
   return { ...start.pipeIn, nps: branch ?? start.pipeIn.nps };
 }
 
@@ -131,6 +137,15 @@ function nextDirection(next: Point | undefined): Vec3 | null {
 function lastOf(directions: readonly (Vec3 | null)[]): Vec3 | null {
   for (let i = directions.length - 1; i >= 0; i--) if (directions[i]) return directions[i] ?? null;
   return null;
+}
+
+/** How far the centre line leaves a point beside where it came in: at an eccentric reducer, and across a return. */
+function centreShift(before: Pipe, after: Pipe, point: Point, flow: Vec3 | null, ctx: BuildContext): Vec3 {
+  const { item } = point;
+  if (item.kind !== "return") return eccentricShift(before, after, point, flow, ctx);
+  const side = flow && vecUnit(vecReject(axisVector(item.toward), flow));
+  const across = ctx.peek(returnKey(item.radius, "centres", before.nps));
+  return side && across !== null ? vecScale(side, across) : VEC_ZERO;
 }
 
 /**
@@ -160,7 +175,8 @@ function placedRun(r: RawRun, branchesOf: Map<string, RawRun[]>, ctx: BuildConte
     return {
       uid: p.uid, point: p.point, runId: r.run.id, index, label: p.label, position: p.position, departure: p.departure,
       arriving, leaving, turnRad: turn < STRAIGHT_RAD ? 0 : turn, isFirst: !hasLegIn, isLast: index === count - 1,
-      boltedIn: false, boltedOut: false, pipeIn: p.pipeIn, pipeOut: p.pipeOut, branches: (branchesOf.get(p.uid) ?? []).map(branchHead),
+      boltedIn: false, boltedOut: false, pipeIn: p.pipeIn, pipeOut: p.pipeOut,
+      serviceIn: p.serviceIn, serviceOut: p.serviceOut, branches: (branchesOf.get(p.uid) ?? []).map(branchHead),
     };
   });
   return {

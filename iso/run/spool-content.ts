@@ -16,9 +16,18 @@ export interface ContentParts {
   readonly loose: ReadonlySet<string>;
   readonly points: ReadonlyMap<string, Point>;
   readonly legs: ReadonlyMap<string, Leg>;
+  /** Letter of the spool, for the notes of its sheet. */
+  readonly letter?: string;
+  /** What the line carries at each point, where it changes anywhere on the line. */
+  readonly services?: ReadonlyMap<string, string>;
 }
 
-export function spoolContent(parts: ContentParts, document: RunDocument): string {
+/**
+ * Studs follow from the flanges and gaskets, so they are left out. What a line of the first kind could not have (bends,
+ * cut angles, breaks, notes of a spool's sheet) is there only where it is used: keys of lines without it stay as they were.
+ */
+export function spoolContent(given: ContentParts, document: RunDocument): string {
+  const parts = { ...given, components: given.components.filter((c) => c.kind !== "bolt-set") };
   const place = new Map<string, number>();
   for (const id of [...parts.components.map((c) => c.id), ...parts.pieces.map((p) => p.key)]) place.set(id, place.size);
   const index = (id: string | null) => (id === null ? null : (place.get(id) ?? "beyond"));
@@ -29,7 +38,17 @@ export function spoolContent(parts: ContentParts, document: RunDocument): string
     pieces: parts.pieces.map((p) => pieceContent(p, (p.legIds ?? [p.legId]).flatMap((id) => parts.legs.get(id) ?? []))),
     joints: parts.joints.map((j) => [j.kind, j.place, index(j.a), index(j.b), j.nps, steps(j.gapMm), fine(j.mismatchRad)]),
     notes: points.map((id) => parts.points.get(id)?.note ?? "").filter((note) => note !== ""),
+    ...newerContent(parts, points, document),
   });
+}
+
+function newerContent(parts: ContentParts, points: readonly string[], document: RunDocument): object {
+  const starts = points.flatMap((id, i) => (parts.points.get(id)?.starts ? [[i, parts.points.get(id)?.starts]] : []));
+  const carried = [...new Set(points.flatMap((id) => parts.services?.get(id) ?? []))];
+  const sheet = (document.sheetNotes ?? []).filter((note) => note.spool === parts.letter).map((note) => note.text);
+  return {
+    ...(starts.length > 0 ? { starts } : {}), ...(carried.length > 0 ? { carried } : {}), ...(sheet.length > 0 ? { sheet } : {}),
+  };
 }
 
 function componentContent(c: Component, parts: ContentParts): unknown[] {
@@ -45,8 +64,15 @@ function componentContent(c: Component, parts: ContentParts): unknown[] {
 function pieceContent(p: PieceDraft, legs: readonly Leg[]): unknown[] {
   return [
     p.nps, p.schedule, p.material, steps(p.odMm), steps(p.wallMm), direction(p.direction), legs.map((leg) => `${leg.provenance.kind}${leg.unverified ? " unverified" : ""}`),
-    ...p.terms.map((t) => `${t.label} ${steps(t.valueMm)}${t.unconfirmed ? " unconfirmed" : ""}`), p.ends[0].prep, p.ends[1].prep,
+    ...p.terms.map((t) => `${t.label} ${steps(t.valueMm)}${t.unconfirmed ? " unconfirmed" : ""}`), ...p.ends.map(endContent),
+    ...(p.bends ? [p.bends.map((b) => [fine(b.angleRad), steps(b.radiusMm), steps(b.startMm)])] : []),
   ];
+}
+
+/** A saddle was written as a bevel before its cut was known. */
+function endContent(end: PieceDraft["ends"][number]): string {
+  const prep = end.prep === "saddle" ? "bevel" : end.prep;
+  return end.cutAngleDeg === undefined ? prep : `${prep} ${fine(end.cutAngleDeg)}`;
 }
 
 /**

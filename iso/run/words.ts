@@ -1,9 +1,24 @@
 /** Trade words of the model: sizes, classes, parts. American trade English, plain and short. */
 import { pipeSize } from "../catalogue/pipe";
-import type { Item, Nps, UnitSystem } from "./document";
+import type { ForgedClass } from "../catalogue/keys";
+import { inchesMm } from "../units/length";
+import type { Item, LineSettings, Nps, UnitSystem } from "./document";
 
 /** Class of socket-welding fittings the tables are read for (common for line sizes to NPS 2; common practice). */
 export const SOCKET_CLASS = 3000;
+
+/** Class of a line's forged fittings; socket-weld ones start at class 3000 (ASME B16.11). */
+export function forgedClass(settings: LineSettings, ends: "socket" | "threaded"): ForgedClass {
+  const named = settings.forgedClass ?? SOCKET_CLASS;
+  return ends === "socket" && named === 2000 ? SOCKET_CLASS : named;
+}
+
+/** Nominal size in millimetres: 4 for NPS 4 times 25.4. */
+export function nominalMm(nps: Nps): number {
+  const [whole, fraction] = nps.includes("-") ? nps.split("-") : nps.includes("/") ? ["0", nps] : [nps, "0/1"];
+  const [over, under] = (fraction ?? "0/1").split("/");
+  return inchesMm(Number(whole) + Number(over) / Number(under));
+}
 
 /** "NPS 4", or "DN 100" on a metric line. */
 export function sizeText(nps: Nps, units: UnitSystem): string {
@@ -44,6 +59,11 @@ export function workingPointWord(item: Item, turns: boolean): string {
       return "end";
     case "reducer":
       return "large end";
+    case "return":
+      return "return end";
+    case "bend":
+    case "mitre":
+      return "corner";
     case "joint":
       return "weld";
     case "support":

@@ -47,7 +47,7 @@ const CASES: readonly (readonly [string, Problem["severity"], string | null, Run
   ["branch-missing", "warning", "p2", line().go("E", `3'`, tee()).go("E", `3'`, open).done(),
     "Point 2 has a branch fitting without a branch: add the branch's points, or take the fitting out."],
   ["branch-no-fitting", "stop", "p2", line().go("E", `3'`, joint).go("E", `3'`, open).branch(2).go("N", `3'`, open).done(),
-    "A branch leaves from point 2, but no tee, outlet or stub-in stands there: choose one, or remove the branch."],
+    "A branch leaves from point 2, but no tee, cross, outlet or stub-in stands there: choose one, or remove the branch."],
   ["branch-angle", "stop", "p2", line().go("E", `3'`, outlet("2")).go("E", `3'`, open).branch(2).go("NE", `3'`, open).done(),
     "Point 2: the pipes miss the square of the fitting by 45.00°. Correct the offsets, or turn the line with an elbow. Over 3° needs the engineer's permission."],
   ["branch-on-turn", "stop", "p2", line().go("E", `3'`, outlet("2")).go("N", `3'`, open).branch(2).go("U", `3'`, open).done(),
