@@ -1,6 +1,7 @@
 "use client";
 import { useMemo, useState } from "react";
 import type { SheetInput, SheetSize } from "@/iso";
+import { SpoolFilesButton } from "@/components/exchange/spool-files";
 import { SHEET_OPTIONS } from "@/components/jobs/sheet-words";
 import { useViewer } from "@/components/shell/use-viewer";
 import { SheetPreview } from "@/components/sheet/sheet-preview";
@@ -72,13 +73,16 @@ function Spool({ spool, role }: { readonly spool: SpoolDetail; readonly role: Ro
         ) : (
           <span />
         )}
-        <SheetActions
-          spool={spool}
-          issued={issued}
-          liveRevision={liveRevision}
-          size={size}
-          onSize={setSize}
-        />
+        <div className="flex flex-wrap items-end gap-3">
+          <SheetActions
+            spool={spool}
+            issued={issued}
+            liveRevision={liveRevision}
+            size={size}
+            onSize={setSize}
+          />
+          {input ? <SpoolFilesButton spoolId={spool.id} input={input} issued={issued} /> : null}
+        </div>
       </div>
       {input ? (
         <SheetBox input={input} spool={spool} />

@@ -1,6 +1,6 @@
 /** Files that leave the house: lists as CSV or XLSX, sheets as SVG or DXF, points as CSV. Nothing is kept of them. */
 import { measureText } from "@/fonts/widths";
-import { composeSheet, drawingDxf, drawingSvg, type SheetInput } from "@/iso";
+import { composeSheet, drawingDxf, drawingSvg, type RunDocument, type SheetInput, type SheetSize } from "@/iso";
 import { lineExportInputs, spoolExportInput, type Issue } from "@/lib/queries/export-inputs";
 import { storedDocument } from "@/lib/queries/stored-line";
 import { csvFile, type Cell } from "@/lib/rules/exchange/csv-cells";
@@ -12,7 +12,6 @@ import { inShop } from "@/lib/server/scope";
 import type { SessionViewer } from "@/lib/server/session";
 import { xlsxFile } from "@/lib/server/xlsx-file";
 import { Line } from "@/models";
-import type { RunDocument } from "@/iso";
 
 export interface ExportFile {
   readonly name: string;
@@ -22,6 +21,15 @@ export interface ExportFile {
 
 export type ListForm = "csv" | "xlsx";
 export type DrawingForm = "svg" | "dxf";
+
+export interface DrawingAsked {
+  readonly as: DrawingForm;
+  readonly of: Issue;
+  /** Of a draft; null takes the job's. */
+  readonly size: SheetSize | null;
+  /** From 1. */
+  readonly sheet: number;
+}
 
 const TYPES: Readonly<Record<ListForm | DrawingForm, string>> = {
   csv: "text/csv; charset=utf-8",
@@ -56,14 +64,15 @@ async function listFile(inputs: readonly SheetInput[], what: ListName, as: ListF
 
 /**
  * A sheet of a spool as a drawing.
- * @param sheet 1 for the first. @throws Refusal as spoolExportInput does; 400 when the spool has fewer sheets.
+ * @throws Refusal as spoolExportInput does; 400 when the spool has fewer sheets.
  */
-export async function renderSpoolDrawing(viewer: SessionViewer, spoolId: string, as: DrawingForm, of: Issue, sheet: number): Promise<ExportFile> {
-  const input = await spoolExportInput(viewer, spoolId, of, new Date());
+export async function renderSpoolDrawing(viewer: SessionViewer, spoolId: string, asked: DrawingAsked): Promise<ExportFile> {
+  const { as, of, size, sheet } = asked;
+  const input = await spoolExportInput(viewer, spoolId, of, new Date(), size);
   const pages = composeSheet(input, measureText);
   const page = pages[sheet - 1];
   if (!page) throw refuseInvalid(`This spool has ${pages.length === 1 ? "one sheet" : `${pages.length} sheets`}; ask for one of them.`);
-  const remark = `${input.document.number} spool ${input.spool}, ${stateText(input)}, sheet ${sheet} of ${pages.length}. Millimeters on paper, not to scale. Uncontrolled copy.`;
+  const remark = `${input.document.number} spool ${input.spool}, ${stateText(input)}, sheet ${sheet} of ${pages.length}. Millimetres on paper, not to scale. Uncontrolled copy.`;
   const text = as === "svg" ? drawingSvg(page.items, page.widthMm, page.heightMm) : drawingDxf(page.items, page.widthMm, page.heightMm, remark);
   const part = pages.length === 1 ? "" : `-${sheet}-of-${pages.length}`;
   return { name: exportFileName([input], "sheet", as, part), type: TYPES[as], bytes: textBytes(text) };

@@ -1,5 +1,5 @@
 /** What leaves the house is made from: the sheet inputs of a spool or of a whole line, issued or as they would be now. */
-import { buildModel, type SheetInput } from "@/iso";
+import { buildModel, type SheetInput, type SheetSize } from "@/iso";
 import { canDo, refusalOf } from "@/lib/rules/permissions";
 import { isLive } from "@/lib/rules/revision-rules";
 import { sheetNumberText } from "@/lib/rules/sheet-number";
@@ -18,16 +18,17 @@ export type Issue = "issued" | "draft" | null;
 
 /**
  * The sheet input of a spool. Those who see issued sheets only never get a draft.
+ * @param size of a draft; null takes the job's.
  * @throws Refusal 404 when the shop has no such spool or nothing of it is issued, 403 for a draft they may not see.
  */
-export async function spoolExportInput(viewer: SessionViewer, spoolId: string, of: Issue, now: Date): Promise<SheetInput> {
+export async function spoolExportInput(viewer: SessionViewer, spoolId: string, of: Issue, now: Date, size: SheetSize | null = null): Promise<SheetInput> {
   const spool = await spoolCase(viewer, spoolId);
   const seesDrafts = canDo(viewer.role, "lines.read");
   const live = spool.revisions.find((revision) => isLive(revision.state));
   if (of === "draft" && !seesDrafts) throw refuseForbidden(refusalOf("lines.read"));
   if (of !== "draft" && live) return shownInput((await frozenInput(viewer, live.id)).input, live);
   if (of === "issued" || !seesDrafts) throw refuseNotFound();
-  return draftSheetInput(viewer, spool, null, now);
+  return draftSheetInput(viewer, spool, size, now);
 }
 
 /** The sheet inputs of a line's spools, by letter. @throws Refusal 404; 400 when nothing of the line is issued. */

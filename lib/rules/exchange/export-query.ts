@@ -1,5 +1,6 @@
 /** What may be asked of the routes that hand out files. */
 import { z } from "zod";
+import { sheetSizeSchema } from "@/lib/rules/forms";
 
 const of = z.enum(["issued", "draft"], { error: "Say of=issued or of=draft." }).nullable().default(null);
 const list = <W extends "materials" | "cuts" | "welds">(what: W) =>
@@ -11,6 +12,8 @@ export const drawingExportSchema = z.object({
   what: z.literal("drawing"),
   as: z.enum(["svg", "dxf"], { error: "Drawings come as svg or dxf." }).default("svg"),
   of,
+  /** Of a draft; an issued sheet has the size it was issued in. Absent = the job's. */
+  size: sheetSizeSchema.nullable().default(null),
   /** From 1. */
   sheet: z.coerce.number({ error: "The sheet is a number." }).int().min(1, "Sheets count from 1.").max(999, "There is no such sheet.").default(1),
 });

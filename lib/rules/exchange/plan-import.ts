@@ -82,6 +82,7 @@ function oneRun(document: RunDocument, good: readonly GoodRow[], target: Extract
   const run = document.runs.find((each) => each.id === target.runId);
   if (!run) return "That run is no longer there. Choose another.";
   const rows = good.filter((row) => row.run === target.fileRun);
+  if (rows.length === 0) return "None of the rows to take belongs to the run chosen. Choose another run of the file.";
   const instead = target.where === "instead";
   const keep = idKeeper(new Set(instead ? run.points.map((point) => point.id) : []), fresh.point);
   const added: Point[] = rows.map((row) => ({ id: keep(row.label), ...row.point }));

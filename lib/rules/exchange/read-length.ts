@@ -8,8 +8,8 @@ import { plainNumber, type ImportCell } from "./import-cell";
 export type FileUnit = "in" | "ft" | "mm" | "cm" | "m";
 
 export const FILE_UNITS: readonly { readonly value: FileUnit; readonly label: string }[] = [
-  { value: "in", label: "feet and inches, or inches" }, { value: "ft", label: "feet" }, { value: "mm", label: "millimeters" },
-  { value: "cm", label: "centimeters" }, { value: "m", label: "meters" },
+  { value: "in", label: "feet and inches, or inches" }, { value: "ft", label: "feet" }, { value: "mm", label: "millimetres" },
+  { value: "cm", label: "centimetres" }, { value: "m", label: "metres" },
 ];
 
 const SUFFIX: Readonly<Record<FileUnit, string>> = { in: `"`, ft: "'", mm: "mm", cm: "cm", m: "m" };

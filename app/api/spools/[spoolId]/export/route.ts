@@ -11,7 +11,7 @@ export const GET = read("issued.read", {
   query: z.discriminatedUnion("what", [...listExportSchema, drawingExportSchema], { error: "Say what: materials, cuts, welds or drawing." }),
   run: async (viewer, { params, query }) => {
     const file = query.what === "drawing"
-      ? await renderSpoolDrawing(viewer, params.spoolId, query.as, query.of, query.sheet)
+      ? await renderSpoolDrawing(viewer, params.spoolId, query)
       : await renderSpoolList(viewer, params.spoolId, query.what, query.as, query.of);
     return fileAnswer(file.bytes, { name: file.name, type: file.type, inline: false });
   },
