@@ -1,6 +1,7 @@
 "use client";
 import Link from "next/link";
 import type { RunDocument } from "@/iso";
+import { ExchangeButton } from "@/components/exchange/exchange-button";
 import { Button } from "@/components/ui/button";
 import { usePageTitle } from "@/components/ui/use-page-title";
 import type { LineDetail } from "@/lib/rules/api-types";
@@ -55,6 +56,7 @@ export function EditorHead({ line, document, save, canUndo, canRedo, sheetShown,
           <Button onClick={() => onPanel("closing")}>Close between ends</Button>
           <Button onClick={() => onPanel("settings")}>Line settings</Button>
           <Button onClick={onSheet} aria-pressed={sheetShown}>{sheetShown ? "Isometric" : "Sheet"}</Button>
+          <ExchangeButton line={line} document={document} />
           <Button onClick={() => onPanel("help")}>Keys</Button>
         </div>
       </div>
