@@ -110,3 +110,11 @@ const LOWER_ROWS: readonly FlangeRow[] = TUPLES.map((t) => ({
 
 /** Every flange, classes 150 to 1500. */
 export const FLANGE_ROWS: readonly FlangeRow[] = [...LOWER_ROWS, ...HIGH_FLANGE_ROWS];
+
+export const SOCKET_DEPTH_SOURCE = "ASME B16.5 (zaffertec.com/specs/ANSI-Normal-Flanges_files/sheet002.htm and sheet006.htm (Classes 300 and 1500, mm))";
+
+/** Socket of a socket-weld flange: NPS, inches, millimetres as read (25.4 times the inch value, to a tenth). */
+export const SOCKET_FLANGE_DEPTHS: readonly (readonly [Nps, number, number])[] = [
+  ["1/2", 0.375, 9.7], ["3/4", 0.4375, 11.2], ["1", 0.5, 12.7], ["1-1/4", 0.5625, 14.2], ["1-1/2", 0.625, 15.7], ["2", 0.6875, 17.5],
+  ["2-1/2", 0.75, 19.1], ["3", 0.8125, 20.6],
+];

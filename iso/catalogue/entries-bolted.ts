@@ -1,12 +1,14 @@
 /** Take-outs of flanges and valves. */
 import { VALVE_FACES } from "./b16-10-valves";
-import { FLANGE_ROWS } from "./b16-5-flanges";
+import { FLANGE_ROWS, SOCKET_DEPTH_SOURCE, SOCKET_FLANGE_DEPTHS } from "./b16-5-flanges";
 import { entryOf, type Entry } from "./entry";
 import type { FlangeRow } from "./flange-row";
-import { flangeHubKey, flangeThicknessKey, valveKey } from "./keys";
+import { flangeHubKey, flangeThicknessKey, socketFlangeDepthKey, valveKey } from "./keys";
 
 export function flangeEntries(): Entry[] {
-  return FLANGE_ROWS.flatMap(flangeRowEntries);
+  const depths = SOCKET_FLANGE_DEPTHS.map(([nps, inches, mm]) =>
+    entryOf(socketFlangeDepthKey(nps), `socket-weld flange NPS ${nps}, socket depth`, inches, mm, "partial", SOCKET_DEPTH_SOURCE));
+  return [...FLANGE_ROWS.flatMap(flangeRowEntries), ...depths];
 }
 
 function flangeRowEntries(r: FlangeRow): Entry[] {

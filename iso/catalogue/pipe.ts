@@ -7,7 +7,7 @@ import type { Memory } from "./row";
 import { ELBOW_POUNDS, ELBOW_WEIGHT_SOURCE } from "./weights";
 
 /** Density of carbon steel, kg/mm³ (7.85 g/cm³, as the pipe standards use for every steel). */
-const STEEL_KG_PER_MM3 = 7.85e-6;
+export const STEEL_KG_PER_MM3 = 7.85e-6;
 const KG_PER_POUND = 0.45359237;
 const SCHEDULE_ORDER = ["5S", "10S", "10", "20", "30", "STD", "40S", "40", "60", "XS", "80S", "80", "100", "120", "140", "160", "XXS"];
 

@@ -1,17 +1,24 @@
 /** Valves. The point is the centre; a flanged valve brings mating flange and gasket on each side a pipe comes to. */
-import { vecAddScaled, vecNegate, vecReject, vecUnit } from "../geometry/vec3";
+import { vecReject, vecUnit } from "../geometry/vec3";
 import { valveKey } from "../catalogue/keys";
 import { axisNameOf, axisVector, naturalSide } from "./axes";
-import { plainTerm, sentenceStart, takeOutTerm, type BuildContext, type TakeOut } from "./build-context";
-import type { BoltedFace, Fitting, JointDraft, PlacedPoint, Side } from "./build-types";
+import { sentenceStart, takeOutTerm, type BuildContext, type TakeOut } from "./build-context";
+import type { BoltedFace, Fitting, PlacedPoint, Side, StudShare } from "./build-types";
 import type { Item, RatingClass } from "./document";
-import { bareSide, buttSide, fittingOf, flowAfter, flowAt, makeComponent, socketSide, straightPorts, unconfirmedOf } from "./fit-common";
-import { boltedJoint, gasketPart, pipeFlange } from "./fit-flange";
+import { bareSide, endedSide, fittingOf, flowAt, makeComponent, straightPorts, unconfirmedOf } from "./fit-common";
+import { NO_STUDS } from "./bolted-face";
+import { matingFlange, type MatedSide } from "./mating-flange";
 import type { Component, CutTerm } from "./model-types";
-import { originalSide } from "./original-side";
 import { VALVE_WORDS, sizeText } from "./words";
 
 type ValveItem = Extract<Item, { kind: "valve" }>;
+
+const END_WORDS: Readonly<Record<ValveItem["ends"], string>> = { flanged: "flanged", butt: "butt-weld", socket: "socket-weld", threaded: "threaded" };
+
+/** A butterfly between flanges is taken as a wafer: no flanges of its own, its studs pass from flange to flange (common practice). */
+function isWafer(item: ValveItem): boolean {
+  return item.valve === "butterfly" && item.ends === "flanged";
+}
 
 export function fitValve(p: PlacedPoint, item: ValveItem, ctx: BuildContext): Fitting {
   const ratingClass = item.ratingClass ?? ctx.settings.ratingClass;
@@ -25,14 +32,17 @@ export function fitValve(p: PlacedPoint, item: ValveItem, ctx: BuildContext): Fi
   if (p.isFirst || p.isLast) {
     ctx.report("valve-at-end", "note", `${sentenceStart(p.label)}: the ${word} ends the run with its far side open. Continue the line or close it with a blind flange.`, { pointId: p.point.id, runId: p.runId });
   }
-  return fittingOf({ components: [...ins.components, component, ...outs.components], joints: [...ins.joints, ...outs.joints], in: ins.side, out: outs.side });
+  return fittingOf({
+    components: [...ins.components, component, ...outs.components], joints: [...ins.joints, ...outs.joints], held: [...ins.held, ...outs.held],
+    in: ins.side, out: outs.side,
+  });
 }
 
 /** Face to face: what the detailer gave, else the shop's word or the table. */
 function valveLength(p: PlacedPoint, item: ValveItem, ratingClass: RatingClass, ctx: BuildContext): TakeOut {
   const key = valveKey(item.valve, ratingClass, p.pipeIn.nps, item.ends);
   if (item.faceToFaceMm !== null) return { key, mm: item.faceToFaceMm, source: "given with the valve", unconfirmed: false, missing: false };
-  const what = `${item.ends === "butt" ? "butt-weld" : item.ends === "socket" ? "socket-weld" : "flanged"} ${VALVE_WORDS[item.valve]} length, class ${ratingClass}, in ${sizeText(p.pipeIn.nps, ctx.units)}`;
+  const what = `${END_WORDS[item.ends]} ${VALVE_WORDS[item.valve]} length, class ${ratingClass}, in ${sizeText(p.pipeIn.nps, ctx.units)}`;
   return ctx.takeOut(key, what, p);
 }
 
@@ -43,7 +53,7 @@ function valvePart(p: PlacedPoint, item: ValveItem, ratingClass: RatingClass, ha
     ctx.report("stem-along-pipe", "warning", `${sentenceStart(p.label)}: the valve's stem cannot lie along the pipe. Choose another direction.`, { pointId: p.point.id, runId: p.runId });
   }
   const aside = named ?? naturalSide(flow);
-  const ends = item.ends === "flanged" ? "flanged, raised face" : item.ends === "butt" ? "butt-weld" : "socket-weld";
+  const ends = isWafer(item) ? "wafer" : item.ends === "flanged" ? "flanged, raised face" : END_WORDS[item.ends];
   const word = VALVE_WORDS[item.valve];
   return makeComponent(p, p.pipeIn, {
     kind: "valve", valve: item.valve, ends: item.ends, ratingClass, aside, asideName: axisNameOf(aside), text: item.tag,
@@ -52,34 +62,19 @@ function valvePart(p: PlacedPoint, item: ValveItem, ratingClass: RatingClass, ha
   });
 }
 
-interface ValveSide {
-  readonly side: Side;
-  readonly components: readonly Component[];
-  readonly joints: readonly JointDraft[];
-}
-
-function valveSide(p: PlacedPoint, item: ValveItem, ratingClass: RatingClass, name: "in" | "out", term: CutTerm, half: number, ctx: BuildContext): ValveSide {
-  const alone = (side: Side): ValveSide => ({ side, components: [], joints: [] });
-  const face: BoltedFace = { componentId: p.uid, place: p.point.places.bolts ?? "shop", ratingClass };
+function valveSide(p: PlacedPoint, item: ValveItem, ratingClass: RatingClass, name: "in" | "out", term: CutTerm, half: number, ctx: BuildContext): MatedSide {
+  const alone = (side: Side): MatedSide => ({ side, components: [], joints: [], held: [] });
+  const studs = studsOf(p, item, name, half, ctx);
+  const face: BoltedFace = { componentId: p.uid, place: p.point.places.bolts ?? "shop", ratingClass, ...(studs ? { studs } : {}) };
   if (name === "in" ? p.boltedIn : p.boltedOut) return alone(bareSide([term], p.uid, face));
   if (name === "in" ? p.isFirst : p.isLast) return alone(bareSide([term], p.uid));
-  if (item.ends === "flanged") return matingFlange(p, item, ratingClass, name, term, half, ctx);
-  const welded = item.ends === "butt" ? buttSide : socketSide;
-  return alone(welded(p, name, ctx, { terms: [term], componentId: p.uid }));
+  if (item.ends === "flanged") return matingFlange(p, { mating: item.mating, ratingClass, name, term, halfMm: half, studs }, ctx);
+  return alone(endedSide(item.ends, p, name, ctx, { terms: [term], componentId: p.uid }, (name === "in" ? p.pipeIn : p.pipeOut).nps));
 }
 
-/** The mating flange and gasket a flanged valve brings towards a pipe. */
-function matingFlange(p: PlacedPoint, item: ValveItem, ratingClass: RatingClass, name: "in" | "out", term: CutTerm, half: number, ctx: BuildContext): ValveSide {
-  const gasketMm = ctx.settings.allowances.gasketMm;
-  const pipe = name === "in" ? p.pipeIn : p.pipeOut;
-  const flow = name === "in" ? flowAt(p) : flowAfter(p);
-  const toPipe = name === "in" ? vecNegate(flow) : flow;
-  const id = `${p.uid}.flange-${originalSide(p.point, name)}`;
-  const flange = pipeFlange(p, {
-    id, side: name, type: item.mating, ratingClass, pipe, faceReachMm: half + gasketMm, text: "",
-    toFace: [term, plainTerm("gasket", "gasket", gasketMm)],
-  }, ctx);
-  const gasket = gasketPart(p, pipe, `${p.uid}.gasket-${originalSide(p.point, name)}`, ratingClass, vecAddScaled(p.position, toPipe, half + gasketMm / 2), flow);
-  const joint = boltedJoint(p, `${p.uid}:bolts-${originalSide(p.point, name)}`, name === "in" ? [id, p.uid] : [p.uid, id], gasket, p.point.places.bolts ?? "shop", ctx);
-  return { side: flange.side, components: [flange.component, gasket], joints: [joint] };
+/** A wafer's studs pass both its faces: they are counted at its first face, the valve and the second gasket added to their length. */
+function studsOf(p: PlacedPoint, item: ValveItem, name: "in" | "out", half: number, ctx: BuildContext): StudShare | null {
+  if (!isWafer(item)) return null;
+  const isFirstFace = name === "in" || (p.isFirst && !p.boltedIn);
+  return isFirstFace ? { extraMm: 2 * half + ctx.settings.allowances.gasketMm, because: "wafer valve" } : NO_STUDS;
 }

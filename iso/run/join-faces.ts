@@ -27,9 +27,15 @@ function boltedLegs(run: PlacedRun, ctx: BuildContext): boolean[] {
     const reach = [faceReach(before, ctx), faceReach(after, ctx)];
     const length = run.legs[i]?.lengthMm;
     if (reach[0] == null || reach[1] == null || length === undefined) continue;
-    bolted[i] = Math.abs(length - reach[0] - reach[1] - ctx.settings.allowances.gasketMm) <= FACE_TO_FACE_MM;
+    bolted[i] = Math.abs(length - reach[0] - reach[1] - gasketBetween(before, after, ctx)) <= FACE_TO_FACE_MM;
   }
   return bolted;
+}
+
+/** Gasket between two parts: what either flange says, the first one's word first, else the line's. */
+function gasketBetween(before: PlacedPoint, after: PlacedPoint, ctx: BuildContext): number {
+  const own = (p: PlacedPoint) => (p.point.item.kind === "flange" ? p.point.item.gasketMm : undefined);
+  return own(before) ?? own(after) ?? ctx.settings.allowances.gasketMm;
 }
 
 /** From the working point to a part's own bolting face, mm; null when it has none. */

@@ -1,8 +1,6 @@
 /** The material list of one spool: pipe by the summed cut length, everything else by the piece. */
-import { flangeBolts } from "../catalogue/catalogue";
 import { formatInches } from "../units/format";
-import type { JointDraft } from "./build-types";
-import type { RatingClass, UnitSystem } from "./document";
+import type { UnitSystem } from "./document";
 import type { Component, MaterialRow } from "./model-types";
 import type { PieceDraft } from "./piece-draft";
 import { scheduleText, sizePairText, sizeText } from "./words";
@@ -11,25 +9,24 @@ type Row = Omit<MaterialRow, "item">;
 
 /** Lists read pipe first, then fittings, flanges, valves, and what bolts them. */
 const ORDER: readonly (readonly Component["kind"][])[] = [
-  ["elbow", "trimmed-elbow", "socket-elbow"], ["tee", "reducing-tee", "socket-tee"], ["outlet"], ["reducer-concentric", "reducer-eccentric"],
-  ["coupling", "half-coupling"], ["cap"], ["flange-weld-neck", "flange-slip-on", "flange-socket-weld"], ["flange-blind"], ["valve"], ["gasket"],
+  ["elbow", "trimmed-elbow", "socket-elbow"], ["return"], ["tee", "reducing-tee", "socket-tee"], ["cross", "socket-cross"], ["outlet"], ["pad"],
+  ["reducer-concentric", "reducer-eccentric"], ["coupling", "half-coupling"], ["union"], ["cap", "socket-cap"], ["stub-end"],
+  ["flange-weld-neck", "flange-slip-on", "flange-socket-weld", "flange-threaded", "flange-lap-joint"], ["flange-blind"], ["valve"], ["instrument"],
+  ["gasket"], ["bolt-set"], ["support"],
 ];
 
 export interface SpoolParts {
   readonly components: readonly Component[];
   readonly pieces: readonly PieceDraft[];
-  /** Bolted joints whose bolts this spool brings. */
-  readonly bolted: readonly JointDraft[];
   readonly loose: ReadonlySet<string>;
-  /** Class of a bolted joint. */
-  readonly classOf: (joint: JointDraft) => RatingClass | null;
 }
 
+/** The rows of one spool. A stub-in and a mitre are cut from pipe: the pipe's row counts them. */
 export function spoolMaterials(parts: SpoolParts, units: UnitSystem): MaterialRow[] {
   const rows: Row[] = [...parts.pieces.map((p) => pipeRow(p, units))];
-  for (const kinds of ORDER) rows.push(...parts.components.filter((c) => kinds.includes(c.kind)).map((c) => partRow(c, parts.loose.has(c.id), units)));
-  rows.push(...parts.bolted.flatMap((j) => boltRow(j, parts.classOf(j), units)));
-  rows.push(...parts.components.filter((c) => c.kind === "support").map((c) => partRow(c, false, units)));
+  for (const kinds of ORDER) {
+    rows.push(...parts.components.filter((c) => kinds.includes(c.kind)).map((c) => (c.kind === "bolt-set" ? boltRow : partRow)(c, parts.loose.has(c.id), units)));
+  }
   return mergedRows(rows).map((row, i) => ({ item: i + 1, ...row }));
 }
 
@@ -53,15 +50,14 @@ function partMaterial({ material }: Component): string {
   return material === "" || material === "as specified" ? material : `for ${material}`;
 }
 
-/** Stud bolts of a bolted face by the flange table: the number, the size, the length for a joint of two flanges. */
-function boltRow(j: JointDraft, ratingClass: RatingClass | null, units: UnitSystem): Row[] {
-  const bolts = ratingClass === null ? null : flangeBolts(ratingClass, j.nps);
-  if (!bolts) return [];
-  const length = units === "metric" ? `${Math.round(bolts.studLengthMm)} mm` : `${formatInches(bolts.studLengthMm)} in`;
-  return [{
-    quantity: bolts.count, unit: "ea", size: `${bolts.size} x ${length}`, description: `Stud bolt with two nuts${j.place === "shop" ? "" : ", field"}`,
-    material: "as specified", weightKg: null, source: bolts.source, refs: [j.key],
-  }];
+/** Studs of a bolted face: the number, the size and the length. */
+function boltRow(c: Component, isLoose: boolean, units: UnitSystem): Row {
+  const { count, diameter, lengthMm } = c.bolts ?? { count: 0, diameter: "", lengthMm: null };
+  const length = lengthMm === null ? "" : units === "metric" ? ` x ${Math.round(lengthMm)} mm` : ` x ${formatInches(lengthMm)} in`;
+  return {
+    quantity: count, unit: "ea", size: `${diameter}${length}`, description: `${c.description}${isLoose ? ", field" : ""}`,
+    material: partMaterial(c), weightKg: c.weightKg, source: c.source, refs: [c.id],
+  };
 }
 
 /** Equal size, description and material make one row. */
