@@ -10,10 +10,13 @@ import { fillStretch, runStretches } from "./cut-stretches";
 import type { RunDocument } from "./document";
 import { fitPoint } from "./fit-point";
 import { groupSpools, type Parts, type SpoolGroup } from "./group-spools";
+import { fittingOf } from "./fit-common";
 import { joinFaces } from "./join-faces";
+import { closeLoops } from "./loops";
 import { advanceMarks, givenMarks, type Markable } from "./marks";
-import type { Component, Joint, Leg, MarksRegister, Model, Node, Piece, Problem, TakeOutWord } from "./model-types";
+import type { Component, Joint, Leg, Loop, MarksRegister, Model, Node, Piece, Problem, TakeOutWord } from "./model-types";
 import { placeRuns } from "./place-runs";
+import { rolledPieces, rollsOf } from "./rolls";
 import { lineBreaks } from "./service";
 import { componentWeight } from "./weights";
 
@@ -23,8 +26,12 @@ interface Structure {
   readonly legs: readonly Leg[];
   readonly parts: Parts;
   readonly groups: readonly SpoolGroup[];
+  readonly loops: readonly Loop[];
   readonly ctx: BuildContext;
 }
+
+/** The last point of a loop stands for the fitting it meets, which is fitted there already. */
+const NOTHING_FITTED = fittingOf({});
 
 /** The model of a document, with marks as the register will give them. Lengths in mm, angles in radians. */
 export function buildModel(document: RunDocument, marks: MarksRegister, takeOuts: readonly TakeOutWord[]): Model {
@@ -49,6 +56,7 @@ export function buildModel(document: RunDocument, marks: MarksRegister, takeOuts
     spools,
     ...(breaks.length > 0 ? { breaks } : {}),
     problems: inFlowOrder(line.ctx.problems, line.runs),
+    ...(line.loops.length === 0 ? {} : { loops: line.loops }),
   };
 }
 
@@ -59,12 +67,20 @@ export function nextMarks(document: RunDocument, marks: MarksRegister, takeOuts:
 
 function buildStructure(document: RunDocument, takeOuts: readonly TakeOutWord[]): Structure {
   const ctx = buildContext(document.settings, takeOuts);
-  const runs = joinFaces(placeRuns(document, ctx), ctx);
+  const closed = closeLoops(placeRuns(document, ctx), ctx);
+  const runs = joinFaces(closed.runs, ctx);
   const points = new Map<string, PlacedPoint>(runs.flatMap((r) => r.points.map((p) => [p.uid, p] as const)));
   checkRuns(runs, ctx);
-  const fittings = new Map<string, Fitting>([...points].map(([uid, p]) => [uid, fitPoint(p, ctx)]));
-  const parts = collectParts(runs, fittings, points, ctx);
-  return { runs, legs: runs.flatMap((r) => r.legs.flatMap((l) => l ?? [])), parts, groups: groupSpools(parts), ctx };
+  const fittings = new Map<string, Fitting>([...points].map(([uid, p]) => [uid, p.closesLoop ? NOTHING_FITTED : fitPoint(p, ctx)]));
+  const parts = withRolls(collectParts(runs, fittings, points, ctx), runs, ctx);
+  return { runs, legs: runs.flatMap((r) => r.legs.flatMap((l) => l ?? [])), parts, groups: groupSpools(parts), loops: closed.loops, ctx };
+}
+
+/** Each part turned against the one before it. */
+function withRolls(parts: Parts, runs: readonly PlacedRun[], ctx: BuildContext): Parts {
+  const rolls = rollsOf(runs, parts.components, ctx.units);
+  const components = parts.components.map((c) => (rolls.components.has(c.id) ? { ...c, roll: rolls.components.get(c.id) ?? null } : c));
+  return { ...parts, components, pieces: rolledPieces(parts.pieces, rolls) };
 }
 
 /** Puts fittings and what lies between them in one flow order: along the main run, then along each branch. */

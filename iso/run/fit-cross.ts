@@ -58,8 +58,8 @@ export function fitCross(p: PlacedPoint, item: Extract<Item, { kind: "cross" }>,
 function crossPorts(p: PlacedPoint): Record<Way, Vec3> {
   const flow = flowAt(p);
   const others = [p.leaving, ...p.branches.map((b) => b.direction)];
-  const across = others.flatMap((d) => (d && Math.abs(vecDot(d, flow)) < Math.SQRT1_2 ? (vecUnit(vecReject(d, flow)) ?? []) : []));
-  const side = (across[0] as Vec3 | undefined) ?? naturalSide(flow);
+  const across = others.find((d) => d !== null && Math.abs(vecDot(d, flow)) < Math.SQRT1_2);
+  const side = (across && vecUnit(vecReject(across, flow))) ?? naturalSide(flow);
   return { in: vecNegate(flow), out: flow, branch: side, "branch-2": vecNegate(side) };
 }
 

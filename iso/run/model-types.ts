@@ -175,6 +175,8 @@ export interface PieceBend {
   readonly radiusMm: number;
   readonly startMm: number;
   readonly developedMm: number;
+  /** Turned against the fitting or bend before it on the same run; absent for the first. */
+  readonly roll?: Roll;
 }
 
 export interface PieceEnd {
