@@ -2,6 +2,7 @@
 import clsx from "clsx";
 import { memo } from "react";
 import { formatFeetInches, formatTerm, type Model, type Piece } from "@/iso";
+import { useEditor } from "./editor-context";
 import { cutLengthText, cutTerms, pieceSpan } from "./cut-words";
 
 export interface CutStripProps {
@@ -27,9 +28,10 @@ export const CutStrip = memo(function CutStrip({ model, activePointId, onPoint }
 
 function PieceRow({ model, piece, active, onPoint }: { readonly model: Model; readonly piece: Piece; readonly active: boolean; readonly onPoint: (pointId: string) => void }) {
   const { units } = model.document.settings;
+  const { pointed } = useEditor();
   const fits = piece.cutLengthMm > 0;
   return (
-    <li data-piece={piece.mark}>
+    <li data-piece={piece.mark} onPointerEnter={() => pointed.set(piece.legId)} onPointerLeave={() => pointed.set(null)}>
       <button type="button" onClick={() => onPoint(piece.legId)} className={clsx("flex w-full flex-wrap items-baseline gap-x-4 gap-y-1 px-1 py-2 text-left", active ? "bg-dye-tint" : "hover:bg-shade")}>
         <span className="figure w-10 font-medium">{piece.mark}</span>
         <span className="figure min-w-0 flex-1 basis-64 text-sm leading-6">

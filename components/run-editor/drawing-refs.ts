@@ -18,3 +18,13 @@ export function pointFinder(model: Model): PointOfRef {
     return words[words.length - 1] ?? null;
   };
 }
+
+/** Key of the cut piece a thing on the drawing shows, or null: its mark, its pipe, its leg. */
+export function pieceFinder(model: Model): (ref: Ref) => string | null {
+  const keys = new Set(model.pieces.map((piece) => piece.key));
+  const byLeg = new Map(model.pieces.flatMap((piece) => (piece.legIds ?? [piece.legId]).map((leg) => [leg, piece.key] as const)));
+  return (ref) => {
+    if (ref.kind === "piece") return keys.has(ref.id) ? ref.id : null;
+    return ref.kind === "leg" ? (byLeg.get(ref.id) ?? null) : null;
+  };
+}

@@ -1,6 +1,7 @@
 "use client";
 /** How the parts of the editor send actions: without the stamp, which the editor adds. */
 import { createContext, useContext } from "react";
+import { PointedStore } from "./pointed-store";
 import type { EditorAction } from "./editor-types";
 
 type WithoutStamp<A> = A extends { readonly stamp: unknown } ? Omit<A, "stamp"> : A;
@@ -13,9 +14,11 @@ export interface EditorDoors {
   readonly readOnly: boolean;
   /** The block as tab-separated text; null while only one cell is picked out. */
   readonly blockText: () => string | null;
+  /** What the pointer rests on. */
+  readonly pointed: PointedStore;
 }
 
-export const EditorContext = createContext<EditorDoors>({ send: () => undefined, openHelp: () => undefined, readOnly: true, blockText: () => null });
+export const EditorContext = createContext<EditorDoors>({ send: () => undefined, openHelp: () => undefined, readOnly: true, blockText: () => null, pointed: new PointedStore() });
 
 export function useEditor(): EditorDoors {
   return useContext(EditorContext);

@@ -9,7 +9,10 @@ import { useEditor } from "./editor-context";
 import { SaveStatus } from "./save-status";
 import type { Autosave } from "./use-autosave";
 
-export type EditorPanel = "help" | "settings" | "closing";
+export type EditorPanel = "help" | "settings" | "closing" | "notes" | "line";
+
+/** What stands beside the grid. */
+export type EditorLook = "isometric" | "shape" | "sheet";
 
 export interface EditorHeadProps {
   readonly line: LineDetail;
@@ -17,13 +20,13 @@ export interface EditorHeadProps {
   readonly save: Autosave;
   readonly canUndo: boolean;
   readonly canRedo: boolean;
-  readonly sheetShown: boolean;
-  readonly onSheet: () => void;
+  readonly look: EditorLook;
+  readonly onLook: (look: EditorLook) => void;
   readonly onPanel: (panel: EditorPanel) => void;
 }
 
 /** Which line this is, whether it is saved, and what can be opened. Low, so that the grid starts high on the page. */
-export function EditorHead({ line, document, save, canUndo, canRedo, sheetShown, onSheet, onPanel }: EditorHeadProps) {
+export function EditorHead({ line, document, save, canUndo, canRedo, look, onLook, onPanel }: EditorHeadProps) {
   const { send, readOnly } = useEditor();
   const { pipe, units, ratingClass } = document.settings;
   usePageTitle(`${document.number} ${document.title}`.trim());
@@ -54,8 +57,11 @@ export function EditorHead({ line, document, save, canUndo, canRedo, sheetShown,
             </>
           )}
           <Button onClick={() => onPanel("closing")}>Close between ends</Button>
+          <Button onClick={() => onPanel("line")}>Whole line</Button>
+          <Button onClick={() => onPanel("notes")}>Notes</Button>
           <Button onClick={() => onPanel("settings")}>Line settings</Button>
-          <Button onClick={onSheet} aria-pressed={sheetShown}>{sheetShown ? "Isometric" : "Sheet"}</Button>
+          <Button onClick={() => onLook(look === "shape" ? "isometric" : "shape")} aria-pressed={look === "shape"}>{look === "shape" ? "Isometric" : "True shape"}</Button>
+          <Button onClick={() => onLook(look === "sheet" ? "isometric" : "sheet")} aria-pressed={look === "sheet"}>{look === "sheet" ? "Isometric" : "Sheet"}</Button>
           <ExchangeButton line={line} document={document} />
           <Button onClick={() => onPanel("help")}>Keys</Button>
         </div>

@@ -6,7 +6,7 @@ import type { RunDocument } from "@/iso";
 import { cleared, cut, extended, filled, pasted, rowsDoubled, rowsInserted, rowsMoved, rowsRemoved, stretchedTo } from "./block-actions";
 import { COLUMNS, commitCell, type CellTarget, type Column, type CommitContext } from "./cell-commit";
 import { gridRows, landing } from "./cursor-steps";
-import { pointPlace, runOf, withPoint, withPointsInserted } from "./document-edits";
+import { pointPlace, runOf, withItem, withPoint, withPointsInserted } from "./document-edits";
 import { draftKey } from "./drafts";
 import { changed, idsFor, moveTo, picked, redo, undo, without } from "./editor-history";
 import type { EditorAction, EditorState, PointPatch, Stamp, Step } from "./editor-types";
@@ -50,16 +50,23 @@ export function editorReducer(state: EditorState, action: EditorAction): EditorS
     case "fill": return filled(state, action.series, action.stamp);
     case "report-read": return { ...state, report: null };
     case "point-patch": return changed(state, patched(state.document, action), action.stamp);
+    case "point-replace": return changed(state, withPoint(state.document, action.point.id, () => action.point), action.stamp);
+    case "item-set": return changed(state, withItem(state.document, action.pointId, action.item, action.stamp.branchId), action.stamp);
     case "points-insert": {
       const inserted = withPointsInserted(state.document, action.runId, action.row, action.points);
       return changed(state, action.patch ? patched(inserted, action.patch) : inserted, action.stamp);
     }
-    case "document-patch": return changed(state, { ...state.document, ...action.patch }, action.stamp);
+    case "document-patch": return changed(state, withoutEmpty({ ...state.document, ...action.patch }), action.stamp);
     case "paste": return pasted(state, action.target, action.text, action.stamp);
     case "replace": return { ...changed(state, action.document, action.stamp), drafts: {} };
     case "undo": return undo(state);
     case "redo": return redo(state);
   }
+}
+
+/** A field that says nothing is left out, as in a document that never had it. */
+function withoutEmpty(document: RunDocument): RunDocument {
+  return Object.fromEntries(Object.entries(document).filter(([, value]) => value !== undefined)) as RunDocument;
 }
 
 function patched(document: RunDocument, change: PointPatch): RunDocument {

@@ -1,5 +1,5 @@
 /** Shapes of the editor's state and of what may be done to it. */
-import type { Point, RunDocument } from "@/iso";
+import type { Item, Point, RunDocument } from "@/iso";
 import type { CellTarget } from "./cell-commit";
 
 /** A typed text that was not understood stays with its cell until it is mended or dropped. */
@@ -87,6 +87,8 @@ export type EditorAction =
   | { readonly type: "report-read" }
   | { readonly type: "row-move"; readonly target: CellTarget; readonly by: -1 | 1; readonly stamp: Stamp }
   | { readonly type: "point-patch"; readonly pointId: string; readonly patch: Partial<Omit<Point, "id">>; readonly stamp: Stamp }
+  | { readonly type: "point-replace"; readonly point: Point; readonly stamp: Stamp }
+  | { readonly type: "item-set"; readonly pointId: string; readonly item: Item; readonly stamp: Stamp }
   | { readonly type: "points-insert"; readonly runId: string; readonly row: number; readonly points: readonly Point[]; readonly patch: PointPatch | null; readonly stamp: Stamp }
   | { readonly type: "document-patch"; readonly patch: Partial<Pick<RunDocument, "settings" | "view" | "notes" | "sheetNotes" | "sheets" | "number" | "title" | "runs">>; readonly stamp: Stamp }
   | { readonly type: "paste"; readonly target: CellTarget; readonly text: string; readonly stamp: Stamp }

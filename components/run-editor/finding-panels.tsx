@@ -7,18 +7,18 @@ import { ProblemList, type ProblemListProps } from "./problem-list";
 import { SpoolSummary } from "./spool-summary";
 import { UploadPanel } from "./upload-panel";
 
-export interface FindingPanelsProps extends Pick<ProblemListProps, "waiting" | "onPoint" | "onCell"> {
+export interface FindingPanelsProps extends Pick<ProblemListProps, "waiting" | "activePointId" | "onPoint" | "onCell"> {
   readonly line: LineDetail;
   readonly model: Model;
   readonly onUploads: () => Promise<unknown>;
 }
 
 /** What is wrong or to be looked at; and the sketches the run was read from. */
-export function FindingPanels({ line, model, waiting, onPoint, onCell, onUploads }: FindingPanelsProps) {
+export function FindingPanels({ line, model, waiting, activePointId, onPoint, onCell, onUploads }: FindingPanelsProps) {
   return (
     <>
       <Section title="Findings">
-        <ProblemList document={model.document} problems={model.problems} waiting={waiting} onPoint={onPoint} onCell={onCell} />
+        <ProblemList document={model.document} problems={model.problems} waiting={waiting} activePointId={activePointId} onPoint={onPoint} onCell={onCell} />
       </Section>
       <Section title="Sketches and photos">
         <UploadPanel lineId={line.id} uploads={line.uploads} editable={line.editable} onChanged={onUploads} />

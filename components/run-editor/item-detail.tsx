@@ -1,9 +1,12 @@
 "use client";
-import { NPS_SIZES, type AxisName, type Item, type Nps, type RatingClass, type UnitSystem } from "@/iso";
+import type { ReactNode } from "react";
+import { NPS_SIZES, type AxisName, type Item, type Nps, type UnitSystem } from "@/iso";
+import { lengthEntryText } from "@/components/jobs/settings-text";
 import { Select } from "@/components/ui/field";
 import { CommitField } from "./commit-field";
-import { lengthEntryText } from "@/components/jobs/settings-text";
-import { readDegrees, readOptionalLength, readText } from "./length-reader";
+import { FlangeDetail } from "./flange-detail";
+import { AXES, CLASSES, ratingOf, type Option } from "./item-options";
+import { readOptionalLength, readText } from "./length-reader";
 
 export interface ItemDetailProps {
   readonly item: Item;
@@ -12,55 +15,74 @@ export interface ItemDetailProps {
   readonly onItem: (item: Item) => void;
 }
 
-type Option = { readonly value: string; readonly label: string };
-const AXES: readonly Option[] = [
-  { value: "E", label: "east" }, { value: "W", label: "west" }, { value: "N", label: "north" },
-  { value: "S", label: "south" }, { value: "U", label: "up" }, { value: "D", label: "down" },
-];
-const CLASSES: readonly Option[] = [{ value: "", label: "the line's" }, ...["150", "300", "600", "900", "1500"].map((value) => ({ value, label: `class ${value}` }))];
 const SIZES: readonly Option[] = NPS_SIZES.map((nps) => ({ value: nps, label: `NPS ${nps}` }));
+const FORGED: readonly Option[] = [{ value: "socket", label: "socket-weld" }, { value: "threaded", label: "threaded" }];
+const PIPE: readonly Option[] = [{ value: "butt", label: "butt-weld" }, ...FORGED];
+const PART: readonly Option[] = [{ value: "flanged", label: "flanged" }, ...PIPE];
+const MATING: readonly Option[] = [{ value: "weld-neck", label: "weld-neck" }, { value: "slip-on", label: "slip-on" }, { value: "socket-weld", label: "socket-weld" }, { value: "threaded", label: "threaded" }, { value: "lap-joint", label: "lap-joint" }];
+const SET: readonly Option[] = [{ value: "on", label: "set on" }, { value: "in", label: "set in" }];
+const ENDS: readonly Option[] = [
+  { value: "open", label: "open end" }, { value: "field-weld", label: "field weld" }, { value: "continued", label: "continued on" },
+  { value: "existing", label: "existing, verify" }, { value: "vent", label: "vent" }, { value: "drain", label: "drain" },
+];
 
-/** What an item takes beyond its short word. */
-export function ItemDetail({ item, units, readOnly, onItem }: ItemDetailProps) {
+/** What an item takes beyond its short word, by picking; each can be typed after the word as well. */
+export function ItemDetail({ item, units, readOnly, onItem }: ItemDetailProps): ReactNode {
   const choose = (label: string, value: string, options: readonly Option[], set: (value: string) => Item) => (
     <Select key={label} label={label} options={options} value={value} disabled={readOnly} onChange={(event) => onItem(set(event.target.value))} />
   );
   const text = (label: string, value: string, set: (value: string) => Item, placeholder = "") => (
     <CommitField key={`${label}${value}`} label={label} text={value} placeholder={placeholder} readOnly={readOnly} read={readText} onCommit={(next) => onItem(set(next))} />
   );
-  const rating = (value: string): RatingClass | null => (value === "" ? null : (Number(value) as RatingClass));
+  const length = (label: string, hint: string, mm: number | null | undefined, set: (mm: number | null) => Item) => (
+    <CommitField key={`${label}${mm}`} label={label} hint={hint} figure readOnly={readOnly} text={mm ? lengthEntryText(mm, units) : ""} read={readOptionalLength(units)} onCommit={(next) => onItem(set(next === 0 ? null : next))} />
+  );
   switch (item.kind) {
-    case "flange":
-      return (
-        <>
-          {choose("Class", String(item.ratingClass ?? ""), CLASSES, (value) => ({ ...item, ratingClass: rating(value) }))}
-          <BoltHoles item={item} readOnly={readOnly} onItem={onItem} />
-          {choose("In a pair, the point is", item.gasketSide, [{ value: "after", label: "the face before the gasket" }, { value: "before", label: "the face after the gasket" }], (value) => ({ ...item, gasketSide: value as "before" | "after" }))}
-          {choose("Goes to", item.goes, [{ value: "open", label: "not said" }, { value: "nozzle", label: "nozzle" }, { value: "continued", label: "continued" }, { value: "existing", label: "existing, verify" }], (value) => ({ ...item, goes: value as typeof item.goes }))}
-          {text("Name printed there", item.text, (value) => ({ ...item, text: value }), "N3")}
-        </>
-      );
+    case "flange": return <FlangeDetail item={item} units={units} readOnly={readOnly} onItem={onItem} />;
     case "valve":
       return (
         <>
-          {choose("Class", String(item.ratingClass ?? ""), CLASSES, (value) => ({ ...item, ratingClass: rating(value) }))}
-          {choose("Ends", item.ends, [{ value: "flanged", label: "flanged" }, { value: "butt", label: "butt-weld" }, { value: "socket", label: "socket-weld" }], (value) => ({ ...item, ends: value as typeof item.ends }))}
-          {item.ends === "flanged" ? choose("Mating flanges", item.mating, [{ value: "weld-neck", label: "weld-neck" }, { value: "slip-on", label: "slip-on" }, { value: "socket-weld", label: "socket-weld" }], (value) => ({ ...item, mating: value as typeof item.mating })) : null}
+          {choose("Class", String(item.ratingClass ?? ""), CLASSES, (value) => ({ ...item, ratingClass: ratingOf(value) }))}
+          {choose("Ends", item.ends, PART, (value) => ({ ...item, ends: value as typeof item.ends }))}
+          {item.ends === "flanged" ? choose("Mating flanges", item.mating, MATING, (value) => ({ ...item, mating: value as typeof item.mating })) : null}
           {choose("Stem", item.stem ?? "", [{ value: "", label: "up, or north on a riser" }, ...AXES], (value) => ({ ...item, stem: value === "" ? null : (value as AxisName) }))}
           {text("Tag", item.tag, (value) => ({ ...item, tag: value }), "V-101")}
-          <CommitField label="Measured face to face" hint="in place of the table's" figure readOnly={readOnly} text={item.faceToFaceMm === null ? "" : lengthEntryText(item.faceToFaceMm, units)} read={readOptionalLength(units)} onCommit={(mm) => onItem({ ...item, faceToFaceMm: mm === 0 ? null : mm })} />
+          {length("Measured face to face", "in place of the table's", item.faceToFaceMm, (faceToFaceMm) => ({ ...item, faceToFaceMm }))}
+        </>
+      );
+    case "instrument":
+      return (
+        <>
+          {text("Tag", item.tag, (value) => ({ ...item, tag: value }), "PI-101")}
+          {choose("Ends", item.ends, PART, (value) => ({ ...item, ends: value as typeof item.ends }))}
+          {item.ends === "flanged" ? choose("Class", String(item.ratingClass ?? ""), CLASSES, (value) => ({ ...item, ratingClass: ratingOf(value) })) : null}
+          {length("Face to face", "within a run; empty at an end", item.lengthMm, (mm) => ({ ...item, lengthMm: mm ?? 0 }))}
         </>
       );
     case "tee":
+    case "cross":
       return (
         <>
           {choose("Branch size", item.branchNps ?? "", [{ value: "", label: "same as the run" }, ...SIZES], (value) => ({ ...item, branchNps: value === "" ? null : (value as Nps) }))}
-          {choose("Ends", item.ends, [{ value: "butt", label: "butt-weld" }, { value: "socket", label: "socket-weld" }], (value) => ({ ...item, ends: value as typeof item.ends }))}
+          {choose("Ends", item.ends, PIPE, (value) => ({ ...item, ends: value as typeof item.ends }))}
         </>
       );
     case "outlet":
+      return (
+        <>
+          {choose("Branch size", item.branchNps, SIZES, (value) => ({ ...item, branchNps: value as Nps }))}
+          {choose("Branch end", item.ends ?? "butt", PIPE, (value) => ({ ...item, ends: value as "butt" }))}
+          {choose("How it is set", item.set ?? "on", SET, (value) => ({ ...item, set: value as "on" }))}
+        </>
+      );
     case "stub-in":
-      return choose("Branch size", item.branchNps, SIZES, (value) => ({ ...item, branchNps: value as Nps }));
+      return (
+        <>
+          {choose("Branch size", item.branchNps, SIZES, (value) => ({ ...item, branchNps: value as Nps }))}
+          {choose("How it is set", item.set ?? "on", SET, (value) => ({ ...item, set: value as "on" }))}
+          {length("Pad, outside diameter", "as given; empty = no pad", item.padMm, (mm) => padded(item, mm))}
+        </>
+      );
     case "reducer":
       return (
         <>
@@ -69,39 +91,36 @@ export function ItemDetail({ item, units, readOnly, onItem }: ItemDetailProps) {
           {item.shape === "eccentric" ? choose("Flat side", item.flat ?? "D", AXES, (value) => ({ ...item, flat: value as AxisName })) : null}
         </>
       );
+    case "return":
+      return (
+        <>
+          {choose("Radius", item.radius, [{ value: "LR", label: "long" }, { value: "SR", label: "short" }], (value) => ({ ...item, radius: value as "LR" }))}
+          {choose("Second leg lies", item.toward, AXES, (value) => ({ ...item, toward: value as AxisName }))}
+        </>
+      );
+    case "mitre":
+      return (
+        <>
+          {choose("Pieces", String(item.pieces), ["2", "3", "4", "5"].map((value) => ({ value, label: value })), (value) => ({ ...item, pieces: Number(value) }))}
+          {length("Radius", "empty = 1.5 NPS", item.radiusMm, (radiusMm) => ({ ...item, radiusMm }))}
+        </>
+      );
+    case "bend": return length("Center-line radius", "", item.radiusMm, (mm) => ({ ...item, radiusMm: mm ?? item.radiusMm }));
+    case "union": return choose("Ends", item.ends, FORGED, (value) => ({ ...item, ends: value as "socket" }));
+    case "coupling": return choose("Ends", item.ends ?? "socket", FORGED, (value) => ({ ...item, ends: value as "socket" }));
+    case "cap": return choose("End", item.ends ?? "butt", PIPE, (value) => ({ ...item, ends: value as "butt" }));
     case "end":
       return (
         <>
-          {choose("Goes to", item.goes, [{ value: "open", label: "open end" }, { value: "field-weld", label: "field weld" }, { value: "continued", label: "continued on" }, { value: "existing", label: "existing, verify" }], (value) => ({ ...item, goes: value as typeof item.goes }))}
+          {choose("Goes to", item.goes, ENDS, (value) => ({ ...item, goes: value as typeof item.goes }))}
           {text("Name printed there", item.text, (value) => ({ ...item, text: value }), "L-204")}
         </>
       );
-    case "support":
-      return text("Support", item.text, (value) => ({ ...item, text: value }), "shoe, PS-12");
-    default:
-      return null;
+    case "support": return text("Support", item.text, (value) => ({ ...item, text: value }), "shoe, PS-12");
+    default: return null;
   }
 }
 
-type Flange = Extract<Item, { kind: "flange" }>;
-
-function BoltHoles({ item, readOnly, onItem }: { readonly item: Flange; readonly readOnly: boolean; readonly onItem: (item: Item) => void }) {
-  const turned = item.boltHoles === "straddle" ? null : item.boltHoles;
-  return (
-    <>
-      <Select
-        label="Bolt holes"
-        disabled={readOnly}
-        value={turned ? "turned" : "straddle"}
-        options={[{ value: "straddle", label: "straddle the centre line" }, { value: "turned", label: "turned" }]}
-        onChange={(event) => onItem({ ...item, boltHoles: event.target.value === "straddle" ? "straddle" : { turnDeg: 0, from: "S" } })}
-      />
-      {turned ? (
-        <>
-          <CommitField label="Turned, degrees clockwise" figure readOnly={readOnly} text={String(turned.turnDeg)} read={readDegrees} onCommit={(turnDeg) => onItem({ ...item, boltHoles: { ...turned, turnDeg } })} />
-          <Select label="Looked at from" disabled={readOnly} value={turned.from} options={AXES} onChange={(event) => onItem({ ...item, boltHoles: { ...turned, from: event.target.value as AxisName } })} />
-        </>
-      ) : null}
-    </>
-  );
+function padded({ padMm: _before, ...item }: Extract<Item, { kind: "stub-in" }>, mm: number | null): Item {
+  return mm === null ? item : { ...item, padMm: mm };
 }

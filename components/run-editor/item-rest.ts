@@ -1,4 +1,7 @@
-/** What may follow each item's short word, read into the item. Each reader throws RestRefusal with the sentence to show. */
+/**
+ * What may follow each item's short word, read into the item. Each reader throws RestRefusal with the sentence to show.
+ * A little long, because the readers of all items stand side by side.
+ */
 import type { Item } from "@/iso";
 import type { ItemWord } from "./item-words";
 import { axisOf, readClass, readNps, RestRefusal, type RestReader } from "./rest-reader";

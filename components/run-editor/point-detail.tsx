@@ -1,9 +1,11 @@
 "use client";
 import { useState } from "react";
-import { formatLength, formatTerm, parseLength, type Offset, type Point, type Provenance, type RunDocument, type UnitSystem } from "@/iso";
+import { formatLength, formatTerm, parseLength, type Offset, type Point, type Problem, type Provenance, type RunDocument, type UnitSystem } from "@/iso";
 import { Button } from "@/components/ui/button";
+import type { Role } from "@/lib/rules/api-types";
 import { CommitField } from "./commit-field";
 import { lengthEntryText } from "@/components/jobs/settings-text";
+import { jointPlace } from "./cell-commit";
 import { pointPlace } from "./document-edits";
 import { useEditor } from "./editor-context";
 import { refused, understood, type EntryResult } from "./entry-result";
@@ -11,14 +13,19 @@ import { isTouchScreen } from "./touch-screen";
 import { ItemDetail } from "./item-detail";
 import { itemCaution, itemEcho } from "./item-text";
 import { readOptionalLength } from "./length-reader";
+import { MeasuredTakeOut } from "./measured-take-out";
+import { StartsFields } from "./starts-fields";
 
 export interface PointDetailProps {
   readonly document: RunDocument;
   readonly point: Point;
+  readonly problems: readonly Problem[];
+  readonly role: Role | null;
+  readonly onTakeOut: () => Promise<unknown>;
 }
 
 /** What the grid has no column for, for the current row. */
-export function PointDetail({ document, point }: PointDetailProps) {
+export function PointDetail({ document, point, problems, role, onTakeOut }: PointDetailProps) {
   const { send, readOnly } = useEditor();
   const [open, setOpen] = useState(() => !isTouchScreen());
   const { units } = document.settings;
@@ -34,7 +41,7 @@ export function PointDetail({ document, point }: PointDetailProps) {
         <span className="font-bold">
           <span aria-hidden className="mr-2 inline-block font-normal text-dye">{open ? "Less" : "More"}</span>
           Row {place.row + 1}
-          {point.item.kind === "none" ? "" : `: ${itemEcho(point.item)}`}
+          {point.item.kind === "none" ? "" : `: ${itemEcho(point.item, jointPlace(point), units)}`}
         </span>
         {caution ? <span className="text-sm text-caution">{caution}</span> : null}
       </summary>
@@ -45,13 +52,16 @@ export function PointDetail({ document, point }: PointDetailProps) {
         {fieldFit ? (
           <CommitField label="Field-fit trim" hint="supplied extra; empty = the line's" figure readOnly={readOnly} text={point.trimMm === null ? "" : lengthEntryText(point.trimMm, units)} read={readOptionalLength(units)} onCommit={(trimMm) => patch({ trimMm })} />
         ) : null}
-        <ItemDetail item={point.item} units={units} readOnly={readOnly} onItem={(item) => patch({ item })} />
+        <ItemDetail item={point.item} units={units} readOnly={readOnly} onItem={(item) => send({ type: "item-set", pointId: point.id, item })} />
       </div>
+      <MeasuredTakeOut problems={problems.filter((problem) => problem.pointId === point.id)} units={units} role={role} onRecorded={onTakeOut} />
+      <StartsFields key={point.id} point={point} readOnly={readOnly} onPoint={(next) => send({ type: "point-replace", point: next })} />
       {hasFieldWeld(point) ? <p className="mt-2 text-sm text-caution">Field weld: permit, isolate, gas test, fire watch. Do not pull, jack or heat to fit.</p> : null}
       <p className="mt-2 text-xs text-soft">{sourceWords(point.provenance)}</p>
       {readOnly ? null : (
         <div className="mt-2 flex flex-wrap gap-x-4 max-sm:hidden">
           <Button tone="quiet" className="px-0" onClick={() => send({ type: "row-insert", target })}>Row above</Button>
+          <Button tone="quiet" className="px-0" onClick={() => send({ type: "row-double", target })}>Double</Button>
           <Button tone="quiet" className="px-0" onClick={() => send({ type: "row-move", target, by: -1 })}>Move up</Button>
           <Button tone="quiet" className="px-0" onClick={() => send({ type: "row-move", target, by: 1 })}>Move down</Button>
           <Button tone="quiet" className="px-0" onClick={() => send({ type: "row-remove", target })}>Remove row</Button>

@@ -6,11 +6,13 @@ import { COLUMNS, nearSideAt, type Column } from "./cell-commit";
 import { blockOf, isBlock } from "./block";
 import { rowCount } from "./cursor-steps";
 import { pointPlace } from "./document-edits";
+import { useEditor } from "./editor-context";
 import type { Draft, EditorState } from "./editor-types";
 import { COLUMN_LABEL } from "./grid-cell";
 import { itemEcho } from "./item-text";
 import { GRID_COLUMNS, PointRow } from "./point-row";
 import { meetsAt } from "./loop-entry";
+import { pointUnder } from "./pointed-store";
 import { isTouchScreen } from "./touch-screen";
 
 export interface PointGridProps {
@@ -21,13 +23,14 @@ export interface PointGridProps {
 /** The keyboard grid: a group of rows per run, each ending in an empty row that takes the next point. */
 export function PointGrid({ state, problems }: PointGridProps) {
   const box = useRef<HTMLDivElement>(null);
+  const { pointed } = useEditor();
   useCursorFocus(box, state);
   const severities = useMemo(() => worstByPoint(problems), [problems]);
   const drafts = useMemo(() => draftsByRow(state.drafts), [state.drafts]);
   const { document, emptyRows } = state;
   const firstRows = useMemo(() => document.runs.map((_, index) => rowsBefore(document, index, emptyRows) + 1), [document, emptyRows]);
   return (
-    <div ref={box} role="grid" aria-label={`Points of line ${document.number}`} aria-multiselectable aria-rowcount={rowsBefore(document, document.runs.length, emptyRows)} aria-colcount={COLUMNS.length + 1} className="min-w-0">
+    <div ref={box} onPointerOver={(event) => pointed.set(pointUnder(event.target))} onPointerLeave={() => pointed.set(null)} role="grid" aria-label={`Points of line ${document.number}`} aria-multiselectable aria-rowcount={rowsBefore(document, document.runs.length, emptyRows)} aria-colcount={COLUMNS.length + 1} className="min-w-0">
       <GridHead />
       {document.runs.map((run, index) => (
         <RunRows key={run.id} run={run} index={index} first={firstRows[index] ?? 2} state={state} severities={severities} drafts={drafts} last={index === document.runs.length - 1} />

@@ -12,6 +12,8 @@ export interface ProblemListProps {
   readonly document: RunDocument;
   readonly problems: readonly Problem[];
   readonly waiting: readonly { readonly target: CellTarget; readonly draft: Draft }[];
+  /** The current row's point: its findings stand first. */
+  readonly activePointId: string | null;
   readonly onPoint: (pointId: string) => void;
   readonly onCell: (target: CellTarget) => void;
 }
@@ -19,8 +21,9 @@ export interface ProblemListProps {
 const ORDER: Readonly<Record<Severity, number>> = { stop: 0, warning: 1, note: 2 };
 
 /** Findings in plain words, what stops the sheet first; each leads to its point. */
-export const ProblemList = memo(function ProblemList({ document, problems, waiting, onPoint, onCell }: ProblemListProps) {
-  const sorted = [...problems].sort((a, b) => ORDER[a.severity] - ORDER[b.severity]);
+export const ProblemList = memo(function ProblemList({ document, problems, waiting, activePointId, onPoint, onCell }: ProblemListProps) {
+  const here = (problem: Problem): number => (activePointId !== null && problem.pointId === activePointId ? 0 : 1);
+  const sorted = [...problems].sort((a, b) => here(a) - here(b) || ORDER[a.severity] - ORDER[b.severity]);
   const stops = sorted.filter((problem) => problem.severity === "stop").length + waiting.length;
   if (sorted.length + waiting.length === 0) return <p className="py-2 text-soft">Nothing found. Verify by tape all the same.</p>;
   return (
@@ -34,6 +37,7 @@ export const ProblemList = memo(function ProblemList({ document, problems, waiti
           <Finding
             key={`${problem.code}${problem.pointId ?? ""}${i}`}
             severity={problem.severity}
+            here={here(problem) === 0}
             place={/^point \d/i.test(problem.text) ? "" : placeName(document, problem.pointId)}
             text={problem.text}
             onPress={problem.pointId ? () => onPoint(problem.pointId ?? "") : null}
@@ -44,7 +48,7 @@ export const ProblemList = memo(function ProblemList({ document, problems, waiti
   );
 });
 
-function Finding({ severity, place, text, onPress }: { readonly severity: Severity; readonly place: string; readonly text: string; readonly onPress: (() => void) | null }) {
+function Finding({ severity, here = false, place, text, onPress }: { readonly severity: Severity; readonly here?: boolean; readonly place: string; readonly text: string; readonly onPress: (() => void) | null }) {
   const words = (
     <>
       <span className="mt-0.5 shrink-0">
@@ -56,7 +60,7 @@ function Finding({ severity, place, text, onPress }: { readonly severity: Severi
     </>
   );
   return (
-    <li>
+    <li data-here={here || undefined} className={here ? "bg-dye-tint px-1" : undefined}>
       {onPress ? (
         <button type="button" onClick={onPress} className="flex min-h-11 w-full gap-2 py-2 text-left hover:bg-dye-tint">
           {words}

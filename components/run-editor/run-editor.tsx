@@ -6,20 +6,25 @@ import type { LineDetail, Viewer } from "@/lib/rules/api-types";
 import type { CellTarget } from "./cell-commit";
 import { BlockBar } from "./block-bar";
 import { CloseDialog } from "./close-dialog";
+import type { DimensionEdit } from "./dimension-entry";
 import { runOf } from "./document-edits";
 import { readDraft, type StoredDraft } from "./draft-store";
 import { EditorContext, type Send } from "./editor-context";
-import { EditorHead, type EditorPanel } from "./editor-head";
+import { EditorHead, type EditorLook, type EditorPanel } from "./editor-head";
 import { waitingDrafts } from "./drafts";
 import { CutPanels, FindingPanels } from "./finding-panels";
 import { KeyHelp } from "./key-help";
 import { LineDrawing } from "./line-drawing";
+import { LineTools } from "./line-tools";
+import { NotesDialog } from "./notes-dialog";
 import { PasteReportNotice } from "./paste-report";
 import { PointDetail } from "./point-detail";
 import { PointGrid } from "./point-grid";
 import { ConflictBanner } from "./save-status";
 import { SettingsDrawer } from "./settings-drawer";
 import { LineSheet } from "./line-sheet";
+import { PointedStore } from "./pointed-store";
+import { ShapeDoor } from "./shape-door";
 import { isTouchScreen } from "./touch-screen";
 import { useAutosave } from "./use-autosave";
 import { useBlockText } from "./use-block-text";
@@ -29,8 +34,8 @@ import { useUndoKeys } from "./use-undo-keys";
 
 export interface RunEditorProps {
   readonly line: LineDetail;
-  readonly viewer: Pick<Viewer, "personId" | "name">;
-  /** Reads the line's uploads again. */
+  readonly viewer: Pick<Viewer, "personId" | "name"> & Partial<Pick<Viewer, "role">>;
+  /** Reads the line's uploads and the shop's take-outs again. */
   readonly onUploads: () => Promise<unknown>;
 }
 
@@ -41,16 +46,18 @@ export function RunEditor({ line, viewer, onUploads }: RunEditorProps) {
   const [base] = useState(() => ({ document: line.document, version: draft?.version ?? line.version }));
   const [state, send] = useEditorState(base.document, viewer.name, line.editable);
   const [panel, setPanel] = useState<EditorPanel | null>(null);
-  const [sheetShown, setSheetShown] = useState(false);
+  const [look, setLook] = useState<EditorLook>("isometric");
   const { document, cursor } = state;
   const save = useAutosave({ lineId: line.id, personId: viewer.personId, document, base, enabled: line.editable });
   useRestoredDraft(draft, send);
   const model = useLineModel(useSettledPreview(document, state.preview), line.marks, line.takeOuts);
   const point = runOf(document, cursor.runId)?.points[cursor.row] ?? null;
+  const [pointed] = useState(() => new PointedStore());
   const blockTextNow = useBlockText(state);
-  const doors = useMemo(() => ({ send, openHelp: () => setPanel("help"), readOnly: !line.editable, blockText: blockTextNow }), [send, line.editable, blockTextNow]);
-  const showPoint = useCallback((pointId: string) => send({ type: "show-point", pointId, focus: !isTouchScreen() }), [send]);
+  const doors = useMemo(() => ({ send, openHelp: () => setPanel("help"), readOnly: !line.editable, blockText: blockTextNow, pointed }), [send, line.editable, blockTextNow, pointed]);
+  const showPoint = useCallback((pointId: string, focus = !isTouchScreen()) => send({ type: "show-point", pointId, focus }), [send]);
   const showCell = useCallback((target: CellTarget) => send({ type: "cursor", target, focus: true }), [send]);
+  const takeNumber = useCallback((edit: DimensionEdit, text: string) => send({ type: "commit", target: edit.target, text, step: "stay" }), [send]);
   const setView = useCallback((view: View | null) => send({ type: "document-patch", patch: { view } }), [send]);
   const waiting = useMemo(() => waitingDrafts(document, state.drafts), [document, state.drafts]);
   useUndoKeys(send, line.editable);
@@ -63,8 +70,8 @@ export function RunEditor({ line, viewer, onUploads }: RunEditorProps) {
         save={save}
         canUndo={state.past.length > 0}
         canRedo={state.future.length > 0}
-        sheetShown={sheetShown}
-        onSheet={() => setSheetShown((now) => !now)}
+        look={look}
+        onLook={setLook}
         onPanel={setPanel}
       />
       {line.editable ? null : <Notice className="mb-3">You read this line; a detailer or the owner changes it.</Notice>}
@@ -83,7 +90,7 @@ export function RunEditor({ line, viewer, onUploads }: RunEditorProps) {
       <div className="flex flex-col gap-x-5 gap-y-4 lg:grid lg:grid-cols-[minmax(36rem,46fr)_minmax(0,54fr)]">
         <div className="contents lg:order-2 lg:block lg:min-w-0">
           <div className="order-1 flex min-h-64 flex-col lg:h-[max(30rem,calc(100dvh-13.5rem))]">
-            {sheetShown ? <LineSheet line={line} document={document} model={model} /> : <LineDrawing model={model} view={document.view} onView={line.editable ? setView : null} activePointId={point?.id ?? null} onPoint={showPoint} />}
+            {look === "sheet" ? <LineSheet line={line} document={document} model={model} /> : look === "shape" ? <ShapeDoor model={model} activePointId={point?.id ?? null} /> : <LineDrawing model={model} view={document.view} onView={line.editable ? setView : null} activePointId={point?.id ?? null} onPoint={showPoint} document={document} onMove={line.editable ? takeNumber : null} />}
           </div>
           <div className="order-3 mt-4 min-w-0">
             <CutPanels line={line} model={model} activePointId={point?.id ?? null} onPoint={showPoint} />
@@ -96,15 +103,25 @@ export function RunEditor({ line, viewer, onUploads }: RunEditorProps) {
             <div className="border-t border-ink lg:max-h-[max(24rem,calc(100dvh-19rem))] lg:overflow-y-auto lg:border-x lg:border-b">
               <PointGrid state={state} problems={model.problems} />
             </div>
-            {point ? <PointDetail document={document} point={point} /> : null}
+            {point ? <PointDetail document={document} point={point} problems={model.problems} role={viewer.role ?? null} onTakeOut={onUploads} /> : null}
           </div>
           <div className="order-4 mt-4 min-w-0">
-            <FindingPanels line={line} model={model} waiting={waiting} onPoint={showPoint} onCell={showCell} onUploads={onUploads} />
+            <FindingPanels line={line} model={model} waiting={waiting} activePointId={point?.id ?? null} onPoint={showPoint} onCell={showCell} onUploads={onUploads} />
           </div>
         </div>
       </div>
       <KeyHelp open={panel === "help"} units={document.settings.units} onClose={close} />
       <SettingsDrawer open={panel === "settings"} document={document} editable={line.editable} onChange={(patch) => send({ type: "document-patch", patch })} onClose={close} />
+      <NotesDialog open={panel === "notes"} document={document} spools={model.spools.map((spool) => spool.letter)} editable={line.editable} onChange={(patch) => send({ type: "document-patch", patch })} onClose={close} />
+      <LineTools
+        open={panel === "line"}
+        line={line}
+        document={document}
+        pointId={point?.id ?? null}
+        onDocument={({ runs, notes, title, view }) => send({ type: "document-patch", patch: { runs, notes, title, view } })}
+        onSheets={(sheets) => send({ type: "document-patch", patch: { sheets } })}
+        onClose={close}
+      />
       <CloseDialog
         open={panel === "closing"}
         model={model}

@@ -3,10 +3,11 @@ import clsx from "clsx";
 import { useState } from "react";
 import type { RunDocument } from "@/iso";
 import { Button } from "@/components/ui/button";
-import { apiGet, apiSend, failureText } from "@/components/ui/fetcher";
+import { apiGet, failureText } from "@/components/ui/fetcher";
 import { timeText } from "@/components/ui/format";
 import { Notice } from "@/components/ui/notice";
 import type { LineDetail } from "@/lib/rules/api-types";
+import { saveCopy } from "./save-copy";
 import { clockText, saveWords, type SaveState } from "./save-state";
 
 /** One line of words: whether the server has what is on screen. */
@@ -48,7 +49,7 @@ export function ConflictBanner({ lineId, state, mine, onTheirs }: ConflictBanner
     await work().catch((failure: unknown) => setTrouble(failureText(failure)));
     setBusy(false);
   };
-  const keepCopy = () => run(async () => setCopy(await saveCopy(lineId, mine)));
+  const keepCopy = () => run(async () => setCopy(await saveCopy(lineId, mine, copyNumber(mine.number))));
   const loadTheirs = () => run(async () => onTheirs(await apiGet<LineDetail>(`/api/lines/${lineId}`)));
   return (
     <Notice tone="trouble" word="Saved by someone else" className="mb-3">
@@ -78,13 +79,8 @@ export function ConflictBanner({ lineId, state, mine, onTheirs }: ConflictBanner
   );
 }
 
-/** Copies the line, then writes this editor's document into the copy. */
-async function saveCopy(lineId: string, mine: RunDocument): Promise<{ readonly id: string; readonly number: string }> {
-  const number = `${mine.number.slice(0, 36)} copy, ${timeText(new Date().toISOString())}`.slice(0, 60);
-  const { id } = await apiSend<{ id: string }>("POST", `/api/lines/${lineId}/copy`, { number, title: mine.title });
-  const made = await apiGet<LineDetail>(`/api/lines/${id}`);
-  await apiSend("PUT", `/api/lines/${id}`, { version: made.version, document: { ...mine, number: made.document.number } });
-  return { id, number };
+function copyNumber(number: string): string {
+  return `${number.slice(0, 36)} copy, ${timeText(new Date().toISOString())}`;
 }
 
 export function downloadDocument(mine: RunDocument): void {

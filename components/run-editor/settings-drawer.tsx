@@ -4,7 +4,7 @@ import { type LineSettings, type RunDocument, type UnitSystem } from "@/iso";
 import { LineSettingsForm } from "@/components/jobs/line-settings-form";
 import { Button } from "@/components/ui/button";
 import { Dialog } from "@/components/ui/dialog";
-import { TextArea, TextField } from "@/components/ui/field";
+import { TextField } from "@/components/ui/field";
 import { Notice } from "@/components/ui/notice";
 import { lineSettingsIn } from "@/lib/rules/default-settings";
 import { withUnits, type UnitMeaning } from "./unit-change";
@@ -13,11 +13,11 @@ export interface SettingsDrawerProps {
   readonly open: boolean;
   readonly document: RunDocument;
   readonly editable: boolean;
-  readonly onChange: (patch: Partial<Pick<RunDocument, "settings" | "notes" | "title" | "runs">>) => void;
+  readonly onChange: (patch: Partial<Pick<RunDocument, "settings" | "title" | "runs">>) => void;
   readonly onClose: () => void;
 }
 
-/** What this line owns: pipe, fittings, allowances, limits, units, texts as entered, notes. */
+/** What this line owns: pipe, fittings, allowances, limits, units, texts as entered. Notes have a dialog of their own. */
 export function SettingsDrawer({ open, document, editable, onChange, onClose }: SettingsDrawerProps) {
   return (
     <Dialog open={open} onClose={onClose} title={`Settings of line ${document.number}`} wide>
@@ -43,16 +43,6 @@ function HeadFields({ document, editable, onChange }: Omit<SettingsDrawerProps, 
   return (
     <div className="grid gap-4">
       <TextField label="Title" maxLength={120} defaultValue={document.title} readOnly={!editable} onBlur={(event) => event.target.value !== document.title && onChange({ title: event.target.value })} />
-      <TextArea
-        label="Notes printed on the sheet"
-        hint="One note a line, at most 40."
-        defaultValue={document.notes.join("\n")}
-        readOnly={!editable}
-        onBlur={(event) => {
-          const notes = event.target.value.split("\n").map((note) => note.trim().slice(0, 2_000)).filter((note) => note !== "").slice(0, 40);
-          if (notes.join("\n") !== document.notes.join("\n")) onChange({ notes });
-        }}
-      />
     </div>
   );
 }

@@ -22,7 +22,7 @@ export interface BuildContext {
   bendRadius(radius: "LR" | "SR", nps: Nps): number | null;
   /** A take-out without any finding about it; null when nobody has it. */
   peek(key: string): number | null;
-  report(code: string, severity: Severity, text: string, at: { pointId: string | null; runId: string | null }): void;
+  report(code: string, severity: Severity, text: string, at: { pointId: string | null; runId: string | null }, catalogueKey?: string): void;
   readonly problems: readonly Problem[];
 }
 
@@ -35,8 +35,8 @@ export function buildContext(settings: LineSettings, takeOuts: readonly TakeOutW
   const found = new Map<string, Found>();
   const told = new Set<string>();
   const words = [...takeOuts];
-  const report: BuildContext["report"] = (code, severity, text, at) => {
-    problems.push({ code, severity, text, pointId: at.pointId, runId: at.runId });
+  const report: BuildContext["report"] = (code, severity, text, at, catalogueKey) => {
+    problems.push({ code, severity, text, pointId: at.pointId, runId: at.runId, ...(catalogueKey === undefined ? {} : { catalogueKey }) });
   };
   return {
     settings,
@@ -55,10 +55,10 @@ export function buildContext(settings: LineSettings, takeOuts: readonly TakeOutW
       if (!known) found.set(key, value);
       const where = { pointId: at.point.id, runId: at.runId };
       if (value.missing) {
-        report("take-out-missing", "stop", `The tables have no ${what} (${at.label}). Measure the part and enter the shop's own value.`, where);
+        report("take-out-missing", "stop", `The tables have no ${what} (${at.label}). Measure the part and enter the shop's own value.`, where, key);
       } else if (value.unconfirmed && !told.has(key)) {
         told.add(key);
-        report("take-out-unconfirmed", "warning", `The ${what} (${at.label}) is from memory: measure one and confirm it, or enter the shop's own value.`, where);
+        report("take-out-unconfirmed", "warning", `The ${what} (${at.label}) is from memory: measure one and confirm it, or enter the shop's own value.`, where, key);
       }
       return { key, ...value };
     },

@@ -43,6 +43,11 @@ function cutLengths(): string[] {
   return [...document.querySelectorAll("[data-cut]")].map((cell) => cell.textContent ?? "");
 }
 
+/** What was sent to keep the line, in order. */
+function saves(): readonly (readonly [unknown, RequestInit | undefined])[] {
+  return vi.mocked(fetch).mock.calls.filter(([, request]) => request?.method === "PUT") as never;
+}
+
 function open(): void {
   render(<RunEditor line={lineDetail()} viewer={{ personId: "person-1", name: "R. Tanaka" }} onUploads={async () => undefined} />);
 }
@@ -130,7 +135,7 @@ describe("typing a run by keyboard alone", () => {
     keys.type("wn");
     keys.press("Enter");
     await act(async () => vi.advanceTimersByTimeAsync(900));
-    const [path, request] = vi.mocked(fetch).mock.calls[0] ?? [];
+    const [path, request] = saves()[0] ?? [];
     expect(path).toBe("/api/lines/line-1");
     expect(request?.method).toBe("PUT");
     expect(JSON.parse(String(request?.body))).toMatchObject({ version: 1, document: { number: "4-CW-101" } });
@@ -151,7 +156,7 @@ describe("typing a run by keyboard alone", () => {
     keys.type("e 1-0");
     keys.press("Enter");
     await act(async () => vi.advanceTimersByTimeAsync(5_000));
-    expect(fetch).toHaveBeenCalledTimes(1);
+    expect(saves()).toHaveLength(1);
     vi.useRealTimers();
   });
 
@@ -176,7 +181,7 @@ describe("typing a run by keyboard alone", () => {
     writeDraft("line-1", "person-1", { document: { ...lineDetail().document, title: "Mine" }, version: 1, at: "2026-03-01T09:00:00Z" });
     render(<RunEditor line={lineDetail({ version: 5 })} viewer={{ personId: "person-1", name: "R. Tanaka" }} onUploads={async () => undefined} />);
     await act(async () => vi.advanceTimersByTimeAsync(900));
-    expect(JSON.parse(String(vi.mocked(fetch).mock.calls[0]?.[1]?.body))).toMatchObject({ version: 1, document: { title: "Mine" } });
+    expect(JSON.parse(String(saves()[0]?.[1]?.body))).toMatchObject({ version: 1, document: { title: "Mine" } });
     vi.useRealTimers();
   });
 
