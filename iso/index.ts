@@ -52,6 +52,7 @@ export { drawModel } from "./draw/draw-model";
 export { drawSheets, type SheetsOptions } from "./draw/draw-sheets";
 export { proposeView } from "./draw/orient";
 export * from "./draw/svg";
+export { endKeys, jointKeys, partKeys } from "./draw/legend-keys";
 export { inkBounds } from "./draw/item-bounds";
 
 // sheet
@@ -59,6 +60,8 @@ export * from "./sheet/sheet-types";
 export * from "./sheet/sheet-size";
 export * from "./sheet/compose";
 export * from "./sheet/state-mark";
+export { LEGEND_WORDS } from "./sheet/legend";
+export { legendPicture } from "./sheet/legend-pictures";
 export { sheetFacts, sizeText as pipeSizeText, type SheetFacts } from "./sheet/sheet-facts";
 
 // exchange
