@@ -1,0 +1,18 @@
+/** Whether a text is well-formed XML, asked of a parser that is not ours. */
+
+interface Parser {
+  readonly JSDOM: new (text: string, options: { readonly contentType: string }) => { readonly window: { readonly document: Document } };
+}
+
+/** @returns null when it is a well-formed SVG, else the parser's words. */
+export async function svgFault(text: string): Promise<string | null> {
+  // The package brings no types of its own.
+  const name: string = "jsdom";
+  const { JSDOM } = (await import(name)) as Parser;
+  try {
+    const { documentElement } = new JSDOM(text, { contentType: "image/svg+xml" }).window.document;
+    return documentElement.nodeName === "svg" ? null : documentElement.nodeName;
+  } catch (error) {
+    return error instanceof Error ? error.message : "not XML";
+  }
+}
