@@ -5,7 +5,7 @@
  * A plan is what does not depend on view or stretch; a layout is one solution in flat arrays; placed() spells it out.
  */
 import type { PaperBox, PaperPoint, Vec3 } from "../geometry/types";
-import { AXES, clustersOf, orderRows, type Axis, type AxisClusters } from "./clusters";
+import { AXES, clustersOf, numberedSketch, orderRows, type Axis, type Numbered } from "./clusters";
 import { compactRows, rowsWithoutCycles, rowTable, type Row, type RowTable } from "./compact";
 import type { MeasureText } from "./drawing-types";
 import { clearOfAxes, clearances, mendOffAxis } from "./off-axis";
@@ -15,7 +15,6 @@ import { edgeNeed, targetLength, type EdgeNeed } from "./words";
 
 export interface PlacePlan {
   readonly sketch: Sketch;
-  readonly clusters: readonly [AxisClusters, AxisClusters, AxisClusters];
   /** Legs that make rows along each axis, and the order rows, all free of cycles. */
   readonly axes: readonly [AxisPlan, AxisPlan, AxisPlan];
   /** Legs that are drawn, and their ends as places in `ids`. */
@@ -79,31 +78,30 @@ export type ExtraRows = readonly (readonly Row[])[];
 export const NO_ROWS: ExtraRows = [[], [], []];
 
 export function placePlan(sketch: Sketch, measure: MeasureText): PlacePlan {
-  const ids = [...sketch.vertices.keys()];
-  const place = new Map(ids.map((id, i) => [id, i]));
-  const edges = sketch.edges.filter((edge) => edge.kind !== "none");
-  const clusters = AXES.map((axis) => clustersOf(sketch, axis)) as unknown as PlacePlan["clusters"];
+  const numbers = numberedSketch(sketch);
+  const drawn = numbers.edges.flatMap((edge, i) => (edge.kind === "none" ? [] : [i]));
+  const edges = drawn.map((i) => numbers.edges[i]!);
+  const [from, to] = [Int32Array.from(drawn, (i) => numbers.from[i]!), Int32Array.from(drawn, (i) => numbers.to[i]!)];
   return {
-    sketch, clusters, ids, edges,
-    axes: AXES.map((axis) => axisPlan(sketch, axis, clusters[axis], ids, edges)) as unknown as PlacePlan["axes"],
+    sketch, ids: numbers.ids, edges, from, to,
+    axes: AXES.map((axis) => axisPlan(numbers, axis, edges, from, to)) as unknown as PlacePlan["axes"],
     needs: edges.map((edge) => edgeNeed(sketch.model, edge, measure)),
     offsets: edges.flatMap((edge, index) => (edge.kind === "offset" ? [{ index, clear: clearances(sketch, edge) }] : [])),
-    from: Int32Array.from(edges, (edge) => place.get(edge.from) ?? 0),
-    to: Int32Array.from(edges, (edge) => place.get(edge.to) ?? 0),
   };
 }
 
-function axisPlan(sketch: Sketch, axis: Axis, clusters: AxisClusters, ids: readonly string[], edges: readonly SketchEdge[]): AxisPlan {
+function axisPlan(numbers: Numbered, axis: Axis, edges: readonly SketchEdge[], starts: Int32Array, ends: Int32Array): AxisPlan {
+  const clusters = clustersOf(numbers, axis);
   const wanted: PlanRow[] = [];
   edges.forEach((edge, leg) => {
     if (edge.real[axis] === 0) return;
-    const from = clusters.of.get(edge.from) ?? 0;
-    const to = clusters.of.get(edge.to) ?? 0;
+    const from = clusters.of[starts[leg]!]!;
+    const to = clusters.of[ends[leg]!]!;
     wanted.push(edge.real[axis] > 0 ? { a: from, b: to, least: 0, leg } : { a: to, b: from, least: 0, leg });
   });
-  for (const { a, b, least } of orderRows(sketch, axis, clusters)) wanted.push({ a, b, least, leg: -1 });
+  for (const { a, b, least } of orderRows(numbers, axis, clusters)) wanted.push({ a, b, least, leg: -1 });
   const rows = rowsWithoutCycles(clusters.count, wanted);
-  return { of: Int32Array.from(ids, (id) => clusters.of.get(id) ?? 0), count: clusters.count, rows, ...axisRows(clusters.count, rows), more: new WeakMap() };
+  return { of: clusters.of, count: clusters.count, rows, ...axisRows(clusters.count, rows), more: new WeakMap() };
 }
 
 function axisRows(count: number, rows: readonly PlanRow[]): AxisRows {

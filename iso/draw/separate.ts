@@ -5,17 +5,20 @@
  */
 import { AXES, type Axis } from "./clusters";
 import type { Row } from "./compact";
+import { mendOffAxis } from "./off-axis";
 import { layoutBox, layoutLines, layoutOf, solveAxis, wishesAt, type ExtraRows, type Layout, type PlacePlan, type Wishes } from "./place";
 import type { Projection } from "./project";
 import * as size from "./sizes";
 
 const ROUNDS = 12;
-/** Trials in all: large lines stop here, so that editing stays quick. */
-const TRIALS = 48;
+/** Trials in all: large lines stop here, so that editing stays quick; later where pipe still lies on pipe. */
+const TRIALS = 40;
+const TRIALS_LAID = 240;
 /** Pairs looked at in one round, worst first. */
 const PAIRS = 3;
-/** Paper added between two that are too close. */
-const STEP = 9;
+/** Paper added between two that are too close; and more where one lies on the other and a small step may only move it onto a third. */
+const STEPS: readonly number[] = [9];
+const STEPS_LAID: readonly number[] = [9, 17, 30];
 /** A gain smaller than this is not worth a row. */
 const LEAST_GAIN = 0.5;
 /** Price of a millimetre of larger paper against one of closeness. */
@@ -51,11 +54,16 @@ export function separateRows(plan: PlacePlan, projection: Projection, stretch: n
   const wishes = wishesAt(plan, projection, stretch);
   let now = judged(plan, start, layoutOf(plan, projection, wishes, start));
   let trials = 0;
-  for (let round = 0; round < ROUNDS && now.conflicts.length > 0 && trials < TRIALS; round++) {
+  for (let round = 0; round < ROUNDS; round++) {
+    const [worst] = now.conflicts;
+    const most = worst && worst.cost >= PRICE_LAID ? TRIALS_LAID : TRIALS;
+    if (!worst || trials >= most) break;
     let best: Trial | null = null;
-    for (const conflict of now.conflicts.slice(0, PAIRS)) {
+    for (const [rank, conflict] of now.conflicts.entries()) {
+      // The worst few are weighed against each other; the rest only while those cannot be helped.
+      if (trials >= most || (rank >= PAIRS && best)) break;
       for (const { axis, row } of optionsFor(plan, now.layout, conflict)) {
-        if (trials++ >= TRIALS) break;
+        if (trials++ >= most) break;
         const rows = now.rows.map((list, at) => (at === axis ? [...list, row] : list));
         const next = judged(plan, rows, movedLayout(plan, now.layout, wishes, axis, rows));
         if (next.cost < (best?.cost ?? now.cost - LEAST_GAIN)) best = next;
@@ -67,12 +75,14 @@ export function separateRows(plan: PlacePlan, projection: Projection, stretch: n
   return now.rows;
 }
 
-/** Only the axis with the new row has to be solved again, but off-axis legs share all of them. */
+/** Only the axis with the new row has to be solved again; off-axis legs it left standing badly are mended. */
 function movedLayout(plan: PlacePlan, layout: Layout, wishes: Wishes, axis: Axis, rows: ExtraRows): Layout {
-  if (plan.offsets.length > 0) return layoutOf(plan, layout.projection, { least: wishes.least.slice(), target: wishes.target.slice() }, rows);
   const x: [Float64Array, Float64Array, Float64Array] = [...layout.x];
   x[axis] = solveAxis(plan, wishes, axis, rows[axis] ?? []);
-  return { projection: layout.projection, x };
+  const moved: Layout = { projection: layout.projection, x };
+  if (plan.offsets.length === 0) return moved;
+  const own: Wishes = { least: wishes.least.slice(), target: wishes.target.slice() };
+  return mendOffAxis(plan, moved, own, (one) => solveAxis(plan, own, one, rows[one] ?? []));
 }
 
 function judged(plan: PlacePlan, rows: ExtraRows, layout: Layout): Trial {
@@ -84,7 +94,7 @@ function judged(plan: PlacePlan, rows: ExtraRows, layout: Layout): Trial {
 }
 
 /** Rows that would push the two apart along an axis on which they do not overlap. */
-function optionsFor(plan: PlacePlan, layout: Layout, { a, b }: Conflict): readonly { readonly axis: Axis; readonly row: Row }[] {
+function optionsFor(plan: PlacePlan, layout: Layout, { a, b, cost }: Conflict): readonly { readonly axis: Axis; readonly row: Row }[] {
   return AXES.flatMap((axis) => {
     const { of } = plan.axes[axis];
     const sorted = (edge: number): readonly [number, number] => {
@@ -96,7 +106,7 @@ function optionsFor(plan: PlacePlan, layout: Layout, { a, b }: Conflict): readon
     const pairs = [[aHigh, bLow], [bHigh, aLow], [aLow, bLow], [bLow, aLow]] as const;
     return pairs
       .filter(([low, high], i) => low < high && pairs.findIndex((pair) => pair[0] === low && pair[1] === high) === i)
-      .map(([low, high]) => ({ axis, row: { a: low, b: high, least: layout.x[axis][high]! - layout.x[axis][low]! + STEP, target: null } }));
+      .flatMap(([low, high]) => (cost >= PRICE_LAID ? STEPS_LAID : STEPS).map((step) => ({ axis, row: { a: low, b: high, least: layout.x[axis][high]! - layout.x[axis][low]! + step, target: null } })));
   });
 }
 
@@ -122,10 +132,11 @@ export function conflictsOf(plan: PlacePlan, lines: Float64Array): readonly Conf
 }
 
 function closeness(ax: number, ay: number, bx: number, by: number, cx: number, cy: number, dx: number, dy: number): number {
-  const ends = [pointGap(ax, ay, cx, cy, dx, dy), pointGap(bx, by, cx, cy, dx, dy), pointGap(cx, cy, ax, ay, bx, by), pointGap(dx, dy, ax, ay, bx, by)] as const;
-  let touching = 0;
-  for (const gap of ends) touching += Math.max(0, 1 - gap / size.NEAR_TOUCH);
-  const laid = laidLength(ax, ay, bx, by, cx, cy, dx, dy);
+  const near = size.NEAR_TOUCH;
+  const p = Math.min(1, pointGap(ax, ay, cx, cy, dx, dy) / near), q = Math.min(1, pointGap(bx, by, cx, cy, dx, dy) / near);
+  const r = Math.min(1, pointGap(cx, cy, ax, ay, bx, by) / near), s = Math.min(1, pointGap(dx, dy, ax, ay, bx, by) / near);
+  const touching = 4 - p - q - r - s;
+  const laid = touching > 1 ? laidLength(ax, ay, bx, by, cx, cy, dx, dy) : 0;
   if (laid > 0) return PRICE_LAID + PRICE_LAID_MM * laid + PRICE_TOUCH * touching;
   if (crosses(ax, ay, bx, by, cx, cy, dx, dy)) return touching > 0 ? 2 * PRICE_CROSSING + PRICE_TOUCH * touching : PRICE_CROSSING;
   // Two segments that do not cross are nearest at an end.
@@ -140,8 +151,12 @@ function pointGap(px: number, py: number, ax: number, ay: number, bx: number, by
   return Math.sqrt(ox * ox + oy * oy);
 }
 
+/** On which side of p-q a point r lies, as twice the area of the three. */
+function side(px: number, py: number, qx: number, qy: number, rx: number, ry: number): number {
+  return (qx - px) * (ry - py) - (qy - py) * (rx - px);
+}
+
 function crosses(ax: number, ay: number, bx: number, by: number, cx: number, cy: number, dx: number, dy: number): boolean {
-  const side = (px: number, py: number, qx: number, qy: number, rx: number, ry: number): number => (qx - px) * (ry - py) - (qy - py) * (rx - px);
   return side(ax, ay, bx, by, cx, cy) * side(ax, ay, bx, by, dx, dy) < 0 && side(cx, cy, dx, dy, ax, ay) * side(cx, cy, dx, dy, bx, by) < 0;
 }
 
@@ -151,8 +166,7 @@ export function laidLength(ax: number, ay: number, bx: number, by: number, cx: n
   const length = Math.sqrt(wx * wx + wy * wy);
   const other = Math.sqrt(vx * vx + vy * vy);
   if (length === 0 || other === 0 || Math.abs(wx * vy - wy * vx) > TOGETHER * length * other) return 0;
-  const beside = (px: number, py: number): number => Math.abs((px - ax) * wy - (py - ay) * wx) / length;
-  if (Math.min(beside(cx, cy), beside(dx, dy)) > IN_ONE_MM) return 0;
+  if (Math.min(Math.abs((cx - ax) * wy - (cy - ay) * wx), Math.abs((dx - ax) * wy - (dy - ay) * wx)) > IN_ONE_MM * length) return 0;
   const s = ((cx - ax) * wx + (cy - ay) * wy) / length, t = ((dx - ax) * wx + (dy - ay) * wy) / length;
   return Math.max(0, Math.min(length, Math.max(s, t)) - Math.max(0, Math.min(s, t)));
 }
