@@ -1,10 +1,10 @@
 /** Sixth pass: each group of parts becomes a spool with its list, weight, box and content key. */
 import type { BuildContext } from "./build-context";
 import type { JointDraft } from "./build-types";
-import { formatLength } from "../units/format";
-import type { Point, RatingClass, RunDocument } from "./document";
+import type { Point, RunDocument } from "./document";
 import type { Parts, SpoolGroup } from "./group-spools";
 import type { Leg, Spool } from "./model-types";
+import { shippedSpool } from "./ship-spool";
 import { spoolBody } from "./spool-body";
 import { spoolContent } from "./spool-content";
 import { spoolMaterials } from "./spool-materials";
@@ -25,19 +25,17 @@ export function assembleSpools(
   }
   const points = new Map<string, Point>(document.runs.flatMap((r) => r.points.map((p) => [p.id, p] as const)));
   const legById = new Map(legs.map((l) => [l.id, l]));
-  const classes = new Map(parts.components.map((c) => [c.id, c.ratingClass]));
-  const classOf = (j: JointDraft): RatingClass | null => (j.a === null ? null : classes.get(j.a)) ?? (j.b === null ? null : classes.get(j.b)) ?? null;
   const byId = { components: new Map(parts.components.map((c) => [c.id, c])), pieces: new Map(parts.pieces.map((p) => [p.key, p])) };
   return groups.map((g, i) => {
     const components = g.componentIds.flatMap((id) => byId.components.get(id) ?? []);
     const pieces = g.pieceKeys.flatMap((key) => byId.pieces.get(key) ?? []);
     const joints = carried[i] ?? [];
-    const body = spoolBody(components, pieces, ctx.units);
+    const body = spoolBody(components, pieces, legById, ctx.units);
     const letter = letters[i] ?? "?";
-    checkShipping(letter, body.boxMm, components[0]?.pointId ?? null, ctx);
+    const shipping = shippedSpool({ letter, components, pieces, joints, boxMm: body.boxMm }, ctx);
     return {
-      letter, anchor: g.anchor, componentIds: g.componentIds, pieceKeys: g.pieceKeys, jointKeys: joints.map((j) => j.key), ...body,
-      materials: spoolMaterials({ components, pieces, bolted: joints.filter((j) => j.kind === "bolted" && j.gasketId !== null), loose: g.loose, classOf }, ctx.units),
+      letter, anchor: g.anchor, componentIds: g.componentIds, pieceKeys: g.pieceKeys, jointKeys: joints.map((j) => j.key), ...body, shippingMm: shipping,
+      materials: spoolMaterials({ components, pieces, loose: g.loose }, ctx.units),
       content: spoolContent({ components, pieces, joints: touching[i] ?? [], loose: g.loose, points, legs: legById }, document),
     };
   });
@@ -45,13 +43,4 @@ export function assembleSpools(
 
 function groupIndex(id: string | null, groupOf: ReadonlyMap<string, number>): number | null {
   return id === null ? null : (groupOf.get(id) ?? null);
-}
-
-/** Compares the boxes side by side, longest with longest (a spool may be laid any way round). */
-function checkShipping(letter: string, boxMm: readonly [number, number, number], pointId: string | null, ctx: BuildContext): void {
-  const have = [...boxMm].sort((a, b) => b - a);
-  const room = [...ctx.settings.shippingBoxMm].sort((a, b) => b - a);
-  if (have.every((mm, i) => mm <= (room[i] ?? 0))) return;
-  const say = have.map((mm) => formatLength(mm, ctx.units)).join(" x ");
-  ctx.report("shipping-box", "warning", `Spool ${letter} is ${say}, outside the shipping box: put a field weld where it should come apart.`, { pointId, runId: null });
 }

@@ -32,7 +32,9 @@ export interface PlacedPoint {
   /** What the line carries before and after the point. */
   readonly serviceIn: Service;
   readonly serviceOut: Service;
-  /** Branch runs that leave from here, in document order. */
+  /** The last point of a run that comes back: it stands for the fitting met there and puts nothing in itself. */
+  readonly closesLoop?: boolean;
+  /** Branch runs that leave from here, in document order; then those that come back to here. */
   readonly branches: readonly BranchHead[];
 }
 
@@ -61,6 +63,16 @@ export interface PlacedRun {
   readonly parentUid: string | null;
   /** Which branch of that point this is: 0 for the first. */
   readonly branchIndex: number;
+  /** Set when the run comes back to a fitting of the line. */
+  readonly loop?: LoopEnd;
+}
+
+/** Where a run that comes back ends: a branch port, or the open side of another run's end. */
+export interface LoopEnd {
+  readonly targetUid: string;
+  readonly port: "branch" | "in" | "out";
+  readonly branchIndex: number;
+  readonly closes: boolean;
 }
 
 /** A weld (or an open end) as one side of a fitting offers it to the pipe that comes there. */

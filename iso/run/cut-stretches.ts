@@ -5,9 +5,9 @@
 import { FACE_TO_FACE_MM } from "../geometry/tolerances";
 import { vecAddScaled, vecDot, vecSub } from "../geometry/vec3";
 import { sentenceStart, type BuildContext } from "./build-context";
-import type { Fitting, JointDraft, PieceDraft, PlacedPoint, PlacedRun, Rider, Side, Stretch } from "./build-types";
+import type { Fitting, JointDraft, LoopEnd, PieceDraft, PlacedPoint, PlacedRun, Rider, Side, Stretch } from "./build-types";
 import { boltedParts } from "./bolted-face";
-import { makeJoint, reachOf } from "./fit-common";
+import { endSide, fittingOf, makeJoint, reachOf } from "./fit-common";
 import { checkPiece } from "./check-piece";
 import type { RatingClass } from "./document";
 import type { Component, Leg } from "./model-types";
@@ -34,7 +34,7 @@ export function runStretches(run: PlacedRun, fittings: ReadonlyMap<string, Fitti
   let riders: Rider[] = [];
   let passed: PlacedPoint[] = [];
   run.points.forEach((p, i) => {
-    const fitting = fittings.get(p.uid);
+    const fitting = p.closesLoop && run.loop ? loopFitting(run.loop, fittings) : fittings.get(p.uid);
     const leg = run.legs[i];
     if (!fitting) return;
     if (leg) legs.push(leg);
@@ -48,6 +48,12 @@ export function runStretches(run: PlacedRun, fittings: ReadonlyMap<string, Fitti
     }
   });
   return out;
+}
+
+/** What the last leg of a loop meets: the free port of the fitting it comes back to; nothing when it does not close. */
+function loopFitting({ targetUid, port, branchIndex, closes }: LoopEnd, fittings: ReadonlyMap<string, Fitting>): Fitting {
+  const met = closes ? fittings.get(targetUid) : undefined;
+  return fittingOf({ in: (port === "branch" ? met?.branches[branchIndex] : met?.[port]) ?? endSide(), out: endSide() });
 }
 
 /** What rides on a point where the pipe is cut sits on the pipe after it; before it at a run's end, and in a run turned round. */

@@ -137,6 +137,8 @@ function referenceProblems(document: RunDocument): string[] {
   }
   if (seen.size > MAX_POINTS) messages.push(`A line may hold ${MAX_POINTS} points; this one has ${seen.size}.`);
   document.runs.forEach((run, index) => {
+    const loops = run.to !== undefined && (!seen.has(run.to) || run.points.some((p) => p.id === run.to));
+    if (loops) messages.push(`${run.name || (index === 0 ? "The main run" : `Branch ${run.id}`)} comes back to ${seen.has(run.to ?? "") ? "a point of its own" : "a point that is not there"}.`);
     if (index === 0 && run.from !== null) messages.push("The main run cannot be a branch.");
     if (index > 0 && (run.from === null || !seen.has(run.from))) messages.push(`Branch ${run.name || run.id} leaves from a point that is not there.`);
   });

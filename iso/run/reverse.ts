@@ -5,7 +5,8 @@
  * `flipped` remembers the turn, so that joints keep their keys and with them their marks.
  */
 import type { Vec3 } from "../geometry/types";
-import { vecSub } from "../geometry/vec3";
+import { SAME_POINT_MM, SQUARE_RAD } from "../geometry/tolerances";
+import { vecDistance, vecSub } from "../geometry/vec3";
 import { buildContext } from "./build-context";
 import type { PlacedPoint, PlacedRun } from "./build-types";
 import type { Item, LineSettings, Offset, Pipe, Point, Provenance, Run, RunDocument } from "./document";
@@ -23,9 +24,11 @@ export function runReverse(document: RunDocument, runId: string, takeOuts: reado
   if (run.points.length < 2) return edited(document);
   const why = whyNot(run);
   if (why !== null) return refused(why);
-  const placed = placeRuns(document, buildContext(document.settings, takeOuts)).find((r) => r.run.id === runId);
-  if (!placed) return refused("This run could not be placed: correct its points first.");
-  const next = run.to === undefined ? reversedRun(run, placed, document.settings) : reversedLoop(run, run.to, placed, document);
+  const all = placeRuns(document, buildContext(document.settings, takeOuts));
+  const placed = all.find((r) => r.run.id === runId);
+  const target = all.flatMap((r) => r.points).find((p) => p.point.id === run.to);
+  if (!placed || (run.to !== undefined && !target)) return refused("This run could not be placed: correct its points first.");
+  const next = target ? reversedLoop(run, target, placed, document.settings) : reversedRun(run, placed, document.settings);
   return edited({ ...document, runs: document.runs.map((r) => (r.id === runId ? next : r)) });
 }
 
@@ -45,24 +48,25 @@ function reversedRun(run: Run, placed: PlacedRun, settings: LineSettings): Run {
   const turned = points.map((p, i): Point => {
     const follower = points[i + 1];
     const offset = follower ? oppositeLeg(p, follower, settings) : absoluteAt(p.departure, settings);
-    return turnedPoint(p, offset, follower?.point.provenance ?? CALCULATED, starts[i]);
+    return turnedPoint(p, offset, follower?.point.provenance ?? CALCULATED, starts[i], settings);
   });
   return { ...run, pipe: pipeFromEnd(run, points, settings), points: turned.reverse() };
 }
 
 /** A run between two fittings: its last point stands for the fitting it meets, and afterwards for the one it left from. */
-function reversedLoop(run: Run, to: string, placed: PlacedRun, document: RunDocument): Run {
-  const { settings } = document;
+function reversedLoop(run: Run, target: PlacedPoint, placed: PlacedRun, settings: LineSettings): Run {
   const starts = reversedStarts(run, settings);
   const points = placed.points;
   const lastIndex = points.length - 1;
   const turned = points.slice(0, lastIndex).map((p, i): Point => {
     const follower = points[i + 1]!;
-    return turnedPoint(p, oppositeLeg(p, follower, settings), follower.point.provenance, starts[i]);
+    const isMissed = i === lastIndex - 1 && vecDistance(follower.position, target.position) > SAME_POINT_MM;
+    const offset: Offset = isMissed ? { kind: "enu", ...exactEntries(vecSub(p.departure, target.position), settings.units) } : oppositeLeg(p, follower, settings);
+    return turnedPoint(p, offset, follower.point.provenance, starts[i], settings);
   });
   const [first, last] = [points[0]!, points[lastIndex]!];
-  const home = turnedPoint(last, homeLeg(first, placed, settings), first.point.provenance, starts[lastIndex]);
-  return { ...run, from: to, ...(run.from === null ? {} : { to: run.from }), pipe: run.points.some((p) => p.item.kind === "reducer") ? last.pipeOut : run.pipe, points: [...turned.reverse(), home] };
+  const home = turnedPoint(last, homeLeg(first, placed, settings), first.point.provenance, starts[lastIndex], settings);
+  return { ...run, from: target.point.id, ...(run.from === null ? {} : { to: run.from }), pipe: run.points.some((p) => p.item.kind === "reducer") ? last.pipeOut : run.pipe, points: [...turned.reverse(), home] };
 }
 
 /** The way from a loop's first point back to the fitting it left from. */
@@ -82,8 +86,8 @@ function absoluteAt(position: Vec3, settings: LineSettings): Offset {
   return { kind: "absolute", ...exactEntries(position, settings.units) };
 }
 
-function turnedPoint(p: PlacedPoint, offset: Offset, provenance: Provenance, starts: Point["starts"]): Point {
-  const turned: Point = { ...p.point, offset, provenance, item: turnedItem(p), places: turnedPlaces(p), flipped: true };
+function turnedPoint(p: PlacedPoint, offset: Offset, provenance: Provenance, starts: Point["starts"], settings: LineSettings): Point {
+  const turned: Point = { ...p.point, offset, provenance, item: turnedItem(p), places: turnedPlaces(p, settings), flipped: true };
   delete turned.starts;
   if (p.point.flipped) delete turned.flipped;
   return starts ? { ...turned, starts } : turned;
@@ -109,12 +113,19 @@ function turnedItem({ point: { item }, pipeIn, pipeOut }: PlacedPoint): Item {
 }
 
 /** `in` and `out` change sides. Where there is one weld only the named place is the one that counts, so it alone is kept. */
-function turnedPlaces({ point, turnRad, isFirst, isLast }: PlacedPoint): Point["places"] {
-  const { in: before, out: after, ...rest } = point.places;
-  const oneWeld = ["none", "joint", "end", "support"].includes(point.item.kind) && (turnRad === 0 || isFirst || isLast);
-  return {
-    ...rest, ...(after === undefined || (oneWeld && before !== undefined) ? {} : { in: after }), ...(before === undefined ? {} : { out: before }),
-  };
+function turnedPlaces(p: PlacedPoint, settings: LineSettings): Point["places"] {
+  const { in: before, out: after, ...rest } = p.point.places;
+  if (p.point.item.kind === "end" && !p.isFirst && !p.isLast) return p.point.places;
+  const isTaken = after !== undefined && !(hasOneWeld(p, settings) && before !== undefined);
+  return { ...rest, ...(isTaken ? { in: after } : {}), ...(before === undefined ? {} : { out: before }) };
+}
+
+/** A plain weld or the end of a pipe: one joint, whichever side its place was named for. */
+function hasOneWeld({ point, turnRad, isFirst, isLast }: PlacedPoint, settings: LineSettings): boolean {
+  const { kind } = point.item;
+  if (kind === "joint" || kind === "end") return true;
+  const isStraight = turnRad <= (settings.standardElbowWithinDeg * Math.PI) / 180 + SQUARE_RAD;
+  return (kind === "none" || kind === "support") && (isFirst || isLast || isStraight);
 }
 
 /** The pipe the run now starts with: size and schedule of its old end; material and specification follow from `starts`. */

@@ -1,14 +1,13 @@
-/** Marks that stick: random edit scripts on a register, and the rules one by one (common practice of weld maps). */
-import fc from "fast-check";
+/** Marks that stick, rule by rule (common practice of weld maps). Random edit scripts: marks-scripts.test.ts. */
 import { describe, expect, it } from "vitest";
 import { buildModel, nextMarks } from "../../../iso/run/build-model";
-import { defaultLineSettings, newRunDocument } from "../../../iso/run/defaults";
-import type { Item, RunDocument } from "../../../iso/run/document";
-import { branchAdd, newPoint, pointInsert, pointMove, pointRemove, pointUpdate } from "../../../iso/run/edit";
+import { DEFAULT_MARK_RULES, type Item, type MarkRules, type RunDocument } from "../../../iso/run/document";
+import { newPoint, pointInsert, pointMove, pointRemove, pointUpdate } from "../../../iso/run/edit";
 import { letterMark, markNumber } from "../../../iso/run/mark-names";
 import { emptyMarks, stickMarks } from "../../../iso/run/marks";
 import type { MarksRegister } from "../../../iso/run/model-types";
-import { end, flange, joint, reducer, RunBuilder, tee, valve } from "../../fixtures/run-builder";
+import { flange, joint, pipe, RunBuilder, valve } from "../../fixtures/run-builder";
+import { runReverse } from "../../../iso/run/reverse";
 import { twoSpools } from "../../fixtures/sample-runs";
 
 const fresh = (document: RunDocument): MarksRegister => nextMarks(document, emptyMarks(), []);
@@ -99,89 +98,76 @@ describe("a sticky register", () => {
   });
 });
 
+describe("a run turned round", () => {
+  const turned = (document: RunDocument): RunDocument => {
+    const result = runReverse(document, "main");
+    if (!result.ok) throw new Error(result.message);
+    return result.document;
+  };
+
+  it("keeps every mark, and what is added afterwards follows its forerunner in the new flow", () => {
+    const marks = stuck(straight);
+    let document = turned(straight);
+    let next = nextMarks(document, marks, []);
+    expect(next.welds).toEqual(marks.welds);
+    expect(buildModel(document, next, []).pieces.map((p) => p.mark)).toEqual(["P3", "P2", "P1"]);
+    document = pointInsert(document, "main", 2, at("n1", -900, 0, 0, joint));
+    next = nextMarks(document, next, []);
+    expect(welds(document, next)).toEqual(["4", "3", "3A", "2", "1"]);
+  });
+
+  it("keeps the letters of spools that are one piece of pipe each", () => {
+    const field = { places: { in: "field" as const } };
+    const document = new RunBuilder("M-2").start(joint).go("E", `5'`, joint, field).go("E", `5'`, joint, field).go("E", `5'`, joint).done();
+    const marks = stuck(document);
+    const next = nextMarks(turned(document), marks, []);
+    expect(buildModel(turned(document), next, []).spools.map((s) => s.letter)).toEqual(["C", "B", "A"]);
+    expect(next.voided).toEqual([]);
+  });
+});
+
+describe("rules of the job", () => {
+  const ruled = (marks: Partial<MarkRules>, document: RunDocument = straight): RunDocument => ({ ...document, settings: { ...document.settings, marks: { ...DEFAULT_MARK_RULES, ...marks } } });
+
+  it("prefix and first number", () => {
+    const marks = fresh(ruled({ weldPrefix: "W-", weldStart: 100, piecePrefix: "L2-", pieceStart: 7 }));
+    expect(Object.values(marks.welds)).toEqual(["W-100", "W-101", "W-102", "W-103"]);
+    expect(Object.values(marks.pieces)).toEqual(["L2-7", "L2-8", "L2-9"]);
+  });
+
+  it("an added joint takes the next number where the job says so, a letter where it says that", () => {
+    const grow = (document: RunDocument) => pointInsert(document, "main", 2, at("n1", 900, 0, 0, joint));
+    const next = ruled({ added: "next", weldPrefix: "W2" });
+    expect(welds(grow(next), nextMarks(grow(next), stuck(next), []))).toEqual(["W21", "W22", "W25", "W23", "W24"]);
+    const letter = ruled({ weldPrefix: "W2" });
+    expect(welds(grow(letter), nextMarks(grow(letter), stuck(letter), []))).toEqual(["W21", "W22", "W22A", "W23", "W24"]);
+  });
+
+  it("spools by number", () => {
+    expect(Object.values(fresh(ruled({ spools: "numbers" }, twoSpools)).spools)).toEqual(["1", "2"]);
+  });
+
+  it("rules changed later touch no mark that is given", () => {
+    const marks = stuck(straight);
+    const changed = pointInsert(ruled({ weldPrefix: "W", weldStart: 50 }), "main", 4, at("n1", 900, 0, 0, flange()));
+    const next = nextMarks(changed, marks, []);
+    expect(Object.values(next.welds).slice(0, 3)).toEqual(["1", "2", "3"]);
+    expect(next.welds["n1:in"]).toMatch(/^W5\d$/);
+  });
+});
+
+it("threaded, bolted and attached parts carry no weld number", () => {
+  const document = new RunBuilder("M-3", "imperial", { pipe: pipe("1", "80") }).start(flange())
+    .go("E", `3'`, { kind: "coupling", half: false, ends: "threaded" }).go("E", `3'`, { kind: "support", text: "" }).go("E", `3'`, valve()).go("E", `3'`, flange()).done();
+  for (const j of buildModel(document, fresh(document), []).joints) {
+    expect(j.number === null).toBe(["threaded", "bolted", "attachment"].includes(j.kind));
+  }
+});
+
 describe("names of marks", () => {
   it("skip I O Q S X Z and go on with two letters", () => {
     const first = Array.from({ length: 22 }, (_, i) => letterMark(i));
     expect(first.join(" ")).toBe("A B C D E F G H J K L M N P R T U V W Y AA AB");
     expect(markNumber("P12A")).toBe(12);
   });
-});
-
-type Edit =
-  | { readonly do: "insert"; readonly at: number; readonly item: number; readonly axis: number }
-  | { readonly do: "remove"; readonly at: number }
-  | { readonly do: "move"; readonly at: number; readonly to: number }
-  | { readonly do: "item"; readonly at: number; readonly item: number }
-  | { readonly do: "place"; readonly at: number; readonly field: boolean }
-  | { readonly do: "branch"; readonly at: number };
-
-const ITEMS: readonly Item[] = [{ kind: "none" }, joint, flange(), valve(), tee(), end("field-weld"), reducer("3"), { kind: "support", text: "" }];
-const small = fc.nat({ max: 30 });
-const edit: fc.Arbitrary<Edit> = fc.oneof(
-  fc.record({ do: fc.constant("insert" as const), at: small, item: small, axis: small }),
-  fc.record({ do: fc.constant("insert" as const), at: small, item: small, axis: small }),
-  fc.record({ do: fc.constant("remove" as const), at: small }),
-  fc.record({ do: fc.constant("move" as const), at: small, to: small }),
-  fc.record({ do: fc.constant("item" as const), at: small, item: small }),
-  fc.record({ do: fc.constant("place" as const), at: small, field: fc.boolean() }),
-  fc.record({ do: fc.constant("branch" as const), at: small }),
-);
-
-function apply(document: RunDocument, e: Edit, serial: number): RunDocument {
-  const run = document.runs[e.at % document.runs.length]!;
-  const row = run.points.length === 0 ? 0 : e.at % run.points.length;
-  const id = run.points[row]?.id ?? "";
-  const item = (i: number): Item => ITEMS[i % ITEMS.length]!;
-  switch (e.do) {
-    case "insert":
-      return pointInsert(document, run.id, row, at(`n${serial}`, e.axis % 3 === 0 ? 900 : 0, e.axis % 3 === 1 ? 900 : 0, e.axis % 3 === 2 ? 900 : 0, item(e.item)));
-    case "remove":
-      return pointRemove(document, id);
-    case "move":
-      return pointMove(document, run.id, row, run.points.length === 0 ? 0 : e.to % run.points.length);
-    case "item":
-      return pointUpdate(document, id, { item: item(e.item) });
-    case "place":
-      return pointUpdate(document, id, { places: { in: e.field ? "field" : "shop" } });
-    case "branch":
-      return branchAdd(document, id, `b${serial}`);
-  }
-}
-
-type Kind = "weld" | "piece" | "spool";
-const live = (m: MarksRegister, kind: Kind): Readonly<Record<string, string>> => (kind === "weld" ? m.welds : kind === "piece" ? m.pieces : m.spools);
-
-it("random edit scripts: no mark is renumbered, reused, given twice or forgotten", () => {
-  fc.assert(
-    fc.property(fc.array(edit, { maxLength: 8 }), fc.array(edit, { minLength: 1, maxLength: 14 }), (draftEdits, edits) => {
-      let serial = 0;
-      let document = draftEdits.reduce((d, e) => apply(d, e, (serial += 1)), pointInsert(newRunDocument("M", defaultLineSettings("imperial")), "main", 0, at("p0", 0, 0, 0, flange())));
-      let marks = stuck(document);
-      const everGiven: Record<Kind, Map<string, string>> = { weld: new Map(Object.entries(marks.welds).map(([k, m]) => [m, k])), piece: new Map(Object.entries(marks.pieces).map(([k, m]) => [m, k])), spool: new Map() };
-      for (const e of edits) {
-        document = apply(document, e, (serial += 1));
-        const next = nextMarks(document, marks, []);
-        for (const kind of ["weld", "piece", "spool"] as const) {
-          const [before, after] = [live(marks, kind), live(next, kind)];
-          const voided = next.voided.filter((v) => v.kind === kind).map((v) => v.mark);
-          const all = [...Object.values(after), ...voided];
-          expect(new Set(all).size).toBe(all.length);
-          for (const mark of Object.values(before)) expect(all).toContain(mark);
-          for (const old of marks.voided.filter((v) => v.kind === kind)) expect(next.voided).toContainEqual(old);
-          if (kind === "spool") continue;
-          for (const [key, mark] of Object.entries(after)) {
-            if (before[key] !== undefined) expect(mark).toBe(before[key]);
-            expect(everGiven[kind].get(mark) ?? key).toBe(key);
-            everGiven[kind].set(mark, key);
-          }
-        }
-        const model = buildModel(document, next, []);
-        expect(model.joints.flatMap((j) => (j.number === null ? [] : [j.key]))).toEqual(Object.keys(next.welds));
-        expect(Object.fromEntries(model.pieces.map((p) => [p.key, p.mark]))).toEqual(next.pieces);
-        expect(nextMarks(document, next, [])).toEqual(next);
-        marks = next;
-      }
-    }),
-    { numRuns: 120, seed: 5 },
-  );
 });
