@@ -40,7 +40,7 @@ export const MOVE_HINT = "Type a direction and a length, such as e 3-1 1/2.";
  */
 export function parseMove(text: string, units: UnitSystem, straightOn: StraightOn | null = null): EntryResult<Offset> {
   const plain = plainWords(text);
-  if (plain === "") return understood(ZERO_OFFSET, "");
+  if (plain === "" || /^0+$/.test(plain)) return understood(ZERO_OFFSET, "");
   if (plain.startsWith("@")) return parseAbsolute(plain.slice(1).trim(), units);
   const sloped = /^(.*?)\s*@\s*(.*)$/.exec(plain);
   if (sloped) return parseSloped(sloped[1] ?? "", rawSlope(text), units, straightOn);

@@ -56,6 +56,24 @@ describe("a Move cell", () => {
     expect(parseMove("1-0", "imperial", null)).toMatchObject({ ok: false });
   });
 
+  it.each([
+    ["e 10-0 @ 1:100", 0.01], ["E 10' @ 2%", 0.02], ["n30e 10-0 @ down 1/4 in/ft", -1 / 48], ["w 6-0 @ -1:50", -0.02],
+  ])("reads the slope of %s as a rise over the level length", (text, ratio) => {
+    const offset = offsetOf(text);
+    expect(offset).toMatchObject({ kind: "slope", direction: { u: 0 }, slope: { ratio: expect.closeTo(ratio, 12) } });
+    expect(offsetOf(moveText(offset))).toEqual(offset);
+    expect(moveEcho(offset, "imperial")).toMatch(ratio < 0 ? /falls .* lower/ : /rises .* higher/);
+  });
+
+  it("goes on in the slope when only a length is typed", () => {
+    const before = straightOnOf(offsetOf("e 10-0 @ 1:100"));
+    expect(parseMove("5-0", "imperial", before)).toMatchObject({ ok: true, value: { kind: "slope", slope: { ratio: 0.01 }, length: { mm: 1524 } } });
+  });
+
+  it.each(["u 10-0 @ 1:100", "e 10-0 @ steep", "e 1-0 n 2-0 @ 1%", "e @ 1%"])("says what to type for the slope %s", (text) => {
+    expect(parseMove(text, "imperial")).toMatchObject({ ok: false, message: expect.stringMatching(/[.]$/) });
+  });
+
   it("echoes what it understood", () => {
     expect(parseMove("e 3-1 1/2", "imperial")).toMatchObject({ understood: `3'-1 1/2" east` });
     expect(parseMove("E 2-0 N 1-0 D 3", "imperial")).toMatchObject({ understood: `2'-0" east, 1'-0" north, 3" down` });
