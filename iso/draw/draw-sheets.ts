@@ -8,6 +8,7 @@ import type { View } from "../run/document";
 import type { Model } from "../run/model-types";
 import { drawPlan, linesFit, overrun, standingOf, viewOf, type Standing } from "./draw-model";
 import type { Drawing, DrawOptions } from "./drawing-types";
+import { matchWords } from "./match-marks";
 import { placePlan, type PlacePlan } from "./place";
 import { joinedParts, matchesOf, splitFull, splitOne, wholePlan, type Match, type SheetCapacity, type SheetPart, type SheetPlan } from "./sheet-split";
 import * as size from "./sizes";
@@ -59,7 +60,7 @@ interface Desk {
   readonly view: View;
   readonly whole: PlacePlan;
   readonly laid: Map<string, Laid>;
-  readonly drawn: Map<string, Drawing>;
+  readonly drawn: Map<string, Drawn>;
 }
 
 interface Laid {
@@ -109,21 +110,37 @@ function roomOptions({ options }: Desk, index: number): DrawOptions {
 
 const pointsKey = (part: SheetPart): string => part.vertices.map(({ id }) => id).join(" ");
 
-/** Drawings of all parts; those that come out as before are taken from the desk. */
+/** Drawings of all parts; those that were drawn before are taken from the desk, with the numbers of their neighbours put right. */
 function drawParts(desk: Desk, split: SheetPlan): readonly Drawing[] {
   const matches = matchesOf(split);
   return split.parts.map((part, i) => {
     const mine = matches.filter(({ fromSheet, toSheet }) => fromSheet === i + 1 || toSheet === i + 1);
-    const key = [i === 0, pointsKey(part), ...mine.map((match) => matchKey(match, i + 1))].join(" ");
-    const { plan, standing } = laidOut(desk, split, i);
-    const drawing = desk.drawn.get(key) ?? drawPlan(plan, desk.view, roomOptions(desk, i), { sheet: i + 1, matches: mine }, standing);
-    desk.drawn.set(key, drawing);
+    const words = mine.map((match) => matchWords(match, i + 1));
+    const key = [i === 0, pointsKey(part), ...mine.map(({ legId, fromSheet }) => `${legId} ${fromSheet === i + 1}`)].sort().join(" ");
+    const known = desk.drawn.get(key);
+    const drawing = (known && renumbered(known, words)) ?? drawPart(desk, split, i, mine);
+    desk.drawn.set(key, { drawing, words });
     return drawing;
   });
 }
 
-function matchKey(match: Match, sheet: number): string {
-  return `${match.mark} ${match.legId} ${match.fromSheet === sheet ? match.toSheet : -match.fromSheet}`;
+function drawPart(desk: Desk, split: SheetPlan, index: number, matches: readonly Match[]): Drawing {
+  const { plan, standing } = laidOut(desk, split, index);
+  return drawPlan(plan, desk.view, roomOptions(desk, index), { sheet: index + 1, matches }, standing);
+}
+
+interface Drawn {
+  readonly drawing: Drawing;
+  /** What its match lines say. */
+  readonly words: readonly string[];
+}
+
+/** The same drawing after other sheets were put in before it; null when its words would come out longer or shorter than their places. */
+function renumbered({ drawing, words }: Drawn, next: readonly string[]): Drawing | null {
+  if (words.every((word, i) => word === next[i])) return drawing;
+  if (words.some((word, i) => word.length !== next[i]?.length)) return null;
+  const now = new Map(words.map((word, i) => [word, next[i] ?? word]));
+  return { ...drawing, items: drawing.items.map((item) => (item.type === "text" && now.has(item.text) ? { ...item, text: now.get(item.text) ?? item.text } : item)) };
 }
 
 /** Cuts every sheet that is found wanting; null when none is, or nothing more can be cut. */

@@ -40,11 +40,15 @@ export function matchPass(placed: Placed, drawn: readonly DrawnEdge[], joints: r
     const line = acrossLine(middle, direction);
     items.push(lineItem("symbol", ref, line.from, line.to, size.SYMBOL_WIDTH, "ink", DASH_DOT));
     heavy.push(line);
-    const words = goesOn ? `CONTINUED ON SHEET ${match.toSheet} AT ${match.mark}` : `FROM SHEET ${match.fromSheet} AT ${match.mark}`;
-    const lines: BlockLine[] = [{ text: words, bold: true }, ...coordinates(placed, match)];
+    const lines: BlockLine[] = [{ text: matchWords(match, sheet), bold: true }, ...coordinates(placed, match)];
     labels.push(blockLabel(lines, { id: `match ${match.mark}`, anchors: [line.from, line.to], clear: 0.6, along: [direction] }, ref, measure));
   }
   return { items, heavy, light: [], labels };
+}
+
+/** What a match line says on one of its two sheets. */
+export function matchWords(match: Match, sheet: number): string {
+  return match.fromSheet === sheet ? `CONTINUED ON SHEET ${match.toSheet} AT ${match.mark}` : `FROM SHEET ${match.fromSheet} AT ${match.mark}`;
 }
 
 interface MatchPlace {
