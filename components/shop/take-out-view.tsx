@@ -14,7 +14,7 @@ import type { ShopSettings } from "@/lib/rules/api-types";
 import { TakeOutDialog } from "./take-out-dialog";
 import { takeOutRows, type TakeOutRow } from "./take-out-rows";
 
-type Filter = "open" | "ours" | "all";
+type Filter = "open" | "ours" | "missing" | "weights" | "all";
 const MOST_SHOWN = 60;
 
 /** Catalogue take-outs: those from memory wait for the shop's word; any may be replaced by what the shop measured. */
@@ -24,7 +24,8 @@ export function TakeOutView({ owner }: { readonly owner: boolean }) {
     <Section title="Take-outs">
       <p className="mb-4 max-w-prose text-soft">
         Take-outs are nominal: measure the fitting in hand. One from memory is marked unverified on every cut
-        list until the owner confirms it or enters what the shop measured.
+        list until the owner confirms it or enters what the shop measured. What no table has, and the weights of
+        valves and forged fittings, are the shop&apos;s to enter.
       </p>
       <Loaded api={shop} label="Loading take-outs">
         {(data) => <TakeOuts words={data.takeOuts} units={data.defaults.units} owner={owner} />}
@@ -36,7 +37,9 @@ export function TakeOutView({ owner }: { readonly owner: boolean }) {
 const FILTERS: Readonly<Record<Filter, (row: TakeOutRow) => boolean>> = {
   open: (row) => row.fromMemory && row.word === null,
   ours: (row) => row.word !== null,
-  all: () => true,
+  missing: (row) => row.kind === "missing",
+  weights: (row) => row.kind === "weight",
+  all: (row) => row.kind === "table",
 };
 
 function TakeOuts({
@@ -67,12 +70,12 @@ function TakeOuts({
           label="Which take-outs"
           value={filter}
           onChange={setFilter}
-          choices={[choice("open", "To confirm"), choice("ours", "With our word"), choice("all", "All")]}
+          choices={[choice("open", "To confirm"), choice("ours", "With our word"), choice("missing", "In no table"), choice("weights", "Weights"), choice("all", "All tables")]}
         />
         <SearchField label="Search fitting, size" value={search} onChange={setSearch} />
       </div>
       {found.length === 0 ? (
-        <EmptyState title="None here">Change the search or choose All.</EmptyState>
+        <EmptyState title="None here">Change the search, or choose All tables.</EmptyState>
       ) : (
         <Table
           caption="Take-outs"
@@ -115,12 +118,14 @@ function columnsFor(
       cell: (row) =>
         row.word ? (
           <span className="text-sm">
-            {row.word.valueMm === null ? "Confirmed" : "Measured"} by {row.word.by}, {dayText(row.word.at)}
+            {row.word.valueMm === null ? "Confirmed" : row.kind === "weight" ? "Weighed" : "Measured"} by {row.word.by}, {dayText(row.word.at)}
           </span>
         ) : row.fromMemory ? (
           <strong className="text-caution">Unverified</strong>
+        ) : row.kind === "missing" ? (
+          <strong className="text-caution">Missing</strong>
         ) : (
-          <span className="text-soft">none needed</span>
+          <span className="text-soft">{row.kind === "weight" ? "not known" : "none needed"}</span>
         ),
     },
   ];
@@ -129,11 +134,16 @@ function columnsFor(
       key: "edit",
       head: "",
       cell: (row) => (
-        <Button onClick={() => onEdit(row)} aria-label={`${row.fromMemory && !row.word ? "Confirm" : "Change"} ${row.words}`}>
-          {row.fromMemory && !row.word ? "Confirm" : "Change"}
+        <Button onClick={() => onEdit(row)} aria-label={`${editWord(row)} ${row.words}`}>
+          {editWord(row)}
         </Button>
       ),
     });
   }
   return columns;
+}
+
+function editWord(row: TakeOutRow): string {
+  if (row.word !== null) return "Change";
+  return row.kind !== "table" ? "Enter" : row.fromMemory ? "Confirm" : "Change";
 }

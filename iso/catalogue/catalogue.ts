@@ -11,6 +11,7 @@ import { FLANGE_ROWS } from "./b16-5-flanges";
 import { CAP_LIMIT_WALLS } from "./b16-9-caps";
 import { catalogueEntries } from "./entries";
 import type { Entry } from "./entry";
+import { keyWords } from "./key-words";
 import { capKey, elbowKey, flangeHubKey } from "./keys";
 import type { Memory } from "./row";
 
@@ -51,9 +52,9 @@ export function capKeyFor(nps: Nps, wallMm: number | null): string {
   return capKey(nps, wallMm !== null && limit !== null && wallMm > limit + inchesMm(LIMIT_STEP_IN));
 }
 
-/** The trade's words for a key ("LR 90 elbow NPS 4, centre to end"), or the key itself when it is no table's. */
+/** The trade's words for a key ("LR 90 elbow NPS 4, centre to end"); for one no table has, words read from the key itself. */
 export function catalogueWords(key: string): string {
-  return catalogueEntries().get(key)?.words ?? key;
+  return catalogueEntries().get(key)?.words ?? keyWords(key) ?? key;
 }
 
 /** All keys of the tables, in table order. */

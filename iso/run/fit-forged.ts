@@ -1,6 +1,8 @@
 /** Couplings, unions and caps: socket-weld, threaded, and the butt-weld cap. */
 import { vecAddScaled, vecNegate } from "../geometry/vec3";
-import { capKey, socketKey, threadedKey } from "../catalogue/keys";
+import { capKeyFor } from "../catalogue/catalogue";
+import { socketKey, threadedKey } from "../catalogue/keys";
+import { pipeWall } from "../catalogue/pipe";
 import { sentenceStart, takeOutTerm, type BuildContext } from "./build-context";
 import type { Fitting, PlacedPoint, Side } from "./build-types";
 import { bareSide, buttSide, endedSide, fittingOf, flowAfter, flowAt, makeComponent, straightPorts, unconfirmedOf, type FittingEnds } from "./fit-common";
@@ -55,7 +57,8 @@ export function fitUnion(p: PlacedPoint, ends: Ends, ctx: BuildContext): Fitting
 
 /** A cap closing the run; the point is its outside end. */
 export function fitCap(p: PlacedPoint, ends: FittingEnds, ctx: BuildContext): Fitting {
-  const key = ends === "butt" ? capKey(p.pipeIn.nps) : forgedKey("cap", ends, p, ctx);
+  const wall = pipeWall(p.pipeIn.nps, p.pipeIn.schedule, ctx.units);
+  const key = ends === "butt" ? capKeyFor(p.pipeIn.nps, wall?.wallMm ?? null) : forgedKey("cap", ends, p, ctx);
   const length = ctx.takeOut(key, `${ends === "butt" ? "" : `${ENDS_WORDS[ends]} `}cap length in ${sizeText(p.pipeIn.nps, ctx.units)}`, p);
   const terms = [takeOutTerm("cap length", length, p.uid)];
   if (!p.isFirst && !p.isLast) {
