@@ -18,7 +18,12 @@ export function sharedWeldKey(s: Stretch, startKey: string, endKey: string): str
   const ownRun = s.legs[0]?.runId ?? s.to.runId;
   const [fromOwn, toOwn] = [s.from.runId === ownRun, s.to.runId === ownRun];
   if (fromOwn !== toOwn) return toOwn ? endKey : startKey;
-  const [fromFlipped, toFlipped] = [s.from.point.flipped === true, s.to.point.flipped === true];
-  if (fromFlipped !== toFlipped) return startKey < endKey ? startKey : endKey;
-  return toFlipped ? startKey : endKey;
+  return isTurnedRound(s) ? startKey : endKey;
+}
+
+/** Whether a stretch is walked the other way than its names were given; the answer changes with every reversal of its run. */
+export function isTurnedRound({ from, to, legs }: Stretch): boolean {
+  const [fromFlipped, toFlipped] = [from.point.flipped === true, to.point.flipped === true];
+  if (from.runId !== (legs[0]?.runId ?? to.runId)) return toFlipped;
+  return fromFlipped === toFlipped ? toFlipped : from.uid < to.uid;
 }

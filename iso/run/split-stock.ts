@@ -2,6 +2,7 @@
  * Pieces longer than the stock are split with added butt welds. Full stock lengths come first; the last two are evened when
  * the rest would be a short pup (common practice). Each added weld takes one root gap out of the pipe.
  */
+import { SAME_POINT_MM } from "../geometry/tolerances";
 import { formatLength } from "../units/format";
 import { vecAddScaled, vecDistance, vecDot, vecSub } from "../geometry/vec3";
 import type { Vec3 } from "../geometry/types";
@@ -9,6 +10,7 @@ import { plainTerm, type BuildContext } from "./build-context";
 import type { JointDraft, PieceDraft, Stretch } from "./build-types";
 import { leastPupMm } from "./check-piece";
 import { makeJoint } from "./fit-common";
+import { isTurnedRound } from "./original-side";
 import type { CutTerm, PieceEnd } from "./model-types";
 
 /** Most pieces one stretch is split into; more is a slip in the stock length. */
@@ -23,8 +25,10 @@ export interface Split {
 
 /** The piece as it is, or split where the stock is too short for it. */
 export function splitStock(s: Stretch, whole: PieceDraft, ctx: BuildContext): Split {
-  const lengths = stockLengths(s, whole, ctx);
-  if (lengths === null) return { pieces: [whole], joints: [], pieceAt: () => whole.key };
+  const sorted = stockLengths(s, whole, ctx);
+  if (sorted === null) return { pieces: [whole], joints: [], pieceAt: () => whole.key };
+  // A run turned round is cut where it was cut before, and its added welds keep their names.
+  const lengths = isTurnedRound(s) ? sorted.reverse() : sorted;
   const gap = ctx.settings.allowances.rootGapMm;
   const pieces: PieceDraft[] = [];
   const joints: JointDraft[] = [];
@@ -34,7 +38,7 @@ export function splitStock(s: Stretch, whole: PieceDraft, ctx: BuildContext): Sp
     from += length;
     if (i === lengths.length - 1) return;
     joints.push(makeJoint(s.to, {
-      key: splitKey(s, i), kind: "butt", a: `${keyRoot(whole)}:${i + 1}`, b: `${keyRoot(whole)}:${i + 2}`, runId: whole.runId, nps: whole.nps,
+      key: splitKey(s, i, lengths.length - 1), kind: "butt", a: `${keyRoot(whole)}:${i + 1}`, b: `${keyRoot(whole)}:${i + 2}`, runId: whole.runId, nps: whole.nps,
       position: vecAddScaled(whole.start, whole.direction, from - startTrim(s) + gap / 2), direction: whole.direction, gapMm: gap,
     }));
     from += gap;
@@ -46,8 +50,8 @@ function keyRoot(whole: PieceDraft): string {
   return whole.key.replace(/:1$/, "");
 }
 
-function splitKey(s: Stretch, index: number): string {
-  return `${s.to.uid}:stock-${index + 1}`;
+function splitKey(s: Stretch, index: number, welds: number): string {
+  return isTurnedRound(s) ? `${s.from.uid}:stock-${welds - index}` : `${s.to.uid}:stock-${index + 1}`;
 }
 
 function startTrim(s: Stretch): number {
@@ -64,11 +68,11 @@ function pieceAt(pieces: readonly PieceDraft[], whole: PieceDraft, position: Vec
 function stockLengths(s: Stretch, whole: PieceDraft, ctx: BuildContext): number[] | null {
   const stock = ctx.settings.stockLengthMm;
   const total = whole.cutLengthMm;
-  if (stock === undefined || stock <= 0 || total <= stock) return null;
+  if (stock === undefined || stock <= 0 || total <= stock + SAME_POINT_MM) return null;
   const where = { pointId: s.to.point.id, runId: s.to.runId };
   const say = `The pipe between ${s.from.label} and ${s.to.label} is ${formatLength(total, ctx.units)}, longer than the stock of ${formatLength(stock, ctx.units)}`;
   const gap = ctx.settings.allowances.rootGapMm;
-  const count = Math.ceil((total + gap) / (stock + gap));
+  const count = Math.ceil((total + gap - SAME_POINT_MM) / (stock + gap));
   const least = leastPupMm(whole.odMm, ctx);
   if (whole.bends !== undefined || count > MOST_PIECES || stock < 2 * least) {
     const why = whole.bends !== undefined ? "and is bent: put a weld on one of its straights" : "and is not split: the stock is too short to weld from. Correct the stock length";
@@ -96,7 +100,7 @@ function partOf(s: Stretch, whole: PieceDraft, part: Part): PieceDraft {
   const { index, from, length, lengths } = part;
   const isFirst = index === 0;
   const isLast = index === lengths.length - 1;
-  const weldEnd = (i: number): PieceEnd => ({ prep: "bevel", jointKey: splitKey(s, i) });
+  const weldEnd = (i: number): PieceEnd => ({ prep: "bevel", jointKey: splitKey(s, i, lengths.length - 1) });
   const start = isFirst ? whole.start : vecAddScaled(whole.start, whole.direction, from - startTrim(s));
   const end = isLast ? whole.end : vecAddScaled(whole.start, whole.direction, from + length - startTrim(s));
   const legs = legsUnder(s, start, end);
@@ -120,9 +124,11 @@ function legsUnder(s: Stretch, start: Vec3, end: Vec3): string[] {
   });
 }
 
-function fixedTerm({ length, lengths, index }: Part): CutTerm {
-  const isEvened = index > 0 && index === lengths.length - 2 && lengths[index] === lengths[index + 1];
-  return { kind: "centre-to-centre", label: isEvened || lengths.length === 2 && lengths[0] === lengths[1] ? "half of what is left, weld to weld" : "full stock length, weld to weld", valueMm: length, componentId: null, source: null, unconfirmed: false };
+function fixedTerm({ length, lengths }: Part): CutTerm {
+  const alike = lengths.filter((l) => l === length).length;
+  const isFull = length === Math.max(...lengths) && !(lengths.length === 2 && alike === 2);
+  const what = isFull ? "full stock length" : alike === 1 ? "what is left" : "half of what is left";
+  return { kind: "centre-to-centre", label: `${what}, weld to weld`, valueMm: length, componentId: null, source: null, unconfirmed: false };
 }
 
 /** What the pieces before the last one and their welds take from the whole. */

@@ -171,3 +171,15 @@ describe("names of marks", () => {
     expect(markNumber("P12A")).toBe(12);
   });
 });
+
+it("pipe longer than the stock, turned round, is cut where it was and its added welds keep their numbers", () => {
+  const built = new RunBuilder("M-4", "imperial", { stockLengthMm: 20 * 304.8 }).start(flange()).go("E", `50'`, flange()).done();
+  const turned = runReverse(built, "main");
+  if (!turned.ok) throw new Error(turned.message);
+  const marks = stuck(built);
+  const next = nextMarks(turned.document, marks, []);
+  const byMark = (document: RunDocument, register: MarksRegister) => Object.fromEntries(buildModel(document, register, []).pieces.map((p) => [p.mark, p.cutLengthMm.toFixed(6)]));
+  expect(Object.values(marks.welds)).toHaveLength(4);
+  expect(next.welds).toEqual(marks.welds);
+  expect(byMark(turned.document, next)).toEqual(byMark(built, marks));
+});
