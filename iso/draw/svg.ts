@@ -1,6 +1,6 @@
 /** The SVG painter of the display list: static text for export, tests and the gallery; the screen uses its helpers. */
 import type { PaperPoint } from "../geometry/types";
-import type { DisplayItem, Ink, PathSegment, TextItem } from "./drawing-types";
+import type { DisplayItem, Ink, MeasureText, PathSegment, TextItem } from "./drawing-types";
 
 /** Paint of each ink; the PDF painter uses the same. Dark enough to print grey. */
 export const INK_COLOURS: Readonly<Record<Ink, string>> = { ink: "#16181d", dye: "#1d4e9e", grey: "#7a7d85", paper: "#ffffff", alert: "#a3201c", pale: "#dedede" };
@@ -27,7 +27,7 @@ export function textFace(item: TextItem): { readonly fontFamily: string; readonl
 
 const dashes = (dash: readonly number[] | undefined): string => (dash ? ` stroke-dasharray="${dash.map(round).join(" ")}"` : "");
 
-function itemSvg(item: DisplayItem, interactive: boolean): string {
+function itemSvg(item: DisplayItem, interactive: boolean, measure: MeasureText | undefined): string {
   const ref = interactive && item.ref ? ` data-kind="${item.ref.kind}" data-id="${escapeXml(item.ref.id)}"` : "";
   const layer = interactive ? ` data-layer="${item.layer}"` : "";
   const colour = (ink: Ink | null): string => (ink === null ? "none" : INK_COLOURS[ink]);
@@ -39,8 +39,9 @@ function itemSvg(item: DisplayItem, interactive: boolean): string {
     case "text": {
       const face = textFace(item);
       const turn = item.rotateRad === 0 ? "" : ` transform="rotate(${round((item.rotateRad * 180) / Math.PI)} ${pair(item.at)})"`;
+      const fit = measure && item.text.trim() !== "" ? ` textLength="${round(measure(item.text, item.capMm, item.face))}" lengthAdjust="spacingAndGlyphs"` : "";
       const weight = face.fontWeight === 700 ? ' font-weight="700"' : "";
-      return `<text x="${round(item.at[0])}" y="${round(item.at[1])}" font-family="${face.fontFamily}" font-size="${round(face.fontSizeMm)}"${weight} text-anchor="${item.anchor}" fill="${colour(item.ink)}"${turn}${layer}${ref}>${escapeXml(item.text)}</text>`;
+      return `<text x="${round(item.at[0])}" y="${round(item.at[1])}" font-family="${face.fontFamily}" font-size="${round(face.fontSizeMm)}"${weight} text-anchor="${item.anchor}" fill="${colour(item.ink)}"${fit}${turn}${layer}${ref}>${escapeXml(item.text)}</text>`;
     }
   }
 }
@@ -48,11 +49,13 @@ function itemSvg(item: DisplayItem, interactive: boolean): string {
 export interface SvgOptions {
   /** Adds what each item shows as data-kind, data-id and data-layer. */
   readonly interactive?: boolean;
+  /** Gives each text its own width, so that it keeps its room where the reader's machine has another face. */
+  readonly measure?: MeasureText;
 }
 
 /** A whole SVG document of `widthMm` by `heightMm`; one unit is one millimetre. Equal items give equal text. */
 export function drawingSvg(items: readonly DisplayItem[], widthMm: number, heightMm: number, options: SvgOptions = {}): string {
-  const body = items.map((item) => itemSvg(item, options.interactive === true)).join("\n");
+  const body = items.map((item) => itemSvg(item, options.interactive === true, options.measure)).join("\n");
   const [w, h] = [round(widthMm), round(heightMm)];
   return `<svg xmlns="http://www.w3.org/2000/svg" width="${w}mm" height="${h}mm" viewBox="0 0 ${w} ${h}" stroke-linecap="round" stroke-linejoin="round">\n<rect width="${w}" height="${h}" fill="#ffffff"/>\n${body}\n</svg>\n`;
 }

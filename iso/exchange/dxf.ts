@@ -8,8 +8,8 @@
 import type { DisplayItem, Face, Ink, PathItem, TextItem } from "../draw/drawing-types";
 import type { PaperPoint } from "../geometry/types";
 import { dxfNumber, dxfText } from "./dxf-text";
-import { pathChains, type Chain } from "./flatten";
-import { visibleStrokes } from "./visible-strokes";
+import type { Chain } from "./flatten";
+import { visibleParts, type Visible } from "./visible-strokes";
 
 /** A line at least this wide on paper keeps its width, mm: the pipe and the symbols. */
 export const WIDE_LINE_MM = 0.45;
@@ -33,9 +33,9 @@ export function dxfLayer(layer: DisplayItem["layer"]): string {
 
 /** A whole DXF file of `widthMm` by `heightMm`; ASCII only. Equal items give equal text. `remark` is one line for who opens it as text. */
 export function drawingDxf(items: readonly DisplayItem[], widthMm: number, heightMm: number, remark = ""): string {
-  const strokes = visibleStrokes(items);
+  const seen = visibleParts(items);
   const up = ([x, y]: PaperPoint): PaperPoint => [x, heightMm - y];
-  const entities = items.flatMap((item, index) => itemEntities(item, strokes[index]!, up));
+  const entities = items.flatMap((item, index) => itemEntities(item, seen[index]!, up));
   const pairs = [
     ...(remark === "" ? [] : [[999, dxfText(remark)] as Pair]),
     ...headerSection(entities, widthMm, heightMm), ...tablesSection(items), ...section("BLOCKS", []), ...section("ENTITIES", entities), [0, "EOF"] as Pair,
@@ -99,10 +99,10 @@ function dashName(dash: readonly number[]): string {
   return `DASH_${dash.map((part) => String(Math.round(part * 100))).join("_")}`;
 }
 
-function itemEntities(item: DisplayItem, strokes: readonly Chain[], up: (p: PaperPoint) => PaperPoint): Pair[] {
+function itemEntities(item: DisplayItem, { strokes, fills: outlines }: Visible, up: (p: PaperPoint) => PaperPoint): Pair[] {
   if (item.type === "text") return textEntity(item, up);
   const ink = item.type === "line" ? item.ink : item.stroke;
-  const fills = item.type === "path" ? fillEntities(item, up) : [];
+  const fills = item.type === "path" ? fillEntities(item, outlines, up) : [];
   if (ink === null) return fills;
   const head = entityHead(item, ink);
   return [...fills, ...strokes.flatMap((chain) => strokeEntity(chain, item.widthMm, item.type === "line", head, up))];
@@ -123,11 +123,11 @@ function strokeEntity({ points, closed }: Chain, widthMm: number, isLine: boolea
   ];
 }
 
-/** Filled convex outlines as fans of SOLID; paper and pale hide or tint, which this format cannot, so they are left out. */
-function fillEntities(item: PathItem, up: (p: PaperPoint) => PaperPoint): Pair[] {
-  if (item.fill === null || item.fill === "paper" || item.fill === "pale") return [];
+/** Filled convex outlines as fans of SOLID. */
+function fillEntities(item: PathItem, outlines: readonly Chain[], up: (p: PaperPoint) => PaperPoint): Pair[] {
+  if (item.fill === null) return [];
   const head: Pair[] = [[8, dxfLayer(item.layer)], integer(62, COLOURS[item.fill])];
-  return pathChains(item.segments).filter(({ points }) => points.length > 2 && isConvex(points)).flatMap(({ points }) => fan(points.map(up), head));
+  return outlines.filter(({ points }) => isConvex(points)).flatMap(({ points }) => fan(points.map(up), head));
 }
 
 /** Quads of a convex outline. SOLID takes its last two corners crosswise; a triangle repeats its third. */

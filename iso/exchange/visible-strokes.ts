@@ -16,10 +16,28 @@ interface Cover {
   readonly box: PaperBox;
 }
 
-/** The strokes of the items, by item, as seen: an item with nothing left has an empty list. Texts have none. */
-export function visibleStrokes(items: readonly DisplayItem[]): readonly (readonly Chain[])[] {
+/** What is seen of an item. */
+export interface Visible {
+  readonly strokes: readonly Chain[];
+  readonly fills: readonly Chain[];
+}
+
+/**
+ * What is seen of each item: strokes cut where something hides them, and dark fills that no single later shape hides whole.
+ * An item with nothing left has empty lists; texts have none.
+ */
+export function visibleParts(items: readonly DisplayItem[]): readonly Visible[] {
   const covers = items.flatMap((item, order) => coversOf(item, order));
-  return items.map((item, order) => strokesOf(item).flatMap((chain) => uncovered(chain, covers, order)));
+  return items.map((item, order) => ({
+    strokes: strokesOf(item).flatMap((chain) => uncovered(chain, covers, order)),
+    fills: fillsOf(item).filter((chain) => !covers.some((cover) => cover.order > order && chain.points.every((point) => isInside(point, cover.corners)))),
+  }));
+}
+
+/** Outlines filled with a dark ink; paper and pale hide or tint, which is not a fill of its own elsewhere. */
+function fillsOf(item: DisplayItem): readonly Chain[] {
+  if (item.type !== "path" || item.fill === null || item.fill === "paper" || item.fill === "pale") return [];
+  return pathChains(item.segments).filter(({ points }) => points.length > 2);
 }
 
 function strokesOf(item: DisplayItem): readonly Chain[] {

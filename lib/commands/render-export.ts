@@ -73,7 +73,7 @@ export async function renderSpoolDrawing(viewer: SessionViewer, spoolId: string,
   const page = pages[sheet - 1];
   if (!page) throw refuseInvalid(`This spool has ${pages.length === 1 ? "one sheet" : `${pages.length} sheets`}; ask for one of them.`);
   const remark = `${input.document.number} spool ${input.spool}, ${stateText(input)}, sheet ${sheet} of ${pages.length}. Millimetres on paper, not to scale. Uncontrolled copy.`;
-  const text = as === "svg" ? drawingSvg(page.items, page.widthMm, page.heightMm) : drawingDxf(page.items, page.widthMm, page.heightMm, remark);
+  const text = as === "svg" ? drawingSvg(page.items, page.widthMm, page.heightMm, { measure: measureText }) : drawingDxf(page.items, page.widthMm, page.heightMm, remark);
   const part = pages.length === 1 ? "" : `-${sheet}-of-${pages.length}`;
   return { name: exportFileName([input], "sheet", as, part), type: TYPES[as], bytes: textBytes(text) };
 }

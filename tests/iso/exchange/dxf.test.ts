@@ -84,6 +84,13 @@ describe("what paper hides", () => {
     expect(spans).toEqual([[[0, 50], [48, 50]], [[52, 50], [100, 50]], [[50, 100], [50, 0]]]);
   });
 
+  test("an arrowhead under a balloon is not drawn over it", () => {
+    const arrow: DisplayItem = { type: "path", layer: "dimension", ref: null, segments: square(1, [50, 50]), stroke: null, widthMm: 0, fill: "ink" };
+    const balloon: DisplayItem = { type: "path", layer: "balloon", ref: null, segments: circleSegments([50, 50], 3.5), stroke: "ink", widthMm: 0.3, fill: "paper" };
+    expect(readBack(drawingDxf([arrow, balloon], 100, 100)).entities.map((entity) => entity.type)).toEqual(["POLYLINE"]);
+    expect(readBack(drawingDxf([balloon, arrow], 100, 100)).entities.map((entity) => entity.type)).toEqual(["POLYLINE", "SOLID"]);
+  });
+
   test("a symbol filled with paper hides the pipe under it, not the one over it", () => {
     const body: DisplayItem = { type: "path", layer: "symbol", ref: null, segments: square(20, [40, 40]), stroke: "ink", widthMm: 0.5, fill: "paper" };
     const { entities } = readBack(drawingDxf([line("pipe", [0, 50], [100, 50]), body, line("flow", [45, 45], [55, 45])], 100, 100));
