@@ -1,104 +1,223 @@
-/** A bitmap of what is inked, with summed areas: how much ink lies in a box or under a leader, in constant time. */
+/**
+ * A bitmap of what is inked, half a millimetre a cell, 32 cells a word: whether ink lies in a box takes a word or two for each
+ * half millimetre of its height, under a leader a step for each of its length. Measured on the same lines: an index of exact
+ * segments takes about ten times as long for a place and finds the same ones free but for a quarter of a millimetre; summed
+ * areas answer as fast as bit rows, but take longer to make than all the questions of a sheet, and do not stay in the cache.
+ */
 import type { PaperBox, PaperPoint } from "../geometry/types";
-import { paperBoxAround, type Segment, type TurnedBox } from "./plane";
+import { boxCorners, type Segment, type TurnedBox } from "./plane";
 
-export interface InkMap {
-  /** Inked cells inside an axis-parallel box. */
-  readonly inBox: (minX: number, minY: number, maxX: number, maxY: number) => number;
+/** Cells to a millimetre. Cells of all maps stand on one raster, so that one sum finds a place in each of them. */
+export const CELLS_PER_MM = 2;
+const CELL = 1 / CELLS_PER_MM;
+/** Blank cells round the ink, and the most either way: ink beyond has no map. */
+const RIM = 4;
+const MOST = 16_384;
+const ALL_BITS = 0xffffffff;
+const scratch = new Float64Array(4);
+
+function bitCount(word: number): number {
+  const pairs = word - ((word >>> 1) & 0x55555555);
+  const fours = (pairs & 0x33333333) + ((pairs >>> 2) & 0x33333333);
+  return (((fours + (fours >>> 4)) & 0x0f0f0f0f) * 0x01010101) >>> 24;
+}
+
+export class InkMap {
+  /** The raster's column and row this map begins with. */
+  private readonly left: number;
+  private readonly top: number;
+  private readonly columns: number;
+  private readonly rows: number;
+  private readonly words: number;
+  private readonly bits: Uint32Array;
+
+  /** Blank cells over a box of paper and a rim round it. */
+  constructor(minX: number, minY: number, maxX: number, maxY: number) {
+    const blank = !Number.isFinite(minX);
+    this.left = blank ? 0 : Math.floor(minX * CELLS_PER_MM) - RIM;
+    this.top = blank ? 0 : Math.floor(minY * CELLS_PER_MM) - RIM;
+    this.columns = blank ? 0 : Math.min(MOST, Math.ceil(maxX * CELLS_PER_MM) + RIM - this.left);
+    this.rows = blank ? 0 : Math.min(MOST, Math.ceil(maxY * CELLS_PER_MM) + RIM - this.top);
+    this.words = (this.columns + 31) >>> 5;
+    this.bits = new Uint32Array(this.words * this.rows);
+  }
+
+  /** True when a cell from (x0, y0) up to, not with, (x1, y1) of the raster is inked. Whole numbers only, since it is asked most. */
+  anyCells(x0: number, y0: number, x1: number, y1: number): boolean {
+    const { bits, words, rows, columns } = this;
+    const from = Math.max(0, x0 - this.left);
+    const to = Math.min(columns, x1 - this.left) - 1;
+    const top = Math.max(0, y0 - this.top);
+    const bottom = Math.min(rows, y1 - this.top);
+    if (to < from || bottom <= top) return false;
+    const first = from >>> 5;
+    const last = to >>> 5;
+    const leftMask = ALL_BITS << (from & 31);
+    const rightMask = ALL_BITS >>> (31 - (to & 31));
+    for (let row = top * words, end = bottom * words; row < end; row += words) {
+      if (first === last) {
+        if ((bits[row + first]! & leftMask & rightMask) !== 0) return true;
+        continue;
+      }
+      if ((bits[row + first]! & leftMask) !== 0 || (bits[row + last]! & rightMask) !== 0) return true;
+      for (let word = first + 1; word < last; word++) if (bits[row + word] !== 0) return true;
+    }
+    return false;
+  }
+
+  /** Inked cells from (x0, y0) up to, not with, (x1, y1) of the raster. */
+  countCells(x0: number, y0: number, x1: number, y1: number): number {
+    const { bits, words, rows, columns } = this;
+    const from = Math.max(0, x0 - this.left);
+    const to = Math.min(columns, x1 - this.left) - 1;
+    const top = Math.max(0, y0 - this.top);
+    const bottom = Math.min(rows, y1 - this.top);
+    if (to < from) return 0;
+    const first = from >>> 5;
+    const last = to >>> 5;
+    const leftMask = ALL_BITS << (from & 31);
+    const rightMask = ALL_BITS >>> (31 - (to & 31));
+    let count = 0;
+    for (let y = top; y < bottom; y++) {
+      for (let word = first; word <= last; word++) {
+        const inked = bits[y * words + word]!;
+        if (inked !== 0) count += bitCount(inked & (word === first ? leftMask : ALL_BITS) & (word === last ? rightMask : ALL_BITS));
+      }
+    }
+    return count;
+  }
+
+  /** Inked cells inside an axis-parallel box of paper; cells it cuts count whole. */
+  inBox(minX: number, minY: number, maxX: number, maxY: number): number {
+    return this.countCells(Math.floor(minX * CELLS_PER_MM), Math.floor(minY * CELLS_PER_MM), Math.ceil(maxX * CELLS_PER_MM), Math.ceil(maxY * CELLS_PER_MM));
+  }
+
   /** Inked cells met along a segment. */
-  readonly along: (from: PaperPoint, to: PaperPoint) => number;
-}
-
-/** Side of a cell, paper mm; larger sheets take coarser cells so that the map stays small. */
-const CELL = 0.5;
-const MOST_CELLS = 3_000_000;
-
-export function inkMap(segments: readonly Segment[], thicknessMm: number): InkMap {
-  const box = paperBoxAround(segments.flatMap((s) => [s.from, s.to]));
-  if (!Number.isFinite(box.minX)) return { inBox: () => 0, along: () => 0 };
-  const wide = box.maxX - box.minX + 4;
-  const high = box.maxY - box.minY + 4;
-  const cell = Math.max(CELL, Math.sqrt((wide * high) / MOST_CELLS));
-  const columns = Math.ceil(wide / cell) + 1;
-  const rows = Math.ceil(high / cell) + 1;
-  const bits = new Uint8Array(columns * rows);
-  const originX = box.minX - 2;
-  const originY = box.minY - 2;
-  const half = Math.floor(thicknessMm / cell / 2);
-  for (const { from, to } of segments) {
-    const steps = Math.max(1, Math.ceil(Math.hypot(to[0] - from[0], to[1] - from[1]) / (cell * 0.7)));
-    let before = -1;
-    for (let i = 0; i <= steps; i++) {
-      const cx = Math.floor((from[0] + ((to[0] - from[0]) * i) / steps - originX) / cell);
-      const cy = Math.floor((from[1] + ((to[1] - from[1]) * i) / steps - originY) / cell);
-      if (cy * columns + cx === before) continue;
-      before = cy * columns + cx;
-      for (let y = Math.max(0, cy - half); y <= cy + half && y < rows; y++) bits.fill(1, y * columns + Math.max(0, cx - half), y * columns + Math.min(columns, cx + half + 1));
-    }
+  along(from: PaperPoint, to: PaperPoint): number {
+    scratch[0] = from[0];
+    scratch[1] = from[1];
+    scratch[2] = to[0];
+    scratch[3] = to[1];
+    return this.under(scratch);
   }
-  return { inBox: boxCounter(summedAreas(bits, columns, rows), columns, rows, originX, originY, cell), along: lineCounter(bits, columns, rows, originX, originY, cell) };
-}
 
-function summedAreas(bits: Uint8Array, columns: number, rows: number): Uint32Array {
-  const width = columns + 1;
-  const sums = new Uint32Array(width * (rows + 1));
-  for (let y = 0; y < rows; y++) {
-    let row = 0;
-    for (let x = 0; x < columns; x++) {
-      row += bits[y * columns + x] ?? 0;
-      sums[(y + 1) * width + x + 1] = (sums[y * width + x + 1] ?? 0) + row;
-    }
-  }
-  return sums;
-}
-
-function boxCounter(sums: Uint32Array, columns: number, rows: number, originX: number, originY: number, cell: number): InkMap["inBox"] {
-  const width = columns + 1;
-  return (minX, minY, maxX, maxY) => {
-    const x0 = Math.max(0, Math.floor((minX - originX) / cell));
-    const x1 = Math.min(columns, Math.ceil((maxX - originX) / cell));
-    const y0 = Math.max(0, Math.floor((minY - originY) / cell));
-    const y1 = Math.min(rows, Math.ceil((maxY - originY) / cell));
-    if (x1 <= x0 || y1 <= y0) return 0;
-    return (sums[y1 * width + x1] ?? 0) - (sums[y0 * width + x1] ?? 0) - (sums[y1 * width + x0] ?? 0) + (sums[y0 * width + x0] ?? 0);
-  };
-}
-
-function lineCounter(bits: Uint8Array, columns: number, rows: number, originX: number, originY: number, cell: number): InkMap["along"] {
-  return (from, to) => {
-    const wx = to[0] - from[0];
-    const wy = to[1] - from[1];
-    const steps = Math.max(1, Math.ceil(Math.sqrt(wx * wx + wy * wy) / cell));
-    const stepX = wx / (steps * cell);
-    const stepY = wy / (steps * cell);
-    let x = (from[0] - originX) / cell;
-    let y = (from[1] - originY) / cell;
+  /** Inked cells met along a segment, its ends as four numbers in a list. */
+  under(ends: Float64Array): number {
+    const { bits, columns, rows, words } = this;
+    const wx = (ends[2]! - ends[0]!) * CELLS_PER_MM;
+    const wy = (ends[3]! - ends[1]!) * CELLS_PER_MM;
+    const steps = Math.max(1, Math.ceil(Math.sqrt(wx * wx + wy * wy)));
+    const stepX = wx / steps;
+    const stepY = wy / steps;
+    let x = ends[0]! * CELLS_PER_MM - this.left;
+    let y = ends[1]! * CELLS_PER_MM - this.top;
     let count = 0;
     for (let i = 0; i <= steps; i++) {
-      if (x >= 0 && y >= 0 && x < columns && y < rows) count += bits[(y | 0) * columns + (x | 0)] ?? 0;
+      if (x >= 0 && y >= 0 && x < columns && y < rows) count += (bits[(y | 0) * words + ((x | 0) >>> 5)]! >>> (x & 31)) & 1;
       x += stepX;
       y += stepY;
     }
     return count;
-  };
+  }
+
+  /** Inks the cells within a thickness of a line. */
+  drawLine(fromX: number, fromY: number, toX: number, toY: number, thicknessMm: number): void {
+    const { bits, columns, rows, words } = this;
+    const half = Math.floor((thicknessMm * CELLS_PER_MM) / 2);
+    const steps = Math.max(1, Math.ceil((Math.hypot(toX - fromX, toY - fromY) * CELLS_PER_MM) / 0.7));
+    const stepX = ((toX - fromX) * CELLS_PER_MM) / steps;
+    const stepY = ((toY - fromY) * CELLS_PER_MM) / steps;
+    const startX = fromX * CELLS_PER_MM - this.left;
+    const startY = fromY * CELLS_PER_MM - this.top;
+    for (let i = 0; i <= steps; i++) {
+      const cx = Math.floor(startX + stepX * i);
+      const cy = Math.floor(startY + stepY * i);
+      const x1 = Math.min(columns - 1, cx + half);
+      for (let y = Math.max(0, cy - half), last = Math.min(rows - 1, cy + half); y <= last; y++) {
+        for (let x = Math.max(0, cx - half); x <= x1; x++) bits[y * words + (x >>> 5)]! |= 1 << (x & 31);
+      }
+    }
+  }
+
+  /** Inks every cell a turned box reaches. */
+  drawBox(box: TurnedBox): void {
+    const { columns, rows, words, bits } = this;
+    const originX = this.left * CELL;
+    const originY = this.top * CELL;
+    const c = Math.cos(box.angle);
+    const s = Math.sin(box.angle);
+    // Half a cell's diagonal beyond the box, so that a cell it only cuts is inked too.
+    const reach = CELL * Math.SQRT1_2;
+    const w = Math.abs(c) * box.halfWidth + Math.abs(s) * box.halfHeight;
+    const h = Math.abs(s) * box.halfWidth + Math.abs(c) * box.halfHeight;
+    const x1 = Math.min(columns - 1, Math.floor((box.centre[0] + w - originX) * CELLS_PER_MM) + 1);
+    const y1 = Math.min(rows - 1, Math.floor((box.centre[1] + h - originY) * CELLS_PER_MM) + 1);
+    for (let y = Math.max(0, Math.floor((box.centre[1] - h - originY) * CELLS_PER_MM) - 1); y <= y1; y++) {
+      for (let x = Math.max(0, Math.floor((box.centre[0] - w - originX) * CELLS_PER_MM) - 1); x <= x1; x++) {
+        const dx = originX + (x + 0.5) * CELL - box.centre[0];
+        const dy = originY + (y + 0.5) * CELL - box.centre[1];
+        if (Math.abs(dx * c + dy * s) < box.halfWidth + reach && Math.abs(dy * c - dx * s) < box.halfHeight + reach) bits[y * words + (x >>> 5)]! |= 1 << (x & 31);
+      }
+    }
+  }
+}
+
+export function inkMap(segments: readonly Segment[], thicknessMm: number): InkMap {
+  let minX = Infinity;
+  let minY = Infinity;
+  let maxX = -Infinity;
+  let maxY = -Infinity;
+  for (const { from, to } of segments) {
+    minX = Math.min(minX, from[0], to[0]);
+    minY = Math.min(minY, from[1], to[1]);
+    maxX = Math.max(maxX, from[0], to[0]);
+    maxY = Math.max(maxY, from[1], to[1]);
+  }
+  const map = new InkMap(minX, minY, maxX, maxY);
+  for (const { from, to } of segments) map.drawLine(from[0], from[1], to[0], to[1], thicknessMm);
+  return map;
+}
+
+/** Turned boxes, filled. */
+export function boxMap(boxes: readonly TurnedBox[]): InkMap {
+  let minX = Infinity;
+  let minY = Infinity;
+  let maxX = -Infinity;
+  let maxY = -Infinity;
+  for (const [x, y] of boxes.flatMap((box) => boxCorners(box))) {
+    minX = Math.min(minX, x);
+    minY = Math.min(minY, y);
+    maxX = Math.max(maxX, x);
+    maxY = Math.max(maxY, y);
+  }
+  const map = new InkMap(minX, minY, maxX, maxY);
+  for (const box of boxes) map.drawBox(box);
+  return map;
 }
 
 export function boxInside(outer: PaperBox, minX: number, minY: number, maxX: number, maxY: number): number {
   return Math.max(0, outer.minX - minX) + Math.max(0, outer.minY - minY) + Math.max(0, maxX - outer.maxX) + Math.max(0, maxY - outer.maxY);
 }
 
-/** Ink under a turned box, sampled along three lines of it. */
+/** Ink under a turned box, sampled along four lines of it. */
 export function turnedInk(map: InkMap, box: TurnedBox): number {
   const c = Math.cos(box.angle);
   const s = Math.sin(box.angle);
   const w = Math.abs(c) * box.halfWidth + Math.abs(s) * box.halfHeight;
   const h = Math.abs(s) * box.halfWidth + Math.abs(c) * box.halfHeight;
-  if (map.inBox(box.centre[0] - w, box.centre[1] - h, box.centre[0] + w, box.centre[1] + h) === 0) return 0;
+  const [cx, cy] = box.centre;
+  if (!map.anyCells(Math.floor((cx - w) * CELLS_PER_MM), Math.floor((cy - h) * CELLS_PER_MM), Math.ceil((cx + w) * CELLS_PER_MM), Math.ceil((cy + h) * CELLS_PER_MM))) return 0;
   let ink = 0;
-  for (const across of [-1, -0.33, 0.33, 1]) {
-    const x = box.centre[0] - s * box.halfHeight * across;
-    const y = box.centre[1] + c * box.halfHeight * across;
-    ink += map.along([x - c * box.halfWidth, y - s * box.halfWidth], [x + c * box.halfWidth, y + s * box.halfWidth]);
+  for (let i = 0; i < ACROSS.length; i++) {
+    const x = cx - s * box.halfHeight * ACROSS[i]!;
+    const y = cy + c * box.halfHeight * ACROSS[i]!;
+    scratch[0] = x - c * box.halfWidth;
+    scratch[1] = y - s * box.halfWidth;
+    scratch[2] = x + c * box.halfWidth;
+    scratch[3] = y + s * box.halfWidth;
+    ink += map.under(scratch);
   }
   return ink;
 }
+
+const ACROSS = [-1, -0.33, 0.33, 1] as const;

@@ -1,8 +1,12 @@
-/** Candidate places of a label: rings of points around its anchors, priced against fixed ink. */
+/**
+ * Candidate places of labels: rings round their anchors, weighed against what stands on paper already (pipe and symbols,
+ * thin lines, numbers). Tens of thousands are weighed for a sheet, so they live in flat arrays and are made tier by tier,
+ * only when the nearer rings leave something to wish for.
+ */
 import type { PaperBox, PaperPoint } from "../geometry/types";
 import type { DisplayItem } from "./drawing-types";
-import { boxInside, type InkMap } from "./ink-map";
-import type { TurnedBox } from "./plane";
+import { CELLS_PER_MM, type InkMap } from "./ink-map";
+import { ALONG_COSINE, leaderIsShort, leaderSkip } from "./label-leaders";
 
 /** Where a leader may meet a label: a disc about `offset` from the label's middle. */
 export interface Hub {
@@ -33,149 +37,246 @@ export interface LabelInk {
   readonly room: PaperBox;
 }
 
-export interface Candidate {
-  /** Middle of the label. */
-  readonly x: number;
-  readonly y: number;
-  /** The leader's start at its anchor and its end at the label. */
-  readonly fromX: number;
-  readonly fromY: number;
-  readonly toX: number;
-  readonly toY: number;
-  readonly ring: number;
-  /** Price of ring, box and angle; never more than the whole. */
-  readonly base: number;
-  readonly boxTouches: boolean;
-}
+/** Rings by tiers, mm of leader: a farther tier is looked at while the nearer ones leave something to wish for. */
+const RINGS: readonly (readonly number[])[] = [[1.5], [2.8], [4.5], [6.5], [9], [12], [16], [21], [27], [34]];
+/** Places on pipe or outside the room come after those, then places beyond all usual rings. */
+const POOR_TIER = RINGS.length;
+const POOR_RINGS = [1.5, 2.8, 4.5, 6.5, 9, 12, 16, 21, 27, 34] as const;
+const FAR_RINGS: readonly (readonly number[])[] = [[42, 52], [64, 80], [100, 130], [170, 220], [290, 380], [500, 700], [1000, 1500], [2200, 3200]];
+/** Anchors looked at on the near rings, and beyond them. */
+const NEAR_TIERS = 4;
+const MOST_ANCHORS = 5;
+const MOST_ANCHORS_FAR = 2;
+/** Tiers of a label: clear ones by ring, poor ones, far ones. */
+export const TIER_COUNT = RINGS.length + 1 + FAR_RINGS.length;
 
-/**
- * Candidates of some rings, cheapest first. Tens of thousands are weighed for one sheet, so each is a single number: its
- * price in steps, then anchor, hub, angle, ring and whether it touches pipe.
- */
-export interface Candidates {
-  readonly rings: readonly number[];
-  readonly keys: Float64Array;
-}
+/** Prices are whole numbers, this many to one, so that the search need not make a number of them on the heap each time. */
+export const PRICE = 64;
+/** Price of a millimetre of leader; of a touch, which leaves a label (or two) unclean; of thin lines under box and leader. */
+const COST_PER_MM = 0.7 * PRICE;
+const COST_OF_TOUCH = 34 * PRICE;
+const COST_PER_CELL = 0.4 * PRICE;
+const COST_ON_THIN = 7 * PRICE;
+const COST_PER_THIN_CELL = 0.2 * PRICE;
+const COST_OVER_THIN = 4 * PRICE;
+const COST_PER_OVER_CELL = 0.6 * PRICE;
+const COST_OUTSIDE = 40 * PRICE;
+const COST_PER_OUTSIDE = 3 * PRICE;
+const COST_ALONG_PIPE = 8 * PRICE;
+const COST_ALONG_AXIS = 1.2 * PRICE;
+const COST_OF_ANCHOR = 0.6 * PRICE;
 
-/** Rings by tiers: a farther tier is only looked at while the nearer ones leave something to wish for. */
-export const TIERS: readonly (readonly number[])[] = [[1.5, 2.8], [4.5, 6.5], [9, 12], [16, 21], [27, 34]];
-export const FAR_TIERS: readonly (readonly number[])[] = [[42, 52], [64, 80], [100, 130], [170, 220], [290, 380], [500, 700], [1000, 1500], [2200, 3200]];
-/** Price of a millimetre of leader. */
-export const COST_PER_MM = 0.7;
-const COST_ON_PIPE = 30;
-const COST_OUTSIDE = 30;
-/** No place on a pipe or outside the room is cheaper. */
-export const POOR_FROM = Math.min(COST_ON_PIPE, COST_OUTSIDE);
+/** 24 directions, the first at 7.5°, so that none lies along an axis. */
 const ANGLES = 24;
 const OFFSET_DEG = 7.5;
-/** cos 9°: nearer than this to a pipe or an axis a leader reads as one of them. */
-export const ALONG_COSINE = Math.cos((9 * Math.PI) / 180);
-const AXIS_DIRECTIONS: readonly PaperPoint[] = [[Math.cos(Math.PI / 6), 0.5], [Math.cos(Math.PI / 6), -0.5], [0, 1]];
-const DIRECTIONS: readonly PaperPoint[] = Array.from({ length: ANGLES }, (_, i) => {
+const AXES: readonly PaperPoint[] = [[Math.cos(Math.PI / 6), 0.5], [Math.cos(Math.PI / 6), -0.5], [0, 1]];
+const DX = new Float64Array(ANGLES);
+const DY = new Float64Array(ANGLES);
+const AXIAL = new Float64Array(ANGLES);
+for (let i = 0; i < ANGLES; i++) {
   const angle = ((OFFSET_DEG + (i * 360) / ANGLES) * Math.PI) / 180;
-  return [Math.cos(angle), Math.sin(angle)];
-});
-const AXIAL: readonly boolean[] = DIRECTIONS.map((d) => AXIS_DIRECTIONS.some((axis) => Math.abs(axis[0] * d[0] + axis[1] * d[1]) > ALONG_COSINE));
-
-export function labelBox(label: Label, { x, y }: Candidate): TurnedBox {
-  return { centre: [x, y], halfWidth: label.halfWidth, halfHeight: label.halfHeight, angle: 0 };
+  DX[i] = Math.cos(angle);
+  DY[i] = Math.sin(angle);
+  AXIAL[i] = AXES.some((axis) => Math.abs(axis[0] * Math.cos(angle) + axis[1] * Math.sin(angle)) > ALONG_COSINE) ? COST_ALONG_AXIS : 0;
 }
 
-/** Which places are asked for: those clear of pipe and inside the room, or the others. */
-export type Kind = "clear" | "poor";
-
+/** On rings under this every other direction is enough, mm. */
+const HALF_ANGLES_UNDER = 2;
+/** Paper kept between a label and pipe or numbers, beyond what whole cells of the maps keep already, mm. */
+const MARGIN = 0.3;
 /** So far before its end a leader is still outside its label, mm. */
 const LEADER_END = 0.8;
-const MOST_ANCHORS = 8;
-/** Where no place is good one anchor is as good as another. */
-const POOR_ANCHORS = 1;
-const MOST_HUBS = 16;
-/** A number of each: angle and ring in pairs, hub, anchor, and whether pipe is touched. */
-const RING_CODES = 2;
-const TOUCH_CODES = 2;
-const CODES = TOUCH_CODES * RING_CODES * ANGLES * MOST_HUBS * MOST_ANCHORS;
-/** Prices are kept in steps of this share of one. */
-const PRICE_STEPS = 256;
-const scratch = new Float64Array(CODES);
+const MOST_IN_TIER = 65_536;
 
-/** Candidates on the given rings (two at most), cheapest base price first. */
-export function candidatesOf(label: Label, rings: readonly number[], kind: Kind, ink: LabelInk): Candidates {
-  const follows = DIRECTIONS.map((direction) => (label.along.some((d) => Math.abs(d[0] * direction[0] + d[1] * direction[1]) > ALONG_COSINE) ? 8 : 0));
-  let count = 0;
-  label.anchors.slice(0, kind === "poor" ? POOR_ANCHORS : MOST_ANCHORS).forEach((anchor, place) => label.hubs.slice(0, MOST_HUBS).forEach((hub, end) => {
-    const back = 0.35 * Math.sqrt(hub.offset[0] ** 2 + hub.offset[1] ** 2);
-    for (let i = 0; i < ANGLES; i++) {
-      const direction = DIRECTIONS[i] ?? [1, 0];
-      // The label must lie beyond its hub, not back over the anchor.
-      if (hub.offset[0] * direction[0] + hub.offset[1] * direction[1] > back) continue;
-      const fixed = place * 0.6 + (follows[i] ?? 0) + (AXIAL[i] ? 1.2 : 0);
-      for (let r = 0; r < rings.length; r++) {
-        const price = placePrice(label, anchor, hub, direction, rings[r] ?? 0, kind, ink);
-        if (price === 0) continue;
-        const code = ((place * MOST_HUBS + end) * ANGLES + i) * RING_CODES + r;
-        scratch[count++] = Math.floor((Math.abs(price) + fixed) * PRICE_STEPS) * CODES + code * TOUCH_CODES + (price < 0 ? 1 : 0);
+/** Numbers of a candidate in the store: its middle, its leader's start and end, mm. */
+export const STRIDE = 6;
+export const X = 0;
+export const Y = 1;
+export const FROM_X = 2;
+export const FROM_Y = 3;
+export const TO_X = 4;
+export const TO_Y = 5;
+const BOX_TOUCHES = 1;
+const LEADER_TOUCHES = 2;
+export const LED = 4;
+/** What its leader runs over is not known yet. */
+const UNKNOWN = 8;
+
+/** Kept from sheet to sheet, since fresh memory costs more than what is written into it; one sheet is done at a time. */
+const pool = { at: new Float64Array(STRIDE * 32_768), flags: new Uint8Array(32_768), base: new Int32Array(32_768), over: new Int32Array(32_768), order: new Int32Array(32_768), keys: new Float64Array(MOST_IN_TIER) };
+const ends = new Float64Array(4);
+
+export class Candidates {
+  /** STRIDE numbers for each candidate. */
+  at = pool.at;
+  flags = pool.flags;
+  /** Price of ring, box and angle: never more than the whole. The leader's own is worked out when first asked for. */
+  base = pool.base;
+  private over = pool.over;
+  /** Candidates of tiers, cheapest first: those of a tier stand together. */
+  order = pool.order;
+  private count = 0;
+  private readonly starts: Int32Array;
+  private readonly ends: Int32Array;
+  private readonly follows: (Float64Array | null)[];
+
+  constructor(private readonly labels: readonly Label[], private readonly ink: LabelInk, private readonly numbers: InkMap) {
+    this.starts = new Int32Array(labels.length * TIER_COUNT).fill(-1);
+    this.ends = new Int32Array(labels.length * TIER_COUNT);
+    this.follows = new Array<Float64Array | null>(labels.length).fill(null);
+  }
+
+  /** No candidate of a tier is cheaper. */
+  leastCost(tier: number): number {
+    return Math.floor(tier < POOR_TIER ? RINGS[tier]![0]! * COST_PER_MM : COST_OF_TOUCH + (tier === POOR_TIER ? 0 : FAR_RINGS[tier - POOR_TIER - 1]![0]! * COST_PER_MM));
+  }
+
+  /** Where a label's tier begins in `order`; made when first asked for. */
+  start(label: number, tier: number): number {
+    const at = label * TIER_COUNT + tier;
+    if (this.starts[at]! < 0) this.make(label, tier);
+    return this.starts[at]!;
+  }
+
+  /** Where a tier ends that `start` was asked for. */
+  end(label: number, tier: number): number {
+    return this.ends[label * TIER_COUNT + tier]!;
+  }
+
+  private make(index: number, tier: number): void {
+    const label = this.labels[index]!;
+    const first = this.count;
+    const poor = tier >= POOR_TIER;
+    const rings = tier < POOR_TIER ? RINGS[tier]! : tier === POOR_TIER ? POOR_RINGS : FAR_RINGS[tier - POOR_TIER - 1]!;
+    const anchors = Math.min(label.anchors.length, poor ? 1 : tier < NEAR_TIERS ? MOST_ANCHORS : MOST_ANCHORS_FAR);
+    const follows = (this.follows[index] ??= followsOf(label));
+    for (let ring = 0; ring < rings.length; ring++) {
+      for (let anchor = 0; anchor < anchors; anchor++) {
+        for (const hub of label.hubs) this.ringPlaces(label, label.anchors[anchor]!, anchor, hub, rings[ring]!, follows, poor, tier > POOR_TIER);
       }
     }
-  }));
-  return { rings, keys: scratch.slice(0, count).sort() };
+    const made = Math.min(MOST_IN_TIER, this.count - first);
+    const { keys } = pool;
+    for (let i = 0; i < made; i++) keys[i] = this.base[first + i]! * MOST_IN_TIER + i;
+    if (made > 1) keys.subarray(0, made).sort();
+    for (let i = 0; i < made; i++) this.order[first + i] = first + (keys[i]! % MOST_IN_TIER);
+    this.starts[index * TIER_COUNT + tier] = first;
+    this.ends[index * TIER_COUNT + tier] = first + made;
+  }
+
+  /** Price of a candidate among what stands on paper: base and leader. */
+  cost(label: number, candidate: number): number {
+    if ((this.flags[candidate]! & UNKNOWN) !== 0) this.over[candidate] = this.leaderCost(label, candidate);
+    return this.base[candidate]! + this.over[candidate]!;
+  }
+
+  /** True when the box lies on pipe, or the leader runs over pipe, a symbol not its own, or a number. */
+  touches(label: number, candidate: number): boolean {
+    this.cost(label, candidate);
+    return (this.flags[candidate]! & (BOX_TOUCHES | LEADER_TOUCHES)) !== 0;
+  }
+
+  private leaderCost(index: number, candidate: number): number {
+    const { at, flags } = this;
+    const { heavy, light } = this.ink;
+    const o = candidate * STRIDE;
+    const tx = at[o + TO_X]!;
+    const ty = at[o + TO_Y]!;
+    const wx = tx - at[o + FROM_X]!;
+    const wy = ty - at[o + FROM_Y]!;
+    const length = Math.sqrt(wx * wx + wy * wy);
+    flags[candidate]! &= ~UNKNOWN;
+    const label = this.labels[index]!;
+    const skip = leaderSkip(label.along, label.clear, label.own ?? 0, wx / length, wy / length) / length;
+    if (skip >= 1) return 0;
+    ends[0] = at[o + FROM_X]! + wx * skip;
+    ends[1] = at[o + FROM_Y]! + wy * skip;
+    ends[2] = tx;
+    ends[3] = ty;
+    const pipe = heavy.under(ends);
+    const numbers = this.numbers.under(ends);
+    const lines = pipe > 0 || numbers > 0 ? 0 : light.under(ends);
+    if (pipe > 0 || numbers > 0) flags[candidate]! |= LEADER_TOUCHES;
+    return Math.floor((pipe > 0 ? COST_OF_TOUCH + pipe * PRICE : 0) + (numbers > 0 ? 2 * COST_OF_TOUCH : 0) + (lines > 0 ? COST_OVER_THIN + lines * COST_PER_OVER_CELL : 0));
+  }
+
+  /** Adds the places of one ring about one anchor that are of the kind asked for. One long loop: a call with fractions as arguments costs more than its work here. */
+  private ringPlaces(label: Label, anchor: PaperPoint, place: number, hub: Hub, ring: number, follows: Float64Array, poor: boolean, far: boolean): void {
+    const { heavy, light, room } = this.ink;
+    const { numbers } = this;
+    const hx = hub.offset[0];
+    const hy = hub.offset[1];
+    const ax = anchor[0];
+    const ay = anchor[1];
+    const back = 0.35 * Math.sqrt(hx * hx + hy * hy);
+    const w = label.halfWidth + MARGIN;
+    const h = label.halfHeight + MARGIN;
+    const coverW = label.halfWidth - 0.1;
+    const coverH = label.halfHeight - 0.1;
+    const reach = label.clear + ring;
+    const led = ring >= label.leaderFrom;
+    const marks = (led ? LED : 0) | (led && !leaderIsShort(ring) ? UNKNOWN : 0);
+    const fixed = ring * COST_PER_MM + place * COST_OF_ANCHOR;
+    if (this.count + ANGLES > this.flags.length) this.grow();
+    const { at, flags, base, over } = this;
+    const step = ring < HALF_ANGLES_UNDER ? 2 : 1;
+    for (let i = step === 2 ? place & 1 : 0; i < ANGLES; i += step) {
+      const dx = DX[i]!;
+      const dy = DY[i]!;
+      // The label must lie beyond its hub, not back over the anchor.
+      if (hx * dx + hy * dy > back) continue;
+      const toX = ax + dx * reach;
+      const toY = ay + dy * reach;
+      const x = toX + dx * hub.radius - hx;
+      const y = toY + dy * hub.radius - hy;
+      const out = Math.max(0, room.minX - x + w) + Math.max(0, room.minY - y + h) + Math.max(0, x + w - room.maxX) + Math.max(0, y + h - room.maxY);
+      if (out > 0 && !poor) continue;
+      // Nor over its anchor, nor over its own leader's middle or end.
+      if (Math.abs(ax - x) < coverW && Math.abs(ay - y) < coverH) continue;
+      if (Math.abs(ax * 0.4 + toX * 0.6 - x) < coverW && Math.abs(ay * 0.4 + toY * 0.6 - y) < coverH) continue;
+      if (Math.abs(toX - dx * LEADER_END - x) < coverW && Math.abs(toY - dy * LEADER_END - y) < coverH) continue;
+      const x0 = Math.floor((x - w) * CELLS_PER_MM);
+      const x1 = Math.ceil((x + w) * CELLS_PER_MM);
+      const y0 = Math.floor((y - h) * CELLS_PER_MM);
+      const y1 = Math.ceil((y + h) * CELLS_PER_MM);
+      const onPipe = heavy.anyCells(x0, y0, x1, y1);
+      if (poor ? !onPipe && out === 0 && !far : onPipe) continue;
+      if (numbers.anyCells(x0, y0, x1, y1)) continue;
+      const thin = light.countCells(x0, y0, x1, y1);
+      const c = this.count++;
+      const o = c * STRIDE;
+      at[o] = x;
+      at[o + 1] = y;
+      at[o + 2] = ax + dx * label.clear;
+      at[o + 3] = ay + dy * label.clear;
+      at[o + 4] = toX;
+      at[o + 5] = toY;
+      base[c] = fixed + AXIAL[i]! + follows[i]! + (thin > 0 ? COST_ON_THIN + thin * COST_PER_THIN_CELL : 0)
+        + (onPipe ? COST_OF_TOUCH + heavy.countCells(x0, y0, x1, y1) * COST_PER_CELL : 0) + (out > 0 ? COST_OUTSIDE + out * COST_PER_OUTSIDE : 0);
+      over[c] = 0;
+      flags[c] = onPipe ? marks | BOX_TOUCHES : marks;
+    }
+  }
+
+  private grow(): void {
+    const longer = <T extends Float64Array | Uint8Array | Int32Array>(list: T, fresh: T): T => {
+      fresh.set(list);
+      return fresh;
+    };
+    const count = this.flags.length * 2;
+    this.at = pool.at = longer(this.at, new Float64Array(count * STRIDE));
+    this.flags = pool.flags = longer(this.flags, new Uint8Array(count));
+    this.base = pool.base = longer(this.base, new Int32Array(count));
+    this.over = pool.over = longer(this.over, new Int32Array(count));
+    this.order = pool.order = longer(this.order, new Int32Array(count));
+  }
 }
 
-/** Price of a place by ring and fixed ink; below nothing when it touches pipe, 0 when it is not of the kind asked for. */
-function placePrice(label: Label, anchor: PaperPoint, hub: Hub, d: PaperPoint, ring: number, kind: Kind, ink: LabelInk): number {
-  const reach = label.clear + ring;
-  const toX = anchor[0] + d[0] * reach;
-  const toY = anchor[1] + d[1] * reach;
-  const x = toX + d[0] * hub.radius - hub.offset[0];
-  const y = toY + d[1] * hub.radius - hub.offset[1];
-  const w = label.halfWidth + 0.6;
-  const h = label.halfHeight + 0.6;
-  const heavy = ink.heavy.inBox(x - w, y - h, x + w, y + h);
-  if (heavy > 0 && kind === "clear") return 0;
-  const out = boxInside(ink.room, x - w, y - h, x + w, y + h);
-  if (heavy > 0 || out > 0 ? kind === "clear" : kind === "poor") return 0;
-  if (covers(label, x, y, anchor[0], anchor[1]) || covers(label, x, y, anchor[0] * 0.4 + toX * 0.6, anchor[1] * 0.4 + toY * 0.6)) return 0;
-  if (covers(label, x, y, toX - d[0] * LEADER_END, toY - d[1] * LEADER_END)) return 0;
-  const light = ink.light.inBox(x - w, y - h, x + w, y + h);
-  const price = ring * COST_PER_MM + (light > 0 ? 9 + light * 0.25 : 0) + (out > 0 ? COST_OUTSIDE + out * 3 : 0);
-  return heavy > 0 ? -(price + COST_ON_PIPE + heavy * 0.5) : price;
-}
-
-export const basePrice = (key: number): number => Math.floor(key / CODES) / PRICE_STEPS;
-
-/** Writes only the middle of the label a key stands for, since most places turn out to be taken. */
-export function middleInto(out: Float64Array, label: Label, rings: readonly number[], key: number): void {
-  const place = Math.floor((key % CODES) / TOUCH_CODES);
-  const turn = Math.floor(place / RING_CODES);
-  const end = Math.floor(turn / ANGLES);
-  const anchor = label.anchors[Math.floor(end / MOST_HUBS)] ?? NO_HUB.offset;
-  const hub = label.hubs[end % MOST_HUBS] ?? NO_HUB;
-  const d = DIRECTIONS[turn % ANGLES] ?? NO_HUB.offset;
-  const reach = label.clear + (rings[place % RING_CODES] ?? 0) + hub.radius;
-  out[0] = anchor[0] + d[0] * reach - hub.offset[0];
-  out[1] = anchor[1] + d[1] * reach - hub.offset[1];
-}
-
-/** The place a key stands for. */
-export function candidateOf(label: Label, rings: readonly number[], key: number): Candidate {
-  const code = key % CODES;
-  const place = Math.floor(code / TOUCH_CODES);
-  const turn = Math.floor(place / RING_CODES);
-  const end = Math.floor(turn / ANGLES);
-  const anchor = label.anchors[Math.floor(end / MOST_HUBS)] ?? [0, 0];
-  const hub = label.hubs[end % MOST_HUBS] ?? NO_HUB;
-  const d = DIRECTIONS[turn % ANGLES] ?? [1, 0];
-  const ring = rings[place % RING_CODES] ?? 0;
-  const toX = anchor[0] + d[0] * (label.clear + ring);
-  const toY = anchor[1] + d[1] * (label.clear + ring);
-  return {
-    x: toX + d[0] * hub.radius - hub.offset[0], y: toY + d[1] * hub.radius - hub.offset[1],
-    fromX: anchor[0] + d[0] * label.clear, fromY: anchor[1] + d[1] * label.clear, toX, toY, ring, base: basePrice(key), boxTouches: code % TOUCH_CODES === 1,
-  };
-}
-
-const NO_HUB: Hub = { offset: [0, 0], radius: 0 };
-
-/** True when a label at (x, y) would lie over a point of its own leader or its anchor. */
-function covers(label: Label, x: number, y: number, px: number, py: number): boolean {
-  return Math.abs(px - x) < label.halfWidth - 0.1 && Math.abs(py - y) < label.halfHeight - 0.1;
+/** Price, by direction, of a leader that runs along its pipe. */
+function followsOf(label: Label): Float64Array {
+  const follows = new Float64Array(ANGLES);
+  for (let i = 0; i < ANGLES; i++) {
+    for (const d of label.along) if (Math.abs(d[0] * DX[i]! + d[1] * DY[i]!) > ALONG_COSINE) follows[i] = COST_ALONG_PIPE;
+  }
+  return follows;
 }

@@ -1,6 +1,5 @@
-/** What a label's leader runs over: pipe, symbols and thin lines other than those it names and starts from. */
+/** Where ink under a leader begins to count: what it names, and the pipe it starts from, are no foreign ink. */
 import type { PaperPoint } from "../geometry/types";
-import { ALONG_COSINE, type Candidate, type Label, type LabelInk } from "./label-candidates";
 
 /** A leader no longer than this has no room to touch anything. */
 const LEADER_NONE = 1.6;
@@ -8,31 +7,23 @@ const LEADER_NONE = 1.6;
 const PIPE_LEFT = 1.25;
 /** A little beyond the anchor nothing counts, mm. */
 const NEAR_ANCHOR = 0.9;
+/** cos 9°: nearer than this to a pipe or an axis a leader reads as one of them. */
+export const ALONG_COSINE = Math.cos((9 * Math.PI) / 180);
 /** Nearer to the pipe than this (cosine) a leader could run over the next weld instead of its own symbol. */
 const BESIDE_COSINE = 0.85;
 
-/** Where ink under a leader begins to count: what it names, and the pipe it starts from, are no foreign ink. Null: nowhere. */
-function leaderBegin(label: Label, { fromX, fromY, toX, toY, ring }: Candidate): PaperPoint | null {
-  if (ring <= LEADER_NONE) return null;
-  const d: PaperPoint = [(toX - fromX) / ring, (toY - fromY) / ring];
-  const beside = label.along.reduce((most, way) => Math.max(most, Math.abs(way[0] * d[0] + way[1] * d[1])), 0);
-  const left = label.along.length === 0 || beside > ALONG_COSINE ? 0 : PIPE_LEFT / Math.sqrt(1 - beside * beside);
-  const skip = Math.max(NEAR_ANCHOR, left - label.clear, beside < BESIDE_COSINE ? (label.own ?? 0) - label.clear : 0);
-  return skip >= ring ? null : [fromX + d[0] * skip, fromY + d[1] * skip];
+/**
+ * Length of a leader's start that counts for nothing, by its direction.
+ * @param along paper directions of the pipe at the anchor
+ * @param clear the leader starts this far from the anchor, mm
+ * @param own so far from the anchor it runs over the symbol it names, mm
+ */
+export function leaderSkip(along: readonly PaperPoint[], clear: number, own: number, dx: number, dy: number): number {
+  let beside = 0;
+  for (const way of along) beside = Math.max(beside, Math.abs(way[0] * dx + way[1] * dy));
+  const left = along.length === 0 || beside > ALONG_COSINE ? 0 : PIPE_LEFT / Math.sqrt(1 - beside * beside);
+  return Math.max(NEAR_ANCHOR, left - clear, beside < BESIDE_COSINE ? own - clear : 0);
 }
 
-/** Price of fixed ink under the leader. */
-export function leaderPrice(label: Label, candidate: Candidate, ink: LabelInk): number {
-  const begin = leaderBegin(label, candidate);
-  if (!begin) return 0;
-  const to: PaperPoint = [candidate.toX, candidate.toY];
-  const crossed = ink.heavy.along(begin, to);
-  const thin = ink.light.along(begin, to);
-  return (crossed > 0 ? 16 + crossed : 0) + (thin > 0 ? 5 + thin * 0.6 : 0);
-}
-
-/** True when the leader runs over foreign pipe or symbols. */
-export function leaderTouches(label: Label, candidate: Candidate, ink: LabelInk): boolean {
-  const begin = leaderBegin(label, candidate);
-  return begin !== null && ink.heavy.along(begin, [candidate.toX, candidate.toY]) > 0;
-}
+/** True when a leader is too short to run over anything. */
+export const leaderIsShort = (lengthMm: number): boolean => lengthMm <= LEADER_NONE;

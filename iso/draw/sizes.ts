@@ -29,10 +29,10 @@ export const ARROW_HALF = 0.55;
 /** Under this span a dimension's ends are dots. */
 export const DOT_SPAN = 8;
 
-export const BALLOON = 7;
-/** Weld mark: hexagon, corner to corner. */
-export const HEXAGON = 7.6;
-export const PIECE_HEIGHT = 5.4;
+export const BALLOON = 6.2;
+/** Weld mark: hexagon, corner to corner. Two figures at 2.5 mm fit these marks with half a millimetre to spare; larger ones lengthen every leader. */
+export const HEXAGON = 6.8;
+export const PIECE_HEIGHT = 4.8;
 
 /** Room of the symbols along the pipe, from the working point. */
 export const ELBOW_ARM = 6;

@@ -116,11 +116,11 @@ function pointGap(p: Vec, a: Vec, b: Vec): number {
 const SMALLER: Record<string, Nps> = { "6": "4", "4": "3", "3": "2", "2": "1" };
 
 /** What stands on straight pipe, as often as a shop's lines have it. */
-function straightItem(walk: Walk, nps: Nps, mayBranch: boolean): Item {
+function straightItem(walk: Walk, nps: Nps, mayBranch: boolean, upright: boolean): Item {
   const r = walk.random();
   if (r < 0.26) return valve({ valve: walk.pick(["gate", "gate", "globe", "check", "ball"] as const), tag: `V-${100 + walk.points}` });
   if (r < 0.34) return flange();
-  if (r < 0.42 && SMALLER[nps]) return reducer(SMALLER[nps], walk.random() < 0.4 ? "eccentric" : "concentric", walk.random() < 0.5 ? "D" : "U");
+  if (r < 0.42 && SMALLER[nps]) return !upright && walk.random() < 0.4 ? reducer(SMALLER[nps], "eccentric", walk.random() < 0.5 ? "D" : "U") : reducer(SMALLER[nps]);
   if (r < 0.52) return joint;
   if (r < 0.62) return support("PS");
   if (r < 0.66) return { kind: "instrument", tag: `FE-${100 + walk.points}`, ends: "flanged", ratingClass: null, lengthMm: 250 };
@@ -168,16 +168,16 @@ function walkRun(walk: Walk, from: Vec, first: Way, count: number, nps: Nps, bra
   for (let i = 0; i < count; i++) {
     let step: Step | null = null;
     for (let tries = 0; tries < STEP_TRIES && !step; tries++) {
-      const trial = i === 0 ? { ...nextStep(walk, first, true), way: first } : nextStep(walk, way, straightOn);
+      const trial: Step = i === 0 ? { ...nextStep(walk, first, true), way: first } : nextStep(walk, way, straightOn);
       const to: Vec = [at[0] + trial.offset[0], at[1] + trial.offset[1], at[2] + trial.offset[2]];
       if (walk.free(at, to)) step = trial;
-      else if (tries === STEP_TRIES / 2) straightOn = false;
     }
-    // Nowhere to go: the run ends at the point before, which was laid with nothing on it.
+    // Nowhere to go: the run ends at the point before.
     if (!step) return;
     const to: Vec = [at[0] + step.offset[0], at[1] + step.offset[1], at[2] + step.offset[2]];
-    const straight = step.way !== null && i < count - 1 && walk.random() < 0.52;
-    let item: Item = i === count - 1 ? last : straight ? straightItem(walk, size, wanted > 0) : { kind: "none" };
+    // A slope ends at an elbow, which takes its small mismatch.
+    const straight: boolean = step.way !== null && !step.slope && i < count - 1 && walk.random() < 0.52;
+    let item: Item = i === count - 1 ? last : straight ? straightItem(walk, size, wanted > 0, step.way === "U" || step.way === "D") : { kind: "none" };
     if (!straight && i < count - 1 && step.way !== null) item = turnItem(walk);
     lay(walk, step, item);
     walk.laid.push({ from: at, to });
@@ -231,7 +231,7 @@ export function randomLine(seed: number): RunDocument {
   });
   walk.builder.start(random() < 0.6 ? flange({ goes: "nozzle", text: `NOZZLE N${1 + Math.floor(random() * 9)}` }) : end("continued", `L-${seed + 1}`));
   walk.points = 1;
-  walkRun(walk, [0, 0, 0], walk.pick(walk.main), Math.max(3, left), nps, branches, random() < 0.5 ? flange({ goes: "nozzle", text: "NOZZLE N2" }) : end("continued", `L-${seed + 2}`));
+  walkRun(walk, [0, 0, 0], walk.pick(walk.main), Math.max(LEAST_POINTS - 1, left), nps, branches, random() < 0.5 ? flange({ goes: "nozzle", text: "NOZZLE N2" }) : end("continued", `L-${seed + 2}`));
   branchPoints.forEach((points, i) => {
     const stem = walk.stems[i];
     if (!stem) return;
