@@ -1,13 +1,15 @@
 "use client";
 import { zodResolver } from "@hookform/resolvers/zod";
-import { useState, type ReactNode } from "react";
-import { useForm, type FieldErrors, type UseFormRegister } from "react-hook-form";
+import { useState } from "react";
+import { useForm } from "react-hook-form";
 import type { LineSettings } from "@/iso";
 import { Button } from "@/components/ui/button";
 import { failureText } from "@/components/ui/fetcher";
 import { Check, Select, TextField } from "@/components/ui/field";
 import { Notice } from "@/components/ui/notice";
 import { UNIT_OPTIONS } from "./new-job-dialog";
+import { MarkFields } from "./mark-fields";
+import { Group, type SettingsPart } from "./settings-group";
 import { NPS_OPTIONS, settingsTextSchema, settingsToText, type SettingsText } from "./settings-text";
 
 export interface LineSettingsFormProps {
@@ -19,12 +21,11 @@ export interface LineSettingsFormProps {
   readonly saveLabel?: string;
 }
 
-interface Part {
-  readonly register: UseFormRegister<SettingsText>;
-  readonly errors: FieldErrors<SettingsText>;
-}
-
 const CLASSES = ["150", "300", "600", "900", "1500"].map((value) => ({ value, label: `Class ${value}` }));
+const FORGED_CLASSES = [
+  { value: "", label: "Class 3000 (usual)" },
+  ...["2000", "3000", "6000"].map((value) => ({ value, label: `Class ${value}` })),
+];
 const ELBOWS = [
   { value: "LR", label: "Long radius" },
   { value: "SR", label: "Short radius" },
@@ -60,6 +61,7 @@ export function LineSettingsForm({
         <PipeFields {...part} fixedUnits={fixedUnits} />
         <AllowanceFields {...part} />
         <LimitFields {...part} />
+        <MarkFields {...part} />
         <EnteredFields {...part} />
       </fieldset>
       {editable ? (
@@ -77,25 +79,7 @@ export function LineSettingsForm({
   );
 }
 
-function Group({
-  title,
-  hint,
-  children,
-}: {
-  readonly title: string;
-  readonly hint?: string;
-  readonly children: ReactNode;
-}) {
-  return (
-    <div role="group" aria-label={title}>
-      <h3>{title}</h3>
-      {hint ? <p className="text-sm text-soft">{hint}</p> : null}
-      <div className="mt-2 grid gap-4 sm:grid-cols-2 xl:grid-cols-4">{children}</div>
-    </div>
-  );
-}
-
-function PipeFields({ register, errors, fixedUnits }: Part & { readonly fixedUnits: boolean }) {
+function PipeFields({ register, errors, fixedUnits }: SettingsPart & { readonly fixedUnits: boolean }) {
   return (
     <Group title="Pipe and fittings">
       {fixedUnits ? null : (
@@ -112,11 +96,17 @@ function PipeFields({ register, errors, fixedUnits }: Part & { readonly fixedUni
         error={errors.ratingClass?.message}
         {...register("ratingClass")}
       />
+      <Select
+        label="Socket and threaded fittings"
+        options={FORGED_CLASSES}
+        error={errors.forgedClass?.message}
+        {...register("forgedClass")}
+      />
     </Group>
   );
 }
 
-function AllowanceFields({ register, errors }: Part) {
+function AllowanceFields({ register, errors }: SettingsPart) {
   return (
     <Group
       title="Allowances"
@@ -136,6 +126,13 @@ function AllowanceFields({ register, errors }: Part) {
         error={errors.slipOnSetting?.message}
         {...register("slipOnSetting")}
       />
+      <TextField
+        label="Thread make-up"
+        figure
+        placeholder="as tabulated"
+        error={errors.threadMakeUp?.message}
+        {...register("threadMakeUp")}
+      />
       <TextField label="Field trim" figure error={errors.fieldTrim?.message} {...register("fieldTrim")} />
       <Check
         label="A face dimension includes the gasket"
@@ -146,9 +143,9 @@ function AllowanceFields({ register, errors }: Part) {
   );
 }
 
-function LimitFields({ register, errors }: Part) {
+function LimitFields({ register, errors }: SettingsPart) {
   return (
-    <Group title="Limits" hint="A standard elbow is taken within so many degrees; a pup is pipe between two welds; the box is what a spool ships in. Each gives a finding on the line, never a change of what was typed.">
+    <Group title="Limits" hint="A standard elbow is taken within so many degrees; a pup is pipe between two welds; longer pipe than the stock is split with a weld; a loop that misses by no more is taken up in its last leg; the box is what a spool ships in, turned whichever way. Each gives a finding on the line, never a change of what was typed.">
       <TextField
         label="Elbow within, degrees"
         figure
@@ -161,6 +158,20 @@ function LimitFields({ register, errors }: Part) {
         placeholder="1.5 OD"
         error={errors.minimumPup?.message}
         {...register("minimumPup")}
+      />
+      <TextField
+        label="Longest stock pipe"
+        figure
+        placeholder="never split"
+        error={errors.stockLength?.message}
+        {...register("stockLength")}
+      />
+      <TextField
+        label="Loop may miss by"
+        figure
+        placeholder="3mm"
+        error={errors.loopTolerance?.message}
+        {...register("loopTolerance")}
       />
       <div className="grid grid-cols-3 gap-3 sm:col-span-2">
         <TextField
@@ -176,7 +187,7 @@ function LimitFields({ register, errors }: Part) {
   );
 }
 
-function EnteredFields({ register, errors }: Part) {
+function EnteredFields({ register, errors }: SettingsPart) {
   return (
     <Group
       title="As entered, per owner's specification"

@@ -12,6 +12,7 @@ import {
   type LineSettings,
   type UnitSystem,
 } from "@/iso";
+import { markRules, markRulesToText, markTextShape } from "./mark-rules-text";
 
 const name = (what: string, max: number) =>
   z.string().trim().min(1, `Enter ${what}.`).max(max, `At most ${max} characters.`);
@@ -36,6 +37,11 @@ const shape = z.object({
   boxLength: z.string(),
   boxWidth: z.string(),
   boxHeight: z.string(),
+  stockLength: z.string(),
+  loopTolerance: z.string(),
+  threadMakeUp: z.string(),
+  forgedClass: z.enum(["", "2000", "3000", "6000"]),
+  ...markTextShape,
   insulation: free,
   pwht: free,
   nde: free,
@@ -78,12 +84,17 @@ export const settingsTextSchema = shape.transform((values, context): LineSetting
       socketPullBackMm: lengths.socketPullBack,
       gasketMm: lengths.gasket,
       slipOnSettingMm: lengths.slipOnSetting,
+      ...optionalLength("threadMakeUpMm", values.threadMakeUp, values.units, "threadMakeUp", context),
     },
     standardElbowWithinDeg: degreesOf(values.withinDeg, context),
     minimumPupMm,
     fieldTrimMm: lengths.fieldTrim,
     faceIncludesGasket: values.faceIncludesGasket,
     shippingBoxMm: [lengths.boxLength, lengths.boxWidth, lengths.boxHeight],
+    ...optionalLength("stockLengthMm", values.stockLength, values.units, "stockLength", context),
+    ...optionalLength("loopToleranceMm", values.loopTolerance, values.units, "loopTolerance", context),
+    ...(values.forgedClass === "" ? {} : { forgedClass: Number(values.forgedClass) as LineSettings["forgedClass"] }),
+    ...markRules(values, context),
     asEntered: {
       insulation: values.insulation,
       pwht: values.pwht,
@@ -104,6 +115,12 @@ function lengthOf(text: string, units: UnitSystem, field: string, context: z.Ref
     message: parsed.ok ? "Not under zero." : parsed.message,
   });
   return 0;
+}
+
+/** A length that may be left empty: then the setting is absent and its own default holds. */
+function optionalLength<K extends string>(key: K, text: string, units: UnitSystem, field: string, context: z.RefinementCtx): Partial<Record<K, number>> {
+  if (text.trim() === "") return {};
+  return { [key]: lengthOf(text, units, field, context) } as Record<K, number>;
 }
 
 function degreesOf(text: string, context: z.RefinementCtx): number {
@@ -128,6 +145,7 @@ const EXACT_MM = 0.000_05;
 /** What the form starts with. */
 export function settingsToText(settings: LineSettings): SettingsText {
   const length = (mm: number) => lengthEntryText(mm, settings.units);
+  const optional = (mm: number | undefined) => (mm === undefined ? "" : length(mm));
   const [boxLength, boxWidth, boxHeight] = settings.shippingBoxMm;
   return {
     units: settings.units,
@@ -148,6 +166,11 @@ export function settingsToText(settings: LineSettings): SettingsText {
     boxLength: length(boxLength),
     boxWidth: length(boxWidth),
     boxHeight: length(boxHeight),
+    stockLength: optional(settings.stockLengthMm),
+    loopTolerance: optional(settings.loopToleranceMm),
+    threadMakeUp: optional(settings.allowances.threadMakeUpMm),
+    forgedClass: settings.forgedClass === undefined ? "" : (String(settings.forgedClass) as SettingsText["forgedClass"]),
+    ...markRulesToText(settings.marks),
     ...settings.asEntered,
   };
 }

@@ -18,6 +18,17 @@ describe("line settings as a form holds them", () => {
     expect(rounded(back)).toEqual(rounded(settings));
   });
 
+  it("keep what is left empty absent, and rules of marks that differ", () => {
+    const plain = settingsTextSchema.parse(settingsToText(defaultLineSettings("imperial")));
+    for (const key of ["marks", "stockLengthMm", "loopToleranceMm", "forgedClass"]) expect(plain).not.toHaveProperty(key);
+    const marks = { weldPrefix: "W-", weldStart: 101, piecePrefix: "", pieceStart: 1, added: "next", spools: "numbers" } as const;
+    const usual = defaultLineSettings("metric");
+    const full = { ...usual, allowances: { ...usual.allowances, threadMakeUpMm: 12 }, stockLengthMm: 6_000, loopToleranceMm: 2, forgedClass: 6000, marks } as const;
+    expect(rounded(settingsTextSchema.parse(settingsToText(full)))).toEqual(rounded(full));
+    const wrong = settingsTextSchema.safeParse({ ...settingsToText(usual), weldStart: "0", pieceStart: "x", loopTolerance: "-3" });
+    expect(wrong.success ? [] : wrong.error.issues.map((issue) => issue.path[0]).sort()).toEqual(["loopTolerance", "pieceStart", "weldStart"]);
+  });
+
   it("show a length exactly, whatever the unit system", () => {
     fc.assert(
       fc.property(
