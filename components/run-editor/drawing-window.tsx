@@ -163,7 +163,7 @@ function refUnder(target: EventTarget): Ref | null {
 /** Place of a point's number in the frame; its middle where the number is not on paper. */
 function placeOf(svg: SVGSVGElement, pointId: string): FieldPlace {
   const frame = svg.parentElement?.getBoundingClientRect();
-  const number = [...svg.querySelectorAll(`text[data-ref="dimension:${CSS.escape(pointId)}"]`)][0]?.getBoundingClientRect();
+  const number = [...svg.querySelectorAll("text[data-ref]")].find((text) => text.getAttribute("data-ref") === `dimension:${pointId}`)?.getBoundingClientRect();
   if (!frame) return { left: 0, top: 0 };
   if (!number) return { left: frame.width / 2, top: frame.height / 2 };
   const margin = Math.min(104, frame.width / 2);
