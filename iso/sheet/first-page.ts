@@ -11,7 +11,7 @@ import type { PageFrame } from "./page-frame";
 import { REVISION_ROWS_SHOWN, revisionTable } from "./revision-table";
 import type { SheetFacts } from "./sheet-facts";
 import { EDGE_LINE } from "./sheet-size";
-import { materialsTable, trimmedElbowsTable, weldsTable } from "./spool-tables";
+import { materialsTable, trimmedElbowsTable, weightTable, weldsTable } from "./spool-tables";
 import { setTable, tableHeight, type Table } from "./table";
 import { placeInRoom, TABLE_GAP, type FlowTable } from "./table-flow";
 
@@ -71,6 +71,7 @@ type NextRows = ReadonlyMap<string, number | null>;
 function restOf(facts: SheetFacts, notes: Table | null, next: NextRows, revisionsShown: number): FlowTable[] {
   const all: readonly (readonly [Table | null, "full" | "half"])[] = [
     [cutListTable(facts), "full"], [trimmedElbowsTable(facts), "full"], [materialsTable(facts), "half"], [weldsTable(facts), "half"], [notes, "half"],
+    [weightTable(facts), "half"],
   ];
   const rest = all.flatMap(([table, width]): FlowTable[] => {
     if (table === null) return [];
@@ -109,7 +110,7 @@ function sideColumn(facts: SheetFacts, notes: Table | null, column: PaperBox, me
   const revisions = revisionBlock(facts, room, measure);
   items.push(...revisions.items);
   let y = room.minY;
-  for (const table of [materialsTable(facts), weldsTable(facts), notes]) {
+  for (const table of [materialsTable(facts), weldsTable(facts), notes, weightTable(facts)]) {
     if (table === null) continue;
     const placed = placeInRoom(table, { ...room, minY: y, maxY: revisions.top }, measure);
     items.push(...placed.items);

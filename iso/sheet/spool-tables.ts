@@ -1,8 +1,10 @@
 /** Tables of a spool besides the cut list: materials, welds, trimmed elbows. Cautions stand where the work is done. */
 import { STRAIGHT_RAD } from "../geometry/tolerances";
-import { formatAngleDeg, formatDecimal, formatLength, formatTerm } from "../units/format";
+import type { Vec3 } from "../geometry/types";
+import { formatAngleDeg, formatDecimal, formatLength, formatTerm, formatWeight } from "../units/format";
 import type { UnitSystem } from "../run/document";
-import type { Component, Joint, MaterialRow } from "../run/model-types";
+import type { Component, Joint, MaterialRow, Spool } from "../run/model-types";
+import { volumeLeftOut } from "../run/spool-volume";
 import { outsideDiameterMm, sizeText, type SheetFacts } from "./sheet-facts";
 import type { Cell, Row, Table } from "./table";
 
@@ -124,4 +126,65 @@ function weldsOf(facts: SheetFacts, component: Component): string {
   const numbers = facts.model.joints.filter((joint) => joint.number !== null && (joint.a === component.id || joint.b === component.id)).map((joint) => joint.number);
   if (numbers.length === 0) return "";
   return numbers.length === 1 ? `at weld ${numbers[0]}` : `between welds ${numbers.join(" and ")}`;
+}
+
+/** Weight, contents and surface of the spool, each with what it leaves out; insulation is never guessed. */
+export function weightTable(facts: SheetFacts): Table | null {
+  const { spool } = facts;
+  if (!spool) return null;
+  return {
+    title: "WEIGHT AND CONTENTS",
+    lead: ["Weight is an empty estimate, centre of gravity off-centre."],
+    columns: [{ head: "", share: 0, minMm: 27 }, { head: "", share: 1, minMm: 40 }],
+    rows: weightRows(facts, spool).map(([label, value]) => ({ cells: [label, [{ text: value, face: "bold" as const }]] })),
+    foot: ["Bare steel and studs; insulation, lining and supports are not in it."],
+  };
+}
+
+function weightRows(facts: SheetFacts, spool: Spool): (readonly [string, string])[] {
+  const { units } = facts.input;
+  const unweighed = facts.components.filter((c) => c.weightKg === null).map((c) => c.description);
+  const leftOut = volumeLeftOut(facts.components, units).map((kind) => kind.replace(/-/g, " "));
+  const shop = facts.components.filter((c) => c.weightSource === "weighed by the shop").length;
+  return [
+    ["EMPTY", formatWeight(spool.weightKg, units)],
+    ...(unweighed.length === 0 ? [] : [["NOT WEIGHED", countedText(unweighed)] as const]),
+    ...(shop === 0 ? [] : [["BY THE SHOP", `${shop} part${shop === 1 ? "" : "s"} weighed by the shop`] as const]),
+    ...(spool.centreOfGravity ? [["CENTRE OF GRAVITY", centreText(facts, spool.centreOfGravity)] as const] : []),
+    ...(spool.volumeL === undefined || spool.filledKg === undefined ? [] : [
+      ["FILLED WITH WATER", `${formatWeight(spool.filledKg, units)} (${volumeText(spool.volumeL, units)})`] as const,
+      ...(leftOut.length === 0 ? [] : [["NOT FILLED", leftOut.join(", ")] as const]),
+    ]),
+    ...(spool.paintM2 === undefined ? [] : [["BARE SURFACE", `${surfaceText(spool.paintM2, units)}, pipe and butt-weld fittings`] as const]),
+  ];
+}
+
+/** "Gate valve, flanged (2), outlet": each once, with how many. */
+function countedText(names: readonly string[]): string {
+  const counts = new Map<string, number>();
+  for (const name of names) counts.set(name, (counts.get(name) ?? 0) + 1);
+  return [...counts].map(([name, count]) => (count === 1 ? name : `${name} (${count})`)).join("; ");
+}
+
+/** Where the weighed parts balance, from the spool's first working point: east, north, up. */
+function centreText(facts: SheetFacts, at: Vec3): string {
+  const first = facts.legs[0]?.from ?? facts.components[0]?.centre;
+  if (!first) return "not known";
+  const axes = [["E", "W"], ["N", "S"], ["UP", "DOWN"]] as const;
+  const parts = axes.map(([plus, minus], i) => {
+    const mm = at[i]! - first[i]!;
+    return `${formatLength(Math.abs(mm), facts.input.units)} ${mm < 0 ? minus : plus}`;
+  });
+  return `${parts.join(", ")} of the start of its first leg`;
+}
+
+const LITRES_PER_GALLON = 3.785411784;
+const FEET2_PER_M2 = 10.76391041671;
+
+function volumeText(litres: number, units: UnitSystem): string {
+  return units === "metric" ? `${formatDecimal(litres, 1)} L` : `${formatDecimal(litres / LITRES_PER_GALLON, 1)} gal`;
+}
+
+function surfaceText(m2: number, units: UnitSystem): string {
+  return units === "metric" ? `${formatDecimal(m2, 2)} m²` : `${formatDecimal(m2 * FEET2_PER_M2, 1)} sq ft`;
 }
