@@ -16,6 +16,8 @@ export * from "./units/format";
 export * from "./catalogue/keys";
 export * from "./catalogue/catalogue";
 export * from "./catalogue/pipe";
+export * from "./catalogue/key-words";
+export * from "./catalogue/missing-keys";
 
 // closing
 export * from "./closing/closing-types";
@@ -25,6 +27,10 @@ export * from "./closing/advice";
 export * from "./closing/sensitivity";
 export * from "./closing/close-between";
 export * from "./closing/snap";
+
+// nest
+export * from "./nest/nest-types";
+export { nestPieces } from "./nest/nest";
 
 // layout
 export * from "./layout/mitre";
@@ -54,13 +60,14 @@ export { proposeView } from "./draw/orient";
 export * from "./draw/svg";
 export { endKeys, jointKeys, partKeys } from "./draw/legend-keys";
 export { inkBounds } from "./draw/item-bounds";
+export { itemMoved } from "./draw/paths";
 
 // sheet
 export * from "./sheet/sheet-types";
 export * from "./sheet/sheet-size";
 export * from "./sheet/compose";
 export * from "./sheet/state-mark";
-export { LEGEND_WORDS } from "./sheet/legend";
+export { LEGEND_WORDS, legendItems, legendLayout } from "./sheet/legend";
 export { legendPicture } from "./sheet/legend-pictures";
 export { sheetFacts, sizeText as pipeSizeText, type SheetFacts } from "./sheet/sheet-facts";
 

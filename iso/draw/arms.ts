@@ -24,14 +24,14 @@ export interface Arm {
 export const NO_ARM: Arm = { parts: [], room: 0, knots: [{ real: 0, paper: 0 }] };
 
 const ARM_ROOM: Readonly<Record<ComponentKind, number>> = {
-  elbow: size.ELBOW_ARM, "trimmed-elbow": size.ELBOW_ARM, return: size.ELBOW_ARM, mitre: size.ELBOW_ARM + 2, "socket-elbow": size.ELBOW_ARM - 1,
+  elbow: size.ELBOW_ARM, "trimmed-elbow": size.ELBOW_ARM, return: size.ELBOW_ARM, mitre: 12, "socket-elbow": size.ELBOW_ARM - 1,
   tee: size.TEE_ARM, "reducing-tee": size.TEE_ARM, cross: size.TEE_ARM, "socket-tee": size.TEE_ARM, "socket-cross": size.TEE_ARM,
   outlet: 7, "stub-in": 2, pad: 0,
   "reducer-concentric": size.REDUCER_ROOM, "reducer-eccentric": size.REDUCER_ROOM,
-  "flange-weld-neck": size.FLANGE_ARM, "flange-slip-on": size.FLANGE_ARM - 0.6, "flange-socket-weld": size.FLANGE_ARM - 0.6,
-  "flange-threaded": size.FLANGE_ARM - 0.6, "flange-lap-joint": 2, "stub-end": size.FLANGE_ARM, "bolt-set": 0,
+  "flange-weld-neck": size.FLANGE_ARM, "flange-slip-on": size.FLANGE_ARM - 0.6, "flange-socket-weld": 5.2,
+  "flange-threaded": 4.6, "flange-lap-joint": 2, "stub-end": size.FLANGE_ARM, "bolt-set": 0,
   "flange-blind": size.BLIND_ROOM, gasket: size.GASKET_ROOM, valve: size.VALVE_HALF, instrument: size.VALVE_HALF,
-  coupling: size.COUPLING_HALF, union: size.COUPLING_HALF + 1, "half-coupling": 6.6, cap: size.CAP_ROOM, "socket-cap": size.CAP_ROOM, support: 0,
+  coupling: size.COUPLING_HALF, union: size.COUPLING_HALF + 1, "half-coupling": 6.6, cap: 5, "socket-cap": 4.6, support: 0,
 };
 
 /** A reach that begins this close to the working point begins at it: take-outs are tens of millimetres, gaps a few. */

@@ -55,17 +55,18 @@ function breakPlaces(placed: Placed, drawn: readonly DrawnEdge[]): readonly Brea
     const before = drawn.find((d) => d.edge.to === vertex && !d.edge.stub);
     const first = changes[0];
     if (!first || !(after ?? before)) return [];
-    return after ? placeOn(after, pointId, changes, first.position, "from") : before ? placeOn(before, pointId, changes, first.position, "to") : [];
+    const isWelded = placed.sketch.joints.some((joint) => joint.pointId === pointId);
+    return after ? placeOn(after, pointId, changes, first.position, "from", isWelded) : before ? placeOn(before, pointId, changes, first.position, "to", isWelded) : [];
   });
 }
 
 /** Beyond the symbols of the point's arm and its weld dot, or at the point itself where nothing stands. */
-const BEYOND_ARM = 3;
+const BEYOND_ARM = 6;
 
-function placeOn(d: DrawnEdge, pointId: string, changes: readonly LineBreak[], position: Vec3, end: "from" | "to"): readonly BreakPlace[] {
+function placeOn(d: DrawnEdge, pointId: string, changes: readonly LineBreak[], position: Vec3, end: "from" | "to", isWelded: boolean): readonly BreakPlace[] {
   const arm = end === "from" ? d.edge.fromArm.room : d.edge.toArm.room;
   const at = edgePlace(d, position);
-  const off = arm === 0 ? 0 : arm + BEYOND_ARM;
+  const off = arm + (arm > 0 || isWelded ? BEYOND_ARM : 0);
   const along = end === "from" ? Math.min(at + off, d.length / 2 + at / 2) : Math.max(at - off, at / 2);
   return [{ pointId, changes, at: edgePoint(d, along), direction: d.direction }];
 }

@@ -3,13 +3,14 @@ import type { PaperPoint } from "../geometry/types";
 import { formatLength } from "../units/format";
 import { componentAnchor } from "./component-anchor";
 import { edgePlace, edgePoint, type DrawnEdge, type DrawnJoint } from "./drawn";
-import type { Piece } from "../run/model-types";
+import type { Component, Piece } from "../run/model-types";
 import type { DrawOptions, Ref } from "./drawing-types";
 import type { Label } from "./label-candidates";
 import { marksLabel, type Mark } from "./mark-labels";
 import type { Placed } from "./place";
 import * as size from "./sizes";
 import { partFrames, type PartFrame } from "./part-frames";
+import { changedGroups } from "./revision-cloud";
 import { groupBy, type Sketch } from "./sketch";
 import { isWeld } from "./weld-marks";
 
@@ -58,14 +59,14 @@ export function componentMarks(placed: Placed, drawn: readonly DrawnEdge[], opti
   const frames = partFrames(placed, drawn);
   const frameOf = groupBy(frames, (frame) => frame.component.id);
   const own = placed.sketch.components.filter((component) => numbers.has(component.id));
-  const groups = groupBy(own, (component) => groupKey(component.kind, component.id, frameOf.get(component.id)?.[0]));
+  const groups = groupBy(own, (component) => groupKey(component, frameOf));
   const labels: Label[] = [];
   const shown: Ref[] = [];
   for (const [key, components] of groups) {
     const marks: Mark[] = components.flatMap((component) =>
       (numbers.get(component.id) ?? []).map(({ item }) => ({ shape: "circle" as const, text: String(item), ref: { kind: "component" as const, id: component.id } })),
     );
-    const lead = components.find((component) => component.kind !== "gasket") ?? components[0];
+    const lead = components.find((component) => component.kind !== "gasket" && component.kind !== "bolt-set") ?? components[0];
     const at = lead ? componentAnchor(placed, lead.kind, lead.pointId, frameOf.get(lead.id) ?? []) : null;
     if (!lead || !at) continue;
     labels.push(marksLabel(marks, { id: `item ${key}`, ...at }, options.measure));
@@ -77,8 +78,11 @@ export function componentMarks(placed: Placed, drawn: readonly DrawnEdge[], opti
   return { labels, shown };
 }
 
-function groupKey(kind: string, id: string, frame: PartFrame | undefined): string {
-  if (!frame || !(kind.startsWith("flange") || kind === "gasket")) return id;
+/** Bolts go with the gasket they close on; a gasket with the flange on its side. */
+function groupKey({ kind, id }: Component, frameOf: ReadonlyMap<string, readonly PartFrame[]>): string {
+  const lead = kind === "bolt-set" ? id.replace(".bolts", ".gasket") : id;
+  const frame = frameOf.get(lead)?.[0];
+  if (!frame || !(kind.startsWith("flange") || kind === "stub-end" || kind === "gasket" || kind === "bolt-set")) return lead;
   return `${frame.drawn.edge.id} ${frame.component.pointId}`;
 }
 
@@ -109,14 +113,13 @@ export function pieceMarks(placed: Placed, drawn: readonly DrawnEdge[], options:
 const anchorsAlong = (d: DrawnEdge): readonly number[] => (d.edge.kind === "offset" ? [0.36, 0.64, 0.5, 0.84, 0.16] : [0.36, 0.64, 0.5]);
 const MOST_ANCHORS = 5;
 
-/** The triangle of the latest revision at each point it touched. */
+/** The triangle of the latest revision at each of its clouds. */
 export function revisionMarks(placed: Placed, options: DrawOptions): readonly Label[] {
   const { changed } = options;
   if (!changed) return [];
-  return changed.pointIds.flatMap((id) => {
-    const at = placed.paper.get(id);
-    const ref: Ref = { kind: "point", id };
-    return at && placed.sketch.isHome(id) ? [marksLabel([{ shape: "triangle", text: changed.code, ref }], { id: `revision ${id}`, anchors: [at], clear: 1.8, along: [] }, options.measure)] : [];
+  return changedGroups(placed, changed.pointIds).map(({ ids, outline }) => {
+    const ref: Ref = { kind: "point", id: ids[0] ?? "" };
+    return marksLabel([{ shape: "triangle", text: changed.code, ref }], { id: `revision ${ref.id}`, anchors: outline, clear: 1.4, along: [] }, options.measure);
   });
 }
 

@@ -5,7 +5,7 @@ import type { Joint, Node } from "../run/model-types";
 import { formatLength } from "../units/format";
 import type { DrawnEdge } from "./drawn";
 import type { MeasureText } from "./drawing-types";
-import { fittingLabels } from "./fitting-notes";
+import { boltLines, fittingLabels } from "./fitting-notes";
 import type { Label } from "./label-candidates";
 import { blockLabel, marksLabel, type BlockLine } from "./mark-labels";
 import type { Placed } from "./place";
@@ -22,7 +22,8 @@ export function endLabels(placed: Placed, drawn: readonly DrawnEdge[], measure: 
     const item = items.get(vertex.id);
     if (!node || !at || edges.length !== 1 || !item || (node.arriving !== null && node.leaving !== null)) continue;
     if (node.arriving === null && branchesFrom(sketch, node.pointId)) continue;
-    const lines = [...goesWords(item), ...coordinates(sketch, node, item)];
+    const holes = (sketch.componentsAt.get(vertex.id) ?? []).flatMap((component) => boltLines(component));
+    const lines = [...goesWords(item), ...coordinates(sketch, node, item), ...holes];
     labels.push(blockLabel(lines, { id: `end ${vertex.id}`, anchors: [at], clear: item.kind === "flange" ? 3.8 : 2, along: pipeAt(drawn, vertex.id) }, { kind: "point", id: vertex.id }, measure));
   }
   return [...labels, ...stubLabels(placed, drawn, measure), ...fittingLabels(placed, drawn, measure)];
@@ -41,6 +42,7 @@ export function goesWords(item: Item): readonly BlockLine[] {
   const bold = (text: string): BlockLine => ({ text: text.toUpperCase().trim(), bold: true });
   const text = "text" in item ? item.text : "";
   if (item.kind === "cap") return [bold("CAPPED END")];
+  if (item.kind === "coupling") return [bold(item.half ? "HALF COUPLING END" : "COUPLING END")];
   if (item.kind === "flange" && item.flange === "blind" && item.goes === "open") return [bold(`BLIND END ${text}`)];
   if (item.kind !== "end" && item.kind !== "flange") return [];
   switch (item.goes) {

@@ -6,7 +6,7 @@
 import { pipeOdMm } from "../catalogue/pipe";
 import type { UnitSystem } from "../run/document";
 import type { Component } from "../run/model-types";
-import { formatAngleDeg, formatLength } from "../units/format";
+import { formatLength } from "../units/format";
 import { componentAnchor } from "./component-anchor";
 import type { DrawnEdge } from "./drawn";
 import type { MeasureText } from "./drawing-types";
@@ -19,6 +19,7 @@ import type { Placed } from "./place";
 import * as size from "./sizes";
 import { groupBy } from "./sketch";
 import { mitrePieces } from "./turns";
+import { shortAngle } from "./words";
 
 export function fittingLabels(placed: Placed, drawn: readonly DrawnEdge[], measure: MeasureText): readonly Label[] {
   const frames = groupBy(partFrames(placed, drawn), (frame) => frame.component.id);
@@ -38,7 +39,9 @@ const plain = (text: string): BlockLine => ({ text, bold: false });
 
 function fittingLines(placed: Placed, component: Component, frames: readonly PartFrame[]): BlockLine[] {
   const { units } = placed.sketch.model.document.settings;
-  return [...kindLines(placed, component, frames, units), ...rollLines(component, units), ...boltLines(component)];
+  // At the end of a run the holes stand with the end's own words; a turned flange needs no roll beside them.
+  if (component.boltTurn) return isEndFlange(placed, component) ? [] : boltLines(component);
+  return [...kindLines(placed, component, frames, units), ...rollLines(component, units)];
 }
 
 function kindLines(placed: Placed, component: Component, frames: readonly PartFrame[], units: UnitSystem): BlockLine[] {
@@ -48,7 +51,7 @@ function kindLines(placed: Placed, component: Component, frames: readonly PartFr
     case "valve": return component.text.trim() === "" ? [] : [{ text: component.text.toUpperCase(), bold: true }];
     case "support": return supportLines(placed, component, units);
     case "mitre": return [plain(`MITRE, ${mitrePieces(placed, component.pointId)} PIECES`)];
-    case "trimmed-elbow": return [plain(`TRIMMED TO ${formatAngleDeg(component.angleRad ?? 0)}`), plain("CONFIRM PERMITTED")];
+    case "trimmed-elbow": return [plain(`TRIMMED TO ${shortAngle(component.angleRad ?? 0)}`), plain("CONFIRM PERMITTED")];
     case "stub-in": return padLines(frames, units);
     default: return [];
   }
@@ -56,7 +59,7 @@ function kindLines(placed: Placed, component: Component, frames: readonly PartFr
 
 function bendAngle(component: Component): string {
   const angle = component.angleRad ?? 0;
-  return Math.abs(angle - Math.PI / 2) < size.ROLL_SQUARE_RAD ? "" : `, ${formatAngleDeg(angle)}`;
+  return Math.abs(angle - Math.PI / 2) < size.ROLL_SQUARE_RAD ? "" : `, ${shortAngle(angle)}`;
 }
 
 const SIDE_WORDS = { U: "ON TOP", D: "ON BOTTOM", N: "NORTH", S: "SOUTH", E: "EAST", W: "WEST" } as const;
@@ -87,7 +90,7 @@ function padLines(frames: readonly PartFrame[], units: UnitSystem): BlockLine[] 
 function rollLines(component: Component, units: UnitSystem): BlockLine[] {
   const { roll } = component;
   if (!roll || isSquareRoll(roll.angleRad)) return [];
-  return [plain(`ROLL ${formatAngleDeg(Math.abs(roll.angleRad))} ${roll.angleRad < 0 ? "CCW" : "CW"}`), plain(`ARC ${formatLength(roll.arcMm < 0 ? -roll.arcMm : roll.arcMm, units)}`)];
+  return [plain(`ROLL ${shortAngle(Math.abs(roll.angleRad))} ${roll.angleRad < 0 ? "CCW" : "CW"}`), plain(`ARC ${formatLength(roll.arcMm < 0 ? -roll.arcMm : roll.arcMm, units)}`)];
 }
 
 /** 0, 90, 180 or 270 degrees: what anybody takes a fitting to stand at. */
@@ -96,7 +99,11 @@ export function isSquareRoll(angleRad: number): boolean {
   return Math.abs(angleRad - Math.round(angleRad / quarter) * quarter) < size.ROLL_SQUARE_RAD;
 }
 
-function boltLines(component: Component): BlockLine[] {
+function isEndFlange(placed: Placed, component: Component): boolean {
+  return (placed.sketch.edgesAt.get(placed.sketch.vertexOf(component.pointId)) ?? []).length === 1;
+}
+
+export function boltLines(component: Component): BlockLine[] {
   const turn = component.boltTurn;
   return turn ? [plain(`HOLES ${String(Math.round(turn.turnDeg * 100) / 100)}° CW FROM ${turn.from}`)] : [];
 }

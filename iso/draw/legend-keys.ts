@@ -37,7 +37,8 @@ export function partKeys(components: readonly Component[], itemOf: (pointId: str
     const item = itemOf(component.pointId);
     const own = isBend(component) ? "bend" : kind === "valve" ? valve : KIND_KEYS[kind];
     if (own) keys.add(own);
-    if (RIMMED.has(kind) && (ends === "socket" || ends === "threaded")) keys.add(ends === "socket" ? "socket-end" : "threaded-end");
+    if (RIMMED.has(kind) && ends === "socket") keys.add("socket-end");
+    if (RIMMED.has(kind) && ends === "threaded" && kind !== "valve") keys.add("threaded-end");
     if (component.boltTurn) keys.add("bolt-turn");
     if ((kind === "outlet" || kind === "stub-in") && (item?.kind === "outlet" || item?.kind === "stub-in") && item.set === "in") keys.add("set-in");
     if (kind === "stub-in" && item?.kind === "stub-in" && item.padMm !== undefined) keys.add("pad");

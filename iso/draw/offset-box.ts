@@ -3,7 +3,7 @@
  * an upright edge, so that no paper angle has to carry the meaning (ISO 6412-2 clause 4, from memory; handbook practice).
  */
 import type { PaperPoint, Vec3 } from "../geometry/types";
-import { formatAngleDeg, formatLength } from "../units/format";
+import { formatLength } from "../units/format";
 import type { DrawnEdge } from "./drawn";
 import type { DisplayItem, Ref } from "./drawing-types";
 import type { LineText } from "./fixed-text";
@@ -13,7 +13,7 @@ import { crossingOf, type Segment } from "./plane";
 import { project } from "./project";
 import * as size from "./sizes";
 import { typedSlopes } from "./slopes";
-import { offsetNaming, riseAngle, setLength, travelText, type OffsetNaming } from "./words";
+import { offsetNaming, riseAngle, setLength, shortAngle, travelText, type OffsetNaming } from "./words";
 
 export interface OffsetNote {
   readonly id: string;
@@ -144,11 +144,11 @@ function angleLines(d: DrawnEdge, naming: OffsetNaming, units: "imperial" | "met
   const { leg, real } = d.edge;
   const level = Math.hypot(leg.to[0] - leg.from[0], leg.to[1] - leg.from[1]);
   const fromRun = Math.acos(Math.min(1, Math.abs(leg.direction[naming.runAxis])));
-  if (naming.title === "HORIZONTAL OFFSET") return [`${formatAngleDeg(fromRun)} FROM RUN`];
-  if (naming.title === "VERTICAL OFFSET") return [`${formatAngleDeg(riseAngle(leg))} FROM LEVEL`];
+  if (naming.title === "HORIZONTAL OFFSET") return [`${shortAngle(fromRun)} FROM RUN`];
+  if (naming.title === "VERTICAL OFFSET") return [`${shortAngle(riseAngle(leg))} FROM LEVEL`];
   const plan = level > 0 ? Math.acos(Math.min(1, Math.max(Math.abs(leg.to[0] - leg.from[0]), Math.abs(leg.to[1] - leg.from[1])) / level)) : 0;
   const run = naming.runAxis === 2 ? plan : Math.acos(Math.min(1, Math.abs(leg.to[naming.runAxis] - leg.from[naming.runAxis]) / Math.max(level, size.LEVEL_MM)));
-  return [`SET ${formatLength(setLength(d.edge, naming.runAxis), units)}`, `HORIZONTAL ${formatAngleDeg(real[0] !== 0 && real[1] !== 0 ? run : 0)}`, `VERTICAL ${formatAngleDeg(riseAngle(leg))}`];
+  return [`SET ${formatLength(setLength(d.edge, naming.runAxis), units)}`, `HORIZONTAL ${shortAngle(real[0] !== 0 && real[1] !== 0 ? run : 0)}`, `VERTICAL ${shortAngle(riseAngle(leg))}`];
 }
 
 /** Hatching of a triangle, parallel to its first edge. */

@@ -8,7 +8,7 @@ import type { Placed } from "./place";
 import type { Segment } from "./plane";
 
 /** Clear paper between a changed point and its cloud, and chord of one scallop, mm. */
-const CLEAR = 8.5;
+const CLEAR = 6.6;
 const SCALLOP = 4.2;
 /** How far a scallop swells beyond its chord, as a share of it. */
 const SWELL = 0.42;
@@ -20,7 +20,7 @@ export const NO_CLOUDS: PassInk = { items: [], heavy: [], light: [] };
 export function cloudPass(placed: Placed, options: DrawOptions): PassInk {
   const ids = options.changed?.pointIds ?? [];
   if (ids.length === 0) return NO_CLOUDS;
-  const outlines = changedGroups(placed, ids).map(cloudOutline);
+  const outlines = changedGroups(placed, ids).map(({ outline }) => outline);
   return {
     items: outlines.map((outline) => pathItem("box", null, scallops(outline), { stroke: "alert", widthMm: CLOUD_LINE })),
     heavy: [],
@@ -28,8 +28,13 @@ export function cloudPass(placed: Placed, options: DrawOptions): PassInk {
   };
 }
 
-/** Changed points joined where a drawn leg has both of its ends among them. */
-function changedGroups(placed: Placed, ids: readonly string[]): readonly (readonly PaperPoint[])[] {
+export interface ChangedGroup {
+  readonly ids: readonly string[];
+  readonly outline: readonly PaperPoint[];
+}
+
+/** Changed points joined where a drawn leg has both of its ends among them, each group with the outline its cloud follows. */
+export function changedGroups(placed: Placed, ids: readonly string[]): readonly ChangedGroup[] {
   const { sketch, paper } = placed;
   const own = [...new Set(ids.map((id) => sketch.vertexOf(id)))].filter((id) => paper.has(id));
   const group = new Map(own.map((id) => [id, id]));
@@ -37,11 +42,10 @@ function changedGroups(placed: Placed, ids: readonly string[]): readonly (readon
     const [a, b] = [group.get(edge.from), group.get(edge.to)];
     if (a !== undefined && b !== undefined && a !== b) for (const [id, name] of group) if (name === b) group.set(id, a);
   }
-  const names = [...new Set(group.values())];
-  return names.map((name) => own.filter((id) => group.get(id) === name).flatMap((id): readonly PaperPoint[] => {
-    const at = paper.get(id);
-    return at ? [at] : [];
-  }));
+  return [...new Set(group.values())].map((name) => {
+    const members = own.filter((id) => group.get(id) === name);
+    return { ids: members, outline: cloudOutline(members.map((id) => paper.get(id) ?? [0, 0])) };
+  });
 }
 
 function cloudOutline(points: readonly PaperPoint[]): readonly PaperPoint[] {

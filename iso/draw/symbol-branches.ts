@@ -7,7 +7,7 @@ import { lineItem, pathItem, polygonSegments } from "./paths";
 import * as size from "./sizes";
 
 /** Half length of the saddle line of a stub-in and of the bar of its pad. */
-const SADDLE_HALF = 2.6;
+const SADDLE_HALF = 3.4;
 const PAD_HALF = 4.4;
 /** How far what is set into the run shows beyond its line. */
 const SET_IN_BEYOND = 2;

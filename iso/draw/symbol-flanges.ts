@@ -13,11 +13,6 @@ export function crossStroke(f: PartFrame, out: number, from: number, to: number,
 
 const across = (f: PartFrame, out: number, half: number, width: number): DisplayItem => crossStroke(f, out, -half, half, width);
 
-/** Two leaning ticks over the pipe: a thread. */
-function threadTicks(f: PartFrame, out: number): DisplayItem[] {
-  return [0, 1].map((k) => lineItem("symbol", f.ref, f.at(out + k * 1.1 - 0.5, -1.7), f.at(out + k * 1.1 + 0.5, 1.7), 0.3, f.ink));
-}
-
 /** A cup open away from the working point: a socket. */
 export function socketCup(f: PartFrame, bottom: number, rim: number, half: number): DisplayItem {
   return pathItem("symbol", f.ref, polygonSegments([f.at(rim, -half), f.at(bottom, -half), f.at(bottom, half), f.at(rim, half)], false), { stroke: f.ink, widthMm: 0.35 });
@@ -35,7 +30,7 @@ export function flangeItems(f: PartFrame): DisplayItem[] {
     case "flange-blind": return [across(f, f.inner + 0.6, size.FLANGE_STROKE_HALF, 1.2)];
     case "flange-slip-on": return [face, across(f, f.inner + 1.5, size.FLANGE_STROKE_HALF - 0.5, 0.35)];
     case "flange-socket-weld": return [face, socketCup(f, f.inner + 1.4, f.inner + 3.1, size.HUB_STROKE_HALF)];
-    case "flange-threaded": return [face, ...threadTicks(f, f.inner + 2.2)];
+    case "flange-threaded": return [face, across(f, f.inner + 1.5, 2.7, 0.35)];
     case "flange-lap-joint": return lapRing(f);
     case "stub-end": return [across(f, f.inner + 0.35, 2.3, 0.5)];
     default: return [face, across(f, f.inner + 2, size.HUB_STROKE_HALF, size.SYMBOL_WIDTH)];

@@ -28,10 +28,10 @@ export function reducerItems(f: PartFrame, projection: Projection): DisplayItem[
   ];
 }
 
-/** Half a sleeve, open towards the working point. */
+/** Half a sleeve, open towards the working point; a half coupling is closed there. */
 export function sleeveItems(f: PartFrame): DisplayItem[] {
   const h = 2.2;
-  return [pathItem("symbol", f.ref, polygonSegments([f.at(f.inner, -h), f.at(f.outer, -h), f.at(f.outer, h), f.at(f.inner, h)], false), { stroke: f.ink, fill: "paper", widthMm: size.SYMBOL_WIDTH })];
+  return [pathItem("symbol", f.ref, polygonSegments([f.at(f.inner, -h), f.at(f.outer, -h), f.at(f.outer, h), f.at(f.inner, h)], f.component.kind === "half-coupling"), { stroke: f.ink, fill: "paper", widthMm: size.SYMBOL_WIDTH })];
 }
 
 /** Half a union: a low sleeve and, at its nut, a tall stroke. */

@@ -3,7 +3,7 @@ import { vecDot, vecLength, vecSub } from "../geometry/vec3";
 import type { Vec3 } from "../geometry/types";
 import type { UnitSystem } from "../run/document";
 import type { Leg, Model } from "../run/model-types";
-import { formatLength } from "../units/format";
+import { formatAngleDeg, formatLength } from "../units/format";
 import { FOOT_MM, INCH_MM } from "../units/length";
 import type { MeasureText } from "./drawing-types";
 import * as size from "./sizes";
@@ -99,6 +99,11 @@ export function slopeText(leg: Leg, units: UnitSystem): string {
   if (units === "imperial") return `${formatLength(ratio * FOOT_MM, "imperial")} PER FT`;
   if (ratio > 0 && ratio <= 1 / 50 && Math.abs(1 / ratio - Math.round(1 / ratio)) < 0.05) return `1:${Math.round(1 / ratio)}`;
   return `${(ratio * 100).toFixed(2).replace(/\.?0+$/, "")} %`;
+}
+
+/** An angle as a fitter says it: two figures at most after the point, none where they are noughts. */
+export function shortAngle(rad: number): string {
+  return formatAngleDeg(rad).replace(/\.?0+°$/, "°").replace(/^°$/, "0°");
 }
 
 /** Angle of a leg above (or below) the level, radians. */

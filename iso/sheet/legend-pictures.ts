@@ -15,7 +15,7 @@ import { TEXT_CAP } from "./sheet-size";
 
 const ROOM = 10.5;
 /** Welding symbols are as long as they are on a drawing. */
-const WELDING_ROOM = 23;
+const WELDING_ROOM = 26;
 const PART_SCALE = 0.62;
 const THIN = { layer: "title" as const, widthMm: 0.25 };
 const FILLED = { layer: "title" as const, stroke: null, fill: "ink" as const };
