@@ -16,7 +16,7 @@ import { FaultTable, GoodPreview } from "./import-findings";
 import { FileSettings } from "./file-settings";
 import { firstChoices, useImportFacts, type GoodFile, type ImportChoices } from "./import-state";
 import { readImportFile } from "./read-file";
-import { TargetStep } from "./target-step";
+import { TargetStep, type TargetStepProps } from "./target-step";
 
 export interface ImportViewProps {
   readonly document: RunDocument;
@@ -81,29 +81,40 @@ function ImportSteps({ file, document, by, onImport }: ImportViewProps & { reado
       <StepHead n={2} title="What its columns mean" />
       <ColumnStep facts={facts} choices={choices} onChange={change} />
       {facts.refusal ? <Notice tone="caution" className="mt-4">{facts.refusal}</Notice> : null}
-      {facts.read ? (
-        <>
-          <StepHead n={3} title="What was understood" />
-          {bad > 0 ? <FaultTable faults={facts.read.faults} badRows={bad} /> : null}
-          <GoodPreview good={facts.read.good} units={document.settings.units} />
-          <StepHead n={4} title="Where it goes" />
-          <TargetStep document={document} facts={facts} choices={choices} onChange={change} />
-          {bad > 0 ? (
-            <Check
-              className="mt-3"
-              checked={choices.leaveOut}
-              onChange={(event) => setChoices((now) => ({ ...now, leaveOut: event.target.checked }))}
-              label={`Leave out the ${countWords(bad)} ${bad === 1 ? "row" : "rows"} listed above. Each point is measured from the one before it, so what follows a missing row shifts unless rows give positions.`}
-            />
-          ) : null}
-          {facts.plan && !facts.plan.ok ? <Notice tone="caution" className="mt-3">{facts.plan.message}</Notice> : null}
-        </>
-      ) : null}
+      <Understood document={document} facts={facts} choices={choices} onChange={change} onLeaveOut={(leaveOut) => setChoices((now) => ({ ...now, leaveOut }))} />
       <DialogActions>
         <Button tone="primary" disabled={!ready} onClick={bringIn}>
           {facts.plan?.ok ? `Bring in ${countWords(facts.plan.points)} ${facts.plan.points === 1 ? "point" : "points"}` : "Bring in"}
         </Button>
       </DialogActions>
+    </>
+  );
+}
+
+interface UnderstoodProps extends TargetStepProps {
+  readonly onLeaveOut: (leaveOut: boolean) => void;
+}
+
+/** What the rows came to, those not understood first, and where the others go. */
+function Understood({ document, facts, choices, onChange, onLeaveOut }: UnderstoodProps) {
+  if (!facts.read) return null;
+  const bad = facts.read.badRows.length;
+  return (
+    <>
+      <StepHead n={3} title="What was understood" />
+      {bad > 0 ? <FaultTable faults={facts.read.faults} badRows={bad} /> : null}
+      <GoodPreview good={facts.read.good} units={document.settings.units} />
+      <StepHead n={4} title="Where it goes" />
+      <TargetStep document={document} facts={facts} choices={choices} onChange={onChange} />
+      {bad > 0 ? (
+        <Check
+          className="mt-3"
+          checked={choices.leaveOut}
+          onChange={(event) => onLeaveOut(event.target.checked)}
+          label={`Leave out the ${countWords(bad)} ${bad === 1 ? "row" : "rows"} listed above. An offset is measured from the row before it, so what follows a missing row shifts unless rows give positions.`}
+        />
+      ) : null}
+      {facts.plan && !facts.plan.ok ? <Notice tone="caution" className="mt-3">{facts.plan.message}</Notice> : null}
     </>
   );
 }

@@ -14,7 +14,7 @@ import type { GoodRow, RowFault } from "@/lib/rules/exchange/read-points";
 const FAULT_COLUMNS: readonly Column<RowFault>[] = [
   { key: "row", head: "Row", figure: true, cell: (fault) => fault.row },
   { key: "column", head: "Column", cell: (fault) => fault.column },
-  { key: "value", head: "Value", cell: (fault) => <span className="figure break-all">{fault.value === "" ? "empty" : fault.value.slice(0, 60)}</span> },
+  { key: "value", head: "Value", cell: (fault) => <span className="figure [overflow-wrap:anywhere]">{fault.value === "" ? "empty" : fault.value.slice(0, 60)}</span> },
   { key: "message", head: "What to do", cell: (fault) => fault.message },
 ];
 /** Rows of a table shown at once; the rest on asking. */
