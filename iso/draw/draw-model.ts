@@ -12,6 +12,8 @@ import { PROJECTIONS } from "./project";
 import { separateRows } from "./separate";
 import { sketchOf } from "./sketch";
 
+/** Turns of moving pipes apart and fitting what came of it. */
+const SEPARATIONS = 4;
 /** Tries to make everything fit by drawing the legs shorter. */
 const FIT_TRIES = 5;
 /** Times the labels are placed afresh because they stood out of the room, and the least the pipe then gives up, mm. */
@@ -84,7 +86,7 @@ export function linesFit(plan: PlacePlan, view: View, options: DrawOptions, { st
   return over.widthMm <= 0 && over.heightMm <= 0;
 }
 
-/** Twice: room taken by moving pipes apart shortens the legs, which can bring others close. */
+/** In turns: room taken by moving pipes apart shortens the legs, which can bring others close. */
 export function standingOf(plan: PlacePlan, view: View, options: DrawOptions): Standing {
   const projection = PROJECTIONS[view];
   const room = roomWithin(options, FIRST_MARGIN);
@@ -94,7 +96,7 @@ export function standingOf(plan: PlacePlan, view: View, options: DrawOptions): S
   };
   let rows = NO_ROWS;
   let stretch = fitted(rows);
-  for (let pass = 0; pass < 2; pass++) {
+  for (let pass = 0; pass < SEPARATIONS; pass++) {
     const moved = separateRows(plan, projection, stretch, rows);
     if (moved === rows) break;
     rows = moved;

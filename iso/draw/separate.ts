@@ -6,11 +6,11 @@
 import { AXES, type Axis } from "./clusters";
 import type { Row } from "./compact";
 import { mendOffAxis } from "./off-axis";
-import { layoutBox, layoutLines, layoutOf, solveAxis, wishesAt, type ExtraRows, type Layout, type PlacePlan, type Wishes } from "./place";
+import { layoutAt, layoutBox, layoutLines, layoutOf, solveAxis, wishesAt, type ExtraRows, type Layout, type PlacePlan, type Wishes } from "./place";
 import type { Projection } from "./project";
 import * as size from "./sizes";
 
-const ROUNDS = 12;
+const ROUNDS = 16;
 /** Trials in all: large lines stop here, so that editing stays quick; later where pipe still lies on pipe. */
 const TRIALS = 40;
 const TRIALS_LAID = 240;
@@ -48,31 +48,47 @@ interface Trial {
   readonly layout: Layout;
   readonly conflicts: readonly Conflict[];
   readonly cost: number;
+  /** Part of the cost from pipe that lies on pipe. */
+  readonly laid: number;
 }
 
 export function separateRows(plan: PlacePlan, projection: Projection, stretch: number, start: ExtraRows): ExtraRows {
   const wishes = wishesAt(plan, projection, stretch);
-  let now = judged(plan, start, layoutOf(plan, projection, wishes, start));
+  const first = judged(plan, start, layoutOf(plan, projection, wishes, start));
+  const found = searched(plan, first, (now, axis, rows) => movedLayout(plan, now.layout, wishes, axis, rows));
+  if (found === first || plan.offsets.length === 0) return found.rows;
+  // Off-axis legs stand where their mending led; laid out afresh they may stand a little otherwise, and the search goes on from there.
+  const afresh = (rows: ExtraRows): Layout => layoutAt(plan, projection, stretch, rows);
+  const again = judged(plan, found.rows, afresh(found.rows));
+  return again.cost <= found.cost + LEAST_GAIN ? found.rows : searched(plan, again, (_, __, rows) => afresh(rows)).rows;
+}
+
+function searched(plan: PlacePlan, start: Trial, moved: (now: Trial, axis: Axis, rows: ExtraRows) => Layout): Trial {
+  let now = start;
   let trials = 0;
   for (let round = 0; round < ROUNDS; round++) {
     const [worst] = now.conflicts;
     const most = worst && worst.cost >= PRICE_LAID ? TRIALS_LAID : TRIALS;
     if (!worst || trials >= most) break;
     let best: Trial | null = null;
+    // What frees most of the pipe that lies on pipe, at whatever price: taken when nothing makes the whole better.
+    let freed: Trial | null = null;
     for (const [rank, conflict] of now.conflicts.entries()) {
       // The worst few are weighed against each other; the rest only while those cannot be helped.
       if (trials >= most || (rank >= PAIRS && best)) break;
       for (const { axis, row } of optionsFor(plan, now.layout, conflict)) {
         if (trials++ >= most) break;
         const rows = now.rows.map((list, at) => (at === axis ? [...list, row] : list));
-        const next = judged(plan, rows, movedLayout(plan, now.layout, wishes, axis, rows));
+        const next = judged(plan, rows, moved(now, axis, rows));
         if (next.cost < (best?.cost ?? now.cost - LEAST_GAIN)) best = next;
+        if (next.laid < (freed?.laid ?? now.laid - LEAST_GAIN)) freed = next;
       }
     }
-    if (!best) break;
-    now = best;
+    const better: Trial | null = best ?? freed;
+    if (!better) break;
+    now = better;
   }
-  return now.rows;
+  return now;
 }
 
 /** Only the axis with the new row has to be solved again; off-axis legs it left standing badly are mended. */
@@ -89,8 +105,12 @@ function judged(plan: PlacePlan, rows: ExtraRows, layout: Layout): Trial {
   const conflicts = conflictsOf(plan, layoutLines(plan, layout));
   const box = layoutBox(plan, layout);
   let cost = (box.maxX - box.minX + box.maxY - box.minY) * COST_OF_SIZE;
-  for (const conflict of conflicts) cost += conflict.cost;
-  return { rows, layout, conflicts, cost };
+  let laid = 0;
+  for (const conflict of conflicts) {
+    cost += conflict.cost;
+    if (conflict.cost >= PRICE_LAID) laid += conflict.cost;
+  }
+  return { rows, layout, conflicts, cost, laid };
 }
 
 /** Rows that would push the two apart along an axis on which they do not overlap. */
