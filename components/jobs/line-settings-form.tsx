@@ -26,10 +26,7 @@ const FORGED_CLASSES = [
   { value: "", label: "Class 3000 (usual)" },
   ...["2000", "3000", "6000"].map((value) => ({ value, label: `Class ${value}` })),
 ];
-const ELBOWS = [
-  { value: "LR", label: "Long radius" },
-  { value: "SR", label: "Short radius" },
-];
+const ELBOWS = [{ value: "LR", label: "Long radius" }, { value: "SR", label: "Short radius" }];
 
 /** What each new line starts from: pipe, fittings, allowances, limits and texts as entered. */
 export function LineSettingsForm({
