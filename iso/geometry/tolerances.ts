@@ -80,3 +80,9 @@ export const FLATTEN_MM = 0.02;
 
 /** Radians, and share of a lever. Step of the differences by which a snapped piece is refitted: the cube root of float64's grain. */
 export const SNAP_REFIT = 6e-6;
+
+/** Currency, and share of a plan's cost. A saving this small is the noise of the linear programme. */
+export const NEST_WORTH = 1e-6;
+
+/** Kilograms. A spool lighter than this has no centre of gravity worth a number: only nonsense lengths weigh so little. */
+export const WEIGHTLESS_KG = 1e-9;

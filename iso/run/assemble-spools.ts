@@ -12,6 +12,7 @@ import { spoolMaterials } from "./spool-materials";
 /** Spools with letters, in flow order. `letters[i]` belongs to `groups[i]`. */
 export function assembleSpools(
   parts: Parts, groups: readonly SpoolGroup[], letters: readonly string[], legs: readonly Leg[], document: RunDocument, ctx: BuildContext,
+  services: ReadonlyMap<string, string> = new Map(),
 ): Spool[] {
   const groupOf = new Map<string, number>();
   groups.forEach((g, i) => [...g.componentIds, ...g.pieceKeys].forEach((id) => groupOf.set(id, i)));
@@ -36,7 +37,7 @@ export function assembleSpools(
     return {
       letter, anchor: g.anchor, componentIds: g.componentIds, pieceKeys: g.pieceKeys, jointKeys: joints.map((j) => j.key), ...body, shippingMm: shipping,
       materials: spoolMaterials({ components, pieces, loose: g.loose }, ctx.units),
-      content: spoolContent({ components, pieces, joints: touching[i] ?? [], loose: g.loose, points, legs: legById }, document),
+      content: spoolContent({ components, pieces, joints: touching[i] ?? [], loose: g.loose, points, legs: legById, letter, services }, document),
     };
   });
 }

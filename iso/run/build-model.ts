@@ -17,7 +17,7 @@ import { advanceMarks, givenMarks, type Markable } from "./marks";
 import type { Component, Joint, Leg, Loop, MarksRegister, Model, Node, Piece, Problem, TakeOutWord } from "./model-types";
 import { placeRuns } from "./place-runs";
 import { rolledPieces, rollsOf } from "./rolls";
-import { lineBreaks } from "./service";
+import { carriedServices, lineBreaks } from "./service";
 import { componentWeight } from "./weights";
 
 /** A line before its marks are given. */
@@ -44,7 +44,7 @@ export function buildModel(document: RunDocument, marks: MarksRegister, takeOuts
   });
   const spoolOf = (id: string | null) => (id === null ? null : (letterOf.get(id) ?? null));
   const components = line.parts.components.map((c): Component => ({ ...c, ...componentWeight(c, line.ctx.units, line.ctx.peek), spool: spoolOf(c.id) }));
-  const spools = assembleSpools({ ...line.parts, components }, line.groups, letters, line.legs, document, line.ctx);
+  const spools = assembleSpools({ ...line.parts, components }, line.groups, letters, line.legs, document, line.ctx, carriedServices(line.runs.flatMap((run) => run.points)));
   const breaks = lineBreaks(line.runs.flatMap((run) => run.points));
   return {
     document,

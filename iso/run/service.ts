@@ -35,3 +35,9 @@ export function lineBreaks(points: readonly PlacedPoint[]): LineBreak[] {
   return points.flatMap((p) => FIELDS.filter((field) => p.serviceIn[field] !== p.serviceOut[field])
     .map((what) => ({ pointId: p.point.id, position: p.position, what, before: p.serviceIn[what], after: p.serviceOut[what] })));
 }
+
+/** Per point, what the line carries there besides what its pieces say, as canonical text; empty where nothing starts anywhere. */
+export function carriedServices(points: readonly PlacedPoint[]): ReadonlyMap<string, string> {
+  if (points.every((p) => p.point.starts === undefined)) return new Map();
+  return new Map(points.map((p) => [p.point.id, JSON.stringify([p.serviceIn, p.serviceOut].map((s) => [s.specification, s.insulation, s.tracing]))]));
+}

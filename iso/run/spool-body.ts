@@ -2,7 +2,7 @@
 import { pipeOdMm } from "../catalogue/pipe";
 import { flangeBolts } from "../catalogue/catalogue";
 import type { Vec3 } from "../geometry/types";
-import { STRAIGHT_RAD } from "../geometry/tolerances";
+import { STRAIGHT_RAD, WEIGHTLESS_KG } from "../geometry/tolerances";
 import { vecAdd, vecAddScaled, vecDistance, vecLerp, vecScale } from "../geometry/vec3";
 import type { UnitSystem } from "./document";
 import type { Component, Leg } from "./model-types";
@@ -26,7 +26,7 @@ export function spoolBody(components: readonly Component[], pieces: readonly Pie
   const moment = weighed.reduce<Vec3>((sum, w) => vecAddScaled(sum, w.at, w.kg ?? 0), [0, 0, 0]);
   return {
     weightKg, unweighed: weighed.filter((w) => w.kg === null).length,
-    centreOfGravity: weightKg > 0 ? vecScale(moment, 1 / weightKg) : null, boxMm: spoolBox(components, pieces, units),
+    centreOfGravity: weightKg > WEIGHTLESS_KG ? vecScale(moment, 1 / weightKg) : null, boxMm: spoolBox(components, pieces, units),
     ...spoolVolume(components, pieces, weightKg, units),
   };
 }

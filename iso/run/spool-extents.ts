@@ -2,7 +2,7 @@
 import { flangeBolts } from "../catalogue/catalogue";
 import { pipeOdMm } from "../catalogue/pipe";
 import type { Vec3 } from "../geometry/types";
-import { vecAdd, vecAddScaled, vecReject, vecScale, vecSub, vecUnit } from "../geometry/vec3";
+import { vecAdd, vecAddScaled, vecLerp, vecReject, vecScale, vecSub, vecUnit } from "../geometry/vec3";
 import type { UnitSystem } from "./document";
 import type { Component, Piece } from "./model-types";
 import type { Disc } from "./shipping-box";
@@ -28,7 +28,7 @@ function arcDiscs(c: Component, radiusMm: number): Disc[] {
   if (!a || !b || c.radiusMm === null || c.angleRad === null) return [];
   const inward = vecUnit(vecAdd(a.direction, b.direction));
   if (!inward) return [];
-  const centre = vecAddScaled(c.centre, inward, c.radiusMm / Math.cos(c.angleRad / 2));
+  const centre = c.kind === "return" ? vecLerp(a.position, b.position, 0.5) : vecAddScaled(c.centre, inward, c.radiusMm / Math.cos(c.angleRad / 2));
   const towards = (p: Vec3) => vecUnit(vecSub(p, centre));
   const [start, end, middle] = [towards(a.position), towards(b.position), vecScale(inward, -1)];
   if (!start || !end) return [];

@@ -5,7 +5,7 @@ import { pointUpdate } from "../../../iso/run/edit";
 import { emptyMarks } from "../../../iso/run/marks";
 import type { Problem, TakeOutWord } from "../../../iso/run/model-types";
 import type { Provenance, RunDocument } from "../../../iso/run/document";
-import { cap, elbow, end, flange, joint, outlet, pipe, reducer, RunBuilder, support, tee, valve } from "../../fixtures/run-builder";
+import { cap, elbow, end, flange, joint, outlet, pipe, reducer, RunBuilder, support, tee, union, valve } from "../../fixtures/run-builder";
 import { firstRun, twoSpools } from "../../fixtures/sample-runs";
 
 const problems = (document: RunDocument, words: readonly TakeOutWord[] = []): readonly Problem[] => buildModel(document, emptyMarks(), words).problems;
@@ -20,8 +20,8 @@ const CASES: readonly (readonly [string, Problem["severity"], string | null, Run
     "The pipe between point 2 and point 3 is a short pup of 3 3/4 in, under 6 3/4 in between welds: lengthen the leg, or weld the fittings together."],
   ["zero-length", "stop", "p3", line().go("E", `3'`).go("E", "0").go("N", `3'`, open).done(),
     "Point 3 lies on the point before it: give its offset, or remove it."],
-  ["take-out-missing", "stop", "p2", line().go("E", `3'`, valve({ valve: "butterfly" })).go("E", `3'`, open).done(),
-    "The tables have no flanged butterfly valve length, class 150, in NPS 4 (point 2). Measure the part and enter the shop's own value."],
+  ["take-out-missing", "stop", "p2", line({ pipe: pipe("1", "80") }).go("E", `3'`, union("socket")).go("E", `3'`, open).done(),
+    "The tables have no socket-weld union length in NPS 1 (point 2). Measure the part and enter the shop's own value."],
   ["take-out-unconfirmed", "warning", "p5", firstRun,
     "The flanged gate valve length, class 150, in NPS 4 (point 5) is from memory: measure one and confirm it, or enter the shop's own value."],
   ["trimmed-elbow", "warning", "p2", line().go("E", `3'`).go("N60E", `3'`, open).done(),
