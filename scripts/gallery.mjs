@@ -1,6 +1,7 @@
 /**
- * `npm run gallery`: pictures of what users see, in gallery/: every sheet of the demo lines and of the sample runs; with
- * `-- --screens URL` the screens of a running demo as well. Other words after `--` keep to sheets whose name has one of them.
+ * `npm run gallery`: pictures of what users see, in gallery/: the sixty golden runs, every sheet of the demo lines and of the
+ * sample runs; with `-- --screens URL` the screens of a running demo as well. Other words after `--` keep to pictures whose
+ * name has one of them.
  */
 import { existsSync } from "node:fs";
 import path from "node:path";

@@ -1,8 +1,9 @@
-/** The work of `npm run gallery`: sheets, on request screens, then the contact sheet. Run through scripts/gallery.mjs. */
+/** The work of `npm run gallery`: the sixty golden runs, sheets, on request screens, then the contact sheet. Run through scripts/gallery.mjs. */
 import { mkdir } from "node:fs/promises";
 import path from "node:path";
 import { parseArgs } from "node:util";
 import { writeContactSheet } from "./contact-sheet";
+import { writeGolden } from "./write-golden";
 import { writeSheets } from "./write-sheets";
 import { takeScreens } from "./take-screens";
 
@@ -15,7 +16,8 @@ async function makeGallery(): Promise<void> {
   });
   const folder = path.resolve(values.folder ?? "gallery");
   await mkdir(folder, { recursive: true });
-  const pictures = await writeSheets(path.join(folder, "sheets"), positionals, say);
+  const pictures = await writeGolden(path.join(folder, "golden"), positionals, say);
+  pictures.push(...(await writeSheets(path.join(folder, "sheets"), positionals, say)));
   if (values.screens) pictures.push(...(await takeScreens(path.join(folder, "screens"), values.screens, values.chromium ?? "", say)));
   say("contact sheet");
   await writeContactSheet(folder, pictures);

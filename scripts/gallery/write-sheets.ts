@@ -64,7 +64,7 @@ export async function writeSheets(folder: string, only: readonly string[], say: 
 }
 
 /** A PDF's pages as PNG beside it. */
-async function rasters(stem: string, isGrey: boolean): Promise<string[]> {
+export async function rasters(stem: string, isGrey: boolean): Promise<string[]> {
   const out = isGrey ? `${stem}-grey` : `${stem}-page`;
   await run("pdftoppm", ["-r", String(DPI), "-png", ...(isGrey ? ["-gray"] : []), `${stem}.pdf`, out]);
   const folder = path.dirname(stem);
