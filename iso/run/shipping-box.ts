@@ -10,7 +10,8 @@
  * bound: its volume lies within 1 % of the smallest, its excess over the room within 1 % of the room's length, of what a
  * dense grid of rotations finds in the tests. A box that fits the room beats one that does not, then the smaller excess,
  * then the smaller volume. Deterministic: no dice, fixed order.
- * More than MOST_DISCS rims: frames are sought on those that reach out farthest, and measured on all.
+ * More than MOST_DISCS rims: frames are sought on those that reach out farthest, and measured on all. A little over 200
+ * lines: one search is read on one page.
  */
 import type { Vec3 } from "../geometry/types";
 import { NEARLY_ALONG } from "../geometry/tolerances";
@@ -38,6 +39,7 @@ interface Try { readonly frame: Frame; readonly sizes: Vec3; readonly overMm: nu
 const MOST_DISCS = 80;
 const MOST_DIRECTIONS = 6;
 const REFINED_STARTS = 4;
+const QUICK_DIRECTIONS = 3;
 const FIRST_STEP = (15 * Math.PI) / 180;
 /** 0.02°: a millimetre on three metres. */
 const SMALLEST_STEP = (0.02 * Math.PI) / 180;
@@ -52,17 +54,23 @@ export function boxFits(sizeMm: Vec3, roomMm: Vec3): boolean {
 export function shippingBox(discs: readonly Disc[], roomMm: Vec3, quick = false): ShippingBox {
   if (discs.length === 0) return { sizeMm: [0, 0, 0], overMm: 0, along: AXES[0] };
   const room = longestFirst(roomMm);
+  const all = flattened(discs);
+  if (quick) return boxOf(ownFrames(discs).map((frame) => tried(frame, all, room)).sort(better)[0]!);
   const few = discs.length <= MOST_DISCS ? discs : outermost(discs);
-  const starts = startFrames(few).map((frame) => tried(frame, few, room)).sort(better);
-  const refined = quick ? starts.slice(0, 1) : starts.slice(0, REFINED_STARTS).map((start) => refine(start, few, room));
-  const best = refined.map((t) => (few === discs ? t : tried(t.frame, discs, room))).sort(better)[0]!;
+  const rims = few === discs ? all : flattened(few);
+  const starts = startFrames(few).map((frame) => tried(frame, rims, room)).sort(better).slice(0, REFINED_STARTS);
+  return boxOf(starts.map((start) => tried(refine(start, rims, room).frame, all, room)).sort(better)[0]!);
+}
+
+function boxOf(best: Try): ShippingBox {
   const longest = best.sizes.indexOf(Math.max(...best.sizes)) as 0 | 1 | 2;
   return { sizeMm: longestFirst(best.sizes), overMm: Math.max(best.overMm, 0), along: best.frame[longest] };
 }
 
 function longestFirst(v: Vec3): Vec3 {
-  const [a, b, c] = [...v].sort((x, y) => y - x);
-  return [a ?? 0, b ?? 0, c ?? 0];
+  const [a, b, c] = v;
+  const [most, least] = [Math.max(a, b, c), Math.min(a, b, c)];
+  return [most, a === most ? (b === least ? c : b) : b === most ? (a === least ? c : a) : a === least ? b : a, least];
 }
 
 function overOf(sizes: Vec3, room: Vec3): number {
@@ -75,22 +83,40 @@ function better(a: Try, b: Try): number {
   return overA !== overB ? overA - overB : a.volume - b.volume;
 }
 
-function tried(frame: Frame, discs: readonly Disc[], room: Vec3): Try {
-  const sizes: Vec3 = [extentAlong(frame[0], discs), extentAlong(frame[1], discs), extentAlong(frame[2], discs)];
+function tried(frame: Frame, rims: Float64Array, room: Vec3): Try {
+  const sizes: Vec3 = [extentAlong(frame[0], rims), extentAlong(frame[1], rims), extentAlong(frame[2], rims)];
   return { frame, sizes, overMm: overOf(sizes, room), volume: sizes[0] * sizes[1] * sizes[2] };
 }
 
+/** Seven numbers a disc (centre, axis, radius): the search reads them some ten thousand times. */
+function flattened(discs: readonly Disc[]): Float64Array {
+  return Float64Array.from(discs.flatMap((d) => [...d.centre, ...d.axis, d.radiusMm]));
+}
+
 /** How far the discs reach along a unit direction, from side to side, mm. */
-function extentAlong(d: Vec3, discs: readonly Disc[]): number {
-  let [low, high] = [Infinity, -Infinity];
-  for (const { centre, axis, radiusMm } of discs) {
-    const lean = axis[0] * d[0] + axis[1] * d[1] + axis[2] * d[2];
-    const reach = radiusMm * Math.sqrt(Math.max(1 - lean * lean, 0));
-    const at = centre[0] * d[0] + centre[1] * d[1] + centre[2] * d[2];
+function extentAlong([x, y, z]: Vec3, rims: Float64Array): number {
+  let low = Infinity;
+  let high = -Infinity;
+  for (let i = 0; i < rims.length; i += 7) {
+    const lean = rims[i + 3]! * x + rims[i + 4]! * y + rims[i + 5]! * z;
+    const reach = rims[i + 6]! * Math.sqrt(Math.max(1 - lean * lean, 0));
+    const at = rims[i]! * x + rims[i + 1]! * y + rims[i + 2]! * z;
     if (at - reach < low) low = at - reach;
     if (at + reach > high) high = at + reach;
   }
   return high - low;
+}
+
+/** The plant's axes and one frame for each of the first few ways its pipes go: all that is asked of a spool that ships anyway. */
+function ownFrames(discs: readonly Disc[]): Frame[] {
+  const ways: Vec3[] = [];
+  for (const { axis } of discs) {
+    if (ways.length < QUICK_DIRECTIONS && ways.every((known) => Math.abs(vecDot(known, axis)) < 1 - NEARLY_ALONG)) ways.push(axis);
+  }
+  return [AXES, ...ways.map((first, i): Frame => {
+    const second = squareTo(ways[i === 0 ? 1 : 0] ?? first, first) ?? vecPerpendicular(first);
+    return [first, second, vecCross(first, second)];
+  })];
 }
 
 /** Frames made of two of the spool's own directions each, and the plant's axes. */
@@ -127,7 +153,8 @@ function ownDirections(discs: readonly Disc[]): Vec3[] {
 function longestDiagonal(discs: readonly Disc[]): Vec3 | null {
   let [best, most]: [Vec3 | null, number] = [null, 0];
   discs.forEach((a, i) => {
-    for (const b of discs.slice(i + 1)) {
+    for (let k = i + 1; k < discs.length; k++) {
+      const b = discs[k]!;
       const apart = vecDistance(a.centre, b.centre);
       if (apart > most) [best, most] = [vecUnit(vecSub(b.centre, a.centre)), apart];
     }
@@ -159,14 +186,14 @@ const TURNS: readonly (readonly (readonly [0 | 1 | 2, 0 | 1 | 2, 0 | 1 | 2, numb
   [[0, 1, 2, 0.7], [1, 2, 0, 0.7]], [[0, 1, 2, 0.7], [1, 2, 0, -0.7]], [[1, 2, 0, 0.7], [2, 0, 1, 0.7]], [[1, 2, 0, 0.7], [2, 0, 1, -0.7]],
 ];
 
-function refine(start: Try, discs: readonly Disc[], room: Vec3): Try {
+function refine(start: Try, rims: Float64Array, room: Vec3): Try {
   let best = start;
   for (let step = FIRST_STEP; step > SMALLEST_STEP; ) {
     let found = best;
     for (const turn of TURNS) {
       for (const sign of [1, -1]) {
         const frame = turn.reduce<Frame>((f, [a, b, c, share]) => turned(f, a, b, sign * share * step, c), best.frame);
-        const candidate = tried(frame, discs, room);
+        const candidate = tried(frame, rims, room);
         if (better(candidate, found) < 0) found = candidate;
       }
     }
