@@ -51,7 +51,7 @@ export function DimensionField({ document, edit, place, onMove, onClose }: Dimen
         autoCapitalize="none"
         spellCheck={false}
         enterKeyHint="done"
-        className="figure w-full border-2 border-dye bg-sheet px-2 py-1 shadow-md max-sm:min-h-11 max-sm:text-base"
+        className="figure w-full border-2 border-dye bg-sheet outline-none px-2 py-1 shadow-md max-sm:min-h-11 max-sm:text-base"
         onChange={(event) => setTyped(event.target.value)}
         onBlur={() => (read.ok ? take(false) : leave(false))}
         onKeyDown={(event) => {

@@ -1,5 +1,5 @@
-/** One drawing of a line for the screen; called in the drawing worker, or on the page where there is none. */
-import { drawModel, type Drawing, type Model, type View } from "@/iso";
+/** A line's model and drawing for the screen; made in workers, or on the page where there are none. */
+import { buildModel, drawModel, type Drawing, type MarksRegister, type Model, type RunDocument, type TakeOutWord, type View } from "@/iso";
 import { measureText } from "@/fonts/widths";
 
 export interface DrawingRoom {
@@ -7,17 +7,20 @@ export interface DrawingRoom {
   readonly heightMm: number;
 }
 
-export interface DrawRequest {
-  readonly id: number;
-  readonly model: Model;
+/** What a model follows from. */
+export interface ModelRequest {
+  readonly document: RunDocument;
+  readonly marks: MarksRegister;
+  readonly takeOuts: readonly TakeOutWord[];
+}
+
+export interface DrawRequest extends ModelRequest {
   readonly room: DrawingRoom;
   readonly view: View | null;
 }
 
-export interface DrawAnswer {
-  readonly id: number;
-  /** null when the line cannot be drawn yet. */
-  readonly drawing: Drawing | null;
+export function modelOf({ document, marks, takeOuts }: ModelRequest): Model {
+  return buildModel(document, marks, takeOuts);
 }
 
 const SHOW_ALL = { items: true, welds: true, pieces: true, dimensions: true };

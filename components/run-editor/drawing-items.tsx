@@ -25,13 +25,16 @@ export interface DrawingItemsProps {
 /** The items of a drawing or a page, in order; each carries what it shows in data-ref. */
 export const DrawingItems = memo(function DrawingItems({ items, touchable = false, active = false }: DrawingItemsProps) {
   return (
-    <>
+    <g style={PLAIN_TEXT}>
       {items.map((item, i) => (
         <ItemShape key={i} item={item} touchable={touchable} active={active} />
       ))}
-    </>
+    </g>
   );
 });
+
+/** Said once for all texts: thousands of style attributes would each be computed anew. */
+const PLAIN_TEXT = { fontVariantLigatures: "none", whiteSpace: "pre" } as const;
 
 export function refText(ref: Ref | null): string | undefined {
   return ref ? `${ref.kind}:${ref.id}` : undefined;
@@ -93,7 +96,7 @@ function TextShape({ item, active }: { readonly item: Extract<DisplayItem, { typ
       fill={active ? INK_COLOURS.dye : INK_COLOURS[item.ink]}
       transform={turn === 0 ? undefined : `rotate(${turn} ${x} ${y})`}
       data-ref={refText(item.ref)}
-      style={{ ...FACES[item.face], fontVariantLigatures: "none", whiteSpace: "pre" }}
+      {...FACES[item.face]}
     >
       {item.text}
     </text>

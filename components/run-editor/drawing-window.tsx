@@ -85,7 +85,7 @@ export function DrawingWindow({ drawing, model, activePointId, onPoint, document
         onKeyDown={onKeyDown}
         {...drag.handlers}
         {...cut.handlers}
-        className={clsx("absolute inset-x-1 top-1 h-[calc(100%-0.25rem-52px)] w-[calc(100%-0.5rem)] select-none", look ? "touch-none" : "touch-pan-y", onMove && "[&_text[data-ref^='dimension:']]:cursor-text")}
+        className={clsx("absolute will-change-transform inset-x-1 top-1 h-[calc(100%-0.25rem-52px)] w-[calc(100%-0.5rem)] select-none", look ? "touch-none" : "touch-pan-y", onMove && "[&_text[data-ref^='dimension:']]:cursor-text")}
       >
         <DrawingItems items={drawing.items} touchable />
         <PickedItems drawing={drawing} pointOf={pointOf} activePointId={activePointId} />

@@ -48,7 +48,7 @@ export function EditorHead({ line, document, save, canUndo, canRedo, look, onLoo
             NPS {pipe.nps} {pipe.schedule}, {pipe.material}, class {ratingClass}, {units === "metric" ? "millimetres" : "feet and inches"}
           </p>
         </div>
-        <div className="flex flex-wrap items-center gap-2 max-sm:[&_button]:px-2.5 max-sm:[&_button]:text-sm" data-screen-only>
+        <div className="flex flex-wrap items-center gap-1.5 [&_button]:px-2.5 [&_button]:text-sm sm:[&_button]:min-h-9" data-screen-only>
           {readOnly ? null : <SaveStatus state={save.state} onSave={save.saveNow} />}
           {readOnly ? null : (
             <>

@@ -38,7 +38,7 @@ export interface CutPanelsProps {
 export function CutPanels({ line, model, activePointId, onPoint }: CutPanelsProps) {
   return (
     <>
-      <Section title="Cut list">
+      <Section title="Cut list" className="mb-8 [contain-intrinsic-size:auto_40rem] [content-visibility:auto]">
         <CutStrip model={model} activePointId={activePointId} onPoint={onPoint} />
       </Section>
       <Section title="Spools">

@@ -1,13 +1,15 @@
 "use client";
 import clsx from "clsx";
 import { memo, useEffect, useRef, useState } from "react";
-import type { View } from "@/iso";
+import type { MarksRegister, TakeOutWord, View } from "@/iso";
 import { DrawingWindow, type WindowProps } from "./drawing-window";
 import type { DrawingRoom } from "./draw-line";
 import { LegendStrip } from "./legend-strip";
 import { useLineDrawing } from "./use-line-model";
 
 export interface LineDrawingProps extends Omit<WindowProps, "drawing"> {
+  readonly marks: MarksRegister;
+  readonly takeOuts: readonly TakeOutWord[];
   readonly view: View | null;
   readonly onView: ((view: View | null) => void) | null;
 }
@@ -25,14 +27,14 @@ const NORTH_DEG: Readonly<Record<View, number>> = { 1: -60, 2: 60, 3: 120, 4: -1
 const VIEWS: readonly View[] = [1, 2, 3, 4];
 
 /** The live isometric: what is pointed at finds its row, and the current row shows in the active colour. */
-export const LineDrawing = memo(function LineDrawing({ model, view, onView, activePointId, onPoint, document, onMove }: LineDrawingProps) {
+export const LineDrawing = memo(function LineDrawing({ model, marks, takeOuts, view, onView, activePointId, onPoint, document, onMove }: LineDrawingProps) {
   const frame = useRef<HTMLDivElement>(null);
   const room = useRoom(frame);
-  const drawn = useLineDrawing(model, room, view);
+  const drawn = useLineDrawing(model, marks, takeOuts, room, view);
   return (
     <section aria-label="Isometric" className="flex min-h-0 min-w-0 flex-1 flex-col">
       <ViewButtons view={view} shown={drawn.drawing?.view ?? null} onView={onView} />
-      <div ref={frame} className="frame relative min-h-0 overflow-hidden max-lg:h-[min(88vw,65dvh)] lg:flex-1">
+      <div ref={frame} className="frame relative min-h-0 overflow-hidden [contain:strict] max-lg:h-[min(88vw,65dvh)] lg:flex-1">
         {drawn.drawing ? (
           <DrawingWindow drawing={drawn.drawing} model={drawn.model} activePointId={activePointId} onPoint={onPoint} document={document} onMove={onMove} />
         ) : (

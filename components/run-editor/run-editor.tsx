@@ -90,7 +90,7 @@ export function RunEditor({ line, viewer, onUploads }: RunEditorProps) {
       <div className="flex flex-col gap-x-5 gap-y-4 lg:grid lg:grid-cols-[minmax(36rem,46fr)_minmax(0,54fr)]">
         <div className="contents lg:order-2 lg:block lg:min-w-0">
           <div className="order-1 flex min-h-64 flex-col lg:h-[max(30rem,calc(100dvh-13.5rem))]">
-            {look === "sheet" ? <LineSheet line={line} document={document} model={model} /> : look === "shape" ? <ShapeDoor model={model} activePointId={point?.id ?? null} /> : <LineDrawing model={model} view={document.view} onView={line.editable ? setView : null} activePointId={point?.id ?? null} onPoint={showPoint} document={document} onMove={line.editable ? takeNumber : null} />}
+            {look === "sheet" ? <LineSheet line={line} document={document} model={model} /> : look === "shape" ? <ShapeDoor model={model} activePointId={point?.id ?? null} /> : <LineDrawing model={model} marks={line.marks} takeOuts={line.takeOuts} view={document.view} onView={line.editable ? setView : null} activePointId={point?.id ?? null} onPoint={showPoint} document={document} onMove={line.editable ? takeNumber : null} />}
           </div>
           <div className="order-3 mt-4 min-w-0">
             <CutPanels line={line} model={model} activePointId={point?.id ?? null} onPoint={showPoint} />
@@ -100,7 +100,7 @@ export function RunEditor({ line, viewer, onUploads }: RunEditorProps) {
           <div className="order-2 min-w-0">
             <PasteReportNotice report={state.report} />
             <BlockBar state={state} />
-            <div className="border-t border-ink lg:max-h-[max(24rem,calc(100dvh-19rem))] lg:overflow-y-auto lg:border-x lg:border-b">
+            <div className="border-t border-ink lg:max-h-[max(24rem,calc(100dvh-19rem))] lg:overflow-y-auto lg:border-x lg:border-b lg:[contain:layout_paint_style]">
               <PointGrid state={state} problems={model.problems} />
             </div>
             {point ? <PointDetail document={document} point={point} problems={model.problems} role={viewer.role ?? null} onTakeOut={onUploads} /> : null}
