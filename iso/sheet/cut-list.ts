@@ -2,7 +2,7 @@
  * The cut list: each piece with its arithmetic. Terms print to 1/64 in or 0.1 mm and the cut length is rounded once, to
  * 1/16 in or 1 mm, so that the sum shows on paper (TRADE.md, bench: cut row; common practice).
  */
-import { formatFeetInches, formatInches, formatLength, formatTerm } from "../units/format";
+import { formatAngleDeg, formatFeetInches, formatInches, formatLength, formatTerm } from "../units/format";
 import type { CutTerm, Piece } from "../run/model-types";
 import { CUT_CAP, HEAD_CAP } from "./sheet-size";
 import { sizeText, type SheetFacts } from "./sheet-facts";
@@ -17,14 +17,15 @@ interface CutColumn {
 }
 
 function cutColumns(facts: SheetFacts): CutColumn[] {
-  const hasTrim = facts.pieces.some((piece) => piece.terms.some((term) => term.kind === "trim"));
+  const has = (kind: CutTerm["kind"]): boolean => facts.pieces.some((piece) => piece.terms.some((term) => term.kind === kind));
+  const plus = [...(has("make-up") ? ["MAKE-UP"] : []), ...(has("trim") ? ["TRIM"] : [])];
   return [
     { column: { head: "MARK", share: 0, minMm: 13 }, cell: markCell },
     ...(oneSize(facts) === null ? [{ column: { head: "SIZE", share: 1, minMm: 20 }, cell: sizeCell }] : []),
     { column: { head: "WORKING POINTS", share: 2, minMm: 36 }, cell: spanCell },
-    { column: { head: "LESS TAKE-OUTS", share: 5, minMm: 44 }, cell: (of, piece) => groupedTerms(of, piece, (term) => term.kind === "take-out") },
+    { column: { head: "LESS TAKE-OUTS", share: 5, minMm: 44 }, cell: (of, piece) => groupedTerms(of, piece, (term) => term.kind === "take-out" || term.kind === "bend") },
     { column: { head: "LESS GAPS", share: 2, minMm: 30 }, cell: (of, piece) => groupedTerms(of, piece, isGap) },
-    ...(hasTrim ? [{ column: { head: "PLUS TRIM", share: 1, minMm: 20 }, cell: ((of, piece) => groupedTerms(of, piece, (term) => term.kind === "trim")) satisfies CellOf }] : []),
+    ...(plus.length > 0 ? [{ column: { head: `PLUS ${plus.join(", ")}`, share: 1, minMm: 20 }, cell: ((of, piece) => groupedTerms(of, piece, isPlus)) satisfies CellOf }] : []),
     { column: { head: "CUT LENGTH", share: 1, minMm: 31, align: "middle", boxed: true }, cell: cutLengthCell },
     { column: { head: "ENDS", share: 1, minMm: 14 }, cell: endsCell },
     { column: { head: "HEAT NO.", share: 2, minMm: 18 }, cell: () => "" },
@@ -66,6 +67,8 @@ const spanCell: CellOf = (facts, piece) =>
 
 const isGap = (term: CutTerm): boolean => term.kind === "root-gap" || term.kind === "pull-back" || term.kind === "setting" || term.kind === "gasket";
 
+const isPlus = (term: CutTerm): boolean => term.kind === "trim" || term.kind === "make-up";
+
 /** A term's words without a number in front and without what the column's head says. */
 function termWords(term: CutTerm): string {
   return term.label.replace(/^[\d\s/.'"-]+(?=[A-Za-z])/, "").replace(/ take-out(?=$| at )/, "");
@@ -91,8 +94,8 @@ const cutLengthCell: CellOf = (facts, piece) => {
 };
 
 const endsCell: CellOf = (_facts, piece) => {
-  const [a, b] = piece.ends;
-  return a.prep === b.prep ? a.prep : [{ text: a.prep }, { text: b.prep }];
+  const [a, b] = piece.ends.map((end) => (end.cutAngleDeg === undefined ? end.prep : `${end.prep} ${formatAngleDeg((end.cutAngleDeg * Math.PI) / 180)}`));
+  return a === b ? (a ?? "") : [{ text: a ?? "" }, { text: b ?? "" }];
 };
 
 const TERMS_IMPERIAL = "Terms print to 1/64 in; the cut length is rounded once, to 1/16 in, from the exact sum.";
@@ -103,6 +106,9 @@ function footOf(facts: SheetFacts): string[] {
   const foot = [facts.input.units === "metric" ? TERMS_METRIC : TERMS_IMPERIAL];
   if (terms.some((term) => term.unconfirmed)) foot.push("* Take-out from memory, not yet confirmed by the shop: measure it first.");
   if (terms.some((term) => term.kind === "trim")) foot.push("Trim is supplied extra at a field-fit weld: the cut length includes it.");
+  if (terms.some((term) => term.kind === "make-up")) foot.push("Make-up is pipe that screws into a fitting: the cut length includes it.");
+  const added = facts.welds.filter((joint) => joint.key.includes(":stock-")).map((joint) => joint.number);
+  if (added.length > 0) foot.push(`Welds ${added.join(", ")} are there because the stock is shorter than the pipe.`);
   if (facts.legs.some((leg) => leg.unverified)) foot.push("VIF: dimension not verified in the field. Verify before cutting.");
   return [foot.join(" ")];
 }

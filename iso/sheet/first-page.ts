@@ -11,6 +11,7 @@ import type { PageFrame } from "./page-frame";
 import { REVISION_ROWS_SHOWN, revisionTable } from "./revision-table";
 import type { SheetFacts } from "./sheet-facts";
 import { EDGE_LINE } from "./sheet-size";
+import { pipeWorkTables } from "./pipe-work-tables";
 import { materialsTable, trimmedElbowsTable, weightTable, weldsTable } from "./spool-tables";
 import { setTable, tableHeight, type Table } from "./table";
 import { placeInRoom, TABLE_GAP, type FlowTable } from "./table-flow";
@@ -70,7 +71,7 @@ type NextRows = ReadonlyMap<string, number | null>;
 /** Tables still to be placed: those not in the map at all, or from the row the map names. */
 function restOf(facts: SheetFacts, notes: Table | null, next: NextRows, revisionsShown: number): FlowTable[] {
   const all: readonly (readonly [Table | null, "full" | "half"])[] = [
-    [cutListTable(facts), "full"], [trimmedElbowsTable(facts), "full"], [materialsTable(facts), "half"], [weldsTable(facts), "half"], [notes, "half"],
+    [cutListTable(facts), "full"], ...pipeWorkTables(facts).map((table) => [table, "full"] as const), [trimmedElbowsTable(facts), "full"], [materialsTable(facts), "half"], [weldsTable(facts), "half"], [notes, "half"],
     [weightTable(facts), "half"],
   ];
   const rest = all.flatMap(([table, width]): FlowTable[] => {
@@ -130,7 +131,7 @@ function underDrawing(facts: SheetFacts, left: PaperBox, measure: MeasureText): 
   let used = 0;
   const open: Continued[] = [];
   const placedItems: DisplayItem[] = [];
-  for (const table of [cutListTable(facts), trimmedElbowsTable(facts)]) {
+  for (const table of [cutListTable(facts), ...pipeWorkTables(facts), trimmedElbowsTable(facts)]) {
     if (table === null) continue;
     const placed = placeInRoom(table, { ...room, minY: used, maxY: most - PAD }, measure);
     next.set(table.title, placed.nextRow);

@@ -33,7 +33,8 @@ const LONG_DESCRIPTION = 120;
 function documentNotes(facts: SheetFacts): string[] {
   const here = new Set([...facts.components.map((component) => component.pointId), ...facts.legs.flatMap((leg) => [leg.fromPointId, leg.toPointId])]);
   const ofPoints = facts.model.document.runs.flatMap((run) => run.points.filter((point) => here.has(point.id) && point.note.trim() !== "").map((point) => point.note));
-  return [...facts.model.document.notes, ...ofPoints].map((note) => note.trim()).filter((note) => note !== "");
+  const ofSheet = (facts.model.document.sheetNotes ?? []).filter((note) => note.spool === facts.input.spool).map((note) => note.text);
+  return [...facts.model.document.notes, ...ofSheet, ...ofPoints].map((note) => note.trim()).filter((note) => note !== "");
 }
 
 function acceptedNotes(facts: SheetFacts): string[] {
@@ -50,7 +51,7 @@ function marksOfLeg(facts: SheetFacts, legId: string): string {
 
 function engineerNotes(facts: SheetFacts): string[] {
   return facts.welds
-    .filter((joint) => joint.mismatchRad > MISMATCH_ASKS_RAD)
+    .filter((joint) => joint.kind !== "mitre" && joint.mismatchRad > MISMATCH_ASKS_RAD)
     .map((joint) => `Weld ${joint.number}: mismatch ${formatAngleDeg(joint.mismatchRad)}, over 3°. Engineer's permission needed.`);
 }
 

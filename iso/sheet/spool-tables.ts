@@ -6,6 +6,7 @@ import type { UnitSystem } from "../run/document";
 import type { Component, Joint, MaterialRow, Spool } from "../run/model-types";
 import { volumeLeftOut } from "../run/spool-volume";
 import { outsideDiameterMm, sizeText, type SheetFacts } from "./sheet-facts";
+import { weldsOf } from "./pipe-work-tables";
 import type { Cell, Row, Table } from "./table";
 
 /** Materials with quantities: pipe as the summed cut length, the rest counted. */
@@ -74,7 +75,7 @@ export function weldsTable(facts: SheetFacts): Table | null {
 
 function weldRow(facts: SheetFacts, joint: Joint): Row {
   const place: Cell = joint.place === "shop" ? PLACE_WORDS.shop : [{ text: PLACE_WORDS[joint.place], face: "bold" }];
-  const type = joint.mismatchRad < STRAIGHT_RAD ? JOINT_WORDS[joint.kind] : `${JOINT_WORDS[joint.kind]}, off ${formatAngleDeg(joint.mismatchRad)}`;
+  const type = joint.kind === "mitre" ? `${JOINT_WORDS.mitre}, cut ${formatAngleDeg(joint.mismatchRad / 2)}` : joint.mismatchRad < STRAIGHT_RAD ? JOINT_WORDS[joint.kind] : `${JOINT_WORDS[joint.kind]}, off ${formatAngleDeg(joint.mismatchRad)}`;
   return { cells: [[{ text: joint.number ?? "", face: "bold" }], type, place, sizeText(joint.nps, null, facts.input.units), "", "", ""] };
 }
 
@@ -121,23 +122,16 @@ function trimmedRow(facts: SheetFacts, elbow: Component): Row {
   };
 }
 
-/** "between welds 4 and 5": where on the drawing an elbow is. */
-function weldsOf(facts: SheetFacts, component: Component): string {
-  const numbers = facts.model.joints.filter((joint) => joint.number !== null && (joint.a === component.id || joint.b === component.id)).map((joint) => joint.number);
-  if (numbers.length === 0) return "";
-  return numbers.length === 1 ? `at weld ${numbers[0]}` : `between welds ${numbers.join(" and ")}`;
-}
-
 /** Weight, contents and surface of the spool, each with what it leaves out; insulation is never guessed. */
 export function weightTable(facts: SheetFacts): Table | null {
   const { spool } = facts;
   if (!spool) return null;
   return {
     title: "WEIGHT AND CONTENTS",
-    lead: ["Weight is an empty estimate, centre of gravity off-centre."],
+    lead: ["Weight is an empty estimate, centre of gravity off-centre. Insulation, lining and supports are not in it."],
     columns: [{ head: "", share: 0, minMm: 27 }, { head: "", share: 1, minMm: 40 }],
     rows: weightRows(facts, spool).map(([label, value]) => ({ cells: [label, [{ text: value, face: "bold" as const }]] })),
-    foot: ["Bare steel and studs; insulation, lining and supports are not in it."],
+    foot: [],
   };
 }
 
@@ -146,15 +140,17 @@ function weightRows(facts: SheetFacts, spool: Spool): (readonly [string, string]
   const unweighed = facts.components.filter((c) => c.weightKg === null).map((c) => c.description);
   const leftOut = volumeLeftOut(facts.components, units).map((kind) => kind.replace(/-/g, " "));
   const shop = facts.components.filter((c) => c.weightSource === "weighed by the shop").length;
+  const empty = [
+    formatWeight(spool.weightKg, units), ...(shop === 0 ? [] : [`${shop} part${shop === 1 ? "" : "s"} by the shop's scale`]),
+    ...(unweighed.length === 0 ? [] : [`not weighed: ${countedText(unweighed)}`]),
+  ];
+  const filled = spool.volumeL === undefined || spool.filledKg === undefined ? [] : [
+    `${formatWeight(spool.filledKg, units)}, ${volumeText(spool.volumeL, units)}`, ...(leftOut.length === 0 ? [] : [`not filled: ${leftOut.join(", ")}`]),
+  ];
   return [
-    ["EMPTY", formatWeight(spool.weightKg, units)],
-    ...(unweighed.length === 0 ? [] : [["NOT WEIGHED", countedText(unweighed)] as const]),
-    ...(shop === 0 ? [] : [["BY THE SHOP", `${shop} part${shop === 1 ? "" : "s"} weighed by the shop`] as const]),
-    ...(spool.centreOfGravity ? [["CENTRE OF GRAVITY", centreText(facts, spool.centreOfGravity)] as const] : []),
-    ...(spool.volumeL === undefined || spool.filledKg === undefined ? [] : [
-      ["FILLED WITH WATER", `${formatWeight(spool.filledKg, units)} (${volumeText(spool.volumeL, units)})`] as const,
-      ...(leftOut.length === 0 ? [] : [["NOT FILLED", leftOut.join(", ")] as const]),
-    ]),
+    ["EMPTY", empty.join("; ")],
+    ...(spool.centreOfGravity ? [["BALANCES AT", centreText(facts, spool.centreOfGravity)] as const] : []),
+    ...(filled.length === 0 ? [] : [["WATER-FILLED", filled.join("; ")] as const]),
     ...(spool.paintM2 === undefined ? [] : [["BARE SURFACE", `${surfaceText(spool.paintM2, units)}, pipe and butt-weld fittings`] as const]),
   ];
 }
@@ -175,7 +171,7 @@ function centreText(facts: SheetFacts, at: Vec3): string {
     const mm = at[i]! - first[i]!;
     return `${formatLength(Math.abs(mm), facts.input.units)} ${mm < 0 ? minus : plus}`;
   });
-  return `${parts.join(", ")} of the start of its first leg`;
+  return `${parts.join(", ")} of the first leg's start`;
 }
 
 const LITRES_PER_GALLON = 3.785411784;
