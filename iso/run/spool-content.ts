@@ -57,6 +57,7 @@ function componentContent(c: Component, parts: ContentParts): unknown[] {
   return [
     c.kind, c.valve, c.nps, c.nps2, c.schedule, c.ratingClass, c.description, c.material, c.text, holes, parts.loose.has(c.id),
     c.aside && direction(c.aside), c.angleRad === null ? null : fine(c.angleRad), c.radiusMm === null ? null : steps(c.radiusMm), c.unconfirmedKey !== null,
+    ...(item?.kind === "valve" && item.against ? ["flow against the run"] : []),
     ...c.ports.map((p) => `${p.id} ${steps(vecDistance(p.position, c.centre))} ${direction(p.direction)}`),
   ];
 }
