@@ -84,11 +84,15 @@ export function armAlong(components: readonly Component[], origin: Vec3, outward
     .map((component) => reachAlong(component, origin, outward))
     .filter((reach): reach is Reach => reach !== null && reach.to > 0)
     .sort((p, q) => p.from + p.to - q.from - q.to);
+  // The loose ring of a lap joint lies round its stub end and takes no room of its own.
+  const ring = reaches.some(({ component }) => component.kind === "stub-end") ? reaches.find(({ component }) => component.kind === "flange-lap-joint") : undefined;
   const parts: ArmPart[] = [];
   const knots = [{ real: 0, paper: 0 }];
   let paper = 0;
   let real = 0;
-  for (const { component, from, to } of reaches) {
+  for (const reach of reaches) {
+    const { component, from, to } = reach;
+    if (reach === ring) continue;
     const inner = paper;
     // A part that begins well away from the one before is a pup's far neighbour: keep a little pipe between.
     const onRun = ON_RUN.has(component.kind);
@@ -99,6 +103,7 @@ export function armAlong(components: readonly Component[], origin: Vec3, outward
     real = Math.max(real + REAL_STEP_MM, to);
     knots.push({ real, paper });
     parts.push({ component, inner: inner + apart, outer: paper });
+    if (ring && component.kind === "stub-end") parts.push({ component: ring.component, inner: inner + apart, outer: paper });
   }
   return parts.length === 0 ? NO_ARM : { parts, room: paper, knots };
 }

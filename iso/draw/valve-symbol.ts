@@ -22,7 +22,7 @@ export function valveHalf(f: PartFrame): DisplayItem[] {
 
 /** How the body is joined: a socket's cup at its end; flanges, weld dots and the ticks of a thread are drawn as joints. */
 function bodyEnd(f: PartFrame): DisplayItem[] {
-  return f.component.ends === "socket" ? [socketCup(f, f.outer, f.outer + 1.9, 2.1)] : [];
+  return f.component.ends === "socket" ? [socketCup(f, f.outer + 0.2, f.outer + 2.2, 2.7)] : [];
 }
 
 /** What stands at a valve's centre: stem and wheel, the disc of a globe, the ball, the flow of a check. */
