@@ -22,9 +22,9 @@ export function shippedSpool(spool: Shipped, ctx: BuildContext): Vec3 {
   const discs = spoolExtents(spool.components, spool.pieces, ctx.units);
   const room = ctx.settings.shippingBoxMm;
   // A spool that ships as it lies needs no search: the frames of its own pipes say its size well enough.
-  const { sizeMm, overMm } = shippingBox(discs, room, boxFits(spool.boxMm, room));
+  const { sizeMm, overMm } = shippingBox(discs, room, boxFits(spool.boxMm, room) ? 0 : undefined);
   if (overMm <= 0) return sizeMm;
-  const smallest = shippingBox(discs, ANY_ROOM);
+  const smallest = shippingBox(discs, ANY_ROOM, 1);
   reportOver(spool, smallest, overMm, ctx);
   return smallest.sizeMm;
 }

@@ -10,8 +10,8 @@
  * bound: its volume lies within 1 % of the smallest, its excess over the room within 1 % of the room's length, of what a
  * dense grid of rotations finds in the tests. A box that fits the room beats one that does not, then the smaller excess,
  * then the smaller volume. Deterministic: no dice, fixed order.
- * More than MOST_DISCS rims: frames are sought on those that reach out farthest, and measured on all. A little over 200
- * lines: one search is read on one page.
+ * More than MOST_DISCS rims: frames are sought on those that reach out farthest, the best one only is turned further, and
+ * the result is measured on all. A little over 200 lines: one search is read on one page.
  */
 import type { Vec3 } from "../geometry/types";
 import { NEARLY_ALONG } from "../geometry/tolerances";
@@ -36,7 +36,7 @@ export interface ShippingBox {
 type Frame = readonly [Vec3, Vec3, Vec3];
 interface Try { readonly frame: Frame; readonly sizes: Vec3; readonly overMm: number; readonly volume: number }
 
-const MOST_DISCS = 80;
+const MOST_DISCS = 48;
 const MOST_DIRECTIONS = 6;
 const REFINED_STARTS = 4;
 const QUICK_DIRECTIONS = 3;
@@ -50,15 +50,15 @@ export function boxFits(sizeMm: Vec3, roomMm: Vec3): boolean {
   return overOf(sizeMm, longestFirst(roomMm)) <= 0;
 }
 
-/** The smallest box over rotations. `quick` stops at the spool's own directions: enough where it fits already. */
-export function shippingBox(discs: readonly Disc[], roomMm: Vec3, quick = false): ShippingBox {
+/** The smallest box over rotations. `refinedStarts` frames are turned further; 0 stops at the spool's own directions: enough where it fits already. */
+export function shippingBox(discs: readonly Disc[], roomMm: Vec3, refinedStarts: number = REFINED_STARTS): ShippingBox {
   if (discs.length === 0) return { sizeMm: [0, 0, 0], overMm: 0, along: AXES[0] };
   const room = longestFirst(roomMm);
   const all = flattened(discs);
-  if (quick) return boxOf(ownFrames(discs).map((frame) => tried(frame, all, room)).sort(better)[0]!);
-  const few = discs.length <= MOST_DISCS ? discs : outermost(discs);
+  if (refinedStarts === 0) return boxOf(ownFrames(discs).map((frame) => tried(frame, all, room)).sort(better)[0]!);
+  const few = discs.length <= MOST_DISCS ? discs : outermost(discs, all);
   const rims = few === discs ? all : flattened(few);
-  const starts = startFrames(few).map((frame) => tried(frame, rims, room)).sort(better).slice(0, REFINED_STARTS);
+  const starts = startFrames(few).map((frame) => tried(frame, rims, room)).sort(better).slice(0, few === discs ? refinedStarts : 1);
   return boxOf(starts.map((start) => tried(refine(start, rims, room).frame, all, room)).sort(better)[0]!);
 }
 
@@ -90,7 +90,13 @@ function tried(frame: Frame, rims: Float64Array, room: Vec3): Try {
 
 /** Seven numbers a disc (centre, axis, radius): the search reads them some ten thousand times. */
 function flattened(discs: readonly Disc[]): Float64Array {
-  return Float64Array.from(discs.flatMap((d) => [...d.centre, ...d.axis, d.radiusMm]));
+  const rims = new Float64Array(discs.length * 7);
+  discs.forEach(({ centre, axis, radiusMm }, i) => {
+    rims.set(centre, i * 7);
+    rims.set(axis, i * 7 + 3);
+    rims[i * 7 + 6] = radiusMm;
+  });
+  return rims;
 }
 
 /** How far the discs reach along a unit direction, from side to side, mm. */
@@ -163,21 +169,27 @@ function longestDiagonal(discs: readonly Disc[]): Vec3 | null {
 }
 
 /** The rims that reach out farthest along evenly spread directions (a golden spiral on the sphere). */
-function outermost(discs: readonly Disc[]): Disc[] {
+function outermost(discs: readonly Disc[], rims: Float64Array): Disc[] {
   const kept = new Set<Disc>();
   for (let i = 0; i < MOST_DISCS; i++) {
     const z = 1 - (2 * i + 1) / MOST_DISCS;
     const level = Math.sqrt(1 - z * z);
     const turn = i * Math.PI * (3 - Math.sqrt(5));
     const d: Vec3 = [level * Math.cos(turn), level * Math.sin(turn), z];
-    kept.add(discs.reduce((far, disc) => (reachOf(disc, d) > reachOf(far, d) ? disc : far)));
+    kept.add(discs[farthest(d, rims)]!);
   }
   return [...kept];
 }
 
-function reachOf({ centre, axis, radiusMm }: Disc, d: Vec3): number {
-  const lean = vecDot(axis, d);
-  return vecDot(centre, d) + radiusMm * Math.sqrt(Math.max(1 - lean * lean, 0));
+function farthest([x, y, z]: Vec3, rims: Float64Array): number {
+  let far = -Infinity;
+  let index = 0;
+  for (let i = 0; i < rims.length; i += 7) {
+    const lean = rims[i + 3]! * x + rims[i + 4]! * y + rims[i + 5]! * z;
+    const reach = rims[i]! * x + rims[i + 1]! * y + rims[i + 2]! * z + rims[i + 6]! * Math.sqrt(Math.max(1 - lean * lean, 0));
+    if (reach > far) [far, index] = [reach, i / 7];
+  }
+  return index;
 }
 
 /** Pairs of frame directions that are turned into each other, and by which share: the three axes, then two at a time. */
