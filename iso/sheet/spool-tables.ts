@@ -138,7 +138,7 @@ export function weightTable(facts: SheetFacts): Table | null {
 function weightRows(facts: SheetFacts, spool: Spool): (readonly [string, string])[] {
   const { units } = facts.input;
   const unweighed = facts.components.filter((c) => c.weightKg === null).map((c) => c.description);
-  const leftOut = volumeLeftOut(facts.components, units).map((kind) => kind.replace(/-/g, " "));
+  const leftOut = volumeLeftOut(facts.components, units).map((kind) => kind.replace(/^flange-(.*)$/, "$1 flange").replace(/-/g, " "));
   const shop = facts.components.filter((c) => c.weightSource === "weighed by the shop").length;
   const empty = [
     formatWeight(spool.weightKg, units), ...(shop === 0 ? [] : [`${shop} part${shop === 1 ? "" : "s"} by the shop's scale`]),
