@@ -2,7 +2,7 @@
 import { describe, expect, it } from "vitest";
 import { buildModel, nextMarks } from "../../../iso/run/build-model";
 import { DEFAULT_MARK_RULES, type Item, type MarkRules, type RunDocument } from "../../../iso/run/document";
-import { newPoint, pointInsert, pointMove, pointRemove, pointUpdate } from "../../../iso/run/edit";
+import { newPoint, pointInsert, pointRemove, pointUpdate } from "../../../iso/run/edit";
 import { letterMark, markNumber } from "../../../iso/run/mark-names";
 import { emptyMarks, stickMarks } from "../../../iso/run/marks";
 import type { MarksRegister } from "../../../iso/run/model-types";
