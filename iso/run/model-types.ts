@@ -122,7 +122,7 @@ export interface Joint {
   readonly nps: Nps;
   /** Angle between the two sides at the weld, radians; 0 when square. */
   readonly mismatchRad: number;
-  /** Gap left for it in the arithmetic, mm (root gap, gasket; a socket's pull-back). */
+  /** Gap left for it in the arithmetic, mm (root gap, gasket; a socket's pull-back); negative where the pipe goes in: a thread's make-up. */
   readonly gapMm: number;
   /** Spool that carries it: the one on its upstream side when the two differ. */
   readonly spool: string | null;

@@ -7,13 +7,14 @@ import {
   formatLength,
   type Joint,
   type Model,
-  type Offset,
   type Piece,
   type Point,
   type SheetInput,
   type Spool,
 } from "@/iso";
 import type { Change } from "./api-types";
+import { pointText } from "./point-words";
+import { runChanges } from "./run-changes";
 import { spoolPointIds } from "./spool-points";
 
 interface Side {
@@ -54,17 +55,6 @@ function quantityText(quantity: number, unit: "ea" | "mm", input: SheetInput): s
   return unit === "ea" ? String(quantity) : formatLength(quantity, input.units);
 }
 
-/** An offset in a reader's words. */
-export function offsetText(offset: Offset, input: Pick<SheetInput, "units">): string {
-  const text = (mm: number) => formatLength(mm, input.units);
-  if (offset.kind === "polar") return `${text(offset.length.mm)} ${offset.direction.text}`;
-  if (offset.kind === "slope") return `${text(offset.length.mm)} ${offset.direction.text} at ${offset.slope.text}`;
-  const parts = (["e", "n", "u"] as const)
-    .filter((axis) => offset.kind === "absolute" || offset[axis].mm !== 0)
-    .map((axis) => `${axis.toUpperCase()} ${text(offset[axis].mm)}`);
-  return (offset.kind === "absolute" ? "at " : "") + (parts.join(" ") || "no offset");
-}
-
 /**
  * Changes from `before` to `after`, in the order point, piece, weld, material, setting, note.
  * With no `before` (first revision) the list is empty: everything is new.
@@ -80,7 +70,8 @@ export function sheetChanges(before: SheetInput | null, after: SheetInput): Chan
     ...mapChanges(a.materials, b.materials, "material", (text, _side, key) => ({ mark: key, text, pointId: null }), a, b),
     ...settingChanges(before.document.settings, after.document.settings),
     ...settingChanges(before.titleBlock, after.titleBlock),
-    ...noteChanges(before.document.notes, after.document.notes),
+    ...runChanges(before.document, after.document, new Set([...a.points.keys(), ...b.points.keys()])),
+    ...noteChanges(sheetNotes(before), sheetNotes(after)),
   ];
 }
 
@@ -129,23 +120,7 @@ function pointChanges(a: Side, b: Side): Change[] {
     const ids = side.input.document.runs.flatMap((run) => run.points.map((p) => p.id));
     return String(ids.indexOf(id) + 1);
   };
-  return mapChanges(a.points, b.points, "point", (p, side) => ({ mark: number(side, p.id), text: pointText(p, side), pointId: p.id }), a, b);
-}
-
-function pointText(point: Point, side: Side): string {
-  const item = point.item.kind === "none" ? "" : `, ${itemText(point)}`;
-  const second = point.provenance.second === null ? "" : `, second reading ${formatLength(point.provenance.second.mm, side.input.units)}`;
-  const places = Object.entries(point.places).map(([role, place]) => `, ${role} weld ${place}`).join("");
-  const note = point.note === "" ? "" : `, note "${point.note}"`;
-  return `${offsetText(point.offset, side.input)}${item} (${point.provenance.kind}${second})${places}${note}`;
-}
-
-function itemText(point: Point): string {
-  const { kind, ...rest } = point.item as { kind: string } & Record<string, unknown>;
-  const facts = Object.values(rest)
-    .filter((value) => value !== null && value !== "" && value !== false)
-    .map((value) => (typeof value === "object" ? JSON.stringify(value) : String(value)));
-  return [kind, ...facts].join(" ");
+  return mapChanges(a.points, b.points, "point", (p, side) => ({ mark: number(side, p.id), text: pointText(p, side.input.units), pointId: p.id }), a, b);
 }
 
 function settingChanges(before: object, after: object): Change[] {
@@ -184,6 +159,11 @@ function words(key: string): string {
     .replace(/([a-z])([A-Z])/g, (_all, left: string, right: string) => `${left} ${right.toLowerCase()}`);
 }
 
+function sheetNotes(input: SheetInput): string[] {
+  return [...input.document.notes, ...(input.document.sheetNotes ?? []).filter((note) => note.spool === input.spool).map((note) => note.text)];
+}
+
+/** Notes of the line, and those of this spool's sheet. */
 function noteChanges(before: readonly string[], after: readonly string[]): Change[] {
   const gone = before.filter((note) => !after.includes(note));
   const fresh = after.filter((note) => !before.includes(note));

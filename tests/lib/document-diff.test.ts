@@ -44,6 +44,32 @@ describe("what changed between two revisions", () => {
   });
 });
 
+describe("the words of newer items", () => {
+  const textsAfter = (change: (document: SheetInput["document"]) => void): string[] => sheetChanges(input(), input(change)).map((c) => c.text);
+
+  it("say radius, pieces, side and class of what stands at a point", () => {
+    const said = (item: SheetInput["document"]["runs"][0]["points"][0]["item"]) => textsAfter((d) => void (d.runs[0]!.points[1]!.item = item)).find((text) => text.startsWith("Point 2"))!;
+    expect(said({ kind: "mitre", pieces: 3, radiusMm: 304.8 })).toContain(`mitre of 3 pieces radius 1'-0"`);
+    expect(said({ kind: "return", radius: "LR", toward: "N" })).toContain("return LR toward N");
+    expect(said({ kind: "stub-in", branchNps: "2", set: "in", padMm: 152.4 })).toContain(`stub-in 2 set in pad 6"`);
+    expect(said({ kind: "flange", flange: "lap-joint", stubEnd: "short", gasketMm: 6.35, ratingClass: 300, boltHoles: { turnDeg: 22.5, from: "E" }, gasketSide: "after", goes: "open", text: "" }))
+      .toContain(`flange lap-joint short stub end gasket 1/4" class 300 holes turned 22.50° from E gasket after open`);
+  });
+
+  it("say slopes, what starts at a point, notes of this sheet only, and the fitting a run comes back to", () => {
+    const texts = textsAfter((d) => {
+      const point = d.runs[0]!.points[1]!;
+      point.offset = { kind: "slope", direction: { text: "E", e: 1, n: 0, u: 0 }, length: { text: "3'", mm: 914.4 }, slope: { text: "1:100", ratio: 0.01 } };
+      point.starts = { insulation: "50 mm", tracing: "" };
+      d.runs[0]!.to = "b";
+      d.sheetNotes = [{ spool: "A", text: "Ship plugged." }, { spool: "B", text: "Not here." }];
+    });
+    expect(texts.find((text) => text.startsWith("Point 2"))).toMatch(/3'-0" E at 1:100.*insulation "50 mm" starts, tracing ends/);
+    expect(texts).toContain("main run, comes back to: none is now point 2");
+    expect(texts.filter((text) => text.startsWith("Note"))).toEqual(["Note added: Ship plugged."]);
+  });
+});
+
 describe("unverified dimensions", () => {
   it("are the assumed ones, by point and length", () => {
     const assumed = input((d) => void (d.runs[0]!.points[2]!.provenance = { kind: "assumed", toleranceMm: null, by: null, at: null, second: null }));
