@@ -6,10 +6,9 @@
  */
 import type { Vec3 } from "../geometry/types";
 import { AXES, type Axis } from "./clusters";
-import type { Layout, OffsetEdge, PlacePlan, Wishes } from "./place";
+import type { Layout, OffsetEdge, PlacePlan, Wishes } from "./place-plan";
 import type { Projection } from "./project";
 import * as size from "./sizes";
-import type { Sketch, SketchEdge } from "./sketch";
 
 /** Rounds of mending: each lengthens one component of every poor leg. */
 const ROUNDS = 16;
@@ -27,19 +26,6 @@ const PRICE_NEAR = 1e4;
 const PRICE_POINT = 1e6;
 /** Radians a leg may fall short of its clearance before it is mended. */
 const SLACK = 0.002;
-
-/** Angle each axis asks of the leg: more where a pipe along that axis meets it. */
-export function clearances(sketch: Sketch, edge: SketchEdge): readonly [number, number, number] {
-  const clear: [number, number, number] = [size.AXIS_CLEARANCE_RAD, size.AXIS_CLEARANCE_RAD, size.AXIS_CLEARANCE_RAD];
-  for (const id of [edge.from, edge.to]) {
-    for (const other of sketch.edgesAt.get(id) ?? []) {
-      if (other === edge || other.kind === "offset" || other.kind === "none") continue;
-      const axis = AXES.find((one) => other.real[one] !== 0);
-      if (axis !== undefined) clear[axis] = size.NEIGHBOUR_CLEARANCE_RAD;
-    }
-  }
-  return clear;
-}
 
 /** How far a direction on paper falls short of its clearances, radians; 0 when it keeps them. */
 export function shortfall(projection: Projection, x: number, y: number, clear: readonly [number, number, number]): number {

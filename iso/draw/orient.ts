@@ -44,9 +44,9 @@ export const VIEW_WEIGHTS: Readonly<Record<ViewTerm, number>> = {
 /** Without a font table a character is taken as 0.8 of the capital height wide (Roboto figures, rounded up). */
 export const roughMeasure: MeasureText = (text, capMm) => text.length * capMm * 0.8;
 
-/** The view with the best readable score. Deterministic; view 2 for an empty line. */
-export function proposeView(model: Model): View {
-  return bestView(placePlan(sketchOf(model, null), roughMeasure));
+/** The view with the best readable score. Deterministic; view 2 for an empty line. Measured by the sheet's own fonts it is the one the sheet takes. */
+export function proposeView(model: Model, measure: MeasureText = roughMeasure): View {
+  return bestView(placePlan(sketchOf(model, null), measure));
 }
 
 export function bestView(plan: PlacePlan): View {

@@ -5,118 +5,14 @@
  * A plan is what does not depend on view or stretch; a layout is one solution in flat arrays; placed() spells it out.
  */
 import type { PaperBox, PaperPoint, Vec3 } from "../geometry/types";
-import { AXES, clustersOf, numberedSketch, orderRows, type Axis, type Numbered } from "./clusters";
-import { compactRows, rowsWithoutCycles, rowTable, type Row, type RowTable } from "./compact";
-import type { MeasureText } from "./drawing-types";
-import { clearOfAxes, clearances, mendOffAxis } from "./off-axis";
+import { AXES, type Axis } from "./clusters";
+import { compactRows, type Row } from "./compact";
+import { clearOfAxes, mendOffAxis } from "./off-axis";
+import { NO_ROWS, rowsWith, type ExtraRows, type Layout, type Placed, type PlacePlan, type Wishes } from "./place-plan";
 import type { Projection } from "./project";
-import type { Sketch, SketchEdge } from "./sketch";
-import { edgeNeed, targetLength, type EdgeNeed } from "./words";
+import { targetLength } from "./words";
 
-export interface PlacePlan {
-  readonly sketch: Sketch;
-  /** Legs that make rows along each axis, and the order rows, all free of cycles. */
-  readonly axes: readonly [AxisPlan, AxisPlan, AxisPlan];
-  /** Legs that are drawn, and their ends as places in `ids`. */
-  readonly edges: readonly SketchEdge[];
-  readonly needs: readonly EdgeNeed[];
-  readonly offsets: readonly OffsetEdge[];
-  readonly ids: readonly string[];
-  readonly from: Int32Array;
-  readonly to: Int32Array;
-}
-
-interface AxisPlan {
-  /** Cluster of each place in `ids`. */
-  readonly of: Int32Array;
-  readonly count: number;
-  /** Leg of each row, as a place in `edges`; -1 where the row only keeps order. */
-  readonly leg: Int32Array;
-  readonly least: Float64Array;
-  readonly rows: readonly PlanRow[];
-  readonly table: RowTable;
-  /** Tables with extra rows, by the list of them. */
-  readonly more: WeakMap<readonly Row[], AxisRows>;
-}
-
-interface PlanRow {
-  readonly a: number;
-  readonly b: number;
-  readonly least: number;
-  readonly leg: number;
-}
-
-type AxisRows = Pick<AxisPlan, "leg" | "least" | "table">;
-
-/** An off-axis leg: its place in `edges`, and the angle it keeps from each axis on paper, radians. */
-export interface OffsetEdge {
-  readonly index: number;
-  readonly clear: readonly [number, number, number];
-}
-
-export interface Placed {
-  readonly sketch: Sketch;
-  readonly projection: Projection;
-  /** Drawn coordinates in the model frame, paper mm. */
-  readonly at: ReadonlyMap<string, Vec3>;
-  readonly paper: ReadonlyMap<string, PaperPoint>;
-}
-
-/** Least and wished paper length of each leg's component along each axis: three numbers a leg, in the order of `edges`. */
-export interface Wishes {
-  readonly least: Float64Array;
-  readonly target: Float64Array;
-}
-
-/** One solution: drawn coordinates of each axis' clusters. */
-export interface Layout {
-  readonly projection: Projection;
-  readonly x: readonly [Float64Array, Float64Array, Float64Array];
-}
-
-export type ExtraRows = readonly (readonly Row[])[];
-export const NO_ROWS: ExtraRows = [[], [], []];
-
-export function placePlan(sketch: Sketch, measure: MeasureText): PlacePlan {
-  const numbers = numberedSketch(sketch);
-  const drawn = numbers.edges.flatMap((edge, i) => (edge.kind === "none" ? [] : [i]));
-  const edges = drawn.map((i) => numbers.edges[i]!);
-  const [from, to] = [Int32Array.from(drawn, (i) => numbers.from[i]!), Int32Array.from(drawn, (i) => numbers.to[i]!)];
-  return {
-    sketch, ids: numbers.ids, edges, from, to,
-    axes: AXES.map((axis) => axisPlan(numbers, axis, edges, from, to)) as unknown as PlacePlan["axes"],
-    needs: edges.map((edge) => edgeNeed(sketch.model, edge, measure)),
-    offsets: edges.flatMap((edge, index) => (edge.kind === "offset" ? [{ index, clear: clearances(sketch, edge) }] : [])),
-  };
-}
-
-function axisPlan(numbers: Numbered, axis: Axis, edges: readonly SketchEdge[], starts: Int32Array, ends: Int32Array): AxisPlan {
-  const clusters = clustersOf(numbers, axis);
-  const wanted: PlanRow[] = [];
-  edges.forEach((edge, leg) => {
-    if (edge.real[axis] === 0) return;
-    const from = clusters.of[starts[leg]!]!;
-    const to = clusters.of[ends[leg]!]!;
-    wanted.push(edge.real[axis] > 0 ? { a: from, b: to, least: 0, leg } : { a: to, b: from, least: 0, leg });
-  });
-  for (const { a, b, least } of orderRows(numbers, axis, clusters)) wanted.push({ a, b, least, leg: -1 });
-  const rows = rowsWithoutCycles(clusters.count, wanted);
-  return { of: clusters.of, count: clusters.count, rows, ...axisRows(clusters.count, rows), more: new WeakMap() };
-}
-
-function axisRows(count: number, rows: readonly PlanRow[]): AxisRows {
-  return { leg: Int32Array.from(rows, (row) => row.leg), least: Float64Array.from(rows, (row) => row.least), table: rowTable(count, rows) };
-}
-
-function rowsWith(axis: AxisPlan, extra: readonly Row[]): AxisRows {
-  if (extra.length === 0) return axis;
-  const known = axis.more.get(extra);
-  if (known) return known;
-  const more = extra.map(({ a, b, least }): PlanRow => ({ a, b, least, leg: -1 }));
-  const made = axisRows(axis.count, rowsWithoutCycles(axis.count, more, axis.rows));
-  axis.more.set(extra, made);
-  return made;
-}
+export { NO_ROWS, placePlan, type ExtraRows, type Layout, type Placed, type PlacePlan, type Wishes } from "./place-plan";
 
 /** Solves one axis. */
 export function solveAxis(plan: PlacePlan, wishes: Wishes, axis: Axis, extra: readonly Row[]): Float64Array {

@@ -2,12 +2,15 @@
  * What is drawn: vertices (working points), edges (legs) with their arms, for the whole line or for one spool with stubs of
  * its neighbours.
  */
-import { vecAddScaled, vecDot, vecLength, vecReject, vecScale, vecSub } from "../geometry/vec3";
+import { vecAddScaled, vecScale } from "../geometry/vec3";
 import type { Vec3 } from "../geometry/types";
 import type { Component, Joint, Leg, Model, Node, Piece } from "../run/model-types";
 import { armAlong, NO_ARM, type Arm } from "./arms";
 import { paperModel } from "./paper-model";
 import * as size from "./sizes";
+import { groupBy, jointIsOwn, meetingPoints, ownParts, piecesOfLegs, type SheetShare } from "./sketch-parts";
+
+export { groupBy, type SheetShare };
 
 export interface SketchVertex {
   readonly id: string;
@@ -58,16 +61,6 @@ export interface Sketch {
   readonly vertexOf: (pointId: string) => string;
 }
 
-export function groupBy<T>(items: readonly T[], key: (item: T) => string): Map<string, T[]> {
-  const groups = new Map<string, T[]>();
-  for (const item of items) {
-    const group = groups.get(key(item));
-    if (group) group.push(item);
-    else groups.set(key(item), [item]);
-  }
-  return groups;
-}
-
 /** Components of a leg that count on paper, and what kind of leg that makes it. */
 export function legShape(leg: Leg): { readonly real: Vec3; readonly kind: EdgeKind } {
   const way: Vec3 = [leg.to[0] - leg.from[0], leg.to[1] - leg.from[1], leg.to[2] - leg.from[2]];
@@ -80,12 +73,6 @@ export function legShape(leg: Leg): { readonly real: Vec3; readonly kind: EdgeKi
   if (count === 0) return { real, kind: "none" };
   if (count === 1) return { real, kind: sloped ? "slope" : "axis" };
   return { real, kind: "offset" };
-}
-
-/** The part of a line or spool that one sheet shows in full when it is drawn on several (draw-sheets.ts). */
-export interface SheetShare {
-  readonly points: ReadonlySet<string>;
-  readonly legs: ReadonlySet<string>;
 }
 
 /**
@@ -134,12 +121,6 @@ export function sketchOf(given: Model, spool: string | null, share: SheetShare |
   };
 }
 
-function jointIsOwn(joint: Joint, own: ReadonlySet<string>, spool: string | null, share: SheetShare | null): boolean {
-  if (own.has(joint.a ?? "") || own.has(joint.b ?? "")) return true;
-  if (share === null) return joint.spool === spool;
-  return joint.a === null && joint.b === null && share.points.has(joint.pointId) && (spool === null || joint.spool === spool);
-}
-
 interface LegDraft {
   readonly leg: Leg;
   readonly from: string;
@@ -166,48 +147,6 @@ function edgeOf(draft: LegDraft, inside: ReadonlySet<string>, share: SheetShare 
     from: stub === "from" ? loose : from, to: stub === "to" ? loose : to,
     fromArm: stub === "from" ? NO_ARM : arms[0], toArm: stub === "to" ? NO_ARM : arms[1],
   }];
-}
-
-/** Where a run comes back to a fitting and closes, its last point is that fitting's point on paper. */
-function meetingPoints(model: Model): ReadonlyMap<string, string> {
-  const meets = new Map<string, string>();
-  const open = new Set((model.loops ?? []).filter((loop) => !loop.closes).map((loop) => loop.runId));
-  for (const run of model.document.runs) {
-    const last = run.points[run.points.length - 1];
-    if (run.to !== undefined && last && last.id !== run.to && !open.has(run.id)) meets.set(last.id, run.to);
-  }
-  return meets;
-}
-
-function ownParts(model: Model, spool: string | null, share: SheetShare | null): ReadonlySet<string> {
-  const own = new Set<string>();
-  for (const { id, pointId, spool: letter } of model.components) if ((spool === null || letter === spool) && (share === null || share.points.has(pointId))) own.add(id);
-  for (const { key, legId, spool: letter } of model.pieces) if ((spool === null || letter === spool) && (share === null || share.legs.has(legId))) own.add(key);
-  return own;
-}
-
-/** The pieces of each leg; one piece may pass through several (past a support or an outlet). */
-function piecesOfLegs(model: Model): ReadonlyMap<string, readonly Piece[]> {
-  const found = new Map<string, Piece[]>();
-  const add = (legId: string, piece: Piece): void => {
-    const there = found.get(legId);
-    if (there) there.push(piece);
-    else found.set(legId, [piece]);
-  };
-  const unsaid = groupBy(model.pieces.filter((piece) => piece.legIds === undefined), (piece) => piece.runId);
-  for (const piece of model.pieces) for (const legId of piece.legIds ?? []) add(legId, piece);
-  if (unsaid.size > 0) for (const leg of model.legs) for (const piece of unsaid.get(leg.runId) ?? []) if (pieceRunsAlong(piece, leg)) add(leg.id, piece);
-  return found;
-}
-
-/** One piece may pass through several legs (past a support or an outlet): it counts on each leg it shares a length with. */
-function pieceRunsAlong(piece: Piece, leg: Leg): boolean {
-  if (vecDot(piece.direction, leg.direction) < size.PORT_COSINE) return false;
-  const start = vecSub(piece.start, leg.from);
-  if (vecLength(vecReject(start, leg.direction)) > size.BESIDE_MM) return false;
-  const from = Math.max(0, vecDot(start, leg.direction));
-  const to = Math.min(leg.lengthMm, vecDot(vecSub(piece.end, leg.from), leg.direction));
-  return to - from > size.LEVEL_MM;
 }
 
 /** A leg is the spool's own when a piece of it is, or when it has no pipe and the fittings at both ends are. */

@@ -3,7 +3,8 @@
  * state across it and mails those who may sign. From here on the line's marks stick.
  */
 import { QueryTypes } from "sequelize";
-import { buildModel, nextMarks, type Model, type SheetInput, type Spool as ModelSpool } from "@/iso";
+import { measureText } from "@/fonts/widths";
+import { buildModel, nextMarks, proposeView, type Model, type SheetInput, type Spool as ModelSpool } from "@/iso";
 import { changedPointIds, sheetChanges } from "@/lib/rules/document-diff";
 import type { SubmitForm } from "@/lib/rules/forms";
 import { isLive, revisionCodeNext, submitRefusal } from "@/lib/rules/revision-rules";
@@ -54,12 +55,14 @@ const BLANK: SheetInput["revision"] = {
   sheetNumber: "", code: "", state: "draft", hold: false, rows: [], drawnBy: "", checkedBy: "", issuedAt: "", statusUrl: "", auditHead: "", changedPointIds: [], accepted: [],
 };
 
-/** The line's source with marks that stick from now on, kept with the line. */
+/** The line's source with marks that stick and a view that stays from now on, kept with the line. */
 async function stickySource({ viewer, tx }: CommandContext, line: Line): Promise<SheetSource> {
   const source = await sheetSourceOf(viewer, line, tx);
   const marks = nextMarks(source.document, { ...nextMarks(source.document, source.marks, source.takeOuts), sticky: true }, source.takeOuts);
-  await line.update({ marks: JSON.stringify(marks) }, { transaction: tx });
-  return { ...source, marks };
+  const view = source.document.view ?? proposeView(buildModel(source.document, marks, source.takeOuts), measureText);
+  const document = { ...source.document, view };
+  await line.update({ marks: JSON.stringify(marks), document: JSON.stringify(document) }, { transaction: tx });
+  return { ...source, document, marks };
 }
 
 function submittable({ viewer }: CommandContext, model: Model, spool: Spool, before: readonly Revision[]): ModelSpool {

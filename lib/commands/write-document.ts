@@ -5,7 +5,7 @@
 import { buildModel, nextMarks, parseRunDocument, type MarksRegister, type Model, type RunDocument } from "@/iso";
 import { documentRefusal } from "@/lib/rules/document-refusal";
 import { takeOutWords } from "@/lib/queries/take-out-words";
-import { storedMarks } from "@/lib/queries/stored-line";
+import { storedDocument, storedMarks } from "@/lib/queries/stored-line";
 import type { CommandContext } from "@/lib/server/command";
 import { refuseInvalid } from "@/lib/server/errors";
 import { inShop } from "@/lib/server/scope";
@@ -50,9 +50,16 @@ export async function computeLine(context: CommandContext, document: RunDocument
   return { marks, model };
 }
 
+/** From the line's first issue on it is drawn from the same side, whatever a save says. */
+function withFrozenView(line: Line, document: RunDocument): RunDocument {
+  const { view } = storedDocument(line);
+  return storedMarks(line).sticky && view !== null ? { ...document, view } : document;
+}
+
 /** Writes a new version of a line's document. */
-export async function writeDocument(context: CommandContext, line: Line, document: RunDocument): Promise<void> {
+export async function writeDocument(context: CommandContext, line: Line, given: RunDocument): Promise<void> {
   const { viewer, tx, now } = context;
+  const document = withFrozenView(line, given);
   const { marks, model } = await computeLine(context, document, storedMarks(line));
   const version = line.version + 1;
   await line.update(
