@@ -3,7 +3,7 @@ import type { PaperBox, PaperPoint } from "../geometry/types";
 import type { DimensionSet, DimensionText } from "./dimension-lines";
 import { turnedInk, type InkMap } from "./ink-map";
 import type { LabelField } from "./label-field";
-import { crossingOf, segmentInBox, type TurnedBox } from "./plane";
+import { segmentInBox, segmentsCross, type TurnedBox } from "./plane";
 
 export interface Choice {
   readonly set: DimensionSet;
@@ -22,6 +22,10 @@ export interface DimensionSurroundings {
   readonly extent: PaperBox;
 }
 
+/** Two dimension lines that cross; a dimension line across an extension line. */
+const LINES_CROSS = 26;
+const EXTENSION_CROSSES = 6;
+
 /** @param limit nobody asks how much more than this it is */
 export function lineCost(set: DimensionSet, around: DimensionSurroundings, others: readonly Choice[], limit: number): number {
   let cost = 0;
@@ -30,12 +34,12 @@ export function lineCost(set: DimensionSet, around: DimensionSurroundings, other
   for (const other of others) {
     if (cost >= limit) return cost;
     for (const line of set.lines) {
-      for (const their of other.set.lines) if (crossingOf(line, their)) cost += 12;
-      for (const their of other.set.extensions) if (crossingOf(line, their)) cost += 5;
+      for (const their of other.set.lines) if (segmentsCross(line, their)) cost += LINES_CROSS;
+      for (const their of other.set.extensions) if (segmentsCross(line, their)) cost += EXTENSION_CROSSES;
       for (const box of other.boxes) if (segmentInBox(line.from, line.to, box) > 0) cost += 40;
     }
     for (const line of set.extensions) {
-      for (const their of other.set.lines) if (crossingOf(line, their)) cost += 5;
+      for (const their of other.set.lines) if (segmentsCross(line, their)) cost += EXTENSION_CROSSES;
       for (const box of other.boxes) if (segmentInBox(line.from, line.to, box) > 0) cost += 25;
     }
   }

@@ -29,29 +29,53 @@ export interface DimensionSet {
 /** Distance of a number's middle from its line: half its capitals and a hair of paper. */
 const TEXT_OFF = size.DIMENSION_CAP / 2 + 0.9;
 
+/** What a chain's dimensions say: measured once, since every side and distance tried says the same. */
+export interface ChainWords {
+  readonly legs: readonly DimensionWord[];
+  /** The overall; null for a chain of one leg. */
+  readonly overall: DimensionWord | null;
+}
+
+interface DimensionWord {
+  readonly ref: Ref;
+  readonly text: string;
+  readonly width: number;
+}
+
+export function chainWords(chain: Chain, units: UnitSystem, measure: MeasureText): ChainWords {
+  const word = (id: string, text: string): DimensionWord => ({ ref: { kind: "dimension", id }, text, width: measure(text, size.DIMENSION_CAP, "regular") });
+  const first = chain.edges[0];
+  const last = chain.edges[chain.edges.length - 1];
+  return {
+    legs: chain.edges.map(({ edge }) => word(edge.id, legNumber(edge.leg, units))),
+    overall: first && last && first !== last ? word(`${first.edge.id}..${last.edge.id}`, overallNumber(chain.edges.map(({ edge }) => edge.leg), units)) : null,
+  };
+}
+
 /**
  * @param across unit paper vector the extension lines run along
  * @param off distance of the first line from the pipe, mm along `across`
  * @param flanged working points where a flange stroke stands
  */
-export function dimensionSet(chain: Chain, across: PaperPoint, off: number, flanged: ReadonlySet<string>, units: UnitSystem, measure: MeasureText): DimensionSet {
+export function dimensionSet(chain: Chain, words: ChainWords, across: PaperPoint, off: number, flanged: ReadonlySet<string>): DimensionSet {
   const shift = (p: PaperPoint, k: number): PaperPoint => [p[0] + across[0] * k, p[1] + across[1] * k];
   const lines: Segment[] = [];
   const texts: DimensionText[] = [];
   const reach = new Map<string, { at: PaperPoint; off: number }>();
-  for (const { edge, from, to } of chain.edges) {
+  chain.edges.forEach(({ edge, from, to }, i) => {
     const line = { from: shift(from, off), to: shift(to, off) };
+    const word = words.legs[i];
     lines.push(line);
-    texts.push(textOn(line, { kind: "dimension", id: edge.id }, legNumber(edge.leg, units), size.DIMENSION_CAP, measure));
+    if (word) texts.push(textOn(line, word));
     reach.set(edge.from, { at: from, off });
     reach.set(edge.to, { at: to, off });
-  }
+  });
   const first = chain.edges[0];
   const last = chain.edges[chain.edges.length - 1];
-  if (first && last && chain.edges.length > 1) {
+  if (first && last && words.overall) {
     const line = { from: shift(first.from, off + size.DIMENSION_NEXT), to: shift(last.to, off + size.DIMENSION_NEXT) };
     lines.push(line);
-    texts.push(textOn(line, { kind: "dimension", id: `${first.edge.id}..${last.edge.id}` }, overallNumber(chain.edges.map(({ edge }) => edge.leg), units), size.DIMENSION_CAP, measure));
+    texts.push(textOn(line, words.overall));
     reach.set(first.edge.from, { at: first.from, off: off + size.DIMENSION_NEXT });
     reach.set(last.edge.to, { at: last.to, off: off + size.DIMENSION_NEXT });
   }
@@ -61,11 +85,11 @@ export function dimensionSet(chain: Chain, across: PaperPoint, off: number, flan
   return { lines, extensions, texts };
 }
 
-function textOn(line: Segment, ref: Ref, text: string, capMm: number, measure: MeasureText): DimensionText {
+/** A number with its places: above its line first, as the trade writes it; beside it when the line is too short. */
+function textOn(line: Segment, { ref, text, width }: DimensionWord): DimensionText {
   const way: PaperPoint = [line.to[0] - line.from[0], line.to[1] - line.from[1]];
   const span = Math.hypot(way[0], way[1]);
   const angle = readingAngle(way);
-  const width = measure(text, capMm, "regular");
   const along: PaperPoint = [Math.cos(angle), Math.sin(angle)];
   const up: PaperPoint = [Math.sin(angle), -Math.cos(angle)];
   const middle: PaperPoint = [(line.from[0] + line.to[0]) / 2, (line.from[1] + line.to[1]) / 2];
@@ -73,7 +97,7 @@ function textOn(line: Segment, ref: Ref, text: string, capMm: number, measure: M
   const beside = span / 2 + width / 2 + 3;
   const slack = Math.max(0, (span - width) / 2 - 1);
   const places = [at(0, TEXT_OFF), at(slack, TEXT_OFF), at(-slack, TEXT_OFF), at(0, -TEXT_OFF), at(beside, TEXT_OFF), at(-beside, TEXT_OFF), at(beside, -TEXT_OFF), at(-beside, -TEXT_OFF)];
-  return { ref, text, width, capMm, from: line.from, to: line.to, angle, places };
+  return { ref, text, width, capMm: size.DIMENSION_CAP, from: line.from, to: line.to, angle, places };
 }
 
 export function textBox(text: DimensionText, at: PaperPoint): TurnedBox {

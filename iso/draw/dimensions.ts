@@ -5,7 +5,7 @@
 import type { PaperBox, PaperPoint } from "../geometry/types";
 import { chainCrowded, flangedPoints, leavingDirections, straightChains, type Chain } from "./chains";
 import { boxCost, lineCost, type Choice, type DimensionSurroundings } from "./dimension-costs";
-import { dimensionItems, dimensionSet, textBox, type DimensionSet, type DimensionText } from "./dimension-lines";
+import { chainWords, dimensionItems, dimensionSet, textBox, type ChainWords, type DimensionSet, type DimensionText } from "./dimension-lines";
 import type { DrawnEdge } from "./drawn";
 import type { DisplayItem, MeasureText } from "./drawing-types";
 import type { LabelField } from "./label-field";
@@ -35,12 +35,14 @@ export function dimensionPass(placed: Placed, drawn: readonly DrawnEdge[], aroun
   const leaving = leavingDirections(drawn);
   const chosen: (Choice | null)[] = chains.map(() => null);
   const rounds = chains.length > ONE_ROUND_FROM ? 1 : ROUNDS;
+  const words = chains.map((chain) => chainWords(chain, placed.sketch.model.document.settings.units, measure));
+  const sides = chains.map((chain) => sidesOf(placed, chain, around, leaving));
   for (let round = 0; round < rounds; round++) {
     chains.forEach((chain, i) => {
       const before = chosen[i];
       if (before) release(around.field, before);
       const others = chosen.filter((choice, j): choice is Choice => j !== i && choice !== null);
-      const choice = bestChoice(placed, chain, around, others, flanged, leaving, measure);
+      const choice = bestChoice(chain, words[i] ?? NO_WORDS, sides[i] ?? [], around, others, flanged);
       chosen[i] = choice;
       choice.boxes.forEach((box) => around.field.add(entryOf(box)));
     });
@@ -66,25 +68,38 @@ function release(field: LabelField, choice: Choice): void {
   choice.boxes.forEach((box) => field.remove(entryOf(box)));
 }
 
-function bestChoice(
-  placed: Placed, chain: Chain, around: DimensionSurroundings, others: readonly Choice[], flanged: ReadonlySet<string>,
-  leaving: ReadonlyMap<string, readonly PaperPoint[]>, measure: MeasureText,
-): Choice {
-  const units = placed.sketch.model.document.settings.units;
+const NO_WORDS: ChainWords = { legs: [], overall: null };
+
+/** A way in which a chain's dimensions may stand off its pipe. */
+interface Side {
+  readonly across: PaperPoint;
+  readonly cost: number;
+  /** Many marks along the pipe: the strip next to it is better left to them. */
+  readonly crowded: boolean;
+}
+
+/** The four sides of a chain: along two axes, either sense, the cheapest first so that dearer ones are soon given up. */
+function sidesOf(placed: Placed, chain: Chain, around: DimensionSurroundings, leaving: ReadonlyMap<string, readonly PaperPoint[]>): readonly Side[] {
   const crowded = chainCrowded(placed, chain);
+  return ([0, 1, 2] as const)
+    .filter((axis) => axis !== chain.axis)
+    .flatMap((axis) => [1, -1].map((sign): Side => {
+      const along = placed.projection.axes[axis];
+      const across: PaperPoint = [along[0] * sign, along[1] * sign];
+      return { across, cost: sideCost(chain, across, around, leaving), crowded };
+    }))
+    .sort((p, q) => p.cost - q.cost);
+}
+
+function bestChoice(chain: Chain, words: ChainWords, sides: readonly Side[], around: DimensionSurroundings, others: readonly Choice[], flanged: ReadonlySet<string>): Choice {
   let best = null as Choice | null;
   for (let level = 0; level < LEVELS; level++) {
-    for (const axis of ([0, 1, 2] as const).filter((other) => other !== chain.axis)) {
-      for (const sign of [1, -1]) {
-        const along = placed.projection.axes[axis];
-        const across: PaperPoint = [along[0] * sign, along[1] * sign];
-        // Many marks along the pipe: leave them a strip between pipe and dimensions.
-        const base = (crowded && level === 0 ? 9 : level * 5) + sideCost(chain, across, around, leaving);
-        const limit: number = best?.cost ?? Infinity;
-        if (base >= limit) continue;
-        const set = dimensionSet(chain, across, size.DIMENSION_FIRST + level * size.DIMENSION_NEXT, flanged, units, measure);
-        best = seated(set, around, others, base, limit) ?? best;
-      }
+    for (const { across, cost, crowded } of sides) {
+      const base = (crowded && level === 0 ? 9 : level * 5) + cost;
+      const limit: number = best?.cost ?? Infinity;
+      if (base >= limit) break;
+      const set = dimensionSet(chain, words, across, size.DIMENSION_FIRST + level * size.DIMENSION_NEXT, flanged);
+      best = seated(set, around, others, base, limit) ?? best;
     }
   }
   return best ?? { set: { lines: [], extensions: [], texts: [] }, places: [], boxes: [], cost: 0, reach: EMPTY_BOX };

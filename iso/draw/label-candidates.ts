@@ -45,8 +45,8 @@ const POOR_RINGS = [1.5, 2.8, 4.5, 6.5, 9, 12, 16, 21, 27, 34] as const;
 const FAR_RINGS: readonly (readonly number[])[] = [[42, 52], [64, 80], [100, 130], [170, 220], [290, 380], [500, 700], [1000, 1500], [2200, 3200]];
 /** Anchors looked at on the near rings, and beyond them. */
 const NEAR_TIERS = 4;
-const MOST_ANCHORS = 5;
-const MOST_ANCHORS_FAR = 2;
+const MOST_ANCHORS = 3;
+const MOST_ANCHORS_FAR = 1;
 /** Tiers of a label: clear ones by ring, poor ones, far ones. */
 export const TIER_COUNT = RINGS.length + 1 + FAR_RINGS.length;
 
@@ -56,9 +56,11 @@ export const PRICE = 64;
 const COST_PER_MM = 0.7 * PRICE;
 const COST_OF_TOUCH = 34 * PRICE;
 const COST_PER_CELL = 0.4 * PRICE;
-const COST_ON_THIN = 7 * PRICE;
-const COST_PER_THIN_CELL = 0.2 * PRICE;
-const COST_OVER_THIN = 4 * PRICE;
+const COST_ON_THIN = 2.5 * PRICE;
+const COST_PER_THIN_CELL = 0.08 * PRICE;
+/** Words have no white ground of their own. */
+const COST_OF_WORDS_ON_THIN = 6 * PRICE;
+const COST_OVER_THIN = 6 * PRICE;
 const COST_PER_OVER_CELL = 0.6 * PRICE;
 const COST_OUTSIDE = 40 * PRICE;
 const COST_PER_OUTSIDE = 3 * PRICE;
@@ -83,7 +85,7 @@ for (let i = 0; i < ANGLES; i++) {
 /** On rings under this every other direction is enough, mm. */
 const HALF_ANGLES_UNDER = 2;
 /** Paper kept between a label and pipe or numbers, beyond what whole cells of the maps keep already, mm. */
-const MARGIN = 0.3;
+const MARGIN = 0.15;
 /** So far before its end a leader is still outside its label, mm. */
 const LEADER_END = 0.8;
 const MOST_IN_TIER = 65_536;
@@ -99,7 +101,7 @@ export const TO_Y = 5;
 const BOX_TOUCHES = 1;
 const LEADER_TOUCHES = 2;
 export const LED = 4;
-/** What its leader runs over is not known yet. */
+/** What its box and leader run over is not known yet. */
 const UNKNOWN = 8;
 
 /** Kept from sheet to sheet, since fresh memory costs more than what is written into it; one sheet is done at a time. */
@@ -110,7 +112,7 @@ export class Candidates {
   /** STRIDE numbers for each candidate. */
   at = pool.at;
   flags = pool.flags;
-  /** Price of ring, box and angle: never more than the whole. The leader's own is worked out when first asked for. */
+  /** Price of ring, pipe and angle: never more than the whole. What lines cost is worked out when first asked for. */
   base = pool.base;
   private over = pool.over;
   /** Candidates of tiers, cheapest first: those of a tier stand together. */
@@ -158,7 +160,7 @@ export class Candidates {
     const made = Math.min(MOST_IN_TIER, this.count - first);
     const { keys } = pool;
     for (let i = 0; i < made; i++) keys[i] = this.base[first + i]! * MOST_IN_TIER + i;
-    if (made > 1) keys.subarray(0, made).sort();
+    sortKeys(keys, made);
     for (let i = 0; i < made; i++) this.order[first + i] = first + (keys[i]! % MOST_IN_TIER);
     this.starts[index * TIER_COUNT + tier] = first;
     this.ends[index * TIER_COUNT + tier] = first + made;
@@ -166,7 +168,7 @@ export class Candidates {
 
   /** Price of a candidate among what stands on paper: base and leader. */
   cost(label: number, candidate: number): number {
-    if ((this.flags[candidate]! & UNKNOWN) !== 0) this.over[candidate] = this.leaderCost(label, candidate);
+    if ((this.flags[candidate]! & UNKNOWN) !== 0) this.over[candidate] = this.linesCost(label, candidate);
     return this.base[candidate]! + this.over[candidate]!;
   }
 
@@ -176,19 +178,26 @@ export class Candidates {
     return (this.flags[candidate]! & (BOX_TOUCHES | LEADER_TOUCHES)) !== 0;
   }
 
-  private leaderCost(index: number, candidate: number): number {
+  /** Price of thin lines under the box, and of everything under the leader. */
+  private linesCost(index: number, candidate: number): number {
     const { at, flags } = this;
     const { heavy, light } = this.ink;
     const o = candidate * STRIDE;
+    const label = this.labels[index]!;
+    const w = label.halfWidth + MARGIN;
+    const h = label.halfHeight + MARGIN;
+    const thin = light.countCells(Math.floor((at[o + X]! - w) * CELLS_PER_MM), Math.floor((at[o + Y]! - h) * CELLS_PER_MM), Math.ceil((at[o + X]! + w) * CELLS_PER_MM), Math.ceil((at[o + Y]! + h) * CELLS_PER_MM));
+    const onThin = Math.floor(thin > 0 ? (label.leaderFrom > 0 ? COST_OF_WORDS_ON_THIN : COST_ON_THIN) + thin * COST_PER_THIN_CELL : 0);
+    flags[candidate]! &= ~UNKNOWN;
+    if ((flags[candidate]! & LED) === 0) return onThin;
     const tx = at[o + TO_X]!;
     const ty = at[o + TO_Y]!;
     const wx = tx - at[o + FROM_X]!;
     const wy = ty - at[o + FROM_Y]!;
     const length = Math.sqrt(wx * wx + wy * wy);
-    flags[candidate]! &= ~UNKNOWN;
-    const label = this.labels[index]!;
+    if (leaderIsShort(length)) return onThin;
     const skip = leaderSkip(label.along, label.clear, label.own ?? 0, wx / length, wy / length) / length;
-    if (skip >= 1) return 0;
+    if (skip >= 1) return onThin;
     ends[0] = at[o + FROM_X]! + wx * skip;
     ends[1] = at[o + FROM_Y]! + wy * skip;
     ends[2] = tx;
@@ -197,12 +206,12 @@ export class Candidates {
     const numbers = this.numbers.under(ends);
     const lines = pipe > 0 || numbers > 0 ? 0 : light.under(ends);
     if (pipe > 0 || numbers > 0) flags[candidate]! |= LEADER_TOUCHES;
-    return Math.floor((pipe > 0 ? COST_OF_TOUCH + pipe * PRICE : 0) + (numbers > 0 ? 2 * COST_OF_TOUCH : 0) + (lines > 0 ? COST_OVER_THIN + lines * COST_PER_OVER_CELL : 0));
+    return onThin + Math.floor((pipe > 0 ? COST_OF_TOUCH + pipe * PRICE : 0) + (numbers > 0 ? 2 * COST_OF_TOUCH : 0) + (lines > 0 ? COST_OVER_THIN + lines * COST_PER_OVER_CELL : 0));
   }
 
   /** Adds the places of one ring about one anchor that are of the kind asked for. One long loop: a call with fractions as arguments costs more than its work here. */
   private ringPlaces(label: Label, anchor: PaperPoint, place: number, hub: Hub, ring: number, follows: Float64Array, poor: boolean, far: boolean): void {
-    const { heavy, light, room } = this.ink;
+    const { heavy, room } = this.ink;
     const { numbers } = this;
     const hx = hub.offset[0];
     const hy = hub.offset[1];
@@ -215,7 +224,7 @@ export class Candidates {
     const coverH = label.halfHeight - 0.1;
     const reach = label.clear + ring;
     const led = ring >= label.leaderFrom;
-    const marks = (led ? LED : 0) | (led && !leaderIsShort(ring) ? UNKNOWN : 0);
+    const marks = (led ? LED : 0) | UNKNOWN;
     const fixed = ring * COST_PER_MM + place * COST_OF_ANCHOR;
     if (this.count + ANGLES > this.flags.length) this.grow();
     const { at, flags, base, over } = this;
@@ -242,7 +251,6 @@ export class Candidates {
       const onPipe = heavy.anyCells(x0, y0, x1, y1);
       if (poor ? !onPipe && out === 0 && !far : onPipe) continue;
       if (numbers.anyCells(x0, y0, x1, y1)) continue;
-      const thin = light.countCells(x0, y0, x1, y1);
       const c = this.count++;
       const o = c * STRIDE;
       at[o] = x;
@@ -251,7 +259,7 @@ export class Candidates {
       at[o + 3] = ay + dy * label.clear;
       at[o + 4] = toX;
       at[o + 5] = toY;
-      base[c] = fixed + AXIAL[i]! + follows[i]! + (thin > 0 ? COST_ON_THIN + thin * COST_PER_THIN_CELL : 0)
+      base[c] = fixed + AXIAL[i]! + follows[i]!
         + (onPipe ? COST_OF_TOUCH + heavy.countCells(x0, y0, x1, y1) * COST_PER_CELL : 0) + (out > 0 ? COST_OUTSIDE + out * COST_PER_OUTSIDE : 0);
       over[c] = 0;
       flags[c] = onPipe ? marks | BOX_TOUCHES : marks;
@@ -269,6 +277,22 @@ export class Candidates {
     this.base = pool.base = longer(this.base, new Int32Array(count));
     this.over = pool.over = longer(this.over, new Int32Array(count));
     this.order = pool.order = longer(this.order, new Int32Array(count));
+  }
+}
+
+/** Few keys are sorted faster where they are than by a call. */
+const FEW_KEYS = 80;
+
+function sortKeys(keys: Float64Array, count: number): void {
+  if (count > FEW_KEYS) {
+    keys.subarray(0, count).sort();
+    return;
+  }
+  for (let i = 1; i < count; i++) {
+    const key = keys[i]!;
+    let at = i;
+    for (; at > 0 && keys[at - 1]! > key; at--) keys[at] = keys[at - 1]!;
+    keys[at] = key;
   }
 }
 

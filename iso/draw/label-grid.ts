@@ -6,7 +6,7 @@ import type { PaperBox } from "../geometry/types";
 import { FROM_X, FROM_Y, LED, PRICE, STRIDE, TO_X, TO_Y, X, Y, type Candidates, type Label } from "./label-candidates";
 
 /** Clear paper kept between two labels, and between a leader and a label that is not its own, mm. */
-const MARGIN = 0.5;
+const MARGIN = 0.35;
 const LEADER_MARGIN = 0.25;
 const COST_OF_LEADER_ON_LABEL = 68 * PRICE;
 const COST_OF_LEADER_CROSSING = 14 * PRICE;

@@ -19,14 +19,17 @@ const EASY = 6.5 * PRICE;
 const LEAST_GAIN = 0.25 * PRICE;
 /** From this tier on any free place will do: the label is beyond all usual rings. */
 const LAST_USUAL = 11;
-const ROUNDS = 8;
+const ROUNDS = 16;
 /** Rings counted to tell which labels have few places. */
 const NEAR_TIERS = 2;
-/** Places looked at for each label in all, and at least for a sheet: small sheets can afford to be tidied longer. */
-const LOOKS_PER_LABEL = 600;
-const LOOKS_LEAST = 60_000;
+/** Places looked at in all before what is reached is left as it is: a few milliseconds. */
+const LOOKS = 100_000;
+/** A move within this of a label is worth another try for it, mm. */
+const ZONE = 30;
 /** Dearer than any seat. */
 const MOST_COST = 1 << 29;
+/** Zones are numbered row by row; drawings stay far within this many columns. */
+const ZONES = 4096;
 const NONE = -1;
 
 export class LabelSearch {
@@ -35,9 +38,14 @@ export class LabelSearch {
   private readonly met: Int32Array[] = TRIES.map(() => new Int32Array(MOST_MOVED));
   private found = NONE;
   private looks = 0;
+  private moves = 1;
+  private readonly tried: Int32Array;
+  /** Last move in each zone of paper. */
+  private readonly zones = new Map<number, number>();
 
   constructor(private readonly labels: readonly Label[], private readonly candidates: Candidates, private readonly grid: LabelGrid) {
     this.locked = new Uint8Array(labels.length);
+    this.tried = new Int32Array(labels.length);
   }
 
   run(): void {
@@ -45,13 +53,14 @@ export class LabelSearch {
     const choice = order.map((i) => this.choices(i));
     order.sort((p, q) => choice[p]! - choice[q]! || p - q);
     for (const label of order) this.insert(label, MOST_COST, 0);
-    const most = Math.max(LOOKS_LEAST, LOOKS_PER_LABEL * this.labels.length);
     for (let round = 0; round < ROUNDS; round++) {
       const uneasy = this.uneasy(order, round === 0 ? this.candidates.leastCost(0) : EASY);
       let moved = false;
       for (const label of uneasy) {
-        if (this.looks > most) return;
+        if (this.looks > LOOKS) return;
+        if (round > 1 && !this.stirred(label)) continue;
         if (this.improved(label, round === 0 ? 0 : DEPTH)) moved = true;
+        else this.tried[label] = this.moves;
       }
       if (!moved && round > 0) return;
     }
@@ -62,6 +71,20 @@ export class LabelSearch {
     let count = 0;
     for (let tier = 0; tier < NEAR_TIERS; tier++) count -= this.candidates.start(label, tier) - this.candidates.end(label, tier);
     return count;
+  }
+
+  private zone(label: number): number {
+    const [x, y] = this.labels[label]!.anchors[0] ?? [0, 0];
+    return Math.floor(x / ZONE) + Math.floor(y / ZONE) * ZONES;
+  }
+
+  /** True when something moved near a label since it last tried in vain. */
+  private stirred(label: number): boolean {
+    const zone = this.zone(label);
+    for (let row = -ZONES; row <= ZONES; row += ZONES) {
+      for (let column = -1; column <= 1; column++) if ((this.zones.get(zone + row + column) ?? 0) > this.tried[label]!) return true;
+    }
+    return false;
   }
 
   /** Labels that cost more than a price now, the dearest first. */
@@ -101,7 +124,11 @@ export class LabelSearch {
     this.move(label, NONE);
     const today = this.price(label, before);
     const net = today <= this.candidates.leastCost(0) ? MOST_COST : this.insert(label, today - LEAST_GAIN, depth);
-    if (net < MOST_COST) return true;
+    if (net < MOST_COST) {
+      this.moves++;
+      for (let i = 0; i < this.journal.length; i += 2) this.zones.set(this.zone(this.journal[i]!), this.moves);
+      return true;
+    }
     this.undoTo(0);
     return false;
   }

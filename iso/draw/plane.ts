@@ -24,7 +24,10 @@ export function paperDirection(a: PaperPoint): PaperPoint {
 
 /** True when the axis-parallel boxes round two segments are apart: most pairs on a sheet are, and need no more arithmetic. */
 export function segmentsApart(a: Segment, b: Segment, margin = 0): boolean {
-  const [p, q, r, s] = [a.from, a.to, b.from, b.to];
+  const p = a.from;
+  const q = a.to;
+  const r = b.from;
+  const s = b.to;
   return (
     Math.max(p[0], q[0]) + margin < Math.min(r[0], s[0]) || Math.max(r[0], s[0]) + margin < Math.min(p[0], q[0]) ||
     Math.max(p[1], q[1]) + margin < Math.min(r[1], s[1]) || Math.max(r[1], s[1]) + margin < Math.min(p[1], q[1])
@@ -33,6 +36,21 @@ export function segmentsApart(a: Segment, b: Segment, margin = 0): boolean {
 
 export function crossingOf(a: Segment, b: Segment): { readonly t: number; readonly s: number } | null {
   return segmentsApart(a, b) ? null : segmentCrossingOpen(a.from, a.to, b.from, b.to);
+}
+
+/** True when two open segments cross: touching ends and parallels do not. Asked ten thousand times a sheet. */
+export function segmentsCross(a: Segment, b: Segment): boolean {
+  if (segmentsApart(a, b)) return false;
+  const fx = a.from[0];
+  const fy = a.from[1];
+  const wx = a.to[0] - fx;
+  const wy = a.to[1] - fy;
+  const px = b.from[0] - fx;
+  const py = b.from[1] - fy;
+  const ux = b.to[0] - fx - px;
+  const uy = b.to[1] - fy - py;
+  if ((wx * py - wy * px) * (wx * (py + uy) - wy * (px + ux)) >= 0) return false;
+  return (uy * px - ux * py) * (ux * (wy - py) - uy * (wx - px)) < 0;
 }
 
 export function boxCorners(box: TurnedBox): readonly PaperPoint[] {

@@ -12,6 +12,8 @@ interface Line {
   readonly b: PaperPoint;
   readonly id: string;
   readonly half: number;
+  /** Of a symbol or a weld, not of pipe. */
+  readonly symbol?: boolean;
 }
 
 interface Part {
@@ -21,12 +23,13 @@ interface Part {
   readonly name: string;
 }
 
-interface MeasuredLabel {
+export interface MeasuredLabel {
+  readonly layer: string;
   readonly parts: Part[];
   leader: Line | null;
 }
 
-interface Box {
+export interface Box {
   readonly x0: number;
   readonly y0: number;
   readonly x1: number;
@@ -36,6 +39,9 @@ interface Box {
 export interface DrawingMeasure {
   readonly labels: number;
   readonly clean: number;
+  /** Those that are placed freely: all but the numbers on their lines. */
+  readonly free: number;
+  readonly cleanFree: number;
   readonly onLabels: number;
   readonly onHeavy: number;
   readonly underLeaders: number;
@@ -99,7 +105,7 @@ function hull(points: readonly PaperPoint[]): readonly PaperPoint[] {
   return [...points].sort((p, q) => Math.atan2(p[1] - cy, p[0] - cx) - Math.atan2(q[1] - cy, q[0] - cx));
 }
 
-function labelsOf(items: readonly DisplayItem[]): MeasuredLabel[] {
+export function labelsOf(items: readonly DisplayItem[]): MeasuredLabel[] {
   const labels: MeasuredLabel[] = [];
   const part = (item: DisplayItem): Part | null => {
     const corners = item.type === "text" ? textCorners(item) : item.type === "path" ? hull([...item.segments.flatMap((s) => (s.op === "Z" ? [] : [s.to])), ...pathLines(item).map((l) => l.b)]) : [];
@@ -107,15 +113,14 @@ function labelsOf(items: readonly DisplayItem[]): MeasuredLabel[] {
   };
   const joinsRow = (a: Part, b: Part): boolean => !apart(a.box, b.box, ROW_GAP) && Math.min(a.box.y1, b.box.y1) > Math.max(a.box.y0, b.box.y0);
   const joinsBlock = (a: Part, b: Part): boolean => a.ref === b.ref && Math.abs(a.box.x0 - b.box.x0) < ROW_GAP && b.box.y0 - a.box.y1 < BLOCK_GAP && b.box.y0 > a.box.y0;
-  let last: { label: MeasuredLabel; layer: string } | null = null;
+  let last: MeasuredLabel | null = null;
   for (const item of items) {
     if (item.layer !== "balloon" && item.layer !== "label" && item.layer !== "dimension-text") continue;
     const next = part(item);
     if (!next) continue;
-    const before: Part | undefined = last?.label.parts.at(-1);
-    const joins = last && before && last.layer === item.layer && (item.layer === "balloon" ? joinsRow(before, next) : item.layer === "label" && joinsBlock(before, next));
-    if (joins && last) last.label.parts.push(next);
-    else labels.push((last = { label: { parts: [next], leader: null }, layer: item.layer }).label);
+    const joins: boolean = last?.layer === item.layer && last.parts.some((part) => (item.layer === "balloon" ? joinsRow(part, next) : item.layer === "label" && joinsBlock(part, next)));
+    if (joins && last) last.parts.push(next);
+    else labels.push((last = { layer: item.layer, parts: [next], leader: null }));
   }
   return labels;
 }
@@ -165,26 +170,30 @@ function leaderOnHeavy(leader: Line, heavy: readonly Line[], symbols: ReadonlySe
   });
 }
 
-export function measureDrawing(drawing: Pick<Drawing, "items">): DrawingMeasure {
-  const { items } = drawing;
-  const labels = labelsOf(items);
+/** Gives each leader to the label it ends at; answers all of them. */
+export function leadersTo(labels: readonly MeasuredLabel[], items: readonly DisplayItem[]): readonly Line[] {
   const leaders = items.filter((item) => item.layer === "leader").flatMap(linesOf);
   for (const leader of leaders) {
     const best = labels.reduce<{ label: MeasuredLabel | null; gap: number }>((found, label) => {
-      const gap = near(label, leader.b);
-      return gap < found.gap && label.leader === null ? { label, gap } : found;
+      const gap = label.leader === null ? near(label, leader.b) : Infinity;
+      return gap < found.gap ? { label, gap } : found;
     }, { label: null, gap: 2 });
     if (best.label) best.label.leader = leader;
   }
-  const heavy: Line[] = [];
-  const symbols = new Set<Line>();
-  for (const item of items) {
-    if (item.layer !== "pipe" && item.layer !== "symbol" && item.layer !== "weld") continue;
-    for (const line of linesOf(item)) {
-      heavy.push(line);
-      if (item.layer !== "pipe") symbols.add(line);
-    }
-  }
+  return leaders;
+}
+
+/** Pipe, welds and symbols as straight lines. */
+export function heavyOf(items: readonly DisplayItem[]): readonly Line[] {
+  return items.flatMap((item) => (item.layer === "pipe" || item.layer === "symbol" || item.layer === "weld" ? linesOf(item).map((line) => ({ ...line, symbol: item.layer !== "pipe" })) : []));
+}
+
+export function measureDrawing(drawing: Pick<Drawing, "items">): DrawingMeasure {
+  const { items } = drawing;
+  const labels = labelsOf(items);
+  const leaders = leadersTo(labels, items);
+  const heavy = heavyOf(items);
+  const symbols = new Set(heavy.filter((line) => line.symbol));
   const bad = new Set<MeasuredLabel>();
   let [onLabels, onHeavy, underLeaders, leadersOnHeavy] = [0, 0, 0, 0];
   labels.forEach((label, i) => {
@@ -214,10 +223,11 @@ export function measureDrawing(drawing: Pick<Drawing, "items">): DrawingMeasure 
     }));
     return count;
   };
+  const free = labels.filter((label) => label.layer !== "dimension-text");
   const dimensionLines = items.flatMap((item) => (item.type === "line" && item.layer === "dimension" && item.ref ? linesOf(item) : []));
   return {
-    labels: labels.length, clean: labels.length - bad.size, onLabels, onHeavy, underLeaders, leadersOnHeavy,
-    leaders: labels.filter((label) => label.leader || !label.parts[0]!.ref.startsWith("dimension")).map(({ leader }) => (leader ? Math.hypot(leader.b[0] - leader.a[0], leader.b[1] - leader.a[1]) : 0)),
+    labels: labels.length, clean: labels.length - bad.size, free: free.length, cleanFree: free.filter((label) => !bad.has(label)).length, onLabels, onHeavy, underLeaders, leadersOnHeavy,
+    leaders: free.map(({ leader }) => (leader ? Math.hypot(leader.b[0] - leader.a[0], leader.b[1] - leader.a[1]) : 0)),
     leaderCrossings: pairs(leaders, null), dimensionCrossings: pairs(dimensionLines, null), leadersOverDimensions: pairs(leaders, dimensionLines),
   };
 }

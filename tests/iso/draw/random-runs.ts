@@ -5,8 +5,8 @@
  * out for drawing badly. What a seed gives:
  * - 5 to 120 points in all, spread evenly by their logarithm (half the lines have under 25), 0 to 6 branches of 2 to 9
  *   points that leave square to their run from tees, reducing tees, crosses, outlets and stub-ins;
- * - habits of a shop's line: it starts at a nozzle or a continued end, keeps to two level ways and up and down, seldom turns
- *   back, goes straight on through valves, flange pairs, reducers, joints, supports and instruments, and turns by elbows, now
+ * - habits of a shop's line, which goes from one place to another: it starts at a nozzle or a continued end, makes for two
+ *   level ways and one of up and down (three turns in four are into these, the fourth goes anywhere but straight back), goes straight on through valves, flange pairs, reducers, joints, supports and instruments, and turns by elbows, now
  *   and then by a mitre, a bend or a return; legs of 0.35 to 9 m, most of them 0.6 to 2.5 m; 8 legs in a hundred are offsets
  *   in or across a plane, 4 are sloped; lines are metric or imperial, NPS 2, 3, 4 or 6;
  * - a line never runs through itself: a step whose centre line comes within CLEARANCE_MM of pipe already laid is drawn
@@ -33,6 +33,8 @@ export const MOST_BRANCHES = 6;
 /** Centre lines of pipe that does not meet stay this far apart: a 6 in pipe with its flanges beside another. */
 const CLEARANCE_MM = 380;
 const STEP_TRIES = 60;
+/** Share of turns into the ways a line makes for; the others go anywhere but back. */
+const ON_MAIN_WAYS = 0.75;
 
 interface Laid {
   readonly from: Vec;
@@ -152,7 +154,7 @@ function nextStep(walk: Walk, way: Way, straight: boolean): Step {
     const add = (k: 0 | 1 | 2): number => on[k] * run + roll[k] * run + (rise ? rise[k] * side : 0);
     return { offset: [add(0), add(1), add(2)], way: null, slope: false };
   }
-  const turned = straight ? way : walk.pick(walk.random() < 0.82 ? walk.main.filter((w) => w !== way && w !== BACK[way]) : WAYS.filter((w) => w !== way && w !== BACK[way]));
+  const turned = straight ? way : walk.pick(walk.random() < ON_MAIN_WAYS ? walk.main.filter((w) => w !== way && w !== BACK[way]) : WAYS.filter((w) => w !== way && w !== BACK[way]));
   const length = walk.mm(walk.length(straight ? 500 : 400));
   const unit = UNIT[turned];
   return { offset: [unit[0] * length, unit[1] * length, unit[2] * length], way: turned, slope: !straight && unit[2] === 0 && walk.random() < 0.04 };
@@ -221,7 +223,7 @@ export function randomLine(seed: number): RunDocument {
   const branches = Math.min(MOST_BRANCHES, Math.floor(random() * (1 + aim / 6)));
   const level: readonly Way[] = [random() < 0.5 ? "E" : "W", random() < 0.5 ? "N" : "S"];
   const nps = (["2", "3", "4", "6"] as const)[Math.floor(random() * 4)]!;
-  const walk = new Walk(random, seed, random() < 0.5 ? "metric" : "imperial", nps, [...level, "U", "D"]);
+  const walk = new Walk(random, seed, random() < 0.5 ? "metric" : "imperial", nps, [...level, random() < 0.5 ? "U" : "D"]);
   const lengths = Array.from({ length: branches }, () => 2 + Math.floor(random() * 8));
   let left = aim - 1;
   const branchPoints = lengths.map((wanted) => {
