@@ -66,11 +66,13 @@ function pieceAt(pieces: readonly PieceDraft[], whole: PieceDraft, position: Vec
 
 /** Cut lengths in flow order, or null when nothing is to be split. */
 function stockLengths(s: Stretch, whole: PieceDraft, ctx: BuildContext): number[] | null {
-  const stock = ctx.settings.stockLengthMm;
+  const bought = ctx.settings.stockLengthMm;
   const total = whole.cutLengthMm;
-  if (stock === undefined || stock <= 0 || total <= stock + SAME_POINT_MM) return null;
+  if (bought === undefined || bought <= 0) return null;
+  const stock = bought - mitreReachMm(whole);
+  if (total <= stock + SAME_POINT_MM) return null;
   const where = { pointId: s.to.point.id, runId: s.to.runId };
-  const say = `The pipe between ${s.from.label} and ${s.to.label} is ${formatLength(total, ctx.units)}, longer than the stock of ${formatLength(stock, ctx.units)}`;
+  const say = `The pipe between ${s.from.label} and ${s.to.label} is ${formatLength(total, ctx.units)}, longer than the stock of ${formatLength(bought, ctx.units)}`;
   const gap = ctx.settings.allowances.rootGapMm;
   const count = Math.ceil((total + gap - SAME_POINT_MM) / (stock + gap));
   const least = leastPupMm(whole.odMm, ctx);
@@ -85,6 +87,11 @@ function stockLengths(s: Stretch, whole: PieceDraft, ctx: BuildContext): number[
   else lengths.splice(count - 2, 1, (stock + rest) / 2, (stock + rest) / 2);
   ctx.report("stock-split", "note", `${say}: it is made of ${count} pieces with ${count - 1} added ${count === 2 ? "weld" : "welds"}.`, where);
   return lengths;
+}
+
+/** How much longer a mitred end's back is than its centre line, mm: the stock has to give that too. */
+function mitreReachMm({ ends, odMm }: PieceDraft): number {
+  return Math.max(...ends.map((end) => (odMm / 2) * Math.tan(((end.cutAngleDeg ?? 0) * Math.PI) / 180)));
 }
 
 interface Part {

@@ -108,7 +108,7 @@ function footOf(facts: SheetFacts): string[] {
   if (terms.some((term) => term.kind === "trim")) foot.push("Trim is supplied extra at a field-fit weld: the cut length includes it.");
   if (terms.some((term) => term.kind === "make-up")) foot.push("Make-up is pipe that screws into a fitting: the cut length includes it.");
   const added = facts.welds.filter((joint) => joint.key.includes(":stock-")).map((joint) => joint.number);
-  if (added.length > 0) foot.push(`Welds ${added.join(", ")} are there because the stock is shorter than the pipe.`);
+  if (added.length > 0) foot.push(`${added.length === 1 ? "Weld" : "Welds"} ${added.join(", ")} added because the stock is shorter than the pipe.`);
   if (facts.legs.some((leg) => leg.unverified)) foot.push("VIF: dimension not verified in the field. Verify before cutting.");
   return [foot.join(" ")];
 }

@@ -33,7 +33,7 @@ describe("pipe work on the sheet", () => {
     expect(text).toContain("FITTING TURNS");
     expect(text).toMatch(/CC?W, arc/);
     expect(text).toContain("22.50° clockwise, seen from the west");
-    expect(text).toMatch(/are there because the stock is/);
+    expect(text).toMatch(/Welds? \d.* added because the stock/);
     expect(text).toContain("SHIP PLUGGED");
     expect(text).not.toContain("NOT HERE");
     expect(words(new RunBuilder("T", "imperial", { pipe: pipe("1", "XS") }).start(open).go("E", "2'", elbow("th-90")).go("N", "2'", open).done())).toContain("MAKE-UP");
