@@ -1,5 +1,4 @@
 /** Which marks the drawing owes: every weld, component and cut piece of the sketch, with its anchors on paper. */
-import type { PaperPoint } from "../geometry/types";
 import { formatLength } from "../units/format";
 import { componentAnchor } from "./component-anchor";
 import { edgePlace, edgePoint, type DrawnEdge, type DrawnJoint } from "./drawn";
