@@ -82,8 +82,9 @@ for (let i = 0; i < ANGLES; i++) {
   AXIAL[i] = AXES.some((axis) => Math.abs(axis[0] * Math.cos(angle) + axis[1] * Math.sin(angle)) > ALONG_COSINE) ? COST_ALONG_AXIS : 0;
 }
 
-/** On rings under this every other direction is enough, mm. */
+/** On rings under and over these every other direction is enough, mm. */
 const HALF_ANGLES_UNDER = 2;
+const HALF_ANGLES_OVER = 14;
 /** Paper kept between a label and pipe or numbers, beyond what whole cells of the maps keep already, mm. */
 const MARGIN = 0.15;
 /** So far before its end a leader is still outside its label, mm. */
@@ -228,8 +229,8 @@ export class Candidates {
     const fixed = ring * COST_PER_MM + place * COST_OF_ANCHOR;
     if (this.count + ANGLES > this.flags.length) this.grow();
     const { at, flags, base, over } = this;
-    const step = ring < HALF_ANGLES_UNDER ? 2 : 1;
-    for (let i = step === 2 ? place & 1 : 0; i < ANGLES; i += step) {
+    const step = ring < HALF_ANGLES_UNDER || ring > HALF_ANGLES_OVER ? 2 : 1;
+    for (let i = step === 2 ? Math.floor(ring + place) & 1 : 0; i < ANGLES; i += step) {
       const dx = DX[i]!;
       const dy = DY[i]!;
       // The label must lie beyond its hub, not back over the anchor.

@@ -4,6 +4,7 @@
  * place on another label is never taken: the rings go on outwards until one is free, so labels cannot overlap.
  * Deterministic.
  */
+import type { PaperBox } from "../geometry/types";
 import type { DisplayItem, LabelReport } from "./drawing-types";
 import { boxMap, turnedInk } from "./ink-map";
 import { Candidates, FROM_X, FROM_Y, LED, STRIDE, TO_X, TO_Y, X, Y, type Label, type LabelInk } from "./label-candidates";
@@ -13,6 +14,8 @@ import { boxesMeet, segmentInBox, segmentsApart, type Segment, type TurnedBox } 
 
 /** A leader this near a number touches it, mm. */
 const LEADER_MARGIN = 0.25;
+/** Paper for labels beside what stands out of the room, mm. */
+const BESIDE = 20;
 
 export interface PlacedLabels {
   readonly items: readonly DisplayItem[];
@@ -22,8 +25,9 @@ export interface PlacedLabels {
 
 /** @param fixed boxes already on paper (dimension numbers, box words, north arrow) */
 export function placeLabels(labels: readonly Label[], fixed: readonly TurnedBox[], ink: LabelInk): PlacedLabels {
-  const candidates = new Candidates(labels, ink, boxMap(fixed));
-  const grid = new LabelGrid(labels, candidates, ink.room);
+  const room = roomBeside(labels, ink.room);
+  const candidates = new Candidates(labels, { ...ink, room }, boxMap(fixed));
+  const grid = new LabelGrid(labels, candidates, room);
   new LabelSearch(labels, candidates, grid).run();
   const items: DisplayItem[] = [];
   const boxes: TurnedBox[] = [];
@@ -44,6 +48,20 @@ export function placeLabels(labels: readonly Label[], fixed: readonly TurnedBox[
   // A number counts as touched when it lies on pipe or a leader runs through it.
   touches += fixed.filter((box) => turnedInk(ink.heavy, box) > 0 || leaders.some((leader) => segmentInBox(leader.from, leader.to, box, LEADER_MARGIN) > 0)).length;
   return { items, boxes, report: reportOf(boxes, fixed, touches, lengths) };
+}
+
+/** The room, widened where a line that is too large for it stands out: its labels are better beside it than crowded inside. */
+function roomBeside(labels: readonly Label[], room: PaperBox): PaperBox {
+  let { minX, minY, maxX, maxY } = room;
+  for (const { anchors } of labels) {
+    for (const [x, y] of anchors) {
+      if (x < room.minX) minX = Math.min(minX, x - BESIDE);
+      if (y < room.minY) minY = Math.min(minY, y - BESIDE);
+      if (x > room.maxX) maxX = Math.max(maxX, x + BESIDE);
+      if (y > room.maxY) maxY = Math.max(maxY, y + BESIDE);
+    }
+  }
+  return { minX, minY, maxX, maxY };
 }
 
 function reportOf(boxes: readonly TurnedBox[], fixed: readonly TurnedBox[], touches: number, leaders: readonly number[]): LabelReport {
