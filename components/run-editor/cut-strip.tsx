@@ -1,7 +1,7 @@
 "use client";
 import clsx from "clsx";
 import { memo } from "react";
-import { formatFeetInches, formatTerm, type Model, type Piece } from "@/iso";
+import { formatFeetInches, formatTerm, type Model, type Piece, type UnitSystem } from "@/iso";
 import { useEditor } from "./editor-context";
 import { cutLengthText, cutTerms, pieceSpan } from "./cut-words";
 
@@ -19,15 +19,24 @@ export const CutStrip = memo(function CutStrip({ model, activePointId, onPoint }
       <p className="py-1 text-sm text-caution">Verify by tape, two readings, before cutting. Take-outs are nominal: measure the fitting in hand.</p>
       <ol aria-label="Cut list" className="divide-y divide-hair border-y border-hair">
         {model.pieces.map((piece) => (
-          <PieceRow key={piece.key} model={model} piece={piece} active={piece.legId === activePointId} onPoint={onPoint} />
+          <PieceRow key={piece.key} units={model.document.settings.units} span={pieceSpan(model, piece)} piece={piece} active={piece.legId === activePointId} onPoint={onPoint} />
         ))}
       </ol>
     </>
   );
 });
 
-function PieceRow({ model, piece, active, onPoint }: { readonly model: Model; readonly piece: Piece; readonly active: boolean; readonly onPoint: (pointId: string) => void }) {
-  const { units } = model.document.settings;
+interface PieceRowProps {
+  readonly units: UnitSystem;
+  /** Rows it lies between, in words. */
+  readonly span: string;
+  readonly piece: Piece;
+  readonly active: boolean;
+  readonly onPoint: (pointId: string) => void;
+}
+
+/** Painted again only when its own piece changed: a long line has a hundred of them. */
+const PieceRow = memo(function PieceRow({ units, span, piece, active, onPoint }: PieceRowProps) {
   const { pointed } = useEditor();
   const fits = piece.cutLengthMm > 0;
   return (
@@ -51,10 +60,20 @@ function PieceRow({ model, piece, active, onPoint }: { readonly model: Model; re
           </span>
           <span className="block text-xs text-soft">
             {fits && units === "imperial" ? `${formatFeetInches(piece.cutLengthMm)}, ` : fits ? "" : `${formatTerm(piece.cutLengthMm, units)}, `}
-            {pieceSpan(model, piece)}
+            {span}
           </span>
         </span>
       </button>
     </li>
   );
+}, sameRow);
+
+/** A new model has new pieces; most of them say the same as before. */
+function sameRow(before: PieceRowProps, after: PieceRowProps): boolean {
+  const { piece: old } = before;
+  const { piece: now } = after;
+  if (before.active !== after.active || before.span !== after.span || before.units !== after.units || before.onPoint !== after.onPoint) return false;
+  if (old === now) return true;
+  return old.mark === now.mark && old.legId === now.legId && old.cutLengthMm === now.cutLengthMm && old.terms.length === now.terms.length
+    && old.terms.every((term, i) => term.label === now.terms[i]?.label && term.valueMm === now.terms[i]?.valueMm && term.unconfirmed === now.terms[i]?.unconfirmed);
 }

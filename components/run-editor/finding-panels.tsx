@@ -1,4 +1,5 @@
 "use client";
+import { memo } from "react";
 import type { Model } from "@/iso";
 import { Section } from "@/components/ui/section";
 import type { LineDetail } from "@/lib/rules/api-types";
@@ -14,7 +15,7 @@ export interface FindingPanelsProps extends Pick<ProblemListProps, "waiting" | "
 }
 
 /** What is wrong or to be looked at; and the sketches the run was read from. */
-export function FindingPanels({ line, model, waiting, activePointId, onPoint, onCell, onUploads }: FindingPanelsProps) {
+export const FindingPanels = memo(function FindingPanels({ line, model, waiting, activePointId, onPoint, onCell, onUploads }: FindingPanelsProps) {
   return (
     <>
       <Section title="Findings">
@@ -25,7 +26,7 @@ export function FindingPanels({ line, model, waiting, activePointId, onPoint, on
       </Section>
     </>
   );
-}
+});
 
 export interface CutPanelsProps {
   readonly line: LineDetail;
@@ -35,7 +36,7 @@ export interface CutPanelsProps {
 }
 
 /** What follows from the run for the bench: pieces to cut, spools to carry. */
-export function CutPanels({ line, model, activePointId, onPoint }: CutPanelsProps) {
+export const CutPanels = memo(function CutPanels({ line, model, activePointId, onPoint }: CutPanelsProps) {
   return (
     <>
       <Section title="Cut list" className="mb-8 [contain-intrinsic-size:auto_40rem] [content-visibility:auto]">
@@ -46,4 +47,4 @@ export function CutPanels({ line, model, activePointId, onPoint }: CutPanelsProp
       </Section>
     </>
   );
-}
+});

@@ -4,7 +4,7 @@
 /** Nobody types so slowly within a word, ms. */
 const PAUSE_MS = 220;
 /** Longest a change is held back while somebody types on, ms. */
-const MOST_HELD_MS = 2_000;
+const MOST_HELD_MS = 10_000;
 
 let lastKey = -Infinity;
 let listening = false;

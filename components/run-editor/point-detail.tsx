@@ -1,5 +1,5 @@
 "use client";
-import { useState } from "react";
+import { memo, useState } from "react";
 import { formatLength, formatTerm, parseLength, type Offset, type Point, type Problem, type Provenance, type RunDocument, type UnitSystem } from "@/iso";
 import { Button } from "@/components/ui/button";
 import type { Role } from "@/lib/rules/api-types";
@@ -25,7 +25,7 @@ export interface PointDetailProps {
 }
 
 /** What the grid has no column for, for the current row. */
-export function PointDetail({ document, point, problems, role, onTakeOut }: PointDetailProps) {
+export const PointDetail = memo(function PointDetail({ document, point, problems, role, onTakeOut }: PointDetailProps) {
   const { send, readOnly } = useEditor();
   const [open, setOpen] = useState(() => !isTouchScreen());
   const { units } = document.settings;
@@ -70,7 +70,7 @@ export function PointDetail({ document, point, problems, role, onTakeOut }: Poin
       </div>
     </details>
   );
-}
+});
 
 function hasFieldWeld({ places }: Point): boolean {
   return [places.in, places.out, places.branch].some((place) => place === "field" || place === "field-fit");

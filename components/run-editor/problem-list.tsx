@@ -29,7 +29,7 @@ export const ProblemList = memo(function ProblemList({ document, problems, waiti
   return (
     <>
       <p className="py-1 text-sm text-soft">{stops > 0 ? `${countText(stops, "finding")} stop${stops === 1 ? "s" : ""} the sheet.` : "Nothing here stops the sheet."}</p>
-      <ul className="divide-y divide-hair border-y border-hair">
+      <ul className="divide-y divide-hair border-y border-hair [contain-intrinsic-size:auto_20rem] [content-visibility:auto]">
         {waiting.map(({ target, draft }) => (
           <Finding key={`${target.runId}${target.row}${target.column}`} severity="stop" place={`${COLUMN_LABEL[target.column]}, row ${target.row + 1}`} text={`"${draft.text}" is not taken yet: ${draft.message}`} onPress={() => onCell(target)} />
         ))}

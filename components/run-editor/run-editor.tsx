@@ -1,5 +1,5 @@
 "use client";
-import { useCallback, useEffect, useMemo, useRef, useState } from "react";
+import { useCallback, useDeferredValue, useEffect, useMemo, useRef, useState } from "react";
 import { parseRunDocument, type View } from "@/iso";
 import { Notice } from "@/components/ui/notice";
 import type { LineDetail, Viewer } from "@/lib/rules/api-types";
@@ -54,6 +54,10 @@ export function RunEditor({ line, viewer, onUploads }: RunEditorProps) {
   const point = runOf(document, cursor.runId)?.points[cursor.row] ?? null;
   const [pointed] = useState(() => new PointedStore());
   const blockTextNow = useBlockText(state);
+  // What follows the cursor beside the grid comes after the key's own echo.
+  const followed = useDeferredValue(point);
+  const followedId = followed?.id ?? null;
+  const followedDocument = useDeferredValue(document);
   const doors = useMemo(() => ({ send, openHelp: () => setPanel("help"), readOnly: !line.editable, blockText: blockTextNow, pointed }), [send, line.editable, blockTextNow, pointed]);
   const showPoint = useCallback((pointId: string, focus = !isTouchScreen()) => send({ type: "show-point", pointId, focus }), [send]);
   const showCell = useCallback((target: CellTarget) => send({ type: "cursor", target, focus: true }), [send]);
@@ -90,23 +94,23 @@ export function RunEditor({ line, viewer, onUploads }: RunEditorProps) {
       <div className="flex flex-col gap-x-5 gap-y-4 lg:grid lg:grid-cols-[minmax(36rem,46fr)_minmax(0,54fr)]">
         <div className="contents lg:order-2 lg:block lg:min-w-0">
           <div className="order-1 flex min-h-64 flex-col lg:h-[max(30rem,calc(100dvh-13.5rem))]">
-            {look === "sheet" ? <LineSheet line={line} document={document} model={model} /> : look === "shape" ? <ShapeDoor model={model} activePointId={point?.id ?? null} /> : <LineDrawing model={model} marks={line.marks} takeOuts={line.takeOuts} view={document.view} onView={line.editable ? setView : null} activePointId={point?.id ?? null} onPoint={showPoint} document={document} onMove={line.editable ? takeNumber : null} />}
+            {look === "sheet" ? <LineSheet line={line} document={document} model={model} /> : look === "shape" ? <ShapeDoor model={model} activePointId={followedId} /> : <LineDrawing model={model} marks={line.marks} takeOuts={line.takeOuts} view={document.view} onView={line.editable ? setView : null} activePointId={followedId} onPoint={showPoint} document={followedDocument} onMove={line.editable ? takeNumber : null} />}
           </div>
           <div className="order-3 mt-4 min-w-0">
-            <CutPanels line={line} model={model} activePointId={point?.id ?? null} onPoint={showPoint} />
+            <CutPanels line={line} model={model} activePointId={followedId} onPoint={showPoint} />
           </div>
         </div>
         <div className="contents lg:order-1 lg:block lg:min-w-0">
           <div className="order-2 min-w-0">
             <PasteReportNotice report={state.report} />
             <BlockBar state={state} />
-            <div className="border-t border-ink lg:max-h-[max(24rem,calc(100dvh-19rem))] lg:overflow-y-auto lg:border-x lg:border-b lg:[contain:layout_paint_style]">
+            <div className="border-t border-ink lg:max-h-[max(24rem,calc(100dvh-19rem))] lg:overflow-y-auto lg:border-x lg:border-b lg:bg-paper lg:[contain:layout_paint_style]">
               <PointGrid state={state} problems={model.problems} />
             </div>
-            {point ? <PointDetail document={document} point={point} problems={model.problems} role={viewer.role ?? null} onTakeOut={onUploads} /> : null}
+            {followed ? <PointDetail document={followedDocument} point={followed} problems={model.problems} role={viewer.role ?? null} onTakeOut={onUploads} /> : null}
           </div>
           <div className="order-4 mt-4 min-w-0">
-            <FindingPanels line={line} model={model} waiting={waiting} activePointId={point?.id ?? null} onPoint={showPoint} onCell={showCell} onUploads={onUploads} />
+            <FindingPanels line={line} model={model} waiting={waiting} activePointId={followedId} onPoint={showPoint} onCell={showCell} onUploads={onUploads} />
           </div>
         </div>
       </div>

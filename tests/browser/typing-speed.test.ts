@@ -51,7 +51,7 @@ function longDocument(base: RunDocument): RunDocument {
 async function openLongLine(page: Page): Promise<void> {
   const headers = { origin: site() };
   const [job] = await api<JobRow[]>(page, "/api/jobs");
-  const made = await page.context().request.post(site(`/api/jobs/${job?.id}/lines`), { headers, data: { number: '4"-SPEED-1', title: "Long line" } });
+  const made = await page.context().request.post(site(`/api/jobs/${job?.id}/lines`), { headers, data: { number: `4"-SPEED-${Date.now() % 1_000_000}`, title: "Long line" } });
   expect(made.ok(), await made.text()).toBe(true);
   const { id } = (await made.json()) as { id: string };
   const line = await api<LineDetail>(page, `/api/lines/${id}`);
