@@ -111,6 +111,20 @@ describe("from draft to the bench", () => {
     expect((await call(status.GET, { params: { token } })).json).toMatchObject({ current: false, state: "superseded", liveCode: "B" });
   });
 
+  test("the view is chosen at the first issue and stays, whatever a later save says", async () => {
+    const made = await newLine(shop);
+    const detailOf = async () => (await call(line.GET, { as: shop.detailer, params: { lineId: made.lineId } })).json;
+    expect((await detailOf()).document.view).toBeNull();
+    await signed(made);
+    const { view } = (await detailOf()).document as SheetInput["document"];
+    expect([1, 2, 3, 4]).toContain(view);
+    expect((await spoolOf(made)).live.input.document.view).toBe(view);
+    const { version, document } = await detailOf();
+    const turned = { ...document, view: view === 3 ? 4 : 3, title: "Turned round" };
+    expect((await call(line.PUT, { as: shop.detailer, method: "PUT", params: { lineId: made.lineId }, body: { version, document: turned } })).status).toBe(200);
+    expect((await detailOf()).document).toMatchObject({ view, title: "Turned round" });
+  });
+
   test("nothing is submitted twice, and an unchanged spool gets no new revision", async () => {
     const made = await newLine(shop);
     const revisionId = await submitted(made);
