@@ -18,7 +18,7 @@ export function ShapeView({ model, activePointId }: { readonly model: Model; rea
     const canvas = document.createElement("canvas");
     canvas.className = "absolute inset-0 size-full touch-none";
     const made = openScene(canvas);
-    if (!made) return setMissing(true);
+    if (!made) return queueMicrotask(() => setMissing(true));
     box.append(canvas);
     scene.current = made;
     const fitBox = (): void => made.resize(box.clientWidth, box.clientHeight, window.devicePixelRatio);

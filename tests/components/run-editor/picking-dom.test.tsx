@@ -87,9 +87,9 @@ describe("a size the tables do not have", () => {
 });
 
 describe("the true shape without WebGL", () => {
-  it("says so in a sentence", () => {
+  it("says so in a sentence", async () => {
     vi.spyOn(HTMLCanvasElement.prototype, "getContext").mockReturnValue(null);
     render(<ShapeView model={buildModel(document20(), emptyMarks(), [])} activePointId={null} />);
-    expect(screen.getByText(NO_WEBGL)).toBeTruthy();
+    expect(await screen.findByText(NO_WEBGL)).toBeTruthy();
   });
 });
