@@ -104,18 +104,20 @@ export function textBox(text: DimensionText, at: PaperPoint): TurnedBox {
   return centredBox(at, text.width, text.capMm, text.angle);
 }
 
-/** Ink of a chosen set with the places of its numbers; a number without a place is left to the label pass. */
-export function dimensionItems(set: DimensionSet, places: readonly (PaperPoint | null)[]): readonly DisplayItem[] {
+/** Lines, extension lines and arrows of a chosen set. */
+export function dimensionItems(set: DimensionSet): readonly DisplayItem[] {
   const items: DisplayItem[] = [];
   for (const { from, to } of set.extensions) items.push(lineItem("dimension", null, from, to, size.EXTENSION_WIDTH));
   set.lines.forEach((line, i) => {
     const text = set.texts[i];
     const ref = text?.ref ?? null;
     items.push(lineItem("dimension", ref, line.from, line.to, size.DIMENSION_WIDTH), ...dimensionEnds(line, ref));
-    const at = places[i];
-    if (text && at) items.push(centredText("dimension-text", text.ref, at, text.text, { capMm: text.capMm, rotateRad: text.angle }));
   });
   return items;
+}
+
+export function numberItem(text: DimensionText, at: PaperPoint): DisplayItem {
+  return centredText("dimension-text", text.ref, at, text.text, { capMm: text.capMm, rotateRad: text.angle });
 }
 
 function dimensionEnds(line: Segment, ref: Ref | null): readonly DisplayItem[] {

@@ -10,19 +10,21 @@ import type { DrawnEdge } from "./drawn";
 import type { DisplayItem, MeasureText } from "./drawing-types";
 import type { LabelField } from "./label-field";
 import type { Placed } from "./place";
+import type { PlacedNumber } from "./number-places";
 import { EMPTY_BOX, type Segment, type TurnedBox } from "./plane";
 import * as size from "./sizes";
 
 export interface DimensionInk {
   readonly items: readonly DisplayItem[];
   readonly light: readonly Segment[];
-  readonly boxes: readonly TurnedBox[];
+  /** Numbers and where they stand; labels may still move them along their lines. */
+  readonly numbers: readonly PlacedNumber[];
   /** Numbers without a free place beside their line. */
   readonly homeless: readonly DimensionText[];
   readonly shown: readonly string[];
 }
 
-export const NO_DIMENSIONS: DimensionInk = { items: [], light: [], boxes: [], homeless: [], shown: [] };
+export const NO_DIMENSIONS: DimensionInk = { items: [], light: [], numbers: [], homeless: [], shown: [] };
 
 const LEVELS = 4;
 const ROUNDS = 2;
@@ -49,9 +51,12 @@ export function dimensionPass(placed: Placed, drawn: readonly DrawnEdge[], aroun
   }
   const kept = chosen.filter((choice): choice is Choice => choice !== null);
   return {
-    items: kept.flatMap((choice) => dimensionItems(choice.set, choice.places)),
+    items: kept.flatMap((choice) => dimensionItems(choice.set)),
     light: kept.flatMap((choice) => [...choice.set.lines, ...choice.set.extensions]),
-    boxes: kept.flatMap((choice) => choice.boxes),
+    numbers: kept.flatMap((choice) => choice.set.texts.flatMap((text, i) => {
+      const at = choice.places[i];
+      return at ? [{ text, box: textBox(text, at) }] : [];
+    })),
     homeless: kept.flatMap((choice) => choice.set.texts.filter((_, i) => choice.places[i] === null)),
     shown: chains.flatMap((chain) => chain.edges.map(({ edge }) => edge.id)),
   };

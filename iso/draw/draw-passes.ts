@@ -3,6 +3,7 @@ import type { PaperBox, PaperPoint } from "../geometry/types";
 import type { View } from "../run/document";
 import { breakPass, type BreakInk } from "./break-flags";
 import { componentMarks, pieceMarks, revisionMarks, weldMarks } from "./collect-marks";
+import { numberItem } from "./dimension-lines";
 import { dimensionPass, NO_DIMENSIONS, type DimensionInk } from "./dimensions";
 import { drawnEdges, drawnJoints, type DrawnEdge, type DrawnJoint } from "./drawn";
 import type { DisplayItem, Drawing, DrawOptions, Layer, Ref } from "./drawing-types";
@@ -81,15 +82,15 @@ export function drawLines(placed: Placed, options: DrawOptions, place: SheetPlac
   const centre: PaperPoint = [(around.minX + around.maxX) / 2 || 0, (around.minY + around.maxY) / 2 || 0];
   const dimensions = options.show.dimensions ? dimensionPass(placed, drawn, { heavy: heavyMap, light: boxMap, field, centre, extent: around }, measure) : NO_DIMENSIONS;
   const light = [...offsets.light, ...dimensions.light, ...slopes.light, ...cloud.light];
-  const fixed = [...texts.flatMap((text) => text.box ?? []), ...slopes.boxes, ...dimensions.boxes];
+  const fixed = [...texts.flatMap((text) => text.box ?? []), ...slopes.boxes];
   return {
     placed, drawn, joints, offsets, dimensions, matches, breaks, heavy, light, heavyMap, field, fixed,
-    items: [...inks.flatMap((ink) => ink.items), ...offsets.items, ...slopes.items, ...dimensions.items, ...texts.flatMap((text) => text.items), ...knockOuts([...texts.flatMap((text) => text.box ?? []), ...dimensions.boxes], light)],
+    items: [...inks.flatMap((ink) => ink.items), ...offsets.items, ...slopes.items, ...dimensions.items, ...texts.flatMap((text) => text.items), ...knockOuts(texts.flatMap((text) => text.box ?? []), light)],
     homeless: [
       ...texts.filter((text) => text.box === null).map(({ text }) => ({ ref: text.ref, text: text.text, line: text.line })),
       ...dimensions.homeless.map((text) => ({ ref: text.ref, text: text.text, line: { from: text.from, to: text.to } })),
     ],
-    extent: paperBoxAround([...[...heavy, ...light].flatMap((s) => [s.from, s.to]), ...fixed.flatMap((box) => boxCorners(box))]),
+    extent: paperBoxAround([...[...heavy, ...light].flatMap((s) => [s.from, s.to]), ...[...fixed, ...dimensions.numbers.map(({ box }) => box)].flatMap((box) => boxCorners(box))]),
   };
 }
 
@@ -114,12 +115,13 @@ export function drawLabels(lines: Lines, options: DrawOptions, view: View): Draw
     ...offsets.notes.map((note) => blockLabel(note.lines.map((text, i) => ({ text, bold: i === 0 })), { id: `offset ${note.id}`, anchors: note.anchors, clear: 0.5, along: [] }, { kind: "leg", id: note.id }, measure)),
     ...homelessLabels(lines.homeless, options), ...revisionMarks(placed, options), ...welds.labels, ...components.labels, ...pieces.labels,
   ];
-  const marks = placeLabels(labels, [...lines.fixed, north.box], { heavy: heavyMap, light: lightMap, room });
+  const marks = placeLabels(labels, [...lines.fixed, north.box], { heavy: heavyMap, light: lightMap, room }, lines.dimensions.numbers);
+  const numbers = lines.dimensions.numbers.map(({ text }, i) => numberItem(text, marks.numbers[i]?.centre ?? [0, 0]));
   const shown: Ref[] = [
     ...welds.shown, ...components.shown, ...pieces.shown,
     ...[...lines.dimensions.shown, ...offsets.notes.map((note) => note.id)].map((id): Ref => ({ kind: "dimension", id })),
   ];
-  return finished(layered([...lines.items, ...north.items, ...marks.items]), room, options, view, marks.report, shown, placed);
+  return finished(layered([...lines.items, ...knockOuts(marks.numbers, light), ...numbers, ...north.items, ...marks.items]), room, options, view, marks.report, shown, placed);
 }
 
 interface Homeless {

@@ -173,7 +173,7 @@ export class Candidates {
     return this.base[candidate]! + this.over[candidate]!;
   }
 
-  /** True when the box lies on pipe, or the leader runs over pipe, a symbol not its own, or a number. */
+  /** True when the box lies on pipe, or the leader runs over pipe or a symbol not its own. */
   touches(label: number, candidate: number): boolean {
     this.cost(label, candidate);
     return (this.flags[candidate]! & (BOX_TOUCHES | LEADER_TOUCHES)) !== 0;
@@ -206,7 +206,7 @@ export class Candidates {
     const pipe = heavy.under(ends);
     const numbers = this.numbers.under(ends);
     const lines = pipe > 0 || numbers > 0 ? 0 : light.under(ends);
-    if (pipe > 0 || numbers > 0) flags[candidate]! |= LEADER_TOUCHES;
+    if (pipe > 0) flags[candidate]! |= LEADER_TOUCHES;
     return onThin + Math.floor((pipe > 0 ? COST_OF_TOUCH + pipe * PRICE : 0) + (numbers > 0 ? 2 * COST_OF_TOUCH : 0) + (lines > 0 ? COST_OVER_THIN + lines * COST_PER_OVER_CELL : 0));
   }
 

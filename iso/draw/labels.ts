@@ -10,6 +10,7 @@ import { boxMap, turnedInk } from "./ink-map";
 import { Candidates, FROM_X, FROM_Y, LED, STRIDE, TO_X, TO_Y, X, Y, type Label, type LabelInk } from "./label-candidates";
 import { LabelGrid } from "./label-grid";
 import { LabelSearch } from "./label-search";
+import { numbersAside, type PlacedNumber } from "./number-places";
 import { boxesMeet, segmentInBox, segmentsApart, type Segment, type TurnedBox } from "./plane";
 
 /** A leader this near a number touches it, mm. */
@@ -20,34 +21,51 @@ const BESIDE = 20;
 export interface PlacedLabels {
   readonly items: readonly DisplayItem[];
   readonly boxes: readonly TurnedBox[];
+  /** Where the numbers of dimensions stand now, in their order. */
+  readonly numbers: readonly TurnedBox[];
   readonly report: LabelReport;
 }
 
-/** @param fixed boxes already on paper (dimension numbers, box words, north arrow) */
-export function placeLabels(labels: readonly Label[], fixed: readonly TurnedBox[], ink: LabelInk): PlacedLabels {
+/**
+ * @param still boxes already on paper that stay (box words, slopes, north arrow)
+ * @param numbers those of dimensions, which may step aside
+ */
+export function placeLabels(labels: readonly Label[], still: readonly TurnedBox[], ink: LabelInk, numbers: readonly PlacedNumber[] = []): PlacedLabels {
   const room = roomBeside(labels, ink.room);
-  const candidates = new Candidates(labels, { ...ink, room }, boxMap(fixed));
+  const candidates = new Candidates(labels, { ...ink, room }, boxMap([...still, ...numbers.map(({ box }) => box)]));
   const grid = new LabelGrid(labels, candidates, room);
   new LabelSearch(labels, candidates, grid).run();
   const items: DisplayItem[] = [];
   const boxes: TurnedBox[] = [];
   const lengths: number[] = [];
   const leaders: Segment[] = [];
-  let touches = 0;
+  /** Whose leaders they are. */
+  const owners: number[] = [];
+  const touched = new Set<number>();
   labels.forEach((label, i) => {
     const seat = grid.seats[i]!;
     if (seat < 0) return;
     const at = candidates.at.subarray(seat * STRIDE, (seat + 1) * STRIDE);
     const leader: Segment | null = (candidates.flags[seat]! & LED) !== 0 ? { from: [at[FROM_X]!, at[FROM_Y]!], to: [at[TO_X]!, at[TO_Y]!] } : null;
-    if (leader) leaders.push(leader);
+    if (leader) {
+      leaders.push(leader);
+      owners.push(i);
+    }
     lengths.push(leader ? Math.hypot(leader.to[0] - leader.from[0], leader.to[1] - leader.from[1]) : 0);
-    if (candidates.touches(i, seat) || grid.touched(i)) touches++;
+    if (candidates.touches(i, seat) || grid.touched(i)) touched.add(i);
     items.push(...label.draw([at[X]!, at[Y]!], leader));
     boxes.push({ centre: [at[X]!, at[Y]!], halfWidth: label.halfWidth, halfHeight: label.halfHeight, angle: 0 });
   });
-  // A number counts as touched when it lies on pipe or a leader runs through it.
-  touches += fixed.filter((box) => turnedInk(ink.heavy, box) > 0 || leaders.some((leader) => segmentInBox(leader.from, leader.to, box, LEADER_MARGIN) > 0)).length;
-  return { items, boxes, report: reportOf(boxes, fixed, touches, lengths) };
+  const aside = numbersAside(numbers, [...boxes, ...still], leaders, ink.heavy);
+  const fixed = [...still, ...aside];
+  // A number counts as touched when it lies on pipe or a leader runs through it, and so does that leader's label.
+  let touches = 0;
+  for (const box of fixed) {
+    const through = leaders.flatMap(({ from, to }, i) => (segmentInBox(from, to, box, LEADER_MARGIN) > 0 ? [owners[i]!] : []));
+    for (const label of through) touched.add(label);
+    if (through.length > 0 || turnedInk(ink.heavy, box) > 0) touches++;
+  }
+  return { items, boxes, numbers: aside, report: reportOf(boxes, fixed, touches + touched.size, lengths) };
 }
 
 /** The room, widened where a line that is too large for it stands out: its labels are better beside it than crowded inside. */
