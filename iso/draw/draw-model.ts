@@ -22,9 +22,11 @@ const LEAST_STEP = 6;
 /** A stretch under this is not worth another try: the legs stand at their least room. */
 const STRETCH_LEAST = 0.15;
 /** Paper kept beyond the pipe at the first try, and beyond dimensions for the labels, mm. */
-const FIRST_MARGIN = 22;
+const FIRST_MARGIN = 25;
 const LEAST_MARGIN = 13;
 const LABEL_MARGIN = 7;
+/** Dimensions may take this much of the labels' margin before the legs are drawn shorter for it: another try costs more than it gives. */
+const LABEL_SLACK = 6;
 
 /**
  * Draws a model inside its room, on one sheet whatever it holds (drawSheets takes as many as it needs). Labels never overlap
@@ -61,7 +63,7 @@ export function drawPlan(plan: PlacePlan, view: View, options: DrawOptions, plac
     const lines = drawLines(at, options, place);
     const over = beyond(lines.extent, roomWithin(options, LABEL_MARGIN));
     const last = stretch === 0 || attempt === FIT_TRIES - 1;
-    if (last || (over.widthMm <= 0 && over.heightMm <= 0)) {
+    if (last || Math.max(over.widthMm, over.heightMm) <= LABEL_SLACK) {
       const next = drawLabels(lines, options, view);
       if (!best || overrun(next) < overrun(best)) best = next;
       labelled++;
