@@ -86,3 +86,15 @@ export const NEST_WORTH = 1e-6;
 
 /** Kilograms. A spool lighter than this has no centre of gravity worth a number: only nonsense lengths weigh so little. */
 export const WEIGHTLESS_KG = 1e-9;
+
+/** Millimetres. A survey's adjustment has settled when no mark moves by more: a millionth of what a tape shows. */
+export const SURVEY_STEP_MM = 1e-7;
+
+/** Share of the largest eigenvalue of a survey's normal equations. Under it nothing holds that freedom: float64 noise, squared readings included. */
+export const SURVEY_RANK = 1e-10;
+
+/** Unit-less. A redundancy number under this means that no other reading controls the reading. */
+export const SURVEY_UNCONTROLLED = 1e-6;
+
+/** Share of the largest standardised residual. Readings within it explain a misfit equally well. */
+export const SURVEY_EQUAL_SHARE = 0.02;
