@@ -1,8 +1,9 @@
 /**
  * A bitmap of what is inked, half a millimetre a cell, 32 cells a word: whether ink lies in a box takes a word or two for each
- * half millimetre of its height, under a leader a step for each of its length. Measured on the same lines: an index of exact
- * segments takes about ten times as long for a place and finds the same ones free but for a quarter of a millimetre; summed
- * areas answer as fast as bit rows, but take longer to make than all the questions of a sheet, and do not stay in the cache.
+ * half millimetre of its height, under a leader a step for each of its length. Measured beside it on the same lines, summed
+ * areas answer as fast, but take longer to make than all the questions of a sheet and do not stay in the cache; an index of
+ * exact segments took about ten times as long in an earlier trial and found the same places free but for a quarter of a millimetre.
+ * Long because drawing into the bits and asking them belong together.
  */
 import type { PaperBox, PaperPoint } from "../geometry/types";
 import { boxCorners, type Segment, type TurnedBox } from "./plane";

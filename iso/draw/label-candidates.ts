@@ -1,12 +1,18 @@
 /**
  * Candidate places of labels: rings round their anchors, weighed against what stands on paper already (pipe and symbols,
  * thin lines, numbers). Tens of thousands are weighed for a sheet, so they live in flat arrays and are made tier by tier,
- * only when the nearer rings leave something to wish for.
+ * only when the nearer rings leave something to wish for. Long because what fills the arrays and what reads them belong together.
  */
 import type { PaperBox, PaperPoint } from "../geometry/types";
 import type { DisplayItem } from "./drawing-types";
 import { CELLS_PER_MM, type InkMap } from "./ink-map";
 import { ALONG_COSINE, leaderIsShort, leaderSkip } from "./label-leaders";
+import {
+  RINGS, POOR_TIER, POOR_RINGS, FAR_RINGS, NEAR_TIERS, MOST_ANCHORS, MOST_ANCHORS_FAR, TIER_COUNT, PRICE, COST_PER_MM,
+  COST_OF_TOUCH, COST_PER_CELL, COST_ON_THIN, COST_PER_THIN_CELL, COST_OF_WORDS_ON_THIN, COST_OVER_THIN, COST_PER_OVER_CELL,
+  COST_OUTSIDE, COST_PER_OUTSIDE, COST_ALONG_PIPE, COST_OF_ANCHOR, ANGLES, DX, DY, AXIAL, HALF_ANGLES_UNDER, HALF_ANGLES_OVER,
+  MARGIN, LEADER_END, MOST_IN_TIER,
+} from "./label-rings";
 
 /** Where a leader may meet a label: a disc about `offset` from the label's middle. */
 export interface Hub {
@@ -36,60 +42,6 @@ export interface LabelInk {
   readonly light: InkMap;
   readonly room: PaperBox;
 }
-
-/** Rings by tiers, mm of leader: a farther tier is looked at while the nearer ones leave something to wish for. */
-const RINGS: readonly (readonly number[])[] = [[1.5], [2.8], [4.5], [6.5], [9], [12], [16], [21], [27], [34]];
-/** Places on pipe or outside the room come after those, then places beyond all usual rings. */
-const POOR_TIER = RINGS.length;
-const POOR_RINGS = [1.5, 2.8, 4.5, 6.5, 9, 12, 16, 21, 27, 34] as const;
-const FAR_RINGS: readonly (readonly number[])[] = [[42, 52], [64, 80], [100, 130], [170, 220], [290, 380], [500, 700], [1000, 1500], [2200, 3200]];
-/** Anchors looked at on the near rings, and beyond them. */
-const NEAR_TIERS = 4;
-const MOST_ANCHORS = 3;
-const MOST_ANCHORS_FAR = 1;
-/** Tiers of a label: clear ones by ring, poor ones, far ones. */
-export const TIER_COUNT = RINGS.length + 1 + FAR_RINGS.length;
-
-/** Prices are whole numbers, this many to one, so that the search need not make a number of them on the heap each time. */
-export const PRICE = 64;
-/** Price of a millimetre of leader; of a touch, which leaves a label (or two) unclean; of thin lines under box and leader. */
-const COST_PER_MM = 0.7 * PRICE;
-const COST_OF_TOUCH = 34 * PRICE;
-const COST_PER_CELL = 0.4 * PRICE;
-const COST_ON_THIN = 2.5 * PRICE;
-const COST_PER_THIN_CELL = 0.08 * PRICE;
-/** Words have no white ground of their own. */
-const COST_OF_WORDS_ON_THIN = 6 * PRICE;
-const COST_OVER_THIN = 6 * PRICE;
-const COST_PER_OVER_CELL = 0.6 * PRICE;
-const COST_OUTSIDE = 40 * PRICE;
-const COST_PER_OUTSIDE = 3 * PRICE;
-const COST_ALONG_PIPE = 8 * PRICE;
-const COST_ALONG_AXIS = 1.2 * PRICE;
-const COST_OF_ANCHOR = 0.6 * PRICE;
-
-/** 24 directions, the first at 7.5°, so that none lies along an axis. */
-const ANGLES = 24;
-const OFFSET_DEG = 7.5;
-const AXES: readonly PaperPoint[] = [[Math.cos(Math.PI / 6), 0.5], [Math.cos(Math.PI / 6), -0.5], [0, 1]];
-const DX = new Float64Array(ANGLES);
-const DY = new Float64Array(ANGLES);
-const AXIAL = new Float64Array(ANGLES);
-for (let i = 0; i < ANGLES; i++) {
-  const angle = ((OFFSET_DEG + (i * 360) / ANGLES) * Math.PI) / 180;
-  DX[i] = Math.cos(angle);
-  DY[i] = Math.sin(angle);
-  AXIAL[i] = AXES.some((axis) => Math.abs(axis[0] * Math.cos(angle) + axis[1] * Math.sin(angle)) > ALONG_COSINE) ? COST_ALONG_AXIS : 0;
-}
-
-/** On rings under and over these every other direction is enough, mm. */
-const HALF_ANGLES_UNDER = 2;
-const HALF_ANGLES_OVER = 14;
-/** Paper kept between a label and pipe or numbers, beyond what whole cells of the maps keep already, mm. */
-const MARGIN = 0.15;
-/** So far before its end a leader is still outside its label, mm. */
-const LEADER_END = 0.8;
-const MOST_IN_TIER = 65_536;
 
 /** Numbers of a candidate in the store: its middle, its leader's start and end, mm. */
 export const STRIDE = 6;

@@ -1,9 +1,11 @@
 /**
  * Where labels sit now: their boxes and leaders in a grid of cells with linked lists in flat arrays, asked a hundred
  * thousand times a sheet. A label never lies on another; leaders on labels and leaders across leaders have their price.
+ * Long because its loops are written out: a call with fractions as arguments costs more than what they do.
  */
 import type { PaperBox } from "../geometry/types";
-import { FROM_X, FROM_Y, LED, PRICE, STRIDE, TO_X, TO_Y, X, Y, type Candidates, type Label } from "./label-candidates";
+import { FROM_X, FROM_Y, LED, STRIDE, TO_X, TO_Y, X, Y, type Candidates, type Label } from "./label-candidates";
+import { PRICE } from "./label-rings";
 
 /** Clear paper kept between two labels, and between a leader and a label that is not its own, mm. */
 const MARGIN = 0.35;

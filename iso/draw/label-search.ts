@@ -2,10 +2,11 @@
  * Seats for all labels: each takes the cheapest place free, those with the fewest good places first; then sweeps over what
  * sits uneasily. A label may put up to two others out of their seats when all of them together gain, and those may do the
  * same in their turn, a few deep; whatever gains nothing is undone from a journal. The work is bounded by counts, never by
- * the clock, so that equal input gives equal seats.
+ * the clock, so that equal input gives equal seats. Long because one journal serves all its steps.
  */
-import { PRICE, TIER_COUNT, type Candidates, type Label } from "./label-candidates";
+import type { Candidates, Label } from "./label-candidates";
 import type { LabelGrid } from "./label-grid";
+import { PRICE, TIER_COUNT } from "./label-rings";
 
 /** How deep one label may put out another; places tried at each depth. */
 const DEPTH = 2;
@@ -22,8 +23,10 @@ const LAST_USUAL = 11;
 const ROUNDS = 16;
 /** Rings counted to tell which labels have few places. */
 const NEAR_TIERS = 2;
-/** Places looked at in all before what is reached is left as it is: a few milliseconds. */
-const LOOKS = 100_000;
+/** Places looked at in all before what is reached is left as it is; a sheet with very many labels, which is read in the editor only, stops sooner. */
+const LOOKS = 240_000;
+const LOOKS_FOR_MANY = 80_000;
+const MANY = 190;
 /** A move within this of a label is worth another try for it, mm. */
 const ZONE = 30;
 /** Dearer than any seat. */
@@ -53,11 +56,12 @@ export class LabelSearch {
     const choice = order.map((i) => this.choices(i));
     order.sort((p, q) => choice[p]! - choice[q]! || p - q);
     for (const label of order) this.insert(label, MOST_COST, 0);
+    const most = this.labels.length > MANY ? LOOKS_FOR_MANY : LOOKS;
     for (let round = 0; round < ROUNDS; round++) {
       const uneasy = this.uneasy(order, round === 0 ? this.candidates.leastCost(0) : EASY);
       let moved = false;
       for (const label of uneasy) {
-        if (this.looks > LOOKS) return;
+        if (this.looks > most) return;
         if (round > 1 && !this.stirred(label)) continue;
         if (this.improved(label, round === 0 ? 0 : DEPTH)) moved = true;
         else this.tried[label] = this.moves;
