@@ -219,7 +219,7 @@ export interface Spool {
   readonly paintM2?: number;
   /** Axis-parallel outer box, mm. */
   readonly boxMm: Vec3;
-  /** Smallest box over rotations, mm, longest first: what the shipping box is held against. */
+  /** What is held against the shipping box, mm, longest first: the box as it lies where that ships, else the best over rotations. */
   readonly shippingMm?: Vec3;
   /** sha-free content key: canonical JSON of everything a bench would notice; equal strings = same spool. */
   readonly content: string;

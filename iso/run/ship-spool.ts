@@ -17,26 +17,35 @@ export interface Shipped {
   readonly boxMm: Vec3;
 }
 
-/** The smallest box of a spool, longest side first, mm; reports one that stands out of the shipping box however it is turned. */
+/**
+ * The box a spool ships in, longest side first, mm; reports one that stands out of the shipping box however it is turned. A
+ * search over rotations is made only where it can change the answer: not for a spool that ships as it lies, nor for one that
+ * reaches farther along one of its own pipes than the shipping box does from corner to corner.
+ */
 export function shippedSpool(spool: Shipped, ctx: BuildContext): Vec3 {
-  const discs = spoolExtents(spool.components, spool.pieces, ctx.units);
   const room = ctx.settings.shippingBoxMm;
-  // A spool that ships as it lies needs no search: the frames of its own pipes say its size well enough.
-  const { sizeMm, overMm } = shippingBox(discs, room, boxFits(spool.boxMm, room) ? 0 : undefined);
+  if (boxFits(spool.boxMm, room)) return [...spool.boxMm].sort((a, b) => b - a) as [number, number, number];
+  const discs = spoolExtents(spool.components, spool.pieces, ctx.units);
+  const asItGoes = shippingBox(discs, room, 0);
+  if (asItGoes.sizeMm[0] > Math.hypot(...room)) {
+    reportOver(spool, asItGoes, "along its own pipes, longer than the shipping box is from corner to corner", ctx);
+    return asItGoes.sizeMm;
+  }
+  const { sizeMm, overMm } = shippingBox(discs, room);
   if (overMm <= 0) return sizeMm;
   const smallest = shippingBox(discs, ANY_ROOM, 1);
-  reportOver(spool, smallest, overMm, ctx);
+  reportOver(spool, smallest, `at its smallest and stands ${formatLength(overMm, ctx.units)} out of the shipping box however it is turned`, ctx);
   return smallest.sizeMm;
 }
 
 /** A room that everything fits, so that volume alone decides. */
 const ANY_ROOM: Vec3 = [Infinity, Infinity, Infinity];
 
-function reportOver(spool: Shipped, { sizeMm, along }: ShippingBox, overMm: number, ctx: BuildContext): void {
+function reportOver(spool: Shipped, { sizeMm, along }: ShippingBox, how: string, ctx: BuildContext): void {
   const say = sizeMm.map((mm) => formatLength(mm, ctx.units)).join(" x ");
   const weld = middleWeld(spool.joints, along);
   const where = weld === null ? "where it should come apart" : "near its middle, at this point or the next";
-  ctx.report("shipping-box", "warning", `Spool ${spool.letter} is ${say} at its smallest and stands ${formatLength(overMm, ctx.units)} out of the shipping box however it is turned: put a field weld ${where}.`, {
+  ctx.report("shipping-box", "warning", `Spool ${spool.letter} is ${say} ${how}: put a field weld ${where}.`, {
     pointId: weld?.pointId ?? spool.components[0]?.pointId ?? null, runId: weld?.runId ?? null,
   });
 }

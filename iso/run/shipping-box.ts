@@ -41,8 +41,8 @@ const MOST_DIRECTIONS = 6;
 const REFINED_STARTS = 4;
 const QUICK_DIRECTIONS = 3;
 const FIRST_STEP = (15 * Math.PI) / 180;
-/** 0.02°: a millimetre on three metres. */
-const SMALLEST_STEP = (0.02 * Math.PI) / 180;
+/** 0.2°: a hand on a full truck length, well under the one percent that is promised. */
+const SMALLEST_STEP = (0.2 * Math.PI) / 180;
 const AXES: Frame = [[1, 0, 0], [0, 1, 0], [0, 0, 1]];
 
 /** Whether a spool's axis-parallel box goes into the room as it lies, so that no search is needed to say that it ships. */

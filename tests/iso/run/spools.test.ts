@@ -140,7 +140,7 @@ describe("weight, centre of gravity and box", () => {
   it("says when a spool leaves the shipping box, in its own numbers", () => {
     const model = build(new RunBuilder("T").start(flange()).go("E", `42'`).go("N", `6'`, flange()).done());
     expect(model.problems.filter((p) => p.code === "shipping-box").map((p) => p.text)).toEqual([
-      `Spool A is 42'-10 3/16" x 6'-1 3/8" x 9" at its smallest and stands 1'-4 7/16" out of the shipping box however it is turned: put a field weld near its middle, at this point or the next.`,
+      `Spool A is 42'-4 1/2" x 6'-4 1/2" x 9" along its own pipes, longer than the shipping box is from corner to corner: put a field weld near its middle, at this point or the next.`,
     ]);
   });
 });
