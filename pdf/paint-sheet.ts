@@ -1,8 +1,10 @@
 /** Pages of display items to PDF bytes. No clock, no query: the same pages give the same bytes. */
 import PDFDocument from "pdfkit";
 import type { SheetPage } from "@/iso";
+import { escapeMetadata } from "./document-metadata";
 import { ItemPainter } from "./item-painter";
-import { paintLogo } from "./logo";
+import { logoKind, paintLogo } from "./logo";
+import { addSignatureField, type SignatureFacts } from "./signature-field";
 
 /** Points (1/72 in) in a millimetre. */
 const POINTS_PER_MM = 72 / 25.4;
@@ -17,6 +19,8 @@ export interface PaintInput {
   readonly author?: string;
   readonly subject?: string;
   readonly keywords?: string;
+  /** Leaves room for a signature on the first page, to be filled by signSheet; absent = none. */
+  readonly signature?: SignatureFacts;
 }
 
 /**
@@ -26,9 +30,15 @@ export interface PaintInput {
 export function paintSheet(input: PaintInput): Promise<Uint8Array> {
   if (input.pages.length === 0) throw new Error("A sheet needs at least one page");
   const document = new PDFDocument(optionsOf(input));
+  escapeMetadata(document);
   const bytes = collectBytes(document);
   const painter = new ItemPainter(document);
-  for (const page of input.pages) paintPage(document, painter, page, input.logo);
+  const whole = document.struct("Document");
+  document.addStructure(whole);
+  for (const [index, page] of input.pages.entries()) {
+    paintPage(document, whole, painter, page, input.logo);
+    if (index === 0 && input.signature) addSignatureField(document, input.signature);
+  }
   labelPages(document, input.pages);
   document.end();
   return bytes;
@@ -42,7 +52,21 @@ function optionsOf(input: PaintInput): PDFKit.PDFDocumentOptions {
     Producer: "Quarterline", Creator: "Quarterline", CreationDate: date, ModDate: date,
   };
   // The default font is one of pdfkit's own; null keeps it out of the file. Its types know strings only.
-  return { autoFirstPage: false, margin: 0, pdfVersion: "1.7", lang: "en-US", displayTitle: true, info, font: null as unknown as string };
+  return { autoFirstPage: false, margin: 0, pdfVersion: "1.7", lang: "en-US", tagged: true, displayTitle: true, info: plainInfo(info), font: null as unknown as string, ...archival(input) };
+}
+
+/**
+ * Laid out as ISO 19005-2 level B asks: faces embedded, colours defined, metadata inside. A JPEG logo may be in printing
+ * inks, which the defined colours leave open; a sheet with one says nothing of archives.
+ */
+function archival({ logo }: PaintInput): { subset?: "PDF/A-2b" } {
+  return logo !== null && logoKind(logo) === "jpeg" ? {} : { subset: "PDF/A-2b" };
+}
+
+/** The signer looks for its room by this word; nobody's title may pretend to be it. */
+function plainInfo<Info extends Record<string, string | Date>>(info: Info): Info {
+  const entries = Object.entries(info).map(([name, value]) => [name, typeof value === "string" ? value.replaceAll("/ByteRange", "ByteRange") : value]);
+  return Object.fromEntries(entries) as Info;
 }
 
 function collectBytes(document: PDFKit.PDFDocument): Promise<Uint8Array> {
@@ -54,10 +78,15 @@ function collectBytes(document: PDFKit.PDFDocument): Promise<Uint8Array> {
   });
 }
 
-function paintPage(document: PDFKit.PDFDocument, painter: ItemPainter, page: SheetPage, logo: Uint8Array | null): void {
+/** One section a page, named as its label: readers that speak a page aloud find where each begins. */
+function paintPage(document: PDFKit.PDFDocument, whole: PDFKit.PDFStructureElement, painter: ItemPainter, page: SheetPage, logo: Uint8Array | null): void {
   document.addPage({ size: [page.widthMm * POINTS_PER_MM, page.heightMm * POINTS_PER_MM], margin: 0 });
   document.scale(POINTS_PER_MM);
   painter.startPage();
+  whole.add(document.struct("Sect", { title: page.name }, [() => paintContent(document, painter, page, logo)]));
+}
+
+function paintContent(document: PDFKit.PDFDocument, painter: ItemPainter, page: SheetPage, logo: Uint8Array | null): void {
   for (const item of page.items) painter.paint(item);
   if (logo === null || page.logoBox === null) return;
   const problem = paintLogo(document, logo, page.logoBox);
