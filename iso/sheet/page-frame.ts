@@ -33,7 +33,7 @@ export interface PageFrame {
   readonly over: (place: SheetPlace) => DisplayItem[];
 }
 
-interface Paper {
+export interface Paper {
   readonly frame: PaperBox;
   /** Frame above the foot line. */
   readonly inner: PaperBox;
@@ -107,7 +107,7 @@ function titleParts(facts: SheetFacts, paper: Paper, parts: TitleParts, measure:
 }
 
 /** Frame and foot line. */
-function paperOf(facts: SheetFacts, measure: MeasureText): Paper {
+export function paperOf(facts: SheetFacts, measure: MeasureText): Paper {
   const { widthMm, heightMm } = sheetSizeMm(facts.input.size);
   const frame = frameBox(widthMm, heightMm);
   const lines = wrapText(FOOT, frame.maxX - frame.minX - 3, { capMm: TEXT_CAP, face: "regular" }, measure);

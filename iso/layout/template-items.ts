@@ -1,0 +1,181 @@
+/** A template, or the part of it within a window, as display items in the template's own frame. Never scaled. */
+import type { DisplayItem, MeasureText } from "../draw/drawing-types";
+import { lineItem, pathItem, polygonSegments, textItem } from "../draw/paths";
+import { SAME_PAPER_MM } from "../geometry/tolerances";
+import type { PaperBox, PaperPoint } from "../geometry/types";
+import { clipPolyline, clipSegment } from "./clip";
+import { FOOT_MM, HEAD_MM, type Template } from "./template";
+import type { Tile } from "./tile";
+import type { WrapLine } from "./wrap";
+
+const CUT_WIDTH = 0.35;
+const LINE_WIDTH = { station: 0.15, quarter: 0.3, top: 0.3 } as const;
+const CAP = 2.5;
+/** Hatching on the side cut away: how deep, and how far apart. */
+const HATCH_DEPTH = 5;
+const HATCH_STEP = 3;
+/** Half a cross on a join line. */
+const CROSS = 3;
+const TOP_DASH = [4, 1, 0.8, 1] as const;
+const SLIT_DASH = [1.2, 1.2] as const;
+const JOIN_DASH = [5, 2] as const;
+const READ_UP = -Math.PI / 2;
+
+/** Items of one tile: outline, cut, hatching, lines with numbers and names, join lines. */
+export function templateItems(template: Template, tile: Tile, measure: MeasureText): DisplayItem[] {
+  const { window } = tile;
+  return [
+    ...outline(template, window), ...hatch(template, window), ...lengthwise(template, window), ...acrossItems(template, window),
+    ...clipPolyline(closedCut(template), window).map((part) => pathItem("symbol", null, polygonSegments(part, false), { stroke: "ink", widthMm: CUT_WIDTH })),
+    ...joins(template, tile),
+    ...lineNames(template, window, measure), ...words(template, window, measure),
+  ];
+}
+
+function closedCut({ cut, isClosed }: Template): readonly PaperPoint[] {
+  return isClosed ? [...cut, cut[0]!] : cut;
+}
+
+function drawn(from: PaperPoint, to: PaperPoint, window: PaperBox, widthMm: number, ink: "ink" | "dye" | "grey", dash?: readonly number[]): DisplayItem[] {
+  const kept = clipSegment(from, to, window);
+  return kept ? [lineItem("box", null, kept[0], kept[1], widthMm, ink, dash)] : [];
+}
+
+/** Where the paper is cut out, and the base line. */
+function outline({ widthMm, heightMm, baseY }: Template, window: PaperBox): DisplayItem[] {
+  const corners: readonly PaperPoint[] = [[0, 0], [widthMm, 0], [widthMm, heightMm], [0, heightMm], [0, 0]];
+  return [
+    ...corners.slice(1).flatMap((to, i) => drawn(corners[i]!, to, window, 0.18, "ink")),
+    ...drawn([0, baseY], [widthMm, baseY], window, CUT_WIDTH, "ink"),
+  ];
+}
+
+/** y of the cut at x; the middle of the paper for a closed cut. */
+export function cutY({ cut, widthMm }: Template, x: number): number {
+  const at = (Math.max(0, Math.min(widthMm, x)) / widthMm) * (cut.length - 1);
+  const i = Math.min(cut.length - 2, Math.floor(at));
+  return cut[i]![1] + (cut[i + 1]![1] - cut[i]![1]) * (at - i);
+}
+
+function hatch(template: Template, window: PaperBox): DisplayItem[] {
+  const cut = closedCut(template);
+  const middle = template.isClosed ? middleOf(template.cut) : null;
+  const items: DisplayItem[] = [];
+  let gone = 0;
+  for (let i = 1; i < cut.length; i++) {
+    const [a, b] = [cut[i - 1]!, cut[i]!];
+    gone += Math.hypot(b[0] - a[0], b[1] - a[1]);
+    if (gone < HATCH_STEP) continue;
+    gone = 0;
+    items.push(...drawn(b, middle ? inward(b, middle) : [Math.min(b[0] + HATCH_DEPTH * 0.7, template.widthMm), b[1] - HATCH_DEPTH], window, 0.18, "ink"));
+  }
+  return items;
+}
+
+function middleOf(points: readonly PaperPoint[]): PaperPoint {
+  const xs = points.map(([x]) => x);
+  const ys = points.map(([, y]) => y);
+  return [(Math.min(...xs) + Math.max(...xs)) / 2, (Math.min(...ys) + Math.max(...ys)) / 2];
+}
+
+function inward(point: PaperPoint, middle: PaperPoint): PaperPoint {
+  const [dx, dy] = [middle[0] - point[0], middle[1] - point[1]];
+  const share = Math.min(0.6, HATCH_DEPTH / Math.max(SAME_PAPER_MM, Math.hypot(dx, dy)));
+  return [point[0] + dx * share, point[1] + dy * share];
+}
+
+/** Station lines from the names down to the base line, the top's line, and slits from the cut to just above the base. */
+function lengthwise(template: Template, window: PaperBox): DisplayItem[] {
+  const { baseY, isClosed } = template;
+  const top = (x: number) => (isClosed ? 0 : cutY(template, x) - HATCH_DEPTH);
+  return [
+    ...template.lines.flatMap((line) => drawn([line.xMm, top(line.xMm)], [line.xMm, baseY], window, LINE_WIDTH[line.kind], line.kind === "station" ? "ink" : "dye", line.kind === "top" ? TOP_DASH : undefined)),
+    ...template.slits.flatMap((x) => drawn([x, cutY(template, x)], [x, baseY - SLIT_END], window, 0.18, "grey", SLIT_DASH)),
+  ];
+}
+
+/** Slits stop short of the base line, so that the paper stays in one piece. */
+const SLIT_END = 5;
+
+function acrossItems({ across, widthMm, lines }: Template, window: PaperBox): DisplayItem[] {
+  const clear = (lines[0]?.xMm ?? 0) + 2;
+  return across.flatMap(({ y, name }) => [
+    ...drawn([0, y], [widthMm, y], window, LINE_WIDTH.quarter, "dye"),
+    ...(y > window.minY + 4 && y < window.maxY && clear > window.minX && clear < window.maxX ? [textItem("label", null, [clear, y - 1], name, { capMm: CAP })] : []),
+  ]);
+}
+
+function joins({ widthMm, heightMm }: Template, { joinsX, joinsY, window }: Tile): DisplayItem[] {
+  const cross = ([x, y]: PaperPoint) => [
+    ...drawn([x - CROSS, y], [x + CROSS, y], window, 0.25, "ink"), ...drawn([x, y - CROSS], [x, y + CROSS], window, 0.25, "ink"),
+  ];
+  const upright = joinsX.flatMap((x) => [
+    ...drawn([x, 0], [x, heightMm], window, 0.2, "grey", JOIN_DASH),
+    ...[0.25, 0.75].flatMap((t) => cross([x, window.minY + (window.maxY - window.minY) * t])),
+  ]);
+  const level = joinsY.flatMap((y) => [
+    ...drawn([0, y], [widthMm, y], window, 0.2, "grey", JOIN_DASH),
+    ...[0.25, 0.75].flatMap((t) => cross([window.minX + (window.maxX - window.minX) * t, y])),
+  ]);
+  return [...upright, ...level];
+}
+
+/** Numbers under the base line, and names of the quarters up the side that is cut away. */
+function lineNames(template: Template, window: PaperBox, measure: MeasureText): DisplayItem[] {
+  return template.lines.flatMap((line) => {
+    if (line.xMm < window.minX || line.xMm > window.maxX) return [];
+    return [...numberItems(template, line, window, measure), ...nameItems(template, line, window, measure)];
+  });
+}
+
+function numberItems({ baseY, widthMm }: Template, line: WrapLine, window: PaperBox, measure: MeasureText): DisplayItem[] {
+  const y = baseY + 1.2 + CAP;
+  if (line.number === "" || y > window.maxY || y - CAP < window.minY) return [];
+  const half = measure(line.number, CAP, "bold") / 2;
+  const x = Math.min(Math.max(line.xMm, Math.max(0, window.minX) + half + 0.3), Math.min(widthMm, window.maxX) - half - 0.3);
+  return [textItem("label", null, [x, y], line.number, { capMm: CAP, face: "bold", anchor: "middle" })];
+}
+
+function nameItems(template: Template, line: WrapLine, window: PaperBox, measure: MeasureText): DisplayItem[] {
+  if (line.name === "") return [];
+  const foot = (template.isClosed ? Math.min(...template.cut.map(([, y]) => y)) : cutY(template, line.xMm) - HATCH_DEPTH) - 1.5;
+  const tall = measure(line.name, CAP, "bold");
+  const isRoom = foot - tall >= window.minY && foot <= window.maxY;
+  const right = line.xMm + 1 + CAP <= Math.min(window.maxX, template.widthMm);
+  return isRoom ? [textItem("label", null, [right ? line.xMm + 1 + CAP : line.xMm - 1, foot], line.name, { capMm: CAP, face: "bold", rotateRad: READ_UP })] : [];
+}
+
+/** What to keep and what to cut away, where each is whole within the window. */
+function words(template: Template, window: PaperBox, measure: MeasureText): DisplayItem[] {
+  const { baseY, heightMm, widthMm, isClosed } = template;
+  const left = Math.max(0, window.minX) + 2;
+  const room = Math.min(widthMm, window.maxX) - left - 2;
+  const footY = heightMm - 2;
+  const items: DisplayItem[] = [];
+  if (footY <= window.maxY && baseY >= window.minY) {
+    const text = [template.keep && `KEEP: ${template.keep}`, template.base].filter(Boolean).join(". ");
+    items.push(...whole(text, [template.keep && `KEEP: ${template.keep}`, template.base], [left, footY], room, measure));
+  }
+  if (isClosed) {
+    const [x, y] = middleOf(template.cut);
+    if (inside([x - 8, y + 8], window) && inside([x + 8, y + 12], window)) items.push(textItem("label", null, [x - 12, y + 10], template.waste, { capMm: CAP, face: "bold", anchor: "middle" }));
+    return items;
+  }
+  if (window.minY <= 0 && HEAD_MM > FOOT_MM) items.push(...whole(template.waste, [template.waste], [left + wordIndent(template, left, measure), CAP + 1.2], room, measure));
+  return items;
+}
+
+/** To the right of the first line's name. */
+function wordIndent({ lines }: Template, left: number, measure: MeasureText): number {
+  return lines.some((line) => line.name !== "" && Math.abs(line.xMm + 2 - left) < measure("00", CAP, "bold")) ? 5 : 0;
+}
+
+/** The longest wording that fits the room. */
+function whole(text: string, shorter: readonly string[], at: PaperPoint, room: number, measure: MeasureText): DisplayItem[] {
+  const fitting = [text, ...shorter].find((one) => one !== "" && measure(one, CAP, "bold") <= room);
+  return fitting ? [textItem("label", null, at, fitting, { capMm: CAP, face: "bold" })] : [];
+}
+
+function inside([x, y]: PaperPoint, box: PaperBox): boolean {
+  return x >= box.minX && x <= box.maxX && y >= box.minY && y <= box.maxY;
+}

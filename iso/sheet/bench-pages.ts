@@ -1,0 +1,106 @@
+/**
+ * Bench pages of a spool: check dimensions with blanks for what was measured, then each turn laid out in its own plane with
+ * every mark a fitter snaps on a table. Blocks of a picture and its tables fill columns, then pages.
+ */
+import type { DisplayItem, MeasureText } from "../draw/drawing-types";
+import type { PaperBox } from "../geometry/types";
+import { fittingShape, legsShape, rollItems, shapeItems } from "../layout/turn-picture";
+import { spoolTurns, type Turn } from "../layout/turns";
+import { buildModel } from "../run/build-model";
+import type { UnitSystem } from "../run/document";
+import { checksTable, endsTable, stationsTable, turnTable } from "./bench-tables";
+import { boxOutline, lineFrom, textAt } from "./items";
+import { followingFrame } from "./page-frame";
+import { sheetFacts, type SheetFacts } from "./sheet-facts";
+import { EDGE_LINE, RULE_LINE, sheetSizeMm } from "./sheet-size";
+import type { SheetInput, SheetPage } from "./sheet-types";
+import { setTable, tableHeight, type Table } from "./table";
+import { flowTables, TABLE_GAP, type FlowTable } from "./table-flow";
+import { placeTable } from "./table-placing";
+
+const PAD = 2;
+/** Least width of a column of turns, mm. */
+const COLUMN_LEAST = 116;
+const PICTURE_HEIGHT = 62;
+const ROLL_WIDTH = 34;
+
+interface Block {
+  readonly heightMm: number;
+  readonly items: (box: PaperBox) => DisplayItem[];
+}
+
+/** Pages of the lay-out, at least one. Never throws on user data. */
+export function composeBenchPages(input: SheetInput, measure: MeasureText): SheetPage[] {
+  const facts = sheetFacts(input, buildModel(input.document, input.marks, input.takeOuts));
+  const frame = followingFrame(facts, measure);
+  const room = { minX: frame.body.minX + PAD, minY: frame.body.minY + PAD, maxX: frame.body.maxX - PAD, maxY: frame.body.maxY - PAD };
+  const checks = flowTables(checkTables(facts), room, 1, measure).pages;
+  const turns = facts.spool ? turnPages(spoolTurns(facts.model, facts.spool), facts.input.units, room, measure) : [];
+  const contents: readonly (readonly DisplayItem[])[] = checks.length + turns.length > 0 ? [...checks, ...turns] : [nothing(facts, room)];
+  return contents.map((items, i) => ({
+    ...sheetSizeMm(input.size), items: [...frame.under, ...items, ...frame.over({ sheet: i + 1, of: contents.length })], logoBox: frame.logoBox,
+    name: `${i + 1} ${i < checks.length ? "checks" : "turns"}`,
+  }));
+}
+
+function checkTables(facts: SheetFacts): FlowTable[] {
+  return [endsTable(facts), checksTable(facts)].flatMap((table): FlowTable[] => (table ? [{ table, width: "full", startRow: 0 }] : []));
+}
+
+function nothing(facts: SheetFacts, room: PaperBox): DisplayItem[] {
+  const text = facts.spool ? "This spool has no open end and no turn to lay out." : `No spool ${facts.input.spool} in this line yet.`;
+  return [textAt([(room.minX + room.maxX) / 2, (room.minY + room.maxY) / 2], text, { layer: "label", anchor: "middle", capMm: 3.5 })];
+}
+
+function turnPages(turns: readonly Turn[], units: UnitSystem, room: PaperBox, measure: MeasureText): DisplayItem[][] {
+  const count = Math.max(1, Math.floor((room.maxX - room.minX + TABLE_GAP) / (COLUMN_LEAST + TABLE_GAP)));
+  const widthMm = (room.maxX - room.minX - (count - 1) * TABLE_GAP) / count;
+  const pages: DisplayItem[][] = [];
+  let [column, y] = [count, room.maxY];
+  for (const turn of turns) {
+    for (const block of blocksOf(turn, units, widthMm, measure)) {
+      if (y + block.heightMm > room.maxY && y > room.minY) [column, y] = [column + 1, room.minY];
+      if (column >= count) {
+        pages.push([]);
+        [column, y] = [0, room.minY];
+      }
+      const minX = room.minX + column * (widthMm + TABLE_GAP);
+      pages.at(-1)!.push(...block.items({ minX, minY: y, maxX: minX + widthMm, maxY: y + block.heightMm }));
+      y += block.heightMm + TABLE_GAP;
+    }
+  }
+  return pages;
+}
+
+/** A turn's pictures stay with its numbers; the marks at the stations may stand apart. */
+function blocksOf(turn: Turn, units: UnitSystem, widthMm: number, measure: MeasureText): Block[] {
+  const numbers = tableBlock(turnTable(turn, units), widthMm, measure);
+  const stations = stationsTable(turn, units);
+  const picture: Block = {
+    heightMm: PICTURE_HEIGHT + numbers.heightMm,
+    items: (box) => [...pictureItems(turn, units, { ...box, minY: box.minY + numbers.heightMm }, measure), ...numbers.items({ ...box, maxY: box.minY + numbers.heightMm })],
+  };
+  return stations ? [picture, tableBlock({ ...stations, title: `${turn.name}: ${stations.title}` }, widthMm, measure)] : [picture];
+}
+
+function tableBlock(table: Table, widthMm: number, measure: MeasureText): Block {
+  const set = setTable(table, widthMm, measure);
+  return { heightMm: tableHeight(set), items: (box) => [...placeTable(set, [box.minX, box.minY], box.maxY - box.minY + EDGE_LINE, 0).items] };
+}
+
+/** Legs on the left, the fitting on the right, the roll between them where there is one. */
+function pictureItems(turn: Turn, units: UnitSystem, box: PaperBox, measure: MeasureText): DisplayItem[] {
+  const hasRoll = turn.roll !== null && turn.roll.angleRad !== 0;
+  const widthMm = box.maxX - box.minX - (hasRoll ? ROLL_WIDTH : 0);
+  const middle = box.minX + widthMm * 0.48;
+  const [legs, fitting] = [{ ...box, maxX: middle }, { ...box, minX: middle, maxX: box.minX + widthMm }];
+  const head = (x: number, text: string) => textAt([x + 1.2, box.minY + 4], text, { layer: "label" });
+  const under = (part: PaperBox): PaperBox => ({ minX: part.minX + 1, minY: part.minY + 6, maxX: part.maxX - 1, maxY: part.maxY - 1 });
+  const roll = { ...box, minX: fitting.maxX };
+  return [
+    boxOutline(box, { widthMm: EDGE_LINE }), lineFrom([middle, box.minY], [middle, box.maxY], RULE_LINE),
+    head(legs.minX, "LEGS, centre lines"), head(fitting.minX, turn.kind === "trimmed" ? "KEEP the solid part" : turn.kind === "mitre" ? "CUTS" : "FITTING"),
+    ...shapeItems(legsShape(turn, units), under(legs), measure), ...shapeItems(fittingShape(turn, units), under(fitting), measure),
+    ...(hasRoll ? [lineFrom([roll.minX, box.minY], [roll.minX, box.maxY], RULE_LINE), head(roll.minX, "ROLL, along flow"), ...rollItems(turn.roll!.angleRad, under(roll), measure)] : []),
+  ];
+}

@@ -1,0 +1,91 @@
+/** Pages of a spool's true-scale templates: each tile on a page of its own, at 100 %, with who the sheet is and a proof bar. */
+import type { DisplayItem, MeasureText } from "../draw/drawing-types";
+import { itemMoved } from "../draw/paths";
+import type { PaperBox, PaperPoint } from "../geometry/types";
+import { spoolTemplates } from "../layout/spool-templates";
+import type { Template } from "../layout/template";
+import { templateItems } from "../layout/template-items";
+import { tilesOf, type Tile } from "../layout/tile";
+import { PAPER_THICKNESS_MM } from "../layout/wrap";
+import { buildModel } from "../run/build-model";
+import { textAt } from "./items";
+import { sheetFacts } from "./sheet-facts";
+import { sheetSizeMm } from "./sheet-size";
+import type { SheetInput, SheetPage } from "./sheet-types";
+import { templateFrame, type StripContent } from "./template-frame";
+import { linesHeight, wrapText } from "./text-setting";
+
+/** Between the frame and a tile, mm: room for the words that say what to join. */
+const GUTTER = 6;
+
+/** A tile on its page: where its window's origin lies on paper. */
+export interface PlacedTile {
+  readonly template: Template;
+  readonly tile: Tile;
+  /** Paper = template point - window's corner + at. */
+  readonly at: PaperPoint;
+}
+
+export interface TemplatePages {
+  readonly pages: readonly SheetPage[];
+  /** Per page, in order; none on a page that only says there is nothing to print. */
+  readonly tiles: readonly PlacedTile[];
+}
+
+/** Pages of the templates of a spool; one page that says so when it needs none. Never throws on user data. */
+export function composeTemplatePages(input: SheetInput, measure: MeasureText, paperMm: number = PAPER_THICKNESS_MM): SheetPage[] {
+  return [...placeTemplates(input, measure, paperMm).pages];
+}
+
+/** The pages with where each tile lies: what a test measures. */
+export function placeTemplates(input: SheetInput, measure: MeasureText, paperMm: number): TemplatePages {
+  const facts = sheetFacts(input, buildModel(input.document, input.marks, input.takeOuts));
+  const { templates, notes } = facts.spool ? spoolTemplates(facts.model, facts.spool, paperMm) : { templates: [], notes: [] };
+  const whose = `Line ${facts.model.document.number}, spool ${input.spool}.`;
+  const factsOf = (template: Template): readonly string[] => [`${whose} ${template.facts[0] ?? ""}`, ...template.facts.slice(1)];
+  const frame = templateFrame(facts, templates.map((template) => ({ facts: factsOf(template) })), measure);
+  const { body } = frame;
+  const room = { widthMm: body.maxX - body.minX - 2 * GUTTER, heightMm: body.maxY - body.minY - 2 * GUTTER };
+  const tiles = templates.flatMap((template) => tilesOf(template.widthMm, template.heightMm, room).map((tile): PlacedTile => ({ template, tile, at: placeOf(tile, body) })));
+  const empty = notes.length > 0 || tiles.length === 0;
+  const of = tiles.length + (empty ? 1 : 0);
+  const page = (items: readonly DisplayItem[], strip: StripContent, sheet: number, name: string): SheetPage => ({
+    ...sheetSizeMm(input.size), items: [...frame.under, ...items, ...frame.over(strip, { sheet, of })], logoBox: null, name,
+  });
+  const pages = tiles.map(({ template, tile, at }, i) => {
+    const moved = templateItems(template, tile, measure).map((item) => itemMoved(item, [at[0] - tile.window.minX, at[1] - tile.window.minY]));
+    const strip = { title: template.title, facts: factsOf(template), rows: tile.rows, columns: tile.columns, row: tile.row, column: tile.column };
+    return page([...moved, ...joinWords(tile, at)], strip, i + 1, `${i + 1} template`);
+  });
+  if (!empty) return { pages, tiles };
+  const said = notes.length > 0 ? notes : [`No end of spool ${input.spool} is cut at an angle and no elbow is trimmed: there is nothing to wrap.`];
+  const strip = { title: "TEMPLATES: NOTES", facts: [whose], rows: 1, columns: 1, row: 1, column: 1 };
+  return { pages: [...pages, page(noteItems(said, body, measure), strip, of, `${of} notes`)], tiles };
+}
+
+/** In the middle of the room across, at its top. */
+function placeOf({ window }: Tile, body: PaperBox): PaperPoint {
+  return [(body.minX + body.maxX - (window.maxX - window.minX)) / 2, body.minY + GUTTER];
+}
+
+/** At the ends of each join line: which pages meet there. */
+function joinWords({ joinsX, joinsY, window, row, column }: Tile, at: PaperPoint): DisplayItem[] {
+  const x = (of: number) => at[0] + of - window.minX;
+  const y = (of: number) => at[1] + of - window.minY;
+  const bottom = at[1] + window.maxY - window.minY;
+  const upright = joinsX.map((join) => {
+    const isLeft = join < (window.minX + window.maxX) / 2;
+    const text = isLeft ? `join to column ${column - 1}` : `join to column ${column + 1}`;
+    return textAt([isLeft ? Math.max(x(join) - 8, at[0]) : Math.min(x(join) + 8, at[0] + window.maxX - window.minX), at[1] - 1.4], text, { layer: "label", anchor: isLeft ? "start" : "end" });
+  });
+  const level = joinsY.map((join) => {
+    const isTop = join < (window.minY + window.maxY) / 2;
+    return textAt([at[0] - 1.6, isTop ? Math.max(y(join), at[1]) : Math.min(y(join), bottom)], isTop ? `join to row ${row - 1}` : `join to row ${row + 1}`, { layer: "label", anchor: isTop ? "end" : "start", rotateRad: -Math.PI / 2 });
+  });
+  return [...upright, ...level];
+}
+
+function noteItems(notes: readonly string[], body: PaperBox, measure: MeasureText): DisplayItem[] {
+  const lines = notes.flatMap((note) => wrapText(note, body.maxX - body.minX - 2 * GUTTER, { capMm: 3, face: "regular" }, measure));
+  return lines.map((line, i) => textAt([body.minX + GUTTER, body.minY + GUTTER + 3 + i * linesHeight(1, 3)], line, { layer: "label", capMm: 3 }));
+}
