@@ -35,6 +35,11 @@ export { nestPieces } from "./nest/nest";
 // layout
 export * from "./layout/mitre";
 export * from "./layout/saddle";
+export * from "./layout/checks";
+export * from "./layout/lengths";
+export * from "./layout/tile";
+export * from "./layout/template";
+export * from "./layout/spool-templates";
 
 // run
 export * from "./run/document";
@@ -69,6 +74,9 @@ export * from "./sheet/compose";
 export * from "./sheet/state-mark";
 export { LEGEND_WORDS, legendItems, legendLayout } from "./sheet/legend";
 export { legendPicture } from "./sheet/legend-pictures";
+export * from "./sheet/bench-pages";
+export { benchChecks } from "./sheet/bench-tables";
+export * from "./sheet/template-pages";
 export { sheetFacts, sizeText as pipeSizeText, type SheetFacts } from "./sheet/sheet-facts";
 
 // exchange
