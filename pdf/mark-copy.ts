@@ -2,7 +2,7 @@
  * Marks a copy of stored bytes at print time; the stored bytes themselves never change. The word of a dead or held
  * revision goes across every page, the print's time and person into the margin under the frame.
  */
-import { degrees, PDFDocument, rgb, type PDFFont, type PDFPage } from "pdf-lib";
+import { degrees, PDFDict, PDFDocument, PDFName, PDFRef, rgb, type PDFFont, type PDFPage } from "pdf-lib";
 import { FACES } from "@/fonts/families";
 import { printableText } from "@/fonts/printable";
 import { EM_PER_CAPITAL } from "@/fonts/widths";
@@ -15,6 +15,8 @@ export interface CopyMark {
   /** ISO time of printing, handed in. */
   readonly printedAt: string;
   readonly printedBy: string;
+  /** What the copy was made of, named in the filing margin so that the original can be found and checked. */
+  readonly original: { readonly sha256: string; readonly signed: boolean };
 }
 
 const POINTS_PER_MM = 72 / 25.4;
@@ -24,19 +26,49 @@ const FOOT_CAP = 2.5;
 /** Baseline of the foot line above the paper's edge: in the margin, and inside what printers reach. */
 const FOOT_BASELINE = 5.2;
 const FOOT_LEFT = 20;
+/** Baselines of the two lines that run up the filing margin, mm from the paper's left edge, and where they begin. */
+const MARGIN_BASELINES = [14.2, 18.2] as const;
+const MARGIN_BOTTOM = 10;
 
 /**
- * A marked copy. The same bytes and mark give the same copy. Throws when the bytes are no PDF: stored sheets always are.
+ * A marked copy. The same bytes and mark give the same copy. A signature covers the original's bytes and could only read
+ * as broken here, so the copy carries none and says where the signature is. Throws when the bytes are no PDF: stored sheets always are.
  */
 export async function markCopy(bytes: Uint8Array, mark: CopyMark): Promise<Uint8Array> {
   const document = await PDFDocument.load(bytes, { updateMetadata: false });
+  removeSignature(document);
   document.registerFontkit(copyFontkit);
   const bold = await document.embedFont(faceBytes("bold"), { subset: true, customName: FACES.bold.family });
   for (const page of document.getPages()) {
     if (mark.word !== null) stampAcross(page, mark.word, bold);
     stampFoot(page, mark, bold);
+    stampMargin(page, mark.original, bold);
   }
   return document.save();
+}
+
+function removeSignature(document: PDFDocument): void {
+  if (document.catalog.lookup(PDFName.of("AcroForm")) === undefined) return;
+  document.catalog.delete(PDFName.of("AcroForm"));
+  for (const page of document.getPages()) {
+    const annotations = page.node.Annots();
+    for (const ref of annotations?.asArray() ?? []) {
+      const widget = document.context.lookupMaybe(ref, PDFDict);
+      if (widget?.get(PDFName.of("FT")) !== PDFName.of("Sig")) continue;
+      const signature = widget.get(PDFName.of("V"));
+      for (const gone of [ref, signature]) if (gone instanceof PDFRef) document.context.delete(gone);
+      page.node.delete(PDFName.of("Annots"));
+    }
+  }
+}
+
+/** Up the filing margin: what this paper is a copy of. */
+function stampMargin(page: PDFPage, { sha256, signed }: CopyMark["original"], font: PDFFont): void {
+  const size = FOOT_CAP * EM_PER_CAPITAL * POINTS_PER_MM;
+  const head = signed ? "Marked when printed: the shop's signature stays with the signed original, SHA-256" : "Marked when printed. The original has SHA-256";
+  for (const [index, text] of [head, sha256].entries()) {
+    page.drawText(text, { x: MARGIN_BASELINES[index]! * POINTS_PER_MM, y: MARGIN_BOTTOM * POINTS_PER_MM, size, font, rotate: degrees(90), color: INK });
+  }
 }
 
 /** The word along the page's rising diagonal between two heavy lines, see-through so that everything below stays readable. */

@@ -1,6 +1,6 @@
 /** Pages of display items to PDF bytes. No clock, no query: the same pages give the same bytes. */
 import PDFDocument from "pdfkit";
-import type { SheetPage } from "@/iso";
+import type { PaperBox, SheetPage } from "@/iso";
 import { escapeMetadata } from "./document-metadata";
 import { ItemPainter } from "./item-painter";
 import { logoKind, paintLogo } from "./logo";
@@ -33,12 +33,12 @@ export function paintSheet(input: PaintInput): Promise<Uint8Array> {
   escapeMetadata(document);
   const bytes = collectBytes(document);
   const painter = new ItemPainter(document);
-  const whole = document.struct("Document");
-  document.addStructure(whole);
-  for (const [index, page] of input.pages.entries()) {
-    paintPage(document, whole, painter, page, input.logo);
+  const sections = input.pages.map((page, index) => {
+    const section = paintPage(document, painter, page, input.logo);
     if (index === 0 && input.signature) addSignatureField(document, input.signature);
-  }
+    return section;
+  });
+  document.addStructure(document.struct("Document", {}, sections));
   labelPages(document, input.pages);
   document.end();
   return bytes;
@@ -79,21 +79,21 @@ function collectBytes(document: PDFKit.PDFDocument): Promise<Uint8Array> {
 }
 
 /** One section a page, named as its label: readers that speak a page aloud find where each begins. */
-function paintPage(document: PDFKit.PDFDocument, whole: PDFKit.PDFStructureElement, painter: ItemPainter, page: SheetPage, logo: Uint8Array | null): void {
+function paintPage(document: PDFKit.PDFDocument, painter: ItemPainter, page: SheetPage, logo: Uint8Array | null): PDFKit.PDFStructureElement {
   document.addPage({ size: [page.widthMm * POINTS_PER_MM, page.heightMm * POINTS_PER_MM], margin: 0 });
   document.scale(POINTS_PER_MM);
+  const content = document.markStructureContent("Sect");
   painter.startPage();
-  whole.add(document.struct("Sect", { title: page.name }, [() => paintContent(document, painter, page, logo)]));
+  for (const item of page.items) painter.paint(item);
+  if (logo !== null && page.logoBox !== null) paintLogoBox(document, painter, logo, page.logoBox);
+  document.endMarkedContent();
+  return document.struct("Sect", { title: page.name }, [content]);
 }
 
-function paintContent(document: PDFKit.PDFDocument, painter: ItemPainter, page: SheetPage, logo: Uint8Array | null): void {
-  for (const item of page.items) painter.paint(item);
-  if (logo === null || page.logoBox === null) return;
-  const problem = paintLogo(document, logo, page.logoBox);
-  if (problem === null) return;
-  const { minX, minY, maxY } = page.logoBox;
+function paintLogoBox(document: PDFKit.PDFDocument, painter: ItemPainter, logo: Uint8Array, box: PaperBox): void {
+  if (paintLogo(document, logo, box) === null) return;
   painter.startPage();
-  painter.paint({ type: "text", layer: "logo", ref: null, at: [minX, (minY + maxY) / 2], anchor: "start", text: "Logo not readable", capMm: 2.5, face: "regular", rotateRad: 0, ink: "ink" });
+  painter.paint({ type: "text", layer: "logo", ref: null, at: [box.minX, (box.minY + box.maxY) / 2], anchor: "start", text: "Logo not readable", capMm: 2.5, face: "regular", rotateRad: 0, ink: "ink" });
 }
 
 interface Labelled {

@@ -1,10 +1,11 @@
 /**
  * The calls that painting makes on pdfkit's document, written down once and made again on fresh documents: what is
  * left of painting's time when nothing has to be decided any more. Three things the text painter does beside calls are
- * written down too (the page's font table, the glyphs of each embedded subset, the page labels), so that a replay gives
- * the same bytes.
+ * written down too (the page's font table, the glyphs of each embedded subset, the page labels), and what one call gives
+ * to a later one (a page's section) is handed on within each replay, so that a replay gives the same bytes.
  */
 import PDFDocument from "pdfkit";
+import { escapeMetadata } from "@/pdf/document-metadata";
 
 interface EmbeddedFont {
   readonly id: string;
@@ -24,7 +25,9 @@ interface Inner {
 }
 
 type Method = (this: Inner, ...args: unknown[]) => unknown;
-type Step = (document: Inner) => void;
+/** What calls gave when they were written down, and what the same calls gave in this replay. */
+type Made = Map<unknown, unknown>;
+type Step = (document: Inner, made: Made) => void;
 
 export interface CallLog {
   readonly options: PDFKit.PDFDocumentOptions;
@@ -47,15 +50,22 @@ export async function recordCalls(paint: () => Promise<unknown>): Promise<CallLo
       // The document makes calls of its own while it is made; painting's begin with the faces it registers.
       if (depth === 0 && options === null && name === "registerFont") options = this.options;
       // What the document writes by itself after end() follows from it.
-      if (depth === 0 && options !== null && !ended) {
+      const written = depth === 0 && options !== null && !ended;
+      const given: { made?: unknown } = {};
+      if (written) {
         ended = name === "end";
-        if (name === "addPage" || name === "end") steps.push(...besideCalls(this, name));
-        steps.push((document) => (document as unknown as Record<string, Method>)[name]!.apply(document, args));
+        if (name === "addPage" || name === "struct" || name === "end") steps.push(...besideCalls(this, name));
+        steps.push((document, made) => {
+          const result = (document as unknown as Record<string, Method>)[name]!.apply(document, args.map((arg) => handedOn(arg, made)));
+          if (given.made !== undefined) made.set(given.made, result);
+        });
         calls += 1;
       }
       depth += 1;
       try {
-        return original.apply(this, args);
+        const result = original.apply(this, args);
+        if (written && typeof result === "object" && result !== (this as unknown)) given.made = result;
+        return result;
       } finally {
         depth -= 1;
       }
@@ -66,13 +76,18 @@ export async function recordCalls(paint: () => Promise<unknown>): Promise<CallLo
   return { options, steps, calls };
 }
 
-/** What was done to the document beside calls since the page before: fonts of the page and, at the end, of the file. */
-function besideCalls(document: Inner, next: "addPage" | "end"): Step[] {
+/** An argument, or a list of them, with what earlier calls made replaced by what this replay made. */
+function handedOn(arg: unknown, made: Made): unknown {
+  return Array.isArray(arg) ? arg.map((one) => made.get(one) ?? (one as unknown)) : (made.get(arg) ?? arg);
+}
+
+/** What was done to the document beside calls since the page before: fonts of the page (a section takes its number after them) and, at the end, of the file. */
+function besideCalls(document: Inner, next: "addPage" | "struct" | "end"): Step[] {
   const used = Object.keys(document.page?.fonts ?? {});
   const steps: Step[] = used.map((id) => (replayed) => {
     replayed.page!.fonts[id] ??= fontOf(replayed, id).ref();
   });
-  if (next === "addPage") return steps;
+  if (next !== "end") return steps;
   const labels = document._root.data.PageLabels;
   const fonts = Object.values(document._fontFamilies).map((font) => ({ id: font.id, glyphs: [...font.subset.glyphs], widths: [...font.widths], unicode: [...font.unicode] }));
   return [...steps, (replayed) => {
@@ -95,11 +110,13 @@ function fontOf(document: Inner, id: string): EmbeddedFont {
 /** Makes the calls again on a fresh document; its bytes. */
 export function replayCalls({ options, steps }: CallLog): Promise<Uint8Array> {
   const document = new PDFDocument(options);
+  escapeMetadata(document);
+  const made: Made = new Map();
   return new Promise((resolve, reject) => {
     const chunks: Buffer[] = [];
     document.on("data", (chunk: Buffer) => chunks.push(chunk));
     document.on("end", () => resolve(new Uint8Array(Buffer.concat(chunks))));
     document.on("error", reject);
-    for (const step of steps) step(document as unknown as Inner);
+    for (const step of steps) step(document as unknown as Inner, made);
   });
 }

@@ -4,7 +4,7 @@ import { markCopy } from "@/pdf/mark-copy";
 import { pdfRasters, pdfText, pdfWords } from "./poppler";
 import { paintedSample } from "./sheet-inputs";
 
-const mark = { word: "SUPERSEDED", printedAt: "2025-06-02T14:10:31Z", printedBy: "Łucja Öberg" } as const;
+const mark = { word: "SUPERSEDED", printedAt: "2025-06-02T14:10:31Z", printedBy: "Łucja Öberg", original: { sha256: "0a1b".repeat(16), signed: true } } as const;
 
 describe("a marked copy", () => {
   it("says when and by whom it was printed, below the frame, on every page", async () => {
