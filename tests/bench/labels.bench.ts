@@ -7,7 +7,7 @@
  */
 import { DIMENSION_CAP } from "../../iso/draw/sizes";
 import { leaderMean, leaderP95, measureRuns, reportLines, share, type Bucket, type ThousandReport } from "../iso/draw/thousand-runs";
-import type { BenchRow } from "./stopwatch";
+import type { BenchLine, BenchRow } from "./stopwatch";
 
 /** Least share of clean labels by labels on the sheet. */
 const CLEAN_SHARE: Readonly<Record<number, number>> = { 60: 0.98, 120: 0.93, 200: 0.85 };
@@ -15,8 +15,9 @@ const MEAN_LEADER_HEIGHTS = 2;
 /** At 120 labels: our clean share against the peer's. */
 const TIMES_THE_PEER = 2.5;
 
-function bucketRows(bucket: Bucket): BenchRow[] {
+function bucketRows(bucket: Bucket): BenchLine[] {
   const near = `near ${bucket.near}`;
+  if (bucket.drawings === 0) return [{ name: `${near} labels`, skipped: "No line of this share has about so many labels on one sheet." }];
   const heights = (mm: number): number => mm / DIMENSION_CAP;
   return [
     { name: `${near} labels: clean : all`, figure: share(bucket.clean, bucket.labels), budget: CLEAN_SHARE[bucket.near], atLeast: true, detail: `${bucket.clean} : ${bucket.labels} in ${bucket.drawings} drawings` },
@@ -44,9 +45,9 @@ function wholeRows(report: ThousandReport): BenchRow[] {
   ];
 }
 
-export async function measure(): Promise<BenchRow[]> {
+export async function measure(): Promise<BenchLine[]> {
   const report = measureRuns(1, Math.max(1, Number(process.env.STEP ?? 1)));
   for (const line of reportLines(report)) console.log(`  ${line}`);
   const peer = report.buckets.find(({ near }) => near === 120);
-  return [...report.buckets.flatMap(bucketRows), ...(peer ? [peerRow(peer)] : []), ...wholeRows(report)];
+  return [...report.buckets.flatMap(bucketRows), ...(peer && peer.drawings > 0 ? [peerRow(peer)] : []), ...wholeRows(report)];
 }
