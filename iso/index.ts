@@ -28,6 +28,14 @@ export * from "./closing/sensitivity";
 export * from "./closing/close-between";
 export * from "./closing/snap";
 
+// survey
+export * from "./survey/survey-document";
+export * from "./survey/survey-tools";
+export * from "./survey/survey-result";
+export * from "./survey/paste-points";
+export type { SurveyEndResult } from "./survey/survey-ends";
+export type { SurveyFinding } from "./survey/survey-read";
+
 // nest
 export * from "./nest/nest-types";
 export { nestPieces } from "./nest/nest";
@@ -38,7 +46,7 @@ export * from "./layout/saddle";
 export * from "./layout/checks";
 export * from "./layout/lengths";
 export * from "./layout/tile";
-export * from "./layout/template";
+export type { Template } from "./layout/template";
 export * from "./layout/spool-templates";
 
 // run

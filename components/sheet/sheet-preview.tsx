@@ -1,7 +1,7 @@
 "use client";
 import clsx from "clsx";
 import { useMemo, useState } from "react";
-import { composeSheet, type SheetInput, type SheetPage } from "@/iso";
+import { composeSheet, type MeasureText, type SheetInput, type SheetPage } from "@/iso";
 import { measureText } from "@/fonts/widths";
 import { ChoiceRow } from "@/components/ui/choice-row";
 import { logoAddress } from "@/components/ui/logo-address";
@@ -10,6 +10,8 @@ import { DisplaySvg } from "./display-svg";
 
 export interface SheetPreviewProps {
   readonly input: SheetInput;
+  /** Makes the pages; absent = the spool sheet's. */
+  readonly pagesOf?: (input: SheetInput, measure: MeasureText) => readonly SheetPage[];
   /** What the sheet is, for a reader who cannot see it. */
   readonly label: string;
 }
@@ -25,8 +27,8 @@ const WIDTHS: Readonly<Record<Zoom, string>> = {
  * The sheet as it prints, drawn in the browser by the same core as the PDF: pages to turn, three sizes, and a frame to
  * move it about in. Keyboard: the frame takes focus and the arrow keys scroll it.
  */
-export function SheetPreview({ input, label }: SheetPreviewProps) {
-  const composed = useMemo(() => compose(input), [input]);
+export function SheetPreview({ input, label, pagesOf = composeSheet }: SheetPreviewProps) {
+  const composed = useMemo(() => compose(input, pagesOf), [input, pagesOf]);
   const [pageNumber, setPageNumber] = useState(0);
   const [zoom, setZoom] = useState<Zoom>("fit");
   if (!composed)
@@ -118,9 +120,9 @@ function PageSvg({
 }
 
 /** null when the core cannot compose it; the frozen PDF is still there then. */
-function compose(input: SheetInput): readonly SheetPage[] | null {
+function compose(input: SheetInput, pagesOf: NonNullable<SheetPreviewProps["pagesOf"]>): readonly SheetPage[] | null {
   try {
-    return composeSheet(input, measureText);
+    return pagesOf(input, measureText);
   } catch {
     return null;
   }

@@ -1,10 +1,9 @@
 "use client";
 import { useMemo, useState } from "react";
-import type { SheetInput, SheetSize } from "@/iso";
+import type { SheetSize } from "@/iso";
 import { SpoolFilesButton } from "@/components/exchange/spool-files";
 import { SHEET_OPTIONS } from "@/components/jobs/sheet-words";
 import { useViewer } from "@/components/shell/use-viewer";
-import { SheetPreview } from "@/components/sheet/sheet-preview";
 import { Button } from "@/components/ui/button";
 import { ChoiceRow } from "@/components/ui/choice-row";
 import { useApi } from "@/components/ui/fetcher";
@@ -17,7 +16,9 @@ import { TitleStrip } from "@/components/ui/title-strip";
 import { usePageTitle } from "@/components/ui/use-page-title";
 import type { RevisionSummary, Role, SpoolDetail } from "@/lib/rules/api-types";
 import { canDo } from "@/lib/rules/permissions";
+import { BenchLinks } from "./bench-links";
 import { RevisionHistory } from "./revision-history";
+import { SheetBox } from "./sheet-box";
 import { SubmitDialog } from "./submit-dialog";
 import { WorkSection } from "./work-section";
 
@@ -81,11 +82,12 @@ function Spool({ spool, role }: { readonly spool: SpoolDetail; readonly role: Ro
             size={size}
             onSize={setSize}
           />
+          {input ? <BenchLinks spoolId={spool.id} issued={issued} size={issued ? null : size} /> : null}
           {input ? <SpoolFilesButton spoolId={spool.id} input={input} issued={issued} /> : null}
         </div>
       </div>
       {input ? (
-        <SheetBox input={input} spool={spool} />
+        <SheetBox input={input} line={spool.line.number} />
       ) : (
         <Notice className="mb-6">There is no issued sheet of this spool yet.</Notice>
       )}
@@ -99,16 +101,6 @@ function Spool({ spool, role }: { readonly spool: SpoolDetail; readonly role: Ro
       </div>
       <SubmitDialog open={submitting} spool={spool} size={size} onClose={() => setSubmitting(false)} />
     </>
-  );
-}
-
-function SheetBox({ input, spool }: { readonly input: SheetInput; readonly spool: SpoolDetail }) {
-  return (
-    <SheetPreview
-      key={input.revision.code + input.revision.state}
-      input={input}
-      label={`Sheet of line ${spool.line.number}, spool ${spool.letter}`}
-    />
   );
 }
 

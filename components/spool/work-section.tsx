@@ -6,6 +6,7 @@ import { Notice } from "@/components/ui/notice";
 import { Section } from "@/components/ui/section";
 import type { Role, SpoolDetail, WorkKind } from "@/lib/rules/api-types";
 import { canRecord } from "@/lib/rules/permissions";
+import { CheckSection, isCheckEntry } from "./check-section";
 import { CutPrint } from "./cut-print";
 import { CutTable } from "./cut-table";
 import { LogCell } from "./log-cell";
@@ -82,6 +83,7 @@ export function WorkSection({ spool, input, issued, role }: WorkSectionProps) {
           <WeldTable facts={facts} done={weldCell} />
         )}
       </Section>
+      <CheckSection spool={spool} input={input} model={facts.model} open={open && canRecord(role, "actual")} />
       <Actuals
         spool={spool}
         role={role}
@@ -112,15 +114,15 @@ function Actuals({
   readonly open: boolean;
   readonly onRecord: () => void;
 }) {
-  const entries = spool.work.filter((entry) => entry.kind === "actual");
+  const entries = spool.work.filter((entry) => entry.kind === "actual" && !isCheckEntry(entry));
   return (
     <Section
-      title="Actual dimensions"
+      title="Other actual dimensions"
       aside={open && canRecord(role, "actual") ? <Button onClick={onRecord}>Record an actual</Button> : null}
     >
       {entries.length === 0 ? (
         <p className="text-soft">
-          None recorded. Check face to face, E, N and U, and the diagonals before welding out.
+          None recorded beside the check dimensions.
         </p>
       ) : (
         <ul>

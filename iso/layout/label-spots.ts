@@ -19,7 +19,7 @@ const REACHES = [2.5, 5, 8, 12, 17, 23] as const;
 const WAYS = 16;
 /** A spot this far off is joined to its point by a leader. */
 const LEADER_FROM = 6;
-const CROSSING_COST = 9;
+const CROSSING_COST = 25;
 
 /** Texts and leaders; a label that finds no spot in the room takes the one that covers least. */
 export function spotLabels(labels: readonly SpotLabel[], strokes: readonly Stroke[], room: PaperBox, measure: MeasureText): DisplayItem[] {

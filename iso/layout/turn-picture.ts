@@ -27,7 +27,7 @@ const CENTRE = [6, 1.2, 1, 1.2] as const;
 const AUX = [2, 1.2] as const;
 const ARC_STEPS = 48;
 /** Room round a picture for its labels, mm. */
-const MARGIN = 9;
+const MARGIN = 7;
 
 /** The two legs, working point to working point, with the diagonal: base line, corner and end-to-end. */
 export function legsShape(turn: Turn, units: UnitSystem): Shape {
@@ -150,8 +150,14 @@ export function rollItems(rollRad: number, box: PaperBox, measure: MeasureText):
     pathItem("symbol", null, circleSegments(centre, r), { stroke: "ink", widthMm: 0.5 }),
     ...quarters.map(([from, to]) => lineItem("symbol", null, from, to, 0.25)), ...marks.map(([from, to]) => lineItem("symbol", null, from, to, 0.5, "dye")),
     pathItem("symbol", null, polygonSegments(swept, false), { stroke: "dye", widthMm: 0.5 }),
-    ...spotLabels(labels, [...marks, ...swept.slice(1).map((to, i): Stroke => [swept[i]!, to])], box, measure),
+    ...spotLabels(labels, [...marks, ...ringOf(centre, r), ...swept.slice(1).map((to, i): Stroke => [swept[i]!, to])], box, measure),
   ];
+}
+
+/** A circle as chords, so that labels keep clear of it. */
+function ringOf(centre: PaperPoint, r: number): Stroke[] {
+  const ring = arcPoints(centre, r, 0, 2 * Math.PI);
+  return ring.slice(1).map((to, i): Stroke => [ring[i]!, to]);
 }
 
 function unitAt(turn: number): PaperPoint {

@@ -2,7 +2,9 @@
  * Bench pages of a spool: check dimensions with blanks for what was measured, then each turn laid out in its own plane with
  * every mark a fitter snaps on a table. Blocks of a picture and its tables fill columns, then pages.
  */
+import { drawModel } from "../draw/draw-model";
 import type { DisplayItem, MeasureText } from "../draw/drawing-types";
+import { itemMoved } from "../draw/paths";
 import type { PaperBox } from "../geometry/types";
 import { fittingShape, legsShape, rollItems, shapeItems } from "../layout/turn-picture";
 import { spoolTurns, type Turn } from "../layout/turns";
@@ -32,9 +34,10 @@ interface Block {
 /** Pages of the lay-out, at least one. Never throws on user data. */
 export function composeBenchPages(input: SheetInput, measure: MeasureText): SheetPage[] {
   const facts = sheetFacts(input, buildModel(input.document, input.marks, input.takeOuts));
-  const frame = followingFrame(facts, measure);
+  const frame = followingFrame(facts, measure, [{ label: "PAGES", value: "Bench lay-out", maxLines: 1 }]);
   const room = { minX: frame.body.minX + PAD, minY: frame.body.minY + PAD, maxX: frame.body.maxX - PAD, maxY: frame.body.maxY - PAD };
-  const checks = flowTables(checkTables(facts), room, 1, measure).pages;
+  const tables = checkTables(facts);
+  const checks = withKey(flowTables(tables, room, 1, measure).pages, tables, facts, room, measure);
   const turns = facts.spool ? turnPages(spoolTurns(facts.model, facts.spool), facts.input.units, room, measure) : [];
   const contents: readonly (readonly DisplayItem[])[] = checks.length + turns.length > 0 ? [...checks, ...turns] : [nothing(facts, room)];
   return contents.map((items, i) => ({
@@ -46,6 +49,22 @@ export function composeBenchPages(input: SheetInput, measure: MeasureText): Shee
 function checkTables(facts: SheetFacts): FlowTable[] {
   return [endsTable(facts), checksTable(facts)].flatMap((table): FlowTable[] => (table ? [{ table, width: "full", startRow: 0 }] : []));
 }
+
+/** Least height of a picture that says which weld is which, mm. */
+const KEY_LEAST = 60;
+
+/** The isometric with weld numbers and ends under the checks, where one page of them leaves room. */
+function withKey(pages: Drawn, tables: readonly FlowTable[], facts: SheetFacts, room: PaperBox, measure: MeasureText): Drawn {
+  const used = tables.reduce((sum, { table }) => sum + tableHeight(setTable(table, room.maxX - room.minX, measure)) + TABLE_GAP, 0);
+  const box = { ...room, minY: room.minY + used };
+  const heightMm = box.maxY - box.minY;
+  if (pages.length !== 1 || heightMm < KEY_LEAST) return pages;
+  const show = { items: false, welds: true, pieces: true, dimensions: false };
+  const { items } = drawModel(facts.model, { widthMm: box.maxX - box.minX - 2 * PAD, heightMm: heightMm - 2 * PAD, measure, view: facts.input.document.view, spool: facts.input.spool, show });
+  return [[...pages[0]!, boxOutline(box, { widthMm: EDGE_LINE }), ...items.map((item) => itemMoved(item, [box.minX + PAD, box.minY + PAD]))]];
+}
+
+type Drawn = readonly (readonly DisplayItem[])[];
 
 function nothing(facts: SheetFacts, room: PaperBox): DisplayItem[] {
   const text = facts.spool ? "This spool has no open end and no turn to lay out." : `No spool ${facts.input.spool} in this line yet.`;
@@ -80,7 +99,7 @@ function blocksOf(turn: Turn, units: UnitSystem, widthMm: number, measure: Measu
     heightMm: PICTURE_HEIGHT + numbers.heightMm,
     items: (box) => [...pictureItems(turn, units, { ...box, minY: box.minY + numbers.heightMm }, measure), ...numbers.items({ ...box, maxY: box.minY + numbers.heightMm })],
   };
-  return stations ? [picture, tableBlock({ ...stations, title: `${turn.name}: ${stations.title}` }, widthMm, measure)] : [picture];
+  return stations ? [picture, tableBlock({ ...stations, title: `${turn.name}, 16 STATIONS` }, widthMm, measure)] : [picture];
 }
 
 function tableBlock(table: Table, widthMm: number, measure: MeasureText): Block {

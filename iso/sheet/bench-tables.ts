@@ -113,8 +113,8 @@ export function stationsTable(turn: Turn, units: UnitSystem): Table | null {
   const name = (i: number) => (i === 0 ? "0 back" : i === 8 ? "8 throat" : i === 4 ? "4, 12 sides" : `${i}, ${16 - i}`);
   const cell = (i: number): [string, { text: string; face: "bold" }[]] => (i <= 8 ? [name(i), [{ text: formatMark(values[i]!, units), face: "bold" }]] : ["", []]);
   return {
-    title: turn.kind === "mitre" ? "SET-BACKS FROM THE LONG POINT, 16 STATIONS" : "MARKS FROM THE UNCUT FACE, 16 STATIONS",
-    lead: [turn.kind === "mitre" ? `Stations ${formatMark((Math.PI * turn.odMm) / 16, units)} apart round the OD, 0 at the back.` : `Along the surface; stations ${formatMark((Math.PI * turn.odMm) / 16, units)} apart round the OD, 0 at the back.`],
+    title: "16 STATIONS",
+    lead: [turn.kind === "mitre" ? `Set back from the long point; stations ${formatMark((Math.PI * turn.odMm) / 16, units)} apart round the OD, 0 at the back.` : `From the uncut face along the surface; stations ${formatMark((Math.PI * turn.odMm) / 16, units)} apart round the OD, 0 at the back.`],
     columns: [{ head: "STATION", share: 1, minMm: 24 }, { head: "MARK", share: 1, minMm: 24, align: "end" }, { head: "STATION", share: 1, minMm: 24 }, { head: "MARK", share: 1, minMm: 24, align: "end" }],
     rows: [0, 1, 2, 3, 4].map((i): Row => ({ cells: [...cell(i), ...cell(i + 5)] })),
     foot: [],

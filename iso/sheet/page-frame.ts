@@ -11,7 +11,7 @@ import type { SheetFacts } from "./sheet-facts";
 import { EDGE_LINE, FRAME_LINE, frameBox, isSmallSheet, sheetSizeMm, TEXT_CAP } from "./sheet-size";
 import { stateAcross } from "./state-mark";
 import { baselineOf, linesHeight, wrapText } from "./text-setting";
-import { shortEntries, stripEntries, titleEntries } from "./title-fields";
+import { shortEntries, stripEntries, titleEntries, type Field } from "./title-fields";
 import { blockOutline, fieldItems, setFields, shopBlock, type FieldColumns, type ShopBlock } from "./title-strip";
 
 /** At the foot of every sheet (TRADE.md, cautions). */
@@ -73,11 +73,11 @@ function smallFrame(facts: SheetFacts, measure: MeasureText): PageFrame {
   };
 }
 
-/** The low strip of a following page. */
-export function followingFrame(facts: SheetFacts, measure: MeasureText): PageFrame {
+/** The low strip of a following page. @param extra fields of a page that is no part of the spool sheet. */
+export function followingFrame(facts: SheetFacts, measure: MeasureText, extra: readonly Field[] = []): PageFrame {
   const paper = paperOf(facts, measure);
   const { inner } = paper;
-  const set = setFields(shortEntries(facts), inner.maxX - inner.minX - IDENTITY_NARROW, isSmallSheet(facts.input.size) ? 2 : 3, 0, IDENTITY_HEIGHT, measure);
+  const set = setFields([...shortEntries(facts), ...extra], inner.maxX - inner.minX - IDENTITY_NARROW, isSmallSheet(facts.input.size) ? 2 : 3, 0, IDENTITY_HEIGHT, measure);
   const strip = { ...inner, minY: inner.maxY - set.heightMm };
   const fields = { ...strip, maxX: strip.maxX - IDENTITY_NARROW };
   return {

@@ -109,6 +109,7 @@ export const RECIPES: Readonly<Record<string, Recipe>> = {
 
   "GET /spools/[spoolId]": onSpool(),
   "GET /spools/[spoolId]/sheet": onSpool({ query: "?size=A4" }),
+  "GET /spools/[spoolId]/bench": onSpool({ query: "?kind=layout" }),
   "GET /spools/[spoolId]/export": onSpool({ query: "?what=cuts&as=csv" }),
   "POST /spools/[spoolId]/submit": onSpool({ body: { description: "First issue", size: "letter" } }),
   "POST /spools/[spoolId]/work": foreign(async (shop) => {

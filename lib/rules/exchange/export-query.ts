@@ -19,3 +19,10 @@ export const drawingExportSchema = z.object({
 });
 
 export const pointsExportSchema = z.object({ what: z.literal("points"), as: z.literal("csv", { error: "Points come as csv." }).default("csv") });
+
+export const benchPrintSchema = z.object({
+  kind: z.enum(["layout", "templates"], { error: "Say kind=layout or kind=templates." }),
+  of,
+  /** Absent = as the sheet was issued, or the job's for a draft. */
+  size: sheetSizeSchema.nullable().default(null),
+});
