@@ -1,12 +1,15 @@
 /** Every table as a class. bindModels ties them to a database handle; each module world does so once. */
 import type { Sequelize } from "sequelize";
 import { AuditEvent } from "./audit-event";
+import { CopyWithdrawal } from "./copy-withdrawal";
 import { Counter } from "./counter";
 import { Invitation } from "./invitation";
 import { Job } from "./job";
 import { Line } from "./line";
 import { LineTouch } from "./line-touch";
 import { Membership } from "./membership";
+import { Nest } from "./nest";
+import { Offcut } from "./offcut";
 import { PasswordReset } from "./password-reset";
 import { Person } from "./person";
 import { Revision } from "./revision";
@@ -15,8 +18,10 @@ import { RevisionSheet } from "./revision-sheet";
 import { Session } from "./session";
 import { SheetCopy } from "./sheet-copy";
 import { Shop } from "./shop";
+import { ShopCertificate } from "./shop-certificate";
 import { SignOff } from "./sign-off";
 import { Spool } from "./spool";
+import { Survey } from "./survey";
 import { TakeOutWord } from "./take-out-word";
 import { Throttle } from "./throttle";
 import { Upload } from "./upload";
@@ -24,12 +29,15 @@ import { WorkEntry } from "./work-entry";
 
 export {
   AuditEvent,
+  CopyWithdrawal,
   Counter,
   Invitation,
   Job,
   Line,
   LineTouch,
   Membership,
+  Nest,
+  Offcut,
   PasswordReset,
   Person,
   Revision,
@@ -38,8 +46,10 @@ export {
   Session,
   SheetCopy,
   Shop,
+  ShopCertificate,
   SignOff,
   Spool,
+  Survey,
   TakeOutWord,
   Throttle,
   Upload,
@@ -48,12 +58,15 @@ export {
 
 const MODELS = [
   AuditEvent,
+  CopyWithdrawal,
   Counter,
   Invitation,
   Job,
   Line,
   LineTouch,
   Membership,
+  Nest,
+  Offcut,
   PasswordReset,
   Person,
   Revision,
@@ -62,8 +75,10 @@ const MODELS = [
   Session,
   SheetCopy,
   Shop,
+  ShopCertificate,
   SignOff,
   Spool,
+  Survey,
   TakeOutWord,
   Throttle,
   Upload,

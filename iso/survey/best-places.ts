@@ -1,7 +1,7 @@
 /**
  * The lowest minimum a search finds. A tape cannot tell a mark from its mirror image, so a mark placed on the wrong
- * side leaves a minimum of its own. Each mark is tried on its other side, then a few scattered starts are tried, until
- * the readings fit or nothing gets better. All of it deterministic.
+ * side leaves a minimum of its own. Each mark is tried on its other side, then, while the readings do not fit, a few
+ * scattered starts are tried. All of it deterministic.
  */
 import type { Vec3 } from "../geometry/types";
 import { vecAddScaled, vecCross, vecDot, vecSub, vecUnit } from "../geometry/vec3";
@@ -13,7 +13,9 @@ import type { SurveyNetwork } from "./survey-types";
 /** Rounds of a try, enough to see whether it leads lower, and of the last run to the bottom. */
 const TRY_ROUNDS = 15;
 const LAST_ROUNDS = 80;
-const SCATTERED_STARTS = 4;
+const SCATTERED_STARTS = 3;
+/** Weighted squares per spare reading from which the marks rather than a reading may be in the wrong place: a wrong side is out by feet. */
+const FAR_OFF = 300;
 const PASSES = 2;
 /** A minimum has to be this share lower to count as another one. */
 const LOWER = 0.999;
@@ -24,7 +26,7 @@ export function bestPlaces(network: SurveyNetwork): Minimum {
   const enough = chiSquareLimit(Math.max(network.observations.length - free.length * 3, 1));
   let best = run(startPlaces(network));
   best = otherSides(network, free, best, enough, run);
-  for (let n = 1; n <= SCATTERED_STARTS && best.squares > enough; n += 1) {
+  for (let n = 1; n <= SCATTERED_STARTS && best.squares > enough * FAR_OFF; n += 1) {
     const found = otherSides(network, free, run(scattered(network, free, best.places, n)), enough, run);
     if (found.squares < best.squares * LOWER) best = found;
   }
@@ -36,12 +38,11 @@ function otherSides(network: SurveyNetwork, free: readonly string[], start: Mini
   for (let pass = 0; pass < PASSES; pass += 1) {
     const before = best.squares;
     for (const mark of free) {
-      if (best.squares <= enough) return best;
       const turned = mirrored(network, mark, best.places);
       const found = turned ? run(turned) : best;
       if (found.squares < best.squares * LOWER) best = found;
     }
-    if (best.squares >= before * LOWER) break;
+    if (best.squares <= enough || best.squares >= before * LOWER) break;
   }
   return best;
 }

@@ -35,7 +35,7 @@ export async function lineDetail(viewer: SessionViewer, lineId: string): Promise
 }
 
 /** Sketches and photos of a line, the oldest first. */
-async function uploadRows(member: ShopMember, lineId: string): Promise<UploadRow[]> {
+export async function uploadRows(member: ShopMember, lineId: string): Promise<UploadRow[]> {
   const rows = await inShop(member).all(Upload, { lineId, removedAt: null }, null, { order: [["at", "ASC"], ["id", "ASC"]] });
   const nameOf = await peopleNames(rows.map((row) => row.by));
   return rows.map(({ id, name, type, bytes, at, by }) => ({ id, name, type, bytes, at: at.toISOString(), by: nameOf(by) }));

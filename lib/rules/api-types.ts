@@ -2,7 +2,8 @@
  * What travels between route handlers and pages, as plain JSON. Queries return these shapes, components take them.
  * Times are ISO strings. Errors are always ApiError with a plain sentence.
  */
-import type { LineSettings, RunDocument } from "@/iso";
+import type { LineSettings, RunDocument, SurveyDocument } from "@/iso";
+import type { NestingSettings } from "./nest-plans";
 import type { MarksRegister, RevisionState, SheetInput, SheetSize, TakeOutWord, TitleBlock } from "@/iso";
 
 export type Role = "owner" | "detailer" | "inspector" | "fitter";
@@ -58,7 +59,9 @@ export interface ShopSettings {
   readonly sheetSize: SheetSize;
   readonly defaults: LineSettings;
   /** Stock lengths on the rack. */
-  readonly stock: readonly { readonly nps: string; readonly schedule: string; readonly material: string; readonly lengthMm: number; readonly quantity: number }[];
+  readonly stock: readonly { readonly nps: string; readonly schedule: string; readonly material: string; readonly lengthMm: number; readonly quantity: number | null; readonly cost?: number; readonly heat?: string }[];
+  /** How lengths are cut up. */
+  readonly nesting: NestingSettings;
   readonly takeOuts: readonly TakeOutWord[];
 }
 
@@ -144,6 +147,25 @@ export interface SaveLineConflict extends ApiError {
   readonly currentVersion: number;
   readonly by: string;
   readonly at: string;
+}
+
+/** What the survey page needs of a line; fitters read it too, so it holds nothing of the run. */
+export interface SurveyDetail {
+  readonly line: { readonly id: string; readonly number: string; readonly title: string };
+  readonly job: { readonly id: string; readonly number: string };
+  /** 0 while nothing was saved. */
+  readonly version: number;
+  readonly document: SurveyDocument;
+  /** Outside diameter of the line's pipe, mm; 0 when the table has none. */
+  readonly odMm: number;
+  readonly uploads: readonly UploadRow[];
+  readonly updatedAt: string | null;
+  readonly updatedBy: string | null;
+}
+
+/** 409: somebody saved since; carries theirs, so that both can be laid side by side at once. */
+export interface SaveSurveyConflict extends SaveLineConflict {
+  readonly document: SurveyDocument;
 }
 
 export interface UploadRow {

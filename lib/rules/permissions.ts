@@ -17,11 +17,15 @@ export const PERMISSIONS = {
   "issued.read": ["owner", "detailer", "inspector", "fitter"],
   "sheets.print": ["owner", "detailer", "inspector", "fitter"],
   "take-outs.change": ["owner"],
+  "nests.read": ["owner", "detailer", "inspector", "fitter"],
+  "nests.change": ["owner", "detailer"],
   "revisions.review": ["owner", "detailer", "inspector"],
   "revisions.submit": ["owner", "detailer"],
   "revisions.decide": ["owner", "inspector"],
   "revisions.hold": ["owner", "inspector"],
   "work.record": ["owner", "detailer", "inspector", "fitter"],
+  /** Whoever holds the tape: readings of a line, and its photos. */
+  "surveys.change": ["owner", "detailer", "inspector", "fitter"],
 } as const satisfies Record<string, readonly Role[]>;
 
 export type Permission = keyof typeof PERMISSIONS;
@@ -54,11 +58,14 @@ const REFUSALS: Readonly<Record<Permission, string>> = {
   "issued.read": "You do not belong to this shop.",
   "sheets.print": "You do not belong to this shop.",
   "take-outs.change": "Only the owner confirms or replaces a take-out.",
+  "nests.read": "You do not belong to this shop.",
+  "nests.change": "Only a detailer or the owner makes cutting plans and locks them.",
   "revisions.review": "Fitters see issued sheets only.",
   "revisions.submit": "Only a detailer or the owner submits a revision.",
   "revisions.decide": "Only an inspector or the owner signs or returns a revision.",
   "revisions.hold": "Only an inspector or the owner holds, releases or voids a revision.",
   "work.record": "You do not belong to this shop.",
+  "surveys.change": "You do not belong to this shop.",
 };
 
 /** The sentence a refused person reads. */

@@ -19,5 +19,14 @@ export const lineSaveSchema = z.object({
   document: z.custom<object>((value) => typeof value === "object" && value !== null, "The document is missing."),
 });
 
+/** Largest survey document, bytes. */
+export const SURVEY_MAX_BYTES = 512 * 1024;
+
+/** A save of a survey: `version` is the one it started from, 0 when there was none yet. */
+export const surveySaveSchema = z.object({
+  version: z.int({ error: "The version is missing." }).min(0, "The version is missing.").max(2_000_000_000, "The version is missing."),
+  document: z.custom<object>((value) => typeof value === "object" && value !== null, "The survey is missing."),
+});
+
 /** For writes that say nothing but that they happen. */
 export const emptySchema = z.object({});

@@ -8,6 +8,7 @@ import * as jobLogo from "@/app/api/jobs/[jobId]/logo/route";
 import * as invitations from "@/app/api/shop/invitations/route";
 import * as uploads from "@/app/api/lines/[lineId]/uploads/route";
 import * as hold from "@/app/api/revisions/[revisionId]/hold/route";
+import { emptySurvey } from "@/iso";
 import { sampleDocument } from "../factories";
 import { pngFile } from "./files";
 import { marksOf, signBody, signed, submitted } from "./revision-support";
@@ -103,6 +104,9 @@ export const RECIPES: Readonly<Record<string, Recipe>> = {
   "GET /lines/[lineId]/export": onLine({ query: "?what=points" }),
   "POST /lines/[lineId]/copy": onLine({ body: { number: "L-copy", title: "Copy" } }),
   "POST /lines/[lineId]/uploads": onLine({ file: { name: "photo.png", bytes: pngFile() } }),
+  "GET /lines/[lineId]/survey": onLine(),
+  "PUT /lines/[lineId]/survey": onLine({ body: { version: 0, document: emptySurvey("imperial") } }),
+  "POST /lines/[lineId]/survey/photos": onLine({ file: { name: "photo.png", bytes: pngFile() } }),
   "GET /uploads/[uploadId]": foreign(async (shop) => ({ params: { uploadId: await upload(shop) } })),
   "DELETE /uploads/[uploadId]": foreign(async (shop) => ({ params: { uploadId: await upload(shop) } })),
   "GET /objects/logo/[key]": foreign(async (shop) => ({ params: { key: await logoKey(shop, 12) } })),

@@ -20,6 +20,7 @@ const TABLE: readonly (readonly [Permission, string])[] = [
   ["revisions.decide", "ynyn"],
   ["revisions.hold", "ynyn"],
   ["work.record", "yyyy"],
+  ["surveys.change", "yyyy"],
   ["sheets.print", "yyyy"],
 ];
 

@@ -32,6 +32,11 @@ function off(reading: OracleReading, points: readonly OraclePoint[]): number {
   return reading.kind === "azimuth" ? raw - 2 * Math.PI * Math.round(raw / (2 * Math.PI)) : raw;
 }
 
+/** Sum of squared misses over their standard deviations. */
+export function oracleSquares(readings: readonly OracleReading[], points: readonly OraclePoint[]): number {
+  return readings.reduce((sum, reading) => sum + (off(reading, points) / reading.sigma) ** 2, 0);
+}
+
 /** A·x = b by elimination; throws when singular. */
 export function eliminate(rows: number[][], right: number[]): number[] {
   const n = right.length;
