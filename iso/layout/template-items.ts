@@ -141,9 +141,13 @@ function nameItems(template: Template, line: WrapLine, window: PaperBox, measure
   const foot = (template.isClosed ? Math.min(...template.cut.map(([, y]) => y)) : cutY(template, line.xMm) - HATCH_DEPTH) - 1.5;
   const tall = measure(line.name, CAP, "bold");
   const isRoom = foot - tall >= window.minY && foot <= window.maxY;
-  const right = line.xMm + 1 + CAP <= Math.min(window.maxX, template.widthMm);
+  const crowded = template.lines.some((other) => other.name !== "" && other.xMm > line.xMm && other.xMm - line.xMm < NAMES_APART);
+  const right = !crowded && line.xMm + 1 + CAP <= Math.min(window.maxX, template.widthMm);
   return isRoom ? [textItem("label", null, [right ? line.xMm + 1 + CAP : line.xMm - 1, foot], line.name, { capMm: CAP, face: "bold", rotateRad: READ_UP })] : [];
 }
+
+/** Two names side by side between their lines take this much, mm. */
+const NAMES_APART = 2 * CAP + 3;
 
 /** What to keep and what to cut away, where each is whole within the window. */
 function words(template: Template, window: PaperBox, measure: MeasureText): DisplayItem[] {

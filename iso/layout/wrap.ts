@@ -4,7 +4,7 @@
  * cut end. Paper of thickness t bends about its middle, so its length is π·(OD + t) (common practice adds one or two
  * thicknesses; this is the exact one for paper that neither stretches nor slips).
  */
-import { NEARLY_ALONG, SAME_PAPER_MM } from "../geometry/tolerances";
+import { NEARLY_ALONG } from "../geometry/tolerances";
 import type { PaperPoint, Vec3 } from "../geometry/types";
 import { vecDot, vecLength, vecReject, vecRotate, vecSignedAngle, VEC_NORTH, VEC_UP } from "../geometry/vec3";
 
@@ -15,6 +15,8 @@ export const STATIONS = 16;
 const TURN = 2 * Math.PI;
 /** A pipe steeper than this has no top, so its PLANT N side is named instead: about 6° off plumb. */
 const UPRIGHT = 0.995;
+/** Lines nearer than this on paper print as one, mm. */
+const SAME_LINE_MM = 0.4;
 /** A side that looks along an axis within this angle bears its name, radians (2°). */
 const NAMED_WITHIN = (2 * Math.PI) / 180;
 
@@ -59,8 +61,10 @@ export function wrapLines({ odMm, paperMm, axis, zero, quarters }: WrapTurn): re
   const turn = (vecSignedAngle(zero, side, axis) + TURN) % TURN;
   const xMm = turn * radius;
   const name = upright ? "PLANT N" : "TOP";
-  const known = lines.some((line) => line.name.includes(name));
-  return known || TURN * radius - xMm < SAME_PAPER_MM ? lines : [...lines, { xMm, number: "", name, kind: "top" as const }].sort((p, q) => p.xMm - q.xMm);
+  if (lines.some((line) => line.name.includes(name))) return lines;
+  const on = lines.filter((line) => Math.min(Math.abs(line.xMm - xMm), TURN * radius - Math.abs(line.xMm - xMm)) < SAME_LINE_MM);
+  if (on.length > 0) return lines.map((line) => (on.includes(line) ? { ...line, name: [line.name, name].filter(Boolean).join(" / ") } : line));
+  return [...lines, { xMm, number: "", name, kind: "top" as const }].sort((p, q) => p.xMm - q.xMm);
 }
 
 /** The side of a pipe that looks along an axis of the plant; "" when it looks between them. */
