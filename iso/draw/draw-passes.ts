@@ -138,7 +138,9 @@ function homelessLabels(texts: readonly Homeless[], options: DrawOptions): reado
 }
 
 function layered(items: readonly DisplayItem[]): readonly DisplayItem[] {
-  return LAYERS.flatMap((layer) => items.filter((item) => item.layer === layer));
+  const byLayer = new Map<Layer, DisplayItem[]>(LAYERS.map((layer) => [layer, []]));
+  for (const item of items) byLayer.get(item.layer)?.push(item);
+  return [...byLayer.values()].flat();
 }
 
 function finished(items: readonly DisplayItem[], room: PaperBox, options: DrawOptions, view: View, report: Drawing["report"], shown: readonly Ref[], placed: Placed): Drawing {

@@ -1,7 +1,7 @@
 /** Boxes of display items, for bounds and for tests of overlap. */
 import type { PaperBox, PaperPoint } from "../geometry/types";
 import type { DisplayItem, MeasureText, TextItem } from "./drawing-types";
-import { boxCorners, paperBoxAround, type TurnedBox } from "./plane";
+import { boxCorners, type TurnedBox } from "./plane";
 
 /** Turned box of a text: its advance by its capital height. */
 export function textTurnedBox(item: TextItem, measure: MeasureText): TurnedBox {
@@ -15,11 +15,22 @@ export function textTurnedBox(item: TextItem, measure: MeasureText): TurnedBox {
 
 /** What is really inked; a zero box at the origin when nothing is. */
 export function inkBounds(items: readonly DisplayItem[], measure: MeasureText): PaperBox {
-  const points: PaperPoint[] = [];
+  let minX = Infinity;
+  let minY = Infinity;
+  let maxX = -Infinity;
+  let maxY = -Infinity;
+  const take = ([x, y]: PaperPoint): void => {
+    if (x < minX) minX = x;
+    if (x > maxX) maxX = x;
+    if (y < minY) minY = y;
+    if (y > maxY) maxY = y;
+  };
   for (const item of items) {
-    if (item.type === "line") points.push(item.from, item.to);
-    else if (item.type === "text") points.push(...boxCorners(textTurnedBox(item, measure)));
-    else for (const s of item.segments) if (s.op !== "Z") points.push(s.to);
+    if (item.type === "line") {
+      take(item.from);
+      take(item.to);
+    } else if (item.type === "text") boxCorners(textTurnedBox(item, measure)).forEach(take);
+    else for (const s of item.segments) if (s.op !== "Z") take(s.to);
   }
-  return points.length === 0 ? { minX: 0, minY: 0, maxX: 0, maxY: 0 } : paperBoxAround(points);
+  return minX > maxX ? { minX: 0, minY: 0, maxX: 0, maxY: 0 } : { minX, minY, maxX, maxY };
 }
