@@ -31,15 +31,10 @@ export function shippedSpool(spool: Shipped, ctx: BuildContext): Vec3 {
     reportOver(spool, asItGoes, "along its own pipes, longer than the shipping box is from corner to corner", ctx);
     return asItGoes.sizeMm;
   }
-  const { sizeMm, overMm } = shippingBox(discs, room);
-  if (overMm <= 0) return sizeMm;
-  const smallest = shippingBox(discs, ANY_ROOM, 1);
-  reportOver(spool, smallest, `at its smallest and stands ${formatLength(overMm, ctx.units)} out of the shipping box however it is turned`, ctx);
-  return smallest.sizeMm;
+  const best = shippingBox(discs, room);
+  if (best.overMm > 0) reportOver(spool, best, `turned to fit best and stands ${formatLength(best.overMm, ctx.units)} out of the shipping box however it is turned`, ctx);
+  return best.sizeMm;
 }
-
-/** A room that everything fits, so that volume alone decides. */
-const ANY_ROOM: Vec3 = [Infinity, Infinity, Infinity];
 
 function reportOver(spool: Shipped, { sizeMm, along }: ShippingBox, how: string, ctx: BuildContext): void {
   const say = sizeMm.map((mm) => formatLength(mm, ctx.units)).join(" x ");
