@@ -26,6 +26,7 @@ export * from "./closing/elbow-marks";
 export * from "./closing/advice";
 export * from "./closing/sensitivity";
 export * from "./closing/close-between";
+export * from "./closing/snap-between";
 export * from "./closing/snap";
 
 // survey

@@ -5,6 +5,7 @@ import { Notice } from "@/components/ui/notice";
 import type { ClosingForm } from "./closing-form";
 import { closingPicture } from "./closing-picture";
 import { DrawingItems } from "./drawing-items";
+import { ClosingSnap } from "./closing-snap";
 import { drawLine } from "./draw-line";
 import { fitViewport } from "./viewport";
 
@@ -32,6 +33,7 @@ export function ClosingAnswer(props: ClosingAnswerProps) {
       <div>
         <Facts {...props} answer={answer} />
         <Marks answer={answer} />
+        <ClosingSnap key={props.input.units} input={props.input} />
         <Cautions answer={answer} />
       </div>
       <Picture {...props} answer={answer} />

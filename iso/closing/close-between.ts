@@ -115,7 +115,8 @@ export function closeBetween(input: CloseBetweenInput): ClosingFound | ClosingRe
   };
 }
 
-function solverInput(input: CloseBetweenInput): ClosingInput {
+/** The solver's question: unit axes, and what is left out filled in. */
+export function solverInput(input: CloseBetweenInput): ClosingInput {
   const axis = (d: Vec3): Vec3 => (Array.isArray(d) && d.length === 3 ? (vecUnit(d) ?? d) : d);
   return {
     p0: input.end0?.position, p1: input.end1?.position, d0: axis(input.end0?.direction), d1: axis(input.end1?.direction),

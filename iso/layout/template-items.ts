@@ -23,12 +23,12 @@ const READ_UP = -Math.PI / 2;
 
 /** Items of one tile: outline, cut, hatching, lines with numbers and names, join lines. */
 export function templateItems(template: Template, tile: Tile, measure: MeasureText): DisplayItem[] {
-  const { window } = tile;
+  const { shown } = tile;
   return [
-    ...outline(template, window), ...hatch(template, window), ...lengthwise(template, window), ...acrossItems(template, window),
-    ...clipPolyline(closedCut(template), window).map((part) => pathItem("symbol", null, polygonSegments(part, false), { stroke: "ink", widthMm: CUT_WIDTH })),
+    ...outline(template, shown), ...hatch(template, shown), ...lengthwise(template, shown), ...acrossItems(template, shown),
+    ...clipPolyline(closedCut(template), shown).map((part) => pathItem("symbol", null, polygonSegments(part, false), { stroke: "ink", widthMm: CUT_WIDTH })),
     ...joins(template, tile),
-    ...lineNames(template, window, measure), ...words(template, window, measure),
+    ...lineNames(template, shown, measure), ...words(template, shown, measure),
   ];
 }
 
@@ -36,17 +36,17 @@ function closedCut({ cut, isClosed }: Template): readonly PaperPoint[] {
   return isClosed ? [...cut, cut[0]!] : cut;
 }
 
-function drawn(from: PaperPoint, to: PaperPoint, window: PaperBox, widthMm: number, ink: "ink" | "dye" | "grey", dash?: readonly number[]): DisplayItem[] {
-  const kept = clipSegment(from, to, window);
+function drawn(from: PaperPoint, to: PaperPoint, shown: PaperBox, widthMm: number, ink: "ink" | "dye" | "grey", dash?: readonly number[]): DisplayItem[] {
+  const kept = clipSegment(from, to, shown);
   return kept ? [lineItem("box", null, kept[0], kept[1], widthMm, ink, dash)] : [];
 }
 
 /** Where the paper is cut out, and the base line. */
-function outline({ widthMm, heightMm, baseY }: Template, window: PaperBox): DisplayItem[] {
+function outline({ widthMm, heightMm, baseY }: Template, shown: PaperBox): DisplayItem[] {
   const corners: readonly PaperPoint[] = [[0, 0], [widthMm, 0], [widthMm, heightMm], [0, heightMm], [0, 0]];
   return [
-    ...corners.slice(1).flatMap((to, i) => drawn(corners[i]!, to, window, 0.18, "ink")),
-    ...drawn([0, baseY], [widthMm, baseY], window, CUT_WIDTH, "ink"),
+    ...corners.slice(1).flatMap((to, i) => drawn(corners[i]!, to, shown, 0.18, "ink")),
+    ...drawn([0, baseY], [widthMm, baseY], shown, CUT_WIDTH, "ink"),
   ];
 }
 
@@ -57,7 +57,7 @@ export function cutY({ cut, widthMm }: Template, x: number): number {
   return cut[i]![1] + (cut[i + 1]![1] - cut[i]![1]) * (at - i);
 }
 
-function hatch(template: Template, window: PaperBox): DisplayItem[] {
+function hatch(template: Template, shown: PaperBox): DisplayItem[] {
   const cut = closedCut(template);
   const middle = template.isClosed ? middleOf(template.cut) : null;
   const items: DisplayItem[] = [];
@@ -67,7 +67,7 @@ function hatch(template: Template, window: PaperBox): DisplayItem[] {
     gone += Math.hypot(b[0] - a[0], b[1] - a[1]);
     if (gone < HATCH_STEP) continue;
     gone = 0;
-    items.push(...drawn(b, middle ? inward(b, middle) : [Math.min(b[0] + HATCH_DEPTH * 0.7, template.widthMm), b[1] - HATCH_DEPTH], window, 0.18, "ink"));
+    items.push(...drawn(b, middle ? inward(b, middle) : [Math.min(b[0] + HATCH_DEPTH * 0.7, template.widthMm), b[1] - HATCH_DEPTH], shown, 0.18, "ink"));
   }
   return items;
 }
@@ -85,64 +85,64 @@ function inward(point: PaperPoint, middle: PaperPoint): PaperPoint {
 }
 
 /** Station lines from the names down to the base line, the top's line, and slits from the cut to just above the base. */
-function lengthwise(template: Template, window: PaperBox): DisplayItem[] {
+function lengthwise(template: Template, shown: PaperBox): DisplayItem[] {
   const { baseY, isClosed } = template;
   const top = (x: number) => (isClosed ? 0 : cutY(template, x) - HATCH_DEPTH);
   return [
-    ...template.lines.flatMap((line) => drawn([line.xMm, top(line.xMm)], [line.xMm, baseY], window, LINE_WIDTH[line.kind], line.kind === "station" ? "ink" : "dye", line.kind === "top" ? TOP_DASH : undefined)),
-    ...template.slits.flatMap((x) => drawn([x, cutY(template, x)], [x, baseY - SLIT_END], window, 0.18, "grey", SLIT_DASH)),
+    ...template.lines.flatMap((line) => drawn([line.xMm, top(line.xMm)], [line.xMm, baseY], shown, LINE_WIDTH[line.kind], line.kind === "station" ? "ink" : "dye", line.kind === "top" ? TOP_DASH : undefined)),
+    ...template.slits.flatMap((x) => drawn([x, cutY(template, x)], [x, baseY - SLIT_END], shown, 0.18, "grey", SLIT_DASH)),
   ];
 }
 
 /** Slits stop short of the base line, so that the paper stays in one piece. */
 const SLIT_END = 5;
 
-function acrossItems({ across, widthMm, lines }: Template, window: PaperBox): DisplayItem[] {
+function acrossItems({ across, widthMm, lines }: Template, shown: PaperBox): DisplayItem[] {
   const clear = (lines[0]?.xMm ?? 0) + 2;
   return across.flatMap(({ y, name }) => [
-    ...drawn([0, y], [widthMm, y], window, LINE_WIDTH.quarter, "dye"),
-    ...(y > window.minY + 4 && y < window.maxY && clear > window.minX && clear < window.maxX ? [textItem("label", null, [clear, y - 1], name, { capMm: CAP })] : []),
+    ...drawn([0, y], [widthMm, y], shown, LINE_WIDTH.quarter, "dye"),
+    ...(y > shown.minY + 4 && y < shown.maxY && clear > shown.minX && clear < shown.maxX ? [textItem("label", null, [clear, y - 1], name, { capMm: CAP })] : []),
   ]);
 }
 
-function joins({ widthMm, heightMm }: Template, { joinsX, joinsY, window }: Tile): DisplayItem[] {
+function joins({ widthMm, heightMm }: Template, { joinsX, joinsY, shown }: Tile): DisplayItem[] {
   const cross = ([x, y]: PaperPoint) => [
-    ...drawn([x - CROSS, y], [x + CROSS, y], window, 0.25, "ink"), ...drawn([x, y - CROSS], [x, y + CROSS], window, 0.25, "ink"),
+    ...drawn([x - CROSS, y], [x + CROSS, y], shown, 0.25, "ink"), ...drawn([x, y - CROSS], [x, y + CROSS], shown, 0.25, "ink"),
   ];
   const upright = joinsX.flatMap((x) => [
-    ...drawn([x, 0], [x, heightMm], window, 0.2, "grey", JOIN_DASH),
-    ...[0.25, 0.75].flatMap((t) => cross([x, window.minY + (window.maxY - window.minY) * t])),
+    ...drawn([x, 0], [x, heightMm], shown, 0.2, "grey", JOIN_DASH),
+    ...[0.25, 0.75].flatMap((t) => cross([x, shown.minY + (shown.maxY - shown.minY) * t])),
   ]);
   const level = joinsY.flatMap((y) => [
-    ...drawn([0, y], [widthMm, y], window, 0.2, "grey", JOIN_DASH),
-    ...[0.25, 0.75].flatMap((t) => cross([window.minX + (window.maxX - window.minX) * t, y])),
+    ...drawn([0, y], [widthMm, y], shown, 0.2, "grey", JOIN_DASH),
+    ...[0.25, 0.75].flatMap((t) => cross([shown.minX + (shown.maxX - shown.minX) * t, y])),
   ]);
   return [...upright, ...level];
 }
 
 /** Numbers under the base line, and names of the quarters up the side that is cut away. */
-function lineNames(template: Template, window: PaperBox, measure: MeasureText): DisplayItem[] {
+function lineNames(template: Template, shown: PaperBox, measure: MeasureText): DisplayItem[] {
   return template.lines.flatMap((line) => {
-    if (line.xMm < window.minX || line.xMm > window.maxX) return [];
-    return [...numberItems(template, line, window, measure), ...nameItems(template, line, window, measure)];
+    if (line.xMm < shown.minX || line.xMm > shown.maxX) return [];
+    return [...numberItems(template, line, shown, measure), ...nameItems(template, line, shown, measure)];
   });
 }
 
-function numberItems({ baseY, widthMm }: Template, line: WrapLine, window: PaperBox, measure: MeasureText): DisplayItem[] {
+function numberItems({ baseY, widthMm }: Template, line: WrapLine, shown: PaperBox, measure: MeasureText): DisplayItem[] {
   const y = baseY + 1.2 + CAP;
-  if (line.number === "" || y > window.maxY || y - CAP < window.minY) return [];
+  if (line.number === "" || y > shown.maxY || y - CAP < shown.minY) return [];
   const half = measure(line.number, CAP, "bold") / 2;
-  const x = Math.min(Math.max(line.xMm, Math.max(0, window.minX) + half + 0.3), Math.min(widthMm, window.maxX) - half - 0.3);
+  const x = Math.min(Math.max(line.xMm, Math.max(0, shown.minX) + half + 0.3), Math.min(widthMm, shown.maxX) - half - 0.3);
   return [textItem("label", null, [x, y], line.number, { capMm: CAP, face: "bold", anchor: "middle" })];
 }
 
-function nameItems(template: Template, line: WrapLine, window: PaperBox, measure: MeasureText): DisplayItem[] {
+function nameItems(template: Template, line: WrapLine, shown: PaperBox, measure: MeasureText): DisplayItem[] {
   if (line.name === "") return [];
   const foot = (template.isClosed ? Math.min(...template.cut.map(([, y]) => y)) : cutY(template, line.xMm) - HATCH_DEPTH) - 1.5;
   const tall = measure(line.name, CAP, "bold");
-  const isRoom = foot - tall >= window.minY && foot <= window.maxY;
+  const isRoom = foot - tall >= shown.minY && foot <= shown.maxY;
   const crowded = template.lines.some((other) => other.name !== "" && other.xMm > line.xMm && other.xMm - line.xMm < NAMES_APART);
-  const right = !crowded && line.xMm + 1 + CAP <= Math.min(window.maxX, template.widthMm);
+  const right = !crowded && line.xMm + 1 + CAP <= Math.min(shown.maxX, template.widthMm);
   return isRoom ? [textItem("label", null, [right ? line.xMm + 1 + CAP : line.xMm - 1, foot], line.name, { capMm: CAP, face: "bold", rotateRad: READ_UP })] : [];
 }
 
@@ -150,22 +150,22 @@ function nameItems(template: Template, line: WrapLine, window: PaperBox, measure
 const NAMES_APART = 2 * CAP + 3;
 
 /** What to keep and what to cut away, where each is whole within the window. */
-function words(template: Template, window: PaperBox, measure: MeasureText): DisplayItem[] {
+function words(template: Template, shown: PaperBox, measure: MeasureText): DisplayItem[] {
   const { baseY, heightMm, widthMm, isClosed } = template;
-  const left = Math.max(0, window.minX) + 2;
-  const room = Math.min(widthMm, window.maxX) - left - 2;
+  const left = Math.max(0, shown.minX) + 2;
+  const room = Math.min(widthMm, shown.maxX) - left - 2;
   const footY = heightMm - 2;
   const items: DisplayItem[] = [];
-  if (footY <= window.maxY && baseY >= window.minY) {
+  if (footY <= shown.maxY && baseY >= shown.minY) {
     const text = [template.keep && `KEEP: ${template.keep}`, template.base].filter(Boolean).join(". ");
     items.push(...whole(text, [template.keep && `KEEP: ${template.keep}`, template.base], [left, footY], room, measure));
   }
   if (isClosed) {
     const [x, y] = middleOf(template.cut);
-    if (inside([x - 8, y + 8], window) && inside([x + 8, y + 12], window)) items.push(textItem("label", null, [x - 12, y + 10], template.waste, { capMm: CAP, face: "bold", anchor: "middle" }));
+    if (inside([x - 8, y + 8], shown) && inside([x + 8, y + 12], shown)) items.push(textItem("label", null, [x - 12, y + 10], template.waste, { capMm: CAP, face: "bold", anchor: "middle" }));
     return items;
   }
-  if (window.minY <= 0 && HEAD_MM > FOOT_MM) items.push(...whole(template.waste, [template.waste], [left + wordIndent(template, left, measure), CAP + 1.2], room, measure));
+  if (shown.minY <= 0 && HEAD_MM > FOOT_MM) items.push(...whole(template.waste, [template.waste], [left + wordIndent(template, left, measure), CAP + 1.2], room, measure));
   return items;
 }
 

@@ -11,7 +11,7 @@ export interface Tile {
   readonly rows: number;
   readonly columns: number;
   /** What of the template it shows, in the template's frame. */
-  readonly window: PaperBox;
+  readonly shown: PaperBox;
   /** Join lines in this window: x of upright ones, y of level ones. */
   readonly joinsX: readonly number[];
   readonly joinsY: readonly number[];
@@ -23,7 +23,7 @@ export function tilesOf(widthMm: number, heightMm: number, room: { readonly widt
   const down = spansOf(heightMm, room.heightMm);
   return down.flatMap(([minY, maxY], r) =>
     across.map(([minX, maxX], c): Tile => ({
-      row: r + 1, column: c + 1, rows: down.length, columns: across.length, window: { minX, minY, maxX, maxY },
+      row: r + 1, column: c + 1, rows: down.length, columns: across.length, shown: { minX, minY, maxX, maxY },
       joinsX: joinsOf(across, c), joinsY: joinsOf(down, r),
     })));
 }

@@ -53,7 +53,7 @@ export function placeTemplates(input: SheetInput, measure: MeasureText, paperMm:
     ...sheetSizeMm(input.size), items: [...frame.under, ...items, ...frame.over(strip, { sheet, of })], logoBox: null, name,
   });
   const pages = tiles.map(({ template, tile, at }, i) => {
-    const moved = templateItems(template, tile, measure).map((item) => itemMoved(item, [at[0] - tile.window.minX, at[1] - tile.window.minY]));
+    const moved = templateItems(template, tile, measure).map((item) => itemMoved(item, [at[0] - tile.shown.minX, at[1] - tile.shown.minY]));
     const strip = { title: template.title, facts: factsOf(template), rows: tile.rows, columns: tile.columns, row: tile.row, column: tile.column };
     return page([...moved, ...joinWords(tile, at)], strip, i + 1, `${i + 1} template`);
   });
@@ -64,22 +64,22 @@ export function placeTemplates(input: SheetInput, measure: MeasureText, paperMm:
 }
 
 /** In the middle of the room across, at its top. */
-function placeOf({ window }: Tile, body: PaperBox): PaperPoint {
-  return [(body.minX + body.maxX - (window.maxX - window.minX)) / 2, body.minY + GUTTER];
+function placeOf({ shown }: Tile, body: PaperBox): PaperPoint {
+  return [(body.minX + body.maxX - (shown.maxX - shown.minX)) / 2, body.minY + GUTTER];
 }
 
 /** At the ends of each join line: which pages meet there. */
-function joinWords({ joinsX, joinsY, window, row, column }: Tile, at: PaperPoint): DisplayItem[] {
-  const x = (of: number) => at[0] + of - window.minX;
-  const y = (of: number) => at[1] + of - window.minY;
-  const bottom = at[1] + window.maxY - window.minY;
+function joinWords({ joinsX, joinsY, shown, row, column }: Tile, at: PaperPoint): DisplayItem[] {
+  const x = (of: number) => at[0] + of - shown.minX;
+  const y = (of: number) => at[1] + of - shown.minY;
+  const bottom = at[1] + shown.maxY - shown.minY;
   const upright = joinsX.map((join) => {
-    const isLeft = join < (window.minX + window.maxX) / 2;
+    const isLeft = join < (shown.minX + shown.maxX) / 2;
     const text = isLeft ? `join to column ${column - 1}` : `join to column ${column + 1}`;
-    return textAt([isLeft ? Math.max(x(join) - 8, at[0]) : Math.min(x(join) + 8, at[0] + window.maxX - window.minX), at[1] - 1.4], text, { layer: "label", anchor: isLeft ? "start" : "end" });
+    return textAt([isLeft ? Math.max(x(join) - 8, at[0]) : Math.min(x(join) + 8, at[0] + shown.maxX - shown.minX), at[1] - 1.4], text, { layer: "label", anchor: isLeft ? "start" : "end" });
   });
   const level = joinsY.map((join) => {
-    const isTop = join < (window.minY + window.maxY) / 2;
+    const isTop = join < (shown.minY + shown.maxY) / 2;
     return textAt([at[0] - 1.6, isTop ? Math.max(y(join), at[1]) : Math.min(y(join), bottom)], isTop ? `join to row ${row - 1}` : `join to row ${row + 1}`, { layer: "label", anchor: isTop ? "end" : "start", rotateRad: -Math.PI / 2 });
   });
   return [...upright, ...level];

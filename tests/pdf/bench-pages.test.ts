@@ -59,7 +59,7 @@ describe("templates measured in the PDF's own coordinates", () => {
       const found = seen.get(template) ?? new Set<number>();
       seen.set(template, found);
       for (const [k, [x, y]] of template.cut.entries()) {
-        const { minX, maxX, minY, maxY } = tile.window;
+        const { minX, maxX, minY, maxY } = tile.shown;
         if (x < minX || x > maxX || y < minY || y > maxY) continue;
         // PDF's y goes up from the foot of the medium.
         const wanted: PaperPoint = [x - minX + at[0], heightMm - (y - minY + at[1])];

@@ -149,18 +149,18 @@ describe("tiles", () => {
     for (const [w, h] of [[359.4, 83.7], [1017.6, 205.1], [60, 44], [237.5, 140.5]] as const) {
       const tiles = tilesOf(w, h, { widthMm, heightMm });
       for (const tile of tiles) {
-        expect(tile.window.maxX - tile.window.minX).toBeLessThanOrEqual(widthMm + 1e-9);
-        expect(tile.window.maxY - tile.window.minY).toBeLessThanOrEqual(heightMm + 1e-9);
+        expect(tile.shown.maxX - tile.shown.minX).toBeLessThanOrEqual(widthMm + 1e-9);
+        expect(tile.shown.maxY - tile.shown.minY).toBeLessThanOrEqual(heightMm + 1e-9);
         const next = tiles.find((other) => other.row === tile.row && other.column === tile.column + 1);
-        if (next) expect(tile.window.maxX - next.window.minX).toBeGreaterThanOrEqual(12 - 1e-9);
-        else expect(tile.window.maxX).toBeCloseTo(w, 9);
+        if (next) expect(tile.shown.maxX - next.shown.minX).toBeGreaterThanOrEqual(12 - 1e-9);
+        else expect(tile.shown.maxX).toBeCloseTo(w, 9);
         const under = tiles.find((other) => other.column === tile.column && other.row === tile.row + 1);
-        if (under) expect(tile.window.maxY - under.window.minY).toBeGreaterThanOrEqual(12 - 1e-9);
-        else expect(tile.window.maxY).toBeCloseTo(h, 9);
+        if (under) expect(tile.shown.maxY - under.shown.minY).toBeGreaterThanOrEqual(12 - 1e-9);
+        else expect(tile.shown.maxY).toBeCloseTo(h, 9);
         if (next) expect(tile.joinsX.at(-1)).toBeCloseTo(next.joinsX[0]!, 9);
         if (under) expect(tile.joinsY.at(-1)).toBeCloseTo(under.joinsY[0]!, 9);
       }
-      expect([tiles[0]!.window.minX, tiles[0]!.window.minY]).toEqual([0, 0]);
+      expect([tiles[0]!.shown.minX, tiles[0]!.shown.minY]).toEqual([0, 0]);
       expect(tiles).toHaveLength(tiles[0]!.rows * tiles[0]!.columns);
     }
   });
