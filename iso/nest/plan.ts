@@ -1,6 +1,6 @@
 /** From patterns to bars with the pieces' own marks, and pieces that no stock can hold. */
 import { heatFits, restOf, restValue, roomOf, type Pattern } from "./pattern";
-import type { NestBar, NestInput, NestPlan } from "./nest-types";
+import type { NestBar, NestDemand, NestInput, NestPlan } from "./nest-types";
 
 /** Sets aside demands that no stock can hold, or none of their heat. */
 export function splitOff(input: NestInput): { readonly cuttable: NestInput; readonly unplaced: NestPlan["unplaced"] } {
@@ -11,7 +11,18 @@ export function splitOff(input: NestInput): { readonly cuttable: NestInput; read
     if (reason) unplaced.push(...d.marks.map((mark) => ({ mark, reason }) as const));
     return reason === null && d.marks.length > 0;
   });
-  return { cuttable: { ...input, demands }, unplaced };
+  return { cuttable: { ...input, demands: alikeTogether(demands) }, unplaced };
+}
+
+/** One demand per length and heat: the fewer there are, the less there is to try. */
+function alikeTogether(demands: readonly NestDemand[]): NestDemand[] {
+  const alike = new Map<string, NestDemand>();
+  for (const demand of demands) {
+    const key = JSON.stringify([demand.length, demand.heat]);
+    const known = alike.get(key);
+    alike.set(key, known ? { ...known, marks: [...known.marks, ...demand.marks] } : demand);
+  }
+  return [...alike.values()];
 }
 
 /** Bars in the order of their stock, the longest piece of each first; marks given out in the order they came. */

@@ -302,8 +302,10 @@ export interface StatusDetail {
   readonly issuedAt: string;
   /** Code of the live revision of this spool, when it is another one. */
   readonly liveCode: string | null;
-  /** SHA-256 of every stored PDF of this revision. */
-  readonly sheets: readonly { readonly sha256: string; readonly kind: "review" | "fabrication" }[];
+  /** SHA-256 of every stored PDF of this revision and of every marked copy of one; `marked` null = the stored one itself. */
+  readonly sheets: readonly { readonly sha256: string; readonly kind: "review" | "fabrication"; readonly marked: string | null; readonly at: string }[];
+  /** The certificate whose signature the signed original carries; null when it carries none. */
+  readonly signature: { readonly sha256: string; readonly subject: string; readonly fingerprint: string } | null;
 }
 
 export interface OutboxMail {

@@ -5,6 +5,7 @@
  */
 import { INCH_MM, type LineSettings, type SheetSize, type TitleBlock, type UnitSystem } from "@/iso";
 import type { JobSettings, ShopSettings } from "./api-types";
+import type { NestingSettings } from "./nest-plans";
 
 /** What the shops table keeps beside the name. */
 export interface StoredShopSettings {
@@ -13,6 +14,8 @@ export interface StoredShopSettings {
   readonly sheetSize: SheetSize;
   readonly defaults: LineSettings;
   readonly stock: ShopSettings["stock"];
+  /** Absent = as a new shop starts. */
+  readonly nesting?: NestingSettings;
 }
 
 /** What the jobs table keeps beside number, title, client, area and open. */

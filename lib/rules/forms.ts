@@ -68,7 +68,26 @@ export const stockRowSchema = z.object({
     .number({ error: "Enter a number." })
     .int("A whole number.")
     .min(0, "Not under 0.")
-    .max(10_000, "At most 10,000."),
+    .max(10_000, "At most 10,000.")
+    .nullable(),
+  /** What one length costs, in the shop's own money; absent = not entered. Quantity null = as many as wanted. */
+  cost: z.number({ error: "Enter a cost." }).finite().positive("Over 0.").max(1_000_000, "At most 1,000,000.").optional(),
+  /** Of all lengths of the row; absent = not known. */
+  heat: text(60).optional(),
+});
+
+/** A saw and what its cut takes, mm. */
+export const sawSchema = z.object({
+  name: needed("the saw's name", 40),
+  kerfMm: z.number({ error: "Enter a length." }).finite().min(0, "Not under 0.").max(20, "At most 20 mm."),
+});
+/** How the shop cuts lengths up. */
+export const nestingSchema = z.object({
+  saws: z.array(sawSchema).min(1, "Enter at least one saw.").max(8, "At most 8 saws."),
+  endTrimMm: z.number({ error: "Enter a length." }).finite().min(0, "Not under 0.").max(500, "At most 500 mm."),
+  leastOffcutMm: z.number({ error: "Enter a length." }).finite().min(0, "Not under 0.").max(10_000, "At most 10 m."),
+  /** What a rest that goes back is worth, as a share of new pipe of its length. */
+  offcutShare: z.number({ error: "Enter a percentage." }).finite().min(0, "Not under 0.").max(0.95, "At most 95 %."),
 });
 
 /** PATCH of the shop; what is absent stays. */
@@ -79,6 +98,7 @@ export const shopSettingsSchema = z
     sheetSize: sheetSizeSchema,
     defaults: lineSettingsSchema,
     stock: z.array(stockRowSchema).max(200, "At most 200 rows."),
+    nesting: nestingSchema,
   })
   .partial();
 

@@ -16,6 +16,8 @@ export const PERMISSIONS = {
   "lines.change": ["owner", "detailer"],
   "issued.read": ["owner", "detailer", "inspector", "fitter"],
   "sheets.print": ["owner", "detailer", "inspector", "fitter"],
+  /** Copies out of use: fitters mark their own, which the command sees to. */
+  "copies.withdraw": ["owner", "detailer", "inspector", "fitter"],
   "take-outs.change": ["owner"],
   "nests.read": ["owner", "detailer", "inspector", "fitter"],
   "nests.change": ["owner", "detailer"],
@@ -57,6 +59,7 @@ const REFUSALS: Readonly<Record<Permission, string>> = {
   "lines.change": "Only a detailer or the owner changes jobs, lines and runs.",
   "issued.read": "You do not belong to this shop.",
   "sheets.print": "You do not belong to this shop.",
+  "copies.withdraw": "You do not belong to this shop.",
   "take-outs.change": "Only the owner confirms or replaces a take-out.",
   "nests.read": "You do not belong to this shop.",
   "nests.change": "Only a detailer or the owner makes cutting plans and locks them.",

@@ -7,6 +7,8 @@ import type { Mail } from "./mail";
 export interface QueueData {
   /** One mail to hand to SMTP. */
   mail: Mail;
+  /** One cutting plan to look for. */
+  nest: { readonly shopId: string; readonly nestId: string };
 }
 
 export type QueueName = keyof QueueData;
@@ -19,7 +21,10 @@ export interface QueueRule {
   readonly expireInSeconds: number;
 }
 
-export const QUEUES: readonly QueueRule[] = [{ name: "mail", retryLimit: 8, retryDelay: 15, expireInSeconds: 120 }];
+export const QUEUES: readonly QueueRule[] = [
+  { name: "mail", retryLimit: 8, retryDelay: 15, expireInSeconds: 120 },
+  { name: "nest", retryLimit: 3, retryDelay: 2, expireInSeconds: 300 },
+];
 
 /** The database schema the queue lives in. */
 export const QUEUE_SCHEMA = "pgboss";

@@ -6,12 +6,15 @@
 import * as shopLogo from "@/app/api/shop/logo/route";
 import * as jobLogo from "@/app/api/jobs/[jobId]/logo/route";
 import * as invitations from "@/app/api/shop/invitations/route";
+import * as nests from "@/app/api/jobs/[jobId]/nests/route";
+import * as offcuts from "@/app/api/shop/offcuts/route";
 import * as uploads from "@/app/api/lines/[lineId]/uploads/route";
 import * as hold from "@/app/api/revisions/[revisionId]/hold/route";
 import { emptySurvey } from "@/iso";
 import { sampleDocument } from "../factories";
 import { pngFile } from "./files";
-import { marksOf, signBody, signed, submitted } from "./revision-support";
+import { uploadedP12 } from "../p12-files";
+import { copyOf, marksOf, signBody, signed, submitted } from "./revision-support";
 import { addMember, call, newLine, unique, type Answer, type Call, type TestShop } from "./support";
 
 export interface Recipe {
@@ -48,6 +51,11 @@ const onJob = (more: Omit<Call, "method"> = {}) => foreign(async (shop) => ({ pa
 const onSpool = (more: Omit<Call, "method"> = {}) => foreign(async (shop) => ({ params: { spoolId: (await newLine(shop)).spoolIds[0]! }, ...more }));
 const onSubmitted = (more: Omit<Call, "method"> = {}) => foreign(async (shop) => ({ params: { revisionId: (await submitted(shop)).revisionId }, ...more }));
 const onSigned = (more: Omit<Call, "method"> = {}) => foreign(async (shop) => ({ params: { revisionId: (await signed(shop)).revisionId }, ...more }));
+const nest = async (shop: TestShop) => {
+  const { jobId, spoolId } = await signed(shop);
+  return made(call(nests.POST, { as: shop.owner, method: "POST", params: { jobId }, body: { spoolIds: [spoolId], saw: "Band saw", seconds: 1 } }));
+};
+const onNest = () => foreign(async (shop) => ({ params: { nestId: await nest(shop) } }));
 const reason = { body: { reason: "A reason to read", verified: true } };
 const member = (more: Omit<Call, "method"> = {}) => foreign(async (shop) => ({ params: { membershipId: (await addMember(shop.shopId, "fitter")).membershipId }, ...more }));
 
@@ -79,8 +87,17 @@ export const RECIPES: Readonly<Record<string, Recipe>> = {
   "DELETE /shop/invitations/[invitationId]": foreign(async (shop) => ({ params: { invitationId: await invitation(shop) } })),
   "PUT /shop/logo": own(async () => ({ file: { name: "logo.png", bytes: pngFile(9, 9) } })),
   "DELETE /shop/logo": own(async () => ({})),
+  "GET /shop/certificate": own(async () => ({})),
+  "PUT /shop/certificate": own(async () => ({ body: { p12: uploadedP12({ password: "open it" }).toString("base64"), password: "open it" } })),
+  "POST /shop/certificate": own(async () => ({})),
   "GET /shop/take-outs": own(async () => ({})),
   "POST /shop/take-outs": own(async () => ({ body: { key: "elbow:lr-90:6", valueMm: 230 } })),
+  "GET /shop/offcuts": own(async () => ({})),
+  "POST /shop/offcuts": own(async () => ({ body: { nps: "4", schedule: "STD", material: "ASTM A106 Gr B", lengthMm: 900, heat: "H-9" } })),
+  "DELETE /shop/offcuts/[offcutId]": foreign(async (shop) => {
+    const body = { nps: "4", schedule: "STD", material: "ASTM A106 Gr B", lengthMm: 800, heat: "" };
+    return { params: { offcutId: await made(call(offcuts.POST, { as: shop.owner, method: "POST", body })) } };
+  }),
   "GET /shop/audit": own(async () => ({})),
   "GET /jobs": own(async () => ({})),
   "POST /jobs": own(async () => ({ body: { number: unique("J"), title: "New", client: "", area: "", units: "imperial" } })),
@@ -92,8 +109,23 @@ export const RECIPES: Readonly<Record<string, Recipe>> = {
     await call(jobLogo.PUT, { as: shop.owner, method: "PUT", params: { jobId }, file: { name: "logo.png", bytes: pngFile(11, 11) } });
     return { params: { jobId } };
   }),
+  "GET /jobs/[jobId]/copies": onJob(),
   "GET /jobs/[jobId]/lines": onJob(),
   "POST /jobs/[jobId]/lines": onJob({ body: { number: "L-new", title: "" } }),
+  "GET /jobs/[jobId]/nests": onJob(),
+  "POST /jobs/[jobId]/nests": foreign(async (shop) => {
+    const { jobId, spoolIds } = await newLine(shop);
+    return { params: { jobId }, body: { spoolIds, saw: "Band saw" } };
+  }),
+  "GET /nests/[nestId]": onNest(),
+  "GET /nests/[nestId]/export": onNest(),
+  "POST /nests/[nestId]/cancel": onNest(),
+  "POST /nests/[nestId]/cut": foreign(async (shop) => {
+    const nestId = await nest(shop);
+    const { runNestJob } = await import("@/lib/jobs/nest-job");
+    await runNestJob({ shopId: shop.shopId, nestId });
+    return { params: { nestId }, body: { verified: true } };
+  }),
   "GET /lines/[lineId]": onLine(),
   "PUT /lines/[lineId]": foreign(async (shop) => {
     const number = unique("L");
@@ -112,6 +144,8 @@ export const RECIPES: Readonly<Record<string, Recipe>> = {
   "GET /objects/logo/[key]": foreign(async (shop) => ({ params: { key: await logoKey(shop, 12) } })),
 
   "GET /spools/[spoolId]": onSpool(),
+  "GET /spools/[spoolId]/copies": onSpool(),
+  "POST /copies/withdraw": foreign(async (shop) => ({ body: { copyIds: [await copyOf(shop)] } })),
   "GET /spools/[spoolId]/sheet": onSpool({ query: "?size=A4" }),
   "GET /spools/[spoolId]/bench": onSpool({ query: "?kind=layout" }),
   "GET /spools/[spoolId]/export": onSpool({ query: "?what=cuts&as=csv" }),
