@@ -20,6 +20,12 @@ const PASSES = 2;
 /** A minimum has to be this share lower to count as another one. */
 const LOWER = 0.999;
 
+/** The minimum the first start leads to, without looking further: for trying many variants of one network. */
+export function firstPlaces(network: SurveyNetwork): Minimum {
+  const free = network.marks.filter((mark) => !network.fixed.has(mark));
+  return minimiseSquares(network.observations, free, startPlaces(network), TRY_ROUNDS * 2);
+}
+
 export function bestPlaces(network: SurveyNetwork): Minimum {
   const free = network.marks.filter((mark) => !network.fixed.has(mark));
   const run = (start: ReadonlyMap<string, Vec3>) => minimiseSquares(network.observations, free, start, TRY_ROUNDS);

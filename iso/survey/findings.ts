@@ -1,6 +1,7 @@
 /** What an adjustment says about the readings, in the words of whoever has to go back with the tape. */
 import { INCH_MM } from "../units/length";
 import { adjustNetwork } from "./adjust";
+import { firstPlaces } from "./best-places";
 import { chiSquareLimit, OUTLIER_LIMIT } from "./chi-square";
 import { predictObservation } from "./observations";
 import type { SurveyDocument, SurveyReading } from "./survey-document";
@@ -18,6 +19,8 @@ const FACTORS = [
 ] as const;
 /** A slip of unit explains a reading when it comes this near, in deviations of the reading. */
 const SLIP_WITHIN = 12;
+/** Times the usual limit of the weighted squares that still counts as fitting once a slip is mended: it rounds to its own unit. */
+const SLIP_LEEWAY = 3;
 /** Suspects removed one after the other at most. */
 const MOST_OUTLIERS = 3;
 /** The weighted squares per spare reading from which a slip of unit is looked for. */
@@ -84,19 +87,18 @@ function outlierFindings(document: SurveyDocument, network: SurveyNetwork, adjus
 function unitSlip(document: SurveyDocument, network: SurveyNetwork, readingOf: (id: string) => SurveyReading | undefined): SurveyFinding | null {
   const lengths = network.observations.filter((o) => o.type === "distance" || o.type === "along");
   const ids = [...new Set(lengths.map((o) => o.readingId))];
+  const enough = chiSquareLimit(Math.max(network.observations.length - 3 * network.marks.length, 1)) * SLIP_LEEWAY;
   let best: { finding: SurveyFinding; squares: number } | null = null;
   for (const id of ids) {
-    const rest = { ...network, observations: network.observations.filter((o) => o.readingId !== id) };
-    const without = adjustNetwork(rest);
-    if (without.redundancy > 0 && without.weightedSquares > chiSquareLimit(without.redundancy) * 2) continue;
+    const without = firstPlaces({ ...network, observations: network.observations.filter((o) => o.readingId !== id) });
+    if (without.squares > Math.min(enough, best?.squares ?? enough)) continue;
     for (const observation of lengths.filter((o) => o.readingId === id)) {
-      if (!without.coordinates.has(observation.to)) continue;
-      const expected = predictObservation(observation, without.coordinates).value;
+      const expected = predictObservation(observation, without.places).value;
       const slip = FACTORS.find(({ factor }) => Math.abs(observation.value / factor - expected) < SLIP_WITHIN * observation.sigma);
-      if (slip && (best === null || without.weightedSquares < best.squares)) best = { finding: slipFinding(observation, expected, slip.words, document, readingOf(id)), squares: without.weightedSquares };
+      if (slip) best = { finding: slipFinding(observation, expected, slip.words, document, readingOf(id)), squares: without.squares };
     }
   }
-  return best?.finding ?? allTapesSlip(network);
+  return best?.finding ?? allTapesSlip(network, enough);
 }
 
 function slipFinding(observation: Observation, expected: number, words: string, { units }: SurveyDocument, reading: SurveyReading | undefined): SurveyFinding {
@@ -107,12 +109,11 @@ function slipFinding(observation: Observation, expected: number, words: string, 
   };
 }
 
-function allTapesSlip(network: SurveyNetwork): SurveyFinding | null {
+function allTapesSlip(network: SurveyNetwork, enough: number): SurveyFinding | null {
   if (network.observations.every((o) => o.type === "distance") && network.fixed.size < 2) return null;
   for (const { factor, words } of FACTORS) {
     const scaled = { ...network, observations: network.observations.map((o) => (o.type === "distance" ? { ...o, value: o.value / factor } : o)) };
-    const answer = adjustNetwork(scaled);
-    if (answer.redundancy > 0 && answer.weightedSquares <= chiSquareLimit(answer.redundancy) * 2) {
+    if (firstPlaces(scaled).squares <= enough) {
       return { code: "unit-slip", tone: "wrong", readingIds: network.observations.filter((o) => o.type === "distance").map((o) => o.readingId), sentence: `The tapes do not fit the other readings, but would if all of them were mixed up alike: it looks as if ${words}.` };
     }
   }
