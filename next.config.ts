@@ -7,7 +7,7 @@ const config: NextConfig = {
   poweredByHeader: false,
   productionBrowserSourceMaps: false,
   reactStrictMode: true,
-  serverExternalPackages: ["sequelize", "pg", "pg-hstore", "pg-boss", "pdfkit", "svg-to-pdfkit", "fontkit", "pino", "nodemailer", "exceljs"],
+  serverExternalPackages: ["sequelize", "pg", "pg-hstore", "pg-boss", "pdfkit", "svg-to-pdfkit", "fontkit", "pino", "nodemailer", "exceljs", "node-forge", "@signpdf/signpdf", "@signpdf/utils"],
   // `npm test` checks the types of the whole tree, tests and scripts included; a start need not do it again.
   typescript: { ignoreBuildErrors: true },
   experimental: { proxyClientMaxBodySize: BODY_LIMIT },

@@ -1,5 +1,5 @@
 import { Model, type InferAttributes, type InferCreationAttributes, type Sequelize } from "sequelize";
-import { countColumn, idColumn, integerColumn, modelOptions, textColumn, timeColumn, uuidColumn } from "./columns";
+import { countColumn, idColumn, integerColumn, modelOptions, textColumn, timeColumn, uuidColumn, uuidOrNull } from "./columns";
 
 /** A stored PDF of a revision. Insert-only. */
 export class RevisionSheet extends Model<InferAttributes<RevisionSheet>, InferCreationAttributes<RevisionSheet>> {
@@ -13,6 +13,8 @@ export class RevisionSheet extends Model<InferAttributes<RevisionSheet>, InferCr
   declare auditSeq: number;
   declare auditHash: string;
   declare at: Date;
+  /** The certificate that signed it; null for one not signed. */
+  declare certificateId: string | null;
 
   static bindTo(sequelize: Sequelize): void {
     RevisionSheet.init(
@@ -27,6 +29,7 @@ export class RevisionSheet extends Model<InferAttributes<RevisionSheet>, InferCr
         auditSeq: countColumn("auditSeq"),
         auditHash: textColumn(),
         at: timeColumn(),
+        certificateId: uuidOrNull(),
       },
       modelOptions(sequelize, "RevisionSheet", "revision_sheets"),
     );

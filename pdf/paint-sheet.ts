@@ -4,7 +4,7 @@ import type { PaperBox, SheetPage } from "@/iso";
 import { escapeMetadata } from "./document-metadata";
 import { ItemPainter } from "./item-painter";
 import { logoKind, paintLogo } from "./logo";
-import { addSignatureField, type SignatureFacts } from "./signature-field";
+import { addSignatureField, withoutRoomWord, type SignatureFacts } from "./signature-field";
 
 /** Points (1/72 in) in a millimetre. */
 const POINTS_PER_MM = 72 / 25.4;
@@ -63,9 +63,8 @@ function archival({ logo }: PaintInput): { subset?: "PDF/A-2b" } {
   return logo !== null && logoKind(logo) === "jpeg" ? {} : { subset: "PDF/A-2b" };
 }
 
-/** The signer looks for its room by this word; nobody's title may pretend to be it. */
 function plainInfo<Info extends Record<string, string | Date>>(info: Info): Info {
-  const entries = Object.entries(info).map(([name, value]) => [name, typeof value === "string" ? value.replaceAll("/ByteRange", "ByteRange") : value]);
+  const entries = Object.entries(info).map(([name, value]) => [name, typeof value === "string" ? withoutRoomWord(value) : value]);
   return Object.fromEntries(entries) as Info;
 }
 

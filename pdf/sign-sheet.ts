@@ -61,6 +61,14 @@ export function detachedSignature(bytes: Uint8Array, { key, certificates }: Sign
   return Buffer.from(forge.asn1.toDer(signed.toAsn1()).getBytes(), "binary");
 }
 
+/** Whether the issuer's name comes out as it stands in the certificate: readers find the signer's certificate by it. */
+export function isIssuerKept({ certificates }: SigningKey): boolean {
+  return certificates.slice(0, 1).every((own) => {
+    const written = forge.asn1.toDer(forge.pki.distinguishedNameToAsn1(withReadableIssuer(own).issuer)).getBytes();
+    return forge.asn1.toDer(forge.pki.certificateToAsn1(own)).getBytes().includes(written);
+  });
+}
+
 /**
  * The library reads a name as raw bytes and encodes it once more when it writes, which garbles every name beyond
  * ASCII: then no reader finds the certificate that signed. Names are decoded here before they are written again.

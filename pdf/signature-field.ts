@@ -51,5 +51,10 @@ export function addSignatureField(document: PDFKit.PDFDocument, { name, reason, 
 
 /** pdfkit writes objects of String as text, plain strings as names. */
 function text(value: string): object {
-  return new String(value);
+  return new String(withoutRoomWord(value));
+}
+
+/** The signer looks for its room by this word; nobody's title or name may pretend to be it. */
+export function withoutRoomWord(value: string): string {
+  return value.replaceAll("/ByteRange", "ByteRange");
 }

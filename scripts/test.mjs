@@ -71,7 +71,7 @@ async function main() {
   checkNode();
   const wanted = wantedSuites();
   checkRoom(ROOT, ROOM_MB);
-  await ensureDebianPackages(["postgresql", "chromium", "poppler-utils"]);
+  await ensureDebianPackages(["postgresql", "chromium", "poppler-utils", "qpdf", "openssl"]);
   interrupt.checkpoint();
   await ensurePackages();
   const sum = { passed: 0, failed: 0 };

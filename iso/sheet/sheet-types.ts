@@ -53,6 +53,8 @@ export interface SheetInput {
     readonly rows: readonly RevisionRow[];
     readonly drawnBy: string;
     readonly checkedBy: string;
+    /** In what role they signed; absent before signing, and on sheets signed before roles were kept. */
+    readonly checkedRole?: string;
     /** ISO time of issue, or of rendering for a draft. Handed in; nothing reads a clock. */
     readonly issuedAt: string;
     /** Absolute address of the public status page, or "" for a draft (no QR then). */

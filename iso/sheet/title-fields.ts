@@ -1,6 +1,7 @@
 /** What the title strip says, as labelled fields in reading order. Values are as entered; nothing is judged here. */
 import { formatWeight } from "../units/format";
 import type { UnitSystem } from "../run/document";
+import type { SheetInput } from "./sheet-types";
 import { npsInches, sizeText, type SheetFacts } from "./sheet-facts";
 
 export interface Field {
@@ -41,15 +42,28 @@ export function titleEntries(facts: SheetFacts): TitleEntry[] {
     field("PAINT", entered.paint),
     ...sheetFields(facts),
     field("DRAWN", revision.drawnBy),
-    field("CHECKED", revision.checkedBy),
-    field("ISSUED", issuedText(revision.issuedAt)),
+    ...signOff(revision),
     ...(revision.auditHead === "" ? [] : [field("RECORD", revision.auditHead.slice(0, 12))]),
   ];
 }
 
+/** Who checked it and when; on a signed sheet the sign-off: name, role, revision and time under one heading. No seal, no stamp. */
+function signOff(revision: SheetInput["revision"]): TitleEntry[] {
+  const issued = issuedText(revision.issuedAt);
+  if (revision.checkedRole === undefined) return [field("CHECKED", revision.checkedBy), field("ISSUED", issued)];
+  return [
+    { heading: SIGN_OFF, keeps: 3 },
+    field("SIGNED BY", revision.checkedBy),
+    field("ROLE", revision.checkedRole),
+    field("REV, TIME", `${revision.code}, ${issued}`),
+  ];
+}
+
+const SIGN_OFF = "CHECKED AND SIGNED";
+
 /** What the strip of a small first page carries; the rest follows as a table on the next page. */
 export function stripEntries(facts: SheetFacts): TitleEntry[] {
-  return titleEntries(facts).filter((entry) => "label" in entry && IN_STRIP.has(entry.label));
+  return titleEntries(facts).filter((entry) => ("label" in entry ? IN_STRIP.has(entry.label) : entry.heading === SIGN_OFF));
 }
 
 /** What the strip leaves for the table of data. */
@@ -57,7 +71,7 @@ export function restEntries(facts: SheetFacts): Field[] {
   return titleEntries(facts).flatMap((entry) => ("label" in entry && !IN_STRIP.has(entry.label) ? [entry] : []));
 }
 
-const IN_STRIP = new Set(["CLIENT", "PROJECT", "JOB NO.", "LINE", "SPOOL", "SIZE", "SCHEDULE", "MATERIAL", "UNITS", "SCALE", "NORTH", "DRAWN", "CHECKED", "ISSUED", "RECORD"]);
+const IN_STRIP = new Set(["CLIENT", "PROJECT", "JOB NO.", "LINE", "SPOOL", "SIZE", "SCHEDULE", "MATERIAL", "UNITS", "SCALE", "NORTH", "DRAWN", "CHECKED", "SIGNED BY", "ROLE", "REV, TIME", "ISSUED", "RECORD"]);
 
 /** What a following page repeats. */
 export function shortEntries(facts: SheetFacts): TitleEntry[] {

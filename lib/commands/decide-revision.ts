@@ -30,7 +30,7 @@ export async function holdRevision(context: CommandContext, revisionId: string, 
   if (desk.revision.hold) throw refuseConflict(`Revision ${desk.revision.code} is on HOLD already.`);
   await desk.revision.update({ hold: true, holdReason: reason }, { transaction: context.tx });
   context.audit({ type: "revision.held", data: { ...namedIn(desk), reason } });
-  await tellBench(context, desk, (facts) => heldMail(facts, reason));
+  await tellBench(context, desk, (facts) => heldMail(facts, reason), revisionId);
 }
 
 /** Lets work go on. @throws Refusal 404, 409 when it is not held. */
@@ -49,7 +49,7 @@ export async function voidRevision(context: CommandContext, revisionId: string, 
   assertStep(desk.revision, "void");
   await desk.revision.update({ state: "void", voidReason: reason, hold: false, stateAt: now, stateBy: viewer.personId }, { transaction: tx });
   context.audit({ type: "revision.voided", data: { ...namedIn(desk), reason } });
-  await tellBench(context, desk, (facts) => voidedMail(facts, reason));
+  await tellBench(context, desk, (facts) => voidedMail(facts, reason), revisionId);
 }
 
 /** Closes it as built. @throws Refusal 404, 409 when it is not for fabrication, or held. */
@@ -69,7 +69,7 @@ function assertHoldable({ revision }: DeskCase): void {
   }
 }
 
-/** Those who detail it and those who work from it. */
-async function tellBench(context: CommandContext, desk: DeskCase, mail: (facts: SheetFacts) => MailText): Promise<void> {
-  await tell(context, ["fitter"], [desk.revision.submittedBy], mail(mailFacts(context, desk, `/spools/${desk.spool.id}`)));
+/** Those who detail it, those who work from it, and those who hold copies of `heldId`. */
+async function tellBench(context: CommandContext, desk: DeskCase, mail: (facts: SheetFacts) => MailText, heldId: string | null = null): Promise<void> {
+  await tell(context, ["fitter"], [desk.revision.submittedBy], mail(mailFacts(context, desk, `/spools/${desk.spool.id}`)), heldId);
 }

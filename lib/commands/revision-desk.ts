@@ -3,6 +3,8 @@ import { Op } from "sequelize";
 import { isTransition } from "@/lib/rules/revision-rules";
 import type { Role } from "@/lib/rules/api-types";
 import { STATE_WORDS, type RevisionState, type SheetInput } from "@/iso";
+import { holdersOf } from "@/lib/queries/copies-out";
+import { holderNote } from "@/lib/rules/copies";
 import type { ChainHead } from "@/lib/rules/audit-chain";
 import type { MailText } from "@/lib/rules/mail-texts";
 import type { SheetFacts } from "@/lib/rules/revision-mails";
@@ -12,6 +14,7 @@ import { refuseConflict } from "@/lib/server/errors";
 import { inShop, type ShopMember } from "@/lib/server/scope";
 import { settings } from "@/lib/server/settings";
 import { Line, Membership, Person, Revision, Spool } from "@/models";
+import type { SigningCertificate } from "./keep-certificate";
 import { storeSheet } from "./render-sheet";
 
 export interface DeskCase {
@@ -45,8 +48,16 @@ export function namedIn({ revision, spool }: DeskCase): { revisionId: string; sh
 }
 
 /** Renders and keeps a sheet of the revision (storeSheet), and tells the log its hash. */
-export async function keepSheet(context: CommandContext, desk: DeskCase, kind: "review" | "fabrication", input: SheetInput, contentKey: string, head: ChainHead): Promise<void> {
-  const sha256 = await storeSheet(context, desk.revision, kind, input, contentKey, head);
+export async function keepSheet(
+  context: CommandContext,
+  desk: DeskCase,
+  kind: "review" | "fabrication",
+  input: SheetInput,
+  contentKey: string,
+  head: ChainHead,
+  certificate: SigningCertificate | null = null,
+): Promise<void> {
+  const sha256 = await storeSheet(context, desk.revision, kind, input, contentKey, head, certificate);
   context.audit({ type: "sheet.stored", data: { ...namedIn(desk), kind, sha256 } });
 }
 
@@ -69,10 +80,16 @@ export async function shopMembers(member: ShopMember, tx: CommandContext["tx"]):
   return rows.map((row) => ({ personId: row.personId, role: row.role, email: email.get(row.personId) ?? "" }));
 }
 
-/** Mails everyone whose role is named, and those named themselves, but never the one who acts. */
-export async function tell(context: CommandContext, roles: readonly Role[], people: readonly string[], mail: MailText): Promise<void> {
-  for (const member of await shopMembers(context.viewer, context.tx)) {
-    const meant = roles.includes(member.role) || people.includes(member.personId);
-    if (meant && member.personId !== context.viewer.personId) context.mail({ to: member.email, ...mail });
+/**
+ * Mails everyone whose role is named, those named themselves, and those who hold copies of a revision with what they
+ * hold; but never the one who acts.
+ * @param heldId the revision whose copies count; null = nobody's copies do
+ */
+export async function tell(context: CommandContext, roles: readonly Role[], people: readonly string[], mail: MailText, heldId: string | null = null): Promise<void> {
+  const holders = heldId === null ? new Map<string, never>() : await holdersOf(context.viewer, heldId, context.tx);
+  for (const { personId, role, email } of await shopMembers(context.viewer, context.tx)) {
+    const meant = roles.includes(role) || people.includes(personId) || holders.has(personId);
+    const text = mail.text + holderNote(holders.get(personId) ?? []);
+    if (meant && personId !== context.viewer.personId) context.mail({ to: email, ...mail, text });
   }
 }

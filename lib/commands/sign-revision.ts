@@ -15,6 +15,7 @@ import { inShop } from "@/lib/server/scope";
 import { passwordAgainLimit, countTry, forgetTries } from "@/lib/server/throttle";
 import { isPassword } from "@/lib/server/passwords";
 import { Person, SignOff, WorkEntry, type Revision } from "@/models";
+import { signingCertificate } from "./keep-certificate";
 import { assertStep, deskCase, keepSheet, mailFacts, namedIn, tell, type DeskCase } from "./revision-desk";
 
 /** Counts and checks the password given again. Runs outside the transaction, so that tries are never undone. @throws Refusal 400, 429. */
@@ -35,6 +36,7 @@ export async function signRevision(context: CommandContext, revisionId: string, 
   await assertMayDecide(context, desk);
   assertStep(desk.revision, "for-fabrication");
   const frozen = await frozenInput(viewer, revisionId, tx);
+  const certificate = await signingCertificate(context);
   const accepted = acceptedAll(frozen.input, form.accepted, viewer.name);
   const superseded = await supersedeLive(context, desk);
   await desk.revision.update({ state: "for-fabrication", signedBy: viewer.personId, signedAt: now, stateAt: now, stateBy: viewer.personId }, { transaction: tx });
@@ -42,7 +44,7 @@ export async function signRevision(context: CommandContext, revisionId: string, 
   context.audit({ type: "revision.signed", data: { ...namedIn(desk), inputSha256: frozen.sha256, accepted: names, superseded: superseded?.code ?? null } });
   const head = await context.auditNow();
   const signed = signedInput(context, frozen.input, desk.revision, accepted.map(({ pointId }) => ({ pointId, by: viewer.name })));
-  await keepSheet(context, desk, "fabrication", signed, contentOf(signed), head);
+  await keepSheet(context, desk, "fabrication", signed, contentOf(signed), head, certificate);
   await inShop(viewer).add(SignOff, { revisionId, personId: viewer.personId, decision: "signed", reason: "", accepted: JSON.stringify(names), inputSha256: frozen.sha256, at: now }, tx);
   await tellHolders(context, desk, superseded);
   return { state: "for-fabrication" };
@@ -80,16 +82,16 @@ function signedInput({ viewer, now }: CommandContext, input: SheetInput, revisio
   const rows = input.revision.rows.map((row) =>
     row.code === revision.code ? { ...row, date: dateOf(now), checked: viewer.name, approved: viewer.name } : row,
   );
-  return { ...input, revision: { ...input.revision, state: "for-fabrication", rows, checkedBy: viewer.name, issuedAt: now.toISOString(), accepted } };
+  return { ...input, revision: { ...input.revision, state: "for-fabrication", rows, checkedBy: viewer.name, checkedRole: viewer.role, issuedAt: now.toISOString(), accepted } };
 }
 
 function contentOf(input: SheetInput): string {
   return buildModel(input.document, input.marks, input.takeOuts).spools.find((s) => s.letter === input.spool)?.content ?? "";
 }
 
-/** The bench, the one who submitted it, and everyone who worked from the one before. */
+/** The bench, the one who submitted it, and everyone who worked from the one before or holds copies of it. */
 async function tellHolders(context: CommandContext, desk: DeskCase, superseded: Revision | null): Promise<void> {
   const work = await inShop(context.viewer).all(WorkEntry, { spoolId: desk.spool.id }, context.tx);
   const mail = signedMail(mailFacts(context, desk, `/spools/${desk.spool.id}`), superseded?.code ?? null);
-  await tell(context, ["fitter"], [desk.revision.submittedBy, ...work.map((entry) => entry.by)], mail);
+  await tell(context, ["fitter"], [desk.revision.submittedBy, ...work.map((entry) => entry.by)], mail, superseded?.id ?? null);
 }

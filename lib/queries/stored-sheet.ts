@@ -17,6 +17,8 @@ export interface StoredSheet {
   readonly hold: boolean;
   readonly kind: "review" | "fabrication";
   readonly sha256: string;
+  /** Whether the bytes carry the shop's signature. */
+  readonly signed: boolean;
   readonly bytes: Uint8Array;
   /** A file name for downloads: "sheet-0012-rev-B.pdf". */
   readonly fileName: string;
@@ -40,5 +42,5 @@ export async function storedSheet(viewer: SessionViewer, revisionId: string, kin
   const sheetNumber = sheetNumberText(spool.sheetNumber);
   const { code, state, hold } = revision;
   const fileName = `sheet-${sheetNumber}-rev-${code}${wanted === "review" ? "-review" : ""}.pdf`;
-  return { sheetId: sheet.id, revisionId, sheetNumber, code, state, hold, kind: wanted, sha256: sheet.sha256, bytes, fileName };
+  return { sheetId: sheet.id, revisionId, sheetNumber, code, state, hold, kind: wanted, sha256: sheet.sha256, signed: sheet.certificateId !== null, bytes, fileName };
 }

@@ -21,6 +21,8 @@ const settingsSchema = z.object({
   MAIL_FROM: z.string().min(3).default("Quarterline <quarterline@localhost>"),
   BASE_URL: z.url({ protocol: /^https?$/ }),
   NEXTAUTH_SECRET: z.string().min(16),
+  /** What certificates and their passwords are encrypted under. Lost, they are lost with it. */
+  SEALING_KEY: z.string().min(32),
   /** bcrypt cost: 12 takes about a third of a second; tests lower it. */
   PASSWORD_COST: z.coerce.number().int().min(4).max(15).default(12),
   DEMO: flag,

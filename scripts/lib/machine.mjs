@@ -24,7 +24,9 @@ function onPath(program) {
 const PACKAGES = {
   postgresql: { why: "the database", present: () => postgresPrograms() !== null },
   chromium: { why: "the browser tests", present: () => existsSync("/usr/bin/chromium") },
-  "poppler-utils": { why: "the PDF tests", present: () => onPath("pdftotext") && onPath("pdftoppm") },
+  "poppler-utils": { why: "the PDF tests", present: () => onPath("pdftotext") && onPath("pdftoppm") && onPath("pdfsig") },
+  qpdf: { why: "the PDF tests", present: () => onPath("qpdf") },
+  openssl: { why: "the tests of signatures", present: () => onPath("openssl") },
 };
 
 /**

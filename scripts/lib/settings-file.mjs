@@ -35,14 +35,23 @@ export function writeSettings(settings) {
   renameSync(`${file()}.new`, file());
 }
 
+const secret = (bytes = 24) => randomBytes(bytes).toString("base64url");
+
+/** Folders made before certificates were kept have no key to seal them under: they get one. */
+function withSealingKey(settings) {
+  if (settings.sealingKey) return settings;
+  settings.sealingKey = secret(32);
+  writeSettings(settings);
+  return settings;
+}
+
 /** Makes the data folder and, at the first time, the settings. @returns {Record<string, any>} */
 export function ensureSettings() {
   const folder = dataFolder();
   mkdirSync(folder, { recursive: true, mode: 0o711 });
   mkdirSync(path.join(folder, "logs"), { recursive: true, mode: 0o700 });
   const known = readSettings();
-  if (known) return known;
-  const secret = (bytes = 24) => randomBytes(bytes).toString("base64url");
+  if (known) return withSealingKey(known);
   const made = {
     superPassword: secret(),
     ownerPassword: secret(),
@@ -50,6 +59,7 @@ export function ensureSettings() {
     s3AccessKeyId: secret(15),
     s3SecretAccessKey: secret(30),
     nextAuthSecret: secret(32),
+    sealingKey: secret(32),
   };
   writeSettings(made);
   say("made secrets of its own (settings.json in the data folder)");
@@ -132,6 +142,7 @@ export function environmentOf(settings) {
     BASE_URL: given("BASE_URL", settings.baseUrl),
     NEXTAUTH_URL: given("BASE_URL", settings.baseUrl),
     NEXTAUTH_SECRET: given("NEXTAUTH_SECRET", settings.nextAuthSecret),
+    SEALING_KEY: given("SEALING_KEY", settings.sealingKey),
     PORT: String(settings.webPort ?? ""),
     DEMO: given("DEMO", localDatabase && localObjects && localMail && !process.env.BASE_URL ? "1" : "0"),
     QUARTERLINE_DATA_DIR: dataFolder(),
@@ -145,7 +156,7 @@ export function environmentOf(settings) {
 export function localEnvironment() {
   const settings = readSettings();
   if (!settings?.databasePort && !process.env.DATABASE_URL) throw new PlainError("There is no local database yet. Run `npm start` once, or set DATABASE_URL and MIGRATION_DATABASE_URL.");
-  return environmentOf(settings ?? {});
+  return environmentOf(settings ? withSealingKey(settings) : {});
 }
 
 /** The superuser's address of the local cluster. */

@@ -83,6 +83,7 @@ export async function startThrowAwayServices() {
       BASE_URL: "http://127.0.0.1:3999",
       NEXTAUTH_URL: "http://127.0.0.1:3999",
       NEXTAUTH_SECRET: secret(),
+      SEALING_KEY: secret() + secret(),
       LOG_LEVEL: "silent",
     },
     stop: async () => {

@@ -1,4 +1,6 @@
 /** Spools brought to a state through the routes, as people of the shop would. */
+import * as sheetRoute from "@/app/api/revisions/[revisionId]/sheet/route";
+import * as copiesRoute from "@/app/api/spools/[spoolId]/copies/route";
 import * as signRoute from "@/app/api/revisions/[revisionId]/sign/route";
 import * as submitRoute from "@/app/api/spools/[spoolId]/submit/route";
 import { buildModel, type RunDocument } from "@/iso";
@@ -28,6 +30,15 @@ export async function signed(shop: TestShop, document?: RunDocument): Promise<Te
   const answer = await call(signRoute.POST, { as: shop.inspector, method: "POST", params: { revisionId: revision.revisionId }, body: signBody });
   if (answer.status >= 300) throw new Error(`sign answered ${answer.status} ${answer.text}`);
   return revision;
+}
+
+/** Prints the first spool's signed sheet as its owner. @returns the copy's id. */
+export async function copyOf(shop: TestShop): Promise<string> {
+  const { revisionId, spoolId } = await signed(shop);
+  const printed = await call(sheetRoute.GET, { as: shop.owner, params: { revisionId }, query: "?copy=1" });
+  if (printed.status !== 200) throw new Error(`print answered ${printed.status} ${printed.text}`);
+  const copies = await call(copiesRoute.GET, { as: shop.owner, params: { spoolId } });
+  return copies.json[0].id as string;
 }
 
 /** A piece of the line's first spool and a weld of it, as work entries name them. */
