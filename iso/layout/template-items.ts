@@ -5,7 +5,7 @@ import { SAME_PAPER_MM } from "../geometry/tolerances";
 import type { PaperBox, PaperPoint } from "../geometry/types";
 import { clipPolyline, clipSegment } from "./clip";
 import { FOOT_MM, HEAD_MM, type Template } from "./template";
-import type { Tile } from "./tile";
+import { OVERLAP_MM, type Tile } from "./tile";
 import type { WrapLine } from "./wrap";
 
 const CUT_WIDTH = 0.35;
@@ -28,7 +28,7 @@ export function templateItems(template: Template, tile: Tile, measure: MeasureTe
     ...outline(template, shown), ...hatch(template, shown), ...lengthwise(template, shown), ...acrossItems(template, shown),
     ...clipPolyline(closedCut(template), shown).map((part) => pathItem("symbol", null, polygonSegments(part, false), { stroke: "ink", widthMm: CUT_WIDTH })),
     ...joins(template, tile),
-    ...lineNames(template, shown, measure), ...words(template, shown, measure),
+    ...lineNames(template, shown, measure), ...words(template, tile, measure),
   ];
 }
 
@@ -111,14 +111,21 @@ function joins({ widthMm, heightMm }: Template, { joinsX, joinsY, shown }: Tile)
   ];
   const upright = joinsX.flatMap((x) => [
     ...drawn([x, 0], [x, heightMm], shown, 0.2, "grey", JOIN_DASH),
-    ...[0.25, 0.75].flatMap((t) => cross([x, shown.minY + (shown.maxY - shown.minY) * t])),
+    ...crossesAt(shown.maxY - shown.minY).flatMap((t) => cross([x, shown.minY + (shown.maxY - shown.minY) * t])),
   ]);
   const level = joinsY.flatMap((y) => [
     ...drawn([0, y], [widthMm, y], shown, 0.2, "grey", JOIN_DASH),
-    ...[0.25, 0.75].flatMap((t) => cross([shown.minX + (shown.maxX - shown.minX) * t, y])),
+    ...crossesAt(shown.maxX - shown.minX).flatMap((t) => cross([shown.minX + (shown.maxX - shown.minX) * t, y])),
   ]);
   return [...upright, ...level];
 }
+
+/** Where crosses stand along a join, as shares of it. */
+function crossesAt(length: number): readonly number[] {
+  return length < SHORT_JOIN ? [0.5] : [0.25, 0.75];
+}
+
+const SHORT_JOIN = 60;
 
 /** Numbers under the base line, and names of the quarters up the side that is cut away. */
 function lineNames(template: Template, shown: PaperBox, measure: MeasureText): DisplayItem[] {
@@ -137,24 +144,42 @@ function numberItems({ baseY, widthMm }: Template, line: WrapLine, shown: PaperB
 }
 
 function nameItems(template: Template, line: WrapLine, shown: PaperBox, measure: MeasureText): DisplayItem[] {
-  if (line.name === "") return [];
-  const foot = (template.isClosed ? Math.min(...template.cut.map(([, y]) => y)) : cutY(template, line.xMm) - HATCH_DEPTH) - 1.5;
-  const tall = measure(line.name, CAP, "bold");
-  const isRoom = foot - tall >= shown.minY && foot <= shown.maxY;
+  const cut = template.isClosed ? Math.min(...template.cut.map(([, y]) => y)) : cutY(template, line.xMm);
+  const above = cut - HATCH_DEPTH - 1.5;
+  if (line.name === "") return aboveNumber(template, line, above, shown, measure);
+  const tops = above <= shown.maxY ? above - shown.minY : 0;
+  const start = Math.max(cut + 2, shown.minY + 1);
+  const below = template.isClosed ? 0 : Math.min(template.baseY, shown.maxY) - 1 - start;
+  const room = Math.max(tops, below);
+  const text = [line.name, line.name.split(" / ")[0] ?? ""].map((name) => [line.number, name].filter(Boolean).join(" ")).find((one) => measure(one, CAP, "bold") <= room);
+  if (text === undefined) return [];
+  const tall = measure(text, CAP, "bold");
+  const foot = tall <= tops ? above : start + tall;
   const crowded = template.lines.some((other) => other.name !== "" && other.xMm > line.xMm && other.xMm - line.xMm < NAMES_APART);
   const right = !crowded && line.xMm + 1 + CAP <= Math.min(shown.maxX, template.widthMm);
-  return isRoom ? [textItem("label", null, [right ? line.xMm + 1 + CAP : line.xMm - 1, foot], line.name, { capMm: CAP, face: "bold", rotateRad: READ_UP })] : [];
+  return [textItem("label", null, [right ? line.xMm + 1 + CAP : line.xMm - 1, foot], text, { capMm: CAP, face: "bold", rotateRad: READ_UP })];
 }
+
+/** The number of a plain station at the cut too, where the stations leave room for it. */
+function aboveNumber({ lines, widthMm }: Template, line: WrapLine, y: number, shown: PaperBox, measure: MeasureText): DisplayItem[] {
+  const half = measure(line.number, CAP, "bold") / 2 + 0.3;
+  const isRoom = widthMm / Math.max(1, lines.length) > NUMBERS_FROM && y - CAP >= shown.minY && y <= shown.maxY && line.xMm - half >= shown.minX && line.xMm + half <= shown.maxX;
+  const crowded = lines.some((other) => other.name !== "" && Math.abs(other.xMm - line.xMm) < NAMES_APART);
+  return line.number !== "" && isRoom && !crowded ? [textItem("label", null, [line.xMm, y], line.number, { capMm: CAP, face: "bold", anchor: "middle" })] : [];
+}
+
+/** Stations closer than this have their numbers under the base line only, mm. */
+const NUMBERS_FROM = 8;
 
 /** Two names side by side between their lines take this much, mm. */
 const NAMES_APART = 2 * CAP + 3;
 
 /** What to keep and what to cut away, where each is whole within the window. */
-function words(template: Template, shown: PaperBox, measure: MeasureText): DisplayItem[] {
+function words(template: Template, { shown, column }: Tile, measure: MeasureText): DisplayItem[] {
   const { baseY, heightMm, widthMm, isClosed } = template;
-  const left = Math.max(0, shown.minX) + 2;
+  const left = Math.max(0, shown.minX) + (column > 1 ? OVERLAP_MM : 0) + 2;
   const room = Math.min(widthMm, shown.maxX) - left - 2;
-  const footY = heightMm - 2;
+  const footY = heightMm - 1.6;
   const items: DisplayItem[] = [];
   if (footY <= shown.maxY && baseY >= shown.minY) {
     const text = [template.keep && `KEEP: ${template.keep}`, template.base].filter(Boolean).join(". ");

@@ -30,6 +30,7 @@ export interface Template {
 
 /** Paper above the highest point of the cut, for the names of the lines. */
 export const HEAD_MM = 27;
+const LOW_HEAD_MM = 14;
 /** Paper under the base line: station numbers, and what to keep. */
 export const FOOT_MM = 14;
 /** Paper between the cut's lowest point and the base line, where the pipe has room for it. */
@@ -101,8 +102,8 @@ export function holeTemplate(hole: {
   const widthMm = Math.max(...across, 0) + HOLE_MARGIN - left;
   const baseY = top - Math.min(...along, 0) + HOLE_MARGIN;
   return {
-    title: hole.title, facts: hole.facts, widthMm, heightMm: baseY + FOOT_MM, cut: across.map((x, i): PaperPoint => [x - left, top - along[i]!]), isClosed: true, baseY,
-    lines: [{ xMm: -left, number: "", name: "BRANCH SIDE QUARTER LINE", kind: "quarter" }], slits: [],
+    title: hole.title, facts: hole.facts, widthMm, heightMm: baseY + HOLE_FOOT, cut: across.map((x, i): PaperPoint => [x - left, top - along[i]!]), isClosed: true, baseY,
+    lines: [{ xMm: -left, number: "", name: "QUARTER LINE", kind: "quarter" }], slits: [],
     across: [{ y: top, name: "WORKING POINT" }],
     keep: "", waste: "HOLE", base: "Square round the run",
   };
@@ -110,8 +111,9 @@ export function holeTemplate(hole: {
 
 const HOLE_STEPS = 720;
 /** Paper round the hole, and more above it for the quarter line's name. */
-const HOLE_MARGIN = 12;
-const HOLE_HEAD = 36;
+const HOLE_MARGIN = 9;
+const HOLE_HEAD = 17;
+const HOLE_FOOT = 7;
 
 /**
  * An elbow's cut: arcs (R + OD/2·cos φ)·θ from the uncut face along the surface, slit between the stations so that each
@@ -120,9 +122,11 @@ const HOLE_HEAD = 36;
  */
 export function elbowTemplate(elbow: PipeEnd & { readonly radiusMm: number; readonly angleRad: number; readonly face: string }): Template {
   const { odMm, paperMm, radiusMm, angleRad } = elbow;
-  const { backMm } = elbowMarks(radiusMm, odMm, angleRad);
-  const y = (phi: number) => HEAD_MM + backMm - (radiusMm + (odMm / 2) * Math.cos(phi)) * angleRad;
-  const end = pipeTemplate(elbow, y, HEAD_MM + backMm, ["BACK", "SIDE", "THROAT", "SIDE"]);
+  const { backMm, throatMm } = elbowMarks(radiusMm, odMm, angleRad);
+  // Where the throat leaves room for the names of the lines, the paper above the cut is spared.
+  const head = throatMm > HEAD_MM ? LOW_HEAD_MM : HEAD_MM;
+  const y = (phi: number) => head + backMm - (radiusMm + (odMm / 2) * Math.cos(phi)) * angleRad;
+  const end = pipeTemplate(elbow, y, head + backMm, ["BACK", "SIDE", "THROAT", "SIDE"]);
   const stations = end.lines.filter((line) => line.kind !== "top").map((line) => line.xMm);
   return {
     ...end, slits: stations.slice(1).map((x, i) => (x + stations[i]!) / 2), base: elbow.face,

@@ -49,7 +49,7 @@ export function legsShape(turn: Turn, units: UnitSystem): Shape {
     labels: [
       { at: paperScale(paperAdd(a, back), 0.5), text: formatTapeLength(turn.legInMm, units), face: "bold" },
       { at: paperScale(paperAdd(b, front), 0.5), text: formatTapeLength(turn.legOutMm, units), face: "bold" },
-      { at: paperScale(paperAdd(a, b), 0.5), text: `DIAGONAL ${formatTapeLength(turn.diagonalMm, units)}`, face: "bold" },
+      { at: paperScale(paperAdd(a, b), 0.5), text: formatTapeLength(turn.diagonalMm, units), face: "bold" },
       { at: [0, 0], text: formatAngleDeg(turn.angleRad), face: "bold" },
     ],
   };

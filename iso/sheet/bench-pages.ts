@@ -118,7 +118,7 @@ function pictureItems(turn: Turn, units: UnitSystem, box: PaperBox, measure: Mea
   const roll = { ...box, minX: fitting.maxX };
   return [
     boxOutline(box, { widthMm: EDGE_LINE }), lineFrom([middle, box.minY], [middle, box.maxY], RULE_LINE),
-    head(legs.minX, "LEGS, centre lines"), head(fitting.minX, turn.kind === "trimmed" ? "KEEP the solid part" : turn.kind === "mitre" ? "CUTS" : "FITTING"),
+    head(legs.minX, "LEGS, diagonal dashed"), head(fitting.minX, turn.kind === "trimmed" ? "KEEP the solid part" : turn.kind === "mitre" ? "CUTS" : "FITTING"),
     ...shapeItems(legsShape(turn, units), under(legs), measure), ...shapeItems(fittingShape(turn, units), under(fitting), measure),
     ...(hasRoll ? [lineFrom([roll.minX, box.minY], [roll.minX, box.maxY], RULE_LINE), head(roll.minX, "ROLL, along flow"), ...rollItems(turn.roll!.angleRad, under(roll), measure)] : []),
   ];

@@ -32,7 +32,7 @@ const PAD = 1.6;
 const MAP = 27;
 /** Room of the proof bar with its figures. */
 const BAR_HEIGHT = 9.6;
-const PROOF = "Print at 100 %, never fitted to the page. Check both edges of the bar with a tape before cutting.";
+const PROOF = "Print at 100 %, never fitted to the page. Check the bar by tape first.";
 
 /** The strip is as high as the longest of the texts it will carry. */
 export function templateFrame(facts: SheetFacts, contents: readonly { readonly facts: readonly string[] }[], measure: MeasureText): TemplateFrame {
