@@ -1,5 +1,6 @@
 "use client";
 import { useState } from "react";
+import { NestList } from "@/components/nest/nest-list";
 import { ChoiceRow } from "@/components/ui/choice-row";
 import { useApi } from "@/components/ui/fetcher";
 import { countText } from "@/components/ui/format";
@@ -18,13 +19,13 @@ export function JobPage({ jobId }: { readonly jobId: string }) {
   const job = useApi<JobDetail>(`/api/jobs/${jobId}`);
   const viewer = useViewer();
   const role = viewer.data?.role ?? "fitter";
-  const [view, setView] = useState<"lines" | "settings">("lines");
+  const [view, setView] = useState<"lines" | "plans" | "settings">("lines");
   return (
     <Loaded api={job} page label="Loading the job" lines={8}>
       {(data) => (
         <>
           <JobHead job={data} />
-          {canDo(role, "lines.read") ? (
+          {canDo(role, "nests.read") ? (
             <div className="mb-5" data-screen-only>
               <ChoiceRow
                 label="Part of the job"
@@ -32,13 +33,16 @@ export function JobPage({ jobId }: { readonly jobId: string }) {
                 onChange={setView}
                 choices={[
                   { value: "lines", label: `Lines (${data.lines.length})` },
-                  { value: "settings", label: "Job settings" },
+                  { value: "plans", label: "Cutting plans" },
+                  ...(canDo(role, "lines.read") ? [{ value: "settings" as const, label: "Job settings" }] : []),
                 ]}
               />
             </div>
           ) : null}
           {view === "lines" ? (
             <LineList job={data} role={role} />
+          ) : view === "plans" ? (
+            <NestList job={data} role={role} />
           ) : (
             <JobSettingsView job={data} editable={canDo(role, "lines.change")} />
           )}

@@ -13,6 +13,8 @@ import { Section } from "@/components/ui/section";
 import { useFormSend } from "@/components/ui/use-form-send";
 import type { ShopSettings } from "@/lib/rules/api-types";
 import { stockRowSchema, type ShopSettingsForm } from "@/lib/rules/forms";
+import { NestingView } from "./nesting-view";
+import { OffcutView } from "./offcut-view";
 import { useShopSettings } from "./use-shop-settings";
 
 type StockRow = ShopSettings["stock"][number];
@@ -26,17 +28,21 @@ function stockSchema(units: UnitSystem) {
       material: z.string(),
       length: z.string(),
       quantity: z.string(),
+      cost: z.string(),
+      heat: z.string(),
     })
     .transform((typed, context): StockRow => {
       const length = parseLength(typed.length, units);
       if (!length.ok) context.addIssue({ code: "custom", path: ["length"], message: length.message });
-      const quantity = typed.quantity.trim() === "" ? Number.NaN : Number(typed.quantity);
+      const quantity = typed.quantity.trim() === "" ? null : Number(typed.quantity);
       const checked = stockRowSchema.safeParse({
         nps: typed.nps,
         schedule: typed.schedule,
         material: typed.material,
         lengthMm: length.ok ? length.mm : 1,
         quantity,
+        ...(typed.cost.trim() === "" ? {} : { cost: Number(typed.cost) }),
+        ...(typed.heat.trim() === "" ? {} : { heat: typed.heat }),
       });
       if (checked.success) return checked.data;
       for (const issue of checked.error.issues)
@@ -58,11 +64,17 @@ const FIELDS = ["stock"] as const;
 export function StockView({ owner }: { readonly owner: boolean }) {
   const { shop, patch } = useShopSettings();
   return (
-    <Section title="Stock lengths on the rack">
-      <Loaded api={shop} label="Loading stock">
-        {(data) => <StockForm shop={data} owner={owner} onSave={(change) => patch(change, "Stock saved.")} />}
-      </Loaded>
-    </Section>
+    <Loaded api={shop} label="Loading stock">
+      {(data) => (
+        <>
+          <Section title="Stock lengths on the rack">
+            <StockForm shop={data} owner={owner} onSave={(change) => patch(change, "Stock saved.")} />
+          </Section>
+          <OffcutView shop={data} owner={owner} />
+          <NestingView shop={data} owner={owner} onSave={(change) => patch(change, "Saved.")} />
+        </>
+      )}
+    </Loaded>
   );
 }
 
@@ -79,17 +91,21 @@ function StockForm({
   const typed = shop.stock.map((row) => ({
     ...row,
     length: formatLength(row.lengthMm, units),
-    quantity: String(row.quantity),
+    quantity: row.quantity === null ? "" : String(row.quantity),
+    cost: row.cost === undefined ? "" : String(row.cost),
+    heat: row.heat ?? "",
   }));
   const { register, control, handleSubmit, setError, formState } = useForm<StockInput, unknown, StockOutput>({
     resolver: zodResolver(stockSchema(units)),
     values: {
-      stock: typed.map(({ nps, schedule, material, length, quantity }) => ({
+      stock: typed.map(({ nps, schedule, material, length, quantity, cost, heat }) => ({
         nps: nps as StockInput["stock"][number]["nps"],
         schedule,
         material,
         length,
         quantity,
+        cost,
+        heat,
       })),
     },
     resetOptions: { keepDirtyValues: true },
@@ -104,7 +120,9 @@ function StockForm({
           schedule: pipe.schedule,
           material: pipe.material,
           length: units === "metric" ? "6000" : "20'",
-          quantity: "1",
+          quantity: "",
+          cost: "",
+          heat: "",
         })
       }
     >
@@ -140,7 +158,7 @@ function StockForm({
               key={row.id}
               role="group"
               aria-label={`Stock row ${n + 1}`}
-              className="grid grid-cols-2 items-start gap-3 border-b border-hair pb-4 lg:grid-cols-[8rem_8rem_1fr_10rem_7rem_auto]"
+              className="grid grid-cols-2 items-start gap-3 border-b border-hair pb-4 lg:grid-cols-[7rem_6rem_1fr_8rem_8rem_7rem_8rem_auto]"
             >
               <Select
                 label="Size"
@@ -168,10 +186,26 @@ function StockForm({
               />
               <TextField
                 label="Quantity"
+                hint="Empty: as many as wanted"
                 figure
                 inputMode="numeric"
                 error={errors?.quantity?.message}
                 {...register(`stock.${n}.quantity`)}
+              />
+              <TextField
+                label="Cost of one"
+                hint="Your own money"
+                figure
+                inputMode="decimal"
+                error={errors?.cost?.message}
+                {...register(`stock.${n}.cost`)}
+              />
+              <TextField
+                label="Heat"
+                hint="If all have one"
+                figure
+                error={errors?.heat?.message}
+                {...register(`stock.${n}.heat`)}
               />
               {owner ? (
                 <Button
