@@ -1,6 +1,6 @@
 "use client";
 import { useDeferredValue, useMemo, useState, type ChangeEvent } from "react";
-import { closeBetween, type Model, type Nps, type RunDocument, type TakeOutWord } from "@/iso";
+import { closeBetween, type Model, type Nps, type RunDocument, type SurveyEndResult, type TakeOutWord } from "@/iso";
 import { Button } from "@/components/ui/button";
 import { Dialog, DialogActions } from "@/components/ui/dialog";
 import { Select, TextField } from "@/components/ui/field";
@@ -11,6 +11,7 @@ import { EMPTY_END, endFromPoint, radiusHint, readClosingForm, sizeAfter, type C
 import { planInsert, type InsertStamp } from "./closing-insert";
 import { pointPlace } from "./document-edits";
 import { itemEcho } from "./item-text";
+import { endFromSurvey, surveyedOptions, takenFrom, useSurveyedEnds } from "./surveyed-ends";
 
 export interface CloseDialogProps {
   readonly open: boolean;
@@ -19,6 +20,10 @@ export interface CloseDialogProps {
   /** Row to start from. */
   readonly pointId: string | null;
   readonly stamp: () => InsertStamp;
+  /** Line whose surveyed ends may be taken; none without. */
+  readonly lineId?: string;
+  /** Surveyed ends to start from, as choices. */
+  readonly asked?: readonly [string, string] | null;
   /** null when the reader may not edit. */
   readonly onInsert: ((document: RunDocument) => void) | null;
   readonly onClose: () => void;
@@ -49,6 +54,13 @@ function ClosingView(props: CloseDialogProps) {
   const { model, takeOuts } = props;
   const { units } = model.document.settings;
   const [form, setForm] = useState<ClosingForm>(() => firstForm(props));
+  const surveyed = useSurveyedEnds(props.lineId ?? null);
+  const [taken, setTaken] = useState(false);
+  const asked = !taken && surveyed.length > 0 ? (props.asked?.map((choice) => endFromSurvey(surveyed, choice, units)) ?? null) : null;
+  if (asked) {
+    setTaken(true);
+    setForm((now) => ({ ...now, end0: { ...now.end0, ...asked[0] }, end1: { ...now.end1, ...asked[1] } }));
+  }
   const settled = useDeferredValue(form);
   const read = useMemo(() => readClosingForm(settled, units, takeOuts), [settled, units, takeOuts]);
   const answer = useMemo(() => (read.ok ? closeBetween(read.input) : null), [read]);
@@ -61,8 +73,8 @@ function ClosingView(props: CloseDialogProps) {
     <>
       <p className="mb-4 text-soft">Two fixed pipe ends, one elbow cut at each, one straight pipe between. With these radii there is at most one such closing.</p>
       <div className="grid gap-6 lg:grid-cols-2">
-        <EndFields title="End 0" name="end0" side={0} end={form.end0} form={form} messages={messages} onChange={setEnd("end0")} {...props} />
-        <EndFields title="End 1" name="end1" side={1} end={form.end1} form={form} messages={messages} onChange={setEnd("end1")} {...props} />
+        <EndFields title="End 0" name="end0" side={0} end={form.end0} form={form} messages={messages} onChange={setEnd("end0")} surveyed={surveyed} {...props} />
+        <EndFields title="End 1" name="end1" side={1} end={form.end1} form={form} messages={messages} onChange={setEnd("end1")} surveyed={surveyed} {...props} />
       </div>
       <div className="mt-4 grid grid-cols-2 gap-4 sm:grid-cols-4">
         <Select label="Size" options={NPS_OPTIONS} value={form.nps} onChange={(event) => setForm((now) => ({ ...now, nps: event.target.value as Nps }))} />
@@ -100,24 +112,29 @@ interface EndFieldsProps extends CloseDialogProps {
   readonly form: ClosingForm;
   readonly messages: FieldMessages;
   readonly onChange: (end: EndForm) => void;
+  readonly surveyed: readonly SurveyEndResult[];
 }
 
-function EndFields({ title, name, side, end, form, messages, onChange, model, takeOuts }: EndFieldsProps) {
+function EndFields({ title, name, side, end, form, messages, onChange, model, takeOuts, surveyed }: EndFieldsProps) {
   const { units } = model.document.settings;
-  const rows = useMemo(() => rowOptions(model), [model]);
-  const set = (field: keyof EndForm) => (event: ChangeEvent<HTMLInputElement | HTMLSelectElement>) => onChange({ ...end, [field]: event.target.value });
+  const rows = useMemo(() => [...rowOptions(model), ...surveyedOptions(surveyed)], [model, surveyed]);
+  // A number typed over a surveyed one was not measured there.
+  const set = (field: keyof EndForm) => (event: ChangeEvent<HTMLInputElement | HTMLSelectElement>) => onChange({ ...end, [field]: event.target.value, ...(["e", "n", "u", "direction"].includes(field) ? { surveyed: undefined } : {}) });
   const takeRow = (event: ChangeEvent<HTMLSelectElement>): void => {
-    const taken = event.target.value === "" ? null : endFromPoint(model, event.target.value, side);
-    onChange(taken ? { ...end, ...taken } : { ...end, pointId: "" });
+    const choice = event.target.value;
+    const measured = endFromSurvey(surveyed, choice, units);
+    if (measured) return onChange({ ...end, ...measured });
+    const taken = choice === "" ? null : endFromPoint(model, choice, side);
+    onChange(taken ? { ...end, ...taken, surveyed: undefined } : { ...end, pointId: "", surveyed: undefined });
   };
   const text = (field: keyof EndForm, label: string, hint?: string, placeholder?: string) => (
-    <TextField label={label} hint={hint} figure placeholder={placeholder} value={end[field]} onChange={set(field)} error={messages[`${name}.${field}`]} />
+    <TextField label={label} hint={hint} figure placeholder={placeholder} value={String(end[field] ?? "")} onChange={set(field)} error={messages[`${name}.${field}`]} />
   );
   return (
     <fieldset className="min-w-0">
       <legend className="mb-2 font-bold">{title}</legend>
       <div className="space-y-3">
-        <Select label="Taken from" options={rows} value={end.pointId} onChange={takeRow} />
+        <Select label="Taken from" options={rows} value={takenFrom(end)} onChange={takeRow} />
         <div className="grid grid-cols-3 gap-2">
           {text("e", "E", undefined, "0")}
           {text("n", "N", undefined, "0")}

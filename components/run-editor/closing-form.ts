@@ -17,6 +17,8 @@ export interface EndForm {
   readonly straight: string;
   readonly radius: "LR" | "SR" | "own";
   readonly ownRadius: string;
+  /** The end of the survey it was taken from and how well that is known, two deviations; absent when it was not. */
+  readonly surveyed?: { readonly endId: string; readonly withinMm: number } | undefined;
 }
 
 export interface ClosingForm {
@@ -58,7 +60,8 @@ export function readClosingForm(form: ClosingForm, units: UnitSystem, takeOuts: 
     tangents: { end0Mm: first.straightMm, end1Mm: second.straightMm },
     rootGapMm, thetaMaxRad: Math.PI / 2, units, odMm,
   };
-  return { ok: true, input };
+  const withinMm = Math.hypot(form.end0.surveyed?.withinMm ?? 0, form.end1.surveyed?.withinMm ?? 0);
+  return { ok: true, input: withinMm > 0 ? { ...input, toleranceMm: withinMm } : input };
 }
 
 interface ReadEnd {

@@ -63,7 +63,7 @@ function between(form: ClosingForm, found: ClosingFound, input: CloseBetweenInpu
   const after = points[keepTo];
   const place = positionOf(model, after?.id);
   const rest = after && place ? [{ ...after, offset: offsetBetween(last, place, document.settings.units) }, ...points.slice(keepTo + 1)] : [];
-  const tail = to === null ? [endPoint(input, last, document.settings.units, stamp)] : [];
+  const tail = to === null ? [endPoint(form.end1, input, last, document.settings.units, stamp)] : [];
   const head = points.slice(0, keepFrom).map((point, i) => (i === 0 && from === 0 ? outsideEnd(model, point, "out") : point));
   const kept = rest.map((point, i) => (i === 0 && rest.length === 1 ? outsideEnd(model, point, "in") : point));
   const next = withPoints(document, runId, () => [...head, ...bends, ...tail, ...kept]);
@@ -110,9 +110,9 @@ function fromNothing(form: ClosingForm, found: ClosingFound, input: CloseBetween
   const main = document.runs[0];
   if (!main) return no("This line has no run.");
   const start = input.end0.position;
-  const first = { ...newPoint(stamp.ids[2] ?? "closing-start", offsetBetween([0, 0, 0], start, units), EXISTING, stamp), places: { out: "field" as const } };
+  const first = { ...asMeasured(newPoint(stamp.ids[2] ?? "closing-start", offsetBetween([0, 0, 0], start, units), EXISTING, stamp), form.end0), places: { out: "field" as const } };
   const last = found.points[found.points.length - 1] ?? start;
-  const points = [first, ...bendPoints(form, found, start, units, stamp), endPoint(input, last, units, stamp)];
+  const points = [first, ...bendPoints(form, found, start, units, stamp), endPoint(form.end1, input, last, units, stamp)];
   return { ok: true, document: withPoints(document, main.id, () => points), words: "The closing becomes this line's run, between two existing ends." };
 }
 
@@ -126,8 +126,13 @@ function bendPoints(form: ClosingForm, found: ClosingFound, before: Vec3, units:
   });
 }
 
-function endPoint(input: CloseBetweenInput, from: Vec3, units: UnitSystem, stamp: InsertStamp): Point {
-  return { ...newPoint(stamp.ids[3] ?? "closing-end", offsetBetween(from, input.end1.position, units), EXISTING, stamp), places: { in: "field" as const } };
+function endPoint(end: EndForm, input: CloseBetweenInput, from: Vec3, units: UnitSystem, stamp: InsertStamp): Point {
+  return { ...asMeasured(newPoint(stamp.ids[3] ?? "closing-end", offsetBetween(from, input.end1.position, units), EXISTING, stamp), end), places: { in: "field" as const } };
+}
+
+/** A point at a surveyed end says that it was measured, and how well. */
+function asMeasured(point: Point, end: EndForm): Point {
+  return end.surveyed ? { ...point, provenance: { ...point.provenance, kind: "measured", toleranceMm: end.surveyed.withinMm } } : point;
 }
 
 function newPoint(id: string, offset: Offset, item: Item, stamp: InsertStamp): Point {

@@ -2,7 +2,7 @@
 import Link from "next/link";
 import type { RunDocument } from "@/iso";
 import { ExchangeButton } from "@/components/exchange/exchange-button";
-import { Button } from "@/components/ui/button";
+import { Button, ButtonLink } from "@/components/ui/button";
 import { usePageTitle } from "@/components/ui/use-page-title";
 import type { LineDetail } from "@/lib/rules/api-types";
 import { useEditor } from "./editor-context";
@@ -62,6 +62,7 @@ export function EditorHead({ line, document, save, canUndo, canRedo, look, onLoo
           <Button onClick={() => onPanel("settings")}>Line settings</Button>
           <Button onClick={() => onLook(look === "shape" ? "isometric" : "shape")} aria-pressed={look === "shape"}>{look === "shape" ? "Isometric" : "True shape"}</Button>
           <Button onClick={() => onLook(look === "sheet" ? "isometric" : "sheet")} aria-pressed={look === "sheet"}>{look === "sheet" ? "Isometric" : "Sheet"}</Button>
+          <ButtonLink className="px-2.5 text-sm sm:min-h-9" href={`/lines/${line.id}/survey`}>Survey</ButtonLink>
           <ExchangeButton line={line} document={document} />
           <Button onClick={() => onPanel("help")}>Keys</Button>
         </div>

@@ -26,6 +26,7 @@ import { LineSheet } from "./line-sheet";
 import { PointedStore } from "./pointed-store";
 import { ShapeDoor } from "./shape-door";
 import { isTouchScreen } from "./touch-screen";
+import { endsAsked } from "./surveyed-ends";
 import { useAutosave } from "./use-autosave";
 import { useBlockText } from "./use-block-text";
 import { makeStamp, useEditorState } from "./use-editor-state";
@@ -45,7 +46,8 @@ export function RunEditor({ line, viewer, onUploads }: RunEditorProps) {
   // Work kept from before somebody else's save starts from the older version, so that the save tells of it.
   const [base] = useState(() => ({ document: line.document, version: draft?.version ?? line.version }));
   const [state, send] = useEditorState(base.document, viewer.name, line.editable);
-  const [panel, setPanel] = useState<EditorPanel | null>(null);
+  const [asked] = useState(() => endsAsked(window.location.search));
+  const [panel, setPanel] = useState<EditorPanel | null>(asked ? "closing" : null);
   const [look, setLook] = useState<EditorLook>("isometric");
   const { document, cursor } = state;
   const save = useAutosave({ lineId: line.id, personId: viewer.personId, document, base, enabled: line.editable });
@@ -132,6 +134,8 @@ export function RunEditor({ line, viewer, onUploads }: RunEditorProps) {
         takeOuts={line.takeOuts}
         pointId={point?.id ?? null}
         stamp={() => makeStamp(viewer.name)}
+        lineId={line.id}
+        asked={asked}
         onInsert={
           line.editable
             ? (next) => {

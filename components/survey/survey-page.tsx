@@ -1,7 +1,7 @@
 "use client";
 import { useEffect, useMemo, useState } from "react";
 import { surveyResult, type SurveyDocument, type SurveyResult } from "@/iso";
-import { Button, ButtonLink } from "@/components/ui/button";
+import { Button } from "@/components/ui/button";
 import { Notice } from "@/components/ui/notice";
 import { Skeleton } from "@/components/ui/progress";
 import { TextArea } from "@/components/ui/field";
@@ -150,9 +150,4 @@ function Conflicts({ survey: { view, choose } }: { readonly survey: OpenSurvey }
       </ul>
     </section>
   );
-}
-
-/** Link to a line's survey, for the pages of the line. */
-export function SurveyLink({ lineId }: { readonly lineId: string }) {
-  return <ButtonLink href={`/lines/${lineId}/survey`}>Survey</ButtonLink>;
 }

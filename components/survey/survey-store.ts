@@ -4,7 +4,7 @@
  */
 import { openDB, type DBSchema, type IDBPDatabase } from "idb";
 import { parseSurveyDocument, type SurveyDocument } from "@/iso";
-import type { SurveyDetail } from "@/lib/rules/api-types";
+import type { SurveyDetail } from "@/lib/rules/survey-api-types";
 
 export interface KeptSurvey {
   readonly lineId: string;

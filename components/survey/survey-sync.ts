@@ -1,6 +1,7 @@
 /** Sends a survey when there is a signal and keeps it in the browser always. One per open page; no React in here. */
 import type { SurveyDocument } from "@/iso";
-import type { SaveLineResult, SaveSurveyConflict, SurveyDetail } from "@/lib/rules/api-types";
+import type { SaveLineResult } from "@/lib/rules/api-types";
+import type { SaveSurveyConflict, SurveyDetail } from "@/lib/rules/survey-api-types";
 import { chooseSide, mergeSurveys, type SurveyConflict } from "./survey-merge";
 import type { KeptSurvey, SurveyStore } from "./survey-store";
 

@@ -1,7 +1,8 @@
 /** Saves a line's survey, when nobody saved another since it was read. The first save makes it. */
 import { parseSurveyDocument } from "@/iso";
 import { storedSurvey } from "@/lib/queries/survey-detail";
-import type { SaveLineResult, SaveSurveyConflict } from "@/lib/rules/api-types";
+import type { SaveLineResult } from "@/lib/rules/api-types";
+import type { SaveSurveyConflict } from "@/lib/rules/survey-api-types";
 import type { CommandContext } from "@/lib/server/command";
 import { refuseConflict, refuseInvalid } from "@/lib/server/errors";
 import { inShop } from "@/lib/server/scope";

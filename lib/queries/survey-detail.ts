@@ -1,6 +1,6 @@
 /** The survey of a line, or an empty one in the line's unit. */
 import { emptySurvey, parseSurveyDocument, pipeOdMm, type SurveyDocument } from "@/iso";
-import type { SurveyDetail } from "@/lib/rules/api-types";
+import type { SurveyDetail } from "@/lib/rules/survey-api-types";
 import { inShop } from "@/lib/server/scope";
 import type { SessionViewer } from "@/lib/server/session";
 import { Job, Line, Survey } from "@/models";

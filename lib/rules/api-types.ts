@@ -2,7 +2,7 @@
  * What travels between route handlers and pages, as plain JSON. Queries return these shapes, components take them.
  * Times are ISO strings. Errors are always ApiError with a plain sentence.
  */
-import type { LineSettings, RunDocument, SurveyDocument } from "@/iso";
+import type { LineSettings, RunDocument } from "@/iso";
 import type { NestingSettings } from "./nest-plans";
 import type { MarksRegister, RevisionState, SheetInput, SheetSize, TakeOutWord, TitleBlock } from "@/iso";
 
@@ -147,25 +147,6 @@ export interface SaveLineConflict extends ApiError {
   readonly currentVersion: number;
   readonly by: string;
   readonly at: string;
-}
-
-/** What the survey page needs of a line; fitters read it too, so it holds nothing of the run. */
-export interface SurveyDetail {
-  readonly line: { readonly id: string; readonly number: string; readonly title: string };
-  readonly job: { readonly id: string; readonly number: string };
-  /** 0 while nothing was saved. */
-  readonly version: number;
-  readonly document: SurveyDocument;
-  /** Outside diameter of the line's pipe, mm; 0 when the table has none. */
-  readonly odMm: number;
-  readonly uploads: readonly UploadRow[];
-  readonly updatedAt: string | null;
-  readonly updatedBy: string | null;
-}
-
-/** 409: somebody saved since; carries theirs, so that both can be laid side by side at once. */
-export interface SaveSurveyConflict extends SaveLineConflict {
-  readonly document: SurveyDocument;
 }
 
 export interface UploadRow {

@@ -2,7 +2,7 @@
 import "fake-indexeddb/auto";
 import { describe, expect, test } from "vitest";
 import { emptySurvey, type SurveyDocument, type SurveyReading } from "@/iso";
-import type { SurveyDetail } from "@/lib/rules/api-types";
+import type { SurveyDetail } from "@/lib/rules/survey-api-types";
 import { mergeSurveys } from "@/components/survey/survey-merge";
 import { openSurveyStore, type SurveyStore } from "@/components/survey/survey-store";
 import { SurveySync, type SendAnswer, type SyncView } from "@/components/survey/survey-sync";
