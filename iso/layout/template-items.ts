@@ -147,9 +147,9 @@ function nameItems(template: Template, line: WrapLine, shown: PaperBox, measure:
   const cut = template.isClosed ? Math.min(...template.cut.map(([, y]) => y)) : cutY(template, line.xMm);
   const above = cut - HATCH_DEPTH - 1.5;
   if (line.name === "") return aboveNumber(template, line, above, shown, measure);
-  const tops = above <= shown.maxY ? above - shown.minY : 0;
-  const start = Math.max(cut + 2, shown.minY + 1);
-  const below = template.isClosed ? 0 : Math.min(template.baseY, shown.maxY) - 1 - start;
+  const tops = above <= shown.maxY && !template.isClosed ? above - shown.minY : 0;
+  const start = Math.max(cut + (template.isClosed ? HATCH_DEPTH : 0) + 2, shown.minY + 1);
+  const below = Math.min(template.across[0]?.y ?? template.baseY, shown.maxY) - 1 - start;
   const room = Math.max(tops, below);
   const text = [line.name, line.name.split(" / ")[0] ?? ""].map((name) => [line.number, name].filter(Boolean).join(" ")).find((one) => measure(one, CAP, "bold") <= room);
   if (text === undefined) return [];

@@ -112,7 +112,7 @@ export function holeTemplate(hole: {
 const HOLE_STEPS = 720;
 /** Paper round the hole, and more above it for the quarter line's name. */
 const HOLE_MARGIN = 9;
-const HOLE_HEAD = 17;
+const HOLE_HEAD = 5;
 const HOLE_FOOT = 7;
 
 /**
