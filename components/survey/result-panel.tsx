@@ -9,10 +9,13 @@ const TONES: Readonly<Record<SurveyFinding["tone"], { tone: "trouble" | "caution
   note: { tone: "note", word: "Note" },
 };
 /** Findings that ask for something else than another measurement. */
-const ENTRY_CODES = ["not-read", "same-mark", "zero-length", "end", "ends-clash", "unit-slip", "loose"];
+const ENTRY_CODES = ["not-read", "same-mark", "zero-length", "end", "ends-clash", "unit-slip", "loose", "mirror"];
 
-/** What the readings come to: remarks first, then marks with how well each is known. */
-export function ResultPanel({ result, units, lineId }: { readonly result: SurveyResult; readonly units: UnitSystem; readonly lineId: string; readonly odMm: number }) {
+/**
+ * What the readings come to: remarks first, then marks with how well each is known.
+ * @param lineId line to close between its ends; null for those who do not see it.
+ */
+export function ResultPanel({ result, units, lineId }: { readonly result: SurveyResult; readonly units: UnitSystem; readonly lineId: string | null }) {
   const { adjustment } = result;
   const within = (mm: number) => `± ${formatLength(mm, units)}`;
   return (
@@ -35,7 +38,7 @@ export function ResultPanel({ result, units, lineId }: { readonly result: Survey
         ))}
       </div>
       {result.marks.length > 0 ? (
-        <table className="ruled mt-3">
+        <table className="ruled mt-3" data-stack="">
           <thead>
             <tr><th>Mark</th><th>E</th><th>N</th><th>U</th></tr>
           </thead>
@@ -53,7 +56,7 @@ export function ResultPanel({ result, units, lineId }: { readonly result: Survey
           </tbody>
         </table>
       ) : null}
-      {result.ends.length >= 2 ? (
+      {result.ends.length >= 2 && lineId !== null ? (
         <p className="mt-4">
           <ButtonLink tone="primary" href={`/lines/${lineId}?close=${result.ends[0]!.id},${result.ends[1]!.id}`}>Close between {result.ends[0]!.name} and {result.ends[1]!.name}</ButtonLink>
         </p>

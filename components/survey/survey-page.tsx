@@ -64,7 +64,7 @@ function Survey({ survey }: { readonly survey: OpenSurvey }) {
   const remarksOf = (id: string) => result.findings.filter((each) => each.tone !== "note" && each.readingIds.length === 1 && each.readingIds[0] === id).map((each) => each.sentence);
   return (
     <div className="mx-auto max-w-5xl">
-      <TitleStrip kind="Survey" title={detail.line.number} trail={[{ href: `/lines/${detail.line.id}`, label: `Line ${detail.line.number}` }]} />
+      <TitleStrip kind="Survey" title={detail.line.number} trail={[{ href: `/jobs/${detail.job.id}`, label: detail.job.number }, ...(survey.readsLine ? [{ href: `/lines/${detail.line.id}`, label: detail.line.number }] : [])]} />
       <SyncLine survey={survey} />
       <Conflicts survey={survey} />
       <datalist id={MARKS_ID}>{result.marks.map(({ name }) => <option key={name} value={name} />)}</datalist>
@@ -92,7 +92,7 @@ function Survey({ survey }: { readonly survey: OpenSurvey }) {
         </section>
         <div className="space-y-6">
           <Ends document={document} result={result} change={change} remarksOf={remarksOf} />
-          <ResultPanel result={result} units={document.units} lineId={detail.line.id} odMm={detail.odMm} />
+          <ResultPanel result={result} units={document.units} lineId={survey.readsLine ? detail.line.id : null} />
           <PhotoPanel survey={survey} />
           <TextArea label="Note" maxLength={2000} value={document.note} onChange={(event) => change({ ...document, note: event.target.value })} />
         </div>

@@ -5,6 +5,7 @@ import { useViewer } from "@/components/shell/use-viewer";
 import { apiGet, apiSend, ApiFailure, failureText } from "@/components/ui/fetcher";
 import type { SaveLineResult } from "@/lib/rules/api-types";
 import type { SaveSurveyConflict, SurveyDetail } from "@/lib/rules/survey-api-types";
+import { canDo } from "@/lib/rules/permissions";
 import { openSurveyStore, type SurveyStore } from "./survey-store";
 import { SurveySync, type SendAnswer, type SyncView } from "./survey-sync";
 import type { SurveyConflict } from "./survey-merge";
@@ -17,6 +18,8 @@ export interface OpenSurvey {
   readonly detail: SurveyDetail;
   readonly personId: string;
   readonly store: SurveyStore | null;
+  /** Whether the reader may open the line itself; not known, so no, without a signal. */
+  readonly readsLine: boolean;
   readonly view: SyncView;
   readonly change: (document: SurveyDocument) => void;
   readonly choose: (conflict: SurveyConflict, side: "mine" | "theirs") => void;
@@ -52,7 +55,7 @@ export function useSurvey(lineId: string): SurveyLoading {
       if (typeof opened === "string") return setState({ kind: "failed", message: opened });
       sync.current = opened.sync;
       setView(opened.sync.view());
-      setState({ kind: "open", survey: { detail: opened.detail, personId: opened.personId, store: opened.store, view: opened.sync.view(), change: () => undefined, choose: () => undefined, sendNow: () => undefined } });
+      setState({ kind: "open", survey: { detail: opened.detail, personId: opened.personId, store: opened.store, readsLine: false, view: opened.sync.view(), change: () => undefined, choose: () => undefined, sendNow: () => undefined } });
     });
     return () => {
       gone = true;
@@ -62,7 +65,7 @@ export function useSurvey(lineId: string): SurveyLoading {
   const choose = useCallback((conflict: SurveyConflict, side: "mine" | "theirs") => void sync.current?.choose(conflict, side), []);
   const sendNow = useCallback(() => void sync.current?.sendNow(), []);
   useSending(view, sendNow);
-  return state.kind === "open" && view ? { kind: "open", survey: { ...state.survey, view, change, choose, sendNow } } : state;
+  return state.kind === "open" && view ? { kind: "open", survey: { ...state.survey, readsLine: viewer.data ? canDo(viewer.data.role, "lines.read") : false, view, change, choose, sendNow } } : state;
 }
 
 interface Opened {

@@ -3,6 +3,7 @@ import { INCH_MM } from "../units/length";
 import { adjustNetwork } from "./adjust";
 import { firstPlaces } from "./best-places";
 import { chiSquareLimit, OUTLIER_LIMIT } from "./chi-square";
+import { mirrorFindings } from "./mirror";
 import { predictObservation } from "./observations";
 import type { SurveyDocument, SurveyReading } from "./survey-document";
 import type { SurveyFinding } from "./survey-read";
@@ -33,6 +34,7 @@ export function adjustmentFindings(document: SurveyDocument, network: SurveyNetw
   return [
     ...looseFindings(network, adjustment),
     ...outlierFindings(document, network, adjustment, readingOf),
+    ...mirrorFindings(network, adjustment, document.units),
     ...weakFindings(document, network, adjustment),
     ...datumFindings(network, adjustment),
   ];
@@ -65,12 +67,12 @@ function outlierFindings(document: SurveyDocument, network: SurveyNetwork, adjus
     const worst = suspects[0];
     if (!worst) break;
     const ids = [...new Set(suspects.map((each) => each.observation.readingId))];
-    const names = ids.flatMap((id) => readingOf(id) ?? []);
+    const names = document.readings.filter((each) => ids.includes(each.id));
     const by = errorText(worst.observation, worst.likelyError, document.units);
     findings.push({
       code: "outlier", tone: "wrong", readingIds: ids,
       sentence: ids.length > 1
-        ? `${sentence(joined(names.map((each) => readingName(each)), "or"))} is off, ${names.length > 1 ? "one as likely as the other" : ""} by up to about ${by}; measure ${joined(names.map(pairName))} again.`
+        ? `${sentence(joined(names.map((each) => readingName(each)), "or"))} is off, by about ${by}; they explain it equally well, so measure ${joined(names.map(pairName))} again.`
         : `${sentence(readingName(names[0] ?? { kind: "tape", from: worst.observation.from, to: worst.observation.to }, worst.observation))} disagrees with the rest by about ${by}; measure ${names[0] ? pairName(names[0]) : "it"} again.`,
     });
     rest = { ...rest, observations: rest.observations.filter((o) => !ids.includes(o.readingId)) };

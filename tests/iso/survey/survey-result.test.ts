@@ -157,3 +157,20 @@ describe("pasted points", () => {
     expect(refused).toEqual([`Row 4: "x" is not a length.`, "Row 5: the mark's name is missing."]);
   });
 });
+
+test("a mark on three tapes stands on either side of their plane until a level reading says which", () => {
+  const known = ["A", "B", "C"].map((mark) => point(mark, SPOTS[mark]!.map(String) as [string, string, string]));
+  const tapes = ["A", "B", "C"].map((mark) => tape(mark, "D", inches(SPOTS[mark]!, SPOTS.D!)));
+  expect(words(survey([...known, ...tapes]))).toMatch(/Mark D could stand in two places (10'-0"|9'-11 15\/16"|10'-0 1\/16") apart, on either side of A, B and C; the upper place is taken/);
+  const below = surveyResult(survey([...known, ...tapes, offset("A", "D", ["", "", "-60"])]), 114.3);
+  expect(below.findings).toEqual([]);
+  expect(below.marks.find((each) => each.name === "D")!.position[2] / INCH_MM).toBeCloseTo(-60, 1);
+});
+
+test("where two readings explain a misfit equally well, both are named", () => {
+  const known = ["A", "B", "C"].map((mark) => point(mark, SPOTS[mark]!.map(String) as [string, string, string]));
+  // One reading more than needed: no test can tell which of the four is wrong.
+  const tapes = ["A", "B", "C"].map((mark) => tape(mark, "D", inches(SPOTS[mark]!, SPOTS.D!)));
+  const text = words(survey([...known, ...tapes, offset("A", "D", ["", "", "61"])]));
+  expect(text).toMatch(/Tape A-D, tape B-D, tape C-D or offset A-D is off, by about .* (in|\d\"); they explain it equally well, so measure A-D, B-D, C-D and A-D again\./);
+});
