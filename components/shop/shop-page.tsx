@@ -7,13 +7,14 @@ import { TitleStrip } from "@/components/ui/title-strip";
 import type { Viewer } from "@/lib/rules/api-types";
 import { canDo } from "@/lib/rules/permissions";
 import { AuditView } from "./audit-view";
+import { CertificateView } from "./certificate-view";
 import { PeopleView } from "./people-view";
 import { SessionsView } from "./sessions-view";
 import { ShopSettingsView } from "./shop-settings-view";
 import { StockView } from "./stock-view";
 import { TakeOutView } from "./take-out-view";
 
-type Part = "people" | "settings" | "stock" | "take-outs" | "sessions" | "log";
+type Part = "people" | "settings" | "stock" | "take-outs" | "certificate" | "sessions" | "log";
 
 /** The shop's account: people, settings, stock, take-outs, one's own sessions, the log. */
 export function ShopPage() {
@@ -33,6 +34,7 @@ function Shop({ viewer }: { readonly viewer: Viewer }) {
     { value: "settings", label: "Settings" },
     { value: "stock", label: "Stock" },
     { value: "take-outs", label: "Take-outs" },
+    { value: "certificate", label: "Certificate" },
     { value: "sessions", label: "Your sessions" },
   ];
   if (canDo(viewer.role, "log.read")) choices.push({ value: "log", label: "Log" });
@@ -46,6 +48,7 @@ function Shop({ viewer }: { readonly viewer: Viewer }) {
       {part === "settings" ? <ShopSettingsView owner={owner} /> : null}
       {part === "stock" ? <StockView owner={owner} /> : null}
       {part === "take-outs" ? <TakeOutView owner={owner} /> : null}
+      {part === "certificate" ? <CertificateView owner={owner} /> : null}
       {part === "sessions" ? <SessionsView /> : null}
       {part === "log" ? <AuditView /> : null}
     </>

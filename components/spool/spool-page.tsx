@@ -4,7 +4,7 @@ import type { SheetSize } from "@/iso";
 import { SpoolFilesButton } from "@/components/exchange/spool-files";
 import { SHEET_OPTIONS } from "@/components/jobs/sheet-words";
 import { useViewer } from "@/components/shell/use-viewer";
-import { Button } from "@/components/ui/button";
+import { Button, ButtonLink } from "@/components/ui/button";
 import { ChoiceRow } from "@/components/ui/choice-row";
 import { useApi } from "@/components/ui/fetcher";
 import { Select } from "@/components/ui/field";
@@ -17,6 +17,7 @@ import { usePageTitle } from "@/components/ui/use-page-title";
 import type { RevisionSummary, Role, SpoolDetail } from "@/lib/rules/api-types";
 import { canDo } from "@/lib/rules/permissions";
 import { BenchLinks } from "./bench-links";
+import { CopiesOut } from "./copies-out";
 import { RevisionHistory } from "./revision-history";
 import { SheetBox } from "./sheet-box";
 import { SubmitDialog } from "./submit-dialog";
@@ -94,6 +95,7 @@ function Spool({ spool, role }: { readonly spool: SpoolDetail; readonly role: Ro
       <div className="mt-8 grid gap-x-10 xl:grid-cols-[minmax(0,2fr)_minmax(0,1fr)]">
         <div className="min-w-0">
           {input ? <WorkSection spool={spool} input={input} issued={issued} role={role} /> : null}
+          <CopiesOut spoolId={spool.id} role={role} />
         </div>
         <Section title="Revisions">
           <RevisionHistory revisions={spool.revisions} role={role} mayHold={spool.can.hold} />
@@ -130,11 +132,14 @@ function SpoolHead({
       }
       trail={trail}
       actions={
-        canDo(role, "revisions.submit") ? (
-          <Button tone="primary" disabled={!spool.can.submit} onClick={onSubmit}>
-            Submit for review
-          </Button>
-        ) : null
+        <>
+          <ButtonLink href={`/lines/${spool.line.id}/survey`}>Survey</ButtonLink>
+          {canDo(role, "revisions.submit") ? (
+            <Button tone="primary" disabled={!spool.can.submit} onClick={onSubmit}>
+              Submit for review
+            </Button>
+          ) : null}
+        </>
       }
       cells={[
         { label: "State", value: <StateWord state={newest?.state ?? "draft"} hold={newest?.hold} /> },

@@ -1,6 +1,7 @@
 "use client";
 import clsx from "clsx";
 import { useState, type DragEvent } from "react";
+import { timeText } from "@/components/ui/format";
 import { FileButton } from "@/components/ui/file-button";
 import { Notice } from "@/components/ui/notice";
 import type { StatusDetail } from "@/lib/rules/api-types";
@@ -57,7 +58,24 @@ export function FileCheck({
   );
 }
 
-const KIND_WORDS = { review: "the PDF submitted for review", fabrication: "the signed PDF" } as const;
+const KIND_WORDS = { review: "the PDF submitted for review", fabrication: "the signed original" } as const;
+
+type Known = StatusDetail["sheets"][number];
+
+/** Which of the files that were stored or printed here it is. */
+function matchWords({ kind, marked, at }: Known): string {
+  if (marked === null) return KIND_WORDS[kind];
+  return `a copy printed ${timeText(at)}, marked ${marked}, of ${KIND_WORDS[kind]}`;
+}
+
+function SignatureLeft() {
+  return (
+    <span className="mt-1 block">
+      Marking changed the file, so the copy carries no digital signature. The signed original has it; compare its SHA-256
+      below.
+    </span>
+  );
+}
 
 function Answer({ result, status }: { readonly result: NonNullable<Result>; readonly status: StatusDetail }) {
   if (result.sha256 === null)
@@ -67,20 +85,21 @@ function Answer({ result, status }: { readonly result: NonNullable<Result>; read
   if (!match) {
     return (
       <Notice tone="trouble" word="Not recognized">
-        {result.name} is not a PDF of revision {status.code} as it was stored or printed here. It may be
-        another revision, or altered.
+        {result.name} is not ours: no PDF of revision {status.code} was stored or printed here with these bytes.
+        One changed byte is enough. It may be altered, or of another revision.
         {hash}
       </Notice>
     );
   }
   return (
     <Notice tone={status.current && match.kind === "fabrication" ? "done" : "caution"} word="Recognized">
-      {result.name} is {KIND_WORDS[match.kind]} of revision {status.code} or a marked copy of it, unaltered.{" "}
+      {result.name} is {matchWords(match)} of revision {status.code}, unaltered.{" "}
       {status.current
         ? match.kind === "review"
           ? "Work from the signed one instead."
           : "That revision is current."
         : "That revision is NOT CURRENT."}
+      {match.marked !== null && status.signature ? <SignatureLeft /> : null}
       {hash}
     </Notice>
   );

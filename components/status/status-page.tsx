@@ -6,6 +6,7 @@ import { StateWord } from "@/components/ui/state-word";
 import { usePageTitle } from "@/components/ui/use-page-title";
 import type { StatusDetail } from "@/lib/rules/api-types";
 import { FileCheck } from "./file-check";
+import { fingerprintText } from "@/lib/rules/certificates";
 import { Verdict } from "./verdict";
 
 /** What the QR code of a sheet leads to; no sign-in, nothing but the sheet's standing. */
@@ -54,7 +55,34 @@ function Status({
           </div>
         ))}
       </dl>
+      {status.signature ? <SignatureFacts signature={status.signature} /> : null}
       <FileCheck status={status} onReread={onReread} />
     </div>
+  );
+}
+
+/** The signed original, by which any copy or printout can be traced back, and whose signature it carries. */
+function SignatureFacts({ signature }: { readonly signature: NonNullable<StatusDetail["signature"]> }) {
+  const facts = [
+    { label: "Signed original, SHA-256", value: signature.sha256 },
+    { label: "Digitally signed by the certificate of", value: signature.subject, words: true },
+    { label: "Certificate, SHA-256", value: fingerprintText(signature.fingerprint) },
+  ];
+  return (
+    <section aria-labelledby="signature" className="mt-6">
+      <h2 id="signature">Signature</h2>
+      <dl className="mt-2 border-t border-ink">
+        {facts.map((fact) => (
+          <div key={fact.label} className="border-b border-hair py-2">
+            <dt className="cell-label">{fact.label}</dt>
+            <dd className={fact.words ? "break-words" : "figure text-sm break-all"}>{fact.value}</dd>
+          </div>
+        ))}
+      </dl>
+      <p className="mt-2 text-soft">
+        A printed or marked copy carries no digital signature, since marking changes the file; its filing margin names the
+        original by the SHA-256 above. The unmarked original is to be had on the spool&apos;s page.
+      </p>
+    </section>
   );
 }

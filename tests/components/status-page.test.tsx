@@ -23,7 +23,8 @@ const status: StatusDetail = {
   current: true,
   issuedAt: "2026-01-01T00:00:00Z",
   liveCode: null,
-  sheets: [{ sha256: createHash("sha256").update(PDF).digest("hex"), kind: "fabrication" }],
+  sheets: [{ sha256: createHash("sha256").update(PDF).digest("hex"), kind: "fabrication", marked: null, at: "2026-01-01T00:00:00Z" }],
+  signature: null,
 };
 
 /** Node's own file: the bytes of a jsdom file are of another realm, which Node's digest refuses. */
@@ -67,19 +68,34 @@ describe("FileCheck", () => {
     render(<FileCheck onReread={async () => undefined} status={status} />);
     fireEvent.drop(screen.getByText(/Drop a PDF/), { dataTransfer: { files: [pdf(PDF)] } });
     expect(
-      (await screen.findByText(/the signed PDF of revision A or a marked copy of it, unaltered/)).textContent,
+      (await screen.findByText(/the signed original of revision A, unaltered/)).textContent,
     ).toContain("That revision is current");
   });
 
   it("says so when a recognized sheet is dead", async () => {
     render(<FileCheck onReread={async () => undefined} status={{ ...status, current: false }} />);
     fireEvent.drop(screen.getByText(/Drop a PDF/), { dataTransfer: { files: [pdf(PDF)] } });
-    expect((await screen.findByText(/the signed PDF of revision A/)).textContent).toContain("NOT CURRENT");
+    expect((await screen.findByText(/the signed original of revision A/)).textContent).toContain("NOT CURRENT");
   });
 
   it("does not know one changed byte", async () => {
     render(<FileCheck onReread={async () => undefined} status={status} />);
     fireEvent.change(screen.getByLabelText("Choose a PDF"), { target: { files: [pdf(`${PDF}.`)] } });
-    expect(await screen.findByText("Not recognized.")).toBeTruthy();
+    expect((await screen.findByText("Not recognized.")).parentElement?.textContent).toContain("is not ours");
+  });
+
+  it("tells a marked copy from the original, and where the signature is", async () => {
+    const [sheet] = status.sheets;
+    const signed: StatusDetail = {
+      ...status,
+      current: false,
+      sheets: [{ ...sheet!, marked: "SUPERSEDED", at: "2026-02-03T10:00:00Z" }],
+      signature: { sha256: "0a".repeat(32), subject: "Shop", fingerprint: "0b".repeat(32) },
+    };
+    render(<FileCheck onReread={async () => undefined} status={signed} />);
+    fireEvent.drop(screen.getByText(/Drop a PDF/), { dataTransfer: { files: [pdf(PDF)] } });
+    const said = (await screen.findByText(/marked SUPERSEDED, of the signed original/)).textContent;
+    expect(said).toContain("NOT CURRENT");
+    expect(said).toContain("the copy carries no digital signature");
   });
 });
