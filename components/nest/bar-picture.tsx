@@ -4,10 +4,19 @@ import type { PlanBar } from "@/lib/rules/nest-table";
 
 /** Pixels of the drawing's own measure: all bars of a group stand to one scale. */
 const WIDTH = 1000;
-const HEIGHT = 46;
-/** Narrower pieces carry no text; the table has it. */
-const ROOM_FOR_MARK = 34;
-const ROOM_FOR_LENGTH = 92;
+const HEIGHT = 60;
+/** On a letter page this is 2.6 mm high. */
+const TEXT = 20;
+/** Width of a letter of Roboto Mono, and the air beside a text. */
+const LETTER = 0.62 * TEXT;
+const AIR = 6;
+/** A saw cut is drawn at least this wide. */
+const LEAST_CUT = 3;
+
+/** The texts that have room, one below the other; the table has them all. */
+function fitting(texts: readonly string[], width: number): string[] {
+  return texts.filter((text) => text.length * LETTER + AIR <= width);
+}
 
 /**
  * One length to scale: pieces outlined with their mark and length, saw cuts as black strokes, trim and scrap hatched, a rest that
@@ -29,26 +38,31 @@ export function BarPicture({ bar, longestMm, units, label }: { readonly bar: Pla
       {first && first.startMm > 0 ? <Rest from={0} to={x(first.startMm)} fill={`url(#${hatch})`} /> : null}
       {bar.pieces.map(({ piece, startMm, lengthMm }) => {
         const width = x(lengthMm);
-        const text = width >= ROOM_FOR_LENGTH ? `${piece.mark}  ${formatLength(lengthMm, units)}` : width >= ROOM_FOR_MARK ? piece.mark : "";
         return (
           <g key={piece.id}>
             <title>{`${piece.line} ${piece.mark}, ${formatLength(lengthMm, units)}`}</title>
             <rect x={x(startMm)} y={1} width={Math.max(0.5, width)} height={HEIGHT - 2} fill="var(--color-dye-tint)" />
-            <text x={x(startMm) + width / 2} y={HEIGHT / 2 + 6} textAnchor="middle" fontSize="17" className="figure" fill="var(--color-ink)">
-              {text}
-            </text>
+            <Words middle={x(startMm) + width / 2} texts={fitting([piece.mark, formatLength(lengthMm, units)], width)} />
           </g>
         );
       })}
       {bar.restMm > 0 ? <Rest from={x(restStart)} to={x(bar.lengthMm)} fill={bar.returned ? "var(--color-sheet)" : `url(#${hatch})`} /> : null}
-      {bar.returned && x(bar.restMm) >= ROOM_FOR_LENGTH ? (
-        <text x={x(restStart) + x(bar.restMm) / 2} y={HEIGHT / 2 + 6} textAnchor="middle" fontSize="17" className="figure" fill="var(--color-ink)">
-          {`rest ${formatLength(bar.restMm, units)}`}
-        </text>
-      ) : null}
+      {bar.returned ? <Words middle={x(restStart) + x(bar.restMm) / 2} texts={fitting(["rest", formatLength(bar.restMm, units)], x(bar.restMm))} /> : null}
+      {bar.pieces.map(({ piece, startMm, lengthMm }) => (
+        <rect key={piece.id} x={x(startMm + lengthMm)} y={1} width={LEAST_CUT} height={HEIGHT - 2} fill="var(--color-ink)" />
+      ))}
       <rect x={0} y={0} width={x(bar.lengthMm)} height={HEIGHT} fill="none" stroke="var(--color-ink)" strokeWidth="2" />
     </svg>
   );
+}
+
+function Words({ middle, texts }: { readonly middle: number; readonly texts: readonly string[] }) {
+  const first = HEIGHT / 2 + TEXT * 0.36 - ((texts.length - 1) * TEXT * 1.15) / 2;
+  return texts.map((text, n) => (
+    <text key={text} x={middle} y={first + n * TEXT * 1.15} textAnchor="middle" fontSize={TEXT} className="figure" fill="var(--color-ink)">
+      {text}
+    </text>
+  ));
 }
 
 function Rest({ from, to, fill }: { readonly from: number; readonly to: number; readonly fill: string }) {

@@ -60,13 +60,13 @@ function columns(units: UnitSystem): readonly Column<PlanBar>[] {
         <ul>
           {bar.pieces.map(({ piece, lengthMm }) => (
             <li key={piece.id}>
-              {piece.line} <strong>{piece.mark}</strong> <span className="figure">{formatLength(lengthMm, units)}</span>
+              {piece.line} <strong>{piece.mark}</strong> <span className="figure whitespace-nowrap">{formatLength(lengthMm, units)}</span>
             </li>
           ))}
         </ul>
       ),
     },
-    { key: "rest", head: "Rest", figure: true, cell: (bar) => `${formatLength(bar.restMm, units)} ${bar.returned ? "back to the rack" : "scrap"}` },
+    { key: "rest", head: "Rest", cell: (bar) => <><span className="figure whitespace-nowrap">{formatLength(bar.restMm, units)}</span> {bar.returned ? "back to the rack" : "scrap"}</> },
   ];
 }
 

@@ -68,7 +68,7 @@ async function currentSpool(member: ShopMember, spool: Spool, line: Line, tx: Tr
 }
 
 /** Keys of pieces with a recorded cut, or in a plan that was locked. */
-async function cutAlready(member: ShopMember, spoolId: string, tx: Transaction): Promise<ReadonlySet<string>> {
+async function cutAlready(member: ShopMember, spoolId: string, tx: Transaction | null): Promise<ReadonlySet<string>> {
   const entries = await inShop(member).all(WorkEntry, { spoolId, kind: "cut" }, tx);
   const locked = await inShop(member).all(Nest, { state: "cut", source: { [Op.like]: `%${spoolId}%` } }, tx);
   const planned = locked.flatMap((nest) => placedIds(nest).filter((id) => id.startsWith(spoolId)).map((id) => id.slice(spoolId.length + 1)));
@@ -100,6 +100,9 @@ async function stockOf(member: ShopMember, shop: Shop, tx: Transaction): Promise
   return [...lengths, ...offcuts.map(({ id, nps, schedule, material, lengthMm, heat }): NestStockRow => ({ id, kind: "offcut", nps, schedule, material, lengthMm, quantity: 1, cost: null, heat }))];
 }
 
+/** Pieces named in one sentence. */
+const MOST_NAMED = 6;
+
 /** What is no longer as the plan saw it, in words; empty when it still is. */
 export async function nestChanges(member: ShopMember, source: NestSource, used: ReadonlyMap<string, number>, tx: Transaction | null = null): Promise<string[]> {
   const words: string[] = [];
@@ -111,6 +114,9 @@ export async function nestChanges(member: ShopMember, source: NestSource, used: 
     const content = buildModel(input.document, input.marks, input.takeOuts).spools.find((s) => s.letter === row.letter)?.content ?? "";
     if (createHash("sha256").update(content).digest("hex") !== planned.contentSha256) words.push(`${name} has changed since.`);
     else if (revision?.hold) words.push(`${name} is on HOLD.`);
+    const cut = await cutAlready(member, planned.spoolId, tx);
+    const marks = source.groups.flatMap((group) => group.pieces.filter((p) => p.id.startsWith(`${planned.spoolId}|`) && cut.has(p.id.slice(planned.spoolId.length + 1))).map((p) => p.mark));
+    if (marks.length > 0) words.push(`${marks.slice(0, MOST_NAMED).join(", ")}${marks.length > MOST_NAMED ? " and more" : ""} of line ${planned.line}: cut already, or in a plan that was locked.`);
   }
   return [...words, ...(await stockChanges(member, source, used, tx))];
 }
