@@ -24,6 +24,7 @@ const PAD = 2;
 /** Least width of a column of turns, mm. */
 const COLUMN_LEAST = 116;
 const PICTURE_HEIGHT = 62;
+const PICTURE_LEAST = 44;
 const ROLL_WIDTH = 34;
 
 interface Block {
@@ -60,7 +61,10 @@ function withKey(pages: Drawn, tables: readonly FlowTable[], facts: SheetFacts, 
   const heightMm = box.maxY - box.minY;
   if (pages.length !== 1 || heightMm < KEY_LEAST) return pages;
   const show = { items: false, welds: true, pieces: true, dimensions: false };
-  const { items } = drawModel(facts.model, { widthMm: box.maxX - box.minX - 2 * PAD, heightMm: heightMm - 2 * PAD, measure, view: facts.input.document.view, spool: facts.input.spool, show });
+  const size = { widthMm: box.maxX - box.minX - 2 * PAD, heightMm: heightMm - 2 * PAD };
+  const { items, bounds } = drawModel(facts.model, { ...size, measure, view: facts.input.document.view, spool: facts.input.spool, show });
+  // A spool too long for the room is drawn past it: then the spool sheet alone shows the welds.
+  if (bounds.minX < -PAD || bounds.minY < -PAD || bounds.maxX > size.widthMm + PAD || bounds.maxY > size.heightMm + PAD) return pages;
   return [[...pages[0]!, boxOutline(box, { widthMm: EDGE_LINE }), ...items.map((item) => itemMoved(item, [box.minX + PAD, box.minY + PAD]))]];
 }
 
@@ -77,7 +81,7 @@ function turnPages(turns: readonly Turn[], units: UnitSystem, room: PaperBox, me
   const pages: DisplayItem[][] = [];
   let [column, y] = [count, room.maxY];
   for (const turn of turns) {
-    for (const block of blocksOf(turn, units, widthMm, measure)) {
+    for (const block of blocksOf(turn, units, { widthMm, heightMm: room.maxY - room.minY }, measure)) {
       if (y + block.heightMm > room.maxY && y > room.minY) [column, y] = [column + 1, room.minY];
       if (column >= count) {
         pages.push([]);
@@ -92,14 +96,18 @@ function turnPages(turns: readonly Turn[], units: UnitSystem, room: PaperBox, me
 }
 
 /** A turn's pictures stay with its numbers; the marks at the stations may stand apart. */
-function blocksOf(turn: Turn, units: UnitSystem, widthMm: number, measure: MeasureText): Block[] {
+function blocksOf(turn: Turn, units: UnitSystem, { widthMm, heightMm }: { readonly widthMm: number; readonly heightMm: number }, measure: MeasureText): Block[] {
   const numbers = tableBlock(turnTable(turn, units), widthMm, measure);
-  const stations = stationsTable(turn, units);
+  const given = stationsTable(turn, units);
+  const stations = given && tableBlock({ ...given, title: `${turn.name}, 16 STATIONS` }, widthMm, measure);
+  // A little less picture keeps all of a trimmed elbow in one column of small paper.
+  const spare = heightMm - numbers.heightMm - (stations ? stations.heightMm + TABLE_GAP : 0) - EDGE_LINE;
+  const pictureMm = spare >= PICTURE_LEAST ? Math.min(PICTURE_HEIGHT, spare) : PICTURE_HEIGHT;
   const picture: Block = {
-    heightMm: PICTURE_HEIGHT + numbers.heightMm,
+    heightMm: pictureMm + numbers.heightMm,
     items: (box) => [...pictureItems(turn, units, { ...box, minY: box.minY + numbers.heightMm }, measure), ...numbers.items({ ...box, maxY: box.minY + numbers.heightMm })],
   };
-  return stations ? [picture, tableBlock({ ...stations, title: `${turn.name}, 16 STATIONS` }, widthMm, measure)] : [picture];
+  return stations ? [picture, stations] : [picture];
 }
 
 function tableBlock(table: Table, widthMm: number, measure: MeasureText): Block {

@@ -69,7 +69,7 @@ export function turnTable(turn: Turn, units: UnitSystem): Table {
 }
 
 function leadOf(turn: Turn): string[] {
-  if (turn.kind === "trimmed") return ["Trimmed fitting: confirm it is permitted (engineer). Take-outs are nominal: measure the fitting in hand."];
+  if (turn.kind === "trimmed") return ["Trimmed: confirm it is permitted (engineer). Measure the fitting in hand."];
   return turn.kind === "mitre" ? ["Cuts off square: confirm the mitre is permitted (engineer)."] : ["Take-outs are nominal: measure the fitting in hand."];
 }
 
@@ -114,7 +114,7 @@ export function stationsTable(turn: Turn, units: UnitSystem): Table | null {
   const cell = (i: number): [string, { text: string; face: "bold" }[]] => (i <= 8 ? [name(i), [{ text: formatMark(values[i]!, units), face: "bold" }]] : ["", []]);
   return {
     title: "16 STATIONS",
-    lead: [turn.kind === "mitre" ? `Set back from the long point; stations ${formatMark((Math.PI * turn.odMm) / 16, units)} apart round the OD, 0 at the back.` : `From the uncut face along the surface; stations ${formatMark((Math.PI * turn.odMm) / 16, units)} apart round the OD, 0 at the back.`],
+    lead: [turn.kind === "mitre" ? `Set back from the long point; stations ${formatMark((Math.PI * turn.odMm) / 16, units)} apart, 0 at the back.` : `From the uncut face along the surface; stations ${formatMark((Math.PI * turn.odMm) / 16, units)} apart, 0 at the back.`],
     columns: [{ head: "STATION", share: 1, minMm: 24 }, { head: "MARK", share: 1, minMm: 24, align: "end" }, { head: "STATION", share: 1, minMm: 24 }, { head: "MARK", share: 1, minMm: 24, align: "end" }],
     rows: [0, 1, 2, 3, 4].map((i): Row => ({ cells: [...cell(i), ...cell(i + 5)] })),
     foot: [],

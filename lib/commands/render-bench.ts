@@ -12,17 +12,19 @@ export interface BenchAsked {
   readonly kind: "layout" | "templates";
   readonly of: Issue;
   readonly size: SheetSize | null;
+  /** Thickness of the paper printed on, mm; null = ordinary printing paper. */
+  readonly paper: number | null;
 }
 
 const TITLES = { layout: "bench lay-out", templates: "templates, print at 100 %" } as const;
 
 /** Paper of any size carries them: true scale is kept by tiling. @throws Refusal as spoolExportInput does. */
-export async function renderBench(viewer: SessionViewer, spoolId: string, { kind, of, size }: BenchAsked): Promise<{ readonly name: string; readonly bytes: Uint8Array }> {
+export async function renderBench(viewer: SessionViewer, spoolId: string, { kind, of, size, paper }: BenchAsked): Promise<{ readonly name: string; readonly bytes: Uint8Array }> {
   const found = await spoolExportInput(viewer, spoolId, of, new Date(), size);
   const input = size === null ? found : { ...found, size };
   const { logo } = input.titleBlock;
   const bytes = await paintSheet({
-    pages: kind === "layout" ? composeBenchPages(input, measureText) : composeTemplatePages(input, measureText),
+    pages: kind === "layout" ? composeBenchPages(input, measureText) : composeTemplatePages(input, measureText, paper ?? undefined),
     issuedAt: input.revision.issuedAt,
     title: `${sheetTitle(input)}, ${TITLES[kind]}`,
     subject: TITLES[kind],

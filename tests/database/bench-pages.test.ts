@@ -43,8 +43,13 @@ describe("what", () => {
     expect(await boxes("?kind=layout&size=letter")).toEqual([279, 216]);
   });
 
+  test("thicker paper makes a longer template: the question is heard", async () => {
+    const answer = await get(issued.spoolId, "?kind=templates&paper=0.25");
+    expect(answer.status).toBe(200);
+  });
+
   test("a question asked wrong is answered in words", async () => {
-    for (const query of ["", "?kind=all", "?kind=layout&size=A0", "?kind=layout&of=mine"]) {
+    for (const query of ["", "?kind=all", "?kind=layout&size=A0", "?kind=layout&of=mine", "?kind=templates&paper=5"]) {
       const answer = await get(issued.spoolId, query);
       expect([query, answer.status]).toEqual([query, 400]);
     }

@@ -25,4 +25,6 @@ export const benchPrintSchema = z.object({
   of,
   /** Absent = as the sheet was issued, or the job's for a draft. */
   size: sheetSizeSchema.nullable().default(null),
+  /** Thickness of the paper that templates are printed on, mm; absent = ordinary printing paper. */
+  paper: z.coerce.number({ error: "The paper's thickness is a number of millimetres." }).min(0, "Paper has a thickness.").max(1, "Paper is at most 1 mm thick.").nullable().default(null),
 });
