@@ -28,6 +28,7 @@ beforeAll(async () => {
     { role: "detailer", path: `/jobs/${job?.id}` },
     ...detail.lines.slice(0, 3).map((line) => ({ role: "detailer" as const, path: `/lines/${line.id}` })),
     { role: "inspector", path: `/lines/${detail.lines[0]?.id}` },
+    { role: "fitter", path: `/lines/${detail.lines[0]?.id}/survey` },
     { role: "detailer", path: `/spools/${spool.id}` },
     { role: "fitter", path: `/spools/${spool.id}` },
     { role: "inspector", path: `/review/${review.revisions.at(-1)?.id}` },
