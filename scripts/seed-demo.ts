@@ -5,6 +5,7 @@
 import { randomUUID } from "node:crypto";
 import { buildModel, emptyMarks, type RunDocument, type SheetInput } from "@/iso";
 import { addJob, changeJob } from "@/lib/commands/change-jobs";
+import { addOffcut } from "@/lib/commands/change-offcuts";
 import { changeShop, recordTakeOut, setShopLogo } from "@/lib/commands/change-shop";
 import { closeAsBuilt, holdRevision, returnRevision, voidRevision } from "@/lib/commands/decide-revision";
 import { storeLine } from "@/lib/commands/add-line";
@@ -62,14 +63,20 @@ async function join(context: CommandContext, person: { name: string; email: stri
 }
 
 const STOCK = [
-  { nps: "3", schedule: "STD", material: "ASTM A106 Gr B", lengthMm: 6401, quantity: 6 },
-  { nps: "4", schedule: "STD", material: "ASTM A106 Gr B", lengthMm: 6401, quantity: 9 },
-  { nps: "6", schedule: "STD", material: "ASTM A106 Gr B", lengthMm: 6401, quantity: 4 },
-  { nps: "8", schedule: "STD", material: "ASTM A106 Gr B", lengthMm: 12802, quantity: 2 },
+  { nps: "3", schedule: "STD", material: "ASTM A106 Gr B", lengthMm: 6401, quantity: 6, cost: 262 },
+  { nps: "4", schedule: "STD", material: "ASTM A106 Gr B", lengthMm: 6401, quantity: 9, cost: 370 },
+  { nps: "6", schedule: "STD", material: "ASTM A106 Gr B", lengthMm: 6401, quantity: 4, cost: 655 },
+  { nps: "8", schedule: "STD", material: "ASTM A106 Gr B", lengthMm: 12802, quantity: 2, cost: 1940 },
+] as const;
+const OFFCUTS = [
+  { nps: "4", schedule: "STD", material: "ASTM A106 Gr B", lengthMm: 1842, heat: "K40217" },
+  { nps: "4", schedule: "STD", material: "ASTM A106 Gr B", lengthMm: 965, heat: "K40217" },
+  { nps: "6", schedule: "STD", material: "ASTM A106 Gr B", lengthMm: 2310, heat: "M11873" },
 ] as const;
 
 async function seedShop({ owner }: People): Promise<void> {
   await as(owner, (context) => changeShop(context, { fields: [{ label: "SHOP ORDER", value: "CB-2614" }], stock: [...STOCK] }));
+  for (const offcut of OFFCUTS) await as(owner, (context) => addOffcut(context, offcut));
   await as(owner, (context) => setShopLogo(context, { name: "copper-bay.svg", bytes: new TextEncoder().encode(DEMO_LOGO) }));
   for (const key of unconfirmedKeys()) await as(owner, (context) => recordTakeOut(context, { key, valueMm: null }));
 }
