@@ -1,6 +1,7 @@
 "use client";
 import { useState } from "react";
 import { NestList } from "@/components/nest/nest-list";
+import { JobWithdrawals } from "@/components/spool/copies-out";
 import { ChoiceRow } from "@/components/ui/choice-row";
 import { useApi } from "@/components/ui/fetcher";
 import { countText } from "@/components/ui/format";
@@ -25,6 +26,7 @@ export function JobPage({ jobId }: { readonly jobId: string }) {
       {(data) => (
         <>
           <JobHead job={data} />
+          <JobWithdrawals jobId={data.id} role={role} />
           {canDo(role, "nests.read") ? (
             <div className="mb-5" data-screen-only>
               <ChoiceRow
