@@ -7,6 +7,7 @@ import * as jobRoute from "@/app/api/jobs/[jobId]/route";
 import * as jobs from "@/app/api/jobs/route";
 import * as lineCopy from "@/app/api/lines/[lineId]/copy/route";
 import * as lineRoute from "@/app/api/lines/[lineId]/route";
+import * as nests from "@/app/api/jobs/[jobId]/nests/route";
 import * as linesOfJob from "@/app/api/jobs/[jobId]/lines/route";
 import * as people from "@/app/api/shop/people/route";
 import * as personRoute from "@/app/api/shop/people/[membershipId]/route";
@@ -20,6 +21,7 @@ import * as sign from "@/app/api/revisions/[revisionId]/sign/route";
 import * as voided from "@/app/api/revisions/[revisionId]/void/route";
 import * as shopLogo from "@/app/api/shop/logo/route";
 import * as shopRoute from "@/app/api/shop/route";
+import * as offcuts from "@/app/api/shop/offcuts/route";
 import * as draftSheet from "@/app/api/spools/[spoolId]/sheet/route";
 import * as spoolRoute from "@/app/api/spools/[spoolId]/route";
 import * as submit from "@/app/api/spools/[spoolId]/submit/route";
@@ -69,6 +71,10 @@ const ROWS: readonly Row[] = [
   { what: "change settings, title block and stock", handler: shopRoute.PATCH, method: "PATCH", may: "ynnn", make: () => ({ body: { sheetSize: "letter", fields: [{ label: "Area", value: "1" }], stock: [] } }) },
   { what: "change the logo", handler: shopLogo.PUT, method: "PUT", may: "ynnn", make: () => ({ file: { name: "l.png", bytes: pngFile() } }) },
   { what: "word on a take-out", handler: takeOuts.POST, method: "POST", may: "ynnn", make: () => ({ body: { key: "elbow:lr-90:10", valueMm: 382 } }) },
+  { what: "put an offcut on the rack", handler: offcuts.POST, method: "POST", may: "ynnn", make: () => ({ body: { nps: "4", schedule: "STD", material: "ASTM A106 Gr B", lengthMm: 700, heat: "" } }) },
+  { what: "read the rack", handler: offcuts.GET, method: "GET", may: "yyyy", make: () => ({}) },
+  { what: "ask for a cutting plan", handler: nests.POST, method: "POST", may: "yynn", needs: "line", make: ({ jobId, spoolIds }) => ({ params: { jobId }, body: { spoolIds: [spoolIds[0]!], saw: "Band saw" } }) },
+  { what: "read cutting plans", handler: nests.GET, method: "GET", may: "yyyy", needs: "line", make: ({ jobId }) => ({ params: { jobId } }) },
   { what: "read settings", handler: shopRoute.GET, method: "GET", may: "yyyy", make: () => ({}) },
   { what: "read people", handler: people.GET, method: "GET", may: "yyyy", make: () => ({}) },
   { what: "read the log", handler: auditRoute.GET, method: "GET", may: "yyyn", make: () => ({}) },

@@ -3,7 +3,7 @@ import { beforeAll, describe, expect, it } from "vitest";
 import { nestPieces, type NestInput, type NestOptions, type NestStock, type OpenLp } from "@/iso";
 import { loadLpSolver } from "@/lib/commands/lp-solver";
 import { bestFitCost, nestFaults } from "../../oracle/check-nest";
-import { seededRandom as seeded } from "../../oracle/random";
+import { fullRack, seededShop } from "../../oracle/nest-racks";
 
 let openLp: OpenLp;
 beforeAll(async () => {
@@ -41,44 +41,11 @@ describe("published cutting-stock examples (figures from memory of the books nam
   });
 });
 
-/** A shop's rack: two stock lengths to buy, offcuts with heats, pieces in sixteenths of an inch. */
-function shop(seed: number, most: number): NestInput {
-  const random = seeded(seed);
-  const whole = (from: number, to: number) => from + Math.floor(random() * (to - from + 1));
-  const perLength = 0.01;
-  const bought: NestStock[] = [
-    { id: "20 ft", length: 3840, quantity: random() < 0.3 ? whole(20, 60) : null, cost: 3840 * perLength, heat: null },
-    { id: "40 ft", length: 7680, quantity: null, cost: 7680 * perLength * 0.97, heat: null },
-  ];
-  const offcuts = Array.from({ length: whole(0, 15) }, (_, i): NestStock => {
-    const length = whole(300, 3000);
-    return { id: `offcut ${i + 1}`, length, quantity: 1, cost: length * perLength * 0.6, heat: `H${whole(1, 4)}` };
-  });
-  return {
-    demands: Array.from({ length: whole(1, most) }, (_, i) => ({ length: whole(40, random() < 0.2 ? 3700 : 1600), heat: random() < 0.04 ? "H1" : null, marks: [`P${i + 1}`] })),
-    stocks: [...bought, ...offcuts], kerf: 2, endTrim: random() < 0.5 ? 8 : 0, leastOffcut: 480, offcutValue: perLength * 0.6,
-  };
-}
-
-/** Two lengths to buy, 15 offcuts, and 60 to 100 pieces all different. */
-function fullRack(seed: number): Pick<NestInput, "stocks" | "demands"> {
-  const random = seeded(seed);
-  const whole = (from: number, to: number) => from + Math.floor(random() * (to - from + 1));
-  const offcuts = Array.from({ length: 15 }, (_, i): NestStock => {
-    const length = whole(300, 3000);
-    return { id: `offcut ${i + 1}`, length, quantity: 1, cost: length * 0.006, heat: `H${whole(1, 4)}` };
-  });
-  return {
-    stocks: [{ id: "20 ft", length: 3840, quantity: null, cost: 38.4, heat: null }, { id: "40 ft", length: 7680, quantity: null, cost: 74.5, heat: null }, ...offcuts],
-    demands: Array.from({ length: whole(60, 100) }, (_, i) => ({ length: whole(40, random() < 0.2 ? 3700 : 1600), heat: null, marks: [`P${i + 1}`] })),
-  };
-}
-
 describe("seeded shops", () => {
   it("never costs more than best-fit-decreasing, and every plan can be cut as it says (1 000 shops)", { timeout: 480_000 }, () => {
     let better = 0;
     for (let seed = 1; seed <= 1000; seed++) {
-      const input = shop(seed, 30);
+      const input = seededShop(seed, 30);
       const plan = nestPieces(input, options(0.04));
       expect(nestFaults(input, plan), `shop ${seed}`).toEqual([]);
       const hand = bestFitCost(input);
@@ -91,7 +58,7 @@ describe("seeded shops", () => {
 
   it("comes within 0.7 % of the bound at the median in one second of the processor: 60 to 100 pieces, two lengths, 15 offcuts", { timeout: 240_000 }, () => {
     const gaps = Array.from({ length: 15 }, (_, i) => {
-      const full = { ...shop(5000 + i, 1), ...fullRack(5000 + i) };
+      const full = fullRack(5000 + i);
       const plan = nestPieces(full, options(1));
       expect(nestFaults(full, plan)).toEqual([]);
       return (plan.cost - plan.bound) / plan.cost;
@@ -101,7 +68,7 @@ describe("seeded shops", () => {
 
   it("agrees with trying everything on small racks", () => {
     for (let seed = 1; seed <= 40; seed++) {
-      const small = shop(seed, 5);
+      const small = seededShop(seed, 5);
       const input = { ...small, stocks: small.stocks.slice(0, 4) };
       const plan = nestPieces(input, options(2));
       if (plan.unplaced.length > 0) continue;
