@@ -1,10 +1,11 @@
 /** Bench pages and templates through their route: who gets which, in what size, saying what state. */
 import { afterAll, beforeAll, describe, expect, test } from "vitest";
 import * as bench from "@/app/api/spools/[spoolId]/bench/route";
-import * as work from "@/app/api/spools/[spoolId]/work/route";
 import { signed } from "./revision-support";
+import { routeNamed } from "./routes";
 import { call, endOfFile, newLine, newShop, ROLES, type TestLine, type TestShop } from "./support";
 
+const work = { POST: await routeNamed("POST /spools/[spoolId]/work") };
 let shop: TestShop;
 let draft: TestLine;
 let issued: Awaited<ReturnType<typeof signed>>;
