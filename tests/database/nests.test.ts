@@ -1,5 +1,6 @@
 /** Cutting plans end to end: asked for, searched in a thread, cancelled, locked once, kept to the shop. */
 import { afterAll, beforeAll, describe, expect, test } from "vitest";
+import * as lineRoute from "@/app/api/lines/[lineId]/route";
 import * as jobNests from "@/app/api/jobs/[jobId]/nests/route";
 import * as cancelRoute from "@/app/api/nests/[nestId]/cancel/route";
 import * as cutRoute from "@/app/api/nests/[nestId]/cut/route";
@@ -10,9 +11,10 @@ import * as shopRoute from "@/app/api/shop/route";
 import { runNestJob } from "@/lib/jobs/nest-job";
 import type { NestDetail } from "@/lib/rules/nest-plans";
 import { groupInput } from "@/lib/rules/nest-input";
+import { sampleDocument } from "../factories";
 import { nestFaults } from "../oracle/check-nest";
 import { signed, type TestRevision } from "./revision-support";
-import { call, endOfFile, newLine, newShop, withClient, type TestShop } from "./support";
+import { call, endOfFile, newLine, newShop, unique, withClient, type TestShop } from "./support";
 
 let shop: TestShop;
 let issued: TestRevision;
@@ -100,6 +102,18 @@ describe("a cutting plan", () => {
     expect(cut.status).toBe(409);
     expect(cut.json.message).toContain("FOR FABRICATION");
     expect((await call(nestRoute.GET, { as: shop.fitter, params: { nestId } })).status).toBe(404);
+  });
+
+  test("is called out of date once a spool of it has changed", async () => {
+    const number = unique("L");
+    const draft = await newLine(shop, sampleDocument(number));
+    const answer = await call(jobNests.POST, { as: shop.detailer, method: "POST", params: { jobId: draft.jobId }, body: body(draft.spoolIds[0]!) });
+    const nestId = answer.json.id as string;
+    await runNestJob({ shopId: shop.shopId, nestId });
+    expect((await detail(nestId)).stale).toEqual([]);
+    const saved = await call(lineRoute.PUT, { as: shop.detailer, method: "PUT", params: { lineId: draft.lineId }, body: { version: 1, document: sampleDocument(number, 1_500) } });
+    expect(saved.status, saved.text).toBe(200);
+    expect((await detail(nestId)).stale[0]).toContain("has changed since");
   });
 
   test("takes the stock when it is locked, returns rests with their heat, and is not changed after", async () => {
