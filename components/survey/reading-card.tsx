@@ -44,8 +44,10 @@ export function ReadingCard({ reading, number, result, remarks, marksId, onChang
         {reading.kind === "point" ? null : <TextField label={reading.kind === "offset" ? "From, blank = datum" : "From mark"} figure list={marksId} value={reading.from} onChange={set("from")} autoCapitalize="characters" />}
         <TextField label={reading.kind === "point" ? "Mark" : "To mark"} figure list={marksId} value={reading.to} onChange={set("to")} autoCapitalize="characters" />
       </div>
-      <Values label={reading.kind === "bearing" ? "Direction" : "Reading"} texts={reading.first} onChange={(first) => onChange({ ...reading, first })} hint={reading.kind === "bearing" ? "045, 045/30, N30E, UN" : undefined} />
-      <Values label="Again" texts={reading.again} onChange={(again) => onChange({ ...reading, again })} />
+      <div className={reading.first.length === 3 ? "" : "grid grid-cols-2 items-end gap-2"}>
+        <Values label={reading.kind === "bearing" ? "Direction" : "Reading"} texts={reading.first} onChange={(first) => onChange({ ...reading, first })} placeholder={reading.kind === "bearing" ? "045/30, N30E" : undefined} />
+        <Values label="Again" texts={reading.again} onChange={(again) => onChange({ ...reading, again })} />
+      </div>
       {remarks.map((words) => (
         <p key={words} className="mt-2 font-medium text-alert">
           {words}
@@ -71,12 +73,12 @@ export function ReadingCard({ reading, number, result, remarks, marksId, onChang
   );
 }
 
-function Values({ label, texts, hint, onChange }: { readonly label: string; readonly texts: readonly string[]; readonly hint?: string | undefined; readonly onChange: (texts: string[]) => void }) {
+function Values({ label, texts, placeholder, onChange }: { readonly label: string; readonly texts: readonly string[]; readonly placeholder?: string | undefined; readonly onChange: (texts: string[]) => void }) {
   const set = (at: number) => (event: ChangeEvent<HTMLInputElement>) => onChange(texts.map((text, i) => (i === at ? event.target.value : text)));
   return (
     <div className={`mt-2 grid gap-2 ${texts.length === 3 ? "grid-cols-3" : "grid-cols-1"}`}>
       {texts.map((text, at) => (
-        <TextField key={at} label={texts.length === 3 ? `${label} ${AXES[at]}` : label} hint={hint} figure maxLength={60} value={text} onChange={set(at)} />
+        <TextField key={at} label={texts.length === 3 ? `${label} ${AXES[at]}` : label} placeholder={placeholder} figure maxLength={60} value={text} onChange={set(at)} />
       ))}
     </div>
   );

@@ -27,8 +27,9 @@ const LOOSE_SHARE = 1e-3;
 export function adjustNetwork(network: SurveyNetwork): Adjustment {
   const free = network.marks.filter((mark) => !network.fixed.has(mark));
   const found = bestPlaces(network).places;
-  const places = settle(network, free, frameFree(network, found, rigidDefect(network, free, found).motions));
-  return judged(network, free, places);
+  const framed = (places: Places) => frameFree(network, places, rigidDefect(network, free, places).motions.columns);
+  // Framed twice: the last steps move every mark a little, and a motion of the whole changes no residual.
+  return judged(network, free, framed(settle(network, free, framed(found))));
 }
 
 interface Inverse {

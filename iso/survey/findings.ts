@@ -138,7 +138,9 @@ function datumFindings(network: SurveyNetwork, { datumDefect, coordinates, loose
   if (datumDefect === 6 && a && b && c) {
     findings.push({ code: "datum", tone: "note", readingIds: [], sentence: `Nothing ties these marks to plant coordinates: ${a} is taken as zero, ${b} as east of it and ${c} as level with them. Give an offset from the datum, a level reading and a bearing to turn them into plant directions.` });
   } else if (datumDefect > 0 && a) {
-    findings.push({ code: "datum", tone: "note", readingIds: [], sentence: `Nothing ties these marks to plant coordinates: ${a} is taken as zero.` });
+    const eastward = b && network.observations.every((o) => o.type !== "azimuth" && (o.type !== "along" || o.axis === 2));
+    findings.push({ code: "datum", tone: "note", readingIds: [], sentence: `Nothing ties these marks to plant coordinates: ${a} is taken as zero${eastward ? ` and ${b} as east of it` : ""}.` });
+    if (datumDefect === 5) findings.push({ code: "tilt", tone: "caution", readingIds: [], sentence: "One level reading holds the tilt one way only: give a second one, between marks off that line, or all heights and axes may lean." });
   }
   const tapesOnly = network.observations.every((o) => o.type === "distance");
   const deep = [...coordinates.entries()].filter(([mark, place]) => !loose.includes(mark) && Math.abs(place[2]) > INCH_MM);

@@ -2,25 +2,35 @@
  * A frame for what no reading ties to the datum, so that the same tapes always answer the same numbers: the first mark
  * at zero; where the whole can also turn, the second to the east of it and the third level with them, on the north side.
  */
-import type { Matrix } from "ml-matrix";
 import { SAME_POINT_MM } from "../geometry/tolerances";
 import type { Vec3 } from "../geometry/types";
-import { vecCross, vecDot, vecLength, vecReject, vecSub, vecUnit } from "../geometry/vec3";
+import { VEC_UP, vecCross, vecDot, vecLength, vecReject, vecRotate, vecSub, vecUnit } from "../geometry/vec3";
 import type { Places } from "./observations";
-import type { SurveyNetwork } from "./survey-types";
+import { DATUM, type SurveyNetwork } from "./survey-types";
 
 const ALL_FREE = 6;
-/** Shifts alone, or shifts and a turn about the plumb line: the first mark goes to zero in either case. */
-const SHIFTS = [3, 4];
+const SHIFTS = 3;
 
-/** The places moved as a whole into the frame; unchanged when the readings decide the frame, or part of it. */
-export function frameFree(network: SurveyNetwork, places: Places, motions: Matrix): Places {
+/**
+ * The places moved as a whole into the frame; unchanged when the readings decide it.
+ * @param freedoms rigid motions no reading feels.
+ */
+export function frameFree(network: SurveyNetwork, places: Places, freedoms: number): Places {
   const marks = network.marks;
   const origin = marks[0] === undefined ? undefined : places.get(marks[0]);
-  if (origin === undefined) return places;
-  if (motions.columns === ALL_FREE) return intoAxes(marks, places, origin);
-  if (!SHIFTS.includes(motions.columns) || network.observations.some((o) => o.from === "")) return places;
-  return new Map([...places].map(([mark, place]) => [mark, vecSub(place, origin)]));
+  if (origin === undefined || freedoms < SHIFTS || network.fixed.size > 0) return places;
+  if (freedoms === ALL_FREE) return intoAxes(marks, places, origin);
+  if (network.observations.some((o) => o.from === DATUM)) return places;
+  const shifted = new Map(marks.map((mark) => [mark, vecSub(places.get(mark) ?? origin, origin)]));
+  const turns = network.observations.every((o) => o.type !== "azimuth" && (o.type !== "along" || o.axis === 2));
+  return turns ? turnedEast(marks, shifted) : shifted;
+}
+
+/** Turned about the plumb line of the first mark until the second lies due east of it. */
+function turnedEast(marks: readonly string[], places: Places): Places {
+  const [e, n] = marks.map((mark) => places.get(mark)!).find((place) => Math.hypot(place[0], place[1]) > SAME_POINT_MM) ?? [1, 0];
+  const angle = -Math.atan2(n, e);
+  return new Map(marks.map((mark) => [mark, vecRotate(places.get(mark)!, VEC_UP, angle)]));
 }
 
 function intoAxes(marks: readonly string[], places: Places, origin: Vec3): Places {

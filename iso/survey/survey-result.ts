@@ -41,9 +41,10 @@ export function surveyResult(document: SurveyDocument, odMm: number): SurveyResu
   if (network.marks.length === 0) return { marks: [], ends: [], readings: [], findings: found, adjustment: null };
   const adjustment = adjustNetwork(network);
   found.push(...adjustmentFindings(document, network, adjustment));
+  const named = found.filter((each) => each.code === "outlier" || each.code === "unit-slip").flatMap((each) => each.readingIds);
   const ends = document.ends.flatMap((end) => surveyEnd(end, document, adjustment, found) ?? []);
   found.push(...clashes(ends, odMm));
-  return { marks: marksOf(network, adjustment), ends, readings: readingsOf(document, adjustment), findings: found, adjustment };
+  return { marks: marksOf(network, adjustment), ends, readings: readingsOf(document, adjustment, named), findings: found, adjustment };
 }
 
 function clashes(ends: readonly SurveyEndResult[], odMm: number): SurveyFinding[] {
@@ -61,15 +62,17 @@ function marksOf(network: SurveyNetwork, { coordinates, order, covariance, loose
   });
 }
 
-function readingsOf({ readings, units }: SurveyDocument, adjustment: Adjustment): SurveyReadingResult[] {
+/** @param named readings a finding holds to be wrong: one blunder pulls others past their limit too, and those are not blamed. */
+function readingsOf({ readings, units }: SurveyDocument, adjustment: Adjustment, named: readonly string[]): SurveyReadingResult[] {
   return readings.flatMap((reading) => {
     const own = adjustment.observations.filter((each) => each.observation.readingId === reading.id);
     const worst = own.reduce<(typeof own)[number] | null>((most, each) => (most === null || Math.abs(each.standardised) > Math.abs(most.standardised) ? each : most), null);
     if (!worst) return [];
     const redundancy = Math.min(...own.map((each) => each.redundancy));
-    const off = isOff(worst.standardised);
+    const off = named.includes(reading.id);
     const words = off
       ? `off by about ${errorText(worst.observation, worst.likelyError, units)}`
+      : isOff(worst.standardised) && named.length > 0 ? "pulled by a reading that is off"
       : worst.redundancy === 0 ? "nothing else checks it" : `fits within ${errorText(worst.observation, worst.residual, units)}`;
     return [{ readingId: reading.id, words: sentence(words), off, redundancy }];
   });

@@ -21,7 +21,7 @@ const inches = (a: readonly number[], b: readonly number[]) => String(Math.round
 
 const SPOTS: Readonly<Record<string, Vec3>> = { A: [0, 0, 0], B: [96, 0, 0], C: [40, 72, 0], D: [50, 20, 60], E: [110, 60, 40], F: [20, 50, 80] };
 const PAIRS = Object.keys(SPOTS).flatMap((a, i, all) => all.slice(i + 1).map((b) => [a, b] as const));
-const LEVELS = [offset("A", "D", ["", "", "60"])];
+const LEVELS = [offset("A", "D", ["", "", "60"]), offset("A", "B", ["", "", "0"]), offset("A", "C", ["", "", "0"])];
 const network = (change: Readonly<Record<string, string>> = {}) => survey([...PAIRS.map(([a, b]) => tape(a, b, change[`${a}-${b}`] ?? inches(SPOTS[a]!, SPOTS[b]!))), ...LEVELS]);
 
 describe("readings in words", () => {
@@ -29,6 +29,9 @@ describe("readings in words", () => {
     const { adjustment, marks, findings } = surveyResult(network(), 114.3);
     expect(adjustment!.fits).toBe(true);
     expect(findings.map((each) => each.code)).toEqual(["datum"]);
+    const [a, b] = ["A", "B"].map((name) => marks.find((each) => each.name === name)!.position);
+    expect(Math.hypot(...a!)).toBeLessThan(0.001);
+    expect(Math.abs(b![1])).toBeLessThan(0.001);
     const e = marks.find((each) => each.name === "E")!.position;
     const f = marks.find((each) => each.name === "F")!.position;
     expect(Math.hypot(e[0] - f[0], e[1] - f[1], e[2] - f[2]) / INCH_MM).toBeCloseTo(Math.hypot(90, 10, 40), 1);
@@ -37,6 +40,17 @@ describe("readings in words", () => {
   test("a tape an inch off is named, with its size and what to do", () => {
     const off = String(Number(inches(SPOTS.D!, SPOTS.F!)) + 1);
     expect(words(network({ "D-F": off }))).toMatch(/Tape D-F disagrees with the rest by about (15\/16|1|1 1\/16) in; measure D-F again\./);
+  });
+
+  test("only the reading that is off is blamed on its card, not those it pulls along", () => {
+    const { readings } = surveyResult(network({ "D-F": String(Number(inches(SPOTS.D!, SPOTS.F!)) + 1) }), 114.3);
+    expect(readings.filter((each) => each.off)).toHaveLength(1);
+    expect(readings.some((each) => each.words === "Pulled by a reading that is off")).toBe(true);
+  });
+
+  test("one level reading leaves the tilt the other way free, and that is said", () => {
+    const tapes = PAIRS.map(([a, b]) => tape(a, b, inches(SPOTS[a]!, SPOTS[b]!)));
+    expect(words(survey([...tapes, LEVELS[0]!]))).toContain("holds the tilt one way only");
   });
 
   test("two readings of one tape that disagree", () => {
