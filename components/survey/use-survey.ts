@@ -47,25 +47,35 @@ export function useSurvey(lineId: string): SurveyLoading {
   const [state, setState] = useState<SurveyLoading>({ kind: "loading" });
   const [view, setView] = useState<SyncView | null>(null);
   const sync = useRef<SurveySync | null>(null);
+  const opening = useRef<Opening | null>(null);
+  useEffect(() => () => {
+    opening.current = null;
+  }, [lineId]);
   useEffect(() => {
     if (person === null && !silent) return;
-    let gone = false;
-    void openOne(lineId, person, (next) => !gone && setView(next)).then((opened) => {
-      if (gone) return;
+    // Who signed in is heard of late when the signal was away: what is open already goes on, with all that was typed.
+    if (opening.current && (person === null || opening.current.personId === person)) return;
+    const own: Opening = { personId: person };
+    opening.current = own;
+    void openOne(lineId, person, (next) => opening.current === own && setView(next)).then((opened) => {
+      if (opening.current !== own) return;
       if (typeof opened === "string") return setState({ kind: "failed", message: opened });
+      own.personId = opened.personId;
       sync.current = opened.sync;
       setView(opened.sync.view());
       setState({ kind: "open", survey: { detail: opened.detail, personId: opened.personId, store: opened.store, readsLine: false, view: opened.sync.view(), change: () => undefined, choose: () => undefined, sendNow: () => undefined } });
     });
-    return () => {
-      gone = true;
-    };
   }, [lineId, person, silent]);
   const change = useCallback((document: SurveyDocument) => void sync.current?.change(document), []);
   const choose = useCallback((conflict: SurveyConflict, side: "mine" | "theirs") => void sync.current?.choose(conflict, side), []);
   const sendNow = useCallback(() => void sync.current?.sendNow(), []);
   useSending(view, sendNow);
   return state.kind === "open" && view ? { kind: "open", survey: { ...state.survey, readsLine: viewer.data ? canDo(viewer.data.role, "lines.read") : false, view, change, choose, sendNow } } : state;
+}
+
+/** The opening that counts, and whose survey it is; null while nobody is known. */
+interface Opening {
+  personId: string | null;
 }
 
 interface Opened {
