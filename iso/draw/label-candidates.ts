@@ -8,10 +8,10 @@ import type { DisplayItem } from "./drawing-types";
 import { CELLS_PER_MM, type InkMap } from "./ink-map";
 import { ALONG_COSINE, leaderIsShort, leaderSkip } from "./label-leaders";
 import {
-  RINGS, POOR_TIER, POOR_RINGS, FAR_RINGS, NEAR_TIERS, MOST_ANCHORS, MOST_ANCHORS_FAR, TIER_COUNT, PRICE, COST_PER_MM,
+  RINGS, POOR_TIER, POOR_RINGS, FAR_RINGS, NEAR_TIERS, MOST_ANCHORS, TIER_COUNT, PRICE, COST_PER_MM,
   COST_OF_TOUCH, COST_PER_CELL, COST_ON_THIN, COST_PER_THIN_CELL, COST_OF_WORDS_ON_THIN, COST_OVER_THIN, COST_PER_OVER_CELL,
-  COST_OUTSIDE, COST_PER_OUTSIDE, COST_ALONG_PIPE, COST_OF_ANCHOR, ANGLES, DX, DY, AXIAL, HALF_ANGLES_UNDER, HALF_ANGLES_OVER,
-  MARGIN, LEADER_END, MOST_IN_TIER,
+  COST_OUTSIDE, COST_PER_OUTSIDE, COST_ALONG_PIPE, COST_OF_ANCHOR, HALF_ANGLES_UNDER, HALF_ANGLES_OVER,
+  MARGIN, LEADER_END, MOST_IN_TIER, type Fineness,
 } from "./label-rings";
 
 /** Where a leader may meet a label: a disc about `offset` from the label's middle. */
@@ -75,7 +75,7 @@ export class Candidates {
   private readonly ends: Int32Array;
   private readonly follows: (Float64Array | null)[];
 
-  constructor(private readonly labels: readonly Label[], private readonly ink: LabelInk, private readonly numbers: InkMap) {
+  constructor(private readonly labels: readonly Label[], private readonly ink: LabelInk, private readonly numbers: InkMap, private readonly fineness: Fineness) {
     this.starts = new Int32Array(labels.length * TIER_COUNT).fill(-1);
     this.ends = new Int32Array(labels.length * TIER_COUNT);
     this.follows = new Array<Float64Array | null>(labels.length).fill(null);
@@ -102,9 +102,9 @@ export class Candidates {
     const label = this.labels[index]!;
     const first = this.count;
     const poor = tier >= POOR_TIER;
-    const rings = tier < POOR_TIER ? RINGS[tier]! : tier === POOR_TIER ? POOR_RINGS : FAR_RINGS[tier - POOR_TIER - 1]!;
-    const anchors = Math.min(label.anchors.length, poor ? 1 : tier < NEAR_TIERS ? MOST_ANCHORS : MOST_ANCHORS_FAR);
-    const follows = (this.follows[index] ??= followsOf(label));
+    const rings = tier < POOR_TIER ? this.fineness.rings[tier]! : tier === POOR_TIER ? POOR_RINGS : FAR_RINGS[tier - POOR_TIER - 1]!;
+    const anchors = Math.min(label.anchors.length, poor ? 1 : tier < NEAR_TIERS ? MOST_ANCHORS : this.fineness.farAnchors);
+    const follows = (this.follows[index] ??= followsOf(label, this.fineness));
     for (let ring = 0; ring < rings.length; ring++) {
       for (let anchor = 0; anchor < anchors; anchor++) {
         for (const hub of label.hubs) this.ringPlaces(label, label.anchors[anchor]!, anchor, hub, rings[ring]!, follows, poor, tier > POOR_TIER);
@@ -165,7 +165,8 @@ export class Candidates {
   /** Adds the places of one ring about one anchor that are of the kind asked for. One long loop: a call with fractions as arguments costs more than its work here. */
   private ringPlaces(label: Label, anchor: PaperPoint, place: number, hub: Hub, ring: number, follows: Float64Array, poor: boolean, far: boolean): void {
     const { heavy, room } = this.ink;
-    const { numbers } = this;
+    const { numbers, fineness } = this;
+    const { count, dx: ways, dy: falls, axial } = fineness.directions;
     const hx = hub.offset[0];
     const hy = hub.offset[1];
     const ax = anchor[0];
@@ -179,12 +180,12 @@ export class Candidates {
     const led = ring >= label.leaderFrom;
     const marks = (led ? LED : 0) | UNKNOWN;
     const fixed = ring * COST_PER_MM + place * COST_OF_ANCHOR;
-    if (this.count + ANGLES > this.flags.length) this.grow();
+    if (this.count + count > this.flags.length) this.grow();
     const { at, flags, base, over } = this;
     const step = ring < HALF_ANGLES_UNDER || ring > HALF_ANGLES_OVER ? 2 : 1;
-    for (let i = step === 2 ? Math.floor(ring + place) & 1 : 0; i < ANGLES; i += step) {
-      const dx = DX[i]!;
-      const dy = DY[i]!;
+    for (let i = step === 2 ? Math.floor(ring + place) & 1 : 0; i < count; i += step) {
+      const dx = ways[i]!;
+      const dy = falls[i]!;
       // The label must lie beyond its hub, not back over the anchor.
       if (hx * dx + hy * dy > back) continue;
       const toX = ax + dx * reach;
@@ -212,7 +213,7 @@ export class Candidates {
       at[o + 3] = ay + dy * label.clear;
       at[o + 4] = toX;
       at[o + 5] = toY;
-      base[c] = fixed + AXIAL[i]! + follows[i]!
+      base[c] = fixed + axial[i]! + follows[i]!
         + (onPipe ? COST_OF_TOUCH + heavy.countCells(x0, y0, x1, y1) * COST_PER_CELL : 0) + (out > 0 ? COST_OUTSIDE + out * COST_PER_OUTSIDE : 0);
       over[c] = 0;
       flags[c] = onPipe ? marks | BOX_TOUCHES : marks;
@@ -250,10 +251,10 @@ function sortKeys(keys: Float64Array, count: number): void {
 }
 
 /** Price, by direction, of a leader that runs along its pipe. */
-function followsOf(label: Label): Float64Array {
-  const follows = new Float64Array(ANGLES);
-  for (let i = 0; i < ANGLES; i++) {
-    for (const d of label.along) if (Math.abs(d[0] * DX[i]! + d[1] * DY[i]!) > ALONG_COSINE) follows[i] = COST_ALONG_PIPE;
+function followsOf(label: Label, { directions: { count, dx, dy } }: Fineness): Float64Array {
+  const follows = new Float64Array(count);
+  for (let i = 0; i < count; i++) {
+    for (const d of label.along) if (Math.abs(d[0] * dx[i]! + d[1] * dy[i]!) > ALONG_COSINE) follows[i] = COST_ALONG_PIPE;
   }
   return follows;
 }

@@ -8,25 +8,24 @@ import type { Candidates, Label } from "./label-candidates";
 import type { LabelGrid } from "./label-grid";
 import { PRICE, TIER_COUNT } from "./label-rings";
 
-/** How deep one label may put out another; places tried at each depth. */
-const DEPTH = 2;
+/** Places tried at each depth at which one label puts out another. */
 const TRIES = [0, 4, 10] as const;
+const DEPTH = 2;
 /** Tiers in which a place is worth another label's moving. */
 const TAKEN_TIERS = 6;
 /** More than this at one place are not moved. */
 const MOST_MOVED = 2;
-/** A label that costs no more sits well. */
+/** A label that costs no more sits well; one that costs more than this has no clean place. */
 const EASY = 6.5 * PRICE;
+const UNCLEAN = 26 * PRICE;
 const LEAST_GAIN = 0.25 * PRICE;
 /** From this tier on any free place will do: the label is beyond all usual rings. */
 const LAST_USUAL = 11;
+/** Rounds of the deep search, and of the last one, which brings labels nearer to what others left. */
 const ROUNDS = 16;
+const LAST_ROUNDS = 2;
 /** Rings counted to tell which labels have few places. */
 const NEAR_TIERS = 2;
-/** Places looked at in all before what is reached is left as it is; a sheet with very many labels, which is read in the editor only, stops sooner. */
-const LOOKS = 240_000;
-const LOOKS_FOR_MANY = 80_000;
-const MANY = 190;
 /** A move within this of a label is worth another try for it, mm. */
 const ZONE = 30;
 /** Dearer than any seat. */
@@ -35,12 +34,25 @@ const MOST_COST = 1 << 29;
 const ZONES = 4096;
 const NONE = -1;
 
+/** What a search is given. */
+export interface Effort {
+  /** A label that costs more may put out others DEPTH deep. */
+  readonly price: number;
+  /** How deep labels that cost more than EASY may put out others at the last. */
+  readonly lastDepth: number;
+  /** Places looked at in all before what is reached is left as it is. */
+  readonly looks: number;
+}
+export const QUICK: Effort = { price: 20 * PRICE, lastDepth: 0, looks: 120_000 };
+export const THOROUGH: Effort = { price: 24 * PRICE, lastDepth: 1, looks: 800_000 };
+
 export class LabelSearch {
   private readonly locked: Uint8Array;
   private readonly journal: number[] = [];
   private readonly met: Int32Array[] = TRIES.map(() => new Int32Array(MOST_MOVED));
   private found = NONE;
   private looks = 0;
+  private most = 0;
   private moves = 1;
   private readonly tried: Int32Array;
   /** Last move in each zone of paper. */
@@ -51,22 +63,30 @@ export class LabelSearch {
     this.tried = new Int32Array(labels.length);
   }
 
-  run(): void {
+  /** Seats all labels; answers how many are left without a clean place. */
+  run({ price, lastDepth, looks }: Effort): number {
     const order = this.labels.map((_, i) => i);
     const choice = order.map((i) => this.choices(i));
     order.sort((p, q) => choice[p]! - choice[q]! || p - q);
     for (const label of order) this.insert(label, MOST_COST, 0);
-    const most = this.labels.length > MANY ? LOOKS_FOR_MANY : LOOKS;
-    for (let round = 0; round < ROUNDS; round++) {
-      const uneasy = this.uneasy(order, round === 0 ? this.candidates.leastCost(0) : EASY);
+    this.most = looks;
+    this.sweeps(order, this.candidates.leastCost(0), 0, 1);
+    this.sweeps(order, price, DEPTH, ROUNDS);
+    this.sweeps(order, EASY, lastDepth, LAST_ROUNDS);
+    return this.uneasy(order, UNCLEAN).length;
+  }
+
+  /** Tries labels that cost more than a price, the dearest first, until none moves. */
+  private sweeps(order: readonly number[], price: number, depth: number, rounds: number): void {
+    for (let round = 0; round < rounds; round++) {
       let moved = false;
-      for (const label of uneasy) {
-        if (this.looks > most) return;
-        if (round > 1 && !this.stirred(label)) continue;
-        if (this.improved(label, round === 0 ? 0 : DEPTH)) moved = true;
+      for (const label of this.uneasy(order, price)) {
+        if (this.looks > this.most) return;
+        if (round > 0 && !this.stirred(label)) continue;
+        if (this.improved(label, depth)) moved = true;
         else this.tried[label] = this.moves;
       }
-      if (!moved && round > 0) return;
+      if (!moved) return;
     }
   }
 

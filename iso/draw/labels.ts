@@ -6,15 +6,20 @@
  */
 import type { PaperBox } from "../geometry/types";
 import type { DisplayItem, LabelReport } from "./drawing-types";
-import { boxMap, turnedInk } from "./ink-map";
+import { boxMap, turnedInk, type InkMap } from "./ink-map";
 import { Candidates, FROM_X, FROM_Y, LED, STRIDE, TO_X, TO_Y, X, Y, type Label, type LabelInk } from "./label-candidates";
+import { COARSE, FINE } from "./label-rings";
 import { LabelGrid } from "./label-grid";
-import { LabelSearch } from "./label-search";
+import { LabelSearch, QUICK, THOROUGH } from "./label-search";
 import { numbersAside, type PlacedNumber } from "./number-places";
 import { boxesMeet, segmentInBox, segmentsApart, type Segment, type TurnedBox } from "./plane";
 
 /** A leader this near a number touches it, mm. */
 const LEADER_MARGIN = 0.25;
+/** Share of labels that may stay unclean before the search is made thorough: it costs many times more. */
+const FEW = 0.05;
+/** A sheet with more labels is read in the editor only, where it must come at once. */
+const MANY = 190;
 /** Paper for labels beside what stands out of the room, mm. */
 const BESIDE = 20;
 
@@ -32,9 +37,8 @@ export interface PlacedLabels {
  */
 export function placeLabels(labels: readonly Label[], still: readonly TurnedBox[], ink: LabelInk, numbers: readonly PlacedNumber[] = []): PlacedLabels {
   const room = roomBeside(labels, ink.room);
-  const candidates = new Candidates(labels, { ...ink, room }, boxMap([...still, ...numbers.map(({ box }) => box)]));
-  const grid = new LabelGrid(labels, candidates, room);
-  new LabelSearch(labels, candidates, grid).run();
+  const numberMap = boxMap([...still, ...numbers.map(({ box }) => box)]);
+  const { candidates, grid } = seated(labels, { ...ink, room }, numberMap);
   const items: DisplayItem[] = [];
   const boxes: TurnedBox[] = [];
   const lengths: number[] = [];
@@ -66,6 +70,18 @@ export function placeLabels(labels: readonly Label[], still: readonly TurnedBox[
     if (through.length > 0 || turnedInk(ink.heavy, box) > 0) touches++;
   }
   return { items, boxes, numbers: aside, report: reportOf(boxes, fixed, touches + touched.size, lengths) };
+}
+
+/** Seats from few places first; where those leave more than a few labels unclean, from many places, searched deeper. */
+function seated(labels: readonly Label[], ink: LabelInk, numbers: InkMap): { readonly candidates: Candidates; readonly grid: LabelGrid } {
+  const quick = new Candidates(labels, ink, numbers, COARSE);
+  const grid = new LabelGrid(labels, quick, ink.room);
+  const left = new LabelSearch(labels, quick, grid).run(QUICK);
+  if (left <= FEW * labels.length || labels.length > MANY) return { candidates: quick, grid };
+  const candidates = new Candidates(labels, ink, numbers, FINE);
+  const fine = new LabelGrid(labels, candidates, ink.room);
+  new LabelSearch(labels, candidates, fine).run(THOROUGH);
+  return { candidates, grid: fine };
 }
 
 /** The room, widened where a line that is too large for it stands out: its labels are better beside it than crowded inside. */
