@@ -40,11 +40,11 @@ export interface Effort {
   readonly price: number;
   /** How deep labels that cost more than EASY may put out others at the last. */
   readonly lastDepth: number;
-  /** Places looked at in all before what is reached is left as it is. */
+  /** Places looked at for each label of the sheet before what is reached is left as it is. */
   readonly looks: number;
 }
-export const QUICK: Effort = { price: 20 * PRICE, lastDepth: 0, looks: 120_000 };
-export const THOROUGH: Effort = { price: 24 * PRICE, lastDepth: 1, looks: 800_000 };
+export const QUICK: Effort = { price: 20 * PRICE, lastDepth: 0, looks: 1_200 };
+export const THOROUGH: Effort = { price: 24 * PRICE, lastDepth: 1, looks: 10_500 };
 
 export class LabelSearch {
   private readonly locked: Uint8Array;
@@ -69,7 +69,7 @@ export class LabelSearch {
     const choice = order.map((i) => this.choices(i));
     order.sort((p, q) => choice[p]! - choice[q]! || p - q);
     for (const label of order) this.insert(label, MOST_COST, 0);
-    this.most = looks;
+    this.most = looks * this.labels.length;
     this.sweeps(order, this.candidates.leastCost(0), 0, 1);
     this.sweeps(order, price, DEPTH, ROUNDS);
     this.sweeps(order, EASY, lastDepth, LAST_ROUNDS);
