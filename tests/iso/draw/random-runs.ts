@@ -4,10 +4,11 @@
  * `randomLine(seed)` is what the thousand lines of the tests and of the bench are made of. Every seed counts: none is left
  * out for drawing badly. What a seed gives:
  * - 5 to 120 points in all, spread evenly by their logarithm (half the lines have under 25), 0 to 6 branches of 2 to 9
- *   points that leave square to their run from tees, reducing tees, crosses, outlets and stub-ins;
+ *   points that leave square to their run from tees, reducing tees, outlets and stub-ins (no crosses: few shops weld them);
  * - habits of a shop's line, which goes from one place to another: it starts at a nozzle or a continued end, makes for two
  *   level ways and one of up and down (three turns in four are into these, the fourth goes anywhere but straight back), goes straight on through valves, flange pairs, reducers, joints, supports and instruments, and turns by elbows, now
- *   and then by a mitre, a bend or a return; legs of 0.35 to 9 m, most of them 0.6 to 2.5 m; 8 legs in a hundred are offsets
+ *   and then by a mitre or a bend (a return would lie nearer its own pipe than lines may here); legs of 0.35 to 9 m, most
+ *   of them 0.6 to 2.5 m; 8 legs in a hundred are offsets
  *   in or across a plane, 4 are sloped; lines are metric or imperial, NPS 2, 3, 4 or 6;
  * - a line never runs through itself: a step whose centre line comes within CLEARANCE_MM of pipe already laid is drawn
  *   again (two pipes may not stand in one place), and a run that finds no free step after many tries ends where it is.

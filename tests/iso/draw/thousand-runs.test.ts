@@ -1,8 +1,7 @@
 /**
  * A fixed share of the thousand random lines, in all four views: everything the model holds is on its sheets, no label lies on
- * another, no leg is degenerate, and the labels keep what they have reached. All thousand are drawn by `npm run bench`, which
- * prints the whole report against the targets. The floors here stand a little under the figures this share has reached, so that a
- * drawing that gets worse fails.
+ * another, no leg is degenerate, and labels are as clean and as near as the targets ask. All thousand are drawn by `npm run bench`, which
+ * prints the whole report against the same targets.
  */
 import { beforeAll, describe, expect, it } from "vitest";
 import { DIMENSION_CAP } from "@/iso/draw/sizes";
@@ -39,13 +38,13 @@ describe("a share of the thousand random lines", () => {
     expect(report.degenerate).toBe(0);
   });
 
-  it.each([[60, 0.97], [120, 0.9], [200, 0.75]])("keeps the share of clean labels it has reached near %i", (near, floor) => {
+  it.each([[60, 0.98], [120, 0.93], [200, 0.85]])("leaves at least the share of labels clean that is asked for near %i", (near, floor) => {
     const bucket = report.buckets.find((one) => one.near === near)!;
     expect(bucket.drawings).toBeGreaterThan(0);
     expect(share(bucket.clean, bucket.labels), reportLines(report).join("\n")).toBeGreaterThanOrEqual(floor);
   });
 
-  it.each([60, 120])("keeps leaders near %i labels within two heights of a dimension's number at the mean", (near) => {
+  it.each([60, 120, 200])("keeps leaders near %i labels within two heights of a dimension's number at the mean", (near) => {
     const bucket = report.buckets.find((one) => one.near === near)!;
     expect(leaderMean(bucket), reportLines(report).join("\n")).toBeLessThanOrEqual(2 * DIMENSION_CAP);
     expect(leaderP95(bucket)).toBeLessThanOrEqual(27);
