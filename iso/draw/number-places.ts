@@ -11,8 +11,6 @@ export interface PlacedNumber {
 /** Paper kept between a number and labels or other numbers, and between it and a leader, mm. */
 const MARGIN = 0.5;
 const LEADER_MARGIN = 0.3;
-/** Of a number's places only those over its line's own span: the middle, the ends, below. */
-const PLACES = 8;
 
 /**
  * @param taken boxes of everything else that is written
