@@ -46,7 +46,7 @@ describe("seeded shops", () => {
     let better = 0;
     for (let seed = 1; seed <= 1000; seed++) {
       const input = seededShop(seed, 30);
-      const plan = nestPieces(input, options(0.04));
+      const plan = nestPieces(input, options(0.015));
       expect(nestFaults(input, plan), `shop ${seed}`).toEqual([]);
       const hand = bestFitCost(input);
       expect(plan.unplaced.length, `shop ${seed}`).toBeLessThanOrEqual(hand.missing);
