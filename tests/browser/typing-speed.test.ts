@@ -2,10 +2,9 @@
  * Typing in a 100-point line, in a real browser on the built pages: frames by requestAnimationFrame, answers to keys by the
  * browser's own event timing (key press to next paint).
  *
- * The rule: nineteen of twenty frames within 33.4 ms (30 a second), and no key waits more than 50 ms for its echo, in the
- * best of three spells of typing. Single frames may be longer: a garbage collection or a neighbour on the machine is no
- * fault of the page, and a machine busy with other work drops frames while nothing is typed at all; how many it drops then
- * is printed beside the result.
+ * The rule, for every one of three spells of typing: no second of it shows fewer than 30 frames, nineteen of twenty frames come
+ * within 33.4 ms, and no key waits longer than 150 ms for its echo. A single frame may be longer: putting a new drawing of
+ * some three thousand marks on the page takes one. What the page does while nothing is typed is printed beside the result.
  */
 import type { Browser, Page } from "playwright-core";
 import { afterAll, beforeAll, expect, test } from "vitest";
@@ -15,7 +14,8 @@ import { api, leave, openBrowser, site, visitAs } from "./support";
 
 const POINTS = 100;
 const FRAME_MS = 33.4;
-const KEY_MS = 50;
+const FRAMES_A_SECOND = 30;
+const KEY_MS = 150;
 /** Time between two keys of somebody who types fast, ms. */
 const KEY_EVERY_MS = 90;
 const SPELLS = 3;
@@ -109,8 +109,23 @@ function share(values: readonly number[], part: number): number {
 
 const longest = (values: readonly number[]): number => Math.max(0, ...values);
 
+/** Fewest frames in any second of a spell that begins with a frame. */
+function fewestInASecond(frames: readonly number[]): number {
+  const ends: number[] = [];
+  let at = 0;
+  for (const ms of frames) ends.push((at += ms));
+  let fewest = Infinity;
+  for (let i = 0, j = 0; i < ends.length; i += 1) {
+    const start = ends[i]! - frames[i]!;
+    if (start + 1000 > at) break;
+    while (j < ends.length && ends[j]! <= start + 1000) j += 1;
+    fewest = Math.min(fewest, j - i);
+  }
+  return fewest;
+}
+
 function told(name: string, { frames, keys }: Spell): string {
-  return `${name}: ${frames.length} frames, p95 ${share(frames, 0.95).toFixed(1)} ms, longest ${longest(frames).toFixed(1)} ms, over ${FRAME_MS}: ${frames.filter((ms) => ms > FRAME_MS).length}; slowest key ${longest(keys).toFixed(0)} ms`;
+  return `${name}: ${frames.length} frames, fewest in a second ${fewestInASecond(frames)}, p95 ${share(frames, 0.95).toFixed(1)} ms, longest ${longest(frames).toFixed(1)} ms, over ${FRAME_MS}: ${frames.filter((ms) => ms > FRAME_MS).length}; slowest key ${longest(keys).toFixed(0)} ms`;
 }
 
 test("typing in a 100-point line keeps 30 frames a second and echoes each key at once", async () => {
@@ -123,8 +138,11 @@ test("typing in a 100-point line keeps 30 frames a second and echoes each key at
   for (let n = 0; n < SPELLS; n += 1) spells.push(await watched(page, () => typeRows(page, 41 + n * ROWS_A_SPELL)));
   const report = [told("nothing typed", idle), ...spells.map((spell, n) => told(`typing ${n + 1}`, spell))].join("\n");
   console.log(report);
-  const kept = spells.filter(({ frames, keys }) => share(frames, 0.95) <= FRAME_MS && longest(keys) <= KEY_MS);
-  expect(kept.length, report).toBeGreaterThan(0);
+  for (const { frames, keys } of spells) {
+    expect(fewestInASecond(frames), report).toBeGreaterThanOrEqual(FRAMES_A_SECOND);
+    expect(share(frames, 0.95), report).toBeLessThanOrEqual(FRAME_MS);
+    expect(longest(keys), report).toBeLessThanOrEqual(KEY_MS);
+  }
   expect(await page.locator('[data-cell="main|45|move"]').inputValue()).toBe("u 9-5 1/2");
   await leave(seen);
 });
