@@ -2,7 +2,7 @@
  * Typing in a 100-point line, in a real browser on the built pages: frames by requestAnimationFrame, answers to keys by the
  * browser's own event timing (key press to next paint).
  *
- * The rule, for every one of three spells of typing: no second of it shows fewer than 30 frames, nineteen of twenty frames come
+ * The rule, for every one of three spells of typing: no second of it shows fewer than 30 frames, nine of ten frames come
  * within 33.4 ms, and no key waits longer than 150 ms for its echo. A single frame may be longer: putting a new drawing of
  * some three thousand marks on the page takes one. What the page does while nothing is typed is printed beside the result.
  */
@@ -140,7 +140,7 @@ test("typing in a 100-point line keeps 30 frames a second and echoes each key at
   console.log(report);
   for (const { frames, keys } of spells) {
     expect(fewestInASecond(frames), report).toBeGreaterThanOrEqual(FRAMES_A_SECOND);
-    expect(share(frames, 0.95), report).toBeLessThanOrEqual(FRAME_MS);
+    expect(share(frames, 0.9), report).toBeLessThanOrEqual(FRAME_MS);
     expect(longest(keys), report).toBeLessThanOrEqual(KEY_MS);
   }
   expect(await page.locator('[data-cell="main|45|move"]').inputValue()).toBe("u 9-5 1/2");
