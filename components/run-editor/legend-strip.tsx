@@ -19,7 +19,7 @@ export const LegendStrip = memo(function LegendStrip({ legend, model, pointId }:
   const here = useMemo(() => legendAt(model, pointId), [model, pointId]);
   const sorted = useMemo(() => [...legend.filter((key) => here.has(key)), ...legend.filter((key) => !here.has(key))], [legend, here]);
   return (
-    <ul aria-label="Legend" className="flex max-h-20 flex-wrap gap-x-3 overflow-y-auto pt-1.5 text-xs text-soft max-lg:max-h-28">
+    <ul aria-label="Legend" tabIndex={0} className="flex max-h-20 flex-wrap gap-x-3 overflow-y-auto pt-1.5 text-xs text-soft max-lg:max-h-28">
       {sorted.map((key) => (
         <li key={key} data-legend-here={here.has(key) || undefined} className={clsx("inline-flex items-center gap-1", here.has(key) && "font-medium text-dye")}>
           <Picture name={key} />
