@@ -135,7 +135,7 @@ export const NEST_STATE_WORDS: Readonly<Record<NestState, string>> = {
 };
 
 const UNPLACED: Readonly<Record<NestPlan["unplaced"][number]["reason"], string>> = {
-  "too-long": "longer than all stock of its kind",
+  "too-long": "no stock of its kind is long enough for it",
   "no-heat": "no stock of the heat asked for is long enough",
   "stock-short": "the stock ran out",
 };
