@@ -103,8 +103,6 @@ interface Built {
   readonly position: Vec3;
   /** Where the piece points as it leaves the second bend. */
   readonly direction: Vec3;
-  readonly centre0: Vec3;
-  readonly u: Vec3;
 }
 
 /** Walks the piece from end 0: gap, tangent, bend, gap, pipe, gap, bend, tangent, gap. */
@@ -115,7 +113,7 @@ function build({ input, d0, reference }: Chain, cut: ClosingCut): Built {
   const second = vecAddScaled(bent, u, cut.length + 2 * input.gap);
   const normal1 = vecRotate(normal0, u, cut.roll);
   const [end, direction] = bend(second, u, vecCross(normal1, u), input.r1, cut.theta1);
-  return { position: vecAddScaled(end, direction, input.b + input.gap), direction, centre0: start, u };
+  return { position: vecAddScaled(end, direction, input.b + input.gap), direction };
 }
 
 /** One bend: where it ends, which way it then points, and its axis. */
