@@ -33,7 +33,7 @@ export const LineDrawing = memo(function LineDrawing({ model, marks, takeOuts, v
   const drawn = useLineDrawing(model, marks, takeOuts, room, view);
   return (
     <section aria-label="Isometric" className="flex min-h-0 min-w-0 flex-1 flex-col">
-      <ViewButtons view={view} shown={drawn.drawing?.view ?? null} onView={onView} />
+      <ViewButtons view={view} shown={drawn.drawing?.view ?? null} stays={view !== null && marks.sticky} onView={onView} />
       <div ref={frame} className="frame relative min-h-0 overflow-hidden [contain:strict] max-lg:h-[min(88vw,65dvh)] lg:flex-1">
         {drawn.drawing ? (
           <DrawingWindow drawing={drawn.drawing} model={drawn.model} activePointId={activePointId} onPoint={onPoint} document={document} onMove={onMove} />
@@ -65,7 +65,15 @@ function useRoom(frame: React.RefObject<HTMLDivElement | null>): DrawingRoom {
   return room;
 }
 
-function ViewButtons({ view, shown, onView }: { readonly view: View | null; readonly shown: View | null; readonly onView: LineDrawingProps["onView"] }) {
+interface ViewButtonsProps extends Pick<LineDrawingProps, "view" | "onView"> {
+  /** View on the paper, also where it is only proposed. */
+  readonly shown: View | null;
+  /** Since its first issue the line is drawn from one side. */
+  readonly stays: boolean;
+}
+
+function ViewButtons({ view, shown, stays, onView: ask }: ViewButtonsProps) {
+  const onView = stays ? null : ask;
   return (
     <div role="group" aria-label="Looked at from" className="flex flex-wrap items-center gap-1 pb-1.5 text-sm">
       <button type="button" id="after-grid" disabled={!onView} aria-pressed={view === null} onClick={() => onView?.(null)} className={viewClass(view === null)}>
@@ -78,6 +86,7 @@ function ViewButtons({ view, shown, onView }: { readonly view: View | null; read
           <NorthMark view={each} />
         </button>
       ))}
+      {stays ? <span className="text-soft">stays as first issued</span> : null}
     </div>
   );
 }
