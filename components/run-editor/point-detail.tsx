@@ -55,7 +55,7 @@ export const PointDetail = memo(function PointDetail({ document, point, problems
         <ItemDetail item={point.item} units={units} readOnly={readOnly} onItem={(item) => send({ type: "item-set", pointId: point.id, item })} />
       </div>
       <MeasuredTakeOut problems={problems.filter((problem) => problem.pointId === point.id)} units={units} role={role} onRecorded={onTakeOut} />
-      <StartsFields key={point.id} point={point} readOnly={readOnly} onPoint={(next) => send({ type: "point-replace", point: next })} />
+      <StartsFields key={`starts${point.id}`} point={point} readOnly={readOnly} onPoint={(next) => send({ type: "point-replace", point: next })} />
       {hasFieldWeld(point) ? <p className="mt-2 text-sm text-caution">Field weld: permit, isolate, gas test, fire watch. Do not pull, jack or heat to fit.</p> : null}
       <p className="mt-2 text-xs text-soft">{sourceWords(point.provenance)}</p>
       {readOnly ? null : (
