@@ -1,7 +1,8 @@
 /**
  * `npm run bench`: the measurements of tests/bench, each as a ratio to something measured beside it in the same run,
  * since bare times say more about the machine than about the program. Each file there exports
- * `measure(): Promise<BenchLine[]>`. Names after `--` run only the files that contain one of them.
+ * `measure(): Promise<BenchLine[]>` and is bundled first, so that what is measured is the code as it ships and not a loader's
+ * doing. Names after `--` run only the files that contain one of them.
  * A budget that is not met is printed as such and does not fail the command: it is a finding, not a fault. A part that
  * cannot be measured here says why. Only a measurement that breaks ends with exit code 1.
  */
@@ -10,7 +11,8 @@ import { once } from "node:events";
 import { existsSync, readdirSync } from "node:fs";
 import { availableParallelism, loadavg } from "node:os";
 import path from "node:path";
-import { fileURLToPath, pathToFileURL } from "node:url";
+import { fileURLToPath } from "node:url";
+import { withBundle } from "./lib/bundle.mjs";
 import { checkNode, ensurePackages } from "./lib/machine.mjs";
 import { ROOT } from "./lib/paths.mjs";
 import { sayHeading, sayWhy } from "./lib/say.mjs";
@@ -61,9 +63,7 @@ async function runFile(file) {
 
 /** The part within that process: tells its parent the lines, or why there are none. */
 async function measure(file) {
-  const { tsImport } = await import("tsx/esm/api");
-  const loaded = await tsImport(pathToFileURL(path.join(FOLDER, file)).href, import.meta.url);
-  return { lines: await (loaded.measure ?? loaded.default.measure)() };
+  return withBundle(path.join(FOLDER, file), async (loaded) => ({ lines: await loaded.measure() }));
 }
 
 async function main() {
