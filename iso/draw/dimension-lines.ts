@@ -6,7 +6,7 @@ import type { DisplayItem, MeasureText, Ref } from "./drawing-types";
 import { centredBox, centredText, circleSegments, lineItem, pathItem, polygonSegments } from "./paths";
 import { readingAngle, type Segment, type TurnedBox } from "./plane";
 import * as size from "./sizes";
-import { legNumber, overallNumber } from "./words";
+import { edgeNumber, overallNumber } from "./words";
 
 export interface DimensionText {
   readonly ref: Ref;
@@ -47,7 +47,7 @@ export function chainWords(chain: Chain, units: UnitSystem, measure: MeasureText
   const first = chain.edges[0];
   const last = chain.edges[chain.edges.length - 1];
   return {
-    legs: chain.edges.map(({ edge }) => word(edge.id, legNumber(edge.leg, units))),
+    legs: chain.edges.map(({ edge }) => word(edge.id, edgeNumber(edge, units))),
     overall: first && last && first !== last ? word(`${first.edge.id}..${last.edge.id}`, overallNumber(chain.edges.map(({ edge }) => edge.leg), units)) : null,
   };
 }

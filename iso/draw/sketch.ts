@@ -38,6 +38,8 @@ export interface SketchEdge {
   readonly neighbour: boolean;
   /** A stub that hangs on a point of another sheet: drawn, but its words stand there. */
   readonly beyond: boolean;
+  /** Its number in the revision it is compared with, where that was another. */
+  readonly was?: string;
 }
 
 export interface Sketch {

@@ -23,6 +23,11 @@ export function legNumber(leg: Leg, units: UnitSystem): string {
   return leg.unverified ? `${formatLength(leg.lengthMm, units)} VIF` : formatLength(leg.lengthMm, units);
 }
 
+/** The number of a drawn leg; in square brackets what it was, on a comparison of two revisions. */
+export function edgeNumber({ leg, was }: SketchEdge, units: UnitSystem): string {
+  return was === undefined ? legNumber(leg, units) : `${legNumber(leg, units)} [WAS ${was}]`;
+}
+
 /** RUN goes with the leg before (or after) when that follows an axis the offset uses, else with the longer level component. */
 export function offsetNaming(model: Model, edge: SketchEdge): OffsetNaming {
   const { real } = edge;
@@ -48,7 +53,7 @@ export function overallNumber(legs: readonly Leg[], units: UnitSystem): string {
 }
 
 export function travelText(edge: SketchEdge, units: UnitSystem): string {
-  return `TRAVEL ${legNumber(edge.leg, units)}`;
+  return `TRAVEL ${edgeNumber(edge, units)}`;
 }
 
 export interface EdgeNeed {
@@ -68,7 +73,7 @@ export function edgeNeed(model: Model, edge: SketchEdge, measure: MeasureText): 
   }
   const pipe = edge.pieces.length > 0 ? size.PIPE_LEAST * edge.pieces.length : 0;
   if (edge.kind !== "offset") {
-    const text = measure(legNumber(edge.leg, units), size.DIMENSION_CAP, "regular") + 2;
+    const text = measure(edgeNumber(edge, units), size.DIMENSION_CAP, "regular") + 2;
     const least = Math.max(arms + pipe, text, size.TARGET_LEAST);
     return { least: [least, least, least], travel: 0 };
   }
