@@ -37,6 +37,16 @@ export * from "./survey/paste-points";
 export type { SurveyEndResult } from "./survey/survey-ends";
 export type { SurveyFinding } from "./survey/survey-read";
 
+// fit
+export * from "./fit/fit-settings";
+export * from "./fit/fit-types";
+export type { FitPiece } from "./fit/chain";
+export * from "./fit/closing-chain";
+export { typedEndError } from "./fit/errors";
+export * from "./fit/fit-of-chain";
+export * from "./fit/fit-of-closing";
+export { chanceNumber, chanceWords, trimWords } from "./fit/fit-words";
+
 // nest
 export * from "./nest/nest-types";
 export { nestPieces } from "./nest/nest";
@@ -86,7 +96,14 @@ export { legendPicture } from "./sheet/legend-pictures";
 export * from "./sheet/bench-pages";
 export { benchChecks } from "./sheet/bench-tables";
 export * from "./sheet/template-pages";
+export * from "./sheet/set-types";
+export * from "./sheet/sheet-set";
+export { composeIndexPages, type IndexEntry, type IndexInput } from "./sheet/index-pages";
 export { sheetFacts, sizeText as pipeSizeText, type SheetFacts } from "./sheet/sheet-facts";
+
+// compare
+export * from "./compare/compare-types";
+export { drawOverlay, type OverlayDrawing, type OverlayOptions } from "./compare/overlay";
 
 // exchange
 export { drawingDxf, dxfLayer } from "./exchange/dxf";

@@ -12,9 +12,10 @@ import { buildModel } from "../run/build-model";
 import type { UnitSystem } from "../run/document";
 import { checksTable, endsTable, stationsTable, turnTable } from "./bench-tables";
 import { boxOutline, lineFrom, textAt } from "./items";
+import { pageDraft, placePages, type PageDraft } from "./page-draft";
 import { followingFrame } from "./page-frame";
 import { sheetFacts, type SheetFacts } from "./sheet-facts";
-import { EDGE_LINE, RULE_LINE, sheetSizeMm } from "./sheet-size";
+import { EDGE_LINE, RULE_LINE } from "./sheet-size";
 import type { SheetInput, SheetPage } from "./sheet-types";
 import { setTable, tableHeight, type Table } from "./table";
 import { flowTables, TABLE_GAP, type FlowTable } from "./table-flow";
@@ -34,17 +35,18 @@ interface Block {
 
 /** Pages of the lay-out, at least one. Never throws on user data. */
 export function composeBenchPages(input: SheetInput, measure: MeasureText): SheetPage[] {
-  const facts = sheetFacts(input, buildModel(input.document, input.marks, input.takeOuts));
+  return placePages(benchDrafts(sheetFacts(input, buildModel(input.document, input.marks, input.takeOuts)), 1, measure));
+}
+
+/** Pages of the lay-out before they are numbered. @param first number of the first of them */
+export function benchDrafts(facts: SheetFacts, first: number, measure: MeasureText): PageDraft[] {
   const frame = followingFrame(facts, measure, [{ label: "PAGES", value: "Bench lay-out", maxLines: 1 }]);
   const room = { minX: frame.body.minX + PAD, minY: frame.body.minY + PAD, maxX: frame.body.maxX - PAD, maxY: frame.body.maxY - PAD };
   const tables = checkTables(facts);
-  const checks = withKey(flowTables(tables, room, 1, measure).pages, tables, facts, room, measure);
+  const checks = withKey(flowTables(tables, room, first, measure).pages, tables, facts, room, measure);
   const turns = facts.spool ? turnPages(spoolTurns(facts.model, facts.spool), facts.input.units, room, measure) : [];
   const contents: readonly (readonly DisplayItem[])[] = checks.length + turns.length > 0 ? [...checks, ...turns] : [nothing(facts, room)];
-  return contents.map((items, i) => ({
-    ...sheetSizeMm(input.size), items: [...frame.under, ...items, ...frame.over({ sheet: i + 1, of: contents.length })], logoBox: frame.logoBox,
-    name: `${i + 1} ${i < checks.length ? "checks" : "turns"}`,
-  }));
+  return contents.map((items, i) => pageDraft(facts.input.size, frame, items, i < checks.length ? "checks" : "turns"));
 }
 
 function checkTables(facts: SheetFacts): FlowTable[] {

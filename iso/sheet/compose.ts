@@ -9,9 +9,9 @@ import { buildModel } from "../run/build-model";
 import type { Model } from "../run/model-types";
 import { firstPage } from "./first-page";
 import type { DrawRoom } from "./isometric-sheets";
-import { firstFrame, followingFrame, type PageFrame } from "./page-frame";
-import { sheetFacts } from "./sheet-facts";
-import { sheetSizeMm } from "./sheet-size";
+import { pageDraft, placePages, type PageDraft } from "./page-draft";
+import { firstFrame, followingFrame } from "./page-frame";
+import { sheetFacts, type SheetFacts } from "./sheet-facts";
 import type { SheetInput, SheetPage } from "./sheet-types";
 import { flowTables } from "./table-flow";
 import { continuedItem } from "./table-placing";
@@ -23,34 +23,40 @@ const PAD = 2;
  * find no room on the first. Never throws on user data: a line or spool that is not ready yet gives a sheet that says so.
  */
 export function composeSheet(input: SheetInput, measure: MeasureText): SheetPage[] {
-  const model = buildModel(input.document, input.marks, input.takeOuts);
-  const { code, changedPointIds } = input.revision;
+  return placePages(spoolSheetDrafts(sheetFacts(input, buildModel(input.document, input.marks, input.takeOuts)), measure));
+}
+
+/** Pages of the spool sheet before they are numbered; they count from 1, as the sheet is always the first of its set. */
+export function spoolSheetDrafts(facts: SheetFacts, measure: MeasureText): PageDraft[] {
+  const { document, spool, revision } = facts.input;
+  const { code, changedPointIds } = revision;
   const draw: DrawRoom = (first, later) =>
-    drawSheets(model, {
-      ...first, later, measure, view: input.document.view, spool: input.spool,
+    drawSheets(facts.model, {
+      ...first, later, measure, view: document.view, spool,
       show: { items: true, welds: true, pieces: true, dimensions: true },
       changed: changedPointIds.length > 0 ? { code, pointIds: changedPointIds } : null,
     });
-  return composePages(input, model, draw, measure);
+  return draftPages(facts, draw, measure);
 }
 
 /** Pages of a sheet from a model and a way to draw it: the part of composing that a test can feed by hand. */
 export function composePages(input: SheetInput, model: Model, draw: DrawRoom, measure: MeasureText): SheetPage[] {
-  const facts = sheetFacts(input, model);
+  return placePages(draftPages(sheetFacts(input, model), draw, measure));
+}
+
+function draftPages(facts: SheetFacts, draw: DrawRoom, measure: MeasureText): PageDraft[] {
+  const { size } = facts.input;
   const frame = firstFrame(facts, measure);
   const following = followingFrame(facts, measure);
   const first = firstPage(facts, frame, following.body, draw, measure);
   const isometrics = 1 + first.sheets.length;
   const { pages: lists, sheetOf } = flowTables(first.rest, inside(following.body), isometrics + 1, measure);
   const continued = first.continued.map(({ title, at }) => continuedItem(at, `on sheet ${sheetOf.get(title) ?? isometrics + 1}`));
-  const of = isometrics + lists.length;
-  const page = (content: readonly SheetPage["items"][number][], around: PageFrame, sheet: number): SheetPage => ({
-    ...sheetSizeMm(input.size),
-    items: [...around.under, ...content, ...around.over({ sheet, of })],
-    logoBox: around.logoBox,
-    name: sheet <= isometrics ? `${sheet} isometric` : `${sheet} lists`,
-  });
-  return [page([...first.items, ...continued], frame, 1), ...[...first.sheets, ...lists].map((items, index) => page(items, following, index + 2))];
+  return [
+    pageDraft(size, frame, [...first.items, ...continued], "isometric"),
+    ...first.sheets.map((items) => pageDraft(size, following, items, "isometric")),
+    ...lists.map((items) => pageDraft(size, following, items, "lists")),
+  ];
 }
 
 function inside(body: PaperBox): PaperBox {

@@ -10,14 +10,14 @@ import { baselineOf, fitText, linesHeight } from "./text-setting";
 
 const PAD = 1.4;
 /** Side of the QR code with its quiet zone, mm: modules of half a millimetre and more. */
-const QR_SIDE = 27;
+export const QR_SIDE = 27;
 
 export const IDENTITY_HEIGHT = QR_SIDE + 1;
 /** With the tag above the number: strips of small and following pages. */
 export const IDENTITY_NARROW = 97;
 /** From this width on, number and tag stand side by side. */
 const SIDE_BY_SIDE = 130;
-const STACKED_TAG = 14.2;
+export const STACKED_TAG = 14.2;
 
 export interface SheetPlace {
   readonly sheet: number;
@@ -67,7 +67,7 @@ function numberItems(input: SheetInput, place: SheetPlace, box: PaperBox, measur
 }
 
 /** A number as large as wanted where it fits; it may step down to the smallest lettering of the sheet, never under it. */
-function fitCap(text: string, roomMm: number, wantedMm: number, measure: MeasureText): { readonly text: string; readonly capMm: number } {
+export function fitCap(text: string, roomMm: number, wantedMm: number, measure: MeasureText): { readonly text: string; readonly capMm: number } {
   const capMm = Math.max(TEXT_CAP, Math.min(wantedMm, (wantedMm * roomMm) / Math.max(1, measure(text, wantedMm, "bold"))));
   return { capMm, text: fitText(text, roomMm, 1, { capMm: capMm * 0.999, face: "bold" }, measure).lines[0] ?? "" };
 }

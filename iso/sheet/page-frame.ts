@@ -7,10 +7,11 @@ import type { PaperBox } from "../geometry/types";
 import { IDENTITY_HEIGHT, IDENTITY_NARROW, identityItems, type SheetPlace } from "./identity-block";
 import { boxOutline, textAt } from "./items";
 import type { CutText } from "./notes-table";
-import type { SheetFacts } from "./sheet-facts";
-import { EDGE_LINE, FRAME_LINE, frameBox, isSmallSheet, sheetSizeMm, TEXT_CAP } from "./sheet-size";
+import type { PrintWish, SheetFacts } from "./sheet-facts";
+import { EDGE_LINE, FRAME_LINE, frameBox, isSmallSheet, sheetSizeMm } from "./sheet-size";
+import type { SheetSize } from "./sheet-types";
 import { stateAcross } from "./state-mark";
-import { baselineOf, linesHeight, wrapText } from "./text-setting";
+import { baselineOf, linesHeight, PLAIN, wrapText } from "./text-setting";
 import { shortEntries, stripEntries, titleEntries, type Field } from "./title-fields";
 import { blockOutline, fieldItems, setFields, shopBlock, type FieldColumns, type ShopBlock } from "./title-strip";
 
@@ -46,7 +47,7 @@ export function firstFrame(facts: SheetFacts, measure: MeasureText): PageFrame {
 }
 
 function sideFrame(facts: SheetFacts, measure: MeasureText): PageFrame {
-  const paper = paperOf(facts, measure);
+  const paper = paperOf(facts.input.size, facts.print, measure);
   const { inner } = paper;
   const side = { ...inner, minX: inner.maxX - SIDE_WIDTH };
   const shop = shopBlock(facts.input.titleBlock, SIDE_WIDTH / 2, measure);
@@ -60,7 +61,7 @@ function sideFrame(facts: SheetFacts, measure: MeasureText): PageFrame {
 }
 
 function smallFrame(facts: SheetFacts, measure: MeasureText): PageFrame {
-  const paper = paperOf(facts, measure);
+  const paper = paperOf(facts.input.size, facts.print, measure);
   const { inner } = paper;
   const widthMm = inner.maxX - inner.minX - IDENTITY_NARROW;
   const shop = shopBlock(facts.input.titleBlock, widthMm / 3, measure);
@@ -75,7 +76,7 @@ function smallFrame(facts: SheetFacts, measure: MeasureText): PageFrame {
 
 /** The low strip of a following page. @param extra fields of a page that is no part of the spool sheet. */
 export function followingFrame(facts: SheetFacts, measure: MeasureText, extra: readonly Field[] = []): PageFrame {
-  const paper = paperOf(facts, measure);
+  const paper = paperOf(facts.input.size, facts.print, measure);
   const { inner } = paper;
   const set = setFields([...shortEntries(facts), ...extra], inner.maxX - inner.minX - IDENTITY_NARROW, isSmallSheet(facts.input.size) ? 2 : 3, 0, IDENTITY_HEIGHT, measure);
   const strip = { ...inner, minY: inner.maxY - set.heightMm };
@@ -106,11 +107,11 @@ function titleParts(facts: SheetFacts, paper: Paper, parts: TitleParts, measure:
   };
 }
 
-/** Frame and foot line. */
-export function paperOf(facts: SheetFacts, measure: MeasureText): Paper {
-  const { widthMm, heightMm } = sheetSizeMm(facts.input.size);
-  const frame = frameBox(widthMm, heightMm);
-  const lines = wrapText(FOOT, frame.maxX - frame.minX - 3, { capMm: TEXT_CAP, face: "regular" }, measure);
+/** Frame and foot lines. */
+export function paperOf(size: SheetSize, print: PrintWish | undefined, measure: MeasureText): Paper {
+  const { widthMm, heightMm } = sheetSizeMm(size);
+  const frame = frameBox(widthMm, heightMm, print?.leastMarginMm);
+  const lines = [FOOT, ...(print?.foot ?? [])].flatMap((text) => wrapText(text, frame.maxX - frame.minX - 3, PLAIN, measure));
   const top = frame.maxY - linesHeight(lines.length) - 1;
   return {
     frame, inner: { ...frame, maxY: top },

@@ -4,6 +4,14 @@ import type { Nps } from "../run/document";
 import type { Component, Joint, Leg, Model, Piece, Spool } from "../run/model-types";
 import type { SheetInput } from "./sheet-types";
 
+/** How pages are printed: re-laid in a smaller frame, never shrunk, so that lettering keeps its height. */
+export interface PrintWish {
+  /** Margin on every side at least, mm. */
+  readonly leastMarginMm: number;
+  /** Said under the foot's caution: who printed it when. */
+  readonly foot: readonly string[];
+}
+
 export interface SheetFacts {
   readonly input: SheetInput;
   readonly model: Model;
@@ -14,6 +22,8 @@ export interface SheetFacts {
   /** Numbered welds of the spool, and field welds that tie it in, along flow. */
   readonly welds: readonly Joint[];
   readonly legs: readonly Leg[];
+  /** How its pages are printed; absent = usual margins, nothing said of printing. */
+  readonly print?: PrintWish;
 }
 
 export function sheetFacts(input: SheetInput, model: Model): SheetFacts {

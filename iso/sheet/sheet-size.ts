@@ -22,9 +22,13 @@ export function sheetSizeMm(size: SheetSize): { readonly widthMm: number; readon
 export const FILING_MARGIN_MM = 20;
 export const MARGIN_MM = 10;
 
-/** The frame line of a page: everything printed lies within it, but for the foot line under it. */
-export function frameBox(widthMm: number, heightMm: number): PaperBox {
-  return { minX: FILING_MARGIN_MM, minY: MARGIN_MM, maxX: widthMm - MARGIN_MM, maxY: heightMm - MARGIN_MM };
+/** What a printer surely reaches: half an inch from each edge (common practice: desktop printers leave 4 to 13 mm blank). */
+export const SAFE_MARGIN_MM = 12.7;
+
+/** The frame line of a page: everything printed lies within it, but for a marked copy's foot. @param leastMm margin on every side at least. */
+export function frameBox(widthMm: number, heightMm: number, leastMm = MARGIN_MM): PaperBox {
+  const margin = Math.max(MARGIN_MM, leastMm);
+  return { minX: Math.max(FILING_MARGIN_MM, margin), minY: margin, maxX: widthMm - margin, maxY: heightMm - margin };
 }
 
 /** Capital heights. Nothing on a sheet is set smaller than TEXT_CAP (ISO 3098, from memory: 2.5 mm). */

@@ -29,6 +29,8 @@ export interface Row {
   readonly struck?: boolean;
   /** No rule under it: the next row continues this one's text. */
   readonly open?: boolean;
+  /** Room to write in by hand, mm. */
+  readonly leastMm?: number;
 }
 
 export interface Table {
@@ -88,7 +90,7 @@ export function setTable(table: Table, widthMm: number, measure: MeasureText): S
   const headHeightMm = TITLE_HEIGHT + blockHeight(lead.length) + (heads ? rowHeight(heads) : 0);
   const rows = table.rows.map((row): SetRow => {
     const cells = setCells(row.cells, "regular");
-    return { cells, heightMm: rowHeight(cells), struck: row.struck ?? false, open: row.open ?? false };
+    return { cells, heightMm: Math.max(rowHeight(cells), row.leastMm ?? 0), struck: row.struck ?? false, open: row.open ?? false };
   });
   const foot = table.foot.flatMap((text) => wrapText(text, innerWidth(widthMm), { capMm: TEXT_CAP, face: "regular" }, measure));
   return { title: table.title, widthMm, columns: table.columns, edges, lead, heads, headHeightMm, rows, foot };

@@ -36,7 +36,7 @@ const PROOF = "Print at 100 %, never fitted to the page. Check the bar by tape f
 
 /** The strip is as high as the longest of the texts it will carry. */
 export function templateFrame(facts: SheetFacts, contents: readonly { readonly facts: readonly string[] }[], measure: MeasureText): TemplateFrame {
-  const paper = paperOf(facts, measure);
+  const paper = paperOf(facts.input.size, facts.print, measure);
   const { inner } = paper;
   const textWidth = inner.maxX - inner.minX - IDENTITY_NARROW - MAP - 2 * PAD;
   const lines = Math.max(1, ...contents.map((content) => factLines(content.facts, textWidth, measure).length));

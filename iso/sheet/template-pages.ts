@@ -9,8 +9,8 @@ import { tilesOf, type Tile } from "../layout/tile";
 import { PAPER_THICKNESS_MM } from "../layout/wrap";
 import { buildModel } from "../run/build-model";
 import { textAt } from "./items";
-import { sheetFacts } from "./sheet-facts";
-import { sheetSizeMm } from "./sheet-size";
+import { placePages, type PageDraft } from "./page-draft";
+import { sheetFacts, type SheetFacts } from "./sheet-facts";
 import type { SheetInput, SheetPage } from "./sheet-types";
 import { templateFrame, type StripContent } from "./template-frame";
 import { linesHeight, wrapText } from "./text-setting";
@@ -39,28 +39,37 @@ export function composeTemplatePages(input: SheetInput, measure: MeasureText, pa
 
 /** The pages with where each tile lies: what a test measures. */
 export function placeTemplates(input: SheetInput, measure: MeasureText, paperMm: number): TemplatePages {
-  const facts = sheetFacts(input, buildModel(input.document, input.marks, input.takeOuts));
+  const { drafts, tiles } = templateDrafts(sheetFacts(input, buildModel(input.document, input.marks, input.takeOuts)), measure, paperMm);
+  return { pages: placePages(drafts), tiles };
+}
+
+export interface TemplateDrafts {
+  readonly drafts: readonly PageDraft[];
+  readonly tiles: readonly PlacedTile[];
+}
+
+/** The pages before they are numbered. A wish for wider margins gives smaller tiles, never a smaller template. */
+export function templateDrafts(facts: SheetFacts, measure: MeasureText, paperMm: number = PAPER_THICKNESS_MM): TemplateDrafts {
+  const { size, spool } = facts.input;
   const { templates, notes } = facts.spool ? spoolTemplates(facts.model, facts.spool, paperMm) : { templates: [], notes: [] };
-  const whose = `Line ${facts.model.document.number}, spool ${input.spool}.`;
+  const whose = `Line ${facts.model.document.number}, spool ${spool}.`;
   const factsOf = (template: Template): readonly string[] => [`${whose} ${template.facts[0] ?? ""}`, ...template.facts.slice(1)];
   const frame = templateFrame(facts, templates.map((template) => ({ facts: factsOf(template) })), measure);
   const { body } = frame;
   const room = { widthMm: body.maxX - body.minX - 2 * GUTTER, heightMm: body.maxY - body.minY - 2 * GUTTER };
   const tiles = templates.flatMap((template) => tilesOf(template.widthMm, template.heightMm, room).map((tile): PlacedTile => ({ template, tile, at: placeOf(tile, body) })));
-  const empty = notes.length > 0 || tiles.length === 0;
-  const of = tiles.length + (empty ? 1 : 0);
-  const page = (items: readonly DisplayItem[], strip: StripContent, sheet: number, name: string): SheetPage => ({
-    ...sheetSizeMm(input.size), items: [...frame.under, ...items, ...frame.over(strip, { sheet, of })], logoBox: null, name,
+  const page = (items: readonly DisplayItem[], strip: StripContent, kind: string): PageDraft => ({
+    size, items: [...frame.under, ...items], over: (place) => frame.over(strip, place), logoBox: null, kind,
   });
-  const pages = tiles.map(({ template, tile, at }, i) => {
+  const drafts = tiles.map(({ template, tile, at }) => {
     const moved = templateItems(template, tile, measure).map((item) => itemMoved(item, [at[0] - tile.shown.minX, at[1] - tile.shown.minY]));
     const strip = { title: template.title, facts: factsOf(template), rows: tile.rows, columns: tile.columns, row: tile.row, column: tile.column };
-    return page([...moved, ...joinWords(tile, at)], strip, i + 1, `${i + 1} template`);
+    return page([...moved, ...joinWords(tile, at)], strip, "template");
   });
-  if (!empty) return { pages, tiles };
-  const said = notes.length > 0 ? notes : [`No end of spool ${input.spool} is cut at an angle and no elbow is trimmed: there is nothing to wrap.`];
+  if (notes.length === 0 && tiles.length > 0) return { drafts, tiles };
+  const said = notes.length > 0 ? notes : [`No end of spool ${spool} is cut at an angle and no elbow is trimmed: there is nothing to wrap.`];
   const strip = { title: "TEMPLATES: NOTES", facts: [whose], rows: 1, columns: 1, row: 1, column: 1 };
-  return { pages: [...pages, page(noteItems(said, body, measure), strip, of, `${of} notes`)], tiles };
+  return { drafts: [...drafts, page(noteItems(said, body, measure), strip, "notes")], tiles };
 }
 
 /** In the middle of the room across, at its top. */

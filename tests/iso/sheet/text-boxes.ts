@@ -1,5 +1,6 @@
 /** Boxes of texts on a page, turned as the text is, and whether two of them overlap: what a reader would see collide. */
-import type { PaperPoint, SheetPage, TextItem } from "@/iso";
+import { expect } from "vitest";
+import { frameBox, type PaperPoint, type SheetPage, type TextItem } from "@/iso";
 import { measureText } from "@/fonts/widths";
 
 /** The word across a page lies under everything and is no label. */
@@ -41,3 +42,17 @@ export function overlappingTexts(page: SheetPage, slack = 0.05): string[] {
   return boxes.flatMap((one, index) =>
     boxes.slice(index + 1).filter((other) => cornersOverlap(one.corners, other.corners, slack)).map((other) => `${one.item.text} | ${other.item.text}`));
 }
+
+/** What every page must hold to be readable: lettering of 2.5 mm and more, all of it inside the frame, no text on a text. */
+export function expectReadable(page: SheetPage, what: string, leastMarginMm?: number): void {
+  const frame = frameBox(page.widthMm, page.heightMm, leastMarginMm);
+  for (const item of textsOf(page)) {
+    expect(item.capMm, `${what}: ${item.text}`).toBeGreaterThanOrEqual(LEAST_CAP_MM);
+    const outside = textCorners(item).find(([x, y]) => x < frame.minX || x > frame.maxX || y < frame.minY || y > frame.maxY);
+    expect(outside, `${what}, ${page.name}: "${item.text}" leaves the frame`).toBeUndefined();
+  }
+  expect(overlappingTexts(page), `${what}, ${page.name}`).toEqual([]);
+}
+
+/** ISO 3098's least lettering (from memory), less the noise of a division. */
+const LEAST_CAP_MM = 2.5 - 1e-9;
