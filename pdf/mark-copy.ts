@@ -22,13 +22,15 @@ export interface CopyMark {
 const POINTS_PER_MM = 72 / 25.4;
 const INK = rgb(0.07, 0.07, 0.07);
 /** Capital height of the foot line, mm. */
-const FOOT_CAP = 2.5;
+export const FOOT_CAP = 2.5;
 /** Baseline of the foot line above the paper's edge: in the margin, and inside what printers reach. */
-const FOOT_BASELINE = 5.2;
-const FOOT_LEFT = 20;
+export const FOOT_BASELINE = 5.2;
+export const FOOT_LEFT = 20;
+/** What the foot line leaves free on the right, mm. */
+const FOOT_RIGHT = 10;
 /** Baselines of the two lines that run up the filing margin, mm from the paper's left edge, and where they begin. */
-const MARGIN_BASELINES = [14.2, 18.2] as const;
-const MARGIN_BOTTOM = 10;
+export const MARGIN_BASELINES = [14.2, 18.2] as const;
+export const MARGIN_BOTTOM = 10;
 
 /**
  * A marked copy. The same bytes and mark give the same copy. A signature covers the original's bytes and could only read
@@ -62,11 +64,15 @@ function removeSignature(document: PDFDocument): void {
   }
 }
 
+/** The two lines up the filing margin. */
+export function marginLines({ sha256, signed }: CopyMark["original"]): readonly [string, string] {
+  return [signed ? "Marked when printed: the shop's signature stays with the signed original, SHA-256" : "Marked when printed. The original has SHA-256", sha256];
+}
+
 /** Up the filing margin: what this paper is a copy of. */
 function stampMargin(page: PDFPage, { sha256, signed }: CopyMark["original"], font: PDFFont): void {
   const size = FOOT_CAP * EM_PER_CAPITAL * POINTS_PER_MM;
-  const head = signed ? "Marked when printed: the shop's signature stays with the signed original, SHA-256" : "Marked when printed. The original has SHA-256";
-  for (const [index, text] of [head, sha256].entries()) {
+  for (const [index, text] of marginLines({ sha256, signed }).entries()) {
     page.drawText(text, { x: MARGIN_BASELINES[index]! * POINTS_PER_MM, y: MARGIN_BOTTOM * POINTS_PER_MM, size, font, rotate: degrees(90), color: INK });
   }
 }
@@ -74,33 +80,48 @@ function stampMargin(page: PDFPage, { sha256, signed }: CopyMark["original"], fo
 /** The word along the page's rising diagonal between two heavy lines, see-through so that everything below stays readable. */
 function stampAcross(page: PDFPage, word: string, font: PDFFont): void {
   const { width, height } = page.getSize();
-  const slope = Math.atan2(height, width) * 0.8;
-  const reach = Math.min(width / Math.cos(slope), height / Math.sin(slope)) * 0.8;
-  const size = Math.min((reach * 0.92) / font.widthOfTextAtSize(word, 1), height * 0.22);
-  const half = font.widthOfTextAtSize(word, size) / 2;
-  const capital = size / EM_PER_CAPITAL;
-  const along = [Math.cos(slope), Math.sin(slope)] as const;
-  const at = (s: number, t: number) => ({ x: width / 2 + s * along[0] - t * along[1], y: height / 2 + s * along[1] + t * along[0] });
-  page.drawText(word, { ...at(-half, -capital / 2), size, font, rotate: degrees((slope * 180) / Math.PI), color: INK, opacity: 0.26 });
-  for (const side of [-1, 1]) {
-    page.drawLine({ start: at(-reach / 2, side * capital * 0.85), end: at(reach / 2, side * capital * 0.85), thickness: 2.4, color: INK, opacity: 0.5 });
+  const { size, slope, text, lines } = acrossPlaces(width, height, font.widthOfTextAtSize(word, 1));
+  page.drawText(word, { x: text[0], y: text[1], size, font, rotate: degrees((slope * 180) / Math.PI), color: INK, opacity: ACROSS.text });
+  for (const [start, end] of lines) {
+    page.drawLine({ start: { x: start[0], y: start[1] }, end: { x: end[0], y: end[1] }, thickness: ACROSS.thickness, color: INK, opacity: ACROSS.line });
   }
 }
 
+/** How much the word and its lines cover, and how thick the lines are, points. */
+export const ACROSS = { text: 0.26, line: 0.5, thickness: 2.4 } as const;
+
+type Place = readonly [number, number];
+
+/** Where a word goes that is `emWidth` wide at size 1, on a page of this size; everything in points, y up, slope in radians. */
+export function acrossPlaces(width: number, height: number, emWidth: number): { readonly size: number; readonly slope: number; readonly text: Place; readonly lines: readonly (readonly [Place, Place])[] } {
+  const slope = Math.atan2(height, width) * 0.8;
+  const reach = Math.min(width / Math.cos(slope), height / Math.sin(slope)) * 0.8;
+  const size = Math.min((reach * 0.92) / emWidth, height * 0.22);
+  const capital = size / EM_PER_CAPITAL;
+  const along = [Math.cos(slope), Math.sin(slope)] as const;
+  const at = (s: number, t: number): Place => [width / 2 + s * along[0] - t * along[1], height / 2 + s * along[1] + t * along[0]];
+  const lines = [-1, 1].map((side) => [at(-reach / 2, side * capital * 0.85), at(reach / 2, side * capital * 0.85)] as const);
+  return { size, slope, text: at((-emWidth * size) / 2, -capital / 2), lines };
+}
+
 function stampFoot(page: PDFPage, mark: CopyMark, font: PDFFont): void {
-  const { width } = page.getSize();
   const size = FOOT_CAP * EM_PER_CAPITAL * POINTS_PER_MM;
-  const room = width - (FOOT_LEFT + 10) * POINTS_PER_MM;
+  const text = footLine(mark, page.getSize().width / POINTS_PER_MM, (line) => font.widthOfTextAtSize(line, size) / POINTS_PER_MM);
+  page.drawText(text, { x: FOOT_LEFT * POINTS_PER_MM, y: FOOT_BASELINE * POINTS_PER_MM, size, font, color: INK });
+}
+
+/** Who printed it when, the name shortened to the paper's width. */
+export function footLine(mark: CopyMark, paperMm: number, widthMm: (line: string) => number): string {
+  const room = paperMm - FOOT_LEFT - FOOT_RIGHT;
   const dead = mark.word === null ? "" : ` ${mark.word}: do not work to this sheet.`;
   const text = (name: string) => printableText(`UNCONTROLLED COPY, printed ${printTime(mark.printedAt)} by ${name}.${dead}`).text;
   let name = [...mark.printedBy.replace(/\s+/g, " ").trim()].slice(0, 120);
-  while (name.length > 0 && font.widthOfTextAtSize(text(name.join("")), size) > room) name = name.slice(0, -1);
-  const shown = name.length < [...mark.printedBy.trim()].length ? `${name.slice(0, -1).join("")}…` : name.join("");
-  page.drawText(text(shown), { x: FOOT_LEFT * POINTS_PER_MM, y: FOOT_BASELINE * POINTS_PER_MM, size, font, color: INK });
+  while (name.length > 0 && widthMm(text(name.join(""))) > room) name = name.slice(0, -1);
+  return text(name.length < [...mark.printedBy.trim()].length ? `${name.slice(0, -1).join("")}…` : name.join(""));
 }
 
 /** "2025-03-14 15:20 UTC" from an ISO time in UTC, else as it came. */
-function printTime(iso: string): string {
+export function printTime(iso: string): string {
   const match = /^(\d{4}-\d{2}-\d{2})T(\d{2}:\d{2})/.exec(iso);
   return match && iso.endsWith("Z") ? `${match[1]} ${match[2]} UTC` : iso;
 }
