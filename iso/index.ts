@@ -59,6 +59,12 @@ export * from "./layout/lengths";
 export * from "./layout/tile";
 export type { Template } from "./layout/template";
 export * from "./layout/spool-templates";
+export * from "./layout/as-fitted";
+export * from "./layout/as-fitted-document";
+export * from "./layout/as-fitted-types";
+export { pointName as fittedPointName } from "./layout/as-fitted-read";
+export { fittedWanted, type Wanted, type WantedFace, type WantedCorner } from "./layout/as-fitted-wanted";
+export { wayWords as fittedWayWords } from "./layout/as-fitted-judge";
 
 // run
 export * from "./run/document";
@@ -103,6 +109,9 @@ export { sheetFacts, sizeText as pipeSizeText, type SheetFacts } from "./sheet/s
 
 // compare
 export * from "./compare/compare-types";
+export { clouded, composeComparePages, sideOf as compareSideOf, type CompareFacts } from "./compare/compare-pages";
+export { rowName as compareRowName, sideWords as compareSideWords } from "./compare/compare-table";
+export { overlayLegend } from "./compare/overlay-legend";
 export { drawOverlay, type OverlayDrawing, type OverlayOptions } from "./compare/overlay";
 
 // exchange
