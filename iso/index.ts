@@ -29,6 +29,12 @@ export * from "./closing/close-between";
 export * from "./closing/snap-between";
 export * from "./closing/snap";
 
+// ways
+export * from "./ways/ways-types";
+export { quickWays } from "./ways/find-ways";
+export { threeElbowWays, WALK_STEPS, type ThreeElbowResult } from "./ways/three-elbow";
+export { sortWays, uniqueWays } from "./ways/order";
+
 // survey
 export * from "./survey/survey-document";
 export * from "./survey/survey-tools";
