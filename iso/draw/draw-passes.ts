@@ -95,7 +95,7 @@ export function drawLines(placed: Placed, options: DrawOptions, place: SheetPlac
 }
 
 /** White under a number that thin lines run through; pipe is painted over it. */
-function knockOuts(boxes: readonly TurnedBox[], light: readonly Segment[]): readonly DisplayItem[] {
+export function knockOuts(boxes: readonly TurnedBox[], light: readonly Segment[]): readonly DisplayItem[] {
   return boxes
     .filter((box) => light.some((line) => segmentInBox(line.from, line.to, box) > 0))
     .map((box) => pathItem("halo", null, polygonSegments(boxCorners({ ...box, halfWidth: box.halfWidth + 0.5, halfHeight: box.halfHeight + 0.45 })), { fill: "paper" }));

@@ -6,6 +6,7 @@ import {
   buildModel,
   formatLength,
   type Joint,
+  type MaterialRow,
   type Model,
   type Piece,
   type Point,
@@ -33,6 +34,7 @@ function sideOf(input: SheetInput): Side {
   const pieceKeys = new Set(spool?.pieceKeys ?? []);
   const jointKeys = new Set(spool?.jointKeys ?? []);
   const pieces = model.pieces.filter((p) => pieceKeys.has(p.key));
+  const materials = spool?.materials ?? [];
   const joints = model.joints.filter((j) => jointKeys.has(j.key) && j.number !== null);
   return {
     input,
@@ -41,8 +43,14 @@ function sideOf(input: SheetInput): Side {
     points: pointsOf(input, model, spool),
     pieces: new Map(pieces.map((p) => [p.key, p])),
     joints: new Map(joints.map((j) => [j.key, j])),
-    materials: new Map((spool?.materials ?? []).map((m) => [`${m.size} ${m.description}`, quantityText(m.quantity, m.unit, input)])),
+    materials: new Map(materials.map((m) => [materialMark(m, materials), quantityText(m.quantity, m.unit, input)])),
   };
+}
+
+/** How a row of the material list is named: with its material only where another row has the same size and description. */
+export function materialMark({ size, description, material }: MaterialRow, rows: readonly MaterialRow[]): string {
+  const alike = rows.filter((row) => row.size === size && row.description === description).length > 1;
+  return alike ? `${size} ${description}, ${material}` : `${size} ${description}`;
 }
 
 function pointsOf(input: SheetInput, model: Model, spool: Spool | null): ReadonlyMap<string, Point> {

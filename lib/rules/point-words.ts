@@ -14,14 +14,35 @@ export function offsetText(offset: Offset, input: { readonly units: UnitSystem }
 
 /** All of a point that a revision's list of changes compares. */
 export function pointText(point: Point, units: UnitSystem): string {
-  const item = point.item.kind === "none" ? "" : `, ${itemText(point.item, units)}`;
+  const { offset, item, from, places, rest, note } = pointParts(point, units);
+  return `${offset}${item === "" ? "" : `, ${item}`} (${from})${places}${rest}${note === "" ? "" : `, note "${note}"`}`;
+}
+
+export interface PointParts {
+  readonly offset: string;
+  /** "" where nothing is named. */
+  readonly item: string;
+  /** Where its number is from. */
+  readonly from: string;
+  readonly places: string;
+  /** Trim, what starts, turned round. */
+  readonly rest: string;
+  readonly note: string;
+}
+
+/** The same by its parts, so that each can be compared by itself. */
+export function pointParts(point: Point, units: UnitSystem): PointParts {
   const second = point.provenance.second === null ? "" : `, second reading ${formatLength(point.provenance.second.mm, units)}`;
-  const places = Object.entries(point.places).map(([role, place]) => `, ${role} weld ${place}`).join("");
   const trim = point.trimMm === null ? "" : `, trim ${formatLength(point.trimMm, units)}`;
   const starts = Object.entries(point.starts ?? {}).map(([field, value]) => `, ${field} ${value === "" ? "ends" : `"${value}" starts`}`).join("");
-  const turned = point.flipped ? ", run turned round" : "";
-  const note = point.note === "" ? "" : `, note "${point.note}"`;
-  return `${offsetText(point.offset, { units })}${item} (${point.provenance.kind}${second})${places}${trim}${starts}${turned}${note}`;
+  return {
+    offset: offsetText(point.offset, { units }),
+    item: point.item.kind === "none" ? "" : itemText(point.item, units),
+    from: `${point.provenance.kind}${second}`,
+    places: Object.entries(point.places).map(([role, place]) => `, ${role} weld ${place}`).join(""),
+    rest: `${trim}${starts}${point.flipped ? ", run turned round" : ""}`,
+    note: point.note,
+  };
 }
 
 /** What a length of an item is called. */
