@@ -98,3 +98,21 @@ export const SURVEY_UNCONTROLLED = 1e-6;
 
 /** Share of the largest standardised residual. Readings within it explain a misfit equally well. */
 export const SURVEY_EQUAL_SHARE = 0.02;
+
+/** Radians. Two directions this near are one when standard turns are put together: rounding of a few rotations. */
+export const WAYS_ANGLE = 1e-9;
+
+/** Millimetres. A way whose last straight misses the end by more is thrown away: a thousandth of what the insertion promises. */
+export const WAYS_CLOSES_MM = 1e-7;
+
+/** Millimetres. A face this near the one before it, less one gap, is welded to it: far under what a root gap shows. */
+export const WAYS_DIRECT_MM = 1e-6;
+
+/** Unit-less. Three directions whose triple product is under this span no room to solve three lengths in. */
+export const WAYS_FLAT = 1e-9;
+
+/** Radians of a family's parameter. Ends of intervals, roots and shortest places are refined to this. */
+export const WAYS_REFINED = 1e-12;
+
+/** Times the length. Two lengths that differ by less are one, so that float noise decides no order. */
+export const WAYS_SAME_LENGTH = 1e-6;
