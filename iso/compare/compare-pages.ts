@@ -16,6 +16,7 @@ import { followingFrame } from "../sheet/page-frame";
 import { sheetFacts } from "../sheet/sheet-facts";
 import { EDGE_LINE, HEAD_CAP, isSmallSheet, sheetSizeMm } from "../sheet/sheet-size";
 import type { SheetInput, SheetPage } from "../sheet/sheet-types";
+import { acrossItems } from "../sheet/state-mark";
 import { flowTables } from "../sheet/table-flow";
 import { BOLD, baselineOf, linesHeight, PLAIN, wrapText } from "../sheet/text-setting";
 import { compareTable, sideWords } from "./compare-table";
@@ -53,9 +54,12 @@ export function composeComparePages(from: SheetInput, to: SheetInput, { rows }: 
   const frame = followingFrame(sheetFacts(to, models[1]), measure, [{ label: "PAGES", value: "Comparison", maxLines: 1 }, { label: "COMPARES", value: compared, maxLines: 2 }]);
   const body = { minX: frame.body.minX + PAD, minY: frame.body.minY + PAD, maxX: frame.body.maxX - PAD, maxY: frame.body.maxY - PAD };
   const desk: Desk = { from, to, models, rows, body, measure, view: to.document.view ?? from.document.view ?? proposeView(models[1], measure) };
-  const contents = [...overlayContents(desk), ...listContents(desk), ...(isSmallSheet(to.size) ? [] : sideContents(desk))];
+  // A sheet that may be worked to has no word across it; a comparison with it has, so that nobody takes it for the sheet.
+  const across = frame.under.length > 0 ? frame.under : acrossItems("COMPARISON", frame.body, measure);
+  const overlays = overlayContents(desk);
+  const contents = [...overlays, ...listContents(desk, overlays.length + 1), ...(isSmallSheet(to.size) ? [] : sideContents(desk))];
   return contents.map(({ items, name }, i) => ({
-    ...sheetSizeMm(to.size), items: [...frame.under, ...items, ...frame.over({ sheet: i + 1, of: contents.length })], logoBox: frame.logoBox, name: `${i + 1} ${name}`,
+    ...sheetSizeMm(to.size), items: [...across, ...items, ...frame.over({ sheet: i + 1, of: contents.length })], logoBox: frame.logoBox, name: `${i + 1} ${name}`,
   }));
 }
 
@@ -101,10 +105,10 @@ function letterOf({ spool }: SheetInput, model: Model): string | null {
 const roomOf = (box: PaperBox) => ({ widthMm: box.maxX - box.minX, heightMm: box.maxY - box.minY });
 const placedAt = ({ items }: Drawing, box: PaperBox): DisplayItem[] => items.map((item) => itemMoved(item, [box.minX, box.minY]));
 
-function listContents({ from, to, rows, body, measure }: Desk): Content[] {
+function listContents({ from, to, rows, body, measure }: Desk, firstSheet: number): Content[] {
   if (rows.length === 0) return [];
   const table = compareTable(rows, sideOf(from), sideOf(to));
-  return flowTables([{ table: { ...table, lead: [...table.lead, CAUTION] }, width: "full", startRow: 0 }], body, 1, measure).pages.map((items) => ({ name: "list", items }));
+  return flowTables([{ table: { ...table, lead: [...table.lead, CAUTION] }, width: "full", startRow: 0 }], body, firstSheet, measure).pages.map((items) => ({ name: "list", items }));
 }
 
 /** Both drawings in one view: beside each other where that holds them, else one after the other. */

@@ -29,7 +29,11 @@ const INKS: Readonly<Record<RevisionState, Ink>> = {
 /** The word, as large as the box lets it be, along the box's rising diagonal. */
 export function stateAcross(input: SheetInput["revision"], box: PaperBox, measure: MeasureText): DisplayItem[] {
   const word = wordAcross(input.state, input.hold);
-  if (word === null) return [];
+  return word === null ? [] : acrossItems(word, box, measure);
+}
+
+/** Any word across a page that is not to be worked from. */
+export function acrossItems(word: string, box: PaperBox, measure: MeasureText): DisplayItem[] {
   const width = box.maxX - box.minX;
   const height = box.maxY - box.minY;
   const slope = Math.atan2(height, width) * 0.72;

@@ -148,6 +148,7 @@ export const RECIPES: Readonly<Record<string, Recipe>> = {
   "POST /copies/withdraw": foreign(async (shop) => ({ body: { copyIds: [await copyOf(shop)] } })),
   "GET /spools/[spoolId]/sheet": onSpool({ query: "?size=A4" }),
   "GET /spools/[spoolId]/bench": onSpool({ query: "?kind=layout" }),
+  "GET /spools/[spoolId]/compare": onSpool({ query: "?as=data" }),
   "GET /spools/[spoolId]/export": onSpool({ query: "?what=cuts&as=csv" }),
   "POST /spools/[spoolId]/submit": onSpool({ body: { description: "First issue", size: "letter" } }),
   "POST /spools/[spoolId]/work": foreign(async (shop) => {
