@@ -33,6 +33,7 @@ export * from "./closing/snap";
 export * from "./ways/ways-types";
 export { quickWays } from "./ways/find-ways";
 export { threeElbowWays, WALK_STEPS, type ThreeElbowResult } from "./ways/three-elbow";
+export { threeElbowRefusal } from "./ways/refusals";
 export { sortWays, uniqueWays } from "./ways/order";
 
 // survey
@@ -41,6 +42,7 @@ export * from "./survey/survey-tools";
 export * from "./survey/survey-result";
 export * from "./survey/paste-points";
 export type { SurveyEndResult } from "./survey/survey-ends";
+export * from "./survey/end-influences";
 export type { SurveyFinding } from "./survey/survey-read";
 
 // fit
@@ -48,7 +50,7 @@ export * from "./fit/fit-settings";
 export * from "./fit/fit-types";
 export type { FitPiece } from "./fit/chain";
 export * from "./fit/closing-chain";
-export { typedEndError } from "./fit/errors";
+export * from "./fit/end-errors";
 export * from "./fit/fit-of-chain";
 export * from "./fit/fit-of-closing";
 export { chanceNumber, chanceWords, trimWords } from "./fit/fit-words";
@@ -71,6 +73,7 @@ export * from "./layout/as-fitted-types";
 export { pointName as fittedPointName } from "./layout/as-fitted-read";
 export { fittedWanted, type Wanted, type WantedFace, type WantedCorner } from "./layout/as-fitted-wanted";
 export { wayWords as fittedWayWords } from "./layout/as-fitted-judge";
+export { FITTED_VIEWS, FITTED_WORDS, fittedPicture, type FittedView } from "./layout/as-fitted-picture";
 
 // run
 export * from "./run/document";
@@ -108,9 +111,14 @@ export { legendPicture } from "./sheet/legend-pictures";
 export * from "./sheet/bench-pages";
 export { benchChecks } from "./sheet/bench-tables";
 export * from "./sheet/template-pages";
+export * from "./sheet/as-fitted-pages";
 export * from "./sheet/set-types";
+export { composeCutMapPages } from "./sheet/cut-map";
+export { composeWeldMapPages } from "./sheet/weld-map";
+export { composeLegendPages } from "./sheet/legend-page";
 export * from "./sheet/sheet-set";
 export { composeIndexPages, type IndexEntry, type IndexInput } from "./sheet/index-pages";
+export * from "./sheet/cover-pages";
 export { sheetFacts, sizeText as pipeSizeText, type SheetFacts } from "./sheet/sheet-facts";
 
 // compare

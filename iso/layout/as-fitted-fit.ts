@@ -49,7 +49,8 @@ export function fitMeasured(measured: readonly Measured[], places: ReadonlyMap<s
     const before = trial(turned).squares;
     const other = new Set(turned);
     if (!other.delete(mark)) other.add(mark);
-    if (trial(other).squares < before) (turned.has(mark) ? turned.delete(mark) : turned.add(mark));
+    if (trial(other).squares >= before) continue;
+    if (!turned.delete(mark)) turned.add(mark);
   }
   return best;
 }

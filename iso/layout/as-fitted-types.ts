@@ -1,6 +1,6 @@
 /** What travels between the steps of an as-fitted comparison, and what it gives. */
 import type { Vec3 } from "../geometry/types";
-import type { FittedMend, ReadAs } from "./as-fitted-document";
+import type { AsFittedDocument, FittedMend, ReadAs } from "./as-fitted-document";
 import type { Motion } from "./as-fitted-motion";
 
 /** A face or corner as measured, in the measurer's frame, mm. */
@@ -91,4 +91,12 @@ export interface AsFittedResult {
   /** null while the points hold no motion. */
   readonly motion: Motion | null;
   readonly readAs: ReadAs;
+}
+
+/** A measurement as kept. */
+export interface FittedRecord {
+  readonly document: AsFittedDocument;
+  readonly by: string;
+  /** ISO time. */
+  readonly at: string;
 }
