@@ -24,7 +24,7 @@ export interface IndexEntry {
   readonly state: RevisionState;
   readonly hold?: boolean;
   readonly title: string;
-  /** Pages it has, and the page of the file it begins on, from 1. */
+  /** Pages it has, and the page of the file it begins on, from 1; 0 = each is a file of its own. */
   readonly pages: number;
   readonly firstPage: number;
 }
@@ -75,7 +75,7 @@ export function indexTable(entries: readonly IndexEntry[], title = "SHEET INDEX"
       { head: "STATE", share: 0, minMm: 42 }, { head: "TITLE", share: 3, minMm: 70 }, { head: "PAGES", share: 0, minMm: 17, align: "end" }, { head: "ON PAGE", share: 0, minMm: 20, align: "end" },
     ],
     rows: entries.length === 0 ? [{ cells: ["", "", "", "", "No sheets in it.", "", ""] }] : entries.map(rowOf),
-    foot: [`${entries.length} ${entries.length === 1 ? "entry" : "entries"}, ${pages} ${pages === 1 ? "page" : "pages"} without this index.`],
+    foot: [`${entries.length} ${entries.length === 1 ? "entry" : "entries"}${pages === 0 ? "" : `, ${pages} ${pages === 1 ? "page" : "pages"} without this index`}.`],
   };
 }
 
@@ -84,7 +84,7 @@ function rowOf(entry: IndexEntry, index: number): Row {
   return {
     cells: [
       String(index + 1), [{ text: sheetNumber || "not numbered", face: "bold" }], [{ text: code || "-", face: "bold" }], [stateLine(entry)], title,
-      String(pages), [{ text: String(firstPage), face: "bold" }],
+      pages > 0 ? String(pages) : "-", [{ text: firstPage > 0 ? String(firstPage) : "-", face: "bold" }],
     ],
   };
 }
@@ -95,7 +95,7 @@ function stateLine({ state, hold }: IndexEntry): CellLine {
 }
 
 /** The low strip of an index: whose it is and what it is of. */
-function indexFrame(input: IndexInput, measure: MeasureText): PageFrame {
+export function indexFrame(input: Omit<IndexInput, "entries">, measure: MeasureText, word = "SHEET INDEX"): PageFrame {
   const paper = paperOf(input.size, input.print, measure);
   const { inner } = paper;
   const set = setFields(fieldsOf(input), inner.maxX - inner.minX - IDENTITY_NARROW, isSmallSheet(input.size) ? 2 : 3, 0, IDENTITY_HEIGHT, measure);
@@ -104,11 +104,11 @@ function indexFrame(input: IndexInput, measure: MeasureText): PageFrame {
   const identity = { ...strip, minX: fields.maxX };
   return {
     body: { ...inner, maxY: strip.minY }, side: null, logoBox: null, cut: set.cut, under: [],
-    over: (place) => [...paper.items, blockOutline(fields), blockOutline(identity), ...fieldItems(set, fields, 0), ...identityOf(input, place, identity, measure)],
+    over: (place) => [...paper.items, blockOutline(fields), blockOutline(identity), ...fieldItems(set, fields, 0), ...identityOf(input, place, identity, measure, word)],
   };
 }
 
-function fieldsOf({ titleBlock, title, madeAt, madeBy }: IndexInput) {
+function fieldsOf({ titleBlock, title, madeAt, madeBy }: Omit<IndexInput, "entries">) {
   const field = (label: string, value: string, maxLines = 2) => ({ label, value: value.trim() === "" ? "-" : value, maxLines });
   return [
     field("SHOP", titleBlock.shopName), field("CLIENT", titleBlock.client), field("PROJECT", titleBlock.project), field("JOB NO.", titleBlock.jobNumber, 1),
@@ -117,7 +117,7 @@ function fieldsOf({ titleBlock, title, madeAt, madeBy }: IndexInput) {
 }
 
 /** Where a sheet's own index block stands: what it is, its number, and which page of how many. */
-function identityOf(input: IndexInput, { sheet, of }: SheetPlace, box: PaperBox, measure: MeasureText): DisplayItem[] {
+function identityOf(input: Omit<IndexInput, "entries">, { sheet, of }: SheetPlace, box: PaperBox, measure: MeasureText, word: string): DisplayItem[] {
   const hasCode = (input.statusUrl ?? "") !== "";
   const left = hasCode ? { ...box, maxX: box.maxX - QR_SIDE } : box;
   const tag = { minX: left.minX + 1.4, minY: left.minY + 1, maxX: left.maxX - 1.4, maxY: left.minY + 1 + STACKED_TAG };
@@ -126,7 +126,7 @@ function identityOf(input: IndexInput, { sheet, of }: SheetPlace, box: PaperBox,
   const top = tag.maxY + 0.4;
   return [
     boxOutline(tag, { layer: "title", widthMm: EDGE_LINE }),
-    textAt([(tag.minX + tag.maxX) / 2, (tag.minY + tag.maxY) / 2 + 2], "SHEET INDEX", { layer: "title", anchor: "middle", capMm: 4, face: "bold" }),
+    textAt([(tag.minX + tag.maxX) / 2, (tag.minY + tag.maxY) / 2 + 2], word, { layer: "title", anchor: "middle", capMm: 4, face: "bold" }),
     textAt([left.minX + 1.4, top + baselineOf(0, 4)], number.text, { layer: "title", capMm: number.capMm, face: "bold" }),
     textAt([left.minX + 1.4, top + linesHeight(1, 4) + baselineOf(0, HEAD_CAP)], second, { layer: "title", capMm: HEAD_CAP, face: "bold" }),
     ...(hasCode ? qrItems(input.statusUrl!, { minX: left.maxX + 0.5, minY: box.minY + 0.5, maxX: box.maxX - 0.5, maxY: box.minY + QR_SIDE - 0.5 }) : []),
