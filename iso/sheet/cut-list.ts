@@ -34,7 +34,7 @@ function cutColumns(facts: SheetFacts): CutColumn[] {
 }
 
 /** The size all pieces share, for the title; null when they differ. */
-function oneSize(facts: SheetFacts): string | null {
+export function oneSize(facts: SheetFacts): string | null {
   const sizes = new Set(facts.pieces.map((piece) => sizeText(piece.nps, piece.schedule, facts.input.units)));
   return sizes.size === 1 ? [...sizes][0]! : null;
 }
@@ -70,7 +70,7 @@ const isGap = (term: CutTerm): boolean => term.kind === "root-gap" || term.kind 
 const isPlus = (term: CutTerm): boolean => term.kind === "trim" || term.kind === "make-up";
 
 /** A term's words without a number in front and without what the column's head says. */
-function termWords(term: CutTerm): string {
+export function termWords(term: CutTerm): string {
   return term.label.replace(/^[\d\s/.'"-]+(?=[A-Za-z])/, "").replace(/ take-out(?=$| at )/, "");
 }
 
@@ -101,7 +101,7 @@ const endsCell: CellOf = (_facts, piece) => {
 const TERMS_IMPERIAL = "Terms print to 1/64 in; the cut length is rounded once, to 1/16 in, from the exact sum.";
 const TERMS_METRIC = "Terms print to 0.1 mm; the cut length is rounded once, to 1 mm, from the exact sum.";
 
-function footOf(facts: SheetFacts): string[] {
+export function footOf(facts: SheetFacts): string[] {
   const terms = facts.pieces.flatMap((piece) => piece.terms);
   const foot = [facts.input.units === "metric" ? TERMS_METRIC : TERMS_IMPERIAL];
   if (terms.some((term) => term.unconfirmed)) foot.push("* Take-out from memory, not yet confirmed by the shop: measure it first.");

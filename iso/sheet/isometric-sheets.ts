@@ -51,7 +51,7 @@ function sheetItems(drawing: Drawing, box: PaperBox, measure: MeasureText): read
 }
 
 /** The most a drawing's legend can need, known before drawing. */
-function likelyLegend(facts: SheetFacts): readonly LegendKey[] {
+export function likelyLegend(facts: SheetFacts): readonly LegendKey[] {
   const points = new Map(facts.model.document.runs.flatMap((run) => run.points.map((point) => [point.id, point.item] as const)));
   const marks: (LegendKey | false)[] = [
     "material-item", "weld-number", "cut-piece", facts.model.spools.length > 1 && "spool", "flow",

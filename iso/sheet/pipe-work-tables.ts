@@ -56,7 +56,8 @@ export function mitreCutsTable(facts: SheetFacts): Table | null {
   };
 }
 
-function mitreRows(facts: SheetFacts, piece: Piece): Row[] {
+/** A row for each mitred end, or one for both where they belong to one turn: mark, end, angle, back, centre line, throat. */
+export function mitreRows(facts: SheetFacts, piece: Piece): Row[] {
   const [start, end] = piece.ends;
   const mark = [{ text: piece.mark, face: "bold" as const }];
   const reach = (of: PieceEnd): number => (piece.odMm / 2) * Math.tan((of.cutAngleDeg ?? 0) * RAD);
@@ -102,7 +103,7 @@ function againstText(facts: SheetFacts, roll: Roll | null): string {
 }
 
 /** "31.50° CW, arc 1 1/4". */
-function rollText(facts: SheetFacts, { angleRad, arcMm }: Roll): string {
+export function rollText(facts: SheetFacts, { angleRad, arcMm }: Roll): string {
   if (angleRad === 0) return "in line";
   return `${formatAngleDeg(Math.abs(angleRad))} ${angleRad < 0 ? "CCW" : "CW"}, arc ${formatTerm(Math.abs(arcMm), facts.input.units)}`;
 }

@@ -43,11 +43,11 @@ function quantityText(row: MaterialRow, units: UnitSystem): string {
   return units === "metric" ? `${formatDecimal(row.quantity, 0)} mm` : formatLength(row.quantity, units);
 }
 
-const JOINT_WORDS: Readonly<Record<Joint["kind"], string>> = {
+export const JOINT_WORDS: Readonly<Record<Joint["kind"], string>> = {
   butt: "butt", socket: "socket fillet", "slip-on": "slip-on fillets", branch: "branch", mitre: "mitre butt", attachment: "attachment",
   threaded: "threaded", bolted: "bolted",
 };
-const PLACE_WORDS: Readonly<Record<Joint["place"], string>> = { shop: "SHOP", field: "FW", "field-fit": "FFW" };
+export const PLACE_WORDS: Readonly<Record<Joint["place"], string>> = { shop: "SHOP", field: "FW", "field-fit": "FFW" };
 
 /** Welds with blanks for who made and looked at them. */
 export function weldsTable(facts: SheetFacts): Table | null {
@@ -80,7 +80,7 @@ function weldRow(facts: SheetFacts, joint: Joint): Row {
 }
 
 /** Cautions of field welds, printed where field welds are (do not force: ASME B31.3 335.1.1, from memory). */
-function fieldCautions(facts: SheetFacts): string[] {
+export function fieldCautions(facts: SheetFacts): string[] {
   if (!facts.welds.some((joint) => joint.place !== "shop")) return [];
   return [
     "FW field weld, FFW field-fit weld: do not pull, jack or heat pipe to fit. Hot work: permit, isolate, gas test, fire watch.",
