@@ -4,7 +4,7 @@ import { vecCross, vecLerp, vecPerpendicular, vecSub } from "../geometry/vec3";
 import { DEVIATIONS_IN_TOLERANCE } from "../survey/survey-tools";
 import { turnAxis, turnCentre, type ChainFrame, type ChainStep, type FitPiece } from "./chain";
 import type { ShopTolerances } from "./fit-settings";
-import type { EndError, FitInput, Twist } from "./fit-types";
+import type { FitInput, Twist } from "./fit-types";
 import { twistAbout, twistAlong } from "./twist";
 
 /** One thing that may be off, with what one deviation of each of its parts does to "piece less true end" at end 1. */
@@ -73,19 +73,4 @@ export interface PlacedJoint {
 
 export function placedJoints(steps: readonly ChainStep[]): PlacedJoint[] {
   return steps.flatMap(({ piece, before, after }) => (piece.kind === "joint" ? [{ joint: piece, frame: jointFrame(before, after) }] : []));
-}
-
-/** Errors of an end typed by hand: position ± each way and axis ±, two deviations. */
-export function typedEndError(end: 0 | 1, axis: Vec3, positionMm: number, axisRad: number, name = `End ${end}, as typed`): EndError {
-  const offset = end * 6;
-  const place = (values: readonly number[], from: number) => Array.from({ length: 12 }, (_, i) => values[i - offset - from] ?? 0);
-  const up = vecPerpendicular(axis);
-  const ways = [up, vecCross(axis, up)];
-  return {
-    id: `end:${end}`, kind: "end", name,
-    columns: [
-      ...[0, 1, 2].map((k) => place([0, 1, 2].map((i) => (i === k ? positionMm / DEVIATIONS_IN_TOLERANCE : 0)), 0)),
-      ...ways.map((way) => place(way.map((v) => (v * axisRad) / DEVIATIONS_IN_TOLERANCE), 3)),
-    ],
-  };
 }

@@ -96,8 +96,8 @@ function isSound(input: FitInput, steps: readonly ChainStep[]): boolean {
   return input.odMm > 0 && numbers.every(Number.isFinite) && steps.every(({ after }) => vecIsFinite(after.at) && vecIsFinite(after.along));
 }
 
-/** Share of a high-low limit that the bow of the sines may come to. */
-const BOW_SHARE = 0.5;
+/** High-low limits that the bow of the sines may come to; simulation still agrees at twice as many. */
+const BOW_SHARE = 2;
 
 /** What an axis may be off by, squared, times half the reach is what the linear answer leaves out. */
 function isTooLoose(input: FitInput, columns: readonly (readonly number[])[]): boolean {

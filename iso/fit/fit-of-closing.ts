@@ -29,7 +29,7 @@ const SHAKY_BEND_RAD = Math.PI / 180;
 export function fitOfClosing(input: ClosingFitInput): FitResult {
   const { closing, solution } = input;
   const [d0, d1] = [vecUnit(closing.d0), vecUnit(closing.d1)];
-  if (!d0 || !d1) return flagged("bad-input");
+  if (!d0 || !d1 || !input.errors.every(({ columns }) => columns.flat().every(Number.isFinite))) return flagged("bad-input");
   const fold = foldOf(input);
   if (fold) return flagged(fold);
   const { start, pieces } = closingChain(closing, solution, input.faces);

@@ -1,7 +1,7 @@
 /**
- * Points spread evenly under the six-dimensional bell: an additive recurrence over the powers of the generalised golden
- * ratio (a low-discrepancy sequence after Richtmyer and Weyl; constants x⁷ = x + 1), mapped by the inverse of the normal
- * distribution. Always the same points, so the same input always has the same probability.
+ * Points spread evenly under the six-dimensional bell: Sobol's sequence (Sobol 1967; direction numbers of Joe and Kuo 2008,
+ * from memory), mapped by the inverse of the normal distribution. Always the same points, so the same input always has the
+ * same probability. Counts are powers of two, where the sequence is most even.
  */
 
 export const NORMAL_DIMENSIONS = 6;
@@ -9,30 +9,43 @@ export const NORMAL_POINTS = 8192;
 /** For comparisons, which share their points: the differences settle long before the values do. */
 export const FEWER_POINTS = 2048;
 
+/** Degree, coefficients and first direction numbers of each dimension after the first. */
+const DIRECTIONS: readonly (readonly [number, number, readonly number[]])[] = [
+  [1, 0, [1]], [2, 1, [1, 3]], [3, 1, [1, 3, 1]], [3, 2, [1, 1, 1]], [4, 1, [1, 1, 3, 3]],
+];
+const BITS = 30;
+
 const known = new Map<number, Float64Array>();
 
-/** Six numbers a point, one after the other. */
+/** Six numbers a point, one after the other. @param count a power of two. */
 export function normalPoints(count = NORMAL_POINTS): Float64Array {
   const found = known.get(count);
   if (found) return found;
-  const ratio = goldenRatio();
-  const steps = Array.from({ length: NORMAL_DIMENSIONS }, (_, k) => ratio ** -(k + 1));
   const points = new Float64Array(count * NORMAL_DIMENSIONS);
-  for (let n = 0; n < count; n++) for (let k = 0; k < NORMAL_DIMENSIONS; k++) {
-    const even = (0.5 + (n + 1) * steps[k]!) % 1;
-    points[n * NORMAL_DIMENSIONS + k] = normalQuantile(Math.min(Math.max(even, SMALLEST), 1 - SMALLEST));
+  for (let k = 0; k < NORMAL_DIMENSIONS; k++) {
+    const directions = directionsOf(k);
+    let bits = 0;
+    for (let n = 0; n < count; n++) {
+      // Half a step in, so that no point lies on the edge, where the bell has no end.
+      points[n * NORMAL_DIMENSIONS + k] = normalQuantile(bits / 2 ** BITS + 0.5 / count);
+      bits ^= directions[Math.clz32(~n & (n + 1)) ^ 31]!;
+    }
   }
   known.set(count, points);
   return points;
 }
 
-const SMALLEST = 1e-9;
-
-/** Positive root of x⁷ = x + 1. */
-function goldenRatio(): number {
-  let x = 1;
-  for (let k = 0; k < 60; k++) x = (1 + x) ** (1 / (NORMAL_DIMENSIONS + 1));
-  return x;
+function directionsOf(dimension: number): number[] {
+  const row = DIRECTIONS[dimension - 1];
+  if (!row) return Array.from({ length: BITS }, (_, j) => 2 ** (BITS - 1 - j));
+  const [degree, coefficients, first] = row;
+  const v = first.map((m, j) => m * 2 ** (BITS - 1 - j));
+  for (let j = degree; j < BITS; j++) {
+    let next = v[j - degree]! ^ (v[j - degree]! >>> degree);
+    for (let k = 1; k < degree; k++) if ((coefficients >> (degree - 1 - k)) & 1) next ^= v[j - k]!;
+    v.push(next);
+  }
+  return v;
 }
 
 /** Where the normal distribution reaches p (rational approximation of Acklam, relative error 1.2e-9; from memory). */

@@ -110,7 +110,27 @@ function poseOf(position: Vec3, axis: Vec3 | null): EndPose | null {
   return axis ? { position, axis } : null;
 }
 
-function withSpread(end: SurveyEnd, model: EndModel, places: readonly Vec3[], pose: EndPose, adjustment: Adjustment): SurveyEndResult {
+/** What an end's position and axis (six rows) change by with each number it is made of. */
+export interface EndSlopes {
+  /** Marks it hangs on; three columns each, east, north, up. */
+  readonly marks: readonly string[];
+  readonly slopes: Matrix;
+  /** Its own readings stand in the columns after the marks, each with this standard deviation. */
+  readonly own: number;
+  readonly sigma: number;
+}
+
+/** The slopes of an end at the adjusted places; null where it has no pose. */
+export function endSlopes(end: SurveyEnd, document: SurveyDocument, adjustment: Adjustment): EndSlopes | null {
+  const model = modelOf(end, document, () => null, () => undefined);
+  const places = model?.marks.map((mark) => adjustment.coordinates.get(mark));
+  if (!model || !places || places.some((place) => place === undefined)) return null;
+  const known = places as Vec3[];
+  const pose = model.pose(known, model.own);
+  return pose && { marks: model.marks, slopes: slopesOf(model, known, pose), own: model.own.length, sigma: model.sigma };
+}
+
+function slopesOf(model: EndModel, places: readonly Vec3[], pose: EndPose): Matrix {
   const inputs = [...places.flat(), ...model.own];
   const at = (values: readonly number[]): number[] => {
     const moved = places.map((_, k) => values.slice(k * 3, k * 3 + 3) as unknown as Vec3);
@@ -122,7 +142,11 @@ function withSpread(end: SurveyEnd, model: EndModel, places: readonly Vec3[], po
     const [above, below] = [shifted(STEP), shifted(-STEP)];
     return above.map((each, i) => (each - below[i]!) / (2 * STEP));
   });
-  const slopes = new Matrix(columns).transpose();
+  return new Matrix(columns).transpose();
+}
+
+function withSpread(end: SurveyEnd, model: EndModel, places: readonly Vec3[], pose: EndPose, adjustment: Adjustment): SurveyEndResult {
+  const slopes = slopesOf(model, places, pose);
   const covariance = slopes.mmul(inputCovariance(model, adjustment)).mmul(slopes.transpose());
   const within = (from: number) => DEVIATIONS_IN_TOLERANCE * Math.sqrt(Math.max(0, [0, 1, 2].reduce((sum, i) => sum + covariance.get(from + i, from + i), 0)));
   return { ...pose, id: end.id, name: end.name, covariance: covariance.to2DArray(), positionWithinMm: within(0), axisWithinRad: within(3) };

@@ -44,7 +44,13 @@ export interface Simulation {
   readonly trim: number;
 }
 
-const ROUNDS = 3;
+const ROUNDS = 2;
+/** Working space of the inner loops: a new array for every pose would cost more than the sums. */
+const [AT, TARGET, OUTER] = [new Float64Array(12), new Float64Array(12), new Float64Array(12)];
+
+function copy(from: Pose, into: Pose): void {
+  for (let i = 0; i < 12; i++) into[i] = from[i]!;
+}
 
 /** Share of the draws that fit. */
 export function simulateFit(sim: Simulation): number {
@@ -53,6 +59,8 @@ export function simulateFit(sim: Simulation): number {
   const gain = gainOf(sim, sim.start, builtSegments(sim, () => 0), nominal);
   const [error, z] = [new Float64Array(12), new Float64Array(sim.ends[0]!.length)];
   const ends = Float64Array.from(sim.ends.flat());
+  const [from, to] = [new Float64Array(12), new Float64Array(12)];
+  const segments = builtSegments(sim, () => 0);
   let fits = 0;
   for (let n = 0; n < sim.draws; n++) {
     for (let k = 0; k < z.length; k++) z[k] = random();
@@ -61,9 +69,9 @@ export function simulateFit(sim: Simulation): number {
       for (let k = 0; k < z.length; k++) sum += ends[i * z.length + k]! * z[k]!;
       error[i] = sum;
     }
-    const from = elsewhere(sim.start, error, 0, 1);
-    const to = elsewhere(nominal, error, 6, -1);
-    const segments = builtSegments(sim, random);
+    elsewhere(sim.start, error, 0, 1, from);
+    elsewhere(nominal, error, 6, -1, to);
+    segments.forEach((at, k) => build(at, sim.segments[k]!, random));
     const set = sim.joints.map((joint) => (joint.off ? [random() * joint.off[0], random() * joint.off[1], random() * joint.off[1], 0, random() * joint.off[2], random() * joint.off[2]] : null));
     if (judged(sim, placed(sim, from, to, segments, gain, set))) fits += 1;
   }
@@ -137,7 +145,8 @@ function gainOf(sim: Simulation, from: Pose, segments: readonly Pose[], to: Pose
 
 /** What is left at the last joint: gap, two shifts, rotation about the axis, two tilts, as its own frame sees them. */
 function leftOver({ joints }: Simulation, from: Pose, to: Pose, segments: readonly Pose[], x: Float64Array, set: readonly (readonly number[] | null)[], into: Float64Array, offset: number): void {
-  const at = from.slice();
+  const at = AT;
+  copy(from, at);
   const last = joints.length - 1;
   for (let k = 0; k < last; k++) {
     advance(at, joints[k]!.gap / 2);
@@ -150,7 +159,8 @@ function leftOver({ joints }: Simulation, from: Pose, to: Pose, segments: readon
   advance(at, joints[last]!.gap / 2);
   const made = set[last];
   if (made) move(at, made, 0);
-  const target = to.slice();
+  const target = TARGET;
+  copy(to, target);
   advance(target, -joints[last]!.gap / 2);
   relative(at, target, into, offset);
 }
@@ -170,11 +180,15 @@ function judged(sim: Simulation, x: Float64Array): boolean {
 
 /** Each segment from its first face to its last, in its own frame. */
 function builtSegments(sim: Simulation, random: () => number): Pose[] {
-  return sim.segments.map((pieces) => {
-    const at = Float64Array.from([0, 0, 0, 1, 0, 0, 0, 1, 0, 0, 0, 1]);
-    for (const piece of pieces) lay(at, piece, random);
-    return at;
-  });
+  return sim.segments.map((pieces) => build(new Float64Array(12), pieces, random));
+}
+
+const UNMOVED = Float64Array.from([0, 0, 0, 1, 0, 0, 0, 1, 0, 0, 0, 1]);
+
+function build(at: Pose, pieces: readonly SimPiece[], random: () => number): Pose {
+  copy(UNMOVED, at);
+  for (const piece of pieces) lay(at, piece, random);
+  return at;
 }
 
 function lay(at: Pose, piece: SimPiece, random: () => number): void {
@@ -229,7 +243,8 @@ function turn(at: Pose, k: number, [x, y, z]: Three, angle: number): void {
 }
 
 function compose(at: Pose, inner: Pose): void {
-  const outer = at.slice();
+  const outer = OUTER;
+  copy(at, outer);
   for (let k = 0; k < 12; k += 3) {
     const [v, w, u] = [inner[k]!, inner[k + 1]!, inner[k + 2]!];
     for (let i = 0; i < 3; i++) at[k + i] = (k === 0 ? outer[i]! : 0) + v * outer[3 + i]! + w * outer[6 + i]! + u * outer[9 + i]!;
@@ -251,18 +266,16 @@ function relative(at: Pose, target: Pose, into: Float64Array, offset: number): v
 }
 
 /** A pose moved and tilted by twelve errors, from the given one; `sense` -1 when along points against the end's axis. */
-function elsewhere(pose: Pose, error: Float64Array, from: number, sense: 1 | -1): Pose {
-  const next = pose.slice();
-  for (let i = 0; i < 3; i++) next[i]! += error[from + i]!;
-  const axis = [0, 1, 2].map((i) => sense * pose[3 + i]!);
-  const after = axis.map((v, i) => v + error[from + 3 + i]!);
-  const size = Math.sqrt(after[0]! ** 2 + after[1]! ** 2 + after[2]! ** 2);
-  const way = after.map((v) => (sense * v) / size);
-  const old = [pose[3]!, pose[4]!, pose[5]!];
-  const normal = [old[1]! * way[2]! - old[2]! * way[1]!, old[2]! * way[0]! - old[0]! * way[2]!, old[0]! * way[1]! - old[1]! * way[0]!];
-  const sine = Math.sqrt(normal[0]! ** 2 + normal[1]! ** 2 + normal[2]! ** 2);
-  if (sine > 0) for (const k of [3, 6, 9]) turn(next, k, normal.map((v) => v / sine) as unknown as Three, Math.asin(Math.min(sine, 1)));
-  return next;
+function elsewhere(pose: Pose, error: Float64Array, from: number, sense: 1 | -1, into: Pose): Pose {
+  copy(pose, into);
+  for (let i = 0; i < 3; i++) into[i]! += error[from + i]!;
+  const [x, y, z] = [pose[3]!, pose[4]!, pose[5]!];
+  const [a, b, c] = [x + sense * error[from + 3]!, y + sense * error[from + 4]!, z + sense * error[from + 5]!];
+  const size = Math.sqrt(a * a + b * b + c * c);
+  const [nx, ny, nz] = [(y * c - z * b) / size, (z * a - x * c) / size, (x * b - y * a) / size];
+  const sine = Math.sqrt(nx * nx + ny * ny + nz * nz);
+  if (sine > 0) for (let k = 3; k < 12; k += 3) turn(into, k, [nx / sine, ny / sine, nz / sine], Math.asin(Math.min(sine, 1)));
+  return into;
 }
 
 /** Standard normal numbers (Box and Muller), both of each pair. */
