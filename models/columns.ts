@@ -27,6 +27,18 @@ export function countColumn(name: string) {
   };
 }
 
+/** As countColumn, where there may be none. */
+export function countOrNull(name: string) {
+  return {
+    type: DataTypes.BIGINT,
+    allowNull: true,
+    get(this: Model): number | null {
+      const value: unknown = this.getDataValue(name as never);
+      return value === null || value === undefined ? null : Number(value);
+    },
+  };
+}
+
 /** The model's name is given, since minified class names rename models; no timestamps are kept behind our back. */
 export function modelOptions<M extends Model>(sequelize: Sequelize, modelName: string, tableName: string): InitOptions<M> {
   return { sequelize, modelName, tableName, timestamps: false, underscored: true };

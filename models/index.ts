@@ -10,6 +10,10 @@ import { LineTouch } from "./line-touch";
 import { Membership } from "./membership";
 import { Nest } from "./nest";
 import { Offcut } from "./offcut";
+import { Package } from "./package";
+import { PackagePart } from "./package-part";
+import { PackageReceipt } from "./package-receipt";
+import { PackageSheet } from "./package-sheet";
 import { PasswordReset } from "./password-reset";
 import { Person } from "./person";
 import { Revision } from "./revision";
@@ -21,6 +25,7 @@ import { Shop } from "./shop";
 import { ShopCertificate } from "./shop-certificate";
 import { SignOff } from "./sign-off";
 import { Spool } from "./spool";
+import { SpoolMeasurement } from "./spool-measurement";
 import { Survey } from "./survey";
 import { TakeOutWord } from "./take-out-word";
 import { Throttle } from "./throttle";
@@ -38,6 +43,10 @@ export {
   Membership,
   Nest,
   Offcut,
+  Package,
+  PackagePart,
+  PackageReceipt,
+  PackageSheet,
   PasswordReset,
   Person,
   Revision,
@@ -49,6 +58,7 @@ export {
   ShopCertificate,
   SignOff,
   Spool,
+  SpoolMeasurement,
   Survey,
   TakeOutWord,
   Throttle,
@@ -67,6 +77,10 @@ const MODELS = [
   Membership,
   Nest,
   Offcut,
+  Package,
+  PackagePart,
+  PackageReceipt,
+  PackageSheet,
   PasswordReset,
   Person,
   Revision,
@@ -78,6 +92,7 @@ const MODELS = [
   ShopCertificate,
   SignOff,
   Spool,
+  SpoolMeasurement,
   Survey,
   TakeOutWord,
   Throttle,

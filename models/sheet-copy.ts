@@ -1,5 +1,5 @@
-import { Model, type InferAttributes, type InferCreationAttributes, type Sequelize } from "sequelize";
-import { idColumn, modelOptions, textColumn, timeColumn, uuidColumn } from "./columns";
+import { Model, type CreationOptional, type InferAttributes, type InferCreationAttributes, type Sequelize } from "sequelize";
+import { idColumn, modelOptions, textColumn, timeColumn, uuidColumn, uuidOrNull } from "./columns";
 
 /** A marked copy that was printed: its hash, not its bytes. Insert-only. */
 export class SheetCopy extends Model<InferAttributes<SheetCopy>, InferCreationAttributes<SheetCopy>> {
@@ -10,6 +10,8 @@ export class SheetCopy extends Model<InferAttributes<SheetCopy>, InferCreationAt
   declare marked: string;
   declare at: Date;
   declare by: string;
+  /** The package it was taken with; null for one taken by itself. */
+  declare packageId: CreationOptional<string | null>;
 
   static bindTo(sequelize: Sequelize): void {
     SheetCopy.init(
@@ -21,6 +23,7 @@ export class SheetCopy extends Model<InferAttributes<SheetCopy>, InferCreationAt
         marked: textColumn(),
         at: timeColumn(),
         by: uuidColumn(),
+        packageId: uuidOrNull(),
       },
       modelOptions(sequelize, "SheetCopy", "sheet_copies"),
     );

@@ -18,8 +18,8 @@ export interface PartSheet {
   readonly bytes: Uint8Array;
   /** Put on every page of it; null = none. */
   readonly mark: CopyMark | null;
-  /** Which sheet of the package its pages belong to. */
-  readonly sheet: number;
+  /** Which sheet of the package its pages belong to; a list has one for each page. */
+  readonly sheet: number | readonly number[];
   /** Set before the pages' own names in their labels. */
   readonly name: string;
 }
@@ -66,7 +66,7 @@ class PartBuilder {
       const { width, height } = page.getSize();
       const added = this.#part.addPage([width, height]);
       this.#draw(page, added, fonts, mark, stored.context);
-      added.node.set(JOIN, this.#part.context.obj({ Sheet: sheet, Name: PDFHexString.fromText(told) }));
+      added.node.set(JOIN, this.#part.context.obj({ Sheet: typeof sheet === "number" ? sheet : (sheet[index] ?? 0), Name: PDFHexString.fromText(told) }));
     }
   }
 

@@ -2,8 +2,10 @@
 import { sendMail } from "@/lib/server/mail";
 import type { QueueHandlers } from "@/lib/server/queue";
 import { runNestJob } from "./nest-job";
+import { runPackageJob } from "./package-job";
 
 export const queueHandlers: QueueHandlers = {
   mail: sendMail,
   nest: runNestJob,
+  package: runPackageJob,
 };

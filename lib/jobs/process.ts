@@ -4,6 +4,7 @@ import { log } from "@/lib/server/log";
 import { stopQueues, workQueues } from "@/lib/server/queue";
 import { settings } from "@/lib/server/settings";
 import { queueHandlers } from "./handlers";
+import { watchPackages } from "./package-watch";
 
 const FIRST_WAIT_MS = 1_000;
 const LONGEST_WAIT_MS = 30_000;
@@ -24,6 +25,7 @@ export async function startProcess(): Promise<void> {
 export async function beginQueues(waitMs: number): Promise<void> {
   try {
     await workQueues(queueHandlers);
+    watchPackages();
   } catch (error) {
     log.warn({ error, waitMs }, "the queue cannot be worked yet");
     await stopQueues().catch(() => undefined);

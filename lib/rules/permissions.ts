@@ -19,6 +19,10 @@ export const PERMISSIONS = {
   /** Copies out of use: fitters mark their own, which the command sees to. */
   "copies.withdraw": ["owner", "detailer", "inspector", "fitter"],
   "take-outs.change": ["owner"],
+  /** Packages are prints of many sheets at once: whoever prints one sheet makes them. A fitter's hold issued sheets only. */
+  "packages.make": ["owner", "detailer", "inspector", "fitter"],
+  /** What was sent to a client and acknowledged is not the bench's to write. */
+  "packages.receipt": ["owner", "detailer", "inspector"],
   "nests.read": ["owner", "detailer", "inspector", "fitter"],
   "nests.change": ["owner", "detailer"],
   "revisions.review": ["owner", "detailer", "inspector"],
@@ -61,6 +65,8 @@ const REFUSALS: Readonly<Record<Permission, string>> = {
   "sheets.print": "You do not belong to this shop.",
   "copies.withdraw": "You do not belong to this shop.",
   "take-outs.change": "Only the owner confirms or replaces a take-out.",
+  "packages.make": "You do not belong to this shop.",
+  "packages.receipt": "Fitters do not note what a recipient acknowledged.",
   "nests.read": "You do not belong to this shop.",
   "nests.change": "Only a detailer or the owner makes cutting plans and locks them.",
   "revisions.review": "Fitters see issued sheets only.",

@@ -9,6 +9,8 @@ export interface QueueData {
   mail: Mail;
   /** One cutting plan to look for. */
   nest: { readonly shopId: string; readonly nestId: string };
+  /** One package to make, or to clean up after. */
+  package: { readonly shopId: string; readonly packageId: string };
 }
 
 export type QueueName = keyof QueueData;
@@ -24,6 +26,8 @@ export interface QueueRule {
 export const QUEUES: readonly QueueRule[] = [
   { name: "mail", retryLimit: 8, retryDelay: 15, expireInSeconds: 120 },
   { name: "nest", retryLimit: 3, retryDelay: 2, expireInSeconds: 300 },
+  // A large one takes minutes; one whose worker died is put in anew by the next look, long before this runs out.
+  { name: "package", retryLimit: 8, retryDelay: 2, expireInSeconds: 900 },
 ];
 
 /** The database schema the queue lives in. */

@@ -29,6 +29,8 @@ const settingsSchema = z.object({
   OUTBOX_DIR: z.string().optional(),
   LOG_LEVEL: z.enum(["trace", "debug", "info", "warn", "error", "fatal", "silent"]).default("info"),
   WORK_QUEUE: flag.default(true),
+  /** Threads that prepare a package's sheets; absent = one per processor, four at most. */
+  PACKAGE_THREADS: z.coerce.number().int().min(1).max(16).optional(),
 });
 
 export type Settings = z.infer<typeof settingsSchema>;

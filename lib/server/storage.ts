@@ -19,6 +19,11 @@ const REACH_LIMIT_MS = 3_000;
 
 const shared = globalThis as typeof globalThis & { quarterlineStorage?: S3Client };
 
+/** The process's connection to the store. */
+export function storageClient(): S3Client {
+  return client();
+}
+
 function client(): S3Client {
   const { S3_ENDPOINT, S3_REGION, S3_ACCESS_KEY_ID, S3_SECRET_ACCESS_KEY } = settings();
   shared.quarterlineStorage ??= new S3Client({

@@ -74,7 +74,7 @@ describe("queue and mail", () => {
       }),
     ).rejects.toThrow("undone");
     await inTransaction((transaction) => enqueue("mail", mail, transaction));
-    await workQueues({ mail: sendMail, nest: async () => undefined });
+    await workQueues({ mail: sendMail, nest: async () => undefined, package: async () => undefined });
     await waitFor(() => arrived().length > 0);
     expect(arrived()).toHaveLength(1);
     expect(arrived()[0]).toMatchObject({ to: [mail.to], subject: mail.subject });
@@ -88,6 +88,7 @@ describe("queue and mail", () => {
     await getDb().query("UPDATE pgboss.job SET retry_delay = 0, retry_backoff = false WHERE id = $1", { bind: [id] });
     await workQueues({
       nest: async () => undefined,
+      package: async () => undefined,
       mail: async ({ subject }) => {
         if (subject !== "again") return;
         tries += 1;

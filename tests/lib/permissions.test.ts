@@ -11,6 +11,8 @@ const TABLE: readonly (readonly [Permission, string])[] = [
   ["shop.read", "yyyy"],
   ["take-outs.change", "ynnn"],
   ["copies.withdraw", "yyyy"],
+  ["packages.make", "yyyy"],
+  ["packages.receipt", "yyyn"],
   ["nests.read", "yyyy"],
   ["nests.change", "yynn"],
   ["log.read", "yyyn"],

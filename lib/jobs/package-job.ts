@@ -1,0 +1,83 @@
+/**
+ * One job of the package queue. Sheets are prepared part by part in threads, each part stored as soon as it is made; a
+ * worker that is killed leaves its parts, and the next goes on from there. Whatever happens, one result is written at most.
+ */
+import { randomUUID } from "node:crypto";
+import { announcePart, cleanPackage, confirmPart, failPackage, finishPackage, keepPackage, MOST_TAKES, releasePackage, storedParts, takeUpPackage, type PackageHold } from "@/lib/commands/finish-package";
+import { storePackage } from "@/lib/commands/store-package";
+import { sheetWorks } from "@/lib/queries/package-work";
+import type { PackageSource } from "@/lib/rules/packages";
+import { log } from "@/lib/server/log";
+import type { QueueData } from "@/lib/server/queue";
+import { deleteObject, objectKey, putObject, sha256Hex } from "@/lib/server/storage";
+import { packageThreads } from "./package-threads";
+
+/** Time between two words to the others that this worker is at it, ms; well under what it is believed for. */
+const WORD_EVERY_MS = 2_500;
+/** Trouble this often in a row ends a package. */
+const MOST_TROUBLES = 5;
+
+/** Safe to run twice, also at once: one worker has a package at a time, and one that has ended stays as it is. */
+export async function runPackageJob({ shopId, packageId }: QueueData["package"]): Promise<void> {
+  const hold: PackageHold = { shopId, packageId, worker: randomUUID() };
+  const taken = await takeUpPackage(hold);
+  if (taken.kind === "busy") return;
+  if (taken.kind === "mine") {
+    if (taken.takes > MOST_TAKES) await failPackage(hold, "It was begun again and again and never finished.");
+    else await make(hold, taken.source, taken.takes);
+  }
+  if (!(await cleanPackage(hold, packageId, taken.kind === "mine"))) throw new Error("Something of a package may still be on its way into the store.");
+}
+
+async function make(hold: PackageHold, source: PackageSource, takes: number): Promise<void> {
+  const wanted = new AbortController();
+  const words = setInterval(() => {
+    keepPackage(hold).then((mine) => {
+      if (!mine) wanted.abort();
+    }, () => undefined);
+  }, WORD_EVERY_MS);
+  try {
+    await prepareParts(hold, source, wanted.signal);
+    if (!wanted.signal.aborted) await join(hold, source);
+  } catch (error) {
+    log.warn({ packageId: hold.packageId, takes, error }, "a package could not be made");
+    if (takes >= MOST_TROUBLES) return await failPackage(hold, "Its sheets could not be put together. Ask for it again; if it stays so, tell the owner of your shop.");
+    await releasePackage(hold);
+    throw error;
+  } finally {
+    clearInterval(words);
+  }
+}
+
+/** Prepares what is not stored yet, as many parts at once as there are threads. */
+async function prepareParts(hold: PackageHold, source: PackageSource, signal: AbortSignal): Promise<void> {
+  const stored = new Set((await storedParts(hold)).map((part) => part.ordinal));
+  const open = Array.from({ length: Math.ceil(source.sheets.length / source.partSheets) }, (_, ordinal) => ordinal).filter((ordinal) => !stored.has(ordinal));
+  const lane = async () => {
+    while (!signal.aborted) {
+      const ordinal = open.shift();
+      if (ordinal === undefined) return;
+      await preparePart(hold, source, ordinal, signal);
+    }
+  };
+  await Promise.all(Array.from({ length: packageThreads().most }, lane));
+}
+
+async function preparePart(hold: PackageHold, source: PackageSource, ordinal: number, signal: AbortSignal): Promise<void> {
+  const first = ordinal * source.partSheets;
+  const sheets = await sheetWorks(hold, source, first, Math.min(first + source.partSheets, source.sheets.length));
+  if (signal.aborted) return;
+  const { bytes, pages } = await packageThreads().run({ kind: "part", packageId: hold.packageId, source, sheets }, sheets.map(({ stored }) => stored.buffer as ArrayBuffer));
+  const key = objectKey(hold.shopId, sha256Hex(bytes));
+  const partId = await announcePart(hold, { ordinal, sheets: sheets.length, pages, objectKey: key });
+  if (partId === null) return;
+  await putObject(hold.shopId, bytes, "application/octet-stream");
+  if (!(await confirmPart(hold, partId))) await deleteObject(key);
+}
+
+async function join(hold: PackageHold, source: PackageSource): Promise<void> {
+  const stored = await storePackage(hold, source, (task, transfer) => packageThreads().run(task, transfer));
+  if (stored === null) return;
+  const isDone = await finishPackage(hold, stored.object, stored.pages);
+  if (!isDone) await deleteObject(stored.object.key);
+}
