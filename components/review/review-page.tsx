@@ -3,6 +3,7 @@ import Link from "next/link";
 import { useMemo, useState } from "react";
 import { useViewer } from "@/components/shell/use-viewer";
 import { SheetPreview } from "@/components/sheet/sheet-preview";
+import { ButtonLink } from "@/components/ui/button";
 import { ChoiceRow } from "@/components/ui/choice-row";
 import { useApi } from "@/components/ui/fetcher";
 import { timeText } from "@/components/ui/format";
@@ -48,6 +49,13 @@ function Review({ review }: { readonly review: ReviewDetail }) {
           <Impact lines={review.impact} />
           <Section title={review.before ? "What changed" : "First revision"}>
             <ChangeList changes={review.changes} first={review.before === null} />
+            {review.before ? (
+              <p className="mt-3" data-screen-only>
+                <ButtonLink href={`/spools/${review.spool.id}/compare?to=${review.revision.id}`}>
+                  See both, overlaid or side by side
+                </ButtonLink>
+              </p>
+            ) : null}
           </Section>
           <Section title="Unverified dimensions">
             <Unverified

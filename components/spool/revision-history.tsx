@@ -40,11 +40,18 @@ export function RevisionHistory({ revisions, role, mayHold }: RevisionHistoryPro
       </EmptyState>
     );
   }
+  const spoolId = revisions[0]!.spoolId;
+  const seesDrafts = canDo(role, "lines.read");
   const newestFirst = [...revisions].sort((a, b) => b.submittedAt.localeCompare(a.submittedAt));
   return (
     <>
+      {revisions.length > 1 || seesDrafts ? (
+        <p className="mb-3" data-screen-only>
+          <ButtonLink href={`/spools/${spoolId}/compare`}>Compare revisions</ButtonLink>
+        </p>
+      ) : null}
       <ol className="space-y-5">
-        {newestFirst.map((revision) => (
+        {newestFirst.map((revision, at) => (
           <li key={revision.id} className="border border-ink bg-sheet p-4">
             <RevisionFacts revision={revision} />
             <StoredSheets revision={revision} />
@@ -55,6 +62,11 @@ export function RevisionHistory({ revisions, role, mayHold }: RevisionHistoryPro
                   tone={revision.state === "for-review" ? "primary" : "plain"}
                 >
                   {revision.state === "for-review" ? "Review it" : "Open the review"}
+                </ButtonLink>
+              ) : null}
+              {newestFirst[at + 1] ? (
+                <ButtonLink href={`/spools/${spoolId}/compare?from=${newestFirst[at + 1]!.id}&to=${revision.id}`}>
+                  Compare with rev {newestFirst[at + 1]!.code}
                 </ButtonLink>
               ) : null}
               {mayHold
