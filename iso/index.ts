@@ -25,13 +25,14 @@ export * from "./closing/solver";
 export * from "./closing/elbow-marks";
 export * from "./closing/advice";
 export * from "./closing/sensitivity";
+export * from "./closing/end-spread";
 export * from "./closing/close-between";
 export * from "./closing/snap-between";
 export * from "./closing/snap";
 
 // ways
 export * from "./ways/ways-types";
-export { quickWays } from "./ways/find-ways";
+export { quickWays, standardWays } from "./ways/find-ways";
 export { threeElbowWays, WALK_STEPS, type ThreeElbowResult } from "./ways/three-elbow";
 export { threeElbowRefusal } from "./ways/refusals";
 export { sortWays, uniqueWays } from "./ways/order";

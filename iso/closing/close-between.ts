@@ -7,6 +7,7 @@ import { formatAngleDeg, formatInches, formatLength, formatTerm } from "../units
 import { INCH_MM } from "../units/length";
 import { closingAdvice } from "./advice";
 import type { ClosingInput, ClosingKind, ClosingReason, ClosingSolution } from "./closing-types";
+import { closingSpread } from "./end-spread";
 import { elbowMarks, type ElbowMarks } from "./elbow-marks";
 import { solveClosing } from "./solver";
 
@@ -30,6 +31,8 @@ export interface CloseBetweenInput {
   readonly odMm: number;
   /** What the measurements may be off by; 1/16 in when left out. */
   readonly toleranceMm?: number;
+  /** What is known of the ends, instead of one tolerance: twelve by twelve, position and axis (mm, 1) of end 0, then of end 1. */
+  readonly endsCovariance?: readonly (readonly number[])[];
 }
 
 /** One of the two elbows. */
@@ -111,7 +114,7 @@ export function closeBetween(input: CloseBetweenInput): ClosingFound | ClosingRe
     rollDeg: solution.rollDeg, rollText: roll === null ? null : formatAngleDeg(roll),
     rollArcMm: arcMm, rollArcText: arcMm === null ? null : tapeText(arcMm, input.units),
     points: bends.map((b) => b.workingPoint),
-    warnings: warningsOf(bends, solution, result.warnings.length > 0, input),
+    warnings: warningsOf(bends, solution, isShaky(asked, solution, result.warnings.length > 0, input), input),
   };
 }
 
@@ -151,6 +154,12 @@ function bendOf(end: 0 | 1, angleRad: number, takeOutMm: number, radiusMm: numbe
   };
 }
 
+/** Whether the errors of the ends turn a bend by more than a degree: by what is known of both, else by one tolerance each way. */
+function isShaky(asked: ClosingInput, solution: ClosingSolution, byTolerance: boolean, { endsCovariance }: CloseBetweenInput): boolean {
+  const spread = endsCovariance && closingSpread(asked, solution, endsCovariance);
+  return spread ? Math.max(spread.theta0, spread.theta1) > SHAKY_BEND_RAD : byTolerance;
+}
+
 function warningsOf(bends: readonly ClosingBend[], s: ClosingSolution, shaky: boolean, input: CloseBetweenInput): ClosingWarning[] {
   const warnings: ClosingWarning[] = [];
   const trimmed = bends.filter((b) => b.elbow === "trimmed");
@@ -158,8 +167,8 @@ function warningsOf(bends: readonly ClosingBend[], s: ClosingSolution, shaky: bo
     warnings.push({ code: "trimmed-elbow", sentence: `Trimmed ${trimmed.length > 1 ? "elbows" : "elbow"}, ${trimmed.map((b) => b.angleText).join(" and ")}: confirm with the engineer that trimming is permitted.` });
   }
   if (shaky) {
-    const off = tapeText(input.toleranceMm ?? DEFAULT_TOLERANCE_MM, input.units);
-    warnings.push({ code: "ill-conditioned", sentence: `${off} of error in the measurements turns a bend by more than 1°: measure again, twice, or leave room for a longer pipe.` });
+    const off = input.endsCovariance ? "What the survey may be off by" : `${tapeText(input.toleranceMm ?? DEFAULT_TOLERANCE_MM, input.units)} of error in the measurements`;
+    warnings.push({ code: "ill-conditioned", sentence: `${off} turns a bend by more than 1°: measure again, twice, or leave room for a longer pipe.` });
   }
   if (bends.some((b) => b.angleRad < SLIGHT_BEND_RAD)) {
     warnings.push({ code: "slight-bend", sentence: "A bend under half a degree is hardly to be cut; think of taking it as mismatch at the weld." });

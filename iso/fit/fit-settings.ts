@@ -1,6 +1,5 @@
 /** What a shop holds to and what a joint may be off by: optional settings of shop, job and line, with usual values. */
 import { z } from "zod";
-import type { UnitSystem } from "../run/settings-schema";
 import { INCH_MM } from "../units/length";
 
 const mm = z.number().finite().min(0).max(100);
@@ -49,7 +48,7 @@ const THIRTY_SECOND = INCH_MM / 32;
  * Usual values, all for the shop to change. Squareness in the manner of PFI ES-3 (1/32 in across any diameter) and flanges
  * of ASME B31.3 335.1.1(c) (1 mm in 200 mm, holes 3 mm), both from memory; root gap, high-low, cuts and angles common practice.
  */
-export function usualFitSettings(units: UnitSystem): FitSettings {
+export function usualFitSettings(units: "imperial" | "metric"): FitSettings {
   const metric = units === "metric";
   const small = metric ? 0.8 : THIRTY_SECOND;
   const large = metric ? 1.5 : SIXTEENTH;

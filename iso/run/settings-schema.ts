@@ -1,5 +1,6 @@
 /** Line settings: what a job hands down to each new line, with pipe, allowances and the rules marks follow. */
 import { z } from "zod";
+import { fitSettingsSchema } from "../fit/fit-settings";
 import { npsSchema, ratingClassSchema } from "./item-schema";
 import { positiveMmSchema as positiveMm, shortTextSchema as shortText } from "./scalar-schemas";
 
@@ -61,6 +62,8 @@ export const lineSettingsSchema = z.object({
   loopToleranceMm: positiveMm.optional(),
   /** Class of socket-weld and threaded forged fittings; absent = 3000. */
   forgedClass: z.union([z.literal(2000), z.literal(3000), z.literal(6000)]).optional(),
+  /** What the shop holds to and what its joints may be off by; absent = usualFitSettings. */
+  fit: fitSettingsSchema.optional(),
   /** absent = DEFAULT_MARK_RULES. */
   marks: markRulesSchema.optional(),
   /** As entered, per owner's specification; printed, never judged. */

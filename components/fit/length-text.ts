@@ -1,0 +1,17 @@
+/** Small lengths as a fit tells and takes them. */
+import { formatDecimal, formatInches, INCH_MM, parseLength, type UnitSystem } from "@/iso";
+
+/** A length for an entry: a fraction of an inch where it says exactly the same, else decimals. */
+export function tapeEntryText(mm: number, units: UnitSystem): string {
+  if (units === "metric") return formatDecimal(mm, 3);
+  const tape = formatInches(mm, 64);
+  const read = parseLength(tape, units);
+  return read.ok && Math.abs(read.mm - mm) < EXACT_MM ? tape : `${formatDecimal(mm / INCH_MM, 5)}`;
+}
+
+const EXACT_MM = 0.0005;
+
+/** A ± finer than a tape: hundredths of an inch, tenths of a millimetre. */
+export function withinText(mm: number, units: UnitSystem): string {
+  return units === "metric" ? `${formatDecimal(mm, 1)} mm` : `${(mm / INCH_MM).toFixed(2)} in`;
+}
