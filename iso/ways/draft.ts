@@ -18,6 +18,8 @@ export interface Draft {
   readonly directions: readonly Vec3[];
   /** Corner-to-corner length of each straight. */
   readonly lengths: readonly number[];
+  /** A straight whose faces are welded although they stand a hair off one gap: an elbow ground to an elbow. */
+  readonly ground?: number;
   /** What the ends are cut back by. */
   readonly trims?: { readonly end0Mm: number; readonly end1Mm: number };
   readonly warnings?: readonly string[];
@@ -63,8 +65,8 @@ export function isLegalDraft(draft: Draft, rules: readonly StraightRule[]): bool
 }
 
 /** The drafts that no other beats in both welds and length; of equal ones the first. */
-export function unbeaten(drafts: readonly Draft[], rules: readonly StraightRule[]): Draft[] {
-  const judged = drafts.map((draft) => ({ draft, welds: pipesIn(draft, rules), length: totalOf(draft.lengths) }));
+export function unbeaten(drafts: readonly Draft[], rules: (draft: Draft) => readonly StraightRule[]): Draft[] {
+  const judged = drafts.map((draft) => ({ draft, welds: pipesIn(draft, rules(draft)), length: totalOf(draft.lengths) }));
   judged.sort((a, b) => a.welds - b.welds || a.length - b.length);
   let shortest = Infinity;
   return judged.flatMap(({ draft, length }) => {

@@ -12,11 +12,12 @@ type Wish = (way: Way) => number;
 const welds: Wish = (way) => way.welds;
 const cuts: Wish = (way) => way.trimmedCuts;
 const rank: Wish = (way) => RANK[way.kind];
+const mitred: Wish = (way) => Number(way.kind === "mitre");
 const fittings: Wish = (way) => way.turns.length;
 const WISHES: Readonly<Record<WayPreference, readonly (Wish | "length")[]>> = {
-  "fewest-welds": [welds, cuts, "length"],
-  "least-trimmed": [cuts, rank, welds, "length"],
-  shortest: ["length", welds, cuts],
+  "fewest-welds": [welds, mitred, cuts, "length"],
+  "least-trimmed": [mitred, cuts, rank, welds, "length"],
+  shortest: ["length", mitred, welds, cuts],
   "standard-first": [rank, fittings, welds, "length"],
 };
 

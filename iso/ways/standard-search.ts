@@ -27,7 +27,7 @@ export function standardDrafts(problem: WaysProblem, k: 0 | 1 | 2 | 3): Draft[] 
     stockChoices(problem, k, reducerAt).flatMap((turns) => {
       const rules = rulesOf(problem, turns, reducerAt);
       const legal = solutionsOf(problem, turns, reducerAt, rules).filter((draft) => isLegalDraft(draft, rules));
-      return k < 3 ? legal : [...new Set(legal.map((draft) => draft.directions))].flatMap((same) => unbeaten(legal.filter((draft) => draft.directions === same), rules));
+      return k < 3 ? legal : [...new Set(legal.map((draft) => draft.directions))].flatMap((same) => unbeaten(legal.filter((draft) => draft.directions === same), () => rules));
     }),
   );
 }
@@ -92,7 +92,7 @@ function boundChoices(rules: readonly StraightRule[], pair: readonly [number, nu
 }
 
 /** The plane of both axes; of the axis and the other end where the axes are parallel; any where all is on one line. */
-function planeNormal({ d0, into1, p0, p1 }: WaysProblem): Vec3 {
+export function planeNormal({ d0, into1, p0, p1 }: WaysProblem): Vec3 {
   const ofAxes = vecCross(d0, into1);
   if (vecLength(ofAxes) > WAYS_ANGLE) return vecUnit(ofAxes) ?? vecPerpendicular(d0);
   const towards = vecUnit(vecSub(p1, p0));

@@ -66,7 +66,7 @@ function spatialDrafts(problem: WaysProblem, { turns, reducerAt }: Task): Draft[
     return rules.flatMap((rule, pinned) => boundsOf(rule).map((x) => pinnedDrafts({ problem, task: { turns, reducerAt }, rules, loop, pinned, x }, walked)));
   });
   const shortest = found.flatMap((each) => each.shortest);
-  const welded = unbeaten([...shortest, ...found.flatMap((each) => each.welded)], rules);
+  const welded = unbeaten([...shortest, ...found.flatMap((each) => each.welded)], () => rules);
   return [...shortest, ...welded.filter((draft) => !shortest.includes(draft))];
 }
 

@@ -57,7 +57,8 @@ function straightOf(problem: WaysProblem, draft: Draft, rule: StraightRule | und
   const isMitred = before?.fitting.make === "mitre" || after?.fitting.make === "mitre";
   // At a mitre each pipe brings half a gap to its weld: there is always pipe.
   const halves = (before?.fitting.make === "mitre" ? 0.5 : 0) + (after?.fitting.make === "mitre" ? 0.5 : 0);
-  const cutMm = isMitred ? x - (1 - halves) * problem.gapMm : Math.abs(x) <= WAYS_DIRECT_MM ? null : x - problem.gapMm;
+  const isWelded = Math.abs(x) <= WAYS_DIRECT_MM || draft.ground === j;
+  const cutMm = isMitred ? x - (1 - halves) * problem.gapMm : isWelded ? null : x - problem.gapMm;
   const reducing = draft.reducerAt === j ? problem.reducer : null;
   const reachMm = (before?.takeOutMm ?? 0) + problem.gapMm;
   return {
@@ -74,7 +75,7 @@ function placed({ large, small, lengthMm, source, unverified }: WaysReducer, lar
 function weldsOf(straights: readonly WayStraight[], turns: readonly WayTurn[]): number {
   const mitred = (j: number) => turns[j]?.fitting.make === "mitre";
   const between = straights.reduce((sum, { cutMm, reducer }, j) => {
-    if (mitred(j - 1) || mitred(j)) return sum + (mitred(j - 1) ? 0 : 1) + (mitred(j) ? 0 : 1) + (reducer ? 2 : 0);
+    if (mitred(j - 1) || mitred(j)) return sum + (mitred(j - 1) ? 0 : 1) + (mitred(j) ? 0 : 1) + (reducer ? 1 : 0);
     return sum + (cutMm === null ? 1 : 2) + (reducer ? 1 : 0);
   }, 0);
   return turns.reduce((sum, { fitting }) => sum + (fitting.make === "mitre" ? fitting.pieces - 1 : 0), between);

@@ -17,6 +17,8 @@ export interface WaysEnd {
   readonly nps: Nps;
   /** Least straight between the end (less its gap) and the first elbow; 0 = an elbow may be welded to the end itself. */
   readonly straightMm: number;
+  /** A flange, a fitting, a nozzle: nothing can be cut back or lengthened here. */
+  readonly fixed?: boolean;
 }
 
 /** What the pipe must keep clear of: its centre line less OD/2 keeps `clearMm` away. Lengths in mm. */
