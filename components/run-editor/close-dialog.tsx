@@ -1,6 +1,6 @@
 "use client";
 import { useDeferredValue, useMemo, useState, type ChangeEvent } from "react";
-import { closeBetween, type Model, type Nps, type RunDocument, type SurveyEndResult, type TakeOutWord } from "@/iso";
+import { closeBetween, type Model, type Nps, type RunDocument, type TakeOutWord } from "@/iso";
 import { Button } from "@/components/ui/button";
 import { Dialog, DialogActions } from "@/components/ui/dialog";
 import { Select, TextField } from "@/components/ui/field";
@@ -11,7 +11,7 @@ import { EMPTY_END, endFromPoint, radiusHint, readClosingForm, sizeAfter, type C
 import { planInsert, type InsertStamp } from "./closing-insert";
 import { pointPlace } from "./document-edits";
 import { itemEcho } from "./item-text";
-import { endFromSurvey, surveyedOptions, takenFrom, useSurveyedEnds } from "./surveyed-ends";
+import { endFromSurvey, surveyedOptions, takenFrom, useSurveyedEnds, type SurveyedEndResult } from "./surveyed-ends";
 
 export interface CloseDialogProps {
   readonly open: boolean;
@@ -112,7 +112,7 @@ interface EndFieldsProps extends CloseDialogProps {
   readonly form: ClosingForm;
   readonly messages: FieldMessages;
   readonly onChange: (end: EndForm) => void;
-  readonly surveyed: readonly SurveyEndResult[];
+  readonly surveyed: readonly SurveyedEndResult[];
 }
 
 function EndFields({ title, name, side, end, form, messages, onChange, model, takeOuts, surveyed }: EndFieldsProps) {

@@ -17,8 +17,18 @@ export interface EndForm {
   readonly straight: string;
   readonly radius: "LR" | "SR" | "own";
   readonly ownRadius: string;
-  /** The end of the survey it was taken from and how well that is known, two deviations; absent when it was not. */
-  readonly surveyed?: { readonly endId: string; readonly withinMm: number } | undefined;
+  /** The end of the survey it was taken from and how well that is known; absent when it was not. */
+  readonly surveyed?: SurveyedEnd | undefined;
+}
+
+/** What is known of a surveyed end. Covariances: position E, N, U in mm, then axis E, N, U. */
+export interface SurveyedEnd {
+  readonly endId: string;
+  /** Radius of its position, two deviations. */
+  readonly withinMm: number;
+  readonly covariance: readonly (readonly number[])[];
+  /** With each other end of the same survey, by its id: rows this end, columns the other. */
+  readonly across: Readonly<Record<string, readonly (readonly number[])[]>>;
 }
 
 export interface ClosingForm {
@@ -61,7 +71,19 @@ export function readClosingForm(form: ClosingForm, units: UnitSystem, takeOuts: 
     rootGapMm, thetaMaxRad: Math.PI / 2, units, odMm,
   };
   const withinMm = Math.hypot(form.end0.surveyed?.withinMm ?? 0, form.end1.surveyed?.withinMm ?? 0);
-  return { ok: true, input: withinMm > 0 ? { ...input, toleranceMm: withinMm } : input };
+  return { ok: true, input: withinMm > 0 ? { ...input, toleranceMm: withinMm, ...jointCovariance(form) } : input };
+}
+
+/** Twelve by twelve, of both ends together; of one alone nothing is said, its tolerance serves. */
+function jointCovariance({ end0, end1 }: ClosingForm): Pick<CloseBetweenInput, "endsCovariance"> {
+  const [a, b] = [end0.surveyed, end1.surveyed];
+  if (!a || !b || a.endId === b.endId) return {};
+  const cross = a.across[b.endId];
+  const at = (i: number, j: number): number => {
+    if (i < 6 === j < 6) return (i < 6 ? a : b).covariance[i % 6]?.[j % 6] ?? 0;
+    return (i < 6 ? cross?.[i]?.[j - 6] : cross?.[j]?.[i - 6]) ?? 0;
+  };
+  return { endsCovariance: Array.from({ length: 12 }, (_, i) => Array.from({ length: 12 }, (__, j) => at(i, j))) };
 }
 
 interface ReadEnd {
