@@ -1,6 +1,7 @@
 "use client";
 import { useDeferredValue, useMemo, useState, type ChangeEvent } from "react";
 import { closeBetween, type Model, type Nps, type RunDocument, type TakeOutWord } from "@/iso";
+import { FitPanel } from "@/components/fit/fit-panel";
 import { Button } from "@/components/ui/button";
 import { Dialog, DialogActions } from "@/components/ui/dialog";
 import { Select, TextField } from "@/components/ui/field";
@@ -82,6 +83,7 @@ function ClosingView(props: CloseDialogProps) {
       </div>
       <section aria-label="Answer" aria-live="polite" className="mt-6 border-t border-ink pt-4">
         {answer === null || !read.ok ? <p className="text-soft">The answer stands here once both ends are complete.</p> : <ClosingAnswer form={settled} input={read.input} answer={answer} model={model} takeOuts={takeOuts} />}
+        {read.ok && answer?.ok ? <FitPanel key={units} input={read.input} answer={answer} surveyedIds={[settled.end0.surveyed?.endId ?? null, settled.end1.surveyed?.endId ?? null]} lineId={props.lineId ?? null} nps={settled.nps} settings={model.document.settings} /> : null}
       </section>
       {props.onInsert ? (
         <>
