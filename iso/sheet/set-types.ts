@@ -51,6 +51,8 @@ export interface SheetSetExtras {
   readonly printed?: { readonly by: string; readonly at: string } | null;
   /** Re-lays every page inside half an inch of margin. True-scale pages keep their scale. */
   readonly safeMargins?: boolean;
+  /** Thickness of the paper that templates are printed on, mm; absent = ordinary printing paper. */
+  readonly paperMm?: number;
   /** Pages of the stored sheet that take the place of the spool sheet; absent = the spool sheet is composed. */
   readonly storedSheetPages?: number;
 }

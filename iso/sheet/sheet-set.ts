@@ -51,7 +51,7 @@ function draftsOf(part: Exclude<SheetPart, "sheet" | "index">, facts: SheetFacts
   if (part === "cuts") return cutMapDrafts(facts, extras, first, measure);
   if (part === "welds") return weldMapDrafts(facts, extras, first, measure);
   if (part === "bench") return benchDrafts(facts, first, measure);
-  return part === "templates" ? templateDrafts(facts, measure).drafts : legendDrafts(facts, measure);
+  return part === "templates" ? templateDrafts(facts, measure, extras.paperMm).drafts : legendDrafts(facts, measure);
 }
 
 function bookmarksOf(wanted: readonly SheetPart[], drafted: ReadonlyMap<SheetPart, readonly PageDraft[]>, stored: number): SetBookmark[] {

@@ -1,4 +1,5 @@
 /** Makes a marked copy of a stored sheet for printing. The stored bytes are never touched; the copy's hash is kept. */
+import { SHEET_PART_WORDS, type SheetPart } from "@/iso";
 import { ORIGINAL, UNCONTROLLED } from "@/lib/rules/copies";
 import { copyWord } from "@/lib/rules/copy-words";
 import { markCopy } from "@/pdf/mark-copy";
@@ -19,6 +20,15 @@ export async function printCopy(context: CommandContext, sheet: StoredSheet): Pr
   await keepCopy(context, sheet, sha256, marked);
   context.audit({ type: "sheet.copied", data: { ...namesOf(sheet), sha256, marked } });
   return bytes;
+}
+
+/** Notes that the viewer printed parts of an issued sheet's set: they are as good as a copy of it, and have to come back like one. */
+export async function keepSet(context: CommandContext, sheet: StoredSheet, parts: readonly SheetPart[], bytes: Uint8Array): Promise<void> {
+  const sha256 = sha256Hex(bytes);
+  const marked = copyWord(sheet.state, sheet.hold) ?? UNCONTROLLED;
+  await keepCopy(context, sheet, sha256, marked);
+  const { revisionId, sheetNumber, code } = sheet;
+  context.audit({ type: "set.printed", data: { revisionId, sheetNumber, code, parts: parts.map((part) => SHEET_PART_WORDS[part]), sha256, marked } });
 }
 
 /** Notes that the viewer takes the stored bytes, which carry no mark. @returns them as they are. */

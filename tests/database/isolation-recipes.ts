@@ -12,6 +12,7 @@ import * as uploads from "@/app/api/lines/[lineId]/uploads/route";
 import * as hold from "@/app/api/revisions/[revisionId]/hold/route";
 import { emptySurvey } from "@/iso";
 import { sampleDocument } from "../factories";
+import { sampleMeasurement } from "../measurements";
 import { pngFile } from "./files";
 import { uploadedP12 } from "../p12-files";
 import { copyOf, marksOf, signBody, signed, submitted } from "./revision-support";
@@ -148,7 +149,14 @@ export const RECIPES: Readonly<Record<string, Recipe>> = {
   "POST /copies/withdraw": foreign(async (shop) => ({ body: { copyIds: [await copyOf(shop)] } })),
   "GET /spools/[spoolId]/sheet": onSpool({ query: "?size=A4" }),
   "GET /spools/[spoolId]/bench": onSpool({ query: "?kind=layout" }),
+  "GET /spools/[spoolId]/sheet-set": onSpool({ query: "?parts=cuts,legend" }),
   "GET /spools/[spoolId]/compare": onSpool({ query: "?as=data" }),
+  "GET /spools/[spoolId]/as-fitted": onSpool(),
+  "POST /spools/[spoolId]/as-fitted": foreign(async (shop) => {
+    const { spoolId } = await signed(shop);
+    return { params: { spoolId }, body: { document: sampleMeasurement() } };
+  }),
+  "GET /spools/[spoolId]/as-fitted/sheet": onSpool({ query: "?size=A4" }),
   "GET /spools/[spoolId]/export": onSpool({ query: "?what=cuts&as=csv" }),
   "POST /spools/[spoolId]/submit": onSpool({ body: { description: "First issue", size: "letter" } }),
   "POST /spools/[spoolId]/work": foreign(async (shop) => {

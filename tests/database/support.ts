@@ -93,6 +93,7 @@ export interface Call {
 export interface Answer {
   readonly status: number;
   readonly headers: Headers;
+  readonly bytes: Uint8Array;
   readonly text: string;
   // eslint-disable-next-line @typescript-eslint/no-explicit-any -- tests read whatever shape they expect
   readonly json: any;
@@ -108,7 +109,7 @@ export async function call(handler: unknown, { as = null, method = "GET", params
   const bytes = new Uint8Array(await answer.arrayBuffer());
   const text = new TextDecoder().decode(bytes);
   const isJson = (answer.headers.get("content-type") ?? "").includes("json");
-  return { status: answer.status, headers: answer.headers, text, json: isJson && text !== "" ? JSON.parse(text) : null };
+  return { status: answer.status, headers: answer.headers, bytes, text, json: isJson && text !== "" ? JSON.parse(text) : null };
 }
 
 function payload(method: string, body: unknown, file: Call["file"]): BodyInit | undefined {

@@ -73,7 +73,7 @@ describe("events in words", () => {
     sheetNumber: "0001", code: "A", spoolId: "sp", inputSha256: "h", contentSha256: "h", accepted: ["a"], superseded: null, reason: "why", remark: "done", kind: "review", marked: "COPY", entryId: "w", mark: "P1",
     certificateId: "c", origin: "made", subject: "CN", fingerprint: "f", validTo: "2030", offcutId: "o", nestId: "n", title: "T", sourceSha256: "h",
     packageId: "pk", count: 3, receivedBy: "Cannery", receivedOn: "2026-12-01",
-    measurementId: "ms", verdict: "go",
+    parts: ["Cut map"], measurementId: "ms", verdict: "go",
     bars: 3, proven: true, lengths: 3, offcutsTaken: 1, offcutsReturned: 1, copyIds: ["c"], sheets: ["0001 A"],
   };
   /** One word with another shape in some events. */
