@@ -1,9 +1,9 @@
 /** Fits measured faces and corners to the sheet: which way each measured axis points is chosen by what lies nearest. */
 import type { Vec3 } from "../geometry/types";
 import { vecNegate, vecSub } from "../geometry/vec3";
-import { DIRECTION_LEVER_MM, motionPoint, motionWay, rigidMotion, type MotionFit, type Pair } from "./as-fitted-motion";
+import { DIRECTION_LEVER_MM, motionPoint, motionTurned, motionWay, rigidMotion, type Motion, type MotionFit, type Pair } from "./as-fitted-motion";
 import type { Measured } from "./as-fitted-types";
-import type { Wanted } from "./as-fitted-wanted";
+import { holeTurn, type Wanted, type WantedHoles } from "./as-fitted-wanted";
 
 export interface Fitted extends MotionFit {
   /** Measured with their axes the right way round. */
@@ -16,7 +16,9 @@ export interface Fitted extends MotionFit {
 
 export interface WantedPlace {
   readonly position: Vec3;
+  /** null at a corner. */
   readonly direction: Vec3 | null;
+  readonly holes: WantedHoles | null;
 }
 
 /** More axes than this are turned one after another and not in every combination. */
@@ -24,8 +26,8 @@ const MOST_TOGETHER = 5;
 
 export function wantedPlaces(wanted: Wanted): ReadonlyMap<string, WantedPlace> {
   return new Map<string, WantedPlace>([
-    ...wanted.faces.map(({ mark, position, direction }) => [mark, { position, direction }] as const),
-    ...wanted.corners.map(({ mark, position }) => [mark, { position, direction: null }] as const),
+    ...wanted.faces.map(({ mark, position, direction, holes }) => [mark, { position, direction, holes }] as const),
+    ...wanted.corners.map(({ mark, position }) => [mark, { position, direction: null, holes: null }] as const),
   ]);
 }
 
@@ -65,8 +67,16 @@ export function fitOnce(measured: readonly Measured[], places: ReadonlyMap<strin
   const base = measured.find((one) => one.mark === hold);
   const place = base && places.get(base.mark)!;
   const held = base && place ? { measured: base.centre!, wanted: place.position, axis: base.axis && place.direction ? { measured: base.axis, wanted: place.direction } : null } : null;
-  const fit = rigidMotion(points, ways, held);
+  const loose = rigidMotion(points, ways, held);
+  const fit = base && place && held?.axis ? { ...loose, motion: clocked(loose.motion, base, place) } : loose;
   const miss = (moved: Vec3, wanted: Vec3, lever: number) => vecSub(moved, wanted).reduce((sum, x) => sum + (x * lever) ** 2, 0);
   const squares = points.reduce((sum, p) => sum + miss(motionPoint(fit.motion, p.measured), p.wanted, 1), 0) + ways.reduce((sum, w) => sum + miss(motionWay(fit.motion, w.measured), w.wanted, DIRECTION_LEVER_MM), 0);
   return { ...fit, measured, squares, spare: 3 * points.length + 2 * ways.length - 6 };
+}
+
+/** The turn about a held face's axis is its bolt holes' where they were measured: they are what holds it when bolted up. */
+function clocked(motion: Motion, base: Measured, { position, direction, holes }: WantedPlace): Motion {
+  if (!direction || !holes || base.holes.length === 0) return motion;
+  const turn = holeTurn({ direction, holes }, position, base.holes.map((hole) => motionPoint(motion, hole)));
+  return turn === null ? motion : motionTurned(motion, position, direction, turn);
 }

@@ -56,6 +56,12 @@ export function motionWay({ turn }: Motion, way: Vec3): Vec3 {
   return [vecDot(turn[0], way), vecDot(turn[1], way), vecDot(turn[2], way)];
 }
 
+/** A motion followed by a right-handed turn about a unit axis through a point of the sheet's frame. */
+export function motionTurned({ turn, shift }: Motion, about: Vec3, axis: Vec3, angleRad: number): Motion {
+  const columns = [0, 1, 2].map((k) => vecRotate([turn[0][k]!, turn[1][k]!, turn[2][k]!], axis, angleRad));
+  return { turn: [0, 1, 2].map((row) => columns.map((column) => column[row]!)) as unknown as Motion["turn"], shift: vecAdd(about, vecRotate(vecSub(shift, about), axis, angleRad)) };
+}
+
 /**
  * Best motion from the measurer's frame into the sheet's.
  * @param points mm, one or more; @param ways unit directions; @param held lies exactly on its place, the others follow.

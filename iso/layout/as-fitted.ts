@@ -32,6 +32,7 @@ export function compareWith(wanted: Wanted, document: AsFittedDocument, nominalI
   if (!fitted) return { ...empty, ...nothingJudged(wanted), verdict: "none", headline: "Nothing is measured yet. Three points that do not stand on one line place a spool: face centres, points on their axes, bolt holes or corners." };
   const slips = slipFindings(document, fitted, places, tolerances);
   findings.push(...slips, ...freedomFindings(fitted));
+  if (hold === "" && fitted.free === "nothing" && slips.length === 0 && fitted.measured.length === 2) findings.push({ code: "two", tone: "note", sentence: "With two faces the fit shares what is off between them. Hold one of them to see where the other comes to stand." });
   const judged = judgeFitted(fitted, wanted, tolerances, units);
   const isSound = fitted.free === "nothing" && slips.every(({ tone }) => tone !== "wrong");
   const changes = isSound && judged.verdict === "stop" ? mendingChanges(fitted, { wanted, places, tolerances, units, hold }) : [];

@@ -15,7 +15,7 @@ beforeAll(async () => {
 });
 afterAll(endOfFile);
 
-const INSERT_ONLY = ["audit_events", "revision_inputs", "revision_sheets", "sheet_copies", "sign_offs", "work_entries", "line_touches", "take_out_words"];
+const INSERT_ONLY = ["audit_events", "revision_inputs", "revision_sheets", "sheet_copies", "sign_offs", "work_entries", "spool_measurements", "line_touches", "take_out_words"];
 
 async function refusal(sql: string): Promise<string> {
   return withClient("app", async (client) => client.query(sql).then(() => "done", (error: { code: string }) => error.code));
