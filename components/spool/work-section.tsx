@@ -6,6 +6,7 @@ import { Notice } from "@/components/ui/notice";
 import { Section } from "@/components/ui/section";
 import type { Role, SpoolDetail, WorkKind } from "@/lib/rules/api-types";
 import { canRecord } from "@/lib/rules/permissions";
+import { AsFittedSection } from "./as-fitted-section";
 import { CheckSection, isCheckEntry } from "./check-section";
 import { CutPrint } from "./cut-print";
 import { CutTable } from "./cut-table";
@@ -84,6 +85,7 @@ export function WorkSection({ spool, input, issued, role }: WorkSectionProps) {
         )}
       </Section>
       <CheckSection spool={spool} input={input} model={facts.model} open={open && canRecord(role, "actual")} />
+      <AsFittedSection spoolId={spool.id} input={input} model={facts.model} open={open && canRecord(role, "actual")} />
       <Actuals
         spool={spool}
         role={role}
