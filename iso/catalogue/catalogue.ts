@@ -119,11 +119,11 @@ export interface FlangeBolts {
 
 /** Bolts and main diameters of a raised-face flange (ASME B16.5), or null when no table has it. */
 export function flangeBolts(ratingClass: RatingClass, nps: Nps): FlangeBolts | null {
-  const row = FLANGE_ROWS.find((r) => r.ratingClass === ratingClass && r.nps === nps);
-  if (!row) return null;
-  return {
-    count: row.bolts, size: row.boltSize, holeMm: inchesMm(row.holeIn), circleMm: inchesMm(row.boltCircleIn),
-    studLengthMm: inchesMm(row.studIn), outsideMm: inchesMm(row.outsideIn), raisedFaceMm: inchesMm(row.raisedFaceIn),
-    source: row.drillingMemory === "yes" ? "ASME B16.5 (from memory)" : row.source,
-  };
+  return BOLTS.get(`${ratingClass} ${nps}`) ?? null;
 }
+
+const BOLTS: ReadonlyMap<string, FlangeBolts> = new Map(FLANGE_ROWS.map((row) => [`${row.ratingClass} ${row.nps}`, {
+  count: row.bolts, size: row.boltSize, holeMm: inchesMm(row.holeIn), circleMm: inchesMm(row.boltCircleIn),
+  studLengthMm: inchesMm(row.studIn), outsideMm: inchesMm(row.outsideIn), raisedFaceMm: inchesMm(row.raisedFaceIn),
+  source: row.drillingMemory === "yes" ? "ASME B16.5 (from memory)" : row.source,
+}]));

@@ -31,11 +31,21 @@ export interface PipeWall {
 
 /** Diameters of a pipe size (ASME B36.10M), or null for a size no table has. */
 export function pipeSize(nps: Nps): PipeSize | null {
+  return SIZES.get(nps) ?? null;
+}
+
+function tabulatedSize(nps: Nps): PipeSize | null {
   const read = PIPE_DIAMETERS.find(([size]) => size === nps);
   const row = read ?? REMEMBERED_DIAMETERS.find(([size]) => size === nps);
   if (!row) return null;
   return { nps, dn: row[1], odInchMm: inchesMm(row[2]), odMetricMm: row[3], source: read ? `ASME B36.10M, ${PIPE_SOURCE}` : "ASME B36.10M (from memory)" };
 }
+
+/** Looked up for every end of every part of a line, so found once. */
+const SIZES: ReadonlyMap<string, PipeSize> = new Map(NPS_SIZES.flatMap((nps) => {
+  const size = tabulatedSize(nps);
+  return size ? [[nps, size]] : [];
+}));
 
 /** Outside diameter on a line of these units, mm, or null. */
 export function pipeOdMm(nps: Nps, units: UnitSystem): number | null {
@@ -48,8 +58,22 @@ export function pipeOdMm(nps: Nps, units: UnitSystem): number | null {
  * 10.69 in pounds and inches). Null when the schedule does not exist in that size.
  */
 export function pipeWall(nps: Nps, schedule: string, units: UnitSystem): PipeWall | null {
+  const known = WALLS[units].get(schedule)?.get(nps);
+  if (known) return known;
+  const name = schedule.trim().toUpperCase();
+  const found = tabulatedWall(nps, name, units);
+  if (!found) return null;
+  const bySize = WALLS[units].get(name) ?? new Map<Nps, PipeWall>();
+  WALLS[units].set(name, bySize.set(nps, found));
+  return found;
+}
+
+/** Walls asked for so far, by schedule and size; only what a table has is kept, so it cannot outgrow the tables. */
+const WALLS: Readonly<Record<UnitSystem, Map<string, Map<Nps, PipeWall>>>> = { imperial: new Map(), metric: new Map() };
+
+function tabulatedWall(nps: Nps, schedule: string, units: UnitSystem): PipeWall | null {
   const odMm = pipeOdMm(nps, units);
-  const row = wallRow(nps, schedule.trim().toUpperCase());
+  const row = wallRow(nps, schedule);
   if (odMm === null || !row) return null;
   const wallMm = units === "metric" ? row.mm : inchesMm(row.inches);
   const kgPerM = Math.PI * (odMm - wallMm) * wallMm * STEEL_KG_PER_MM3 * 1000;

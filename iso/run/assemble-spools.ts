@@ -34,12 +34,27 @@ export function assembleSpools(
     const body = spoolBody(components, pieces, legById, ctx.units);
     const letter = letters[i] ?? "?";
     const shipping = shippedSpool({ letter, components, pieces, joints, boxMm: body.boxMm }, ctx);
+    const [materials, content] = [
+      once(() => spoolMaterials({ components, pieces, loose: g.loose }, ctx.units)),
+      once(() => spoolContent({ components, pieces, joints: touching[i] ?? [], loose: g.loose, points, legs: legById, letter, services }, document)),
+    ];
     return {
-      letter, anchor: g.anchor, componentIds: g.componentIds, pieceKeys: g.pieceKeys, jointKeys: joints.map((j) => j.key), ...body, shippingMm: shipping,
-      materials: spoolMaterials({ components, pieces, loose: g.loose }, ctx.units),
-      content: spoolContent({ components, pieces, joints: touching[i] ?? [], loose: g.loose, points, legs: legById, letter, services }, document),
+      ...body, letter, anchor: g.anchor, componentIds: g.componentIds, pieceKeys: g.pieceKeys, jointKeys: joints.map((j) => j.key), shippingMm: shipping,
+      // Lists and keys are asked for on paper and at a submission, not at every stroke of a key: made when first read.
+      get materials() {
+        return materials();
+      },
+      get content() {
+        return content();
+      },
     };
   });
+}
+
+/** The same answer however often it is asked, worked out the first time. */
+function once<Answer>(work: () => Answer): () => Answer {
+  let known: { readonly answer: Answer } | null = null;
+  return () => (known ??= { answer: work() }).answer;
 }
 
 function groupIndex(id: string | null, groupOf: ReadonlyMap<string, number>): number | null {

@@ -2,6 +2,7 @@
  * From what was typed to what it means. The passes, in order: place runs · join faces · fit points · cut stretches ·
  * check · group spools · mark · assemble. Pure, same input same model; never throws on what a user can type.
  */
+import { isWeightKey } from "../catalogue/key-words";
 import { buildContext, type BuildContext } from "./build-context";
 import type { Fitting, JointDraft, PieceDraft, PlacedPoint, PlacedRun } from "./build-types";
 import { assembleSpools } from "./assemble-spools";
@@ -16,7 +17,7 @@ import { closeLoops } from "./loops";
 import { advanceMarks, givenMarks, type Markable } from "./marks";
 import type { Component, Joint, Leg, Loop, MarksRegister, Model, Node, Piece, Problem, TakeOutWord } from "./model-types";
 import { placeRuns } from "./place-runs";
-import { rolledPieces, rollsOf } from "./rolls";
+import { rolledPieces, rollsOf, type Rolls } from "./rolls";
 import { carriedServices, lineBreaks } from "./service";
 import { componentWeight } from "./weights";
 
@@ -25,6 +26,8 @@ interface Structure {
   readonly runs: readonly PlacedRun[];
   readonly legs: readonly Leg[];
   readonly parts: Parts;
+  /** How each part is turned against the one before it. */
+  readonly rolls: Rolls;
   readonly groups: readonly SpoolGroup[];
   readonly loops: readonly Loop[];
   readonly ctx: BuildContext;
@@ -43,7 +46,7 @@ export function buildModel(document: RunDocument, marks: MarksRegister, takeOuts
     for (const ids of [g.componentIds, g.pieceKeys]) for (const id of ids) letterOf.set(id, letters[i] ?? "?");
   });
   const spoolOf = (id: string | null) => (id === null ? null : (letterOf.get(id) ?? null));
-  const components = line.parts.components.map((c): Component => ({ ...c, ...componentWeight(c, line.ctx.units, line.ctx.peek), spool: spoolOf(c.id) }));
+  const components = finishedComponents(line, spoolOf, takeOuts);
   const spools = assembleSpools({ ...line.parts, components }, line.groups, letters, line.legs, document, line.ctx, carriedServices(line.runs.flatMap((run) => run.points)));
   const breaks = lineBreaks(line.runs.flatMap((run) => run.points));
   return {
@@ -52,7 +55,7 @@ export function buildModel(document: RunDocument, marks: MarksRegister, takeOuts
     legs: line.legs,
     components,
     joints: line.parts.joints.map((j) => jointOf(j, given.welds.get(j.key) ?? null, spoolOf(j.a) ?? spoolOf(j.b))),
-    pieces: line.parts.pieces.map((p): Piece => ({ ...p, mark: given.pieces.get(p.key) ?? "", spool: spoolOf(p.key) })),
+    pieces: line.parts.pieces.map((p) => finished<Piece>(p, { mark: given.pieces.get(p.key) ?? "", spool: spoolOf(p.key) })),
     spools,
     ...(breaks.length > 0 ? { breaks } : {}),
     problems: inFlowOrder(line.ctx.problems, line.runs),
@@ -65,6 +68,22 @@ export function nextMarks(document: RunDocument, marks: MarksRegister, takeOuts:
   return advanceMarks(markable(buildStructure(document, takeOuts)), marks, document.settings.marks);
 }
 
+/** Components with roll, weight and spool. */
+function finishedComponents({ parts, rolls, ctx }: Structure, spoolOf: (id: string) => string | null, takeOuts: readonly TakeOutWord[]): Component[] {
+  // The tables have no weight under a part's own key: without a word of the shop's none need be put together.
+  const shop = takeOuts.some(({ key }) => isWeightKey(key)) ? ctx.peek : null;
+  return parts.components.map((c): Component => {
+    const { weightKg, weightSource } = componentWeight(c, ctx.units, shop);
+    const roll = rolls.components.get(c.id);
+    return finished<Component>(c, { weightKg, weightSource, spool: spoolOf(c.id), ...(roll === undefined ? {} : { roll }) });
+  });
+}
+
+/** Fills in what is known last. The draft was made for this model alone, so it is completed rather than copied. */
+function finished<Part extends object>(draft: Partial<Part>, last: Partial<Part>): Part {
+  return Object.assign(draft, last) as Part;
+}
+
 function buildStructure(document: RunDocument, takeOuts: readonly TakeOutWord[]): Structure {
   const ctx = buildContext(document.settings, takeOuts);
   const closed = closeLoops(placeRuns(document, ctx), ctx);
@@ -72,15 +91,10 @@ function buildStructure(document: RunDocument, takeOuts: readonly TakeOutWord[])
   const points = new Map<string, PlacedPoint>(runs.flatMap((r) => r.points.map((p) => [p.uid, p] as const)));
   checkRuns(runs, ctx);
   const fittings = new Map<string, Fitting>([...points].map(([uid, p]) => [uid, p.closesLoop ? NOTHING_FITTED : fitPoint(p, ctx)]));
-  const parts = withRolls(collectParts(runs, fittings, points, ctx), runs, ctx);
-  return { runs, legs: runs.flatMap((r) => r.legs.flatMap((l) => l ?? [])), parts, groups: groupSpools(parts), loops: closed.loops, ctx };
-}
-
-/** Each part turned against the one before it. */
-function withRolls(parts: Parts, runs: readonly PlacedRun[], ctx: BuildContext): Parts {
-  const rolls = rollsOf(runs, parts.components, ctx.units);
-  const components = parts.components.map((c) => (rolls.components.has(c.id) ? { ...c, roll: rolls.components.get(c.id) ?? null } : c));
-  return { ...parts, components, pieces: rolledPieces(parts.pieces, rolls) };
+  const collected = collectParts(runs, fittings, points, ctx);
+  const rolls = rollsOf(runs, collected.components, ctx.units);
+  const parts = { ...collected, pieces: rolledPieces(collected.pieces, rolls) };
+  return { runs, legs: runs.flatMap((r) => r.legs.flatMap((l) => l ?? [])), parts, rolls, groups: groupSpools(parts), loops: closed.loops, ctx };
 }
 
 /** Puts fittings and what lies between them in one flow order: along the main run, then along each branch. */

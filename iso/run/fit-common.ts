@@ -133,9 +133,8 @@ type JointGiven = Pick<JointDraft, "key" | "kind" | "a" | "b" | "position" | "di
 
 /** A joint of this point, in the shop and square unless said otherwise. */
 export function makeJoint(p: PlacedPoint, given: JointGiven): JointDraft {
-  return {
-    pointId: p.point.id, runId: p.runId, place: "shop", nps: p.pipeIn.nps, mismatchRad: 0, gapMm: 0, gasketId: null, ...given,
-  };
+  const { key, kind, a, b, position, direction, pointId = p.point.id, runId = p.runId, place = "shop", nps = p.pipeIn.nps, mismatchRad = 0, gapMm = 0, gasketId = null } = given;
+  return { key, pointId, runId, kind, place, position, direction, a, b, nps, mismatchRad, gapMm, gasketId };
 }
 
 /** Sum of the take-outs, as a positive reach from the working point. */

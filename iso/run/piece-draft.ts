@@ -23,13 +23,13 @@ export function draftPiece(s: Stretch, ctx: BuildContext): PieceDraft {
   const cutLengthMm = terms.reduce((sum, t) => sum + t.valueMm, 0);
   const reach = (side: Side) => reachOf(side.terms) + (side.gap?.mm ?? 0);
   return {
-    ...(bends.length > 0 ? { bends: pieceBends(s, reach(s.start)) } : {}),
     key: `${last.id}:1`, legId: last.id, legIds: s.legs.map((leg) => leg.id), runId: last.runId, nps: pipe.nps, schedule: pipe.schedule, material: pipe.material,
     odMm: wall?.odMm ?? pipeOdMm(pipe.nps, ctx.units) ?? 0, wallMm: wall?.wallMm ?? 0,
     start: vecAddScaled(first.from, first.direction, reach(s.start)), end: vecAddScaled(last.to, last.direction, -reach(s.end)),
     direction: first.direction, terms, cutLengthMm, ends: [pieceEnd(s.start), pieceEnd(s.end)],
     weightKg: wall ? (wall.kgPerM * Math.max(cutLengthMm, 0)) / 1000 : null,
     weightSource: wall ? `cut length x ${wall.source}` : "not known",
+    ...(bends.length > 0 ? { bends: pieceBends(s, reach(s.start)) } : {}),
   };
 }
 

@@ -33,7 +33,10 @@ export interface ShippingBox {
   readonly along: Vec3;
 }
 
-type Frame = readonly [Vec3, Vec3, Vec3];
+/** Three unit directions square to each other, nine numbers one after the other: the search turns thousands and keeps few. */
+type Frame = number[];
+/** Where a direction begins in a frame. */
+type Way = 0 | 3 | 6;
 interface Try { readonly frame: Frame; readonly sizes: Vec3; readonly overMm: number; readonly volume: number }
 
 const MOST_DISCS = 48;
@@ -43,16 +46,16 @@ const QUICK_DIRECTIONS = 3;
 const FIRST_STEP = (15 * Math.PI) / 180;
 /** 0.2°: a hand on a full truck length, well under the one percent that is promised. */
 const SMALLEST_STEP = (0.2 * Math.PI) / 180;
-const AXES: Frame = [[1, 0, 0], [0, 1, 0], [0, 0, 1]];
+const AXES: Frame = frameOf([1, 0, 0], [0, 1, 0], [0, 0, 1]);
 
 /** Whether a spool's axis-parallel box goes into the room as it lies, so that no search is needed to say that it ships. */
 export function boxFits(sizeMm: Vec3, roomMm: Vec3): boolean {
-  return overOf(sizeMm, longestFirst(roomMm)) <= 0;
+  return overOf(sizeMm[0], sizeMm[1], sizeMm[2], longestFirst(roomMm)) <= 0;
 }
 
 /** The smallest box over rotations. `refinedStarts` frames are turned further; 0 stops at the spool's own directions: enough where it fits already. */
 export function shippingBox(discs: readonly Disc[], roomMm: Vec3, refinedStarts: number = REFINED_STARTS): ShippingBox {
-  if (discs.length === 0) return { sizeMm: [0, 0, 0], overMm: 0, along: AXES[0] };
+  if (discs.length === 0) return { sizeMm: [0, 0, 0], overMm: 0, along: [1, 0, 0] };
   const room = longestFirst(roomMm);
   const all = flattened(discs);
   if (refinedStarts === 0) return boxOf(ownFrames(discs).map((frame) => tried(frame, all, room)).sort(better)[0]!);
@@ -63,44 +66,67 @@ export function shippingBox(discs: readonly Disc[], roomMm: Vec3, refinedStarts:
 }
 
 function boxOf(best: Try): ShippingBox {
-  const longest = best.sizes.indexOf(Math.max(...best.sizes)) as 0 | 1 | 2;
-  return { sizeMm: longestFirst(best.sizes), overMm: Math.max(best.overMm, 0), along: best.frame[longest] };
+  const at = best.sizes.indexOf(Math.max(...best.sizes)) * 3;
+  return { sizeMm: longestFirst(best.sizes), overMm: Math.max(best.overMm, 0), along: [best.frame[at]!, best.frame[at + 1]!, best.frame[at + 2]!] };
 }
 
 function longestFirst(v: Vec3): Vec3 {
-  const [a, b, c] = v;
-  const [most, least] = [Math.max(a, b, c), Math.min(a, b, c)];
-  return [most, a === most ? (b === least ? c : b) : b === most ? (a === least ? c : a) : a === least ? b : a, least];
+  return [Math.max(v[0], v[1], v[2]), middleOf(v[0], v[1], v[2]), Math.min(v[0], v[1], v[2])];
 }
 
-function overOf(sizes: Vec3, room: Vec3): number {
-  const have = longestFirst(sizes);
-  return Math.max(have[0] - room[0], have[1] - room[1], have[2] - room[2]);
+function middleOf(a: number, b: number, c: number): number {
+  return Math.max(Math.min(a, b), Math.min(Math.max(a, b), c));
+}
+
+/** By how much the worst of three sides, each against its like by length, is longer than the room's; negative when all go in. */
+function overOf(a: number, b: number, c: number, room: Vec3): number {
+  return Math.max(Math.max(a, b, c) - room[0], middleOf(a, b, c) - room[1], Math.min(a, b, c) - room[2]);
 }
 
 function better(a: Try, b: Try): number {
-  const [overA, overB] = [Math.max(a.overMm, 0), Math.max(b.overMm, 0)];
+  const overA = Math.max(a.overMm, 0);
+  const overB = Math.max(b.overMm, 0);
   return overA !== overB ? overA - overB : a.volume - b.volume;
 }
 
 function tried(frame: Frame, rims: Float64Array, room: Vec3): Try {
-  const sizes: Vec3 = [extentAlong(frame[0], rims), extentAlong(frame[1], rims), extentAlong(frame[2], rims)];
-  return { frame, sizes, overMm: overOf(sizes, room), volume: sizes[0] * sizes[1] * sizes[2] };
+  const [a, b, c] = [extentAlong(frame, 0, rims), extentAlong(frame, 3, rims), extentAlong(frame, 6, rims)];
+  return { frame, sizes: [a, b, c], overMm: overOf(a, b, c, room), volume: a * b * c };
+}
+
+/** A copy of the frame when it beats the best so far, else that one; its third side is measured only when the first two leave a chance. */
+function betterTry(frame: Frame, rims: Float64Array, room: Vec3, best: Try): Try {
+  const a = extentAlong(frame, 0, rims);
+  const b = extentAlong(frame, 3, rims);
+  const most = Math.max(best.overMm, 0);
+  if (Math.max(a, b) - room[0] > most || Math.min(a, b) - room[1] > most) return best;
+  const c = extentAlong(frame, 6, rims);
+  const over = overOf(a, b, c, room);
+  if (Math.max(over, 0) > most || (Math.max(over, 0) === most && a * b * c >= best.volume)) return best;
+  return { frame: frame.slice(), sizes: [a, b, c], overMm: over, volume: a * b * c };
 }
 
 /** Seven numbers a disc (centre, axis, radius): the search reads them some ten thousand times. */
 function flattened(discs: readonly Disc[]): Float64Array {
   const rims = new Float64Array(discs.length * 7);
-  discs.forEach(({ centre, axis, radiusMm }, i) => {
-    rims.set(centre, i * 7);
-    rims.set(axis, i * 7 + 3);
-    rims[i * 7 + 6] = radiusMm;
-  });
+  for (let i = 0, at = 0; i < discs.length; i++) {
+    const { centre, axis, radiusMm } = discs[i]!;
+    rims[at++] = centre[0];
+    rims[at++] = centre[1];
+    rims[at++] = centre[2];
+    rims[at++] = axis[0];
+    rims[at++] = axis[1];
+    rims[at++] = axis[2];
+    rims[at++] = radiusMm;
+  }
   return rims;
 }
 
-/** How far the discs reach along a unit direction, from side to side, mm. */
-function extentAlong([x, y, z]: Vec3, rims: Float64Array): number {
+/** How far the discs reach along one of a frame's directions, from side to side, mm. */
+function extentAlong(frame: Frame, way: Way, rims: Float64Array): number {
+  const x = frame[way]!;
+  const y = frame[way + 1]!;
+  const z = frame[way + 2]!;
   let low = Infinity;
   let high = -Infinity;
   for (let i = 0; i < rims.length; i += 7) {
@@ -121,7 +147,7 @@ function ownFrames(discs: readonly Disc[]): Frame[] {
   }
   return [AXES, ...ways.map((first, i): Frame => {
     const second = squareTo(ways[i === 0 ? 1 : 0] ?? first, first) ?? vecPerpendicular(first);
-    return [first, second, vecCross(first, second)];
+    return frameOf(first, second, vecCross(first, second));
   })];
 }
 
@@ -133,8 +159,10 @@ function startFrames(discs: readonly Disc[]): Frame[] {
     const seconds = ways.map((way) => squareTo(way, first)).filter((way) => way !== null);
     if (seconds.length === 0) seconds.push(vecPerpendicular(first));
     for (const second of seconds) {
-      const third = vecCross(first, second);
-      frames.push([first, second, third], turned([first, second, third], 0, 1, Math.PI / 4, 2));
+      const upright = frameOf(first, second, vecCross(first, second));
+      const leaning = upright.slice();
+      turn(leaning, 0, 3, Math.PI / 4);
+      frames.push(upright, leaning);
     }
   }
   return frames;
@@ -157,15 +185,14 @@ function ownDirections(discs: readonly Disc[]): Vec3[] {
 }
 
 function longestDiagonal(discs: readonly Disc[]): Vec3 | null {
-  let [best, most]: [Vec3 | null, number] = [null, 0];
-  discs.forEach((a, i) => {
+  let [from, to, most] = [0, 0, 0];
+  for (let i = 0; i < discs.length; i++) {
     for (let k = i + 1; k < discs.length; k++) {
-      const b = discs[k]!;
-      const apart = vecDistance(a.centre, b.centre);
-      if (apart > most) [best, most] = [vecUnit(vecSub(b.centre, a.centre)), apart];
+      const apart = vecDistance(discs[i]!.centre, discs[k]!.centre);
+      if (apart > most) [from, to, most] = [i, k, apart];
     }
-  });
-  return best;
+  }
+  return most > 0 ? vecUnit(vecSub(discs[to]!.centre, discs[from]!.centre)) : null;
 }
 
 /** The rims that reach out farthest along evenly spread directions (a golden spiral on the sphere). */
@@ -193,20 +220,21 @@ function farthest([x, y, z]: Vec3, rims: Float64Array): number {
 }
 
 /** Pairs of frame directions that are turned into each other, and by which share: the three axes, then two at a time. */
-const TURNS: readonly (readonly (readonly [0 | 1 | 2, 0 | 1 | 2, 0 | 1 | 2, number])[])[] = [
-  [[0, 1, 2, 1]], [[1, 2, 0, 1]], [[2, 0, 1, 1]],
-  [[0, 1, 2, 0.7], [1, 2, 0, 0.7]], [[0, 1, 2, 0.7], [1, 2, 0, -0.7]], [[1, 2, 0, 0.7], [2, 0, 1, 0.7]], [[1, 2, 0, 0.7], [2, 0, 1, -0.7]],
+const TURNS: readonly (readonly (readonly [Way, Way, number])[])[] = [
+  [[0, 3, 1]], [[3, 6, 1]], [[6, 0, 1]],
+  [[0, 3, 0.7], [3, 6, 0.7]], [[0, 3, 0.7], [3, 6, -0.7]], [[3, 6, 0.7], [6, 0, 0.7]], [[3, 6, 0.7], [6, 0, -0.7]],
 ];
 
 function refine(start: Try, rims: Float64Array, room: Vec3): Try {
+  const frame = start.frame.slice();
   let best = start;
   for (let step = FIRST_STEP; step > SMALLEST_STEP; ) {
     let found = best;
-    for (const turn of TURNS) {
-      for (const sign of [1, -1]) {
-        const frame = turn.reduce<Frame>((f, [a, b, c, share]) => turned(f, a, b, sign * share * step, c), best.frame);
-        const candidate = tried(frame, rims, room);
-        if (better(candidate, found) < 0) found = candidate;
+    for (const turns of TURNS) {
+      for (let sign = 1; sign >= -1; sign -= 2) {
+        for (let i = 0; i < 9; i++) frame[i] = best.frame[i]!;
+        for (const way of turns) turn(frame, way[0], way[1], sign * way[2] * step);
+        found = betterTry(frame, rims, room, found);
       }
     }
     if (found === best) step /= 2;
@@ -215,13 +243,18 @@ function refine(start: Try, rims: Float64Array, room: Vec3): Try {
   return best;
 }
 
-/** The frame turned in the plane of two of its directions; the third stays. */
-function turned(frame: Frame, a: 0 | 1 | 2, b: 0 | 1 | 2, angle: number, c: 0 | 1 | 2): Frame {
-  const [cos, sin] = [Math.cos(angle), Math.sin(angle)];
-  const [u, v] = [frame[a], frame[b]];
-  const out: [Vec3, Vec3, Vec3] = [frame[0], frame[1], frame[2]];
-  out[a] = [u[0] * cos + v[0] * sin, u[1] * cos + v[1] * sin, u[2] * cos + v[2] * sin];
-  out[b] = [v[0] * cos - u[0] * sin, v[1] * cos - u[1] * sin, v[2] * cos - u[2] * sin];
-  out[c] = frame[c];
-  return out;
+function frameOf(a: Vec3, b: Vec3, c: Vec3): Frame {
+  return [a[0], a[1], a[2], b[0], b[1], b[2], c[0], c[1], c[2]];
+}
+
+/** Turns a frame in the plane of two of its directions, in place; the third stays. */
+function turn(frame: Frame, a: Way, b: Way, angle: number): void {
+  const cos = Math.cos(angle);
+  const sin = Math.sin(angle);
+  for (let i = 0; i < 3; i++) {
+    const u = frame[a + i]!;
+    const v = frame[b + i]!;
+    frame[a + i] = u * cos + v * sin;
+    frame[b + i] = v * cos - u * sin;
+  }
 }

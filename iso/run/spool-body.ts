@@ -5,7 +5,7 @@ import type { Vec3 } from "../geometry/types";
 import { STRAIGHT_RAD, WEIGHTLESS_KG } from "../geometry/tolerances";
 import { vecAdd, vecAddScaled, vecDistance, vecLerp, vecScale } from "../geometry/vec3";
 import type { UnitSystem } from "./document";
-import type { Component, Leg } from "./model-types";
+import type { Component, ComponentKind, Leg } from "./model-types";
 import type { PieceDraft } from "./piece-draft";
 import { spoolVolume, type SpoolVolume } from "./spool-volume";
 
@@ -18,14 +18,16 @@ export interface SpoolBody extends SpoolVolume {
 
 /** Empty weight and its centre (weighed parts only), what fills it, and the axis-parallel box around pipes, fittings and flanges. */
 export function spoolBody(components: readonly Component[], pieces: readonly PieceDraft[], legs: ReadonlyMap<string, Leg>, units: UnitSystem): SpoolBody {
-  const weighed = [
-    ...pieces.map((p) => ({ kg: p.weightKg, at: pathCentre(piecePath(p, legs)) })),
-    ...components.map((c) => ({ kg: c.weightKg, at: componentCentre(c) })),
-  ];
-  const weightKg = weighed.reduce((sum, w) => sum + (w.kg ?? 0), 0);
-  const moment = weighed.reduce<Vec3>((sum, w) => vecAddScaled(sum, w.at, w.kg ?? 0), [0, 0, 0]);
+  let [weightKg, unweighed] = [0, 0];
+  let moment: Vec3 = [0, 0, 0];
+  const weigh = (kg: number | null, centre: () => Vec3): void => {
+    if (kg === null) unweighed += 1;
+    else if (kg !== 0) [weightKg, moment] = [weightKg + kg, vecAddScaled(moment, centre(), kg)];
+  };
+  for (const p of pieces) weigh(p.weightKg, () => pathCentre(piecePath(p, legs)));
+  for (const c of components) weigh(c.weightKg, () => componentCentre(c));
   return {
-    weightKg, unweighed: weighed.filter((w) => w.kg === null).length,
+    weightKg, unweighed,
     centreOfGravity: weightKg > WEIGHTLESS_KG ? vecScale(moment, 1 / weightKg) : null, boxMm: spoolBox(components, pieces, units),
     ...spoolVolume(components, pieces, weightKg, units),
   };
@@ -33,7 +35,8 @@ export function spoolBody(components: readonly Component[], pieces: readonly Pie
 
 /** Corners of a piece's centre line: its two ends, and where it is bent the working points between (near enough for a weight). */
 function piecePath(p: PieceDraft, legs: ReadonlyMap<string, Leg>): Vec3[] {
-  const passed = p.bends ? (p.legIds ?? []).slice(0, -1) : [];
+  if (!p.bends) return [p.start, p.end];
+  const passed = (p.legIds ?? []).slice(0, -1);
   const corners = passed.map((id) => legs.get(id)?.to).filter((to) => to !== undefined);
   return [p.start, ...corners, p.end];
 }
@@ -41,12 +44,12 @@ function piecePath(p: PieceDraft, legs: ReadonlyMap<string, Leg>): Vec3[] {
 function pathCentre(path: readonly Vec3[]): Vec3 {
   let length = 0;
   let moment: Vec3 = [0, 0, 0];
-  path.slice(1).forEach((to, i) => {
-    const from = path[i] ?? to;
+  for (let i = 1; i < path.length; i++) {
+    const [from, to] = [path[i - 1]!, path[i]!];
     const step = vecDistance(from, to);
     length += step;
     moment = vecAddScaled(moment, vecLerp(from, to, 0.5), step);
-  });
+  }
   return length > 0 ? vecScale(moment, 1 / length) : (path[0] ?? [0, 0, 0]);
 }
 
@@ -60,10 +63,13 @@ function componentCentre(c: Component): Vec3 {
   return vecLerp(c.centre, middle, centreShare(c));
 }
 
+const BETWEEN_PORTS: ReadonlySet<ComponentKind> = new Set(["reducer-concentric", "reducer-eccentric", "tee", "reducing-tee", "cross", "return"]);
+const ELBOWS: ReadonlySet<ComponentKind> = new Set(["elbow", "trimmed-elbow", "socket-elbow"]);
+
 /** How far from the working point to the middle of the ports the weight lies. */
 function centreShare(c: Component): number {
-  if (/^(reducer|tee|reducing-tee|cross|return)/.test(c.kind)) return 1;
-  if (!/elbow$/.test(c.kind) || c.angleRad === null || c.angleRad < STRAIGHT_RAD) return 0.5;
+  if (BETWEEN_PORTS.has(c.kind)) return 1;
+  if (!ELBOWS.has(c.kind) || c.angleRad === null || c.angleRad < STRAIGHT_RAD) return 0.5;
   const half = c.angleRad / 2;
   const [corner, chord, arc] = [1 / Math.cos(half), Math.cos(half), Math.sin(half) / half];
   return (corner - arc) / (corner - chord);
@@ -73,13 +79,16 @@ function spoolBox(components: readonly Component[], pieces: readonly PieceDraft[
   const low: [number, number, number] = [Infinity, Infinity, Infinity];
   const high: [number, number, number] = [-Infinity, -Infinity, -Infinity];
   const disc = (centre: Vec3, axis: Vec3, radius: number) => {
-    for (const i of [0, 1, 2] as const) {
+    for (let i = 0 as 0 | 1 | 2; i < 3; i++) {
       const half = radius * Math.sqrt(Math.max(1 - axis[i] * axis[i], 0));
       low[i] = Math.min(low[i], centre[i] - half);
       high[i] = Math.max(high[i], centre[i] + half);
     }
   };
-  for (const p of pieces) for (const end of [p.start, p.end]) disc(end, p.direction, p.odMm / 2);
+  for (const p of pieces) {
+    disc(p.start, p.direction, p.odMm / 2);
+    disc(p.end, p.direction, p.odMm / 2);
+  }
   for (const c of components) {
     for (const port of c.ports) disc(port.position, port.direction, (pipeOdMm(port.nps, units) ?? 0) / 2);
     const axis = c.ports[0]?.direction;

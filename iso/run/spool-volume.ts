@@ -24,9 +24,15 @@ export interface SpoolVolume {
 
 /** Water that fills it, the weight with it (known weights only), and the bare outside surface. */
 export function spoolVolume(components: readonly Component[], pieces: readonly PieceDraft[], weightKg: number, units: UnitSystem): SpoolVolume {
-  const shapes = [...pieces.map(pieceShape), ...components.flatMap((c) => componentShape(c, units) ?? [])];
-  const volumeL = shapes.reduce((sum, s) => sum + s.insideMm3, 0) / MM3_PER_LITRE;
-  return { volumeL, filledKg: weightKg + volumeL * WATER_KG_PER_L, paintM2: shapes.reduce((sum, s) => sum + s.outsideMm2, 0) / MM2_PER_M2 };
+  let [insideMm3, outsideMm2] = [0, 0];
+  const count = (shape: Shape | null): void => {
+    insideMm3 += shape?.insideMm3 ?? 0;
+    outsideMm2 += shape?.outsideMm2 ?? 0;
+  };
+  for (const piece of pieces) count(pieceShape(piece));
+  for (const c of components) count(componentShape(c, units));
+  const volumeL = insideMm3 / MM3_PER_LITRE;
+  return { volumeL, filledKg: weightKg + volumeL * WATER_KG_PER_L, paintM2: outsideMm2 / MM2_PER_M2 };
 }
 
 /** Kinds of parts whose inside and outside are not counted, as they come; parts without either (gaskets, supports) not named. */

@@ -22,8 +22,8 @@ export type Weight = Pick<Component, "weightKg" | "weightSource">;
 export type ShopWeight = (key: string) => number | null;
 
 /** Weight of a component, where one can be told; the shop's word on it, then what the fitting itself said, come first. */
-export function componentWeight(c: Component, units: UnitSystem, shop: ShopWeight = () => null): Weight {
-  const own = shop(partWeightKey(c));
+export function componentWeight(c: Component, units: UnitSystem, shop: ShopWeight | null = null): Weight {
+  const own = shop && shop(partWeightKey(c));
   if (own !== null) return { weightKg: own, weightSource: "weighed by the shop" };
   if (c.weightKg !== null || c.weightSource !== "") return { weightKg: c.weightKg, weightSource: c.weightSource };
   const table = c.kind === "elbow" && c.radiusMm !== null && /^Elbow 90 LR/.test(c.description) && c.schedule ? elbowWeightKg("lr-90", c.nps, c.schedule) : null;
