@@ -3,6 +3,7 @@ import { zodResolver } from "@hookform/resolvers/zod";
 import { useState } from "react";
 import { useForm } from "react-hook-form";
 import type { LineSettings } from "@/iso";
+import { FitFields, LIMIT_FIELDS, SHOP_FIELDS } from "@/components/fit/fit-fields";
 import { Button } from "@/components/ui/button";
 import { failureText } from "@/components/ui/fetcher";
 import { Check, Select, TextField } from "@/components/ui/field";
@@ -59,6 +60,10 @@ export function LineSettingsForm({
         <AllowanceFields {...part} />
         <LimitFields {...part} />
         <MarkFields {...part} />
+        <Group title="How sure a closing fits" hint="What the shop holds to, and what a field joint may be off by and still be made: the chance of a fit is worked from these. Usual values; each says where it comes from.">
+          <FitFields fields={SHOP_FIELDS} {...part} />
+          <FitFields fields={LIMIT_FIELDS} {...part} />
+        </Group>
         <EnteredFields {...part} />
       </fieldset>
       {editable ? (

@@ -12,6 +12,7 @@ import {
   type LineSettings,
   type UnitSystem,
 } from "@/iso";
+import { fitSettingOf, fitSettingsToText, fitTextShape } from "@/components/fit/fit-text";
 import { markRules, markRulesToText, markTextShape } from "./mark-rules-text";
 
 const name = (what: string, max: number) =>
@@ -42,6 +43,7 @@ const shape = z.object({
   threadMakeUp: z.string(),
   forgedClass: z.enum(["", "2000", "3000", "6000"]),
   ...markTextShape,
+  ...fitTextShape,
   insulation: free,
   pwht: free,
   nde: free,
@@ -95,6 +97,7 @@ export const settingsTextSchema = shape.transform((values, context): LineSetting
     ...optionalLength("loopToleranceMm", values.loopTolerance, values.units, "loopTolerance", context),
     ...(values.forgedClass === "" ? {} : { forgedClass: Number(values.forgedClass) as LineSettings["forgedClass"] }),
     ...markRules(values, context),
+    ...fitSettingOf(values, values.units, context),
     asEntered: {
       insulation: values.insulation,
       pwht: values.pwht,
@@ -171,6 +174,7 @@ export function settingsToText(settings: LineSettings): SettingsText {
     threadMakeUp: optional(settings.allowances.threadMakeUpMm),
     forgedClass: settings.forgedClass === undefined ? "" : (String(settings.forgedClass) as SettingsText["forgedClass"]),
     ...markRulesToText(settings.marks),
+    ...fitSettingsToText(settings.fit, settings.units),
     ...settings.asEntered,
   };
 }

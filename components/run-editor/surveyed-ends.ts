@@ -9,7 +9,7 @@ import { directionText, type EndForm, type SurveyedEnd } from "./closing-form";
 
 /** A surveyed end with what it shares with the other ends of its survey. */
 export interface SurveyedEndResult extends SurveyEndResult {
-  readonly across: SurveyedEnd["across"];
+  readonly across?: SurveyedEnd["across"];
 }
 
 const NONE: readonly SurveyedEndResult[] = [];
@@ -46,7 +46,7 @@ export function endFromSurvey(ends: readonly SurveyedEndResult[], choice: string
   const end = ends.find((each) => choice === `${PREFIX}${each.id}`);
   if (!end) return null;
   const [e, n, u] = end.position.map((mm) => lengthEntryText(mm, units));
-  return { pointId: "", e: e ?? "", n: n ?? "", u: u ?? "", direction: directionText(end.axis), surveyed: { endId: end.id, withinMm: end.positionWithinMm, covariance: end.covariance, across: end.across } };
+  return { pointId: "", e: e ?? "", n: n ?? "", u: u ?? "", direction: directionText(end.axis), surveyed: { endId: end.id, withinMm: end.positionWithinMm, covariance: end.covariance, across: end.across ?? {} } };
 }
 
 /** The two ends an address asks to close between (`?close=id,id`), as choices; null when it asks for none. */

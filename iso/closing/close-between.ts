@@ -90,6 +90,8 @@ const DEFAULT_TOLERANCE_MM = INCH_MM / 16;
 /** How far the single gap of an elbow welded straight to an elbow may be from the root gap: a fitter grinds that away (common practice). */
 const ELBOW_TO_ELBOW_WITHIN_MM = INCH_MM / 64;
 /** A bend slighter than this is hardly to be cut; the mismatch is taken at the weld instead. */
+/** A bend that the ends' errors turn by more than this is a guess. */
+const SHAKY_BEND_RAD = Math.PI / 180;
 const SLIGHT_BEND_RAD = (0.5 * Math.PI) / 180;
 const DEG = 180 / Math.PI;
 

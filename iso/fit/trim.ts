@@ -21,11 +21,11 @@ export function fitTrims(input: FitInput, steps: readonly ChainStep[]): FitTrim[
 /** Roles of the field joints: both ends and, where there is one, the joint with the trim. */
 export function jointRoles(joints: readonly PlacedJoint[], fitUp: FitInput["fitUp"], trimmed: string | null): { readonly placed: PlacedJoint; readonly role: JointRole }[] {
   const last = joints.length - 1;
-  return joints.flatMap((placed, at) => {
-    if (placed.joint.id === trimmed) return [{ placed, role: "trimmed" as const }];
+  return joints.flatMap((placed, at): { placed: PlacedJoint; role: JointRole }[] => {
+    if (placed.joint.id === trimmed) return [{ placed, role: "trimmed" }];
     if (at !== 0 && at !== last) return [];
     const set = fitUp === "set-true" && (at === 0 || trimmed !== null);
-    return [{ placed, role: set ? ("set" as const) : ("fitted" as const) }];
+    return [{ placed, role: set ? "set" : "fitted" }];
   });
 }
 
