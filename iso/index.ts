@@ -36,6 +36,7 @@ export { quickWays, standardWays } from "./ways/find-ways";
 export { threeElbowWays, WALK_STEPS, type ThreeElbowResult } from "./ways/three-elbow";
 export { threeElbowRefusal } from "./ways/refusals";
 export { sortWays, uniqueWays } from "./ways/order";
+export * from "./ways/way-stops";
 
 // survey
 export * from "./survey/survey-document";

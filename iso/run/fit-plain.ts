@@ -37,7 +37,9 @@ export function fitEnd(p: PlacedPoint, item: Extract<Item, { kind: "end" | "none
   if (silent && place === null) {
     ctx.report("open-end", "warning", `${sentenceStart(p.label)} is an open end: say where it goes (field weld, continued, existing), or close it with a flange or a cap.`, { pointId: p.point.id, runId: p.runId });
   }
-  const side = endSide(place === null ? null : { key: `${p.uid}:end`, kind: "butt", place, mismatchRad: 0 }, place === null ? 0 : sideTrim(p, place, ctx));
+  const gapMm = item.kind === "end" && item.gapped === true && place !== null ? ctx.settings.allowances.rootGapMm : 0;
+  const plain = endSide(place === null ? null : { key: `${p.uid}:end`, kind: "butt", place, mismatchRad: 0 }, place === null ? 0 : sideTrim(p, place, ctx));
+  const side: Side = gapMm > 0 ? { ...plain, gap: { kind: "root-gap", mm: gapMm, label: "root gap to what stands there" } } : plain;
   const riders = item.kind === "support" ? [supportRider(p)] : [];
   return fittingOf({ in: side, out: side, riders, components: item.kind === "support" ? [supportPart(p, item.text)] : [] });
 }

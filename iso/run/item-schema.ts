@@ -27,6 +27,8 @@ export const itemSchema = z.discriminatedUnion("kind", [
     kind: z.literal("end"),
     goes: z.enum(["open", "field-weld", "continued", "existing", "vent", "drain"]),
     text: shortText.default(""),
+    /** The point is the end of what stands outside: the pipe is cut one root gap short of it. Absent = the pipe ends at the point. */
+    gapped: z.literal(true).optional(),
   }),
   z.object({
     kind: z.literal("elbow"),
