@@ -3,7 +3,8 @@
  * plain sentence that says what to type instead. How the dashes read is common practice on the shop floor: a dash before
  * a fraction joins it to whole inches, any other dash parts feet from inches.
  */
-import { MAX_LENGTH_MM, type UnitSystem } from "../run/document";
+import type { UnitSystem } from "../run/document";
+import { MAX_LENGTH_MM } from "../run/scalar-schemas";
 import { HALF_STEP_SLACK } from "../geometry/tolerances";
 import { formatDecimal, formatFeetInches, formatLength } from "./format";
 
