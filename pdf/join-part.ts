@@ -43,6 +43,11 @@ export async function makePart(sheets: readonly PartSheet[], word: string): Prom
   return { bytes, pages: part.getPageCount() };
 }
 
+/** How many pages a stored sheet has. @throws when the bytes are no PDF. */
+export async function storedPages(bytes: Uint8Array): Promise<number> {
+  return (await PDFDocument.load(bytes, { updateMetadata: false, parseSpeed: ParseSpeeds.Fastest })).getPageCount();
+}
+
 class PartBuilder {
   readonly #part: PDFDocument;
   readonly #pool: ObjectPool;

@@ -1,6 +1,7 @@
 "use client";
 import { useState } from "react";
 import { NestList } from "@/components/nest/nest-list";
+import { PackageList } from "@/components/package/package-list";
 import { JobWithdrawals } from "@/components/spool/copies-out";
 import { ChoiceRow } from "@/components/ui/choice-row";
 import { useApi } from "@/components/ui/fetcher";
@@ -20,7 +21,7 @@ export function JobPage({ jobId }: { readonly jobId: string }) {
   const job = useApi<JobDetail>(`/api/jobs/${jobId}`);
   const viewer = useViewer();
   const role = viewer.data?.role ?? "fitter";
-  const [view, setView] = useState<"lines" | "plans" | "settings">("lines");
+  const [view, setView] = useState<"lines" | "packages" | "plans" | "settings">("lines");
   return (
     <Loaded api={job} page label="Loading the job" lines={8}>
       {(data) => (
@@ -35,6 +36,7 @@ export function JobPage({ jobId }: { readonly jobId: string }) {
                 onChange={setView}
                 choices={[
                   { value: "lines", label: `Lines (${data.lines.length})` },
+                  { value: "packages", label: "Packages" },
                   { value: "plans", label: "Cutting plans" },
                   ...(canDo(role, "lines.read") ? [{ value: "settings" as const, label: "Job settings" }] : []),
                 ]}
@@ -43,6 +45,8 @@ export function JobPage({ jobId }: { readonly jobId: string }) {
           ) : null}
           {view === "lines" ? (
             <LineList job={data} role={role} />
+          ) : view === "packages" ? (
+            <PackageList job={data} />
           ) : view === "plans" ? (
             <NestList job={data} role={role} />
           ) : (

@@ -26,9 +26,9 @@ export function homeOf(role: Role): string {
   return role === "fitter" ? "/bench" : "/jobs";
 }
 
-/** The place a path belongs to: lines, spools, reviews and cutting plans are parts of a job. */
+/** The place a path belongs to: lines, spools, reviews, cutting plans and packages are parts of a job. */
 export function placeOfPath(path: string): string {
-  if (/^\/(lines|spools|review|nests)(\/|$)/.test(path)) return "/jobs";
+  if (/^\/(lines|spools|review|nests|packages)(\/|$)/.test(path)) return "/jobs";
   return `/${path.split("/")[1] ?? ""}`;
 }
 

@@ -1,7 +1,7 @@
 /** The pages in front of a package: its cover or transmittal, and the index of what is in it. */
 import { measureText } from "@/fonts/widths";
 import { composeCoverPages, composeIndexPages, SHEET_PART_WORDS, type IndexEntry, type SheetPage } from "@/iso";
-import { PACKAGE_EXTRAS, standingWords, type PackageSource, type PackedSheet } from "@/lib/rules/packages";
+import { PACKAGE_EXTRAS, standingWords, type PackageExtra, type PackageSource, type PackedSheet } from "@/lib/rules/packages";
 
 /** Pages of each sheet: those of the spool sheet first, then of the extras in their order. */
 export type PageCounts = readonly (readonly number[])[];
@@ -28,7 +28,7 @@ function composed(source: PackageSource, entries: readonly IndexEntry[], front: 
 
 function entriesOf({ sheets, extras }: PackageSource, counts: PageCounts, front: number): IndexEntry[] {
   let firstPage = front + 1;
-  const extra = extras.length === 0 ? "" : `, with ${PACKAGE_EXTRAS.filter((part) => extras.includes(part)).map((part) => SHEET_PART_WORDS[part].toLowerCase()).join(", ")}`;
+  const extra = extras.length === 0 ? "" : `, with ${PACKAGE_EXTRAS.filter((part) => extras.includes(part)).map(partWord).join(", ")}`;
   return sheets.map(({ sheetNumber, code, state, hold, line, letter }, ordinal) => {
     const pages = (counts[ordinal] ?? []).reduce((sum, one) => sum + one, 0);
     const entry = { sheetNumber, code, state, hold, title: `Line ${line} spool ${letter}${extra}`, pages, firstPage: pages === 0 ? 0 : firstPage };
@@ -45,6 +45,11 @@ function factsOf({ transmittal, title, jobNumber, jobTitle, client, printedAt, p
   const { number, date, purpose, recipient, replyBy, remark } = transmittal;
   const asked = [fact("NUMBER", number), fact("DATE", date), fact("TO", recipient), fact("PURPOSE", purpose), fact("REPLY BY", replyBy || "no reply asked for")];
   return [...asked, ...made, ...(remark === "" ? [] : [fact("REMARK", remark)])];
+}
+
+/** "templates": a part's first words, for the middle of a sentence. */
+function partWord(part: PackageExtra): string {
+  return SHEET_PART_WORDS[part].replace(/,.*/, "").toLowerCase();
 }
 
 /** "12 FOR FABRICATION, 1 FOR FABRICATION, HOLD". */
@@ -64,11 +69,11 @@ function notesOf({ form, copies, sheets, extras }: PackageSource): string[] {
   return [
     originals
       ? "The sheets are the stored files, unaltered. A signature in one covers that file's bytes: check it in the file itself. SHA256SUMS names the hash of each."
-      : "Every page is an uncontrolled copy of a stored sheet, marked with who printed it when. The lines and text are those of the stored sheet; nothing was drawn anew.",
+      : "Each spool sheet here is an uncontrolled copy of a stored sheet, marked with who printed it when. Its lines and text are the stored ones; nothing was drawn anew.",
     ...(signed && !originals
-      ? ["Signatures: the shop's signature covers the bytes of each sheet's own file and cannot hold for a copy, so that none is shown here. Each page names the SHA-256 of its signed original; the sheet's status page, by the QR code, says where it stands and recognises the original."]
+      ? ["Signatures: the shop's signature covers the bytes of each sheet's own file and cannot hold for a copy, so that none is shown here. Each page names the SHA-256 of its signed original; the sheet's status page, by the QR code, says where it stands and recognizes the original."]
       : []),
-    ...(extras.length > 0 ? [`Made for this print from each sheet's own frozen input: ${extras.map((part) => SHEET_PART_WORDS[part].toLowerCase()).join(", ")}. They are not part of the signed file.`] : []),
+    ...(extras.length > 0 ? [`Made for this print from each sheet's own frozen input: ${extras.map(partWord).join(", ")}. They are not part of the signed file.`] : []),
     "States are those at the time of printing. A sheet may be superseded, held or void since: compare its revision with its status page before work.",
   ];
 }

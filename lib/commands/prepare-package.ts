@@ -4,11 +4,11 @@
  */
 import { strToU8, zipSync, type Zippable } from "fflate";
 import { measureText } from "@/fonts/widths";
-import { composeSheet, SHEET_PART_WORDS, sheetSetPages, type SheetInput, type SheetSetExtras } from "@/iso";
+import { SHEET_PART_WORDS, sheetSetPages, type SheetInput, type SheetSetExtras } from "@/iso";
 import { copyWord } from "@/lib/rules/copy-words";
 import { plainName } from "@/lib/rules/exchange/file-names";
 import { PACKAGE_EXTRAS, type PackageSource, type PackedSheet } from "@/lib/rules/packages";
-import { makePart, type PartSheet } from "@/pdf/join-part";
+import { makePart, storedPages, type PartSheet } from "@/pdf/join-part";
 import { countPages, joinParts } from "@/pdf/join-parts";
 import type { Bookmark } from "@/pdf/join-outline";
 import { markCopy, type CopyMark } from "@/pdf/mark-copy";
@@ -75,7 +75,7 @@ async function pdfPart({ packageId, source, sheets }: PartTask): Promise<Package
 async function setPages({ extras, paper }: PackageSource, { stored, set }: SheetWork, packed: PackedSheet): Promise<{ bytes: Uint8Array; places: number[] } | null> {
   if (set === null || extras.length === 0) return null;
   const frozen = JSON.parse(set.input) as SheetInput;
-  const storedSheetPages = composeSheet(frozen, measureText).length;
+  const storedSheetPages = await storedPages(stored);
   const input = paper === null ? frozen : { ...frozen, size: paper };
   const { pages, bookmarks } = sheetSetPages(input, ["sheet", ...extras], { ...set.extras, storedSheetPages }, measureText);
   if (pages.length === 0) return null;

@@ -53,7 +53,9 @@ function statesFor(viewer: Pick<SessionViewer, "role">): string[] {
 export async function chosenSheets(viewer: Pick<SessionViewer, "shopId" | "role">, jobId: string, revisionIds: readonly string[], tx: Transaction): Promise<PackedSheet[]> {
   const rows = await sheetRows(viewer.shopId, jobId, "r.id = ANY($revisionIds::uuid[])", { revisionIds: [...revisionIds] }, tx);
   const seen = rows.filter((row) => row.kind === "fabrication" || canDo(viewer.role, "revisions.review"));
-  return seen.map(({ lineId, sheetNumber, ...row }) => ({ ...row, sheetNumber: sheetNumberText(sheetNumber) }));
+  return seen.map(({ revisionId, sheetId, spoolId, kind, sheetNumber, code, state, hold, line, letter, sha256, objectKey, signed }) => ({
+    revisionId, sheetId, spoolId, kind, code, state, hold, line, letter, sha256, objectKey, signed, sheetNumber: sheetNumberText(sheetNumber),
+  }));
 }
 
 async function sheetRows(shopId: string, jobId: string, where: string, bind: Readonly<Record<string, unknown>>, transaction: Transaction | null = null): Promise<Row[]> {
