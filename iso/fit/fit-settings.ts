@@ -1,6 +1,5 @@
 /** What a shop holds to and what a joint may be off by: optional settings of shop, job and line, with usual values. */
 import { z } from "zod";
-import { INCH_MM } from "../units/length";
 
 const mm = z.number().finite().min(0).max(100);
 const degrees = z.number().finite().min(0).max(20);
@@ -41,8 +40,10 @@ export type FitLimits = z.infer<typeof fitLimitsSchema>;
 export const fitSettingsSchema = z.object({ shop: shopTolerancesSchema, limits: fitLimitsSchema });
 export type FitSettings = z.infer<typeof fitSettingsSchema>;
 
-const SIXTEENTH = INCH_MM / 16;
-const THIRTY_SECOND = INCH_MM / 32;
+/** Millimetres. The schema of settings stands before every other file of the core, so it takes nothing from them. */
+const INCH = 25.4;
+const SIXTEENTH = INCH / 16;
+const THIRTY_SECOND = INCH / 32;
 
 /**
  * Usual values, all for the shop to change. Squareness in the manner of PFI ES-3 (1/32 in across any diameter) and flanges
