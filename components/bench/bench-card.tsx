@@ -8,7 +8,7 @@ import { Loaded } from "@/components/ui/loaded";
 import { Notice } from "@/components/ui/notice";
 import { Progress } from "@/components/ui/progress";
 import { StateWord } from "@/components/ui/state-word";
-import { BenchLinks } from "@/components/spool/bench-links";
+import { SheetSetPrint } from "@/components/spool/sheet-set-print";
 import { WorkSection } from "@/components/spool/work-section";
 import type { BenchRow, Role, SpoolDetail } from "@/lib/rules/api-types";
 
@@ -48,7 +48,7 @@ export function BenchCard({ row, role }: { readonly row: BenchRow; readonly role
         >
           Open the sheet
         </a>
-        <BenchLinks spoolId={row.spoolId} issued size={null} big />
+        <SheetSetPrint spoolId={row.spoolId} issued size={null} big />
         <Button
           big
           aria-expanded={recording}

@@ -16,10 +16,10 @@ import { TitleStrip } from "@/components/ui/title-strip";
 import { usePageTitle } from "@/components/ui/use-page-title";
 import type { RevisionSummary, Role, SpoolDetail } from "@/lib/rules/api-types";
 import { canDo } from "@/lib/rules/permissions";
-import { BenchLinks } from "./bench-links";
 import { CopiesOut } from "./copies-out";
 import { RevisionHistory } from "./revision-history";
 import { SheetBox } from "./sheet-box";
+import { SheetSetPrint } from "./sheet-set-print";
 import { SubmitDialog } from "./submit-dialog";
 import { WorkSection } from "./work-section";
 
@@ -83,7 +83,7 @@ function Spool({ spool, role }: { readonly spool: SpoolDetail; readonly role: Ro
             size={size}
             onSize={setSize}
           />
-          {input ? <BenchLinks spoolId={spool.id} issued={issued} size={issued ? null : size} /> : null}
+          {input ? <SheetSetPrint spoolId={spool.id} issued={issued} size={issued ? null : size} /> : null}
           {input ? <SpoolFilesButton spoolId={spool.id} input={input} issued={issued} /> : null}
         </div>
       </div>
