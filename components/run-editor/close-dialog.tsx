@@ -9,6 +9,7 @@ import { Notice } from "@/components/ui/notice";
 import { lengthEntryText, NPS_OPTIONS } from "@/components/jobs/settings-text";
 import { ClosingAnswer } from "./closing-answer";
 import { EMPTY_END, endFromPoint, radiusHint, readClosingForm, sizeAfter, type ClosingForm, type EndForm, type FieldMessages } from "./closing-form";
+import { ClosingWays } from "./closing-ways";
 import { planInsert, type InsertStamp } from "./closing-insert";
 import { pointPlace } from "./document-edits";
 import { itemEcho } from "./item-text";
@@ -72,7 +73,7 @@ function ClosingView(props: CloseDialogProps) {
     setForm((now) => ({ ...now, [name]: end, nps: sizeTaken(model, now[name], end) ?? now.nps }));
   return (
     <>
-      <p className="mb-4 text-soft">Two fixed pipe ends, one elbow cut at each, one straight pipe between. With these radii there is at most one such closing.</p>
+      <p className="mb-4 text-soft">Two fixed pipe ends, one elbow cut at each, one straight pipe between. With these radii there is at most one such closing. Every other sensible way stands below it.</p>
       <div className="grid gap-6 lg:grid-cols-2">
         <EndFields title="End 0" name="end0" side={0} end={form.end0} form={form} messages={messages} onChange={setEnd("end0")} surveyed={surveyed} {...props} />
         <EndFields title="End 1" name="end1" side={1} end={form.end1} form={form} messages={messages} onChange={setEnd("end1")} surveyed={surveyed} {...props} />
@@ -97,6 +98,7 @@ function ClosingView(props: CloseDialogProps) {
       ) : (
         <Notice className="mt-4">Your role reads lines; a detailer inserts.</Notice>
       )}
+      {read.ok ? <ClosingWays form={settled} input={read.input} model={model} takeOuts={takeOuts} stamp={stamp} onInsert={props.onInsert} /> : null}
     </>
   );
 }
