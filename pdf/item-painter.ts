@@ -64,7 +64,8 @@ export class ItemPainter {
     if (widthMm !== this.#widthMm) this.#document.lineWidth(widthMm);
     const wanted = dash?.join(" ") ?? "";
     if (wanted !== this.#dash) {
-      if (dash && dash.length > 0) this.#document.dash(dash[0]!, { space: dash[1] ?? dash[0]! });
+      // All of it: a chain line's short dash is what tells it from a dashed one. pdfkit takes a list, its types one number.
+      if (dash && dash.length > 0) this.#document.dash([...dash] as unknown as number, {});
       else this.#document.undash();
     }
     this.#stroke = ink;
