@@ -65,7 +65,11 @@ function Picture({ result, wanted, view }: { readonly result: AsFittedResult; re
   );
 }
 
-const signed = (mm: number | null, units: UnitSystem): string => (mm === null ? "" : `${mm > 0 ? "+" : "-"}${formatFraction(Math.abs(mm), units)}`);
+function signed(mm: number | null, units: UnitSystem): string {
+  if (mm === null) return "";
+  const size = formatFraction(Math.abs(mm), units);
+  return /^0 /.test(size) ? size : `${mm > 0 ? "+" : "-"}${size}`;
+}
 
 function FaceTable({ result, units }: { readonly result: AsFittedResult; readonly units: UnitSystem }) {
   const rows = [...result.faces, ...result.corners.filter((corner) => corner.at)];
@@ -91,7 +95,7 @@ function FaceRow({ row, units }: { readonly row: FaceResult; readonly units: Uni
   return (
     <tr role="row">
       <td role="cell" data-label="At">
-        <span><strong>{isCorner ? row.mark : `End ${row.mark}`}</strong><span className="block text-sm text-soft">{row.name}</span></span>
+        <span><strong>{isCorner ? row.mark : `End ${row.mark}`}</strong><span className="block text-sm text-soft">{isCorner ? row.name.toLowerCase() : row.name}</span></span>
       </td>
       {cells.map(([label, text]) => <td key={label} role="cell" data-label={label} className="figure">{text || "-"}</td>)}
       <td role="cell" data-label="Verdict"><span><VerdictWord verdict={row.verdict} />{row.words.length > 0 ? <span className="block text-sm">{row.words.join("; ")}</span> : null}</span></td>
