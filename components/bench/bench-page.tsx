@@ -1,6 +1,7 @@
 "use client";
 import { useState } from "react";
 import { useViewer } from "@/components/shell/use-viewer";
+import { OwnWithdrawals } from "@/components/spool/own-withdrawals";
 import { useList } from "@/components/jobs/use-list";
 import { ChoiceRow } from "@/components/ui/choice-row";
 import { EmptyState } from "@/components/ui/empty-state";
@@ -32,6 +33,7 @@ export function BenchPage() {
   return (
     <>
       <TitleStrip title="Bench" kind="Issued sheets" />
+      <OwnWithdrawals />
       <Loaded api={bench} label="Loading issued sheets" lines={8}>
         {(rows) =>
           rows.length === 0 ? (

@@ -4,6 +4,7 @@ import { useState } from "react";
 import { useViewer } from "@/components/shell/use-viewer";
 import { Button } from "@/components/ui/button";
 import { ChoiceRow } from "@/components/ui/choice-row";
+import { OwnWithdrawals } from "@/components/spool/own-withdrawals";
 import { EmptyState } from "@/components/ui/empty-state";
 import { useApi } from "@/components/ui/fetcher";
 import { countText, dayText } from "@/components/ui/format";
@@ -96,6 +97,7 @@ export function JobList() {
   return (
     <>
       <TitleStrip title="Jobs" actions={mayAdd ? add : null} />
+      <OwnWithdrawals />
       <Loaded api={jobs} label="Loading jobs">
         {(rows) =>
           rows.length === 0 ? (

@@ -17,9 +17,9 @@ export function CopiesOut({ spoolId, role }: { readonly spoolId: string; readonl
   const path = `/api/spools/${spoolId}/copies`;
   const copies = useApi<readonly CopyRow[]>(path);
   return (
-    <Section title="Copies out">
+    <Section title="Copies out" id="copies-out">
       <Loaded api={copies} label="Loading copies">
-        {(rows) => (rows.length === 0 ? <NoCopies /> : <Copies rows={rows} role={role} paths={[path]} />)}
+        {(rows) => (rows.length === 0 ? <NoCopies /> : <Copies rows={rows} role={role} paths={[path, "/api/copies"]} list={`/spools/${spoolId}/withdrawals`} />)}
       </Loaded>
     </Section>
   );
@@ -36,7 +36,7 @@ export function JobWithdrawals({ jobId, role }: { readonly jobId: string; readon
   if (!rows || rows.length === 0) return null;
   return (
     <Section title="Copies to withdraw">
-      <Copies rows={rows} role={role} paths={[path]} named />
+      <Copies rows={rows} role={role} paths={[path, "/api/copies"]} list={`/jobs/${jobId}/withdrawals`} named />
     </Section>
   );
 }
@@ -46,11 +46,13 @@ interface CopiesProps {
   readonly role: Role;
   /** What to read again after a change. */
   readonly paths: readonly string[];
+  /** Page with those to withdraw, to be printed. */
+  readonly list: string;
   /** Whether each row says which spool it is of. */
   readonly named?: boolean;
 }
 
-function Copies({ rows, role, paths, named = false }: CopiesProps) {
+function Copies({ rows, role, paths, list, named = false }: CopiesProps) {
   const { busy, withdraw } = useWithdraw(paths);
   const mayMark = (row: CopyRow) => row.withdrawn === null && (role !== "fitter" || row.mine);
   const due = rows.filter((row) => row.withdraw);
@@ -73,7 +75,10 @@ function Copies({ rows, role, paths, named = false }: CopiesProps) {
       {due.length > 0 ? (
         <Notice tone="caution" word="Withdraw" className="mb-4">
           {countText(due.length, "copy", "copies")} of a sheet that is not to be worked from {due.length === 1 ? "is" : "are"} still
-          out. Take each off the bench or delete it, then mark it.
+          out. Take each off the bench or delete it, then mark it.{" "}
+          <Link className="inked" href={list}>
+            A list to print, by who holds them
+          </Link>
           {dueMine.length > 1 ? (
             <Button className="mt-3 block" busy={busy} onClick={() => withdraw(dueMine.map((row) => row.id))}>
               Mark all {dueMine.length} withdrawn

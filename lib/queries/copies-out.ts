@@ -41,6 +41,9 @@ JOIN lines l ON l.shop_id = p.shop_id AND l.id = p.line_id
 LEFT JOIN copy_withdrawals w ON w.shop_id = c.shop_id AND w.copy_id = c.id
 WHERE c.shop_id = $shopId`;
 
+/** Not marked, of a revision that is none to work from: what may have to come back. */
+const DUE = "w.id IS NULL AND (r.hold OR r.state IN ('superseded', 'void', 'returned'))";
+
 /** Every copy of a spool's sheets, newest first. Those who see issued sheets only see copies of those. @throws Refusal 404. */
 export async function spoolCopies(viewer: SessionViewer, spoolId: string): Promise<CopyRow[]> {
   await inShop(viewer).one(Spool, spoolId);
@@ -52,7 +55,13 @@ export async function spoolCopies(viewer: SessionViewer, spoolId: string): Promi
 /** Copies of a job's sheets that have to come back, newest first. @throws Refusal 404. */
 export async function jobWithdrawals(viewer: SessionViewer, jobId: string): Promise<CopyRow[]> {
   await inShop(viewer).one(Job, jobId);
-  const rows = await copyRows(viewer, "l.job_id = $id AND w.id IS NULL AND (r.hold OR r.state IN ('superseded', 'void', 'returned'))", jobId);
+  const rows = await copyRows(viewer, `l.job_id = $id AND ${DUE}`, jobId);
+  return rows.filter((row) => row.withdraw);
+}
+
+/** Copies the viewer took of any sheet of the shop that have to come back, newest first. */
+export async function ownWithdrawals(viewer: SessionViewer): Promise<CopyRow[]> {
+  const rows = await copyRows(viewer, `c.by = $id AND ${DUE}`, viewer.personId);
   return rows.filter((row) => row.withdraw);
 }
 

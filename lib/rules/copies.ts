@@ -58,3 +58,10 @@ export function holderNote(copies: readonly { readonly marked: string; readonly 
   const lines = copies.map(({ marked, at }) => `- ${copyWords(marked)}, ${at.slice(0, 16).replace("T", " ")} UTC`);
   return `\n\nCopies out in your name:\n${lines.join("\n")}\nTake them out of use, then mark them as withdrawn on the spool's page.`;
 }
+
+/** Copies by who took them, those with the most first; each person's newest first. */
+export function byHolder(rows: readonly CopyRow[]): { readonly by: string; readonly copies: readonly CopyRow[] }[] {
+  const holders = new Map<string, CopyRow[]>();
+  for (const row of rows) holders.set(row.by, [...(holders.get(row.by) ?? []), row]);
+  return [...holders].map(([by, copies]) => ({ by, copies: [...copies].sort((p, q) => q.at.localeCompare(p.at)) })).sort((p, q) => q.copies.length - p.copies.length || p.by.localeCompare(q.by));
+}

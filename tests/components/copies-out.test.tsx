@@ -3,7 +3,9 @@ import { cleanup, fireEvent, render, screen, waitFor } from "@testing-library/re
 import { SWRConfig } from "swr";
 import { afterEach, beforeEach, describe, expect, it, vi } from "vitest";
 import { CopiesOut, JobWithdrawals } from "@/components/spool/copies-out";
-import { holderNote, mustWithdraw, ORIGINAL, UNCONTROLLED, type CopyRow } from "@/lib/rules/copies";
+import { OwnWithdrawals } from "@/components/spool/own-withdrawals";
+import { WithdrawalList } from "@/components/spool/withdrawal-list";
+import { byHolder, holderNote, mustWithdraw, ORIGINAL, UNCONTROLLED, type CopyRow } from "@/lib/rules/copies";
 import type { Role } from "@/lib/rules/api-types";
 import "./browser";
 
@@ -28,6 +30,38 @@ afterEach(() => {
 });
 
 const show = (role: Role) => render(<SWRConfig value={{ provider: () => new Map() }}><CopiesOut spoolId="s" role={role} /></SWRConfig>);
+
+const alone = (element: React.ReactElement) => render(<SWRConfig value={{ provider: () => new Map() }}>{element}</SWRConfig>);
+
+describe("those who hold one", () => {
+  it("read it on their own pages, each sheet once, and nothing when they hold none", async () => {
+    rows = [row("1"), row("2", { marked: ORIGINAL }), row("3", { spoolId: "t", sheetNumber: "0009", hold: true, state: "for-fabrication" })];
+    const { container } = alone(<OwnWithdrawals />);
+    expect(await screen.findByText(/You hold 3 copies of sheets that are not to be worked from/)).toBeTruthy();
+    expect(screen.getAllByRole("link").map((link) => [link.textContent, link.getAttribute("href")])).toEqual([["0007 rev A", "/spools/s#copies-out"], ["0009 rev A", "/spools/t#copies-out"]]);
+    expect(container.textContent).toContain("(SUPERSEDED)");
+    expect(container.textContent).toContain("(HOLD)");
+    cleanup();
+    rows = [];
+    const empty = alone(<OwnWithdrawals />);
+    await Promise.resolve();
+    expect(empty.container.textContent).toBe("");
+  });
+});
+
+describe("the list to print", () => {
+  it("goes person by person and leaves out what need not come back", async () => {
+    rows = [row("1"), row("2", { by: "Ola Berg", at: "2026-01-02T10:00:00Z" }), row("3", { by: "Ola Berg", at: "2026-01-05T10:00:00Z" }), row("4", { by: "Kim Ash", withdraw: false })];
+    expect(byHolder(rows.filter((one) => one.withdraw)).map(({ by, copies }) => [by, ...copies.map(({ id }) => id)])).toEqual([["Ola Berg", "3", "2"], ["Pat Ruiz", "1"]]);
+    alone(<WithdrawalList path="/api/jobs/j/copies" of="job" back="/jobs/j" />);
+    expect((await screen.findAllByRole("heading", { level: 2 })).map((heading) => heading.textContent)).toEqual(["Ola Berg, 2 copies", "Pat Ruiz, 1 copy"]);
+    expect(screen.getByText(/3 copies still out/)).toBeTruthy();
+    cleanup();
+    rows = [row("4", { withdraw: false })];
+    alone(<WithdrawalList path="/api/spools/s/copies" of="spool" back="/spools/s" />);
+    expect(await screen.findByText("Nothing to withdraw")).toBeTruthy();
+  });
+});
 
 describe("copies out", () => {
   it("names who holds what and what has to come back, and marks all at once", async () => {

@@ -1,5 +1,6 @@
 /** Who holds which copy of a sheet, who is told when it is dead, and what has to come back until it is marked. */
 import { afterAll, beforeAll, describe, expect, test } from "vitest";
+import * as ownRoute from "@/app/api/copies/route";
 import * as withdrawRoute from "@/app/api/copies/withdraw/route";
 import * as jobCopies from "@/app/api/jobs/[jobId]/copies/route";
 import * as hold from "@/app/api/revisions/[revisionId]/hold/route";
@@ -24,6 +25,7 @@ afterAll(endOfFile);
 const take = (as: TestPerson, query = "?copy=1", revisionId = revision.revisionId) => call(sheetRoute.GET, { as, params: { revisionId }, query });
 const copies = async (as: TestPerson, spoolId = revision.spoolId) => (await call(spoolCopies.GET, { as, params: { spoolId } })).json as CopyRow[];
 const due = async (as: TestPerson) => (await call(jobCopies.GET, { as, params: { jobId: revision.jobId } })).json as CopyRow[];
+const own = async (as: TestPerson) => (await call(ownRoute.GET, { as })).json as CopyRow[];
 const withdraw = (as: TestPerson, copyIds: readonly string[]) => call(withdrawRoute.POST, { as, method: "POST", body: { copyIds } });
 const act = (handler: unknown, revisionId = revision.revisionId) => call(handler, { as: shop.inspector, method: "POST", params: { revisionId }, ...reason });
 
@@ -59,8 +61,13 @@ describe("copies out", () => {
   test("have to come back while their revision is on hold", async () => {
     expect((await act(hold.POST)).status).toBe(200);
     expect((await due(shop.owner)).map((row) => row.by)).toEqual(["Pat detailer", "Pat fitter"]);
+    // A line on the pages of each who holds one, and of nobody else.
+    expect((await own(shop.fitter)).map(({ by, code, hold: held, mine }) => ({ by, code, held, mine }))).toEqual([{ by: "Pat fitter", code: "A", held: true, mine: true }]);
+    expect((await own(shop.detailer)).map((row) => row.marked)).toEqual(["ORIGINAL"]);
+    expect(await own(shop.owner)).toEqual([]);
     expect((await act(release.POST)).status).toBe(200);
     expect(await due(shop.owner)).toEqual([]);
+    expect(await own(shop.fitter)).toEqual([]);
   });
 
   test("are named to those who hold them when the revision dies, fitters or not; the list stays until each is marked", async () => {
@@ -84,6 +91,7 @@ describe("copies out", () => {
     expect((await withdraw(shop.fitter, [another.id])).status).toBe(403);
     expect((await withdraw(shop.fitter, [fittersOwn.id])).status).toBe(200);
     expect((await due(shop.owner)).map((row) => row.by)).toEqual(["Pat inspector", "Pat detailer"]);
+    expect([(await own(shop.fitter)).length, (await own(shop.detailer)).length]).toEqual([0, 1]);
     expect((await withdraw(shop.owner, rows.map((row) => row.id))).status).toBe(200);
     expect(await due(shop.owner)).toEqual([]);
     const marked = (await copies(shop.owner)).find((row) => row.id === fittersOwn.id)!;

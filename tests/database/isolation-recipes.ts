@@ -146,6 +146,10 @@ export const RECIPES: Readonly<Record<string, Recipe>> = {
 
   "GET /spools/[spoolId]": onSpool(),
   "GET /spools/[spoolId]/copies": onSpool(),
+  "GET /copies": own(async (shop) => {
+    await copyOf(shop);
+    return {};
+  }),
   "POST /copies/withdraw": foreign(async (shop) => ({ body: { copyIds: [await copyOf(shop)] } })),
   "GET /spools/[spoolId]/sheet": onSpool({ query: "?size=A4" }),
   "GET /spools/[spoolId]/bench": onSpool({ query: "?kind=layout" }),
