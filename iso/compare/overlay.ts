@@ -9,9 +9,9 @@ import type { Model } from "../run/model-types";
 import { breakPass } from "../draw/break-flags";
 import { dimensionPass } from "../draw/dimensions";
 import { overrun, standingOf, viewOf, type Standing } from "../draw/draw-model";
-import { drawLabels, knockOuts, type Lines } from "../draw/draw-passes";
+import { drawLabels, type Lines } from "../draw/draw-passes";
 import { drawnEdges, drawnJoints } from "../draw/drawn";
-import type { Drawing, DrawOptions, MeasureText } from "../draw/drawing-types";
+import type { DisplayItem, Drawing, DrawOptions, MeasureText } from "../draw/drawing-types";
 import { placeLineText } from "../draw/fixed-text";
 import { fitStretch } from "../draw/fit";
 import { inkMap } from "../draw/ink-map";
@@ -19,9 +19,10 @@ import { LabelField } from "../draw/label-field";
 import { NO_MATCHES } from "../draw/match-marks";
 import { flowPass } from "../draw/north";
 import { offsetPass } from "../draw/offset-box";
+import { pathItem, polygonSegments } from "../draw/paths";
 import { pipeStretches } from "../draw/pipe";
 import { placeAll, type Placed } from "../draw/place";
-import { boxCorners, paperBoxAround } from "../draw/plane";
+import { boxCorners, paperBoxAround, segmentInBox, type Segment, type TurnedBox } from "../draw/plane";
 import { PROJECTIONS } from "../draw/project";
 import { sketchOf, type Sketch, type SheetShare } from "../draw/sketch";
 import { slopePass } from "../draw/slopes";
@@ -54,6 +55,8 @@ const SHOW = { items: false, welds: false, pieces: false, dimensions: true } as 
 const FIRST_MARGIN = 27;
 const LEAST_STEP = 6;
 const TRIES = 6;
+/** White kept round words on thin lines, mm. */
+const WHITE_EDGE = 0.45;
 
 /** Draws the overlay on one sheet whatever it holds; what cannot fit at the least sizes goes beyond the room, which `bounds` tells. */
 export function drawOverlay(before: Model, after: Model, rows: readonly CompareRow[], options: OverlayOptions, shares: readonly [SheetShare | null, SheetShare | null] = [null, null]): OverlayDrawing {
@@ -115,7 +118,7 @@ function overlayLines({ placed, drawn, joints, stretches }: InkSide, ink: Return
   const fixed = [...texts.flatMap((text) => text.box ?? []), ...slopes.boxes];
   return {
     placed, drawn, joints, offsets, dimensions, breaks, heavy, light, heavyMap, field, fixed, matches: NO_MATCHES,
-    items: [...ink.items, ...flow.items, ...breaks.items, ...offsets.items, ...slopes.items, ...dimensions.items, ...texts.flatMap((text) => text.items), ...knockOuts(texts.flatMap((text) => text.box ?? []), light)],
+    items: [...ink.items, ...flow.items, ...breaks.items, ...offsets.items, ...slopes.items, ...dimensions.items, ...texts.flatMap((text) => text.items), ...whiteUnder(texts.flatMap((text) => text.box ?? []), light)],
     homeless: [
       ...texts.filter((text) => text.box === null).map(({ text }) => ({ ref: text.ref, text: text.text, line: text.line })),
       ...dimensions.homeless.map((text) => ({ ref: text.ref, text: text.text, line: { from: text.from, to: text.to } })),
@@ -124,8 +127,14 @@ function overlayLines({ placed, drawn, joints, stretches }: InkSide, ink: Return
   };
 }
 
+/** White under words that thin lines run through. */
+function whiteUnder(boxes: readonly TurnedBox[], light: readonly Segment[]): readonly DisplayItem[] {
+  const crossed = boxes.filter((box) => light.some((line) => segmentInBox(line.from, line.to, box) > 0));
+  return crossed.map((box) => pathItem("halo", null, polygonSegments(boxCorners({ ...box, halfWidth: box.halfWidth + WHITE_EDGE, halfHeight: box.halfHeight + WHITE_EDGE })), { fill: "paper" }));
+}
+
 /** A changed number in the colour of what is new, beside its brackets. */
-function markOldNumber(item: Drawing["items"][number]): Drawing["items"][number] {
+function markOldNumber(item: DisplayItem): DisplayItem {
   return item.type === "text" && item.text.includes("[WAS ") ? { ...item, ink: "dye" } : item;
 }
 
