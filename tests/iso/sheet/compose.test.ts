@@ -1,28 +1,16 @@
 import { describe, expect, it } from "vitest";
-import { buildModel, composePages, composeSheet, emptyMarks, formatInches, formatLength, frameBox, SHEET_SIZES, sheetSizeMm, wordAcross } from "@/iso";
+import { buildModel, composePages, composeSheet, emptyMarks, formatInches, formatLength, SHEET_SIZES, sheetSizeMm, wordAcross } from "@/iso";
 import type { RevisionState, SheetInput, SheetPage } from "@/iso";
 import { measureText } from "@/fonts/widths";
 import { sampleRuns } from "../../fixtures/sample-runs";
 import { stubDocument, stubDraw, stubInput, stubModel } from "./sheet-stubs";
-import { overlappingTexts, textCorners, textsOf } from "./text-boxes";
+import { expectReadable as expectPageReadable, textCorners, textsOf } from "./text-boxes";
 
 const STATES: readonly RevisionState[] = ["draft", "for-review", "returned", "for-fabrication", "superseded", "void", "as-built"];
 const words = (pages: readonly SheetPage[]): string[] => pages.flatMap((page) => textsOf(page).map((item) => item.text));
 const joined = (pages: readonly SheetPage[]): string => words(pages).join(" ");
 
-/** What every page must hold to be readable: lettering, frame, no text on a text. */
-function expectReadable(pages: readonly SheetPage[], what: string): void {
-  for (const page of pages) {
-    const frame = frameBox(page.widthMm, page.heightMm);
-    for (const item of textsOf(page)) {
-      expect(item.capMm, `${what}: ${item.text}`).toBeGreaterThanOrEqual(2.5 - 1e-9);
-      for (const [x, y] of textCorners(item)) {
-        expect(x >= frame.minX && x <= frame.maxX && y >= frame.minY && y <= frame.maxY, `${what}: "${item.text}" leaves the frame at ${x.toFixed(1)}, ${y.toFixed(1)}`).toBe(true);
-      }
-    }
-    expect(overlappingTexts(page), `${what}, ${page.name}`).toEqual([]);
-  }
-}
+const expectReadable = (pages: readonly SheetPage[], what: string): void => pages.forEach((page) => expectPageReadable(page, what));
 
 function sampleInput(name: string, size: SheetInput["size"], state: RevisionState = "for-review"): SheetInput {
   const document = sampleRuns[name]!;
