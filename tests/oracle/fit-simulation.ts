@@ -4,7 +4,7 @@
  * often every joint is within its limits. Setting: least weighted squares of the joints' mismatches, found by iteration on
  * the built piece itself. Shares no code with iso. Millimetres and radians.
  */
-import { seededRandom } from "./random";
+import { inverted, normals } from "./fit-numbers";
 
 /** Position, then along, side and up as columns: twelve numbers. */
 export type Pose = Float64Array;
@@ -276,37 +276,4 @@ function elsewhere(pose: Pose, error: Float64Array, from: number, sense: 1 | -1,
   const sine = Math.sqrt(nx * nx + ny * ny + nz * nz);
   if (sine > 0) for (let k = 3; k < 12; k += 3) turn(into, k, [nx / sine, ny / sine, nz / sine], Math.asin(Math.min(sine, 1)));
   return into;
-}
-
-/** Standard normal numbers (Box and Muller), both of each pair. */
-export function normals(seed: number): () => number {
-  const random = seededRandom(seed);
-  let spare = Number.NaN;
-  return () => {
-    if (!Number.isNaN(spare)) {
-      const kept = spare;
-      spare = Number.NaN;
-      return kept;
-    }
-    const size = Math.sqrt(-2 * Math.log(1 - random()));
-    const angle = 2 * Math.PI * random();
-    spare = size * Math.sin(angle);
-    return size * Math.cos(angle);
-  };
-}
-
-function inverted(matrix: readonly (readonly number[])[]): number[][] {
-  const n = matrix.length;
-  const m = matrix.map((row, i) => [...row, ...Array.from({ length: n }, (_, j) => (i === j ? 1 : 0))]);
-  for (let i = 0; i < n; i++) {
-    const best = m.slice(i).reduce((top, row, k) => (Math.abs(row[i]!) > Math.abs(m[top]![i]!) ? i + k : top), i);
-    [m[i], m[best]] = [m[best]!, m[i]!];
-    const pivot = m[i]![i]!;
-    m[i] = m[i]!.map((v) => v / pivot);
-    for (let k = 0; k < n; k++) if (k !== i) {
-      const factor = m[k]![i]!;
-      m[k] = m[k]!.map((v, j) => v - factor * m[i]![j]!);
-    }
-  }
-  return m.map((row) => row.slice(n));
 }

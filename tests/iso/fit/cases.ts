@@ -1,6 +1,7 @@
 /** Random closings with random errors, once as the core takes them and once as the simulation does. */
 import { closingWalk, turned, unit, type V } from "../../oracle/closing-walk";
-import { normals, type SimJoint, type SimPiece, type Simulation } from "../../oracle/fit-simulation";
+import { normals } from "../../oracle/fit-numbers";
+import type { SimJoint, SimPiece, Simulation } from "../../oracle/fit-simulation";
 import { seededRandom } from "../../oracle/random";
 import { fitOfClosing, solveClosing, usualFitSettings, type ClosingFitInput, type EndError, type FitFace, type FitSettings } from "@/iso";
 
