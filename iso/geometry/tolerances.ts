@@ -116,3 +116,12 @@ export const WAYS_REFINED = 1e-12;
 
 /** Times the length. Two lengths that differ by less are one, so that float noise decides no order. */
 export const WAYS_SAME_LENGTH = 1e-6;
+
+/** Millimetres. A straight this near its shortest pup stands at it: finer than any saw. */
+export const WAYS_AT_BOUND_MM = 1e-3;
+
+/** Radians of a family's parameter. Step to the neighbours a shortest way is compared with. */
+export const WAYS_BESIDE_RAD = 1e-4;
+
+/** Share of an end's error that may stay at a weld before it is said. */
+export const WAYS_STAYS_SHARE = 1e-3;

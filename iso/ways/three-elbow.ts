@@ -7,7 +7,7 @@
  *
  * The grid: WALK_STEPS places round each loop. A search ten times finer, done by another program, is the test.
  */
-import { WAYS_DIRECT_MM } from "../geometry/tolerances";
+import { WAYS_AT_BOUND_MM, WAYS_BESIDE_RAD, WAYS_CLOSES_MM, WAYS_DIRECT_MM } from "../geometry/tolerances";
 import type { Vec3 } from "../geometry/types";
 import { vecAddScaled, vecSub } from "../geometry/vec3";
 import { isLegalDraft, rulesOf, stockChoices, totalOf, unbeaten, type Draft, type DraftTurn } from "./draft";
@@ -140,12 +140,6 @@ function spareOf(problem: WaysProblem, { turns, reducerAt }: Task, directions: r
 /** Farther than this from legal, a member's clearance is not asked. */
 const LENGTH_OF_INTEREST_MM = 2_000;
 
-/** Step along the loop to the neighbours a member is compared with, radians; how much shorter one must be, mm. */
-const BESIDE_RAD = 1e-4;
-const SHORTER_MM = 1e-7;
-/** A length this near its bound is at it, mm. */
-const BOUND_WITHIN_MM = 1e-3;
-
 /**
  * Whether a shortest place along one bound is a shortest place of the whole family: no member beside it is shorter, neither
  * with the pinned pup longer nor along the bound of another straight that stands at its own. Welded faces have no beside.
@@ -154,12 +148,12 @@ function isBest({ lengths }: Draft, t: number, { problem, task, rules, loop, pin
   if (x === 0) return true;
   const way = vecSub(problem.p1, problem.p0);
   const least = totalOf(lengths);
-  const atBound = rules.flatMap((rule, j) => (Math.abs((lengths[j] ?? 0) - rule.baseMm - rule.leastMm) <= BOUND_WITHIN_MM ? [j] : []));
+  const atBound = rules.flatMap((rule, j) => (Math.abs((lengths[j] ?? 0) - rule.baseMm - rule.leastMm) <= WAYS_AT_BOUND_MM ? [j] : []));
   const shorter = (directions: ReturnType<DirectionLoop>, j: number, more: number): boolean => {
     const rule = rules[j];
     const beside = directions && rule ? fourLengths(directions, j, rule.baseMm + rule.leastMm + more, way) : null;
-    if (!beside || totalOf(beside) >= least - SHORTER_MM) return false;
+    if (!beside || totalOf(beside) >= least - WAYS_CLOSES_MM) return false;
     return beside.every((length, k) => length - (rules[k]?.baseMm ?? 0) >= (rules[k]?.leastMm ?? 0) - WAYS_DIRECT_MM / 10) && (placeOf(problem, task, rules, directions, beside, j)?.spare ?? 0) >= 0;
   };
-  return ![loop(t), loop(t - BESIDE_RAD), loop(t + BESIDE_RAD)].some((directions, side) => [...new Set([pinned, ...atBound])].some((j) => (side > 0 && shorter(directions, j, 0)) || shorter(directions, j, BOUND_WITHIN_MM)));
+  return ![loop(t), loop(t - WAYS_BESIDE_RAD), loop(t + WAYS_BESIDE_RAD)].some((directions, side) => [...new Set([pinned, ...atBound])].some((j) => (side > 0 && shorter(directions, j, 0)) || shorter(directions, j, WAYS_AT_BOUND_MM)));
 }

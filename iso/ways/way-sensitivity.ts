@@ -5,7 +5,7 @@
  * cannot reach stays at a weld. Two trimmed elbows have their own rates (iso/closing/sensitivity.ts).
  */
 import type { Vec3 } from "../geometry/types";
-import { WAYS_FLAT } from "../geometry/tolerances";
+import { WAYS_FLAT, WAYS_STAYS_SHARE } from "../geometry/tolerances";
 import { vecAdd, vecAddScaled, vecCross, vecDot, vecLength, vecScale } from "../geometry/vec3";
 import { formatDecimal } from "../units/format";
 import type { Draft } from "./draft";
@@ -13,8 +13,6 @@ import type { WaySensitivity } from "./ways-types";
 import { fineWords } from "./words";
 import type { UnitSystem } from "../run/document";
 
-/** Share of an error that may stay at a weld before it is said. */
-const STAYS_SHARE = 1e-3;
 const DEG = 180 / Math.PI;
 
 /** A turn of the family: how the way's end moves per radian, and the largest turn of a bend or roll per radian. */
@@ -27,10 +25,10 @@ interface FamilyTurn {
 export function waySensitivity(draft: Draft, cuttable: readonly boolean[], perMm: number, units: UnitSystem): WaySensitivity {
   const lengths = draft.directions.filter((_, j) => cuttable[j]);
   const alone = madeUp(lengths);
-  if (alone.stays <= STAYS_SHARE) return told({ bendDeg: 0, lengthMm: alone.most(lengths.length) * perMm, perMm, takenBy: "lengths" }, units);
+  if (alone.stays <= WAYS_STAYS_SHARE) return told({ bendDeg: 0, lengthMm: alone.most(lengths.length) * perMm, perMm, takenBy: "lengths" }, units);
   const family = familyTurn(draft, cuttable);
   const both = family ? madeUp([...lengths, family.column]) : alone;
-  if (family && both.stays <= STAYS_SHARE) {
+  if (family && both.stays <= WAYS_STAYS_SHARE) {
     const turned = both.row(lengths.length) * perMm * family.turns;
     return told({ bendDeg: turned * DEG, lengthMm: both.most(lengths.length) * perMm, perMm, takenBy: "bends" }, units);
   }

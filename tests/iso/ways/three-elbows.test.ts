@@ -8,7 +8,10 @@ import { IN, mm, pick, question, randomEnds, walkedEnds } from "./cases";
 /** How well a laid way meets the end, mm; how much longer than the fine grid's best the search may be. */
 const MEETS_MM = 1e-6;
 const NEVER_WORSE = 1.02;
-const CASES = 16;
+const CASES = 12;
+
+/** Long enough for a crowded machine; the search and the grid take some 12 s of processor. */
+const CLOCK_MS = 240_000;
 
 const ALL = [90, 45].flatMap((a) => [90, 45].flatMap((b) => [90, 45].map((c) => [a, b, c] as const)));
 
@@ -49,7 +52,7 @@ describe("three whole elbows", () => {
     expect(compared).toBeGreaterThan(CASES);
     // Refined between the steps, the search finds what the grid finds, and mostly a little less.
     expect(worst).toBeLessThan(1.0005);
-  });
+  }, CLOCK_MS);
 
   it("loses nothing by holding one straight at a bound: letting it slide on a grid is never shorter", () => {
     const random = seededRandom(55);
