@@ -1,8 +1,8 @@
 /** What is off where: the mismatches with their ±, what each reading and tolerance adds, and where to trim. */
-import { chanceNumber, trimWords, type FitContribution, type FitMismatch, type FitResult, type FitTrim, type FitUp, type UnitSystem, type Vec3 } from "@/iso";
+import { chanceNumber, trimWords, type FitContribution, type FitJudged, type FitMismatch, type FitResult, type FitTrim, type FitUp, type UnitSystem, type Vec3 } from "@/iso";
 import { Table } from "@/components/ui/table";
 import { CONDITION_WORDS, mismatchWords } from "./fit-words";
-import { withinText } from "./length-text";
+import { tapeEntryText, withinText } from "./length-text";
 
 interface MismatchProps {
   readonly result: FitResult;
@@ -17,7 +17,7 @@ export function FitMismatches({ result, fitUp, units, axis, flanged }: MismatchP
   const limit = ({ limitMm }: FitMismatch) => {
     const { end0, end1 } = limitMm;
     if (end0 === null && end1 === null) return "free";
-    const texts = [end0, end1].map((mm) => (mm === null ? "free" : withinText(mm, units)));
+    const texts = [end0, end1].map((mm) => (mm === null ? "free" : tapeEntryText(mm, units)));
     return texts[0] === texts[1] || fitUp === "set-true" ? texts[1]! : `${texts[0]}, ${texts[1]}`;
   };
   const shared = fitUp === "shared";
@@ -41,11 +41,22 @@ export function FitMismatches({ result, fitUp, units, axis, flanged }: MismatchP
       />
       <p className="mt-2 text-sm text-soft">
         ± is two standard deviations: 95 of 100 lie within. {shared ? "The first column has end 0 set true; then both joints take a part of it, each by what it can stand. " : ""}
-        By itself each holds: {result.judged.map(({ joint, condition, probability }) => `${CONDITION_WORDS[condition]} at ${joint} ${chanceNumber(probability)}`).join(", ")} in 100.
+        {weakest(result)}
       </p>
     </>
   );
 }
+
+/** What is most likely to stop it, by itself. */
+function weakest({ judged }: FitResult): string {
+  const [first, second] = judged;
+  if (!first || first.probability > SURE) return "No single one of these is likely to stop it.";
+  const named = ({ joint, condition, probability }: FitJudged) => `${CONDITION_WORDS[condition]} at ${joint} (${chanceNumber(probability)} in 100 by itself)`;
+  return `Most likely to stop it: ${named(first)}${second && second.probability < SURE ? `, then ${named(second)}` : ""}.`;
+}
+
+/** A chance from which a joint is no worry. */
+const SURE = 0.995;
 
 /** Rows shown before the rest is asked for. */
 const FIRST = 6;

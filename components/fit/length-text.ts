@@ -1,12 +1,12 @@
 /** Small lengths as a fit tells and takes them. */
 import { formatDecimal, formatInches, INCH_MM, parseLength, type UnitSystem } from "@/iso";
 
-/** A length for an entry: a fraction of an inch where it says exactly the same, else decimals. */
+/** A length for an entry, its unit beside it so that it means the same whatever the units: a fraction of an inch where that says exactly the same. */
 export function tapeEntryText(mm: number, units: UnitSystem): string {
-  if (units === "metric") return formatDecimal(mm, 3);
-  const tape = formatInches(mm, 64);
+  if (units === "metric") return `${formatDecimal(mm, 3)} mm`;
+  const tape = `${formatInches(mm, 64)} in`;
   const read = parseLength(tape, units);
-  return read.ok && Math.abs(read.mm - mm) < EXACT_MM ? tape : `${formatDecimal(mm / INCH_MM, 5)}`;
+  return read.ok && Math.abs(read.mm - mm) < EXACT_MM ? tape : `${formatDecimal(mm / INCH_MM, 5)} in`;
 }
 
 const EXACT_MM = 0.0005;

@@ -7,7 +7,7 @@ import type { EndError } from "./fit-types";
 import { factorOf, transposed } from "./twist";
 
 /** Errors of an end typed by hand: position ± each way and axis ±, two deviations. */
-export function typedEndError(end: 0 | 1, axis: Vec3, positionMm: number, axisRad: number, name = `End ${end}, as typed`): EndError {
+export function typedEndError(end: 0 | 1, axis: Vec3, positionMm: number, axisRad: number, name = `End ${end} (not surveyed)`): EndError {
   const offset = end * 6;
   const place = (values: readonly number[], from: number) => Array.from({ length: 12 }, (_, i) => values[i - offset - from] ?? 0);
   const up = vecPerpendicular(axis);
