@@ -6,7 +6,7 @@ import type { Piece } from "../run/model-types";
 import { formatFeetInches } from "../units/format";
 import type { Block } from "./blocks";
 import { barItems, BAR_HEIGHT, barLength } from "./cut-bar";
-import { cutText, endText, noteTexts, pipeText, stockText, sumText } from "./cut-words";
+import { cutText, endText, noteTexts, pipeText, stockText, sumTerms } from "./cut-words";
 import { fitCap } from "./identity-block";
 import { boxOutline, lineFrom, pathOf, textAt } from "./items";
 import type { SheetSetExtras, WorkRecord } from "./set-types";
@@ -51,7 +51,7 @@ export function cutCards(piece: Piece, at: CardFacts): Block[] {
   const stock = stockText(piece, extras.stock?.[piece.key], units);
   const capMm = room >= WIDE_BAR ? HEAD_CAP : TEXT_CAP;
   const texts: readonly (readonly [string, "regular" | "bold"])[] = [
-    [sumText(piece, units), "regular"], ...noteTexts(facts, piece).map((text) => [text, "bold"] as const), [stock, "regular"],
+    ...sumLines(sumTerms(piece, units), room, capMm, measure).map((line) => [line, "regular"] as const), ...noteTexts(facts, piece).map((text) => [text, "bold"] as const), [stock, "regular"],
   ];
   const lines = texts.flatMap(([text, face]) => wrapText(text, room, { capMm, face }, measure).map((line) => ({ line, face, capMm })));
   const ends = endLabels(piece, at, room);
@@ -66,6 +66,17 @@ export function cutCards(piece: Piece, at: CardFacts): Block[] {
   };
   const rest = Array.from({ length: Math.ceil((lines.length - first.length) / MOST_LINES) }, (_, i) => moreCard(piece, lines.slice((i + 1) * MOST_LINES, (i + 2) * MOST_LINES)));
   return [head, ...rest];
+}
+
+/** Terms on as few lines as hold them, broken between terms; one wider than a line is left to be wrapped. */
+function sumLines(terms: readonly string[], roomMm: number, capMm: number, measure: MeasureText): string[] {
+  const lines: string[] = [];
+  for (const term of terms) {
+    const longer = lines.length === 0 ? term : `${lines.at(-1)} ${term}`;
+    if (lines.length > 0 && measure(longer, capMm, "regular") <= roomMm) lines.splice(-1, 1, longer);
+    else lines.push(term);
+  }
+  return lines;
 }
 
 type CardLine = { readonly line: string; readonly face: "regular" | "bold"; readonly capMm: number };

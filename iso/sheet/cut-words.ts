@@ -13,8 +13,8 @@ export function cutText(mm: number, units: UnitSystem): string {
   return units === "metric" ? formatLength(mm, units) : formatInches(mm);
 }
 
-/** "37 1/2 face to centre − 3 weld-neck hub − 6 LR 90 − 2 × 1/8 root gap = 28 1/4": the terms as they sum, equal ones once. */
-export function sumText({ terms, cutLengthMm }: Piece, units: UnitSystem): string {
+/** "37 1/2 face to centre", "− 3 weld-neck hub", "− 6 LR 90", "− 2 × 1/8 root gap", "= 28 1/4": the terms as they sum, equal ones once. */
+export function sumTerms({ terms, cutLengthMm }: Piece, units: UnitSystem): string[] {
   const counts = new Map<string, { readonly term: CutTerm; readonly count: number }>();
   for (const term of terms) {
     const key = `${term.valueMm} ${term.label} ${term.unconfirmed}`;
@@ -25,7 +25,7 @@ export function sumText({ terms, cutLengthMm }: Piece, units: UnitSystem): strin
     const times = count > 1 ? `${count} × ` : "";
     return `${sign}${times}${formatTerm(Math.abs(term.valueMm), units)}${term.unconfirmed ? "*" : ""} ${termWords(term)}`;
   });
-  return `${parts.join(" ")} = ${cutLengthMm > 0 ? cutText(cutLengthMm, units) : `${formatTerm(cutLengthMm, units)}: DOES NOT FIT`}`;
+  return [...parts, `= ${cutLengthMm > 0 ? cutText(cutLengthMm, units) : `${formatTerm(cutLengthMm, units)}: DOES NOT FIT`}`];
 }
 
 /** "BEVEL, weld 3 at elbow". */

@@ -30,6 +30,8 @@ export interface TitleBlock {
   readonly plantNorthDeg?: number;
   /** Extra labelled fields, as entered, in order. At most 6. */
   readonly fields: readonly { readonly label: string; readonly value: string }[];
+  /** Keys of title-order.ts in the order the shop prints them; absent = the usual one. */
+  readonly order?: readonly string[];
   /** Content of the logo: key of the object store and type; bytes are handed to the painter. */
   readonly logo: { readonly key: string; readonly type: "image/png" | "image/jpeg" | "image/svg+xml" } | null;
 }

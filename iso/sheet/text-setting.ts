@@ -37,7 +37,7 @@ function wrapParagraph(text: string, widthMm: number, lettering: Lettering, meas
   const fits = (line: string) => measure(line, lettering.capMm, lettering.face) <= widthMm;
   const lines: string[] = [];
   let line = "";
-  for (const word of text.split(" ")) {
+  for (const word of wordsOf(text)) {
     const longer = line === "" ? word : `${line} ${word}`;
     if (fits(longer)) {
       line = longer;
@@ -50,6 +50,19 @@ function wrapParagraph(text: string, widthMm: number, lettering: Lettering, meas
   }
   return [...lines, line];
 }
+
+/** Words that stay whole on a line: a fraction stays with its inches, since "35" at a line's end reads as a length of its own. */
+function wordsOf(text: string): string[] {
+  const words: string[] = [];
+  for (const word of text.split(" ")) {
+    const before = words.at(-1);
+    if (before !== undefined && FRACTION.test(word) && /\d$/.test(before)) words.splice(-1, 1, `${before} ${word}`);
+    else words.push(word);
+  }
+  return words;
+}
+
+const FRACTION = /^\d+\/\d/;
 
 /** Parts of a word that each fit a line. */
 function breakWord(word: string, fits: (line: string) => boolean): string[] {

@@ -3,6 +3,7 @@ import { formatWeight } from "../units/format";
 import type { UnitSystem } from "../run/document";
 import type { SheetInput } from "./sheet-types";
 import { npsInches, sizeText, type SheetFacts } from "./sheet-facts";
+import { titleOrder, type TitleKey } from "./title-order";
 
 export interface Field {
   readonly label: string;
@@ -22,28 +23,37 @@ export type TitleEntry = Field | FieldHeading;
 
 const field = (label: string, value: string, maxLines = 2): Field => ({ label, value: value.trim() === "" ? "-" : value, maxLines });
 
-/** Everything a title block carries; RECORD is the head of the audit chain the sheet was issued under. */
+/** Everything a title block carries, in the shop's order; RECORD is the head of the audit chain the sheet was issued under. */
 export function titleEntries(facts: SheetFacts): TitleEntry[] {
+  const parts = titleParts(facts);
+  const { order } = facts.input.titleBlock;
+  return order === undefined ? Object.values(parts).flat() : titleOrder(order).flatMap((key) => parts[key] ?? []);
+}
+
+/** By key, in the usual order. */
+function titleParts(facts: SheetFacts): Partial<Record<TitleKey, readonly TitleEntry[]>> {
   const { titleBlock, revision } = facts.input;
-  const { settings } = facts.model.document;
-  const entered = settings.asEntered;
-  return [
-    field("CLIENT", titleBlock.client),
-    field("PROJECT", titleBlock.project),
-    field("JOB NO.", titleBlock.jobNumber),
-    field("AREA", titleBlock.area),
-    ...titleBlock.fields.slice(0, 6).map(({ label, value }) => field(label.toUpperCase(), value)),
+  const own = titleBlock.fields.slice(0, 6).map(({ label, value }, i) => [`own-${i + 1}`, [field(label.toUpperCase(), value)]] as const);
+  return {
+    client: [field("CLIENT", titleBlock.client)],
+    project: [field("PROJECT", titleBlock.project)],
+    job: [field("JOB NO.", titleBlock.jobNumber)],
+    area: [field("AREA", titleBlock.area)],
+    ...Object.fromEntries(own),
     ...lineFields(facts),
-    { heading: "AS ENTERED, PER OWNER'S SPECIFICATION", keeps: 5 },
-    field("INSULATION", entered.insulation),
-    field("PWHT", entered.pwht),
-    field("NDE", entered.nde),
-    field("TEST", entered.test),
-    field("PAINT", entered.paint),
+    "as-entered": asEnteredFields(facts),
     ...sheetFields(facts),
-    field("DRAWN", revision.drawnBy),
-    ...signOff(revision),
-    ...(revision.auditHead === "" ? [] : [field("RECORD", revision.auditHead.slice(0, 12))]),
+    drawn: [field("DRAWN", revision.drawnBy)],
+    "sign-off": signOff(revision),
+    record: revision.auditHead === "" ? [] : [field("RECORD", revision.auditHead.slice(0, 12))],
+  };
+}
+
+function asEnteredFields(facts: SheetFacts): TitleEntry[] {
+  const { insulation, pwht, nde, test, paint } = facts.model.document.settings.asEntered;
+  return [
+    { heading: "AS ENTERED, PER OWNER'S SPECIFICATION", keeps: 5 },
+    field("INSULATION", insulation), field("PWHT", pwht), field("NDE", nde), field("TEST", test), field("PAINT", paint),
   ];
 }
 
@@ -89,31 +99,32 @@ export function shortEntries(facts: SheetFacts): TitleEntry[] {
   ];
 }
 
-function lineFields(facts: SheetFacts): Field[] {
+function lineFields(facts: SheetFacts): Partial<Record<TitleKey, readonly Field[]>> {
   const { pipe } = facts.model.document.settings;
   const schedules = [...new Set(facts.pieces.map((piece) => piece.schedule))];
   const materials = [...new Set(facts.pieces.map((piece) => piece.material))];
-  return [
-    field("LINE", facts.model.document.number),
-    ...(facts.model.document.title.trim() === "" ? [] : [field("TITLE", facts.model.document.title)]),
-    field("SPOOL", facts.spool ? facts.input.spool : `${facts.input.spool} (not in this line)`),
-    field("SIZE", sizesOf(facts)),
-    field("SCHEDULE", (schedules.length > 0 ? schedules : [pipe.schedule]).join(", ")),
-    field("MATERIAL", (materials.length > 0 ? materials : [pipe.material]).join(", ")),
-    ...(pipe.specification.trim() === "" ? [] : [field("SPEC", pipe.specification)]),
-    field("UNITS", facts.input.units === "metric" ? "millimetres" : "feet and inches"),
-    field("SCALE", "NTS"),
-    field("NORTH", northText(facts.input.titleBlock.plantNorthDeg)),
-  ];
+  const { title } = facts.model.document;
+  return {
+    line: [field("LINE", facts.model.document.number)],
+    title: title.trim() === "" ? [] : [field("TITLE", title)],
+    spool: [field("SPOOL", facts.spool ? facts.input.spool : `${facts.input.spool} (not in this line)`)],
+    size: [field("SIZE", sizesOf(facts))],
+    schedule: [field("SCHEDULE", (schedules.length > 0 ? schedules : [pipe.schedule]).join(", "))],
+    material: [field("MATERIAL", (materials.length > 0 ? materials : [pipe.material]).join(", "))],
+    spec: pipe.specification.trim() === "" ? [] : [field("SPEC", pipe.specification)],
+    units: [field("UNITS", facts.input.units === "metric" ? "millimetres" : "feet and inches")],
+    scale: [field("SCALE", "NTS")],
+    north: [field("NORTH", northText(facts.input.titleBlock.plantNorthDeg))],
+  };
 }
 
-function sheetFields(facts: SheetFacts): Field[] {
+function sheetFields(facts: SheetFacts): Partial<Record<TitleKey, readonly Field[]>> {
   const includes = facts.model.document.settings.faceIncludesGasket;
-  return [
-    field("FACES", `dimensions to faces ${includes ? "include" : "leave out"} the gasket`),
-    field("TOLERANCE", toleranceText(facts)),
-    field("WEIGHT", weightText(facts), 3),
-  ];
+  return {
+    faces: [field("FACES", `dimensions to faces ${includes ? "include" : "leave out"} the gasket`)],
+    tolerance: [field("TOLERANCE", toleranceText(facts))],
+    weight: [field("WEIGHT", weightText(facts), 3)],
+  };
 }
 
 function sizesOf(facts: SheetFacts): string {

@@ -15,9 +15,9 @@ import { issuedText } from "./title-fields";
 const ROW_HEIGHT = 9.6;
 
 const COLUMNS: readonly Column[] = [
-  { head: "WELD", share: 0, minMm: 14, align: "middle" }, { head: "TYPE", share: 1, minMm: 18 }, { head: "SIZE", share: 0.6, minMm: 21 }, { head: "PLACE", share: 0, minMm: 14 },
-  { head: "WPS, REV", share: 1, minMm: 20 }, { head: "HEAT A", share: 1, minMm: 23 }, { head: "HEAT B", share: 1, minMm: 23 }, { head: "FIT-UP BY, DATE", share: 1, minMm: 22 },
-  { head: "WELDER", share: 1, minMm: 18 }, { head: "DATE", share: 0, minMm: 19.5 }, { head: "VISUAL", share: 1, minMm: 20 }, { head: "NDE", share: 1, minMm: 15 }, { head: "REPAIRS", share: 0.4, minMm: 17.5 },
+  { head: "WELD", share: 0, minMm: 12.6, align: "middle" }, { head: "TYPE", share: 1, minMm: 17.4 }, { head: "SIZE", share: 0.6, minMm: 20 }, { head: "PLACE", share: 0, minMm: 14 },
+  { head: "WPS, REV", share: 1, minMm: 19.4 }, { head: "HEAT A", share: 1, minMm: 21 }, { head: "HEAT B", share: 1, minMm: 21 }, { head: "FIT-UP BY, DATE", share: 1, minMm: 22 },
+  { head: "WELDER", share: 1, minMm: 18 }, { head: "DATE", share: 0, minMm: 21.6 }, { head: "VISUAL", share: 1, minMm: 21.6 }, { head: "NDE", share: 1, minMm: 14 }, { head: "REPAIRS", share: 0.4, minMm: 17.6 },
 ];
 
 /** The log, or null when the spool has no weld and had none. */

@@ -52,3 +52,12 @@ describe("cornersOverlap, the eye of these tests", () => {
     expect(cornersOverlap(square(0, 0), square(5, 5), 0.05)).toBe(false);
   });
 });
+
+it("never parts inches from their fraction at a line's end", () => {
+  const text = `begins at 35 7/16 and 12'-10 3/16" of 4 pieces 3/8 apart`;
+  for (let widthMm = 24; widthMm < 120; widthMm += 3) {
+    const lines = wrapText(text, widthMm, PLAIN, measureText);
+    expect(lines.join(" ")).toBe(text);
+    for (const line of lines.slice(1)) expect(line).not.toMatch(/^(7|3)\/16/);
+  }
+});
