@@ -19,11 +19,14 @@ export function rowsByRef(rows: readonly CompareRow[], side: DrawingSide): Reado
   return found;
 }
 
+/** Hatching and boxes of an offset: a band under each of their lines would bury the pipe. */
+const BEHIND: ReadonlySet<string> = new Set(["hatch", "box", "halo"]);
+
 /** Items of a drawing that belong to any of the rows. */
 export function pickedItems(items: readonly DisplayItem[], rows: readonly CompareRow[], side: DrawingSide, picked: ReadonlySet<number>): readonly DisplayItem[] {
   if (picked.size === 0) return [];
   const keys = new Set(rows.filter((row) => picked.has(row.no)).flatMap((row) => refsOf(row, side).map(keyOf)));
-  return items.filter((item) => item.ref !== null && keys.has(keyOf(item.ref)));
+  return items.filter((item) => item.ref !== null && !BEHIND.has(item.layer) && keys.has(keyOf(item.ref)));
 }
 
 /** The row a press on a part picks: the next one of those it belongs to, so that a second press goes on. */

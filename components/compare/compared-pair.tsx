@@ -67,7 +67,7 @@ function Overlay({ views: { overlay }, picks }: { readonly views: CompareViews; 
   const [look, setLook] = useState<Viewport | null>(null);
   return (
     <>
-      <CompareDrawing {...picks} drawing={overlay} side="both" label="Overlay of both revisions" shown={look ?? fitted} close={look !== null} onLook={setLook} className="h-[62dvh] min-h-80" />
+      <CompareDrawing {...picks} drawing={overlay} side="both" label="Overlay of both revisions" shown={look ?? fitted} close={look !== null} onLook={setLook} className="h-[62dvh] min-h-72 max-sm:h-[46dvh]" />
       <OverlayKey />
     </>
   );

@@ -55,7 +55,7 @@ function RowWords({ row }: { readonly row: CompareRow }) {
       <span className="break-words">{compareRowName(row)}</span>
       {row.before === null ? null : <del className="figure block text-sm break-words text-soft">{row.before}</del>}
       {row.after === null ? null : <ins className="figure block text-sm break-words no-underline">{row.after}</ins>}
-      {row.at === null ? <span className="block text-sm text-soft">Not on the drawing</span> : null}
+      {row.at === null && row.refsBefore.length + row.refsAfter.length === 0 ? <span className="block text-sm text-soft">Not on the drawing</span> : null}
     </span>
   );
 }

@@ -118,10 +118,11 @@ function sideContents(desk: Desk): Content[] {
   const middle = (body.minX + body.maxX) / 2;
   const top = head.below + linesHeight(1, HEAD_CAP) + 1;
   const boxes: readonly [PaperBox, PaperBox] = [{ ...body, minY: top, maxX: middle - 1 }, { ...body, minY: top, minX: middle + 1 }];
-  const drawings = ([0, 1] as const).map((side) => drawModel(models[side], drawOptions(desk, side, boxes[side])));
+  const inner = boxes.map((box) => ({ minX: box.minX + PAD, minY: box.minY + PAD, maxX: box.maxX - PAD, maxY: box.maxY - PAD }));
+  const drawings = ([0, 1] as const).map((side) => drawModel(models[side], drawOptions(desk, side, inner[side]!)));
   const caption = (side: 0 | 1, at: PaperPoint) => textAt([at[0], at[1] - 1 - linesHeight(1, HEAD_CAP) + baselineOf(0, HEAD_CAP)], captionOf(desk, side), { layer: "label", capMm: HEAD_CAP, face: "bold" });
   if (drawings.every(isInside)) {
-    const items = ([0, 1] as const).flatMap((side) => [caption(side, [boxes[side].minX + 1, top]), boxOutline(boxes[side], { widthMm: EDGE_LINE }), ...placedAt(drawings[side]!, boxes[side])]);
+    const items = ([0, 1] as const).flatMap((side) => [caption(side, [boxes[side].minX + 1, top]), boxOutline(boxes[side], { widthMm: EDGE_LINE }), ...placedAt(drawings[side]!, inner[side]!)]);
     return [{ name: "side by side", items: [...head.items, ...items] }];
   }
   const full = { ...body, minY: top };
@@ -130,7 +131,9 @@ function sideContents(desk: Desk): Content[] {
   })));
 }
 
-const isInside = ({ bounds, widthMm, heightMm }: Drawing): boolean => bounds.minX >= -PAD && bounds.minY >= -PAD && bounds.maxX <= widthMm + PAD && bounds.maxY <= heightMm + PAD;
+/** Paper a drawing may stand out of its half and still keep off the line round it, mm. */
+const OUT = 1;
+const isInside = ({ bounds, widthMm, heightMm }: Drawing): boolean => bounds.minX >= -OUT && bounds.minY >= -OUT && bounds.maxX <= widthMm + OUT && bounds.maxY <= heightMm + OUT;
 
 function captionOf({ from, to }: Desk, side: 0 | 1): string {
   const words = sideWords(sideOf(side === 0 ? from : to));
