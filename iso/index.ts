@@ -108,6 +108,7 @@ export * from "./sheet/sheet-types";
 export * from "./sheet/sheet-size";
 export * from "./sheet/compose";
 export * from "./sheet/state-mark";
+export * from "./sheet/title-order";
 export { LEGEND_WORDS, legendItems, legendLayout } from "./sheet/legend";
 export { legendPicture } from "./sheet/legend-pictures";
 export * from "./sheet/bench-pages";

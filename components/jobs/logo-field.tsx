@@ -15,11 +15,13 @@ export interface LogoFieldProps {
   readonly logo: TitleBlock["logo"];
   readonly editable: boolean;
   readonly onChanged: () => void;
+  /** Told the address of a chosen file, and null when there is none any more. */
+  readonly onPreview?: (address: string | null) => void;
 }
 
 /** The logo of the title block: shown as it is, chosen, previewed, then sent. */
-export function LogoField({ path, logo, editable, onChanged }: LogoFieldProps) {
-  const { file, preview, setFile } = useChosenFile();
+export function LogoField({ path, logo, editable, onChanged, onPreview }: LogoFieldProps) {
+  const { file, preview, setFile } = useChosenFile(onPreview);
   const [trouble, setTrouble] = useState<string | null>(null);
   const [busy, setBusy] = useState(false);
   const shown = preview ?? (logo ? logoAddress(logo) : null);
@@ -96,13 +98,14 @@ export function LogoField({ path, logo, editable, onChanged }: LogoFieldProps) {
 }
 
 /** A chosen file with an address to show it by, let go of when another is chosen or the page is left. */
-function useChosenFile() {
+function useChosenFile(onPreview?: (address: string | null) => void) {
   const [chosen, setChosen] = useState<{ readonly file: File; readonly url: string } | null>(null);
   const held = useRef<string | null>(null);
   const hold = (file: File | null) => {
     if (held.current) URL.revokeObjectURL(held.current);
     held.current = file ? URL.createObjectURL(file) : null;
     setChosen(file && held.current ? { file, url: held.current } : null);
+    onPreview?.(held.current);
   };
   useEffect(() => () => void (held.current && URL.revokeObjectURL(held.current)), []);
   return { file: chosen?.file ?? null, preview: chosen?.url ?? null, setFile: hold };

@@ -2,9 +2,8 @@
 import { zodResolver } from "@hookform/resolvers/zod";
 import { useForm } from "react-hook-form";
 import { LineSettingsForm } from "@/components/jobs/line-settings-form";
-import { LogoField } from "@/components/jobs/logo-field";
 import { SHEET_OPTIONS } from "@/components/jobs/sheet-words";
-import { TitleFieldsForm } from "@/components/jobs/title-fields-form";
+import { TitleEditor } from "@/components/jobs/title-editor";
 import { Button } from "@/components/ui/button";
 import { refreshApi } from "@/components/ui/fetcher";
 import { Select, TextField } from "@/components/ui/field";
@@ -33,19 +32,17 @@ export function ShopSettingsView({ owner }: { readonly owner: boolean }) {
             <HeadFields shop={data} owner={owner} onSave={(values) => patch(values, "Shop saved.")} />
           </Section>
           <Section title="Title block">
-            <div className="grid gap-8 lg:grid-cols-2">
-              <TitleFieldsForm
-                fields={data.titleBlock.fields}
-                editable={owner}
-                onSave={(fields) => patch({ fields }, "Title block saved.")}
-              />
-              <LogoField
-                path="/api/shop/logo"
-                logo={data.titleBlock.logo}
-                editable={owner}
-                onChanged={() => void refreshApi("/api/shop")}
-              />
-            </div>
+            <TitleEditor
+              titleBlock={data.titleBlock}
+              logoPath="/api/shop/logo"
+              ownLogo={data.titleBlock.logo}
+              size={data.sheetSize}
+              settings={data.defaults}
+              line={null}
+              editable={owner}
+              onSave={(change) => patch(change, "Title block saved.")}
+              onLogo={() => void refreshApi("/api/shop")}
+            />
           </Section>
           <Section title="Defaults for new jobs">
             <p className="mb-4 text-soft">Jobs that exist keep their own.</p>

@@ -14,8 +14,8 @@ export async function addJob(context: CommandContext, form: JobNewForm): Promise
   const { viewer, tx, now } = context;
   await assertNumberFree(viewer, form.number, null, tx);
   const shop = await Shop.findOne({ where: { id: viewer.shopId }, rejectOnEmpty: true, transaction: tx });
-  const { fields, sheetSize, defaults } = shop.settings;
-  const settings: StoredJobSettings = { fields, logo: null, sheetSize, plantNorthDeg: 0, defaults: lineSettingsIn(form.units, defaults) };
+  const { fields, titleOrder, sheetSize, defaults } = shop.settings;
+  const settings: StoredJobSettings = { fields, ...(titleOrder ? { titleOrder } : {}), logo: null, sheetSize, plantNorthDeg: 0, defaults: lineSettingsIn(form.units, defaults) };
   const { number, title, client, area } = form;
   const values = { number, title, client, area, open: true, settings, createdAt: now, createdBy: viewer.personId, updatedAt: now };
   const job = await inShop(viewer).add(Job, values, tx);

@@ -9,7 +9,7 @@ import { takeOutWords } from "./take-out-words";
 export async function shopSettings(member: ShopMember): Promise<ShopSettings> {
   getDb();
   const shop = await Shop.findOne({ where: { id: member.shopId }, rejectOnEmpty: true });
-  const { fields, logo, sheetSize, defaults, stock } = shop.settings;
-  const titleBlock = { shopName: shop.name, client: "", project: "", jobNumber: "", area: "", fields, logo };
+  const { fields, titleOrder, logo, sheetSize, defaults, stock } = shop.settings;
+  const titleBlock = { shopName: shop.name, client: "", project: "", jobNumber: "", area: "", fields, ...(titleOrder?.length ? { order: titleOrder } : {}), logo };
   return { name: shop.name, titleBlock, sheetSize, defaults, stock, nesting: shop.settings.nesting ?? NESTING_START, takeOuts: await takeOutWords(member) };
 }

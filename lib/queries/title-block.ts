@@ -11,6 +11,7 @@ export function titleBlockOf(shop: Shop, job: Job): TitleBlock {
     area: job.area,
     plantNorthDeg: job.settings.plantNorthDeg,
     fields: job.settings.fields,
+    ...(job.settings.titleOrder?.length ? { order: job.settings.titleOrder } : {}),
     logo: job.settings.logo ?? shop.settings.logo,
   };
 }

@@ -86,6 +86,8 @@ export interface JobSettings {
   readonly area: string;
   readonly open: boolean;
   readonly fields: TitleBlock["fields"];
+  /** Absent or empty = the usual order. */
+  readonly titleOrder?: readonly string[];
   readonly logo: TitleBlock["logo"];
   readonly sheetSize: SheetSize;
   /** Which way plant north lies from true north, degrees clockwise; printed beside the arrow. */

@@ -10,6 +10,8 @@ import type { NestingSettings } from "./nest-plans";
 /** What the shops table keeps beside the name. */
 export interface StoredShopSettings {
   readonly fields: TitleBlock["fields"];
+  /** Absent or empty = the usual order. */
+  readonly titleOrder?: readonly string[];
   readonly logo: TitleBlock["logo"];
   readonly sheetSize: SheetSize;
   readonly defaults: LineSettings;
@@ -19,7 +21,7 @@ export interface StoredShopSettings {
 }
 
 /** What the jobs table keeps beside number, title, client, area and open. */
-export type StoredJobSettings = Pick<JobSettings, "fields" | "logo" | "sheetSize" | "plantNorthDeg" | "defaults">;
+export type StoredJobSettings = Pick<JobSettings, "fields" | "titleOrder" | "logo" | "sheetSize" | "plantNorthDeg" | "defaults">;
 
 const NOTHING_ENTERED = { insulation: "", pwht: "", nde: "", test: "", paint: "" };
 

@@ -3,7 +3,7 @@
  * is the JSON body of one write; lengths are millimetres, ids are strings. Messages are the sentences a person reads.
  */
 import { z } from "zod";
-import { lineSettingsSchema, npsSchema, unitSystemSchema } from "@/iso";
+import { lineSettingsSchema, npsSchema, TITLE_KEYS, unitSystemSchema } from "@/iso";
 
 const text = (max: number) =>
   z.string({ error: "Enter a text." }).trim().max(max, `At most ${max} characters.`);
@@ -55,6 +55,9 @@ export const titleFieldsSchema = z
   .array(z.object({ label: needed("a label", 30), value: text(80) }))
   .max(6, "At most 6 fields of your own.");
 
+/** Order of the title block's fields; empty = the usual one. */
+export const titleOrderSchema = z.array(z.enum(TITLE_KEYS, { error: "The title block has no such field." })).max(TITLE_KEYS.length);
+
 export const stockRowSchema = z.object({
   nps: npsSchema,
   schedule: needed("a schedule", 12),
@@ -95,6 +98,7 @@ export const shopSettingsSchema = z
   .object({
     name: needed("the name of the shop", 80),
     fields: titleFieldsSchema,
+    titleOrder: titleOrderSchema,
     sheetSize: sheetSizeSchema,
     defaults: lineSettingsSchema,
     stock: z.array(stockRowSchema).max(200, "At most 200 rows."),
@@ -130,6 +134,7 @@ export const jobSettingsSchema = z
     area: text(120),
     open: z.boolean(),
     fields: titleFieldsSchema,
+    titleOrder: titleOrderSchema,
     sheetSize: sheetSizeSchema,
     plantNorthDeg: z
       .number({ error: "Enter degrees, 0 to 359.9." })

@@ -144,7 +144,7 @@ describe("bad input", () => {
   });
 
   test("names changed over are proposed back, of two and of three", () => {
-    for (const names of [{ "1": "2", "2": "1" }, { "1": "2", "2": "3", "3": "1" }] as const) {
+    for (const names of [{ "1": "2", "2": "1" }, { "1": "2", "2": "3", "3": "1" }] as readonly Record<string, string>[]) {
       const document = asFittedMended(measured(branch), { kind: "rename", names });
       const finding = branch.compare(document).findings.find((one) => one.code === "names")!;
       expect(branch.compare(asFittedMended(document, finding.mend!)).verdict).toBe("go");
