@@ -2,7 +2,7 @@
 import { chanceNumber, trimWords, type FitContribution, type FitJudged, type FitMismatch, type FitResult, type FitTrim, type FitUp, type UnitSystem, type Vec3 } from "@/iso";
 import { Table } from "@/components/ui/table";
 import { CONDITION_WORDS, mismatchWords } from "./fit-words";
-import { tapeEntryText, withinText } from "./length-text";
+import { limitText, withinText } from "./length-text";
 
 interface MismatchProps {
   readonly result: FitResult;
@@ -14,13 +14,10 @@ interface MismatchProps {
 
 export function FitMismatches({ result, fitUp, units, axis, flanged }: MismatchProps) {
   const within = (mm: number) => `± ${withinText(mm, units)}`;
-  const limit = ({ limitMm }: FitMismatch) => {
-    const { end0, end1 } = limitMm;
-    if (end0 === null && end1 === null) return "free";
-    const texts = [end0, end1].map((mm) => (mm === null ? "free" : tapeEntryText(mm, units)));
-    return texts[0] === texts[1] || fitUp === "set-true" ? texts[1]! : `${texts[0]}, ${texts[1]}`;
-  };
   const shared = fitUp === "shared";
+  const texts = ({ limitMm }: FitMismatch) => [limitMm.end0, limitMm.end1].map((mm) => (mm === null ? "free" : limitText(mm, units))) as [string, string];
+  const alike = !shared || result.mismatches.every((row) => texts(row)[0] === texts(row)[1]);
+  const limit = (row: FitMismatch) => (alike ? texts(row)[1] : texts(row).join("; "));
   return (
     <>
       <Table
@@ -29,14 +26,14 @@ export function FitMismatches({ result, fitUp, units, axis, flanged }: MismatchP
         rowKey={({ what }) => what}
         columns={[
           { key: "what", head: "Mismatch", cell: ({ what }) => mismatchWords(what, axis, flanged) },
-          { key: "before", head: shared ? "All at end 1" : "At end 1", figure: true, cell: (row) => within(shared ? row.beforeMm : row.atEnd1Mm) },
+          { key: "before", head: shared ? "All at end 1" : "At end 1", className: "figure", cell: (row) => within(shared ? row.beforeMm : row.atEnd1Mm) },
           ...(shared
             ? [
-                { key: "end0", head: "Left at end 0", figure: true, cell: (row: FitMismatch) => within(row.atEnd0Mm) },
-                { key: "end1", head: "Left at end 1", figure: true, cell: (row: FitMismatch) => within(row.atEnd1Mm) },
+                { key: "end0", head: "Left at end 0", className: "figure", cell: (row: FitMismatch) => within(row.atEnd0Mm) },
+                { key: "end1", head: "Left at end 1", className: "figure", cell: (row: FitMismatch) => within(row.atEnd1Mm) },
               ]
             : []),
-          { key: "limit", head: "May be", figure: true, cell: limit },
+          { key: "limit", head: alike ? "Limit" : "Limit at 0; at 1", className: "figure", cell: limit },
         ]}
       />
       <p className="mt-2 text-sm text-soft">
@@ -111,8 +108,8 @@ export function FitTrims({ trims, target, units }: { readonly trims: readonly Fi
         rowKey={({ jointId }) => jointId}
         columns={[
           { key: "joint", head: "Field-fit weld (FFW) at", cell: ({ joint }) => joint },
-          { key: "trim", head: "Leave on", figure: true, cell: ({ trimMm }) => trimWords(trimMm, units) },
-          { key: "chance", head: "Then fits", figure: true, cell: ({ probability }) => `${chanceNumber(probability)} in 100` },
+          { key: "trim", head: "Leave on", className: "figure", cell: ({ trimMm }) => trimWords(trimMm, units) },
+          { key: "chance", head: "Then fits", className: "figure", cell: ({ probability }) => `${chanceNumber(probability)} in 100` },
           { key: "reach", head: `For ${Math.round(100 * target)}`, cell: ({ reached, atMost }) => (reached ? "enough" : `not by trim: ${chanceNumber(atMost)} at most`) },
         ]}
       />

@@ -23,21 +23,22 @@ export function FitVerdict({ result, target }: { readonly result: FitResult; rea
 
 const SCALE = [0, 25, 50, 75, 100];
 
-/** A rule from 0 to 100, filled to the chance, with a mark where it is wanted. */
+/** A rule from 0 to 100, filled to the chance, with a stroke across it where the chance is wanted. */
 function ChanceBar({ probability, target }: { readonly probability: number; readonly target: number }) {
-  const chance = 100 * probability;
+  const wanted = 100 * target;
   return (
-    <svg role="img" aria-label={`${chanceNumber(probability)} in 100; ${Math.round(100 * target)} wanted`} viewBox="-2 0 104 18" className="block h-auto w-full min-w-0 max-w-xl">
-      <rect x="0" y="4" width="100" height="6" fill="var(--color-sheet)" stroke="var(--color-ink)" strokeWidth="0.4" />
-      <rect x="0" y="4" width={chance} height="6" fill="var(--color-ink)" />
-      <path d={`M${100 * target} 2.5v9`} stroke="var(--color-dye)" strokeWidth="0.9" />
-      <path d={`M${100 * target} 4.2l-1.6 -2.8h3.2z`} fill="var(--color-dye)" />
-      {SCALE.map((tick) => (
-        <g key={tick}>
-          <path d={`M${tick} 10v1.6`} stroke="var(--color-ink)" strokeWidth="0.4" />
-          <text x={tick} y="16.2" fontSize="4" textAnchor="middle" fill="var(--color-soft)">{tick}</text>
-        </g>
-      ))}
-    </svg>
+    <div className="w-full min-w-0 max-w-xl">
+      <svg role="img" aria-label={`${chanceNumber(probability)} in 100; ${Math.round(wanted)} wanted`} viewBox="0 0 100 10" preserveAspectRatio="none" className="block h-8 w-full overflow-visible">
+        <rect x="0" y="2" width="100" height="6" fill="var(--color-sheet)" stroke="var(--color-ink)" vectorEffect="non-scaling-stroke" />
+        <rect x="0" y="2" width={100 * probability} height="6" fill="var(--color-ink)" />
+        <path d={`M${wanted} 0v10`} stroke="var(--color-sheet)" strokeWidth="7" vectorEffect="non-scaling-stroke" />
+        <path d={`M${wanted} 0v10`} stroke="var(--color-dye)" strokeWidth="3" vectorEffect="non-scaling-stroke" />
+      </svg>
+      <p aria-hidden className="figure flex justify-between text-xs text-soft">
+        {SCALE.map((tick) => (
+          <span key={tick}>{tick}</span>
+        ))}
+      </p>
+    </div>
   );
 }

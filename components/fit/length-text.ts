@@ -15,3 +15,10 @@ const EXACT_MM = 0.0005;
 export function withinText(mm: number, units: UnitSystem): string {
   return units === "metric" ? `${formatDecimal(mm, 1)} mm` : `${(mm / INCH_MM).toFixed(2)} in`;
 }
+
+/** A limit: a fraction of an inch where that says it, else thousandths. */
+export function limitText(mm: number, units: UnitSystem): string {
+  if (units === "metric") return `${formatDecimal(mm, 2)} mm`;
+  const text = tapeEntryText(mm, units);
+  return text.includes(".") ? `${(mm / INCH_MM).toFixed(3)} in` : text;
+}
