@@ -30,7 +30,7 @@ export function ClosingAnswer(props: ClosingAnswerProps) {
   }
   return (
     <div className="grid gap-5 lg:grid-cols-[minmax(0,1fr)_minmax(0,20rem)]">
-      <div>
+      <div className="min-w-0">
         <Facts {...props} answer={answer} />
         <Marks answer={answer} />
         <ClosingSnap key={props.input.units} input={props.input} />

@@ -114,7 +114,9 @@ export function endFromPoint(model: Model, pointId: string, side: 0 | 1): Pick<E
   if (!node) return null;
   const ports = model.components.filter((component) => component.pointId === pointId).flatMap((component) => component.ports);
   const wanted = ports.filter((port) => port.id === (side === 0 ? "out" : "in"));
-  const port = isBareEnd(model, pointId) ? undefined : wanted[side === 0 ? wanted.length - 1 : 0];
+  // Of a valve with its flanges and gaskets the outermost face is what a pipe is welded to.
+  const reach = (port: (typeof wanted)[number]) => port.direction.reduce((sum, d, i) => sum + d * ((port.position[i] ?? 0) - (node.position[i] ?? 0)), 0);
+  const port = isBareEnd(model, pointId) ? undefined : [...wanted].sort((a, b) => reach(b) - reach(a))[0];
   const away = node.arriving ?? node.leaving;
   const back = node.leaving ?? node.arriving;
   const along = side === 0 ? away : back && ([-back[0], -back[1], -back[2]] as Vec3);

@@ -26,7 +26,7 @@ const TRIMS = [
 export function ShopStock({ settings, onChange, nps1, onNps1, pupError, usualPup }: ShopStockProps) {
   const toggled = <T,>(list: readonly T[], each: T): T[] => (list.includes(each) ? list.filter((other) => other !== each) : [...list, each]);
   return (
-    <div className="grid gap-x-6 gap-y-2 lg:grid-cols-2">
+    <div className="space-y-3">
       <fieldset className="min-w-0">
         <legend className="font-medium">Whole elbows in the shop</legend>
         <div className="flex flex-wrap gap-x-5">

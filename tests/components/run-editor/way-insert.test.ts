@@ -1,6 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { buildModel, emptyMarks, quickWays, threeElbowWays, type Model, type RunDocument, type Way, type WaysInput } from "@/iso";
-import { EMPTY_END, type ClosingForm } from "@/components/run-editor/closing-form";
+import { EMPTY_END, endFromPoint, readClosingForm, type ClosingForm } from "@/components/run-editor/closing-form";
+import { editorReducer, initialState } from "@/components/run-editor/editor-state";
 import { planWayInsert } from "@/components/run-editor/closing-insert";
 import { layWay, type Spot } from "../../oracle/lay-way";
 import { emptyDocument, testStamp } from "./fixtures";
@@ -47,6 +48,14 @@ function missMm(model: Model, way: Way, asked: WaysInput): number {
   const { end } = layWay(nodes[0]!, straights, reachIn(way).map((x) => x * IN), IN / 8);
   const goal = asked.end1.position;
   return Math.hypot(...end.map((x, i) => x - goal[i as 0]));
+}
+
+function typed(...rows: readonly (readonly [move: string, item?: string])[]): RunDocument {
+  return rows.reduce((now, [move, item], row) => {
+    const at = (column: "move" | "item") => ({ runId: "main", row, column });
+    const moved = editorReducer(now, { type: "commit", target: at("move"), text: move, step: "stay", stamp: testStamp() });
+    return editorReducer(moved, { type: "commit", target: at("item"), text: item ?? "", step: "stay", stamp: testStamp() });
+  }, initialState(emptyDocument(), testStamp())).document;
 }
 
 describe("a way inserted into the run", () => {
@@ -102,6 +111,52 @@ describe("a way inserted into the run", () => {
       expect(model.pieces.map((piece) => piece.cutLengthMm), way.title).toEqual(way.cuts.map((cut) => expect.closeTo(cut, 6)));
       expect(way.straights.find((straight) => straight.reducer)?.reducer?.lengthMm).toBeCloseTo(4 * IN, 9);
     }
+  });
+
+  it("goes in between two fittings of the run, and what follows keeps its place", () => {
+    const before = typed(["", "wn"], ["e 4-0", "gate"], ["e 3-0"], ["n 5-0 u 3-0 e 2-0"], ["e 4-0", "gate"], ["e 3-0", "wn"]);
+    const model = buildModel(before, emptyMarks(), []);
+    const ids = before.runs[0]!.points.map((point) => point.id);
+    const form: ClosingForm = { ...FORM, end0: { ...EMPTY_END, ...endFromPoint(model, ids[1]!, 0)! }, end1: { ...EMPTY_END, ...endFromPoint(model, ids[4]!, 1)! } };
+    const read = readClosingForm(form, "imperial", []);
+    if (!read.ok) throw new Error(JSON.stringify(read.messages));
+    const asked = input({ end0: { ...read.input.end0, nps: "4", straightMm: 0, fixed: true }, end1: { ...read.input.end1, nps: "4", straightMm: 0, fixed: true } });
+    const quick = quickWays(asked);
+    if (!quick.ok) throw new Error(quick.sentence);
+    expect(quick.ways.some((way) => way.kind === "two-standard")).toBe(true);
+    expect(quick.ways.filter((way) => way.kind === "field-trim")).toEqual([]);
+    for (const way of quick.ways.filter((each) => each.kind !== "mitre")) {
+      const plan = planWayInsert(form, way, asked, model, testStamp());
+      if (!plan.ok) throw new Error(plan.message);
+      const after = buildModel(plan.document, emptyMarks(), []);
+      const place = (from: Model, id: string) => from.nodes.find((node) => node.pointId === id)?.position.map((x) => expect.closeTo(x, 6));
+      const stands = (id: string) => after.nodes.find((node) => node.pointId === id)?.position;
+      for (const id of [ids[1]!, ids[4]!, ids[5]!]) expect(stands(id), way.id).toEqual(place(model, id));
+      // The pipe before the first gate and after the second stays; between them stand the way's own pieces.
+      expect(after.pieces.slice(1, -1).map((piece) => piece.cutLengthMm), way.id).toEqual(way.cuts.map((cut) => expect.closeTo(cut, 6)));
+      expect(after.problems.filter((problem) => problem.severity === "stop"), way.id).toEqual([]);
+    }
+  });
+
+  it("goes in at the end of the run, to a typed end; another size or gap is refused", () => {
+    const before = typed(["", "wn"], ["e 3-0"], ["e 3-0", "exist"]);
+    const model = buildModel(before, emptyMarks(), []);
+    const last = before.runs[0]!.points[2]!.id;
+    const form: ClosingForm = { ...FORM, end0: { ...EMPTY_END, ...endFromPoint(model, last, 0)! }, end1: { ...EMPTY_END, e: "14-0", n: "4-0", u: "3-0", direction: "S" } };
+    const read = readClosingForm(form, "imperial", []);
+    if (!read.ok) throw new Error(JSON.stringify(read.messages));
+    const asked = input({ end0: { ...read.input.end0, nps: "4", straightMm: 0 }, end1: { ...read.input.end1, nps: "4", straightMm: 0 } });
+    const way = threeElbowWays({ ...asked, angles: [90, 45], radii: ["LR"] }).ways[0];
+    if (!way) throw new Error("no three elbows");
+    const plan = planWayInsert(form, way, asked, model, testStamp());
+    if (!plan.ok) throw new Error(plan.message);
+    expect(plan.words).toMatch(/^Three elbows go in at the end of the run/);
+    const after = buildModel(plan.document, emptyMarks(), []);
+    const end = after.nodes[after.nodes.length - 1]!.position;
+    expect(end.map((x) => x / IN)).toEqual([168, 48, 36].map((x) => expect.closeTo(x, 7)));
+    expect(new Set(plan.document.runs[0]!.points.map((point) => point.id)).size).toBe(plan.document.runs[0]!.points.length);
+    expect(planWayInsert(form, way, { ...asked, rootGapMm: 0 }, model, testStamp())).toMatchObject({ ok: false, message: expect.stringContaining("root gap") });
+    expect(planWayInsert(form, way, { ...asked, end0: { ...asked.end0, nps: "6" } }, model, testStamp())).toMatchObject({ ok: false, message: expect.stringContaining("NPS 4 there") });
   });
 
   it("moves an end that is cut back, and refuses where the end is a fitting", () => {
