@@ -54,7 +54,11 @@ export function flangedPoints(placed: Placed): ReadonlySet<string> {
 /** Paper directions in which pipes leave each point. */
 export function leavingDirections(drawn: readonly DrawnEdge[]): ReadonlyMap<string, readonly PaperPoint[]> {
   const directions = new Map<string, PaperPoint[]>();
-  const add = (id: string, d: PaperPoint): void => void directions.set(id, [...(directions.get(id) ?? []), d]);
+  const add = (id: string, d: PaperPoint): void => {
+    const there = directions.get(id);
+    if (there) there.push(d);
+    else directions.set(id, [d]);
+  };
   for (const { edge, direction } of drawn) {
     add(edge.from, direction);
     add(edge.to, [-direction[0], -direction[1]]);

@@ -23,7 +23,7 @@ import { offsetPass, type OffsetInk } from "./offset-box";
 import { itemMoved, pathItem, polygonSegments } from "./paths";
 import { pipePass, pipeStretches } from "./pipe";
 import type { Placed } from "./place";
-import { boxCorners, paperBoxAround, segmentInBox, type Segment, type TurnedBox } from "./plane";
+import { boxAroundBoxes, boxAroundSegments, boxCorners, segmentInBox, type Segment, type TurnedBox } from "./plane";
 import type { Match } from "./sheet-split";
 import { cloudPass } from "./revision-cloud";
 import { slopePass } from "./slopes";
@@ -78,7 +78,7 @@ export function drawLines(placed: Placed, options: DrawOptions, place: SheetPlac
   const field = new LabelField();
   const texts = offsets.texts.map((text) => placeLineText(text, field, heavyMap, boxMap, measure));
   const slopes = slopePass(placed, drawn, field, heavyMap, boxMap, measure);
-  const around = paperBoxAround([...heavy, ...offsets.light].flatMap((s) => [s.from, s.to]));
+  const around = boxAroundSegments(offsets.light, boxAroundSegments(heavy));
   const centre: PaperPoint = [(around.minX + around.maxX) / 2 || 0, (around.minY + around.maxY) / 2 || 0];
   const dimensions = options.show.dimensions ? dimensionPass(placed, drawn, { heavy: heavyMap, light: boxMap, field, centre, extent: around }, measure) : NO_DIMENSIONS;
   const light = [...offsets.light, ...dimensions.light, ...slopes.light, ...cloud.light];
@@ -90,7 +90,7 @@ export function drawLines(placed: Placed, options: DrawOptions, place: SheetPlac
       ...texts.filter((text) => text.box === null).map(({ text }) => ({ ref: text.ref, text: text.text, line: text.line })),
       ...dimensions.homeless.map((text) => ({ ref: text.ref, text: text.text, line: { from: text.from, to: text.to } })),
     ],
-    extent: paperBoxAround([...[...heavy, ...light].flatMap((s) => [s.from, s.to]), ...[...fixed, ...dimensions.numbers.map(({ box }) => box)].flatMap((box) => boxCorners(box))]),
+    extent: boxAroundBoxes(fixed, boxAroundBoxes(dimensions.numbers.map(({ box }) => box), boxAroundSegments(light, boxAroundSegments(heavy)))),
   };
 }
 

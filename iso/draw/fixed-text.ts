@@ -50,6 +50,6 @@ export function placeLineText(text: LineText, field: LabelField, heavy: InkMap, 
     }
   }
   if (!best) return { items: [], box: null, text };
-  field.add({ id: text.text, box: best, leader: null });
+  field.add(best);
   return { items: [centredText("dimension-text", text.ref, best.centre, text.text, { capMm: cap, rotateRad: angle })], box: best, text };
 }

@@ -6,7 +6,8 @@
  * Long because drawing into the bits and asking them belong together.
  */
 import type { PaperBox, PaperPoint } from "../geometry/types";
-import { boxCorners, type Segment, type TurnedBox } from "./plane";
+import { BOX_STRIDE, writeBox } from "./label-field";
+import { boxAroundBoxes, boxAroundSegments, type Segment, type TurnedBox } from "./plane";
 
 /** Cells to a millimetre. Cells of all maps stand on one raster, so that one sum finds a place in each of them. */
 export const CELLS_PER_MM = 2;
@@ -15,6 +16,8 @@ const CELL = 1 / CELLS_PER_MM;
 const RIM = 4;
 const MOST = 16_384;
 const ALL_BITS = 0xffffffff;
+/** Rows looked at together. */
+const TALL = 8;
 const scratch = new Float64Array(4);
 
 function bitCount(word: number): number {
@@ -31,6 +34,8 @@ export class InkMap {
   private readonly rows: number;
   private readonly words: number;
   private readonly bits: Uint32Array;
+  /** Made when first asked for, once all is drawn. */
+  private tall: Uint32Array | null = null;
 
   /** Blank cells over a box of paper and a rim round it. */
   constructor(minX: number, minY: number, maxX: number, maxY: number) {
@@ -41,6 +46,11 @@ export class InkMap {
     this.rows = blank ? 0 : Math.min(MOST, Math.ceil(maxY * CELLS_PER_MM) + RIM - this.top);
     this.words = (this.columns + 31) >>> 5;
     this.bits = new Uint32Array(this.words * this.rows);
+  }
+
+  /** True when nothing can be inked on it. */
+  get blank(): boolean {
+    return this.columns === 0;
   }
 
   /** True when a cell from (x0, y0) up to, not with, (x1, y1) of the raster is inked. Whole numbers only, since it is asked most. */
@@ -55,15 +65,30 @@ export class InkMap {
     const last = to >>> 5;
     const leftMask = ALL_BITS << (from & 31);
     const rightMask = ALL_BITS >>> (31 - (to & 31));
-    for (let row = top * words, end = bottom * words; row < end; row += words) {
+    const tall = bottom - top >= TALL;
+    const step = tall ? TALL : 1;
+    const list = tall ? (this.tall ??= this.risen()) : bits;
+    // Eight rows at a time; the last eight may have been seen in part.
+    for (let y = top; y < bottom; y += step) {
+      const row = (tall && y + TALL > bottom ? bottom - TALL : y) * words;
       if (first === last) {
-        if ((bits[row + first]! & leftMask & rightMask) !== 0) return true;
+        if ((list[row + first]! & leftMask & rightMask) !== 0) return true;
         continue;
       }
-      if ((bits[row + first]! & leftMask) !== 0 || (bits[row + last]! & rightMask) !== 0) return true;
-      for (let word = first + 1; word < last; word++) if (bits[row + word] !== 0) return true;
+      if ((list[row + first]! & leftMask) !== 0 || (list[row + last]! & rightMask) !== 0) return true;
+      for (let word = first + 1; word < last; word++) if (list[row + word] !== 0) return true;
     }
     return false;
+  }
+
+  /** Each word with those of the seven rows below it: what eight rows hold in one look. */
+  private risen(): Uint32Array {
+    const { words } = this;
+    const risen = this.bits.slice();
+    for (let rows = 1; rows < TALL; rows *= 2) {
+      for (let at = 0, end = risen.length - rows * words; at < end; at++) risen[at]! |= risen[at + rows * words]!;
+    }
+    return risen;
   }
 
   /** Inked cells from (x0, y0) up to, not with, (x1, y1) of the raster. */
@@ -73,7 +98,7 @@ export class InkMap {
     const to = Math.min(columns, x1 - this.left) - 1;
     const top = Math.max(0, y0 - this.top);
     const bottom = Math.min(rows, y1 - this.top);
-    if (to < from) return 0;
+    if (to < from || !this.anyCells(x0, y0, x1, y1)) return 0;
     const first = from >>> 5;
     const last = to >>> 5;
     const leftMask = ALL_BITS << (from & 31);
@@ -102,16 +127,17 @@ export class InkMap {
     return this.under(scratch);
   }
 
-  /** Inked cells met along a segment, its ends as four numbers in a list. */
-  under(ends: Float64Array): number {
+  /** Inked cells met along a segment, its ends as four numbers at a place in a list. */
+  under(ends: Float64Array, at = 0): number {
     const { bits, columns, rows, words } = this;
-    const wx = (ends[2]! - ends[0]!) * CELLS_PER_MM;
-    const wy = (ends[3]! - ends[1]!) * CELLS_PER_MM;
+    if (columns === 0) return 0;
+    const wx = (ends[at + 2]! - ends[at]!) * CELLS_PER_MM;
+    const wy = (ends[at + 3]! - ends[at + 1]!) * CELLS_PER_MM;
     const steps = Math.max(1, Math.ceil(Math.sqrt(wx * wx + wy * wy)));
     const stepX = wx / steps;
     const stepY = wy / steps;
-    let x = ends[0]! * CELLS_PER_MM - this.left;
-    let y = ends[1]! * CELLS_PER_MM - this.top;
+    let x = ends[at]! * CELLS_PER_MM - this.left;
+    let y = ends[at + 1]! * CELLS_PER_MM - this.top;
     let count = 0;
     for (let i = 0; i <= steps; i++) {
       if (x >= 0 && y >= 0 && x < columns && y < rows) count += (bits[(y | 0) * words + ((x | 0) >>> 5)]! >>> (x & 31)) & 1;
@@ -124,8 +150,9 @@ export class InkMap {
   /** Inks the cells within a thickness of a line. */
   drawLine(fromX: number, fromY: number, toX: number, toY: number, thicknessMm: number): void {
     const { bits, columns, rows, words } = this;
+    this.tall = null;
     const half = Math.floor((thicknessMm * CELLS_PER_MM) / 2);
-    const steps = Math.max(1, Math.ceil((Math.hypot(toX - fromX, toY - fromY) * CELLS_PER_MM) / 0.7));
+    const steps = Math.max(1, Math.ceil((Math.sqrt((toX - fromX) * (toX - fromX) + (toY - fromY) * (toY - fromY)) * CELLS_PER_MM) / 0.7));
     const stepX = ((toX - fromX) * CELLS_PER_MM) / steps;
     const stepY = ((toY - fromY) * CELLS_PER_MM) / steps;
     const startX = fromX * CELLS_PER_MM - this.left;
@@ -143,6 +170,7 @@ export class InkMap {
   /** Inks every cell a turned box reaches. */
   drawBox(box: TurnedBox): void {
     const { columns, rows, words, bits } = this;
+    this.tall = null;
     const originX = this.left * CELL;
     const originY = this.top * CELL;
     const c = Math.cos(box.angle);
@@ -164,16 +192,7 @@ export class InkMap {
 }
 
 export function inkMap(segments: readonly Segment[], thicknessMm: number): InkMap {
-  let minX = Infinity;
-  let minY = Infinity;
-  let maxX = -Infinity;
-  let maxY = -Infinity;
-  for (const { from, to } of segments) {
-    minX = Math.min(minX, from[0], to[0]);
-    minY = Math.min(minY, from[1], to[1]);
-    maxX = Math.max(maxX, from[0], to[0]);
-    maxY = Math.max(maxY, from[1], to[1]);
-  }
+  const { minX, minY, maxX, maxY } = boxAroundSegments(segments);
   const map = new InkMap(minX, minY, maxX, maxY);
   for (const { from, to } of segments) map.drawLine(from[0], from[1], to[0], to[1], thicknessMm);
   return map;
@@ -181,16 +200,7 @@ export function inkMap(segments: readonly Segment[], thicknessMm: number): InkMa
 
 /** Turned boxes, filled. */
 export function boxMap(boxes: readonly TurnedBox[]): InkMap {
-  let minX = Infinity;
-  let minY = Infinity;
-  let maxX = -Infinity;
-  let maxY = -Infinity;
-  for (const [x, y] of boxes.flatMap((box) => boxCorners(box))) {
-    minX = Math.min(minX, x);
-    minY = Math.min(minY, y);
-    maxX = Math.max(maxX, x);
-    maxY = Math.max(maxY, y);
-  }
+  const { minX, minY, maxX, maxY } = boxAroundBoxes(boxes);
   const map = new InkMap(minX, minY, maxX, maxY);
   for (const box of boxes) map.drawBox(box);
   return map;
@@ -202,23 +212,32 @@ export function boxInside(outer: PaperBox, minX: number, minY: number, maxX: num
 
 /** Ink under a turned box, sampled along four lines of it. */
 export function turnedInk(map: InkMap, box: TurnedBox): number {
-  const c = Math.cos(box.angle);
-  const s = Math.sin(box.angle);
-  const w = Math.abs(c) * box.halfWidth + Math.abs(s) * box.halfHeight;
-  const h = Math.abs(s) * box.halfWidth + Math.abs(c) * box.halfHeight;
-  const [cx, cy] = box.centre;
+  writeBox(turned, 0, box);
+  return turnedInkAt(map, turned);
+}
+
+/** As turnedInk, for a box at the beginning of a list (label-field.ts). */
+export function turnedInkAt(map: InkMap, box: Float64Array): number {
+  if (map.blank) return 0;
+  const cx = box[0]!;
+  const cy = box[1]!;
+  const w = box[6]!;
+  const h = box[7]!;
   if (!map.anyCells(Math.floor((cx - w) * CELLS_PER_MM), Math.floor((cy - h) * CELLS_PER_MM), Math.ceil((cx + w) * CELLS_PER_MM), Math.ceil((cy + h) * CELLS_PER_MM))) return 0;
+  const alongX = box[4]! * box[2]!;
+  const alongY = box[5]! * box[2]!;
   let ink = 0;
   for (let i = 0; i < ACROSS.length; i++) {
-    const x = cx - s * box.halfHeight * ACROSS[i]!;
-    const y = cy + c * box.halfHeight * ACROSS[i]!;
-    scratch[0] = x - c * box.halfWidth;
-    scratch[1] = y - s * box.halfWidth;
-    scratch[2] = x + c * box.halfWidth;
-    scratch[3] = y + s * box.halfWidth;
+    const x = cx - box[5]! * box[3]! * ACROSS[i]!;
+    const y = cy + box[4]! * box[3]! * ACROSS[i]!;
+    scratch[0] = x - alongX;
+    scratch[1] = y - alongY;
+    scratch[2] = x + alongX;
+    scratch[3] = y + alongY;
     ink += map.under(scratch);
   }
   return ink;
 }
 
+const turned = new Float64Array(BOX_STRIDE);
 const ACROSS = [-1, -0.33, 0.33, 1] as const;

@@ -58,7 +58,7 @@ export const LED = 4;
 const UNKNOWN = 8;
 
 /** Kept from sheet to sheet, since fresh memory costs more than what is written into it; one sheet is done at a time. */
-const pool = { at: new Float64Array(STRIDE * 32_768), flags: new Uint8Array(32_768), base: new Int32Array(32_768), over: new Int32Array(32_768), order: new Int32Array(32_768), keys: new Float64Array(MOST_IN_TIER) };
+const pool = { at: new Float64Array(STRIDE * 32_768), flags: new Uint8Array(32_768), base: new Int32Array(32_768), over: new Int32Array(32_768), order: new Int32Array(32_768), blocker: new Int32Array(32_768), blockedBy: new Int32Array(32_768), keys: new Float64Array(MOST_IN_TIER) };
 const ends = new Float64Array(4);
 
 export class Candidates {
@@ -70,6 +70,9 @@ export class Candidates {
   private over = pool.over;
   /** Candidates of tiers, cheapest first: those of a tier stand together. */
   order = pool.order;
+  /** Label last seen standing on a candidate, and its seat then: while it sits there the candidate is taken, unasked. */
+  blocker = pool.blocker;
+  blockedBy = pool.blockedBy;
   private count = 0;
   private readonly starts: Int32Array;
   private readonly ends: Int32Array;
@@ -181,7 +184,7 @@ export class Candidates {
     const marks = (led ? LED : 0) | UNKNOWN;
     const fixed = ring * COST_PER_MM + place * COST_OF_ANCHOR;
     if (this.count + count > this.flags.length) this.grow();
-    const { at, flags, base, over } = this;
+    const { at, flags, base, over, blocker } = this;
     const step = ring < HALF_ANGLES_UNDER || ring > HALF_ANGLES_OVER ? 2 : 1;
     for (let i = step === 2 ? Math.floor(ring + place) & 1 : 0; i < count; i += step) {
       const dx = ways[i]!;
@@ -216,6 +219,7 @@ export class Candidates {
       base[c] = fixed + axial[i]! + follows[i]!
         + (onPipe ? COST_OF_TOUCH + heavy.countCells(x0, y0, x1, y1) * COST_PER_CELL : 0) + (out > 0 ? COST_OUTSIDE + out * COST_PER_OUTSIDE : 0);
       over[c] = 0;
+      blocker[c] = -1;
       flags[c] = onPipe ? marks | BOX_TOUCHES : marks;
     }
   }
@@ -231,6 +235,8 @@ export class Candidates {
     this.base = pool.base = longer(this.base, new Int32Array(count));
     this.over = pool.over = longer(this.over, new Int32Array(count));
     this.order = pool.order = longer(this.order, new Int32Array(count));
+    this.blocker = pool.blocker = longer(this.blocker, new Int32Array(count));
+    this.blockedBy = pool.blockedBy = longer(this.blockedBy, new Int32Array(count));
   }
 }
 

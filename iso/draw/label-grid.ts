@@ -4,6 +4,7 @@
  * Long because its loops are written out: a call with fractions as arguments costs more than what they do.
  */
 import type { PaperBox } from "../geometry/types";
+import { CellLists, NONE } from "./cell-lists";
 import { FROM_X, FROM_Y, LED, STRIDE, TO_X, TO_Y, X, Y, type Candidates, type Label } from "./label-candidates";
 import { PRICE } from "./label-rings";
 
@@ -15,63 +16,6 @@ const COST_OF_LEADER_CROSSING = 14 * PRICE;
 const CELL = 10;
 /** Cells beyond the room on every side; what lies farther out is held in the outermost. */
 const RIM_CELLS = 4;
-const NONE = -1;
-
-/** Lists of labels by cell. */
-class CellLists {
-  private readonly head: Int32Array;
-  private item: Int32Array = new Int32Array(4096);
-  private next: Int32Array = new Int32Array(4096);
-  private free = NONE;
-  private used = 0;
-
-  constructor(cells: number) {
-    this.head = new Int32Array(cells).fill(NONE);
-  }
-
-  first(cell: number): number {
-    return this.head[cell]!;
-  }
-
-  after(node: number): number {
-    return this.next[node]!;
-  }
-
-  label(node: number): number {
-    return this.item[node]!;
-  }
-
-  add(cell: number, label: number): void {
-    let node = this.free;
-    if (node !== NONE) this.free = this.next[node]!;
-    else {
-      node = this.used++;
-      if (node >= this.item.length) [this.item, this.next] = [doubled(this.item), doubled(this.next)];
-    }
-    this.item[node] = label;
-    this.next[node] = this.head[cell]!;
-    this.head[cell] = node;
-  }
-
-  remove(cell: number, label: number): void {
-    let before = NONE;
-    for (let node = this.head[cell]!; node !== NONE; before = node, node = this.next[node]!) {
-      if (this.item[node] !== label) continue;
-      if (before === NONE) this.head[cell] = this.next[node]!;
-      else this.next[before] = this.next[node]!;
-      this.next[node] = this.free;
-      this.free = node;
-      return;
-    }
-  }
-}
-
-function doubled(list: Int32Array): Int32Array {
-  const longer = new Int32Array(list.length * 2);
-  longer.set(list);
-  return longer;
-}
-
 export class LabelGrid {
   /** Candidate each label sits on; NONE while it is lifted. */
   readonly seats: Int32Array;
@@ -84,6 +28,7 @@ export class LabelGrid {
   private readonly stamps: Int32Array;
   private stamp = 0;
   private met = 0;
+  private readonly one = new Int32Array(1);
   private readonly w: Float64Array;
   private readonly h: Float64Array;
 
@@ -123,32 +68,45 @@ export class LabelGrid {
     const y = at[o + Y]!;
     const w = this.w[label]!;
     const h = this.h[label]!;
-    this.inCells(this.boxes, label, x - w, y - h, x + w, y + h, add);
+    this.inCells(this.boxes, label, this.column(x - w), this.row(y - h), this.column(x + w), this.row(y + h), add);
     if ((flags[candidate]! & LED) === 0) return;
     const fx = at[o + FROM_X]!;
     const fy = at[o + FROM_Y]!;
     const tx = at[o + TO_X]!;
     const ty = at[o + TO_Y]!;
-    this.inCells(this.leaders, label, Math.min(fx, tx), Math.min(fy, ty), Math.max(fx, tx), Math.max(fy, ty), add);
+    this.inCells(this.leaders, label, this.column(Math.min(fx, tx)), this.row(Math.min(fy, ty)), this.column(Math.max(fx, tx)), this.row(Math.max(fy, ty)), add);
   }
 
-  private inCells(lists: CellLists, label: number, minX: number, minY: number, maxX: number, maxY: number, add: boolean): void {
-    const x1 = this.column(maxX);
-    const y1 = this.row(maxY);
-    for (let y = this.row(minY); y <= y1; y++) {
-      for (let x = this.column(minX); x <= x1; x++) {
+  /** Whole numbers only: fractions as arguments would be made on the heap. */
+  private inCells(lists: CellLists, label: number, x0: number, y0: number, x1: number, y1: number, add: boolean): void {
+    for (let y = y0; y <= y1; y++) {
+      for (let x = x0; x <= x1; x++) {
         if (add) lists.add(y * this.columns + x, label);
         else lists.remove(y * this.columns + x, label);
       }
     }
   }
 
-  /** True when a label stands where a candidate of a lifted one would. */
+  /** True when a label stands where a candidate of a lifted one would; asks first for the one that stood there last. */
   taken(label: number, candidate: number): boolean {
-    return this.boxesUnder(label, candidate, null) > 0;
+    const { blocker, blockedBy } = this.candidates;
+    const known = blocker[candidate]!;
+    if (known !== NONE && this.seats[known] === blockedBy[candidate]) return true;
+    const other = this.boxUnder(label, candidate);
+    blocker[candidate] = other;
+    if (other === NONE) return false;
+    blockedBy[candidate] = this.seats[other]!;
+    return true;
   }
 
-  /** Price of the leaders and labels a lifted label would meet on a free candidate. */
+  /** True when it is known without a look that a label that may not move stands on a candidate. */
+  heldBy(candidate: number, locked: Uint8Array): boolean {
+    const { blocker, blockedBy } = this.candidates;
+    const known = blocker[candidate]!;
+    return known !== NONE && locked[known] === 1 && this.seats[known] === blockedBy[candidate];
+  }
+
+  /** Price of the leaders and labels a label meets where it sits, or would meet on a free candidate. */
   meets(label: number, candidate: number): number {
     return this.weigh(label, candidate, null);
   }
@@ -167,7 +125,31 @@ export class LabelGrid {
     this.met++;
   }
 
-  private boxesUnder(label: number, candidate: number, list: Int32Array | null): number {
+  /** A label whose box a lifted one's would meet on a candidate. */
+  private boxUnder(label: number, candidate: number): number {
+    const { boxes, seats, columns } = this;
+    const { at } = this.candidates;
+    const o = candidate * STRIDE;
+    const x = at[o + X]!;
+    const y = at[o + Y]!;
+    const w = this.w[label]! + MARGIN;
+    const h = this.h[label]! + MARGIN;
+    const x0 = this.column(x - w);
+    const x1 = this.column(x + w);
+    const y1 = this.row(y + h);
+    for (let row = this.row(y - h); row <= y1; row++) {
+      for (let column = x0; column <= x1; column++) {
+        for (let node = boxes.first(row * columns + column); node !== NONE; node = boxes.after(node)) {
+          const other = boxes.label(node);
+          const p = seats[other]! * STRIDE;
+          if (Math.abs(at[p + X]! - x) < w + this.w[other]! && Math.abs(at[p + Y]! - y) < h + this.h[other]!) return other;
+        }
+      }
+    }
+    return NONE;
+  }
+
+  private boxesUnder(label: number, candidate: number, list: Int32Array): void {
     const { boxes, seats, columns } = this;
     const { at } = this.candidates;
     const o = candidate * STRIDE;
@@ -184,12 +166,10 @@ export class LabelGrid {
           const other = boxes.label(node);
           const p = seats[other]! * STRIDE;
           if (Math.abs(at[p + X]! - x) >= w + this.w[other]! || Math.abs(at[p + Y]! - y) >= h + this.h[other]!) continue;
-          if (!list) return 1;
           this.note(list, other);
         }
       }
     }
-    return 0;
   }
 
   /** Price of foreign leaders under the box, then of what its own leader meets. */
@@ -210,7 +190,7 @@ export class LabelGrid {
       for (let column = x0; column <= x1; column++) {
         for (let node = leaders.first(row * columns + column); node !== NONE; node = leaders.after(node)) {
           const other = leaders.label(node);
-          if (stamps[other] === stamp) continue;
+          if (other === label || stamps[other] === stamp) continue;
           stamps[other] = stamp;
           const p = seats[other]! * STRIDE;
           // The segment reaches the box when neither the axes nor its own normal part them.
@@ -226,11 +206,11 @@ export class LabelGrid {
       }
     }
     if ((flags[candidate]! & LED) === 0) return cost;
-    return cost + this.weighLeader(o, list);
+    return cost + this.weighLeader(label, o, list);
   }
 
   /** Price of the labels under a candidate's leader and of the leaders across it. */
-  private weighLeader(o: number, list: Int32Array | null): number {
+  private weighLeader(label: number, o: number, list: Int32Array | null): number {
     const { boxes, leaders, seats, stamps, columns } = this;
     const { at } = this.candidates;
     const fx = at[o + FROM_X]!;
@@ -244,13 +224,12 @@ export class LabelGrid {
     const y0 = this.row(Math.min(fy, ty));
     const y1 = this.row(Math.max(fy, ty));
     const onBox = ++this.stamp;
-    const onLeader = ++this.stamp;
     let cost = 0;
     for (let row = y0; row <= y1; row++) {
       for (let column = x0; column <= x1; column++) {
         for (let node = boxes.first(row * columns + column); node !== NONE; node = boxes.after(node)) {
           const other = boxes.label(node);
-          if (stamps[other] === onBox) continue;
+          if (other === label || stamps[other] === onBox) continue;
           stamps[other] = onBox;
           const p = seats[other]! * STRIDE;
           const ax = fx - at[p + X]!;
@@ -264,11 +243,12 @@ export class LabelGrid {
         }
       }
     }
+    const onLeader = ++this.stamp;
     for (let row = y0; row <= y1; row++) {
       for (let column = x0; column <= x1; column++) {
         for (let node = leaders.first(row * columns + column); node !== NONE; node = leaders.after(node)) {
           const other = leaders.label(node);
-          if (stamps[other] === onLeader) continue;
+          if (other === label || stamps[other] === onLeader) continue;
           stamps[other] = onLeader;
           const p = seats[other]! * STRIDE;
           const px = at[p + FROM_X]! - fx;
@@ -289,10 +269,8 @@ export class LabelGrid {
   touched(label: number): boolean {
     const candidate = this.seats[label]!;
     if (candidate < 0) return false;
-    this.seat(label, NONE);
-    const list = new Int32Array(1);
-    const met = this.metLabels(label, candidate, list);
-    this.seat(label, candidate);
-    return met > 0;
+    this.met = 0;
+    this.weigh(label, candidate, this.one);
+    return this.met > 0;
   }
 }

@@ -42,9 +42,11 @@ export interface Effort {
   readonly lastDepth: number;
   /** Places looked at for each label of the sheet before what is reached is left as it is. */
   readonly looks: number;
+  /** Tiers in which a label that is put out looks for another place. */
+  readonly movedTiers: number;
 }
-export const QUICK: Effort = { price: 20 * PRICE, lastDepth: 0, looks: 1_200 };
-export const THOROUGH: Effort = { price: 24 * PRICE, lastDepth: 1, looks: 10_500 };
+export const QUICK: Effort = { price: 20 * PRICE, lastDepth: 0, looks: 1_200, movedTiers: 9 };
+export const THOROUGH: Effort = { price: 24 * PRICE, lastDepth: 1, looks: 10_500, movedTiers: TIER_COUNT };
 
 export class LabelSearch {
   private readonly locked: Uint8Array;
@@ -54,6 +56,7 @@ export class LabelSearch {
   private looks = 0;
   private most = 0;
   private moves = 1;
+  private movedTiers = TIER_COUNT;
   private readonly tried: Int32Array;
   /** Last move in each zone of paper. */
   private readonly zones = new Map<number, number>();
@@ -64,11 +67,12 @@ export class LabelSearch {
   }
 
   /** Seats all labels; answers how many are left without a clean place. */
-  run({ price, lastDepth, looks }: Effort): number {
+  run({ price, lastDepth, looks, movedTiers }: Effort): number {
+    this.movedTiers = movedTiers;
     const order = this.labels.map((_, i) => i);
     const choice = order.map((i) => this.choices(i));
     order.sort((p, q) => choice[p]! - choice[q]! || p - q);
-    for (const label of order) this.insert(label, MOST_COST, 0);
+    for (const label of order) this.insert(label, MOST_COST, 0, TIER_COUNT);
     this.most = looks * this.labels.length;
     this.sweeps(order, this.candidates.leastCost(0), 0, 1);
     this.sweeps(order, price, DEPTH, ROUNDS);
@@ -83,7 +87,7 @@ export class LabelSearch {
       for (const label of this.uneasy(order, price)) {
         if (this.looks > this.most) return;
         if (round > 0 && !this.stirred(label)) continue;
-        if (this.improved(label, depth)) moved = true;
+        if (this.improved(label, price, depth)) moved = true;
         else this.tried[label] = this.moves;
       }
       if (!moved) return;
@@ -116,14 +120,12 @@ export class LabelSearch {
     const now = new Int32Array(order.length);
     for (const label of order) {
       const seat = this.grid.seats[label]!;
-      this.grid.seat(label, NONE);
       now[label] = seat === NONE ? 0 : this.price(label, seat);
-      this.grid.seat(label, seat);
     }
     return order.filter((label) => now[label]! > price).sort((p, q) => now[q]! - now[p]! || p - q);
   }
 
-  /** Price of a lifted label on a candidate, among the labels seated. */
+  /** Price of a label on a candidate, among the labels seated. */
   private price(label: number, candidate: number): number {
     return this.candidates.cost(label, candidate) + this.grid.meets(label, candidate);
   }
@@ -140,14 +142,15 @@ export class LabelSearch {
     }
   }
 
-  private improved(label: number, depth: number): boolean {
+  /** @param price a label that costs no more by now does not put out others */
+  private improved(label: number, price: number, depth: number): boolean {
     const { seats } = this.grid;
     const before = seats[label]!;
     if (before === NONE) return false;
     this.journal.length = 0;
     this.move(label, NONE);
     const today = this.price(label, before);
-    const net = today <= this.candidates.leastCost(0) ? MOST_COST : this.insert(label, today - LEAST_GAIN, depth);
+    const net = today <= this.candidates.leastCost(0) ? MOST_COST : this.insert(label, today - LEAST_GAIN, today > price ? depth : 0, TIER_COUNT);
     if (net < MOST_COST) {
       this.moves++;
       for (let i = 0; i < this.journal.length; i += 2) this.zones.set(this.zone(this.journal[i]!), this.moves);
@@ -161,8 +164,8 @@ export class LabelSearch {
    * Seats a lifted label, moving others when that gains.
    * @returns what the seats of all moved cost more than before; MOST_COST, with nothing changed, when that is not under the limit
    */
-  private insert(label: number, limit: number, depth: number): number {
-    const direct = this.best(label, limit);
+  private insert(label: number, limit: number, depth: number, tiers: number): number {
+    const direct = this.best(label, limit, tiers);
     const place = this.found;
     if (depth > 0 && direct > EASY) {
       const net = this.insertMoving(label, Math.min(limit, direct), depth);
@@ -174,11 +177,11 @@ export class LabelSearch {
   }
 
   /** The cheapest free place under the limit; `found` says where. */
-  private best(label: number, limit: number): number {
+  private best(label: number, limit: number, tiers: number): number {
     const { candidates, grid } = this;
     let best = limit;
     this.found = NONE;
-    for (let tier = 0; tier < TIER_COUNT; tier++) {
+    for (let tier = 0; tier < tiers; tier++) {
       if (candidates.leastCost(tier) >= best || (tier >= LAST_USUAL && this.found !== NONE)) break;
       const start = candidates.start(label, tier);
       const end = candidates.end(label, tier);
@@ -209,6 +212,7 @@ export class LabelSearch {
         const candidate = candidates.order[k]!;
         if (candidates.base[candidate]! >= limit - LEAST_GAIN) break;
         this.looks++;
+        if (this.grid.heldBy(candidate, this.locked)) continue;
         const met = this.met[depth]!;
         const count = this.grid.metLabels(label, candidate, met);
         if (count === 0 || count > MOST_MOVED || this.anyLocked(met, count) || candidates.cost(label, candidate) >= limit - LEAST_GAIN) continue;
@@ -242,7 +246,7 @@ export class LabelSearch {
     }
     let net = this.price(label, candidate) - credit;
     this.move(label, candidate);
-    for (let i = 0; i < count && net < limit; i++) net += this.insert(met[i]!, limit - net, depth - 1);
+    for (let i = 0; i < count && net < limit; i++) net += this.insert(met[i]!, limit - net, depth - 1, this.movedTiers);
     if (net < limit) return net;
     this.undoTo(mark);
     return MOST_COST;

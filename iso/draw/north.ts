@@ -35,7 +35,7 @@ export function northPass(projection: Projection, room: PaperBox, heavy: InkMap,
   // Every corner taken: stand outside the room, above it, which the bounds then report.
   const centre: PaperPoint = best ?? clearAbove(room, field);
   const box: TurnedBox = { centre, halfWidth: HALF_WIDTH, halfHeight: HALF_HEIGHT, angle: 0 };
-  field.add({ id: "north", box, leader: null });
+  field.add(box);
   return { items: northItems(projection, [centre[0], centre[1] - 2.5], measure), box };
 }
 

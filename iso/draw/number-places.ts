@@ -1,5 +1,6 @@
 /** Numbers of dimensions step aside along their own lines where a leader has to pass, or where they stand on pipe. */
-import { textBox, type DimensionText } from "./dimension-lines";
+import { textBox } from "./dimension-lines";
+import type { DimensionText } from "./dimension-shape";
 import { turnedInk, type InkMap } from "./ink-map";
 import { boxesMeet, segmentInBox, type Segment, type TurnedBox } from "./plane";
 

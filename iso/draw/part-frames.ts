@@ -35,10 +35,25 @@ function strokeDirection(projection: Projection, d: DrawnEdge): PaperPoint {
 /** Cosine on paper above which two legs at a point count as one line. */
 const SAME_LINE = 0.97;
 
+/** Kept while the drawn legs are: symbols, marks and notes all ask for them. */
+const known = new WeakMap<readonly DrawnEdge[], readonly PartFrame[]>();
+
 export function partFrames(placed: Placed, drawn: readonly DrawnEdge[]): readonly PartFrame[] {
+  const frames = known.get(drawn) ?? framesOf(placed, drawn);
+  known.set(drawn, frames);
+  return frames;
+}
+
+function framesOf(placed: Placed, drawn: readonly DrawnEdge[]): readonly PartFrame[] {
   const items = new Map(placed.sketch.model.document.runs.flatMap((run) => run.points.map((point) => [point.id, point.item] as const)));
   const at = new Map<string, DrawnEdge[]>();
-  for (const d of drawn) for (const id of [d.edge.from, d.edge.to]) at.set(id, [...(at.get(id) ?? []), d]);
+  for (const d of drawn) {
+    for (const id of [d.edge.from, d.edge.to]) {
+      const there = at.get(id);
+      if (there) there.push(d);
+      else at.set(id, [d]);
+    }
+  }
   return drawn.flatMap((d) =>
     ([[d.edge.fromArm.parts, d.edge.from, d.from, 1], [d.edge.toArm.parts, d.edge.to, d.to, -1]] as const).flatMap(([parts, vertex, origin, sign]) => {
       const run = runBeside(d, at.get(vertex) ?? []);

@@ -94,11 +94,11 @@ export function centredBox(centre: PaperPoint, width: number, capMm: number, ang
 
 /** Moves an item; passes draw where they stand and the fit moves all at once. */
 export function itemMoved(item: DisplayItem, by: PaperPoint): DisplayItem {
-  const move = (p: PaperPoint): PaperPoint => [p[0] + by[0], p[1] + by[1]];
-  if (item.type === "line") return { ...item, from: move(item.from), to: move(item.to) };
-  if (item.type === "text") return { ...item, at: move(item.at) };
-  return {
-    ...item,
-    segments: item.segments.map((s) => (s.op === "Z" ? s : s.op === "C" ? { op: "C", c1: move(s.c1), c2: move(s.c2), to: move(s.to) } : { op: s.op, to: move(s.to) })),
-  };
+  if (item.type === "line") return { ...item, from: moved(item.from, by), to: moved(item.to, by) };
+  if (item.type === "text") return { ...item, at: moved(item.at, by) };
+  const segments: PathSegment[] = [];
+  for (const s of item.segments) segments.push(s.op === "Z" ? s : s.op === "C" ? { op: "C", c1: moved(s.c1, by), c2: moved(s.c2, by), to: moved(s.to, by) } : { op: s.op, to: moved(s.to, by) });
+  return { ...item, segments };
 }
+
+const moved = (p: PaperPoint, by: PaperPoint): PaperPoint => [p[0] + by[0], p[1] + by[1]];

@@ -18,7 +18,7 @@ export interface TurnedBox {
 
 /** Unit vector; [1, 0] for a vector of no length, so that drawing stays finite on bad input. */
 export function paperDirection(a: PaperPoint): PaperPoint {
-  const length = Math.hypot(a[0], a[1]);
+  const length = Math.sqrt(a[0] * a[0] + a[1] * a[1]);
   return length < PAPER_EPS ? [1, 0] : [a[0] / length, a[1] / length];
 }
 
@@ -148,12 +148,38 @@ export function paperBoxAround(points: readonly PaperPoint[], start: PaperBox = 
   return { minX, minY, maxX, maxY };
 }
 
+/** Box round segments and a box. */
+export function boxAroundSegments(segments: readonly Segment[], start: PaperBox = EMPTY_BOX): PaperBox {
+  let { minX, minY, maxX, maxY } = start;
+  for (const { from, to } of segments) {
+    minX = Math.min(minX, from[0], to[0]);
+    minY = Math.min(minY, from[1], to[1]);
+    maxX = Math.max(maxX, from[0], to[0]);
+    maxY = Math.max(maxY, from[1], to[1]);
+  }
+  return { minX, minY, maxX, maxY };
+}
+
+/** Box round turned boxes and a box. */
+export function boxAroundBoxes(boxes: readonly TurnedBox[], start: PaperBox = EMPTY_BOX): PaperBox {
+  let { minX, minY, maxX, maxY } = start;
+  for (const box of boxes) {
+    const [w, h] = boxReach(box);
+    const [x, y] = box.centre;
+    minX = Math.min(minX, x - w);
+    minY = Math.min(minY, y - h);
+    maxX = Math.max(maxX, x + w);
+    maxY = Math.max(maxY, y + h);
+  }
+  return { minX, minY, maxX, maxY };
+}
+
 /** Turn of a line, radians in (-90°, 90°], so that text along it reads from the bottom or from the right. */
 export function readingAngle(direction: PaperPoint): number {
-  let [x, y] = paperDirection(direction);
+  const [x, y] = paperDirection(direction);
   // A tolerance, so that solver noise cannot flip upright text.
-  if (x < -PAPER_EPS * 1e3 || (Math.abs(x) <= PAPER_EPS * 1e3 && y > 0)) [x, y] = [-x, -y];
-  return Math.atan2(y, x);
+  const turned = x < -PAPER_EPS * 1e3 || (Math.abs(x) <= PAPER_EPS * 1e3 && y > 0);
+  return turned ? Math.atan2(-y, -x) : Math.atan2(y, x);
 }
 
 /** Part of `a`-`b` left after cutting out [from, to] intervals given as distances from a. */

@@ -123,9 +123,11 @@ function optionsFor(plan: PlacePlan, layout: Layout, { a, b, cost }: Conflict): 
     };
     const [aLow, aHigh] = sorted(a);
     const [bLow, bHigh] = sorted(b);
-    const pairs = [[aHigh, bLow], [bHigh, aLow], [aLow, bLow], [bLow, aLow]] as const;
+    const pairs: (readonly [number, number])[] = [];
+    for (const pair of [[aHigh, bLow], [bHigh, aLow], [aLow, bLow], [bLow, aLow]] as const) {
+      if (pair[0] < pair[1] && !pairs.some((other) => other[0] === pair[0] && other[1] === pair[1])) pairs.push(pair);
+    }
     return pairs
-      .filter(([low, high], i) => low < high && pairs.findIndex((pair) => pair[0] === low && pair[1] === high) === i)
       .flatMap(([low, high]) => (cost >= PRICE_LAID ? STEPS_LAID : STEPS).map((step) => ({ axis, row: { a: low, b: high, least: layout.x[axis][high]! - layout.x[axis][low]! + step, target: null } })));
   });
 }

@@ -82,21 +82,10 @@ export function legShape(leg: Leg): { readonly real: Vec3; readonly kind: EdgeKi
  * @param share what of it this sheet shows; null = all
  */
 export function sketchOf(given: Model, spool: string | null, share: SheetShare | null = null): Sketch {
-  const model = paperModel(given);
-  const meets = meetingPoints(model);
-  const vertexOf = (pointId: string): string => meets.get(pointId) ?? pointId;
-  const nodes = new Map(model.nodes.map((node) => [node.pointId, node]));
-  const componentsAt = groupBy(model.components, (component) => vertexOf(component.pointId));
-  const piecesOf = piecesOfLegs(model);
-  const legs = model.legs.filter((leg) => nodes.has(leg.fromPointId) && nodes.has(leg.toPointId));
+  const { model, vertexOf, nodes, componentsAt, legs } = groundOf(given);
   const own = ownParts(model, spool, share);
   const vertices = new Map<string, SketchVertex>();
-  const drafts = legs.map((leg): LegDraft => {
-    const [from, to] = [vertexOf(leg.fromPointId), vertexOf(leg.toPointId)];
-    const arms: LegDraft["arms"] = [armAlong(componentsAt.get(from) ?? [], leg.from, leg.direction), armAlong(componentsAt.get(to) ?? [], leg.to, vecScale(leg.direction, -1))];
-    const pieces = piecesOf.get(leg.id) ?? [];
-    return { leg, from, to, arms, pieces, own: (share === null || share.legs.has(leg.id)) && legIsOwn(leg, arms, pieces, spool) };
-  });
+  const drafts = legs.map((drawn): LegDraft => ({ ...drawn, own: (share === null || share.legs.has(drawn.leg.id)) && legIsOwn(drawn, spool) }));
   const inside = new Set<string>();
   for (const draft of drafts) if (draft.own) inside.add(draft.from).add(draft.to);
   for (const component of model.components) if (own.has(component.id)) inside.add(vertexOf(component.pointId));
@@ -123,20 +112,58 @@ export function sketchOf(given: Model, spool: string | null, share: SheetShare |
   };
 }
 
-interface LegDraft {
+interface GroundLeg {
   readonly leg: Leg;
   readonly from: string;
   readonly to: string;
+  readonly real: Vec3;
+  readonly kind: EdgeKind;
   readonly arms: readonly [Arm, Arm];
   readonly pieces: readonly Piece[];
+}
+
+interface LegDraft extends GroundLeg {
   readonly own: boolean;
+}
+
+/** What all sketches of a model have in common. */
+interface Ground {
+  readonly model: Model;
+  readonly vertexOf: (pointId: string) => string;
+  readonly nodes: ReadonlyMap<string, Node>;
+  readonly componentsAt: ReadonlyMap<string, readonly Component[]>;
+  readonly legs: readonly GroundLeg[];
+}
+
+/** Kept while its model is: a line on several sheets is sketched once for each of them, and once whole. */
+const grounds = new WeakMap<Model, Ground>();
+
+function groundOf(given: Model): Ground {
+  const known = grounds.get(given);
+  if (known) return known;
+  const model = paperModel(given);
+  const meets = meetingPoints(model);
+  const vertexOf = (pointId: string): string => meets.get(pointId) ?? pointId;
+  const nodes = new Map(model.nodes.map((node) => [node.pointId, node]));
+  const componentsAt = groupBy(model.components, (component) => vertexOf(component.pointId));
+  const piecesOf = piecesOfLegs(model);
+  const legs: GroundLeg[] = [];
+  for (const leg of model.legs) {
+    if (!nodes.has(leg.fromPointId) || !nodes.has(leg.toPointId)) continue;
+    const [from, to] = [vertexOf(leg.fromPointId), vertexOf(leg.toPointId)];
+    const arms: GroundLeg["arms"] = [armAlong(componentsAt.get(from) ?? [], leg.from, leg.direction), armAlong(componentsAt.get(to) ?? [], leg.to, vecScale(leg.direction, -1))];
+    legs.push({ leg, from, to, ...legShape(leg), arms, pieces: piecesOf.get(leg.id) ?? [] });
+  }
+  const ground: Ground = { model, vertexOf, nodes, componentsAt, legs };
+  grounds.set(given, ground);
+  return ground;
 }
 
 /** Longest real length of a neighbour's leg that counts for where its stub points, mm. */
 const STUB_REAL_MM = 400;
 
 function edgeOf(draft: LegDraft, inside: ReadonlySet<string>, share: SheetShare | null, vertices: Map<string, SketchVertex>): readonly SketchEdge[] {
-  const { leg, from, to, arms, pieces, own } = draft;
+  const { leg, from, to, real, kind, arms, pieces, own } = draft;
   const stub = inside.has(from) ? (inside.has(to) ? null : "to") : inside.has(to) ? "from" : "outside";
   if (stub === "outside") return [];
   const loose = `${leg.id}~stub`;
@@ -145,14 +172,14 @@ function edgeOf(draft: LegDraft, inside: ReadonlySet<string>, share: SheetShare 
   if (stub === "from") vertices.set(loose, { id: loose, node: null, position: vecAddScaled(leg.to, leg.direction, -reach) });
   const near = stub === "to" ? from : to;
   return [{
-    id: leg.id, leg, ...legShape(leg), stub, neighbour: !own, pieces, beyond: stub !== null && share !== null && !share.points.has(near),
+    id: leg.id, leg, real, kind, stub, neighbour: !own, pieces, beyond: stub !== null && share !== null && !share.points.has(near),
     from: stub === "from" ? loose : from, to: stub === "to" ? loose : to,
     fromArm: stub === "from" ? NO_ARM : arms[0], toArm: stub === "to" ? NO_ARM : arms[1],
   }];
 }
 
 /** A leg is the spool's own when a piece of it is, or when it has no pipe and the fittings at both ends are. */
-function legIsOwn(leg: Leg, arms: readonly [Arm, Arm], pieces: readonly Piece[], spool: string | null): boolean {
+function legIsOwn({ arms, pieces }: GroundLeg, spool: string | null): boolean {
   if (spool === null || pieces.some((piece) => piece.spool === spool)) return true;
   return pieces.length === 0 && arms.every((arm) => arm.parts.some((part) => part.component.spool === spool));
 }

@@ -28,7 +28,7 @@ export function slopePass(placed: Placed, drawn: readonly DrawnEdge[], field: La
     const text = typed.get(d.edge.leg.id) ?? slopeText(d.edge.leg, units);
     const box = slopeBox(d, measure(text, size.TEXT_CAP, "regular"), field, heavy, light);
     if (!box) return { items: [], light: [], boxes: [] };
-    field.add({ id: `slope ${d.edge.id}`, box, leader: null });
+    field.add(box);
     return slopeInk(d, text, box);
   });
   return { items: parts.flatMap((p) => p.items), light: parts.flatMap((p) => p.light), boxes: parts.flatMap((p) => p.boxes) };
