@@ -3,7 +3,7 @@
 import { zodResolver } from "@hookform/resolvers/zod";
 import { useDeferredValue, useMemo } from "react";
 import { useForm, useWatch } from "react-hook-form";
-import { fitOfClosing, flangeBolts, solverInput, vecUnit, type CloseBetweenInput, type ClosingFound, type FitFace, type LineSettings, type Nps, type Vec3 } from "@/iso";
+import { fitOfClosing, flangeBolts, solverInput, vecUnit, type CloseBetweenInput, type ClosingFound, type FitFace, type FitTrim, type LineSettings, type Nps, type Vec3 } from "@/iso";
 import { Select, TextField } from "@/components/ui/field";
 import { Notice } from "@/components/ui/notice";
 import { FitFields, LIMIT_FIELDS, SHOP_FIELDS } from "./fit-fields";
@@ -23,6 +23,9 @@ export interface FitPanelProps {
   readonly lineId: string | null;
   readonly nps: Nps;
   readonly settings: LineSettings;
+  /** Joint whose field-fit weld is to go into the run, and the choice of it; absent where nothing is inserted. */
+  readonly taken?: string | null;
+  readonly onTake?: ((trim: FitTrim | null) => void) | undefined;
 }
 
 const TARGETS = ["0.8", "0.9", "0.95", "0.99"].map((value) => ({ value, label: `${Math.round(Number(value) * 100)} in 100` }));
@@ -81,7 +84,7 @@ interface FitAnswerProps extends FitPanelProps {
   readonly survey: SurveySource | null;
 }
 
-function FitAnswer({ input, answer, surveyedIds, nps, settings, values: newest, survey }: FitAnswerProps) {
+function FitAnswer({ input, answer, surveyedIds, nps, settings, taken, onTake, values: newest, survey }: FitAnswerProps) {
   const values = useDeferredValue(newest);
   const closing = useMemo(() => solverInput(input), [input]);
   const axes = useMemo(() => [closing.d0, closing.d1].map((axis) => vecUnit(axis) ?? axis) as [Vec3, Vec3], [closing]);
@@ -104,7 +107,7 @@ function FitAnswer({ input, answer, surveyedIds, nps, settings, values: newest, 
         <div className="mt-5 space-y-6">
           <section aria-label="Trim">
             <h4 className="font-bold">Field-fit weld and trim</h4>
-            <FitTrims trims={result.trims} target={values.target} units={input.units} />
+            <FitTrims trims={result.trims} target={values.target} units={input.units} taken={taken} onTake={onTake} />
           </section>
           <section aria-label="Mismatches">
             <h4 className="font-bold">How far it may miss</h4>

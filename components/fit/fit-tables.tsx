@@ -1,8 +1,10 @@
 /** What is off where: the mismatches with their ±, what each reading and tolerance adds, and where to trim. */
 import { chanceNumber, trimWords, type FitContribution, type FitJudged, type FitMismatch, type FitResult, type FitTrim, type FitUp, type UnitSystem, type Vec3 } from "@/iso";
+import { Check } from "@/components/ui/field";
 import { Table } from "@/components/ui/table";
 import { CONDITION_WORDS, mismatchWords } from "./fit-words";
 import { limitText, withinText } from "./length-text";
+import { canTake } from "./take-trim";
 
 interface MismatchProps {
   readonly result: FitResult;
@@ -42,6 +44,12 @@ export function FitMismatches({ result, fitUp, units, axis, flanged }: MismatchP
       </p>
     </>
   );
+}
+
+function takeCell(trim: FitTrim, taken: string | null, onTake: (trim: FitTrim | null) => void) {
+  if (!canTake(trim) || trim.trimMm <= 0) return null;
+  const on = taken === trim.jointId;
+  return <Check label="Insert as FFW" checked={on} onChange={() => onTake(on ? null : trim)} />;
 }
 
 /** What is most likely to stop it, by itself. */
@@ -98,7 +106,16 @@ function ContributionList({ rows }: { readonly rows: readonly FitContribution[] 
   );
 }
 
-export function FitTrims({ trims, target, units }: { readonly trims: readonly FitTrim[]; readonly target: number; readonly units: UnitSystem }) {
+export interface FitTrimsProps {
+  readonly trims: readonly FitTrim[];
+  readonly target: number;
+  readonly units: UnitSystem;
+  /** Joint whose field-fit weld goes into the run, and how it is chosen; absent where nothing can be inserted. */
+  readonly taken?: string | null | undefined;
+  readonly onTake?: ((trim: FitTrim | null) => void) | undefined;
+}
+
+export function FitTrims({ trims, target, units, taken, onTake }: FitTrimsProps) {
   if (trims.length === 0) return <p>No pipe of this piece can be left long: there is no joint for a field-fit weld.</p>;
   return (
     <>
@@ -111,6 +128,7 @@ export function FitTrims({ trims, target, units }: { readonly trims: readonly Fi
           { key: "trim", head: "Leave on", className: "figure", cell: ({ trimMm }) => trimWords(trimMm, units) },
           { key: "chance", head: "Then fits", className: "figure", cell: ({ probability }) => `${chanceNumber(probability)} in 100` },
           { key: "reach", head: `For ${Math.round(100 * target)}`, cell: ({ reached, atMost }) => (reached ? "enough" : `not by trim: ${chanceNumber(atMost)} at most`) },
+          ...(onTake ? [{ key: "take", head: "Into the run", cell: (trim: FitTrim) => takeCell(trim, taken ?? null, onTake) }] : []),
         ]}
       />
       <p className="mt-2 text-sm text-soft">

@@ -1,7 +1,8 @@
 "use client";
 import { useDeferredValue, useMemo, useState, type ChangeEvent } from "react";
-import { closeBetween, type Model, type Nps, type RunDocument, type TakeOutWord } from "@/iso";
+import { closeBetween, trimWords, type FitTrim, type Model, type Nps, type RunDocument, type TakeOutWord } from "@/iso";
 import { FitPanel } from "@/components/fit/fit-panel";
+import { withFieldFit } from "@/components/fit/take-trim";
 import { Button } from "@/components/ui/button";
 import { Dialog, DialogActions } from "@/components/ui/dialog";
 import { Select, TextField } from "@/components/ui/field";
@@ -68,6 +69,9 @@ function ClosingView(props: CloseDialogProps) {
   const answer = useMemo(() => (read.ok ? closeBetween(read.input) : null), [read]);
   const [stamp] = useState(props.stamp);
   const plan = useMemo(() => (read.ok && answer?.ok ? planInsert(settled, answer, read.input, model, stamp) : null), [read, answer, settled, model, stamp]);
+  const [trim, setTrim] = useState<{ readonly of: unknown; readonly taken: FitTrim | null }>({ of: null, taken: null });
+  const fieldFit = trim.of === answer ? trim.taken : null;
+  const inserted = plan?.ok && answer?.ok && fieldFit ? withFieldFit(plan.document, answer, stamp.ids, fieldFit) : plan?.ok ? plan.document : null;
   const messages = read.ok ? {} : read.messages;
   const setEnd = (name: "end0" | "end1") => (end: EndForm) =>
     setForm((now) => ({ ...now, [name]: end, nps: sizeTaken(model, now[name], end) ?? now.nps }));
@@ -84,13 +88,13 @@ function ClosingView(props: CloseDialogProps) {
       </div>
       <section aria-label="Answer" aria-live="polite" className="mt-6 border-t border-ink pt-4">
         {answer === null || !read.ok ? <p className="text-soft">The answer stands here once both ends are complete.</p> : <ClosingAnswer form={settled} input={read.input} answer={answer} model={model} takeOuts={takeOuts} />}
-        {read.ok && answer?.ok ? <FitPanel key={units} input={read.input} answer={answer} surveyedIds={[settled.end0.surveyed?.endId ?? null, settled.end1.surveyed?.endId ?? null]} lineId={props.lineId ?? null} nps={settled.nps} settings={model.document.settings} /> : null}
+        {read.ok && answer?.ok ? <FitPanel key={units} input={read.input} answer={answer} surveyedIds={[settled.end0.surveyed?.endId ?? null, settled.end1.surveyed?.endId ?? null]} lineId={props.lineId ?? null} nps={settled.nps} settings={model.document.settings} taken={fieldFit?.jointId ?? null} onTake={props.onInsert && plan?.ok ? (taken) => setTrim({ of: answer, taken }) : undefined} /> : null}
       </section>
       {props.onInsert ? (
         <>
-          {plan ? <p className="mt-4 text-sm text-soft">{plan.ok ? plan.words : plan.message}</p> : null}
+          {plan ? <p className="mt-4 text-sm text-soft">{plan.ok ? plan.words : plan.message}{fieldFit ? ` Field-fit weld at ${fieldFit.joint}: leave ${trimWords(fieldFit.trimMm, units)} on.` : ""}</p> : null}
           <DialogActions>
-            <Button tone="primary" disabled={!plan?.ok} onClick={() => plan?.ok && props.onInsert?.(plan.document)}>
+            <Button tone="primary" disabled={!inserted} onClick={() => inserted && props.onInsert?.(inserted)}>
               Insert into the run
             </Button>
           </DialogActions>
