@@ -80,7 +80,7 @@ function PackageForm({ job, sheets, onClose }: { readonly job: JobDetail; readon
         </Notice>
       ) : null}
       <SheetChoice sheets={sheets} chosen={new Set(chosen)} onChange={(ids) => setValue("revisionIds", [...ids], { shouldValidate: true })} error={errors.revisionIds?.message} />
-      <div className="mb-4 grid gap-3 sm:grid-cols-3">
+      <div className="mb-4 grid gap-3 sm:grid-cols-3 sm:items-end">
         <Select label="File" options={FILES} value={file === "pdf" ? "pdf" : `zip-${copies}`} onChange={(event) => setFile(event.target.value)} />
         <Select label="Paper of added pages" options={papers()} value={paper ?? ""} onChange={(event) => setValue("paper", (event.target.value || null) as PackageFormValues["paper"])} />
         <TextField label="Title" hint="Empty: its lines" maxLength={120} error={errors.title?.message} {...register("title")} />

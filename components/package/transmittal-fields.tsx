@@ -17,7 +17,7 @@ export function TransmittalFields({ form }: { readonly form: UseFormReturn<Packa
         onChange={(event) => setValue("transmittal", event.target.checked ? { number: "", date: today, purpose: "", recipient: "", replyBy: "", remark: "" } : null)}
       />
       {isTransmittal ? (
-        <div className="mt-2 grid gap-3 sm:grid-cols-3">
+        <div className="mt-2 grid gap-3 sm:grid-cols-3 sm:items-end">
           <TextField label="Number" figure maxLength={40} error={of?.number?.message} {...register("transmittal.number")} />
           <TextField label="Date" type="date" error={of?.date?.message} {...register("transmittal.date")} />
           <TextField label="Reply by" hint="Empty: none asked for" type="date" error={of?.replyBy?.message} {...register("transmittal.replyBy")} />

@@ -15,7 +15,7 @@ import { sha256Text } from "@/lib/server/tokens";
 import { Job, Package, PackageSheet, Revision, Shop } from "@/models";
 
 /** Small packages are cut finer, so that their bar moves, too. */
-const PART_SHEETS = { few: 4, many: 20, manyFrom: 100 } as const;
+const PART_SHEETS = { few: 2, many: 20, manyFrom: 100 } as const;
 
 /** @throws Refusal 404 for a sheet that is not the job's; 409 for one that is not to be packed any more, or a transmittal's number used before. */
 export async function askForPackage(context: CommandContext, jobId: string, form: PackageNewForm): Promise<{ id: string }> {

@@ -10,11 +10,12 @@ import { runCommand, type CommandContext } from "@/lib/server/command";
 import { getDb } from "@/lib/server/database";
 import { enqueue } from "@/lib/server/queue";
 import { inShop, type ShopMember } from "@/lib/server/scope";
+import { settings } from "@/lib/server/settings";
 import { deleteObject, type StoredObject } from "@/lib/server/storage";
 import { Package, PackagePart } from "@/models";
 
-/** How long a worker is believed to be at it after its last word. */
-const BELIEVED = "10 seconds";
+/** How long a worker is believed to be at it after its last word, as PostgreSQL writes it. */
+const believed = () => `interval '${settings().PACKAGE_SILENCE_S} seconds'`;
 /** Workers that may die over one package before it is given up. */
 export const MOST_TAKES = 60;
 /** An object put by a worker that died may arrive in the store this long after, ms: the longest a put is waited for, and some. */
@@ -36,7 +37,7 @@ export type TakenUp =
 export async function takeUpPackage(hold: PackageHold): Promise<TakenUp> {
   return runCommand(null, "unlogged", async ({ tx }) => {
     const taken = await updateRow(hold, tx,
-      `state = 'making', worker = $worker, worker_until = now() + interval '${BELIEVED}', takes = takes + 1`,
+      `state = 'making', worker = $worker, worker_until = now() + ${believed()}, takes = takes + 1`,
       `(state = 'waiting' OR (state = 'making' AND worker_until < now()))`);
     const one = await inShop(hold).one(Package, hold.packageId, tx);
     if (taken) return { kind: "mine", source: packageSource(one), takes: one.takes };
@@ -46,7 +47,7 @@ export async function takeUpPackage(hold: PackageHold): Promise<TakenUp> {
 
 /** Says that the worker is still at it. @returns false when it is not its any more: cancelled, or taken over. */
 export async function keepPackage(hold: PackageHold): Promise<boolean> {
-  return runCommand(null, "unlogged", ({ tx }) => updateRow(hold, tx, `worker_until = now() + interval '${BELIEVED}'`, MINE));
+  return runCommand(null, "unlogged", ({ tx }) => updateRow(hold, tx, `worker_until = now() + ${believed()}`, MINE));
 }
 
 const MINE = `state = 'making' AND worker = $worker`;

@@ -9,11 +9,12 @@ import { sheetWorks } from "@/lib/queries/package-work";
 import type { PackageSource } from "@/lib/rules/packages";
 import { log } from "@/lib/server/log";
 import type { QueueData } from "@/lib/server/queue";
+import { settings } from "@/lib/server/settings";
 import { deleteObject, objectKey, putObject, sha256Hex } from "@/lib/server/storage";
 import { packageThreads } from "./package-threads";
 
-/** Time between two words to the others that this worker is at it, ms; well under what it is believed for. */
-const WORD_EVERY_MS = 2_500;
+/** Words to the others that this worker is at it, in the time it is believed without one. */
+const WORDS_IN_SILENCE = 4;
 /** Trouble this often in a row ends a package. */
 const MOST_TROUBLES = 5;
 
@@ -35,7 +36,7 @@ async function make(hold: PackageHold, source: PackageSource, takes: number): Pr
     keepPackage(hold).then((mine) => {
       if (!mine) wanted.abort();
     }, () => undefined);
-  }, WORD_EVERY_MS);
+  }, (settings().PACKAGE_SILENCE_S * 1000) / WORDS_IN_SILENCE);
   try {
     await prepareParts(hold, source, wanted.signal);
     if (!wanted.signal.aborted) await join(hold, source);

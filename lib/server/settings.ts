@@ -31,6 +31,8 @@ const settingsSchema = z.object({
   WORK_QUEUE: flag.default(true),
   /** Threads that prepare a package's sheets; absent = one per processor, four at most. */
   PACKAGE_THREADS: z.coerce.number().int().min(1).max(16).optional(),
+  /** A worker that says nothing of its package for so long counts as dead, seconds. */
+  PACKAGE_SILENCE_S: z.coerce.number().int().min(1).max(600).default(10),
 });
 
 export type Settings = z.infer<typeof settingsSchema>;
