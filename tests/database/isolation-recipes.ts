@@ -7,6 +7,7 @@ import * as shopLogo from "@/app/api/shop/logo/route";
 import * as jobLogo from "@/app/api/jobs/[jobId]/logo/route";
 import * as invitations from "@/app/api/shop/invitations/route";
 import * as nests from "@/app/api/jobs/[jobId]/nests/route";
+import * as packages from "@/app/api/jobs/[jobId]/packages/route";
 import * as offcuts from "@/app/api/shop/offcuts/route";
 import * as uploads from "@/app/api/lines/[lineId]/uploads/route";
 import * as hold from "@/app/api/revisions/[revisionId]/hold/route";
@@ -57,6 +58,18 @@ const nest = async (shop: TestShop) => {
   return made(call(nests.POST, { as: shop.owner, method: "POST", params: { jobId }, body: { spoolIds: [spoolId], saw: "Band saw", seconds: 1 } }));
 };
 const onNest = () => foreign(async (shop) => ({ params: { nestId: await nest(shop) } }));
+const madeOf = async (shop: TestShop, more: object = {}) => {
+  const { jobId, revisionId } = await signed(shop);
+  return made(call(packages.POST, { as: shop.owner, method: "POST", params: { jobId }, body: { revisionIds: [revisionId], form: "pdf", ...more } }));
+};
+const readyPackage = async (shop: TestShop, more: object = {}) => {
+  const packageId = await madeOf(shop, more);
+  const { runPackageJob } = await import("@/lib/jobs/package-job");
+  await runPackageJob({ shopId: shop.shopId, packageId });
+  return packageId;
+};
+const onPackage = () => foreign(async (shop) => ({ params: { packageId: await madeOf(shop) } }));
+const onReadyPackage = () => foreign(async (shop) => ({ params: { packageId: await readyPackage(shop) } }));
 const reason = { body: { reason: "A reason to read", verified: true } };
 const member = (more: Omit<Call, "method"> = {}) => foreign(async (shop) => ({ params: { membershipId: (await addMember(shop.shopId, "fitter")).membershipId }, ...more }));
 
@@ -117,6 +130,20 @@ export const RECIPES: Readonly<Record<string, Recipe>> = {
   "POST /jobs/[jobId]/nests": foreign(async (shop) => {
     const { jobId, spoolIds } = await newLine(shop);
     return { params: { jobId }, body: { spoolIds, saw: "Band saw" } };
+  }),
+  "GET /jobs/[jobId]/packages": onJob(),
+  "GET /jobs/[jobId]/packages/sheets": onJob(),
+  "POST /jobs/[jobId]/packages": foreign(async (shop) => {
+    const { jobId, revisionId } = await signed(shop);
+    return { params: { jobId }, body: { revisionIds: [revisionId], form: "pdf" } };
+  }),
+  "GET /packages/[packageId]": onPackage(),
+  "POST /packages/[packageId]/cancel": onPackage(),
+  "POST /packages/[packageId]/again": onPackage(),
+  "GET /packages/[packageId]/file": onReadyPackage(),
+  "POST /packages/[packageId]/receipt": foreign(async (shop) => {
+    const transmittal = { number: "T-1", date: "2026-12-01", purpose: "For fabrication", recipient: "Cannery", replyBy: "", remark: "" };
+    return { params: { packageId: await readyPackage(shop, { transmittal }) }, body: { receivedBy: "J. Cole", receivedOn: "2026-12-03" } };
   }),
   "GET /nests/[nestId]": onNest(),
   "GET /nests/[nestId]/export": onNest(),

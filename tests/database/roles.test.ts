@@ -21,6 +21,8 @@ import * as sign from "@/app/api/revisions/[revisionId]/sign/route";
 import * as voided from "@/app/api/revisions/[revisionId]/void/route";
 import * as shopLogo from "@/app/api/shop/logo/route";
 import * as shopRoute from "@/app/api/shop/route";
+import * as packages from "@/app/api/jobs/[jobId]/packages/route";
+import * as packageSheets from "@/app/api/jobs/[jobId]/packages/sheets/route";
 import * as offcuts from "@/app/api/shop/offcuts/route";
 import * as draftSheet from "@/app/api/spools/[spoolId]/sheet/route";
 import * as spoolRoute from "@/app/api/spools/[spoolId]/route";
@@ -74,6 +76,8 @@ const ROWS: readonly Row[] = [
   { what: "put an offcut on the rack", handler: offcuts.POST, method: "POST", may: "ynnn", make: () => ({ body: { nps: "4", schedule: "STD", material: "ASTM A106 Gr B", lengthMm: 700, heat: "" } }) },
   { what: "read the rack", handler: offcuts.GET, method: "GET", may: "yyyy", make: () => ({}) },
   { what: "ask for a cutting plan", handler: nests.POST, method: "POST", may: "yynn", needs: "line", make: ({ jobId, spoolIds }) => ({ params: { jobId }, body: { spoolIds: [spoolIds[0]!], saw: "Band saw" } }) },
+  { what: "read packages", handler: packages.GET, method: "GET", may: "yyyy", needs: "line", make: ({ jobId }) => ({ params: { jobId } }) },
+  { what: "read the sheets that may be packed", handler: packageSheets.GET, method: "GET", may: "yyyy", needs: "line", make: ({ jobId }) => ({ params: { jobId } }) },
   { what: "read cutting plans", handler: nests.GET, method: "GET", may: "yyyy", needs: "line", make: ({ jobId }) => ({ params: { jobId } }) },
   { what: "read settings", handler: shopRoute.GET, method: "GET", may: "yyyy", make: () => ({}) },
   { what: "read people", handler: people.GET, method: "GET", may: "yyyy", make: () => ({}) },

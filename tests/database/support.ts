@@ -113,7 +113,7 @@ export async function call(handler: unknown, { as = null, method = "GET", params
 }
 
 function payload(method: string, body: unknown, file: Call["file"]): BodyInit | undefined {
-  if (method === "GET") return undefined;
+  if (method === "GET" || method === "HEAD") return undefined;
   if (file !== undefined) {
     const form = new FormData();
     form.append("file", new File([file.bytes.slice().buffer], file.name));

@@ -10,19 +10,16 @@ const params = z.object({ packageId: idSchema });
 /** One whose sheets are not all current is handed out for the record only, when asked for as such. */
 const query = z.object({ outdated: z.literal("1").optional() });
 
-/** The package as a stream. Every sheet in it counts as printed by whoever takes it, or any part of it. */
+/**
+ * The package as a stream. Every sheet in it counts as printed by whoever takes it, or any part of it. Asked by HEAD, which
+ * is answered here too, it tells size and name, and nothing counts as taken.
+ */
 export const GET = read("packages.make", {
   params,
   query,
   run: async (viewer, { params, query, request }) => {
     const found = await packageToTake(viewer, params.packageId, query.outdated === "1");
+    if (request.method === "HEAD") return packageHead(found);
     return openPackage(found, request, (isBeginning) => runCommand(viewer, "logged", (context) => takePackage(context, found.one, isBeginning)));
   },
-});
-
-/** Size and name, and that it may be taken in parts; nothing counts as taken. */
-export const HEAD = read("packages.make", {
-  params,
-  query,
-  run: async (viewer, { params, query }) => packageHead(await packageToTake(viewer, params.packageId, query.outdated === "1")),
 });
