@@ -21,7 +21,7 @@ const KINDS = [
   { value: "box", label: "a box" },
 ];
 
-const FIRST: Readonly<Partial<Record<KeepOutForm["kind"], string>>> = { above: "Level", below: "Level", sphere: "Centre, E, N, U", box: "One corner, E, N, U" };
+const FIRST: Readonly<Partial<Record<KeepOutForm["kind"], string>>> = { above: "Level", below: "Level", sphere: "Center, E, N, U", box: "One corner, E, N, U" };
 
 /** What the pipe must keep clear of, one row each. */
 export function KeepOuts({ value, units, onChange }: KeepOutsProps) {

@@ -36,7 +36,7 @@ export function WayCard({ way, units, rank, onInsert, refusal }: WayCardProps) {
         <dl className="mt-2 grid grid-cols-2 gap-x-5 gap-y-1 text-sm sm:grid-cols-4">
           <Fact label="Welds" value={String(way.welds)} />
           <Fact label="Trimmed cuts" value={String(way.trimmedCuts)} />
-          <Fact label="Centre line" value={tape(way.lengthMm)} />
+          <Fact label="Center line" value={tape(way.lengthMm)} />
           <Fact label="Weight, empty" value={way.weightKg === null ? "not known" : formatWeight(way.weightKg, units)} />
           <Fact label="Pipe to cut" value={way.cuts.length === 0 ? "none" : way.cuts.map(exact).join(", ")} wide />
           <Fact label="Shortest pup" value={way.minimumPupMm === null ? "no pipe" : exact(way.minimumPupMm)} />

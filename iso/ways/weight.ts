@@ -31,7 +31,7 @@ export function wayWeight(problem: WaysProblem, turns: readonly WayTurn[], strai
     if (turn.fitting.make === "mitre") continue;
     const table = tableWeight(problem, turn);
     kg += table?.kg ?? run(turn.nps, turn.radiusMm * turn.angleRad);
-    sources.add(table?.source ?? "bends as pipe along the centre line");
+    sources.add(table?.source ?? "bends as pipe along the center line");
   }
   return { weightKg: kg, weightSource: [...sources].join("; ") };
 }
