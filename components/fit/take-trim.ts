@@ -14,16 +14,17 @@ export function canTake({ jointId }: Pick<FitTrim, "jointId">): boolean {
 
 /**
  * The document with that weld made to fit in the field.
- * @param bendIds ids of the inserted elbows' points, in the order of the closing's bends.
+ * @param before the document without the closing: its elbows are those that were not there.
  */
-export function withFieldFit(document: RunDocument, answer: Pick<ClosingFound, "bends">, bendIds: readonly string[], { jointId, trimMm }: TakenTrim): RunDocument {
-  const at = answer.bends.findIndex(({ end }) => jointId === `elbow${end}`);
-  const id = bendIds[at];
-  if (at < 0 || id === undefined) return document;
+export function withFieldFit(document: RunDocument, before: RunDocument, answer: Pick<ClosingFound, "bends">, { jointId, trimMm }: TakenTrim): RunDocument {
+  const known = new Set(before.runs.flatMap((run) => run.points.map(({ id }) => id)));
+  const elbows = document.runs.flatMap((run) => run.points.filter(({ id, item }) => item.kind === "elbow" && !known.has(id)));
+  const elbow = elbows[answer.bends.findIndex(({ end }) => jointId === `elbow${end}`)];
+  if (!elbow) return document;
   const side = jointId === "elbow0" ? "out" : "in";
   const runs = document.runs.map((run) => ({
     ...run,
-    points: run.points.map((point) => (point.id === id ? { ...point, places: { ...point.places, [side]: "field-fit" as const }, trimMm } : point)),
+    points: run.points.map((point) => (point === elbow ? { ...point, places: { ...point.places, [side]: "field-fit" as const }, trimMm } : point)),
   }));
   return { ...document, runs };
 }

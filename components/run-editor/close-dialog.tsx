@@ -71,7 +71,7 @@ function ClosingView(props: CloseDialogProps) {
   const plan = useMemo(() => (read.ok && answer?.ok ? planInsert(settled, answer, read.input, model, stamp) : null), [read, answer, settled, model, stamp]);
   const [trim, setTrim] = useState<{ readonly of: unknown; readonly taken: FitTrim | null }>({ of: null, taken: null });
   const fieldFit = trim.of === answer ? trim.taken : null;
-  const inserted = plan?.ok && answer?.ok && fieldFit ? withFieldFit(plan.document, answer, stamp.ids, fieldFit) : plan?.ok ? plan.document : null;
+  const inserted = plan?.ok && answer?.ok && fieldFit ? withFieldFit(plan.document, model.document, answer, fieldFit) : plan?.ok ? plan.document : null;
   const messages = read.ok ? {} : read.messages;
   const setEnd = (name: "end0" | "end1") => (end: EndForm) =>
     setForm((now) => ({ ...now, [name]: end, nps: sizeTaken(model, now[name], end) ?? now.nps }));
