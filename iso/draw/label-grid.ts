@@ -16,6 +16,7 @@ const COST_OF_LEADER_CROSSING = 14 * PRICE;
 const CELL = 10;
 /** Cells beyond the room on every side; what lies farther out is held in the outermost. */
 const RIM_CELLS = 4;
+
 export class LabelGrid {
   /** Candidate each label sits on; NONE while it is lifted. */
   readonly seats: Int32Array;

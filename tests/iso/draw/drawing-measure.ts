@@ -65,6 +65,9 @@ const boxOf = (points: readonly PaperPoint[]): Box => ({
   x0: Math.min(...points.map((p) => p[0])), y0: Math.min(...points.map((p) => p[1])), x1: Math.max(...points.map((p) => p[0])), y1: Math.max(...points.map((p) => p[1])),
 });
 const apart = (a: Box, b: Box, margin = 0): boolean => a.x0 > b.x1 + margin || b.x0 > a.x1 + margin || a.y0 > b.y1 + margin || b.y0 > a.y1 + margin;
+/** As `apart` for the box round a line, which is not made: most lines are nowhere near. */
+const lineApart = ({ a, b }: Line, box: Box, margin: number): boolean =>
+  (a[0] > box.x1 + margin && b[0] > box.x1 + margin) || (a[0] < box.x0 - margin && b[0] < box.x0 - margin) || (a[1] > box.y1 + margin && b[1] > box.y1 + margin) || (a[1] < box.y0 - margin && b[1] < box.y0 - margin);
 const lineBox = ({ a, b }: Line): Box => ({ x0: Math.min(a[0], b[0]), y0: Math.min(a[1], b[1]), x1: Math.max(a[0], b[0]), y1: Math.max(a[1], b[1]) });
 
 function cubicPoint(p: readonly [PaperPoint, PaperPoint, PaperPoint, PaperPoint], t: number): PaperPoint {
@@ -147,7 +150,7 @@ function pointToLine(p: PaperPoint, l: Line): number {
 
 /** True when a drawn line, with its width, comes upon a part. */
 function lineOnPart(line: Line, part: Part): boolean {
-  if (apart(lineBox(line), part.box, line.half)) return false;
+  if (lineApart(line, part.box, line.half)) return false;
   if (inside(line.a, part.corners) || inside(line.b, part.corners)) return true;
   return part.corners.some((a, i) => {
     const b = part.corners[(i + 1) % part.corners.length]!;
@@ -163,7 +166,7 @@ const pointOf = (id: string): string => id.split(/[.:]/)[0] ?? id;
 function leaderOnHeavy(leader: Line, heavy: readonly Line[], symbols: ReadonlySet<Line>): boolean {
   const box = lineBox(leader);
   return heavy.some((line) => {
-    if (apart(box, lineBox(line))) return false;
+    if (lineApart(line, box, 0)) return false;
     const at = crossingAt(leader, line);
     if (at === null) return false;
     return at > LEADER_START && !(symbols.has(line) && pointOf(line.id) === pointOf(leader.id));
@@ -218,9 +221,12 @@ export function measureDrawing(drawing: Pick<Drawing, "items">): DrawingMeasure 
   });
   const pairs = (lines: readonly Line[], others: readonly Line[] | null): number => {
     let count = 0;
-    lines.forEach((l, i) => (others ?? lines.slice(i + 1)).forEach((m) => {
-      if (!apart(lineBox(l), lineBox(m)) && crossingAt(l, m) !== null) count++;
-    }));
+    lines.forEach((l, i) => {
+      const box = lineBox(l);
+      (others ?? lines.slice(i + 1)).forEach((m) => {
+        if (!lineApart(m, box, 0) && crossingAt(l, m) !== null) count++;
+      });
+    });
     return count;
   };
   const free = labels.filter((label) => label.layer !== "dimension-text");
