@@ -136,16 +136,16 @@ const PlannedCard = memo(function PlannedCard({ way, rank, input, units, plan, o
 function SearchState({ shown: { search, cancel, again } }: { readonly shown: WaysShown }) {
   const words = {
     waiting: "The search of three elbows starts in a moment.",
-    running: `Three elbows: ${search.found === 0 ? "searching" : `${search.found} found so far`}.`,
+    running: "Three elbows: searching.",
     stopped: `Three elbows: stopped. ${search.found} found until then stand in the list.`,
     finished: `Three elbows: ${search.found === 0 ? "none found" : `${search.found} ways found, the best of them listed`}.`,
   }[search.state];
   return (
-    <div className="mt-4 flex flex-wrap items-center gap-x-5 gap-y-2 border-l-[3px] border-dye pl-3" role="status">
-      <span>{words}</span>
+    <div className="mt-4 flex flex-wrap items-center gap-x-5 gap-y-2 border-l-[3px] border-dye pl-3">
+      <span role="status">{words}</span>
       {search.state === "running" ? (
         <>
-          {search.total > 0 ? <Progress className="w-44" done={search.done} of={search.total} word="rows of elbows" /> : null}
+          {search.total > 0 ? <Progress className="w-64" done={search.done} of={search.total} word={`rows of elbows, ${search.found} ways so far`} /> : null}
           <Button onClick={cancel}>Cancel the search</Button>
         </>
       ) : null}

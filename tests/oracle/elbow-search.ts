@@ -7,8 +7,8 @@
  */
 export type P = readonly [number, number, number];
 
-/** Inches, NPS 4: ASME B16.9 centre to end of LR 90 and LR 45 (6, 2 1/2), OD 4 1/2 (B36.10M). */
-export const NPS4 = { od: 4.5, reach: new Map([[90, 6], [45, 2.5]]), radius: 6 };
+/** Inches, NPS 4: ASME B16.9 centre to end of LR 90 and LR 45 (6, 2 1/2), OD 4 1/2 (B36.10M); 60 and 30 on a radius of 6 by 6·tan 30° and 6·tan 15°. */
+export const NPS4 = { od: 4.5, reach: new Map([[90, 6], [60, 6 / Math.sqrt(3)], [45, 2.5], [30, 6 * (2 - Math.sqrt(3))]]), radius: 6 };
 
 export interface Ends { p0: P; d0: P; p1: P; d1: P; gap: number; leastPup: number }
 
@@ -98,10 +98,10 @@ function nearest(f: (x: number) => number, from: number, to: number): number {
 export interface Found { angles: number[]; directions: P[]; lengths: number[] }
 
 /** All two-elbow closings that are out of one plane, with lengths that fit. */
-export function twoElbowSearch(ends: Ends): Found[] {
+export function twoElbowSearch(ends: Ends, stock: readonly number[] = [90, 45]): Found[] {
   const found: Found[] = [];
-  for (const a of [90, 45]) {
-    for (const b of [90, 45]) {
+  for (const a of stock) {
+    for (const b of stock) {
       for (const u of twoElbowDirections(ends, [a * RAD, b * RAD])) {
         const lengths = eliminated([ends.d0, u, minus(ends.d1)], plus(ends.p1, ends.p0, -1));
         const reaches = [NPS4.reach.get(a)!, NPS4.reach.get(b)!];

@@ -43,6 +43,28 @@ describe("ways that take a saw", () => {
     expect(pair[0]?.warnings.join(" ")).toContain("confirm with the engineer that trimming is permitted");
   });
 
+  it("welds elbow to elbow where just one gap is between them: S = sqrt(v² + h² - 2hRs) = g (closed form of parallel ends)", () => {
+    const [h, g] = [6, 0.125];
+    const v = Math.sqrt(g * g - h * h + 2 * h * 12);
+    const pair = found(quickWays(question({ ...OFFSET, p1: [v + 2 * g, h, 0] }))).find((way) => way.kind === "trimmed-pair");
+    expect(pair).toMatchObject({ cuts: [], welds: 3, minimumPupMm: null });
+    // Half a set of 6 on R 6 turns 60 degrees: 6 = 12 (1 - cos θ), but for the gap.
+    expect(((pair?.turns[0]?.angleRad ?? 0) * 180) / Math.PI).toBeGreaterThan(59);
+    expect(((pair?.turns[0]?.angleRad ?? 0) * 180) / Math.PI).toBeLessThan(60);
+  });
+
+  it("keeps the straights asked for at the ends, with pipe in them and never an elbow welded on", () => {
+    const asked = question(ROLLING);
+    const ways = [...found(quickWays({ ...asked, end0: { ...asked.end0, straightMm: 12 * IN } })), ...threeElbowWays({ ...asked, end0: { ...asked.end0, straightMm: 12 * IN } }).ways];
+    expect(ways.length).toBeGreaterThan(10);
+    for (const way of ways.filter((each) => each.kind !== "mitre")) {
+      const first = way.straights[0]!;
+      const reach = way.turns[0]!.takeOutMm;
+      expect(first.cutMm, way.id).not.toBeNull();
+      expect(first.lengthMm - reach - IN / 8, way.id).toBeGreaterThan(12 * IN - MEETS_MM);
+    }
+  });
+
   it("joins one whole and one trimmed elbow, on either side, each laid by another program, never trimmed past what is allowed", () => {
     const random = seededRandom(12);
     let count = 0;
