@@ -21,7 +21,8 @@ beforeEach(() => {
   sent.length = 0;
   vi.stubGlobal("fetch", async (path: string, init?: RequestInit) => {
     if (init?.method === "POST") sent.push({ path, body: JSON.parse(String(init.body)) });
-    return new Response(JSON.stringify(init?.method === "POST" ? { ok: true } : rows), { status: 200, headers: { "content-type": "application/json" } });
+    const named = path === "/api/jobs/j" ? { number: "26-114", title: "Pump house" } : path === "/api/spools/s" ? { letter: "A", line: { number: "4-CW-1101" } } : rows;
+    return new Response(JSON.stringify(init?.method === "POST" ? { ok: true } : named), { status: 200, headers: { "content-type": "application/json" } });
   });
 });
 afterEach(() => {
@@ -55,11 +56,13 @@ describe("the list to print", () => {
     expect(byHolder(rows.filter((one) => one.withdraw)).map(({ by, copies }) => [by, ...copies.map(({ id }) => id)])).toEqual([["Ola Berg", "3", "2"], ["Pat Ruiz", "1"]]);
     alone(<WithdrawalList path="/api/jobs/j/copies" of="job" back="/jobs/j" />);
     expect((await screen.findAllByRole("heading", { level: 2 })).map((heading) => heading.textContent)).toEqual(["Ola Berg, 2 copies", "Pat Ruiz, 1 copy"]);
-    expect(screen.getByText(/3 copies still out/)).toBeTruthy();
+    expect(screen.getByText(/3 copies still out on /)).toBeTruthy();
+    expect(await screen.findByRole("heading", { level: 1, name: "Job 26-114, Pump house" })).toBeTruthy();
     cleanup();
     rows = [row("4", { withdraw: false })];
     alone(<WithdrawalList path="/api/spools/s/copies" of="spool" back="/spools/s" />);
     expect(await screen.findByText("Nothing to withdraw")).toBeTruthy();
+    expect(await screen.findByRole("heading", { level: 1, name: "4-CW-1101 spool A" })).toBeTruthy();
   });
 });
 
