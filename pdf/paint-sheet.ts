@@ -4,6 +4,7 @@ import type { PaperBox, SheetPage } from "@/iso";
 import { escapeMetadata } from "./document-metadata";
 import { ItemPainter } from "./item-painter";
 import { logoKind, paintLogo } from "./logo";
+import { unprintableNote } from "./unprintable";
 import { addSignatureField, withoutRoomWord, type SignatureFacts } from "./signature-field";
 
 /** Points (1/72 in) in a millimetre. */
@@ -84,6 +85,8 @@ function paintPage(document: PDFKit.PDFDocument, painter: ItemPainter, page: She
   const content = document.markStructureContent("Sect");
   painter.startPage();
   for (const item of page.items) painter.paint(item);
+  const note = unprintableNote(page);
+  if (note) painter.paint(note);
   if (logo !== null && page.logoBox !== null) paintLogoBox(document, painter, logo, page.logoBox);
   document.endMarkedContent();
   return document.struct("Sect", { title: page.name }, [content]);

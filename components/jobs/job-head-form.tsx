@@ -1,8 +1,9 @@
 "use client";
 import { zodResolver } from "@hookform/resolvers/zod";
-import { useForm } from "react-hook-form";
+import { useForm, useWatch } from "react-hook-form";
 import { Button } from "@/components/ui/button";
 import { Check, Select, TextField } from "@/components/ui/field";
+import { missingGlyphs } from "@/components/ui/missing-glyphs";
 import { Notice } from "@/components/ui/notice";
 import { useFormSend } from "@/components/ui/use-form-send";
 import type { JobDetail } from "@/lib/rules/api-types";
@@ -30,11 +31,12 @@ export interface JobHeadFormProps {
 /** Number, title, client, area, sheet size and plant north. */
 export function JobHeadForm({ job, editable, onSave }: JobHeadFormProps) {
   const { number, title, client, area, open, sheetSize, plantNorthDeg } = job;
-  const { register, handleSubmit, setError, watch, formState } = useForm<JobSettingsForm>({
+  const { register, control, handleSubmit, setError, watch, formState } = useForm<JobSettingsForm>({
     resolver: zodResolver(schema),
     values: { number, title, client, area, open, sheetSize, plantNorthDeg },
     resetOptions: { keepDirtyValues: true },
   });
+  const printed = useWatch({ control, name: ["title", "client", "area"] });
   const { trouble, send } = useFormSend(setError, FIELDS);
   const { errors } = formState;
   return (
@@ -46,9 +48,9 @@ export function JobHeadForm({ job, editable, onSave }: JobHeadFormProps) {
       ) : null}
       <fieldset disabled={!editable} className="grid gap-4 sm:grid-cols-2 xl:grid-cols-4">
         <TextField label="Job number" figure error={errors.number?.message} {...register("number")} />
-        <TextField label="Title" error={errors.title?.message} {...register("title")} />
-        <TextField label="Client" error={errors.client?.message} {...register("client")} />
-        <TextField label="Area or unit" error={errors.area?.message} {...register("area")} />
+        <TextField label="Title" error={errors.title?.message} caution={missingGlyphs(printed[0] ?? "")} {...register("title")} />
+        <TextField label="Client" error={errors.client?.message} caution={missingGlyphs(printed[1] ?? "")} {...register("client")} />
+        <TextField label="Area or unit" error={errors.area?.message} caution={missingGlyphs(printed[2] ?? "")} {...register("area")} />
         <Select
           label="Sheet size"
           options={SHEET_OPTIONS}

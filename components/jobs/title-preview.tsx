@@ -1,6 +1,6 @@
 "use client";
 import { useDeferredValue, useMemo, useState } from "react";
-import { composeSheet, emptyMarks, inkBounds, newRunDocument, type LineSettings, type Point, type RunDocument, type SheetInput, type SheetPage, type SheetSize, type TitleBlock } from "@/iso";
+import { composeSheet, emptyMarks, inkBounds, newRunDocument, type LineSettings, type PaperBox, type Point, type RunDocument, type SheetInput, type SheetPage, type SheetSize, type TitleBlock } from "@/iso";
 import { measureText } from "@/fonts/widths";
 import { DisplaySvg } from "@/components/sheet/display-svg";
 import { ChoiceRow } from "@/components/ui/choice-row";
@@ -36,10 +36,9 @@ export function TitlePreview({ titleBlock, chosenLogo, size, settings, line }: T
 }
 
 function PageSvg({ page, href, whole }: { readonly page: SheetPage; readonly href: string | null; readonly whole: boolean }) {
-  const block = useMemo(() => inkBounds(page.items.filter((item) => item.layer === "title"), measureText), [page]);
+  const block = useMemo(() => blockBounds(page), [page]);
   const logo = page.logoBox;
-  const [minX, minY] = [Math.min(block.minX, logo?.minX ?? block.minX) - 3, Math.min(block.minY, logo?.minY ?? block.minY) - 3];
-  const box = whole ? `0 0 ${page.widthMm} ${page.heightMm}` : `${minX} ${minY} ${block.maxX + 3 - minX} ${block.maxY + 3 - minY}`;
+  const box = whole ? `0 0 ${page.widthMm} ${page.heightMm}` : `${block.minX - AROUND} ${block.minY - AROUND} ${block.maxX - block.minX + 2 * AROUND} ${block.maxY - block.minY + 2 * AROUND}`;
   return (
     <div className="overflow-x-auto border border-ink bg-white" role="region" aria-label="Preview of the title block" tabIndex={0}>
       <svg viewBox={box} role="img" aria-label={whole ? "First page as it would print" : "Title block as it would print"} className="drawn block h-auto w-full min-w-[34rem] bg-white">
@@ -48,6 +47,17 @@ function PageSvg({ page, href, whole }: { readonly page: SheetPage; readonly hre
       </svg>
     </div>
   );
+}
+
+/** Shown round the title block, mm. */
+const AROUND = 3;
+
+/** Where the title block stands: the framed boxes that are not as wide as the paper's own frame. */
+function blockBounds(page: SheetPage): PaperBox {
+  const frames = page.items.filter((item) => item.layer === "frame").map((item) => inkBounds([item], measureText));
+  const widest = Math.max(...frames.map((box) => box.maxX - box.minX));
+  const parts = frames.filter((box) => box.maxX - box.minX < widest - 1);
+  return parts.reduce((all, box) => ({ minX: Math.min(all.minX, box.minX), minY: Math.min(all.minY, box.minY), maxX: Math.max(all.maxX, box.maxX), maxY: Math.max(all.maxY, box.maxY) }), parts[0] ?? { minX: 0, minY: 0, maxX: page.widthMm, maxY: page.heightMm });
 }
 
 function firstPage(titleBlock: TitleBlock, size: SheetSize, settings: LineSettings, line: TitlePreviewProps["line"]): SheetPage | null {

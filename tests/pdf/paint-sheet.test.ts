@@ -56,7 +56,10 @@ describe("painting", () => {
   it("prints what has no glyph as a visible substitute and names it", async () => {
     const page = pageOf([textItem("配管 A", 20)]);
     expect(unprintableCharacters([page])).toEqual(["配", "管"]);
-    expect(pdfText(await paint(page.items))).toContain(`${SUBSTITUTE}${SUBSTITUTE} A`);
+    const text = pdfText(await paint(page.items));
+    expect(text).toContain(`${SUBSTITUTE}${SUBSTITUTE} A`);
+    expect(text).toContain(`NOT PRINTED HERE, shown as ${SUBSTITUTE}: U+914D, U+7BA1.`);
+    expect(pdfText(await paint([textItem("PIPE A", 20)]))).not.toContain("NOT PRINTED");
   });
 
   it("sets text as wide as it was measured, in every face and turned", async () => {
