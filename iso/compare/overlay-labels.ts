@@ -32,6 +32,8 @@ export interface RowLabels {
 export function rowLabels(rows: readonly CompareRow[], a: InkSide, b: InkSide, united: ReadonlySet<string>, measure: MeasureText): RowLabels {
   const groups = new Map<string, { readonly spot: Spot; readonly rows: Map<CompareKind | "was", number[]> }>();
   const placed = new Set<number>();
+  /** Earlier points that a word stands at. */
+  const told = new Set<string>();
   const add = (spot: Spot | null, kind: CompareKind | "was", no: number): void => {
     if (!spot) return;
     const key = spot.anchors[0]!.map((c) => c.toFixed(1)).join(" ");
@@ -46,14 +48,40 @@ export function rowLabels(rows: readonly CompareRow[], a: InkSide, b: InkSide, u
     const now = row.kind === "removed" ? null : spotOf(at, b);
     const then = now && row.kind !== "moved" ? null : spotOf(at, a);
     add(now ?? then, row.kind, row.no);
-    if (now && row.kind === "moved" && !united.has(at.id)) add(then, "was", row.no);
+    if (then && !now) told.add(a.placed.sketch.vertexOf(pointIdOf(at, a)));
+    if (!now || row.kind !== "moved" || united.has(at.id)) continue;
+    add(then, "was", row.no);
+    told.add(a.placed.sketch.vertexOf(at.id));
   }
-  return { placed, labels: [...groups].map(([key, { spot, rows: of }]) => labelOf(key, spot, of, measure)) };
+  return { placed, labels: [...[...groups].map(([key, { spot, rows: of }]) => labelOf(key, spot, of, measure)), ...carriedLabels(a, united, told, measure)] };
 }
 
 function labelOf(key: string, spot: Spot, rows: ReadonlyMap<CompareKind | "was", readonly number[]>, measure: MeasureText): Label {
   const lines = ORDER.filter((kind) => rows.has(kind)).map((kind) => ({ text: `${kind === "was" ? "WAS HERE" : KIND_WORDS[kind]} ${rangesText(rows.get(kind)!)}`, bold: true }));
   return blockLabel(lines, { id: `rows ${key}`, anchors: spot.anchors, clear: spot.clear, along: spot.along }, spot.ref, measure);
+}
+
+const pointIdOf = (at: Ref, { joints }: InkSide): string => (at.kind === "joint" ? (joints.find(({ joint }) => joint.key === at.id)?.joint.pointId ?? at.id) : at.id);
+
+/** What was carried along by a change elsewhere has no row of its own: where it stood gets the word alone, once for what hangs together. */
+function carriedLabels({ placed: { sketch, paper }, drawn }: InkSide, united: ReadonlySet<string>, told: ReadonlySet<string>, measure: MeasureText): readonly Label[] {
+  const left = new Set([...sketch.vertices.values()].filter(({ id, node }) => node !== null && !united.has(id)).map(({ id }) => id));
+  const labels: Label[] = [];
+  for (const first of left) {
+    const group = [first];
+    left.delete(first);
+    for (const id of group) {
+      for (const edge of sketch.edgesAt.get(id) ?? []) {
+        const other = edge.from === id ? edge.to : edge.from;
+        if (left.delete(other)) group.push(other);
+      }
+    }
+    const [last, at] = [group.at(-1)!, paper.get(group.at(-1)!)];
+    if (!at || group.some((id) => told.has(id))) continue;
+    const along = drawn.filter((d) => d.edge.from === last || d.edge.to === last).map((d) => d.direction);
+    labels.push(blockLabel([{ text: "WAS HERE", bold: true }], { id: `was ${last}`, anchors: [at], clear: CLEAR_OF_POINT, along }, { kind: "point", id: last }, measure));
+  }
+  return labels;
 }
 
 /** A weld that came or went with its point shares the point's block. */

@@ -55,6 +55,13 @@ describe("marks of a difference", () => {
     expect(texts(drawing.items)).toContain(`WAS HERE ${moved}`);
   });
 
+  it("what was carried along by a change elsewhere: a word where it stood, once", () => {
+    const { drawing, rows } = overlayOf(sampleRuns.branchWithReducer!, (d) => void d.runs[1]!.points.splice(1, 0, newPointAt("j", [600, 0, 0]) as Editable["runs"][0]["points"][0]));
+    expect(rows.some((row) => row.kind === "moved" || row.kind === "removed")).toBe(false);
+    expect(drawing.items.some(isGone)).toBe(true);
+    expect(texts(drawing.items).filter((text) => text.startsWith("WAS HERE"))).toEqual(["WAS HERE"]);
+  });
+
   it("a fitting set into a leg: its pipe either side stays as it was", () => {
     const { drawing } = overlayOf(sampleRuns.planarOffset!, (d) => {
       const points = d.runs[0]!.points;
