@@ -9,7 +9,7 @@ import { qrItems } from "./qr-code";
 import type { PrintWish } from "./sheet-facts";
 import { EDGE_LINE, HEAD_CAP, isSmallSheet } from "./sheet-size";
 import type { RevisionState, SheetPage, SheetSize, TitleBlock } from "./sheet-types";
-import { STATE_WORDS } from "./state-mark";
+import { STATE_SMALL_WIDTH, stateSmall, STATE_WORDS } from "./state-mark";
 import type { CellLine, Row, Table } from "./table";
 import { flowTables } from "./table-flow";
 import { baselineOf, fitText, linesHeight } from "./text-setting";
@@ -72,7 +72,7 @@ export function indexTable(entries: readonly IndexEntry[], title = "SHEET INDEX"
     title, lead: ["Before work: compare each revision with its sheet's status page, by the QR code on the sheet."],
     columns: [
       { head: "NO.", share: 0, minMm: 12, align: "end" }, { head: "SHEET", share: 0.6, minMm: 30 }, { head: "REV", share: 0, minMm: 12, align: "middle" },
-      { head: "STATE", share: 0, minMm: 42 }, { head: "TITLE", share: 3, minMm: 70 }, { head: "PAGES", share: 0, minMm: 17, align: "end" }, { head: "ON PAGE", share: 0, minMm: 20, align: "end" },
+      { head: "STATE", share: 0, minMm: 49 }, { head: "TITLE", share: 3, minMm: 70 }, { head: "PAGES", share: 0, minMm: 17, align: "end" }, { head: "ON PAGE", share: 0, minMm: 20, align: "end" },
     ],
     rows: entries.length === 0 ? [{ cells: ["", "", "", "", "No sheets in it.", "", ""] }] : entries.map(rowOf),
     foot: [`${entries.length} ${entries.length === 1 ? "entry" : "entries"}${pages === 0 ? "" : `, ${pages} ${pages === 1 ? "page" : "pages"} without this index`}.`],
@@ -91,7 +91,7 @@ function rowOf(entry: IndexEntry, index: number): Row {
 
 function stateLine({ state, hold }: IndexEntry): CellLine {
   const ink = hold || NOT_TO_WORK_TO.has(state) ? "alert" : "ink";
-  return { text: `${STATE_WORDS[state]}${hold ? ", HOLD" : ""}`, face: "bold", ink };
+  return { text: `${STATE_WORDS[state]}${hold ? ", HOLD" : ""}`, face: "bold", ink, mark: { widthMm: STATE_SMALL_WIDTH, items: (at) => stateSmall(state, hold ?? false, at) } };
 }
 
 /** The low strip of an index: whose it is and what it is of. */

@@ -3,7 +3,7 @@
  * where word, shape and colour say it together. A sheet for fabrication or as built carries a stamp instead.
  */
 import type { DisplayItem, Ink, MeasureText } from "../draw/drawing-types";
-import type { PaperBox } from "../geometry/types";
+import type { PaperBox, PaperPoint } from "../geometry/types";
 import { boxOutline, lineFrom, polygonOf, textAt } from "./items";
 import { EDGE_LINE } from "./sheet-size";
 import { baselineOf, fitText, linesHeight } from "./text-setting";
@@ -101,15 +101,39 @@ function struckBox(box: PaperBox, ink: Ink): DisplayItem[] {
   ];
 }
 
-function holdOctagon(box: PaperBox): DisplayItem[] {
-  const { minX, minY, maxX, maxY } = box;
+function octagon({ minX, minY, maxX, maxY }: PaperBox, widthMm: number): DisplayItem {
   const cut = (maxY - minY) * 0.29;
   const points = [
     [minX + cut, minY], [maxX - cut, minY], [maxX, minY + cut], [maxX, maxY - cut],
     [maxX - cut, maxY], [minX + cut, maxY], [minX, maxY - cut], [minX, minY + cut],
   ] as const;
+  return polygonOf(points, { layer: "state", stroke: "alert", widthMm });
+}
+
+function holdOctagon(box: PaperBox): DisplayItem[] {
+  const { minX, minY, maxX, maxY } = box;
   return [
-    polygonOf(points, { layer: "state", stroke: "alert", widthMm: 1 }),
+    octagon(box, 1),
     textAt([(minX + maxX) / 2, (minY + maxY) / 2 + 1.75], "HOLD", { layer: "state", anchor: "middle", capMm: 3.5, face: "bold", ink: "alert" }),
   ];
+}
+
+const SMALL = { widthMm: 5, heightMm: 2.8 } as const;
+
+/** A small shape with the space after it, mm. */
+export const STATE_SMALL_WIDTH = SMALL.widthMm + 1.6;
+
+/** The tag's shape, small, for a line of a list: state and hold by shape and colour beside the word. @param at middle of its left end */
+export function stateSmall(state: RevisionState, hold: boolean, [x, y]: PaperPoint): DisplayItem[] {
+  const box = { minX: x, minY: y - SMALL.heightMm / 2, maxX: x + SMALL.widthMm, maxY: y + SMALL.heightMm / 2 };
+  const { minX, minY, maxX, maxY } = box;
+  if (hold) return [octagon(box, 0.5)];
+  const style = { layer: "state" as const, stroke: INKS[state], widthMm: 0.4 };
+  if (state === "draft") return [boxOutline(box, { ...style, dash: [0.9, 0.7] })];
+  if (state === "for-review") return [polygonOf([[minX, minY], [maxX - 1.6, minY], [maxX, y], [maxX - 1.6, maxY], [minX, maxY]], style)];
+  if (state === "returned") return [polygonOf([[minX + 1.6, minY], [maxX, minY], [maxX, maxY], [minX + 1.6, maxY], [minX, y]], style)];
+  if (state === "superseded" || state === "void") {
+    return [boxOutline(box, style), lineFrom([minX, minY], [maxX, maxY], 0.4, "state", INKS[state]), lineFrom([minX, maxY], [maxX, minY], 0.4, "state", INKS[state])];
+  }
+  return [boxOutline(box, style), boxOutline({ minX: minX + 0.8, minY: minY + 0.8, maxX: maxX - 0.8, maxY: maxY - 0.8 }, { ...style, widthMm: 0.25 })];
 }

@@ -99,10 +99,11 @@ function placeCells(table: SetTable, cells: readonly SetCell[], [x, y]: PaperPoi
     const anchor = table.columns[index]?.align ?? "start";
     const place = anchor === "start" ? left + CELL_PAD_X : anchor === "end" ? right - CELL_PAD_X : (left + right) / 2;
     let top = y + CELL_PAD_Y;
-    return cell.lines.map((line) => {
-      const item = textAt([place, top + baselineOf(0, line.capMm)], line.text, { anchor, face: line.face, capMm: line.capMm, ink: line.ink });
+    return cell.lines.flatMap((line) => {
+      const baseline = top + baselineOf(0, line.capMm);
+      const item = textAt([place + line.indentMm, baseline], line.text, { anchor, face: line.face, capMm: line.capMm, ink: line.ink });
       top += linesHeight(1, line.capMm);
-      return item;
+      return line.mark === null ? [item] : [...line.mark.items([place, baseline - line.capMm / 2]), item];
     });
   });
 }

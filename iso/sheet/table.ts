@@ -1,5 +1,6 @@
 /** Tables, set for a width: cells wrapped, columns and row heights known. Placing them is table-placing.ts's work. */
-import type { Face, Ink, MeasureText } from "../draw/drawing-types";
+import type { DisplayItem, Face, Ink, MeasureText } from "../draw/drawing-types";
+import type { PaperPoint } from "../geometry/types";
 import { HEAD_CAP, TEXT_CAP } from "./sheet-size";
 import { fitText, linesHeight, wrapText } from "./text-setting";
 
@@ -18,6 +19,13 @@ export interface CellLine {
   readonly face?: Face;
   readonly capMm?: number;
   readonly ink?: Ink;
+  /** A picture before the words, drawn about the middle of their first line from its left end. */
+  readonly mark?: CellMark;
+}
+
+export interface CellMark {
+  readonly widthMm: number;
+  readonly items: (at: PaperPoint) => readonly DisplayItem[];
 }
 
 /** One cell: lines that each wrap by themselves. A plain string is one line. */
@@ -44,8 +52,18 @@ export interface Table {
   readonly foot: readonly string[];
 }
 
+export interface SetLine {
+  readonly text: string;
+  readonly face: Face;
+  readonly capMm: number;
+  readonly ink: Ink;
+  /** Room kept on the left, and what stands in it; null on lines without. */
+  readonly indentMm: number;
+  readonly mark: CellMark | null;
+}
+
 export interface SetCell {
-  readonly lines: readonly Required<CellLine>[];
+  readonly lines: readonly SetLine[];
   readonly heightMm: number;
 }
 
@@ -118,7 +136,8 @@ function setCell(cell: Cell, widthMm: number, face: Face, measure: MeasureText):
   const given = typeof cell === "string" ? [{ text: cell }] : cell;
   const lines = given.flatMap((line) => {
     const style = { face: line.face ?? face, capMm: line.capMm ?? TEXT_CAP, ink: line.ink ?? ("ink" as const) };
-    return fitText(line.text, widthMm, MOST_LINES, style, measure).lines.map((text) => ({ text, ...style }));
+    const indentMm = line.mark?.widthMm ?? 0;
+    return fitText(line.text, widthMm - indentMm, MOST_LINES, style, measure).lines.map((text, i) => ({ text, ...style, indentMm, mark: i === 0 ? (line.mark ?? null) : null }));
   });
   return { lines, heightMm: lines.reduce((sum, line) => sum + linesHeight(1, line.capMm), 0) };
 }

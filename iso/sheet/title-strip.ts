@@ -1,5 +1,6 @@
 /** The title block: logo and shop, then labelled fields in columns as low as the fields allow. */
 import type { DisplayItem, MeasureText } from "../draw/drawing-types";
+import { SAME_PAPER_MM } from "../geometry/tolerances";
 import type { PaperBox } from "../geometry/types";
 import { boxOutline, lineFrom, textAt } from "./items";
 import type { CutText } from "./notes-table";
@@ -55,7 +56,7 @@ function setHeading({ heading, keeps }: FieldHeading, columnMm: number, measure:
 }
 
 function setField(field: Field, columnMm: number, labelMm: number, cut: CutText[], measure: MeasureText): SetField {
-  const label = fitText(field.label, labelMm - LABEL_GAP, 1, { capMm: TEXT_CAP, face: "regular" }, measure);
+  const label = fitText(field.label, labelMm - LABEL_GAP + SAME_PAPER_MM, 1, { capMm: TEXT_CAP, face: "regular" }, measure);
   const value = fitText(field.value, columnMm - 2 * PAD_X - labelMm, field.maxLines, BOLD, measure);
   if (label.cut || value.cut) cut.push({ label: field.label, text: field.value });
   return { label: label.lines[0] ?? "", keeps: 0, lines: value.lines, heightMm: linesHeight(value.lines.length) + 2 * PAD_Y };

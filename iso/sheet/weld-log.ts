@@ -27,7 +27,7 @@ export function weldLogTable(facts: SheetFacts, { work }: SheetSetExtras): Table
   const entries = work?.entries ?? [];
   const byKey = new Map<string, WorkRecord[]>();
   for (const entry of entries) byKey.set(entry.key, [...(byKey.get(entry.key) ?? []), entry]);
-  const told = work ? (entries.length > 0 ? `As recorded ${issuedText(work.readAt)}; nothing later is in it.` : `Nothing recorded by ${issuedText(work.readAt)}.`) : "Nothing recorded yet.";
+  const told = work ? (entries.length > 0 ? `As recorded ${issuedText(work.readAt)}; nothing later is in it.` : `Nothing recorded by ${issuedText(work.readAt)}.`) : "A blank log: what was recorded is not shown.";
   const nde = facts.model.document.settings.asEntered.nde.trim();
   return {
     title: "WELD LOG",

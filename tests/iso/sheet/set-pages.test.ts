@@ -177,9 +177,27 @@ describe("the record on paper", () => {
     expect([cuts.includes("HX-9"), cuts.includes("OLD-1"), cuts.includes("Cuts as recorded 2026-12-01 15:20 UTC.")]).toEqual([true, false, true]);
   });
 
+  test.each(SHEET_SIZES)("on %s a full record and planned stock leave every text apart and inside", (size) => {
+    for (const name of ["valveStation", "socketLine", "skewClosing"]) {
+      const full = benchInput(sampleRuns[name]!, size, "for-fabrication");
+      const { pieces, joints } = modelOf(full);
+      const at = "2026-11-30T10:00:00Z";
+      const by = "Bartholomew Featherstonehaugh";
+      const entries = [
+        ...pieces.map(({ key }) => entry("cut", key, { heat: "HEAT-2026-00417-B", length: `4' 10 15/16"` }, at, by)),
+        ...joints.flatMap(({ key }) => [entry("fit-up", key, { gap: "1/8" }, at, by), entry("weld", key, { welder: "W-07, W-11", procedure: "CBW-SMAW-P1-01 rev 2", heatA: "HEAT-2026-00417-B", heatB: "F-220-A" }, at), entry("visual", key, { result: "rejected" }, at, by)]),
+      ];
+      const stock = Object.fromEntries(pieces.map(({ key }) => [key, { plan: "Chiller house and rack east, week 48, second try", length: 12, stockMm: 6096, offcut: true, heat: "HEAT-2026-00417-B", cut: 1, cuts: 5, startMm: 1234, plannedMm: 900 }]));
+      for (const page of sheetSetPages(full, ["cuts", "welds"], { stock, work: { entries, readAt: at }, printed: { by, at } }, measureText).pages) {
+        expectReadable(page, `${name} ${size} recorded`);
+        expectInside(page, `${name} ${size} recorded ${page.name}`);
+      }
+    }
+  });
+
   test("without a record the log says so and leaves blanks of 9 mm and more", () => {
     const table = weldLogTable(sheetFacts(input, model), {})!;
-    expect(table.lead[0]).toMatch(/^Nothing recorded yet/);
+    expect(table.lead[0]).toMatch(/^A blank log: what was recorded is not shown/);
     for (const row of table.rows) expect(row.leastMm).toBeGreaterThan(9);
   });
 
