@@ -1,6 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { threeElbowWays, WALK_STEPS, type Way } from "@/iso";
-import { NPS4, threeElbowGrid, type Ends } from "../../oracle/elbow-search";
+import { centreLength, NPS4, threeElbowGrid, tiltedFrom, type Ends, type P } from "../../oracle/elbow-search";
 import { layWay } from "../../oracle/lay-way";
 import { seededRandom } from "../../oracle/random";
 import { IN, mm, pick, question, randomEnds, walkedEnds } from "./cases";
@@ -63,6 +63,26 @@ describe("three whole elbows", () => {
       const slid = threeElbowGrid(ends, angles, WALK_STEPS, 60);
       expect(Math.min(...own)).toBeLessThanOrEqual((slid?.length ?? Infinity) * 1.0005);
     }
+  });
+
+  it.each([
+    ["a turn into the end's direction, then an offset that rolls", [[1, 0, 0], [0, 1, 0], tiltedFrom([0, 1, 0], Math.PI / 4, 0.7), [0, 1, 0]]],
+    ["an offset that rolls, then the turn", [[1, 0, 0], tiltedFrom([1, 0, 0], Math.PI / 4, 1.1), [1, 0, 0], [0, 0, 1]]],
+    ["parallel ends out of one plane", [[1, 0, 0], tiltedFrom([1, 0, 0], Math.PI / 4, 0.3), tiltedFrom([1, 0, 0], Math.PI / 4, 0.3 + 2 * Math.asin(Math.sin(Math.PI / 8) / Math.sin(Math.PI / 4))), [1, 0, 0]]],
+  ] satisfies (readonly [string, readonly P[]])[])("knows the special families: %s", (_, asked) => {
+    const angleOf = (a: P, b: P) => Math.round((Math.acos(Math.max(-1, Math.min(1, a[0] * b[0] + a[1] * b[1] + a[2] * b[2]))) * 180) / Math.PI);
+    const directions: readonly P[] = asked;
+    const angles = directions.slice(1).map((u, i) => angleOf(directions[i]!, u));
+    expect(angles.every((a) => a === 90 || a === 45)).toBe(true);
+    const pups = [8, 9, 10, 11];
+    const lengths = directions.map((_u, j) => (NPS4.reach.get(angles[j - 1] ?? 0) ?? 0) + (NPS4.reach.get(angles[j] ?? 0) ?? 0) + pups[j]! + 0.25);
+    const p1 = [0, 1, 2].map((axis) => directions.reduce((sum, u, j) => sum + u[axis as 0] * lengths[j]!, 0)) as unknown as P;
+    const into = directions[3]!;
+    const ends: Ends = { p0: [0, 0, 0], d0: directions[0]!, p1, d1: [-into[0], -into[1], -into[2]], gap: 0.125, leastPup: 6 };
+    const title = angles.map((a) => `LR ${a}`).join(", ");
+    const ways = threeElbowWays(question(ends)).ways.filter((way) => way.title === title);
+    ways.forEach((way) => meets(way, ends));
+    expect(Math.min(...ways.map((way) => way.lengthMm / IN))).toBeLessThanOrEqual(centreLength(angles, lengths) + 1e-6);
   });
 
   it("tells its progress, stops when asked, and gives the same list each time", () => {
