@@ -3,13 +3,17 @@ import { afterAll, beforeAll, describe, expect, test } from "vitest";
 import * as ownRoute from "@/app/api/copies/route";
 import * as withdrawRoute from "@/app/api/copies/withdraw/route";
 import * as jobCopies from "@/app/api/jobs/[jobId]/copies/route";
+import * as lineRoute from "@/app/api/lines/[lineId]/route";
 import * as hold from "@/app/api/revisions/[revisionId]/hold/route";
 import * as release from "@/app/api/revisions/[revisionId]/release/route";
 import * as sheetRoute from "@/app/api/revisions/[revisionId]/sheet/route";
+import * as signRoute from "@/app/api/revisions/[revisionId]/sign/route";
 import * as voidRoute from "@/app/api/revisions/[revisionId]/void/route";
 import * as spoolCopies from "@/app/api/spools/[spoolId]/copies/route";
+import * as submitRoute from "@/app/api/spools/[spoolId]/submit/route";
 import type { CopyRow } from "@/lib/rules/copies";
-import { signed, submitted, type TestRevision } from "./revision-support";
+import { pointAt } from "../factories";
+import { signBody, signed, submitted, type TestRevision } from "./revision-support";
 import { addMember, call, endOfFile, newShop, type TestPerson, type TestShop, withClient } from "./support";
 
 const reason = { body: { reason: "Wrong flange", verified: true } };
@@ -117,5 +121,31 @@ describe("copies out", () => {
     await take(shop.owner, "?kind=review", open.revisionId);
     expect(await copies(shop.owner, open.spoolId)).toHaveLength(1);
     expect(await copies(shop.fitter, open.spoolId)).toEqual([]);
+  });
+});
+
+describe("when a new revision supersedes the one they hold", () => {
+  test("holders are mailed what they hold of the old one, it stands on their pages and on the list, and the new one's copies do not", async () => {
+    const first = await signed(shop);
+    const holder = await addMember(shop.shopId, "inspector");
+    expect((await take(holder, "?copy=1", first.revisionId)).status).toBe(200);
+    const detail = (await call(lineRoute.GET, { as: shop.detailer, params: { lineId: first.lineId } })).json;
+    const document = structuredClone(detail.document);
+    document.runs[0].points[1].offset = pointAt("b", [1_444, 0, 0]).offset;
+    expect((await call(lineRoute.PUT, { as: shop.detailer, method: "PUT", params: { lineId: first.lineId }, body: { version: detail.version, document } })).status).toBe(200);
+    const next = await call(submitRoute.POST, { as: shop.detailer, method: "POST", params: { spoolId: first.spoolId }, body: { description: "Longer", size: "letter" } });
+    const { revisionId } = next.json as { revisionId: string };
+    expect(await own(holder)).toEqual([]);
+    expect((await call(signRoute.POST, { as: shop.inspector, method: "POST", params: { revisionId }, body: signBody })).status).toBe(200);
+
+    const [mail] = await mailsTo(holder);
+    expect(mail!.text).toContain("Revision A is SUPERSEDED");
+    expect(mail!.text).toMatch(/Copies out in your name:\n- Printed,/);
+    await take(holder, "?copy=1", revisionId);
+    expect((await own(holder)).map(({ code, state, spoolId }) => ({ code, state, spoolId }))).toEqual([{ code: "A", state: "superseded", spoolId: first.spoolId }]);
+    const list = (await call(jobCopies.GET, { as: shop.owner, params: { jobId: first.jobId } })).json as CopyRow[];
+    expect(list.map(({ by, code }) => `${by} ${code}`)).toEqual(["Pat inspector A"]);
+    expect((await withdraw(holder, list.map((row) => row.id))).status).toBe(200);
+    expect(await own(holder)).toEqual([]);
   });
 });
