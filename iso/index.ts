@@ -50,7 +50,7 @@ export type { SurveyFinding } from "./survey/survey-read";
 // fit
 export * from "./fit/fit-settings";
 export * from "./fit/fit-types";
-export type { FitPiece } from "./fit/chain";
+export type { FitFace, FitPiece } from "./fit/chain";
 export * from "./fit/closing-chain";
 export * from "./fit/end-errors";
 export * from "./fit/fit-of-chain";

@@ -5,7 +5,11 @@
  */
 import type { Vec3 } from "../geometry/types";
 import { vecAddScaled, vecCross, vecRotate, vecUnit } from "../geometry/vec3";
-import type { FitFace } from "./fit-types";
+
+/** What stands at an end: plain pipe to be welded to, or a flange. */
+export type FitFace =
+  | { readonly kind: "butt" }
+  | { readonly kind: "flange"; readonly boltCircleMm: number };
 
 export type FitPiece =
   /** `cut` false: stands there already, its length is part of the survey. */

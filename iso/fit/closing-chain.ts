@@ -2,8 +2,7 @@
 import type { Vec3 } from "../geometry/types";
 import { vecPerpendicular, vecReject, vecScale, vecUnit } from "../geometry/vec3";
 import type { ClosingInput, ClosingSolution } from "../closing/closing-types";
-import type { ChainFrame, FitPiece } from "./chain";
-import type { FitFace } from "./fit-types";
+import type { ChainFrame, FitFace, FitPiece } from "./chain";
 
 export interface ClosingChain {
   readonly start: ChainFrame;

@@ -7,7 +7,8 @@ import { DEVIATIONS_IN_TOLERANCE } from "../survey/survey-tools";
 import { closingChain } from "./closing-chain";
 import { flagged, fitOfChain } from "./fit-of-chain";
 import type { FitSettings } from "./fit-settings";
-import type { EndError, FitFace, FitResult, FitUp } from "./fit-types";
+import type { FitFace } from "./chain";
+import type { EndError, FitResult, FitUp } from "./fit-types";
 
 export interface ClosingFitInput {
   /** As solveClosing takes it, in millimetres. */

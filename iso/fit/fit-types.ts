@@ -18,11 +18,6 @@ export interface EndError {
   readonly columns: readonly (readonly number[])[];
 }
 
-/** What stands at an end: plain pipe to be welded to, or a flange. */
-export type FitFace =
-  | { readonly kind: "butt" }
-  | { readonly kind: "flange"; readonly boltCircleMm: number };
-
 /** Shared: both joints take a part of what is off. Set true: end 0 is made as it should be, all shows at end 1. */
 export type FitUp = "shared" | "set-true";
 

@@ -5,7 +5,7 @@
  * x = -C·Aᵀ·(Σ A·C·Aᵀ)⁻¹·M with C the squared limits, is linear in the error M, so its chances follow from M's covariance.
  */
 import { inverse, Matrix } from "ml-matrix";
-import { WELD_MISMATCH_RAD } from "../geometry/tolerances";
+import { FIT_LEAST_MM, FIT_LEAST_RAD, WELD_MISMATCH_RAD } from "../geometry/tolerances";
 import { vecCross } from "../geometry/vec3";
 import type { Vec3 } from "../geometry/types";
 import type { PlacedJoint } from "./errors";
@@ -76,17 +76,13 @@ function jointWays({ frame }: PlacedJoint, reference: Vec3): number[][] {
   ];
 }
 
-/** Least give of a joint that is fitted, so that a limit of nothing leaves the sums solvable. */
-const LEAST_MM = 1e-3;
-const LEAST_RAD = 1e-6;
-
 /** Squared give of each of the six. A joint set true gives only where a butt weld turns. */
 function giveOf(own: JointLimits, role: JointRole): number[] {
-  const turn = own.holes ? Math.max(own.holes.offsetMm / own.holes.radiusMm, LEAST_RAD) ** 2 : FREE_TURN_RAD ** 2;
+  const turn = own.holes ? Math.max(own.holes.offsetMm / own.holes.radiusMm, FIT_LEAST_RAD) ** 2 : FREE_TURN_RAD ** 2;
   if (role === "set") return [0, 0, 0, 0, 0, own.holes ? 0 : turn];
-  const gap = (role === "trimmed" ? FREE_TRIM_MM : Math.max(own.gapMm, LEAST_MM)) ** 2;
-  const shift = Math.max(own.hiLoMm, LEAST_MM) ** 2;
-  const tilt = Math.max(own.angleRad, LEAST_RAD) ** 2;
+  const gap = (role === "trimmed" ? FREE_TRIM_MM : Math.max(own.gapMm, FIT_LEAST_MM)) ** 2;
+  const shift = Math.max(own.hiLoMm, FIT_LEAST_MM) ** 2;
+  const tilt = Math.max(own.angleRad, FIT_LEAST_RAD) ** 2;
   return [gap, shift, shift, tilt, tilt, turn];
 }
 

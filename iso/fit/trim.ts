@@ -1,5 +1,6 @@
 /** Where a field-fit weld would help most, and how much pipe to leave on for it. */
 import type { UnitSystem } from "../run/settings-schema";
+import { FIT_STEP_SLACK } from "../geometry/tolerances";
 import { INCH_MM } from "../units/length";
 import type { ChainStep } from "./chain";
 import { fitSources, placedJoints, type PlacedJoint } from "./errors";
@@ -37,7 +38,7 @@ function trimAt(input: FitInput, steps: readonly ChainStep[], joints: readonly P
   const wanted = Math.ceil((reached ? input.target : Math.max(atMost - NEAR_ENOUGH, 0)) * points) - 1;
   const least = trimNeeded[Math.min(Math.max(wanted, 0), trimNeeded.length - 1)] ?? 0;
   const step = trimStepMm(input.units);
-  const trimMm = Math.max(Math.ceil(least / step - STEP_SLACK), 0) * step;
+  const trimMm = Math.max(Math.ceil(least / step - FIT_STEP_SLACK), 0) * step;
   return { jointId: placed.joint.id, joint: placed.joint.name, trimMm, probability: withTrim(chances, trimMm), atMost, reached };
 }
 
@@ -65,6 +66,3 @@ function withTrim({ trimNeeded, points }: Chances, trimMm: number): number {
 export function trimStepMm(units: UnitSystem): number {
   return units === "metric" ? 5 : INCH_MM / 8;
 }
-
-/** Share of a step by which a length may be over and still count as the step. */
-const STEP_SLACK = 1e-9;

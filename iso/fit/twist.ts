@@ -1,4 +1,5 @@
 /** Small rigid motions and the little matrices they need. Six numbers: translation of a reference point, then rotation. */
+import { FIT_RANK } from "../geometry/tolerances";
 import type { Vec3 } from "../geometry/types";
 import { vecCross, vecSub } from "../geometry/vec3";
 
@@ -29,9 +30,6 @@ export function transposed(a: readonly (readonly number[])[]): number[][] {
   return (a[0] ?? []).map((_, j) => a.map((row) => row[j]!));
 }
 
-/** Share of a variance under which what is left of it is rounding. */
-const RANK = 1e-12;
-
 /** Lower factor L of a covariance, L·Lᵀ; a freedom that does not move gets a column of zeros. */
 export function factorOf(covariance: readonly (readonly number[])[]): number[][] {
   const n = covariance.length;
@@ -39,7 +37,7 @@ export function factorOf(covariance: readonly (readonly number[])[]): number[][]
   for (let j = 0; j < n; j++) {
     let left = covariance[j]![j]!;
     for (let k = 0; k < j; k++) left -= l[j]![k]! ** 2;
-    if (!(left > RANK * covariance[j]![j]!)) continue;
+    if (!(left > FIT_RANK * covariance[j]![j]!)) continue;
     const d = Math.sqrt(left);
     l[j]![j] = d;
     for (let i = j + 1; i < n; i++) {

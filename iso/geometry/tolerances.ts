@@ -125,3 +125,15 @@ export const WAYS_BESIDE_RAD = 1e-4;
 
 /** Share of an end's error that may stay at a weld before it is said. */
 export const WAYS_STAYS_SHARE = 1e-3;
+
+/** Millimetres. Least give of a joint that is fitted, so that a limit of nothing leaves its sums solvable: a hundredth of a tape's finest. */
+export const FIT_LEAST_MM = 1e-3;
+
+/** Radians. The same of its angles: a thousandth of a millimetre across a metre. */
+export const FIT_LEAST_RAD = 1e-6;
+
+/** Share of a variance. What is left of it under this is rounding: that freedom does not move. */
+export const FIT_RANK = 1e-12;
+
+/** Share of a step by which a length may be over and still count as the step: float noise. */
+export const FIT_STEP_SLACK = 1e-9;
