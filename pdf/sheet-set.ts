@@ -54,7 +54,8 @@ export async function bindSheetSet(input: BindInput): Promise<Uint8Array> {
   }));
   const { bytes } = await makePart(sheets, input.title);
   const bookmarks = set.bookmarks.map(({ title }, sheet) => ({ title, sheet, within: [] }));
-  return joinParts({ title: input.title, author: input.author, subject: input.subject, keywords: input.keywords, at: input.at, parts: [bytes], bookmarks });
+  const joined = await joinParts({ title: input.title, author: input.author, subject: input.subject, keywords: input.keywords, at: input.at, parts: [bytes], front: null, bookmarks });
+  return joined.bytes;
 }
 
 function painted({ set, logo, title, author, at }: BindInput, from: number, count: number): Promise<Uint8Array> {

@@ -25,7 +25,7 @@ const ABOUT: Readonly<Record<SheetPart, string>> = {
   cuts: "each piece as a bar with its sum, ends and blanks",
   welds: "the isometric with weld numbers, and the log",
   bench: "turns laid out with their marks, and check dimensions",
-  templates: "true-scale wrap-arounds; print at 100 %",
+  templates: "true-scale wrap-arounds with a proof bar",
   legend: "symbols, lines and letters that this spool uses",
 };
 
