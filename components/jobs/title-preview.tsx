@@ -52,11 +52,14 @@ function PageSvg({ page, href, whole }: { readonly page: SheetPage; readonly hre
 /** Shown round the title block, mm. */
 const AROUND = 3;
 
-/** Where the title block stands: the framed boxes that are not as wide as the paper's own frame. */
+/** A framed box higher than this share of the page is a column, no part of the title block. */
+const HIGHEST = 0.6;
+
+/** Where the title block stands: the framed boxes that are neither as wide as the paper's own frame nor a whole column. */
 function blockBounds(page: SheetPage): PaperBox {
   const frames = page.items.filter((item) => item.layer === "frame").map((item) => inkBounds([item], measureText));
   const widest = Math.max(...frames.map((box) => box.maxX - box.minX));
-  const parts = frames.filter((box) => box.maxX - box.minX < widest - 1);
+  const parts = frames.filter((box) => box.maxX - box.minX < widest - 1 && box.maxY - box.minY < HIGHEST * page.heightMm);
   return parts.reduce((all, box) => ({ minX: Math.min(all.minX, box.minX), minY: Math.min(all.minY, box.minY), maxX: Math.max(all.maxX, box.maxX), maxY: Math.max(all.maxY, box.maxY) }), parts[0] ?? { minX: 0, minY: 0, maxX: page.widthMm, maxY: page.heightMm });
 }
 

@@ -49,7 +49,8 @@ export function AsFittedResultView({ result, document, wanted, view, units, onCh
   );
 }
 
-const SIZE = { widthMm: 150, heightMm: 105 };
+/** Small enough that its letters can be read on a phone, mm. */
+const SIZE = { widthMm: 105, heightMm: 84 };
 const VIEW_LABELS: Readonly<Record<FittedView, string>> = { isometric: "Isometric", plan: "Plan", elevation: "Elevation" };
 
 function Picture({ result, wanted, view }: { readonly result: AsFittedResult; readonly wanted: Wanted; readonly view: View }) {
@@ -58,7 +59,7 @@ function Picture({ result, wanted, view }: { readonly result: AsFittedResult; re
   return (
     <div className="mb-4">
       <ChoiceRow label="View" value={shown} onChange={setShown} choices={FITTED_VIEWS.map((value) => ({ value, label: VIEW_LABELS[value] }))} />
-      <svg viewBox={`0 0 ${SIZE.widthMm} ${SIZE.heightMm}`} role="img" aria-label={`Measured against drawn, ${VIEW_LABELS[shown].toLowerCase()}`} className="drawn block h-auto w-full max-w-3xl border border-hair bg-white">
+      <svg viewBox={`0 0 ${SIZE.widthMm} ${SIZE.heightMm}`} role="img" aria-label={`Measured against drawn, ${VIEW_LABELS[shown].toLowerCase()}`} className="drawn block h-auto w-full max-w-2xl border border-hair bg-white">
         <DisplaySvg items={items} />
       </svg>
     </div>
