@@ -40,7 +40,7 @@ export async function measure(): Promise<BenchRow[]> {
   const paint = () => paintSheet({ pages, issuedAt: "2026-01-01T00:00:00.000Z", title: "Bench", logo: null });
   const [buildUs = NaN, bothUs = NaN, paintUs = NaN] = await medianTimesUs(
     [
-      { name: "build", times: 20, work: () => buildModel(document, emptyMarks(), []) },
+      { name: "build", times: 40, work: () => buildModel(document, emptyMarks(), []) },
       { name: "build and draw", times: 1, work: () => drawSheets(buildModel(document, emptyMarks(), []), options) },
       { name: "paint", times: 5, work: paint },
     ],
