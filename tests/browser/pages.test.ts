@@ -31,6 +31,9 @@ beforeAll(async () => {
     { role: "fitter", path: `/lines/${detail.lines[0]?.id}/survey` },
     { role: "detailer", path: `/spools/${spool.id}` },
     { role: "fitter", path: `/spools/${spool.id}` },
+    { role: "detailer", path: `/spools/${spool.id}/compare` },
+    { role: "owner", path: `/jobs/${job?.id}/withdrawals` },
+    { role: "fitter", path: `/spools/${spool.id}/withdrawals` },
     { role: "inspector", path: `/review/${review.revisions.at(-1)?.id}` },
     { role: null, path: spool.revisions[0]?.statusPath ?? "" },
   );
