@@ -38,7 +38,7 @@ const NO_ID = "00000000-0000-4000-8000-000000000000";
 /** Ids of the right shape that nothing has. */
 const NO_IDS = Object.fromEntries([...["jobId", "lineId", "spoolId", "revisionId", "uploadId", "membershipId", "invitationId", "sessionId"].map((name) => [name, NO_ID]), ["key", "0".repeat(64)]]);
 /** What a fitter may write: their own entries, copies taken out of use, readings and photos of a survey, their own sessions, which of their shops they look at. */
-const FITTER_WRITES = ["POST /jobs/[jobId]/packages", "POST /packages/[packageId]/cancel", "POST /packages/[packageId]/again", "POST /spools/[spoolId]/work", "POST /copies/withdraw", "PUT /lines/[lineId]/survey", "POST /lines/[lineId]/survey/photos", "DELETE /sessions/[sessionId]", "POST /viewer/shop"];
+const FITTER_WRITES = ["POST /jobs/[jobId]/packages", "POST /packages/[packageId]/cancel", "POST /packages/[packageId]/again", "POST /spools/[spoolId]/work", "POST /spools/[spoolId]/as-fitted", "POST /copies/withdraw", "PUT /lines/[lineId]/survey", "POST /lines/[lineId]/survey/photos", "DELETE /sessions/[sessionId]", "POST /viewer/shop"];
 
 const routes = await everyRoute();
 let first: TestShop;
