@@ -19,8 +19,13 @@ export interface JoinInput {
   readonly at: string;
   /** In order. Read one after another, so that they need not all be in memory unpacked. */
   readonly parts: readonly Uint8Array[];
+  /** A part to go in front, made when the pages of each sheet are counted; null = none. */
+  readonly front: ((counts: PageCounts) => Promise<Uint8Array>) | null;
   readonly bookmarks: readonly Bookmark[];
 }
+
+/** How many pages each sheet has, by the sheet's number. */
+export type PageCounts = ReadonlyMap<number, number>;
 
 export interface JoinedPage {
   readonly ref: PDFRef;
@@ -30,40 +35,60 @@ export interface JoinedPage {
 }
 
 /** Equal input gives equal bytes. @throws when a part is none. */
-export async function joinParts(input: JoinInput): Promise<Uint8Array> {
+export async function joinParts(input: JoinInput): Promise<{ readonly bytes: Uint8Array; readonly pages: number }> {
   const joined = await PDFDocument.create({ updateMetadata: false });
   describe(joined, input);
-  const { context } = joined;
-  const faces: Readonly<Record<FaceName, PDFRef>> = { regular: context.nextRef(), bold: context.nextRef(), mono: context.nextRef() };
-  const use = noFaceUse();
-  const pool = new ObjectPool(context);
+  const adder = new PageAdder(joined);
   const pages: JoinedPage[] = [];
-  for (const bytes of input.parts) {
-    const part = await PDFDocument.load(bytes, { updateMetadata: false, parseSpeed: ParseSpeeds.Fastest });
-    const swap = (ref: PDFRef) => faceOf(part.context, ref, (face, codePoints) => {
-      for (const codePoint of codePoints) use[face].add(codePoint);
-      return faces[face];
-    });
-    for (const page of part.getPages()) pages.push(addPage(joined, pool, page.node, swap));
-  }
-  for (const face of FACE_NAMES) if (use[face].size > 0) embedFace(context, faces[face], face, use[face]);
+  for (const bytes of input.parts) pages.push(...(await adder.add(bytes, pages.length)));
+  if (input.front !== null) pages.unshift(...(await adder.add(await input.front(countsOf(pages)), 0)));
+  adder.embedFaces();
   addOutline(joined, input.bookmarks, pages);
   labelPages(joined, pages);
   tagPages(joined, pages);
-  return joined.save({ useObjectStreams: true, addDefaultPage: false, updateFieldAppearances: false, objectsPerTick: Infinity });
+  return { bytes: await joined.save({ useObjectStreams: true, addDefaultPage: false, updateFieldAppearances: false, objectsPerTick: Infinity }), pages: pages.length };
 }
 
-/** How many pages each sheet has in these parts, by the sheet's number. */
-export async function countPages(parts: readonly Uint8Array[]): Promise<Map<number, number>> {
+function countsOf(pages: readonly JoinedPage[]): PageCounts {
   const counts = new Map<number, number>();
-  for (const bytes of parts) {
-    const part = await PDFDocument.load(bytes, { updateMetadata: false, parseSpeed: ParseSpeeds.Fastest });
-    for (const page of part.getPages()) {
-      const { sheet } = toldBy(page.node);
-      counts.set(sheet, (counts.get(sheet) ?? 0) + 1);
-    }
-  }
+  for (const { sheet } of pages) counts.set(sheet, (counts.get(sheet) ?? 0) + 1);
   return counts;
+}
+
+/** Puts parts' pages into the joined document and gathers which characters of each face they need. */
+class PageAdder {
+  readonly #joined: PDFDocument;
+  readonly #pool: ObjectPool;
+  readonly #use = noFaceUse();
+  readonly #faces: Readonly<Record<FaceName, PDFRef>>;
+
+  constructor(joined: PDFDocument) {
+    const { context } = joined;
+    this.#joined = joined;
+    this.#pool = new ObjectPool(context);
+    this.#faces = { regular: context.nextRef(), bold: context.nextRef(), mono: context.nextRef() };
+  }
+
+  /** @param at how many pages stand before. */
+  async add(bytes: Uint8Array, at: number): Promise<JoinedPage[]> {
+    const part = await PDFDocument.load(bytes, { updateMetadata: false, parseSpeed: ParseSpeeds.Fastest });
+    const swap = (ref: PDFRef) => faceOf(part.context, ref, (face, codePoints) => {
+      for (const codePoint of codePoints) this.#use[face].add(codePoint);
+      return this.#faces[face];
+    });
+    return part.getPages().map(({ node }, index) => {
+      const box = node.lookup(PDFName.of("MediaBox"), PDFArray).asRectangle();
+      const added = this.#joined.insertPage(at + index, [box.width, box.height]);
+      added.node.set(PDFName.of("Resources"), this.#pool.copy(node.get(PDFName.of("Resources"))!, node.context, swap));
+      // Every page's drawing is its own: looking for an equal one would only take time.
+      added.node.set(PDFName.of("Contents"), this.#joined.context.register(this.#pool.copy(node.lookup(PDFName.of("Contents"))!, node.context)));
+      return { ref: added.ref, ...toldBy(node) };
+    });
+  }
+
+  embedFaces(): void {
+    for (const face of FACE_NAMES) if (this.#use[face].size > 0) embedFace(this.#joined.context, this.#faces[face], face, this.#use[face]);
+  }
 }
 
 function describe(joined: PDFDocument, { title, author, subject, keywords, at }: JoinInput): void {
@@ -86,13 +111,6 @@ function faceOf(part: PDFContext, ref: PDFRef, place: (face: FaceName, codePoint
   const face = word instanceof PDFName ? FACE_NAMES.find((name) => name === word.decodeText()) : undefined;
   if (face === undefined) return null;
   return place(face, object.lookup(PDFName.of("Used"), PDFArray).asArray().map((one) => (one as PDFNumber).asNumber()));
-}
-
-function addPage(joined: PDFDocument, pool: ObjectPool, node: PDFDict, swap: (ref: PDFRef) => PDFObject | null): JoinedPage {
-  const box = node.lookup(PDFName.of("MediaBox"), PDFArray).asRectangle();
-  const added = joined.addPage([box.width, box.height]);
-  for (const key of [PDFName.of("Contents"), PDFName.of("Resources")]) added.node.set(key, pool.copy(node.get(key)!, node.context, swap));
-  return { ref: added.ref, ...toldBy(node) };
 }
 
 function toldBy(node: PDFDict): { sheet: number; name: string } {

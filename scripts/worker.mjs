@@ -8,8 +8,11 @@ import { ROOT } from "./lib/paths.mjs";
 import { sayWhy } from "./lib/say.mjs";
 import { localEnvironment } from "./lib/settings-file.mjs";
 
+/** A worker's objects are few and short-lived: room for new ones, MB, that would only lie idle is left to the threads. */
+const SMALL_NURSERY = "--max-semi-space-size=2";
+
 try {
-  const worker = spawn(process.execPath, ["--import", "tsx", path.join(ROOT, "scripts/worker-process.ts")], {
+  const worker = spawn(process.execPath, [SMALL_NURSERY, "--import", "tsx", path.join(ROOT, "scripts/worker-process.ts")], {
     cwd: ROOT,
     env: { ...localEnvironment(), WORK_QUEUE: "1" },
     stdio: "inherit",

@@ -47,10 +47,12 @@ export async function takeUpPackage(hold: PackageHold): Promise<TakenUp> {
 
 /** Says that the worker is still at it. @returns false when it is not its any more: cancelled, or taken over. */
 export async function keepPackage(hold: PackageHold): Promise<boolean> {
-  return runCommand(null, "unlogged", ({ tx }) => updateRow(hold, tx, `worker_until = now() + ${believed()}`, MINE));
+  return runCommand(null, "unlogged", ({ tx }) => updateRow(hold, tx, `state = 'making', worker = $worker, worker_until = now() + ${believed()}`, MINE_STILL));
 }
 
 const MINE = `state = 'making' AND worker = $worker`;
+/** A worker that was slow to say a word has it still, as long as nobody else took it up. */
+const MINE_STILL = `((${MINE}) OR state = 'waiting')`;
 
 async function updateRow({ shopId, packageId, worker }: PackageHold, transaction: Transaction, set: string, where: string): Promise<boolean> {
   const bind = { shopId, packageId, ...(/\$worker/.test(set + where) ? { worker } : {}) };
@@ -66,8 +68,8 @@ export async function releasePackage(hold: PackageHold): Promise<void> {
 /** Runs with the row locked when the package is still this worker's; null otherwise. */
 async function whileMine<R>(hold: PackageHold, work: (one: Package, context: CommandContext<null>) => Promise<R>): Promise<R | null> {
   return runCommand<null, R | null>(null, "unlogged", async (context) => {
-    const one = await inShop(hold).locked(Package, hold.packageId, context.tx);
-    return one.state === "making" && one.worker === hold.worker ? work(one, context) : null;
+    const isMine = await updateRow(hold, context.tx, `state = 'making', worker = $worker, worker_until = now() + ${believed()}`, MINE_STILL);
+    return isMine ? work(await inShop(hold).locked(Package, hold.packageId, context.tx), context) : null;
   });
 }
 
@@ -150,14 +152,27 @@ export async function cleanPackage(member: ShopMember, packageId: string, isOwn:
   return isSettled || (resultKey === null && parts.every((part) => part.storedAt !== null));
 }
 
-/** Puts packages whose worker fell silent back into the queue, of every shop. @returns how many. */
+/**
+ * Puts packages whose worker fell silent back into the queue, of every shop, and those that ended without being cleaned up after.
+ * @returns how many.
+ */
 export async function requeueSilentPackages(): Promise<number> {
   return runCommand(null, "unlogged", async ({ tx }) => {
-    const rows = await getDb().query<{ shopId: string; packageId: string }>(
+    const silent = await getDb().query<PackageName>(
       `UPDATE packages SET state = 'waiting', worker = NULL, worker_until = NULL WHERE state = 'making' AND worker_until < now() RETURNING shop_id AS "shopId", id AS "packageId"`,
       { type: QueryTypes.SELECT, transaction: tx },
     );
-    for (const row of rows) await enqueue("package", row, tx);
-    return rows.length;
+    const unclean = await getDb().query<PackageName>(
+      `SELECT DISTINCT p.shop_id AS "shopId", p.id AS "packageId" FROM package_parts t JOIN packages p ON p.shop_id = t.shop_id AND p.id = t.package_id
+       WHERE p.done_at < now() - ${believed()} AND (t.stored_at IS NOT NULL OR p.done_at < now() - interval '${ON_ITS_WAY_MS} milliseconds')`,
+      { type: QueryTypes.SELECT, transaction: tx },
+    );
+    for (const row of [...silent, ...unclean]) await enqueue("package", row, tx);
+    return silent.length;
   });
+}
+
+interface PackageName {
+  readonly shopId: string;
+  readonly packageId: string;
 }

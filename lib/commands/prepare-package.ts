@@ -9,7 +9,7 @@ import { copyWord } from "@/lib/rules/copy-words";
 import { plainName } from "@/lib/rules/exchange/file-names";
 import { PACKAGE_EXTRAS, type PackageSource, type PackedSheet } from "@/lib/rules/packages";
 import { makePart, storedPages, type PartSheet } from "@/pdf/join-part";
-import { countPages, joinParts } from "@/pdf/join-parts";
+import { joinParts } from "@/pdf/join-parts";
 import type { Bookmark } from "@/pdf/join-outline";
 import { markCopy, type CopyMark } from "@/pdf/mark-copy";
 import { paintSheet } from "@/pdf/paint-sheet";
@@ -18,6 +18,7 @@ import { frontPages, type PageCounts } from "./package-front";
 /** A sheet with what its pages are made from. */
 export interface SheetWork {
   readonly ordinal: number;
+  readonly packed: PackedSheet;
   readonly stored: Uint8Array;
   /** Frozen input as text, and what the shop knows beside it; null when only the spool sheet is wanted. */
   readonly set: { readonly input: string; readonly extras: SheetSetExtras; readonly logo: Uint8Array | null } | null;
@@ -26,7 +27,8 @@ export interface SheetWork {
 export interface PartTask {
   readonly kind: "part";
   readonly packageId: string;
-  readonly source: PackageSource;
+  /** Without the list of sheets, which is long: the part's own come with their bytes. */
+  readonly source: Omit<PackageSource, "sheets">;
   readonly sheets: readonly SheetWork[];
 }
 export interface JoinTask {
@@ -61,18 +63,18 @@ const FRONT = -1;
 async function pdfPart({ packageId, source, sheets }: PartTask): Promise<PackageWork> {
   const parts: PartSheet[] = [];
   for (const work of sheets) {
-    const packed = source.sheets[work.ordinal]!;
+    const { packed } = work;
     const [mark, name] = [markOf(source, packed), `${packed.sheetNumber} rev ${packed.code},`];
     const first = work.ordinal * PLACES;
     parts.push({ bytes: work.stored, mark, name, sheet: first });
-    const set = await setPages(source, work, packed);
+    const set = await setPages(source, work);
     if (set !== null) parts.push({ bytes: set.bytes, mark, name, sheet: set.places.map((place) => first + place) });
   }
   return makePart(parts, packageId);
 }
 
 /** Pages made for the package from the sheet's frozen input, and which extra each belongs to. */
-async function setPages({ extras, paper }: PackageSource, { stored, set }: SheetWork, packed: PackedSheet): Promise<{ bytes: Uint8Array; places: number[] } | null> {
+async function setPages({ extras, paper }: PartTask["source"], { stored, set, packed }: SheetWork): Promise<{ bytes: Uint8Array; places: number[] } | null> {
   if (set === null || extras.length === 0) return null;
   const frozen = JSON.parse(set.input) as SheetInput;
   const storedSheetPages = await storedPages(stored);
@@ -84,31 +86,30 @@ async function setPages({ extras, paper }: PackageSource, { stored, set }: Sheet
   return { bytes: await paintSheet({ pages, issuedAt: input.revision.issuedAt, title, logo: set.logo }), places };
 }
 
-function markOf({ printedAt, printedBy }: PackageSource, { state, hold, sha256, signed }: PackedSheet): CopyMark {
+function markOf({ printedAt, printedBy }: PartTask["source"], { state, hold, sha256, signed }: PackedSheet): CopyMark {
   return { word: copyWord(state, hold), printedAt, printedBy, original: { sha256, signed } };
 }
 
 async function joined({ packageId, source, parts }: JoinTask): Promise<PackageWork> {
-  const pages = await countPages(parts);
-  const counts: PageCounts = source.sheets.map((_, ordinal) => Array.from({ length: PLACES }, (__, place) => pages.get(ordinal * PLACES + place) ?? 0));
-  const front = await makePart([{ bytes: await paintFront(source, counts), mark: null, name: "", sheet: FRONT }], packageId);
-  const bytes = await joinParts({
+  return joinParts({
     title: `${source.jobNumber} ${source.title}`, author: source.shopName, subject: `Spool sheets of job ${source.jobNumber}, uncontrolled copies`,
-    keywords: packageId, at: source.printedAt, parts: [front.bytes, ...parts], bookmarks: bookmarksOf(source, counts),
+    keywords: packageId, at: source.printedAt, parts, bookmarks: bookmarksOf(source),
+    front: async (pages) => {
+      const counts: PageCounts = source.sheets.map((_, ordinal) => Array.from({ length: PLACES }, (__, place) => pages.get(ordinal * PLACES + place) ?? 0));
+      return (await makePart([{ bytes: await paintFront(source, counts), mark: null, name: "", sheet: FRONT }], packageId)).bytes;
+    },
   });
-  return { bytes, pages: front.pages + counts.flat().reduce((sum, count) => sum + count, 0) };
 }
 
 function paintFront(source: PackageSource, counts: PageCounts): Promise<Uint8Array> {
   return paintSheet({ pages: frontPages(source, counts), issuedAt: source.printedAt, title: source.title, subject: "Sheet index", logo: null, author: source.shopName });
 }
 
-function bookmarksOf(source: PackageSource, counts: PageCounts): Bookmark[] {
+/** A bookmark of a part that a sheet has no pages of is left out where they are written. */
+function bookmarksOf(source: PackageSource): Bookmark[] {
   const lines = new Map<string, Bookmark[]>();
   for (const [ordinal, { line, letter, sheetNumber, code }] of source.sheets.entries()) {
-    const extras = PACKAGE_EXTRAS.flatMap((part, index) =>
-      counts[ordinal]?.[index + 1] ? [{ title: SHEET_PART_WORDS[part], sheet: ordinal * PLACES + index + 1, within: [] }] : [],
-    );
+    const extras = PACKAGE_EXTRAS.map((part, index) => ({ title: SHEET_PART_WORDS[part], sheet: ordinal * PLACES + index + 1, within: [] }));
     lines.set(line, [...(lines.get(line) ?? []), { title: `Spool ${letter}, sheet ${sheetNumber} rev ${code}`, sheet: ordinal * PLACES, within: extras }]);
   }
   const front = { title: source.transmittal === null ? "Cover and index" : "Transmittal and index", sheet: FRONT, within: [] };
@@ -124,10 +125,10 @@ export const PART_WORD = "package";
 async function zipPart({ packageId, source, sheets }: PartTask): Promise<PackageWork> {
   const files: Zippable = { [PART_WORD]: [strToU8(packageId), STORED] };
   for (const work of sheets) {
-    const packed = source.sheets[work.ordinal]!;
+    const { packed } = work;
     const name = zipName(packed);
     files[`${name}.pdf`] = [source.copies === "originals" ? work.stored : await markCopy(work.stored, markOf(source, packed)), STORED];
-    const set = await setPages(source, work, packed);
+    const set = await setPages(source, work);
     if (set !== null) files[`${name}-set.pdf`] = [await markCopy(set.bytes, markOf(source, packed)), STORED];
   }
   return { bytes: zipSync(files), pages: 0 };

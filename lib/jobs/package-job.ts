@@ -16,7 +16,7 @@ import { packageThreads } from "./package-threads";
 /** Words to the others that this worker is at it, in the time it is believed without one. */
 const WORDS_IN_SILENCE = 4;
 /** Trouble this often in a row ends a package. */
-const MOST_TROUBLES = 5;
+const MOST_TROUBLES = 8;
 
 /** Safe to run twice, also at once: one worker has a package at a time, and one that has ended stays as it is. */
 export async function runPackageJob({ shopId, packageId }: QueueData["package"]): Promise<void> {
@@ -38,8 +38,10 @@ async function make(hold: PackageHold, source: PackageSource, takes: number): Pr
     }, () => undefined);
   }, (settings().PACKAGE_SILENCE_S * 1000) / WORDS_IN_SILENCE);
   try {
-    await prepareParts(hold, source, wanted.signal);
-    if (!wanted.signal.aborted) await join(hold, source);
+    await prepareParts(hold, source, wanted);
+    if (wanted.signal.aborted) return;
+    await packageThreads().keepOne();
+    await join(hold, source);
   } catch (error) {
     log.warn({ packageId: hold.packageId, takes, error }, "a package could not be made");
     if (takes >= MOST_TROUBLES) return await failPackage(hold, "Its sheets could not be put together. Ask for it again; if it stays so, tell the owner of your shop.");
@@ -51,29 +53,32 @@ async function make(hold: PackageHold, source: PackageSource, takes: number): Pr
 }
 
 /** Prepares what is not stored yet, as many parts at once as there are threads. */
-async function prepareParts(hold: PackageHold, source: PackageSource, signal: AbortSignal): Promise<void> {
+async function prepareParts(hold: PackageHold, source: PackageSource, wanted: AbortController): Promise<void> {
   const stored = new Set((await storedParts(hold)).map((part) => part.ordinal));
   const open = Array.from({ length: Math.ceil(source.sheets.length / source.partSheets) }, (_, ordinal) => ordinal).filter((ordinal) => !stored.has(ordinal));
   const lane = async () => {
-    while (!signal.aborted) {
+    while (!wanted.signal.aborted) {
       const ordinal = open.shift();
       if (ordinal === undefined) return;
-      await preparePart(hold, source, ordinal, signal);
+      if (!(await preparePart(hold, source, ordinal))) wanted.abort();
     }
   };
   await Promise.all(Array.from({ length: packageThreads().most }, lane));
 }
 
-async function preparePart(hold: PackageHold, source: PackageSource, ordinal: number, signal: AbortSignal): Promise<void> {
+/** @returns false when the package is not this worker's any more. */
+async function preparePart(hold: PackageHold, source: PackageSource, ordinal: number): Promise<boolean> {
   const first = ordinal * source.partSheets;
   const sheets = await sheetWorks(hold, source, first, Math.min(first + source.partSheets, source.sheets.length));
-  if (signal.aborted) return;
-  const { bytes, pages } = await packageThreads().run({ kind: "part", packageId: hold.packageId, source, sheets }, sheets.map(({ stored }) => stored.buffer as ArrayBuffer));
+  const { sheets: _all, ...facts } = source;
+  const { bytes, pages } = await packageThreads().run({ kind: "part", packageId: hold.packageId, source: facts, sheets }, sheets.map(({ stored }) => stored.buffer as ArrayBuffer));
   const key = objectKey(hold.shopId, sha256Hex(bytes));
   const partId = await announcePart(hold, { ordinal, sheets: sheets.length, pages, objectKey: key });
-  if (partId === null) return;
+  if (partId === null) return false;
   await putObject(hold.shopId, bytes, "application/octet-stream");
-  if (!(await confirmPart(hold, partId))) await deleteObject(key);
+  const isKept = await confirmPart(hold, partId);
+  if (!isKept) await deleteObject(key);
+  return isKept;
 }
 
 async function join(hold: PackageHold, source: PackageSource): Promise<void> {

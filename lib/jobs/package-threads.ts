@@ -15,7 +15,7 @@ const IDLE_MS = 30_000;
 /** One task takes seconds; a thread that is at one for longer is stuck, ms. */
 const LONGEST_TASK_MS = 300_000;
 /** What a thread's own objects may take, MB: a sheet or a whole package's pages, and little that is about to go. */
-const LIMITS = { maxOldGenerationSizeMb: 512, maxYoungGenerationSizeMb: 8 } as const;
+const LIMITS = { maxOldGenerationSizeMb: 64, maxYoungGenerationSizeMb: 2 } as const;
 
 interface Waiting {
   readonly task: PackageTask;
@@ -53,6 +53,11 @@ export class PackageThreads {
   async end(): Promise<void> {
     for (const { reject } of this.#queue.splice(0)) reject(new Error("The threads were ended."));
     await Promise.all([...this.#all].map((thread) => thread.end()));
+  }
+
+  /** Ends the threads that have nothing to do but one: what follows is one thread's work, and the others' memory is wanted for it. */
+  async keepOne(): Promise<void> {
+    await Promise.all(this.#idle.splice(1).map((thread) => thread.end()));
   }
 
   #next(): void {

@@ -13,12 +13,13 @@ export async function sheetWorks(member: ShopMember, source: PackageSource, from
   const sheets = source.sheets.slice(from, to);
   const inputs = source.extras.length === 0 ? [] : await inShop(member).all(RevisionInput, { revisionId: { [Op.in]: sheets.map((sheet) => sheet.revisionId) } });
   const logos = new Map<string, Uint8Array | null>();
-  return Promise.all(sheets.map(async ({ revisionId, spoolId, kind, objectKey: key }, index) => {
-    const stored = await getObject(key);
+  return Promise.all(sheets.map(async (packed, index) => {
+    const { revisionId, spoolId, kind } = packed;
+    const stored = await getObject(packed.objectKey);
     if (stored === null) throw new Error("A stored sheet is missing from the object store.");
     const input = inputs.find((one) => one.revisionId === revisionId && one.kind === kind)?.input;
     const set = input === undefined ? null : { input, extras: await extrasOf(member, source, spoolId), logo: await logoOf(member, input, logos) };
-    return { ordinal: from + index, stored: owned(stored), set };
+    return { ordinal: from + index, packed, stored: owned(stored), set };
   }));
 }
 

@@ -2,6 +2,6 @@
 import { fileURLToPath } from "node:url";
 import { withBundle } from "../../scripts/lib/bundle.mjs";
 
-await withBundle(fileURLToPath(new URL("./package-process.ts", import.meta.url)), async ({ answer }) => answer());
+await withBundle(fileURLToPath(new URL("./package-process.ts", import.meta.url)), async ({ answer }) => answer(), { maps: false });
 const { stop } = await import("esbuild");
 await stop();

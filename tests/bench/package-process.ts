@@ -56,15 +56,17 @@ async function made(pool: PackageThreads, folder: string, source: PackageSource)
   const count = Math.ceil(source.sheets.length / source.partSheets);
   const open = Array.from({ length: count }, (_, ordinal) => ordinal);
   const partFile = (ordinal: number) => path.join(folder, `${pool.most}-part-${ordinal}`);
+  const { sheets: _all, ...facts } = source;
   const lane = async () => {
     for (let ordinal = open.shift(); ordinal !== undefined; ordinal = open.shift()) {
       const first = ordinal * source.partSheets;
-      const sheets = source.sheets.slice(first, first + source.partSheets).map(({ objectKey }, index) => ({ ordinal: first + index, stored: read(path.join(folder, objectKey)), set: null }));
-      const { bytes } = await pool.run({ kind: "part", packageId: "bench", source, sheets }, sheets.map(({ stored }) => stored.buffer as ArrayBuffer));
+      const sheets = source.sheets.slice(first, first + source.partSheets).map((packed, index) => ({ ordinal: first + index, packed, stored: read(path.join(folder, packed.objectKey)), set: null }));
+      const { bytes } = await pool.run({ kind: "part", packageId: "bench", source: facts, sheets }, sheets.map(({ stored }) => stored.buffer as ArrayBuffer));
       writeFileSync(partFile(ordinal), bytes);
     }
   };
   await Promise.all(Array.from({ length: pool.most }, lane));
+  await pool.keepOne();
   const parts = Array.from({ length: count }, (_, ordinal) => read(partFile(ordinal)));
   const { bytes, pages } = await pool.run({ kind: "join", packageId: "bench", source, parts }, parts.map((part) => part.buffer as ArrayBuffer));
   writeFileSync(path.join(folder, `${pool.most}-package.pdf`), bytes);

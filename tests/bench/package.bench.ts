@@ -69,8 +69,8 @@ function sourceOf(sheets: readonly PackedSheet[]): PackageSource {
 }
 
 async function make(question: MakeQuestion): Promise<MakeAnswer> {
-  // The process's place is the working folder: this file is bundled elsewhere when it runs.
-  const child = fork(path.resolve("tests/bench/package-process.mjs"), { serialization: "advanced", execArgv: [] });
+  // Begun as `npm run worker` begins one. The process's place is the working folder: this file is bundled elsewhere when it runs.
+  const child = fork(path.resolve("tests/bench/package-process.mjs"), { serialization: "advanced", execArgv: ["--max-semi-space-size=2"] });
   const ended = once(child, "exit").then(() => Promise.reject(new Error("The process that makes packages ended early.")));
   ended.catch(() => undefined);
   await Promise.race([once(child, "message"), ended]);

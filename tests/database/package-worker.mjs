@@ -5,5 +5,5 @@ import { withBundle } from "../../scripts/lib/bundle.mjs";
 await withBundle(fileURLToPath(new URL("../../lib/jobs/process.ts", import.meta.url)), async ({ startProcess }) => {
   process.once("message", () => void startProcess());
   process.once("disconnect", () => process.exit(0));
-});
+}, { maps: false });
 process.send("loaded");

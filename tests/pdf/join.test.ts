@@ -14,7 +14,7 @@ import { pdfRasters, type Raster } from "./poppler";
 
 const MARK: CopyMark = { word: null, printedAt: "2026-11-16T15:20:00Z", printedBy: "Danny Reyes", original: { sha256: "ab".repeat(32), signed: true } };
 const SVG = new TextEncoder().encode(`<svg xmlns="http://www.w3.org/2000/svg" viewBox="0 0 40 20"><rect width="40" height="20" fill="#124"/><text x="4" y="14" font-size="10" fill="#fff">fi 3/4</text></svg>`);
-const join = (parts: readonly Uint8Array[]) => joinParts({ title: "T", author: "A", subject: "S", keywords: "K", at: "2026-11-16T15:20:00Z", parts, bookmarks: [{ title: "One", sheet: 0, within: [{ title: "Two", sheet: 1, within: [] }] }] });
+const join = async (parts: readonly Uint8Array[]) => (await joinParts({ front: null, title: "T", author: "A", subject: "S", keywords: "K", at: "2026-11-16T15:20:00Z", parts, bookmarks: [{ title: "One", sheet: 0, within: [{ title: "Two", sheet: 1, within: [] }] }] })).bytes;
 
 let sheets: PartSheet[];
 let joined: Uint8Array;
