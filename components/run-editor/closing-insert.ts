@@ -1,6 +1,8 @@
 /** Turns a closing, of whatever fittings, into points of the run between what stays, with absolute places kept. Pure. */
-import { buildModel, emptyMarks, wayStops } from "@/iso";
-import type { CloseBetweenInput, ClosingFound, Item, Model, Nps, Offset, Point, RunDocument, UnitSystem, Vec3, Way, WaysInput, WayStop } from "@/iso";
+import {
+  buildModel, emptyMarks, wayStops,
+  type CloseBetweenInput, type ClosingFound, type Item, type Model, type Nps, type Offset, type Point, type RunDocument, type UnitSystem, type Vec3, type Way, type WaysInput, type WayStop,
+} from "@/iso";
 import { FROM_DRAWING, pointPlace, runOf, withPoints } from "./document-edits";
 import { lengthEntryText } from "@/components/jobs/settings-text";
 import { isBareEnd, sizeAfter, type ClosingForm, type EndForm } from "./closing-form";
@@ -25,10 +27,9 @@ interface Insertion {
   readonly rootGapMm: number;
   /** Direction out of end 0. */
   readonly out: Vec3;
+  /** Sizes at end 0 and end 1. */
   readonly nps: Nps;
-  /** Size at end 1. */
   readonly nps1: Nps;
-  /** What is cut off each end, as measured along its axis. */
   readonly trims: Way["trims"];
 }
 
@@ -39,10 +40,8 @@ export function planInsert(form: ClosingForm, found: ClosingFound, input: CloseB
     const size = (bend.end === 0 ? form.end0 : form.end1).radius === "SR" ? "sr" : "lr";
     return { position: bend.workingPoint, item: { kind: "elbow", elbow: bend.elbow === "90" ? `${size}-90` : `trimmed-${size}` } };
   });
-  return planned(form, { stops, start: input.end0.position, end: input.end1.position, rootGapMm: input.rootGapMm, out: input.end0.direction, nps: form.nps, nps1: form.nps, trims: NO_TRIMS }, model, stamp);
+  return planned(form, { stops, start: input.end0.position, end: input.end1.position, rootGapMm: input.rootGapMm, out: input.end0.direction, nps: form.nps, nps1: form.nps, trims: { end0Mm: 0, end1Mm: 0 } }, model, stamp);
 }
-
-const NO_TRIMS = { end0Mm: 0, end1Mm: 0 };
 
 /** The same for any way of the list: whole and trimmed elbows, mitres, a reducer, ends cut back. */
 export function planWayInsert(form: ClosingForm, way: Way, input: WaysInput, model: Model, stamp: InsertStamp): InsertPlan {
@@ -105,8 +104,7 @@ function between(form: ClosingForm, put: Insertion, model: Model, runId: string,
   const head = (runOf(cut, runId)?.points ?? []).slice(0, keepFrom).map((point, i) => (i === 0 && from === 0 ? outsideEnd(model, point, "out") : point));
   const kept = rest.map((point, i) => (i === 0 && rest.length === 1 ? outsideEnd(model, point, "in") : point));
   const next = withPoints(document, runId, () => [...head, ...stops, ...tail, ...kept]);
-  const gone = keepTo - keepFrom;
-  return { ok: true, document: next, words: insertWords(put, keepFrom + 1, gone, to === null) };
+  return { ok: true, document: next, words: insertWords(put, keepFrom + 1, keepTo - keepFrom, to === null) };
 }
 
 /** The run's own first end moved to where it is cut back to; everything after it is measured anew anyway. */
@@ -122,8 +120,6 @@ function insertWords({ stops }: Insertion, row: number, gone: number, atEnd: boo
   if (gone === 0) return `${what}.`;
   return gone === 1 ? `${what}. Row ${row} goes out; Undo brings it back.` : `${what}. Rows ${row} to ${row + gone - 1} go out; Undo brings them back.`;
 }
-
-const PROBE_MM = 1_000;
 
 /**
  * Where the offset of a point in this row starts from. Not always the place of the point before it: an eccentric
@@ -141,6 +137,8 @@ function placeAfter(document: RunDocument, runId: string, row: number, { out: di
   return place ? [place[0] - e, place[1] - n, place[2] - u] : [0, 0, 0];
 }
 
+const PROBE_MM = 1_000;
+
 /** A bare end of the run that an elbow is welded to is pipe that stands there already: a field weld to it. */
 function outsideEnd(model: Model, point: Point, side: "in" | "out"): Point {
   if (!isBareEnd(model, point.id)) return point;
@@ -157,8 +155,7 @@ function fromNothing(form: ClosingForm, put: Insertion, document: RunDocument, s
   const main = document.runs[0];
   if (!main) return no("This line has no run.");
   const first = { ...asMeasured(newPoint(idOf(stamp, 0), offsetBetween([0, 0, 0], put.start, units), EXISTING, stamp), form.end0), places: { out: "field" as const } };
-  const last = put.stops[put.stops.length - 1]?.position ?? put.start;
-  const points = [first, ...stopPoints(put, put.start, units, stamp), endPoint(form.end1, put, last, units, stamp)];
+  const points = [first, ...stopPoints(put, put.start, units, stamp), endPoint(form.end1, put, put.stops[put.stops.length - 1]?.position ?? put.start, units, stamp)];
   return { ok: true, document: withPoints(document, main.id, () => points), words: "The closing becomes this line's run, between two existing ends." };
 }
 
