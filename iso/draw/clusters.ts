@@ -1,5 +1,6 @@
 /** Clusters: along each axis by itself, the working points that share a coordinate on paper. */
 import type { Row } from "./compact";
+import { fractionsOf, integersOf } from "./flat-lists";
 import * as size from "./sizes";
 import type { Sketch, SketchEdge } from "./sketch";
 
@@ -26,7 +27,7 @@ export function numberedSketch(sketch: Sketch): Numbered {
   const ids = [...sketch.vertices.keys()];
   const place = new Map(ids.map((id, i) => [id, i]));
   const { edges } = sketch;
-  return { sketch, ids, edges, from: Int32Array.from(edges, (edge) => place.get(edge.from) ?? 0), to: Int32Array.from(edges, (edge) => place.get(edge.to) ?? 0) };
+  return { sketch, ids, edges, from: integersOf(edges, (edge) => place.get(edge.from) ?? 0), to: integersOf(edges, (edge) => place.get(edge.to) ?? 0) };
 }
 
 /**
@@ -35,7 +36,7 @@ export function numberedSketch(sketch: Sketch): Numbered {
  */
 export function clustersOf(numbers: Numbered, axis: Axis): AxisClusters {
   const { sketch, ids, edges, from, to } = numbers;
-  const parent = Int32Array.from(ids, (_, i) => i);
+  const parent = integersOf(ids, (_, i) => i);
   const root = (at: number): number => {
     let top = at;
     while (parent[top] !== top) top = parent[top]!;
@@ -65,7 +66,7 @@ export function clustersOf(numbers: Numbered, axis: Axis): AxisClusters {
   });
   const sorted = mergeNear([...found.values()].sort(alongAxis), parent);
   const number = new Map(sorted.map((cluster, i) => [cluster.root, i]));
-  return { count: sorted.length, of: Int32Array.from(ids, (_, i) => number.get(root(i)) ?? 0) };
+  return { count: sorted.length, of: integersOf(ids, (_, i) => number.get(root(i)) ?? 0) };
 }
 
 interface Cluster {
@@ -133,7 +134,7 @@ export function orderRows(numbers: Numbered, axis: Axis, clusters: AxisClusters)
 /** What of a cluster stands where across the axis: four numbers a thing (low and high along either other axis), the first four round all of it. */
 function slabsOf({ sketch, ids, edges, from, to }: Numbered, axis: Axis, { count, of }: AxisClusters): readonly number[][] {
   const [p, q] = AXES.filter((other) => other !== axis) as [Axis, Axis];
-  const along = (other: Axis): Float64Array => Float64Array.from(ids, (id) => sketch.vertices.get(id)?.position[other] ?? 0);
+  const along = (other: Axis): Float64Array => fractionsOf(ids, (id) => sketch.vertices.get(id)?.position[other] ?? 0);
   const [atP, atQ] = [along(p), along(q)];
   const slabs: number[][] = Array.from({ length: count }, () => [Infinity, -Infinity, Infinity, -Infinity]);
   const add = (cluster: number, one: number, two: number): void => {

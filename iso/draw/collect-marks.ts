@@ -20,15 +20,32 @@ export interface Marks {
 
 const NO_MARKS: Marks = { labels: [], shown: [] };
 
+interface ItemNumber {
+  readonly item: number;
+  readonly ref: Ref;
+}
+type ItemNumbers = ReadonlyMap<string, readonly ItemNumber[]>;
+
+/** Kept while their sketch is: components and pieces both ask for them. */
+const numbersOf = new WeakMap<Sketch, ItemNumbers>();
+
 /** Item numbers of each component id and piece key, spool by spool. */
-export function itemNumbers(sketch: Sketch): ReadonlyMap<string, readonly { readonly item: number; readonly ref: Ref }[]> {
-  const numbers = new Map<string, { item: number; ref: Ref }[]>();
+export function itemNumbers(sketch: Sketch): ItemNumbers {
+  const known = numbersOf.get(sketch);
+  if (known) return known;
+  const numbers = new Map<string, ItemNumber[]>();
   for (const spool of sketch.model.spools) {
     if (sketch.spool !== null && spool.letter !== sketch.spool) continue;
     for (const row of spool.materials) {
-      for (const id of row.refs) numbers.set(id, [...(numbers.get(id) ?? []), { item: row.item, ref: { kind: "material", id: `${spool.letter}${row.item}` } }]);
+      const number: ItemNumber = { item: row.item, ref: { kind: "material", id: `${spool.letter}${row.item}` } };
+      for (const id of row.refs) {
+        const there = numbers.get(id);
+        if (there) there.push(number);
+        else numbers.set(id, [number]);
+      }
     }
   }
+  numbersOf.set(sketch, numbers);
   return numbers;
 }
 

@@ -134,7 +134,10 @@ export function compactRows(table: RowTable, least: Float64Array, target: Float6
     x[at] = far;
   }
   const count = order.length;
-  for (let sweep = 0; sweep < SWEEPS && swept(x, table, least, target, sweep % 2 === 0); sweep++);
+  // A row without a wish pulls at nothing.
+  const pull = new Float64Array(target.length);
+  for (let row = 0; row < target.length; row++) if (target[row] !== 0) pull[row] = 1 / target[row]!;
+  for (let sweep = 0; sweep < SWEEPS && swept(x, table, least, pull, sweep % 2 === 0); sweep++);
   let lowest = Infinity;
   for (let at = 0; at < count; at++) lowest = Math.min(lowest, x[at]!);
   for (let at = 0; at < count; at++) x[at]! -= lowest;
@@ -142,7 +145,7 @@ export function compactRows(table: RowTable, least: Float64Array, target: Float6
 }
 
 /** Moves each cluster once to the mean of its wishes; true when one moved. Written out in one loop: a drawing runs through it tens of thousands of times. */
-function swept(x: Float64Array, table: RowTable, least: Float64Array, target: Float64Array, backward: boolean): boolean {
+function swept(x: Float64Array, table: RowTable, least: Float64Array, pulls: Float64Array, backward: boolean): boolean {
   const { a, b, into, intoFrom, out, outFrom, order } = table;
   const count = order.length;
   let moved = false;
@@ -157,9 +160,8 @@ function swept(x: Float64Array, table: RowTable, least: Float64Array, target: Fl
       const other = x[a[row]!]!;
       const nearest = other + least[row]!;
       if (nearest > low) low = nearest;
-      const wish = target[row]!;
-      if (wish === 0) continue;
-      const pull = 1 / wish;
+      const pull = pulls[row]!;
+      if (pull === 0) continue;
       sum += other * pull + 1;
       weight += pull;
     }
@@ -168,9 +170,8 @@ function swept(x: Float64Array, table: RowTable, least: Float64Array, target: Fl
       const other = x[b[row]!]!;
       const farthest = other - least[row]!;
       if (farthest < high) high = farthest;
-      const wish = target[row]!;
-      if (wish === 0) continue;
-      const pull = 1 / wish;
+      const pull = pulls[row]!;
+      if (pull === 0) continue;
       sum += other * pull - 1;
       weight += pull;
     }

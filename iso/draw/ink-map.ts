@@ -18,6 +18,8 @@ const MOST = 16_384;
 const ALL_BITS = 0xffffffff;
 /** Rows looked at together. */
 const TALL = 8;
+/** Steps along a line looked at together. */
+const CHUNK = 16;
 const scratch = new Float64Array(4);
 
 function bitCount(word: number): number {
@@ -139,12 +141,28 @@ export class InkMap {
     let x = ends[at]! * CELLS_PER_MM - this.left;
     let y = ends[at + 1]! * CELLS_PER_MM - this.top;
     let count = 0;
-    for (let i = 0; i <= steps; i++) {
-      if (x >= 0 && y >= 0 && x < columns && y < rows) count += (bits[(y | 0) * words + ((x | 0) >>> 5)]! >>> (x & 31)) & 1;
-      x += stepX;
-      y += stepY;
+    for (let i = 0; i <= steps; ) {
+      const next = i + CHUNK;
+      // Long lines run over blank paper for most of their way.
+      if (next <= steps && !this.anyBetween(x, y, x + stepX * CHUNK, y + stepY * CHUNK)) {
+        x += stepX * CHUNK;
+        y += stepY * CHUNK;
+        i = next;
+        continue;
+      }
+      for (const end = Math.min(steps + 1, next); i < end; i++) {
+        if (x >= 0 && y >= 0 && x < columns && y < rows) count += (bits[(y | 0) * words + ((x | 0) >>> 5)]! >>> (x & 31)) & 1;
+        x += stepX;
+        y += stepY;
+      }
     }
     return count;
+  }
+
+  /** True when a cell of the upright box between two places of this map is inked. */
+  private anyBetween(x0: number, y0: number, x1: number, y1: number): boolean {
+    const { left, top } = this;
+    return this.anyCells(Math.floor(Math.min(x0, x1)) - 1 + left, Math.floor(Math.min(y0, y1)) - 1 + top, Math.floor(Math.max(x0, x1)) + 2 + left, Math.floor(Math.max(y0, y1)) + 2 + top);
   }
 
   /** Inks the cells within a thickness of a line. */

@@ -5,6 +5,7 @@
  */
 import type { PaperBox } from "../geometry/types";
 import { CellLists, NONE } from "./cell-lists";
+import { fractionsOf } from "./flat-lists";
 import { FROM_X, FROM_Y, LED, STRIDE, TO_X, TO_Y, X, Y, type Candidates, type Label } from "./label-candidates";
 import { PRICE } from "./label-rings";
 
@@ -13,6 +14,8 @@ const MARGIN = 0.35;
 const LEADER_MARGIN = 0.25;
 const COST_OF_LEADER_ON_LABEL = 68 * PRICE;
 const COST_OF_LEADER_CROSSING = 14 * PRICE;
+/** Dearer than anything. */
+const MOST = 1 << 30;
 const CELL = 10;
 /** Cells beyond the room on every side; what lies farther out is held in the outermost. */
 const RIM_CELLS = 4;
@@ -36,8 +39,8 @@ export class LabelGrid {
   constructor(labels: readonly Label[], private readonly candidates: Candidates, room: PaperBox) {
     this.seats = new Int32Array(labels.length).fill(NONE);
     this.stamps = new Int32Array(labels.length);
-    this.w = Float64Array.from(labels, (label) => label.halfWidth);
-    this.h = Float64Array.from(labels, (label) => label.halfHeight);
+    this.w = fractionsOf(labels, (label) => label.halfWidth);
+    this.h = fractionsOf(labels, (label) => label.halfHeight);
     this.columns = Math.max(1, Math.ceil((room.maxX - room.minX) / CELL)) + 2 * RIM_CELLS;
     this.rows = Math.max(1, Math.ceil((room.maxY - room.minY) / CELL)) + 2 * RIM_CELLS;
     this.originX = room.minX - RIM_CELLS * CELL;
@@ -107,16 +110,16 @@ export class LabelGrid {
     return known !== NONE && locked[known] === 1 && this.seats[known] === blockedBy[candidate];
   }
 
-  /** Price of the leaders and labels a label meets where it sits, or would meet on a free candidate. */
-  meets(label: number, candidate: number): number {
-    return this.weigh(label, candidate, null);
+  /** Price of the leaders and labels a label meets where it sits, or would meet on a free candidate; nobody asks how much more than the limit it is. */
+  meets(label: number, candidate: number, limit = MOST): number {
+    return this.weigh(label, candidate, null, limit);
   }
 
   /** Writes which labels a lifted label would meet on a candidate, each once; counts no further than the list is long and one. */
   metLabels(label: number, candidate: number, met: Int32Array): number {
     this.met = 0;
     this.boxesUnder(label, candidate, met);
-    if (this.met <= met.length) this.weigh(label, candidate, met);
+    if (this.met <= met.length) this.weigh(label, candidate, met, MOST);
     return this.met;
   }
 
@@ -174,7 +177,7 @@ export class LabelGrid {
   }
 
   /** Price of foreign leaders under the box, then of what its own leader meets. */
-  private weigh(label: number, candidate: number, list: Int32Array | null): number {
+  private weigh(label: number, candidate: number, list: Int32Array | null, limit: number): number {
     const { leaders, seats, columns, stamps } = this;
     const { at, flags } = this.candidates;
     const o = candidate * STRIDE;
@@ -203,15 +206,16 @@ export class LabelGrid {
           if (Math.abs(ax * by - ay * bx) >= Math.abs(bx - ax) * h + Math.abs(by - ay) * w) continue;
           cost += COST_OF_LEADER_ON_LABEL;
           if (list) this.note(list, other);
+          else if (cost >= limit) return cost;
         }
       }
     }
     if ((flags[candidate]! & LED) === 0) return cost;
-    return cost + this.weighLeader(label, o, list);
+    return cost >= limit ? cost : cost + this.weighLeader(label, o, list, limit - cost);
   }
 
   /** Price of the labels under a candidate's leader and of the leaders across it. */
-  private weighLeader(label: number, o: number, list: Int32Array | null): number {
+  private weighLeader(label: number, o: number, list: Int32Array | null, limit: number): number {
     const { boxes, leaders, seats, stamps, columns } = this;
     const { at } = this.candidates;
     const fx = at[o + FROM_X]!;
@@ -241,9 +245,11 @@ export class LabelGrid {
           if (Math.abs(ax * wy - ay * wx) >= Math.abs(wx) * h + Math.abs(wy) * w) continue;
           cost += COST_OF_LEADER_ON_LABEL;
           if (list) this.note(list, other);
+          else if (cost >= limit) return cost;
         }
       }
     }
+    if (cost >= limit) return cost;
     const onLeader = ++this.stamp;
     for (let row = y0; row <= y1; row++) {
       for (let column = x0; column <= x1; column++) {
@@ -271,7 +277,7 @@ export class LabelGrid {
     const candidate = this.seats[label]!;
     if (candidate < 0) return false;
     this.met = 0;
-    this.weigh(label, candidate, this.one);
+    this.weigh(label, candidate, this.one, MOST);
     return this.met > 0;
   }
 }

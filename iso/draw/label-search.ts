@@ -191,7 +191,7 @@ export class LabelSearch {
         this.looks++;
         if (grid.taken(label, candidate)) continue;
         const cost = candidates.cost(label, candidate);
-        const whole = cost >= best ? cost : cost + grid.meets(label, candidate);
+        const whole = cost >= best ? cost : cost + grid.meets(label, candidate, best - cost);
         if (whole < best) {
           best = whole;
           this.found = candidate;

@@ -4,7 +4,7 @@
  * place on another label is never taken: the rings go on outwards until one is free, so labels cannot overlap.
  * Deterministic.
  */
-import type { PaperBox } from "../geometry/types";
+import type { PaperBox, PaperPoint } from "../geometry/types";
 import type { DisplayItem, LabelReport } from "./drawing-types";
 import { boxMap, turnedInk, type InkMap } from "./ink-map";
 import { Candidates, FROM_X, FROM_Y, LED, STRIDE, TO_X, TO_Y, X, Y, type Label, type LabelInk } from "./label-candidates";
@@ -12,7 +12,7 @@ import { COARSE, FINE } from "./label-rings";
 import { LabelGrid } from "./label-grid";
 import { LabelSearch, QUICK, THOROUGH } from "./label-search";
 import { numbersAside, type PlacedNumber } from "./number-places";
-import { boxesMeet, segmentInBox, segmentsApart, type Segment, type TurnedBox } from "./plane";
+import { boxesMeet, segmentInBox, type Segment, type TurnedBox } from "./plane";
 
 /** A leader this near a number touches it, mm. */
 const LEADER_MARGIN = 0.25;
@@ -46,30 +46,43 @@ export function placeLabels(labels: readonly Label[], still: readonly TurnedBox[
   /** Whose leaders they are. */
   const owners: number[] = [];
   const touched = new Set<number>();
-  labels.forEach((label, i) => {
+  const { at, flags } = candidates;
+  for (let i = 0; i < labels.length; i++) {
+    const label = labels[i]!;
     const seat = grid.seats[i]!;
-    if (seat < 0) return;
-    const at = candidates.at.subarray(seat * STRIDE, (seat + 1) * STRIDE);
-    const leader: Segment | null = (candidates.flags[seat]! & LED) !== 0 ? { from: [at[FROM_X]!, at[FROM_Y]!], to: [at[TO_X]!, at[TO_Y]!] } : null;
+    if (seat < 0) continue;
+    const o = seat * STRIDE;
+    const centre: PaperPoint = [at[o + X]!, at[o + Y]!];
+    const leader: Segment | null = (flags[seat]! & LED) !== 0 ? { from: [at[o + FROM_X]!, at[o + FROM_Y]!], to: [at[o + TO_X]!, at[o + TO_Y]!] } : null;
     if (leader) {
       leaders.push(leader);
       owners.push(i);
     }
-    lengths.push(leader ? Math.hypot(leader.to[0] - leader.from[0], leader.to[1] - leader.from[1]) : 0);
+    lengths.push(leader ? lengthOf(leader) : 0);
     if (candidates.touches(i, seat) || grid.touched(i)) touched.add(i);
-    items.push(...label.draw([at[X]!, at[Y]!], leader));
-    boxes.push({ centre: [at[X]!, at[Y]!], halfWidth: label.halfWidth, halfHeight: label.halfHeight, angle: 0 });
-  });
+    items.push(...label.draw(centre, leader));
+    boxes.push({ centre, halfWidth: label.halfWidth, halfHeight: label.halfHeight, angle: 0 });
+  }
   const aside = numbersAside(numbers, [...boxes, ...still], leaders, ink.heavy);
   const fixed = [...still, ...aside];
   // A number counts as touched when it lies on pipe or a leader runs through it, and so does that leader's label.
   let touches = 0;
   for (const box of fixed) {
-    const through = leaders.flatMap(({ from, to }, i) => (segmentInBox(from, to, box, LEADER_MARGIN) > 0 ? [owners[i]!] : []));
-    for (const label of through) touched.add(label);
-    if (through.length > 0 || turnedInk(ink.heavy, box) > 0) touches++;
+    let through = false;
+    for (let i = 0; i < leaders.length; i++) {
+      if (segmentInBox(leaders[i]!.from, leaders[i]!.to, box, LEADER_MARGIN) === 0) continue;
+      touched.add(owners[i]!);
+      through = true;
+    }
+    if (through || turnedInk(ink.heavy, box) > 0) touches++;
   }
   return { items, boxes, numbers: aside, report: reportOf(boxes, fixed, touches + touched.size, lengths) };
+}
+
+function lengthOf({ from, to }: Segment): number {
+  const x = to[0] - from[0];
+  const y = to[1] - from[1];
+  return Math.sqrt(x * x + y * y);
 }
 
 /** Seats from few places first; where those leave more than a few labels unclean, from many places, searched deeper. */
@@ -107,14 +120,16 @@ function reportOf(boxes: readonly TurnedBox[], fixed: readonly TurnedBox[], touc
 
 /** Pairs of boxes that meet, the first of them one of the first `movable`. */
 function overlapsOf(boxes: readonly TurnedBox[], movable: number): number {
-  const diagonals = boxes.map(({ centre, halfWidth, halfHeight }): Segment => {
-    const reach = Math.hypot(halfWidth, halfHeight);
-    return { from: [centre[0] - reach, centre[1] - reach], to: [centre[0] + reach, centre[1] + reach] };
-  });
+  const flat = new Float64Array(boxes.length * 3);
+  boxes.forEach(({ centre, halfWidth, halfHeight }, i) => flat.set([centre[0], centre[1], Math.sqrt(halfWidth * halfWidth + halfHeight * halfHeight)], i * 3));
   let overlaps = 0;
   for (let i = 0; i < movable; i++) {
+    const x = flat[i * 3]!;
+    const y = flat[i * 3 + 1]!;
+    const reach = flat[i * 3 + 2]!;
     for (let j = i + 1; j < boxes.length; j++) {
-      if (!segmentsApart(diagonals[i]!, diagonals[j]!) && boxesMeet(boxes[i]!, boxes[j]!, 0)) overlaps++;
+      const far = reach + flat[j * 3 + 2]!;
+      if (Math.abs(flat[j * 3]! - x) < far && Math.abs(flat[j * 3 + 1]! - y) < far && boxesMeet(boxes[i]!, boxes[j]!, 0)) overlaps++;
     }
   }
   return overlaps;

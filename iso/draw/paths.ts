@@ -84,7 +84,10 @@ export function textItem(layer: Layer, ref: Ref | null, at: PaperPoint, text: st
 export function centredText(layer: Layer, ref: Ref | null, centre: PaperPoint, text: string, options: TextOptions): TextItem {
   const turn = options.rotateRad ?? 0;
   const drop = options.capMm / 2;
-  return textItem(layer, ref, [centre[0] - Math.sin(turn) * drop, centre[1] + Math.cos(turn) * drop], text, { ...options, anchor: "middle" });
+  return {
+    type: "text", layer, ref, at: [centre[0] - Math.sin(turn) * drop, centre[1] + Math.cos(turn) * drop], anchor: "middle", text, capMm: options.capMm,
+    face: options.face ?? "regular", rotateRad: turn, ink: options.ink ?? "ink",
+  };
 }
 
 /** Box of a centred text: its advance and capital height. */

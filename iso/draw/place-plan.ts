@@ -3,6 +3,7 @@ import type { PaperPoint, Vec3 } from "../geometry/types";
 import { AXES, clustersOf, numberedSketch, orderRows, type Axis, type Numbered } from "./clusters";
 import { rowsWithoutCycles, rowTable, type Row, type RowTable } from "./compact";
 import type { MeasureText } from "./drawing-types";
+import { fractionsOf, integersOf } from "./flat-lists";
 import type { Projection } from "./project";
 import * as size from "./sizes";
 import type { Sketch, SketchEdge } from "./sketch";
@@ -76,7 +77,7 @@ export function placePlan(sketch: Sketch, measure: MeasureText): PlacePlan {
   const numbers = numberedSketch(sketch);
   const drawn = numbers.edges.flatMap((edge, i) => (edge.kind === "none" ? [] : [i]));
   const edges = drawn.map((i) => numbers.edges[i]!);
-  const [from, to] = [Int32Array.from(drawn, (i) => numbers.from[i]!), Int32Array.from(drawn, (i) => numbers.to[i]!)];
+  const [from, to] = [integersOf(drawn, (i) => numbers.from[i]!), integersOf(drawn, (i) => numbers.to[i]!)];
   return {
     sketch, ids: numbers.ids, edges, from, to,
     axes: AXES.map((axis) => axisPlan(numbers, axis, edges, from, to)) as unknown as PlacePlan["axes"],
@@ -100,7 +101,7 @@ function axisPlan(numbers: Numbered, axis: Axis, edges: readonly SketchEdge[], s
 }
 
 function axisRows(count: number, rows: readonly PlanRow[]): AxisRows {
-  return { leg: Int32Array.from(rows, (row) => row.leg), least: Float64Array.from(rows, (row) => row.least), table: rowTable(count, rows) };
+  return { leg: integersOf(rows, (row) => row.leg), least: fractionsOf(rows, (row) => row.least), table: rowTable(count, rows) };
 }
 
 export function rowsWith(axis: AxisPlan, extra: readonly Row[]): AxisRows {

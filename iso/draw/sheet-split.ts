@@ -134,19 +134,20 @@ const SMALL_BRANCH = 0.4;
 
 function bestCut(tree: SheetTree, vertices: readonly TreeVertex[], capacity: SheetCapacity, sheets: number): readonly (readonly TreeVertex[])[] | null {
   const inside = new Set(vertices);
+  const loads = loadsBelow(vertices, inside);
   const whole = fullness(loadOf(vertices), capacity);
   let best: TreeVertex | null = null;
   let bestPrice = Infinity;
   for (const vertex of vertices) {
     if (!vertex.parent || !inside.has(vertex.parent)) continue;
-    const joint = partingJoint(tree.sketch, vertex);
-    if (!joint) continue;
-    const below = subtree(vertex, inside);
-    const after = fullness(loadOf(below), capacity);
+    const after = fullness(loads.get(vertex) ?? NO_LOAD, capacity);
     const before = whole - after;
     const target = whole / sheets;
     const steps = Math.min(sheets - 1, Math.max(1, Math.round(before / target)));
     let price = Math.abs(before - steps * target) / target;
+    if (price - WORTH_BOLTED >= bestPrice) continue;
+    const joint = partingJoint(tree.sketch, vertex);
+    if (!joint) continue;
     if (vertex.looped) price += PRICE_LOOP;
     if (Math.min(before, after) < LEAST_SHARE * whole / sheets) price += PRICE_SMALL;
     if (joint.kind === "bolted") price -= WORTH_BOLTED;
@@ -158,6 +159,21 @@ function bestCut(tree: SheetTree, vertices: readonly TreeVertex[], capacity: She
   if (!best) return null;
   const below = new Set(subtree(best, inside));
   return [vertices.filter((vertex) => !below.has(vertex)), vertices.filter((vertex) => below.has(vertex))];
+}
+
+/** What stands at and below each vertex. */
+function loadsBelow(vertices: readonly TreeVertex[], inside: ReadonlySet<TreeVertex>): ReadonlyMap<TreeVertex, Load> {
+  const loads = new Map<TreeVertex, { welds: number; labels: number }>();
+  for (const vertex of vertices) {
+    for (let at: TreeVertex | null = vertex; at && inside.has(at); at = at.parent) {
+      const there = loads.get(at);
+      if (there) {
+        there.welds += vertex.load.welds;
+        there.labels += vertex.load.labels;
+      } else loads.set(at, { ...vertex.load });
+    }
+  }
+  return loads;
 }
 
 function subtree(top: TreeVertex, inside: ReadonlySet<TreeVertex>): readonly TreeVertex[] {
