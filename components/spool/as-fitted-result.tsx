@@ -11,7 +11,10 @@ const TONES: Readonly<Record<FittedVerdict, string>> = {
   go: "border-ink", near: "border-caution text-caution", trim: "border-caution text-caution", stop: "border-alert text-alert", none: "border-rule text-soft",
 };
 
-export function VerdictWord({ verdict }: { readonly verdict: FittedVerdict }) {
+/** A rule at the left in the verdict's tone; the words beside it say the verdict. */
+export const verdictClass = (verdict: FittedVerdict): string => `block border-l-4 pl-2 ${TONES[verdict]}`;
+
+function VerdictWord({ verdict }: { readonly verdict: FittedVerdict }) {
   return <strong className={`whitespace-nowrap border-l-4 pl-2 ${TONES[verdict]}`}>{FITTED_WORDS[verdict]}</strong>;
 }
 

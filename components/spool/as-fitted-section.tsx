@@ -10,7 +10,7 @@ import { Section } from "@/components/ui/section";
 import type { MeasurementRow } from "@/lib/rules/as-fitted-types";
 import { AsFittedPaste } from "./as-fitted-paste";
 import { AsFittedPoints, READ_AS_OPTIONS } from "./as-fitted-points";
-import { AsFittedResultView, VerdictWord } from "./as-fitted-result";
+import { AsFittedResultView, verdictClass } from "./as-fitted-result";
 
 export interface AsFittedProps {
   readonly spoolId: string;
@@ -60,7 +60,7 @@ function Records({ address }: { readonly address: string }) {
       {rows.map((row) => (
         <li key={row.id} className="flex flex-wrap items-start justify-between gap-x-6 gap-y-1 border-b border-hair py-2">
           <span className="min-w-0 flex-1 basis-72">
-            <VerdictWord verdict={row.verdict} /> <span>{row.headline}</span>
+            <span className={verdictClass(row.verdict)}>{row.headline}</span>
             <span className="block text-sm text-soft">{row.by}, {timeText(row.at)}, rev {row.revisionCode}</span>
           </span>
           <a className={buttonClass("plain", false)} href={`${address}/sheet?record=${row.id}`} target="_blank" rel="noreferrer">Dimension record (PDF)</a>
