@@ -100,9 +100,9 @@ function plantedChanges(items: readonly DisplayItem[]): Change[] {
   const kinds = new Map(items.map((item, index) => [`${item.layer} ${item.type}`, index] as const).reverse());
   // A halo is paper's colour and shows only where it parts a line.
   const without = [...kinds].filter(([kind]) => kind !== "halo line").map(([kind, index]): Change => [`no ${kind}`, items.filter((_, i) => i !== index)]);
-  const swaps = (Object.keys(OFF) as (keyof typeof OFF)[]).flatMap((name): Change[] => {
-    const at = items.findIndex((item) => OFF[name](item) !== null);
-    return at < 0 ? [] : [[name, items.map((item, i) => (i === at ? OFF[name](item)! : item))]];
+  const swaps = Object.entries(OFF).flatMap(([name, off]): Change[] => {
+    const at = items.findIndex((item) => off(item) !== null);
+    return at < 0 ? [] : [[name, items.map((item, i) => (i === at ? off(item)! : item))]];
   });
   expect(swaps.map(([name]) => name)).toEqual(Object.keys(OFF));
   return [...without, ...swaps];
