@@ -1,6 +1,6 @@
 /** Bookmarks of a package: lines, their spools, what is in front. */
 import { PDFHexString, PDFName, type PDFDocument, type PDFRef } from "pdf-lib";
-import type { JoinedPage } from "./join-parts";
+import type { JoinedPage } from "./join-types";
 
 export interface Bookmark {
   readonly title: string;

@@ -8,6 +8,7 @@ import { embedFace, noFaceUse } from "./join-faces";
 import { ObjectPool } from "./join-objects";
 import { addOutline, type Bookmark } from "./join-outline";
 import { JOIN } from "./join-part";
+import type { JoinedPage } from "./join-types";
 import { tagPages } from "./join-tags";
 
 export interface JoinInput {
@@ -26,13 +27,6 @@ export interface JoinInput {
 
 /** How many pages each sheet has, by the sheet's number. */
 export type PageCounts = ReadonlyMap<number, number>;
-
-export interface JoinedPage {
-  readonly ref: PDFRef;
-  /** Which sheet it belongs to; below 0 for the pages in front. */
-  readonly sheet: number;
-  readonly name: string;
-}
 
 /** Equal input gives equal bytes. @throws when a part is none. */
 export async function joinParts(input: JoinInput): Promise<{ readonly bytes: Uint8Array; readonly pages: number }> {

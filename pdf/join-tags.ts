@@ -1,6 +1,6 @@
 /** One tagged section a page, as on the single sheets: readers that speak a page aloud find where each begins. */
 import { PDFHexString, PDFName, PDFNumber, type PDFDocument } from "pdf-lib";
-import type { JoinedPage } from "./join-parts";
+import type { JoinedPage } from "./join-types";
 
 /** The drawing of each of our pages is marked as content 0 of its page (ISO 32000-1, 14.7.4.2). */
 const CONTENT = 0;

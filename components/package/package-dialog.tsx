@@ -2,7 +2,6 @@
 import { zodResolver } from "@hookform/resolvers/zod";
 import { useRouter } from "next/navigation";
 import { useForm, useWatch } from "react-hook-form";
-import type { z } from "zod";
 import { SHEET_PART_WORDS } from "@/iso";
 import { Button } from "@/components/ui/button";
 import { Dialog, DialogActions } from "@/components/ui/dialog";
@@ -15,7 +14,7 @@ import { Notice } from "@/components/ui/notice";
 import { useFormSend } from "@/components/ui/use-form-send";
 import { SHEET_WORDS } from "@/components/jobs/sheet-words";
 import type { JobDetail } from "@/lib/rules/api-types";
-import { packageNewSchema } from "@/lib/rules/package-forms";
+import { packageNewSchema, type PackageFormValues } from "@/lib/rules/package-forms";
 import { PACKAGE_EXTRAS, type PackageCandidate } from "@/lib/rules/packages";
 import { SheetChoice } from "./sheet-choice";
 import { TransmittalFields } from "./transmittal-fields";
@@ -41,8 +40,6 @@ export function PackageDialog({ job, open, onClose }: PackageDialogProps) {
 function NothingIssued() {
   return <EmptyState title="No sheet to pack">Sheets can be packed once they are issued: submit a spool and have it signed.</EmptyState>;
 }
-
-export type PackageFormValues = z.input<typeof packageNewSchema>;
 
 const FILES = [
   { value: "pdf", label: "One PDF of marked copies" },

@@ -1,7 +1,7 @@
 "use client";
 import { useWatch, type UseFormReturn } from "react-hook-form";
 import { Check, TextArea, TextField } from "@/components/ui/field";
-import type { PackageFormValues } from "./package-dialog";
+import type { PackageFormValues } from "@/lib/rules/package-forms";
 
 /** What makes a package a transmittal: its number, for whom and what for. */
 export function TransmittalFields({ form }: { readonly form: UseFormReturn<PackageFormValues> }) {

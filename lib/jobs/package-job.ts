@@ -3,15 +3,16 @@
  * worker that is killed leaves its parts, and the next goes on from there. Whatever happens, one result is written at most.
  */
 import { randomUUID } from "node:crypto";
-import { announcePart, cleanPackage, confirmPart, failPackage, finishPackage, keepPackage, MOST_TAKES, releasePackage, storedParts, takeUpPackage, type PackageHold } from "@/lib/commands/finish-package";
+import { announcePart, cleanPackage, confirmPart, failPackage, finishPackage, keepPackage, MOST_TAKES, releasePackage, storedParts, takeUpPackage, type PackageHold, type TakenUp } from "@/lib/commands/finish-package";
 import { storePackage } from "@/lib/commands/store-package";
 import { sheetWorks } from "@/lib/queries/package-work";
-import type { PackageSource } from "@/lib/rules/packages";
 import { log } from "@/lib/server/log";
 import type { QueueData } from "@/lib/server/queue";
 import { settings } from "@/lib/server/settings";
 import { deleteObject, objectKey, putObject, sha256Hex } from "@/lib/server/storage";
 import { packageThreads } from "./package-threads";
+
+type PackageSource = Extract<TakenUp, { kind: "mine" }>["source"];
 
 /** Words to the others that this worker is at it, in the time it is believed without one. */
 const WORDS_IN_SILENCE = 4;

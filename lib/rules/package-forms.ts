@@ -23,6 +23,8 @@ export const packageNewSchema = z.object({
   paper: z.enum(["letter", "tabloid", "A4", "A3"]).nullable().default(null),
   transmittal: transmittalSchema.nullable().default(null),
 });
+/** As the form holds it while it is filled in. */
+export type PackageFormValues = z.input<typeof packageNewSchema>;
 export type PackageNewForm = z.output<typeof packageNewSchema>;
 
 export const packageReceiptSchema = z.object({
