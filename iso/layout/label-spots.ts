@@ -62,13 +62,17 @@ function bestSpot({ at }: SpotLabel, width: number, strokes: readonly Stroke[], 
 }
 
 const OVERLAP_COST = 1000;
+/** A leader through another label reads as if that were struck out. */
+const STRUCK_COST = 400;
 const ON_POINT_COST = 40;
 
 function costOf(box: PaperBox, at: PaperPoint, strokes: readonly Stroke[], taken: readonly PaperBox[]): number {
   const covers = taken.filter((other) => box.minX < other.maxX && other.minX < box.maxX && box.minY < other.maxY && other.minY < box.maxY).length;
   const crosses = strokes.filter(([from, to]) => clipSegment(from, to, box) !== null).length;
   const onPoint = at[0] > box.minX && at[0] < box.maxX && at[1] > box.minY && at[1] < box.maxY;
-  return covers * OVERLAP_COST + crosses * CROSSING_COST + (onPoint ? ON_POINT_COST : 0) + Math.hypot(...gapTo(box, at));
+  const gap = Math.hypot(...gapTo(box, at));
+  const strikes = gap < LEADER_FROM ? 0 : taken.filter((other) => clipSegment(at, nearestOf(box, at), other) !== null).length;
+  return covers * OVERLAP_COST + strikes * STRUCK_COST + crosses * CROSSING_COST + (onPoint ? ON_POINT_COST : 0) + gap;
 }
 
 function gapTo(box: PaperBox, at: PaperPoint): PaperPoint {
