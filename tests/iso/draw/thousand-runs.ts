@@ -22,6 +22,8 @@ const NEAR = 0.12;
 /** Labels of a model before it is drawn, for choosing how: about what a point brings. */
 const LABELS_PER_POINT = 5.4;
 const LEAST_LEG_MM = 2;
+/** Less than this past its room is float dust, mm. */
+const DUST_MM = 0.001;
 
 export interface Bucket {
   readonly near: number;
@@ -130,7 +132,8 @@ function addRun(report: ThousandReport, model: Model, points: number, seed: numb
     if (measure.onLabels > 0) report.overlapping.push(`seed ${seed}, view ${view}`);
     report.degenerate += degenerateLegs(drawing);
     const { bounds } = drawing;
-    if (bounds.minX < 0 || bounds.minY < 0 || bounds.maxX > drawing.widthMm || bounds.maxY > drawing.heightMm) report.outOfRoom += 1;
+    const past = Math.max(-bounds.minX, -bounds.minY, bounds.maxX - drawing.widthMm, bounds.maxY - drawing.heightMm);
+    if (past > DUST_MM) report.outOfRoom += 1;
     if (sheets.length > 1) continue;
     const bucket = report.buckets.find(({ near }) => Math.abs(measure.labels - near) <= near * NEAR);
     if (bucket) addTo(bucket, measure, drawing);
