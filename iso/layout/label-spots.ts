@@ -1,6 +1,6 @@
 /** Labels of a lay-out picture: each takes the nearest spot round its point where it covers no other label and crosses least. */
 import type { DisplayItem, Face, MeasureText } from "../draw/drawing-types";
-import { lineItem, textItem } from "../draw/paths";
+import { lineItem, pathItem, polygonSegments, textItem } from "../draw/paths";
 import type { PaperBox, PaperPoint } from "../geometry/types";
 import { clipSegment } from "./clip";
 
@@ -35,6 +35,9 @@ export function spotLabels(labels: readonly SpotLabel[], strokes: readonly Strok
       items.push(lineItem("leader", null, label.at, to, 0.18));
       lines.push([label.at, to]);
     }
+    // Where nothing free was left, the lines stop short of the letters.
+    const letters = { minX: spot.box.minX + PAD / 2, minY: spot.box.minY + PAD / 2, maxX: spot.box.maxX - PAD / 2, maxY: spot.box.maxY - PAD / 2 };
+    if (strokes.some(([from, to]) => clipSegment(from, to, letters) !== null)) items.push(pathItem("halo", null, polygonSegments(cornersOf(letters)), { fill: "paper" }));
     items.push(textItem("label", null, [spot.box.minX + PAD, spot.box.maxY - PAD - 0.3 * CAP], label.text, { capMm: CAP, face }));
   }
   return items;
@@ -73,6 +76,10 @@ function costOf(box: PaperBox, at: PaperPoint, strokes: readonly Stroke[], taken
   const gap = Math.hypot(...gapTo(box, at));
   const strikes = gap < LEADER_FROM ? 0 : taken.filter((other) => clipSegment(at, nearestOf(box, at), other) !== null).length;
   return covers * OVERLAP_COST + strikes * STRUCK_COST + crosses * CROSSING_COST + (onPoint ? ON_POINT_COST : 0) + gap;
+}
+
+function cornersOf({ minX, minY, maxX, maxY }: PaperBox): PaperPoint[] {
+  return [[minX, minY], [maxX, minY], [maxX, maxY], [minX, maxY]];
 }
 
 function gapTo(box: PaperBox, at: PaperPoint): PaperPoint {

@@ -55,9 +55,35 @@ export function legsShape(turn: Turn, units: UnitSystem): Shape {
   };
 }
 
-/** The fitting: arcs at throat, centre line and back about the centre point, square-off points, take-outs; or a mitre's pieces. */
+/** The fitting: arcs at throat, centre line and back about the centre point, square-off points, take-outs; or a mitre's pieces, or a forged elbow's corner. */
 export function fittingShape(turn: Turn, units: UnitSystem): Shape {
-  return turn.kind === "mitre" || turn.radiusMm === null ? mitreShape(turn, units) : elbowShape(turn, turn.radiusMm, units);
+  if (turn.kind === "mitre") return mitreShape(turn, units);
+  return turn.radiusMm === null ? forgedShape(turn, units) : elbowShape(turn, turn.radiusMm, units);
+}
+
+/** A fitting without a radius, socket or threaded: its corner and how far from it the pipes' ends stand. */
+function forgedShape(turn: Turn, units: UnitSystem): Shape {
+  const { angleRad, takeOutMm, odMm } = turn;
+  const half = odMm / 2;
+  const reach = takeOutMm + odMm * 0.9;
+  const out = unitAt(angleRad);
+  const normal = unitAt(angleRad + Math.PI / 2);
+  const middle = paperScale(unitAt((angleRad + Math.PI) / 2), half / Math.cos(angleRad / 2));
+  const side = (sign: 1 | -1): PaperPoint[] => [[-reach, sign * half], paperScale(middle, sign), paperAddScaled(paperScale(out, reach), normal, sign * half)];
+  const [back, front]: [PaperPoint, PaperPoint] = [[-takeOutMm, 0], paperScale(out, takeOutMm)];
+  return {
+    strokes: [
+      { points: side(1), widthMm: 0.5 }, { points: side(-1), widthMm: 0.5 },
+      { points: [[-reach, 0], [0, 0], paperScale(out, reach)], widthMm: 0.25, dash: CENTRE },
+      { points: [[-takeOutMm, -half], [-takeOutMm, half]], widthMm: 0.35 },
+      { points: [paperAddScaled(front, normal, -half), paperAddScaled(front, normal, half)], widthMm: 0.35 },
+    ],
+    dots: [[0, 0], back, front],
+    labels: [
+      { at: [0, 0], text: `CORNER, ${formatAngleDeg(angleRad)}`, face: "bold" },
+      { at: back, text: `PIPE'S END, ${formatMark(takeOutMm, units)}` }, { at: front, text: `PIPE'S END, ${formatMark(takeOutMm, units)}` },
+    ],
+  };
 }
 
 function elbowShape(turn: Turn, radius: number, units: UnitSystem): Shape {
