@@ -80,7 +80,11 @@ describe("a joined package", () => {
 /** Bytes of the pages' own drawings, as packed. */
 async function drawingBytes(bytes: Uint8Array): Promise<number> {
   const pages = (await PDFDocument.load(bytes, { updateMetadata: false })).getPages();
-  return pages.reduce((sum, { node }) => sum + node.lookup(PDFName.of("Contents"), PDFRawStream).contents.length, 0);
+  return pages.reduce((sum, { node }) => {
+    const drawing = node.lookup(PDFName.of("Contents"));
+    if (!(drawing instanceof PDFRawStream)) throw new Error("A joined page has no drawing.");
+    return sum + drawing.contents.length;
+  }, 0);
 }
 
 /** Pixels further apart than a printer would show. */
