@@ -84,17 +84,17 @@ function pathShape(item: Extract<DisplayItem, { type: "path" }>, active: boolean
   );
 }
 
+/** Where a text stands, how large and how turned, as its element takes it. */
+export function textPlace({ at: [x, y], rotateRad, capMm, anchor }: Extract<DisplayItem, { type: "text" }>) {
+  const turn = (rotateRad * 180) / Math.PI;
+  return { x, y, fontSize: capMm * EM_PER_CAPITAL, textAnchor: anchor, transform: turn === 0 ? undefined : `rotate(${turn} ${x} ${y})` };
+}
+
 function TextShape({ item, active }: { readonly item: Extract<DisplayItem, { type: "text" }>; readonly active: boolean }) {
-  const [x, y] = item.at;
-  const turn = (item.rotateRad * 180) / Math.PI;
   return (
     <text
-      x={x}
-      y={y}
-      fontSize={item.capMm * EM_PER_CAPITAL}
-      textAnchor={item.anchor}
+      {...textPlace(item)}
       fill={active ? INK_COLOURS.dye : INK_COLOURS[item.ink]}
-      transform={turn === 0 ? undefined : `rotate(${turn} ${x} ${y})`}
       data-ref={refText(item.ref)}
       {...FACES[item.face]}
     >

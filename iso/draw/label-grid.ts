@@ -118,7 +118,7 @@ export class LabelGrid {
   /** Writes which labels a lifted label would meet on a candidate, each once; counts no further than the list is long and one. */
   metLabels(label: number, candidate: number, met: Int32Array): number {
     this.met = 0;
-    this.boxesUnder(label, candidate, met);
+    this.boxUnder(label, candidate, met);
     if (this.met <= met.length) this.weigh(label, candidate, met, MOST);
     return this.met;
   }
@@ -129,31 +129,8 @@ export class LabelGrid {
     this.met++;
   }
 
-  /** A label whose box a lifted one's would meet on a candidate. */
-  private boxUnder(label: number, candidate: number): number {
-    const { boxes, seats, columns } = this;
-    const { at } = this.candidates;
-    const o = candidate * STRIDE;
-    const x = at[o + X]!;
-    const y = at[o + Y]!;
-    const w = this.w[label]! + MARGIN;
-    const h = this.h[label]! + MARGIN;
-    const x0 = this.column(x - w);
-    const x1 = this.column(x + w);
-    const y1 = this.row(y + h);
-    for (let row = this.row(y - h); row <= y1; row++) {
-      for (let column = x0; column <= x1; column++) {
-        for (let node = boxes.first(row * columns + column); node !== NONE; node = boxes.after(node)) {
-          const other = boxes.label(node);
-          const p = seats[other]! * STRIDE;
-          if (Math.abs(at[p + X]! - x) < w + this.w[other]! && Math.abs(at[p + Y]! - y) < h + this.h[other]!) return other;
-        }
-      }
-    }
-    return NONE;
-  }
-
-  private boxesUnder(label: number, candidate: number, list: Int32Array): void {
+  /** A label whose box a lifted one's would meet on a candidate; with a list it goes on and writes every one. */
+  private boxUnder(label: number, candidate: number, list: Int32Array | null = null): number {
     const { boxes, seats, columns } = this;
     const { at } = this.candidates;
     const o = candidate * STRIDE;
@@ -170,10 +147,12 @@ export class LabelGrid {
           const other = boxes.label(node);
           const p = seats[other]! * STRIDE;
           if (Math.abs(at[p + X]! - x) >= w + this.w[other]! || Math.abs(at[p + Y]! - y) >= h + this.h[other]!) continue;
+          if (list === null) return other;
           this.note(list, other);
         }
       }
     }
+    return NONE;
   }
 
   /** Price of foreign leaders under the box, then of what its own leader meets. */
